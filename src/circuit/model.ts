@@ -1,0 +1,103 @@
+import type { Point, Turn } from '../base/points.ts';
+
+/**
+ * The circuit document: plain data, as it stands in a `*.spool.json` file. Nothing here is computed.
+ * Fields that a newer or other program added are kept in `extra` and written back.
+ */
+export interface Circuit {
+  readonly name: string;
+  readonly notes?: string;
+  /** Drawing furniture: drawn by, number, revision, date. */
+  readonly title?: Readonly<Record<string, string>>;
+  readonly parts: readonly Part[];
+  readonly connections: readonly Connection[];
+  /** Free text on the sheet. */
+  readonly labels?: readonly Label[];
+  readonly extra?: Extra;
+}
+
+export type Extra = Readonly<Record<string, unknown>>;
+
+export interface Part {
+  /** Unique, stable: letters, digits, `-` and `_`, no dot. Connections refer to it. */
+  readonly id: string;
+  readonly kind: string;
+  /** Shown name, unique in the circuit; the id when absent. */
+  readonly label?: string;
+  /** Second line of the label, such as `H1.1`. */
+  readonly code?: string;
+  /** Origin of the symbol in modules; absent = the sheet places the part. */
+  readonly at?: Point;
+  readonly turn?: Turn;
+  readonly flip?: boolean;
+  /** As the user typed it: quantities with their unit (`"30 L/min"`), choices by name, switches. */
+  readonly settings?: Readonly<Record<string, Setting>>;
+  /** Directional valves only: ways, positions and operators as data. */
+  readonly valve?: ValveData;
+  readonly extra?: Extra;
+}
+
+export type Setting = string | number | boolean;
+
+/** A drawn connection between two ports; connected ports form one line. */
+export interface Connection {
+  readonly id: string;
+  readonly from: PortRef;
+  readonly to: PortRef;
+  /** Names the line that this connection belongs to. */
+  readonly name?: string;
+  readonly use?: 'working' | 'pilot' | 'drain';
+  /** Bend points set by the user, in modules. */
+  readonly bends?: readonly Point[];
+  readonly extra?: Extra;
+}
+
+/** In the file: `"V1.A"`. */
+export interface PortRef {
+  readonly part: string;
+  readonly port: string;
+}
+
+export interface Label {
+  readonly id: string;
+  readonly at: Point;
+  readonly text: string;
+  readonly extra?: Extra;
+}
+
+/** A directional valve: 2–4 positions, 2–8 ways. */
+export interface ValveData {
+  /** In drawn order; `top` ports stand on the upper edge of the box, the rest on the lower one. */
+  readonly ports: readonly ValvePort[];
+  /** In drawn order, left to right. */
+  readonly positions: readonly ValvePosition[];
+  /** Paths while shifting between position i and i + 1; absent = not known. */
+  readonly crossovers?: readonly (readonly string[])[];
+  /** Index of the position the spring returns to; absent = detent, keeps the last. */
+  readonly rest?: number;
+  /** Drawn at the left and right end, from the box outwards. */
+  readonly left: readonly Operator[];
+  readonly right: readonly Operator[];
+  /** Which coil leads to which position; two coils on at once are not permitted. */
+  readonly coils?: readonly { readonly name: string; readonly position: number }[];
+}
+
+export interface ValvePort {
+  readonly id: string;
+  readonly side: 'top' | 'bottom';
+}
+
+export interface ValvePosition {
+  /** `a`, `0`, `b` unless the user names them: `raise`, `hold`, `lower`. */
+  readonly name: string;
+  /**
+   * `P-A` open both ways, `P>A` one way, `P~A` throttled, `P~>A` throttled one way,
+   * `P-A-B` all joined. A port that no path names is shut.
+   */
+  readonly paths: readonly string[];
+}
+
+export type Operator = 'lever' | 'pedal' | 'button' | 'coil' | 'spring' | 'detent' | 'hand' | 'roller' | 'pilot';
+
+export const labelOf = (part: Part): string => part.label ?? part.id;
+export const sayPort = (ref: PortRef): string => `${ref.part}.${ref.port}`;

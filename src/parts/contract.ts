@@ -1,0 +1,127 @@
+import type { Box, Point, Side } from '../base/points.ts';
+import type { Primitive } from '../base/primitives.ts';
+import type { Problem } from '../base/result.ts';
+import type { Quantity } from '../base/units.ts';
+import type { Part, ValveData } from '../circuit/model.ts';
+
+/**
+ * A part kind: one module says everything about it. A new part is one module and one line in
+ * `catalogue.ts`.
+ */
+export interface PartKind {
+  /** Name in the file, e.g. `fixed-pump`. */
+  readonly kind: string;
+  readonly title: string;
+  readonly group: PartGroup;
+  /** One line in trade words. */
+  readonly help: string;
+  /** Synonyms for the search in the parts tray. */
+  readonly words: readonly string[];
+  /** Letter(s) for automatic labels. */
+  readonly prefix: string;
+  readonly settings: readonly SettingSpec[];
+  /** Ready-made forms in the tray, at least one; the first is the default. */
+  readonly readyMade: readonly ReadyMade[];
+  readonly ports: (part: Part) => readonly PortSpec[];
+  /** What it does between its ports. */
+  readonly elements: (part: Part) => readonly Element[];
+  /** Commanded positions; undefined for a part that nobody moves. */
+  readonly input?: (part: Part) => InputSpec | undefined;
+  readonly draw: (part: Part, look: Look) => readonly Primitive[];
+  /** Outline on the sheet in its own frame, without lines. */
+  readonly bounds: (part: Part) => Box;
+  /** Checks of its own data beyond the settings (the directional valve's). */
+  readonly check?: (part: Part) => readonly Problem[];
+}
+
+export type PartGroup = 'Supply' | 'Motion' | 'Direction' | 'Pressure' | 'Flow and check' | 'Store' | 'Measure and joints';
+export const PART_GROUPS: readonly PartGroup[] = ['Supply', 'Motion', 'Direction', 'Pressure', 'Flow and check', 'Store', 'Measure and joints'];
+
+export interface ReadyMade {
+  /** Unique in the catalogue, e.g. `valve-4/3-bypass`. */
+  readonly id: string;
+  readonly title: string;
+  readonly words?: readonly string[];
+  /** What the placed part starts with besides id, kind and place. */
+  readonly make: () => Pick<Part, 'settings' | 'valve'>;
+}
+
+export interface PortSpec {
+  readonly id: string;
+  readonly at: Point;
+  readonly side: Side;
+  /** `joint`: a junction point, any number of lines; others take one or more too, drawn with a dot. */
+  readonly role: 'supply' | 'return' | 'working' | 'pilot' | 'drain' | 'measure' | 'joint';
+  /** What it means if nothing is connected; undefined = nothing to say. */
+  readonly leftOpen?: { readonly level: 'danger' | 'caution' | 'note'; readonly what: string; readonly remedy: string };
+}
+
+/** How a part is to be drawn now. */
+export interface Look {
+  /** Index of the active position; undefined = rest or first. */
+  readonly position?: number;
+  /** Actuators: 0 in, 1 out. */
+  readonly stroke?: number;
+}
+
+export interface SettingSpec {
+  readonly id: string;
+  readonly title: string;
+  readonly help: string;
+  readonly value:
+    | { readonly type: 'quantity'; readonly quantity: Quantity; readonly default: string; readonly min?: string; readonly max?: string }
+    | { readonly type: 'choice'; readonly options: readonly string[]; readonly default: string }
+    | { readonly type: 'switch'; readonly default: boolean }
+    | { readonly type: 'number'; readonly default: number; readonly min?: number; readonly max?: number };
+}
+
+/** One input of a state: a commanded valve, shut-off or coupling. */
+export interface InputSpec {
+  readonly positions: readonly string[];
+  /** Where springs put it; absent = it stays where it was left. */
+  readonly rest?: number;
+  readonly by: 'lever' | 'pedal' | 'button' | 'coil' | 'hand' | 'coupling';
+  readonly coils: readonly { readonly name: string; readonly position: number }[];
+}
+
+/** What a part does, in terms the network and the engines understand. Values are SI. */
+export type Element =
+  | PathElement
+  | { readonly type: 'pressure-opened'; readonly from: string; readonly to: string; readonly setting: number; readonly duty: 'relief' }
+  | { readonly type: 'pump'; readonly outlet: string; readonly suction: string; readonly form: 'fixed' | 'compensated'; /** m³/s */ readonly flow: number; /** Pa, compensated only */ readonly setting?: number; readonly tightWhenStopped: boolean }
+  | { readonly type: 'tank'; readonly port: string }
+  | { readonly type: 'accumulator'; readonly port: string; readonly charged: boolean }
+  | ActuatorElement;
+
+/** An open path. `positions`: input positions in which it exists; absent = always. */
+export interface PathElement {
+  readonly type: 'path';
+  readonly from: string;
+  readonly to: string;
+  readonly way: 'both' | 'one-way';
+  readonly throttled: boolean;
+  readonly positions?: readonly number[];
+  /** Pa over which a one-way path opens. */
+  readonly cracking?: number;
+  /** Reverse path of a lock check: open while this port is fed and not freely open to tank. */
+  readonly pilot?: { readonly port: string; readonly ratio: number };
+  /** m³/s at Pa of drop, for the pressure layer. */
+  readonly rated?: { readonly flow: number; readonly drop: number };
+}
+
+/** Port `a` grows when it extends (turns A→B); `b` undefined: single acting, that side breathes. */
+export interface ActuatorElement {
+  readonly type: 'actuator';
+  readonly a: string;
+  readonly b?: string;
+  readonly motion: 'linear' | 'rotary';
+  /** m²; rotary: m³/rad for both. */
+  readonly areaA: number;
+  readonly areaB: number;
+  /** Spring that pushes it this way. */
+  readonly spring?: 'in' | 'out';
+  /** N or N·m that acts from outside: `in`/`out` (motor: `B→A`/`A→B`) presses also at rest, `resisting` only against motion. */
+  readonly load: { readonly sense: 'none' | 'resisting' | 'in' | 'out'; readonly size: number };
+}
+
+export type { ValveData };
