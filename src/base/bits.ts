@@ -1,0 +1,86 @@
+/**
+ * Sets of rows, one bit each, 32 to a word. Bits at and past `size` are always 0.
+ * Word arithmetic in JavaScript is signed: results are stored into a Uint32Array, which mends it.
+ */
+export type BitSet = Uint32Array;
+
+export const wordsFor = (size: number): number => (size + 31) >>> 5;
+export const emptySet = (size: number): BitSet => new Uint32Array(wordsFor(size));
+
+/** Clear the bits past the last one. */
+export function trim(set: BitSet, size: number): BitSet {
+  const used = size & 31;
+  if (used !== 0) {
+    const last = size >>> 5;
+    set[last] = (set[last] as number) & ((1 << used) - 1);
+  }
+  return set;
+}
+
+export const fullSet = (size: number): BitSet => trim(emptySet(size).fill(0xffffffff), size);
+export const has = (set: BitSet, index: number): boolean => (((set[index >>> 5] as number) >>> (index & 31)) & 1) === 1;
+
+export function add(set: BitSet, index: number): void {
+  const word = index >>> 5;
+  set[word] = (set[word] as number) | (1 << (index & 31));
+}
+
+function popcount(word: number): number {
+  let v = word - ((word >>> 1) & 0x55555555);
+  v = (v & 0x33333333) + ((v >>> 2) & 0x33333333);
+  return (((v + (v >>> 4)) & 0x0f0f0f0f) * 0x01010101) >>> 24;
+}
+
+export function countBits(set: BitSet): number {
+  let total = 0;
+  for (let i = 0; i < set.length; i++) total += popcount(set[i] as number);
+  return total;
+}
+
+export function isEmpty(set: BitSet): boolean {
+  for (let i = 0; i < set.length; i++) if (set[i] !== 0) return false;
+  return true;
+}
+
+export function equalSets(a: BitSet, b: BitSet): boolean {
+  if (a.length !== b.length) return false;
+  for (let i = 0; i < a.length; i++) if (a[i] !== b[i]) return false;
+  return true;
+}
+
+/** `target |= source`; true if it grew. */
+export function orInto(target: BitSet, source: BitSet): boolean {
+  let grown = 0;
+  for (let i = 0; i < target.length; i++) {
+    const before = target[i] as number;
+    const after = before | (source[i] as number);
+    grown |= before ^ after;
+    target[i] = after;
+  }
+  return grown !== 0;
+}
+
+/** Members in rising order. */
+export function* members(set: BitSet): Generator<number> {
+  for (let w = 0; w < set.length; w++) {
+    let word = set[w] as number;
+    while (word !== 0) {
+      const low = word & -word;
+      yield w * 32 + (31 - Math.clz32(low));
+      word ^= low;
+    }
+  }
+}
+
+/** `out[i] = set[i + by]` for every row; rows from beyond the ends read 0. */
+export function shiftSet(set: BitSet, by: number, size: number): BitSet {
+  const out = new Uint32Array(set.length);
+  const words = by >> 5;
+  const bits = by & 31;
+  for (let i = 0; i < out.length; i++) {
+    const low = set[i + words] ?? 0;
+    const high = set[i + words + 1] ?? 0;
+    out[i] = bits === 0 ? low : (low >>> bits) | (high << (32 - bits));
+  }
+  return trim(out, size);
+}

@@ -1,0 +1,156 @@
+import { countBits, emptySet, has, members, orInto } from '../../base/bits.ts';
+import type { Plane, TableData } from './table-data.ts';
+import {
+  ACTUATOR_NOTES,
+  ACTUATOR_VERDICTS,
+  BLOCKED_KINDS,
+  LINE_CLASSES,
+  PUMP_VERDICTS,
+  TRAP_REASONS,
+} from './words.ts';
+import type { ActuatorNote, ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, TrapReason } from './words.ts';
+
+/** What rows a filter keeps: every field given must match. */
+export interface RowFilter {
+  /** Input index → positions that are kept. */
+  readonly positions?: Readonly<Record<number, readonly number[]>>;
+  readonly actuators?: Readonly<Record<number, readonly ActuatorVerdict[]>>;
+  readonly pumps?: Readonly<Record<number, readonly PumpVerdict[]>>;
+  readonly lines?: Readonly<Record<number, readonly LineClass[]>>;
+  /** Only rows in which some line is blocked, trapped for a known reason (not heat alone). */
+  readonly trapped?: boolean;
+}
+
+/** Reads `TableData` row by row. Rows are 0-based here; people see row + 1. */
+export class StateTable {
+  readonly data: TableData;
+  readonly #strides: readonly number[];
+
+  constructor(data: TableData) {
+    this.data = data;
+    this.#strides = strides(data.inputs.map((input) => input.positions.length));
+  }
+
+  get count(): number {
+    return this.data.count;
+  }
+
+  positionsOf(row: number): number[] {
+    return this.data.inputs.map((input, i) => Math.floor(row / (this.#strides[i] as number)) % input.positions.length);
+  }
+
+  position(input: number, row: number): number {
+    const spec = this.data.inputs[input];
+    return spec ? Math.floor(row / (this.#strides[input] as number)) % spec.positions.length : 0;
+  }
+
+  rowOf(positions: readonly number[]): number {
+    return positions.reduce((row, p, i) => row + p * (this.#strides[i] as number), 0);
+  }
+
+  /** The row with every sprung valve at rest and every other one in its first position. */
+  restRow(): number {
+    return this.rowOf(this.data.inputs.map((input) => input.rest ?? 0));
+  }
+
+  actuator(index: number, row: number): ActuatorVerdict {
+    return pick(this.data.actuatorPlanes[index], ACTUATOR_VERDICTS, row) ?? 'undetermined';
+  }
+
+  actuatorNotes(index: number, row: number): ActuatorNote[] {
+    return pickAll(this.data.actuatorNotes[index], ACTUATOR_NOTES, row);
+  }
+
+  pump(index: number, row: number): PumpVerdict {
+    return pick(this.data.pumpPlanes[index], PUMP_VERDICTS, row) ?? 'rests on pressure';
+  }
+
+  line(index: number, row: number): LineClass {
+    return pick(this.data.linePlanes[index], LINE_CLASSES, row) ?? 'cut off';
+  }
+
+  blocked(index: number, row: number): BlockedKind | undefined {
+    return pick(this.data.blockedPlanes[index], BLOCKED_KINDS, row);
+  }
+
+  trapped(index: number, row: number): TrapReason[] {
+    return pickAll(this.data.trapPlanes[index], TRAP_REASONS, row);
+  }
+
+  /** Verdicts that occur for this actuator, with the number of rows of each. */
+  actuatorCounts(index: number): { verdict: ActuatorVerdict; rows: number }[] {
+    return counts(this.data.actuatorPlanes[index], ACTUATOR_VERDICTS).map(([verdict, rows]) => ({ verdict, rows }));
+  }
+
+  pumpCounts(index: number): { verdict: PumpVerdict; rows: number }[] {
+    return counts(this.data.pumpPlanes[index], PUMP_VERDICTS).map(([verdict, rows]) => ({ verdict, rows }));
+  }
+
+  /** Rows that pass, in rising order. */
+  find(filter: RowFilter): Uint32Array {
+    const keep: Plane[] = [];
+    const { data } = this;
+    const collect = <W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], wanted: readonly W[]): void => {
+      const any = emptySet(data.count);
+      for (const word of wanted) {
+        const plane = planes?.[words.indexOf(word)];
+        if (plane) orInto(any, plane);
+      }
+      keep.push(any);
+    };
+    for (const [i, wanted] of Object.entries(filter.actuators ?? {})) collect(data.actuatorPlanes[Number(i)], ACTUATOR_VERDICTS, wanted);
+    for (const [i, wanted] of Object.entries(filter.pumps ?? {})) collect(data.pumpPlanes[Number(i)], PUMP_VERDICTS, wanted);
+    for (const [i, wanted] of Object.entries(filter.lines ?? {})) collect(data.linePlanes[Number(i)], LINE_CLASSES, wanted);
+    if (filter.trapped) {
+      const any = emptySet(data.count);
+      for (const planes of data.trapPlanes) {
+        planes.forEach((plane, reason) => {
+          if (plane && TRAP_REASONS[reason] !== 'heat') orInto(any, plane);
+        });
+      }
+      keep.push(any);
+    }
+    const wantedPositions = Object.entries(filter.positions ?? {}).map(([i, list]) => [Number(i), new Set(list)] as const);
+    const rows: number[] = [];
+    const passes = (row: number): boolean =>
+      keep.every((plane) => has(plane, row)) && wantedPositions.every(([i, set]) => set.has(this.position(i, row)));
+    const [first] = keep;
+    if (first) {
+      for (const row of members(first)) if (passes(row)) rows.push(row);
+    } else {
+      for (let row = 0; row < data.count; row++) if (passes(row)) rows.push(row);
+    }
+    return Uint32Array.from(rows);
+  }
+}
+
+/** Mixed radix: how far one step of each input moves the row; the last input is the fastest. */
+export function strides(radices: readonly number[]): number[] {
+  const out = new Array<number>(radices.length);
+  let stride = 1;
+  for (let i = radices.length - 1; i >= 0; i--) {
+    out[i] = stride;
+    stride *= radices[i] as number;
+  }
+  return out;
+}
+
+function pick<W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], row: number): W | undefined {
+  const index = planes?.findIndex((plane) => plane !== undefined && has(plane, row)) ?? -1;
+  return index < 0 ? undefined : words[index];
+}
+
+function pickAll<W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], row: number): W[] {
+  return words.filter((_, i) => {
+    const plane = planes?.[i];
+    return plane !== undefined && has(plane, row);
+  });
+}
+
+function counts<W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[]): [W, number][] {
+  return words.flatMap((word, i): [W, number][] => {
+    const plane = planes?.[i];
+    const rows = plane ? countBits(plane) : 0;
+    return rows > 0 ? [[word, rows]] : [];
+  });
+}

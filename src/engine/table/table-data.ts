@@ -1,0 +1,60 @@
+import type { BitSet } from '../../base/bits.ts';
+
+/** One bit per row. Absent = empty. All bits past the last row are 0. */
+export type Plane = BitSet;
+
+export interface TableInput {
+  readonly part: string;
+  readonly label: string;
+  readonly positions: readonly string[];
+  readonly rest?: number;
+  readonly by: 'lever' | 'pedal' | 'button' | 'coil' | 'hand' | 'coupling';
+  readonly coils: readonly { readonly name: string; readonly position: number }[];
+}
+
+export interface TableActuator {
+  readonly part: string;
+  readonly label: string;
+  readonly motion: 'linear' | 'rotary';
+}
+
+export interface TablePump {
+  readonly part: string;
+  readonly label: string;
+}
+
+export interface TableLine {
+  readonly name: string;
+  /** `V1.A` style, part ids. */
+  readonly ports: readonly string[];
+  /** Ids of the drawn connections it consists of. */
+  readonly connections: readonly string[];
+}
+
+/**
+ * The whole state table as plain data that crosses a thread: inputs, and bit planes over the rows.
+ * Rows are counted in mixed radix, the first input slowest.
+ */
+export interface TableData {
+  readonly pumpsRunning: boolean;
+  readonly inputs: readonly TableInput[];
+  readonly actuators: readonly TableActuator[];
+  readonly pumps: readonly TablePump[];
+  readonly lines: readonly TableLine[];
+  readonly count: number;
+  /** Coil and lever combinations with two opposed coils on, and all of them. */
+  readonly notPermitted: number;
+  readonly commandCombinations: number;
+  /** [actuator][verdict index of ACTUATOR_VERDICTS] */
+  readonly actuatorPlanes: readonly (readonly (Plane | undefined)[])[];
+  /** [actuator][note index of ACTUATOR_NOTES] */
+  readonly actuatorNotes: readonly (readonly (Plane | undefined)[])[];
+  /** [pump][verdict index of PUMP_VERDICTS] */
+  readonly pumpPlanes: readonly (readonly (Plane | undefined)[])[];
+  /** [line][class index of LINE_CLASSES] */
+  readonly linePlanes: readonly (readonly (Plane | undefined)[])[];
+  /** [line][kind index of BLOCKED_KINDS] */
+  readonly blockedPlanes: readonly (readonly (Plane | undefined)[])[];
+  /** [line][reason index of TRAP_REASONS] */
+  readonly trapPlanes: readonly (readonly (Plane | undefined)[])[];
+}
