@@ -1,0 +1,269 @@
+import { Cancelled } from '../../base/budget.ts';
+import type { Circuit } from '../../circuit/model.ts';
+import type {
+  Analyst,
+  Conditions,
+  Explanation,
+  Job,
+  LineClass,
+  BlockedKind,
+  ReasonStep,
+  StateTable,
+  TableAnswer,
+  TrapReason,
+} from '../../worker/client.ts';
+import { editor } from './editor.svelte.ts';
+import { inputsOf } from './inputs.ts';
+import type { CircuitInput } from './inputs.ts';
+
+/** How a drawn connection is to look in the current row. */
+export interface ConnectionLook {
+  /** Index and name of its line in the table. */
+  readonly line: number;
+  readonly name: string;
+  readonly class: LineClass;
+  /** Why pressure can stand in it; empty = it is not trapped. */
+  readonly trapped: readonly TrapReason[];
+  readonly blocked: BlockedKind | undefined;
+}
+
+/** A step of the reason on show: draw a balloon with `number` at its parts and lines. */
+export interface LitStep {
+  readonly number: number;
+  readonly lines: readonly number[];
+  readonly parts: readonly string[];
+  /** The step under the pointer or focus: lit more strongly. */
+  readonly current: boolean;
+}
+
+/** Everything to be lit on the sheet: lines by index in the table, parts by id, and the numbered steps. */
+export interface Lit {
+  readonly lines: readonly number[];
+  readonly parts: readonly string[];
+  readonly steps: readonly LitStep[];
+}
+
+/** What a reason is asked for. `index` counts within the row's actuators, pumps or lines of the table. */
+export interface Subject {
+  readonly of: 'actuator' | 'pump' | 'line';
+  readonly index: number;
+}
+
+const DARK: Lit = { lines: [], parts: [], steps: [] };
+
+/** The state on show: conditions, the whole table, the current row, and why it is so. */
+class Session {
+  conditions = $state.raw<Conditions>({ pumps: 'running' });
+  /** The last answer, with the circuit it was computed for. */
+  answer = $state.raw<(TableAnswer & { readonly circuit: Circuit; readonly conditions: Conditions }) | undefined>();
+  /** Share of the running computation, 0 to 1; undefined = nothing runs. */
+  progress = $state<number | undefined>();
+  /** Why there is no table, in words. */
+  failure = $state<string | undefined>();
+  stopped = $state(false);
+  explanation = $state.raw<Explanation | undefined>();
+  explainFailure = $state<string | undefined>();
+  /** What the Why panel is about. */
+  subject = $state.raw<Subject | undefined>();
+  /** Index of the step under the pointer or focus. */
+  step = $state<number | undefined>();
+  /** Finding whose parts and lines are lit. */
+  finding = $state<number | undefined>();
+
+  /** Part id → where its lever stands; survives edits, so a redrawn circuit keeps its state. */
+  #levers = $state.raw<Readonly<Record<string, number>>>({});
+
+  /** Commanded inputs of the circuit as drawn now, in circuit order (needs no table). */
+  inputs: readonly CircuitInput[] = $derived(inputsOf(editor.circuit));
+  table: StateTable | undefined = $derived(this.answer?.table);
+  findings = $derived(this.answer?.findings ?? []);
+  /** True while the table on show belongs to an earlier form of the circuit. */
+  stale = $derived(
+    this.answer !== undefined && (this.answer.circuit !== editor.circuit || this.answer.conditions !== this.conditions),
+  );
+  /** Current row, 0-based; 0 while there is no table. */
+  row = $derived(this.table ? this.table.rowOf(this.#positionsFor(this.table)) : 0);
+
+  #looks: ReadonlyMap<string, ConnectionLook> = $derived.by(() => looksOf(this.table, this.row));
+
+  /** Steps of the reason on show, from the explanation of the current row. */
+  steps: readonly ReasonStep[] = $derived.by(() => this.#stepsOnShow());
+
+  lit: Lit = $derived.by(() => this.#light());
+
+  #analyst: Analyst | undefined;
+  #job: Job<TableAnswer> | undefined;
+  #explaining: Job<Explanation> | undefined;
+
+  /** Where an input part stands now: index into its positions. */
+  positionOf(partId: string): number {
+    const input = this.inputs.find((each) => each.part === partId);
+    return input ? clampTo(this.#levers[partId] ?? input.rest ?? 0, input.positions.length) : 0;
+  }
+
+  setPosition(partId: string, index: number): void {
+    const input = this.inputs.find((each) => each.part === partId);
+    if (!input || index < 0 || index >= input.positions.length) return;
+    this.#levers = { ...this.#levers, [partId]: index };
+  }
+
+  /** Every lever back to where its springs put it; detented ones stay. */
+  letGo(): void {
+    const levers = { ...this.#levers };
+    for (const input of this.inputs) if (input.rest !== undefined) levers[input.part] = input.rest;
+    this.#levers = levers;
+  }
+
+  goToRow(row: number): void {
+    const { table } = this;
+    if (!table || row < 0 || row >= table.count) return;
+    const levers = { ...this.#levers };
+    table.positionsOf(row).forEach((position, i) => {
+      const input = table.data.inputs[i];
+      if (input) levers[input.part] = position;
+    });
+    this.#levers = levers;
+  }
+
+  /** Levers as part id → index, to be kept beside the circuit. */
+  get levers(): Readonly<Record<string, number>> {
+    return this.#levers;
+  }
+
+  set levers(levers: Readonly<Record<string, number>>) {
+    this.#levers = levers;
+  }
+
+  /** Undefined while the connection is in no line of the table yet. */
+  connectionLook(connectionId: string): ConnectionLook | undefined {
+    return this.#looks.get(connectionId);
+  }
+
+  setPumps(pumps: Conditions['pumps']): void {
+    if (pumps !== this.conditions.pumps) this.conditions = { ...this.conditions, pumps };
+  }
+
+  /** `between` its stops, or at one. */
+  setPlace(partId: string, place: 'between' | 'in' | 'out'): void {
+    const places = { ...this.conditions.places };
+    if (place === 'between') delete places[partId];
+    else places[partId] = place;
+    this.conditions = { pumps: this.conditions.pumps, places };
+  }
+
+  why(subject: Subject): void {
+    this.subject = subject;
+    this.step = undefined;
+    this.finding = undefined;
+  }
+
+  whyNot(): void {
+    this.subject = undefined;
+    this.step = undefined;
+  }
+
+  start(analyst: Analyst): void {
+    this.#analyst = analyst;
+  }
+
+  /** Ask for the table anew; an answer to an older question is dropped. */
+  compute(circuit: Circuit, conditions: Conditions): void {
+    this.#job?.cancel();
+    const analyst = this.#analyst;
+    if (!analyst) return;
+    this.stopped = false;
+    this.progress = 0;
+    const job = analyst.table(circuit, conditions, (share) => {
+      if (this.#job === job) this.progress = share;
+    });
+    this.#job = job;
+    job.answer.then(
+      (answer) => {
+        if (this.#job !== job) return;
+        this.answer = { ...answer, circuit, conditions };
+        this.failure = undefined;
+        this.progress = undefined;
+      },
+      (error: unknown) => {
+        if (this.#job !== job) return;
+        this.progress = undefined;
+        if (error instanceof Cancelled) this.stopped = true;
+        else this.failure = sayError(error);
+      },
+    );
+  }
+
+  /** The person stops a long computation; the last table stays on show. */
+  stop(): void {
+    this.#job?.cancel();
+  }
+
+  explain(): void {
+    this.#explaining?.cancel();
+    this.#explaining = undefined;
+    const { answer } = this;
+    if (!answer || !this.#analyst) return;
+    const job = this.#analyst.explain(answer.circuit, answer.conditions, this.row);
+    this.#explaining = job;
+    job.answer.then(
+      (explanation) => {
+        if (this.#explaining !== job) return;
+        this.explanation = explanation;
+        this.explainFailure = undefined;
+      },
+      (error: unknown) => {
+        if (this.#explaining === job && !(error instanceof Cancelled)) this.explainFailure = sayError(error);
+      },
+    );
+  }
+
+  #positionsFor(table: StateTable): number[] {
+    return table.data.inputs.map((input) =>
+      clampTo(this.#levers[input.part] ?? input.rest ?? 0, input.positions.length),
+    );
+  }
+
+  #stepsOnShow(): readonly ReasonStep[] {
+    const { explanation, subject } = this;
+    if (!explanation || !subject || explanation.row !== this.row) return [];
+    if (subject.of === 'actuator') return explanation.actuators[subject.index]?.steps ?? [];
+    if (subject.of === 'pump') return explanation.pumps[subject.index]?.steps ?? [];
+    return explanation.trapped.find((line) => line.line === subject.index)?.steps ?? [];
+  }
+
+  #light(): Lit {
+    const found = this.finding === undefined ? undefined : this.findings[this.finding];
+    if (found) return { lines: found.lines, parts: found.parts, steps: [] };
+    const { steps, step } = this;
+    if (steps.length === 0) return DARK;
+    const lit = steps.map((each, i): LitStep => ({
+      number: i + 1,
+      lines: each.lines,
+      parts: each.parts,
+      current: i === step,
+    }));
+    const now = step === undefined ? undefined : lit[step];
+    return { lines: now?.lines ?? [], parts: now?.parts ?? [], steps: lit };
+  }
+}
+
+const clampTo = (index: number, length: number): number => Math.min(Math.max(index, 0), Math.max(length - 1, 0));
+
+const sayError = (error: unknown): string => (error instanceof Error ? error.message : String(error));
+
+function looksOf(table: StateTable | undefined, row: number): ReadonlyMap<string, ConnectionLook> {
+  const looks = new Map<string, ConnectionLook>();
+  table?.data.lines.forEach((line, index) => {
+    const look: ConnectionLook = {
+      line: index,
+      name: line.name,
+      class: table.line(index, row),
+      trapped: table.trapped(index, row),
+      blocked: table.blocked(index, row),
+    };
+    for (const id of line.connections) looks.set(id, look);
+  });
+  return looks;
+}
+
+export const session = new Session();

@@ -1,0 +1,63 @@
+import { recall, remember } from './remembered.ts';
+
+export type ThemeChoice = 'system' | 'light' | 'dark';
+export type Units = 'metric' | 'US';
+export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions';
+export type Page = 'sheet' | 'table';
+
+/** How the person likes to see things; kept between visits, no part of the circuit. */
+class View {
+  theme = $state<ThemeChoice>(recall<ThemeChoice>('theme', 'system'));
+  units = $state<Units>(recall<Units>('units', 'metric'));
+  grid = $state(recall('grid', true));
+  /** Whether the system asks for dark; `App` keeps it up to date. */
+  systemDark = $state(false);
+  /** Share of the height below the top bar that the sheet takes, 0 to 1. */
+  sheetShare = $state(recall('sheetShare', 0.56));
+  /** Height of the bench in px; 0 = as tall as its slots need. */
+  benchHeight = $state(recall('benchHeight', 0));
+  /** Which page a small screen shows above the bench. */
+  page = $state<Page>('sheet');
+  panels = $state<Record<PanelId, boolean>>({
+    why: false,
+    legend: recall('legendOpen', true),
+    findings: false,
+    settings: false,
+    keys: false,
+    conditions: false,
+  });
+
+  dark = $derived(this.theme === 'dark' || (this.theme === 'system' && this.systemDark));
+
+  setTheme(theme: ThemeChoice): void {
+    this.theme = theme;
+    remember('theme', theme);
+  }
+
+  setUnits(units: Units): void {
+    this.units = units;
+    remember('units', units);
+  }
+
+  setGrid(on: boolean): void {
+    this.grid = on;
+    remember('grid', on);
+  }
+
+  open(panel: PanelId): void {
+    this.panels[panel] = true;
+    if (panel === 'legend') remember('legendOpen', true);
+  }
+
+  close(panel: PanelId): void {
+    this.panels[panel] = false;
+    if (panel === 'legend') remember('legendOpen', false);
+  }
+
+  toggle(panel: PanelId): void {
+    if (this.panels[panel]) this.close(panel);
+    else this.open(panel);
+  }
+}
+
+export const view = new View();
