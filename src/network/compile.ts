@@ -1,0 +1,103 @@
+import type { Circuit, Part } from '../circuit/model.ts';
+import { labelOf } from '../circuit/model.ts';
+import type { ActuatorElement, PartKind } from '../parts/contract.ts';
+import { findLines } from './lines.ts';
+import type {
+  NetAccumulator,
+  NetActuator,
+  NetInput,
+  NetOpenPort,
+  NetPath,
+  NetPump,
+  NetRelief,
+  Network,
+} from './network.ts';
+
+/**
+ * Circuit + part kinds → dense arrays. The circuit must have passed the checks of the parts floor:
+ * known kinds, connections between ports that exist.
+ */
+export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartKind): Network {
+  const { lines, shown, lineOf } = findLines(circuit, kindOf);
+  const inputs: NetInput[] = [];
+  const paths: NetPath[] = [];
+  const pumps: NetPump[] = [];
+  const reliefs: NetRelief[] = [];
+  const accumulators: NetAccumulator[] = [];
+  const actuators: NetActuator[] = [];
+  const openPorts: NetOpenPort[] = [];
+
+  circuit.parts.forEach((part, index) => {
+    const kind = kindOf(part.kind);
+    const at = (port: string): number => {
+      const line = lineOf.get(`${part.id}.${port}`);
+      if (line === undefined) throw new Error(`${kind.kind} has an element at port ${port}, which it does not have`);
+      return line;
+    };
+    const spec = kind.input?.(part);
+    const input = spec ? inputs.length : -1;
+    if (spec) inputs.push({ part: index, ...spec });
+
+    for (const element of kind.elements(part)) {
+      switch (element.type) {
+        case 'path':
+          paths.push({
+            part: index,
+            from: at(element.from),
+            to: at(element.to),
+            fromPort: element.from,
+            toPort: element.to,
+            oneWay: element.way === 'one-way',
+            throttled: element.throttled,
+            input: element.positions ? input : -1,
+            positions: (element.positions ?? []).reduce((mask, p) => mask | (1 << p), 0),
+            pilot: element.pilot ? at(element.pilot.port) : -1,
+          });
+          break;
+        case 'pressure-opened':
+          reliefs.push({ part: index, from: at(element.from), to: at(element.to) });
+          break;
+        case 'pump':
+          pumps.push({
+            part: index,
+            outlet: at(element.outlet),
+            suction: at(element.suction),
+            compensated: element.form === 'compensated',
+            tightWhenStopped: element.tightWhenStopped,
+          });
+          break;
+        case 'accumulator':
+          accumulators.push({ part: index, line: at(element.port), charged: element.charged });
+          break;
+        case 'actuator':
+          actuators.push(compileActuator(element, index, at));
+          break;
+        case 'tank':
+          break;
+      }
+    }
+    for (const port of kind.ports(part)) {
+      const line = at(port.id);
+      if (line >= shown && port.leftOpen) openPorts.push({ part: index, port: port.id, line, ...port.leftOpen });
+    }
+  });
+
+  const parts = circuit.parts.map((part: Part) => ({ id: part.id, label: labelOf(part), kind: part.kind }));
+  return { lines, shown, inputs, paths, pumps, reliefs, accumulators, actuators, parts, openPorts, lineOf };
+}
+
+function compileActuator(element: ActuatorElement, part: number, at: (port: string) => number): NetActuator {
+  const { spring, load } = element;
+  const gravity = load.size > 0 && (load.sense === 'in' || load.sense === 'out') ? load.sense : undefined;
+  const way = gravity && spring && gravity !== spring ? 'both' : (gravity ?? spring ?? 'none');
+  return {
+    part,
+    a: at(element.a),
+    b: element.b === undefined ? -1 : at(element.b),
+    rotary: element.motion === 'rotary',
+    areaA: element.areaA,
+    areaB: element.areaB,
+    push: { way, by: gravity ? 'load' : 'spring', size: gravity ? load.size : 0 },
+    resisting: load.sense === 'resisting' && load.size > 0,
+  };
+}

@@ -1,0 +1,103 @@
+/**
+ * A circuit as dense integers: lines, open paths between them, inputs, sources, actuators.
+ * Every array is indexed by the number that the others refer to; -1 means none.
+ */
+export interface Network {
+  readonly lines: readonly NetLine[];
+  /** The first `shown` lines are drawn; the others are single open ports, plugged. */
+  readonly shown: number;
+  readonly inputs: readonly NetInput[];
+  readonly paths: readonly NetPath[];
+  readonly pumps: readonly NetPump[];
+  readonly reliefs: readonly NetRelief[];
+  readonly accumulators: readonly NetAccumulator[];
+  readonly actuators: readonly NetActuator[];
+  readonly parts: readonly NetPart[];
+  /** Ports with nothing on them that have something to say about it. */
+  readonly openPorts: readonly NetOpenPort[];
+  /** `V1.A` (part id) → line. */
+  readonly lineOf: ReadonlyMap<string, number>;
+}
+
+export interface NetLine {
+  readonly name: string;
+  /** `V1.A`, part ids, in document order. */
+  readonly ports: readonly string[];
+  readonly connections: readonly string[];
+  /** A tank symbol stands on it: it absorbs, and gives suction. */
+  readonly tank: boolean;
+}
+
+export interface NetPart {
+  readonly id: string;
+  readonly label: string;
+  readonly kind: string;
+}
+
+export interface NetInput {
+  readonly part: number;
+  readonly positions: readonly string[];
+  readonly rest?: number;
+  readonly by: 'lever' | 'pedal' | 'button' | 'coil' | 'hand' | 'coupling';
+  readonly coils: readonly { readonly name: string; readonly position: number }[];
+}
+
+export interface NetPath {
+  readonly part: number;
+  readonly from: number;
+  readonly to: number;
+  readonly fromPort: string;
+  readonly toPort: string;
+  readonly oneWay: boolean;
+  readonly throttled: boolean;
+  /** -1: open whatever the inputs are. */
+  readonly input: number;
+  /** Bit p set: open in position p of `input`. */
+  readonly positions: number;
+  /** Line whose pressure opens it; -1: none. */
+  readonly pilot: number;
+}
+
+export interface NetPump {
+  readonly part: number;
+  readonly outlet: number;
+  readonly suction: number;
+  readonly compensated: boolean;
+  readonly tightWhenStopped: boolean;
+}
+
+export interface NetRelief {
+  readonly part: number;
+  readonly from: number;
+  readonly to: number;
+}
+
+export interface NetAccumulator {
+  readonly part: number;
+  readonly line: number;
+  readonly charged: boolean;
+}
+
+export interface NetActuator {
+  readonly part: number;
+  readonly a: number;
+  /** -1: single acting, that side breathes. */
+  readonly b: number;
+  readonly rotary: boolean;
+  /** m²; rotary: m³/rad. */
+  readonly areaA: number;
+  readonly areaB: number;
+  /** What pushes it at rest, with its size (N; rotary: N·m). */
+  readonly push: { readonly way: 'none' | 'in' | 'out' | 'both'; readonly by: 'load' | 'spring'; readonly size: number };
+  /** A load that only resists motion. */
+  readonly resisting: boolean;
+}
+
+export interface NetOpenPort {
+  readonly part: number;
+  readonly port: string;
+  readonly line: number;
+  readonly level: 'danger' | 'caution' | 'note';
+  readonly what: string;
+  readonly remedy: string;
+}
