@@ -61,6 +61,7 @@ export default defineConfig(
         ...NEWER_THAN_ES5.map((selector) => ({ selector, message: 'Too new for an old Node.' })),
       ],
       'prefer-const': 'off',
+      'svelte/no-inner-declarations': 'off',
       '@typescript-eslint/no-require-imports': 'off',
     },
   },
