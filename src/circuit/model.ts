@@ -79,12 +79,20 @@ export interface ValveData {
   readonly left: readonly Operator[];
   readonly right: readonly Operator[];
   /** Which coil leads to which position; two coils on at once are not permitted. */
-  readonly coils?: readonly { readonly name: string; readonly position: number }[];
+  readonly coils?: readonly ValveCoil[];
+  readonly extra?: Extra;
+}
+
+export interface ValveCoil {
+  readonly name: string;
+  readonly position: number;
+  readonly extra?: Extra;
 }
 
 export interface ValvePort {
   readonly id: string;
   readonly side: 'top' | 'bottom';
+  readonly extra?: Extra;
 }
 
 export interface ValvePosition {
@@ -95,6 +103,7 @@ export interface ValvePosition {
    * `P-A-B` all joined. A port that no path names is shut.
    */
   readonly paths: readonly string[];
+  readonly extra?: Extra;
 }
 
 export type Operator = 'lever' | 'pedal' | 'button' | 'coil' | 'spring' | 'detent' | 'hand' | 'roller' | 'pilot';

@@ -1,0 +1,175 @@
+import type { Point } from '../base/points.ts';
+import { bad, good, type Problem, type Result } from '../base/result.ts';
+import { parseJson, sayPath } from './json.ts';
+import { LIMITS } from './limits.ts';
+import { migrate, STEPS, type RawFile, type Step } from './migrate.ts';
+import { labelOf, type Circuit, type Connection, type Extra, type Label, type Part, type PortRef, type ValveData } from './model.ts';
+import { quote, sayIssue, shorten } from './problems.ts';
+import { fileSchema, FORMAT, KNOWN, type FileCircuit, type FileConnection, type FileLabel, type FilePart, type FileValve } from './schema.ts';
+
+export { writeCircuit } from './write.ts';
+
+/**
+ * Read a `*.spool.json` text. A file with a problem is refused whole; unknown fields and doubled
+ * connections are kept and come back as warnings. Part kinds and their ports are not looked at here.
+ */
+export function readCircuit(text: string, steps: ReadonlyMap<number, Step> = STEPS): Result<Circuit> {
+  const parsed = parseJson(text);
+  if (!parsed.ok) return parsed;
+  const raw = parsed.value;
+  if (typeof raw !== 'object' || raw === null || Array.isArray(raw)) {
+    return bad({ where: 'file', what: 'The file holds no circuit: it is not an object.', remedy: 'Open a file that this program has saved.' });
+  }
+  const refused = checkFormat(raw as RawFile);
+  if (refused) return bad(refused);
+  const raised = migrate(raw as RawFile, steps);
+  if (!raised.ok) return raised;
+  const tooMany = checkSize(raised.value);
+  if (tooMany) return bad(tooMany);
+  const shaped = fileSchema.safeParse(raised.value);
+  if (!shaped.success) return bad(...shorten(shaped.error.issues.map((issue) => sayIssue(issue, raised.value))));
+  const warnings: Problem[] = [];
+  const circuit = toCircuit(shaped.data, warnings);
+  const problems = [...checkIds(circuit), ...checkConnections(circuit, warnings)];
+  return problems.length > 0 ? bad(...shorten(problems)) : good(circuit, shorten(warnings));
+}
+
+function checkFormat(raw: RawFile): Problem | undefined {
+  if (raw['format'] === FORMAT) return undefined;
+  const remedy = `A circuit file starts with "format": "${FORMAT}".`;
+  if (raw['format'] === undefined) return { where: 'format', what: 'The format is missing: this may be some other JSON file.', remedy };
+  return { where: 'format', what: `The format is ${quote(raw['format'])}.`, remedy };
+}
+
+function checkSize(raw: RawFile): Problem | undefined {
+  for (const field of ['parts', 'connections', 'labels'] as const) {
+    const list = raw[field];
+    if (Array.isArray(list) && list.length > LIMITS[field]) {
+      return { where: field, what: `The circuit has ${list.length} ${field}; at most ${LIMITS[field]} can be read.`, remedy: 'Split it into several circuits.' };
+    }
+  }
+  return undefined;
+}
+
+/** Drops `undefined` fields: the model has a field or has it not. */
+type Loose<T> = { [K in keyof T]: T[K] | undefined };
+function solid<T extends object>(fields: Loose<T>): T {
+  const out: Record<string, unknown> = {};
+  for (const [key, value] of Object.entries(fields)) if (value !== undefined) out[key] = value;
+  return out as T;
+}
+
+/** `-0` becomes 0, so that equal places are equal. */
+const toPoint = ([x, y]: readonly [number, number]): Point => ({ x: x + 0, y: y + 0 });
+function toPort(text: string): PortRef {
+  const dot = text.indexOf('.');
+  return { part: text.slice(0, dot), port: text.slice(dot + 1) };
+}
+
+function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
+  const extraOf = (object: Record<string, unknown>, known: ReadonlySet<string>, path: readonly PropertyKey[]): Extra | undefined => {
+    let extra: Record<string, unknown> | undefined;
+    for (const key of Object.keys(object)) {
+      if (known.has(key)) continue;
+      (extra ??= {})[key] = object[key];
+      warnings.push({ where: sayPath([...path, key]), what: 'This field is unknown.', remedy: 'It is kept and saved again, but has no effect.' });
+    }
+    return extra;
+  };
+  const toValve = (valve: FileValve, path: readonly PropertyKey[]): ValveData =>
+    solid<Required<ValveData>>({
+      ports: valve.ports.map((port, i) => solid({ id: port.id, side: port.side, extra: extraOf(port, KNOWN.valvePort, [...path, 'ports', i]) })),
+      positions: valve.positions.map((position, i) =>
+        solid({ name: position.name, paths: position.paths, extra: extraOf(position, KNOWN.valvePosition, [...path, 'positions', i]) }),
+      ),
+      crossovers: valve.crossovers,
+      rest: valve.rest,
+      left: valve.left,
+      right: valve.right,
+      coils: valve.coils?.map((coil, i) => solid({ name: coil.name, position: coil.position, extra: extraOf(coil, KNOWN.coil, [...path, 'coils', i]) })),
+      extra: extraOf(valve, KNOWN.valve, path),
+    });
+  const toPart = (part: FilePart, i: number): Part =>
+    solid<Required<Part>>({
+      id: part.id,
+      kind: part.kind,
+      label: part.label,
+      code: part.code,
+      at: part.at && toPoint(part.at),
+      turn: part.turn,
+      flip: part.flip,
+      settings: part.settings,
+      valve: part.valve && toValve(part.valve, ['parts', i, 'valve']),
+      extra: extraOf(part, KNOWN.part, ['parts', i]),
+    });
+  const toConnection = (connection: FileConnection, i: number): Connection =>
+    solid<Required<Connection>>({
+      id: connection.id,
+      from: toPort(connection.from),
+      to: toPort(connection.to),
+      name: connection.name,
+      use: connection.use,
+      bends: connection.bends?.map(toPoint),
+      extra: extraOf(connection, KNOWN.connection, ['connections', i]),
+    });
+  const toLabel = (label: FileLabel, i: number): Label =>
+    solid<Required<Label>>({ id: label.id, at: toPoint(label.at), text: label.text, extra: extraOf(label, KNOWN.label, ['labels', i]) });
+  return solid<Required<Circuit>>({
+    name: file.name,
+    title: file.title,
+    notes: file.notes,
+    parts: file.parts.map(toPart),
+    connections: file.connections.map(toConnection),
+    labels: file.labels?.map(toLabel),
+    extra: extraOf(file, KNOWN.circuit, []),
+  });
+}
+
+function checkIds(circuit: Circuit): Problem[] {
+  const problems: Problem[] = [];
+  for (const field of ['parts', 'connections', 'labels'] as const) {
+    const first = new Map<string, number>();
+    for (const [i, { id }] of (circuit[field] ?? []).entries()) {
+      const before = first.get(id);
+      if (before === undefined) first.set(id, i);
+      else problems.push({ where: `${field}[${i}].id`, what: `The id "${id}" is taken by ${field}[${before}].`, remedy: 'Give it another id.' });
+    }
+  }
+  const shown = new Map<string, Part>();
+  for (const [i, part] of circuit.parts.entries()) {
+    const other = shown.get(labelOf(part));
+    if (other === undefined) shown.set(labelOf(part), part);
+    else if (other.id !== part.id) {
+      problems.push({
+        where: part.label === undefined ? `parts[${i}].id` : `parts[${i}].label`,
+        what: `The part ${other.id} is shown as "${labelOf(part)}" too, so the two could not be told apart.`,
+        remedy: 'Give one of them another label.',
+      });
+    }
+  }
+  return problems;
+}
+
+function checkConnections(circuit: Circuit, warnings: Problem[]): Problem[] {
+  const problems: Problem[] = [];
+  const parts = new Set(circuit.parts.map((part) => part.id));
+  const pairs = new Map<string, string>();
+  for (const [i, { id, from, to }] of circuit.connections.entries()) {
+    const where = `connections[${i}]`;
+    for (const [end, ref] of [['from', from], ['to', to]] as const) {
+      if (!parts.has(ref.part)) {
+        problems.push({ where: `${where}.${end}`, what: `There is no part "${ref.part}".`, remedy: 'Correct the part id, or remove the connection.' });
+      }
+    }
+    const ends = [`${from.part}.${from.port}`, `${to.part}.${to.port}`].sort();
+    if (ends[0] === ends[1]) {
+      problems.push({ where, what: `The connection goes from ${ends[0]} to itself.`, remedy: 'Connect it to another port, or remove it.' });
+      continue;
+    }
+    const pair = ends.join(' ');
+    const before = pairs.get(pair);
+    if (before === undefined) pairs.set(pair, id);
+    else warnings.push({ where, what: `The connection "${before}" joins ${ends[0]} and ${ends[1]} already.`, remedy: 'Remove one of the two.' });
+  }
+  return problems;
+}

@@ -1,0 +1,114 @@
+import { z } from 'zod';
+import { ID, ID_REMEDY, LIMITS, ONE_LINE, PORT_REF, RESERVED, SEVERAL_LINES } from './limits.ts';
+
+// The page forbids building code from text, and zod would try to.
+z.config({ jitless: true });
+
+export const FORMAT = 'spooltable-circuit';
+export const VERSION = 1;
+
+/** Parts a zod message into the two halves of a problem; see `problems.ts`. */
+export const HALVES = '\n';
+const say = (what: string, remedy: string): string => what + HALVES + remedy;
+
+const id = z
+  .string()
+  .max(LIMITS.id, say(`This id is longer than ${LIMITS.id} characters.`, ID_REMEDY))
+  .regex(ID, say('This is no id.', ID_REMEDY))
+  .refine((text) => !RESERVED.has(text), say('This word cannot be an id.', 'Choose another id.'));
+
+const line = z
+  .string()
+  .max(LIMITS.label, say(`This text is longer than ${LIMITS.label} characters.`, 'Shorten it.'))
+  .regex(ONE_LINE, say('This text holds a control character.', 'Remove tabs, line breaks and other control characters.'));
+
+const portRef = z
+  .string()
+  .max(2 * LIMITS.id + 1, say('This port is too long.', 'Write part and port with a dot between them, such as "V1.A".'))
+  .regex(PORT_REF, say('This is no port.', 'Write part and port with a dot between them, such as "V1.A".'))
+  .refine((text) => !text.split('.').some((word) => RESERVED.has(word)), say('This word cannot name a part or port.', 'Choose another id.'));
+
+const far = say(`This point lies off the sheet.`, `Use numbers from -${LIMITS.coordinate} to ${LIMITS.coordinate}.`);
+const coordinate = z.number().min(-LIMITS.coordinate, far).max(LIMITS.coordinate, far);
+const spot = z
+  .tuple([coordinate, coordinate], say('This is no point.', 'Write two numbers, [x, y], in modules.'))
+  .meta({ description: 'x and y in modules (1 module = 2.5 mm on paper), x right, y down' });
+
+const index = z.int().min(0, say('A position cannot be negative.', 'Count positions from 0.'));
+const setting = z.union([line, z.number(), z.boolean()], {
+  error: say('This is no setting.', `Write a text of one line, at most ${LIMITS.label} characters, a finite number, true or false.`),
+});
+
+const valve = z.looseObject({
+  ports: z.array(z.looseObject({ id, side: z.enum(['top', 'bottom']) })),
+  positions: z.array(z.looseObject({ name: line, paths: z.array(line) })),
+  crossovers: z.array(z.array(line)).optional(),
+  rest: index.optional(),
+  left: z.array(z.enum(['lever', 'pedal', 'button', 'coil', 'spring', 'detent', 'hand', 'roller', 'pilot'])),
+  right: z.array(z.enum(['lever', 'pedal', 'button', 'coil', 'spring', 'detent', 'hand', 'roller', 'pilot'])),
+  coils: z.array(z.looseObject({ name: line, position: index })).optional(),
+});
+
+const part = z.looseObject({
+  id,
+  kind: line.min(1, say('The kind is empty.', 'Write a part kind, such as "tank".')),
+  label: line.min(1, say('The label is empty.', 'Write a label or leave the field out.')).optional(),
+  code: line.optional(),
+  at: spot.optional(),
+  turn: z.union([z.literal(0), z.literal(90), z.literal(180), z.literal(270)], say('This is no quarter turn.', 'Use 0, 90, 180 or 270.')).optional(),
+  flip: z.boolean().optional(),
+  settings: z.record(line, setting).optional(),
+  valve: valve.optional(),
+});
+
+const connection = z.looseObject({
+  id,
+  from: portRef,
+  to: portRef,
+  name: line.min(1, say('The name is empty.', 'Write a name or leave the field out.')).optional(),
+  use: z.enum(['working', 'pilot', 'drain']).optional(),
+  bends: z.array(spot).max(LIMITS.bends, say('Too many bends.', `Use at most ${LIMITS.bends}.`)).optional(),
+});
+
+const label = z.looseObject({ id, at: spot, text: line });
+
+export const fileSchema = z
+  .looseObject({
+    format: z.literal(FORMAT),
+    version: z.literal(VERSION),
+    name: line,
+    title: z.record(line, line).optional(),
+    notes: z
+      .string()
+      .max(LIMITS.notes, say(`The notes are longer than ${LIMITS.notes} characters.`, 'Shorten them.'))
+      .regex(SEVERAL_LINES, say('The notes hold a control character.', 'Keep only text, tabs and line breaks.'))
+      .optional(),
+    parts: z.array(part).max(LIMITS.parts),
+    connections: z.array(connection).max(LIMITS.connections),
+    labels: z.array(label).max(LIMITS.labels, say('Too many labels.', `Use at most ${LIMITS.labels}.`)).optional(),
+  })
+  .meta({ title: 'Spooltable circuit', description: 'A hydraulic circuit: parts, and connections between their ports.' });
+
+export type FileCircuit = z.infer<typeof fileSchema>;
+export type FilePart = z.infer<typeof part>;
+export type FileConnection = z.infer<typeof connection>;
+export type FileLabel = z.infer<typeof label>;
+export type FileValve = z.infer<typeof valve>;
+
+const fields = (shape: object): ReadonlySet<string> => new Set(Object.keys(shape));
+/** The fields that this version knows, for each kind of object in the file. */
+export const KNOWN = {
+  circuit: fields(fileSchema.shape),
+  part: fields(part.shape),
+  connection: fields(connection.shape),
+  label: fields(label.shape),
+  valve: fields(valve.shape),
+  valvePort: fields(valve.shape.ports.element.shape),
+  valvePosition: fields(valve.shape.positions.element.shape),
+  coil: new Set(['name', 'position']) as ReadonlySet<string>,
+} as const;
+
+/** The file as a JSON Schema (draft 2020-12). It cannot tell ids that clash or connections that lead nowhere. */
+export function jsonSchema(): Record<string, unknown> {
+  return { ...z.toJSONSchema(fileSchema, { io: 'input', target: 'draft-2020-12' }) };
+}
