@@ -1,0 +1,39 @@
+import type { Box, Placement, Point, Side } from '../base/points.ts';
+import { place, placeBox, placeSide } from '../base/points.ts';
+import type { Part, PortRef } from '../circuit/model.ts';
+import { kindOf } from '../parts/catalogue.ts';
+import type { PortSpec } from '../parts/contract.ts';
+
+/** Parts of a kind that the catalogue does not know are still shown, as an empty box. */
+const UNKNOWN_BOUNDS: Box = { x: -2, y: -2, width: 4, height: 4 };
+const ORIGIN: Point = { x: 0, y: 0 };
+
+export interface PlacedPort {
+  readonly ref: PortRef;
+  readonly at: Point;
+  readonly side: Side;
+  readonly role: PortSpec['role'];
+}
+
+export const placementOf = (part: Part): Placement => ({
+  at: part.at ?? ORIGIN,
+  turn: part.turn ?? 0,
+  flip: part.flip ?? false,
+});
+
+export const portSpecs = (part: Part): readonly PortSpec[] => kindOf(part.kind)?.ports(part) ?? [];
+
+export const ownBox = (part: Part): Box => kindOf(part.kind)?.bounds(part) ?? UNKNOWN_BOUNDS;
+
+/** The part's outline on the sheet. */
+export const partBox = (part: Part): Box => placeBox(ownBox(part), placementOf(part));
+
+export function placedPorts(part: Part): PlacedPort[] {
+  const placement = placementOf(part);
+  return portSpecs(part).map((port) => ({
+    ref: { part: part.id, port: port.id },
+    at: place(port.at, placement),
+    side: placeSide(port.side, placement),
+    role: port.role,
+  }));
+}
