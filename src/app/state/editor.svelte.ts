@@ -1,6 +1,7 @@
 import type { Circuit } from '../../circuit/model.ts';
-import type { Edit } from '../../circuit/edits.ts';
-import { History } from '../../circuit/history.ts';
+import type { Edit } from '../../circuit/edit.ts';
+import { begin, canRedo, canUndo, commit, endBurst, isSaved, markSaved, redo, undo } from '../../circuit/history.ts';
+import type { History } from '../../circuit/history.ts';
 
 /** What is picked on the sheet, by id. */
 export interface Selection {
@@ -11,26 +12,21 @@ export interface Selection {
 
 export const NOTHING: Selection = { parts: [], connections: [], labels: [] };
 
-const EMPTY: Circuit = { name: 'untitled', parts: [], connections: [] };
+export interface OpenFile {
+  readonly name: string | undefined;
+  readonly handle?: FileSystemFileHandle | undefined;
+}
+
+export const EMPTY: Circuit = { name: 'untitled', parts: [], connections: [] };
 
 /** The circuit under the pen: every change goes through `do`, and every change can be taken back. */
 class Editor {
-  #history = $state.raw(new History(EMPTY));
-  /** Rises with every change of the history, which keeps its own state. */
-  #turn = $state(0);
+  #history = $state.raw<History>(begin(EMPTY));
 
-  circuit: Circuit = $derived.by(() => {
-    void this.#turn;
-    return this.#history.circuit;
-  });
-  canUndo = $derived.by(() => {
-    void this.#turn;
-    return this.#history.canUndo;
-  });
-  canRedo = $derived.by(() => {
-    void this.#turn;
-    return this.#history.canRedo;
-  });
+  history = $derived(this.#history);
+  circuit: Circuit = $derived(this.#history.present);
+  canUndo = $derived(canUndo(this.#history));
+  canRedo = $derived(canRedo(this.#history));
 
   #selection = $state.raw<Selection>(NOTHING);
   /** Never names what is no longer there. */
@@ -40,24 +36,25 @@ class Editor {
   fileName = $state<string | undefined>();
   /** Where `Save` writes; browsers without file access have none. */
   handle = $state.raw<FileSystemFileHandle | undefined>();
-  /** The circuit as it stands in the file. */
-  #saved = $state.raw<Circuit>(EMPTY);
-  dirty = $derived(this.circuit !== this.#saved);
+  /** Differs from what stands in the file. */
+  dirty = $derived(!isSaved(this.#history));
 
-  /** Apply an edit. Edits with the same `burst` in a row are one undo. */
+  /** Apply an edit; edits with the same `burst`, one after another, are one undo. Throws `RefusedEdit`. */
   do(edit: Edit, burst?: string): void {
-    this.#history.commit(edit, burst);
-    this.#turn++;
+    this.#history = commit(this.#history, edit, burst);
+  }
+
+  /** The next edit starts an undo step of its own. */
+  endBurst(): void {
+    this.#history = endBurst(this.#history);
   }
 
   undo(): void {
-    this.#history.undo();
-    this.#turn++;
+    this.#history = undo(this.#history);
   }
 
   redo(): void {
-    this.#history.redo();
-    this.#turn++;
+    this.#history = redo(this.#history);
   }
 
   select(selection: Partial<Selection>): void {
@@ -68,20 +65,18 @@ class Editor {
     return this.selection[what].includes(id);
   }
 
-  /** Put another circuit under the pen; its undo starts afresh unless a history is given. */
-  load(circuit: Circuit, file?: { readonly name?: string; readonly handle?: FileSystemFileHandle }): void {
-    this.#history = new History(circuit);
-    this.#turn++;
+  /** Put another circuit under the pen, with its history if it has one. */
+  load(history: History, file?: OpenFile): void {
+    this.#history = history;
     this.#selection = NOTHING;
     this.fileName = file?.name;
     this.handle = file?.handle;
-    this.#saved = circuit;
   }
 
-  markSaved(name: string, handle?: FileSystemFileHandle): void {
-    this.fileName = name;
-    this.handle = handle;
-    this.#saved = this.circuit;
+  markSaved(file: OpenFile): void {
+    this.#history = markSaved(this.#history);
+    this.fileName = file.name;
+    this.handle = file.handle;
   }
 }
 

@@ -15,6 +15,7 @@ import type {
 import { editor } from './editor.svelte.ts';
 import { inputsOf } from './inputs.ts';
 import type { CircuitInput } from './inputs.ts';
+import { view } from './view.svelte.ts';
 
 /** How a drawn connection is to look in the current row. */
 export interface ConnectionLook {
@@ -43,10 +44,10 @@ export interface Lit {
   readonly steps: readonly LitStep[];
 }
 
-/** What a reason is asked for. `index` counts within the row's actuators, pumps or lines of the table. */
+/** What a reason is asked for: an actuator or pump by part id, a line by its name. */
 export interface Subject {
   readonly of: 'actuator' | 'pump' | 'line';
-  readonly index: number;
+  readonly key: string;
 }
 
 const DARK: Lit = { lines: [], parts: [], steps: [] };
@@ -151,10 +152,12 @@ class Session {
     this.conditions = { pumps: this.conditions.pumps, places };
   }
 
+  /** Show the reason of a verdict of the current row, in its panel and on the sheet. */
   why(subject: Subject): void {
     this.subject = subject;
     this.step = undefined;
     this.finding = undefined;
+    view.open('why');
   }
 
   whyNot(): void {
@@ -226,9 +229,10 @@ class Session {
   #stepsOnShow(): readonly ReasonStep[] {
     const { explanation, subject } = this;
     if (!explanation || !subject || explanation.row !== this.row) return [];
-    if (subject.of === 'actuator') return explanation.actuators[subject.index]?.steps ?? [];
-    if (subject.of === 'pump') return explanation.pumps[subject.index]?.steps ?? [];
-    return explanation.trapped.find((line) => line.line === subject.index)?.steps ?? [];
+    const { key } = subject;
+    if (subject.of === 'actuator') return explanation.actuators.find((each) => each.part === key)?.steps ?? [];
+    if (subject.of === 'pump') return explanation.pumps.find((each) => each.part === key)?.steps ?? [];
+    return explanation.trapped.find((line) => line.name === key)?.steps ?? [];
   }
 
   #light(): Lit {

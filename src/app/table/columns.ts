@@ -1,0 +1,186 @@
+import { countBits, emptySet, orInto } from '../../base/bits.ts';
+import type { BitSet } from '../../base/bits.ts';
+import { ACTUATOR_VERDICTS, PUMP_VERDICTS, TRAP_REASONS } from '../../worker/client.ts';
+import type { StateTable } from '../../worker/client.ts';
+
+export type ColumnOf = 'row' | 'input' | 'coil' | 'actuator' | 'pump' | 'blocked' | 'trapped' | 'notes';
+
+export interface Column {
+  /** Unique in the table, also the key of its filter. */
+  readonly id: string;
+  readonly of: ColumnOf;
+  /** Of the input, actuator or pump; 0 for the rest. */
+  readonly index: number;
+  readonly title: string;
+  /** Coil columns: position that the coil leads to. */
+  readonly position?: number;
+  /** Track of the CSS grid. */
+  readonly track: string;
+  /** Least width in px. */
+  readonly width: number;
+}
+
+export interface ColumnGroup {
+  readonly title: string;
+  readonly columns: readonly Column[];
+}
+
+const CHARACTER = 6.9;
+const PADDING = 16;
+/** Room for the sort arrow and the filter mark in a head. */
+const MARKS = 34;
+const GLYPH = 23;
+
+const fits = (texts: readonly string[], extra: number, head: string): number =>
+  Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * CHARACTER * 0.95 + MARKS) + PADDING);
+
+function fixed(column: Omit<Column, 'track'>): Column {
+  return { ...column, track: `${column.width}px` };
+}
+
+function wide(id: 'blocked' | 'trapped' | 'notes', title: string, width: number, share: number): Column {
+  return { id, of: id, index: 0, title, width, track: `minmax(${width}px, ${share}fr)` };
+}
+
+export function columnGroups(table: StateTable): ColumnGroup[] {
+  const { data } = table;
+  const digits = String(data.count).length;
+  const row = fixed({ id: 'row', of: 'row', index: 0, title: 'row', width: Math.max(76, digits * 8 + 34) });
+  const levers = data.inputs.flatMap((input, index): Column[] => [
+    fixed({ id: `input:${index}`, of: 'input', index, title: input.label, width: fits(input.positions, 0, input.label) }),
+    ...input.coils.map((coil, i) =>
+      fixed({
+        id: `coil:${index}:${i}`,
+        of: 'coil',
+        index,
+        title: coil.name,
+        position: coil.position,
+        width: Math.ceil(Math.max(40, coil.name.length * CHARACTER) + PADDING),
+      }),
+    ),
+  ]);
+  const actuators = data.actuators.map((actuator, index) => {
+    const words = table.actuatorCounts(index).map((each) => each.verdict);
+    return fixed({
+      id: `actuator:${index}`,
+      of: 'actuator',
+      index,
+      title: actuator.label,
+      width: fits(words.length > 0 ? words : ['held'], GLYPH + 26, actuator.label),
+    });
+  });
+  const pumps = data.pumps.map((pump, index) => {
+    const words = table.pumpCounts(index).map((each) => each.verdict);
+    return fixed({
+      id: `pump:${index}`,
+      of: 'pump',
+      index,
+      title: pump.label,
+      width: fits(words.length > 0 ? words : ['working'], GLYPH + 26, pump.label),
+    });
+  });
+  const groups: ColumnGroup[] = [
+    { title: '', columns: [row] },
+    { title: 'Levers', columns: levers },
+    { title: 'Actuators', columns: actuators },
+    { title: 'Pumps', columns: pumps },
+    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 236, 1.3)] },
+    { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 236, 1.5)] },
+    { title: 'Danger, notes', columns: [wide('notes', '', 190, 1)] },
+  ];
+  return groups.filter((group) => group.columns.length > 0);
+}
+
+export interface Option {
+  readonly value: number;
+  readonly text: string;
+  readonly rows: number;
+}
+
+/** Rows with input `index` in `position`. */
+function positionPlane(table: StateTable, index: number, position: number): BitSet {
+  const { data } = table;
+  const plane = emptySet(data.count);
+  const stride = data.inputs.slice(index + 1).reduce((n, input) => n * input.positions.length, 1);
+  const cycle = stride * (data.inputs[index]?.positions.length ?? 1);
+  for (let start = position * stride; start < data.count; start += cycle) {
+    for (let row = start; row < start + stride; row++) plane[row >>> 5] = (plane[row >>> 5] as number) | (1 << (row & 31));
+  }
+  return plane;
+}
+
+function joined(table: StateTable, planes: readonly (BitSet | undefined)[]): BitSet {
+  const any = emptySet(table.count);
+  for (const plane of planes) if (plane) orInto(any, plane);
+  return any;
+}
+
+export const LEVELS = ['danger', 'note', 'nothing'] as const;
+
+/** Danger and notes that follow from the table's own planes. */
+export function levelPlanes(table: StateTable): [BitSet, BitSet, BitSet] {
+  const dead = PUMP_VERDICTS.indexOf('dead-headed');
+  const danger = joined(table, table.data.pumpPlanes.map((planes) => planes[dead]));
+  const note = joined(table, table.data.actuatorNotes.flat());
+  const nothing = emptySet(table.count);
+  for (let w = 0; w < nothing.length; w++) {
+    note[w] = (note[w] as number) & ~(danger[w] as number);
+    nothing[w] = ~((danger[w] as number) | (note[w] as number));
+  }
+  const used = table.count & 31;
+  if (used !== 0) {
+    const last = nothing.length - 1;
+    nothing[last] = (nothing[last] as number) & ((1 << used) - 1);
+  }
+  return [danger, note, nothing];
+}
+
+/** Rows that option `value` of the column's filter keeps. */
+export function planeOf(table: StateTable, column: Pick<Column, 'of' | 'index'>, value: number): BitSet {
+  const { data } = table;
+  switch (column.of) {
+    case 'input':
+    case 'coil':
+      return positionPlane(table, column.index, value);
+    case 'actuator':
+      return joined(table, [data.actuatorPlanes[column.index]?.[value]]);
+    case 'pump':
+      return joined(table, [data.pumpPlanes[column.index]?.[value]]);
+    case 'blocked':
+      return joined(table, data.blockedPlanes[value] ?? []);
+    case 'trapped':
+      return joined(table, data.trapPlanes.map((planes) => planes[value]));
+    case 'notes':
+      return levelPlanes(table)[value] ?? emptySet(table.count);
+    case 'row':
+      return emptySet(table.count);
+  }
+}
+
+/** What a column can be filtered by, with the number of rows of each in the whole table. */
+export function optionsOf(table: StateTable, column: Column): Option[] {
+  const { data } = table;
+  const counted = (value: number, text: string): Option[] => {
+    const rows = countBits(planeOf(table, column, value));
+    return rows > 0 ? [{ value, text, rows }] : [];
+  };
+  switch (column.of) {
+    case 'input':
+    case 'coil': {
+      const positions = data.inputs[column.index]?.positions ?? [];
+      return positions.map((text, value) => ({ value, text, rows: data.count / positions.length }));
+    }
+    case 'actuator':
+      return ACTUATOR_VERDICTS.flatMap((word, value) => counted(value, word));
+    case 'pump':
+      return PUMP_VERDICTS.flatMap((word, value) => counted(value, word));
+    case 'blocked':
+      return data.lines.flatMap((line, value) => counted(value, line.name));
+    case 'trapped':
+      return TRAP_REASONS.flatMap((word, value) => counted(value, word));
+    case 'notes':
+      return LEVELS.flatMap((word, value) => counted(value, word));
+    case 'row':
+      return [];
+  }
+}

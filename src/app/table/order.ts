@@ -1,0 +1,166 @@
+import { fullSet, has, members } from '../../base/bits.ts';
+import type { BitSet } from '../../base/bits.ts';
+import { TRAP_REASONS } from '../../worker/client.ts';
+import type { StateTable } from '../../worker/client.ts';
+import { levelPlanes, planeOf } from './columns.ts';
+import type { Column } from './columns.ts';
+
+/** Which rows are shown, and in which order. All of it yields between blocks, so that the screen stays alive. */
+export interface Sort {
+  readonly column: Column;
+  readonly falling: boolean;
+}
+
+export interface ColumnFilter {
+  readonly column: Column;
+  /** Option values that are kept. */
+  readonly keep: readonly number[];
+}
+
+export interface Order {
+  /** Shown place → row. */
+  readonly rows: Uint32Array;
+  /** Row → shown place + 1; 0 = not shown. */
+  readonly places: Uint32Array;
+}
+
+const BLOCK = 1 << 16;
+
+type Work<T> = Generator<undefined, T, undefined>;
+
+function* kept(table: StateTable, filters: readonly ColumnFilter[]): Work<BitSet> {
+  const keep = fullSet(table.count);
+  for (const { column, keep: wanted } of filters) {
+    const any = new Uint32Array(keep.length);
+    for (const value of wanted) {
+      const plane = planeOf(table, column, value);
+      for (let w = 0; w < any.length; w++) any[w] = (any[w] as number) | (plane[w] as number);
+      yield;
+    }
+    for (let w = 0; w < keep.length; w++) keep[w] = (keep[w] as number) & (any[w] as number);
+  }
+  return keep;
+}
+
+/** Adds 1 to the key of every row of the plane. */
+function* tally(keys: Uint16Array, plane: BitSet): Work<void> {
+  let since = 0;
+  for (const row of members(plane)) {
+    keys[row] = (keys[row] as number) + 1;
+    if (++since % BLOCK === 0) yield;
+  }
+}
+
+function* eitherOf(planes: readonly (BitSet | undefined)[], size: number): Work<BitSet> {
+  const any = new Uint32Array(size);
+  for (const plane of planes) {
+    if (!plane) continue;
+    for (let w = 0; w < size; w++) any[w] = (any[w] as number) | (plane[w] as number);
+  }
+  yield;
+  return any;
+}
+
+/** What a column sorts by: the place of the word in its list, or the number of lines. */
+function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
+  const { data } = table;
+  const keys = new Uint16Array(table.count);
+  const words = (table.count + 31) >>> 5;
+  const byWord = function* (planes: readonly (BitSet | undefined)[]): Work<void> {
+    for (const [value, plane] of planes.entries()) {
+      if (!plane) continue;
+      let since = 0;
+      for (const row of members(plane)) {
+        keys[row] = value;
+        if (++since % BLOCK === 0) yield;
+      }
+    }
+  };
+  switch (column.of) {
+    case 'row':
+      break;
+    case 'input':
+    case 'coil':
+      for (let row = 0; row < table.count; row++) {
+        const position = table.position(column.index, row);
+        keys[row] = column.of === 'input' ? position : position === column.position ? 1 : 0;
+        if (row % BLOCK === BLOCK - 1) yield;
+      }
+      break;
+    case 'actuator':
+      yield* byWord(data.actuatorPlanes[column.index] ?? []);
+      break;
+    case 'pump':
+      yield* byWord(data.pumpPlanes[column.index] ?? []);
+      break;
+    case 'blocked':
+      for (const planes of data.blockedPlanes) yield* tally(keys, yield* eitherOf(planes, words));
+      break;
+    case 'trapped': {
+      const heat = TRAP_REASONS.indexOf('heat');
+      for (const planes of data.trapPlanes) {
+        yield* tally(keys, yield* eitherOf(planes.filter((_, reason) => reason !== heat), words));
+      }
+      break;
+    }
+    case 'notes':
+      yield* byWord(levelPlanes(table));
+      break;
+  }
+  return keys;
+}
+
+/**
+ * Counting sort on small whole keys: stable, so rows of one key stay in row order in both directions.
+ * Undefined when the natural order of all rows is asked for.
+ */
+export function* orderRows(
+  table: StateTable,
+  filters: readonly ColumnFilter[],
+  sort: Sort | undefined,
+): Work<Order | undefined> {
+  if (filters.length === 0 && (!sort || (sort.column.of === 'row' && !sort.falling))) return undefined;
+  const keep = yield* kept(table, filters);
+  const shown = new Uint32Array(table.count);
+  let size = 0;
+  for (let row = 0; row < table.count; row++) {
+    if (has(keep, row)) shown[size++] = row;
+    if (row % BLOCK === BLOCK - 1) yield;
+  }
+  let rows = shown.slice(0, size);
+  if (sort?.column.of === 'row') {
+    if (sort.falling) rows.reverse();
+  } else if (sort) {
+    rows = yield* byKey(rows, yield* keysOf(table, sort.column), sort.falling);
+  }
+  const places = new Uint32Array(table.count);
+  for (let i = 0; i < rows.length; i++) {
+    places[rows[i] as number] = i + 1;
+    if (i % BLOCK === BLOCK - 1) yield;
+  }
+  return { rows, places };
+}
+
+function* byKey(rows: Uint32Array, keys: Uint16Array, falling: boolean): Work<Uint32Array> {
+  let top = 0;
+  for (const row of rows) top = Math.max(top, keys[row] as number);
+  yield;
+  const start = new Uint32Array(top + 2);
+  for (const row of rows) {
+    const key = keys[row] as number;
+    const slot = (falling ? top - key : key) + 1;
+    start[slot] = (start[slot] as number) + 1;
+  }
+  for (let k = 1; k < start.length; k++) start[k] = (start[k] as number) + (start[k - 1] as number);
+  yield;
+  const out = new Uint32Array(rows.length);
+  for (let i = 0; i < rows.length; i++) {
+    const row = rows[i] as number;
+    const key = keys[row] as number;
+    const slot = falling ? top - key : key;
+    out[start[slot] as number] = row;
+    start[slot] = (start[slot] as number) + 1;
+    if (i % BLOCK === BLOCK - 1) yield;
+  }
+  return out;
+}

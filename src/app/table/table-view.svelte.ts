@@ -1,0 +1,85 @@
+import { session } from '../state/session.svelte.ts';
+import type { Column } from './columns.ts';
+import { orderRows } from './order.ts';
+import type { ColumnFilter, Order, Sort } from './order.ts';
+import type { StateTable } from '../../worker/client.ts';
+
+/** Longest stretch of work before the screen gets its turn. */
+const SLICE_MS = 8;
+
+/** How the table is sorted and filtered: a look at it, no part of the circuit. */
+class TableView {
+  sort = $state.raw<Sort | undefined>();
+  filters = $state.raw<readonly ColumnFilter[]>([]);
+  #arranged = $state.raw<{ readonly table: StateTable; readonly order: Order | undefined } | undefined>();
+  /** Undefined = all rows in their natural order. An order of another table's rows is none. */
+  order = $derived(this.#arranged?.table === session.table ? this.#arranged?.order : undefined);
+  busy = $state(false);
+
+  shown = $derived(this.order ? this.order.rows.length : (session.table?.count ?? 0));
+
+  #turn = 0;
+
+  rowAt(place: number): number | undefined {
+    if (place < 0 || place >= this.shown) return undefined;
+    return this.order ? this.order.rows[place] : place;
+  }
+
+  /** Where a row is shown; -1 = filtered out. */
+  placeOf(row: number): number {
+    return this.order ? (this.order.places[row] ?? 0) - 1 : row;
+  }
+
+  /** Rising, falling, natural. */
+  cycleSort(column: Column): void {
+    if (this.sort?.column.id !== column.id) this.sort = { column, falling: false };
+    else this.sort = this.sort.falling ? undefined : { column, falling: true };
+  }
+
+  filterOf(column: Column): readonly number[] | undefined {
+    return this.filters.find((filter) => filter.column.id === column.id)?.keep;
+  }
+
+  /** Undefined lifts the column's filter. */
+  setFilter(column: Column, keep: readonly number[] | undefined): void {
+    const rest = this.filters.filter((filter) => filter.column.id !== column.id);
+    this.filters = keep === undefined ? rest : [...rest, { column, keep }];
+  }
+
+  clear(): void {
+    this.filters = [];
+  }
+
+  /** Columns that an edit took away can neither sort nor filter. */
+  adopt(columns: readonly Column[]): void {
+    const known = new Map(columns.map((column) => [`${column.id} ${column.title}`, column]));
+    const same = (column: Column): Column | undefined => known.get(`${column.id} ${column.title}`);
+    this.filters = this.filters.flatMap((filter) => {
+      const column = same(filter.column);
+      return column ? [{ ...filter, column }] : [];
+    });
+    const column = this.sort && same(this.sort.column);
+    this.sort = this.sort && column ? { ...this.sort, column } : undefined;
+  }
+
+  async arrange(table: StateTable | undefined): Promise<void> {
+    const turn = ++this.#turn;
+    if (!table) return;
+    const work = orderRows(table, this.filters, this.sort);
+    let until = performance.now() + SLICE_MS;
+    for (let step = work.next(); ; step = work.next()) {
+      if (step.done) {
+        this.#arranged = { table, order: step.value };
+        this.busy = false;
+        return;
+      }
+      if (performance.now() < until) continue;
+      this.busy = true;
+      await new Promise((resolve) => setTimeout(resolve));
+      if (turn !== this.#turn) return;
+      until = performance.now() + SLICE_MS;
+    }
+  }
+}
+
+export const tableView = new TableView();
