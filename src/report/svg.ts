@@ -1,0 +1,136 @@
+import type { Point } from '../base/points.ts';
+import type { Fill, Pen, Primitive } from '../base/primitives.ts';
+import type { SceneLabel } from '../drawing/labels.ts';
+import type { ColourToken, Theme } from '../drawing/palette.ts';
+import { FONT_FAMILY, PALETTE, PENS } from '../drawing/palette.ts';
+import type { Scene } from '../drawing/scene.ts';
+import type { Stroke } from '../drawing/strokes.ts';
+import { MODULE_PX, pathData } from '../drawing/strokes.ts';
+
+export interface SvgOptions {
+  readonly theme: Theme;
+  /** With its own name space, size and paper: a file of its own. Otherwise an `svg` element to set into a page. */
+  readonly standalone: boolean;
+  /** Free space round the drawing, in modules; 3 when absent. */
+  readonly margin?: number;
+  /** What a reader who cannot see it is told; the circuit's size when absent. */
+  readonly description?: string;
+}
+
+const JOINT_RADIUS = 0.36;
+const ENTITIES: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
+
+/** Safe in text and in attributes; characters that XML 1.0 forbids are left out. */
+export const escapeXml = (text: string): string =>
+  [...text].filter(allowedInXml).join('').replace(/[&<>"']/g, (c) => ENTITIES[c] as string);
+
+function allowedInXml(c: string): boolean {
+  const code = c.codePointAt(0) as number;
+  if (code < 0x20) return code === 9 || code === 10 || code === 13;
+  return !(code >= 0xd800 && code <= 0xdfff) && code !== 0xfffe && code !== 0xffff;
+}
+
+/** The scene as SVG text: plain colours, no style sheet, no script, nothing fetched; any viewer shows it. */
+export function sceneToSvg(scene: Scene, options: SvgOptions): string {
+  const margin = options.margin ?? 3;
+  const { x, y, width, height } = scene.bounds;
+  const view = [x - margin, y - margin, width + 2 * margin, height + 2 * margin];
+  const pen = new Writer(options.theme);
+  const size = `width="${num((view[2] as number) * MODULE_PX)}" height="${num((view[3] as number) * MODULE_PX)}"`;
+  const counts = `${scene.parts.length} parts, ${new Set(scene.lines.map((l) => l.line)).size} lines.`;
+  const body = [
+    `<title>${escapeXml(scene.title)}</title>`,
+    `<desc>${escapeXml(options.description ?? counts)}</desc>`,
+    ...(options.standalone ? [`<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`] : []),
+    ...scene.enclosures.map((e) => pen.group('', e.primitives)),
+    ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
+    ...scene.dots.map((d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour(d.colour)}"/>`),
+    ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
+    ...scene.labels.map((l) => pen.label(l)),
+  ];
+  const head = options.standalone ? '<?xml version="1.0" encoding="UTF-8"?>\n' : '';
+  const open = `<svg xmlns="http://www.w3.org/2000/svg" viewBox="${view.map(num).join(' ')}" ${size} role="img" font-family="${escapeXml(FONT_FAMILY)}">`;
+  return `${head}${open}\n${body.join('\n')}\n</svg>\n`;
+}
+
+const num = (v: number | undefined): string => String(Math.round((v ?? 0) * 1000) / 1000);
+const xy = (p: Point): string => `${num(p.x)} ${num(p.y)}`;
+
+class Writer {
+  readonly #theme: Theme;
+  #clips = 0;
+
+  constructor(theme: Theme) {
+    this.#theme = theme;
+  }
+
+  colour(token: ColourToken): string {
+    return PALETTE[this.#theme][token];
+  }
+
+  stroke(s: Stroke): string {
+    const dash = s.dash ? ` stroke-dasharray="${s.dash.map((d) => num(d / MODULE_PX)).join(' ')}"` : '';
+    const opacity = s.opacity === undefined ? '' : ` stroke-opacity="${num(s.opacity)}"`;
+    return `<path d="${pathData(s.lines)}" fill="none" stroke="${this.colour(s.colour)}" stroke-width="${num(s.weight / MODULE_PX)}" stroke-linecap="${s.cap}"${dash}${opacity}/>`;
+  }
+
+  group(head: string, primitives: readonly Primitive[]): string {
+    return `<g>${head}${primitives.map((p) => this.primitive(p)).join('')}</g>`;
+  }
+
+  primitive(p: Primitive): string {
+    switch (p.type) {
+      case 'polyline':
+        return `<path d="${pathData([p.points], p.closed)}" ${this.#paint(p.pen, p.fill)}/>`;
+      case 'circle':
+        return `<circle cx="${num(p.centre.x)}" cy="${num(p.centre.y)}" r="${num(p.radius)}" ${this.#paint(p.pen, p.fill)}/>`;
+      case 'arc': {
+        const flags = `${p.large === true ? 1 : 0} ${(p.clockwise ?? true) ? 1 : 0}`;
+        return `<path d="M${xy(p.from)}A${num(p.radius)} ${num(p.radius)} 0 ${flags} ${xy(p.to)}" ${this.#paint(p.pen, 'none')}/>`;
+      }
+      case 'box': {
+        const corner = p.corner === undefined ? '' : ` rx="${num(p.corner)}"`;
+        return `<rect x="${num(p.x)}" y="${num(p.y)}" width="${num(p.width)}" height="${num(p.height)}"${corner} ${this.#paint(p.pen, p.fill)}/>`;
+      }
+      case 'text':
+        return `<text x="${num(p.at.x)}" y="${num(p.at.y)}" font-size="${num(p.size)}" text-anchor="${p.align}" font-weight="${p.weight ?? 400}" fill="${this.colour(p.tone ?? 'ink')}">${escapeXml(p.text)}</text>`;
+      case 'group': {
+        const move = p.shift.x !== 0 || p.shift.y !== 0 ? ` transform="translate(${xy(p.shift)})"` : '';
+        const inner = `<g${move}>${p.children.map((c) => this.primitive(c)).join('')}</g>`;
+        if (!p.clip) return inner;
+        const id = `clip-${this.#clips++}`;
+        const { x, y, width, height } = p.clip;
+        const rect = `<rect x="${num(x)}" y="${num(y)}" width="${num(width)}" height="${num(height)}"/>`;
+        return `<clipPath id="${id}">${rect}</clipPath><g clip-path="url(#${id})">${inner}</g>`;
+      }
+    }
+  }
+
+  label(l: SceneLabel): string {
+    const runs = l.runs.map((r, i) => {
+      const gap = i > 0 ? ` dx="${num((r.size * 0.5) / MODULE_PX)}"` : '';
+      return `<tspan${gap} font-size="${num(r.size / MODULE_PX)}" font-weight="${r.weight}" fill="${this.colour(r.tone)}">${escapeXml(r.text)}</tspan>`;
+    });
+    return `<text x="${num(l.at.x)}" y="${num(l.at.y)}" text-anchor="${l.align}">${runs.join('')}</text>`;
+  }
+
+  #paint(pen: Pen, fill: Fill | undefined): string {
+    const style = PENS[pen];
+    const dash = style.dash ? ` stroke-dasharray="${style.dash.map((d) => num(d / MODULE_PX)).join(' ')}"` : '';
+    return `fill="${this.#fill(fill)}" stroke="${this.colour(style.colour)}" stroke-width="${num(style.weight / MODULE_PX)}"${dash}`;
+  }
+
+  #fill(fill: Fill | undefined): string {
+    switch (fill) {
+      case 'ink':
+      case 'paper':
+        return this.colour(fill);
+      case 'idle':
+        return this.colour(PENS.idle.colour);
+      case 'active':
+        return this.colour(PENS.active.colour);
+      default:
+        return 'none';
+    }
+  }
+}
