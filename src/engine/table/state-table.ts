@@ -6,9 +6,10 @@ import {
   BLOCKED_KINDS,
   LINE_CLASSES,
   PUMP_VERDICTS,
+  REST_REASONS,
   TRAP_REASONS,
 } from './words.ts';
-import type { ActuatorNote, ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, TrapReason } from './words.ts';
+import type { ActuatorNote, ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, RestReason, TrapReason } from './words.ts';
 
 /** What rows a filter keeps: every field given must match. */
 export interface RowFilter {
@@ -59,6 +60,11 @@ export class StateTable {
 
   actuatorNotes(index: number, row: number): ActuatorNote[] {
     return pickAll(this.data.actuatorNotes[index], ACTUATOR_NOTES, row);
+  }
+
+  /** Why open paths leave this actuator to the pressures; empty where they decide. */
+  actuatorRests(index: number, row: number): RestReason[] {
+    return pickAll(this.data.actuatorRests[index], REST_REASONS, row);
   }
 
   pump(index: number, row: number): PumpVerdict {

@@ -49,6 +49,8 @@ export interface TableData {
   readonly actuatorPlanes: readonly (readonly (Plane | undefined)[])[];
   /** [actuator][note index of ACTUATOR_NOTES] */
   readonly actuatorNotes: readonly (readonly (Plane | undefined)[])[];
+  /** [actuator][reason index of REST_REASONS]: why open paths leave it to the pressures. */
+  readonly actuatorRests: readonly (readonly (Plane | undefined)[])[];
   /** [pump][verdict index of PUMP_VERDICTS] */
   readonly pumpPlanes: readonly (readonly (Plane | undefined)[])[];
   /** [line][class index of LINE_CLASSES] */

@@ -1,0 +1,128 @@
+import { emptySet, fullSet } from '../../base/bits.ts';
+import type { BitSet } from '../../base/bits.ts';
+import type { Network } from '../../network/network.ts';
+
+/**
+ * The open paths of a network as directed edges, in adjacency lists over typed arrays, with the set
+ * of states in which each is open. States are counted in mixed radix, the first input slowest.
+ */
+export interface EdgeSet {
+  readonly states: number;
+  /** Distinct sets of states, shared by edges; entry 0 is "all states". */
+  readonly masks: readonly BitSet[];
+  /** Paths with a pilot: their mask is decided by the engine, state by state. */
+  readonly pilots: readonly { readonly line: number; readonly base: number }[];
+  readonly forward: Adjacency;
+  readonly backward: Adjacency;
+  /** The same without throttled paths. */
+  readonly freeForward: Adjacency;
+  readonly freeBackward: Adjacency;
+}
+
+/** Edges `start[l] … start[l + 1] - 1` leave line l: they lead to `to`, open in mask `mask`. */
+export interface Adjacency {
+  readonly start: Int32Array;
+  readonly to: Int32Array;
+  /** Index into masks, or masks.length + index into pilots. */
+  readonly mask: Int32Array;
+}
+
+interface Edge {
+  readonly from: number;
+  readonly to: number;
+  readonly mask: number;
+  readonly free: boolean;
+}
+
+export function compileEdges(net: Network): EdgeSet {
+  const radices = net.inputs.map((input) => input.positions.length);
+  const states = radices.reduce((n, r) => n * r, 1);
+  const masks: BitSet[] = [fullSet(states)];
+  const known = new Map<string, number>();
+  const maskOf = (input: number, positions: number): number => {
+    const radix = radices[input];
+    if (input < 0 || radix === undefined || positions === (1 << radix) - 1) return 0;
+    const key = `${input}:${positions}`;
+    let index = known.get(key);
+    if (index === undefined) {
+      index = masks.length;
+      masks.push(positionMask(radices, input, positions, states));
+      known.set(key, index);
+    }
+    return index;
+  };
+
+  const pilots: { line: number; base: number }[] = [];
+  const edges: Edge[] = [];
+  const pilotEdges: (Omit<Edge, 'mask'> & { pilot: number })[] = [];
+  for (const path of net.paths) {
+    const base = maskOf(path.input, path.positions);
+    const free = !path.throttled;
+    if (path.pilot >= 0) {
+      pilotEdges.push({ from: path.from, to: path.to, free, pilot: pilots.length });
+      pilots.push({ line: path.pilot, base });
+      continue;
+    }
+    edges.push({ from: path.from, to: path.to, mask: base, free });
+    if (!path.oneWay) edges.push({ from: path.to, to: path.from, mask: base, free });
+  }
+  // Pilot masks are numbered after the fixed ones, whose number is known only now.
+  for (const { pilot, ...edge } of pilotEdges) edges.push({ ...edge, mask: masks.length + pilot });
+
+  const reversed = edges.map((edge) => ({ ...edge, from: edge.to, to: edge.from }));
+  const lines = net.lines.length;
+  return {
+    states,
+    masks,
+    pilots,
+    forward: adjacency(lines, edges),
+    backward: adjacency(lines, reversed),
+    freeForward: adjacency(lines, edges.filter((edge) => edge.free)),
+    freeBackward: adjacency(lines, reversed.filter((edge) => edge.free)),
+  };
+}
+
+function adjacency(lines: number, edges: readonly Edge[]): Adjacency {
+  const useful = edges.filter((edge) => edge.from !== edge.to);
+  const start = new Int32Array(lines + 1);
+  for (const edge of useful) start[edge.from + 1] = (start[edge.from + 1] as number) + 1;
+  for (let l = 0; l < lines; l++) start[l + 1] = (start[l + 1] as number) + (start[l] as number);
+  const next = start.slice();
+  const to = new Int32Array(useful.length);
+  const mask = new Int32Array(useful.length);
+  for (const edge of useful) {
+    const slot = next[edge.from] as number;
+    next[edge.from] = slot + 1;
+    to[slot] = edge.to;
+    mask[slot] = edge.mask;
+  }
+  return { start, to, mask };
+}
+
+/** The states in which `input` stands in one of `positions` (a bit mask). */
+export function positionMask(radices: readonly number[], input: number, positions: number, states: number): BitSet {
+  const set = emptySet(states);
+  const radix = radices[input] as number;
+  const stride = radices.slice(input + 1).reduce((n, r) => n * r, 1);
+  const period = stride * radix;
+  for (let p = 0; p < radix; p++) {
+    if (((positions >>> p) & 1) === 0) continue;
+    for (let from = p * stride; from < states; from += period) fillRange(set, from, from + stride);
+  }
+  return set;
+}
+
+/** Set bits `from` … `to - 1`. */
+function fillRange(set: BitSet, from: number, to: number): void {
+  const first = from >>> 5;
+  const last = (to - 1) >>> 5;
+  const head = -1 << (from & 31);
+  const tail = (to & 31) === 0 ? -1 : (1 << (to & 31)) - 1;
+  if (first === last) {
+    set[first] = (set[first] as number) | (head & tail);
+    return;
+  }
+  set[first] = (set[first] as number) | head;
+  set.fill(0xffffffff, first + 1, last);
+  set[last] = (set[last] as number) | tail;
+}

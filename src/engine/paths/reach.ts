@@ -1,0 +1,164 @@
+import type { Network } from '../../network/network.ts';
+import type { EdgeSet } from './edges.ts';
+import { complement } from './field.ts';
+import type { Field, Link, Spreader } from './field.ts';
+
+/** What holds for every state of a table. */
+export interface PathConditions {
+  readonly pumpsRunning: boolean;
+  /** Per actuator: where it stands. */
+  readonly places: readonly ('between' | 'in' | 'out')[];
+}
+
+/** Which lines oil can get to, in every state of a block. One plane per line in each field. */
+export interface Reach {
+  /** From a running pump or charged accumulator by open paths. */
+  readonly fromSource: Field;
+  /** To a tank by open paths; by free (unthrottled) ones. */
+  readonly toTank: Field;
+  readonly freeToTank: Field;
+  readonly notFreeToTank: Field;
+  /** Per source: lines it presses on, that is, none of them freely open to tank on the way. */
+  readonly pressed: readonly Field[];
+  /** The same through free paths only. */
+  readonly pressedFree: readonly Field[];
+  readonly anyPressed: Field;
+  readonly notPressed: Field;
+  /** Under pressure by a source, or through an actuator that passes pressure on. */
+  readonly underPressure: Field;
+  /** To a pressure valve that lets out to tank. */
+  readonly toRelief: Field;
+  /** Can take in oil that something else pushes out, ways through other actuators included. */
+  readonly exits: Field;
+  readonly freeExits: Field;
+  /** The same, also into lines under pump pressure. */
+  readonly softExits: Field;
+  /** Can give oil to a growing chamber. */
+  readonly fills: Field;
+}
+
+export interface Links {
+  /** Oil that presses into `from` is pushed out at `to`. */
+  readonly push: readonly (readonly Link[])[];
+  /** The reverse, for searches that start at the tank. */
+  readonly pull: readonly (readonly Link[])[];
+}
+
+export function compileLinks(net: Network, places: PathConditions['places']): Links {
+  const push: Link[][] = net.lines.map(() => []);
+  const pull: Link[][] = net.lines.map(() => []);
+  net.actuators.forEach(({ a, b }, actuator) => {
+    if (b < 0) return;
+    if (places[actuator] !== 'out') {
+      push[a]?.push({ from: a, to: b, actuator });
+      pull[b]?.push({ from: b, to: a, actuator });
+    }
+    if (places[actuator] !== 'in') {
+      push[b]?.push({ from: b, to: a, actuator });
+      pull[a]?.push({ from: a, to: b, actuator });
+    }
+  });
+  return { push, pull };
+}
+
+/** Everything that has oil under pressure behind it: pumps in circuit order, then charged accumulators. */
+export function sourceLines(net: Network, conditions: PathConditions): number[] {
+  return [
+    ...net.pumps.map((pump) => (conditions.pumpsRunning ? pump.outlet : -1)),
+    ...net.accumulators.map((store) => (store.charged ? store.line : -1)),
+  ];
+}
+
+export function reach(net: Network, edges: EdgeSet, links: Links, conditions: PathConditions, s: Spreader): Reach {
+  const sources = sourceLines(net, conditions);
+  const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
+
+  const fromSource = s.field();
+  for (const line of sources) if (line >= 0) s.seed(fromSource, line);
+  s.spread(fromSource, edges.forward);
+
+  const freeToTank = s.field();
+  for (const line of tanks) s.seed(freeToTank, line);
+  s.spread(freeToTank, edges.freeBackward, { fromTank: true });
+
+  const toTank = freeToTank.slice();
+  if (!conditions.pumpsRunning) {
+    // A stopped pump leaks its outlet line down to tank, slowly.
+    for (const pump of net.pumps) if (!pump.tightWhenStopped) s.seed(toTank, pump.outlet);
+  }
+  s.spread(toTank, edges.backward, { fromTank: true });
+
+  const notFreeToTank = complement(freeToTank, s.masks, s.width);
+  const press = (from: number, adjacency: EdgeSet['forward']): Field => {
+    const field = s.field();
+    if (from < 0) return field;
+    s.seed(field, from);
+    and(field, notFreeToTank);
+    s.spread(field, adjacency, { gate: notFreeToTank });
+    return field;
+  };
+  const pressed = sources.map((line) => press(line, edges.forward));
+  const pressedFree = sources.map((line) => press(line, edges.freeForward));
+  const anyPressed = s.field();
+  for (const field of pressed) or(anyPressed, field);
+  const notPressed = complement(anyPressed, s.masks, s.width);
+
+  const underPressure = anyPressed.slice();
+  s.spread(underPressure, edges.forward, { gate: notFreeToTank, links: links.push });
+
+  const toRelief = s.field();
+  for (const relief of net.reliefs) {
+    for (let w = 0; w < s.width; w++) {
+      const at = relief.from * s.width + w;
+      toRelief[at] = (toRelief[at] as number) | (toTank[relief.to * s.width + w] as number);
+    }
+  }
+  s.spread(toRelief, edges.backward);
+
+  const takesOil = (field: Field, without: number): void => takeIn(net, conditions, s, field, without);
+  const exits = toTank.slice();
+  takesOil(exits, -1);
+  const softExits = exits.slice();
+  s.spread(exits, edges.backward, { gate: notPressed, links: links.pull });
+  s.spread(softExits, edges.backward, { links: links.pull });
+  const freeExits = freeToTank.slice();
+  takesOil(freeExits, -1);
+  s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull });
+
+  const fills = fromSource.slice();
+  for (const line of tanks) s.seed(fills, line);
+  s.spread(fills, edges.forward, { links: links.push, fromTank: true });
+
+  return {
+    fromSource,
+    toTank,
+    freeToTank,
+    notFreeToTank,
+    pressed,
+    pressedFree,
+    anyPressed,
+    notPressed,
+    underPressure,
+    toRelief,
+    exits,
+    freeExits,
+    softExits,
+    fills,
+  };
+}
+
+/** Lines that swallow oil by themselves: single-acting cylinders that can still go out, accumulators not yet full. */
+export function takeIn(net: Network, conditions: PathConditions, s: Spreader, field: Field, without: number): void {
+  net.actuators.forEach((actuator, index) => {
+    if (actuator.b < 0 && index !== without && conditions.places[index] !== 'out') s.seed(field, actuator.a);
+  });
+  for (const store of net.accumulators) if (!store.charged) s.seed(field, store.line);
+}
+
+export function and(target: Field, other: Field): void {
+  for (let i = 0; i < target.length; i++) target[i] = (target[i] as number) & (other[i] as number);
+}
+
+export function or(target: Field, other: Field): void {
+  for (let i = 0; i < target.length; i++) target[i] = (target[i] as number) | (other[i] as number);
+}

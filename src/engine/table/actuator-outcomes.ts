@@ -1,0 +1,119 @@
+import type { NetActuator } from '../../network/network.ts';
+import type { SettledBlock } from '../paths/block.ts';
+import { isEqualSided } from '../paths/motion.ts';
+import type { Chambers } from '../paths/chambers.ts';
+import type { PathConditions } from '../paths/reach.ts';
+import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';
+import type { ActuatorNote, ActuatorVerdict } from './words.ts';
+
+/** Planes of one block for one actuator, by index of the verdict or note. */
+export interface ActuatorOutcome {
+  readonly verdicts: readonly Uint32Array[];
+  readonly notes: readonly Uint32Array[];
+}
+
+/** Pa: what the atmosphere can push with where a chamber is sealed and stretched. */
+const ATMOSPHERE = 101_325;
+
+/**
+ * The verdict of one actuator in every state of the block, decided in the binding order:
+ * undetermined, moving, at stop, stalled, held, held one way, floats. Where open paths leave it to
+ * loads, rivals or settings the verdict is `rests on pressure`.
+ */
+export function actuatorOutcome(index: number, actuator: NetActuator, block: SettledBlock, conditions: PathConditions): ActuatorOutcome {
+  const { width, motion, all, hunts } = block;
+  const verdicts = ACTUATOR_VERDICTS.map(() => new Uint32Array(width));
+  const notes = ACTUATOR_NOTES.map(() => new Uint32Array(width));
+  const put = (verdict: ActuatorVerdict, w: number, bits: number): void => {
+    const plane = verdicts[ACTUATOR_VERDICTS.indexOf(verdict)] as Uint32Array;
+    plane[w] = (plane[w] as number) | bits;
+  };
+  const note = (name: ActuatorNote, w: number, bits: number): void => {
+    const plane = notes[ACTUATOR_NOTES.indexOf(name)] as Uint32Array;
+    plane[w] = (plane[w] as number) | bits;
+  };
+  const words = motionWords(actuator);
+  const ch = motion.chambers[index] as Chambers;
+  const rests = motion.rests[index] as readonly Uint32Array[];
+  const place = conditions.places[index];
+  const notOut = place === 'out' ? 0 : -1;
+  const notIn = place === 'in' ? 0 : -1;
+  const equal = isEqualSided(actuator) ? -1 : 0;
+  const push = (way: 'in' | 'out'): number => (actuator.push.way === way || actuator.push.way === 'both' ? -1 : 0);
+  const breaksVacuum = (area: number): number => (actuator.push.size > ATMOSPHERE * area ? -1 : 0);
+
+  for (let w = 0; w < width; w++) {
+    // `left` shrinks as states get their verdict.
+    let left = all[w] as number;
+    const decide = (verdict: ActuatorVerdict, bits: number): number => {
+      const now = bits & left;
+      put(verdict, w, now);
+      left &= ~now;
+      return now;
+    };
+    const goOut = motion.out[index]?.[w] as number;
+    const goIn = motion.in[index]?.[w] as number;
+    const fedA = motion.fedA[index]?.[w] as number;
+    const fedB = motion.fedB[index]?.[w] as number;
+    const exitA = ch.exitA[w] as number;
+    const exitB = ch.exitB[w] as number;
+    const fillA = ch.fillA[w] as number;
+    const fillB = ch.fillB[w] as number;
+    const loopBA = ch.fromBtoA[w] as number;
+    const loopAB = ch.fromAtoB[w] as number;
+    let resting = 0;
+    for (const plane of rests) resting |= plane[w] as number;
+
+    decide('undetermined', hunts[w] as number);
+    decide('rests on pressure', resting);
+    decide(words.out, goOut);
+    decide(words.in, goIn);
+
+    const fed = fedA | fedB;
+    decide('at stop', (fedA & ~fedB & ~notOut) | (fedB & ~fedA & ~notIn));
+    const balanced = equal & fedA & fedB & loopBA & loopAB;
+    decide('held', fed & ~balanced);
+
+    const freeOut = ((exitB & fillA) | (loopBA & (fillA | equal))) & notOut;
+    const freeIn = ((exitA & (fillB | loopAB)) | (equal & loopAB)) & notIn;
+    // A chamber that cannot fill holds by suction alone.
+    const suckOut = (exitB | loopBA) & ~freeOut & notOut;
+    const suckIn = exitA & ~freeIn & notIn;
+
+    const both = actuator.push.way === 'both' ? -1 : 0;
+    const movesOut = push('out') & ~both & (freeOut | (suckOut & breaksVacuum(actuator.areaA)));
+    const movesIn = push('in') & ~both & (freeIn | (suckIn & breaksVacuum(actuator.areaB)));
+    // A load that has to push its oil through another actuator: whether it can is for the pressures.
+    const tank = block.reach.toTank;
+    const tankA = tank[actuator.a * width + w] as number;
+    const tankB = actuator.b < 0 ? -1 : (tank[actuator.b * width + w] as number);
+    decide('rests on pressure', (both & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB));
+    note('void forms', w, (decide(words.pushedOut, movesOut) & ~freeOut) | (decide(words.pushedIn, movesIn) & ~freeIn));
+
+    const held = decide('held', ~freeOut & ~freeIn);
+    const oneWay = decide('held one way', freeOut ^ freeIn);
+    note('outward by suction only', w, (held | (oneWay & freeIn)) & suckOut);
+    note('inward by suction only', w, (held | (oneWay & freeOut)) & suckIn);
+    note('free outward', w, oneWay & freeOut);
+    note('free inward', w, oneWay & freeIn);
+    decide('floats', -1);
+  }
+  return { verdicts, notes };
+}
+
+interface MotionWords {
+  readonly out: ActuatorVerdict;
+  readonly in: ActuatorVerdict;
+  readonly pushedOut: ActuatorVerdict;
+  readonly pushedIn: ActuatorVerdict;
+}
+
+/** The trade's words for the two directions of a cylinder or a motor. */
+export function motionWords(actuator: NetActuator): MotionWords {
+  if (actuator.rotary) {
+    return { out: 'turns A→B', in: 'turns B→A', pushedOut: 'driven A→B by load', pushedIn: 'driven B→A by load' };
+  }
+  return actuator.push.by === 'spring'
+    ? { out: 'extends', in: 'retracts', pushedOut: 'moved out by spring', pushedIn: 'moved in by spring' }
+    : { out: 'extends', in: 'retracts', pushedOut: 'moved out by load', pushedIn: 'moved in by load' };
+}

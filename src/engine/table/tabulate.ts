@@ -1,0 +1,173 @@
+import { emptySet, isEmpty, wordsFor } from '../../base/bits.ts';
+import type { Budget } from '../../base/budget.ts';
+import { Cancelled } from '../../base/budget.ts';
+import type { Network } from '../../network/network.ts';
+import { PathSolver } from '../paths/block.ts';
+import { compileEdges } from '../paths/edges.ts';
+import type { EdgeSet } from '../paths/edges.ts';
+import { REST_REASONS } from '../paths/motion.ts';
+import type { PathConditions } from '../paths/reach.ts';
+import { actuatorOutcome } from './actuator-outcomes.ts';
+import { lineOutcomes } from './line-outcomes.ts';
+import { PlanePool, PlaneSheet } from './planes.ts';
+import { pumpOutcome } from './pump-outcomes.ts';
+import type { Plane, TableData } from './table-data.ts';
+import { leftBehind, standingReasons } from './trapped.ts';
+import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from './words.ts';
+
+/** Words of one block: 16,384 states; small enough for the cache, large enough to hide the overhead. */
+const BLOCK = 512;
+const CUT_OFF = LINE_CLASSES.indexOf('cut off');
+const FED = LINE_CLASSES.indexOf('fed');
+const LOAD = TRAP_REASONS.indexOf('load');
+const LEFT_BEHIND = TRAP_REASONS.indexOf('left behind');
+const STOPPED = TRAP_REASONS.indexOf('stopped');
+const STORED = TRAP_REASONS.indexOf('stored');
+const HEAT = TRAP_REASONS.indexOf('heat');
+
+interface Sheets {
+  readonly actuators: PlaneSheet;
+  readonly notes: PlaneSheet;
+  readonly rests: PlaneSheet;
+  readonly pumps: PlaneSheet;
+  readonly lines: PlaneSheet;
+  readonly blocked: PlaneSheet;
+  readonly trapped: PlaneSheet;
+  /** One kind only: under pressure. */
+  readonly under: PlaneSheet;
+}
+
+/**
+ * The whole state table of a network by open paths. Throws `Cancelled` when the budget says so.
+ * Cost grows with states × paths / 32; memory is the planes that come out.
+ */
+export function tabulate(net: Network, conditions: PathConditions, budget: Budget): TableData {
+  const edges = compileEdges(net);
+  const radices = net.inputs.map((input) => input.positions.length);
+  const share = conditions.pumpsRunning ? 1 : 0.5;
+  const running = runBlocks(net, edges, { ...conditions, pumpsRunning: true }, part(budget, 0, share));
+  const left = net.lines.slice(0, net.shown).map((_, line) =>
+    leftBehind(radices, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states),
+  );
+  let sheets = running;
+  if (conditions.pumpsRunning) {
+    left.forEach((plane, line) => putTrap(running, line, LEFT_BEHIND, plane));
+  } else {
+    sheets = runBlocks(net, edges, conditions, part(budget, share, 1));
+    for (let line = 0; line < net.shown; line++) {
+      const cutOff = sheets.lines.get(line, CUT_OFF);
+      putTrap(sheets, line, LEFT_BEHIND, meet(cutOff, left[line], edges.states));
+      putTrap(sheets, line, STOPPED, meet(cutOff, running.under.get(line, 0), edges.states));
+      // With the pumps stopped only a charged accumulator can feed a line.
+      const stored = sheets.lines.get(line, FED);
+      if (stored) putTrap(sheets, line, STORED, stored);
+    }
+  }
+  const pool = new PlanePool();
+  return {
+    pumpsRunning: conditions.pumpsRunning,
+    ...describe(net),
+    count: edges.states,
+    ...commandCounts(net),
+    actuatorPlanes: sheets.actuators.finish(pool),
+    actuatorNotes: sheets.notes.finish(pool),
+    actuatorRests: sheets.rests.finish(pool),
+    pumpPlanes: sheets.pumps.finish(pool),
+    linePlanes: sheets.lines.finish(pool),
+    blockedPlanes: sheets.blocked.finish(pool),
+    trapPlanes: sheets.trapped.finish(pool),
+  };
+}
+
+function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, budget: Budget): Sheets {
+  const { states } = edges;
+  const words = wordsFor(states);
+  const sheets: Sheets = {
+    actuators: new PlaneSheet(net.actuators.length, ACTUATOR_VERDICTS.length, states),
+    notes: new PlaneSheet(net.actuators.length, ACTUATOR_NOTES.length, states),
+    rests: new PlaneSheet(net.actuators.length, REST_REASONS.length, states),
+    pumps: new PlaneSheet(net.pumps.length, PUMP_VERDICTS.length, states),
+    lines: new PlaneSheet(net.shown, LINE_CLASSES.length, states),
+    blocked: new PlaneSheet(net.shown, BLOCKED_KINDS.length, states),
+    trapped: new PlaneSheet(net.shown, TRAP_REASONS.length, states),
+    under: new PlaneSheet(net.shown, 1, states),
+  };
+  const solver = new PathSolver(net, edges, conditions, Math.min(BLOCK, words));
+  for (let at = 0; at < words; at += BLOCK) {
+    if (budget.cancelled()) throw new Cancelled();
+    budget.progress(at / words);
+    const width = Math.min(BLOCK, words - at);
+    const block = solver.solve(at, width);
+    const write = (sheet: PlaneSheet, item: number, planes: readonly Uint32Array[]): void =>
+      planes.forEach((plane, kind) => sheet.write(item, kind, at, plane));
+
+    net.actuators.forEach((actuator, i) => {
+      const outcome = actuatorOutcome(i, actuator, block, conditions);
+      write(sheets.actuators, i, outcome.verdicts);
+      write(sheets.notes, i, outcome.notes);
+      write(sheets.rests, i, block.motion.rests[i] ?? []);
+    });
+    net.pumps.forEach((pump, i) => write(sheets.pumps, i, pumpOutcome(i, pump, net, block, conditions)));
+    const { classes, blocked } = lineOutcomes(net, edges, conditions, block);
+    const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
+    for (let line = 0; line < net.shown; line++) {
+      write(sheets.lines, line, classes[line] ?? []);
+      write(sheets.blocked, line, blocked[line] ?? []);
+      sheets.under.write(line, 0, at, block.reach.underPressure.slice(line * width, (line + 1) * width));
+      sheets.trapped.write(line, LOAD, at, standing[line]?.load ?? new Uint32Array(width));
+      sheets.trapped.write(line, HEAT, at, standing[line]?.heat ?? new Uint32Array(width));
+    }
+  }
+  budget.progress(1);
+  return sheets;
+}
+
+function putTrap(sheets: Sheets, line: number, reason: number, plane: Plane): void {
+  if (!isEmpty(plane)) sheets.trapped.put(line, reason, plane);
+}
+
+function meet(a: Plane | undefined, b: Plane | undefined, states: number): Plane {
+  const out = emptySet(states);
+  if (a && b) for (let w = 0; w < out.length; w++) out[w] = (a[w] as number) & (b[w] as number);
+  return out;
+}
+
+const part = (budget: Budget, from: number, to: number): Budget => ({
+  cancelled: budget.cancelled,
+  progress: (share) => budget.progress(from + share * (to - from)),
+});
+
+function describe(net: Network): Pick<TableData, 'inputs' | 'actuators' | 'pumps' | 'lines'> {
+  const named = (part: number): { part: string; label: string } => {
+    const entry = net.parts[part];
+    return { part: entry?.id ?? '', label: entry?.label ?? '' };
+  };
+  return {
+    inputs: net.inputs.map(({ part, positions, rest, by, coils }) => ({
+      ...named(part),
+      positions,
+      ...(rest === undefined ? {} : { rest }),
+      by,
+      coils,
+    })),
+    actuators: net.actuators.map(({ part, rotary }) => ({ ...named(part), motion: rotary ? ('rotary' as const) : ('linear' as const) })),
+    pumps: net.pumps.map(({ part }) => named(part)),
+    lines: net.lines.slice(0, net.shown).map(({ name, ports, connections }) => ({ name, ports, connections })),
+  };
+}
+
+/** Coil and lever combinations in all, and those with opposed coils of one valve on at once. */
+export function commandCounts(net: Network): { commandCombinations: number; notPermitted: number } {
+  let all = 1;
+  let permitted = 1;
+  for (const { positions, coils } of net.inputs) {
+    if (coils.length === 0) {
+      all *= positions.length;
+      permitted *= positions.length;
+    } else {
+      all *= 2 ** coils.length;
+      permitted *= coils.length + 1;
+    }
+  }
+  return { commandCombinations: all, notPermitted: all - permitted };
+}
