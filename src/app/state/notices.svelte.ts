@@ -8,6 +8,8 @@ export interface Notice {
   readonly text?: string;
   /** Where in a file, what, and what to do about it. */
   readonly problems?: readonly Problem[];
+  /** A note that does not go by itself. */
+  readonly stays?: boolean;
   readonly action?: { readonly text: string; readonly run: () => void };
 }
 
@@ -21,7 +23,7 @@ class Notices {
   say(notice: Omit<Notice, 'id'>): void {
     const id = this.#next++;
     this.list = [...this.list.filter((each) => each.title !== notice.title), { ...notice, id }];
-    if (notice.level === 'note') setTimeout(() => this.dismiss(id), LINGER_MS);
+    if (notice.level === 'note' && !notice.stays) setTimeout(() => this.dismiss(id), LINGER_MS);
   }
 
   dismiss(id: number): void {

@@ -1,14 +1,14 @@
+import type { UnitSystem } from '../../base/units.ts';
 import { recall, remember } from './remembered.ts';
 
 export type ThemeChoice = 'system' | 'light' | 'dark';
-export type Units = 'metric' | 'US';
 export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions';
 export type Page = 'sheet' | 'table';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
 class View {
   theme = $state<ThemeChoice>(recall<ThemeChoice>('theme', 'system'));
-  units = $state<Units>(recall<Units>('units', 'metric'));
+  units = $state<UnitSystem>(recall<UnitSystem>('units', 'metric'));
   grid = $state(recall('grid', true));
   /** Whether the system asks for dark; `App` keeps it up to date. */
   systemDark = $state(false);
@@ -34,7 +34,7 @@ class View {
     remember('theme', theme);
   }
 
-  setUnits(units: Units): void {
+  setUnits(units: UnitSystem): void {
     this.units = units;
     remember('units', units);
   }

@@ -1,0 +1,111 @@
+import { begin } from '../../circuit/history.ts';
+import type { History } from '../../circuit/history.ts';
+import { readCircuit } from '../../circuit/file.ts';
+import { editor, EMPTY } from '../state/editor.svelte.ts';
+import type { OpenFile } from '../state/editor.svelte.ts';
+import { notices } from '../state/notices.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+
+/** Larger than any circuit: what is bigger is not one, and reading it would stop the screen. */
+const LARGEST = 8 * 1024 * 1024;
+
+export const FILE_TYPES = [{ description: 'Spooltable circuit', accept: { 'application/json': ['.json'] } }] as const;
+
+type Levers = Readonly<Record<string, number>>;
+
+/** Puts a circuit under the pen and keeps a way back to the one that was there. */
+function replace(history: History, file: OpenFile, levers: Levers, said: string): void {
+  const before = { history: editor.history, file: { name: editor.fileName, handle: editor.handle }, levers: session.levers };
+  const worthKeeping = editor.dirty && editor.circuit.parts.length > 0;
+  editor.load(history, file);
+  session.levers = levers;
+  session.whyNot();
+  session.conditions = { pumps: session.conditions.pumps };
+  if (!worthKeeping) return;
+  const name = before.history.present.name;
+  notices.say({
+    level: 'note',
+    stays: true,
+    title: said,
+    text: `“${name}” was not saved to a file.`,
+    action: {
+      text: `Go back to “${name}”`,
+      run: () => {
+        editor.load(before.history, before.file);
+        session.levers = before.levers;
+      },
+    },
+  });
+}
+
+export function newCircuit(): void {
+  replace(begin(EMPTY), { name: undefined }, {}, 'New empty sheet');
+}
+
+/** Reads a circuit; one that cannot be read is said where and why, and the open work stays as it is. */
+export function openText(text: string, file: OpenFile): boolean {
+  const read = readCircuit(text);
+  const name = file.name ?? 'The file';
+  if (!read.ok) {
+    notices.say({
+      level: 'error',
+      title: `${name} was not opened`,
+      text: 'The open circuit is untouched.',
+      problems: read.problems,
+    });
+    return false;
+  }
+  replace(begin(read.value), file, {}, `${read.value.name} is open`);
+  if (read.warnings.length > 0) {
+    notices.say({ level: 'error', title: `${name} was opened with remarks`, problems: read.warnings });
+  }
+  return true;
+}
+
+export async function openBlob(blob: File, handle?: FileSystemFileHandle): Promise<boolean> {
+  if (blob.size > LARGEST) {
+    notices.say({
+      level: 'error',
+      title: `${blob.name} was not opened`,
+      text: `It has ${Math.round(blob.size / 1048576)} MB; a circuit file has less than 8 MB. The open circuit is untouched.`,
+    });
+    return false;
+  }
+  try {
+    return openText(await blob.text(), { name: blob.name, handle });
+  } catch {
+    notices.say({
+      level: 'error',
+      title: `${blob.name} could not be read`,
+      text: 'The system did not hand it over. Check that it is there and that you may read it. The open circuit is untouched.',
+    });
+    return false;
+  }
+}
+
+export async function openFromDisk(): Promise<void> {
+  if (window.showOpenFilePicker) {
+    const picked = await pick(() => window.showOpenFilePicker?.({ types: FILE_TYPES }));
+    const [handle] = picked ?? [];
+    if (handle) await openBlob(await handle.getFile(), handle);
+    return;
+  }
+  const input = document.createElement('input');
+  input.type = 'file';
+  input.accept = '.json,application/json';
+  input.addEventListener('change', () => {
+    const [blob] = input.files ?? [];
+    if (blob) void openBlob(blob);
+  });
+  input.click();
+}
+
+/** Undefined when the person closes the system's window without picking. */
+export async function pick<T>(ask: () => Promise<T> | undefined): Promise<T | undefined> {
+  try {
+    return await ask();
+  } catch (error) {
+    if (error instanceof DOMException && error.name === 'AbortError') return undefined;
+    throw error;
+  }
+}

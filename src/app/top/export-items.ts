@@ -1,0 +1,3 @@
+import type { MenuItem } from '../ui/Menu.svelte';
+
+export const exportItems = (): MenuItem[] => [];

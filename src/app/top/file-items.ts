@@ -1,0 +1,19 @@
+import { EXAMPLES } from '../files/examples.ts';
+import { newCircuit, openFromDisk, openText } from '../files/open.ts';
+import { save, saveAs } from '../files/save.ts';
+import type { MenuItem } from '../ui/Menu.svelte';
+
+export const fileItems = (): MenuItem[] => [
+  { text: 'New', hint: 'An empty sheet', run: newCircuit },
+  { text: 'Open…', keys: 'Ctrl O', run: () => void openFromDisk() },
+  { text: 'Save', keys: 'Ctrl S', run: () => void save() },
+  { text: 'Save as…', keys: 'Ctrl Shift S', run: () => void saveAs() },
+];
+
+export const labelledExamples = (): MenuItem[] =>
+  EXAMPLES.length === 0
+    ? []
+    : [
+        { heading: 'Examples' },
+        ...EXAMPLES.map(({ title, text }): MenuItem => ({ text: title, run: () => void openText(text, { name: undefined }) })),
+      ];
