@@ -137,7 +137,7 @@ test.each([
   ['a machine path', 'src/base/a.ts', `const p = '/${'tmp'}/x';`, /path of one machine/],
   ['somebody’s home', 'README.md', `see /${'home'}/ann/x`, /path of one machine/],
   ['a host', 'README.md', `${'https'}://packages.somewhere.dev/x`, /no host names/],
-  ['a host in the lock', 'package-lock.json', '"resolved": "https://x"', /the lock names no host/],
+  ['a host in the lock', 'package-lock.json', `"resolved": "${'https'}://x"`, /the lock names no host/],
   ['a switch', 'src/base/a.ts', `// ${'eslint'}-disable-next-line`, /switches a check off/],
   ['a test left out', 'tests/base/a.test.ts', `${'test'}.skip('x', () => {});`, /left out/],
 ])('is noticed: %s', (_, file, text, said) => {
