@@ -1,9 +1,28 @@
 import type { Point } from '../base/points.ts';
-import { all, applyEdit, changeCircuit, changeConnection, changePart, type Edit, type PutConnection, type PutLabel, type PutPart } from './edit.ts';
+import {
+  all,
+  applyEdit,
+  changeCircuit,
+  changeConnection,
+  changePart,
+  type Edit,
+  type PutConnection,
+  type PutLabel,
+  type PutPart,
+} from './edit.ts';
+import { omit } from './fields.ts';
 import { CONNECTION_PREFIX, connectionNames, LABEL_PREFIX, labelNames, partNames } from './ids.ts';
 import { isOneLine } from './limits.ts';
 import { lineOf, samePort } from './lines.ts';
-import { sayPort, type Circuit, type Connection, type Part, type PortRef, type Setting, type ValveData } from './model.ts';
+import {
+  sayPort,
+  type Circuit,
+  type Connection,
+  type Part,
+  type PortRef,
+  type Setting,
+  type ValveData,
+} from './model.ts';
 import { isFreeLabel } from './paste.ts';
 import { partOf, partsOf } from './place.ts';
 import { RefusedEdit } from './refused.ts';
@@ -21,7 +40,11 @@ export function placePart(circuit: Circuit, prefix: string, part: Omit<Part, 'id
 
 export function placeLabel(circuit: Circuit, at: Point, text: string): PutLabel {
   checkText('label', text);
-  return { type: 'put-label', index: (circuit.labels ?? []).length, label: { id: labelNames(circuit).fresh(LABEL_PREFIX), at, text } };
+  return {
+    type: 'put-label',
+    index: (circuit.labels ?? []).length,
+    label: { id: labelNames(circuit).fresh(LABEL_PREFIX), at, text },
+  };
 }
 
 export interface RemoveOptions {
@@ -41,10 +64,17 @@ export function removeParts(circuit: Circuit, ids: Iterable<string>, options: Re
   return all(edits);
 }
 
-function removeOne(circuit: Circuit, id: string, heal: boolean): { readonly type: 'all'; readonly edits: readonly Edit[] } {
+function removeOne(
+  circuit: Circuit,
+  id: string,
+  heal: boolean,
+): { readonly type: 'all'; readonly edits: readonly Edit[] } {
   const part = partOf(circuit, id);
   const own = circuit.connections.filter(({ from, to }) => from.part === id || to.part === id);
-  const removals: Edit[] = [...own.map((c): Edit => ({ type: 'remove-connection', id: c.id })), { type: 'remove-part', id }];
+  const removals: Edit[] = [
+    ...own.map((c): Edit => ({ type: 'remove-connection', id: c.id })),
+    { type: 'remove-part', id },
+  ];
   const bridge = heal ? bridgeOver(circuit, part, own) : undefined;
   if (bridge === undefined) return { type: 'all', edits: removals };
   const index = circuit.connections.findIndex((c) => c.id === bridge.id);
@@ -69,21 +99,31 @@ function bridgeOver(circuit: Circuit, part: Part, own: readonly Connection[]): C
   const after = secondIsIn ? (second.bends ?? []) : (second.bends ?? []).toReversed();
   const bends = [...before, ...after];
   const name = first.name ?? second.name;
-  const { bends: _, ...rest } = first;
-  return { ...rest, from, to, ...(name !== undefined && { name }), ...(bends.length > 0 && { bends }) };
+  return { ...omit(first, 'bends'), from, to, ...(name !== undefined && { name }), ...(bends.length > 0 && { bends }) };
 }
 
 export const isConnected = (circuit: Circuit, a: PortRef, b: PortRef): boolean =>
-  circuit.connections.some(({ from, to }) => (samePort(from, a) && samePort(to, b)) || (samePort(from, b) && samePort(to, a)));
+  circuit.connections.some(
+    ({ from, to }) => (samePort(from, a) && samePort(to, b)) || (samePort(from, b) && samePort(to, a)),
+  );
 
-export const removeConnections = (ids: Iterable<string>): Edit => all([...ids].map((id): Edit => ({ type: 'remove-connection', id })));
-export const removeLabels = (ids: Iterable<string>): Edit => all([...ids].map((id): Edit => ({ type: 'remove-label', id })));
+export const removeConnections = (ids: Iterable<string>): Edit =>
+  all([...ids].map((id): Edit => ({ type: 'remove-connection', id })));
+export const removeLabels = (ids: Iterable<string>): Edit =>
+  all([...ids].map((id): Edit => ({ type: 'remove-label', id })));
 
 /** Connect two ports. Refuses a port with itself, and two that are connected to each other already. */
-export function connect(circuit: Circuit, from: PortRef, to: PortRef, more: Pick<Connection, 'name' | 'use' | 'bends'> = {}): PutConnection {
+export function connect(
+  circuit: Circuit,
+  from: PortRef,
+  to: PortRef,
+  more: Pick<Connection, 'name' | 'use' | 'bends'> = {},
+): PutConnection {
   for (const end of [from, to]) partOf(circuit, end.part);
-  if (samePort(from, to)) throw new RefusedEdit(sayPort(from), 'A port cannot be connected to itself.', 'End at another port.');
-  if (isConnected(circuit, from, to)) throw new RefusedEdit(sayPort(from), `It is connected to ${sayPort(to)} already.`, 'End at another port.');
+  if (samePort(from, to))
+    throw new RefusedEdit(sayPort(from), 'A port cannot be connected to itself.', 'End at another port.');
+  if (isConnected(circuit, from, to))
+    throw new RefusedEdit(sayPort(from), `It is connected to ${sayPort(to)} already.`, 'End at another port.');
   if (more.name !== undefined) checkText('name', more.name);
   const id = connectionNames(circuit).fresh(CONNECTION_PREFIX);
   return { type: 'put-connection', index: circuit.connections.length, connection: { id, from, to, ...more } };
@@ -100,7 +140,13 @@ export interface TeeOptions {
  * Connect a port to an existing connection: a junction goes in at `at`, the old connection ends there
  * keeping its id and name, a new one goes on to its far end, and a third comes from the port.
  */
-export function connectToConnection(circuit: Circuit, from: PortRef, connectionId: string, at: Point, options: TeeOptions = {}): Edit {
+export function connectToConnection(
+  circuit: Circuit,
+  from: PortRef,
+  connectionId: string,
+  at: Point,
+  options: TeeOptions = {},
+): Edit {
   const old = connectionOf(circuit, connectionId);
   partOf(circuit, from.part);
   if (samePort(from, old.from) || samePort(from, old.to)) {
@@ -172,7 +218,8 @@ export function renameLine(circuit: Circuit, connectionId: string, name: string 
   checkText('name', wanted);
   const line = lineOf(circuit, connectionId);
   const other = circuit.connections.find((c) => c.name === wanted && !line.has(c.id));
-  if (wanted !== '' && other) throw new RefusedEdit(connectionId, `Another line is called "${wanted}" already.`, 'Choose another name.');
+  if (wanted !== '' && other)
+    throw new RefusedEdit(connectionId, `Another line is called "${wanted}" already.`, 'Choose another name.');
   const members = circuit.connections.filter((c) => line.has(c.id));
   const carrier = members.find((c) => c.name !== undefined)?.id ?? connectionId;
   const edits: Edit[] = [];
@@ -187,9 +234,9 @@ export function renameLine(circuit: Circuit, connectionId: string, name: string 
 export function setSetting(circuit: Circuit, partId: string, settingId: string, value: Setting | undefined): Edit {
   const { settings = {} } = partOf(circuit, partId);
   if (typeof value === 'string') checkText(settingId, value);
-  if (typeof value === 'number' && !Number.isFinite(value)) throw new RefusedEdit(settingId, 'This is not a finite number.', 'Enter a number.');
-  const { [settingId]: _, ...others } = settings;
-  const kept = value === undefined ? others : { ...settings, [settingId]: value };
+  if (typeof value === 'number' && !Number.isFinite(value))
+    throw new RefusedEdit(settingId, 'This is not a finite number.', 'Enter a number.');
+  const kept = value === undefined ? omit(settings, settingId) : { ...settings, [settingId]: value };
   return changePart(partId, { settings: Object.keys(kept).length === 0 ? undefined : kept });
 }
 
@@ -205,15 +252,22 @@ export function renameCircuit(name: string): Edit {
 
 function connectionOf(circuit: Circuit, id: string): Connection {
   const connection = circuit.connections.find((c) => c.id === id);
-  if (connection === undefined) throw new RefusedEdit(id, `There is no connection "${id}".`, 'It may have been removed before.');
+  if (connection === undefined)
+    throw new RefusedEdit(id, `There is no connection "${id}".`, 'It may have been removed before.');
   return connection;
 }
 
 function checkText(where: string, text: string): void {
-  if (!isOneLine(text)) throw new RefusedEdit(where, 'This text is longer than 200 characters or holds a control character.', 'Shorten it to one line.');
+  if (!isOneLine(text))
+    throw new RefusedEdit(
+      where,
+      'This text is longer than 200 characters or holds a control character.',
+      'Shorten it to one line.',
+    );
 }
 
 function checkLabel(circuit: Circuit, id: string, label: string): void {
   checkText('label', label);
-  if (!isFreeLabel(circuit, id, label)) throw new RefusedEdit(id || 'label', `Another part is shown as "${label}" already.`, 'Choose another label.');
+  if (!isFreeLabel(circuit, id, label))
+    throw new RefusedEdit(id || 'label', `Another part is shown as "${label}" already.`, 'Choose another label.');
 }

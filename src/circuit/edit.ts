@@ -1,4 +1,5 @@
 import type { Point } from '../base/points.ts';
+import { omit } from './fields.ts';
 import { isId, LIMITS } from './limits.ts';
 import { labelOf, sayPort, type Circuit, type Connection, type Label, type Part } from './model.ts';
 import { RefusedEdit } from './refused.ts';
@@ -10,14 +11,29 @@ import { RefusedEdit } from './refused.ts';
 export type Edit =
   | PutPart
   | { readonly type: 'remove-part'; readonly id: string }
-  | { readonly type: 'change-part'; readonly id: string; readonly fields: Fields<Part>; readonly without?: readonly Optional<Part>[] }
+  | {
+      readonly type: 'change-part';
+      readonly id: string;
+      readonly fields: Fields<Part>;
+      readonly without?: readonly Optional<Part>[];
+    }
   | PutConnection
   | { readonly type: 'remove-connection'; readonly id: string }
-  | { readonly type: 'change-connection'; readonly id: string; readonly fields: Fields<Connection>; readonly without?: readonly Optional<Connection>[] }
+  | {
+      readonly type: 'change-connection';
+      readonly id: string;
+      readonly fields: Fields<Connection>;
+      readonly without?: readonly Optional<Connection>[];
+    }
   | PutLabel
   /** `list`: the last label takes the list itself with it. */
   | { readonly type: 'remove-label'; readonly id: string; readonly list?: true }
-  | { readonly type: 'change-label'; readonly id: string; readonly fields: Fields<Label>; readonly without?: readonly Optional<Label>[] }
+  | {
+      readonly type: 'change-label';
+      readonly id: string;
+      readonly fields: Fields<Label>;
+      readonly without?: readonly Optional<Label>[];
+    }
   | { readonly type: 'change-circuit'; readonly fields: Fields<Sheet>; readonly without?: readonly Optional<Sheet>[] }
   | All;
 
@@ -45,7 +61,9 @@ export interface All {
 
 type Sheet = Omit<Circuit, 'parts' | 'connections' | 'labels'>;
 type Fields<T> = Partial<Omit<T, 'id'>>;
-type Optional<T> = { [K in keyof T]-?: undefined extends T[K] ? K : Record<string, never> extends Pick<T, K> ? K : never }[keyof T];
+type Optional<T> = {
+  [K in keyof T]-?: undefined extends T[K] ? K : Record<string, never> extends Pick<T, K> ? K : never;
+}[keyof T];
 type Open<T> = { [K in Exclude<keyof T, 'id'>]?: T[K] | undefined };
 
 export const all = (edits: readonly Edit[]): All => ({ type: 'all', edits });
@@ -61,9 +79,21 @@ function split<T extends object>(fields: Open<T>): { fields: Fields<T>; without?
 }
 
 /** A field given as `undefined` is removed. */
-export const changePart = (id: string, fields: Open<Part>): Edit => ({ type: 'change-part', id, ...split<Part>(fields) });
-export const changeConnection = (id: string, fields: Open<Connection>): Edit => ({ type: 'change-connection', id, ...split<Connection>(fields) });
-export const changeLabel = (id: string, fields: Open<Label>): Edit => ({ type: 'change-label', id, ...split<Label>(fields) });
+export const changePart = (id: string, fields: Open<Part>): Edit => ({
+  type: 'change-part',
+  id,
+  ...split<Part>(fields),
+});
+export const changeConnection = (id: string, fields: Open<Connection>): Edit => ({
+  type: 'change-connection',
+  id,
+  ...split<Connection>(fields),
+});
+export const changeLabel = (id: string, fields: Open<Label>): Edit => ({
+  type: 'change-label',
+  id,
+  ...split<Label>(fields),
+});
 export const changeCircuit = (fields: Open<Sheet>): Edit => ({ type: 'change-circuit', ...split<Sheet>(fields) });
 
 /** Throws `RefusedEdit` where the edit does not fit; the circuit given stays as it is. */
@@ -91,14 +121,25 @@ export function applyBoth(circuit: Circuit, edit: Edit): { circuit: Circuit; inv
       checkShown(circuit, part);
       checkPoints(part.id, [part.at]);
       checkRoom('parts', circuit.parts);
-      return { circuit: { ...circuit, parts: inserted(circuit.parts, index, part) }, inverse: { type: 'remove-part', id: part.id } };
+      return {
+        circuit: { ...circuit, parts: inserted(circuit.parts, index, part) },
+        inverse: { type: 'remove-part', id: part.id },
+      };
     }
     case 'remove-part': {
       const index = indexOf('part', circuit.parts, edit.id);
       const held = circuit.connections.find((c) => c.from.part === edit.id || c.to.part === edit.id);
-      if (held) throw new RefusedEdit(edit.id, `The connection "${held.id}" still ends at this part.`, 'Remove its connections first.');
+      if (held)
+        throw new RefusedEdit(
+          edit.id,
+          `The connection "${held.id}" still ends at this part.`,
+          'Remove its connections first.',
+        );
       const part = circuit.parts[index] as Part;
-      return { circuit: { ...circuit, parts: circuit.parts.toSpliced(index, 1) }, inverse: { type: 'put-part', index, part } };
+      return {
+        circuit: { ...circuit, parts: circuit.parts.toSpliced(index, 1) },
+        inverse: { type: 'put-part', index, part },
+      };
     }
     case 'change-part': {
       const index = indexOf('part', circuit.parts, edit.id);
@@ -106,7 +147,10 @@ export function applyBoth(circuit: Circuit, edit: Edit): { circuit: Circuit; inv
       const after = changed(before, edit);
       if (labelOf(after) !== labelOf(before)) checkShown(circuit, after);
       checkPoints(edit.id, [edit.fields.at]);
-      return { circuit: { ...circuit, parts: circuit.parts.with(index, after) }, inverse: changePart(edit.id, former(before, edit)) };
+      return {
+        circuit: { ...circuit, parts: circuit.parts.with(index, after) },
+        inverse: changePart(edit.id, former(before, edit)),
+      };
     }
     case 'put-connection': {
       const { connection, index } = edit;
@@ -150,20 +194,28 @@ export function applyBoth(circuit: Circuit, edit: Edit): { circuit: Circuit; inv
       const labels = circuit.labels ?? [];
       const index = indexOf('label', labels, edit.id);
       const inverse: Edit = { type: 'put-label', index, label: labels[index] as Label };
-      if (!edit.list || labels.length > 1) return { circuit: { ...circuit, labels: labels.toSpliced(index, 1) }, inverse };
-      const { labels: _, ...rest } = circuit;
-      return { circuit: rest, inverse };
+      if (!edit.list || labels.length > 1)
+        return { circuit: { ...circuit, labels: labels.toSpliced(index, 1) }, inverse };
+      return { circuit: omit(circuit, 'labels'), inverse };
     }
     case 'change-label': {
       const labels = circuit.labels ?? [];
       const index = indexOf('label', labels, edit.id);
       const before = labels[index] as Label;
       checkPoints(edit.id, [edit.fields.at]);
-      return { circuit: { ...circuit, labels: labels.with(index, changed(before, edit)) }, inverse: changeLabel(edit.id, former(before, edit)) };
+      return {
+        circuit: { ...circuit, labels: labels.with(index, changed(before, edit)) },
+        inverse: changeLabel(edit.id, former(before, edit)),
+      };
     }
     case 'change-circuit': {
       for (const key of ['parts', 'connections', 'labels']) {
-        if (Object.hasOwn(edit.fields, key)) throw new RefusedEdit('circuit', `The list "${key}" cannot be changed whole.`, 'Put, change or remove its members.');
+        if (Object.hasOwn(edit.fields, key))
+          throw new RefusedEdit(
+            'circuit',
+            `The list "${key}" cannot be changed whole.`,
+            'Put, change or remove its members.',
+          );
       }
       return { circuit: changed(circuit, edit), inverse: changeCircuit(former<Circuit>(circuit, edit)) };
     }
@@ -179,7 +231,8 @@ function changed<T extends object>(before: T, change: Change): T {
   const after: T = { ...before, ...change.fields };
   for (const key of change.without ?? []) Reflect.deleteProperty(after, key);
   const fixed = (before as { id?: string }).id;
-  if (fixed !== (after as { id?: string }).id) throw new RefusedEdit(String(fixed), 'An id cannot be changed.', 'Remove it and put it in again.');
+  if (fixed !== (after as { id?: string }).id)
+    throw new RefusedEdit(String(fixed), 'An id cannot be changed.', 'Remove it and put it in again.');
   return after;
 }
 
@@ -192,7 +245,11 @@ function former<T extends object>(before: T, change: Change): { [K in keyof T]?:
 
 function inserted<T extends { readonly id: string }>(list: readonly T[], index: number, item: T): readonly T[] {
   if (!Number.isInteger(index) || index < 0 || index > list.length) {
-    throw new RefusedEdit(item.id, `There is no place ${index} in a list of ${list.length}.`, 'Put it at the end or before one that is there.');
+    throw new RefusedEdit(
+      item.id,
+      `There is no place ${index} in a list of ${list.length}.`,
+      'Put it at the end or before one that is there.',
+    );
   }
   return list.toSpliced(index, 0, item);
 }
@@ -205,13 +262,15 @@ function indexOf(noun: string, list: readonly { readonly id: string }[], id: str
 
 function checkNew(noun: string, list: readonly { readonly id: string }[], id: string): void {
   if (!isId(id)) throw new RefusedEdit(id, `"${id}" is no ${noun} id.`, 'Use letters, digits, - and _ only.');
-  if (list.some((item) => item.id === id)) throw new RefusedEdit(id, `There is a ${noun} "${id}" already.`, 'Give it another id.');
+  if (list.some((item) => item.id === id))
+    throw new RefusedEdit(id, `There is a ${noun} "${id}" already.`, 'Give it another id.');
 }
 
 function checkShown(circuit: Circuit, part: Part): void {
   const shown = labelOf(part);
   const other = circuit.parts.find((p) => p.id !== part.id && labelOf(p) === shown);
-  if (other) throw new RefusedEdit(part.id, `The part ${other.id} is shown as "${shown}" already.`, 'Choose another label.');
+  if (other)
+    throw new RefusedEdit(part.id, `The part ${other.id} is shown as "${shown}" already.`, 'Choose another label.');
 }
 
 function checkEnds(circuit: Circuit, { id, from, to }: Connection): void {
@@ -234,5 +293,9 @@ function checkPoints(id: string, points: readonly (Point | undefined)[] = []): v
 
 function checkRoom(field: 'parts' | 'connections' | 'labels', list: readonly unknown[]): void {
   if (list.length < LIMITS[field]) return;
-  throw new RefusedEdit('circuit', `The circuit has ${list.length} ${field}, and a file holds no more.`, 'Start a second circuit.');
+  throw new RefusedEdit(
+    'circuit',
+    `The circuit has ${list.length} ${field}, and a file holds no more.`,
+    'Start a second circuit.',
+  );
 }

@@ -1,11 +1,30 @@
 import type { Point } from '../base/points.ts';
 import { bad, good, type Problem, type Result } from '../base/result.ts';
+import { solid } from './fields.ts';
 import { parseJson, sayPath } from './json.ts';
 import { LIMITS } from './limits.ts';
 import { migrate, STEPS, type RawFile, type Step } from './migrate.ts';
-import { labelOf, type Circuit, type Connection, type Extra, type Label, type Part, type PortRef, type ValveData } from './model.ts';
+import {
+  labelOf,
+  type Circuit,
+  type Connection,
+  type Extra,
+  type Label,
+  type Part,
+  type PortRef,
+  type ValveData,
+} from './model.ts';
 import { quote, sayIssue, shorten } from './problems.ts';
-import { fileSchema, FORMAT, KNOWN, type FileCircuit, type FileConnection, type FileLabel, type FilePart, type FileValve } from './schema.ts';
+import {
+  fileSchema,
+  FORMAT,
+  KNOWN,
+  type FileCircuit,
+  type FileConnection,
+  type FileLabel,
+  type FilePart,
+  type FileValve,
+} from './schema.ts';
 
 export { writeCircuit } from './write.ts';
 
@@ -18,7 +37,11 @@ export function readCircuit(text: string, steps: ReadonlyMap<number, Step> = STE
   if (!parsed.ok) return parsed;
   const raw = parsed.value;
   if (typeof raw !== 'object' || raw === null || Array.isArray(raw)) {
-    return bad({ where: 'file', what: 'The file holds no circuit: it is not an object.', remedy: 'Open a file that this program has saved.' });
+    return bad({
+      where: 'file',
+      what: 'The file holds no circuit: it is not an object.',
+      remedy: 'Open a file that this program has saved.',
+    });
   }
   const refused = checkFormat(raw as RawFile);
   if (refused) return bad(refused);
@@ -37,7 +60,8 @@ export function readCircuit(text: string, steps: ReadonlyMap<number, Step> = STE
 function checkFormat(raw: RawFile): Problem | undefined {
   if (raw['format'] === FORMAT) return undefined;
   const remedy = `A circuit file starts with "format": "${FORMAT}".`;
-  if (raw['format'] === undefined) return { where: 'format', what: 'The format is missing: this may be some other JSON file.', remedy };
+  if (raw['format'] === undefined)
+    return { where: 'format', what: 'The format is missing: this may be some other JSON file.', remedy };
   return { where: 'format', what: `The format is ${quote(raw['format'])}.`, remedy };
 }
 
@@ -45,18 +69,14 @@ function checkSize(raw: RawFile): Problem | undefined {
   for (const field of ['parts', 'connections', 'labels'] as const) {
     const list = raw[field];
     if (Array.isArray(list) && list.length > LIMITS[field]) {
-      return { where: field, what: `The circuit has ${list.length} ${field}; at most ${LIMITS[field]} can be read.`, remedy: 'Split it into several circuits.' };
+      return {
+        where: field,
+        what: `The circuit has ${list.length} ${field}; at most ${LIMITS[field]} can be read.`,
+        remedy: 'Split it into several circuits.',
+      };
     }
   }
   return undefined;
-}
-
-/** Drops `undefined` fields: the model has a field or has it not. */
-type Loose<T> = { [K in keyof T]: T[K] | undefined };
-function solid<T extends object>(fields: Loose<T>): T {
-  const out: Record<string, unknown> = {};
-  for (const [key, value] of Object.entries(fields)) if (value !== undefined) out[key] = value;
-  return out as T;
 }
 
 /** `-0` becomes 0, so that equal places are equal. */
@@ -67,26 +87,42 @@ function toPort(text: string): PortRef {
 }
 
 function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
-  const extraOf = (object: Record<string, unknown>, known: ReadonlySet<string>, path: readonly PropertyKey[]): Extra | undefined => {
+  const extraOf = (
+    object: Record<string, unknown>,
+    known: ReadonlySet<string>,
+    path: readonly PropertyKey[],
+  ): Extra | undefined => {
     let extra: Record<string, unknown> | undefined;
     for (const key of Object.keys(object)) {
       if (known.has(key)) continue;
       (extra ??= {})[key] = object[key];
-      warnings.push({ where: sayPath([...path, key]), what: 'This field is unknown.', remedy: 'It is kept and saved again, but has no effect.' });
+      warnings.push({
+        where: sayPath([...path, key]),
+        what: 'This field is unknown.',
+        remedy: 'It is kept and saved again, but has no effect.',
+      });
     }
     return extra;
   };
   const toValve = (valve: FileValve, path: readonly PropertyKey[]): ValveData =>
     solid<Required<ValveData>>({
-      ports: valve.ports.map((port, i) => solid({ id: port.id, side: port.side, extra: extraOf(port, KNOWN.valvePort, [...path, 'ports', i]) })),
+      ports: valve.ports.map((port, i) =>
+        solid({ id: port.id, side: port.side, extra: extraOf(port, KNOWN.valvePort, [...path, 'ports', i]) }),
+      ),
       positions: valve.positions.map((position, i) =>
-        solid({ name: position.name, paths: position.paths, extra: extraOf(position, KNOWN.valvePosition, [...path, 'positions', i]) }),
+        solid({
+          name: position.name,
+          paths: position.paths,
+          extra: extraOf(position, KNOWN.valvePosition, [...path, 'positions', i]),
+        }),
       ),
       crossovers: valve.crossovers,
       rest: valve.rest,
       left: valve.left,
       right: valve.right,
-      coils: valve.coils?.map((coil, i) => solid({ name: coil.name, position: coil.position, extra: extraOf(coil, KNOWN.coil, [...path, 'coils', i]) })),
+      coils: valve.coils?.map((coil, i) =>
+        solid({ name: coil.name, position: coil.position, extra: extraOf(coil, KNOWN.coil, [...path, 'coils', i]) }),
+      ),
       extra: extraOf(valve, KNOWN.valve, path),
     });
   const toPart = (part: FilePart, i: number): Part =>
@@ -113,7 +149,12 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       extra: extraOf(connection, KNOWN.connection, ['connections', i]),
     });
   const toLabel = (label: FileLabel, i: number): Label =>
-    solid<Required<Label>>({ id: label.id, at: toPoint(label.at), text: label.text, extra: extraOf(label, KNOWN.label, ['labels', i]) });
+    solid<Required<Label>>({
+      id: label.id,
+      at: toPoint(label.at),
+      text: label.text,
+      extra: extraOf(label, KNOWN.label, ['labels', i]),
+    });
   return solid<Required<Circuit>>({
     name: file.name,
     title: file.title,
@@ -132,7 +173,12 @@ function checkIds(circuit: Circuit): Problem[] {
     for (const [i, { id }] of (circuit[field] ?? []).entries()) {
       const before = first.get(id);
       if (before === undefined) first.set(id, i);
-      else problems.push({ where: `${field}[${i}].id`, what: `The id "${id}" is taken by ${field}[${before}].`, remedy: 'Give it another id.' });
+      else
+        problems.push({
+          where: `${field}[${i}].id`,
+          what: `The id "${id}" is taken by ${field}[${before}].`,
+          remedy: 'Give it another id.',
+        });
     }
   }
   const shown = new Map<string, Part>();
@@ -156,20 +202,36 @@ function checkConnections(circuit: Circuit, warnings: Problem[]): Problem[] {
   const pairs = new Map<string, string>();
   for (const [i, { id, from, to }] of circuit.connections.entries()) {
     const where = `connections[${i}]`;
-    for (const [end, ref] of [['from', from], ['to', to]] as const) {
+    for (const [end, ref] of [
+      ['from', from],
+      ['to', to],
+    ] as const) {
       if (!parts.has(ref.part)) {
-        problems.push({ where: `${where}.${end}`, what: `There is no part "${ref.part}".`, remedy: 'Correct the part id, or remove the connection.' });
+        problems.push({
+          where: `${where}.${end}`,
+          what: `There is no part "${ref.part}".`,
+          remedy: 'Correct the part id, or remove the connection.',
+        });
       }
     }
     const ends = [`${from.part}.${from.port}`, `${to.part}.${to.port}`].sort();
     if (ends[0] === ends[1]) {
-      problems.push({ where, what: `The connection goes from ${ends[0]} to itself.`, remedy: 'Connect it to another port, or remove it.' });
+      problems.push({
+        where,
+        what: `The connection goes from ${ends[0]} to itself.`,
+        remedy: 'Connect it to another port, or remove it.',
+      });
       continue;
     }
     const pair = ends.join(' ');
     const before = pairs.get(pair);
     if (before === undefined) pairs.set(pair, id);
-    else warnings.push({ where, what: `The connection "${before}" joins ${ends[0]} and ${ends[1]} already.`, remedy: 'Remove one of the two.' });
+    else
+      warnings.push({
+        where,
+        what: `The connection "${before}" joins ${ends[0]} and ${ends[1]} already.`,
+        remedy: 'Remove one of the two.',
+      });
   }
   return problems;
 }

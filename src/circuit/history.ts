@@ -1,5 +1,6 @@
 import { bad, good, type Result } from '../base/result.ts';
 import { all, applyBoth, applyEdit, type Edit } from './edit.ts';
+import { omit } from './fields.ts';
 import { readCircuit, writeCircuit } from './file.ts';
 import { parseJson } from './json.ts';
 import type { Circuit } from './model.ts';
@@ -29,7 +30,12 @@ export interface History {
 }
 
 /** `saved`: whether the circuit stands in a file as it is. */
-export const begin = (circuit: Circuit, saved = true): History => ({ past: [], present: circuit, future: [], ...(saved && { saved: 0 }) });
+export const begin = (circuit: Circuit, saved = true): History => ({
+  past: [],
+  present: circuit,
+  future: [],
+  ...(saved && { saved: 0 }),
+});
 
 /**
  * Apply an edit as an undo step. Edits with the same `burst` key, one right after another, become one step:
@@ -39,8 +45,11 @@ export function commit(history: History, edit: Edit, burst?: string): History {
   const { circuit, inverse } = applyBoth(history.present, edit);
   const last = history.past.at(-1);
   // A step that reaches the saved state must end there, or "saved" would name a state that was never saved.
-  const grows = burst !== undefined && burst === history.burst && last !== undefined && history.saved !== history.past.length;
-  const step: HistoryStep = grows ? { edit: join(last.edit, edit), inverse: join(inverse, last.inverse) } : { edit, inverse };
+  const grows =
+    burst !== undefined && burst === history.burst && last !== undefined && history.saved !== history.past.length;
+  const step: HistoryStep = grows
+    ? { edit: join(last.edit, edit), inverse: join(inverse, last.inverse) }
+    : { edit, inverse };
   const past = grows ? history.past.with(-1, step) : [...history.past, step];
   const kept = history.saved !== undefined && history.saved < past.length;
   return {
@@ -81,8 +90,7 @@ export function redo(history: History): History {
 
 /** The next edit starts a step of its own, whatever its key. */
 export function endBurst(history: History): History {
-  const { burst: _, ...rest } = history;
-  return rest;
+  return omit(history, 'burst');
 }
 
 export const markSaved = (history: History): History => ({ ...endBurst(history), saved: history.past.length });
@@ -97,7 +105,7 @@ export function loadHistory(text: string): Result<History> {
   try {
     // A store that was written by something else fails on the way, and is refused below.
     const history = parsed.value as History;
-    const { past, present, future, burst: _, saved } = history;
+    const { past, present, future, saved } = history;
     if (!Array.isArray(past) || !Array.isArray(future)) throw new Error('no steps');
     if (saved !== undefined && !(Number.isInteger(saved) && saved >= 0)) throw new Error('no place');
     const checked = readCircuit(writeCircuit(present));
@@ -106,7 +114,11 @@ export function loadHistory(text: string): Result<History> {
     future.reduce((circuit, step) => applyEdit(circuit, step.edit), present);
     return good({ past, present, future, ...(saved !== undefined && { saved }) });
   } catch {
-    return bad({ where: 'history', what: 'The kept undo steps do not fit the circuit.', remedy: 'Open the file again; its undo steps are lost.' });
+    return bad({
+      where: 'history',
+      what: 'The kept undo steps do not fit the circuit.',
+      remedy: 'Open the file again; its undo steps are lost.',
+    });
   }
 }
 
@@ -145,6 +157,5 @@ function merge(first: Change, second: Change): Change {
     Reflect.deleteProperty(fields, key);
     without.add(key);
   }
-  const { without: _, ...rest } = first;
-  return { ...rest, fields, ...(without.size > 0 && { without: [...without] }) } as Change;
+  return { ...omit(first, 'without'), fields, ...(without.size > 0 && { without: [...without] }) } as Change;
 }

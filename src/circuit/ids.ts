@@ -35,8 +35,10 @@ export function names(taken: Iterable<string>): Names {
 }
 
 /** A new part's id is shown until it gets a label, so it avoids shown names too. */
-export const partNames = (circuit: Circuit): Names => names([...circuit.parts.map((part) => part.id), ...circuit.parts.map(labelOf)]);
-export const connectionNames = (circuit: Circuit): Names => names(circuit.connections.map((connection) => connection.id));
+export const partNames = (circuit: Circuit): Names =>
+  names([...circuit.parts.map((part) => part.id), ...circuit.parts.map(labelOf)]);
+export const connectionNames = (circuit: Circuit): Names =>
+  names(circuit.connections.map((connection) => connection.id));
 export const labelNames = (circuit: Circuit): Names => names((circuit.labels ?? []).map((label) => label.id));
 
 /** Prefixes of ids that are never shown. */

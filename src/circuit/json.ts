@@ -21,7 +21,11 @@ export function parseJson(text: string): Result<unknown> {
     const fault = findFault(bare);
     const before = bare.slice(0, fault.at).split('\n');
     const column = (before.at(-1) as string).length + 1;
-    return bad({ where: `line ${before.length}, column ${column}`, what: `The file is not JSON: ${fault.what}`, remedy: fault.remedy });
+    return bad({
+      where: `line ${before.length}, column ${column}`,
+      what: `The file is not JSON: ${fault.what}`,
+      remedy: fault.remedy,
+    });
   }
   const hazard = findHazard(value);
   return hazard ? bad(hazard) : good(value);
@@ -64,7 +68,11 @@ function findHazard(root: unknown): Problem | undefined {
     const isList = Array.isArray(seen.value);
     for (const [key, value] of Object.entries(seen.value as Record<string, unknown>)) {
       if (RESERVED.has(key)) {
-        return { where: pathOf(seen, key), what: `The name "${key}" is not allowed in a file.`, remedy: 'Remove or rename this field.' };
+        return {
+          where: pathOf(seen, key),
+          what: `The name "${key}" is not allowed in a file.`,
+          remedy: 'Remove or rename this field.',
+        };
       }
       if (typeof value === 'object' && value !== null) {
         stack.push({ value, key: isList ? Number(key) : key, depth: seen.depth + 1, up: seen });
@@ -80,7 +88,8 @@ interface Fault {
   readonly remedy: string;
 }
 
-const TOKEN = /[ \t\n\r]*(?:([{}[\],:])|("(?:[^"\\\u0000-\u001f]|\\(?:["\\/bfnrt]|u[0-9a-fA-F]{4}))*")|(-?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?(?![\w.])|(?:true|false|null)(?!\w)))/y;
+const TOKEN =
+  /[ \t\n\r]*(?:([{}[\],:])|("(?:[^"\\\u0000-\u001f]|\\(?:["\\/bfnrt]|u[0-9a-fA-F]{4}))*")|(-?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?(?![\w.])|(?:true|false|null)(?!\w)))/y;
 
 /** The engines word and place their JSON errors differently (or not at all), so the first fault is sought here. */
 function findFault(text: string): Fault {
@@ -90,8 +99,12 @@ function findFault(text: string): Fault {
   let at = 0;
   const wanted = (): string => {
     if (due === 'colon') return 'A ":" should stand here, after the name of a field.';
-    if (due === 'key' || due === 'first key') return `The name of a field in double quotes${due === 'key' ? '' : ', or "}",'} should stand here.`;
-    if (due === 'end') return open.length === 0 ? 'Nothing should follow the end of the data.' : `A "," or "${open.at(-1) === '{' ? '}' : ']'}" should stand here.`;
+    if (due === 'key' || due === 'first key')
+      return `The name of a field in double quotes${due === 'key' ? '' : ', or "}",'} should stand here.`;
+    if (due === 'end')
+      return open.length === 0
+        ? 'Nothing should follow the end of the data.'
+        : `A "," or "${open.at(-1) === '{' ? '}' : ']'}" should stand here.`;
     return 'A value should stand here.';
   };
   for (;;) {
@@ -145,7 +158,11 @@ function faultAt(text: string, from: number, wanted: string): Fault {
   const word = /^[-+]?(NaN|Infinity)\b/.exec(text.slice(at, at + 12));
   if (word) return { at, what: `${word[0]} is not a number.`, remedy: 'Write a finite number.' };
   if (text[at] === '"') {
-    return { at, what: 'this text is not closed, or holds a bare line break or a wrong "\\".', remedy: 'Close it with a double quote.' };
+    return {
+      at,
+      what: 'this text is not closed, or holds a bare line break or a wrong "\\".',
+      remedy: 'Close it with a double quote.',
+    };
   }
   const found = String.fromCodePoint(text.codePointAt(at) as number);
   return { at, what: `unexpected ${JSON.stringify(found)}.`, remedy: wanted };

@@ -15,7 +15,8 @@ export const STEPS: ReadonlyMap<number, Step> = new Map([[VERSION, (file) => fil
 export function migrate(file: RawFile, steps: ReadonlyMap<number, Step> = STEPS): Result<RawFile> {
   const where = 'version';
   const { version } = file;
-  if (version === undefined) return bad({ where, what: 'The version is missing.', remedy: `Write "version": ${VERSION}.` });
+  if (version === undefined)
+    return bad({ where, what: 'The version is missing.', remedy: `Write "version": ${VERSION}.` });
   if (typeof version !== 'number' || !Number.isInteger(version)) {
     return bad({ where, what: 'The version is not a whole number.', remedy: `Write "version": ${VERSION}.` });
   }
@@ -30,7 +31,11 @@ export function migrate(file: RawFile, steps: ReadonlyMap<number, Step> = STEPS)
   for (let at = version; at <= VERSION; at++) {
     const step = steps.get(at);
     if (step === undefined) {
-      return bad({ where, what: `Version ${at} of the file is not known.`, remedy: `Known: ${[...steps.keys()].join(', ')}.` });
+      return bad({
+        where,
+        what: `Version ${at} of the file is not known.`,
+        remedy: `Known: ${[...steps.keys()].join(', ')}.`,
+      });
     }
     raised = step(raised);
   }

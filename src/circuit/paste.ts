@@ -40,7 +40,12 @@ export function paste(circuit: Circuit, fragment: Circuit, dx = 0, dy = 0): Past
   };
   const remap = (ref: { part: string; port: string }) => {
     const part = newIds.get(ref.part);
-    if (part === undefined) throw new RefusedEdit(ref.part, `What is pasted has no part "${ref.part}".`, 'Copy both ends of each connection.');
+    if (part === undefined)
+      throw new RefusedEdit(
+        ref.part,
+        `What is pasted has no part "${ref.part}".`,
+        'Copy both ends of each connection.',
+      );
     return { part, port: ref.port };
   };
   const parts = fragment.parts.map((part): Part => {
@@ -63,17 +68,30 @@ export function paste(circuit: Circuit, fragment: Circuit, dx = 0, dy = 0): Past
       ...(bends && { bends: bends.map(move) }),
     };
   });
-  const labels = (fragment.labels ?? []).map((label): Label => ({ ...label, id: labelName.fresh(LABEL_PREFIX), at: move(label.at) }));
+  const labels = (fragment.labels ?? []).map((label): Label => ({
+    ...label,
+    id: labelName.fresh(LABEL_PREFIX),
+    at: move(label.at),
+  }));
   const edit = all([
     ...parts.map((part, i): Edit => ({ type: 'put-part', index: circuit.parts.length + i, part })),
-    ...connections.map((connection, i): Edit => ({ type: 'put-connection', index: circuit.connections.length + i, connection })),
+    ...connections.map((connection, i): Edit => ({
+      type: 'put-connection',
+      index: circuit.connections.length + i,
+      connection,
+    })),
     ...labels.map((label, i): Edit => ({ type: 'put-label', index: (circuit.labels ?? []).length + i, label })),
   ]);
   return { edit, parts: parts.map((part) => part.id), labels: labels.map((label) => label.id) };
 }
 
-export const duplicate = (circuit: Circuit, ids: Iterable<string>, dx: number, dy: number, labelIds: Iterable<string> = []): Pasted =>
-  paste(circuit, copyOut(circuit, ids, labelIds), dx, dy);
+export const duplicate = (
+  circuit: Circuit,
+  ids: Iterable<string>,
+  dx: number,
+  dy: number,
+  labelIds: Iterable<string> = [],
+): Pasted => paste(circuit, copyOut(circuit, ids, labelIds), dx, dy);
 
 /** Whether a shown name is free for this part. */
 export const isFreeLabel = (circuit: Circuit, id: string, label: string): boolean =>

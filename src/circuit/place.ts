@@ -16,8 +16,20 @@ export const movePart = (circuit: Circuit, id: string, at: Point): Edit => {
  * Move parts by dx, dy modules. Bends of connections between two moved parts go along.
  * A part without a place takes it from `places`, else the move is refused.
  */
-export const moveParts = (circuit: Circuit, ids: Iterable<string>, dx: number, dy: number, places: Places = NOWHERE): Edit =>
-  transform(circuit, ids, places, (p) => ({ x: p.x + dx, y: p.y + dy }), () => ({}));
+export const moveParts = (
+  circuit: Circuit,
+  ids: Iterable<string>,
+  dx: number,
+  dy: number,
+  places: Places = NOWHERE,
+): Edit =>
+  transform(
+    circuit,
+    ids,
+    places,
+    (p) => ({ x: p.x + dx, y: p.y + dy }),
+    () => ({}),
+  );
 
 /** Quarter turns clockwise about the first of the parts, in document order. */
 export function turnParts(circuit: Circuit, ids: Iterable<string>, by: Turn = 90, places: Places = NOWHERE): Edit {
@@ -81,7 +93,8 @@ function pivotOf(circuit: Circuit, ids: Iterable<string>, places: Places): Point
   return (first && (first.at ?? places.get(first.id))) ?? { x: 0, y: 0 };
 }
 
-const placeless = (id: string): RefusedEdit => new RefusedEdit(id, 'This part has no place on the sheet yet.', 'Place it first.');
+const placeless = (id: string): RefusedEdit =>
+  new RefusedEdit(id, 'This part has no place on the sheet yet.', 'Place it first.');
 
 export function partOf(circuit: Circuit, id: string): Part {
   const part = circuit.parts.find((p) => p.id === id);

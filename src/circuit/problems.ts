@@ -42,7 +42,8 @@ export function sayIssue(issue: Issue, root: unknown): Problem {
   if (value === undefined) return { where, what: 'This field is missing.', remedy: wanted ?? 'Add it.' };
   const [what, remedy] = issue.message.split(HALVES);
   if (what !== undefined && remedy !== undefined) return { where, what, remedy };
-  if (issue.code === 'invalid_type') return { where, what: `This is ${nounOf(value)}.`, remedy: wanted ?? 'Change it.' };
+  if (issue.code === 'invalid_type')
+    return { where, what: `This is ${nounOf(value)}.`, remedy: wanted ?? 'Change it.' };
   return { where, what: `${quote(value)} is not allowed here.`, remedy: wanted ?? issue.message };
 }
 
@@ -64,6 +65,10 @@ export function quote(value: unknown): string {
 export function shorten(problems: readonly Problem[]): readonly Problem[] {
   const more = problems.length - LIMITS.problems;
   if (more <= 0) return problems;
-  const rest: Problem = { where: 'file', what: `${more} more like these are not listed.`, remedy: 'Mend those above first.' };
+  const rest: Problem = {
+    where: 'file',
+    what: `${more} more like these are not listed.`,
+    remedy: 'Mend those above first.',
+  };
   return [...problems.slice(0, LIMITS.problems), rest];
 }

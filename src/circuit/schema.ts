@@ -20,13 +20,19 @@ const id = z
 const line = z
   .string()
   .max(LIMITS.label, say(`This text is longer than ${LIMITS.label} characters.`, 'Shorten it.'))
-  .regex(ONE_LINE, say('This text holds a control character.', 'Remove tabs, line breaks and other control characters.'));
+  .regex(
+    ONE_LINE,
+    say('This text holds a control character.', 'Remove tabs, line breaks and other control characters.'),
+  );
 
 const portRef = z
   .string()
   .max(2 * LIMITS.id + 1, say('This port is too long.', 'Write part and port with a dot between them, such as "V1.A".'))
   .regex(PORT_REF, say('This is no port.', 'Write part and port with a dot between them, such as "V1.A".'))
-  .refine((text) => !text.split('.').some((word) => RESERVED.has(word)), say('This word cannot name a part or port.', 'Choose another id.'));
+  .refine(
+    (text) => !text.split('.').some((word) => RESERVED.has(word)),
+    say('This word cannot name a part or port.', 'Choose another id.'),
+  );
 
 const far = say(`This point lies off the sheet.`, `Use numbers from -${LIMITS.coordinate} to ${LIMITS.coordinate}.`);
 const coordinate = z.number().min(-LIMITS.coordinate, far).max(LIMITS.coordinate, far);
@@ -36,7 +42,10 @@ const spot = z
 
 const index = z.int().min(0, say('A position cannot be negative.', 'Count positions from 0.'));
 const setting = z.union([line, z.number(), z.boolean()], {
-  error: say('This is no setting.', `Write a text of one line, at most ${LIMITS.label} characters, a finite number, true or false.`),
+  error: say(
+    'This is no setting.',
+    `Write a text of one line, at most ${LIMITS.label} characters, a finite number, true or false.`,
+  ),
 });
 
 const valve = z.looseObject({
@@ -55,7 +64,12 @@ const part = z.looseObject({
   label: line.min(1, say('The label is empty.', 'Write a label or leave the field out.')).optional(),
   code: line.optional(),
   at: spot.optional(),
-  turn: z.union([z.literal(0), z.literal(90), z.literal(180), z.literal(270)], say('This is no quarter turn.', 'Use 0, 90, 180 or 270.')).optional(),
+  turn: z
+    .union(
+      [z.literal(0), z.literal(90), z.literal(180), z.literal(270)],
+      say('This is no quarter turn.', 'Use 0, 90, 180 or 270.'),
+    )
+    .optional(),
   flip: z.boolean().optional(),
   settings: z.record(line, setting).optional(),
   valve: valve.optional(),
@@ -67,7 +81,10 @@ const connection = z.looseObject({
   to: portRef,
   name: line.min(1, say('The name is empty.', 'Write a name or leave the field out.')).optional(),
   use: z.enum(['working', 'pilot', 'drain']).optional(),
-  bends: z.array(spot).max(LIMITS.bends, say('Too many bends.', `Use at most ${LIMITS.bends}.`)).optional(),
+  bends: z
+    .array(spot)
+    .max(LIMITS.bends, say('Too many bends.', `Use at most ${LIMITS.bends}.`))
+    .optional(),
 });
 
 const label = z.looseObject({ id, at: spot, text: line });
@@ -85,9 +102,15 @@ export const fileSchema = z
       .optional(),
     parts: z.array(part).max(LIMITS.parts),
     connections: z.array(connection).max(LIMITS.connections),
-    labels: z.array(label).max(LIMITS.labels, say('Too many labels.', `Use at most ${LIMITS.labels}.`)).optional(),
+    labels: z
+      .array(label)
+      .max(LIMITS.labels, say('Too many labels.', `Use at most ${LIMITS.labels}.`))
+      .optional(),
   })
-  .meta({ title: 'Spooltable circuit', description: 'A hydraulic circuit: parts, and connections between their ports.' });
+  .meta({
+    title: 'Spooltable circuit',
+    description: 'A hydraulic circuit: parts, and connections between their ports.',
+  });
 
 export type FileCircuit = z.infer<typeof fileSchema>;
 export type FilePart = z.infer<typeof part>;

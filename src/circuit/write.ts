@@ -52,7 +52,9 @@ const valveFields = (valve: ValveData): Fields =>
   withExtra(
     {
       ports: valve.ports.map((port) => withExtra({ id: port.id, side: port.side }, port.extra)),
-      positions: valve.positions.map((position) => withExtra({ name: position.name, paths: position.paths }, position.extra)),
+      positions: valve.positions.map((position) =>
+        withExtra({ name: position.name, paths: position.paths }, position.extra),
+      ),
       crossovers: valve.crossovers,
       rest: valve.rest,
       left: valve.left,
@@ -75,13 +77,15 @@ const connectionFields = (connection: Connection): Fields =>
     connection.extra,
   );
 
-const labelFields = (label: Label): Fields => withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
+const labelFields = (label: Label): Fields =>
+  withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
 
 /** Known fields first and never overruled by an unknown one of the same name. */
 function withExtra(fields: Fields, extra: Extra | undefined): Fields {
   const out: Fields = {};
   for (const [key, value] of Object.entries(fields)) if (value !== undefined) out[key] = value;
-  for (const [key, value] of Object.entries(extra ?? {})) if (!Object.hasOwn(fields, key) && value !== undefined) out[key] = value;
+  for (const [key, value] of Object.entries(extra ?? {}))
+    if (!Object.hasOwn(fields, key) && value !== undefined) out[key] = value;
   return out;
 }
 
@@ -107,7 +111,9 @@ function broken(value: object, indent: number): string {
   const isList = Array.isArray(value);
   const lines = isList
     ? value.map((v) => pad + pretty(v, indent + 2, 0))
-    : entriesOf(value).map(([key, v]) => `${pad}${JSON.stringify(key)}: ${pretty(v, indent + 2, JSON.stringify(key).length + 2)}`);
+    : entriesOf(value).map(
+        ([key, v]) => `${pad}${JSON.stringify(key)}: ${pretty(v, indent + 2, JSON.stringify(key).length + 2)}`,
+      );
   if (lines.length === 0) return isList ? '[]' : '{}';
   const [before, after] = isList ? '[]' : '{}';
   return `${before}\n${lines.join(',\n')}\n${' '.repeat(indent)}${after}`;
