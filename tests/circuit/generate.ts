@@ -1,0 +1,152 @@
+import fc from 'fast-check';
+import type { Point } from '../../src/base/points.ts';
+import type { Circuit, Connection, Extra, Label, Part, PortRef, ValveData } from '../../src/circuit/model.ts';
+import { KNOWN } from '../../src/circuit/schema.ts';
+
+const RESERVED = /"(__proto__|constructor|prototype)":/;
+
+export const id: fc.Arbitrary<string> = fc
+  .stringMatching(/^[A-Za-z0-9_-]{1,8}$/)
+  .filter((text) => text !== '__proto__');
+/** Any text of one line: letters of all scripts, emoji, quotes, tags. */
+export const words: fc.Arbitrary<string> = fc
+  .oneof(
+    fc.string({ unit: 'grapheme', minLength: 1, maxLength: 20 }),
+    fc.constantFrom('<script>alert(1)</script>', 'Hubwerk ↑', 'Зажим', '夹紧', '"\\', 'ＡＢ', '👷🏽‍♀️', 'toString'),
+  )
+  .filter((text) => text.length <= 200 && !/[\u0000-\u001f\u007f-\u009f\u2028\u2029]/.test(text));
+
+export const point: fc.Arbitrary<Point> = fc
+  .record({ x: fc.integer({ min: -100_000, max: 100_000 }), y: fc.double({ min: -1000, max: 1000, noNaN: true }) })
+  .map(({ x, y }) => ({ x, y: y + 0 }));
+
+const unknownFields = (known: ReadonlySet<string>): fc.Arbitrary<Extra> =>
+  fc
+    .dictionary(
+      fc.oneof(fc.constantFrom('weight', 'rules', 'x.y', '7', 'extra'), words),
+      fc.jsonValue({ maxDepth: 3 }),
+      {
+        minKeys: 1,
+        maxKeys: 3,
+        noNullPrototype: true,
+      },
+    )
+    // JSON has no -0, and a file refuses the reserved names.
+    .map((fields) => JSON.parse(JSON.stringify(fields)) as Extra)
+    .filter((fields) => Object.keys(fields).length > 0 && !Object.keys(fields).some((key) => known.has(key)))
+    .filter((fields) => !RESERVED.test(JSON.stringify(fields)));
+
+const named = fc.dictionary(
+  words.filter((word) => !/^(__proto__|constructor|prototype)$/.test(word)),
+  words,
+  { maxKeys: 3, noNullPrototype: true },
+);
+const paths = fc.array(fc.constantFrom('P-A', 'P>A', 'A~T', 'B~>T', 'P-A-B'), { maxLength: 4 });
+const operator = fc.constantFrom('lever', 'coil', 'spring', 'detent', 'hand', 'pilot');
+
+const valve: fc.Arbitrary<ValveData> = fc.record(
+  {
+    ports: fc.array(
+      fc.record(
+        { id, side: fc.constantFrom('top', 'bottom'), extra: unknownFields(KNOWN.valvePort) },
+        { requiredKeys: ['id', 'side'], noNullPrototype: true },
+      ),
+      { maxLength: 4 },
+    ),
+    positions: fc.array(
+      fc.record(
+        { name: words, paths, extra: unknownFields(KNOWN.valvePosition) },
+        { requiredKeys: ['name', 'paths'], noNullPrototype: true },
+      ),
+      { maxLength: 3 },
+    ),
+    crossovers: fc.array(paths, { maxLength: 2 }),
+    rest: fc.nat(3),
+    left: fc.array(operator, { maxLength: 2 }),
+    right: fc.array(operator, { maxLength: 2 }),
+    coils: fc.array(
+      fc.record(
+        { name: words, position: fc.nat(3), extra: unknownFields(KNOWN.coil) },
+        { requiredKeys: ['name', 'position'], noNullPrototype: true },
+      ),
+      { maxLength: 2 },
+    ),
+    extra: unknownFields(KNOWN.valve),
+  },
+  { requiredKeys: ['ports', 'positions', 'left', 'right'], noNullPrototype: true },
+);
+
+const settings = fc.dictionary(
+  words.filter((word) => !/^(__proto__|constructor|prototype)$/.test(word)),
+  fc.oneof(words, fc.boolean(), fc.integer(), fc.constant('30 L/min')),
+  { maxKeys: 3, noNullPrototype: true },
+);
+
+/** Fields of a part besides id and label. */
+export const partFields: fc.Arbitrary<Omit<Part, 'id' | 'label'>> = fc.record(
+  {
+    kind: fc.oneof(fc.constantFrom('tank', 'cylinder', 'directional-valve', 'junction'), words),
+    code: words,
+    at: point,
+    turn: fc.constantFrom(0, 90, 180, 270),
+    flip: fc.boolean(),
+    settings,
+    valve,
+    extra: unknownFields(KNOWN.part),
+  },
+  { requiredKeys: ['kind'], noNullPrototype: true },
+);
+
+const port = (parts: readonly Part[]): fc.Arbitrary<PortRef> =>
+  fc.record(
+    { part: fc.constantFrom(...parts.map((part) => part.id)), port: fc.constantFrom('P', 'T', 'A', 'B') },
+    { noNullPrototype: true },
+  );
+
+export const connectionFields: fc.Arbitrary<Omit<Connection, 'id' | 'from' | 'to'>> = fc.record(
+  {
+    name: words,
+    use: fc.constantFrom('working', 'pilot', 'drain'),
+    bends: fc.array(point, { maxLength: 3 }),
+    extra: unknownFields(KNOWN.connection),
+  },
+  { requiredKeys: [], noNullPrototype: true },
+);
+
+const connection = (parts: readonly Part[]): fc.Arbitrary<Connection> =>
+  fc
+    .tuple(id, port(parts), port(parts), connectionFields)
+    .filter(([, from, to]) => from.part !== to.part || from.port !== to.port)
+    .map(([own, from, to, fields]) => ({ id: own, from, to, ...fields }));
+
+const label: fc.Arbitrary<Label> = fc.record(
+  { id, at: point, text: words, extra: unknownFields(KNOWN.label) },
+  { requiredKeys: ['id', 'at', 'text'], noNullPrototype: true },
+);
+
+/** Any circuit that a file can hold, unknown fields at every level among it. */
+export const anyCircuit: fc.Arbitrary<Circuit> = fc
+  .uniqueArray(fc.tuple(id, partFields), { maxLength: 6, selector: ([own]) => own })
+  .chain((found) => {
+    const parts: readonly Part[] = found.map(([own, fields], i) => ({
+      id: own,
+      ...fields,
+      // A label that no other part's id can be.
+      ...(i % 2 === 1 && { label: `№ ${i}` }),
+    }));
+    return fc.record(
+      {
+        name: fc.oneof(words, fc.constant('')),
+        title: named,
+        notes: words.map((text) => `${text}\n\t${text}`),
+        parts: fc.constant(parts),
+        connections:
+          parts.length === 0
+            ? fc.constant([])
+            : fc.uniqueArray(connection(parts), { maxLength: 6, selector: (c) => c.id }),
+        labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
+        extra: unknownFields(KNOWN.circuit),
+      },
+      { requiredKeys: ['name', 'parts', 'connections'], noNullPrototype: true },
+    );
+  });
