@@ -13,6 +13,7 @@ import type {
   TrapReason,
 } from '../../worker/client.ts';
 import { editor } from './editor.svelte.ts';
+import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
 import type { CircuitInput } from './inputs.ts';
 import { view } from './view.svelte.ts';
@@ -50,6 +51,7 @@ export interface Subject {
   readonly key: string;
 }
 
+const PATIENCE_MS = 250;
 const DARK: Lit = { lines: [], parts: [], steps: [] };
 
 /** The state on show: conditions, the whole table, the current row, and why it is so. */
@@ -62,6 +64,8 @@ class Session {
   /** Why there is no table, in words. */
   failure = $state<string | undefined>();
   stopped = $state(false);
+  /** True once the running computation has taken long enough to be worth a word. */
+  slow = $state(false);
   explanation = $state.raw<Explanation | undefined>();
   explainFailure = $state<string | undefined>();
   /** What the Why panel is about. */
@@ -93,6 +97,7 @@ class Session {
   lit: Lit = $derived.by(() => this.#light());
 
   #analyst: Analyst | undefined;
+  #patience: ReturnType<typeof setTimeout> | undefined;
   #job: Job<TableAnswer> | undefined;
   #explaining: Job<Explanation> | undefined;
 
@@ -106,6 +111,7 @@ class Session {
     const input = this.inputs.find((each) => each.part === partId);
     if (!input || index < 0 || index >= input.positions.length) return;
     this.#levers = { ...this.#levers, [partId]: index };
+    hint.dismiss();
   }
 
   /** Every lever back to where its springs put it; detented ones stay. */
@@ -176,6 +182,9 @@ class Session {
     if (!analyst) return;
     this.stopped = false;
     this.progress = 0;
+    this.slow = false;
+    clearTimeout(this.#patience);
+    this.#patience = setTimeout(() => (this.slow = true), PATIENCE_MS);
     const job = analyst.table(circuit, conditions, (share) => {
       if (this.#job === job) this.progress = share;
     });
@@ -194,6 +203,10 @@ class Session {
         else this.failure = sayError(error);
       },
     );
+  }
+
+  again(): void {
+    this.compute(editor.circuit, this.conditions);
   }
 
   /** The person stops a long computation; the last table stays on show. */

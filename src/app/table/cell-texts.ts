@@ -1,0 +1,89 @@
+import { ACTUATOR_NOTES, TRAP_REASONS } from '../../worker/client.ts';
+import type { Finding, StateTable, TrapReason } from '../../worker/client.ts';
+
+/** Words of one row, shortest form. */
+export interface NamedGroup {
+  readonly word: string;
+  readonly names: readonly string[];
+}
+
+/** Lines that no steady flow passes, by kind. */
+export function blockedGroups(table: StateTable, row: number): NamedGroup[] {
+  const pressed: string[] = [];
+  const cutOff: string[] = [];
+  table.data.lines.forEach((line, i) => {
+    const kind = table.blocked(i, row);
+    if (kind === 'under pressure') pressed.push(line.name);
+    else if (kind === 'cut off') cutOff.push(line.name);
+  });
+  return [
+    ...(pressed.length > 0 ? [{ word: 'under pressure', names: pressed }] : []),
+    ...(cutOff.length > 0 ? [{ word: 'cut off', names: cutOff }] : []),
+  ];
+}
+
+export interface TrappedGroup extends NamedGroup {
+  readonly reason: TrapReason;
+  /** All reasons of each name, in the same order. */
+  readonly all: readonly (readonly TrapReason[])[];
+}
+
+/** Each line under its gravest reason; heat alone comes last. */
+export function trappedGroups(table: StateTable, row: number): TrappedGroup[] {
+  const groups = new Map<TrapReason, { name: string; reasons: TrapReason[] }[]>();
+  table.data.lines.forEach((line, i) => {
+    const reasons = table.trapped(i, row);
+    const [first] = reasons;
+    if (first === undefined) return;
+    const group = groups.get(first) ?? [];
+    group.push({ name: line.name, reasons });
+    groups.set(first, group);
+  });
+  return TRAP_REASONS.flatMap((reason) => {
+    const group = groups.get(reason);
+    if (!group) return [];
+    return [{ reason, word: reason, names: group.map((each) => each.name), all: group.map((each) => each.reasons) }];
+  });
+}
+
+export const sayGroups = (groups: readonly NamedGroup[]): string =>
+  groups.map(({ word, names }) => `${word}: ${names.join(', ')}`).join('; ');
+
+export interface RowNote {
+  readonly level: 'danger' | 'caution' | 'note';
+  readonly text: string;
+}
+
+const SAID: Readonly<Record<(typeof ACTUATOR_NOTES)[number], string | undefined>> = {
+  'outward by suction only': 'held outward by suction only',
+  'inward by suction only': 'held inward by suction only',
+  'void forms': 'void forms',
+  // Shown with the verdict itself.
+  'free outward': undefined,
+  'free inward': undefined,
+};
+
+/** A finding speaks in a row only if it lists every row that shows it; a cut list would leave rows out in silence. */
+const complete = (finding: Finding): boolean => finding.rows.length === finding.rowCount;
+
+export function rowNotes(table: StateTable, findings: readonly Finding[], row: number): RowNote[] {
+  const notes: RowNote[] = [];
+  const { data } = table;
+  data.pumps.forEach((pump, i) => {
+    if (table.pump(i, row) === 'dead-headed') notes.push({ level: 'danger', text: `${pump.label} dead-headed` });
+  });
+  // A rule that holds in every row says nothing about this one.
+  for (const finding of findings) {
+    if (finding.rowCount >= data.count || !complete(finding) || !finding.rows.includes(row)) continue;
+    notes.push({ level: finding.level, text: finding.title });
+  }
+  data.actuators.forEach((actuator, i) => {
+    for (const note of table.actuatorNotes(i, row)) {
+      const said = SAID[note];
+      if (said !== undefined) notes.push({ level: 'note', text: `${actuator.label} ${said}` });
+    }
+  });
+  if (row === table.restRow()) notes.push({ level: 'note', text: 'rest: every lever let go' });
+  const order = { danger: 0, caution: 1, note: 2 };
+  return notes.sort((a, b) => order[a.level] - order[b.level]);
+}
