@@ -5,7 +5,7 @@ import { kindOf } from '../parts/catalogue.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
 import type { Routes } from './geometry.ts';
 import { TEXT_SIZES } from './palette.ts';
-import { partBox, placedPorts } from './shapes.ts';
+import { partReach, placedPorts } from './shapes.ts';
 import { MODULE_PX } from './strokes.ts';
 
 export interface LabelText {
@@ -65,7 +65,7 @@ export function sceneLabels(circuit: Circuit, routes: Routes, noteOf: NoteOf = (
     role: 'free', owner: label.id, at: label.at, align: 'start',
     runs: [{ text: label.text, size: TEXT_SIZES.label, weight: 400, tone: 'second' }],
   }));
-  const parts = circuit.parts.map((part) => ({ part, box: partBox(part) }));
+  const parts = circuit.parts.map((part) => ({ part, box: partReach(part) }));
   const taken = [...letters, ...free].map(labelBox);
   const out: SceneLabel[] = [];
   for (const { part, box } of parts) {

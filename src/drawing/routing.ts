@@ -10,7 +10,7 @@ import { buildField, MARGIN } from './route-field.ts';
 import type { Direction, Found } from './route-search.ts';
 import { opposite, searchLeg, THROUGH_PART } from './route-search.ts';
 import type { PlacedPort } from './shapes.ts';
-import { partBox } from './shapes.ts';
+import { partReach } from './shapes.ts';
 
 /** What a route has to reckon with. `laid` grows as routes are added. */
 export interface RoutingSheet {
@@ -38,7 +38,7 @@ export function routingSheet(circuit: Circuit, routes?: Routes): RoutingSheet {
   const sheet: RoutingSheet = {
     circuit,
     parts: new Map(circuit.parts.map((p) => [p.id, p])),
-    boxes: new Map(circuit.parts.map((p) => [p.id, partBox(p)])),
+    boxes: new Map(circuit.parts.map((p) => [p.id, partReach(p)])),
     lines: lineNumbers(circuit),
     laid: [],
   };
@@ -83,7 +83,7 @@ export function routeAll(circuit: Circuit): Map<string, Point[]> {
  */
 export function reroute(previous: Routes, circuit: Circuit, changedPartIds: Iterable<string>): Map<string, Point[]> {
   const changed = new Set(changedPartIds);
-  const covering = circuit.parts.filter((p) => changed.has(p.id)).map(partBox);
+  const covering = circuit.parts.filter((p) => changed.has(p.id)).map(partReach);
   const parts = new Map(circuit.parts.map((p) => [p.id, p]));
   const kept = new Map<string, readonly Point[]>();
   for (const connection of circuit.connections) {

@@ -28,6 +28,12 @@ export const ownBox = (part: Part): Box => kindOf(part.kind)?.bounds(part) ?? UN
 /** The part's outline on the sheet. */
 export const partBox = (part: Part): Box => placeBox(ownBox(part), placementOf(part));
 
+/** The outline over all positions: what lines, names and other parts keep clear of. */
+export const partReach = (part: Part): Box => {
+  const own = kindOf(part.kind)?.reach?.(part);
+  return own ? placeBox(own, placementOf(part)) : partBox(part);
+};
+
 export function placedPorts(part: Part): PlacedPort[] {
   const placement = placementOf(part);
   return portSpecs(part).map((port) => ({
