@@ -20,7 +20,7 @@ describe('a second validator, on the published schema', () => {
   const valid = new Ajv2020({ strict: true, strictTypes: false, strictTuples: false }).compile(published as object);
 
   test('accepts what is written', () => {
-    fc.assert(fc.property(anyCircuit, (circuit) => expect(valid(JSON.parse(writeCircuit(circuit)))).toBe(true)));
+    fc.assert(fc.property(anyCircuit, (circuit) => valid(JSON.parse(writeCircuit(circuit)))));
   });
 
   const tank = (fields: object): object => ({
