@@ -30,8 +30,15 @@ export interface PartKind {
   readonly draw: (part: Part, look: Look) => readonly Primitive[];
   /** Outline on the sheet in its own frame, without lines. */
   readonly bounds: (part: Part) => Box;
+  /** Outline over all positions, where it is larger than `bounds` (a valve's strip slides). */
+  readonly reach?: (part: Part) => Box;
   /** Checks of its own data beyond the settings (the directional valve's). */
-  readonly check?: (part: Part) => readonly Problem[];
+  readonly check?: (part: Part) => readonly PartProblem[];
+}
+
+/** `where` is relative to the part, e.g. `settings.flow`; an error unless it says otherwise. */
+export interface PartProblem extends Problem {
+  readonly level?: 'error' | 'warning';
 }
 
 export type PartGroup = 'Supply' | 'Motion' | 'Direction' | 'Pressure' | 'Flow and check' | 'Store' | 'Measure and joints';
@@ -87,10 +94,10 @@ export interface InputSpec {
 /** What a part does, in terms the network and the engines understand. Values are SI. */
 export type Element =
   | PathElement
-  | { readonly type: 'pressure-opened'; readonly from: string; readonly to: string; readonly setting: number; readonly duty: 'relief' }
+  | { readonly type: 'pressure-opened'; readonly from: string; readonly to: string; readonly setting: number; readonly duty: 'relief'; /** Rise over the setting, Pa, at a flow, m³/s. */ readonly override?: { readonly rise: number; readonly flow: number } }
   | { readonly type: 'pump'; readonly outlet: string; readonly suction: string; readonly form: 'fixed' | 'compensated'; /** m³/s */ readonly flow: number; /** Pa, compensated only */ readonly setting?: number; readonly tightWhenStopped: boolean }
   | { readonly type: 'tank'; readonly port: string }
-  | { readonly type: 'accumulator'; readonly port: string; readonly charged: boolean }
+  | { readonly type: 'accumulator'; readonly port: string; readonly charged: boolean; /** Gas volume, m³ */ readonly volume?: number; /** Gas pressure when empty of oil, Pa */ readonly precharge?: number }
   | ActuatorElement;
 
 /** An open path. `positions`: input positions in which it exists; absent = always. */
@@ -120,6 +127,12 @@ export interface ActuatorElement {
   readonly areaB: number;
   /** Spring that pushes it this way. */
   readonly spring?: 'in' | 'out';
+  /** N, at mid stroke. */
+  readonly springForce?: number;
+  /** N or N·m against any motion. */
+  readonly friction?: number;
+  /** m; absent for a motor. */
+  readonly stroke?: number;
   /** N or N·m that acts from outside: `in`/`out` (motor: `B→A`/`A→B`) presses also at rest, `resisting` only against motion. */
   readonly load: { readonly sense: 'none' | 'resisting' | 'in' | 'out'; readonly size: number };
 }

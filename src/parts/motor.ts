@@ -1,0 +1,44 @@
+import type { PartKind } from './contract.ts';
+import { checkLoad, MOTOR_LOAD, readLoad } from './load.ts';
+import { quantitySetting, readSi } from './settings.ts';
+import { boxOf, circle, leftOpen, port, shape, stroke } from './shapes.ts';
+
+const DISPLACEMENT = quantitySetting(
+  { id: 'displacement', title: 'Displacement', help: 'Oil for one turn of the shaft.' },
+  'displacement', '82 cm³/rev', { min: '0.01 cm³/rev', max: '1000000 cm³/rev' },
+);
+const OPEN = leftOpen('caution', 'One port of the motor has no line; it counts as plugged, so the motor cannot turn.', 'Connect A and B.');
+
+export const motor: PartKind = {
+  kind: 'motor',
+  title: 'Motor',
+  group: 'Motion',
+  help: 'Oil through it from A to B turns the shaft one way, from B to A the other way.',
+  words: ['hydraulic motor', 'rotary actuator', 'winch', 'hydromotor'],
+  prefix: 'MOT',
+  settings: [DISPLACEMENT, ...MOTOR_LOAD.all],
+  readyMade: [{ id: 'motor', title: 'Motor, both ways', make: () => ({}) }],
+  ports: () => [
+    port('A', [-4, 0], 'left', 'working', OPEN),
+    port('B', [4, 0], 'right', 'working', OPEN),
+    port('L', [2, 4], 'down', 'drain', leftOpen(
+      'caution', 'The case drain has no line; it counts as plugged, so leakage presses on the shaft seal.', 'Lead L to the tank by a line of its own, unless the maker says that it is drained inside.',
+    )),
+  ],
+  elements: (part) => {
+    const area = readSi(part, DISPLACEMENT);
+    return [{ type: 'actuator', a: 'A', b: 'B', motion: 'rotary', areaA: area, areaB: area, ...readLoad(part, MOTOR_LOAD) }];
+  },
+  draw: () => [
+    stroke('symbol', [-4, 0], [-3, 0]),
+    stroke('symbol', [3, 0], [4, 0]),
+    stroke('pilot', [2, 4], [2, 2.24]),
+    stroke('fine', [-0.35, -4.6], [-0.35, -2.98]),
+    stroke('fine', [0.35, -4.6], [0.35, -2.98]),
+    circle('symbol', [0, 0], 3, 'paper'),
+    shape('symbol', 'ink', [-1.1, 0], [-3, -1.1], [-3, 1.1]),
+    shape('symbol', 'ink', [1.1, 0], [3, -1.1], [3, 1.1]),
+  ],
+  bounds: () => boxOf(-4, -5, 8, 9),
+  check: (part) => checkLoad(part, MOTOR_LOAD),
+};

@@ -1,0 +1,119 @@
+import type { Primitive } from '../base/primitives.ts';
+import type { Operator } from '../circuit/model.ts';
+import { arrowHead, boxOf, circle, rectangle, shape, spring, stroke, text, type Pair } from './shapes.ts';
+
+/** One end of a valve. `u` runs outwards from the edge of the last box, y down, 0 at mid height. */
+export interface EndLook {
+  readonly side: 'left' | 'right';
+  /** Names of the coils on this end, from the box outwards. */
+  readonly coils: readonly string[];
+  /** For the notches of a detent: how many, and which one is engaged, counted left to right. */
+  readonly positions: number;
+  readonly active: number;
+}
+
+/** How far each operator reaches out, in modules. */
+const REACH: Readonly<Record<Operator, number>> = {
+  coil: 3, spring: 2.7, detent: 3.2, lever: 4, pedal: 3, button: 2.8, hand: 2.2, roller: 2.9, pilot: 2.8,
+};
+
+const STEMS: readonly Operator[] = ['lever', 'pedal', 'button', 'hand', 'roller'];
+const UNDER_A_STEM: readonly Operator[] = ['spring', 'detent'];
+
+interface Placed {
+  readonly operator: Operator;
+  readonly u: number;
+  readonly y: number;
+}
+
+/**
+ * Operators in their places: a stem takes the upper lane when a spring or detent shares the end with
+ * it and goes below; all else stacks outwards.
+ */
+export function placeOperators(operators: readonly Operator[]): { readonly placed: readonly Placed[]; readonly length: number } {
+  const twoLanes = operators.some((each) => STEMS.includes(each)) && operators.some((each) => UNDER_A_STEM.includes(each));
+  const placed: Placed[] = [];
+  let middle = 0;
+  const stacked = operators.filter((each) => !twoLanes || !(STEMS.includes(each) || UNDER_A_STEM.includes(each)));
+  for (const operator of stacked) {
+    placed.push({ operator, u: middle, y: 0 });
+    middle += REACH[operator];
+  }
+  let upper = middle;
+  let lower = middle;
+  for (const operator of operators.filter((each) => !stacked.includes(each))) {
+    if (STEMS.includes(operator)) {
+      placed.push({ operator, u: upper, y: -0.9 });
+      upper += REACH[operator];
+    } else {
+      placed.push({ operator, u: lower, y: 1 });
+      lower += REACH[operator];
+    }
+  }
+  return { placed, length: Math.max(middle, upper, lower) };
+}
+
+/** Height over mid line that the operators of an end need, 2 at least. */
+export const operatorTop = (operators: readonly Operator[]): number => (operators.includes('lever') ? 3 : 2);
+
+export function drawEnd(operators: readonly Operator[], look: EndLook): Primitive[] {
+  let coil = 0;
+  return placeOperators(operators).placed.flatMap((each) =>
+    drawOperator(each, look, each.operator === 'coil' ? (look.coils[coil++] ?? '') : ''));
+}
+
+function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): Primitive[] {
+  const sign = look.side === 'right' ? 1 : -1;
+  const p = (du: number, dy: number): Pair => [sign * (u + du), y + dy];
+  const box = (du: number, dy: number, width: number, height: number): Primitive =>
+    rectangle('symbol', boxOf(sign === 1 ? u + du : -(u + du + width), y + dy, width, height), 'paper');
+  const stem = (to: number): Primitive[] => [stroke('fine', p(0, -0.35), p(to, -0.35)), stroke('fine', p(0, 0.35), p(to, 0.35))];
+  switch (operator) {
+    case 'coil':
+      return [
+        box(0, -1, 3, 2),
+        stroke('fine', p(1, 1), p(2, -1)),
+        ...(name === '' ? [] : [text(name, p(1.5, -1.5), 1.1)]),
+      ];
+    case 'spring':
+      return [spring('symbol', sign * u, sign * (u + 2.7), y, y === 0 ? 1 : 0.8)];
+    case 'detent':
+      return detent(p, look);
+    case 'lever':
+      return [...stem(2), stroke('symbol', p(2, 0.7), p(3.45, -1.6)), circle('symbol', p(3.45, -1.6), 0.45, 'ink')];
+    case 'pedal':
+      return [...stem(1.6), stroke('symbol', p(2.9, -1), p(1.6, 0.7), p(1.6, -0.7))];
+    case 'button':
+      return [
+        ...stem(1.7),
+        stroke('symbol', p(1.7, -1), p(1.7, 1)),
+        { type: 'arc', from: xy(p(1.7, -1)), to: xy(p(1.7, 1)), radius: 1.05, clockwise: sign === 1, pen: 'symbol' },
+      ];
+    case 'hand':
+      return [...stem(2), stroke('symbol', p(2, -1), p(2, 1))];
+    case 'roller':
+      return [...stem(1.6), circle('symbol', p(2.2, 0), 0.6, 'paper')];
+    case 'pilot':
+      return [shape('symbol', 'ink', p(0, 0), p(1.3, -0.7), p(1.3, 0.7)), stroke('pilot', p(1.3, 0), p(2.8, 0))];
+  }
+}
+
+const xy = ([x, y]: Pair): { x: number; y: number } => ({ x, y });
+
+/** A bar with one notch for each position, and the catch in the notch that is engaged. */
+function detent(p: (du: number, dy: number) => Pair, look: EndLook): Primitive[] {
+  const { positions, side } = look;
+  const pitch = 2.8 / positions;
+  const half = Math.min(0.35, pitch / 2.4);
+  const middle = (notch: number): number => 0.2 + pitch * (notch + 0.5);
+  const rim: Pair[] = [];
+  for (let notch = 0; notch < positions; notch++) {
+    rim.push(p(middle(notch) - half, -0.1), p(middle(notch), 0.45), p(middle(notch) + half, -0.1));
+  }
+  const engaged = middle(side === 'right' ? look.active : positions - 1 - look.active);
+  return [
+    stroke('symbol', p(0, -0.1), ...rim, p(3, -0.1), p(3, 0.8), p(0, 0.8)),
+    stroke('fine', p(engaged, -1), p(engaged, 0)),
+    arrowHead('fine', p(engaged, -1), p(engaged, 0.4), 0.7, 0.5),
+  ];
+}

@@ -1,0 +1,75 @@
+import { bad, good, type Result } from '../base/result.ts';
+import type { ValveData } from '../circuit/model.ts';
+import type { PathElement } from './contract.ts';
+
+/** One path of a position, as written. Two ports, or more that are all joined. */
+export interface ValvePath {
+  readonly ports: readonly string[];
+  readonly way: 'both' | 'one-way';
+  readonly throttled: boolean;
+}
+
+const REMEDY = 'Write P-A (open), P>A (one way), P~A (throttled), P~>A (throttled one way) or P-A-B (all joined).';
+const PORT = /^[A-Za-z][A-Za-z0-9_]*$/;
+
+/** Reads the path notation of `ValvePosition.paths`; blanks do not matter. */
+export function parsePath(text: string, where = 'path'): Result<ValvePath> {
+  const clean = text.replace(/\s+/g, '');
+  const signs = clean.match(/~>|[-~>]/g) ?? [];
+  const ports = clean.split(/~>|[-~>]/);
+  const wrong = ports.find((id) => !PORT.test(id));
+  if (clean === '' || signs.length === 0 || wrong !== undefined) {
+    return bad({ where, what: `"${text}" is not a path between ports.`, remedy: REMEDY });
+  }
+  const sign = signs[0] as string;
+  if (signs.length > 1 && signs.some((other) => other !== '-')) {
+    return bad({ where, what: `"${text}" mixes signs or chains a one-way or throttled path.`, remedy: 'Write one path for each pair of ports.' });
+  }
+  const twice = ports.find((id, index) => ports.indexOf(id) !== index);
+  if (twice !== undefined) {
+    return bad({ where, what: `"${text}" names port ${twice} twice.`, remedy: 'Name each port of a path once.' });
+  }
+  return good({ ports, way: sign.endsWith('>') ? 'one-way' : 'both', throttled: sign.startsWith('~') });
+}
+
+/** Two ports of a path; joined ports give every pair, so that the order they were typed in does not matter. */
+export interface PathPair {
+  readonly from: string;
+  readonly to: string;
+  readonly way: 'both' | 'one-way';
+  readonly throttled: boolean;
+}
+
+export function pairsOf(path: ValvePath): PathPair[] {
+  const { way, throttled } = path;
+  return path.ports.flatMap((from, index) => path.ports.slice(index + 1).map((to) => ({ from, to, way, throttled })));
+}
+
+/** Equal for two pairs that do the same; a both-way pair has no direction. */
+export function pairKey({ from, to, way, throttled }: PathPair): string {
+  const ends = way === 'both' && to < from ? [to, from] : [from, to];
+  return `${ends.join(' ')} ${way} ${throttled}`;
+}
+
+/** The readable paths of a position whose ports exist; the rest is for `checkValve` to report. */
+export function pathsOf(data: ValveData, position: number): ValvePath[] {
+  const known = new Set(data.ports.map((port) => port.id));
+  return (data.positions[position]?.paths ?? []).flatMap((text) => {
+    const parsed = parsePath(text);
+    return parsed.ok && parsed.value.ports.every((id) => known.has(id)) ? [parsed.value] : [];
+  });
+}
+
+/** Elements of all positions; a pair that several positions share is one element with all of them. */
+export function valveElements(data: ValveData, rated: { readonly flow: number; readonly drop: number }): PathElement[] {
+  const found = new Map<string, { pair: PathPair; positions: number[] }>();
+  data.positions.forEach((_, position) => {
+    for (const pair of pathsOf(data, position).flatMap(pairsOf)) {
+      const key = pairKey(pair);
+      const entry = found.get(key);
+      if (!entry) found.set(key, { pair, positions: [position] });
+      else if (!entry.positions.includes(position)) entry.positions.push(position);
+    }
+  });
+  return [...found.values()].map(({ pair, positions }) => ({ type: 'path', ...pair, positions, rated }));
+}
