@@ -57,16 +57,4 @@ export interface Explanation {
   readonly notes: readonly string[];
 }
 
-/** A design fault that the trade knows. */
-export interface Finding {
-  readonly rule: string;
-  readonly level: 'danger' | 'caution' | 'note';
-  readonly title: string;
-  readonly what: string;
-  readonly remedy: string;
-  readonly parts: readonly string[];
-  readonly lines: readonly number[];
-  /** 0-based rows that show it, at most a few, and how many there are in all. */
-  readonly rows: readonly number[];
-  readonly rowCount: number;
-}
+export type { Finding } from '../findings/finding.ts';

@@ -1,4 +1,5 @@
 import { countBits, emptySet, has, members, orInto } from '../../base/bits.ts';
+import { strides } from './strides.ts';
 import type { Plane, TableData } from './table-data.ts';
 import {
   ACTUATOR_NOTES,
@@ -128,17 +129,6 @@ export class StateTable {
     }
     return Uint32Array.from(rows);
   }
-}
-
-/** Mixed radix: how far one step of each input moves the row; the last input is the fastest. */
-export function strides(radices: readonly number[]): number[] {
-  const out = new Array<number>(radices.length);
-  let stride = 1;
-  for (let i = radices.length - 1; i >= 0; i--) {
-    out[i] = stride;
-    stride *= radices[i] as number;
-  }
-  return out;
 }
 
 function pick<W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], row: number): W | undefined {

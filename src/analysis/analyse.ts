@@ -1,0 +1,73 @@
+import type { Budget } from '../base/budget.ts';
+import type { Circuit } from '../circuit/model.ts';
+import type { PathConditions } from '../engine/paths/reach.ts';
+import { explain } from '../engine/table/explain.ts';
+import { StateTable } from '../engine/table/state-table.ts';
+import type { TableData } from '../engine/table/table-data.ts';
+import { tabulate as tabulateNetwork } from '../engine/table/tabulate.ts';
+import { findFaults } from '../findings/index.ts';
+import type { Finding } from '../findings/finding.ts';
+import { compileNetwork } from '../network/compile.ts';
+import type { Network } from '../network/network.ts';
+import { kindOf } from '../parts/catalogue.ts';
+import type { Conditions, Explanation } from './results.ts';
+
+/** Dense arrays of a circuit that has passed the checks. Throws on a kind that the catalogue lacks. */
+export function networkOf(circuit: Circuit): Network {
+  return compileNetwork(circuit, (name) => {
+    const kind = kindOf(name);
+    if (!kind) throw new Error(`unknown part kind ${name}`);
+    return kind;
+  });
+}
+
+/** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */
+export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budget): TableData {
+  const net = networkOf(circuit);
+  refuseTooMany(net);
+  return tabulateNetwork(net, pathConditions(net, conditions), budget);
+}
+
+/** Design faults, from the table with the pumps running. */
+export function findings(circuit: Circuit, running: StateTable): Finding[] {
+  return findFaults({ net: networkOf(circuit), table: running });
+}
+
+/** One row (0-based) in words. */
+export function explainRow(circuit: Circuit, conditions: Conditions, row: number): Explanation {
+  const net = networkOf(circuit);
+  const answer = explain(net, pathConditions(net, conditions), row);
+  const positions = positionsOf(net, row);
+  const notes = answer.actuators.flatMap((actuator) => actuator.notes.map((note) => `${actuator.label}: ${note}`));
+  return { row, positions, ...answer, notes };
+}
+
+/** 3¹⁴ rows: what a table held in memory can list. */
+export const MOST_ROWS = 4_782_969;
+
+function refuseTooMany(net: Network): void {
+  const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
+  if (count > MOST_ROWS) {
+    throw new Error(
+      `The circuit has ${count.toLocaleString('en')} combinations of valve positions; up to ${MOST_ROWS.toLocaleString('en')} can be listed. Table a part of it by itself.`,
+    );
+  }
+}
+
+function positionsOf(net: Network, row: number): number[] {
+  let rest = row;
+  const out: number[] = [];
+  for (let i = net.inputs.length - 1; i >= 0; i--) {
+    const radix = net.inputs[i]?.positions.length ?? 1;
+    out.unshift(rest % radix);
+    rest = Math.floor(rest / radix);
+  }
+  return out;
+}
+
+function pathConditions(net: Network, conditions: Conditions): PathConditions {
+  return {
+    pumpsRunning: conditions.pumps === 'running',
+    places: net.actuators.map((actuator) => conditions.places?.[net.parts[actuator.part]?.id ?? ''] ?? 'between'),
+  };
+}

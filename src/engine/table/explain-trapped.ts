@@ -1,0 +1,84 @@
+import { lineOutcomes } from './line-outcomes.ts';
+import { solveOne } from './one-state.ts';
+import type { OneState } from './one-state.ts';
+import { enclosing, partLabel } from './reasons.ts';
+import type { Step } from './reasons.ts';
+import { strides } from './strides.ts';
+import { standingReasons } from './trapped.ts';
+import { LINE_CLASSES } from './words.ts';
+import type { TrapReason } from './words.ts';
+
+export interface TrapAnswer {
+  readonly line: number;
+  readonly name: string;
+  readonly reasons: readonly { readonly kind: TrapReason; readonly text: string }[];
+  readonly steps: readonly Step[];
+}
+
+const CUT_OFF = LINE_CLASSES.indexOf('cut off');
+const FED = LINE_CLASSES.indexOf('fed');
+
+/** Every trapped line of the state with its reasons in words, and the moves that leave it behind. */
+export function explainTrapped(state: OneState): TrapAnswer[] {
+  const { net, edges, conditions, block } = state;
+  const { classes } = lineOutcomes(net, edges, conditions, block);
+  const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
+  const running = conditions.pumpsRunning ? state : solveOne(net, { ...conditions, pumpsRunning: true }, state.row, edges);
+  const runningClasses = conditions.pumpsRunning ? classes : lineOutcomes(net, edges, running.conditions, running.block).classes;
+  const moves = neighbours(running);
+
+  return net.lines.slice(0, net.shown).flatMap((entry, line): TrapAnswer[] => {
+    const reasons: { kind: TrapReason; text: string }[] = [];
+    const cutOff = state.is(classes[line]?.[CUT_OFF]);
+    if (cutOff) {
+      if (state.is(standing[line]?.load)) reasons.push({ kind: 'load', text: loadText(state, line) });
+      if (state.is(runningClasses[line]?.[CUT_OFF])) {
+        const from = moves.filter((move) => move.state.on(move.state.block.reach.underPressure, line)).map((move) => move.text);
+        if (from.length > 0) reasons.push({ kind: 'left behind', text: `Under pressure before this move of one lever: ${from.join('; ')}.` });
+      }
+      if (!conditions.pumpsRunning && running.on(running.block.reach.underPressure, line)) {
+        reasons.push({ kind: 'stopped', text: 'Under pressure while the pumps run; stopping them does not let it down.' });
+      }
+      if (state.is(standing[line]?.heat)) {
+        reasons.push({
+          kind: 'heat',
+          text: 'Full of oil with no pressure valve to let it out: it climbs by about 10 bar for each kelvin that it warms (common practice).',
+        });
+      }
+    } else if (!conditions.pumpsRunning && state.is(classes[line]?.[FED])) {
+      reasons.push({ kind: 'stored', text: 'A charged accumulator keeps it under pressure.' });
+    }
+    if (reasons.length === 0) return [];
+    return [{ line, name: entry.name, reasons, steps: [enclosing(state, line, -1)] }];
+  });
+}
+
+/** The states one lever move away, pumps running, and the move in words. */
+function neighbours(state: OneState): { state: OneState; text: string }[] {
+  const { net, row } = state;
+  const steps = strides(net.inputs.map((input) => input.positions.length));
+  return net.inputs.flatMap((input, i) => {
+    const now = state.position(i);
+    return input.positions.flatMap((name, p) => {
+      if (p === now) return [];
+      const from = row + (p - now) * (steps[i] as number);
+      return [
+        {
+          state: solveOne(net, state.conditions, from, state.edges),
+          text: `${partLabel(state, input.part)} from ${name} to ${input.positions[now] ?? '?'} (row ${from + 1})`,
+        },
+      ];
+    });
+  });
+}
+
+function loadText(state: OneState, line: number): string {
+  const pressing = state.net.actuators.filter(
+    (actuator) => actuator.push.way !== 'none' && (actuator.a === line || actuator.b === line),
+  );
+  const names = pressing.map((actuator) => `${actuator.push.by === 'spring' ? 'the spring' : 'the load'} of ${partLabel(state, actuator.part)}`);
+  if (names.length > 0) return `Pressed on at rest by ${names.join(' and ')}.`;
+  return state.on(state.block.reach.underPressure, line)
+    ? 'Another chamber of the same actuator is under pressure and passes it on, higher by the ratio of the areas.'
+    : 'A load presses on it at rest through the lines it is joined to.';
+}

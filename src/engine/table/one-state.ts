@@ -1,0 +1,117 @@
+import { wordsFor } from '../../base/bits.ts';
+import type { NetPath, Network } from '../../network/network.ts';
+import { PathSolver } from '../paths/block.ts';
+import type { SettledBlock } from '../paths/block.ts';
+import { compileEdges } from '../paths/edges.ts';
+import type { EdgeSet } from '../paths/edges.ts';
+import type { Field } from '../paths/field.ts';
+import type { PathConditions } from '../paths/reach.ts';
+
+/** One state, solved by the same engine as the table, with searches that remember their way. */
+export interface OneState {
+  readonly net: Network;
+  readonly row: number;
+  readonly conditions: PathConditions;
+  readonly block: SettledBlock;
+  readonly edges: EdgeSet;
+  readonly is: (plane: Uint32Array | undefined) => boolean;
+  /** Bit of a line in a field. */
+  readonly on: (field: Field, line: number) => boolean;
+  /** Directed hops that are open in this state. */
+  readonly hops: readonly Hop[];
+  readonly position: (input: number) => number;
+}
+
+/** Oil can go from one line to the next through a path of a part. */
+export interface Hop {
+  readonly from: number;
+  readonly to: number;
+  readonly path: NetPath;
+  readonly fromPort: string;
+  readonly toPort: string;
+}
+
+export function solveOne(net: Network, conditions: PathConditions, row: number, edges = compileEdges(net)): OneState {
+  const word = row >>> 5;
+  if (word >= wordsFor(edges.states)) throw new RangeError(`row ${row} is past the last of ${edges.states}`);
+  const block = new PathSolver(net, edges, conditions, 1).solve(word, 1);
+  const bit = row & 31;
+  const is = (plane: Uint32Array | undefined): boolean => (((plane?.[0] ?? 0) >>> bit) & 1) === 1;
+  const on = (field: Field, line: number): boolean => line >= 0 && (((field[line] as number) >>> bit) & 1) === 1;
+  const radices = net.inputs.map((input) => input.positions.length);
+  const position = (input: number): number => {
+    const stride = radices.slice(input + 1).reduce((n, r) => n * r, 1);
+    return Math.floor(row / stride) % (radices[input] ?? 1);
+  };
+  const r = block.reach;
+  const hops = net.paths.flatMap((path): Hop[] => {
+    if (path.input >= 0 && ((path.positions >>> position(path.input)) & 1) === 0) return [];
+    if (path.pilot >= 0) {
+      const pressed = on(r.fromSource, path.pilot) || on(r.underPressure, path.pilot);
+      if (!pressed || !on(r.notFreeToTank, path.pilot)) return [];
+    }
+    const ahead: Hop = { from: path.from, to: path.to, path, fromPort: path.fromPort, toPort: path.toPort };
+    if (path.oneWay) return [ahead];
+    return [ahead, { from: path.to, to: path.from, path, fromPort: path.toPort, toPort: path.fromPort }];
+  });
+  return { net, row, conditions, block, edges, is, on, hops, position };
+}
+
+/** A way along open paths: lines passed, and the hop before each but the first. */
+export interface Way {
+  readonly lines: readonly number[];
+  readonly hops: readonly Hop[];
+}
+
+/** Shortest way from one of `from` to a line that `arrived` accepts; tanks absorb. */
+export function findWay(
+  state: OneState,
+  from: readonly number[],
+  arrived: (line: number) => boolean,
+  allowed: (line: number) => boolean = () => true,
+): Way | undefined {
+  const cameBy = new Map<number, Hop | undefined>();
+  const queue: number[] = [];
+  for (const line of from) {
+    if (line < 0 || cameBy.has(line) || !allowed(line)) continue;
+    cameBy.set(line, undefined);
+    queue.push(line);
+  }
+  for (let head = 0; head < queue.length; head++) {
+    const line = queue[head] as number;
+    if (arrived(line)) return wayTo(line, cameBy);
+    if (state.net.lines[line]?.tank) continue;
+    for (const hop of state.hops) {
+      if (hop.from !== line || cameBy.has(hop.to) || !allowed(hop.to)) continue;
+      cameBy.set(hop.to, hop);
+      queue.push(hop.to);
+    }
+  }
+  return undefined;
+}
+
+function wayTo(end: number, cameBy: ReadonlyMap<number, Hop | undefined>): Way {
+  const lines = [end];
+  const hops: Hop[] = [];
+  for (let hop = cameBy.get(end); hop !== undefined; hop = cameBy.get(hop.from)) {
+    hops.unshift(hop);
+    lines.unshift(hop.from);
+  }
+  return { lines, hops };
+}
+
+/** Lines that oil can get to from `line`, itself included; tanks absorb. */
+export function spreadFrom(state: OneState, line: number): number[] {
+  const seen = new Set([line]);
+  const queue = [line];
+  for (let head = 0; head < queue.length; head++) {
+    const here = queue[head] as number;
+    if (state.net.lines[here]?.tank) continue;
+    for (const hop of state.hops) {
+      if (hop.from !== here || seen.has(hop.to)) continue;
+      seen.add(hop.to);
+      queue.push(hop.to);
+    }
+  }
+  return queue;
+}
