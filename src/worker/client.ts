@@ -1,7 +1,9 @@
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
 import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
+import { Cancelled } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
-import type { StateTable } from '../engine/table/state-table.ts';
+import { StateTable } from '../engine/table/state-table.ts';
+import type { Question, Reply } from './messages.ts';
 
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, TrappedLine } from '../analysis/results.ts';
@@ -27,4 +29,94 @@ export interface Analyst {
   table(circuit: Circuit, conditions: Conditions, progress: (share: number) => void): Job<TableAnswer>;
   explain(circuit: Circuit, conditions: Conditions, row: number): Job<Explanation>;
   close(): void;
+}
+
+/** Tables and explanations have a thread each, so that a click on "why" never waits for a long table. */
+export function createAnalyst(): Analyst {
+  const tables = new Thread();
+  const words = new Thread();
+  return {
+    table: (circuit, conditions, progress) =>
+      tables.ask({ ask: 'table', circuit, conditions }, progress, (reply) =>
+        reply.say === 'table' ? { table: new StateTable(reply.data), findings: reply.findings, took: reply.took } : undefined,
+      ),
+    explain: (circuit, conditions, row) =>
+      words.ask({ ask: 'explain', circuit, conditions, row }, () => {}, (reply) =>
+        reply.say === 'explanation' ? reply.explanation : undefined,
+      ),
+    close: () => {
+      tables.stop();
+      words.stop();
+    },
+  };
+}
+
+interface Pending {
+  readonly question: Question;
+  readonly settle: (reply: Reply) => void;
+  readonly refuse: (error: Error) => void;
+}
+
+type Open<Q> = Q extends unknown ? Omit<Q, 'id'> : never;
+
+/** A worker that can be given up in the middle of a computation: it is ended and a fresh one takes over the rest. */
+class Thread {
+  #worker: Worker | undefined;
+  #next = 1;
+  readonly #pending = new Map<number, Pending>();
+
+  ask<T>(open: Open<Question>, progress: (share: number) => void, read: (reply: Reply) => T | undefined): Job<T> {
+    const id = this.#next++;
+    const question = { ...open, id } as Question;
+    const answer = new Promise<T>((resolve, reject) => {
+      const settle = (reply: Reply): void => {
+        if (reply.say === 'progress') {
+          progress(reply.share);
+          return;
+        }
+        this.#pending.delete(id);
+        const value = read(reply);
+        if (value !== undefined) resolve(value);
+        else reject(new Error(reply.say === 'failed' ? reply.message : 'The analysis gave an answer to another question.'));
+      };
+      this.#pending.set(id, { question, settle, refuse: reject });
+    });
+    this.#send(question);
+    return { answer, cancel: () => this.#giveUp(id) };
+  }
+
+  stop(): void {
+    this.#worker?.terminate();
+    this.#worker = undefined;
+    for (const { refuse } of this.#pending.values()) refuse(new Cancelled());
+    this.#pending.clear();
+  }
+
+  #send(question: Question): void {
+    // Reactive proxies cannot be cloned across threads; circuits are plain JSON anyway.
+    this.#running().postMessage(JSON.parse(JSON.stringify(question)));
+  }
+
+  #running(): Worker {
+    if (this.#worker) return this.#worker;
+    const worker = new Worker(new URL('./analysis.worker.ts', import.meta.url), { type: 'module' });
+    worker.onmessage = ({ data }: MessageEvent<Reply>) => this.#pending.get(data.id)?.settle(data);
+    worker.onerror = (event) => {
+      for (const { refuse } of this.#pending.values()) refuse(new Error(event.message || 'The analysis stopped unexpectedly.'));
+      this.#pending.clear();
+      this.#worker = undefined;
+    };
+    this.#worker = worker;
+    return worker;
+  }
+
+  #giveUp(id: number): void {
+    const given = this.#pending.get(id);
+    if (!given) return;
+    this.#pending.delete(id);
+    given.refuse(new Cancelled());
+    this.#worker?.terminate();
+    this.#worker = undefined;
+    for (const { question } of this.#pending.values()) this.#send(question);
+  }
 }

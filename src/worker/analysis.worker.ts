@@ -1,0 +1,32 @@
+/** Answers one question after another on its own thread. */
+import { explainRow, findings, tabulate } from '../analysis/analyse.ts';
+import type { Conditions } from '../analysis/results.ts';
+import type { Circuit } from '../circuit/model.ts';
+import { StateTable } from '../engine/table/state-table.ts';
+import type { Question, Reply } from './messages.ts';
+
+const scope = self as unknown as { postMessage(reply: Reply): void; onmessage: ((event: MessageEvent<Question>) => void) | null };
+
+scope.onmessage = ({ data: question }) => {
+  try {
+    scope.postMessage(question.ask === 'table' ? answerTable(question.id, question.circuit, question.conditions) : {
+      id: question.id,
+      say: 'explanation',
+      explanation: explainRow(question.circuit, question.conditions, question.row),
+    });
+  } catch (error) {
+    scope.postMessage({ id: question.id, say: 'failed', message: error instanceof Error ? error.message : String(error) });
+  }
+};
+
+function answerTable(id: number, circuit: Circuit, conditions: Conditions): Reply {
+  const began = performance.now();
+  const budget = {
+    // Giving up ends the whole thread, so there is nobody to ask.
+    cancelled: () => false,
+    progress: (share: number) => scope.postMessage({ id, say: 'progress', share }),
+  };
+  const data = tabulate(circuit, conditions, budget);
+  const running = conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget);
+  return { id, say: 'table', data, findings: findings(circuit, new StateTable(running)), took: performance.now() - began };
+}
