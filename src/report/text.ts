@@ -1,0 +1,80 @@
+import { columnsOf, headLines, LEVELS, sayRows } from './cells.ts';
+import type { Column } from './cells.ts';
+import { TRAPPED_CAUTION } from './rows.ts';
+import type { Report } from './rows.ts';
+import { cutTo, padEnd, padStart, plain, widthOf } from './width.ts';
+
+export interface TextOptions {
+  /** Columns of the terminal; absent = as wide as it needs to be. Lines are never wrapped. */
+  readonly width?: number;
+}
+
+const GAP = '  ';
+/** A list is cut to no less than this. */
+const LEAST_LIST = 8;
+
+/** The table in aligned columns, a line at a time; every line ends with a line feed. */
+export function* writeText(report: Report, options: TextOptions = {}): Generator<string> {
+  const columns = columnsOf(report);
+  const widths = fit(columns, measure(report, columns), options.width);
+  yield `${plain(report.circuit)}\n`;
+  for (const line of headLines(report)) yield `${plain(line)}\n`;
+  yield '\n';
+  const draw = (cells: readonly string[]): string =>
+    `${columns
+      .map(({ kind }, i) => {
+        const width = widths[i] ?? 0;
+        const cell = plain(cells[i] ?? '');
+        return kind === 'number' ? padStart(cell, width) : padEnd(cutTo(cell, width), width);
+      })
+      .join(GAP)
+      .trimEnd()}\n`;
+  yield draw(columns.map((column) => column.head));
+  yield draw(widths.map((width) => '─'.repeat(width)));
+  let trapped = false;
+  for (const row of report.rows()) {
+    trapped ||= row.trapped.length > 0;
+    yield draw(columns.map((column) => column.cell(row)));
+  }
+  if (trapped) yield `\n${TRAPPED_CAUTION}\n`;
+  yield* findings(report);
+}
+
+/** What each column needs so that nothing is cut. */
+function measure(report: Report, columns: readonly Column[]): number[] {
+  const widths = columns.map((column) => widthOf(plain(column.head)));
+  for (const row of report.rows()) {
+    columns.forEach((column, i) => {
+      widths[i] = Math.max(widths[i] ?? 0, widthOf(plain(column.cell(row))));
+    });
+  }
+  return widths;
+}
+
+/** Takes what is too much from the widest lists; row numbers, positions, coils and verdicts keep every letter. */
+function fit(columns: readonly Column[], wanted: readonly number[], limit: number | undefined): number[] {
+  const widths = [...wanted];
+  if (limit === undefined) return widths;
+  const total = (): number => widths.reduce((sum, w) => sum + w, 0) + GAP.length * (widths.length - 1);
+  for (let over = total() - limit; over > 0; over--) {
+    let widest = -1;
+    columns.forEach(({ kind }, i) => {
+      const width = widths[i] ?? 0;
+      if (kind === 'list' && width > LEAST_LIST && width > (widths[widest] ?? 0)) widest = i;
+    });
+    if (widest < 0) break;
+    widths[widest] = (widths[widest] ?? 0) - 1;
+  }
+  return widths;
+}
+
+function* findings(report: Report): Generator<string> {
+  if (report.findings.length === 0) return;
+  yield '\nFindings\n';
+  for (const finding of report.findings) {
+    const where = sayRows(finding.rows, finding.rowCount);
+    yield `${LEVELS[finding.level]}: ${plain(finding.title)}${where === '' ? '' : ` (${where})`}\n`;
+    yield `  ${plain(finding.what)}\n`;
+    yield `  ${plain(finding.remedy)}\n`;
+  }
+}
