@@ -44,6 +44,16 @@ class View {
     remember('grid', on);
   }
 
+  setSheetShare(share: number): void {
+    this.sheetShare = share;
+    remember('sheetShare', share);
+  }
+
+  setBenchHeight(height: number): void {
+    this.benchHeight = height;
+    remember('benchHeight', height);
+  }
+
   open(panel: PanelId): void {
     this.panels[panel] = true;
     if (panel === 'legend') remember('legendOpen', true);
