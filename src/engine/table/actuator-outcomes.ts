@@ -70,7 +70,11 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     decide(words.in, goIn);
 
     const fed = fedA | fedB;
-    decide('at stop', (fedA & ~fedB & ~notOut) | (fedB & ~fedA & ~notIn));
+    // Pressure may also come through another actuator that pushes against this one.
+    const under = block.reach.underPressure;
+    const underA = under[actuator.a * width + w] as number;
+    const underB = actuator.b < 0 ? 0 : (under[actuator.b * width + w] as number);
+    decide('at stop', (underA & ~underB & ~notOut) | (underB & ~underA & ~notIn));
     const balanced = equal & fedA & fedB & loopBA & loopAB;
     decide('held', fed & ~balanced);
 
