@@ -45,6 +45,12 @@ class Desk {
   trayOpen = $state(false);
   /** Space is down: the next drag pans. */
   panning = $state(false);
+  /** A part is being dragged here from the tray. */
+  carrying = $state(false);
+  /** The keyboard is on the sheet. */
+  focused = $state(false);
+  /** The element that has the keyboard while the sheet does. */
+  host = $state.raw<HTMLElement | undefined>();
 
   #said = $state.raw<{ readonly text: string; readonly refused: boolean; readonly count: number }>({ text: '', refused: false, count: 0 });
   said = $derived(this.#said);

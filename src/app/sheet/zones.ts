@@ -37,3 +37,7 @@ function along(from: number, length: number, scale: number, zone: number, name: 
 
 export const columnsInSight = (view: Viewport, size: Size): ZoneMark[] => along(view.x, size.width, view.scale, ZONE.width, column);
 export const rowsInSight = (view: Viewport, size: Size): ZoneMark[] => along(view.y, size.height, view.scale, ZONE.height, row);
+
+/** `B3`: the zone that a point lies in. */
+export const zoneAt = (p: { readonly x: number; readonly y: number }): string =>
+  row(Math.floor(p.y / ZONE.height)) + column(Math.floor(p.x / ZONE.width));

@@ -1,0 +1,217 @@
+import { duplicate, flipParts, turnParts } from '../../circuit/build.ts';
+import { editor } from '../state/editor.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { view } from '../state/view.svelte.ts';
+import { attempt, tryTo } from './attempt.ts';
+import { OFFSET } from './clipboard.ts';
+import type { SheetActions } from './commands.ts';
+import { endOnLine, portEnd } from './connecting.ts';
+import { counted } from './counted.ts';
+import { desk } from './desk.svelte.ts';
+import type { End } from './desk.svelte.ts';
+import { commitShift, finishLine, middleOfView, nameOf, putDown, setLever, startLine } from './hand.ts';
+import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts';
+import type { Cursor } from './reading-order.ts';
+import { removal } from './removing.ts';
+import { drawing } from './sheet-drawing.svelte.ts';
+import { fitTo, panBy, reveal, zoomAt } from './viewport.ts';
+
+/** Pixels of the frame and the status line, which a fitted circuit keeps clear of. */
+const INSET = { left: 18, top: 18, right: 18, bottom: 48 } as const;
+
+/** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
+function goTo(cursor: Cursor): void {
+  desk.cursor = cursor;
+  const at = placeOf(drawing.map, cursor);
+  if (at) desk.viewport = reveal(desk.viewport, desk.size, { ...at, width: 0, height: 0 }, 5);
+  const { gesture } = desk;
+  if (gesture.type === 'connect') {
+    const over = endOf(cursor);
+    desk.gesture = { ...gesture, over, to: over?.at ?? gesture.to };
+    return;
+  }
+  editor.select(cursor.type === 'part' ? { parts: [cursor.id] } : cursor.type === 'connection' ? { connections: [cursor.id] } : {});
+}
+
+function endOf(cursor: Cursor): End | undefined {
+  const { map } = drawing;
+  if (cursor.type === 'port') {
+    const port = map.ports.find((each) => each.part === cursor.part && each.port === cursor.port);
+    return port && portEnd(port);
+  }
+  const at = placeOf(map, cursor);
+  return cursor.type === 'connection' && at ? endOnLine(map, cursor.id, at) : undefined;
+}
+
+const selectedParts = (): readonly string[] => editor.selection.parts;
+
+function refuseEmpty(): boolean {
+  if (selectedParts().length > 0) return false;
+  desk.refuse('No part is selected.');
+  return true;
+}
+
+export const sheetActions: SheetActions = {
+  cancel() {
+    const { gesture } = desk;
+    drawing.preview = undefined;
+    if (gesture.type !== 'none') {
+      desk.rest();
+      if (gesture.type === 'connect') desk.say('The line was given up.');
+      if (gesture.type === 'place') desk.say(`${gesture.form.title} put away.`);
+      return;
+    }
+    desk.cursor = undefined;
+    editor.select({});
+  },
+
+  accept() {
+    const { gesture, cursor } = desk;
+    if (gesture.type === 'place') return putDown(gesture.at ?? middleOfView());
+    const end = cursor && endOf(cursor);
+    if (gesture.type === 'connect') {
+      if (end) return finishLine(end);
+      return desk.refuse('Go to a port or a line first, with Tab or the arrow keys.');
+    }
+    if (cursor?.type === 'port' && end) return startLine(end, false);
+    sheetActions.rename();
+  },
+
+  step(by) {
+    if (desk.gesture.type === 'place') return false;
+    const order = readingOrder(drawing.map, desk.gesture.type === 'connect');
+    const next = stepFrom(order, desk.cursor, by);
+    if (!next) return false;
+    goTo(next);
+    return true;
+  },
+
+  arrow(dx, dy) {
+    const { gesture, cursor } = desk;
+    if (gesture.type === 'place') {
+      const at = gesture.at ?? middleOfView();
+      const moved = { x: at.x + dx, y: at.y + dy };
+      desk.gesture = { ...gesture, at: moved };
+      desk.viewport = reveal(desk.viewport, desk.size, { ...moved, width: 0, height: 0 }, 6);
+      return;
+    }
+    if (gesture.type === 'connect' || cursor?.type === 'port') {
+      const from = (cursor && placeOf(drawing.map, cursor)) ?? (gesture.type === 'connect' ? gesture.to : undefined);
+      const next = from && portTowards(drawing.map, from, dx, dy);
+      if (next) goTo(next);
+      return;
+    }
+    const { parts, labels } = editor.selection;
+    if (parts.length + labels.length > 0) commitShift(dx, dy, `nudge ${[...parts, ...labels].join(' ')}`);
+    else desk.viewport = panBy(desk.viewport, -dx * 4 * desk.viewport.scale, -dy * 4 * desk.viewport.scale);
+  },
+
+  turn(by) {
+    const { gesture } = desk;
+    const quarter = by === 90 ? 90 : 270;
+    if (gesture.type === 'place') {
+      const turn = ((gesture.turn + quarter) % 360) as typeof gesture.turn;
+      desk.gesture = { ...gesture, turn };
+      return;
+    }
+    if (refuseEmpty()) return;
+    attempt(() => turnParts(editor.circuit, selectedParts(), quarter, drawing.places), `${counted(selectedParts().length, 'part')} turned.`);
+  },
+
+  flip() {
+    const { gesture } = desk;
+    if (gesture.type === 'place') {
+      desk.gesture = { ...gesture, flip: !gesture.flip };
+      return;
+    }
+    if (refuseEmpty()) return;
+    attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${counted(selectedParts().length, 'part')} flipped.`);
+  },
+
+  remove(heal) {
+    const { selection } = editor;
+    const { parts, connections, labels } = selection;
+    if (parts.length + connections.length + labels.length === 0) return desk.refuse('Nothing is selected.');
+    const words = [
+      ...(parts.length === 1 ? [nameOf(parts[0] ?? '')] : parts.length > 0 ? [counted(parts.length, 'part')] : []),
+      ...(connections.length > 0 ? [counted(connections.length, 'connection')] : []),
+      ...(labels.length > 0 ? [counted(labels.length, 'text')] : []),
+    ];
+    desk.cursor = undefined;
+    attempt(() => removal(editor.circuit, selection, heal), `${words.join(', ')} deleted. Ctrl+Z brings it back.`);
+  },
+
+  duplicate() {
+    const { parts, labels } = editor.selection;
+    if (parts.length + labels.length === 0) return desk.refuse('Nothing is selected.');
+    const copy = tryTo(() => duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, labels));
+    if (copy && attempt(() => copy.edit, `${counted(parts.length + labels.length, 'thing')} duplicated.`)) {
+      editor.select({ parts: copy.parts, labels: copy.labels });
+    }
+  },
+
+  selectAll() {
+    const { parts, connections, labels = [] } = editor.circuit;
+    const ids = (list: readonly { readonly id: string }[]): string[] => list.map(({ id }) => id);
+    editor.select({ parts: ids(parts), connections: ids(connections), labels: ids(labels) });
+    desk.say(`${counted(parts.length, 'part')} and ${counted(connections.length, 'connection')} selected.`);
+  },
+
+  rename() {
+    const { parts, connections } = editor.selection;
+    const [part] = parts;
+    const [connection] = connections;
+    if (part !== undefined) desk.naming = { of: 'part', id: part };
+    else if (connection !== undefined) desk.naming = { of: 'connection', id: connection };
+    else desk.refuse('Select a part or a line to name it.');
+  },
+
+  connectFrom() {
+    const { cursor } = desk;
+    const part = cursor?.type === 'part' ? cursor.id : selectedParts()[0];
+    const port = part === undefined ? undefined : drawing.map.ports.find((each) => each.part === part);
+    const end = (cursor && endOf(cursor)) ?? (port && portEnd(port));
+    if (!end) return desk.refuse('Go to a part, a port or a line first, with Tab.');
+    if (end.type === 'port') desk.cursor = { type: 'port', ...end.ref };
+    startLine(end, false);
+  },
+
+  openSettings() {
+    if (!refuseEmpty()) view.open('settings');
+  },
+
+  shiftLever(by) {
+    const part = selectedParts().find((id) => session.inputs.some((input) => input.part === id));
+    if (part === undefined) return desk.refuse('Select a valve that somebody moves.');
+    const count = session.inputs.find((input) => input.part === part)?.positions.length ?? 1;
+    const to = session.positionOf(part) + by;
+    if (to >= 0 && to < count) setLever(part, to);
+  },
+
+  undo() {
+    if (!editor.canUndo) return desk.refuse('There is nothing to undo.');
+    editor.undo();
+    desk.say('Undone.');
+  },
+
+  redo() {
+    if (!editor.canRedo) return desk.refuse('There is nothing to redo.');
+    editor.redo();
+    desk.say('Redone.');
+  },
+
+  zoom(factor) {
+    desk.viewport = zoomAt(desk.viewport, { x: desk.size.width / 2, y: desk.size.height / 2 }, factor);
+  },
+
+  fit() {
+    const { width, height } = desk.size;
+    const room = { width: Math.max(50, width - INSET.left - INSET.right), height: Math.max(50, height - INSET.top - INSET.bottom) };
+    const fitted = fitTo(drawing.scene.bounds, room, 2);
+    desk.viewport = panBy(fitted, INSET.left, INSET.top);
+  },
+
+  openTray() {
+    desk.trayOpen = true;
+  },
+};

@@ -1,0 +1,122 @@
+import type { Point } from '../../base/points.ts';
+import { moveLabel, moveParts, placePart } from '../../circuit/build.ts';
+import { all, applyEdit } from '../../circuit/edit.ts';
+import type { Edit } from '../../circuit/edit.ts';
+import { labelOf } from '../../circuit/model.ts';
+import type { Circuit } from '../../circuit/model.ts';
+import { readyMadeOf } from '../../parts/catalogue.ts';
+import { editor } from '../state/editor.svelte.ts';
+import type { Selection } from '../state/editor.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { recent } from '../tray/recent.svelte.ts';
+import { attempt, tryTo } from './attempt.ts';
+import { joinEnds, sayEnd } from './connecting.ts';
+import { counted } from './counted.ts';
+import { desk } from './desk.svelte.ts';
+import type { End } from './desk.svelte.ts';
+import { drawing } from './sheet-drawing.svelte.ts';
+import { snap, toSheet } from './viewport.ts';
+import { zoneAt } from './zones.ts';
+
+// What both the pointer and the keys do on the sheet.
+
+/** Take a ready-made part into the hand. `at`: already over the sheet, as with the keyboard. */
+export function takeUp(readyId: string, at?: Point): void {
+  const entry = readyMadeOf(readyId);
+  if (!entry) return;
+  const { kind, readyMade } = entry;
+  editor.select({});
+  desk.cursor = undefined;
+  desk.gesture = { type: 'place', form: { kind: kind.kind, ready: readyMade.id, title: readyMade.title }, at, turn: 0, flip: false };
+  desk.say(`${readyMade.title} in hand.`);
+}
+
+export const middleOfView = (): Point => snap(toSheet(desk.viewport, { x: desk.size.width / 2, y: desk.size.height / 2 }));
+
+/** Put the part in hand down. `again`: keep another one in hand. */
+export function putDown(at: Point, again = false): void {
+  const { gesture } = desk;
+  if (gesture.type !== 'place') return;
+  const entry = readyMadeOf(gesture.form.ready);
+  if (!entry) return;
+  const { kind, readyMade } = entry;
+  const put = tryTo(() =>
+    placePart(editor.circuit, kind.prefix, {
+      kind: kind.kind,
+      at: snap(at),
+      ...(gesture.turn !== 0 && { turn: gesture.turn }),
+      ...(gesture.flip && { flip: true }),
+      ...readyMade.make(),
+    }),
+  );
+  if (!put) return;
+  if (!again) desk.rest();
+  if (!attempt(() => put, `${put.part.id}, ${readyMade.title.toLowerCase()}, placed in zone ${zoneAt(at)}.`)) return;
+  recent.use(readyMade.id);
+  desk.cursor = { type: 'part', id: put.part.id };
+  editor.select({ parts: [put.part.id] });
+}
+
+export function startLine(from: End, held: boolean): void {
+  desk.gesture = { type: 'connect', from, to: from.at, over: undefined, held };
+  if (!held) desk.say(`Line from ${sayEnd(editor.circuit, from)}. Go to another port or line.`);
+}
+
+export function finishLine(to: End): void {
+  const { gesture } = desk;
+  if (gesture.type !== 'connect') return;
+  const { from } = gesture;
+  desk.rest();
+  const { circuit } = editor;
+  const done = attempt(
+    // With every part in its shown place, so that a line is split on the stretch that was hit.
+    () => joinEnds(withPlaces(circuit), from, to),
+    `${sayEnd(circuit, from)} joined to ${sayEnd(circuit, to)}.`,
+  );
+  if (done && to.type === 'port') desk.cursor = { type: 'port', ...to.ref };
+}
+
+const withPlaces = (circuit: Circuit): Circuit => (circuit === editor.circuit ? drawing.circuit : circuit);
+
+/** The edit that moves what is selected. */
+export function shift(circuit: Circuit, { parts, labels }: Selection, dx: number, dy: number): Edit {
+  const edits: Edit[] = labels.flatMap((id) => {
+    const label = circuit.labels?.find((each) => each.id === id);
+    return label ? [moveLabel(id, { x: label.at.x + dx, y: label.at.y + dy })] : [];
+  });
+  if (parts.length > 0) edits.unshift(moveParts(circuit, parts, dx, dy, drawing.places));
+  return all(edits);
+}
+
+/** Show the selection moved, before it is. */
+export function previewShift(dx: number, dy: number): void {
+  if (dx === 0 && dy === 0) {
+    drawing.preview = undefined;
+    return;
+  }
+  const edit = tryTo(() => shift(editor.circuit, editor.selection, dx, dy));
+  drawing.preview = edit && applyEdit(editor.circuit, edit);
+}
+
+export function commitShift(dx: number, dy: number, burst: string): void {
+  const { parts, labels } = editor.selection;
+  if (dx !== 0 || dy !== 0) {
+    attempt(() => shift(editor.circuit, editor.selection, dx, dy), `${counted(parts.length + labels.length, 'thing')} moved.`, burst);
+  }
+  drawing.preview = undefined;
+}
+
+/** Move the lever of a valve; says where it stands then. */
+export function setLever(partId: string, position: number): void {
+  const input = session.inputs.find(({ part }) => part === partId);
+  if (!input) return;
+  const count = input.positions.length;
+  const to = ((position % count) + count) % count;
+  session.setPosition(partId, to);
+  desk.say(`${input.label}: ${input.positions[to] ?? ''}.`);
+}
+
+export const nameOf = (id: string): string => {
+  const part = editor.circuit.parts.find((each) => each.id === id);
+  return part ? labelOf(part) : id;
+};

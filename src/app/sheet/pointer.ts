@@ -1,0 +1,245 @@
+import type { Point } from '../../base/points.ts';
+import { editor } from '../state/editor.svelte.ts';
+import type { Selection } from '../state/editor.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { view } from '../state/view.svelte.ts';
+import { endAt, portEnd } from './connecting.ts';
+import { desk } from './desk.svelte.ts';
+import { commitShift, finishLine, previewShift, putDown, setLever, startLine } from './hand.ts';
+import { boxOf, hitAt, inBand } from './hit.ts';
+import type { Hit } from './hit.ts';
+import { drawing } from './sheet-drawing.svelte.ts';
+import { panBy, snap, zoomAt } from './viewport.ts';
+
+/** A press of the button until it is let go. */
+interface Press {
+  readonly pointer: number;
+  readonly client: Point;
+  readonly at: Point;
+  readonly hit: Hit | { readonly type: 'label'; readonly id: string };
+  readonly adds: boolean;
+  readonly pans: boolean;
+  /** It was selected before. */
+  readonly was: boolean;
+  moved: boolean;
+  last: Point;
+}
+
+/** Pixels the pointer may tremble in a click. */
+const TREMBLE = 4;
+
+/** How near counts as on a port or a line, in modules: larger far out, so that it stays some pixels. */
+const reach = (): number => Math.min(1.4, Math.max(0.7, 9 / desk.viewport.scale));
+
+/** Mouse, pen and fingers on the sheet. `toSheet` turns client pixels into modules. */
+export class SheetPointer {
+  #press: Press | undefined;
+  readonly #fingers = new Map<number, Point>();
+  readonly #toSheet: (client: Point) => Point;
+  readonly #offset: (client: Point) => Point;
+
+  constructor(toSheet: (client: Point) => Point, offset: (client: Point) => Point) {
+    this.#toSheet = toSheet;
+    this.#offset = offset;
+  }
+
+  down(event: PointerEvent, host: HTMLElement): void {
+    const client = { x: event.clientX, y: event.clientY };
+    if (event.pointerType === 'touch') this.#fingers.set(event.pointerId, client);
+    if (this.#fingers.size > 1) return this.#giveUp();
+    if (event.button === 2) return;
+    const at = this.#toSheet(client);
+    const { gesture } = desk;
+    const pans = event.button === 1 || desk.panning;
+    if (!pans && gesture.type === 'connect') {
+      const over = endAt(hitAt(drawing.map, at, reach()));
+      if (over) finishLine(over);
+      else desk.refuse('There is no port or line here. Click one, or press Escape to give the line up.');
+      return;
+    }
+    if (!pans && this.#lever(event)) return;
+    const label = event.target instanceof Element ? event.target.closest('[data-label]')?.getAttribute('data-label') : undefined;
+    const hit = label ? ({ type: 'label', id: label } as const) : hitAt(drawing.map, at, reach());
+    const adds = event.shiftKey;
+    // A finger on bare paper pans: a rubber band is seldom wanted there.
+    const slides = pans || (event.pointerType === 'touch' && hit.type === 'paper' && gesture.type === 'none');
+    const was = hit.type === 'port' && editor.isSelected('parts', hit.port.part);
+    this.#press = { pointer: event.pointerId, client, at, hit, adds, pans: slides, was, moved: false, last: client };
+    host.setPointerCapture(event.pointerId);
+    if (!slides && gesture.type === 'none') pick(hit, adds);
+  }
+
+  move(event: PointerEvent): void {
+    const client = { x: event.clientX, y: event.clientY };
+    if (this.#fingers.size > 1) return this.#pinch(event.pointerId, client);
+    if (this.#fingers.has(event.pointerId)) this.#fingers.set(event.pointerId, client);
+    const at = this.#toSheet(client);
+    const press = this.#press;
+    if (press && press.pointer === event.pointerId) {
+      press.moved ||= Math.hypot(client.x - press.client.x, client.y - press.client.y) >= TREMBLE;
+      if (press.pans) {
+        desk.viewport = panBy(desk.viewport, client.x - press.last.x, client.y - press.last.y);
+        press.last = client;
+        return;
+      }
+      if (press.moved) this.#drag(press, at);
+      return;
+    }
+    const { gesture } = desk;
+    if (gesture.type === 'place') desk.gesture = { ...gesture, at: snap(at) };
+    else this.#hover(at);
+  }
+
+  up(event: PointerEvent): void {
+    this.#fingers.delete(event.pointerId);
+    const press = this.#press;
+    if (!press || press.pointer !== event.pointerId) return;
+    this.#press = undefined;
+    if (press.pans) return;
+    const at = this.#toSheet({ x: event.clientX, y: event.clientY });
+    const { gesture } = desk;
+    if (gesture.type === 'place') return putDown(snap(at), event.shiftKey);
+    if (gesture.type === 'drag') {
+      const { x, y } = deltaOf(press.at, at);
+      desk.rest();
+      return commitShift(x, y, `drag ${press.pointer} ${event.timeStamp}`);
+    }
+    if (gesture.type === 'band') return this.#band(gesture.from, gesture.to, gesture.adds);
+    if (gesture.type === 'connect' && gesture.held) {
+      if (gesture.over) return finishLine(gesture.over);
+      desk.rest();
+      return desk.refuse('The line ended on bare paper. End it at a port or on a line.');
+    }
+    if (press.moved) return;
+    if (press.hit.type === 'port' && !press.hit.port.joint && !press.adds) startLine(portEnd(press.hit.port), false);
+    if (press.hit.type === 'paper' && !press.adds) {
+      editor.select({});
+      desk.cursor = undefined;
+    }
+  }
+
+  cancel(): void {
+    this.#fingers.clear();
+    this.#giveUp();
+  }
+
+  leave(): void {
+    if (this.#press) return;
+    desk.hover = { type: 'paper' };
+    if (desk.gesture.type === 'place') desk.gesture = { ...desk.gesture, at: undefined };
+  }
+
+  doubleClick(event: MouseEvent): void {
+    const hit = hitAt(drawing.map, this.#toSheet({ x: event.clientX, y: event.clientY }), reach());
+    if (hit.type === 'part') view.open('settings');
+    if (hit.type === 'connection') desk.naming = { of: 'connection', id: hit.id };
+  }
+
+  #giveUp(): void {
+    this.#press = undefined;
+    drawing.preview = undefined;
+    desk.rest();
+  }
+
+  /** A click on the position name moves the lever on; Alt-click on a box moves it there. */
+  #lever(event: PointerEvent): boolean {
+    if (!(event.target instanceof Element) || desk.gesture.type !== 'none') return false;
+    const named = event.target.closest('[data-lever]')?.getAttribute('data-lever');
+    if (named) {
+      setLever(named, session.positionOf(named) + 1);
+      return true;
+    }
+    if (!event.altKey) return false;
+    const part = event.target.closest('[data-part]')?.getAttribute('data-part');
+    const box = event.target.closest('[data-role="box"]')?.getAttribute('data-index');
+    if (!part || !session.inputs.some((input) => input.part === part)) return false;
+    setLever(part, box === null || box === undefined ? session.positionOf(part) + 1 : Number(box));
+    return true;
+  }
+
+  #drag(press: Press, at: Point): void {
+    const { gesture } = desk;
+    const { hit } = press;
+    if (gesture.type === 'place') {
+      desk.gesture = { ...gesture, at: snap(at) };
+      return;
+    }
+    if (gesture.type === 'none') {
+      // A junction is picked by a click and then dragged; before that, a drag from it draws a line.
+      const joint = hit.type === 'port' && hit.port.joint && press.was;
+      if (hit.type === 'port' && !joint) startLine(portEnd(hit.port), true);
+      else if (hit.type === 'part' || hit.type === 'label' || joint) desk.gesture = { type: 'drag', ids: editor.selection.parts };
+      else if (hit.type === 'paper') desk.gesture = { type: 'band', from: press.at, to: at, adds: press.adds };
+      else return;
+    }
+    const now = desk.gesture;
+    if (now.type === 'drag') {
+      const { x, y } = deltaOf(press.at, at);
+      previewShift(x, y);
+    } else if (now.type === 'band') desk.gesture = { ...now, to: at };
+    else if (now.type === 'connect') this.#aim(at);
+  }
+
+  #aim(at: Point): void {
+    const { gesture } = desk;
+    if (gesture.type !== 'connect') return;
+    const over = endAt(hitAt(drawing.map, at, reach() * 1.3));
+    const self = over?.type === 'port' && gesture.from.type === 'port' && over.ref.part === gesture.from.ref.part && over.ref.port === gesture.from.ref.port;
+    desk.gesture = { ...gesture, to: at, over: self ? undefined : over };
+  }
+
+  #hover(at: Point): void {
+    if (desk.gesture.type === 'connect') return this.#aim(at);
+    const hit = hitAt(drawing.map, at, reach());
+    if (hitKey(hit) !== hitKey(desk.hover)) desk.hover = hit;
+  }
+
+  #band(from: Point, to: Point, adds: boolean): void {
+    desk.rest();
+    const inside = inBand(drawing.map, boxOf(from, to));
+    const { parts, connections, labels } = editor.selection;
+    editor.select(adds ? { parts: union(parts, inside.parts), connections: union(connections, inside.connections), labels } : inside);
+    const count = inside.parts.length + inside.connections.length;
+    desk.say(count === 0 ? 'Nothing lies wholly inside.' : `${inside.parts.length} parts and ${inside.connections.length} connections selected.`);
+  }
+
+  /** Two fingers: the sheet follows both. */
+  #pinch(pointer: number, client: Point): void {
+    const before = this.#fingers.get(pointer);
+    const other = [...this.#fingers].find(([id]) => id !== pointer)?.[1];
+    if (!before || !other) return;
+    this.#fingers.set(pointer, client);
+    const spread = (a: Point): number => Math.max(1, Math.hypot(a.x - other.x, a.y - other.y));
+    const middle = this.#offset({ x: (client.x + other.x) / 2, y: (client.y + other.y) / 2 });
+    const panned = panBy(desk.viewport, (client.x - before.x) / 2, (client.y - before.y) / 2);
+    desk.viewport = zoomAt(panned, middle, spread(client) / spread(before));
+  }
+}
+
+const deltaOf = (from: Point, to: Point): Point => snap({ x: to.x - from.x, y: to.y - from.y });
+
+const union = (a: readonly string[], b: readonly string[]): string[] => [...new Set([...a, ...b])];
+
+function hitKey(hit: Hit): string {
+  if (hit.type === 'port') return `port ${hit.port.part}.${hit.port.port}`;
+  return hit.type === 'paper' ? 'paper' : `${hit.type} ${hit.id}`;
+}
+
+/** Select what is pressed: alone, or with Shift in or out of the selection. What is selected stays so, for a drag. */
+function pick(hit: Press['hit'], adds: boolean): void {
+  let list: keyof Selection;
+  let id: string;
+  if (hit.type === 'part') [list, id] = ['parts', hit.id];
+  else if (hit.type === 'connection') [list, id] = ['connections', hit.id];
+  else if (hit.type === 'label') [list, id] = ['labels', hit.id];
+  else if (hit.type === 'port' && hit.port.joint && !adds) [list, id] = ['parts', hit.port.part];
+  else return;
+  const was = editor.isSelected(list, id);
+  if (hit.type === 'part' || hit.type === 'connection') desk.cursor = { type: hit.type, id };
+  if (!adds && was) return;
+  if (!adds) editor.select({ [list]: [id] });
+  else {
+    const now = editor.selection;
+    editor.select({ ...now, [list]: was ? now[list].filter((each) => each !== id) : [...now[list], id] });
+  }
+}

@@ -1,0 +1,124 @@
+import type { Point } from '../../base/points.ts';
+import type { Circuit, Part } from '../../circuit/model.ts';
+import type { Places } from '../../circuit/build.ts';
+import type { Routes } from '../../drawing/geometry.ts';
+import { placeMissing } from '../../drawing/place.ts';
+import { reroute, routeAll } from '../../drawing/routing.ts';
+import { buildScene } from '../../drawing/scene.ts';
+import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scene.ts';
+import type { SceneLabel } from '../../drawing/labels.ts';
+import type { Look } from '../../parts/contract.ts';
+import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
+import { editor } from '../state/editor.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { flowWays } from './flow-ways.ts';
+import type { HitMap } from './hit.ts';
+import { lineLook } from './looks.ts';
+import { steadyList } from './steady.ts';
+
+/** What the row says of one part. */
+export interface PartState extends Look {
+  readonly note?: string;
+  readonly verdict?: ActuatorVerdict;
+  readonly pump?: PumpVerdict;
+  readonly freeInward?: boolean;
+}
+
+/** The circuit as it is drawn now: routes, looks and places, derived from the circuit and the row. */
+class SheetDrawing {
+  /** While parts are dragged: the circuit with them moved. */
+  preview = $state.raw<Circuit | undefined>();
+
+  /** With a place for every part that the file gives none. */
+  circuit: Circuit = $derived(placeMissing(this.preview ?? editor.circuit));
+  /** For edits that move parts which have no place of their own yet. */
+  places: Places = $derived(new Map(this.circuit.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
+
+  #route = incremental();
+  routes: Routes = $derived(this.#route(this.circuit));
+
+  states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit));
+
+  #ways = $derived.by(() => {
+    const { circuit, pumpsRunning } = { circuit: editor.circuit, pumpsRunning: session.conditions.pumps === 'running' };
+    return flowWays(circuit, (part) => session.positionOf(part), pumpsRunning);
+  });
+
+  #steadyLines = steadyList<SceneLine>((line) => line.connection);
+  #steadyParts = steadyList<ScenePart>((part) => part.id);
+  #steadyLabels = steadyList<SceneLabel>((label, i) => `${label.owner} ${i}`);
+
+  scene: Scene = $derived.by(() => {
+    const { circuit, routes, states } = this;
+    const looks = new Map(
+      circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
+    );
+    const state: SceneState = { lines: looks, parts: states };
+    const scene = buildScene(circuit, routes, state);
+    return {
+      ...scene,
+      lines: this.#steadyLines(scene.lines),
+      parts: this.#steadyParts(scene.parts),
+      labels: this.#steadyLabels(scene.labels),
+    };
+  });
+
+  byId: ReadonlyMap<string, Part> = $derived(new Map(this.circuit.parts.map((part) => [part.id, part])));
+
+  map: HitMap = $derived.by(() => ({
+    parts: this.scene.parts.map(({ id, box }) => ({ id, box })),
+    ports: this.scene.parts.flatMap((part) =>
+      part.ports.map(({ ref, at, side, role }) => ({ part: ref.part, port: ref.port, at, side, joint: role === 'joint' })),
+    ),
+    routes: this.scene.lines.map(({ connection, points }) => ({ id: connection, points })),
+  }));
+}
+
+/** Lays only what a change touched; a route that came out the same stays the same object. */
+function incremental(): (circuit: Circuit) => Routes {
+  let before: Circuit | undefined;
+  let routes: Routes = new Map();
+  return (circuit) => {
+    if (circuit === before) return routes;
+    const known = new Map(before?.parts.map((part) => [part.id, part]));
+    const changed = circuit.parts.filter((part) => known.get(part.id) !== part).map((part) => part.id);
+    // Most of it new: another circuit was opened.
+    const afresh = !before || changed.length * 2 > circuit.parts.length;
+    const next: Routes = afresh ? routeAll(circuit) : reroute(routes, circuit, changed);
+    routes = new Map([...next].map(([id, points]) => [id, keep(routes.get(id), points)]));
+    before = circuit;
+    return routes;
+  };
+}
+
+function keep(before: readonly Point[] | undefined, after: readonly Point[]): readonly Point[] {
+  const same = before?.length === after.length && before.every((p, i) => p.x === after[i]?.x && p.y === after[i]?.y);
+  return same ? before : after;
+}
+
+function partStates(circuit: Circuit): Map<string, PartState> {
+  const states = new Map<string, PartState>();
+  for (const input of session.inputs) {
+    const position = session.positionOf(input.part);
+    states.set(input.part, { position, note: input.positions[position] ?? '' });
+  }
+  const { table, row, conditions } = session;
+  const known = new Set(circuit.parts.map((part) => part.id));
+  table?.data.actuators.forEach(({ part }, i) => {
+    if (!known.has(part)) return;
+    const verdict = table.actuator(i, row);
+    const place = conditions.places?.[part];
+    states.set(part, {
+      verdict,
+      note: verdict,
+      freeInward: table.actuatorNotes(i, row).includes('free inward'),
+      ...(place && { stroke: place === 'in' ? 0 : 1 }),
+    });
+  });
+  table?.data.pumps.forEach(({ part }, i) => {
+    if (known.has(part)) states.set(part, { pump: table.pump(i, row), note: table.pump(i, row) });
+  });
+  return states;
+}
+
+export const drawing = new SheetDrawing();

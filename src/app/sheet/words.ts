@@ -1,0 +1,42 @@
+import { labelOf } from '../../circuit/model.ts';
+import type { Circuit, Connection, Part } from '../../circuit/model.ts';
+import { kindOf } from '../../parts/catalogue.ts';
+import { session } from '../state/session.svelte.ts';
+import { desk } from './desk.svelte.ts';
+import { drawing } from './sheet-drawing.svelte.ts';
+
+/** What a screen reader says of a part. */
+export function sayPart(part: Part): string {
+  const note = drawing.states.get(part.id)?.note;
+  return [labelOf(part), kindOf(part.kind)?.title ?? part.kind, part.code, note].filter(Boolean).join(', ');
+}
+
+export function sayConnection(connection: Connection, parts: ReadonlyMap<string, Part>): string {
+  const look = session.connectionLook(connection.id);
+  const end = ({ part, port }: Connection['from']): string => `${parts.get(part)?.label ?? part}.${port}`;
+  const state = look ? [look.class, look.blocked === 'under pressure' ? 'blocked under pump pressure' : '', look.trapped.length > 0 ? `trapped: ${look.trapped.join(', ')}` : ''] : [];
+  return [`Line ${look?.name ?? connection.name ?? ''} from ${end(connection.from)} to ${end(connection.to)}`, ...state].filter(Boolean).join(', ');
+}
+
+/** One line on what can be done now. */
+export function hint(circuit: Circuit, selected: number): string {
+  const { gesture, hover, cursor } = desk;
+  if (gesture.type === 'place') return `Click to put ${gesture.form.title.toLowerCase()} down, Shift for several. T turns, F flips, Escape puts it away.`;
+  if (gesture.type === 'connect') return 'End at a port or on a line. Escape gives the line up.';
+  if (gesture.type === 'drag') return 'Let go to put it here. Escape leaves it where it was.';
+  if (gesture.type !== 'none' || circuit.parts.length === 0) return '';
+  if (hover.type === 'port' && !hover.port.joint) return `${sayPortOf(circuit, hover.port.part, hover.port.port)}: drag or click to draw a line.`;
+  if (cursor?.type === 'port' && desk.focused) return `${sayPortOf(circuit, cursor.part, cursor.port)}: Enter starts a line, arrows go to the next port.`;
+  if (hover.type === 'connection') return sayConnectionById(circuit, hover.id);
+  if (selected > 0) return 'T turns, F flips, F2 names, Del deletes, arrows move.';
+  return '';
+}
+
+function sayPortOf(circuit: Circuit, part: string, port: string): string {
+  return `Port ${circuit.parts.find(({ id }) => id === part)?.label ?? part}.${port}`;
+}
+
+function sayConnectionById(circuit: Circuit, id: string): string {
+  const connection = circuit.connections.find((each) => each.id === id);
+  return connection ? sayConnection(connection, drawing.byId) : '';
+}
