@@ -144,6 +144,9 @@ function coilNames(table: StateTable): Coil[] {
   );
 }
 
+const notesOf = (table: StateTable, row: number): string[] =>
+  table.data.actuators.flatMap(({ label }, i) => table.actuatorNotes(i, row).map((note) => `${label}: ${note}`));
+
 /** The shown name of a part; its id if the circuit has no such part. */
 export function labelOfPart(circuit: Circuit, id: string): string {
   const part = circuit.parts.find((p) => p.id === id);
@@ -177,10 +180,8 @@ function reportRow(source: ReportSource, coils: readonly Coil[], row: number): R
       .map((name, i) => ({ line: name, reasons: table.trapped(i, row) }))
       .filter(({ reasons }) => reasons.length > 0),
     rests: record(restsOf(table, row, explanation)),
-    notes: [
-      ...data.actuators.flatMap((a, i) => table.actuatorNotes(i, row).map((note) => `${a.label}: ${note}`)),
-      ...(explanation?.notes ?? []),
-    ],
+    // An explanation may say again what the table knows.
+    notes: [...new Set([...notesOf(table, row), ...(explanation?.notes ?? [])])],
   };
 }
 

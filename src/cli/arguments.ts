@@ -1,0 +1,122 @@
+import { parseArgs } from 'node:util';
+import { codeOf, Failure, messageOf } from './failure.ts';
+import { EXPLAIN_HELP, HELP, TABLE_HELP } from './help.ts';
+
+export type Pumps = 'running' | 'stopped';
+
+export type Command =
+  | { readonly name: 'say'; readonly text: string }
+  | {
+      readonly name: 'table';
+      readonly file: string;
+      readonly format: TableFormat;
+      readonly pumps: Pumps;
+      readonly out: string | undefined;
+    }
+  | {
+      readonly name: 'explain';
+      readonly file: string;
+      readonly format: ExplainFormat;
+      readonly pumps: Pumps;
+      readonly state: readonly string[];
+      readonly out: string | undefined;
+    };
+
+export const TABLE_FORMATS = ['text', 'csv', 'json', 'markdown'] as const;
+export type TableFormat = (typeof TABLE_FORMATS)[number];
+export const EXPLAIN_FORMATS = ['text', 'json'] as const;
+export type ExplainFormat = (typeof EXPLAIN_FORMATS)[number];
+
+const COMMON = {
+  format: { type: 'string', default: 'text' },
+  pumps: { type: 'string', default: 'running' },
+  out: { type: 'string' },
+  help: { type: 'boolean', default: false },
+} as const;
+
+/** What the user asks for. Throws a `Failure` that says what is wrong with the command line. */
+export function readArguments(args: readonly string[], version: string): Command {
+  const [first, ...rest] = args;
+  switch (first) {
+    case undefined:
+      throw usage('No command is given.');
+    case '--help':
+    case '-h':
+    case 'help':
+      return { name: 'say', text: HELP };
+    case '--version':
+      return { name: 'say', text: `${version}\n` };
+    case 'table':
+      return tableCommand(rest);
+    case 'explain':
+      return explainCommand(rest);
+    default:
+      throw usage(first.startsWith('-') ? `Unknown option ${first}.` : `Unknown command "${first}".`);
+  }
+}
+
+function tableCommand(args: string[]): Command {
+  const { values, positionals } = attempt('table', () =>
+    parseArgs({ args, strict: true, allowPositionals: true, options: COMMON }),
+  );
+  if (values.help) return { name: 'say', text: TABLE_HELP };
+  return {
+    name: 'table',
+    file: oneFile('table', positionals),
+    format: oneOf('table', '--format', values.format, TABLE_FORMATS),
+    pumps: oneOf('table', '--pumps', values.pumps, ['running', 'stopped']),
+    out: outFile('table', values.out),
+  };
+}
+
+function explainCommand(args: string[]): Command {
+  const { values, positionals } = attempt('explain', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { ...COMMON, state: { type: 'string', multiple: true, default: [] } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: EXPLAIN_HELP };
+  return {
+    name: 'explain',
+    file: oneFile('explain', positionals),
+    format: oneOf('explain', '--format', values.format, EXPLAIN_FORMATS),
+    pumps: oneOf('explain', '--pumps', values.pumps, ['running', 'stopped']),
+    state: values.state,
+    out: outFile('explain', values.out),
+  };
+}
+
+const usage = (what: string, command = ''): Failure =>
+  new Failure(`${what} See spooltable ${command}${command && ' '}--help.`);
+
+function attempt<T>(command: string, parse: () => T): T {
+  try {
+    return parse();
+  } catch (error) {
+    if (codeOf(error)?.startsWith('ERR_PARSE_ARGS') !== true) throw error;
+    // Node adds advice after the first sentence, and line feeds.
+    const [sentence = ''] = messageOf(error).split(/\.\s|\n/);
+    throw usage(`${sentence.replace(/\.$/, '')}.`, command);
+  }
+}
+
+function oneFile(command: string, files: readonly string[]): string {
+  const [file, second] = files;
+  if (file === undefined || file === '') throw usage('No circuit file is given.', command);
+  if (second !== undefined) throw usage(`One circuit file is taken, and "${second}" is a second one.`, command);
+  return file;
+}
+
+function oneOf<T extends string>(command: string, option: string, value: string, allowed: readonly T[]): T {
+  const found = allowed.find((word) => word === value);
+  if (found === undefined) throw usage(`${option} takes ${allowed.join(' or ')}, not "${value}".`, command);
+  return found;
+}
+
+function outFile(command: string, out: string | undefined): string | undefined {
+  if (out === '') throw usage('--out needs the name of a file.', command);
+  return out === '-' ? undefined : out;
+}

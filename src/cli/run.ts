@@ -1,0 +1,92 @@
+import { explainRow, findings, MOST_ROWS, networkOf, tabulate } from '../analysis/analyse.ts';
+import type { Conditions } from '../analysis/results.ts';
+import { unlimited } from '../base/budget.ts';
+import type { Circuit } from '../circuit/model.ts';
+import { StateTable } from '../engine/table/state-table.ts';
+import { writeCsv } from '../report/csv.ts';
+import { writeExplanationJson, writeExplanationText } from '../report/explain.ts';
+import { writeJson } from '../report/json.ts';
+import { writeMarkdown } from '../report/markdown.ts';
+import { makeReport } from '../report/rows.ts';
+import type { Report } from '../report/rows.ts';
+import { writeText } from '../report/text.ts';
+import { readArguments } from './arguments.ts';
+import type { Command, Pumps, TableFormat } from './arguments.ts';
+import { Failure, messageOf, sayProblems } from './failure.ts';
+import { readCircuitFile } from './input.ts';
+import { print, writeWhole } from './output.ts';
+import { readState } from './state.ts';
+
+/** Up to here the rows of a JSON table also carry sentences and candidates, which take a search for each row. */
+const MOST_EXPLAINED = 2000;
+
+/** Does what the arguments say. Throws a `Failure` for everything that the user can mend. */
+export async function run(args: readonly string[], version: string): Promise<void> {
+  const command = readArguments(args, version);
+  if (command.name === 'say') {
+    await print([command.text]);
+    return;
+  }
+  const circuit = await readCircuitFile(command.file, note);
+  const pieces = command.name === 'table' ? table(command, circuit, version) : explain(command, circuit, version);
+  if (command.out === undefined) await print(pieces);
+  else await writeWhole(command.out, command.file, pieces);
+}
+
+const note = (text: string): void => console.error(`spooltable: ${text}`);
+
+type Table = Extract<Command, { name: 'table' }>;
+type Explain = Extract<Command, { name: 'explain' }>;
+
+const conditionsOf = (pumps: Pumps): Conditions => ({ pumps });
+
+function tableOf(file: string, circuit: Circuit, pumps: Pumps): StateTable {
+  const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
+  try {
+    return new StateTable(tabulate(circuit, conditionsOf(pumps), unlimited));
+  } catch (error) {
+    throw count > MOST_ROWS ? new Failure(`${file}: ${messageOf(error)}`) : error;
+  }
+}
+
+function table({ file, format, pumps, out }: Table, circuit: Circuit, version: string): Iterable<string> {
+  const stateTable = tableOf(file, circuit, pumps);
+  const running = pumps === 'running' ? stateTable : tableOf(file, circuit, 'running');
+  const conditions = conditionsOf(pumps);
+  const explained = format === 'json' && stateTable.count <= MOST_EXPLAINED;
+  const report = makeReport({
+    version,
+    circuit,
+    conditions,
+    table: stateTable,
+    findings: findings(circuit, running),
+    ...(explained ? { explain: (row: number) => explainRow(circuit, conditions, row) } : {}),
+  });
+  const width = out === undefined && process.stdout.isTTY ? process.stdout.columns : undefined;
+  return WRITERS[format](report, width);
+}
+
+const WRITERS: Record<TableFormat, (report: Report, width: number | undefined) => Iterable<string>> = {
+  text: (report, width) => writeText(report, width === undefined ? {} : { width }),
+  csv: writeCsv,
+  json: writeJson,
+  markdown: writeMarkdown,
+};
+
+function explain({ file, format, pumps, state }: Explain, circuit: Circuit, version: string): Iterable<string> {
+  const stateTable = tableOf(file, circuit, pumps);
+  const read = readState(state, stateTable.data.inputs);
+  if (!read.ok) throw new Failure(sayProblems(file, read.problems));
+  const conditions = conditionsOf(pumps);
+  const row = stateTable.rowOf(read.value.positions);
+  const source = {
+    version,
+    circuit,
+    conditions,
+    table: stateTable,
+    findings: [],
+    explanation: explainRow(circuit, conditions, row),
+    assumed: read.value.assumed,
+  };
+  return format === 'json' ? [writeExplanationJson(source)] : writeExplanationText(source);
+}
