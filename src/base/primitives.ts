@@ -12,9 +12,15 @@ export type Pen =
   | 'idle' // paths in a box that is not at the ports
   | 'active' // paths in the box at the ports
   | 'pilot' // dashed pilot, drain and bleed
-  | 'enclosure'; // dash-dot
+  | 'enclosure' // dash-dot
+  | 'chosen' // outline of the box at the ports, in a shown state
+  | 'unseen' // no outline: filled shapes only
+  | PathPen;
 
-export type Fill = 'none' | 'ink' | 'paper' | 'idle' | 'active';
+/** A path inside a symbol that takes part in a line, in a shown state: drawn as its line is. */
+export type PathPen = 'fed' | 'flows-to-tank' | 'vented' | 'cut-off' | 'displaced' | 'trapped';
+
+export type Fill = 'none' | 'ink' | 'paper' | 'idle' | 'active' | PathPen;
 
 export type Primitive =
   | { readonly type: 'polyline'; readonly points: readonly Point[]; readonly pen: Pen; readonly closed?: boolean; readonly fill?: Fill }

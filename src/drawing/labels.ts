@@ -1,7 +1,6 @@
 import type { Box, Point } from '../base/points.ts';
 import type { Circuit, Part } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
-import { kindOf } from '../parts/catalogue.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
 import type { Routes } from './geometry.ts';
 import { TEXT_SIZES } from './palette.ts';
@@ -18,7 +17,7 @@ export interface LabelText {
 
 /** One line of text on the sheet; `at` is on the baseline. */
 export interface SceneLabel {
-  readonly role: 'part' | 'port' | 'free';
+  readonly role: 'part' | 'free';
   /** Part id, or id of the free label. */
   readonly owner: string;
   readonly at: Point;
@@ -42,6 +41,10 @@ const VALVE = 'directional-valve';
 /** Drawn so often, or so small, that an automatic name is noise. */
 const QUIET = new Set(['tank', 'junction', 'plug']);
 const GAP = 0.75;
+/** Modules kept for a position's or verdict's glyph and words. */
+const NOTE_ROOM: Readonly<Record<string, number>> = {
+  'directional-valve': 6, cylinder: 13, 'double-rod-cylinder': 13, 'single-acting-cylinder': 13, motor: 13, 'fixed-pump': 9, 'compensated-pump': 9,
+};
 
 /** Close enough for placing: Inter's capitals and figures are wider than its small letters. */
 export function textWidth(text: string, size: number): number {
@@ -58,29 +61,48 @@ export function textWidth(text: string, size: number): number {
 const runsWidth = (runs: readonly LabelText[]): number => runs.reduce((sum, r) => sum + textWidth(`${r.text} `, r.size), 0);
 const lineHeight = (runs: readonly LabelText[]): number => (Math.max(...runs.map((r) => r.size)) * 1.2) / MODULE_PX;
 
-/** Label and code of every part, port letters of valves, and free labels, each clear of ports and lines if it can be. */
-export function sceneLabels(circuit: Circuit, routes: Routes, noteOf: NoteOf = () => undefined): SceneLabel[] {
-  const letters = circuit.parts.filter((p) => p.kind === VALVE).flatMap(portLetters);
-  const free = (circuit.labels ?? []).map((label): SceneLabel => ({
-    role: 'free', owner: label.id, at: label.at, align: 'start',
-    runs: [{ text: label.text, size: TEXT_SIZES.label, weight: 400, tone: 'second' }],
-  }));
+/** Where the words of each part stand; free of the state that is shown, so that no name jumps when a lever moves. */
+export type LabelSpots = ReadonlyMap<string, { readonly at: Point; readonly align: 'start' | 'middle' | 'end' }>;
+
+/** `noted`: keep room beside names for what a state says. Each spot is clear of ports, lines and other names if it can be. */
+export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): LabelSpots {
   const parts = circuit.parts.map((part) => ({ part, box: partReach(part) }));
-  const taken = [...letters, ...free].map(labelBox);
-  const out: SceneLabel[] = [];
+  const ground: Ground = {
+    parts,
+    lines: [...routes.values()].flatMap((points) => points.slice(1).map((b, i) => [points[i] as Point, b] as const)),
+    taken: [...freeLabels(circuit).map(labelBox), ...circuit.parts.filter((p) => p.kind === VALVE).flatMap(letterRoom)],
+  };
+  const out = new Map<string, Spot>();
   for (const { part, box } of parts) {
-    const lines = linesOf(part, noteOf(part));
+    const lines = linesOf(part, undefined);
     if (lines.length === 0) continue;
-    const spot = bestSpot(lines, part, box, (b) => crowd(b, part.id, parts, routes, taken));
-    taken.push(spot.box);
+    const spot = bestSpot(lines, part, box, ground, noted ? (NOTE_ROOM[part.kind] ?? 0) : 0);
+    ground.taken.push(spot.box);
+    out.set(part.id, spot);
+  }
+  return out;
+}
+
+/** Label, note and code of every part, and the free labels. */
+export function sceneLabels(circuit: Circuit, spots: LabelSpots, noteOf: NoteOf = () => undefined): SceneLabel[] {
+  const out: SceneLabel[] = [];
+  for (const part of circuit.parts) {
+    const spot = spots.get(part.id);
+    if (!spot) continue;
     let y = spot.at.y;
-    for (const runs of lines) {
-      out.push({ role: 'part', owner: part.id, at: { x: spot.at.x, y: y + (runs[0]?.size ?? 12) / MODULE_PX }, align: spot.align, runs });
+    for (const runs of linesOf(part, noteOf(part))) {
+      out.push({ role: 'part', owner: part.id, at: { x: spot.at.x, y: y + (runs[0]?.size ?? 0) / MODULE_PX }, align: spot.align, runs });
       y += lineHeight(runs);
     }
   }
-  return [...out, ...letters, ...free];
+  return [...out, ...freeLabels(circuit)];
 }
+
+const freeLabels = (circuit: Circuit): SceneLabel[] =>
+  (circuit.labels ?? []).map((label) => ({
+    role: 'free', owner: label.id, at: label.at, align: 'start',
+    runs: [{ text: label.text, size: TEXT_SIZES.label, weight: 400, tone: 'second' }],
+  }));
 
 function linesOf(part: Part, note: string | undefined): LabelText[][] {
   const lines: LabelText[][] = [];
@@ -105,13 +127,14 @@ function orderOf(part: Part, box: Box): readonly Place[] {
   return facesAcross ? ['above', 'below', 'right', 'left'] : ['right', 'left', 'above', 'below'];
 }
 
-function bestSpot(lines: readonly LabelText[][], part: Part, box: Box, crowding: (box: Box) => number): Spot {
-  const width = Math.max(...lines.map(runsWidth));
+function bestSpot(lines: readonly LabelText[][], part: Part, box: Box, ground: Ground, extra: number): Spot {
+  const [first, ...rest] = lines.map(runsWidth);
+  const width = Math.max((first ?? 0) + extra, ...rest);
   const height = lines.reduce((sum, runs) => sum + lineHeight(runs), 0);
   let best: Spot | undefined;
   let least = Infinity;
   for (const spot of orderOf(part, box).flatMap((p) => spotsAt(p, box, width, height))) {
-    const cost = crowding(spot.box);
+    const cost = crowd(spot.box, part.id, ground);
     if (cost < least) {
       least = cost;
       best = spot;
@@ -137,17 +160,20 @@ function spotsAt(where: Place, box: Box, width: number, height: number): Spot[] 
   return [box.x, box.x + (box.width - width) / 2, box.x + box.width - width].map(along);
 }
 
+/** What names keep clear of. */
+interface Ground {
+  readonly parts: readonly { readonly part: Part; readonly box: Box }[];
+  readonly lines: readonly (readonly [Point, Point])[];
+  readonly taken: Box[];
+}
+
 /** How much a box of text would cover: 0 = free. */
-function crowd(
-  box: Box, own: string, parts: readonly { part: Part; box: Box }[], routes: Routes, taken: readonly Box[],
-): number {
+function crowd(box: Box, own: string, ground: Ground): number {
   let cost = 0;
-  for (const other of parts) if (other.part.id !== own && overlaps(other.box, box)) cost += 4;
-  for (const other of taken) if (overlaps(other, box)) cost += 6;
+  for (const other of ground.parts) if (other.part.id !== own && overlaps(other.box, box)) cost += 4;
+  for (const other of ground.taken) if (overlaps(other, box)) cost += 6;
   const room = inflate(box, 0.3);
-  for (const points of routes.values()) {
-    for (let i = 1; i < points.length; i++) if (segmentTouches(points[i - 1] as Point, points[i] as Point, room)) cost += 2;
-  }
+  for (const [a, b] of ground.lines) if (segmentTouches(a, b, room)) cost += 2;
   return cost;
 }
 
@@ -158,25 +184,7 @@ export function labelBox(label: SceneLabel): Box {
   return { x, y: label.at.y - height * 0.8, width, height };
 }
 
-/** Small letters outside the box, turned away from the middle of the edge, clear of the line. */
-function portLetters(part: Part): SceneLabel[] {
-  const ports = placedPorts(part);
-  const kind = kindOf(part.kind);
-  if (!kind) return [];
-  return ports.map((port) => {
-    const edge = ports.filter((p) => p.side === port.side);
-    const upright = port.side === 'up' || port.side === 'down';
-    const place = (p: Point): number => (upright ? p.x : p.y);
-    const middle = edge.reduce((sum, p) => sum + place(p.at), 0) / edge.length;
-    const before = edge.length > 1 && place(port.at) < middle;
-    const cap = TEXT_SIZES.letter / MODULE_PX;
-    const { x, y } = port.at;
-    const base = { role: 'port' as const, owner: part.id, runs: [{ text: port.ref.port, size: TEXT_SIZES.letter, weight: 400 as const, tone: 'second' as const }] };
-    if (upright) {
-      const baseline = port.side === 'up' ? y - 0.4 : y + 0.4 + cap * 0.75;
-      return { ...base, at: { x: before ? x - 0.6 : x + 0.6, y: baseline }, align: before ? 'end' : 'start' };
-    }
-    const baseline = before ? y - 0.5 : y + 0.5 + cap * 0.75;
-    return { ...base, at: { x: port.side === 'left' ? x - 0.4 : x + 0.4, y: baseline }, align: port.side === 'left' ? 'end' : 'start' };
-  });
+/** Room for the letter that a valve draws beside each of its ports. */
+function letterRoom(part: Part): Box[] {
+  return placedPorts(part).map(({ at }) => ({ x: at.x - 1.8, y: at.y - 1.8, width: 3.6, height: 3.6 }));
 }

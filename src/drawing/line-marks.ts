@@ -1,18 +1,20 @@
 import type { Point } from '../base/points.ts';
+import type { PathPen } from '../base/primitives.ts';
 import { straighten } from './routing.ts';
 import { LINE_WEIGHTS, PILOT_DASH } from './palette.ts';
 import type { ColourToken } from './palette.ts';
 import type { LineLook, LineUse, Stroke } from './strokes.ts';
 import { MODULE_PX } from './strokes.ts';
 
-/** Which ends of the polyline stand at a port: only these get end bars and block bars. */
+/** Which ends of the polyline stand at a port, and how far from it a bar is to stand, in modules; absent = no port. */
 export interface PortEnds {
-  readonly start: boolean;
-  readonly end: boolean;
+  readonly start?: number;
+  readonly end?: number;
 }
 
-const BOTH: PortEnds = { start: true, end: true };
-const COLOUR: Readonly<Record<LineLook['class'], ColourToken>> = {
+export const BAR_AT = 1;
+const BOTH: PortEnds = { start: BAR_AT, end: BAR_AT };
+const COLOUR: Readonly<Record<LineLook['class'], PathPen | 'ink'>> = {
   idle: 'ink',
   fed: 'fed',
   'flows to tank': 'flows-to-tank',
@@ -22,10 +24,17 @@ const COLOUR: Readonly<Record<LineLook['class'], ColourToken>> = {
 };
 /** Modules. */
 const CHEVRON_STEP = 3;
-const CHEVRON_HALF = 0.75;
-const CHEVRON_DEPTH = 0.8;
+const CHEVRON_HALF = 0.65;
+const CHEVRON_DEPTH = 0.75;
 const BAR_HALF = 0.7;
-const HATCH_STEP = { known: 0.9, possible: 2.2 } as const;
+const HATCH_STEP = { known: 0.75, possible: 1.9 } as const;
+
+/** How a path inside a symbol shows that it takes part in this line; an idle line leaves it in ink. */
+export function pathPen(look: LineLook): PathPen | undefined {
+  if (look.trapped) return 'trapped';
+  const colour = COLOUR[look.class];
+  return colour === 'ink' ? undefined : colour;
+}
 
 export const lineColour = (look: LineLook): ColourToken => (look.trapped ? 'trapped' : COLOUR[look.class]);
 
@@ -55,12 +64,12 @@ export function lineMarks(points: readonly Point[], look: LineLook, use: LineUse
     const lines = chevrons(look.flow === 'forward' ? path : [...path].reverse());
     if (lines.length > 0) strokes.push({ role: 'chevron', lines, colour, weight: 2, cap: 'butt' });
   }
-  if (look.class === 'cut off') {
-    const lines = bars(path, ends, [1]);
+  if (look.class === 'cut off' && !look.trapped) {
+    const lines = bars(path, ends, [0]);
     if (lines.length > 0) strokes.push({ role: 'end-bar', lines, colour, weight: LINE_WEIGHTS.endBar, cap: 'butt' });
   }
   if (look.blocked && look.class === 'fed') {
-    const lines = bars(path, ends, [0.7, 1.3]);
+    const lines = bars(path, ends, [-0.3, 0.3]);
     if (lines.length > 0) strokes.push({ role: 'block-bar', lines, colour: 'ink', weight: LINE_WEIGHTS.endBar, cap: 'butt' });
   }
   return strokes;
@@ -93,14 +102,14 @@ function chevrons(path: readonly Point[]): Point[][] {
   return out;
 }
 
-/** Short bars across the line, at these distances from each port; nearer on runs too short for them. */
-function bars(path: readonly Point[], ends: PortEnds, distances: readonly number[]): Point[][] {
+/** Short bars across the line at each port, `offsets` about the bar's place; nearer on runs too short for them. */
+function bars(path: readonly Point[], ends: PortEnds, offsets: readonly number[]): Point[][] {
   const out: Point[][] = [];
-  const at = (a: Point, b: Point): void => {
-    const half = path.length === 2 && ends.start && ends.end ? lengthOf(a, b) / 2 : lengthOf(a, b);
-    const squeeze = Math.min(1, half / Math.max(...distances));
-    for (const distance of distances) {
-      const p = towards(a, b, distance * squeeze);
+  const both = path.length === 2 && ends.start !== undefined && ends.end !== undefined;
+  const at = (a: Point, b: Point, place: number): void => {
+    const room = (both ? lengthOf(a, b) / 2 : lengthOf(a, b)) - Math.max(...offsets) - 0.5;
+    for (const offset of offsets) {
+      const p = towards(a, b, Math.max(0.3, Math.min(place, room)) + offset);
       const side = a.y === b.y ? { x: 0, y: BAR_HALF } : { x: BAR_HALF, y: 0 };
       out.push([
         { x: p.x - side.x, y: p.y - side.y },
@@ -108,8 +117,8 @@ function bars(path: readonly Point[], ends: PortEnds, distances: readonly number
       ]);
     }
   };
-  if (ends.start) at(path[0] as Point, path[1] as Point);
-  if (ends.end) at(path.at(-1) as Point, path.at(-2) as Point);
+  if (ends.start !== undefined) at(path[0] as Point, path[1] as Point, ends.start);
+  if (ends.end !== undefined) at(path.at(-1) as Point, path.at(-2) as Point, ends.end);
   return out;
 }
 

@@ -1,4 +1,4 @@
-import type { Pen } from '../base/primitives.ts';
+import type { Fill, Pen } from '../base/primitives.ts';
 
 /** The one source of colours, weights and dashes, for the sheet, the interface and exported files. */
 export type Theme = 'light' | 'dark';
@@ -71,6 +71,28 @@ export const PENS: Readonly<Record<Pen, PenStyle>> = {
   active: { colour: 'ink', weight: 1.75 },
   pilot: { colour: 'second', weight: 1.25, dash: [4, 2.5] },
   enclosure: { colour: 'idle', weight: 1.25, dash: [8, 2.5, 1.5, 2.5] },
+  chosen: { colour: 'accent', weight: 2.25 },
+  unseen: { colour: 'ink', weight: 0 },
+  fed: { colour: 'fed', weight: 3.5 },
+  'flows-to-tank': { colour: 'flows-to-tank', weight: 2 },
+  vented: { colour: 'vented', weight: 1.25 },
+  'cut-off': { colour: 'cut-off', weight: 1.75 },
+  displaced: { colour: 'displaced', weight: 1.75 },
+  trapped: { colour: 'trapped', weight: 1.75 },
+};
+
+export const FILLS: Readonly<Record<Fill, ColourToken | 'none'>> = {
+  none: 'none',
+  ink: 'ink',
+  paper: 'paper',
+  idle: 'idle',
+  active: 'ink',
+  fed: 'fed',
+  'flows-to-tank': 'flows-to-tank',
+  vented: 'vented',
+  'cut-off': 'cut-off',
+  displaced: 'displaced',
+  trapped: 'trapped',
 };
 
 /** Weights in pixels at 8 px a module. */
@@ -87,7 +109,7 @@ export const LINE_WEIGHTS = {
   endBar: 2,
   trappedBand: 9,
   possibleBand: 6,
-  hatch: 1.25,
+  hatch: 1.6,
   trappedCore: 1.5,
 } as const;
 

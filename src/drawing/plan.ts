@@ -7,8 +7,9 @@ import { partReach, placedPorts } from './shapes.ts';
 /** Free space between parts, in modules. */
 export const SPACE = 4;
 /** Between columns there is also room for names and lines; above valves and over the supply for lines. */
-const COLUMN_SPACE = 9;
+const COLUMN_SPACE = 13;
 const ROW_SPACE = 5;
+const TANK_ROOM = 2 * SPACE;
 
 const ACTUATORS = new Set(['cylinder', 'double-rod-cylinder', 'single-acting-cylinder', 'motor']);
 const PUMPS = new Set(['fixed-pump', 'compensated-pump']);
@@ -54,7 +55,9 @@ class Plan {
         this.#spread(level, y, spots);
         y -= this.#height(level);
       }
-      this.#spread(column.top, stackTop - ROW_SPACE, spots);
+      // A case drain has its tank right below the actuator.
+      const drained = column.top.some((p) => placedPorts(p).some((port) => port.role === 'drain'));
+      this.#spread(column.top, stackTop - ROW_SPACE - (drained ? TANK_ROOM : 0), spots);
       this.#setColumn(spots);
     }
   }
@@ -66,7 +69,7 @@ class Plan {
     const groups = pumps.map((pump) => ({ pump, ...this.#hanging(pump) }));
     const loose = rest.filter((p) => !this.#taken.has(p.id));
     const tallest = Math.max(0, ...groups.map((g) => this.#height([g.pump]) + g.passed.reduce((sum, p) => sum + this.#height([p]) + SPACE, 0)));
-    const floor = this.#valveBottom + SPACE + 3 + ROW_SPACE + Math.max(tallest, this.#height(rest));
+    const floor = this.#valveBottom + SPACE + 3 + ROW_SPACE + Math.max(tallest, this.#height(rest) + (rest.some(hangsUp) ? this.#height(pumps) + SPACE : 0));
     let x = 0;
     const stand = (part: Part, bottom: number): number => {
       const box = partReach(part);
@@ -85,7 +88,7 @@ class Plan {
         y -= box.height;
       }
       x += widest + SPACE + 2;
-      for (const part of beside) x += stand(part, floor) + SPACE + 2;
+      for (const part of beside) x += stand(part, hangsUp(part) ? floor - this.#height([pump]) - SPACE : floor) + SPACE + 2;
       x += SPACE;
     }
     for (const part of loose) x += stand(part, floor) + SPACE + 2;
@@ -190,6 +193,12 @@ class Plan {
   #height(parts: readonly Part[]): number {
     return Math.max(0, ...parts.map((p) => partReach(p).height));
   }
+}
+
+/** Its only port looks down: it stands above the line, as gauges and accumulators do. */
+function hangsUp(part: Part): boolean {
+  const ports = placedPorts(part);
+  return ports.length === 1 && ports[0]?.side === 'down';
 }
 
 interface Column {

@@ -1,23 +1,26 @@
 import type { Box, Placement, Point } from '../base/points.ts';
 import { place, union } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
-import type { Circuit, Connection, Part, PortRef } from '../circuit/model.ts';
+import type { Circuit, Part, PortRef } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
 import { kindOf } from '../parts/catalogue.ts';
 import type { Look } from '../parts/contract.ts';
+import type { PortPen } from './active-box.ts';
+import { showActiveBox } from './active-box.ts';
 import type { Routes } from './geometry.ts';
 import { boxOfPoints } from './geometry.ts';
 import type { Dot } from './joints.ts';
 import { junctionDots } from './joints.ts';
-import type { SceneLabel } from './labels.ts';
-import { labelBox, sceneLabels } from './labels.ts';
-import { lineColour, lineMarks } from './line-marks.ts';
+import type { LabelSpots, SceneLabel } from './labels.ts';
+import { labelBox, labelSpots, sceneLabels } from './labels.ts';
+import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
+import type { LineNumbers } from './lines.ts';
 import { lineNumbers } from './lines.ts';
-import type { ColourToken } from './palette.ts';
+import type { Piece } from './pieces.ts';
 import { freshPieces } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
-import { ownBox, partBox, placedPorts, placementOf } from './shapes.ts';
+import { ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
 import type { LineLook, Stroke } from './strokes.ts';
 import { placePrimitives } from './turned.ts';
 
@@ -27,7 +30,7 @@ export interface Scene {
   readonly bounds: Box;
   readonly enclosures: readonly { readonly part: string; readonly primitives: readonly Primitive[] }[];
   readonly lines: readonly SceneLine[];
-  readonly dots: readonly SceneDot[];
+  readonly dots: readonly Dot[];
   readonly parts: readonly ScenePart[];
   readonly labels: readonly SceneLabel[];
 }
@@ -39,10 +42,6 @@ export interface SceneLine {
   /** The whole route, for hits and reading; `strokes` leave out what another connection of the line draws. */
   readonly points: readonly Point[];
   readonly strokes: readonly Stroke[];
-}
-
-export interface SceneDot extends Dot {
-  readonly colour: ColourToken;
 }
 
 export interface ScenePart {
@@ -65,19 +64,15 @@ export interface SceneState {
 }
 
 const IDLE: LineLook = { class: 'idle' };
-const DOT_LAST = 'ink';
 
 export function buildScene(circuit: Circuit, routes: Routes, state: SceneState = {}): Scene {
   const looks = (id: string): LineLook => state.lines?.get(id) ?? IDLE;
-  const parts = circuit.parts.map((part) => scenePart(part, state.parts?.get(part.id) ?? {}));
+  const stage = stageOf(circuit, routes, state.parts !== undefined);
+  const parts = circuit.parts.map((part) => scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)));
   const stubs = state.lines ? takeStubs(circuit, parts, looks) : new Map<string, Point>();
-  const lines = sceneLines(circuit, routes, looks, stubs);
+  const lines = sceneLines(circuit, routes, stage, looks, stubs);
   const shown = parts.map((part) => hideStubs(part, stubs));
-  const labels = sceneLabels(circuit, routes, (part) => state.parts?.get(part.id)?.note);
-  const dots = junctionDots(circuit, routes).map((dot): SceneDot => {
-    const member = lines.find((l) => l.line === dot.line);
-    return { ...dot, colour: member && state.lines ? lineColour(looks(member.connection)) : DOT_LAST };
-  });
+  const labels = sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id)?.note);
   return {
     title: circuit.name,
     bounds: sceneBounds(shown, lines, labels),
@@ -86,15 +81,55 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
       return own.length > 0 ? [{ part: id, primitives: own }] : [];
     }),
     lines,
-    dots,
+    dots: stage.dots,
     parts: shown.map((p) => ({ ...p, primitives: p.primitives.filter((x) => !isEnclosure(x)) })),
     labels,
   };
 }
 
+/** What a scene needs that does not depend on the state: computed once for a circuit and its routes. */
+interface Stage {
+  readonly numbers: LineNumbers;
+  readonly pieces: ReadonlyMap<string, readonly Piece[]>;
+  readonly dots: readonly Dot[];
+  readonly spots: LabelSpots;
+  /** `part.port` → connections at it. */
+  readonly atPort: ReadonlyMap<string, readonly string[]>;
+}
+
+const stages = new WeakMap<Circuit, { readonly routes: Routes; readonly noted: boolean; readonly stage: Stage }>();
+
+function stageOf(circuit: Circuit, routes: Routes, noted: boolean): Stage {
+  const known = stages.get(circuit);
+  if (known && known.routes === routes && known.noted === noted) return known.stage;
+  const numbers = lineNumbers(circuit);
+  const atPort = new Map<string, string[]>();
+  for (const { id, from, to } of circuit.connections) {
+    for (const ref of [from, to]) atPort.set(key(ref), [...(atPort.get(key(ref)) ?? []), id]);
+  }
+  const stage: Stage = {
+    numbers,
+    pieces: freshPieces(circuit, routes, numbers),
+    dots: junctionDots(circuit, routes),
+    spots: labelSpots(circuit, routes, noted),
+    atPort,
+  };
+  stages.set(circuit, { routes, noted, stage });
+  return stage;
+}
+
+function portPens(stage: Stage, part: Part, looks: (id: string) => LineLook): PortPen[] {
+  return portSpecs(part).flatMap((port) => {
+    const [first] = stage.atPort.get(`${part.id}.${port.id}`) ?? [];
+    const pen = first === undefined ? undefined : pathPen(looks(first));
+    return pen ? [{ at: port.at, pen }] : [];
+  });
+}
+
 const isEnclosure = (p: Primitive): boolean => p.type !== 'text' && p.type !== 'group' && p.pen === 'enclosure';
 
-function scenePart(part: Part, look: Look): ScenePart {
+function scenePart(part: Part, look: Look, pens: readonly PortPen[] | undefined): ScenePart {
+  const own = drawn(part, look);
   const placement = placementOf(part);
   return {
     id: part.id,
@@ -103,7 +138,7 @@ function scenePart(part: Part, look: Look): ScenePart {
     placement,
     box: partBox(part),
     ports: placedPorts(part),
-    primitives: placePrimitives(drawn(part, look), placement),
+    primitives: placePrimitives(pens ? showActiveBox(own, pens) : own, placement),
   };
 }
 
@@ -117,56 +152,64 @@ function drawn(part: Part, look: Look): readonly Primitive[] {
   ];
 }
 
-function sceneLines(circuit: Circuit, routes: Routes, looks: (id: string) => LineLook, stubs: ReadonlyMap<string, Point>): SceneLine[] {
-  const numbers = lineNumbers(circuit);
-  const pieces = freshPieces(circuit, routes, numbers);
+function sceneLines(
+  circuit: Circuit, routes: Routes, stage: Stage, looks: (id: string) => LineLook, stubs: ReadonlyMap<string, Point>,
+): SceneLine[] {
+  const kinds = new Map(circuit.parts.map((p) => [p.id, p.kind]));
+  // A valve's port letter stands where a bar would.
+  const barAt = (ref: PortRef): number => (kinds.get(ref.part) === 'directional-valve' ? BAR_AT + 1 : BAR_AT);
   return circuit.connections.map((connection) => {
-    const points = routes.get(connection.id) ?? [];
-    const strokes = (pieces.get(connection.id) ?? []).flatMap((piece) => {
-      const ends: PortEnds = { start: piece.fromPort, end: piece.toPort };
-      const reached = throughStubs(piece.points, connection, piece, stubs);
-      return lineMarks(reached, looks(connection.id), connection.use ?? 'working', ends);
+    const { id, from, to } = connection;
+    const strokes = (stage.pieces.get(id) ?? []).flatMap((piece) => {
+      const start = piece.fromPort ? stubs.get(key(from)) : undefined;
+      const end = piece.toPort ? stubs.get(key(to)) : undefined;
+      const reached = [...(start ? [start] : []), ...piece.points, ...(end ? [end] : [])];
+      const ends: PortEnds = {
+        ...(piece.fromPort && { start: barAt(from) + lengthTo(start, piece.points[0]) }),
+        ...(piece.toPort && { end: barAt(to) + lengthTo(end, piece.points.at(-1)) }),
+      };
+      return lineMarks(reached, looks(id), connection.use ?? 'working', ends);
     });
-    return { connection: connection.id, line: numbers.get(connection.id) ?? -1, points, strokes };
+    return { connection: id, line: stage.numbers.get(id) ?? -1, points: routes.get(id) ?? [], strokes };
   });
 }
 
-const key = (ref: PortRef): string => `${ref.part}.${ref.port}`;
+const lengthTo = (stub: Point | undefined, port: Point | undefined): number =>
+  stub && port ? Math.abs(stub.x - port.x) + Math.abs(stub.y - port.y) : 0;
 
-function throughStubs(
-  points: readonly Point[], connection: Connection, piece: { fromPort: boolean; toPort: boolean }, stubs: ReadonlyMap<string, Point>,
-): Point[] {
-  const start = piece.fromPort ? stubs.get(key(connection.from)) : undefined;
-  const end = piece.toPort ? stubs.get(key(connection.to)) : undefined;
-  return [...(start ? [start] : []), ...points, ...(end ? [end] : [])];
-}
+const key = (ref: PortRef): string => `${ref.part}.${ref.port}`;
 
 /**
  * The short line between a port and the body of a symbol belongs to the line at the port: in a shown
- * state the line takes it over. Port → far end of the stub, on the sheet.
+ * state the line takes it over. One that runs through from port to port is shared half and half.
+ * Port → where its line ends inside the symbol, on the sheet.
  */
 function takeStubs(circuit: Circuit, parts: readonly ScenePart[], looks: (id: string) => LineLook): Map<string, Point> {
-  const byId = new Map(parts.map((p) => [p.id, p]));
+  const shown = new Set<string>();
+  for (const { id, from, to } of circuit.connections) {
+    if (looks(id).class !== 'idle') shown.add(key(from)).add(key(to));
+  }
   const out = new Map<string, Point>();
-  for (const connection of circuit.connections) {
-    if (looks(connection.id).class === 'idle') continue;
-    for (const ref of [connection.from, connection.to]) {
-      const part = byId.get(ref.part);
-      const port = part?.ports.find((p) => p.ref.port === ref.port);
-      if (!part || !port) continue;
-      const stub = part.primitives.find((p) => stubEnd(p, port.at) !== undefined);
+  for (const part of parts) {
+    for (const port of part.ports) {
+      const stub = shown.has(key(port.ref)) ? part.primitives.find((p) => stubEnd(p, port.at)) : undefined;
       const end = stub && stubEnd(stub, port.at);
-      if (end) out.set(key(ref), end);
+      if (!end) continue;
+      const other = part.ports.find((p) => samePoint(p.at, end));
+      if (!other) out.set(key(port.ref), end);
+      else if (shown.has(key(other.ref))) out.set(key(port.ref), { x: (port.at.x + end.x) / 2, y: (port.at.y + end.y) / 2 });
     }
   }
   return out;
 }
 
+const samePoint = (a: Point, b: Point): boolean => a.x === b.x && a.y === b.y;
+
 function stubEnd(p: Primitive, port: Point): Point | undefined {
   if (p.type !== 'polyline' || p.points.length !== 2 || p.pen === 'enclosure') return undefined;
   const [a, b] = p.points as readonly [Point, Point];
-  if (a.x === port.x && a.y === port.y) return b;
-  return b.x === port.x && b.y === port.y ? a : undefined;
+  if (samePoint(a, port)) return b;
+  return samePoint(b, port) ? a : undefined;
 }
 
 function hideStubs(part: ScenePart, stubs: ReadonlyMap<string, Point>): ScenePart {

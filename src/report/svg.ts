@@ -2,7 +2,7 @@ import type { Point } from '../base/points.ts';
 import type { Fill, Pen, Primitive } from '../base/primitives.ts';
 import type { SceneLabel } from '../drawing/labels.ts';
 import type { ColourToken, Theme } from '../drawing/palette.ts';
-import { FONT_FAMILY, PALETTE, PENS } from '../drawing/palette.ts';
+import { FILLS, FONT_FAMILY, PALETTE, PENS } from '../drawing/palette.ts';
 import type { Scene } from '../drawing/scene.ts';
 import type { Stroke } from '../drawing/strokes.ts';
 import { MODULE_PX, pathData } from '../drawing/strokes.ts';
@@ -44,7 +44,7 @@ export function sceneToSvg(scene: Scene, options: SvgOptions): string {
     ...(options.standalone ? [`<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`] : []),
     ...scene.enclosures.map((e) => pen.group('', e.primitives)),
     ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
-    ...scene.dots.map((d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour(d.colour)}"/>`),
+    ...scene.dots.map((d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour('ink')}"/>`),
     ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
     ...scene.labels.map((l) => pen.label(l)),
   ];
@@ -121,16 +121,7 @@ class Writer {
   }
 
   #fill(fill: Fill | undefined): string {
-    switch (fill) {
-      case 'ink':
-      case 'paper':
-        return this.colour(fill);
-      case 'idle':
-        return this.colour(PENS.idle.colour);
-      case 'active':
-        return this.colour(PENS.active.colour);
-      default:
-        return 'none';
-    }
+    const token = FILLS[fill ?? 'none'];
+    return token === 'none' ? token : this.colour(token);
   }
 }
