@@ -71,7 +71,7 @@ function checkLabels(circuit: Circuit): CircuitProblem[] {
       problems.push({ level: 'error', parts: [part.id], where: `parts[${index}].id`, what: `Two parts have the id "${part.id}".`, remedy: 'Give each part its own id.' });
     }
     byId.set(part.id, part);
-    // Joints and tanks are shown without a label, so only what the user wrote can clash.
+    // The id stands in for an absent label, so a label can also clash with another part's id.
     const label = labelOf(part);
     const earlier = byLabel.get(label);
     if (earlier && earlier.id !== part.id) {

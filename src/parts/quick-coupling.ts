@@ -20,7 +20,7 @@ export const quickCoupling: PartKind = {
   input: () => ({ positions: POSITIONS, by: 'coupling', coils: [] }),
   draw: (_part, look) => {
     const apart = look.position === 1;
-    const gap = apart ? 0.6 : 0;
+    const gap = apart ? 0.6 : 0.2;
     return [
       stroke('symbol', [0, 3], [0, apart ? 1.7 + gap : -3]),
       ...(apart ? [stroke('symbol', [0, -3], [0, -1.7 - gap])] : []),

@@ -86,7 +86,7 @@ export function throttleArcs(pen: Pen, centre: Pair, direction: Pair, size = 1):
       to: { x: cx + nx * off + ux * half, y: cy + ny * off + uy * half },
       radius: 1.6 * size,
       // Bulges towards the line.
-      clockwise: sign === -1,
+      clockwise: sign === 1,
       pen,
     };
   };

@@ -72,7 +72,7 @@ function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): 
     case 'coil':
       return [
         box(0, -1, 3, 2),
-        stroke('fine', p(1, 1), p(2, -1)),
+        stroke('fine', p(2, 1), p(1, -1)),
         ...(name === '' ? [] : [text(name, p(1.5, -1.5), 1.1)]),
       ];
     case 'spring':
