@@ -16,11 +16,13 @@ class View {
   sheetShare = $state(recall('sheetShare', 0.56));
   /** Height of the bench in px; 0 = as tall as its slots need. */
   benchHeight = $state(recall('benchHeight', 0));
+  /** Upper and lower edge of the sheet in the window, px: panels find their first place there. */
+  sheetArea = $state.raw({ top: 40, bottom: 500 });
   /** Which page a small screen shows above the bench. */
   page = $state<Page>('sheet');
   panels = $state<Record<PanelId, boolean>>({
     why: false,
-    legend: recall('legendOpen', true),
+    legend: recall('legendOpen', window.innerWidth >= 900),
     findings: false,
     settings: false,
     keys: false,

@@ -27,12 +27,10 @@ export interface ColumnGroup {
 
 const CHARACTER = 6.9;
 const PADDING = 16;
-/** Room for the sort arrow and the filter mark in a head. */
-const MARKS = 34;
 const GLYPH = 23;
 
 const fits = (texts: readonly string[], extra: number, head: string): number =>
-  Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * CHARACTER * 0.95 + MARKS) + PADDING);
+  Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * CHARACTER * 0.95) + PADDING);
 
 function fixed(column: Omit<Column, 'track'>): Column {
   return { ...column, track: `${column.width}px` };
@@ -66,7 +64,7 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
       of: 'actuator',
       index,
       title: actuator.label,
-      width: fits(words.length > 0 ? words : ['held'], GLYPH + 26, actuator.label),
+      width: fits(words.length > 0 ? words : ['held'], GLYPH, actuator.label),
     });
   });
   const pumps = data.pumps.map((pump, index) => {
@@ -76,7 +74,7 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
       of: 'pump',
       index,
       title: pump.label,
-      width: fits(words.length > 0 ? words : ['working'], GLYPH + 26, pump.label),
+      width: fits(words.length > 0 ? words : ['working'], GLYPH, pump.label),
     });
   });
   const groups: ColumnGroup[] = [
@@ -84,9 +82,9 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
     { title: 'Levers', columns: levers },
     { title: 'Actuators', columns: actuators },
     { title: 'Pumps', columns: pumps },
-    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 236, 1.3)] },
-    { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 236, 1.5)] },
-    { title: 'Danger, notes', columns: [wide('notes', '', 190, 1)] },
+    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 196, 1.3)] },
+    { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 216, 1.5)] },
+    { title: 'Danger, notes', columns: [wide('notes', '', 150, 1)] },
   ];
   return groups.filter((group) => group.columns.length > 0);
 }

@@ -127,7 +127,7 @@ export function* orderRows(
     if (has(keep, row)) shown[size++] = row;
     if (row % BLOCK === BLOCK - 1) yield;
   }
-  let rows = shown.slice(0, size);
+  let rows: Uint32Array = shown.slice(0, size);
   if (sort?.column.of === 'row') {
     if (sort.falling) rows.reverse();
   } else if (sort) {

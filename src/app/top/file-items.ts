@@ -1,7 +1,7 @@
 import { EXAMPLES } from '../files/examples.ts';
 import { newCircuit, openFromDisk, openText } from '../files/open.ts';
 import { save, saveAs } from '../files/save.ts';
-import type { MenuItem } from '../ui/Menu.svelte';
+import type { MenuItem } from '../ui/menu-item.ts';
 
 export const fileItems = (): MenuItem[] => [
   { text: 'New', hint: 'An empty sheet', run: newCircuit },
