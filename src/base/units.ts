@@ -2,8 +2,20 @@ import { bad, good, type Result } from './result.ts';
 
 /** Physical quantities the program knows. Inside everything is SI. */
 export type Quantity =
-  | 'pressure' | 'flow' | 'length' | 'speed' | 'force' | 'torque' | 'power'
-  | 'displacement' | 'volume' | 'area' | 'time' | 'temperature' | 'frequency' | 'ratio';
+  | 'pressure'
+  | 'flow'
+  | 'length'
+  | 'speed'
+  | 'force'
+  | 'torque'
+  | 'power'
+  | 'displacement'
+  | 'volume'
+  | 'area'
+  | 'time'
+  | 'temperature'
+  | 'frequency'
+  | 'ratio';
 
 export type UnitSystem = 'metric' | 'us';
 
@@ -129,12 +141,36 @@ const UNITS: Readonly<Record<Quantity, readonly Unit[]>> = {
 
 const DEFAULTS: Readonly<Record<UnitSystem, Readonly<Record<Quantity, string>>>> = {
   metric: {
-    pressure: 'bar', flow: 'L/min', length: 'mm', speed: 'mm/s', force: 'kN', torque: 'N·m', power: 'kW',
-    displacement: 'cm³/rev', volume: 'L', area: 'cm²', time: 's', temperature: '°C', frequency: 'rpm', ratio: '',
+    pressure: 'bar',
+    flow: 'L/min',
+    length: 'mm',
+    speed: 'mm/s',
+    force: 'kN',
+    torque: 'N·m',
+    power: 'kW',
+    displacement: 'cm³/rev',
+    volume: 'L',
+    area: 'cm²',
+    time: 's',
+    temperature: '°C',
+    frequency: 'rpm',
+    ratio: '',
   },
   us: {
-    pressure: 'psi', flow: 'gpm', length: 'in', speed: 'in/s', force: 'lbf', torque: 'lbf·ft', power: 'hp',
-    displacement: 'in³/rev', volume: 'gal', area: 'in²', time: 's', temperature: '°F', frequency: 'rpm', ratio: '',
+    pressure: 'psi',
+    flow: 'gpm',
+    length: 'in',
+    speed: 'in/s',
+    force: 'lbf',
+    torque: 'lbf·ft',
+    power: 'hp',
+    displacement: 'in³/rev',
+    volume: 'gal',
+    area: 'in²',
+    time: 's',
+    temperature: '°F',
+    frequency: 'rpm',
+    ratio: '',
   },
 };
 
@@ -147,7 +183,11 @@ export const defaultUnit = (quantity: Quantity, system: UnitSystem): string => D
 
 /** `cm³/rev`, `cm3 / rev` → `cm3/rev`; `N·m`, `N m`, `N*m` → `Nm`. */
 const normalise = (text: string): string =>
-  text.normalize('NFKC').replace(/\u2044/g, '/').replace(/[\s·⋅•*^.]/g, '').replace(/(?<=\p{L})-(?=\p{L})/gu, '');
+  text
+    .normalize('NFKC')
+    .replace(/\u2044/g, '/')
+    .replace(/[\s·⋅•*^.]/g, '')
+    .replace(/(?<=\p{L})-(?=\p{L})/gu, '');
 
 function findUnit(text: string, quantity: Quantity): Unit | undefined {
   const wanted = normalise(text);
@@ -185,7 +225,12 @@ const article = (word: string): string => (/^[aeiou]/.test(word) ? `an ${word}` 
 export function parseQuantity(text: string, quantity: Quantity, where = 'value'): Result<number> {
   const example = quantity === 'ratio' ? '3' : `30 ${DEFAULTS.metric[quantity]}`;
   const remedy = `Type a number and a unit, such as "${example}".`;
-  const clean = text.normalize('NFKC').replace(/\u2044/g, '/').replace(/\u2212/g, '-').replace(/\s+/g, ' ').trim();
+  const clean = text
+    .normalize('NFKC')
+    .replace(/\u2044/g, '/')
+    .replace(/\u2212/g, '-')
+    .replace(/\s+/g, ' ')
+    .trim();
   if (clean === '') return bad({ where, what: `A ${quantity} is missing.`, remedy });
   if (/\d,|,\d/.test(clean)) {
     return bad({
@@ -204,12 +249,15 @@ export function parseQuantity(text: string, quantity: Quantity, where = 'value')
     if (!Number.isFinite(si)) return bad({ where, what: `"${text}" is out of all bounds.`, remedy });
     return good(si);
   }
-  if (rest === '') return bad({ where, what: `"${text}" has no unit.`, remedy: `Add one: ${unitsOf(quantity).join(', ')}.` });
+  if (rest === '')
+    return bad({ where, what: `"${text}" has no unit.`, remedy: `Add one: ${unitsOf(quantity).join(', ')}.` });
   const other = QUANTITIES.find((candidate) => candidate !== quantity && findUnit(rest, candidate));
   const what = other
     ? `"${text}" is ${article(other)}, where ${article(quantity)} is wanted.`
     : `"${rest}" is not a unit of ${quantity}.`;
-  const known = unitsOf(quantity).filter((symbol) => symbol !== '').join(', ');
+  const known = unitsOf(quantity)
+    .filter((symbol) => symbol !== '')
+    .join(', ');
   return bad({ where, what, remedy: `Use one of ${known}${quantity === 'ratio' ? ' or no unit' : ''}.` });
 }
 
@@ -249,7 +297,12 @@ export interface FormatOptions {
 }
 
 /** SI → `"200 bar"`, readable again by `parseQuantity`. */
-export function formatQuantity(si: number, quantity: Quantity, system: UnitSystem, options: FormatOptions = {}): string {
+export function formatQuantity(
+  si: number,
+  quantity: Quantity,
+  system: UnitSystem,
+  options: FormatOptions = {},
+): string {
   const symbol = options.unit ?? DEFAULTS[system][quantity];
   const number = formatNumber(toUnit(si, quantity, symbol), options.digits);
   return symbol === '' ? number : `${number} ${symbol}`;

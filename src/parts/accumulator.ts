@@ -2,9 +2,27 @@ import type { PartKind } from './contract.ts';
 import { choiceSetting, quantitySetting, readChoice, readSi } from './settings.ts';
 import { boxOf, leftOpen, port, shape, stroke } from './shapes.ts';
 
-const CHARGE = choiceSetting({ id: 'charge', title: 'State of charge', help: 'Charged: it holds oil under pressure and feeds its line also when the pumps stand.' }, ['charged', 'empty'], 'charged');
-const VOLUME = quantitySetting({ id: 'volume', title: 'Gas volume', help: 'Volume of the gas when no oil is in it.' }, 'volume', '4 L', { min: '0.01 L', max: '10000 L' });
-const PRECHARGE = quantitySetting({ id: 'precharge', title: 'Gas pre-charge', help: 'Gas pressure when no oil is in it.' }, 'pressure', '90 bar', { min: '0 bar', max: '1000 bar' });
+const CHARGE = choiceSetting(
+  {
+    id: 'charge',
+    title: 'State of charge',
+    help: 'Charged: it holds oil under pressure and feeds its line also when the pumps stand.',
+  },
+  ['charged', 'empty'],
+  'charged',
+);
+const VOLUME = quantitySetting(
+  { id: 'volume', title: 'Gas volume', help: 'Volume of the gas when no oil is in it.' },
+  'volume',
+  '4 L',
+  { min: '0.01 L', max: '10000 L' },
+);
+const PRECHARGE = quantitySetting(
+  { id: 'precharge', title: 'Gas pre-charge', help: 'Gas pressure when no oil is in it.' },
+  'pressure',
+  '90 bar',
+  { min: '0 bar', max: '1000 bar' },
+);
 
 export const accumulator: PartKind = {
   kind: 'accumulator',
@@ -15,10 +33,28 @@ export const accumulator: PartKind = {
   prefix: 'ACC',
   settings: [CHARGE, VOLUME, PRECHARGE],
   readyMade: [{ id: 'accumulator', title: 'Accumulator, gas loaded', make: () => ({}) }],
-  ports: () => [port('A', [0, 5], 'down', 'working', leftOpen(
-    'caution', 'The accumulator has no line; A counts as plugged and what is stored in it stays there.', 'Connect A, with a way to vent it.',
-  ))],
-  elements: (part) => [{ type: 'accumulator', port: 'A', charged: readChoice(part, CHARGE) === 'charged', volume: readSi(part, VOLUME), precharge: readSi(part, PRECHARGE) }],
+  ports: () => [
+    port(
+      'A',
+      [0, 5],
+      'down',
+      'working',
+      leftOpen(
+        'caution',
+        'The accumulator has no line; A counts as plugged and what is stored in it stays there.',
+        'Connect A, with a way to vent it.',
+      ),
+    ),
+  ],
+  elements: (part) => [
+    {
+      type: 'accumulator',
+      port: 'A',
+      charged: readChoice(part, CHARGE) === 'charged',
+      volume: readSi(part, VOLUME),
+      precharge: readSi(part, PRECHARGE),
+    },
+  ],
   draw: () => [
     stroke('symbol', [0, 4], [0, 5]),
     { type: 'box', x: -2, y: -4, width: 4, height: 8, pen: 'symbol', fill: 'paper', corner: 2 },

@@ -23,13 +23,27 @@ import { throttle } from './throttle.ts';
 
 /** All part kinds, in the order of the tray. */
 export const CATALOGUE: readonly PartKind[] = [
-  fixedPump, compensatedPump, tank, filter,
-  cylinder, doubleRodCylinder, singleActingCylinder, motor,
-  directionalValve, shutOffValve,
+  fixedPump,
+  compensatedPump,
+  tank,
+  filter,
+  cylinder,
+  doubleRodCylinder,
+  singleActingCylinder,
+  motor,
+  directionalValve,
+  shutOffValve,
   reliefValve,
-  checkValve, lockCheck, doubleLockCheck, throttle, oneWayThrottle,
+  checkValve,
+  lockCheck,
+  doubleLockCheck,
+  throttle,
+  oneWayThrottle,
   accumulator,
-  gauge, quickCoupling, plug, junction,
+  gauge,
+  quickCoupling,
+  plug,
+  junction,
 ];
 
 const BY_KIND: ReadonlyMap<string, PartKind> = new Map(CATALOGUE.map((kind) => [kind.kind, kind]));
@@ -41,24 +55,36 @@ export interface CatalogueEntry {
   readonly readyMade: ReadyMade;
 }
 
-export const ENTRIES: readonly CatalogueEntry[] = CATALOGUE.flatMap((kind) => kind.readyMade.map((readyMade) => ({ kind, readyMade })));
+export const ENTRIES: readonly CatalogueEntry[] = CATALOGUE.flatMap((kind) =>
+  kind.readyMade.map((readyMade) => ({ kind, readyMade })),
+);
 
-export const readyMadeOf = (id: string): CatalogueEntry | undefined => ENTRIES.find((entry) => entry.readyMade.id === id);
+export const readyMadeOf = (id: string): CatalogueEntry | undefined =>
+  ENTRIES.find((entry) => entry.readyMade.id === id);
 
 /** Lower case, dashes of all kinds and punctuation as blanks, accents dropped. */
 const plain = (text: string): string =>
-  text.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase().replace(/[^\p{L}\p{N}/]+/gu, ' ').trim();
+  text
+    .normalize('NFKD')
+    .replace(/\p{M}/gu, '')
+    .toLowerCase()
+    .replace(/[^\p{L}\p{N}/]+/gu, ' ')
+    .trim();
 
 /**
  * Ready-made parts whose title or trade words hold every word looked for, best first: whole words
  * of the title, then beginnings, then the rest; equal ones in the order of the tray. An empty search gives all.
  */
 export function searchCatalogue(query: string): readonly CatalogueEntry[] {
-  const wanted = plain(query).split(' ').filter((word) => word !== '');
+  const wanted = plain(query)
+    .split(' ')
+    .filter((word) => word !== '');
   if (wanted.length === 0) return ENTRIES;
   const score = ({ kind, readyMade }: CatalogueEntry): number => {
     const title = plain(readyMade.title).split(' ');
-    const others = plain([kind.title, kind.kind, kind.group, ...kind.words, ...(readyMade.words ?? [])].join(' ')).split(' ');
+    const others = plain(
+      [kind.title, kind.kind, kind.group, ...kind.words, ...(readyMade.words ?? [])].join(' '),
+    ).split(' ');
     let total = 0;
     for (const word of wanted) {
       if (title.includes(word)) total += 4;

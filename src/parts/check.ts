@@ -28,7 +28,9 @@ function editDistance(a: string, b: string): number {
 /** Known kinds nearest to a name, at most three, none that has little to do with it. */
 export function nearestKinds(name: string): string[] {
   const wanted = name.toLowerCase();
-  const shared = (kind: string): boolean => wanted !== '' && (kind.includes(wanted) || wanted.split(/[^a-z]+/).some((word) => word.length > 3 && kind.includes(word)));
+  const shared = (kind: string): boolean =>
+    wanted !== '' &&
+    (kind.includes(wanted) || wanted.split(/[^a-z]+/).some((word) => word.length > 3 && kind.includes(word)));
   return CATALOGUE.map(({ kind }) => ({ kind, distance: editDistance(wanted, kind) - (shared(kind) ? 4 : 0) }))
     .filter(({ kind, distance }) => distance <= Math.max(2, kind.length / 2))
     .sort((a, b) => a.distance - b.distance || a.kind.localeCompare(b.kind))
@@ -39,19 +41,31 @@ export function nearestKinds(name: string): string[] {
 function checkKind(part: Part, index: number): CircuitProblem[] {
   const near = nearestKinds(part.kind);
   const choice = near.length > 0 ? near : CATALOGUE.map((kind) => kind.kind);
-  return [{
-    level: 'error', parts: [part.id], where: `parts[${index}].kind`,
-    what: `${labelOf(part)}: there is no kind of part "${part.kind}".`,
-    remedy: near.length > 0 ? `Did you mean ${choice.join(' or ')}?` : `Use one of ${choice.join(', ')}.`,
-  }];
+  return [
+    {
+      level: 'error',
+      parts: [part.id],
+      where: `parts[${index}].kind`,
+      what: `${labelOf(part)}: there is no kind of part "${part.kind}".`,
+      remedy: near.length > 0 ? `Did you mean ${choice.join(' or ')}?` : `Use one of ${choice.join(', ')}.`,
+    },
+  ];
 }
 
 function checkPart(part: Part, index: number): CircuitProblem[] {
   const kind = kindOf(part.kind);
   if (!kind) return checkKind(part, index);
-  const stray: PartProblem[] = part.valve && kind.kind !== 'directional-valve'
-    ? [{ level: 'warning', where: 'valve', what: `A ${kind.title.toLowerCase()} has no valve data; they do nothing here.`, remedy: 'Delete them, or use a directional valve.' }]
-    : [];
+  const stray: PartProblem[] =
+    part.valve && kind.kind !== 'directional-valve'
+      ? [
+          {
+            level: 'warning',
+            where: 'valve',
+            what: `A ${kind.title.toLowerCase()} has no valve data; they do nothing here.`,
+            remedy: 'Delete them, or use a directional valve.',
+          },
+        ]
+      : [];
   return [...checkSettings(part, kind.settings), ...stray, ...(kind.check?.(part) ?? [])].map((problem) => ({
     level: problem.level ?? 'error',
     parts: [part.id],
@@ -68,7 +82,13 @@ function checkLabels(circuit: Circuit): CircuitProblem[] {
   circuit.parts.forEach((part, index) => {
     const twin = byId.get(part.id);
     if (twin) {
-      problems.push({ level: 'error', parts: [part.id], where: `parts[${index}].id`, what: `Two parts have the id "${part.id}".`, remedy: 'Give each part its own id.' });
+      problems.push({
+        level: 'error',
+        parts: [part.id],
+        where: `parts[${index}].id`,
+        what: `Two parts have the id "${part.id}".`,
+        remedy: 'Give each part its own id.',
+      });
     }
     byId.set(part.id, part);
     // The id stands in for an absent label, so a label can also clash with another part's id.
@@ -76,8 +96,11 @@ function checkLabels(circuit: Circuit): CircuitProblem[] {
     const earlier = byLabel.get(label);
     if (earlier && earlier.id !== part.id) {
       problems.push({
-        level: 'error', parts: [earlier.id, part.id], where: `parts[${index}].label`,
-        what: `Two parts are called "${label}" (${earlier.id} and ${part.id}).`, remedy: 'Give each part its own label.',
+        level: 'error',
+        parts: [earlier.id, part.id],
+        where: `parts[${index}].label`,
+        what: `Two parts are called "${label}" (${earlier.id} and ${part.id}).`,
+        remedy: 'Give each part its own label.',
       });
     }
     if (!earlier) byLabel.set(label, part);
@@ -92,16 +115,29 @@ function checkConnections(circuit: Circuit): CircuitProblem[] {
   const checkEnd = (ref: PortRef, where: string): CircuitProblem[] => {
     const found = parts.get(ref.part);
     if (!found) {
-      return [{ level: 'error', parts: [], where, what: `The connection ends at ${sayPort(ref)}, but there is no part "${ref.part}".`, remedy: 'Connect it to a part of the circuit, or delete it.' }];
+      return [
+        {
+          level: 'error',
+          parts: [],
+          where,
+          what: `The connection ends at ${sayPort(ref)}, but there is no part "${ref.part}".`,
+          remedy: 'Connect it to a part of the circuit, or delete it.',
+        },
+      ];
     }
     // An unknown kind is reported once, at the part.
     if (!found.kind) return [];
     const ports = found.kind.ports(found.part).map((port) => port.id);
     if (ports.includes(ref.port)) return [];
-    return [{
-      level: 'error', parts: [ref.part], where,
-      what: `${labelOf(found.part)} has no port ${ref.port}, where a connection ends.`, remedy: `Its ports are ${ports.join(', ')}.`,
-    }];
+    return [
+      {
+        level: 'error',
+        parts: [ref.part],
+        where,
+        what: `${labelOf(found.part)} has no port ${ref.port}, where a connection ends.`,
+        remedy: `Its ports are ${ports.join(', ')}.`,
+      },
+    ];
   };
 
   const ids = new Set<string>();
@@ -111,15 +147,33 @@ function checkConnections(circuit: Circuit): CircuitProblem[] {
     const { from, to } = connection;
     const problems = [...checkEnd(from, `${where}.from`), ...checkEnd(to, `${where}.to`)];
     if (from.part === to.part && from.port === to.port) {
-      problems.push({ level: 'error', parts: [from.part], where, what: `The connection leads from ${sayPort(from)} to itself.`, remedy: 'Lead it to another port, or delete it.' });
+      problems.push({
+        level: 'error',
+        parts: [from.part],
+        where,
+        what: `The connection leads from ${sayPort(from)} to itself.`,
+        remedy: 'Lead it to another port, or delete it.',
+      });
     }
     if (ids.has(connection.id)) {
-      problems.push({ level: 'error', parts: [], where: `${where}.id`, what: `Two connections have the id "${connection.id}".`, remedy: 'Give each connection its own id.' });
+      problems.push({
+        level: 'error',
+        parts: [],
+        where: `${where}.id`,
+        what: `Two connections have the id "${connection.id}".`,
+        remedy: 'Give each connection its own id.',
+      });
     }
     ids.add(connection.id);
     const ends = [sayPort(from), sayPort(to)].sort().join(' ');
     if (drawn.has(ends)) {
-      problems.push({ level: 'warning', parts: [from.part, to.part], where, what: `${sayPort(from)} and ${sayPort(to)} are connected twice.`, remedy: 'Delete one of the two.' });
+      problems.push({
+        level: 'warning',
+        parts: [from.part, to.part],
+        where,
+        what: `${sayPort(from)} and ${sayPort(to)} are connected twice.`,
+        remedy: 'Delete one of the two.',
+      });
     }
     drawn.add(ends);
     return problems;

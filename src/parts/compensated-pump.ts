@@ -5,7 +5,9 @@ import { arrow } from './shapes.ts';
 
 const SETTING = quantitySetting(
   { id: 'setting', title: 'Compensator setting', help: 'Pressure at which the pump strokes back to next to no flow.' },
-  'pressure', '200 bar', { min: '1 bar', max: '1000 bar' },
+  'pressure',
+  '200 bar',
+  { min: '1 bar', max: '1000 bar' },
 );
 
 export const compensatedPump: PartKind = {
@@ -20,10 +22,19 @@ export const compensatedPump: PartKind = {
   ports: () => PUMP_PORTS,
   elements: (part) => [
     {
-      type: 'pump', outlet: 'P', suction: 'S', form: 'compensated',
-      flow: readSi(part, PUMP_FLOW), setting: readSi(part, SETTING), tightWhenStopped: readSwitch(part, TIGHT_WHEN_STOPPED),
+      type: 'pump',
+      outlet: 'P',
+      suction: 'S',
+      form: 'compensated',
+      flow: readSi(part, PUMP_FLOW),
+      setting: readSi(part, SETTING),
+      tightWhenStopped: readSwitch(part, TIGHT_WHEN_STOPPED),
     },
   ],
-  draw: () => [...pumpBody(), ...arrow('symbol', [-3.2, 3.2], [3.6, -3.6]), ...arrow('fine', [1.7, 1.6], [1.7, -0.4], 0.8, 0.6)],
+  draw: () => [
+    ...pumpBody(),
+    ...arrow('symbol', [-3.2, 3.2], [3.6, -3.6]),
+    ...arrow('fine', [1.7, 1.6], [1.7, -0.4], 0.8, 0.6),
+  ],
   bounds: () => PUMP_BOUNDS,
 };

@@ -1,5 +1,17 @@
 import type { PartKind } from './contract.ts';
-import { barrel, boreSetting, capPort, checkBoreAndRod, CYLINDER_BOUNDS, piston, readAreas, rodPort, rodSetting, strokeSetting, travelOf } from './cylinder-body.ts';
+import {
+  barrel,
+  boreSetting,
+  capPort,
+  checkBoreAndRod,
+  CYLINDER_BOUNDS,
+  piston,
+  readAreas,
+  rodPort,
+  rodSetting,
+  strokeSetting,
+  travelOf,
+} from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
 import { readSi } from './settings.ts';
 
@@ -18,12 +30,28 @@ export const cylinder: PartKind = {
   settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all],
   readyMade: [
     { id: 'cylinder', title: 'Cylinder', make: () => ({}) },
-    { id: 'cylinder-lifting', title: 'Cylinder lifting a load', words: ['vertical', 'hoist', 'gravity', 'weight'], make: () => ({ settings: { bore: '63 mm', rod: '45 mm', load: '20 kN', loadSense: 'pushes in' } }) },
+    {
+      id: 'cylinder-lifting',
+      title: 'Cylinder lifting a load',
+      words: ['vertical', 'hoist', 'gravity', 'weight'],
+      make: () => ({ settings: { bore: '63 mm', rod: '45 mm', load: '20 kN', loadSense: 'pushes in' } }),
+    },
   ],
   ports: () => PORTS,
   elements: (part) => {
     const areas = readAreas(part, BORE, ROD);
-    return [{ type: 'actuator', a: 'A', b: 'B', motion: 'linear', areaA: areas.piston, areaB: areas.annulus, stroke: readSi(part, STROKE), ...readLoad(part, CYLINDER_LOAD) }];
+    return [
+      {
+        type: 'actuator',
+        a: 'A',
+        b: 'B',
+        motion: 'linear',
+        areaA: areas.piston,
+        areaB: areas.annulus,
+        stroke: readSi(part, STROKE),
+        ...readLoad(part, CYLINDER_LOAD),
+      },
+    ];
   },
   draw: (_part, look) => [...barrel(PORTS), piston(travelOf(look), -4, ['right'])],
   bounds: () => CYLINDER_BOUNDS,

@@ -14,7 +14,11 @@ export const valveOf = (part: Part): ValveData => part.valve ?? FALLBACK;
 
 /** What a person or a controller moves it by; coils before hands. */
 const COMMANDS: readonly (readonly [Operator, InputSpec['by']])[] = [
-  ['coil', 'coil'], ['lever', 'lever'], ['pedal', 'pedal'], ['button', 'button'], ['hand', 'hand'],
+  ['coil', 'coil'],
+  ['lever', 'lever'],
+  ['pedal', 'pedal'],
+  ['button', 'button'],
+  ['hand', 'hand'],
 ];
 
 function inputOf(part: Part): InputSpec {
@@ -40,8 +44,15 @@ export const directionalValve: PartKind = {
   draw: (part, look) => drawValve(valveOf(part), look.position),
   bounds: (part) => valveBounds(valveOf(part)),
   reach: (part) => valveReach(valveOf(part)),
-  check: (part) => (part.valve ? checkValve(part.valve) : [{
-    level: 'warning', where: 'valve', what: 'The valve has no data of its own; it is taken as a 4/3 lever valve with all ports shut.',
-    remedy: 'Give its ports, positions and operators.',
-  }]),
+  check: (part) =>
+    part.valve
+      ? checkValve(part.valve)
+      : [
+          {
+            level: 'warning',
+            where: 'valve',
+            what: 'The valve has no data of its own; it is taken as a 4/3 lever valve with all ports shut.',
+            remedy: 'Give its ports, positions and operators.',
+          },
+        ],
 };

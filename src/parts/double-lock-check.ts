@@ -2,8 +2,16 @@ import type { PartKind, PortSpec } from './contract.ts';
 import { LOCK_SETTINGS, lockPaths } from './lock-settings.ts';
 import { boxOf, checkSeat, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
 
-const valveSide = leftOpen('caution', 'A valve side has no line; it counts as plugged and cannot open the other check.', 'Connect V1 and V2 to the directional valve.');
-const cylinderSide = leftOpen('caution', 'A cylinder side has no line, so its check holds nothing.', 'Connect C1 and C2 to the actuator.');
+const valveSide = leftOpen(
+  'caution',
+  'A valve side has no line; it counts as plugged and cannot open the other check.',
+  'Connect V1 and V2 to the directional valve.',
+);
+const cylinderSide = leftOpen(
+  'caution',
+  'A cylinder side has no line, so its check holds nothing.',
+  'Connect C1 and C2 to the actuator.',
+);
 const PORTS: readonly PortSpec[] = [
   port('V1', [-5, 6], 'down', 'working', valveSide),
   port('C1', [-5, -6], 'up', 'working', cylinderSide),

@@ -1,5 +1,14 @@
 import type { PartKind } from './contract.ts';
-import { barrel, boreSetting, checkBoreAndRod, piston, readAreas, rodSetting, strokeSetting, travelOf } from './cylinder-body.ts';
+import {
+  barrel,
+  boreSetting,
+  checkBoreAndRod,
+  piston,
+  readAreas,
+  rodSetting,
+  strokeSetting,
+  travelOf,
+} from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
 import { readSi } from './settings.ts';
 import { boxOf, leftOpen, port } from './shapes.ts';
@@ -7,7 +16,11 @@ import { boxOf, leftOpen, port } from './shapes.ts';
 const BORE = boreSetting('50 mm');
 const ROD = rodSetting('28 mm');
 const STROKE = strokeSetting('400 mm');
-const OPEN = leftOpen('caution', 'One side of the piston has no line; it counts as plugged, so the cylinder is locked by its own oil.', 'Connect both sides, or plug one on purpose.');
+const OPEN = leftOpen(
+  'caution',
+  'One side of the piston has no line; it counts as plugged, so the cylinder is locked by its own oil.',
+  'Connect both sides, or plug one on purpose.',
+);
 const PORTS = [port('A', [-5, 3], 'down', 'working', OPEN), port('B', [5, 3], 'down', 'working', OPEN)];
 
 export const doubleRodCylinder: PartKind = {
@@ -22,7 +35,18 @@ export const doubleRodCylinder: PartKind = {
   ports: () => PORTS,
   elements: (part) => {
     const { annulus } = readAreas(part, BORE, ROD);
-    return [{ type: 'actuator', a: 'A', b: 'B', motion: 'linear', areaA: annulus, areaB: annulus, stroke: readSi(part, STROKE), ...readLoad(part, CYLINDER_LOAD) }];
+    return [
+      {
+        type: 'actuator',
+        a: 'A',
+        b: 'B',
+        motion: 'linear',
+        areaA: annulus,
+        areaB: annulus,
+        stroke: readSi(part, STROKE),
+        ...readLoad(part, CYLINDER_LOAD),
+      },
+    ];
   },
   draw: (_part, look) => [...barrel(PORTS), piston(travelOf(look), -3.5, ['left', 'right'])],
   bounds: () => boxOf(-13, -2, 26, 5),

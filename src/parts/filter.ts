@@ -3,11 +3,22 @@ import { lossSettings, readLoss } from './losses.ts';
 import { readSwitch, switchSetting } from './settings.ts';
 import { boxOf, checkSeat, dot, leftOpen, port, shape, stroke } from './shapes.ts';
 
-const BYPASS = switchSetting({ id: 'bypass', title: 'Bypass check', help: 'On: a check beside the element opens from A to B when the element is clogged.' }, false);
+const BYPASS = switchSetting(
+  {
+    id: 'bypass',
+    title: 'Bypass check',
+    help: 'On: a check beside the element opens from A to B when the element is clogged.',
+  },
+  false,
+);
 const LOSS = lossSettings('60 L/min', '1 bar');
 /** Common practice: a bypass opens at about 3 bar across the element. */
 const BYPASS_CRACKING = 3e5;
-const OPEN = leftOpen('note', 'One port of the filter has no line; it counts as plugged, so nothing passes.', 'Connect both ports.');
+const OPEN = leftOpen(
+  'note',
+  'One port of the filter has no line; it counts as plugged, so nothing passes.',
+  'Connect both ports.',
+);
 
 export const filter: PartKind = {
   kind: 'filter',
@@ -25,7 +36,17 @@ export const filter: PartKind = {
   elements: (part) => [
     { type: 'path', from: 'A', to: 'B', way: 'both', throttled: false, rated: readLoss(part, LOSS) },
     ...(readSwitch(part, BYPASS)
-      ? [{ type: 'path', from: 'A', to: 'B', way: 'one-way', throttled: false, cracking: BYPASS_CRACKING, rated: readLoss(part, LOSS) } as const]
+      ? [
+          {
+            type: 'path',
+            from: 'A',
+            to: 'B',
+            way: 'one-way',
+            throttled: false,
+            cracking: BYPASS_CRACKING,
+            rated: readLoss(part, LOSS),
+          } as const,
+        ]
       : []),
   ],
   draw: (part) => [

@@ -13,7 +13,14 @@ export const fixedPump: PartKind = {
   readyMade: [{ id: 'fixed-pump', title: 'Fixed pump', make: () => ({}) }],
   ports: () => PUMP_PORTS,
   elements: (part) => [
-    { type: 'pump', outlet: 'P', suction: 'S', form: 'fixed', flow: readSi(part, PUMP_FLOW), tightWhenStopped: readSwitch(part, TIGHT_WHEN_STOPPED) },
+    {
+      type: 'pump',
+      outlet: 'P',
+      suction: 'S',
+      form: 'fixed',
+      flow: readSi(part, PUMP_FLOW),
+      tightWhenStopped: readSwitch(part, TIGHT_WHEN_STOPPED),
+    },
   ],
   draw: () => pumpBody(),
   bounds: () => PUMP_BOUNDS,

@@ -10,8 +10,20 @@ export const gauge: PartKind = {
   prefix: 'PG',
   settings: [],
   readyMade: [{ id: 'gauge', title: 'Pressure gauge', make: () => ({}) }],
-  ports: () => [port('M', [0, 3], 'down', 'measure', leftOpen('note', 'The gauge measures nothing.', 'Connect M to a line, or delete it.'))],
+  ports: () => [
+    port(
+      'M',
+      [0, 3],
+      'down',
+      'measure',
+      leftOpen('note', 'The gauge measures nothing.', 'Connect M to a line, or delete it.'),
+    ),
+  ],
   elements: () => [],
-  draw: () => [stroke('symbol', [0, 3], [0, 2]), circle('symbol', [0, 0], 2, 'paper'), ...arrow('fine', [-0.75, 1.1], [0.8, -1.15], 0.9, 0.65)],
+  draw: () => [
+    stroke('symbol', [0, 3], [0, 2]),
+    circle('symbol', [0, 0], 2, 'paper'),
+    ...arrow('fine', [-0.75, 1.1], [0.8, -1.15], 0.9, 0.65),
+  ],
   bounds: () => boxOf(-2, -2, 4, 5),
 };

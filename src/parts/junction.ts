@@ -10,7 +10,15 @@ export const junction: PartKind = {
   prefix: 'J',
   settings: [],
   readyMade: [{ id: 'junction', title: 'Junction', make: () => ({}) }],
-  ports: () => [port('J', [0, 0], 'up', 'joint', leftOpen('note', 'The junction joins nothing.', 'Connect lines to it, or delete it.'))],
+  ports: () => [
+    port(
+      'J',
+      [0, 0],
+      'up',
+      'joint',
+      leftOpen('note', 'The junction joins nothing.', 'Connect lines to it, or delete it.'),
+    ),
+  ],
   elements: () => [],
   draw: () => [dot('symbol', [0, 0])],
   bounds: () => boxOf(-1, -1, 2, 2),

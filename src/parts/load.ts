@@ -13,30 +13,58 @@ export interface LoadSpecs {
 const SENSE_HELP = 'A resisting load only acts against motion; the others press at rest too, as gravity does.';
 
 function specs(size: QuantitySpec, senses: readonly string[], friction: QuantitySpec): LoadSpecs {
-  const sense = choiceSetting({ id: 'loadSense', title: 'Load acts', help: SENSE_HELP }, ['none', 'resisting', ...senses], 'none');
+  const sense = choiceSetting(
+    { id: 'loadSense', title: 'Load acts', help: SENSE_HELP },
+    ['none', 'resisting', ...senses],
+    'none',
+  );
   return { size, sense, friction, all: [size, sense, friction] };
 }
 
 export const CYLINDER_LOAD = specs(
-  quantitySetting({ id: 'load', title: 'Load', help: 'Force from outside on the rod.' }, 'force', '0 kN', { min: '0 kN', max: '100000 kN' }),
+  quantitySetting({ id: 'load', title: 'Load', help: 'Force from outside on the rod.' }, 'force', '0 kN', {
+    min: '0 kN',
+    max: '100000 kN',
+  }),
   ['pushes in', 'pulls out'],
-  quantitySetting({ id: 'friction', title: 'Friction', help: 'Force of seals and guides against any motion.' }, 'force', '0.2 kN', { min: '0 kN', max: '1000 kN' }),
+  quantitySetting(
+    { id: 'friction', title: 'Friction', help: 'Force of seals and guides against any motion.' },
+    'force',
+    '0.2 kN',
+    { min: '0 kN', max: '1000 kN' },
+  ),
 );
 
 export const MOTOR_LOAD = specs(
-  quantitySetting({ id: 'load', title: 'Load torque', help: 'Torque from outside on the shaft.' }, 'torque', '0 N·m', { min: '0 N·m', max: '10000000 N·m' }),
+  quantitySetting({ id: 'load', title: 'Load torque', help: 'Torque from outside on the shaft.' }, 'torque', '0 N·m', {
+    min: '0 N·m',
+    max: '10000000 N·m',
+  }),
   ['drives A to B', 'drives B to A'],
-  quantitySetting({ id: 'friction', title: 'Friction torque', help: 'Torque of the motor itself against any motion.' }, 'torque', '1 N·m', { min: '0 N·m', max: '100000 N·m' }),
+  quantitySetting(
+    { id: 'friction', title: 'Friction torque', help: 'Torque of the motor itself against any motion.' },
+    'torque',
+    '1 N·m',
+    { min: '0 N·m', max: '100000 N·m' },
+  ),
 );
 
 const SENSES: Readonly<Record<string, ActuatorElement['load']['sense']>> = {
-  'none': 'none', 'resisting': 'resisting', 'pushes in': 'in', 'pulls out': 'out', 'drives B to A': 'in', 'drives A to B': 'out',
+  none: 'none',
+  resisting: 'resisting',
+  'pushes in': 'in',
+  'pulls out': 'out',
+  'drives B to A': 'in',
+  'drives A to B': 'out',
 };
 
 /** N or N·m; no direction means no load. */
 export function readLoad(part: Part, load: LoadSpecs): Pick<ActuatorElement, 'load' | 'friction'> {
   const sense = SENSES[readChoice(part, load.sense)] ?? 'none';
-  return { load: { sense, size: sense === 'none' ? 0 : readSi(part, load.size) }, friction: readSi(part, load.friction) };
+  return {
+    load: { sense, size: sense === 'none' ? 0 : readSi(part, load.size) },
+    friction: readSi(part, load.friction),
+  };
 }
 
 /** A size without a direction would be dropped in silence, and so would the reverse. */
@@ -44,16 +72,24 @@ export function checkLoad(part: Part, load: LoadSpecs): PartProblem[] {
   const size = readSi(part, load.size);
   const sense = readChoice(part, load.sense);
   if (sense === 'none' && size > 0) {
-    return [{
-      level: 'warning', where: 'settings.loadSense', what: 'A load is given, but not the way it acts, so it counts as none.',
-      remedy: `Choose one of: ${load.sense.value.options.slice(1).join(', ')}.`,
-    }];
+    return [
+      {
+        level: 'warning',
+        where: 'settings.loadSense',
+        what: 'A load is given, but not the way it acts, so it counts as none.',
+        remedy: `Choose one of: ${load.sense.value.options.slice(1).join(', ')}.`,
+      },
+    ];
   }
   if (sense !== 'none' && size === 0) {
-    return [{
-      level: 'warning', where: 'settings.load', what: `The load is said to act ("${sense}"), but its size is 0.`,
-      remedy: 'Give its size, or choose none.',
-    }];
+    return [
+      {
+        level: 'warning',
+        where: 'settings.load',
+        what: `The load is said to act ("${sense}"), but its size is 0.`,
+        remedy: 'Give its size, or choose none.',
+      },
+    ];
   }
   return [];
 }

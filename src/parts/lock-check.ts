@@ -12,9 +12,31 @@ export const lockCheck: PartKind = {
   settings: LOCK_SETTINGS,
   readyMade: [{ id: 'lock-check', title: 'Lock check', make: () => ({}) }],
   ports: () => [
-    port('V', [0, 5], 'down', 'working', leftOpen('caution', 'The valve side V has no line; it counts as plugged.', 'Connect V to the directional valve.')),
-    port('C', [0, -5], 'up', 'working', leftOpen('caution', 'The cylinder side C has no line, so the check holds nothing.', 'Connect C to the actuator.')),
-    port('X', [-5, 3], 'left', 'pilot', leftOpen('caution', 'The pilot X has no line; it counts as plugged, so the check never opens back.', 'Connect X to the line that is to open it.')),
+    port(
+      'V',
+      [0, 5],
+      'down',
+      'working',
+      leftOpen('caution', 'The valve side V has no line; it counts as plugged.', 'Connect V to the directional valve.'),
+    ),
+    port(
+      'C',
+      [0, -5],
+      'up',
+      'working',
+      leftOpen('caution', 'The cylinder side C has no line, so the check holds nothing.', 'Connect C to the actuator.'),
+    ),
+    port(
+      'X',
+      [-5, 3],
+      'left',
+      'pilot',
+      leftOpen(
+        'caution',
+        'The pilot X has no line; it counts as plugged, so the check never opens back.',
+        'Connect X to the line that is to open it.',
+      ),
+    ),
   ],
   elements: (part) => lockPaths(part, 'V', 'C', 'X'),
   draw: () => [

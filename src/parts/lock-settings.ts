@@ -4,8 +4,21 @@ import { lossSettings, readLoss } from './losses.ts';
 import { numberSetting, quantitySetting, readSi } from './settings.ts';
 
 /** What single and double lock checks share. */
-const CRACKING = quantitySetting({ id: 'cracking', title: 'Cracking pressure', help: 'Pressure at which the free way to the cylinder begins to open.' }, 'pressure', '1 bar', { min: '0 bar', max: '100 bar' });
-const RATIO = numberSetting({ id: 'ratio', title: 'Pilot ratio', help: 'Area of the pilot piston over the area of the seat.' }, 3, { min: 1, max: 100 });
+const CRACKING = quantitySetting(
+  {
+    id: 'cracking',
+    title: 'Cracking pressure',
+    help: 'Pressure at which the free way to the cylinder begins to open.',
+  },
+  'pressure',
+  '1 bar',
+  { min: '0 bar', max: '100 bar' },
+);
+const RATIO = numberSetting(
+  { id: 'ratio', title: 'Pilot ratio', help: 'Area of the pilot piston over the area of the seat.' },
+  3,
+  { min: 1, max: 100 },
+);
 const LOSS = lossSettings('40 L/min', '3 bar');
 
 export const LOCK_SETTINGS = [CRACKING, RATIO, ...LOSS.all];
@@ -14,7 +27,23 @@ export const LOCK_SETTINGS = [CRACKING, RATIO, ...LOSS.all];
 export function lockPaths(part: Part, valve: string, cylinder: string, pilot: string): PathElement[] {
   const rated = readLoss(part, LOSS);
   return [
-    { type: 'path', from: valve, to: cylinder, way: 'one-way', throttled: false, cracking: readSi(part, CRACKING), rated },
-    { type: 'path', from: cylinder, to: valve, way: 'one-way', throttled: false, pilot: { port: pilot, ratio: readSi(part, RATIO) }, rated },
+    {
+      type: 'path',
+      from: valve,
+      to: cylinder,
+      way: 'one-way',
+      throttled: false,
+      cracking: readSi(part, CRACKING),
+      rated,
+    },
+    {
+      type: 'path',
+      from: cylinder,
+      to: valve,
+      way: 'one-way',
+      throttled: false,
+      pilot: { port: pilot, ratio: readSi(part, RATIO) },
+      rated,
+    },
   ];
 }

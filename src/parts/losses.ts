@@ -11,11 +11,15 @@ export interface LossSpecs {
 export function lossSettings(flow: string, drop: string): LossSpecs {
   const flowSpec = quantitySetting(
     { id: 'ratedFlow', title: 'Rated flow', help: 'Flow at which the pressure drop is given.' },
-    'flow', flow, { min: '0.01 L/min', max: '10000 L/min' },
+    'flow',
+    flow,
+    { min: '0.01 L/min', max: '10000 L/min' },
   );
   const dropSpec = quantitySetting(
     { id: 'ratedDrop', title: 'Drop at rated flow', help: 'Pressure lost in one path at the rated flow.' },
-    'pressure', drop, { min: '0.001 bar', max: '500 bar' },
+    'pressure',
+    drop,
+    { min: '0.001 bar', max: '500 bar' },
   );
   return { flow: flowSpec, drop: dropSpec, all: [flowSpec, dropSpec] };
 }

@@ -5,9 +5,15 @@ import { boxOf, circle, leftOpen, port, shape, stroke } from './shapes.ts';
 
 const DISPLACEMENT = quantitySetting(
   { id: 'displacement', title: 'Displacement', help: 'Oil for one turn of the shaft.' },
-  'displacement', '82 cm³/rev', { min: '0.01 cm³/rev', max: '1000000 cm³/rev' },
+  'displacement',
+  '82 cm³/rev',
+  { min: '0.01 cm³/rev', max: '1000000 cm³/rev' },
 );
-const OPEN = leftOpen('caution', 'One port of the motor has no line; it counts as plugged, so the motor cannot turn.', 'Connect A and B.');
+const OPEN = leftOpen(
+  'caution',
+  'One port of the motor has no line; it counts as plugged, so the motor cannot turn.',
+  'Connect A and B.',
+);
 
 export const motor: PartKind = {
   kind: 'motor',
@@ -21,13 +27,23 @@ export const motor: PartKind = {
   ports: () => [
     port('A', [-4, 0], 'left', 'working', OPEN),
     port('B', [4, 0], 'right', 'working', OPEN),
-    port('L', [2, 4], 'down', 'drain', leftOpen(
-      'caution', 'The case drain has no line; it counts as plugged, so leakage presses on the shaft seal.', 'Lead L to the tank by a line of its own, unless the maker says that it is drained inside.',
-    )),
+    port(
+      'L',
+      [2, 4],
+      'down',
+      'drain',
+      leftOpen(
+        'caution',
+        'The case drain has no line; it counts as plugged, so leakage presses on the shaft seal.',
+        'Lead L to the tank by a line of its own, unless the maker says that it is drained inside.',
+      ),
+    ),
   ],
   elements: (part) => {
     const area = readSi(part, DISPLACEMENT);
-    return [{ type: 'actuator', a: 'A', b: 'B', motion: 'rotary', areaA: area, areaB: area, ...readLoad(part, MOTOR_LOAD) }];
+    return [
+      { type: 'actuator', a: 'A', b: 'B', motion: 'rotary', areaA: area, areaB: area, ...readLoad(part, MOTOR_LOAD) },
+    ];
   },
   draw: () => [
     stroke('symbol', [-4, 0], [-3, 0]),

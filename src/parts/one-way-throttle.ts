@@ -4,10 +4,23 @@ import { quantitySetting, readSi } from './settings.ts';
 import { boxOf, checkSeat, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
 import { adjustableThrottle, THROTTLE_SETTINGS, throttledPaths } from './throttle-settings.ts';
 
-const CRACKING = quantitySetting({ id: 'cracking', title: 'Cracking pressure of the check', help: 'Pressure from A over B at which the check begins to open.' }, 'pressure', '0.5 bar', { min: '0 bar', max: '100 bar' });
+const CRACKING = quantitySetting(
+  {
+    id: 'cracking',
+    title: 'Cracking pressure of the check',
+    help: 'Pressure from A over B at which the check begins to open.',
+  },
+  'pressure',
+  '0.5 bar',
+  { min: '0 bar', max: '100 bar' },
+);
 // The check is sized like the throttle's own line; its loss is not worth a setting of its own.
 const FREE = lossSettings('40 L/min', '2 bar');
-const OPEN = leftOpen('note', 'One port of the one-way throttle has no line; it counts as plugged, so nothing passes.', 'Connect both ports.');
+const OPEN = leftOpen(
+  'note',
+  'One port of the one-way throttle has no line; it counts as plugged, so nothing passes.',
+  'Connect both ports.',
+);
 
 export const oneWayThrottle: PartKind = {
   kind: 'one-way-throttle',
@@ -21,7 +34,15 @@ export const oneWayThrottle: PartKind = {
   ports: () => [port('A', [0, 5], 'down', 'working', OPEN), port('B', [0, -5], 'up', 'working', OPEN)],
   elements: (part) => [
     ...throttledPaths(part),
-    { type: 'path', from: 'A', to: 'B', way: 'one-way', throttled: false, cracking: readSi(part, CRACKING), rated: readLoss({ ...part, settings: {} }, FREE) },
+    {
+      type: 'path',
+      from: 'A',
+      to: 'B',
+      way: 'one-way',
+      throttled: false,
+      cracking: readSi(part, CRACKING),
+      rated: readLoss({ ...part, settings: {} }, FREE),
+    },
   ],
   draw: () => [
     rectangle('enclosure', boxOf(-3, -4, 9, 8)),

@@ -6,25 +6,43 @@ import { boxOf, circle, leftOpen, port, shape, stroke } from './shapes.ts';
 /** What the two pumps share. */
 export const PUMP_FLOW = quantitySetting(
   { id: 'flow', title: 'Flow', help: 'Delivery at the working speed; a compensated pump gives at most this.' },
-  'flow', '30 L/min', { min: '0.01 L/min', max: '10000 L/min' },
+  'flow',
+  '30 L/min',
+  { min: '0.01 L/min', max: '10000 L/min' },
 );
 
 export const TIGHT_WHEN_STOPPED = switchSetting(
-  { id: 'tightWhenStopped', title: 'Tight when stopped', help: 'Off: the stopped pump slowly lets its outlet line down to tank through its own leakage.' },
+  {
+    id: 'tightWhenStopped',
+    title: 'Tight when stopped',
+    help: 'Off: the stopped pump slowly lets its outlet line down to tank through its own leakage.',
+  },
   false,
 );
 
 export const PUMP_PORTS: readonly PortSpec[] = [
-  port('P', [0, -4], 'up', 'supply', leftOpen(
-    'danger',
-    'The pump outlet has no line, so it counts as plugged: running, the pump has nowhere to deliver to.',
-    'Lead P to a relief valve and to the circuit.',
-  )),
-  port('S', [0, 4], 'down', 'working', leftOpen(
-    'caution',
-    'The pump has no suction line; it is computed as if it drew from the tank.',
-    'Lead S to a tank.',
-  )),
+  port(
+    'P',
+    [0, -4],
+    'up',
+    'supply',
+    leftOpen(
+      'danger',
+      'The pump outlet has no line, so it counts as plugged: running, the pump has nowhere to deliver to.',
+      'Lead P to a relief valve and to the circuit.',
+    ),
+  ),
+  port(
+    'S',
+    [0, 4],
+    'down',
+    'working',
+    leftOpen(
+      'caution',
+      'The pump has no suction line; it is computed as if it drew from the tank.',
+      'Lead S to a tank.',
+    ),
+  ),
 ];
 
 export const PUMP_BOUNDS = boxOf(-5, -4, 9, 8);

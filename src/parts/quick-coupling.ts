@@ -16,7 +16,9 @@ export const quickCoupling: PartKind = {
   settings: [...LOSS.all],
   readyMade: [{ id: 'quick-coupling', title: 'Quick coupling', make: () => ({}) }],
   ports: () => [port('A', [0, 3], 'down', 'working', OPEN), port('B', [0, -3], 'up', 'working', OPEN)],
-  elements: (part) => [{ type: 'path', from: 'A', to: 'B', way: 'both', throttled: false, positions: [0], rated: readLoss(part, LOSS) }],
+  elements: (part) => [
+    { type: 'path', from: 'A', to: 'B', way: 'both', throttled: false, positions: [0], rated: readLoss(part, LOSS) },
+  ],
   input: () => ({ positions: POSITIONS, by: 'coupling', coils: [] }),
   draw: (_part, look) => {
     const apart = look.position === 1;
@@ -26,7 +28,12 @@ export const quickCoupling: PartKind = {
       ...(apart ? [stroke('symbol', [0, -3], [0, -1.7 - gap])] : []),
       stroke('symbol', [-1.2, gap], [0, 1.2 + gap], [1.2, gap]),
       stroke('symbol', [-1.2, -gap], [0, -1.2 - gap], [1.2, -gap]),
-      ...(apart ? [stroke('symbol', [-0.6, 1.7 + gap], [0.6, 1.7 + gap]), stroke('symbol', [-0.6, -1.7 - gap], [0.6, -1.7 - gap])] : []),
+      ...(apart
+        ? [
+            stroke('symbol', [-0.6, 1.7 + gap], [0.6, 1.7 + gap]),
+            stroke('symbol', [-0.6, -1.7 - gap], [0.6, -1.7 - gap]),
+          ]
+        : []),
     ];
   },
   bounds: () => boxOf(-2, -3, 4, 6),

@@ -4,15 +4,25 @@ import { arrow, boxOf, leftOpen, port, rectangle, spring, stroke } from './shape
 
 const SETTING = quantitySetting(
   { id: 'setting', title: 'Setting', help: 'Inlet pressure at which it begins to let oil out.' },
-  'pressure', '200 bar', { min: '0.1 bar', max: '1000 bar' },
+  'pressure',
+  '200 bar',
+  { min: '0.1 bar', max: '1000 bar' },
 );
 const RISE = quantitySetting(
-  { id: 'fullFlowRise', title: 'Rise at rated flow', help: 'How far the pressure climbs over the setting at the rated flow.' },
-  'pressure', '10 bar', { min: '0 bar', max: '500 bar' },
+  {
+    id: 'fullFlowRise',
+    title: 'Rise at rated flow',
+    help: 'How far the pressure climbs over the setting at the rated flow.',
+  },
+  'pressure',
+  '10 bar',
+  { min: '0 bar', max: '500 bar' },
 );
 const RATED_FLOW = quantitySetting(
   { id: 'ratedFlow', title: 'Rated flow', help: 'Flow at which the rise is given.' },
-  'flow', '60 L/min', { min: '0.01 L/min', max: '10000 L/min' },
+  'flow',
+  '60 L/min',
+  { min: '0.01 L/min', max: '10000 L/min' },
 );
 
 export const reliefValve: PartKind = {
@@ -25,16 +35,36 @@ export const reliefValve: PartKind = {
   settings: [SETTING, RISE, RATED_FLOW],
   readyMade: [{ id: 'relief-valve', title: 'Relief valve', make: () => ({}) }],
   ports: () => [
-    port('P', [0, -4], 'up', 'supply', leftOpen(
-      'caution', 'The relief valve has no inlet line, so it protects nothing.', 'Connect P to the line that it is to protect.',
-    )),
-    port('T', [0, 4], 'down', 'return', leftOpen(
-      'danger', 'The relief valve has no outlet line; T counts as plugged, so the valve cannot let anything out.', 'Lead T to a tank.',
-    )),
+    port(
+      'P',
+      [0, -4],
+      'up',
+      'supply',
+      leftOpen(
+        'caution',
+        'The relief valve has no inlet line, so it protects nothing.',
+        'Connect P to the line that it is to protect.',
+      ),
+    ),
+    port(
+      'T',
+      [0, 4],
+      'down',
+      'return',
+      leftOpen(
+        'danger',
+        'The relief valve has no outlet line; T counts as plugged, so the valve cannot let anything out.',
+        'Lead T to a tank.',
+      ),
+    ),
   ],
   elements: (part) => [
     {
-      type: 'pressure-opened', from: 'P', to: 'T', duty: 'relief', setting: readSi(part, SETTING),
+      type: 'pressure-opened',
+      from: 'P',
+      to: 'T',
+      duty: 'relief',
+      setting: readSi(part, SETTING),
       override: { rise: readSi(part, RISE), flow: readSi(part, RATED_FLOW) },
     },
   ],

@@ -112,10 +112,22 @@ function checkOne(typed: Setting, spec: SettingSpec): PartProblem[] {
       return [{ where, what: `${spec.title} is ${JSON.stringify(typed)}.`, remedy: 'Set it to true or false.' }];
     case 'choice':
       if (typeof typed === 'string' && value.options.includes(typed)) return [];
-      return [{ where, what: `${spec.title} cannot be ${JSON.stringify(typed)}.`, remedy: `Use one of: ${value.options.join(', ')}.` }];
+      return [
+        {
+          where,
+          what: `${spec.title} cannot be ${JSON.stringify(typed)}.`,
+          remedy: `Use one of: ${value.options.join(', ')}.`,
+        },
+      ];
     case 'quantity':
       if (typeof typed !== 'string') {
-        return [{ where, what: `${spec.title} is ${JSON.stringify(typed)}, without a unit.`, remedy: `Write it as text with its unit, such as "${value.default}".` }];
+        return [
+          {
+            where,
+            what: `${spec.title} is ${JSON.stringify(typed)}, without a unit.`,
+            remedy: `Write it as text with its unit, such as "${value.default}".`,
+          },
+        ];
       }
   }
   if (value.type === 'quantity') {
@@ -123,10 +135,31 @@ function checkOne(typed: Setting, spec: SettingSpec): PartProblem[] {
     if (!parsed.ok) return [...parsed.problems];
   }
   const si = parseSetting(typed, spec);
-  if (si === undefined) return [{ where, what: `${spec.title} is ${JSON.stringify(typed)}, not a number.`, remedy: `Write a number, such as ${value.default}.` }];
+  if (si === undefined)
+    return [
+      {
+        where,
+        what: `${spec.title} is ${JSON.stringify(typed)}, not a number.`,
+        remedy: `Write a number, such as ${value.default}.`,
+      },
+    ];
   const { min, max } = limitsOf(value);
-  if (si < min) return [{ where, what: `${spec.title} is ${typed}, below ${value.min}.`, remedy: `Give a ${title} of ${value.min} or more.` }];
-  if (si > max) return [{ where, what: `${spec.title} is ${typed}, above ${value.max}.`, remedy: `Give a ${title} of ${value.max} or less.` }];
+  if (si < min)
+    return [
+      {
+        where,
+        what: `${spec.title} is ${typed}, below ${value.min}.`,
+        remedy: `Give a ${title} of ${value.min} or more.`,
+      },
+    ];
+  if (si > max)
+    return [
+      {
+        where,
+        what: `${spec.title} is ${typed}, above ${value.max}.`,
+        remedy: `Give a ${title} of ${value.max} or less.`,
+      },
+    ];
   return [];
 }
 
@@ -136,11 +169,13 @@ export function checkSettings(part: Part, specs: readonly SettingSpec[]): PartPr
     const spec = specs.find((candidate) => candidate.id === id);
     if (spec) return checkOne(typed, spec);
     const known = specs.map((candidate) => candidate.id).join(', ');
-    return [{
-      level: 'warning',
-      where: `settings.${id}`,
-      what: `There is no setting "${id}" here; it is kept but does nothing.`,
-      remedy: known === '' ? 'This kind of part has no settings.' : `Known settings: ${known}.`,
-    }];
+    return [
+      {
+        level: 'warning',
+        where: `settings.${id}`,
+        what: `There is no setting "${id}" here; it is kept but does nothing.`,
+        remedy: known === '' ? 'This kind of part has no settings.' : `Known settings: ${known}.`,
+      },
+    ];
   });
 }

@@ -7,14 +7,26 @@ export type Pair = readonly [number, number];
 
 export const at = ([x, y]: Pair): Point => ({ x, y });
 
-export const stroke = (pen: Pen, ...points: readonly Pair[]): Primitive => ({ type: 'polyline', points: points.map(at), pen });
+export const stroke = (pen: Pen, ...points: readonly Pair[]): Primitive => ({
+  type: 'polyline',
+  points: points.map(at),
+  pen,
+});
 
 export const shape = (pen: Pen, fill: Fill, ...points: readonly Pair[]): Primitive => ({
-  type: 'polyline', points: points.map(at), pen, closed: true, fill,
+  type: 'polyline',
+  points: points.map(at),
+  pen,
+  closed: true,
+  fill,
 });
 
 export const circle = (pen: Pen, centre: Pair, radius: number, fill: Fill = 'none'): Primitive => ({
-  type: 'circle', centre: at(centre), radius, pen, fill,
+  type: 'circle',
+  centre: at(centre),
+  radius,
+  pen,
+  fill,
 });
 
 export const rectangle = (pen: Pen, box: Box, fill: Fill = 'none'): Primitive => ({ type: 'box', ...box, pen, fill });
@@ -62,12 +74,10 @@ export function checkSeat(pen: Pen, centre: Pair, direction: Pair, radius = 0.85
   const arm = radius * 1.35;
   return [
     circle(pen, centre, radius, 'paper'),
-    stroke(
-      pen,
-      [apex[0] + (dx - dy) * arm, apex[1] + (dy + dx) * arm],
-      apex,
-      [apex[0] + (dx + dy) * arm, apex[1] + (dy - dx) * arm],
-    ),
+    stroke(pen, [apex[0] + (dx - dy) * arm, apex[1] + (dy + dx) * arm], apex, [
+      apex[0] + (dx + dy) * arm,
+      apex[1] + (dy - dx) * arm,
+    ]),
   ];
 }
 
@@ -95,8 +105,18 @@ export function throttleArcs(pen: Pen, centre: Pair, direction: Pair, size = 1):
 
 export const dot = (pen: Pen, centre: Pair, radius = 0.36): Primitive => circle(pen, centre, radius, fillOf(pen));
 
-export const text = (value: string, [x, y]: Pair, size = 1.2, align: 'start' | 'middle' | 'end' = 'middle'): Primitive => ({
-  type: 'text', at: { x, y }, text: value, size, align, tone: 'second',
+export const text = (
+  value: string,
+  [x, y]: Pair,
+  size = 1.2,
+  align: 'start' | 'middle' | 'end' = 'middle',
+): Primitive => ({
+  type: 'text',
+  at: { x, y },
+  text: value,
+  size,
+  align,
+  tone: 'second',
 });
 
 export type LeftOpen = NonNullable<PortSpec['leftOpen']>;
@@ -104,6 +124,16 @@ export type LeftOpen = NonNullable<PortSpec['leftOpen']>;
 export const leftOpen = (level: LeftOpen['level'], what: string, remedy: string): LeftOpen => ({ level, what, remedy });
 
 /** A port; without `open` it has nothing to say when left open. */
-export const port = (id: string, place: Pair, side: PortSpec['side'], role: PortSpec['role'], open?: LeftOpen): PortSpec => ({
-  id, at: at(place), side, role, ...(open ? { leftOpen: open } : {}),
+export const port = (
+  id: string,
+  place: Pair,
+  side: PortSpec['side'],
+  role: PortSpec['role'],
+  open?: LeftOpen,
+): PortSpec => ({
+  id,
+  at: at(place),
+  side,
+  role,
+  ...(open ? { leftOpen: open } : {}),
 });

@@ -3,7 +3,11 @@ import { lossSettings, readLoss } from './losses.ts';
 import { boxOf, leftOpen, port, shape, stroke } from './shapes.ts';
 
 const LOSS = lossSettings('60 L/min', '0.5 bar');
-const OPEN = leftOpen('note', 'One port of the shut-off valve has no line; it counts as plugged, so nothing passes.', 'Connect both ports.');
+const OPEN = leftOpen(
+  'note',
+  'One port of the shut-off valve has no line; it counts as plugged, so nothing passes.',
+  'Connect both ports.',
+);
 const POSITIONS = ['open', 'shut'];
 
 export const shutOffValve: PartKind = {
@@ -16,7 +20,9 @@ export const shutOffValve: PartKind = {
   settings: [...LOSS.all],
   readyMade: [{ id: 'shut-off-valve', title: 'Shut-off valve, by hand', make: () => ({}) }],
   ports: () => [port('A', [0, 3], 'down', 'working', OPEN), port('B', [0, -3], 'up', 'working', OPEN)],
-  elements: (part) => [{ type: 'path', from: 'A', to: 'B', way: 'both', throttled: false, positions: [0], rated: readLoss(part, LOSS) }],
+  elements: (part) => [
+    { type: 'path', from: 'A', to: 'B', way: 'both', throttled: false, positions: [0], rated: readLoss(part, LOSS) },
+  ],
   input: () => ({ positions: POSITIONS, by: 'hand', coils: [] }),
   draw: (_part, look) => {
     // Shut is told by the filled body and by the bar across, not by tone alone.

@@ -1,5 +1,15 @@
 import type { PartKind } from './contract.ts';
-import { barrel, boreSetting, checkBoreAndRod, CYLINDER_BOUNDS, piston, readAreas, rodSetting, strokeSetting, travelOf } from './cylinder-body.ts';
+import {
+  barrel,
+  boreSetting,
+  checkBoreAndRod,
+  CYLINDER_BOUNDS,
+  piston,
+  readAreas,
+  rodSetting,
+  strokeSetting,
+  travelOf,
+} from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
 import { choiceSetting, quantitySetting, readChoice, readSi } from './settings.ts';
 import { leftOpen, port, spring } from './shapes.ts';
@@ -7,14 +17,30 @@ import { leftOpen, port, spring } from './shapes.ts';
 const BORE = boreSetting('50 mm');
 const ROD = rodSetting('28 mm');
 const STROKE = strokeSetting('100 mm');
-const RETURN = choiceSetting({ id: 'return', title: 'Returned by', help: 'What brings the rod back in when A is let down.' }, ['spring', 'load'], 'spring');
+const RETURN = choiceSetting(
+  { id: 'return', title: 'Returned by', help: 'What brings the rod back in when A is let down.' },
+  ['spring', 'load'],
+  'spring',
+);
 const SPRING_FORCE = quantitySetting(
   { id: 'springForce', title: 'Spring force', help: 'Force of the return spring at mid stroke.' },
-  'force', '0.5 kN', { min: '0 kN', max: '1000 kN' },
+  'force',
+  '0.5 kN',
+  { min: '0 kN', max: '1000 kN' },
 );
-const PORTS = [port('A', [-5, 3], 'down', 'working', leftOpen(
-  'caution', 'The cylinder has no line; A counts as plugged, so it is locked by its own oil.', 'Connect A, or plug it on purpose.',
-))];
+const PORTS = [
+  port(
+    'A',
+    [-5, 3],
+    'down',
+    'working',
+    leftOpen(
+      'caution',
+      'The cylinder has no line; A counts as plugged, so it is locked by its own oil.',
+      'Connect A, or plug it on purpose.',
+    ),
+  ),
+];
 
 export const singleActingCylinder: PartKind = {
   kind: 'single-acting-cylinder',
@@ -26,17 +52,29 @@ export const singleActingCylinder: PartKind = {
   settings: [BORE, ROD, STROKE, RETURN, SPRING_FORCE, ...CYLINDER_LOAD.all],
   readyMade: [
     { id: 'single-acting-cylinder', title: 'Single-acting cylinder, spring return', make: () => ({}) },
-    { id: 'single-acting-cylinder-load', title: 'Single-acting cylinder, returned by load', words: ['lift', 'gravity', 'ram'], make: () => ({ settings: { return: 'load', load: '10 kN', loadSense: 'pushes in' } }) },
+    {
+      id: 'single-acting-cylinder-load',
+      title: 'Single-acting cylinder, returned by load',
+      words: ['lift', 'gravity', 'ram'],
+      make: () => ({ settings: { return: 'load', load: '10 kN', loadSense: 'pushes in' } }),
+    },
   ],
   ports: () => PORTS,
   elements: (part) => {
     const areas = readAreas(part, BORE, ROD);
     const sprung = readChoice(part, RETURN) === 'spring';
-    return [{
-      type: 'actuator', a: 'A', motion: 'linear', areaA: areas.piston, areaB: areas.annulus, stroke: readSi(part, STROKE),
-      ...(sprung ? { spring: 'in' as const, springForce: readSi(part, SPRING_FORCE) } : {}),
-      ...readLoad(part, CYLINDER_LOAD),
-    }];
+    return [
+      {
+        type: 'actuator',
+        a: 'A',
+        motion: 'linear',
+        areaA: areas.piston,
+        areaB: areas.annulus,
+        stroke: readSi(part, STROKE),
+        ...(sprung ? { spring: 'in' as const, springForce: readSi(part, SPRING_FORCE) } : {}),
+        ...readLoad(part, CYLINDER_LOAD),
+      },
+    ];
   },
   draw: (part, look) => {
     const travel = travelOf(look);

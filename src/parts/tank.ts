@@ -11,7 +11,13 @@ export const tank: PartKind = {
   settings: [],
   readyMade: [{ id: 'tank', title: 'Tank', make: () => ({}) }],
   ports: () => [
-    port('T', [0, -1], 'up', 'return', leftOpen('note', 'Nothing leads to this tank symbol.', 'Connect a return or suction line, or delete it.')),
+    port(
+      'T',
+      [0, -1],
+      'up',
+      'return',
+      leftOpen('note', 'Nothing leads to this tank symbol.', 'Connect a return or suction line, or delete it.'),
+    ),
   ],
   elements: () => [{ type: 'tank', port: 'T' }],
   draw: () => [stroke('symbol', [0, -1], [0, 1.5]), stroke('symbol', [-1.5, 0.5], [-1.5, 2], [1.5, 2], [1.5, 0.5])],

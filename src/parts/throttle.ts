@@ -2,7 +2,11 @@ import type { PartKind } from './contract.ts';
 import { boxOf, leftOpen, port, stroke } from './shapes.ts';
 import { adjustableThrottle, THROTTLE_SETTINGS, throttledPaths } from './throttle-settings.ts';
 
-const OPEN = leftOpen('note', 'One port of the throttle has no line; it counts as plugged, so nothing passes.', 'Connect both ports.');
+const OPEN = leftOpen(
+  'note',
+  'One port of the throttle has no line; it counts as plugged, so nothing passes.',
+  'Connect both ports.',
+);
 
 export const throttle: PartKind = {
   kind: 'throttle',

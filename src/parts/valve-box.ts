@@ -42,13 +42,17 @@ const sameEdge = (path: ValvePath, place: (id: string) => Pair): boolean =>
 
 type Ends = readonly [Pair, Pair];
 
-const covers = (outer: Ends, [x]: Pair): boolean => x > Math.min(outer[0][0], outer[1][0]) && x < Math.max(outer[0][0], outer[1][0]);
+const covers = (outer: Ends, [x]: Pair): boolean =>
+  x > Math.min(outer[0][0], outer[1][0]) && x < Math.max(outer[0][0], outer[1][0]);
 
 /** How far a loop reaches in from its edge: narrow loops lie within wide ones, and loops of both edges keep apart. */
 function loopDepth(ends: Ends, others: readonly Ends[], shut: readonly Pair[]): number {
   const edge = ends[0][1];
   const inner = others.filter((other) => other[0][1] === edge && other.some((end) => covers(ends, end))).length;
-  const alone = others.every((other) => other[0][1] === edge && !other.some((end) => covers(ends, end)) && !ends.some((end) => covers(other, end)));
+  const alone = others.every(
+    (other) =>
+      other[0][1] === edge && !other.some((end) => covers(ends, end)) && !ends.some((end) => covers(other, end)),
+  );
   const overShut = shut.some((place) => place[1] === edge && covers(ends, place));
   return alone || overShut ? 1.5 : Math.min(1.7, 0.9 + 0.6 * inner);
 }
@@ -58,7 +62,9 @@ function bus(places: readonly Pair[], y: number, pen: PathPen): Primitive[] {
   const xs = places.map(([x]) => x);
   const low = Math.min(...xs);
   const high = Math.max(...xs);
-  const fourWays = [...new Set(xs)].filter((x) => x > low && x < high && xs.filter((other) => other === x).length === 2);
+  const fourWays = [...new Set(xs)].filter(
+    (x) => x > low && x < high && xs.filter((other) => other === x).length === 2,
+  );
   return [
     ...places.map(([x, edge]) => stroke(pen, [x, edge], [x, y])),
     ...(low < high ? [stroke(pen, [low, y], [high, y])] : []),

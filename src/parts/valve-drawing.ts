@@ -41,8 +41,20 @@ export function drawValve(data: ValveData, position?: number): Primitive[] {
     ],
   }));
   const ends: Primitive[] = [
-    { type: 'group', role: 'operator', index: 0, shift: { x: -width / 2, y: 0 }, children: drawEnd(data.left, { side: 'left', coils: names.left, ...end }) },
-    { type: 'group', role: 'operator', index: 1, shift: { x: (count - 0.5) * width, y: 0 }, children: drawEnd(data.right, { side: 'right', coils: names.right, ...end }) },
+    {
+      type: 'group',
+      role: 'operator',
+      index: 0,
+      shift: { x: -width / 2, y: 0 },
+      children: drawEnd(data.left, { side: 'left', coils: names.left, ...end }),
+    },
+    {
+      type: 'group',
+      role: 'operator',
+      index: 1,
+      shift: { x: (count - 0.5) * width, y: 0 },
+      children: drawEnd(data.right, { side: 'right', coils: names.right, ...end }),
+    },
   ];
   return [
     { type: 'group', role: 'strip', shift: { x: -active * width, y: 0 }, children: [...ends, ...boxes] },

@@ -30,27 +30,57 @@ export function frameOf(data: ValveData): Frame {
 }
 
 const ROLES: Readonly<Record<string, PortSpec['role']>> = {
-  P: 'supply', T: 'return', R: 'return', A: 'working', B: 'working', C: 'working', X: 'pilot', Y: 'drain', L: 'drain', M: 'measure',
+  P: 'supply',
+  T: 'return',
+  R: 'return',
+  A: 'working',
+  B: 'working',
+  C: 'working',
+  X: 'pilot',
+  Y: 'drain',
+  L: 'drain',
+  M: 'measure',
 };
 
 function openOf(id: string): LeftOpen {
   switch (id.charAt(0)) {
     case 'P':
-      return leftOpen('caution', `Port ${id} of the valve has no supply; it counts as plugged.`, `Connect ${id} to a pump line, or plug it on purpose.`);
+      return leftOpen(
+        'caution',
+        `Port ${id} of the valve has no supply; it counts as plugged.`,
+        `Connect ${id} to a pump line, or plug it on purpose.`,
+      );
     case 'T':
     case 'R':
-      return leftOpen('caution', `Port ${id} of the valve has no return; it counts as plugged, so nothing can leave through it.`, `Lead ${id} to a tank, or plug it on purpose.`);
+      return leftOpen(
+        'caution',
+        `Port ${id} of the valve has no return; it counts as plugged, so nothing can leave through it.`,
+        `Lead ${id} to a tank, or plug it on purpose.`,
+      );
     case 'C':
-      return leftOpen('caution', `Carry-over port ${id} has no line; it counts as plugged, so at rest the flow cannot pass through.`, 'Lead C1 to the pump or the section before, C2 to the next section or the tank.');
+      return leftOpen(
+        'caution',
+        `Carry-over port ${id} has no line; it counts as plugged, so at rest the flow cannot pass through.`,
+        'Lead C1 to the pump or the section before, C2 to the next section or the tank.',
+      );
     case 'X':
-      return leftOpen('caution', `Pilot port ${id} has no line; it counts as plugged.`, `Connect ${id} to the line that is to move the valve.`);
+      return leftOpen(
+        'caution',
+        `Pilot port ${id} has no line; it counts as plugged.`,
+        `Connect ${id} to the line that is to move the valve.`,
+      );
     default:
-      return leftOpen('note', `Port ${id} of the valve has no line; it counts as plugged.`, `Connect ${id}, or put a plug on it to say that this is meant.`);
+      return leftOpen(
+        'note',
+        `Port ${id} of the valve has no line; it counts as plugged.`,
+        `Connect ${id}, or put a plug on it to say that this is meant.`,
+      );
   }
 }
 
 export function valvePorts(data: ValveData): PortSpec[] {
   const { places } = frameOf(data);
   return data.ports.map(({ id, side }) =>
-    port(id, places.get(id) as Pair, side === 'top' ? 'up' : 'down', ROLES[id.charAt(0)] ?? 'working', openOf(id)));
+    port(id, places.get(id) as Pair, side === 'top' ? 'up' : 'down', ROLES[id.charAt(0)] ?? 'working', openOf(id)),
+  );
 }

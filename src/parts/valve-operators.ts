@@ -14,7 +14,15 @@ export interface EndLook {
 
 /** How far each operator reaches out, in modules. */
 const REACH: Readonly<Record<Operator, number>> = {
-  coil: 3, spring: 2.7, detent: 3.2, lever: 4, pedal: 3, button: 2.8, hand: 2.2, roller: 2.9, pilot: 2.8,
+  coil: 3,
+  spring: 2.7,
+  detent: 3.2,
+  lever: 4,
+  pedal: 3,
+  button: 2.8,
+  hand: 2.2,
+  roller: 2.9,
+  pilot: 2.8,
 };
 
 const STEMS: readonly Operator[] = ['lever', 'pedal', 'button', 'hand', 'roller'];
@@ -30,8 +38,12 @@ interface Placed {
  * Operators in their places: a stem takes the upper lane when a spring or detent shares the end with
  * it and goes below; all else stacks outwards.
  */
-export function placeOperators(operators: readonly Operator[]): { readonly placed: readonly Placed[]; readonly length: number } {
-  const twoLanes = operators.some((each) => STEMS.includes(each)) && operators.some((each) => UNDER_A_STEM.includes(each));
+export function placeOperators(operators: readonly Operator[]): {
+  readonly placed: readonly Placed[];
+  readonly length: number;
+} {
+  const twoLanes =
+    operators.some((each) => STEMS.includes(each)) && operators.some((each) => UNDER_A_STEM.includes(each));
   const placed: Placed[] = [];
   let middle = 0;
   const stacked = operators.filter((each) => !twoLanes || !(STEMS.includes(each) || UNDER_A_STEM.includes(each)));
@@ -59,7 +71,8 @@ export const operatorTop = (operators: readonly Operator[]): number => (operator
 export function drawEnd(operators: readonly Operator[], look: EndLook): Primitive[] {
   let coil = 0;
   return placeOperators(operators).placed.flatMap((each) =>
-    drawOperator(each, look, each.operator === 'coil' ? (look.coils[coil++] ?? '') : ''));
+    drawOperator(each, look, each.operator === 'coil' ? (look.coils[coil++] ?? '') : ''),
+  );
 }
 
 function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): Primitive[] {
@@ -67,7 +80,10 @@ function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): 
   const p = (du: number, dy: number): Pair => [sign * (u + du), y + dy];
   const box = (du: number, dy: number, width: number, height: number): Primitive =>
     rectangle('symbol', boxOf(sign === 1 ? u + du : -(u + du + width), y + dy, width, height), 'paper');
-  const stem = (to: number): Primitive[] => [stroke('fine', p(0, -0.35), p(to, -0.35)), stroke('fine', p(0, 0.35), p(to, 0.35))];
+  const stem = (to: number): Primitive[] => [
+    stroke('fine', p(0, -0.35), p(to, -0.35)),
+    stroke('fine', p(0, 0.35), p(to, 0.35)),
+  ];
   switch (operator) {
     case 'coil':
       return [

@@ -23,7 +23,11 @@ export function parsePath(text: string, where = 'path'): Result<ValvePath> {
   }
   const sign = signs[0] as string;
   if (signs.length > 1 && signs.some((other) => other !== '-')) {
-    return bad({ where, what: `"${text}" mixes signs or chains a one-way or throttled path.`, remedy: 'Write one path for each pair of ports.' });
+    return bad({
+      where,
+      what: `"${text}" mixes signs or chains a one-way or throttled path.`,
+      remedy: 'Write one path for each pair of ports.',
+    });
   }
   const twice = ports.find((id, index) => ports.indexOf(id) !== index);
   if (twice !== undefined) {

@@ -1,7 +1,16 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import {
-  defaultUnit, formatNumber, formatQuantity, fromUnit, parseQuantity, QUANTITIES, toUnit, unitsOf, type Quantity, type UnitSystem,
+  defaultUnit,
+  formatNumber,
+  formatQuantity,
+  fromUnit,
+  parseQuantity,
+  QUANTITIES,
+  toUnit,
+  unitsOf,
+  type Quantity,
+  type UnitSystem,
 } from '../../src/base/units.ts';
 
 const si = (text: string, quantity: Quantity): number => {
@@ -64,7 +73,10 @@ test('kW = bar·(L/min)/600', () => {
 test('torque = pressure · displacement / 2π', () => {
   // Esposito, Fluid Power with Applications, examples 7-5 and 7-2: 91.4 N·m; 795 lbf·in (printed digits).
   expect(si('82 cm³/rev', 'displacement') * si('70 bar', 'pressure')).toBeCloseTo(91.4, 1);
-  expect(toUnit(si('5 in³/rev', 'displacement') * si('1000 psi', 'pressure'), 'torque', 'lbf·in')).toBeCloseTo(795.8, 1);
+  expect(toUnit(si('5 in³/rev', 'displacement') * si('1000 psi', 'pressure'), 'torque', 'lbf·in')).toBeCloseTo(
+    795.8,
+    1,
+  );
 });
 
 test.each<[string, string, Quantity]>([
@@ -118,8 +130,14 @@ test.each<[string, Quantity, RegExp, RegExp]>([
 
 test('each system writes in the units of the trade', () => {
   const wanted: Partial<Record<Quantity, readonly [string, string]>> = {
-    pressure: ['bar', 'psi'], flow: ['L/min', 'gpm'], length: ['mm', 'in'], speed: ['mm/s', 'in/s'], force: ['kN', 'lbf'],
-    torque: ['N·m', 'lbf·ft'], power: ['kW', 'hp'], displacement: ['cm³/rev', 'in³/rev'],
+    pressure: ['bar', 'psi'],
+    flow: ['L/min', 'gpm'],
+    length: ['mm', 'in'],
+    speed: ['mm/s', 'in/s'],
+    force: ['kN', 'lbf'],
+    torque: ['N·m', 'lbf·ft'],
+    power: ['kW', 'hp'],
+    displacement: ['cm³/rev', 'in³/rev'],
   };
   for (const [quantity, [metric, us]] of Object.entries(wanted)) {
     expect(defaultUnit(quantity as Quantity, 'metric')).toBe(metric);
@@ -131,8 +149,16 @@ test('each system writes in the units of the trade', () => {
 });
 
 test.each<[number, number | undefined, string]>([
-  [200, undefined, '200'], [0.1, undefined, '0.1'], [1234567, undefined, '1234567'], [63.24999, undefined, '63.25'], [0, undefined, '0'],
-  [-0.00001234, undefined, '-0.00001234'], [2.0004, undefined, '2'], [99.996, undefined, '100'], [Number.NaN, undefined, '–'], [12.34, 2, '12'],
+  [200, undefined, '200'],
+  [0.1, undefined, '0.1'],
+  [1234567, undefined, '1234567'],
+  [63.24999, undefined, '63.25'],
+  [0, undefined, '0'],
+  [-0.00001234, undefined, '-0.00001234'],
+  [2.0004, undefined, '2'],
+  [99.996, undefined, '100'],
+  [Number.NaN, undefined, '–'],
+  [12.34, 2, '12'],
 ])('number %d to %s digits is "%s"', (value, digits, text) => {
   expect(formatNumber(value, digits)).toBe(text);
 });
@@ -155,29 +181,49 @@ test('every unit of every quantity is read back, also in plain letters', () => {
   }
 });
 
-const anyUnit = fc.constantFrom(...QUANTITIES).chain((quantity) => fc.tuple(fc.constant(quantity), fc.constantFrom(...unitsOf(quantity))));
+const anyUnit = fc
+  .constantFrom(...QUANTITIES)
+  .chain((quantity) => fc.tuple(fc.constant(quantity), fc.constantFrom(...unitsOf(quantity))));
 
 test('unit → SI → unit is the identity', () => {
-  fc.assert(fc.property(anyUnit, fc.double({ min: -1e6, max: 1e6, noNaN: true }), ([quantity, symbol], number) => {
-    const back = toUnit(fromUnit(number, quantity, symbol), quantity, symbol);
-    // Temperatures lose the digits of their offset.
-    return Math.abs(back - number) <= 1e-12 * Math.abs(number) + 1e-9;
-  }));
+  fc.assert(
+    fc.property(anyUnit, fc.double({ min: -1e6, max: 1e6, noNaN: true }), ([quantity, symbol], number) => {
+      const back = toUnit(fromUnit(number, quantity, symbol), quantity, symbol);
+      // Temperatures lose the digits of their offset.
+      return Math.abs(back - number) <= 1e-12 * Math.abs(number) + 1e-9;
+    }),
+  );
 });
 
 test('what is formatted is read back to the digits shown', () => {
   const system = fc.constantFrom<UnitSystem>('metric', 'us');
-  fc.assert(fc.property(anyUnit, system, fc.double({ min: 1e-3, max: 1e6, noNaN: true }), fc.integer({ min: 3, max: 9 }), ([quantity, symbol], units, number, digits) => {
-    const value = fromUnit(number, quantity, symbol);
-    const text = formatQuantity(value, quantity, units, { digits, unit: symbol });
-    const back = toUnit(si(text, quantity), quantity, symbol);
-    return Math.abs(back - number) <= 0.51 * 10 ** (Math.floor(Math.log10(number)) + 1 - digits) + 1e-9;
-  }));
+  fc.assert(
+    fc.property(
+      anyUnit,
+      system,
+      fc.double({ min: 1e-3, max: 1e6, noNaN: true }),
+      fc.integer({ min: 3, max: 9 }),
+      ([quantity, symbol], units, number, digits) => {
+        const value = fromUnit(number, quantity, symbol);
+        const text = formatQuantity(value, quantity, units, { digits, unit: symbol });
+        const back = toUnit(si(text, quantity), quantity, symbol);
+        return Math.abs(back - number) <= 0.51 * 10 ** (Math.floor(Math.log10(number)) + 1 - digits) + 1e-9;
+      },
+    ),
+  );
 });
 
 test('no text makes the parser throw', () => {
-  fc.assert(fc.property(fc.oneof(fc.string(), fc.stringMatching(/^[0-9.,e+\- /]{0,8} ?[a-zA-Z³/·%°]{0,7}$/)), fc.constantFrom(...QUANTITIES), (text, quantity) => {
-    const parsed = parseQuantity(text, quantity);
-    return parsed.ok ? Number.isFinite(parsed.value) : parsed.problems.every((problem) => problem.what !== '' && problem.remedy !== '');
-  }));
+  fc.assert(
+    fc.property(
+      fc.oneof(fc.string(), fc.stringMatching(/^[0-9.,e+\- /]{0,8} ?[a-zA-Z³/·%°]{0,7}$/)),
+      fc.constantFrom(...QUANTITIES),
+      (text, quantity) => {
+        const parsed = parseQuantity(text, quantity);
+        return parsed.ok
+          ? Number.isFinite(parsed.value)
+          : parsed.problems.every((problem) => problem.what !== '' && problem.remedy !== '');
+      },
+    ),
+  );
 });

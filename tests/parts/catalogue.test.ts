@@ -5,24 +5,49 @@ import type { Part } from '../../src/circuit/model.ts';
 import { CATALOGUE, ENTRIES, kindOf, readyMadeOf, searchCatalogue } from '../../src/parts/catalogue.ts';
 import { PART_GROUPS, type Element, type Look, type PartKind } from '../../src/parts/contract.ts';
 
-const partOf = (kind: PartKind, made: Pick<Part, 'settings' | 'valve'>): Part => ({ id: 'X1', kind: kind.kind, ...made });
+const partOf = (kind: PartKind, made: Pick<Part, 'settings' | 'valve'>): Part => ({
+  id: 'X1',
+  kind: kind.kind,
+  ...made,
+});
 const made = ENTRIES.map(({ kind, readyMade }) => ({ id: readyMade.id, kind, part: partOf(kind, readyMade.make()) }));
 
 const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
-  'fixed-pump': ['P', 'S'], 'compensated-pump': ['P', 'S'], 'tank': ['T'], 'relief-valve': ['P', 'T'],
-  'shut-off-valve': ['A', 'B'], 'check-valve': ['A', 'B'], 'lock-check': ['V', 'C', 'X'],
-  'double-lock-check': ['V1', 'C1', 'V2', 'C2'], 'throttle': ['A', 'B'], 'one-way-throttle': ['A', 'B'],
-  'cylinder': ['A', 'B'], 'double-rod-cylinder': ['A', 'B'], 'single-acting-cylinder': ['A'], 'motor': ['A', 'B', 'L'],
-  'accumulator': ['A'], 'filter': ['A', 'B'], 'quick-coupling': ['A', 'B'], 'plug': ['A'], 'gauge': ['M'], 'junction': ['J'],
+  'fixed-pump': ['P', 'S'],
+  'compensated-pump': ['P', 'S'],
+  tank: ['T'],
+  'relief-valve': ['P', 'T'],
+  'shut-off-valve': ['A', 'B'],
+  'check-valve': ['A', 'B'],
+  'lock-check': ['V', 'C', 'X'],
+  'double-lock-check': ['V1', 'C1', 'V2', 'C2'],
+  throttle: ['A', 'B'],
+  'one-way-throttle': ['A', 'B'],
+  cylinder: ['A', 'B'],
+  'double-rod-cylinder': ['A', 'B'],
+  'single-acting-cylinder': ['A'],
+  motor: ['A', 'B', 'L'],
+  accumulator: ['A'],
+  filter: ['A', 'B'],
+  'quick-coupling': ['A', 'B'],
+  plug: ['A'],
+  gauge: ['M'],
+  junction: ['J'],
 };
 
 function portsNamed(element: Element): string[] {
   switch (element.type) {
-    case 'path': return [element.from, element.to, ...(element.pilot ? [element.pilot.port] : [])];
-    case 'pressure-opened': return [element.from, element.to];
-    case 'pump': return [element.outlet, element.suction];
-    case 'tank': case 'accumulator': return [element.port];
-    case 'actuator': return [element.a, ...(element.b === undefined ? [] : [element.b])];
+    case 'path':
+      return [element.from, element.to, ...(element.pilot ? [element.pilot.port] : [])];
+    case 'pressure-opened':
+      return [element.from, element.to];
+    case 'pump':
+      return [element.outlet, element.suction];
+    case 'tank':
+    case 'accumulator':
+      return [element.port];
+    case 'actuator':
+      return [element.a, ...(element.b === undefined ? [] : [element.b])];
   }
 }
 
@@ -30,12 +55,24 @@ function portsNamed(element: Element): string[] {
 function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number; y: number }[] {
   return primitives.flatMap((p): { x: number; y: number }[] => {
     switch (p.type) {
-      case 'polyline': return p.points.map(({ x, y }) => ({ x: x + dx, y: y + dy }));
-      case 'circle': return [{ x: p.centre.x - p.radius + dx, y: p.centre.y - p.radius + dy }, { x: p.centre.x + p.radius + dx, y: p.centre.y + p.radius + dy }];
-      case 'arc': return [p.from, p.to].map(({ x, y }) => ({ x: x + dx, y: y + dy }));
-      case 'box': return [{ x: p.x + dx, y: p.y + dy }, { x: p.x + p.width + dx, y: p.y + p.height + dy }];
-      case 'text': return [];
-      case 'group': return corners(p.children, dx + p.shift.x, dy + p.shift.y);
+      case 'polyline':
+        return p.points.map(({ x, y }) => ({ x: x + dx, y: y + dy }));
+      case 'circle':
+        return [
+          { x: p.centre.x - p.radius + dx, y: p.centre.y - p.radius + dy },
+          { x: p.centre.x + p.radius + dx, y: p.centre.y + p.radius + dy },
+        ];
+      case 'arc':
+        return [p.from, p.to].map(({ x, y }) => ({ x: x + dx, y: y + dy }));
+      case 'box':
+        return [
+          { x: p.x + dx, y: p.y + dy },
+          { x: p.x + p.width + dx, y: p.y + p.height + dy },
+        ];
+      case 'text':
+        return [];
+      case 'group':
+        return corners(p.children, dx + p.shift.x, dy + p.shift.y);
     }
   });
 }
@@ -98,19 +135,26 @@ test.each(made)('$id: elements name its own ports and its own check is clean', (
 test.each(made)('$id: what is drawn stays inside its outline, in every look', ({ kind, part }) => {
   const positions = kind.input?.(part)?.positions.length ?? 1;
   const reach = kind.reach?.(part) ?? kind.bounds(part);
-  const looks: Look[] = [{}, { stroke: 0 }, { stroke: 1 }, ...Array.from({ length: positions }, (_, position) => ({ position }))];
+  const looks: Look[] = [
+    {},
+    { stroke: 0 },
+    { stroke: 1 },
+    ...Array.from({ length: positions }, (_, position) => ({ position })),
+  ];
   for (const look of looks) {
     const drawn = corners(kind.draw(part, look));
     expect(drawn.length).toBeGreaterThan(0);
     for (const corner of drawn) expect(within(reach, corner), JSON.stringify({ look, corner, reach })).toBe(true);
   }
-  for (const corner of corners(kind.draw(part, {}))) expect(within(kind.bounds(part), corner), JSON.stringify({ corner })).toBe(true);
+  for (const corner of corners(kind.draw(part, {})))
+    expect(within(kind.bounds(part), corner), JSON.stringify({ corner })).toBe(true);
 });
 
 test.each(made)('$id: every port is touched by the drawing', ({ kind, part }) => {
   const drawn = corners(kind.draw(part, {}));
   for (const port of kind.ports(part)) {
-    const touched = kind.kind === 'junction' || drawn.some(({ x, y }) => Math.hypot(x - port.at.x, y - port.at.y) < 1e-9);
+    const touched =
+      kind.kind === 'junction' || drawn.some(({ x, y }) => Math.hypot(x - port.at.x, y - port.at.y) < 1e-9);
     expect(touched, port.id).toBe(true);
   }
 });
@@ -122,7 +166,10 @@ test('half a turn and a flip keep the ports of a 4/3 valve within the same box e
   const flipped = placeBox(bounds, { at: { x: 0, y: 0 }, turn: 0, flip: true });
   expect(flipped.width).toBe(bounds.width);
   expect(entry!.kind.ports(part).map((port) => [port.id, port.at.x, port.at.y])).toEqual([
-    ['A', -1, -2], ['B', 1, -2], ['P', -1, 2], ['T', 1, 2],
+    ['A', -1, -2],
+    ['B', 1, -2],
+    ['P', -1, 2],
+    ['T', 1, 2],
   ]);
 });
 

@@ -1,0 +1,100 @@
+import { expect, test } from 'vitest';
+import type { Part, Setting } from '../../src/circuit/model.ts';
+import { kindOf } from '../../src/parts/catalogue.ts';
+import type { Element } from '../../src/parts/contract.ts';
+
+const partOf = (kind: string, settings: Readonly<Record<string, Setting>> = {}): Part => ({ id: 'X', kind, settings });
+const elements = (kind: string, settings?: Readonly<Record<string, Setting>>): readonly Element[] =>
+  kindOf(kind)!.elements(partOf(kind, settings));
+const paths = (kind: string, settings?: Readonly<Record<string, Setting>>): string[] =>
+  elements(kind, settings).map((element) => {
+    if (element.type !== 'path') return element.type;
+    const sign = `${element.throttled ? '~' : ''}${element.way === 'one-way' ? '>' : element.throttled ? '' : '-'}`;
+    return `${element.from}${sign}${element.to}${element.pilot ? ` by ${element.pilot.port}×${element.pilot.ratio}` : ''}`;
+  });
+
+test('pumps carry flow and setting in SI', () => {
+  expect(elements('fixed-pump', { flow: '60 L/min' })).toEqual([
+    { type: 'pump', outlet: 'P', suction: 'S', form: 'fixed', flow: 1e-3, tightWhenStopped: false },
+  ]);
+  expect(elements('compensated-pump', { flow: '60 L/min', setting: '210 bar', tightWhenStopped: true })).toEqual([
+    {
+      type: 'pump',
+      outlet: 'P',
+      suction: 'S',
+      form: 'compensated',
+      flow: 1e-3,
+      setting: 210e5,
+      tightWhenStopped: true,
+    },
+  ]);
+});
+
+test('a relief valve opens from P to T at its setting', () => {
+  expect(elements('relief-valve', { setting: '180 bar' })).toMatchObject([
+    { type: 'pressure-opened', from: 'P', to: 'T', setting: 180e5, duty: 'relief' },
+  ]);
+});
+
+test('checks let oil through one way', () => {
+  expect(paths('check-valve')).toEqual(['A>B']);
+  expect(elements('check-valve', { cracking: '5 bar' })).toMatchObject([{ cracking: 5e5 }]);
+  expect(paths('lock-check')).toEqual(['V>C', 'C>V by X×3']);
+  expect(paths('double-lock-check', { ratio: 4 })).toEqual(['V1>C1', 'C1>V1 by V2×4', 'V2>C2', 'C2>V2 by V1×4']);
+});
+
+test('throttles, open and screwed shut', () => {
+  expect(paths('throttle')).toEqual(['A~B']);
+  expect(paths('throttle', { shut: true })).toEqual([]);
+  expect(paths('one-way-throttle')).toEqual(['A~B', 'A>B']);
+  expect(paths('one-way-throttle', { shut: true })).toEqual(['A>B']);
+});
+
+test('a filter is open both ways, with a check beside it if fitted', () => {
+  expect(paths('filter')).toEqual(['A-B']);
+  expect(paths('filter', { bypass: true })).toEqual(['A-B', 'A>B']);
+});
+
+test.each([
+  ['shut-off-valve', ['open', 'shut'], 'hand'],
+  ['quick-coupling', ['joined', 'apart'], 'coupling'],
+])('%s is an input that stays where it is left', (kind, positions, by) => {
+  expect(kindOf(kind)!.input?.(partOf(kind))).toEqual({ positions, by, coils: [] });
+  expect(elements(kind)).toMatchObject([{ from: 'A', to: 'B', way: 'both', positions: [0] }]);
+});
+
+test('an accumulator is charged unless said otherwise', () => {
+  expect(elements('accumulator')).toMatchObject([{ type: 'accumulator', port: 'A', charged: true }]);
+  expect(elements('accumulator', { charge: 'empty' })).toMatchObject([{ charged: false }]);
+});
+
+test('plug, gauge and junction let nothing through of themselves', () => {
+  for (const kind of ['plug', 'gauge', 'junction']) expect(elements(kind)).toEqual([]);
+});
+
+test('only valves, shut-offs and couplings are inputs', () => {
+  const inputs = ['directional-valve', 'shut-off-valve', 'quick-coupling'];
+  for (const kind of ['fixed-pump', 'relief-valve', 'cylinder', 'lock-check', 'throttle'])
+    expect(kindOf(kind)!.input).toBeUndefined();
+  for (const kind of inputs) expect(kindOf(kind)!.input?.(partOf(kind))).toBeDefined();
+});
+
+test('ports left open say what that means and what to do', () => {
+  const open = (kind: string, id: string) =>
+    kindOf(kind)!
+      .ports(partOf(kind))
+      .find((port) => port.id === id)?.leftOpen;
+  expect(open('fixed-pump', 'S')).toMatchObject({
+    level: 'caution',
+    what: expect.stringContaining('no suction line') as string,
+  });
+  expect(open('fixed-pump', 'P')).toMatchObject({ level: 'danger' });
+  expect(open('relief-valve', 'T')).toMatchObject({
+    level: 'danger',
+    what: expect.stringContaining('plugged') as string,
+  });
+  expect(open('lock-check', 'X')).toMatchObject({
+    level: 'caution',
+    what: expect.stringContaining('never opens') as string,
+  });
+});
