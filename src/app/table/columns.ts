@@ -25,12 +25,21 @@ export interface ColumnGroup {
   readonly columns: readonly Column[];
 }
 
-const CHARACTER = 6.9;
+const CHARACTER = 7.2;
+/** Labels in heads are mostly capitals. */
+const HEAD_CHARACTER = 8.4;
 const PADDING = 16;
-const GLYPH = 23;
+const GLYPH = 25;
 
 const fits = (texts: readonly string[], extra: number, head: string): number =>
-  Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * CHARACTER * 0.95) + PADDING);
+  Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * HEAD_CHARACTER) + PADDING);
+
+/** The column in a sentence. */
+export function sayColumn(column: Column): string {
+  if (column.of === 'blocked') return 'blocked lines';
+  if (column.of === 'trapped') return 'trapped pressure';
+  return column.of === 'notes' ? 'danger and notes' : column.title;
+}
 
 function fixed(column: Omit<Column, 'track'>): Column {
   return { ...column, track: `${column.width}px` };
@@ -84,7 +93,7 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
     { title: 'Pumps', columns: pumps },
     { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 196, 1.3)] },
     { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 216, 1.5)] },
-    { title: 'Danger, notes', columns: [wide('notes', '', 150, 1)] },
+    { title: 'Danger, notes', columns: [wide('notes', 'gravest first', 150, 1)] },
   ];
   return groups.filter((group) => group.columns.length > 0);
 }
