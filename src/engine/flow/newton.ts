@@ -1,0 +1,168 @@
+import { WIDTH, evaluate, flowScale, newPoint } from './assemble.ts';
+import type { FlowSystem, Point } from './assemble.ts';
+import { SANE } from './laws.ts';
+import { searchRay } from './ray.ts';
+import { factorSymmetric, solveSymmetric } from './sparse.ts';
+
+/** Arrays that one solver needs; made once, so that the iteration allocates nothing. */
+export interface Workspace {
+  now: Point;
+  next: Point;
+  readonly step: Float64Array;
+  /** For the line search: drive and its change along the step of each active branch, then three sums. */
+  readonly ray: Float64Array;
+  readonly counts: { iterations: number; evaluations: number; rays: number };
+}
+
+export const newWorkspace = (system: FlowSystem): Workspace => ({
+  now: newPoint(system),
+  next: newPoint(system),
+  step: new Float64Array(system.n + 1),
+  ray: new Float64Array(2 * system.m + 3),
+  counts: { iterations: 0, evaluations: 0, rays: 0 },
+});
+
+/** What an iteration may spend. */
+export interface Limits {
+  readonly cancelled: () => boolean;
+  readonly iterations: number;
+}
+
+export type Outcome = 'converged' | 'runs away' | 'stuck' | 'cancelled';
+
+/** Pa: a typical pressure of the circuit; the first steps are about this long. */
+const PRESSURE_STEP = 1e7;
+/** Pa: once a full step is shorter than this, its end is the answer. */
+const LAST_STEP = 0.1;
+const SLACK = 1e-9;
+/** Softness, as a share of the first, below which it is dropped. */
+const HARD = 1e-6;
+
+/**
+ * Near-ideal laws are all corners. A cold iteration begins with every branch softer, so that a pressure of
+ * 100 bar drives about the pump's flow through it, and hardens by `rate` with each step that succeeds.
+ */
+export interface Start {
+  readonly softness: number;
+  readonly rate: number;
+}
+export const COLD: Start = { softness: 0.3, rate: 0.25 };
+export const SLOW: Start = { softness: 1, rate: 0.5 };
+export const WARM: Start = { softness: 0, rate: 0 };
+
+/**
+ * Minimises the convex co-content in the line pressures, from `work.now.p`. Its gradient is the net
+ * outflow of the lines (Millar 1951; Birkhoff and Diaz 1956), its Hessian the conductances. Semismooth
+ * Newton, damped where a line is out of balance, with a line search on the slope of the co-content:
+ * values of the co-content itself would drown in rounding.
+ *
+ * On return `work.now` holds the pressures and flows that balance to the accuracy of the last linear solve.
+ */
+export function minimise(system: FlowSystem, work: Workspace, limits: Limits, start: Start): Outcome {
+  const { n, plan } = system;
+  const { step, counts } = work;
+  const scale = flowScale(system);
+  const floor = system.leak * 0.1;
+  let damping = 1 / PRESSURE_STEP;
+  let softness = (start.softness * PRESSURE_STEP) / scale;
+  const hard = HARD * (PRESSURE_STEP / scale);
+  work.now.softness = softness;
+  work.next.x.fill(0);
+  evaluate(system, work.now, work.next.x);
+  counts.evaluations++;
+  for (let iteration = 0; iteration < limits.iterations; iteration++) {
+    if ((iteration & 15) === 15 && limits.cancelled()) return 'cancelled';
+    counts.iterations++;
+    const { f, v, p } = work.now;
+    let norm = 0;
+    for (let i = 0; i < n; i++) {
+      const out = f[i] as number;
+      const size = Math.abs(out);
+      if (size > norm) norm = size;
+      step[i] = -out;
+      v[i] = (v[i] as number) + damping * size;
+    }
+    factorSymmetric(plan, v, floor);
+    solveSymmetric(plan, v, step);
+    let longest = 0;
+    let slope = 0;
+    let highest = 0;
+    for (let i = 0; i < n; i++) {
+      const d = step[i] as number;
+      slope += d * (f[i] as number);
+      if (Math.abs(d) > longest) longest = Math.abs(d);
+      if (Math.abs(p[i] as number) > highest) highest = Math.abs(p[i] as number);
+    }
+    if (softness === 0 && longest <= LAST_STEP + SLACK * highest && norm <= SLACK * scale + noise(system, work.now)) {
+      settle(system, work);
+      return 'converged';
+    }
+    if (highest > 2 * SANE.pressure) return 'runs away';
+    const harder = softness * start.rate < hard ? 0 : softness * start.rate;
+    let cut = 1;
+    if (softness > 0 && norm <= 1e-3 * scale) {
+      // Soft and in balance: nothing more to learn at this softness.
+      cut = 1;
+      softness = harder;
+      trial(system, work, 1, harder);
+    } else if (trial(system, work, 1, harder) <= 0.5 * Math.abs(slope)) softness = harder;
+    else {
+      cut = searchRay(system, work, slope);
+      if (cut === 0) return finish(system, work, norm, scale);
+      trial(system, work, cut, softness);
+    }
+    damping = cut === 1 ? Math.max(damping * 0.25, 0.1 / PRESSURE_STEP) : Math.min(damping * 2, 1 / PRESSURE_STEP);
+    const { now } = work;
+    work.now = work.next;
+    work.next = now;
+  }
+  return 'stuck';
+}
+
+/** Moves `work.next` to `share` of the step and evaluates there; the slope of the co-content along the step. */
+function trial(system: FlowSystem, work: Workspace, share: number, softness: number): number {
+  const { n } = system;
+  const { now, next, step } = work;
+  for (let i = 0; i < n; i++) next.p[i] = (now.p[i] as number) + share * (step[i] as number);
+  next.softness = softness;
+  evaluate(system, next, now.x);
+  work.counts.evaluations++;
+  let sum = 0;
+  for (let i = 0; i < n; i++) sum += (next.f[i] as number) * (step[i] as number);
+  return sum;
+}
+
+/** The last step is short: flows move along their slopes, which balances them better than to evaluate them anew. */
+function settle(system: FlowSystem, work: Workspace): void {
+  const { p, x, slope } = work.now;
+  const { step } = work;
+  const { ends, law, active } = system;
+  for (let i = 0; i < active.length; i++) {
+    const j = active[i] as number;
+    const s = slope[j] as number;
+    if (s === 0) continue;
+    const du = (law[WIDTH * j] as number) * (step[ends[3 * j] as number] as number) + (law[WIDTH * j + 1] as number) * (step[ends[3 * j + 1] as number] as number);
+    x[j] = (x[j] as number) + s * du;
+  }
+  for (let i = 0; i < system.n; i++) p[i] = (p[i] as number) + (step[i] as number);
+}
+
+/** Stagnation: good if what is left is rounding. */
+function finish(system: FlowSystem, work: Workspace, norm: number, scale: number): Outcome {
+  if (norm > 1e-7 * scale) return 'stuck';
+  settle(system, work);
+  return 'converged';
+}
+
+/** What rounding of the drives alone can make of the balance of a line. */
+function noise(system: FlowSystem, at: Point): number {
+  const { ends, law, active } = system;
+  let most = 0;
+  for (let i = 0; i < active.length; i++) {
+    const j = active[i] as number;
+    const ca = Math.abs(law[WIDTH * j] as number), cb = Math.abs(law[WIDTH * j + 1] as number);
+    const size = ca * Math.abs(at.p[ends[3 * j] as number] as number) + cb * Math.abs(at.p[ends[3 * j + 1] as number] as number);
+    most = Math.max(most, (at.slope[j] as number) * size * Math.max(ca, cb));
+  }
+  return 16 * Number.EPSILON * most;
+}
