@@ -14,7 +14,7 @@ import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
-import { fitTo, panBy, reveal, zoomAt } from './viewport.ts';
+import { fitTo, MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 
 /** Pixels of the frame and the status line, which a fitted circuit keeps clear of. */
 const INSET = { left: 18, top: 18, right: 18, bottom: 48 } as const;
@@ -122,10 +122,11 @@ export const sheetActions: SheetActions = {
     const { gesture } = desk;
     if (gesture.type === 'place') {
       desk.gesture = { ...gesture, flip: !gesture.flip };
-      return;
+      return true;
     }
-    if (refuseEmpty()) return;
-    attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${counted(selectedParts().length, 'part')} flipped.`);
+    // With nothing to flip the key is free for others.
+    if (selectedParts().length === 0) return false;
+    return attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${counted(selectedParts().length, 'part')} flipped.`);
   },
 
   remove(heal) {
@@ -177,7 +178,8 @@ export const sheetActions: SheetActions = {
   },
 
   openSettings() {
-    if (!refuseEmpty()) view.open('settings');
+    if (view.panels.settings) view.close('settings');
+    else if (!refuseEmpty()) view.open('settings');
   },
 
   shiftLever(by) {
@@ -206,6 +208,11 @@ export const sheetActions: SheetActions = {
 
   fit() {
     const { width, height } = desk.size;
+    if (editor.circuit.parts.length === 0) {
+      // An empty sheet begins at its first zone.
+      desk.viewport = { x: -INSET.left / MODULE, y: -INSET.top / MODULE, scale: MODULE };
+      return;
+    }
     const room = { width: Math.max(50, width - INSET.left - INSET.right), height: Math.max(50, height - INSET.top - INSET.bottom) };
     const fitted = fitTo(drawing.scene.bounds, room, 2);
     desk.viewport = panBy(fitted, INSET.left, INSET.top);

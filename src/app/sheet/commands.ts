@@ -10,7 +10,8 @@ export interface SheetActions {
   /** Nudge what is selected, move what is being placed, go to the next port, or pan. */
   arrow(dx: number, dy: number): void;
   turn(by: 90 | -90): void;
-  flip(): void;
+  /** False if nothing is there to flip. */
+  flip(): boolean;
   remove(heal: boolean): void;
   duplicate(): void;
   selectAll(): void;
@@ -62,7 +63,7 @@ export const SHEET_COMMANDS: readonly Command[] = [
   { id: 'cancel', title: 'Give up the line or placement, then select nothing', group: 'Draw', keys: ['Escape'], run: (s) => s.cancel() },
 
   { id: 'name', title: 'Name the part or line', group: 'Change', keys: ['F2'], run: (s) => s.rename() },
-  { id: 'settings', title: 'Open the settings of the part', group: 'Change', keys: ['S'], run: (s) => s.openSettings() },
+  { id: 'settings', title: 'Open the settings of the part', group: 'Change', keys: ['E'], run: (s) => s.openSettings() },
   { id: 'turn', title: 'Turn clockwise', group: 'Change', keys: ['T'], run: (s) => s.turn(90) },
   { id: 'turn-back', title: 'Turn anticlockwise', group: 'Change', keys: ['Shift+T'], run: (s) => s.turn(-90) },
   { id: 'flip', title: 'Flip left to right', group: 'Change', keys: ['F'], run: (s) => s.flip() },
@@ -99,8 +100,8 @@ export const SHEET_COMMANDS: readonly Command[] = [
     run: (s) => s.arrow(dx, dy),
   })),
 
-  { id: 'lever-back', title: 'Selected valve: lever to the position on the left', group: 'Levers', keys: ['['], run: (s) => s.shiftLever(-1) },
-  { id: 'lever-on', title: 'Selected valve: lever to the position on the right', group: 'Levers', keys: [']'], run: (s) => s.shiftLever(1) },
+  { id: 'lever-back', title: 'Selected valve: lever to the position on the left', group: 'Levers', keys: ['Ctrl+ArrowLeft'], run: (s) => s.shiftLever(-1) },
+  { id: 'lever-on', title: 'Selected valve: lever to the position on the right', group: 'Levers', keys: ['Ctrl+ArrowRight'], run: (s) => s.shiftLever(1) },
 
   { id: 'zoom-in', title: 'Zoom in', group: 'View', keys: ['+', '='], run: (s) => s.zoom(ZOOM_STEP) },
   { id: 'zoom-out', title: 'Zoom out', group: 'View', keys: ['-'], run: (s) => s.zoom(1 / ZOOM_STEP) },

@@ -27,7 +27,7 @@ export interface Form {
 }
 
 export interface Naming {
-  readonly of: 'part' | 'connection' | 'label';
+  readonly of: 'part' | 'connection';
   readonly id: string;
 }
 

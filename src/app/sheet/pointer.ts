@@ -59,7 +59,7 @@ export class SheetPointer {
     }
     if (!pans && this.#lever(event)) return;
     const label = event.target instanceof Element ? event.target.closest('[data-label]')?.getAttribute('data-label') : undefined;
-    const hit = label ? ({ type: 'label', id: label } as const) : hitAt(drawing.map, at, reach());
+    const hit = label ? ({ type: 'label', id: label } as const) : this.#hitAt(at, event);
     const adds = event.shiftKey;
     // A finger on bare paper pans: a rubber band is seldom wanted there.
     const slides = pans || (event.pointerType === 'touch' && hit.type === 'paper' && gesture.type === 'none');
@@ -87,7 +87,7 @@ export class SheetPointer {
     }
     const { gesture } = desk;
     if (gesture.type === 'place') desk.gesture = { ...gesture, at: snap(at) };
-    else this.#hover(at);
+    else this.#hover(at, event);
   }
 
   up(event: PointerEvent): void {
@@ -130,9 +130,17 @@ export class SheetPointer {
   }
 
   doubleClick(event: MouseEvent): void {
-    const hit = hitAt(drawing.map, this.#toSheet({ x: event.clientX, y: event.clientY }), reach());
+    const hit = this.#hitAt(this.#toSheet({ x: event.clientX, y: event.clientY }), event);
     if (hit.type === 'part') view.open('settings');
     if (hit.type === 'connection') desk.naming = { of: 'connection', id: hit.id };
+  }
+
+  /** A shifted valve reaches beyond its outline: there the drawing itself tells. */
+  #hitAt(at: Point, event: MouseEvent): Hit {
+    const hit = hitAt(drawing.map, at, reach());
+    if (hit.type !== 'paper' || !(event.target instanceof Element)) return hit;
+    const id = event.target.closest('[data-part]')?.getAttribute('data-part');
+    return id ? { type: 'part', id } : hit;
   }
 
   #giveUp(): void {
@@ -188,9 +196,9 @@ export class SheetPointer {
     desk.gesture = { ...gesture, to: at, over: self ? undefined : over };
   }
 
-  #hover(at: Point): void {
+  #hover(at: Point, event: PointerEvent): void {
     if (desk.gesture.type === 'connect') return this.#aim(at);
-    const hit = hitAt(drawing.map, at, reach());
+    const hit = this.#hitAt(at, event);
     if (hitKey(hit) !== hitKey(desk.hover)) desk.hover = hit;
   }
 
