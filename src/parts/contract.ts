@@ -41,8 +41,17 @@ export interface PartProblem extends Problem {
   readonly level?: 'error' | 'warning';
 }
 
-export type PartGroup = 'Supply' | 'Motion' | 'Direction' | 'Pressure' | 'Flow and check' | 'Store' | 'Measure and joints';
-export const PART_GROUPS: readonly PartGroup[] = ['Supply', 'Motion', 'Direction', 'Pressure', 'Flow and check', 'Store', 'Measure and joints'];
+export type PartGroup =
+  'Supply' | 'Motion' | 'Direction' | 'Pressure' | 'Flow and check' | 'Store' | 'Measure and joints';
+export const PART_GROUPS: readonly PartGroup[] = [
+  'Supply',
+  'Motion',
+  'Direction',
+  'Pressure',
+  'Flow and check',
+  'Store',
+  'Measure and joints',
+];
 
 export interface ReadyMade {
   /** Unique in the catalogue, e.g. `valve-4/3-bypass`. */
@@ -76,7 +85,13 @@ export interface SettingSpec {
   readonly title: string;
   readonly help: string;
   readonly value:
-    | { readonly type: 'quantity'; readonly quantity: Quantity; readonly default: string; readonly min?: string; readonly max?: string }
+    | {
+        readonly type: 'quantity';
+        readonly quantity: Quantity;
+        readonly default: string;
+        readonly min?: string;
+        readonly max?: string;
+      }
     | { readonly type: 'choice'; readonly options: readonly string[]; readonly default: string }
     | { readonly type: 'switch'; readonly default: boolean }
     | { readonly type: 'number'; readonly default: number; readonly min?: number; readonly max?: number };
@@ -94,10 +109,34 @@ export interface InputSpec {
 /** What a part does, in terms the network and the engines understand. Values are SI. */
 export type Element =
   | PathElement
-  | { readonly type: 'pressure-opened'; readonly from: string; readonly to: string; readonly setting: number; readonly duty: 'relief'; /** Rise over the setting, Pa, at a flow, m³/s. */ readonly override?: { readonly rise: number; readonly flow: number } }
-  | { readonly type: 'pump'; readonly outlet: string; readonly suction: string; readonly form: 'fixed' | 'compensated'; /** m³/s */ readonly flow: number; /** Pa, compensated only */ readonly setting?: number; readonly tightWhenStopped: boolean }
+  | {
+      readonly type: 'pressure-opened';
+      readonly from: string;
+      readonly to: string;
+      readonly setting: number;
+      readonly duty: 'relief';
+      /** Rise over the setting, Pa, at a flow, m³/s. */ readonly override?: {
+        readonly rise: number;
+        readonly flow: number;
+      };
+    }
+  | {
+      readonly type: 'pump';
+      readonly outlet: string;
+      readonly suction: string;
+      readonly form: 'fixed' | 'compensated';
+      /** m³/s */ readonly flow: number;
+      /** Pa, compensated only */ readonly setting?: number;
+      readonly tightWhenStopped: boolean;
+    }
   | { readonly type: 'tank'; readonly port: string }
-  | { readonly type: 'accumulator'; readonly port: string; readonly charged: boolean; /** Gas volume, m³ */ readonly volume?: number; /** Gas pressure when empty of oil, Pa */ readonly precharge?: number }
+  | {
+      readonly type: 'accumulator';
+      readonly port: string;
+      readonly charged: boolean;
+      /** Gas volume, m³ */ readonly volume?: number;
+      /** Gas pressure when empty of oil, Pa */ readonly precharge?: number;
+    }
   | ActuatorElement;
 
 /** An open path. `positions`: input positions in which it exists; absent = always. */

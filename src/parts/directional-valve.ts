@@ -9,8 +9,7 @@ import { valveElements } from './valve-paths.ts';
 
 const LOSS = lossSettings('40 L/min', '5 bar');
 
-const FALLBACK = DEFAULT_VALVE();
-export const valveOf = (part: Part): ValveData => part.valve ?? FALLBACK;
+export const valveOf = (part: Part): ValveData => part.valve ?? DEFAULT_VALVE;
 
 /** What a person or a controller moves it by; coils before hands. */
 const COMMANDS: readonly (readonly [Operator, InputSpec['by']])[] = [

@@ -97,6 +97,15 @@ const PORTS_4 = [...top('A', 'B'), ...bottom('P', 'T')];
 const PORTS_5 = [...top('A', 'B'), ...bottom('T1', 'P', 'T2')];
 const PORTS_6 = [...top('A', 'C2', 'B'), ...bottom('P', 'C1', 'T')];
 
+/** What a directional valve without data of its own is: 4/3, by lever, all ports shut. */
+export const DEFAULT_VALVE: ValveData = {
+  ports: PORTS_4,
+  positions: [position('a', 'P-A', 'B-T'), position('0'), position('b', 'P-B', 'A-T')],
+  left: CENTRED_LEVER.left,
+  right: CENTRED_LEVER.right,
+  rest: 1,
+};
+
 /** The centre conditions on offer for 4/3 valves. */
 export const CENTRES: readonly {
   readonly id: string;
@@ -238,6 +247,3 @@ export const VALVE_FORMS: readonly ReadyMade[] = [
   ...fiveThree(CENTRED_LEVER, ''),
   ...fiveThree(CENTRED_COILS, '-coils'),
 ];
-
-/** What a directional valve without data of its own is: the first of the tray. */
-export const DEFAULT_VALVE = (): ValveData => VALVE_FORMS[0]!.make().valve as ValveData;

@@ -21,7 +21,9 @@ const si = (text: string, quantity: Quantity): number => {
 const problemOf = (text: string, quantity: Quantity): { where: string; what: string; remedy: string } => {
   const parsed = parseQuantity(text, quantity, 'parts[3].settings.flow');
   if (parsed.ok) throw new Error(`"${text}" was read as ${parsed.value}`);
-  return parsed.problems[0]!;
+  const [problem] = parsed.problems;
+  if (!problem) throw new Error('no problem is given');
+  return problem;
 };
 
 // NIST Special Publication 811 (2008), appendix B.8 "Factors for units listed alphabetically",

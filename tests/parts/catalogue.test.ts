@@ -4,6 +4,7 @@ import type { Primitive } from '../../src/base/primitives.ts';
 import type { Part } from '../../src/circuit/model.ts';
 import { CATALOGUE, ENTRIES, kindOf, readyMadeOf, searchCatalogue } from '../../src/parts/catalogue.ts';
 import { PART_GROUPS, type Element, type Look, type PartKind } from '../../src/parts/contract.ts';
+import { need } from './need.ts';
 
 const partOf = (kind: PartKind, made: Pick<Part, 'settings' | 'valve'>): Part => ({
   id: 'X1',
@@ -160,12 +161,12 @@ test.each(made)('$id: every port is touched by the drawing', ({ kind, part }) =>
 });
 
 test('half a turn and a flip keep the ports of a 4/3 valve within the same box edges', () => {
-  const entry = readyMadeOf('valve-4/3-shut');
-  const part = partOf(entry!.kind, entry!.readyMade.make());
-  const bounds = entry!.kind.bounds(part);
+  const entry = need(readyMadeOf('valve-4/3-shut'));
+  const part = partOf(entry.kind, entry.readyMade.make());
+  const bounds = entry.kind.bounds(part);
   const flipped = placeBox(bounds, { at: { x: 0, y: 0 }, turn: 0, flip: true });
   expect(flipped.width).toBe(bounds.width);
-  expect(entry!.kind.ports(part).map((port) => [port.id, port.at.x, port.at.y])).toEqual([
+  expect(entry.kind.ports(part).map((port) => [port.id, port.at.x, port.at.y])).toEqual([
     ['A', -1, -2],
     ['B', 1, -2],
     ['P', -1, 2],

@@ -2,6 +2,7 @@ import { expect, test } from 'vitest';
 import type { Circuit, Connection, Part } from '../../src/circuit/model.ts';
 import { CATALOGUE } from '../../src/parts/catalogue.ts';
 import { checkParts, nearestKinds } from '../../src/parts/check.ts';
+import { need } from './need.ts';
 
 const PUMP: Part = { id: 'P1', kind: 'fixed-pump' };
 const TANK: Part = { id: 'T1', kind: 'tank' };
@@ -20,7 +21,7 @@ const circuit = (parts: readonly Part[], connections: readonly Connection[] = []
 const only = (given: Circuit) => {
   const found = checkParts(given);
   expect(found).toHaveLength(1);
-  return found[0]!;
+  return need(found[0]);
 };
 
 test('a sound circuit has nothing to report', () => {

@@ -1,8 +1,8 @@
 import { expect, test } from 'vitest';
 import type { Part } from '../../src/circuit/model.ts';
-import { kindOf } from '../../src/parts/catalogue.ts';
 import type { ActuatorElement } from '../../src/parts/contract.ts';
 import { areasOf } from '../../src/parts/cylinder-body.ts';
+import { needKind } from './need.ts';
 
 const partOf = (kind: string, settings: Part['settings']): Part => ({
   id: 'C1',
@@ -10,12 +10,12 @@ const partOf = (kind: string, settings: Part['settings']): Part => ({
   ...(settings ? { settings } : {}),
 });
 function actuator(kind: string, settings: Part['settings'] = {}): ActuatorElement {
-  const element = kindOf(kind)!.elements(partOf(kind, settings))[0];
+  const element = needKind(kind).elements(partOf(kind, settings))[0];
   if (element?.type !== 'actuator') throw new Error('no actuator');
   return element;
 }
 const problems = (kind: string, settings: Part['settings']): string[] =>
-  (kindOf(kind)!.check?.(partOf(kind, settings)) ?? []).map((problem) => `${problem.where}: ${problem.what}`);
+  (needKind(kind).check?.(partOf(kind, settings)) ?? []).map((problem) => `${problem.where}: ${problem.what}`);
 
 // Bores and rods of ISO 3320 (formerly ISO 7181; classes from memory); φ = A/a follows from the diameters.
 test.each([
@@ -111,7 +111,7 @@ test('a load without a direction, and a direction without a load, are pointed ou
 });
 
 test('the piston goes from end to end with the stroke', () => {
-  const kind = kindOf('cylinder')!;
+  const kind = needKind('cylinder');
   const shift = (stroke: number): number => {
     const group = kind.draw(partOf('cylinder', {}), { stroke }).find((each) => each.type === 'group');
     return group?.type === 'group' ? group.shift.x : NaN;

@@ -1,11 +1,11 @@
 import { expect, test } from 'vitest';
 import type { Part, Setting } from '../../src/circuit/model.ts';
-import { kindOf } from '../../src/parts/catalogue.ts';
 import type { Element } from '../../src/parts/contract.ts';
+import { needKind } from './need.ts';
 
 const partOf = (kind: string, settings: Readonly<Record<string, Setting>> = {}): Part => ({ id: 'X', kind, settings });
 const elements = (kind: string, settings?: Readonly<Record<string, Setting>>): readonly Element[] =>
-  kindOf(kind)!.elements(partOf(kind, settings));
+  needKind(kind).elements(partOf(kind, settings));
 const paths = (kind: string, settings?: Readonly<Record<string, Setting>>): string[] =>
   elements(kind, settings).map((element) => {
     if (element.type !== 'path') return element.type;
@@ -59,7 +59,7 @@ test.each([
   ['shut-off-valve', ['open', 'shut'], 'hand'],
   ['quick-coupling', ['joined', 'apart'], 'coupling'],
 ])('%s is an input that stays where it is left', (kind, positions, by) => {
-  expect(kindOf(kind)!.input?.(partOf(kind))).toEqual({ positions, by, coils: [] });
+  expect(needKind(kind).input?.(partOf(kind))).toEqual({ positions, by, coils: [] });
   expect(elements(kind)).toMatchObject([{ from: 'A', to: 'B', way: 'both', positions: [0] }]);
 });
 
@@ -75,13 +75,13 @@ test('plug, gauge and junction let nothing through of themselves', () => {
 test('only valves, shut-offs and couplings are inputs', () => {
   const inputs = ['directional-valve', 'shut-off-valve', 'quick-coupling'];
   for (const kind of ['fixed-pump', 'relief-valve', 'cylinder', 'lock-check', 'throttle'])
-    expect(kindOf(kind)!.input).toBeUndefined();
-  for (const kind of inputs) expect(kindOf(kind)!.input?.(partOf(kind))).toBeDefined();
+    expect(needKind(kind).input).toBeUndefined();
+  for (const kind of inputs) expect(needKind(kind).input?.(partOf(kind))).toBeDefined();
 });
 
 test('ports left open say what that means and what to do', () => {
   const open = (kind: string, id: string) =>
-    kindOf(kind)!
+    needKind(kind)
       .ports(partOf(kind))
       .find((port) => port.id === id)?.leftOpen;
   expect(open('fixed-pump', 'S')).toMatchObject({

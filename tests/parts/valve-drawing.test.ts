@@ -6,13 +6,14 @@ import { drawValve, valveBounds, valveReach } from '../../src/parts/valve-drawin
 import { VALVE_FORMS } from '../../src/parts/valve-forms.ts';
 import { frameOf } from '../../src/parts/valve-frame.ts';
 import { placeOperators } from '../../src/parts/valve-operators.ts';
+import { need } from './need.ts';
 
 type Group = Extract<Primitive, { type: 'group' }>;
 const groups = (list: readonly Primitive[], role: Group['role']): Group[] =>
   list.flatMap((each) =>
     each.type === 'group' ? [...(each.role === role ? [each] : []), ...groups(each.children, role)] : [],
   );
-const valve = (id: string): ValveData => VALVE_FORMS.find((form) => form.id === id)!.make().valve!;
+const valve = (id: string): ValveData => need(VALVE_FORMS.find((form) => form.id === id)?.make().valve);
 const pens = (group: Group): Set<string> =>
   new Set(
     group.children.flatMap((each) =>
@@ -27,11 +28,11 @@ test.each([
   [2, 2],
 ])('position %s puts box %d to the ports, and only that one is active', (position, box) => {
   const drawn = drawValve(valve('valve-4/3-bypass'), position);
-  const [strip] = groups(drawn, 'strip');
+  const strip = need(groups(drawn, 'strip')[0]);
   const boxes = groups(drawn, 'box');
   expect(boxes.map((each) => each.index)).toEqual([0, 1, 2]);
   boxes.forEach((each) => {
-    const atPorts = strip!.shift.x + each.shift.x === 0;
+    const atPorts = strip.shift.x + each.shift.x === 0;
     expect(atPorts).toBe(each.index === box);
     expect([...pens(each)]).toEqual([atPorts ? 'active' : 'idle']);
   });
@@ -44,17 +45,17 @@ test('the strip slides 4 M a position for two ports an edge, more for more ports
 });
 
 test('a shut port is a stub of 1 M with a bar of 1.2 M', () => {
-  const box = groups(drawValve(valve('valve-4/3-shut')), 'box')[1]!;
+  const box = need(groups(drawValve(valve('valve-4/3-shut')), 'box')[1]);
   const lines = box.children.flatMap((each) => (each.type === 'polyline' ? [each.points] : []));
-  const length = (points: readonly { x: number; y: number }[]): number =>
-    Math.hypot(points[1]!.x - points[0]!.x, points[1]!.y - points[0]!.y);
+  const length = ([from, to]: readonly { x: number; y: number }[]): number =>
+    Math.hypot(need(to).x - need(from).x, need(to).y - need(from).y);
   expect(lines.map(length).map((each) => each.toFixed(2))).toEqual(
     Array.from({ length: 4 }, () => ['1.00', '1.20']).flat(),
   );
 });
 
 test('open paths between edges carry a head at their second port', () => {
-  const box = groups(drawValve(valve('valve-4/3-shut')), 'box')[2]!;
+  const box = need(groups(drawValve(valve('valve-4/3-shut')), 'box')[2]);
   const tips = box.children.flatMap((each) => (each.type === 'polyline' && each.closed ? [each.points[0]] : []));
   expect(tips).toEqual([
     { x: 1, y: -2 },
@@ -64,7 +65,7 @@ test('open paths between edges carry a head at their second port', () => {
 
 test('what is drawn shows every port of every position: no box is empty', () => {
   for (const form of VALVE_FORMS) {
-    for (const box of groups(drawValve(form.make().valve!), 'box')) expect(pens(box).size, form.id).toBe(1);
+    for (const box of groups(drawValve(need(form.make().valve)), 'box')) expect(pens(box).size, form.id).toBe(1);
   }
 });
 
@@ -98,7 +99,7 @@ test('operators of one end never lie over each other', () => {
 test('the reach covers the outline at rest', () => {
   for (const { kind, readyMade } of ENTRIES) {
     if (kind.kind !== 'directional-valve') continue;
-    const data = readyMade.make().valve!;
+    const data = need(readyMade.make().valve);
     const rest = valveBounds(data);
     const reach = valveReach(data);
     expect(reach.x).toBeLessThanOrEqual(rest.x);

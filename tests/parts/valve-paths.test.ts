@@ -69,7 +69,7 @@ test('paths that cannot be read or name strange ports are left out', () => {
 /** The plain reading: which port reaches which in one step, position by position, straight from the text. */
 function plainReading(data: ValveData, position: number): Set<string> {
   const steps = new Set<string>();
-  for (const text of data.positions[position]!.paths) {
+  for (const text of data.positions[position]?.paths ?? []) {
     const mark = text.includes('~') ? 'throttled' : 'open';
     const ports = text.split(/[-~>]+/);
     for (const from of ports) {
