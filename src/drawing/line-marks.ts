@@ -24,6 +24,7 @@ const COLOUR: Readonly<Record<LineLook['class'], PathPen | 'ink'>> = {
 };
 /** Modules. */
 const CHEVRON_STEP = 3;
+const CHEVRON_ROOM = 2.6;
 const CHEVRON_HALF = 0.65;
 const CHEVRON_DEPTH = 0.75;
 const BAR_HALF = 0.7;
@@ -83,14 +84,15 @@ function towards(a: Point, b: Point, distance: number): Point {
   return { x: a.x + (b.x - a.x) * share, y: a.y + (b.y - a.y) * share };
 }
 
-/** Open arrow heads, spread evenly over each straight run, pointing along the path. */
+/** Open arrow heads, spread evenly over each straight run, pointing along the path; a path of short runs has one on its longest. */
 function chevrons(path: readonly Point[]): Point[][] {
+  const longest = Math.max(...path.slice(1).map((b, i) => lengthOf(path[i] as Point, b)));
   const out: Point[][] = [];
   for (let i = 1; i < path.length; i++) {
     const a = path[i - 1] as Point;
     const b = path[i] as Point;
     const length = lengthOf(a, b);
-    if (length < 2) continue;
+    if (length < Math.min(longest, CHEVRON_ROOM) || length < 1) continue;
     const count = Math.max(1, Math.floor(length / CHEVRON_STEP));
     for (let k = 0; k < count; k++) {
       const tip = towards(a, b, ((k + 0.5) * length) / count + CHEVRON_DEPTH / 2);

@@ -66,7 +66,7 @@ class Plan {
   placeSupply(): void {
     const rest = [...this.#parts.values()].filter((p) => !this.#taken.has(p.id) && p.kind !== TANK);
     const pumps = rest.filter((p) => PUMPS.has(p.kind));
-    const groups = pumps.map((pump) => ({ pump, ...this.#hanging(pump) }));
+    const groups = pumps.map((pump) => ({ pump, ...this.#hanging(pump) })).sort((a, b) => a.from - b.from);
     const loose = rest.filter((p) => !this.#taken.has(p.id));
     const tallest = Math.max(0, ...groups.map((g) => this.#height([g.pump]) + g.passed.reduce((sum, p) => sum + this.#height([p]) + SPACE, 0)));
     const floor = this.#valveBottom + SPACE + 3 + ROW_SPACE + Math.max(tallest, this.#height(rest) + (rest.some(hangsUp) ? this.#height(pumps) + SPACE : 0));
@@ -76,7 +76,8 @@ class Plan {
       this.at.set(part.id, { x: Math.round(x - box.x), y: Math.round(bottom - box.y - box.height) });
       return box.width;
     };
-    for (const { pump, passed, beside } of groups) {
+    for (const { pump, passed, beside, from } of groups) {
+      x = Math.max(x, from);
       let widest = stand(pump, floor);
       let y = floor - this.#height([pump]);
       const axis = (this.at.get(pump.id) as Point).x;
@@ -134,20 +135,24 @@ class Plan {
     return columns;
   }
 
-  #hanging(pump: Part): { passed: Part[]; beside: Part[] } {
+  /** `from`: where the first column begins that the pump feeds. */
+  #hanging(pump: Part): { passed: Part[]; beside: Part[]; from: number } {
     this.#taken.add(pump.id);
     const passed: Part[] = [];
     const beside: Part[] = [];
+    let from = Infinity;
     const stop = (id: string): boolean => this.#taken.has(id) || [TANK, VALVE, RELIEF].includes(this.#parts.get(id)?.kind ?? '');
     for (const found of reach(this.#all, pump.id, () => true, stop)) {
       const part = this.#parts.get(found.part);
+      const column = this.at.get(found.part);
+      if (part && column) from = Math.min(from, column.x + partReach(part).x);
       if (!part || this.#taken.has(part.id) || part.kind === TANK) continue;
       this.#taken.add(part.id);
       const ways = placedPorts(part).length;
       const suction = found.through === 'S';
       (ways >= 2 && part.kind !== RELIEF && !suction ? passed : beside).push(part);
     }
-    return { passed, beside };
+    return { passed, beside, from: Number.isFinite(from) ? Math.floor(from) : 0 };
   }
 
   /** Stands the parts side by side about the axis, bottom edges on `bottom`. */

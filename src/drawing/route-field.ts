@@ -1,5 +1,5 @@
 import type { Box, Point } from '../base/points.ts';
-import { inflate, overlaps } from './geometry.ts';
+import { inflate, overlaps, segmentTouches } from './geometry.ts';
 
 /** A straight piece of a route that is already laid. */
 export interface LaidSegment {
@@ -53,8 +53,9 @@ export const MARGIN = 1;
 
 export function buildField(input: FieldInput): Field {
   const { window, line } = input;
-  const boxes = input.boxes.filter((box) => overlaps(inflate(box, MARGIN + 0.01), window));
-  const segments = input.segments.filter((s) => overlaps(segmentBox(s), window));
+  const seen = inflate(window, MARGIN + 0.01);
+  const boxes = input.boxes.filter((box) => overlaps(box, seen));
+  const segments = input.segments.filter((s) => segmentTouches(s.a, s.b, seen));
   const xs = new Set<number>();
   const ys = new Set<number>();
   for (const box of boxes) {
@@ -98,13 +99,6 @@ export function buildField(input: FieldInput): Field {
   for (const s of segments) markSegment(field, s, s.line === line);
   return field;
 }
-
-const segmentBox = (s: LaidSegment): Box => ({
-  x: Math.min(s.a.x, s.b.x) - 1.01,
-  y: Math.min(s.a.y, s.b.y) - 1.01,
-  width: Math.abs(s.a.x - s.b.x) + 2.02,
-  height: Math.abs(s.a.y - s.b.y) + 2.02,
-});
 
 /** First index whose coordinate is not below `value`. */
 export function lowerBound(list: readonly number[], value: number): number {

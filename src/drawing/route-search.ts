@@ -7,7 +7,9 @@ export type Direction = 0 | 1 | 2 | 3;
 export const opposite = (d: Direction): Direction => ((d + 2) % 4) as Direction;
 
 /** What a route pays, in modules of length. A line through a part is the last resort. */
-const COST = { bend: 6, joinedBend: 2, cross: 3, corner: 25, foreign: 40, margin: 4, box: 600, own: 0.45 } as const;
+const COST = { bend: 6, joinedBend: 3, cross: 3, corner: 25, foreign: 40, margin: 4, box: 600, own: 0.7, atEnd: 1.5, offMiddle: 0.01 } as const;
+/** Among equal estimates the nearer to the goal goes first. */
+const EAGER = 1 + 1e-7;
 
 /** Routes that cost this much run through a part. */
 export const THROUGH_PART = COST.box * 0.5;
@@ -42,11 +44,14 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
   const perBend = field.joins ? COST.joinedBend : COST.bend;
   const guess = (node: number, heading: Direction): number => {
     const dx = leg.to.x - (xs[node % width] as number);
-    const dy = leg.to.y - (ys[Math.floor(node / width)] as number);
-    const length = (Math.abs(dx) + Math.abs(dy)) * perModule;
-    const straight = (dx === 0 && (dy === 0 || heading % 2 === 1)) || (dy === 0 && heading % 2 === 0);
-    return length + (straight ? 0 : perBend);
+    const dy = leg.to.y - (ys[(node / width) | 0] as number);
+    return ((Math.abs(dx) + Math.abs(dy)) * perModule + leastBends(dx, dy, heading, leg.arrive) * perBend) * EAGER;
   };
+  // Bends right at a port crowd its letter and marks; of equal jogs the middle one reads best.
+  const fromPort = leg.headings.length === 1 ? COST.atEnd : 0;
+  const middle = { x: Math.round((leg.from.x + leg.to.x) / 2), y: Math.round((leg.from.y + leg.to.y) / 2) };
+  const offMiddle = (node: number, way: Direction): number =>
+    COST.offMiddle * Math.abs(way % 2 === 0 ? (ys[(node / width) | 0] as number) - middle.y : (xs[node % width] as number) - middle.x);
   for (const heading of leg.headings) {
     const state = start * 4 + heading;
     best[state] = 0;
@@ -63,7 +68,7 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
     const node = state >> 2;
     const heading = (state & 3) as Direction;
     if (node === goal) {
-      const last = leg.arrive === undefined || leg.arrive === heading ? 0 : leg.arrive === opposite(heading) ? Infinity : COST.bend;
+      const last = leg.arrive === undefined || leg.arrive === heading ? 0 : leg.arrive === opposite(heading) ? Infinity : COST.bend + COST.atEnd;
       if (cost + last < reachedCost) {
         reachedCost = cost + last;
         reached = state;
@@ -75,7 +80,8 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
       if (way === opposite(heading)) continue;
       const next = neighbour(field, node, way);
       if (next < 0) continue;
-      const total = cost + turnCost(field, node, heading, way) + stepCost(field, node, next, way);
+      const turning = way === heading ? 0 : turnCost(field, node) + (node === start ? fromPort : offMiddle(node, way));
+      const total = cost + turning + stepCost(field, node, next, way);
       const nextState = next * 4 + way;
       if (total < (best[nextState] as number)) {
         best[nextState] = total;
@@ -88,9 +94,26 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
   const points: Point[] = [];
   for (let state = reached; state >= 0; state = came[state] as number) {
     const node = state >> 2;
-    points.push({ x: xs[node % width] as number, y: ys[Math.floor(node / width)] as number });
+    points.push({ x: xs[node % width] as number, y: ys[(node / width) | 0] as number });
   }
   return { points: points.reverse(), heading: (reached & 3) as Direction, cost: reachedCost };
+}
+
+/** Fewest turns to the goal at (dx, dy), the turn into `arrive` on the goal counted; never too many. */
+export function leastBends(dx: number, dy: number, heading: Direction, arrive: Direction | undefined): number {
+  const flat = heading % 2 === 0;
+  const ahead = (flat ? dx : dy) * (heading < 2 ? 1 : -1);
+  const beside = flat ? dy : dx;
+  const turnsTo = (want: Direction): number => {
+    if (want === heading) return beside === 0 && ahead >= 0 ? 0 : beside !== 0 && ahead >= 0 ? 2 : 4;
+    if (want === opposite(heading)) return beside !== 0 ? 2 : ahead === 0 ? 2 : 4;
+    if (beside === 0) return ahead >= 0 ? 1 : 3;
+    const towards = (want < 2 ? 1 : -1) * beside > 0;
+    return towards && ahead >= 0 ? 1 : 3;
+  };
+  if (arrive !== undefined) return turnsTo(arrive);
+  if (beside === 0) return ahead >= 0 ? 0 : 3;
+  return ahead >= 0 ? 1 : 2;
 }
 
 function nodeAt(field: Field, p: Point): number | undefined {
@@ -113,9 +136,8 @@ function neighbour(field: Field, node: number, way: Direction): number {
   }
 }
 
-function turnCost(field: Field, node: number, heading: Direction, way: Direction): number {
+function turnCost(field: Field, node: number): number {
   const flags = field.nodes[node] as number;
-  if (heading === way) return 0;
   // A corner on another line would read as a joint.
   const touch = (flags & (FLAG.foreignAcross | FLAG.foreignUpright)) !== 0 ? COST.corner : 0;
   return touch + ((flags & FLAG.own) !== 0 ? COST.joinedBend : COST.bend);
@@ -128,7 +150,7 @@ function stepCost(field: Field, node: number, next: number, way: Direction): num
   const flags = (flat ? field.across[first] : field.upright[first]) as number;
   const length = flat
     ? Math.abs((field.xs[next % width] as number) - (field.xs[node % width] as number))
-    : Math.abs((field.ys[Math.floor(next / width)] as number) - (field.ys[Math.floor(node / width)] as number));
+    : Math.abs((field.ys[(next / width) | 0] as number) - (field.ys[(node / width) | 0] as number));
   let cost = length * ((flags & FLAG.own) !== 0 ? COST.own : 1);
   if ((flags & FLAG.box) !== 0) cost += COST.box;
   else if ((flags & FLAG.margin) !== 0) cost += COST.margin * length;
@@ -145,53 +167,50 @@ class Heap {
   readonly #states: number[] = [];
 
   push(cost: number, state: number): void {
-    let at = this.#costs.length;
-    this.#costs.push(cost);
-    this.#states.push(state);
+    const costs = this.#costs;
+    const states = this.#states;
+    let at = costs.length;
+    costs.push(cost);
+    states.push(state);
     while (at > 0) {
       const up = (at - 1) >> 1;
-      if (!this.#before(at, up)) break;
-      this.#swap(at, up);
+      const other = costs[up] as number;
+      if (other < cost || (other === cost && (states[up] as number) <= state)) break;
+      costs[at] = other;
+      states[at] = states[up] as number;
       at = up;
     }
+    costs[at] = cost;
+    states[at] = state;
   }
 
   /** −1 when empty. */
   pop(): number {
-    if (this.#states.length === 0) return -1;
-    const top = this.#states[0] as number;
-    const cost = this.#costs.pop() as number;
-    const state = this.#states.pop() as number;
-    if (this.#states.length > 0) {
-      this.#costs[0] = cost;
-      this.#states[0] = state;
-      this.#sink();
+    const costs = this.#costs;
+    const states = this.#states;
+    if (states.length === 0) return -1;
+    const top = states[0] as number;
+    const cost = costs.pop() as number;
+    const state = states.pop() as number;
+    const size = states.length;
+    if (size === 0) return top;
+    let at = 0;
+    for (let down = 1; down < size; down = 2 * at + 1) {
+      if (down + 1 < size && before(costs, states, down + 1, down)) down++;
+      const other = costs[down] as number;
+      if (cost < other || (cost === other && state < (states[down] as number))) break;
+      costs[at] = other;
+      states[at] = states[down] as number;
+      at = down;
     }
+    costs[at] = cost;
+    states[at] = state;
     return top;
   }
+}
 
-  #sink(): void {
-    const size = this.#states.length;
-    for (let at = 0; ; ) {
-      let least = at;
-      for (const down of [2 * at + 1, 2 * at + 2]) if (down < size && this.#before(down, least)) least = down;
-      if (least === at) return;
-      this.#swap(at, least);
-      at = least;
-    }
-  }
-
-  #before(a: number, b: number): boolean {
-    const x = this.#costs[a] as number;
-    const y = this.#costs[b] as number;
-    return x < y || (x === y && (this.#states[a] as number) < (this.#states[b] as number));
-  }
-
-  #swap(a: number, b: number): void {
-    for (const list of [this.#costs, this.#states]) {
-      const held = list[a] as number;
-      list[a] = list[b] as number;
-      list[b] = held;
-    }
-  }
+function before(costs: readonly number[], states: readonly number[], a: number, b: number): boolean {
+  const x = costs[a] as number;
+  const y = costs[b] as number;
+  return x < y || (x === y && (states[a] as number) < (states[b] as number));
 }

@@ -2,7 +2,7 @@ import type { Box, Point, Side } from '../base/points.ts';
 import { vector } from '../base/points.ts';
 import type { Circuit, Connection, Part } from '../circuit/model.ts';
 import type { Routes } from './geometry.ts';
-import { boxOfPoints, inflate, overlaps, portOf, routeTouches } from './geometry.ts';
+import { boxOfPoints, inflate, overlaps, portOf, routeTouches, segmentTouches } from './geometry.ts';
 import type { LineNumbers } from './lines.ts';
 import { lineNumbers } from './lines.ts';
 import type { LaidSegment } from './route-field.ts';
@@ -168,14 +168,14 @@ function facing(sheet: RoutingSheet, from: End, to: End): boolean {
   for (const [id, box] of sheet.boxes) {
     if (id !== a.ref.part && id !== b.ref.part && overlaps(box, path)) return false;
   }
-  const line = [...sheet.laid].filter((s) => overlaps(inflate(boxOfPoints([s.a, s.b]) as Box, 0.01), path));
-  return line.length === 0 || along < 2 * MARGIN;
+  const clear = !sheet.laid.some((s) => segmentTouches(s.a, s.b, path));
+  return clear || along < 2 * MARGIN;
 }
 
 function searchAll(sheet: RoutingSheet, connection: Connection, from: End, to: End, via: readonly Point[], window: Box): Found | undefined {
   const field = buildField({
     window,
-    boxes: [...sheet.boxes].filter(([id]) => !isJointEnd(from, id) && !isJointEnd(to, id)).map(([, box]) => box),
+    boxes: [...sheet.boxes].flatMap(([id, box]) => (isJointEnd(from, id) || isJointEnd(to, id) ? [] : [box])),
     segments: sheet.laid,
     line: sheet.lines.get(connection.id) ?? -1,
     points: via,

@@ -225,6 +225,6 @@ test('one route on a sheet of 300 parts takes milliseconds', () => {
     times.push(performance.now() - start);
   }
   times.sort((a, b) => a - b);
-  // Median of nine; generous, as test machines are shared.
-  expect(times[4]).toBeLessThan(25);
+  // The best of nine, as test machines are shared.
+  expect(times[0]).toBeLessThan(10);
 });
