@@ -1,6 +1,5 @@
 import type { NetActuator, Network } from '../../network/network.ts';
 import type { EdgeSet } from './edges.ts';
-import { complement } from './field.ts';
 import type { Field, Spreader } from './field.ts';
 import { takeIn } from './reach.ts';
 import type { Links, PathConditions, Reach } from './reach.ts';
@@ -31,17 +30,26 @@ export function chambersOf(
   s: Spreader,
 ): Chambers {
   const { a, b } = actuator;
-  const all = s.masks.slice(0, s.width);
-  const none = new Uint32Array(s.width);
-  const plane = (field: Field, line: number): Uint32Array => field.slice(line * s.width, (line + 1) * s.width);
+  const { width } = s;
+  const all = s.masks.slice(0, width);
+  const none = new Uint32Array(width);
+  const plane = (field: Field, line: number): Uint32Array => field.slice(line * width, (line + 1) * width);
+  const at = (field: Field, line: number, w: number): number => (line < 0 ? 0 : (field[line * width + w] as number));
 
-  // A search that includes this actuator's own link is exact wherever plain paths say the same;
-  // only where they differ it is worth a search without that link.
-  const doubtful = (field: Field, plain: Field): boolean =>
-    [a, b].some((line) => line >= 0 && differs(field, plain, line, s.width));
+  // The shared searches also pass through this actuator itself. That can mislead only where one side
+  // got its answer from the other one, or a single-acting cylinder from itself; there, search again
+  // without it.
+  const misled = (field: Field, plain: Field, matters: (w: number) => number): boolean => {
+    for (let w = 0; w < width; w++) {
+      const [x, y] = [at(field, a, w), at(field, b, w)];
+      const borrowed = b < 0 ? x & ~at(plain, a, w) : x & y & ~(at(plain, a, w) & at(plain, b, w));
+      if ((borrowed & matters(w)) !== 0) return true;
+    }
+    return false;
+  };
 
   let { exits, softExits, fills } = r;
-  if (doubtful(softExits, r.toTank)) {
+  if (misled(softExits, r.toTank, () => -1)) {
     const start = r.toTank.slice();
     takeIn(net, conditions, s, start, index);
     exits = start.slice();
@@ -49,26 +57,27 @@ export function chambersOf(
     softExits = start;
     s.spread(softExits, edges.backward, { links: links.pull, without: index });
   }
-  if (doubtful(fills, r.fromSource)) {
-    fills = r.fromSource.slice();
-    net.lines.forEach((line, l) => {
-      if (line.tank) s.seed(fills, l);
-    });
+  // What fills a chamber matters only where nothing feeds the actuator and something lets it go.
+  const free = (w: number): number =>
+    ~at(r.anyPressed, a, w) & ~at(r.anyPressed, b, w) & (b < 0 ? -1 : at(exits, a, w) | at(exits, b, w));
+  if (misled(fills, r.plainFills, free)) {
+    fills = r.plainFills.slice();
     s.spread(fills, edges.forward, { links: links.push, without: index, fromTank: true });
   }
 
+  // Oil that can also run to tank needs no loop, so only states with both sides shut off from it count.
   const across = (from: number, to: number): Uint32Array => {
     if (from < 0 || to < 0) return none;
     if (from === to) return all;
     const field = s.field();
     let any = 0;
-    for (let w = 0; w < s.width; w++) {
-      const word = ~(r.toTank[from * s.width + w] as number) & (all[w] as number);
-      field[from * s.width + w] = word;
+    for (let w = 0; w < width; w++) {
+      const word = ~at(r.toTank, from, w) & ~at(r.toTank, to, w) & (all[w] as number);
+      field[from * width + w] = word;
       any |= word;
     }
     if (any === 0) return none;
-    s.spread(field, edges.forward, { gate: complement(r.toTank, s.masks, s.width) });
+    s.spread(field, edges.forward, { gate: r.notToTank });
     return plane(field, to);
   };
 
@@ -82,9 +91,4 @@ export function chambersOf(
     fromBtoA: across(b, a),
     fromAtoB: across(a, b),
   };
-}
-
-function differs(field: Field, plain: Field, line: number, width: number): boolean {
-  for (let i = line * width; i < (line + 1) * width; i++) if (field[i] !== plain[i]) return true;
-  return false;
 }

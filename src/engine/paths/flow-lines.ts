@@ -38,7 +38,7 @@ export function carryingLines(net: Network, edges: EdgeSet, conditions: PathCond
   for (const line of sourceLines(net, conditions)) if (line >= 0) s.seed(ends, line);
 
   s.spread(taken, edges.backward, { gate: r.fromSource });
-  pruneDeadEnds(taken, ends, neighbours(net.lines.length, edges.forward), block);
+  pruneDeadEnds(taken, ends, neighboursOf(edges), block);
 
   s.spread(intoDisplaced, edges.backward, { gate: r.notFreeToTank });
   const displaced = intoDisplaced;
@@ -49,6 +49,16 @@ export function carryingLines(net: Network, edges: EdgeSet, conditions: PathCond
 interface Neighbour {
   readonly line: number;
   readonly masks: readonly number[];
+}
+
+const KNOWN = new WeakMap<EdgeSet, Neighbour[][]>();
+
+function neighboursOf(edges: EdgeSet): Neighbour[][] {
+  const known = KNOWN.get(edges);
+  if (known) return known;
+  const made = neighbours(edges.forward.start.length - 1, edges.forward);
+  KNOWN.set(edges, made);
+  return made;
 }
 
 /** Lines joined to each line by a path in either direction, with the masks of all those paths. */

@@ -18,6 +18,7 @@ export interface Reach {
   readonly toTank: Field;
   readonly freeToTank: Field;
   readonly notFreeToTank: Field;
+  readonly notToTank: Field;
   /** Per source: lines it presses on, that is, none of them freely open to tank on the way. */
   readonly pressed: readonly Field[];
   /** The same through free paths only. */
@@ -35,6 +36,8 @@ export interface Reach {
   readonly softExits: Field;
   /** Can give oil to a growing chamber. */
   readonly fills: Field;
+  /** The same without ways through actuators. */
+  readonly plainFills: Field;
 }
 
 export interface Links {
@@ -125,8 +128,10 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   takesOil(freeExits, -1);
   s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull });
 
-  const fills = fromSource.slice();
-  for (const line of tanks) s.seed(fills, line);
+  const plainFills = fromSource.slice();
+  for (const line of tanks) s.seed(plainFills, line);
+  s.spread(plainFills, edges.forward, { fromTank: true });
+  const fills = plainFills.slice();
   s.spread(fills, edges.forward, { links: links.push, fromTank: true });
 
   return {
@@ -144,6 +149,8 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
     freeExits,
     softExits,
     fills,
+    plainFills,
+    notToTank: complement(toTank, s.masks, s.width),
   };
 }
 

@@ -24,15 +24,22 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
   const { width, motion, all, hunts } = block;
   const verdicts = ACTUATOR_VERDICTS.map(() => new Uint32Array(width));
   const notes = ACTUATOR_NOTES.map(() => new Uint32Array(width));
-  const put = (verdict: ActuatorVerdict, w: number, bits: number): void => {
-    const plane = verdicts[ACTUATOR_VERDICTS.indexOf(verdict)] as Uint32Array;
-    plane[w] = (plane[w] as number) | bits;
-  };
-  const note = (name: ActuatorNote, w: number, bits: number): void => {
-    const plane = notes[ACTUATOR_NOTES.indexOf(name)] as Uint32Array;
-    plane[w] = (plane[w] as number) | bits;
-  };
+  const planeOf = (verdict: ActuatorVerdict): Uint32Array => verdicts[ACTUATOR_VERDICTS.indexOf(verdict)] as Uint32Array;
+  const noteOf = (name: ActuatorNote): Uint32Array => notes[ACTUATOR_NOTES.indexOf(name)] as Uint32Array;
   const words = motionWords(actuator);
+  const [goesOut, goesIn, pushedOut, pushedIn] = [planeOf(words.out), planeOf(words.in), planeOf(words.pushedOut), planeOf(words.pushedIn)];
+  const [undetermined, restsOnPressure, atStop] = [planeOf('undetermined'), planeOf('rests on pressure'), planeOf('at stop')];
+  const [held, heldOneWay, floats] = [planeOf('held'), planeOf('held one way'), planeOf('floats')];
+  const [suctionOut, suctionIn] = [noteOf('outward by suction only'), noteOf('inward by suction only')];
+  const [voidForms, freeOutward, freeInward] = [noteOf('void forms'), noteOf('free outward'), noteOf('free inward')];
+  let left = 0;
+  /** Gives the verdict to those states that have none yet; returns them. */
+  const decide = (plane: Uint32Array, w: number, bits: number): number => {
+    const now = bits & left;
+    plane[w] = (plane[w] as number) | now;
+    left &= ~now;
+    return now;
+  };
   const ch = motion.chambers[index] as Chambers;
   const rests = motion.rests[index] as readonly Uint32Array[];
   const place = conditions.places[index];
@@ -43,14 +50,7 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
   const breaksVacuum = (area: number): number => (actuator.push.size > ATMOSPHERE * area ? -1 : 0);
 
   for (let w = 0; w < width; w++) {
-    // `left` shrinks as states get their verdict.
-    let left = all[w] as number;
-    const decide = (verdict: ActuatorVerdict, bits: number): number => {
-      const now = bits & left;
-      put(verdict, w, now);
-      left &= ~now;
-      return now;
-    };
+    left = all[w] as number;
     const goOut = motion.out[index]?.[w] as number;
     const goIn = motion.in[index]?.[w] as number;
     const fedA = motion.fedA[index]?.[w] as number;
@@ -64,19 +64,19 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     let resting = 0;
     for (const plane of rests) resting |= plane[w] as number;
 
-    decide('undetermined', hunts[w] as number);
-    decide('rests on pressure', resting);
-    decide(words.out, goOut);
-    decide(words.in, goIn);
+    decide(undetermined, w, hunts[w] as number);
+    decide(restsOnPressure, w, resting);
+    decide(goesOut, w, goOut);
+    decide(goesIn, w, goIn);
 
     const fed = fedA | fedB;
     // Pressure may also come through another actuator that pushes against this one.
     const under = block.reach.underPressure;
     const underA = under[actuator.a * width + w] as number;
     const underB = actuator.b < 0 ? 0 : (under[actuator.b * width + w] as number);
-    decide('at stop', (underA & ~underB & ~notOut) | (underB & ~underA & ~notIn));
+    decide(atStop, w, (underA & ~underB & ~notOut) | (underB & ~underA & ~notIn));
     const balanced = equal & fedA & fedB & loopBA & loopAB;
-    decide('held', fed & ~balanced);
+    decide(held, w, fed & ~balanced);
 
     const freeOut = ((exitB & fillA) | (loopBA & (fillA | equal))) & notOut;
     const freeIn = ((exitA & (fillB | loopAB)) | (equal & loopAB)) & notIn;
@@ -84,23 +84,23 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     const suckOut = (exitB | loopBA) & ~freeOut & notOut;
     const suckIn = exitA & ~freeIn & notIn;
 
-    const both = actuator.push.way === 'both' ? -1 : 0;
-    const movesOut = push('out') & ~both & (freeOut | (suckOut & breaksVacuum(actuator.areaA)));
-    const movesIn = push('in') & ~both & (freeIn | (suckIn & breaksVacuum(actuator.areaB)));
+    const opposed = actuator.push.way === 'both' ? -1 : 0;
+    const movesOut = push('out') & ~opposed & (freeOut | (suckOut & breaksVacuum(actuator.areaA)));
+    const movesIn = push('in') & ~opposed & (freeIn | (suckIn & breaksVacuum(actuator.areaB)));
     // A load that has to push its oil through another actuator: whether it can is for the pressures.
     const tank = block.reach.toTank;
     const tankA = tank[actuator.a * width + w] as number;
     const tankB = actuator.b < 0 ? -1 : (tank[actuator.b * width + w] as number);
-    decide('rests on pressure', (both & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB));
-    note('void forms', w, (decide(words.pushedOut, movesOut) & ~freeOut) | (decide(words.pushedIn, movesIn) & ~freeIn));
+    decide(restsOnPressure, w, (opposed & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB));
+    voidForms[w] = (decide(pushedOut, w, movesOut) & ~freeOut) | (decide(pushedIn, w, movesIn) & ~freeIn);
 
-    const held = decide('held', ~freeOut & ~freeIn);
-    const oneWay = decide('held one way', freeOut ^ freeIn);
-    note('outward by suction only', w, (held | (oneWay & freeIn)) & suckOut);
-    note('inward by suction only', w, (held | (oneWay & freeOut)) & suckIn);
-    note('free outward', w, oneWay & freeOut);
-    note('free inward', w, oneWay & freeIn);
-    decide('floats', -1);
+    const both = decide(held, w, ~freeOut & ~freeIn);
+    const oneWay = decide(heldOneWay, w, freeOut ^ freeIn);
+    suctionOut[w] = (both | (oneWay & freeIn)) & suckOut;
+    suctionIn[w] = (both | (oneWay & freeOut)) & suckIn;
+    freeOutward[w] = oneWay & freeOut;
+    freeInward[w] = oneWay & freeIn;
+    decide(floats, w, -1);
   }
   return { verdicts, notes };
 }

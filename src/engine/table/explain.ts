@@ -197,6 +197,7 @@ function restsOn(state: OneState, index: number, actuator: NetActuator): { why: 
     for (const word of ['held', words.pushedIn, words.pushedOut] as const) candidates.add(word);
     return { why: 'A load pushes it, and its oil has to go through another actuator.', candidates: [...candidates] };
   }
+  if (candidates.size < 2) for (const word of [words.out, words.in, 'held'] as const) candidates.add(word);
   return { why: reasons.map((name) => REST_TEXT[name]).join(' '), candidates: [...candidates] };
 }
 

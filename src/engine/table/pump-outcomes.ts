@@ -5,6 +5,8 @@ import type { PathConditions } from '../paths/reach.ts';
 import { PUMP_VERDICTS } from './words.ts';
 import type { PumpVerdict } from './words.ts';
 
+const INDEX = Object.fromEntries(PUMP_VERDICTS.map((verdict, i) => [verdict, i])) as Record<PumpVerdict, number>;
+
 /** The verdict of one pump in every state of the block; planes by index of the verdict. */
 export function pumpOutcome(index: number, pump: NetPump, net: Network, block: SettledBlock, conditions: PathConditions): Uint32Array[] {
   const { width, all, reach: r, motion } = block;
@@ -16,7 +18,7 @@ export function pumpOutcome(index: number, pump: NetPump, net: Network, block: S
   for (let w = 0; w < width; w++) {
     let left = all[w] as number;
     const decide = (verdict: PumpVerdict, bits: number): void => {
-      const plane = verdicts[PUMP_VERDICTS.indexOf(verdict)] as Uint32Array;
+      const plane = verdicts[INDEX[verdict]] as Uint32Array;
       plane[w] = (plane[w] as number) | (bits & left);
       left &= ~bits;
     };

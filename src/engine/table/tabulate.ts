@@ -12,11 +12,11 @@ import { lineOutcomes } from './line-outcomes.ts';
 import { PlanePool, PlaneSheet } from './planes.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
 import type { Plane, TableData } from './table-data.ts';
-import { leftBehind, standingReasons } from './trapped.ts';
+import { leftBehind, leverMoves, standingReasons } from './trapped.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from './words.ts';
 
-/** Words of one block: 16,384 states; small enough for the cache, large enough to hide the overhead. */
-const BLOCK = 512;
+/** Words of one block: 4,096 states; small enough for the cache, large enough to hide the overhead. */
+const BLOCK = 128;
 const CUT_OFF = LINE_CLASSES.indexOf('cut off');
 const FED = LINE_CLASSES.indexOf('fed');
 const LOAD = TRAP_REASONS.indexOf('load');
@@ -46,8 +46,9 @@ export function tabulate(net: Network, conditions: PathConditions, budget: Budge
   const radices = net.inputs.map((input) => input.positions.length);
   const share = conditions.pumpsRunning ? 1 : 0.5;
   const running = runBlocks(net, edges, { ...conditions, pumpsRunning: true }, part(budget, 0, share));
+  const moves = leverMoves(radices, edges.states);
   const left = net.lines.slice(0, net.shown).map((_, line) =>
-    leftBehind(radices, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states),
+    leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states),
   );
   let sheets = running;
   if (conditions.pumpsRunning) {

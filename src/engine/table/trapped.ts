@@ -1,4 +1,4 @@
-import { emptySet, isEmpty, shiftSet } from '../../base/bits.ts';
+import { emptySet } from '../../base/bits.ts';
 import type { BitSet } from '../../base/bits.ts';
 import type { Network } from '../../network/network.ts';
 import type { SettledBlock } from '../paths/block.ts';
@@ -60,33 +60,48 @@ export function standingReasons(
   });
 }
 
-/**
- * States that one move of one lever leads to from a state with this line under pressure, and in which
- * it is cut off. A move from one end to the other passes the centre without stopping there.
- */
-export function leftBehind(radices: readonly number[], cutOff: BitSet | undefined, under: BitSet | undefined, states: number): BitSet {
-  const found = emptySet(states);
-  if (cutOff === undefined || under === undefined || isEmpty(cutOff) || isEmpty(under)) return found;
+/** A move of one lever: how far it shifts the row, and the rows from which it can come. */
+interface Move {
+  readonly by: number;
+  readonly here: BitSet;
+}
+
+/** Every single move of one lever, seen from the state that it leads to. */
+export function leverMoves(radices: readonly number[], states: number): Move[] {
+  const moves: Move[] = [];
   let stride = 1;
   for (let input = radices.length - 1; input >= 0; input--) {
     const radix = radices[input] as number;
     for (let by = 1 - radix; by < radix; by++) {
       if (by === 0) continue;
-      const before = shiftSet(under, by * stride, states);
-      const here = stepMask(radices, input, by, states);
-      for (let w = 0; w < found.length; w++) {
-        found[w] = (found[w] as number) | ((cutOff[w] as number) & (before[w] as number) & (here[w] as number));
-      }
+      let positions = 0;
+      for (let p = 0; p < radix; p++) if (p + by >= 0 && p + by < radix) positions |= 1 << p;
+      moves.push({ by: by * stride, here: positionMask(radices, input, positions, states) });
     }
     stride *= radix;
   }
-  return found;
+  return moves;
 }
 
-/** States from which `input` can stand `by` positions further on. */
-function stepMask(radices: readonly number[], input: number, by: number, states: number): BitSet {
-  const radix = radices[input] as number;
-  let positions = 0;
-  for (let p = 0; p < radix; p++) if (p + by >= 0 && p + by < radix) positions |= 1 << p;
-  return positionMask(radices, input, positions, states);
+/**
+ * States that one move of one lever leads to from a state with this line under pressure, and in which
+ * it is cut off. A move from one end to the other passes the centre without stopping there.
+ */
+export function leftBehind(moves: readonly Move[], cutOff: BitSet | undefined, under: BitSet | undefined, states: number): BitSet {
+  const found = emptySet(states);
+  if (cutOff === undefined || under === undefined) return found;
+  const last = under.length;
+  for (const { by, here } of moves) {
+    // found |= cutOff & here & (under shifted by `by`), without making the shifted set.
+    const words = by >> 5;
+    const bits = by & 31;
+    for (let w = 0; w < last; w++) {
+      const wanted = (cutOff[w] as number) & (here[w] as number) & ~(found[w] as number);
+      if (wanted === 0) continue;
+      const low = under[w + words] ?? 0;
+      const before = bits === 0 ? low : (low >>> bits) | ((under[w + words + 1] ?? 0) << (32 - bits));
+      found[w] = (found[w] as number) | (wanted & before);
+    }
+  }
+  return found;
 }
