@@ -38,6 +38,9 @@ test.each<[string, Quantity, number, 'exact' | 'printed']>([
   ['1 in/s', 'speed', 2.54e-2, 'exact'],
   ['1 ft/min', 'speed', 5.08e-3, 'exact'],
   ['1 lbf', 'force', 4.448222, 'printed'],
+  // Footnotes of the same table: the pound-force and the US gallon are exact by definition.
+  ['1 lbf', 'force', 4.4482216152605, 'exact'],
+  ['1 gal', 'volume', 3.785411784e-3, 'exact'],
   ['1 kgf', 'force', 9.80665, 'exact'],
   ['1 lbf·ft', 'torque', 1.355818, 'printed'],
   ['1 lbf·in', 'torque', 1.129848e-1, 'printed'],
