@@ -1,6 +1,6 @@
 import { begin } from '../../circuit/history.ts';
 import type { History } from '../../circuit/history.ts';
-import { readCircuit } from '../../circuit/file.ts';
+import { openCircuit } from '../../parts/open.ts';
 import { editor, EMPTY } from '../state/editor.svelte.ts';
 import type { OpenFile } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
@@ -44,7 +44,7 @@ export function newCircuit(): void {
 
 /** Reads a circuit; one that cannot be read is said where and why, and the open work stays as it is. */
 export function openText(text: string, file: OpenFile): boolean {
-  const read = readCircuit(text);
+  const read = openCircuit(text);
   const name = file.name ?? 'The file';
   if (!read.ok) {
     notices.say({

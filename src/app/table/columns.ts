@@ -27,7 +27,7 @@ export interface ColumnGroup {
 
 const CHARACTER = 7.2;
 /** Labels in heads are mostly capitals. */
-const HEAD_CHARACTER = 8.4;
+const HEAD_CHARACTER = 9.2;
 const PADDING = 16;
 const GLYPH = 25;
 
