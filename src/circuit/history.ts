@@ -44,9 +44,8 @@ export const begin = (circuit: Circuit, saved = true): History => ({
 export function commit(history: History, edit: Edit, burst?: string): History {
   const { circuit, inverse } = applyBoth(history.present, edit);
   const last = history.past.at(-1);
-  // A step that reaches the saved state must end there, or "saved" would name a state that was never saved.
-  const grows =
-    burst !== undefined && burst === history.burst && last !== undefined && history.saved !== history.past.length;
+  // Undo, redo and saving end a burst, so a step that a saved state stands on never grows.
+  const grows = burst !== undefined && burst === history.burst && last !== undefined;
   const step: HistoryStep = grows
     ? { edit: join(last.edit, edit), inverse: join(inverse, last.inverse) }
     : { edit, inverse };

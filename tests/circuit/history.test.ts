@@ -284,7 +284,8 @@ describe('any run of edits', () => {
         expect(writeCircuit(history.present)).toBe(writeCircuit(end));
         expect(history.past.length).toBe(steps);
       }),
-      { numRuns: 60 },
+      // Without a limit a failure would be made smaller for many minutes.
+      { numRuns: 60, interruptAfterTimeLimit: 25_000, markInterruptAsFailure: true },
     );
     // Each sort of edit took part and was not always refused.
     expect(made.size).toBe(20);
