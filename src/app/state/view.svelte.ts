@@ -29,6 +29,9 @@ class View {
     conditions: false,
   });
 
+  /** Panels from the lowest to the one on top. */
+  stack = $state.raw<readonly PanelId[]>([]);
+
   dark = $derived(this.theme === 'dark' || (this.theme === 'system' && this.systemDark));
 
   setTheme(theme: ThemeChoice): void {
@@ -58,7 +61,12 @@ class View {
 
   open(panel: PanelId): void {
     this.panels[panel] = true;
+    this.raise(panel);
     if (panel === 'legend') remember('legendOpen', true);
+  }
+
+  raise(panel: PanelId): void {
+    if (this.stack.at(-1) !== panel) this.stack = [...this.stack.filter((each) => each !== panel), panel];
   }
 
   close(panel: PanelId): void {
