@@ -9,7 +9,7 @@ import { endOnLine, portEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
-import { commitShift, finishLine, middleOfView, nameOf, putDown, setLever, startLine } from './hand.ts';
+import { commitShift, finishLine, middleOfView, nameOf, putDown, sayThings, setLever, startLine } from './hand.ts';
 import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts';
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
@@ -115,7 +115,7 @@ export const sheetActions: SheetActions = {
       return;
     }
     if (refuseEmpty()) return;
-    attempt(() => turnParts(editor.circuit, selectedParts(), quarter, drawing.places), `${counted(selectedParts().length, 'part')} turned.`);
+    attempt(() => turnParts(editor.circuit, selectedParts(), quarter, drawing.places), `${sayThings(selectedParts(), [])} turned.`);
   },
 
   flip() {
@@ -126,7 +126,7 @@ export const sheetActions: SheetActions = {
     }
     // With nothing to flip the key is free for others.
     if (selectedParts().length === 0) return false;
-    return attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${counted(selectedParts().length, 'part')} flipped.`);
+    return attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${sayThings(selectedParts(), [])} flipped.`);
   },
 
   remove(heal) {
@@ -146,7 +146,7 @@ export const sheetActions: SheetActions = {
     const { parts, labels } = editor.selection;
     if (parts.length + labels.length === 0) return desk.refuse('Nothing is selected.');
     const copy = tryTo(() => duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, labels));
-    if (copy && attempt(() => copy.edit, `${counted(parts.length + labels.length, 'thing')} duplicated.`)) {
+    if (copy && attempt(() => copy.edit, `${sayThings(parts, labels)} duplicated.`)) {
       editor.select({ parts: copy.parts, labels: copy.labels });
     }
   },

@@ -4,8 +4,8 @@ import { readCircuit, writeCircuit } from '../../circuit/file.ts';
 import { circuitBounds } from '../../drawing/geometry.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { attempt, tryTo } from './attempt.ts';
-import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
+import { sayThings } from './hand.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { snap, toSheet } from './viewport.ts';
 
@@ -25,7 +25,7 @@ export function copyText(): string | undefined {
   const text = writeCircuit(copyOut(drawing.circuit, parts, labels));
   lastText = text;
   times = 0;
-  desk.say(`${counted(parts.length + labels.length, 'thing')} copied.`);
+  desk.say(`${sayThings(parts, labels)} copied.`);
   return text;
 }
 
@@ -42,7 +42,7 @@ export function pasteText(text: string): void {
   const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y));
   if (!pasted) return;
   const { edit, parts, labels } = pasted;
-  if (attempt(() => edit, `${counted(parts.length + labels.length, 'thing')} pasted.`)) editor.select({ parts, labels });
+  if (attempt(() => edit, `${sayThings(fragment.parts.map(({ id }) => id), labels)} pasted.`)) editor.select({ parts, labels });
 }
 
 /** A little off the original; in the middle of the view if the original is out of sight. */

@@ -101,7 +101,7 @@ export function previewShift(dx: number, dy: number): void {
 export function commitShift(dx: number, dy: number, burst: string): void {
   const { parts, labels } = editor.selection;
   if (dx !== 0 || dy !== 0) {
-    attempt(() => shift(editor.circuit, editor.selection, dx, dy), `${counted(parts.length + labels.length, 'thing')} moved.`, burst);
+    attempt(() => shift(editor.circuit, editor.selection, dx, dy), `${sayThings(parts, labels)} moved.`, burst);
   }
   drawing.preview = undefined;
 }
@@ -114,6 +114,16 @@ export function setLever(partId: string, position: number): void {
   const to = ((position % count) + count) % count;
   session.setPosition(partId, to);
   desk.say(`${input.label}: ${input.positions[to] ?? ''}.`);
+}
+
+/** `V1`, or `3 parts, 1 text`. */
+export function sayThings(parts: readonly string[], labels: readonly string[]): string {
+  const [only] = parts;
+  if (only !== undefined && parts.length + labels.length === 1) return nameOf(only);
+  return [
+    ...(parts.length > 0 ? [counted(parts.length, 'part')] : []),
+    ...(labels.length > 0 ? [counted(labels.length, 'text')] : []),
+  ].join(', ');
 }
 
 export const nameOf = (id: string): string => {

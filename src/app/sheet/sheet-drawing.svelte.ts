@@ -1,4 +1,5 @@
-import type { Point } from '../../base/points.ts';
+import type { Box, Point } from '../../base/points.ts';
+import type { Primitive } from '../../base/primitives.ts';
 import type { Circuit, Part } from '../../circuit/model.ts';
 import type { Places } from '../../circuit/build.ts';
 import type { Routes } from '../../drawing/geometry.ts';
@@ -7,6 +8,8 @@ import { reroute, routeAll } from '../../drawing/routing.ts';
 import { buildScene } from '../../drawing/scene.ts';
 import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scene.ts';
 import type { SceneLabel } from '../../drawing/labels.ts';
+import { placePrimitives } from '../../drawing/turned.ts';
+import { kindOf } from '../../parts/catalogue.ts';
 import type { Look } from '../../parts/contract.ts';
 import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
 import { editor } from '../state/editor.svelte.ts';
@@ -66,13 +69,26 @@ class SheetDrawing {
   byId: ReadonlyMap<string, Part> = $derived(new Map(this.circuit.parts.map((part) => [part.id, part])));
 
   map: HitMap = $derived.by(() => ({
-    parts: this.scene.parts.map(({ id, box }) => ({ id, box })),
+    parts: this.scene.parts.map((part) => ({ id: part.id, box: outline(part, this.byId.get(part.id)) })),
     ports: this.scene.parts.flatMap((part) =>
       part.ports.map(({ ref, at, side, role }) => ({ part: ref.part, port: ref.port, at, side, joint: role === 'joint' })),
     ),
     routes: this.scene.lines.map(({ connection, points }) => ({ id: connection, points })),
   }));
 }
+
+/** A valve's outline goes along with its boxes. */
+function outline({ box, placement, primitives }: ScenePart, part: Part | undefined): Box {
+  const now = stripShift(primitives);
+  if (!now || !part) return box;
+  const rest = stripShift(placePrimitives(kindOf(part.kind)?.draw(part, {}) ?? [], placement)) ?? now;
+  return { ...box, x: box.x + now.x - rest.x, y: box.y + now.y - rest.y };
+}
+
+const stripShift = (primitives: readonly Primitive[]): Point | undefined => {
+  const strip = primitives.find((p) => p.type === 'group' && p.role === 'strip');
+  return strip?.type === 'group' ? strip.shift : undefined;
+};
 
 /** Lays only what a change touched; a route that came out the same stays the same object. */
 function incremental(): (circuit: Circuit) => Routes {
