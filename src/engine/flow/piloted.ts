@@ -1,0 +1,185 @@
+import { WIDTH, HI, flowScale } from './assemble.ts';
+import type { FlowSystem } from './assemble.ts';
+import { bracketFlows } from './bracket.ts';
+import { COLD, SLOW, WARM, minimise } from './newton.ts';
+import type { Limits, Outcome, Workspace } from './newton.ts';
+import { solveSymmetric } from './sparse.ts';
+
+/**
+ * Pilot-sensed valves. Their flow follows pressures elsewhere, so that the whole has no co-content to
+ * minimise. But once each of them is given a most flow h, the rest is convex again and its pressures p(h)
+ * are unique. What remains is h = T(p(h)), T = flow that the pilot pressures let open: as many unknowns
+ * as there are such valves. A Newton method on h, whose slopes come from the factors of the last convex
+ * solve, finds most answers; several starts and then bracketing find the rest.
+ */
+export interface Pilotage {
+  readonly system: FlowSystem;
+  readonly work: Workspace;
+  readonly limits: Limits;
+  /** Valves that are on, as numbers into `system.pilots`. */
+  readonly valves: Int32Array;
+  /** Most flow of each, and what the pilots would open at the pressures found with it. */
+  readonly h: Float64Array;
+  readonly open: Float64Array;
+  readonly scale: number;
+  spent: number;
+}
+
+const ROUNDS = 40;
+/** h − T as a share of the flow scale. */
+const ENOUGH = 1e-10;
+
+export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits, warm: ArrayLike<number> | undefined): Outcome {
+  const { pilots, active, plain, law, n } = system;
+  const count = active.length - plain;
+  const valves = Int32Array.from(active.subarray(plain), (j) => pilots.of[j] as number);
+  const bounds = Float64Array.from(valves, (i) => law[WIDTH * (pilots.branch[i] as number) + HI] as number);
+  const scale = flowScale(system);
+  const most = 100 * scale;
+  const at: Pilotage = { system, work, limits, valves, h: new Float64Array(count), open: new Float64Array(count), scale, spent: 0 };
+  let outcome: Outcome = 'stuck';
+  try {
+    for (let start = warm ? 0 : 1; start < 4; start++) {
+      if (start === 0 && warm) {
+        for (let i = 0; i < n; i++) work.now.p[i] = warm[i] as number;
+        sense(at);
+        at.h.set(at.open);
+      } else at.h.fill(start === 1 ? most : start === 2 ? 0 : 0.3 * scale);
+      outcome = newtonOnFlows(at);
+      if (outcome === 'converged' || outcome === 'cancelled') return outcome;
+    }
+    return bracketFlows(at, most);
+  } finally {
+    valves.forEach((i, v) => (law[WIDTH * (pilots.branch[i] as number) + HI] = bounds[v] as number));
+    work.counts.iterations += at.spent;
+  }
+}
+
+/** What the pilot pressures at `work.now.p` let open, into `open`. */
+function sense(at: Pilotage): void {
+  const { system, work, valves, open } = at;
+  for (let v = 0; v < valves.length; v++) open[v] = Math.max(0, signalOf(system, valves[v] as number, work.now.p));
+}
+
+/** The same, below 0 where the valve is shut. m³/s */
+function signalOf(system: FlowSystem, i: number, p: Float64Array): number {
+  const { start, line, factor, setting, slope } = system.pilots;
+  let sum = -(setting[i] as number);
+  for (let s = start[i] as number; s < (start[i + 1] as number); s++) sum += (factor[s] as number) * (p[line[s] as number] as number);
+  return sum * (slope[i] as number);
+}
+
+/** Convex solve with the flows `h` as upper bounds, from where the last one ended. */
+export function settleAt(at: Pilotage): Outcome {
+  const { system, work, limits, valves, h } = at;
+  for (let v = 0; v < valves.length; v++) system.law[WIDTH * (system.pilots.branch[valves[v] as number] as number) + HI] = h[v] as number;
+  let outcome: Outcome = 'stuck';
+  let highest = 0;
+  for (let i = 0; i < system.n; i++) highest = Math.max(highest, Math.abs(work.now.p[i] as number));
+  if (highest < 1e8) outcome = minimise(system, work, { cancelled: limits.cancelled, iterations: 30 }, WARM);
+  for (const start of [COLD, SLOW]) {
+    if (outcome === 'converged' || outcome === 'cancelled' || (outcome === 'runs away' && start === SLOW)) break;
+    work.now.p.fill(0);
+    outcome = minimise(system, work, limits, start);
+  }
+  sense(at);
+  return outcome;
+}
+
+/** How far valve v is from what its pilot asks: h − T while h is what limits it, else only what the pilot takes away. */
+export function gap(at: Pilotage, v: number): number {
+  const { system, work, valves, h, open } = at;
+  const x = work.now.x[system.pilots.branch[valves[v] as number] as number] as number;
+  const limit = h[v] as number;
+  const asked = open[v] as number;
+  if (x < limit && asked >= x) return 0;
+  return Math.min(x, limit) - asked;
+}
+
+function largestGap(at: Pilotage): number {
+  let most = 0;
+  for (let v = 0; v < at.h.length; v++) most = Math.max(most, Math.abs(gap(at, v)));
+  return most;
+}
+
+function newtonOnFlows(at: Pilotage): Outcome {
+  const { h, scale } = at;
+  const count = h.length;
+  const step = new Float64Array(count);
+  const from = new Float64Array(count);
+  let outcome = settleAt(at);
+  let worst = largestGap(at);
+  for (let round = 0; round < ROUNDS; round++) {
+    if (outcome === 'cancelled') return outcome;
+    if (outcome === 'converged' && worst <= ENOUGH * scale) return 'converged';
+    if (outcome !== 'converged' || !direction(at, step)) return 'stuck';
+    for (let v = 0; v < count; v++) from[v] = Math.min(h[v] as number, at.work.now.x[at.system.pilots.branch[at.valves[v] as number] as number] as number);
+    const before = worst;
+    for (let share = 1; ; share *= 0.4) {
+      for (let v = 0; v < count; v++) h[v] = Math.max(0, (from[v] as number) + share * (step[v] as number));
+      outcome = settleAt(at);
+      worst = largestGap(at);
+      if (outcome === 'cancelled' || worst <= (1 - 0.2 * share) * before || share < 0.02) break;
+    }
+    if (worst > before) return 'stuck';
+  }
+  return 'stuck';
+}
+
+/** Newton step on the flows: (I − ∂T/∂h)·step = T − h, by elimination with row exchange. False if it has none. */
+function direction(at: Pilotage, step: Float64Array): boolean {
+  const { system, work, valves, h } = at;
+  const { pilots, ends, law, n, plan } = system;
+  const count = valves.length;
+  const rhs = work.step;
+  const matrix = Array.from({ length: count }, () => new Float64Array(count + 1));
+  for (let v = 0; v < count; v++) {
+    const j = pilots.branch[valves[v] as number] as number;
+    const row = matrix[v] as Float64Array;
+    row[v] = 1 + (row[v] as number);
+    row[count] = -gap(at, v);
+    if (work.now.slope[j] !== 0 || (work.now.x[j] as number) < (h[v] as number)) continue;
+    rhs.fill(0);
+    rhs[ends[3 * j] as number] = -(law[WIDTH * j] as number);
+    rhs[ends[3 * j + 1] as number] = -(law[WIDTH * j + 1] as number);
+    rhs[n] = 0;
+    solveSymmetric(plan, work.now.v, rhs);
+    rhs[n] = 0;
+    for (let w = 0; w < count; w++) {
+      const i = valves[w] as number;
+      if (signalOf(system, i, work.now.p) < 0) continue;
+      let sum = 0;
+      for (let s = pilots.start[i] as number; s < (pilots.start[i + 1] as number); s++) {
+        sum += (pilots.factor[s] as number) * (rhs[pilots.line[s] as number] as number);
+      }
+      const other = matrix[w] as Float64Array;
+      other[v] = (other[v] as number) - sum * (pilots.slope[i] as number);
+    }
+  }
+  return eliminate(matrix, step);
+}
+
+function eliminate(matrix: Float64Array[], out: Float64Array): boolean {
+  const count = matrix.length;
+  for (let k = 0; k < count; k++) {
+    let best = k;
+    for (let i = k + 1; i < count; i++) if (Math.abs(matrix[i]?.[k] as number) > Math.abs(matrix[best]?.[k] as number)) best = i;
+    const row = matrix[best] as Float64Array;
+    matrix[best] = matrix[k] as Float64Array;
+    matrix[k] = row;
+    const pivot = row[k] as number;
+    if (!(Math.abs(pivot) > 1e-14)) return false;
+    for (let i = k + 1; i < count; i++) {
+      const other = matrix[i] as Float64Array;
+      const share = (other[k] as number) / pivot;
+      if (share !== 0) for (let c = k; c <= count; c++) other[c] = (other[c] as number) - share * (row[c] as number);
+    }
+  }
+  for (let k = count - 1; k >= 0; k--) {
+    const row = matrix[k] as Float64Array;
+    let sum = row[count] as number;
+    for (let c = k + 1; c < count; c++) sum -= (row[c] as number) * (out[c] as number);
+    out[k] = sum / (row[k] as number);
+  }
+  return out.every((value) => Number.isFinite(value));
+}

@@ -1,0 +1,188 @@
+import type { Certificate } from './certificate.ts';
+import { NEAR_IDEAL, SANE } from './laws.ts';
+import type { Branch, BranchKind, Contradiction, FlowProblem } from './problem.ts';
+import { TANK } from './problem.ts';
+import { FlowSolver } from './solver.ts';
+import type { Solution, SolveOptions } from './solver.ts';
+
+/** The steady state in the names of the circuit, SI. Numbers are given only where there is a steady state. */
+export type FlowResult =
+  | Solved
+  /** The data contradict each other; no steady state can meet them all. */
+  | { readonly status: 'infeasible'; readonly contradictions: readonly Contradiction[]; readonly words: string }
+  /** A pressure or a speed would rise without limit. */
+  | { readonly status: 'unbounded'; readonly cause: UnboundedCause; readonly names: readonly string[]; readonly words: string }
+  /** A steady state may exist, but was not found within the budget. */
+  | { readonly status: 'not converged'; readonly cancelled: boolean; readonly certificate: Certificate; readonly words: string };
+
+export type UnboundedCause = 'dead-headed pump' | 'locked loads' | 'free fall';
+
+export interface Solved {
+  readonly status: 'solved';
+  readonly lines: readonly LineState[];
+  readonly branches: readonly BranchState[];
+  readonly actuators: readonly ActuatorState[];
+  readonly pumps: readonly PumpState[];
+  readonly power: PowerBalance;
+  readonly certificate: Certificate;
+}
+
+export interface LineState {
+  readonly name: string;
+  /** Pa */
+  readonly pressure: number;
+  /** m³/s of void that forms in it. */
+  readonly voidFlow: number;
+}
+
+/** A path, valve, throttle, relief or accumulator. */
+export interface BranchState {
+  readonly id: string;
+  readonly kind: BranchKind;
+  /** m³/s */
+  readonly flow: number;
+  /** Pa across it. */
+  readonly drop: number;
+  /** W turned into heat. */
+  readonly lost: number;
+}
+
+export interface ActuatorState {
+  readonly id: string;
+  /** m/s (rad/s), extending or A→B positive. */
+  readonly speed: number;
+  /** m³/s into the A side and out of the B side, both positive while it extends. */
+  readonly flowIn: number;
+  readonly flowOut: number;
+  /** N (N·m) that the oil exerts outwards. */
+  readonly force: number;
+  /** N taken by an end stop; positive at the outer one. 0 away from stops. */
+  readonly stopForce: number;
+  /** W given to the load (negative: taken from it), to the spring, and turned into heat by friction. */
+  readonly useful: number;
+  readonly sprung: number;
+  readonly lost: number;
+}
+
+export interface PumpState {
+  readonly id: string;
+  readonly pressure: number;
+  /** m³/s that it really delivers. */
+  readonly delivered: number;
+  readonly power: number;
+}
+
+/** W. `pumps + loads + stores = useful + lost` up to the certificate. */
+export interface PowerBalance {
+  readonly pumps: number;
+  /** Given by loads that drive. */
+  readonly loads: number;
+  /** Given by springs and accumulators (negative while they are charged). */
+  readonly stores: number;
+  readonly useful: number;
+  readonly lost: number;
+}
+
+/** One problem, cold or warm. For many states of one circuit keep a `FlowSolver` and use `describe`. */
+export function solveFlow(problem: FlowProblem, options: SolveOptions = {}): FlowResult {
+  const solver = new FlowSolver(problem);
+  return describe(solver, solver.solve(options));
+}
+
+export function describe(solver: FlowSolver, solution: Solution): FlowResult {
+  const { problem, contradictions } = solver.system;
+  switch (solution.status) {
+    case 'infeasible':
+      return { status: 'infeasible', contradictions, words: contradictions.map((c) => `${c.where}: ${c.what}`).join(' ') };
+    case 'unbounded':
+      return unbounded(solver, solution);
+    case 'not converged': {
+      const why = solution.cancelled ? 'The calculation was stopped before' : 'The calculation ended before';
+      return { status: 'not converged', cancelled: solution.cancelled, certificate: solver.certificate(), words: `${why} a steady state was found.` };
+    }
+    case 'solved':
+      return solved(solver, solution, problem);
+  }
+}
+
+function unbounded(solver: FlowSolver, { pressures, throughputs }: Solution): FlowResult {
+  const { problem, n, on, pumpFlow } = solver.system;
+  let highest = 0;
+  for (let i = 0; i < n; i++) highest = Math.max(highest, Math.abs(pressures[i] as number));
+  if (highest >= SANE.pressure) {
+    const high = (line: number): boolean => (pressures[line] as number) >= 0.1 * highest;
+    const pumps = problem.pumps.filter((pump, i) => (pumpFlow[i] as number) > 0 && high(pump.line));
+    if (pumps.length > 0) {
+      const names = pumps.map((pump) => problem.lines[pump.line] as string);
+      const say = pumps.map((pump, i) => `${pump.id} pumps into line ${names[i] ?? ''}`).join(', ');
+      return { status: 'unbounded', cause: 'dead-headed pump', names, words: `${say}, which has no way out: its pressure would rise until something bursts.` };
+    }
+    const names = problem.lines.filter((_, i) => high(i));
+    return { status: 'unbounded', cause: 'locked loads', names, words: `Loads lock against each other over ${names.join(', ')}: no pressure there holds them.` };
+  }
+  const names = problem.branches
+    .filter((b, j) => on[j] === 1 && isActuator(b) && Math.abs(throughputs[j] as number) >= (b.kind === 'motor' ? SANE.rotation : SANE.speed))
+    .map((b) => b.id);
+  return { status: 'unbounded', cause: 'free fall', names, words: `Nothing slows ${names.join(', ')} down: the load runs away with it.` };
+}
+
+const isActuator = (b: Branch): boolean => b.kind === 'cylinder' || b.kind === 'motor';
+
+function solved(solver: FlowSolver, { pressures, throughputs }: Solution, problem: FlowProblem): Solved {
+  const { on, pumpFlow } = solver.system;
+  const at = (line: number): number => (line === TANK ? 0 : (pressures[line] as number));
+  const lines = problem.lines.map((name, i): LineState => {
+    const pressure = at(i);
+    return { name, pressure: Math.max(0, pressure), voidFlow: Math.max(0, -pressure) / NEAR_IDEAL.void };
+  });
+  const branches: BranchState[] = [];
+  const actuators: ActuatorState[] = [];
+  let loads = 0, stores = 0, useful = 0, lost = 0;
+  problem.branches.forEach((b, j) => {
+    if (on[j] !== 1 || b.kind === 'compensator') return;
+    const x = throughputs[j] as number;
+    const drive = b.ca * at(b.a) + b.cb * at(b.b);
+    if (isActuator(b)) {
+      const state = actuatorState(b, x, drive);
+      actuators.push(state);
+      useful += Math.max(0, state.useful);
+      loads += Math.max(0, -state.useful);
+      stores -= state.sprung;
+      lost += state.lost;
+      return;
+    }
+    const heat = b.kind === 'accumulator' ? (drive - b.forward) * x : drive * x;
+    if (b.kind === 'accumulator') stores -= b.forward * x;
+    lost += heat;
+    branches.push({ id: b.id, kind: b.kind, flow: x, drop: drive, lost: heat });
+  });
+  const pumps = problem.pumps.map((pump, i): PumpState => {
+    const back = pump.compensator !== undefined && on[pump.compensator] === 1 ? (throughputs[pump.compensator] as number) : 0;
+    const delivered = (pumpFlow[i] as number) - back;
+    return { id: pump.id, pressure: at(pump.line), delivered, power: at(pump.line) * delivered };
+  });
+  for (let i = 0; i < problem.lines.length; i++) {
+    const pressure = at(i);
+    lost += pressure * pressure * problem.leak + (pressure < 0 ? (pressure * pressure) / NEAR_IDEAL.void : 0);
+  }
+  const power = { pumps: pumps.reduce((sum, pump) => sum + pump.power, 0), loads, stores, useful, lost };
+  return { status: 'solved', lines, branches, actuators, pumps, power, certificate: solver.certificate() };
+}
+
+function actuatorState(b: Branch, x: number, drive: number): ActuatorState {
+  const { pressing = 0, resisting = 0, spring = 0 } = b.load ?? {};
+  const stopped = (b.hi === 0 && drive > b.forward) || (b.lo === 0 && drive < b.backward);
+  const useful = pressing * x + resisting * Math.abs(x);
+  const sprung = spring * x;
+  return {
+    id: b.id,
+    speed: x,
+    flowIn: b.ca * x,
+    flowOut: -b.cb * x,
+    force: drive,
+    stopForce: stopped ? drive - (b.hi === 0 ? b.forward : b.backward) : 0,
+    useful,
+    sprung,
+    lost: drive * x - useful - sprung,
+  };
+}
