@@ -18,7 +18,7 @@ import { print, writeWhole } from './output.ts';
 import { readState } from './state.ts';
 
 /** Up to here the rows of a JSON table also carry sentences and candidates, which take a search for each row. */
-const MOST_EXPLAINED = 2000;
+const MOST_EXPLAINED = 250;
 
 /** Does what the arguments say. Throws a `Failure` for everything that the user can mend. */
 export async function run(args: readonly string[], version: string): Promise<void> {

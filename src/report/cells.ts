@@ -59,7 +59,7 @@ export function headLines(report: Report): string[] {
   return [
     `State table, pumps ${report.conditions.pumps}`,
     `${count} ${count === 1 ? 'row' : 'rows'}.` +
-      (commandCombinations > 0
+      (notPermitted > 0
         ? ` ${notPermitted} of ${commandCombinations} lever and coil combinations ${notPermitted === 1 ? 'is' : 'are'} not permitted (opposed coils on at once); no row is given to what is not permitted.`
         : ''),
     inputs.length > 0

@@ -2,14 +2,7 @@ import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 import { labelOf } from '../circuit/model.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
-import type {
-  ActuatorVerdict,
-  BlockedKind,
-  LineClass,
-  PumpVerdict,
-  RestReason,
-  TrapReason,
-} from '../engine/table/words.ts';
+import type { ActuatorVerdict, LineClass, PumpVerdict, RestReason, TrapReason } from '../engine/table/words.ts';
 
 /** What a report is made from. */
 export interface ReportSource {
@@ -90,7 +83,8 @@ export interface ReportFinding {
 export function makeReport(source: ReportSource): Report {
   const { table } = source;
   const { data } = table;
-  const coils = coilNames(table);
+  const names = namesOf(table);
+  const { coils } = names;
   return {
     version: source.version,
     circuit: source.circuit.name,
@@ -103,18 +97,18 @@ export function makeReport(source: ReportSource): Report {
         .filter((c) => c.input === i)
         .map((c) => ({ name: c.name, position: input.positions[c.position] ?? '' })),
     })),
-    coils: coils.map((coil) => coil.name),
-    actuators: data.actuators.map((a) => a.label),
-    pumps: data.pumps.map((p) => p.label),
-    lines: data.lines.map((line) => line.name),
+    coils: names.coilNames,
+    actuators: names.actuators,
+    pumps: names.pumps,
+    lines: names.lines,
     count: table.count,
     restRow: table.restRow() + 1,
     notPermitted: data.notPermitted,
     commandCombinations: data.commandCombinations,
     *rows() {
-      for (let row = 0; row < table.count; row++) yield reportRow(source, coils, row);
+      for (let row = 0; row < table.count; row++) yield reportRow(source, names, row);
     },
-    rowAt: (row) => reportRow(source, coils, row),
+    rowAt: (row) => reportRow(source, names, row),
     findings: source.findings.map((finding) => ({
       ...finding,
       parts: finding.parts.map((id) => labelOfPart(source.circuit, id)),
@@ -131,7 +125,7 @@ interface Coil {
 }
 
 /** Coils of all inputs; a name that two valves use gets the valve's label in front. */
-function coilNames(table: StateTable): Coil[] {
+function coilsOf(table: StateTable): Coil[] {
   const { inputs } = table.data;
   const uses = new Map<string, number>();
   for (const input of inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
@@ -144,60 +138,102 @@ function coilNames(table: StateTable): Coil[] {
   );
 }
 
-const notesOf = (table: StateTable, row: number): string[] =>
-  table.data.actuators.flatMap(({ label }, i) => table.actuatorNotes(i, row).map((note) => `${label}: ${note}`));
+/** Keys and values in step, millions of times; a label such as `__proto__` is a key like any other. */
+function record<T>(keys: readonly string[], valueOf: (index: number) => T): Record<string, T> {
+  const out: Record<string, T> = {};
+  for (let i = 0; i < keys.length; i++) {
+    const key = keys[i] as string;
+    if (key === '__proto__') Object.defineProperty(out, key, { value: valueOf(i), enumerable: true });
+    else out[key] = valueOf(i);
+  }
+  return out;
+}
+
+/** The shown names of a table, drawn out once. */
+interface Names {
+  readonly inputs: readonly string[];
+  readonly coils: readonly Coil[];
+  readonly coilNames: readonly string[];
+  readonly actuators: readonly string[];
+  readonly pumps: readonly string[];
+  readonly lines: readonly string[];
+}
+
+function namesOf(table: StateTable): Names {
+  const { inputs, actuators, pumps, lines } = table.data;
+  const coils = coilsOf(table);
+  return {
+    inputs: inputs.map((input) => input.label),
+    coils,
+    coilNames: coils.map((coil) => coil.name),
+    actuators: actuators.map((a) => a.label),
+    pumps: pumps.map((p) => p.label),
+    lines: lines.map((line) => line.name),
+  };
+}
+
+function reportRow({ table, explain }: ReportSource, names: Names, row: number): ReportRow {
+  const { inputs } = table.data;
+  const positions = table.positionsOf(row);
+  const actuators = record(names.actuators, (i) => table.actuator(i, row));
+  const pumps = record(names.pumps, (i) => table.pump(i, row));
+  const open = (verdict: string): boolean => verdict === 'rests on pressure' || verdict === 'undetermined';
+  const explanation =
+    explain && (Object.values(actuators).some(open) || Object.values(pumps).some(open)) ? explain(row) : undefined;
+  const underPressure: string[] = [];
+  const cutOff: string[] = [];
+  const trapped: ReportRow['trapped'][number][] = [];
+  names.lines.forEach((line, i) => {
+    const blocked = table.blocked(i, row);
+    if (blocked !== undefined) (blocked === 'cut off' ? cutOff : underPressure).push(line);
+    const reasons = table.trapped(i, row);
+    if (reasons.length > 0) trapped.push({ line, reasons });
+  });
+  return {
+    row: row + 1,
+    state: record(names.inputs, (i) => inputs[i]?.positions[positions[i] ?? 0] ?? ''),
+    coils: record(names.coilNames, (i) => (isOn(names.coils[i], positions) ? 'on' : 'off')),
+    actuators,
+    pumps,
+    lines: record(names.lines, (i) => table.line(i, row)),
+    blocked: { underPressure, cutOff },
+    trapped,
+    rests: restsOf(table, row, explanation),
+    notes: notesOf(table, row, explanation),
+  };
+}
+
+const isOn = (coil: Coil | undefined, positions: readonly number[]): boolean =>
+  coil !== undefined && positions[coil.input] === coil.position;
+
+function restsOf(table: StateTable, row: number, explanation: Explanation | undefined): Record<string, Rests> {
+  const rests: [string, Rests][] = [];
+  table.data.actuators.forEach(({ part, label }, i) => {
+    const reasons = table.actuatorRests(i, row);
+    const said = explanation?.actuators.find((a) => a.part === part)?.rests;
+    if (said || reasons.length > 0) rests.push([label, { reasons, ...said }]);
+  });
+  for (const { label, rests: said } of explanation?.pumps ?? [])
+    if (said) rests.push([label, { reasons: [], ...said }]);
+  return record(
+    rests.map(([label]) => label),
+    (i) => (rests[i] as [string, Rests])[1],
+  );
+}
+
+/** An explanation may say again what the table knows. */
+function notesOf(table: StateTable, row: number, explanation: Explanation | undefined): string[] {
+  const notes: string[] = [];
+  table.data.actuators.forEach(({ label }, i) => {
+    for (const note of table.actuatorNotes(i, row)) notes.push(`${label}: ${note}`);
+  });
+  return explanation ? [...new Set([...notes, ...explanation.notes])] : notes;
+}
 
 /** The shown name of a part; its id if the circuit has no such part. */
 export function labelOfPart(circuit: Circuit, id: string): string {
   const part = circuit.parts.find((p) => p.id === id);
   return part ? labelOf(part) : id;
-}
-
-// Built from entries, so that a label such as `__proto__` is a key like any other.
-const record = <T>(entries: readonly (readonly [string, T])[]): Record<string, T> => Object.fromEntries(entries);
-
-function reportRow(source: ReportSource, coils: readonly Coil[], row: number): ReportRow {
-  const { table } = source;
-  const { data } = table;
-  const positions = table.positionsOf(row);
-  const actuators = data.actuators.map((a, i) => [a.label, table.actuator(i, row)] as const);
-  const pumps = data.pumps.map((p, i) => [p.label, table.pump(i, row)] as const);
-  const open = [...actuators, ...pumps].some(
-    ([, verdict]) => verdict === 'rests on pressure' || verdict === 'undetermined',
-  );
-  const explanation = open ? source.explain?.(row) : undefined;
-  const names = data.lines.map((line) => line.name);
-  const blocked = (kind: BlockedKind): string[] => names.filter((_, i) => table.blocked(i, row) === kind);
-  return {
-    row: row + 1,
-    state: record(data.inputs.map((input, i) => [input.label, input.positions[positions[i] ?? 0] ?? ''])),
-    coils: record(coils.map((coil) => [coil.name, positions[coil.input] === coil.position ? 'on' : 'off'])),
-    actuators: record(actuators),
-    pumps: record(pumps),
-    lines: record(names.map((name, i) => [name, table.line(i, row)])),
-    blocked: { underPressure: blocked('under pressure'), cutOff: blocked('cut off') },
-    trapped: names
-      .map((name, i) => ({ line: name, reasons: table.trapped(i, row) }))
-      .filter(({ reasons }) => reasons.length > 0),
-    rests: record(restsOf(table, row, explanation)),
-    // An explanation may say again what the table knows.
-    notes: [...new Set([...notesOf(table, row), ...(explanation?.notes ?? [])])],
-  };
-}
-
-export function restsOf(table: StateTable, row: number, explanation: Explanation | undefined): [string, Rests][] {
-  const said = new Map(
-    [...(explanation?.actuators ?? []), ...(explanation?.pumps ?? [])].map((r) => [r.part, r.rests]),
-  );
-  const { actuators, pumps } = table.data;
-  const all = [
-    ...actuators.map((a, i) => ({ ...a, reasons: table.actuatorRests(i, row) })),
-    ...pumps.map((p) => ({ ...p, reasons: [] })),
-  ];
-  return all.flatMap(({ part, label, reasons }): [string, Rests][] => {
-    const rests = said.get(part);
-    return rests || reasons.length > 0 ? [[label, { reasons, ...rests }]] : [];
-  });
 }
 
 /** The usual caution wherever trapped pressure is listed. */

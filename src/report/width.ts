@@ -7,8 +7,12 @@ const NONE = /[\p{Mn}\p{Me}\p{Cf}]/u;
 
 const widthOfLetter = (letter: string): number => (NONE.test(letter) ? 0 : WIDE.test(letter) ? 2 : 1);
 
+/** Nearly every cell: letters of one column each. */
+const SIMPLE = /^[\x20-\x7e–→─]*$/;
+
 /** Columns that the text takes. */
 export function widthOf(text: string): number {
+  if (SIMPLE.test(text)) return text.length;
   let width = 0;
   for (const letter of text) width += widthOfLetter(letter);
   return width;
@@ -36,4 +40,5 @@ export function cutTo(text: string, width: number): string {
 }
 
 /** A label on one line: control characters, which could move the cursor or start a command of the terminal, become blanks. */
-export const plain = (text: string): string => text.replace(/[\p{Cc}\u2028\u2029\u202a-\u202e\u2066-\u2069]+/gu, ' ');
+export const plain = (text: string): string =>
+  SIMPLE.test(text) ? text : text.replace(/[\p{Cc}\u2028\u2029\u202a-\u202e\u2066-\u2069]+/gu, ' ');
