@@ -22,12 +22,17 @@ export function showActiveBox(primitives: readonly Primitive[], ports: readonly 
     const box = p.children[at];
     if (box?.type !== 'group') return p;
     // Last, so that its outline is whole.
-    return { ...p, children: [...p.children.filter((_, i) => i !== at), { ...box, children: colourPaths(box.children, ports) }] };
+    return {
+      ...p,
+      children: [...p.children.filter((_, i) => i !== at), { ...box, children: colourPaths(box.children, ports) }],
+    };
   });
 }
 
 const isAtPorts = (child: Primitive, strip: Group): boolean =>
-  child.type === 'group' && child.role === 'box' && near({ x: child.shift.x + strip.shift.x, y: child.shift.y + strip.shift.y }, { x: 0, y: 0 });
+  child.type === 'group' &&
+  child.role === 'box' &&
+  near({ x: child.shift.x + strip.shift.x, y: child.shift.y + strip.shift.y }, { x: 0, y: 0 });
 
 function colourPaths(children: readonly Primitive[], ports: readonly PortPen[]): Primitive[] {
   const pens = new Map<Primitive, PathPen>();
@@ -37,7 +42,7 @@ function colourPaths(children: readonly Primitive[], ports: readonly PortPen[]):
     if (port) pens.set(stroke, port.pen);
   }
   // What hangs on a coloured path follows it: bars of shut ports, buses of joined ones.
-  for (let grown = true; grown; ) {
+  for (let grown = true; grown;) {
     grown = false;
     for (const stroke of strokes) {
       if (pens.has(stroke)) continue;
@@ -68,7 +73,10 @@ function onPath(p: Point, path: readonly Point[]): boolean {
     if (!a) return false;
     const size = Math.hypot(b.x - a.x, b.y - a.y);
     const along = size === 0 ? 0 : ((p.x - a.x) * (b.x - a.x) + (p.y - a.y) * (b.y - a.y)) / size;
-    const off = size === 0 ? Math.hypot(p.x - a.x, p.y - a.y) : Math.abs((p.x - a.x) * (b.y - a.y) - (p.y - a.y) * (b.x - a.x)) / size;
+    const off =
+      size === 0
+        ? Math.hypot(p.x - a.x, p.y - a.y)
+        : Math.abs((p.x - a.x) * (b.y - a.y) - (p.y - a.y) * (b.x - a.x)) / size;
     return off < NEAR && along >= -NEAR && along <= size + NEAR;
   });
 }

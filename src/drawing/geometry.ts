@@ -48,7 +48,8 @@ export function circuitBounds(circuit: Circuit, routes?: Routes): Box {
     const box = boxOfPoints(points);
     if (box) boxes.push(box);
   }
-  for (const label of circuit.labels ?? []) boxes.push({ x: label.at.x, y: label.at.y - 2, width: label.text.length, height: 2 });
+  for (const label of circuit.labels ?? [])
+    boxes.push({ x: label.at.x, y: label.at.y - 2, width: label.text.length, height: 2 });
   return union(boxes) ?? { x: 0, y: 0, width: 80, height: 50 };
 }
 
@@ -80,7 +81,9 @@ export const partsTouching = (circuit: Circuit, box: Box): Part[] =>
 export function segmentTouches(a: Point, b: Point, box: Box): boolean {
   const x = Math.min(a.x, b.x);
   const y = Math.min(a.y, b.y);
-  return x <= box.x + box.width && box.x <= Math.max(a.x, b.x) && y <= box.y + box.height && box.y <= Math.max(a.y, b.y);
+  return (
+    x <= box.x + box.width && box.x <= Math.max(a.x, b.x) && y <= box.y + box.height && box.y <= Math.max(a.y, b.y)
+  );
 }
 
 export const routeTouches = (points: readonly Point[], box: Box): boolean =>

@@ -34,8 +34,10 @@ function spansOf(circuit: Circuit, routes: Routes): Spans {
     for (let i = 1; i < points.length; i++) {
       const a = points[i - 1] as Point;
       const b = points[i] as Point;
-      if (a.y === b.y && a.x !== b.x) flat.push({ line, fixed: a.y, low: Math.min(a.x, b.x), high: Math.max(a.x, b.x) });
-      else if (a.x === b.x && a.y !== b.y) upright.push({ line, fixed: a.x, low: Math.min(a.y, b.y), high: Math.max(a.y, b.y) });
+      if (a.y === b.y && a.x !== b.x)
+        flat.push({ line, fixed: a.y, low: Math.min(a.x, b.x), high: Math.max(a.x, b.x) });
+      else if (a.x === b.x && a.y !== b.y)
+        upright.push({ line, fixed: a.x, low: Math.min(a.y, b.y), high: Math.max(a.y, b.y) });
     }
   }
   return { flat: merge(flat), upright: merge(upright) };

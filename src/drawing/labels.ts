@@ -43,14 +43,20 @@ const QUIET = new Set(['tank', 'junction', 'plug']);
 const GAP = 0.75;
 /** Modules kept for a position's or verdict's glyph and words. */
 const NOTE_ROOM: Readonly<Record<string, number>> = {
-  'directional-valve': 6, cylinder: 13, 'double-rod-cylinder': 13, 'single-acting-cylinder': 13, motor: 13, 'fixed-pump': 9, 'compensated-pump': 9,
+  'directional-valve': 6,
+  cylinder: 13,
+  'double-rod-cylinder': 13,
+  'single-acting-cylinder': 13,
+  motor: 13,
+  'fixed-pump': 9,
+  'compensated-pump': 9,
 };
 
 /** Close enough for placing: Inter's capitals and figures are wider than its small letters. */
 export function textWidth(text: string, size: number): number {
   let units = 0;
   for (const letter of text) {
-    if ('il.,:;|\'!'.includes(letter)) units += 0.28;
+    if ("il.,:;|'!".includes(letter)) units += 0.28;
     else if ('MWmw@%'.includes(letter)) units += 0.88;
     else if (letter === ' ') units += 0.28;
     else units += letter >= 'A' && letter <= 'Z' ? 0.68 : 0.59;
@@ -58,7 +64,8 @@ export function textWidth(text: string, size: number): number {
   return (units * size) / MODULE_PX;
 }
 
-const runsWidth = (runs: readonly LabelText[]): number => runs.reduce((sum, r) => sum + textWidth(`${r.text} `, r.size), 0);
+const runsWidth = (runs: readonly LabelText[]): number =>
+  runs.reduce((sum, r) => sum + textWidth(`${r.text} `, r.size), 0);
 const lineHeight = (runs: readonly LabelText[]): number => (Math.max(...runs.map((r) => r.size)) * 1.2) / MODULE_PX;
 
 /** Where the words of each part stand; free of the state that is shown, so that no name jumps when a lever moves. */
@@ -91,7 +98,13 @@ export function sceneLabels(circuit: Circuit, spots: LabelSpots, noteOf: NoteOf 
     if (!spot) continue;
     let y = spot.at.y;
     for (const runs of linesOf(part, noteOf(part))) {
-      out.push({ role: 'part', owner: part.id, at: { x: spot.at.x, y: y + (runs[0]?.size ?? 0) / MODULE_PX }, align: spot.align, runs });
+      out.push({
+        role: 'part',
+        owner: part.id,
+        at: { x: spot.at.x, y: y + (runs[0]?.size ?? 0) / MODULE_PX },
+        align: spot.align,
+        runs,
+      });
       y += lineHeight(runs);
     }
   }
@@ -100,7 +113,10 @@ export function sceneLabels(circuit: Circuit, spots: LabelSpots, noteOf: NoteOf 
 
 const freeLabels = (circuit: Circuit): SceneLabel[] =>
   (circuit.labels ?? []).map((label) => ({
-    role: 'free', owner: label.id, at: label.at, align: 'start',
+    role: 'free',
+    owner: label.id,
+    at: label.at,
+    align: 'start',
     runs: [{ text: label.text, size: TEXT_SIZES.label, weight: 400, tone: 'second' }],
   }));
 
@@ -113,7 +129,8 @@ function linesOf(part: Part, note: string | undefined): LabelText[][] {
     const strong = actuator || part.kind === VALVE;
     first.push({ text: labelOf(part), size, weight: strong ? 600 : 500, tone: strong ? 'ink' : 'second' });
   }
-  if (note) first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone: part.kind === VALVE ? 'accent' : 'ink' });
+  if (note)
+    first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone: part.kind === VALVE ? 'accent' : 'ink' });
   if (first.length > 0) lines.push(first);
   if (part.code) lines.push([{ text: part.code, size: TEXT_SIZES.code, weight: 400, tone: 'mute' }]);
   return lines;
@@ -122,7 +139,8 @@ function linesOf(part: Part, note: string | undefined): LabelText[][] {
 /** Where a name is looked for on each kind, best first. */
 function orderOf(part: Part, box: Box): readonly Place[] {
   if (part.kind === VALVE) return ['right', 'left', 'below', 'above'];
-  if (ACTUATORS.has(part.kind)) return box.width >= box.height ? ['above', 'right', 'left', 'below'] : ['right', 'left', 'above', 'below'];
+  if (ACTUATORS.has(part.kind))
+    return box.width >= box.height ? ['above', 'right', 'left', 'below'] : ['right', 'left', 'above', 'below'];
   const facesAcross = placedPorts(part).some((p) => p.side === 'left' || p.side === 'right');
   return facesAcross ? ['above', 'below', 'right', 'left'] : ['right', 'left', 'above', 'below'];
 }
@@ -131,10 +149,11 @@ function bestSpot(lines: readonly LabelText[][], part: Part, box: Box, ground: G
   const [first, ...rest] = lines.map(runsWidth);
   const width = Math.max((first ?? 0) + extra, ...rest);
   const height = lines.reduce((sum, runs) => sum + lineHeight(runs), 0);
+  const near = groundNear(ground, inflate(box, Math.max(width, height) + 2 * GAP));
   let best: Spot | undefined;
   let least = Infinity;
   for (const spot of orderOf(part, box).flatMap((p) => spotsAt(p, box, width, height))) {
-    const cost = crowd(spot.box, part.id, ground);
+    const cost = crowd(spot.box, part.id, near);
     if (cost < least) {
       least = cost;
       best = spot;
@@ -166,6 +185,12 @@ interface Ground {
   readonly lines: readonly (readonly [Point, Point])[];
   readonly taken: Box[];
 }
+
+const groundNear = (ground: Ground, around: Box): Ground => ({
+  parts: ground.parts.filter((p) => overlaps(p.box, around)),
+  lines: ground.lines.filter(([a, b]) => segmentTouches(a, b, around)),
+  taken: ground.taken.filter((box) => overlaps(box, around)),
+});
 
 /** How much a box of text would cover: 0 = free. */
 function crowd(box: Box, own: string, ground: Ground): number {

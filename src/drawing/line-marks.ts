@@ -43,7 +43,12 @@ export const lineColour = (look: LineLook): ColourToken => (look.trapped ? 'trap
  * Everything that shows the state of one drawn piece of line: class by colour, weight, dash and mark,
  * so that no class is told by colour alone. Strokes are in drawing order.
  */
-export function lineMarks(points: readonly Point[], look: LineLook, use: LineUse = 'working', ends: PortEnds = BOTH): Stroke[] {
+export function lineMarks(
+  points: readonly Point[],
+  look: LineLook,
+  use: LineUse = 'working',
+  ends: PortEnds = BOTH,
+): Stroke[] {
   const path = straighten(points);
   const [first, second] = path;
   if (!first || !second || (path.length === 2 && first.x === second.x && first.y === second.y)) return [];
@@ -71,7 +76,8 @@ export function lineMarks(points: readonly Point[], look: LineLook, use: LineUse
   }
   if (look.blocked && look.class === 'fed') {
     const lines = bars(path, ends, [-0.3, 0.3]);
-    if (lines.length > 0) strokes.push({ role: 'block-bar', lines, colour: 'ink', weight: LINE_WEIGHTS.endBar, cap: 'butt' });
+    if (lines.length > 0)
+      strokes.push({ role: 'block-bar', lines, colour: 'ink', weight: LINE_WEIGHTS.endBar, cap: 'butt' });
   }
   return strokes;
 }

@@ -12,7 +12,7 @@ export function lineNumbers(circuit: Circuit): LineNumbers {
     let at = start;
     for (let up = parent.get(at); up !== undefined && up !== at; up = parent.get(at)) at = up;
     // Shorten the way for the next search.
-    for (let step = start; step !== at; ) {
+    for (let step = start; step !== at;) {
       const up = parent.get(step) as string;
       parent.set(step, at);
       step = up;

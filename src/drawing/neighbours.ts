@@ -39,7 +39,12 @@ export interface Reached {
 }
 
 /** Parts in the order of distance from one part, setting out from `ports` only and not going on through `ends`. */
-export function reach(all: Meetings, start: string, ports: (port: string) => boolean, ends: (part: string) => boolean): Reached[] {
+export function reach(
+  all: Meetings,
+  start: string,
+  ports: (port: string) => boolean,
+  ends: (part: string) => boolean,
+): Reached[] {
   const found = new Map<string, Reached>();
   let edge: Reached[] = [];
   for (const { own, other } of all.get(start) ?? []) {

@@ -85,5 +85,8 @@ function gaps(a: Point, b: Point, covered: readonly Covered[]): [Point, Point][]
   if (at < own.high) free.push([at, own.high]);
   const forward = own.flat ? a.x < b.x : a.y < b.y;
   const toPoint = (v: number): Point => (own.flat ? { x: v, y: own.fixed } : { x: own.fixed, y: v });
-  return (forward ? free : free.reverse().map(([l, h]): [number, number] => [h, l])).map(([l, h]) => [toPoint(l), toPoint(h)]);
+  return (forward ? free : free.reverse().map(([l, h]): [number, number] => [h, l])).map(([l, h]) => [
+    toPoint(l),
+    toPoint(h),
+  ]);
 }

@@ -39,7 +39,12 @@ function startOf(parts: readonly Part[]): Point {
 function shiftOf(circuit: Circuit, all: Meetings, plan: ReadonlyMap<string, Point>, part: Part): Point | undefined {
   const own = new Map(circuit.parts.filter((p) => p.at).map((p) => [p.id, p]));
   if (own.size === 0) return { x: 0, y: 0 };
-  for (const { part: id } of reach(all, part.id, () => true, (p) => own.get(p)?.kind === TANK)) {
+  for (const { part: id } of reach(
+    all,
+    part.id,
+    () => true,
+    (p) => own.get(p)?.kind === TANK,
+  )) {
     const at = own.get(id)?.at;
     const planned = plan.get(id);
     if (at && planned) return { x: Math.round(at.x - planned.x), y: Math.round(at.y - planned.y) };
@@ -59,7 +64,9 @@ function underItsPort(placed: ReadonlyMap<string, Part>, all: Meetings, tank: Pa
   const lowest = met.sort((a, b) => b.port.at.y - a.port.at.y)[0];
   if (!lowest) {
     const all = union([...placed.values()].map(partReach));
-    return all ? { x: Math.round(all.x + all.width) + SPACE - box.x, y: Math.round(all.y + all.height) - box.y - box.height } : { x: 0, y: 0 };
+    return all
+      ? { x: Math.round(all.x + all.width) + SPACE - box.x, y: Math.round(all.y + all.height) - box.y - box.height }
+      : { x: 0, y: 0 };
   }
   const { port, part } = lowest;
   const under = partReach(part);

@@ -45,7 +45,10 @@ class Plan {
   placeColumns(): void {
     const columns = this.#columns();
     // Heights first: all actuators stand on one height above the tallest stack.
-    const stackTop = Math.min(0, ...columns.map((c) => -c.levels.reduce((sum, level) => sum + this.#height(level) + ROW_SPACE, 0)));
+    const stackTop = Math.min(
+      0,
+      ...columns.map((c) => -c.levels.reduce((sum, level) => sum + this.#height(level) + ROW_SPACE, 0)),
+    );
     for (const column of columns) {
       const spots = new Map<string, Point>();
       let y = 0;
@@ -68,8 +71,16 @@ class Plan {
     const pumps = rest.filter((p) => PUMPS.has(p.kind));
     const groups = pumps.map((pump) => ({ pump, ...this.#hanging(pump) })).sort((a, b) => a.from - b.from);
     const loose = rest.filter((p) => !this.#taken.has(p.id));
-    const tallest = Math.max(0, ...groups.map((g) => this.#height([g.pump]) + g.passed.reduce((sum, p) => sum + this.#height([p]) + SPACE, 0)));
-    const floor = this.#valveBottom + SPACE + 3 + ROW_SPACE + Math.max(tallest, this.#height(rest) + (rest.some(hangsUp) ? this.#height(pumps) + SPACE : 0));
+    const tallest = Math.max(
+      0,
+      ...groups.map((g) => this.#height([g.pump]) + g.passed.reduce((sum, p) => sum + this.#height([p]) + SPACE, 0)),
+    );
+    const floor =
+      this.#valveBottom +
+      SPACE +
+      3 +
+      ROW_SPACE +
+      Math.max(tallest, this.#height(rest) + (rest.some(hangsUp) ? this.#height(pumps) + SPACE : 0));
     let x = 0;
     const stand = (part: Part, bottom: number): number => {
       const box = partReach(part);
@@ -89,7 +100,8 @@ class Plan {
         y -= box.height;
       }
       x += widest + SPACE + 2;
-      for (const part of beside) x += stand(part, hangsUp(part) ? floor - this.#height([pump]) - SPACE : floor) + SPACE + 2;
+      for (const part of beside)
+        x += stand(part, hangsUp(part) ? floor - this.#height([pump]) - SPACE : floor) + SPACE + 2;
       x += SPACE;
     }
     for (const part of loose) x += stand(part, floor) + SPACE + 2;
@@ -125,7 +137,8 @@ class Plan {
     }
     for (const column of columns) {
       column.levels = Array.from(column.levels, (level) => level ?? []).filter((level) => level.length > 0);
-      for (const level of column.levels) level.sort((a, b) => (owners.get(a.id)?.through ?? 0) - (owners.get(b.id)?.through ?? 0));
+      for (const level of column.levels)
+        level.sort((a, b) => (owners.get(a.id)?.through ?? 0) - (owners.get(b.id)?.through ?? 0));
     }
     for (const part of parts) {
       if (!ACTUATORS.has(part.kind) || this.#taken.has(part.id)) continue;
@@ -141,7 +154,8 @@ class Plan {
     const passed: Part[] = [];
     const beside: Part[] = [];
     let from = Infinity;
-    const stop = (id: string): boolean => this.#taken.has(id) || [TANK, VALVE, RELIEF].includes(this.#parts.get(id)?.kind ?? '');
+    const stop = (id: string): boolean =>
+      this.#taken.has(id) || [TANK, VALVE, RELIEF].includes(this.#parts.get(id)?.kind ?? '');
     for (const found of reach(this.#all, pump.id, () => true, stop)) {
       const part = this.#parts.get(found.part);
       const column = this.at.get(found.part);
@@ -181,7 +195,8 @@ class Plan {
     for (const [id, spot] of spots) {
       const part = this.#parts.get(id) as Part;
       this.at.set(id, { x: Math.round(spot.x + shift), y: Math.round(spot.y) });
-      if (part.kind === VALVE) this.#valveBottom = Math.max(this.#valveBottom, spot.y + partReach(part).y + partReach(part).height);
+      if (part.kind === VALVE)
+        this.#valveBottom = Math.max(this.#valveBottom, spot.y + partReach(part).y + partReach(part).height);
     }
     this.#right = right + shift + COLUMN_SPACE;
   }

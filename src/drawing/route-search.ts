@@ -7,7 +7,18 @@ export type Direction = 0 | 1 | 2 | 3;
 export const opposite = (d: Direction): Direction => ((d + 2) % 4) as Direction;
 
 /** What a route pays, in modules of length. A line through a part is the last resort. */
-const COST = { bend: 6, joinedBend: 3, cross: 3, corner: 25, foreign: 40, margin: 4, box: 600, own: 0.7, atEnd: 1.5, offMiddle: 0.01 } as const;
+const COST = {
+  bend: 6,
+  joinedBend: 3,
+  cross: 3,
+  corner: 25,
+  foreign: 40,
+  margin: 4,
+  box: 600,
+  own: 0.7,
+  atEnd: 1.5,
+  offMiddle: 0.01,
+} as const;
 /** Among equal estimates the nearer to the goal goes first. */
 const EAGER = 1 + 1e-7;
 
@@ -51,7 +62,8 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
   const fromPort = leg.headings.length === 1 ? COST.atEnd : 0;
   const middle = { x: Math.round((leg.from.x + leg.to.x) / 2), y: Math.round((leg.from.y + leg.to.y) / 2) };
   const offMiddle = (node: number, way: Direction): number =>
-    COST.offMiddle * Math.abs(way % 2 === 0 ? (ys[(node / width) | 0] as number) - middle.y : (xs[node % width] as number) - middle.x);
+    COST.offMiddle *
+    Math.abs(way % 2 === 0 ? (ys[(node / width) | 0] as number) - middle.y : (xs[node % width] as number) - middle.x);
   for (const heading of leg.headings) {
     const state = start * 4 + heading;
     best[state] = 0;
@@ -68,7 +80,12 @@ export function searchLeg(field: Field, leg: Leg): Found | undefined {
     const node = state >> 2;
     const heading = (state & 3) as Direction;
     if (node === goal) {
-      const last = leg.arrive === undefined || leg.arrive === heading ? 0 : leg.arrive === opposite(heading) ? Infinity : COST.bend + COST.atEnd;
+      const last =
+        leg.arrive === undefined || leg.arrive === heading
+          ? 0
+          : leg.arrive === opposite(heading)
+            ? Infinity
+            : COST.bend + COST.atEnd;
       if (cost + last < reachedCost) {
         reachedCost = cost + last;
         reached = state;

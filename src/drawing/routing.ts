@@ -64,7 +64,9 @@ export function routeConnection(sheet: RoutingSheet, connection: Connection): Po
   const window = whole(near);
   let found = searchAll(sheet, connection, from, to, via, window);
   if (!found || found.cost >= THROUGH_PART) {
-    const all = boxOfPoints([...sheet.boxes.values()].flatMap((b) => [b, { x: b.x + b.width, y: b.y + b.height }])) as Box;
+    const all = boxOfPoints(
+      [...sheet.boxes.values()].flatMap((b) => [b, { x: b.x + b.width, y: b.y + b.height }]),
+    ) as Box;
     const wide = searchAll(sheet, connection, from, to, via, whole(inflate(cover(all, near), 4)));
     if (wide && (!found || wide.cost < found.cost)) found = wide;
   }
@@ -172,7 +174,14 @@ function facing(sheet: RoutingSheet, from: End, to: End): boolean {
   return clear || along < 2 * MARGIN;
 }
 
-function searchAll(sheet: RoutingSheet, connection: Connection, from: End, to: End, via: readonly Point[], window: Box): Found | undefined {
+function searchAll(
+  sheet: RoutingSheet,
+  connection: Connection,
+  from: End,
+  to: End,
+  via: readonly Point[],
+  window: Box,
+): Found | undefined {
   const field = buildField({
     window,
     boxes: [...sheet.boxes].flatMap(([id, box]) => (isJointEnd(from, id) || isJointEnd(to, id) ? [] : [box])),
@@ -238,5 +247,10 @@ const whole = (box: Box): Box => {
 function cover(a: Box, b: Box): Box {
   const x = Math.min(a.x, b.x);
   const y = Math.min(a.y, b.y);
-  return { x, y, width: Math.max(a.x + a.width, b.x + b.width) - x, height: Math.max(a.y + a.height, b.y + b.height) - y };
+  return {
+    x,
+    y,
+    width: Math.max(a.x + a.width, b.x + b.width) - x,
+    height: Math.max(a.y + a.height, b.y + b.height) - y,
+  };
 }

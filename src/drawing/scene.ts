@@ -68,7 +68,9 @@ const IDLE: LineLook = { class: 'idle' };
 export function buildScene(circuit: Circuit, routes: Routes, state: SceneState = {}): Scene {
   const looks = (id: string): LineLook => state.lines?.get(id) ?? IDLE;
   const stage = stageOf(circuit, routes, state.parts !== undefined);
-  const parts = circuit.parts.map((part) => scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)));
+  const parts = circuit.parts.map((part) =>
+    scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)),
+  );
   const stubs = state.lines ? takeStubs(circuit, parts, looks) : new Map<string, Point>();
   const lines = sceneLines(circuit, routes, stage, looks, stubs);
   const shown = parts.map((part) => hideStubs(part, stubs));
@@ -129,17 +131,28 @@ function portPens(stage: Stage, part: Part, looks: (id: string) => LineLook): Po
 const isEnclosure = (p: Primitive): boolean => p.type !== 'text' && p.type !== 'group' && p.pen === 'enclosure';
 
 function scenePart(part: Part, look: Look, pens: readonly PortPen[] | undefined): ScenePart {
-  const own = drawn(part, look);
-  const placement = placementOf(part);
   return {
     id: part.id,
     kind: part.kind,
     label: labelOf(part),
-    placement,
+    placement: placementOf(part),
     box: partBox(part),
     ports: placedPorts(part),
-    primitives: placePrimitives(pens ? showActiveBox(own, pens) : own, placement),
+    primitives: placedSymbol(part, look, pens),
   };
+}
+
+const symbols = new WeakMap<Part, { readonly look: string; readonly primitives: readonly Primitive[] }>();
+
+/** A symbol is placed anew only when the part, its position or the lines at it change. */
+function placedSymbol(part: Part, look: Look, pens: readonly PortPen[] | undefined): readonly Primitive[] {
+  const key = `${look.position} ${look.stroke} ${pens?.map((p) => `${p.at.x} ${p.at.y} ${p.pen}`).join(' ')}`;
+  const known = symbols.get(part);
+  if (known?.look === key) return known.primitives;
+  const own = drawn(part, look);
+  const primitives = placePrimitives(pens ? showActiveBox(own, pens) : own, placementOf(part));
+  symbols.set(part, { look: key, primitives });
+  return primitives;
 }
 
 function drawn(part: Part, look: Look): readonly Primitive[] {
@@ -148,12 +161,23 @@ function drawn(part: Part, look: Look): readonly Primitive[] {
   const box = ownBox(part);
   return [
     { type: 'box', ...box, pen: 'symbol', fill: 'paper' },
-    { type: 'text', at: { x: box.x + box.width / 2, y: box.y + box.height / 2 + 0.5 }, text: '?', size: 1.6, align: 'middle', tone: 'second' },
+    {
+      type: 'text',
+      at: { x: box.x + box.width / 2, y: box.y + box.height / 2 + 0.5 },
+      text: '?',
+      size: 1.6,
+      align: 'middle',
+      tone: 'second',
+    },
   ];
 }
 
 function sceneLines(
-  circuit: Circuit, routes: Routes, stage: Stage, looks: (id: string) => LineLook, stubs: ReadonlyMap<string, Point>,
+  circuit: Circuit,
+  routes: Routes,
+  stage: Stage,
+  looks: (id: string) => LineLook,
+  stubs: ReadonlyMap<string, Point>,
 ): SceneLine[] {
   const kinds = new Map(circuit.parts.map((p) => [p.id, p.kind]));
   // A valve's port letter stands where a bar would.
@@ -197,7 +221,8 @@ function takeStubs(circuit: Circuit, parts: readonly ScenePart[], looks: (id: st
       if (!end) continue;
       const other = part.ports.find((p) => samePoint(p.at, end));
       if (!other) out.set(key(port.ref), end);
-      else if (shown.has(key(other.ref))) out.set(key(port.ref), { x: (port.at.x + end.x) / 2, y: (port.at.y + end.y) / 2 });
+      else if (shown.has(key(other.ref)))
+        out.set(key(port.ref), { x: (port.at.x + end.x) / 2, y: (port.at.y + end.y) / 2 });
     }
   }
   return out;
@@ -215,7 +240,10 @@ function stubEnd(p: Primitive, port: Point): Point | undefined {
 function hideStubs(part: ScenePart, stubs: ReadonlyMap<string, Point>): ScenePart {
   const taken = part.ports.filter((p) => stubs.has(key(p.ref)));
   if (taken.length === 0) return part;
-  return { ...part, primitives: part.primitives.filter((p) => !taken.some((port) => stubEnd(p, port.at) !== undefined)) };
+  return {
+    ...part,
+    primitives: part.primitives.filter((p) => !taken.some((port) => stubEnd(p, port.at) !== undefined)),
+  };
 }
 
 function sceneBounds(parts: readonly ScenePart[], lines: readonly SceneLine[], labels: readonly SceneLabel[]): Box {

@@ -21,20 +21,30 @@ export const placementOf = (part: Part): Placement => ({
   flip: part.flip ?? false,
 });
 
-export const portSpecs = (part: Part): readonly PortSpec[] => kindOf(part.kind)?.ports(part) ?? [];
-
 export const ownBox = (part: Part): Box => kindOf(part.kind)?.bounds(part) ?? UNKNOWN_BOUNDS;
 
+/** Parts are never changed in place, so what follows from one is computed once. */
+function once<T>(of: (part: Part) => T): (part: Part) => T {
+  const known = new WeakMap<Part, T>();
+  return (part) => {
+    let value = known.get(part);
+    if (value === undefined) known.set(part, (value = of(part)));
+    return value;
+  };
+}
+
+export const portSpecs: (part: Part) => readonly PortSpec[] = once((part) => kindOf(part.kind)?.ports(part) ?? []);
+
 /** The part's outline on the sheet. */
-export const partBox = (part: Part): Box => placeBox(ownBox(part), placementOf(part));
+export const partBox: (part: Part) => Box = once((part) => placeBox(ownBox(part), placementOf(part)));
 
 /** The outline over all positions: what lines, names and other parts keep clear of. */
-export const partReach = (part: Part): Box => {
+export const partReach: (part: Part) => Box = once((part) => {
   const own = kindOf(part.kind)?.reach?.(part);
   return own ? placeBox(own, placementOf(part)) : partBox(part);
-};
+});
 
-export function placedPorts(part: Part): PlacedPort[] {
+export const placedPorts: (part: Part) => readonly PlacedPort[] = once((part) => {
   const placement = placementOf(part);
   return portSpecs(part).map((port) => ({
     ref: { part: part.id, port: port.id },
@@ -42,4 +52,4 @@ export function placedPorts(part: Part): PlacedPort[] {
     side: placeSide(port.side, placement),
     role: port.role,
   }));
-}
+});

@@ -18,11 +18,20 @@ export interface SvgOptions {
 }
 
 const JOINT_RADIUS = 0.36;
-const ENTITIES: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
+const ENTITIES: Readonly<Record<string, string>> = {
+  '&': '&amp;',
+  '<': '&lt;',
+  '>': '&gt;',
+  '"': '&quot;',
+  "'": '&#39;',
+};
 
 /** Safe in text and in attributes; characters that XML 1.0 forbids are left out. */
 export const escapeXml = (text: string): string =>
-  [...text].filter(allowedInXml).join('').replace(/[&<>"']/g, (c) => ENTITIES[c] as string);
+  [...text]
+    .filter(allowedInXml)
+    .join('')
+    .replace(/[&<>"']/g, (c) => ENTITIES[c] as string);
 
 function allowedInXml(c: string): boolean {
   const code = c.codePointAt(0) as number;
@@ -41,10 +50,16 @@ export function sceneToSvg(scene: Scene, options: SvgOptions): string {
   const body = [
     `<title>${escapeXml(scene.title)}</title>`,
     `<desc>${escapeXml(options.description ?? counts)}</desc>`,
-    ...(options.standalone ? [`<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`] : []),
+    ...(options.standalone
+      ? [
+          `<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`,
+        ]
+      : []),
     ...scene.enclosures.map((e) => pen.group('', e.primitives)),
     ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
-    ...scene.dots.map((d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour('ink')}"/>`),
+    ...scene.dots.map(
+      (d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour('ink')}"/>`,
+    ),
     ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
     ...scene.labels.map((l) => pen.label(l)),
   ];

@@ -1,5 +1,13 @@
 import { expect, test } from 'vitest';
-import { circuitBounds, connectionAt, connectionsTouching, nearestPort, partAt, partsTouching, portPlace } from '../../src/drawing/geometry.ts';
+import {
+  circuitBounds,
+  connectionAt,
+  connectionsTouching,
+  nearestPort,
+  partAt,
+  partsTouching,
+  portPlace,
+} from '../../src/drawing/geometry.ts';
 import { lineNumbers } from '../../src/drawing/lines.ts';
 import { routeAll } from '../../src/drawing/routing.ts';
 import { circuit, joins, part, ref } from './samples.ts';
@@ -42,7 +50,14 @@ test('of parts that overlap the one drawn last is found', () => {
 });
 
 test('a box touches the parts and lines that it meets', () => {
-  const sheet = circuit([part('a', 'check-valve', { x: 0, y: 0 }), part('b', 'check-valve', { x: 0, y: -20 }), part('c', 'gauge', { x: 30, y: 0 })], joins('a.B b.A'));
+  const sheet = circuit(
+    [
+      part('a', 'check-valve', { x: 0, y: 0 }),
+      part('b', 'check-valve', { x: 0, y: -20 }),
+      part('c', 'gauge', { x: 30, y: 0 }),
+    ],
+    joins('a.B b.A'),
+  );
   const routes = routeAll(sheet);
   const box = { x: -1, y: -12, width: 2, height: 2 };
   expect(connectionsTouching(sheet, routes, box).map((c) => c.id)).toEqual(['c1']);
@@ -55,7 +70,20 @@ test('a box touches the parts and lines that it meets', () => {
 test('the bounds hold parts, routes and labels; an empty sheet still has a size', () => {
   const sheet = circuit([part('a', 'check-valve', { x: 0, y: 0 })]);
   expect(circuitBounds(sheet)).toEqual({ x: -2, y: -3, width: 4, height: 6 });
-  expect(circuitBounds(sheet, new Map([['c', [{ x: 0, y: 0 }, { x: 0, y: 40 }]]])).height).toBe(43);
+  expect(
+    circuitBounds(
+      sheet,
+      new Map([
+        [
+          'c',
+          [
+            { x: 0, y: 0 },
+            { x: 0, y: 40 },
+          ],
+        ],
+      ]),
+    ).height,
+  ).toBe(43);
   expect(circuitBounds(circuit([])).width).toBeGreaterThan(0);
 });
 

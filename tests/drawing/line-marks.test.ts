@@ -7,7 +7,8 @@ import type { LineLook, Stroke } from '../../src/drawing/strokes.ts';
 const path = (...pairs: [number, number][]): Point[] => pairs.map(([x, y]) => ({ x, y }));
 const BENT = path([0, 0], [0, 12], [12, 12]);
 const roles = (strokes: readonly Stroke[]): string[] => strokes.map((s) => s.role);
-const of = (look: LineLook, role: Stroke['role']): Stroke | undefined => lineMarks(BENT, look).find((s) => s.role === role);
+const of = (look: LineLook, role: Stroke['role']): Stroke | undefined =>
+  lineMarks(BENT, look).find((s) => s.role === role);
 
 // Weights in px at 8 px a module: the design's table of line classes.
 test.each([
@@ -21,10 +22,19 @@ test.each([
 
 test('every class differs from every other in weight or mark, not only in colour', () => {
   const looks: LineLook[] = [
-    { class: 'idle' }, { class: 'fed' }, { class: 'fed', blocked: true }, { class: 'flows to tank', flow: 'forward' }, { class: 'vented' }, { class: 'cut off' },
-    { class: 'carries displaced oil' }, { class: 'cut off', trapped: 'known' }, { class: 'cut off', trapped: 'possible' },
+    { class: 'idle' },
+    { class: 'fed' },
+    { class: 'fed', blocked: true },
+    { class: 'flows to tank', flow: 'forward' },
+    { class: 'vented' },
+    { class: 'cut off' },
+    { class: 'carries displaced oil' },
+    { class: 'cut off', trapped: 'known' },
+    { class: 'cut off', trapped: 'possible' },
   ];
-  const shapes = looks.map((look) => JSON.stringify(lineMarks(BENT, look).map(({ role, weight, dash, lines }) => [role, weight, dash, lines.length])));
+  const shapes = looks.map((look) =>
+    JSON.stringify(lineMarks(BENT, look).map(({ role, weight, dash, lines }) => [role, weight, dash, lines.length])),
+  );
   expect(new Set(shapes).size).toBe(looks.length);
 });
 
@@ -82,8 +92,11 @@ test('the hatch keeps to a band of 9 px at 45°, and possible pressure is sparse
 
 test('hatches of neighbouring pieces lie on one lattice', () => {
   const sums = (points: Point[]): number[] =>
-    (lineMarks(points, { class: 'cut off', trapped: 'known' }).find((s) => s.role === 'hatch')?.lines ?? []).map((l) => ((l[0] as Point).x + (l[0] as Point).y) / 0.75);
-  for (const k of [...sums(path([0, 0], [7, 0])), ...sums(path([7, 0], [7, 5]))]) expect(k).toBeCloseTo(Math.round(k), 6);
+    (lineMarks(points, { class: 'cut off', trapped: 'known' }).find((s) => s.role === 'hatch')?.lines ?? []).map(
+      (l) => ((l[0] as Point).x + (l[0] as Point).y) / 0.75,
+    );
+  for (const k of [...sums(path([0, 0], [7, 0])), ...sums(path([7, 0], [7, 5]))])
+    expect(k).toBeCloseTo(Math.round(k), 6);
 });
 
 test('displaced oil is a double line: paper inside a wider stroke', () => {

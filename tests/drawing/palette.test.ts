@@ -25,7 +25,9 @@ test('the formula gives 21:1 for black on white, and about 4.48:1 for #777777 on
 });
 
 const pairs = (inks: readonly ColourToken[], papers: readonly ColourToken[]): [Theme, ColourToken, ColourToken][] =>
-  THEMES.flatMap((theme) => inks.flatMap((ink) => papers.map((paper): [Theme, ColourToken, ColourToken] => [theme, ink, paper])));
+  THEMES.flatMap((theme) =>
+    inks.flatMap((ink) => papers.map((paper): [Theme, ColourToken, ColourToken] => [theme, ink, paper])),
+  );
 
 test.each(pairs(TEXT_TOKENS, ['paper', 'chrome', 'panel', 'current-row', 'folded-band']))(
   '%s: %s text on %s has at least 4.5:1 (WCAG 2.2, 1.4.3)',
@@ -34,9 +36,12 @@ test.each(pairs(TEXT_TOKENS, ['paper', 'chrome', 'panel', 'current-row', 'folded
   },
 );
 
-test.each(pairs([...LINE_TOKENS, 'idle', 'rule'], ['paper']))('%s: %s strokes on %s have at least 3:1 (WCAG 2.2, 1.4.11)', (theme, ink, paper) => {
-  expect(contrast(PALETTE[theme][ink], PALETTE[theme][paper])).toBeGreaterThanOrEqual(3);
-});
+test.each(pairs([...LINE_TOKENS, 'idle', 'rule'], ['paper']))(
+  '%s: %s strokes on %s have at least 3:1 (WCAG 2.2, 1.4.11)',
+  (theme, ink, paper) => {
+    expect(contrast(PALETTE[theme][ink], PALETTE[theme][paper])).toBeGreaterThanOrEqual(3);
+  },
+);
 
 test('every token becomes a variable, in both themes alike', () => {
   for (const theme of THEMES) {

@@ -16,14 +16,31 @@ export function joins(...texts: string[]): Connection[] {
 }
 
 export const part = (id: string, kind: string, at?: Point, turn: Turn = 0, flip = false): Part => ({
-  id, kind, turn, flip, ...(at ? { at } : {}),
+  id,
+  kind,
+  turn,
+  flip,
+  ...(at ? { at } : {}),
 });
 
-export const circuit = (parts: readonly Part[], connections: readonly Connection[] = []): Circuit => ({ name: 'sample', parts, connections });
+export const circuit = (parts: readonly Part[], connections: readonly Connection[] = []): Circuit => ({
+  name: 'sample',
+  parts,
+  connections,
+});
 
 export const LEVER_VALVE: ValveData = {
-  ports: [{ id: 'A', side: 'top' }, { id: 'B', side: 'top' }, { id: 'P', side: 'bottom' }, { id: 'T', side: 'bottom' }],
-  positions: [{ name: 'out', paths: ['P-A', 'B-T'] }, { name: 'hold', paths: ['P-T'] }, { name: 'in', paths: ['P-B', 'A-T'] }],
+  ports: [
+    { id: 'A', side: 'top' },
+    { id: 'B', side: 'top' },
+    { id: 'P', side: 'bottom' },
+    { id: 'T', side: 'bottom' },
+  ],
+  positions: [
+    { name: 'out', paths: ['P-A', 'B-T'] },
+    { name: 'hold', paths: ['P-T'] },
+    { name: 'in', paths: ['P-B', 'A-T'] },
+  ],
   rest: 1,
   left: ['lever', 'spring'],
   right: ['spring'],
@@ -53,8 +70,22 @@ export function unplacedRig(): Circuit {
     name: 'Clamp and feed',
     parts,
     connections: joins(
-      'PU.S T0.T', 'PU.P RV.P', 'RV.T T1.T', 'PU.P PG.M', 'PU.P V1.P', 'PU.P V2.P', 'V1.T T2.T', 'V1.A DLC.V1', 'V1.B DLC.V2',
-      'DLC.C1 C1.A', 'DLC.C2 C1.B', 'V2.T T3.T', 'V2.A TH.A', 'TH.B M1.A', 'V2.B M1.B', 'M1.L T4.T',
+      'PU.S T0.T',
+      'PU.P RV.P',
+      'RV.T T1.T',
+      'PU.P PG.M',
+      'PU.P V1.P',
+      'PU.P V2.P',
+      'V1.T T2.T',
+      'V1.A DLC.V1',
+      'V1.B DLC.V2',
+      'DLC.C1 C1.A',
+      'DLC.C2 C1.B',
+      'V2.T T3.T',
+      'V2.A TH.A',
+      'TH.B M1.A',
+      'V2.B M1.B',
+      'M1.L T4.T',
     ),
   };
 }

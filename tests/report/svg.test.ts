@@ -31,8 +31,10 @@ function elementsOf(xml: string): string[] {
     const tag = /^<([a-zA-Z]+)((?: [a-zA-Z:-]+="[^"<]*")*)(\/?)>/.exec(rest);
     if (!tag) throw new Error(`bad tag at ${rest.slice(0, 60)}`);
     const attributes = [...(tag[2] ?? '').matchAll(/ ([a-zA-Z:-]+)="([^"]*)"/g)];
-    if (new Set(attributes.map((a) => a[1])).size !== attributes.length) throw new Error(`doubled attribute in ${tag[0]}`);
-    for (const [, , value] of attributes) if (/&(?!(amp|lt|gt|quot|#39);)/.test(value ?? '')) throw new Error(`bad value ${value}`);
+    if (new Set(attributes.map((a) => a[1])).size !== attributes.length)
+      throw new Error(`doubled attribute in ${tag[0]}`);
+    for (const [, , value] of attributes)
+      if (/&(?!(amp|lt|gt|quot|#39);)/.test(value ?? '')) throw new Error(`bad value ${value}`);
     names.push(tag[1] as string);
     if (tag[3] === '') open.push(tag[1] as string);
     rest = rest.slice(tag[0].length);
@@ -44,26 +46,35 @@ function elementsOf(xml: string): string[] {
 const sceneOf = (circuit: Circuit): Scene => {
   const placed = placeMissing(circuit);
   return buildScene(placed, routeAll(placed), {
-    lines: new Map(placed.connections.map((c, i) => [c.id, { class: i % 2 === 0 ? 'fed' : 'cut off', ...(i % 3 === 0 && { trapped: 'known' }) }])),
+    lines: new Map(
+      placed.connections.map((c, i) => [
+        c.id,
+        { class: i % 2 === 0 ? 'fed' : 'cut off', ...(i % 3 === 0 && { trapped: 'known' }) },
+      ]),
+    ),
     parts: new Map([['V1', { position: 0, note: 'out' }]]),
   });
 };
 const rig = sceneOf(unplacedRig());
 
 test('the checker itself refuses what is not well formed', () => {
-  for (const bad of ['<a><b></a></b>', '<a b="1" b="2"/>', '<a>&nope;</a>', '<a b="<"/>', '<a', '<a>', 'x<a/>']) expect(() => elementsOf(bad)).toThrow();
+  for (const bad of ['<a><b></a></b>', '<a b="1" b="2"/>', '<a>&nope;</a>', '<a b="<"/>', '<a', '<a>', 'x<a/>'])
+    expect(() => elementsOf(bad)).toThrow();
   expect(elementsOf('<a b="1"><c/>x &amp; y</a>')).toEqual(['a', 'c']);
 });
 
-test.each(['light', 'dark'] as const)('the rig in %s is well-formed, on its paper, with title and description', (theme) => {
-  const svg = sceneToSvg(rig, { theme, standalone: true });
-  const names = elementsOf(svg);
-  expect(names.slice(0, 4)).toEqual(['svg', 'title', 'desc', 'rect']);
-  expect(svg).toContain('<title>Clamp and feed</title>');
-  // 16 connections, of which the four at the pump outlet are one line.
-  expect(svg).toContain('<desc>14 parts, 13 lines.</desc>');
-  expect(svg).toContain(`fill="${PALETTE[theme].paper}"`);
-});
+test.each(['light', 'dark'] as const)(
+  'the rig in %s is well-formed, on its paper, with title and description',
+  (theme) => {
+    const svg = sceneToSvg(rig, { theme, standalone: true });
+    const names = elementsOf(svg);
+    expect(names.slice(0, 4)).toEqual(['svg', 'title', 'desc', 'rect']);
+    expect(svg).toContain('<title>Clamp and feed</title>');
+    // 16 connections, of which the four at the pump outlet are one line.
+    expect(svg).toContain('<desc>14 parts, 13 lines.</desc>');
+    expect(svg).toContain(`fill="${PALETTE[theme].paper}"`);
+  },
+);
 
 test('any viewer can show it: no variables, classes, style sheets, scripts or anything to fetch', () => {
   const svg = sceneToSvg(rig, { theme: 'light', standalone: true });
@@ -100,7 +111,13 @@ test('text from the circuit stays text', () => {
 });
 
 test('any text escapes to well-formed text that reads back the same, save what XML forbids', () => {
-  const back = (s: string): string => s.replace(/&lt;/g, '<').replace(/&gt;/g, '>').replace(/&quot;/g, '"').replace(/&#39;/g, "'").replace(/&amp;/g, '&');
+  const back = (s: string): string =>
+    s
+      .replace(/&lt;/g, '<')
+      .replace(/&gt;/g, '>')
+      .replace(/&quot;/g, '"')
+      .replace(/&#39;/g, "'")
+      .replace(/&amp;/g, '&');
   fc.assert(
     fc.property(fc.string({ unit: 'grapheme' }), (text) => {
       expect(elementsOf(`<a b="${escapeXml(text)}">${escapeXml(text)}</a>`)).toEqual(['a']);
@@ -118,5 +135,7 @@ test('set into a page it has neither prologue nor paper', () => {
 });
 
 test('equal scenes give equal files', () => {
-  expect(sceneToSvg(sceneOf(unplacedRig()), { theme: 'light', standalone: true })).toBe(sceneToSvg(rig, { theme: 'light', standalone: true }));
+  expect(sceneToSvg(sceneOf(unplacedRig()), { theme: 'light', standalone: true })).toBe(
+    sceneToSvg(rig, { theme: 'light', standalone: true }),
+  );
 });
