@@ -40,7 +40,11 @@ if (existsSync(source)) {
       const { buildCli } = await import(pathToFileURL(builder));
       await buildCli();
     } catch (error) {
-      fail('The command line could not be built: ' + String(error.message).split('\n')[0]);
+      const said = String(error.message)
+        .replace(/\u001b\[[\d;]*m/g, '')
+        .split('\n')
+        .filter(Boolean);
+      fail('The command line could not be built: ' + said.slice(0, 2).join(' '));
     }
   }
 }

@@ -14,7 +14,7 @@ export async function bundle(entry, outFile) {
     await build({
       configFile: false,
       root,
-      logLevel: 'error',
+      logLevel: 'silent',
       publicDir: false,
       ssr: { noExternal: true },
       build: {
