@@ -165,7 +165,7 @@ export function newPoint(system: FlowSystem): Point {
 /** Every branch with its bounds as they stand in `law`; `v` above the diagonal only. */
 export function evaluate(system: FlowSystem, at: Point, before: Float64Array): void {
   balance(system, at);
-  branchFlows(system, at, before, system.active.length);
+  branchFlows(system, at, before, 0, system.active.length);
 }
 
 /** Leak, void and pump of every line. */
@@ -183,12 +183,12 @@ export function balance(system: FlowSystem, at: Point): void {
   }
 }
 
-/** The first `count` active branches. `before`: through-puts at the last point, to tell where a flow turned. */
-export function branchFlows(system: FlowSystem, at: Point, before: Float64Array, count: number): void {
+/** Active branches from `first` to before `end`. `before`: through-puts at the last point, to tell where a flow turned. */
+export function branchFlows(system: FlowSystem, at: Point, before: Float64Array, first: number, end: number): void {
   const { ends, law, active } = system;
   const { p, f, v, x, slope } = at;
   const soft = at.softness;
-  for (let i = 0; i < count; i++) {
+  for (let i = first; i < end; i++) {
     const j = active[i] as number;
     const e = 3 * j;
     const l = WIDTH * j;

@@ -1,4 +1,4 @@
-import { WIDTH, evaluate, flowScale, newPoint } from './assemble.ts';
+import { HI, WIDTH, evaluate, flowScale, newPoint } from './assemble.ts';
 import type { FlowSystem, Point } from './assemble.ts';
 import { SANE } from './laws.ts';
 import { searchRay } from './ray.ts';
@@ -9,6 +9,7 @@ export interface Workspace {
   now: Point;
   next: Point;
   readonly step: Float64Array;
+  readonly simplified: Float64Array;
   /** For the line search: drive and its change along the step of each active branch, then three sums. */
   readonly ray: Float64Array;
   readonly counts: { iterations: number; evaluations: number; rays: number };
@@ -18,6 +19,7 @@ export const newWorkspace = (system: FlowSystem): Workspace => ({
   now: newPoint(system),
   next: newPoint(system),
   step: new Float64Array(system.n + 1),
+  simplified: new Float64Array(system.n + 1),
   ray: new Float64Array(2 * system.m + 3),
   counts: { iterations: 0, evaluations: 0, rays: 0 },
 });
@@ -33,8 +35,9 @@ export type Outcome = 'converged' | 'runs away' | 'stuck' | 'cancelled';
 /** Pa: a typical pressure of the circuit; the first steps are about this long. */
 const PRESSURE_STEP = 1e7;
 /** Pa: once a full step is shorter than this, its end is the answer. */
-const LAST_STEP = 0.1;
-const SLACK = 1e-9;
+const LAST_STEP = 1e-3;
+/** Imbalance that counts as none, as a share of the flow scale. */
+export const SLACK = 1e-9;
 /** Softness, as a share of the first, below which it is dropped. */
 const HARD = 1e-6;
 
@@ -64,6 +67,7 @@ export function minimise(system: FlowSystem, work: Workspace, limits: Limits, st
   const scale = flowScale(system);
   const floor = system.leak * 0.1;
   let damping = 1 / PRESSURE_STEP;
+  let corners = 0;
   let softness = (start.softness * PRESSURE_STEP) / scale;
   const hard = HARD * (PRESSURE_STEP / scale);
   work.now.softness = softness;
@@ -93,9 +97,10 @@ export function minimise(system: FlowSystem, work: Workspace, limits: Limits, st
       if (Math.abs(d) > longest) longest = Math.abs(d);
       if (Math.abs(p[i] as number) > highest) highest = Math.abs(p[i] as number);
     }
-    if (softness === 0 && longest <= LAST_STEP + SLACK * highest && norm <= SLACK * scale + noise(system, work.now)) {
-      settle(system, work);
-      return 'converged';
+    if (softness === 0 && longest <= LAST_STEP + 1e-11 * highest && norm <= SLACK * scale + noise(system, work.now)) {
+      if (settle(system, work)) return 'converged';
+      // A corner lies within the last step. After a few tries the balance that was reached is good enough.
+      if (++corners > 6) return 'converged';
     }
     if (highest > 2 * SANE.pressure) return 'runs away';
     const harder = softness * start.rate < hard ? 0 : softness * start.rate;
@@ -132,30 +137,42 @@ function trial(system: FlowSystem, work: Workspace, share: number, softness: num
   return sum;
 }
 
-/** The last step is short: flows move along their slopes, which balances them better than to evaluate them anew. */
-function settle(system: FlowSystem, work: Workspace): void {
+/**
+ * The last step is short: flows move along their slopes, which balances them better than to evaluate them
+ * anew. False, and nothing is moved, if some branch would pass a corner of its law.
+ */
+function settle(system: FlowSystem, work: Workspace): boolean {
   const { p, x, slope } = work.now;
   const { step } = work;
   const { ends, law, active } = system;
-  for (let i = 0; i < active.length; i++) {
-    const j = active[i] as number;
-    const s = slope[j] as number;
-    if (s === 0) continue;
-    const du = (law[WIDTH * j] as number) * (step[ends[3 * j] as number] as number) + (law[WIDTH * j + 1] as number) * (step[ends[3 * j + 1] as number] as number);
-    x[j] = (x[j] as number) + s * du;
+  step[system.n] = 0;
+  for (let pass = 0; pass < 2; pass++) {
+    for (let i = 0; i < active.length; i++) {
+      const j = active[i] as number;
+      const s = slope[j] as number;
+      if (s === 0) continue;
+      const l = WIDTH * j;
+      const du = (law[l] as number) * (step[ends[3 * j] as number] as number) + (law[l + 1] as number) * (step[ends[3 * j + 1] as number] as number);
+      const before = x[j] as number;
+      const after = before + s * du;
+      if (pass === 1) x[j] = after;
+      else if (after > (law[l + HI] as number) || after < (law[l + HI - 1] as number)) return false;
+      else if ((before > 0 ? after < 0 : after > 0) && law[l + 2] !== law[l + 3]) return false;
+    }
   }
   for (let i = 0; i < system.n; i++) p[i] = (p[i] as number) + (step[i] as number);
+  return true;
 }
 
 /** Stagnation: good if what is left is rounding. */
 function finish(system: FlowSystem, work: Workspace, norm: number, scale: number): Outcome {
   if (norm > 1e-7 * scale) return 'stuck';
-  settle(system, work);
+  if (!settle(system, work) && norm > SLACK * scale) return 'stuck';
   return 'converged';
 }
 
 /** What rounding of the drives alone can make of the balance of a line. */
-function noise(system: FlowSystem, at: Point): number {
+export function noise(system: FlowSystem, at: Point): number {
   const { ends, law, active } = system;
   let most = 0;
   for (let i = 0; i < active.length; i++) {

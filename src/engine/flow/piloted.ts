@@ -1,6 +1,7 @@
 import { WIDTH, HI, flowScale } from './assemble.ts';
 import type { FlowSystem } from './assemble.ts';
 import { bracketFlows } from './bracket.ts';
+import { solveCoupled } from './coupled.ts';
 import { COLD, SLOW, WARM, minimise } from './newton.ts';
 import type { Limits, Outcome, Workspace } from './newton.ts';
 import { solveSymmetric } from './sparse.ts';
@@ -46,6 +47,7 @@ export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits
         at.h.set(at.open);
       } else at.h.fill(start === 1 ? most : start === 2 ? 0 : 0.3 * scale);
       outcome = newtonOnFlows(at);
+      if (outcome === 'stuck') outcome = couple(at);
       if (outcome === 'converged' || outcome === 'cancelled') return outcome;
     }
     return bracketFlows(at, most);
@@ -53,6 +55,13 @@ export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits
     valves.forEach((i, v) => (law[WIDTH * (pilots.branch[i] as number) + HI] = bounds[v] as number));
     work.counts.iterations += at.spent;
   }
+}
+
+/** All at once from the pressures as they stand, with the true bounds of the valves. */
+export function couple(at: Pilotage): Outcome {
+  const { system, work, limits, valves, scale } = at;
+  for (const i of valves) system.law[WIDTH * (system.pilots.branch[i] as number) + HI] = Infinity;
+  return solveCoupled(system, work, { cancelled: limits.cancelled, iterations: 40 }, scale);
 }
 
 /** What the pilot pressures at `work.now.p` let open, into `open`. */
