@@ -19,6 +19,9 @@ import { fitTo, MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 /** Pixels of the frame and the status line, which a fitted circuit keeps clear of. */
 const INSET = { left: 18, top: 18, right: 18, bottom: 48 } as const;
 
+/** Pixels kept free at the left of a fitted circuit. */
+const SPARE_LEFT = 80;
+
 /** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
 function goTo(cursor: Cursor): void {
   desk.cursor = cursor;
@@ -215,7 +218,10 @@ export const sheetActions: SheetActions = {
     }
     const room = { width: Math.max(50, width - INSET.left - INSET.right), height: Math.max(50, height - INSET.top - INSET.bottom) };
     const fitted = fitTo(drawing.scene.bounds, room, 2);
-    desk.viewport = panBy(fitted, INSET.left, INSET.top);
+    // Spare width goes to the right, where the panels stand.
+    const spare = (room.width / fitted.scale - drawing.scene.bounds.width) * fitted.scale;
+    const aside = Math.max(0, spare / 2 - SPARE_LEFT);
+    desk.viewport = panBy(fitted, INSET.left - aside, INSET.top);
   },
 
   openTray() {
