@@ -18,7 +18,8 @@ const PANELS: Readonly<Record<string, PanelId>> = {
 let typed = { digits: '', at: 0 };
 
 const isTyping = (target: EventTarget | null): boolean =>
-  target instanceof HTMLElement && target.closest('input:not([type=radio], [type=checkbox]), textarea, select, [contenteditable=true]') !== null;
+  target instanceof HTMLElement &&
+  target.closest('input:not([type=radio], [type=checkbox]), textarea, select, [contenteditable=true]') !== null;
 
 function slotOf(number: number): HTMLElement | null {
   return document.querySelector<HTMLElement>(`[data-slot="${number}"] [aria-checked="true"]`);
@@ -45,10 +46,14 @@ function digit(key: string, now: number): void {
 
 /** Bands and panels in turn, as F6 goes. */
 function nextRegion(back: boolean): void {
-  const regions = [...document.querySelectorAll<HTMLElement>('[data-region]')].filter((each) => each.offsetParent !== null || each.dataset['region'] === 'panel');
+  const regions = [...document.querySelectorAll<HTMLElement>('[data-region]')].filter(
+    (each) => each.offsetParent !== null || each.dataset['region'] === 'panel',
+  );
   const at = regions.findIndex((region) => region.contains(document.activeElement));
   const next = regions.at((at + (back ? -1 : 1) + (at < 0 && back ? 1 : 0)) % regions.length);
-  const first = next?.querySelector<HTMLElement>('[tabindex="0"], button:not(:disabled, [tabindex="-1"]), input, select');
+  const first = next?.querySelector<HTMLElement>(
+    '[tabindex="0"], button:not(:disabled, [tabindex="-1"]), input, select',
+  );
   (first ?? next)?.focus();
 }
 

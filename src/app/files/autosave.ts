@@ -72,7 +72,11 @@ export function restore(): 'restored' | 'demo' | 'empty' {
       editor.load(revived(read.value, kept), { name: kept.fileName });
       session.levers = kept.levers ?? {};
       if (editor.dirty) {
-        notices.say({ level: 'note', title: 'Here is what you had open', text: 'Kept by this browser, not yet saved to a file.' });
+        notices.say({
+          level: 'note',
+          title: 'Here is what you had open',
+          text: 'Kept by this browser, not yet saved to a file.',
+        });
       }
       return 'restored';
     }

@@ -1,5 +1,9 @@
 /** Circuits that come with the program; the first is the one a newcomer sees. */
-const FILES = import.meta.glob<string>('../../../examples/*.spool.json', { query: '?raw', import: 'default', eager: true });
+const FILES = import.meta.glob<string>('../../../examples/*.spool.json', {
+  query: '?raw',
+  import: 'default',
+  eager: true,
+});
 
 export interface Example {
   readonly file: string;
@@ -8,7 +12,7 @@ export interface Example {
 }
 
 /** Opens at the first start, if it is there. */
-const DEMO = 'demo.spool.json';
+const DEMO = 'log-deck.spool.json';
 
 function titleOf(text: string, file: string): string {
   try {

@@ -12,7 +12,9 @@ import { notices } from '../state/notices.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { download, fileStem } from './save.ts';
 
-const WRITERS: Readonly<Record<'csv' | 'json' | 'md', { readonly type: string; readonly write: (report: Report) => Generator<string> }>> = {
+const WRITERS: Readonly<
+  Record<'csv' | 'json' | 'md', { readonly type: string; readonly write: (report: Report) => Generator<string> }>
+> = {
   csv: { type: 'text/csv', write: writeCsv },
   json: { type: 'application/json', write: writeJson },
   md: { type: 'text/markdown', write: writeMarkdown },

@@ -15,7 +15,11 @@ type Levers = Readonly<Record<string, number>>;
 
 /** Puts a circuit under the pen and keeps a way back to the one that was there. */
 function replace(history: History, file: OpenFile, levers: Levers, said: string): void {
-  const before = { history: editor.history, file: { name: editor.fileName, handle: editor.handle }, levers: session.levers };
+  const before = {
+    history: editor.history,
+    file: { name: editor.fileName, handle: editor.handle },
+    levers: session.levers,
+  };
   const worthKeeping = editor.dirty && editor.circuit.parts.length > 0;
   editor.load(history, file);
   session.levers = levers;

@@ -1,5 +1,12 @@
 import type { Subject } from '../state/session.svelte.ts';
-import type { ActuatorVerdict, Explanation, PumpVerdict, ReasonStep, StateTable, TrapReason } from '../../worker/client.ts';
+import type {
+  ActuatorVerdict,
+  Explanation,
+  PumpVerdict,
+  ReasonStep,
+  StateTable,
+  TrapReason,
+} from '../../worker/client.ts';
 
 /** What the Why panel says about its subject, whatever kind it is. */
 export interface Reason {
@@ -16,7 +23,12 @@ export interface Reason {
 }
 
 const BARE: ReadonlySet<string> = new Set([
-  'extends', 'retracts', 'turns A→B', 'turns B→A', 'floats', 'rests on pressure',
+  'extends',
+  'retracts',
+  'turns A→B',
+  'turns B→A',
+  'floats',
+  'rests on pressure',
 ]);
 
 /** `LIFT is held`, `CLAMP extends`, `FEED turns A→B`. */

@@ -15,7 +15,9 @@ export interface CircuitActuator {
 /** Actuators in circuit order. */
 export function actuatorsOf(circuit: Circuit): CircuitActuator[] {
   return circuit.parts.flatMap((part) => {
-    const element = kindOf(part.kind)?.elements(part).find((each) => each.type === 'actuator');
+    const element = kindOf(part.kind)
+      ?.elements(part)
+      .find((each) => each.type === 'actuator');
     return element ? [{ part: part.id, label: labelOf(part), motion: element.motion, load: element.load }] : [];
   });
 }
@@ -24,6 +26,8 @@ export function actuatorsOf(circuit: Circuit): CircuitActuator[] {
 export function sayLoad(actuator: CircuitActuator, units: UnitSystem): string {
   const rotary = actuator.motion === 'rotary';
   const { sense, size } = actuator.load;
-  const way = rotary ? { in: 'B→A', out: 'A→B', resisting: 'resisting', none: '' } : { in: 'in', out: 'out', resisting: 'resisting', none: '' };
+  const way = rotary
+    ? { in: 'B→A', out: 'A→B', resisting: 'resisting', none: '' }
+    : { in: 'in', out: 'out', resisting: 'resisting', none: '' };
   return `${formatQuantity(size, rotary ? 'torque' : 'force', units)} ${way[sense]}`.trim();
 }

@@ -5,29 +5,19 @@ import type {
   Conditions,
   Explanation,
   Job,
-  LineClass,
-  BlockedKind,
   ReasonStep,
   StateTable,
   TableAnswer,
-  TrapReason,
 } from '../../worker/client.ts';
+import { connectionLooks } from './connection-looks.ts';
+import type { ConnectionLook } from './connection-looks.ts';
 import { editor } from './editor.svelte.ts';
 import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
 import type { CircuitInput } from './inputs.ts';
 import { view } from './view.svelte.ts';
 
-/** How a drawn connection is to look in the current row. */
-export interface ConnectionLook {
-  /** Index and name of its line in the table. */
-  readonly line: number;
-  readonly name: string;
-  readonly class: LineClass;
-  /** Why pressure can stand in it; empty = it is not trapped. */
-  readonly trapped: readonly TrapReason[];
-  readonly blocked: BlockedKind | undefined;
-}
+export type { ConnectionLook } from './connection-looks.ts';
 
 /** A step of the reason on show: draw a balloon with `number` at its parts and lines. */
 export interface LitStep {
@@ -89,7 +79,7 @@ class Session {
   /** Current row, 0-based; 0 while there is no table. */
   row = $derived(this.table ? this.table.rowOf(this.#positionsFor(this.table)) : 0);
 
-  #looks: ReadonlyMap<string, ConnectionLook> = $derived.by(() => looksOf(this.table, this.row));
+  #looks: ReadonlyMap<string, ConnectionLook> = $derived.by(() => connectionLooks(this.table, this.row));
 
   /** Steps of the reason on show, from the explanation of the current row. */
   steps: readonly ReasonStep[] = $derived.by(() => this.#stepsOnShow());
@@ -152,9 +142,8 @@ class Session {
 
   /** `between` its stops, or at one. */
   setPlace(partId: string, place: 'between' | 'in' | 'out'): void {
-    const places = { ...this.conditions.places };
-    if (place === 'between') delete places[partId];
-    else places[partId] = place;
+    const { [partId]: _, ...others } = this.conditions.places ?? {};
+    const places = place === 'between' ? others : { ...others, [partId]: place };
     this.conditions = { pumps: this.conditions.pumps, places };
   }
 
@@ -267,20 +256,5 @@ class Session {
 const clampTo = (index: number, length: number): number => Math.min(Math.max(index, 0), Math.max(length - 1, 0));
 
 const sayError = (error: unknown): string => (error instanceof Error ? error.message : String(error));
-
-function looksOf(table: StateTable | undefined, row: number): ReadonlyMap<string, ConnectionLook> {
-  const looks = new Map<string, ConnectionLook>();
-  table?.data.lines.forEach((line, index) => {
-    const look: ConnectionLook = {
-      line: index,
-      name: line.name,
-      class: table.line(index, row),
-      trapped: table.trapped(index, row),
-      blocked: table.blocked(index, row),
-    };
-    for (const id of line.connections) looks.set(id, look);
-  });
-  return looks;
-}
 
 export const session = new Session();

@@ -1,5 +1,5 @@
-import { ACTUATOR_NOTES, TRAP_REASONS } from '../../worker/client.ts';
-import type { Finding, StateTable, TrapReason } from '../../worker/client.ts';
+import { TRAP_REASONS } from '../../worker/client.ts';
+import type { ActuatorNote, Finding, StateTable, TrapReason } from '../../worker/client.ts';
 
 /** Words of one row, shortest form. */
 export interface NamedGroup {
@@ -54,13 +54,12 @@ export interface RowNote {
   readonly text: string;
 }
 
-const SAID: Readonly<Record<(typeof ACTUATOR_NOTES)[number], string | undefined>> = {
+const SAID: Readonly<Record<ActuatorNote, string>> = {
   'outward by suction only': 'held outward by suction only',
   'inward by suction only': 'held inward by suction only',
   'void forms': 'void forms',
-  // Shown with the verdict itself.
-  'free outward': undefined,
-  'free inward': undefined,
+  'free outward': 'free outward',
+  'free inward': 'free inward',
 };
 
 /** A finding speaks in a row only if it lists every row that shows it; a cut list would leave rows out in silence. */
@@ -79,8 +78,9 @@ export function rowNotes(table: StateTable, findings: readonly Finding[], row: n
   }
   data.actuators.forEach((actuator, i) => {
     for (const note of table.actuatorNotes(i, row)) {
-      const said = SAID[note];
-      if (said !== undefined) notes.push({ level: 'note', text: `${actuator.label} ${said}` });
+      // Which way it is free matters where it is held the other way.
+      if (note.startsWith('free') && table.actuator(i, row) !== 'held one way') continue;
+      notes.push({ level: 'note', text: `${actuator.label} ${SAID[note]}` });
     }
   });
   if (row === table.restRow()) notes.push({ level: 'note', text: 'rest: every lever let go' });

@@ -54,7 +54,13 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
   const digits = String(data.count).length;
   const row = fixed({ id: 'row', of: 'row', index: 0, title: 'row', width: Math.max(76, digits * 8 + 34) });
   const levers = data.inputs.flatMap((input, index): Column[] => [
-    fixed({ id: `input:${index}`, of: 'input', index, title: input.label, width: fits(input.positions, 0, input.label) }),
+    fixed({
+      id: `input:${index}`,
+      of: 'input',
+      index,
+      title: input.label,
+      width: fits(input.positions, 0, input.label),
+    }),
     ...input.coils.map((coil, i) =>
       fixed({
         id: `coil:${index}:${i}`,
@@ -111,7 +117,8 @@ function positionPlane(table: StateTable, index: number, position: number): BitS
   const stride = data.inputs.slice(index + 1).reduce((n, input) => n * input.positions.length, 1);
   const cycle = stride * (data.inputs[index]?.positions.length ?? 1);
   for (let start = position * stride; start < data.count; start += cycle) {
-    for (let row = start; row < start + stride; row++) plane[row >>> 5] = (plane[row >>> 5] as number) | (1 << (row & 31));
+    for (let row = start; row < start + stride; row++)
+      plane[row >>> 5] = (plane[row >>> 5] as number) | (1 << (row & 31));
   }
   return plane;
 }
@@ -127,7 +134,10 @@ export const LEVELS = ['danger', 'note', 'nothing'] as const;
 /** Danger and notes that follow from the table's own planes. */
 export function levelPlanes(table: StateTable): [BitSet, BitSet, BitSet] {
   const dead = PUMP_VERDICTS.indexOf('dead-headed');
-  const danger = joined(table, table.data.pumpPlanes.map((planes) => planes[dead]));
+  const danger = joined(
+    table,
+    table.data.pumpPlanes.map((planes) => planes[dead]),
+  );
   const note = joined(table, table.data.actuatorNotes.flat());
   const nothing = emptySet(table.count);
   for (let w = 0; w < nothing.length; w++) {
@@ -156,7 +166,10 @@ export function planeOf(table: StateTable, column: Pick<Column, 'of' | 'index'>,
     case 'blocked':
       return joined(table, data.blockedPlanes[value] ?? []);
     case 'trapped':
-      return joined(table, data.trapPlanes.map((planes) => planes[value]));
+      return joined(
+        table,
+        data.trapPlanes.map((planes) => planes[value]),
+      );
     case 'notes':
       return levelPlanes(table)[value] ?? emptySet(table.count);
     case 'row':

@@ -16,7 +16,11 @@ export interface Extent {
 export function gridMove(event: Pick<KeyboardEvent, 'key' | 'ctrlKey'>, at: Spot, extent: Extent): Spot | undefined {
   const lastColumn = extent.columns - 1;
   const last = extent.places - 1;
-  const body = (place: number): Spot => ({ zone: 'body', column: at.column, place: Math.min(Math.max(place, 0), last) });
+  const body = (place: number): Spot => ({
+    zone: 'body',
+    column: at.column,
+    place: Math.min(Math.max(place, 0), last),
+  });
   switch (event.key) {
     case 'ArrowLeft':
       return { ...at, column: Math.max(0, at.column - 1) };

@@ -99,7 +99,13 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
     case 'trapped': {
       const heat = TRAP_REASONS.indexOf('heat');
       for (const planes of data.trapPlanes) {
-        yield* tally(keys, yield* eitherOf(planes.filter((_, reason) => reason !== heat), words));
+        yield* tally(
+          keys,
+          yield* eitherOf(
+            planes.filter((_, reason) => reason !== heat),
+            words,
+          ),
+        );
       }
       break;
     }

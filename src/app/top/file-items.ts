@@ -15,5 +15,8 @@ export const labelledExamples = (): MenuItem[] =>
     ? []
     : [
         { heading: 'Examples' },
-        ...EXAMPLES.map(({ title, text }): MenuItem => ({ text: title, run: () => void openText(text, { name: undefined }) })),
+        ...EXAMPLES.map(({ title, text }): MenuItem => ({
+          text: title,
+          run: () => void openText(text, { name: undefined }),
+        })),
       ];
