@@ -54,28 +54,33 @@ export interface RemoveOptions {
 
 /** Remove parts with all their connections. */
 export function removeParts(circuit: Circuit, ids: Iterable<string>, options: RemoveOptions = {}): Edit {
+  const chosen = new Set(ids);
+  const parts = partsOf(circuit, chosen);
+  if (!options.heal) {
+    const held = circuit.connections.filter(({ from, to }) => chosen.has(from.part) || chosen.has(to.part));
+    return all([
+      ...held.map((c): Edit => ({ type: 'remove-connection', id: c.id })),
+      ...parts.map(({ id }): Edit => ({ type: 'remove-part', id })),
+    ]);
+  }
   const edits: Edit[] = [];
   let now = circuit;
-  for (const { id } of partsOf(circuit, new Set(ids))) {
-    const edit = removeOne(now, id, options.heal === true);
+  for (const { id } of parts) {
+    const edit = removeAndHeal(now, id);
     now = applyEdit(now, edit);
     edits.push(...edit.edits);
   }
   return all(edits);
 }
 
-function removeOne(
-  circuit: Circuit,
-  id: string,
-  heal: boolean,
-): { readonly type: 'all'; readonly edits: readonly Edit[] } {
+function removeAndHeal(circuit: Circuit, id: string): { readonly type: 'all'; readonly edits: readonly Edit[] } {
   const part = partOf(circuit, id);
   const own = circuit.connections.filter(({ from, to }) => from.part === id || to.part === id);
   const removals: Edit[] = [
     ...own.map((c): Edit => ({ type: 'remove-connection', id: c.id })),
     { type: 'remove-part', id },
   ];
-  const bridge = heal ? bridgeOver(circuit, part, own) : undefined;
+  const bridge = bridgeOver(circuit, part, own);
   if (bridge === undefined) return { type: 'all', edits: removals };
   const index = circuit.connections.findIndex((c) => c.id === bridge.id);
   return { type: 'all', edits: [...removals, { type: 'put-connection', index, connection: bridge }] };

@@ -1,7 +1,5 @@
-import type { Point } from '../base/points.ts';
-import { omit } from './fields.ts';
-import { isId, LIMITS } from './limits.ts';
-import { labelOf, sayPort, type Circuit, type Connection, type Label, type Part } from './model.ts';
+import { checkPoints, Draft, type DraftList } from './draft.ts';
+import type { Circuit, Connection, Label, Part } from './model.ts';
 import { RefusedEdit } from './refused.ts';
 
 /**
@@ -104,122 +102,87 @@ export const invertEdit = (circuit: Circuit, edit: Edit): Edit => applyBoth(circ
 
 /** Both at once, for the cost of one. */
 export function applyBoth(circuit: Circuit, edit: Edit): { circuit: Circuit; inverse: Edit } {
-  if (edit.type === 'all') {
-    const inverses: Edit[] = [];
-    let now = circuit;
-    for (const one of edit.edits) {
-      const done = applyBoth(now, one);
-      now = done.circuit;
-      inverses.push(done.inverse);
-    }
-    return { circuit: now, inverse: all(inverses.reverse()) };
-  }
+  const draft = new Draft(circuit);
+  const inverse = perform(draft, edit);
+  return { circuit: draft.done(), inverse };
+}
+
+/** Does the edit to the draft, and tells what takes it back. */
+function perform(draft: Draft, edit: Edit): Edit {
   switch (edit.type) {
-    case 'put-part': {
-      const { part, index } = edit;
-      checkNew('part', circuit.parts, part.id);
-      checkShown(circuit, part);
-      checkPoints(part.id, [part.at]);
-      checkRoom('parts', circuit.parts);
-      return {
-        circuit: { ...circuit, parts: inserted(circuit.parts, index, part) },
-        inverse: { type: 'remove-part', id: part.id },
-      };
-    }
-    case 'remove-part': {
-      const index = indexOf('part', circuit.parts, edit.id);
-      const held = circuit.connections.find((c) => c.from.part === edit.id || c.to.part === edit.id);
-      if (held)
-        throw new RefusedEdit(
-          edit.id,
-          `The connection "${held.id}" still ends at this part.`,
-          'Remove its connections first.',
-        );
-      const part = circuit.parts[index] as Part;
-      return {
-        circuit: { ...circuit, parts: circuit.parts.toSpliced(index, 1) },
-        inverse: { type: 'put-part', index, part },
-      };
-    }
+    case 'all':
+      return all(edit.edits.map((one) => perform(draft, one)).reverse());
+    case 'put-part':
+      draft.putPart(edit.index, edit.part);
+      return { type: 'remove-part', id: edit.part.id };
+    case 'remove-part':
+      return { type: 'put-part', ...draft.removePart(edit.id) };
     case 'change-part': {
-      const index = indexOf('part', circuit.parts, edit.id);
-      const before = circuit.parts[index] as Part;
-      const after = changed(before, edit);
-      if (labelOf(after) !== labelOf(before)) checkShown(circuit, after);
-      checkPoints(edit.id, [edit.fields.at]);
-      return {
-        circuit: { ...circuit, parts: circuit.parts.with(index, after) },
-        inverse: changePart(edit.id, former(before, edit)),
-      };
+      const index = draft.parts.indexOf(edit.id);
+      const before = draft.parts.at(index);
+      draft.changePart(index, before, changed(before, edit));
+      return changePart(edit.id, former(before, edit));
     }
-    case 'put-connection': {
-      const { connection, index } = edit;
-      checkNew('connection', circuit.connections, connection.id);
-      checkEnds(circuit, connection);
-      checkPoints(connection.id, connection.bends);
-      checkRoom('connections', circuit.connections);
-      return {
-        circuit: { ...circuit, connections: inserted(circuit.connections, index, connection) },
-        inverse: { type: 'remove-connection', id: connection.id },
-      };
-    }
+    case 'put-connection':
+      draft.putConnection(edit.index, edit.connection);
+      return { type: 'remove-connection', id: edit.connection.id };
     case 'remove-connection': {
-      const index = indexOf('connection', circuit.connections, edit.id);
-      const connection = circuit.connections[index] as Connection;
-      return {
-        circuit: { ...circuit, connections: circuit.connections.toSpliced(index, 1) },
-        inverse: { type: 'put-connection', index, connection },
-      };
+      const index = draft.connections.indexOf(edit.id);
+      return { type: 'put-connection', index, connection: draft.removeConnection(index) };
     }
     case 'change-connection': {
-      const index = indexOf('connection', circuit.connections, edit.id);
-      const before = circuit.connections[index] as Connection;
-      const after = changed(before, edit);
-      if (after.from !== before.from || after.to !== before.to) checkEnds(circuit, after);
-      checkPoints(edit.id, edit.fields.bends);
-      return {
-        circuit: { ...circuit, connections: circuit.connections.with(index, after) },
-        inverse: changeConnection(edit.id, former(before, edit)),
-      };
+      const index = draft.connections.indexOf(edit.id);
+      const before = draft.connections.at(index);
+      draft.changeConnection(index, before, changed(before, edit));
+      return changeConnection(edit.id, former(before, edit));
     }
     case 'put-label': {
-      const { label, index } = edit;
-      checkNew('label', circuit.labels ?? [], label.id);
-      checkPoints(label.id, [label.at]);
-      checkRoom('labels', circuit.labels ?? []);
-      const inverse: Edit = { type: 'remove-label', id: label.id, ...(circuit.labels === undefined && { list: true }) };
-      return { circuit: { ...circuit, labels: inserted(circuit.labels ?? [], index, label) }, inverse };
+      const first = draft.labels === undefined;
+      checkPoints(edit.label.id, [edit.label.at]);
+      draft.beginLabels().put(edit.index, edit.label);
+      return { type: 'remove-label', id: edit.label.id, ...(first && { list: true }) };
     }
     case 'remove-label': {
-      const labels = circuit.labels ?? [];
-      const index = indexOf('label', labels, edit.id);
-      const inverse: Edit = { type: 'put-label', index, label: labels[index] as Label };
-      if (!edit.list || labels.length > 1)
-        return { circuit: { ...circuit, labels: labels.toSpliced(index, 1) }, inverse };
-      return { circuit: omit(circuit, 'labels'), inverse };
+      const labels = labelsOf(draft, edit.id);
+      const index = labels.indexOf(edit.id);
+      const label = labels.remove(index);
+      if (edit.list && labels.items.length === 0) draft.dropLabels();
+      return { type: 'put-label', index, label };
     }
     case 'change-label': {
-      const labels = circuit.labels ?? [];
-      const index = indexOf('label', labels, edit.id);
-      const before = labels[index] as Label;
-      checkPoints(edit.id, [edit.fields.at]);
-      return {
-        circuit: { ...circuit, labels: labels.with(index, changed(before, edit)) },
-        inverse: changeLabel(edit.id, former(before, edit)),
-      };
+      const labels = labelsOf(draft, edit.id);
+      const index = labels.indexOf(edit.id);
+      const before = labels.at(index);
+      const after = changed(before, edit);
+      checkPoints(edit.id, [after.at]);
+      labels.change(index, after);
+      return changeLabel(edit.id, former(before, edit));
     }
     case 'change-circuit': {
       for (const key of ['parts', 'connections', 'labels']) {
-        if (Object.hasOwn(edit.fields, key))
-          throw new RefusedEdit(
-            'circuit',
-            `The list "${key}" cannot be changed whole.`,
-            'Put, change or remove its members.',
-          );
+        if (!Object.hasOwn(edit.fields, key)) continue;
+        throw new RefusedEdit(
+          'circuit',
+          `The list "${key}" cannot be changed whole.`,
+          'Put, change or remove its members.',
+        );
       }
-      return { circuit: changed(circuit, edit), inverse: changeCircuit(former<Circuit>(circuit, edit)) };
+      const before = draft.sheet;
+      draft.sheet = changed(before, edit);
+      return changeCircuit(former(before, edit));
     }
+    default:
+      throw new RefusedEdit(
+        'edit',
+        'This edit is of no known type.',
+        'It may come from a newer version of this program.',
+      );
   }
+}
+
+function labelsOf(draft: Draft, id: string): DraftList<Label> {
+  if (draft.labels) return draft.labels;
+  throw new RefusedEdit(id, `There is no label "${id}".`, 'It may have been removed before.');
 }
 
 interface Change {
@@ -241,61 +204,4 @@ function former<T extends object>(before: T, change: Change): { [K in keyof T]?:
   const was: { [K in keyof T]?: T[K] | undefined } = {};
   for (const key of [...Object.keys(change.fields), ...(change.without ?? [])] as (keyof T)[]) was[key] = before[key];
   return was;
-}
-
-function inserted<T extends { readonly id: string }>(list: readonly T[], index: number, item: T): readonly T[] {
-  if (!Number.isInteger(index) || index < 0 || index > list.length) {
-    throw new RefusedEdit(
-      item.id,
-      `There is no place ${index} in a list of ${list.length}.`,
-      'Put it at the end or before one that is there.',
-    );
-  }
-  return list.toSpliced(index, 0, item);
-}
-
-function indexOf(noun: string, list: readonly { readonly id: string }[], id: string): number {
-  const index = list.findIndex((item) => item.id === id);
-  if (index < 0) throw new RefusedEdit(id, `There is no ${noun} "${id}".`, 'It may have been removed before.');
-  return index;
-}
-
-function checkNew(noun: string, list: readonly { readonly id: string }[], id: string): void {
-  if (!isId(id)) throw new RefusedEdit(id, `"${id}" is no ${noun} id.`, 'Use letters, digits, - and _ only.');
-  if (list.some((item) => item.id === id))
-    throw new RefusedEdit(id, `There is a ${noun} "${id}" already.`, 'Give it another id.');
-}
-
-function checkShown(circuit: Circuit, part: Part): void {
-  const shown = labelOf(part);
-  const other = circuit.parts.find((p) => p.id !== part.id && labelOf(p) === shown);
-  if (other)
-    throw new RefusedEdit(part.id, `The part ${other.id} is shown as "${shown}" already.`, 'Choose another label.');
-}
-
-function checkEnds(circuit: Circuit, { id, from, to }: Connection): void {
-  for (const end of [from, to]) {
-    if (!circuit.parts.some((part) => part.id === end.part)) {
-      throw new RefusedEdit(id, `There is no part "${end.part}".`, 'Connect ports of parts that are there.');
-    }
-  }
-  if (from.part === to.part && from.port === to.port) {
-    throw new RefusedEdit(id, `The connection would go from ${sayPort(from)} to itself.`, 'Choose another port.');
-  }
-}
-
-/** What is refused here is what could not be read from a file again. */
-function checkPoints(id: string, points: readonly (Point | undefined)[] = []): void {
-  const fits = (n: number): boolean => Math.abs(n) <= LIMITS.coordinate;
-  if (points.every((p) => p === undefined || (fits(p.x) && fits(p.y)))) return;
-  throw new RefusedEdit(id, 'This place lies off the sheet.', `Stay within ${LIMITS.coordinate} modules.`);
-}
-
-function checkRoom(field: 'parts' | 'connections' | 'labels', list: readonly unknown[]): void {
-  if (list.length < LIMITS[field]) return;
-  throw new RefusedEdit(
-    'circuit',
-    `The circuit has ${list.length} ${field}, and a file holds no more.`,
-    'Start a second circuit.',
-  );
 }

@@ -86,6 +86,11 @@ describe('round trip', () => {
     expect(read(writeCircuit(circuit)).labels?.[0]?.text).toBe(label);
   });
 
+  test('minus nought is nought, so that equal places are equal', () => {
+    const text = file({ parts: [{ id: 'T1', kind: 'tank', at: ['-0', 5] }] }).replace('"-0"', '-0');
+    expect(read(text).parts[0]?.at).toStrictEqual({ x: 0, y: 5 });
+  });
+
   test('a byte order mark at the start is passed over', () => {
     expect(read('\ufeff' + file({})).parts.length).toBe(2);
   });
