@@ -67,7 +67,7 @@ describe('table', () => {
     const csv = await spooltable(['table', rig, '--format', 'csv']);
     expect(csv.out.split('\r\n')).toHaveLength(11);
     const markdown = await spooltable(['table', rig, '--format', 'markdown']);
-    expect(markdown.out.split('\n').filter((line) => line.startsWith('| '))).toHaveLength(10);
+    expect(markdown.out.split('\n').filter((line) => line.startsWith('|'))).toHaveLength(9 + 2);
   });
 
   test('reads standard input', async () => {
