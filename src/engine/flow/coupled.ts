@@ -14,12 +14,13 @@ const LAST_STEP = 1e-3;
  * step limit and the natural monotonicity test (the next simplified step must be shorter), and a pseudo-
  * transient term σ where that fails. Starts from `work.now.p` and needs a start in the right region; where it
  * has one it also finds answers that hang on a flow too fine to be bracketed.
+ * `transient` (m³/s per Pa) begins instead with that term and lets it fade, which goes further from a poor start.
  */
-export function solveCoupled(system: FlowSystem, work: Workspace, limits: Limits, scale: number): Outcome {
+export function solveCoupled(system: FlowSystem, work: Workspace, limits: Limits, scale: number, transient = 0): Outcome {
   const { n, plan } = system;
   const { step, counts, simplified } = work;
   const floor = system.leak * 1e-3;
-  let sigma = 0;
+  let sigma = transient;
   work.now.softness = work.next.softness = 0;
   work.next.x.fill(0);
   evaluateCoupled(system, work.now, work.next.x);
@@ -44,6 +45,18 @@ export function solveCoupled(system: FlowSystem, work: Workspace, limits: Limits
     }
     let share = Math.min(1, LONGEST / longest);
     let good = false;
+    if (transient > 0 && sigma > 0) {
+      // Pseudo-transient: each line fills as if it had a capacity; the term fades as the balance improves.
+      for (let i = 0; i < n; i++) work.next.p[i] = (p[i] as number) + share * (step[i] as number);
+      evaluateCoupled(system, work.next, work.now.x);
+      const reached = size(work.next.f, n);
+      sigma *= Math.min(2, Math.max(0.3, norm > 0 ? reached / norm : 0.3)) * 0.9;
+      if (sigma < 1e-4 * NEAR_IDEAL.leak) sigma = 0;
+      const { now } = work;
+      work.now = work.next;
+      work.next = now;
+      continue;
+    }
     for (let trial = 0; trial < 7 && !good; trial++, share *= 0.5) {
       for (let i = 0; i < n; i++) work.next.p[i] = (p[i] as number) + share * (step[i] as number);
       evaluateCoupled(system, work.next, work.now.x);

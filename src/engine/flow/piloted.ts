@@ -50,7 +50,13 @@ export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits
       if (outcome === 'stuck') outcome = couple(at);
       if (outcome === 'converged' || outcome === 'cancelled') return outcome;
     }
-    return bracketFlows(at, most);
+    outcome = bracketFlows(at, most);
+    for (let start = 0; start < 6 && outcome === 'stuck'; start++) {
+      at.h.fill(start % 3 === 0 ? most : start % 3 === 1 ? 0 : 0.3 * scale);
+      outcome = settleAt(at);
+      if (outcome !== 'cancelled') outcome = couple(at, (start < 3 ? 1e-8 : 1e-10) * (scale / 1e-3));
+    }
+    return outcome;
   } finally {
     valves.forEach((i, v) => (law[WIDTH * (pilots.branch[i] as number) + HI] = bounds[v] as number));
     work.counts.iterations += at.spent;
@@ -58,10 +64,10 @@ export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits
 }
 
 /** All at once from the pressures as they stand, with the true bounds of the valves. */
-export function couple(at: Pilotage): Outcome {
+export function couple(at: Pilotage, transient = 0): Outcome {
   const { system, work, limits, valves, scale } = at;
   for (const i of valves) system.law[WIDTH * (system.pilots.branch[i] as number) + HI] = Infinity;
-  return solveCoupled(system, work, { cancelled: limits.cancelled, iterations: 40 }, scale);
+  return solveCoupled(system, work, { cancelled: limits.cancelled, iterations: transient > 0 ? 150 : 40 }, scale, transient);
 }
 
 /** What the pilot pressures at `work.now.p` let open, into `open`. */
