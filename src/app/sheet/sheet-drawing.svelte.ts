@@ -4,7 +4,6 @@ import type { Circuit, Part } from '../../circuit/model.ts';
 import type { Places } from '../../circuit/build.ts';
 import type { Routes } from '../../drawing/geometry.ts';
 import { placeMissing } from '../../drawing/place.ts';
-import { reroute, routeAll } from '../../drawing/routing.ts';
 import { buildScene } from '../../drawing/scene.ts';
 import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scene.ts';
 import type { SceneLabel } from '../../drawing/labels.ts';
@@ -17,6 +16,7 @@ import { session } from '../state/session.svelte.ts';
 import { flowWays } from './flow-ways.ts';
 import type { HitMap } from './hit.ts';
 import { lineLook } from './looks.ts';
+import { SheetRoutes } from './sheet-routes.ts';
 import { steadyList } from './steady.ts';
 
 /** What the row says of one part. */
@@ -37,8 +37,8 @@ class SheetDrawing {
   /** For edits that move parts which have no place of their own yet. */
   places: Places = $derived(new Map(this.circuit.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
 
-  #route = incremental();
-  routes: Routes = $derived(this.#route(this.circuit));
+  #layer = new SheetRoutes();
+  routes: Routes = $derived(this.#layer.of(this.circuit, this.preview !== undefined));
 
   states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit));
 
@@ -89,28 +89,6 @@ const stripShift = (primitives: readonly Primitive[]): Point | undefined => {
   const strip = primitives.find((p) => p.type === 'group' && p.role === 'strip');
   return strip?.type === 'group' ? strip.shift : undefined;
 };
-
-/** Lays only what a change touched; a route that came out the same stays the same object. */
-function incremental(): (circuit: Circuit) => Routes {
-  let before: Circuit | undefined;
-  let routes: Routes = new Map();
-  return (circuit) => {
-    if (circuit === before) return routes;
-    const known = new Map(before?.parts.map((part) => [part.id, part]));
-    const changed = circuit.parts.filter((part) => known.get(part.id) !== part).map((part) => part.id);
-    // Most of it new: another circuit was opened.
-    const afresh = !before || changed.length * 2 > circuit.parts.length;
-    const next: Routes = afresh ? routeAll(circuit) : reroute(routes, circuit, changed);
-    routes = new Map([...next].map(([id, points]) => [id, keep(routes.get(id), points)]));
-    before = circuit;
-    return routes;
-  };
-}
-
-function keep(before: readonly Point[] | undefined, after: readonly Point[]): readonly Point[] {
-  const same = before?.length === after.length && before.every((p, i) => p.x === after[i]?.x && p.y === after[i]?.y);
-  return same ? before : after;
-}
 
 function partStates(circuit: Circuit): Map<string, PartState> {
   const states = new Map<string, PartState>();

@@ -1,0 +1,67 @@
+import type { Box, Point } from '../../base/points.ts';
+import { union } from '../../base/points.ts';
+import type { Circuit, Part } from '../../circuit/model.ts';
+import { boxOfPoints, inflate, overlaps } from '../../drawing/geometry.ts';
+import type { Routes } from '../../drawing/geometry.ts';
+import { lay, reroute, routeAll, routeConnection, routingSheet } from '../../drawing/routing.ts';
+import { partBox } from '../../drawing/shapes.ts';
+
+/** Modules round the moved parts and the far ends of their lines that a route laid during a drag looks at. */
+const ROUND = 14;
+
+/**
+ * Routes from one form of the circuit to the next: only what a change touched is laid again, and a route that
+ * came out the same stays the same object. `passing`: a form that is shown during a drag; see `layNear`.
+ */
+export class SheetRoutes {
+  #before: Circuit | undefined;
+  #routes: Routes = new Map();
+
+  of(circuit: Circuit, passing: boolean): Routes {
+    const changed = changedParts(this.#before, circuit);
+    if (passing && this.#before) return layNear(this.#routes, circuit, changed);
+    if (circuit === this.#before) return this.#routes;
+    // Most of it new: another circuit was opened.
+    const afresh = !this.#before || changed.length * 2 > circuit.parts.length;
+    const next: Routes = afresh ? routeAll(circuit) : reroute(this.#routes, circuit, changed);
+    this.#routes = new Map([...next].map(([id, points]) => [id, keep(this.#routes.get(id), points)]));
+    this.#before = circuit;
+    return this.#routes;
+  }
+}
+
+function changedParts(before: Circuit | undefined, circuit: Circuit): string[] {
+  const known = new Map(before?.parts.map((part) => [part.id, part]));
+  return circuit.parts.filter((part) => known.get(part.id) !== part).map((part) => part.id);
+}
+
+function keep(before: readonly Point[] | undefined, after: readonly Point[]): readonly Point[] {
+  const same = before?.length === after.length && before.every((p, i) => p.x === after[i]?.x && p.y === after[i]?.y);
+  return same ? before : after;
+}
+
+/**
+ * The lines of moved parts only, and with an eye only to what is near: a drag must follow the hand on a sheet of
+ * hundreds of parts. Lines that the moved parts cover give way when they are put down.
+ */
+function layNear(routes: Routes, circuit: Circuit, changed: readonly string[]): Routes {
+  const moved = new Set(changed);
+  const touched = circuit.connections.filter(({ from, to }) => moved.has(from.part) || moved.has(to.part));
+  const ends = new Set([...changed, ...touched.flatMap(({ from, to }) => [from.part, to.part])]);
+  const room = union(circuit.parts.filter(({ id }) => ends.has(id)).map(partBox));
+  if (!room) return routes;
+  const near = inflate(room, ROUND);
+  const isNear = (part: Part): boolean => ends.has(part.id) || overlaps(partBox(part), near);
+  const ids = new Set(touched.map(({ id }) => id));
+  const others = [...routes].filter(([id, points]) => !ids.has(id) && overlaps(boxOfPoints(points) ?? EMPTY, near));
+  const sheet = routingSheet({ ...circuit, parts: circuit.parts.filter(isNear) }, new Map(others));
+  const out = new Map(routes);
+  for (const connection of touched) {
+    const points = routeConnection(sheet, connection);
+    lay(sheet, connection.id, points);
+    out.set(connection.id, keep(routes.get(connection.id), points));
+  }
+  return out;
+}
+
+const EMPTY: Box = { x: 0, y: 0, width: 0, height: 0 };
