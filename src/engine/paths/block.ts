@@ -3,9 +3,9 @@ import type { EdgeSet } from './edges.ts';
 import { Spreader } from './field.ts';
 import type { Field } from './field.ts';
 import { findMotion } from './motion.ts';
-import type { Motion } from './motion.ts';
-import { compileLinks, reach } from './reach.ts';
-import type { Links, PathConditions, Reach } from './reach.ts';
+import type { Motion } from './motion-bits.ts';
+import { compileLinks, compileOrders, reach } from './reach.ts';
+import type { Links, Orders, PathConditions, Reach } from './reach.ts';
 
 /** One block of states, settled: every lock check agrees with the pressures it causes. */
 export interface SettledBlock {
@@ -27,6 +27,7 @@ export class PathSolver {
   readonly edges: EdgeSet;
   readonly conditions: PathConditions;
   readonly links: Links;
+  readonly #orders: Orders;
   readonly #spreader: Spreader;
 
   constructor(net: Network, edges: EdgeSet, conditions: PathConditions, maxWidth: number) {
@@ -34,6 +35,7 @@ export class PathSolver {
     this.edges = edges;
     this.conditions = conditions;
     this.links = compileLinks(net, conditions.places);
+    this.#orders = compileOrders(net, edges, this.links);
     const maskCount = edges.masks.length + edges.pilots.length;
     this.#spreader = new Spreader(
       net.lines.length,
@@ -55,7 +57,7 @@ export class PathSolver {
     const rounds = 2 * pilots.length + 2;
     for (let round = 0; ; round++) {
       pilots.forEach((plane, index) => s.setMask(edges.masks.length + index, plane, 0));
-      const r = reach(net, edges, links, conditions, s);
+      const r = reach(net, edges, links, conditions, this.#orders, s);
       let changed = 0;
       edges.pilots.forEach((pilot, index) => {
         const plane = pilots[index] as Uint32Array;

@@ -49,14 +49,17 @@ export function chambersOf(
   };
 
   let { exits, softExits, fills } = r;
-  if (misled(softExits, r.toTank, () => -1)) {
-    const start = r.toTank.slice();
-    takeIn(net, conditions, s, start, index);
-    exits = start.slice();
-    s.spread(exits, edges.backward, { gate: r.notPressed, links: links.pull, without: index });
-    softExits = start;
-    s.spread(softExits, edges.backward, { links: links.pull, without: index });
-  }
+  const withoutMe = (gate?: Field): Field => {
+    const field = r.toTank.slice();
+    takeIn(net, conditions, s, field, index);
+    s.spread(field, edges.backward, { links: links.pull, without: index, ...(gate && { gate }) });
+    return field;
+  };
+  if (misled(exits, r.toTank, () => -1)) exits = withoutMe(r.notPressed);
+  // Soft exits matter only where a fed actuator has no plain one.
+  const stuck = (w: number): number =>
+    (at(r.anyPressed, a, w) & (b < 0 ? 0 : ~at(exits, b, w))) | (at(r.anyPressed, b, w) & ~at(exits, a, w));
+  if (misled(softExits, r.toTank, stuck)) softExits = withoutMe();
   // What fills a chamber matters only where nothing feeds the actuator and something lets it go.
   const free = (w: number): number =>
     ~at(r.anyPressed, a, w) & ~at(r.anyPressed, b, w) & (b < 0 ? -1 : at(exits, a, w) | at(exits, b, w));

@@ -52,7 +52,7 @@ export class Spreader {
    */
   spread(field: Field, edges: Adjacency, options: SpreadOptions = {}): void {
     const { width, masks, maskLive, lines } = this;
-    const { gate, links, without = -1, fromTank = false } = options;
+    const { gate, links, without = -1, fromTank = false, order, from, touched } = options;
     const queue = this.#queue;
     const queued = this.#queued;
     const size = lines + 1;
@@ -64,7 +64,14 @@ export class Spreader {
       queue[tail] = line;
       tail = tail + 1 === size ? 0 : tail + 1;
     };
-    for (let line = 0; line < lines; line++) if (this.anyIn(field, line)) push(line);
+    if (from) {
+      for (const line of from) push(line);
+    } else {
+      for (let i = 0; i < lines; i++) {
+        const line = order === undefined ? i : (order[i] as number);
+        if (this.anyIn(field, line)) push(line);
+      }
+    }
 
     while (head !== tail) {
       const line = queue[head] as number;
@@ -95,7 +102,9 @@ export class Spreader {
             field[target + w] = after;
           }
         }
-        if (grown !== 0) push(to);
+        if (grown === 0) continue;
+        if (touched) touched[to] = 1;
+        push(to);
       }
       const ways = links?.[line];
       if (ways === undefined) continue;
@@ -110,7 +119,9 @@ export class Spreader {
           grown |= before ^ after;
           field[target + w] = after;
         }
-        if (grown !== 0) push(link.to);
+        if (grown === 0) continue;
+        if (touched) touched[link.to] = 1;
+        push(link.to);
       }
     }
   }
@@ -138,6 +149,36 @@ export interface SpreadOptions {
   readonly links?: readonly (readonly Link[])[];
   readonly without?: number;
   readonly fromTank?: boolean;
+  /** Lines in the order to begin with; see `orderFrom`. */
+  readonly order?: Int32Array;
+  /** Only these lines are new: begin with them. */
+  readonly from?: readonly number[];
+  /** Set to 1 for every line that grows. */
+  readonly touched?: Uint8Array;
+}
+
+/**
+ * Lines by their distance from `starts`, whatever is open. A search that begins in this order meets
+ * most lines after all that can reach them, and seldom has to come back.
+ */
+export function orderFrom(starts: readonly number[], lines: number, edges: Adjacency, links: readonly (readonly Link[])[]): Int32Array {
+  const seen = new Uint8Array(lines);
+  const order: number[] = [];
+  const visit = (line: number): void => {
+    if (line < 0 || seen[line] === 1) return;
+    seen[line] = 1;
+    order.push(line);
+  };
+  starts.forEach(visit);
+  for (let head = 0; head < lines; head++) {
+    if (head === order.length) {
+      for (let line = 0; line < lines; line++) visit(line);
+    }
+    const line = order[head] as number;
+    for (let e = edges.start[line] as number; e < (edges.start[line + 1] as number); e++) visit(edges.to[e] as number);
+    for (const link of links[line] ?? []) visit(link.to);
+  }
+  return Int32Array.from(order);
 }
 
 /** `~field`, within the states that exist. */

@@ -1,6 +1,6 @@
 import type { Network } from '../../network/network.ts';
 import type { EdgeSet } from './edges.ts';
-import { complement } from './field.ts';
+import { complement, orderFrom } from './field.ts';
 import type { Field, Link, Spreader } from './field.ts';
 
 /** What holds for every state of a table. */
@@ -40,6 +40,26 @@ export interface Reach {
   readonly plainFills: Field;
 }
 
+/** Orders to search in, so that few lines are met twice. */
+export interface Orders {
+  readonly fromSources: Int32Array;
+  readonly fromTanks: Int32Array;
+  readonly backFromTanks: Int32Array;
+}
+
+export function compileOrders(net: Network, edges: EdgeSet, links: Links): Orders {
+  const lines = net.lines.length;
+  const tanks = tankLines(net);
+  const sources = [...net.pumps.map((pump) => pump.outlet), ...net.accumulators.map((store) => store.line)];
+  return {
+    fromSources: orderFrom(sources, lines, edges.forward, links.push),
+    fromTanks: orderFrom(tanks, lines, edges.forward, links.push),
+    backFromTanks: orderFrom(tanks, lines, edges.backward, links.pull),
+  };
+}
+
+const tankLines = (net: Network): number[] => net.lines.flatMap((line, index) => (line.tank ? [index] : []));
+
 export interface Links {
   /** Oil that presses into `from` is pushed out at `to`. */
   readonly push: readonly (readonly Link[])[];
@@ -72,24 +92,25 @@ export function sourceLines(net: Network, conditions: PathConditions): number[] 
   ];
 }
 
-export function reach(net: Network, edges: EdgeSet, links: Links, conditions: PathConditions, s: Spreader): Reach {
+export function reach(net: Network, edges: EdgeSet, links: Links, conditions: PathConditions, orders: Orders, s: Spreader): Reach {
   const sources = sourceLines(net, conditions);
-  const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
+  const tanks = tankLines(net);
+  const { fromSources, fromTanks, backFromTanks } = orders;
 
   const fromSource = s.field();
   for (const line of sources) if (line >= 0) s.seed(fromSource, line);
-  s.spread(fromSource, edges.forward);
+  s.spread(fromSource, edges.forward, { order: fromSources });
 
   const freeToTank = s.field();
   for (const line of tanks) s.seed(freeToTank, line);
-  s.spread(freeToTank, edges.freeBackward, { fromTank: true });
+  s.spread(freeToTank, edges.freeBackward, { fromTank: true, order: backFromTanks });
 
   const toTank = freeToTank.slice();
   if (!conditions.pumpsRunning) {
     // A stopped pump leaks its outlet line down to tank, slowly.
     for (const pump of net.pumps) if (!pump.tightWhenStopped) s.seed(toTank, pump.outlet);
   }
-  s.spread(toTank, edges.backward, { fromTank: true });
+  s.spread(toTank, edges.backward, { fromTank: true, order: backFromTanks });
 
   const notFreeToTank = complement(freeToTank, s.masks, s.width);
   const press = (from: number, adjacency: EdgeSet['forward']): Field => {
@@ -97,7 +118,7 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
     if (from < 0) return field;
     s.seed(field, from);
     and(field, notFreeToTank);
-    s.spread(field, adjacency, { gate: notFreeToTank });
+    s.spread(field, adjacency, { gate: notFreeToTank, order: fromSources });
     return field;
   };
   const pressed = sources.map((line) => press(line, edges.forward));
@@ -107,7 +128,7 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   const notPressed = complement(anyPressed, s.masks, s.width);
 
   const underPressure = anyPressed.slice();
-  s.spread(underPressure, edges.forward, { gate: notFreeToTank, links: links.push });
+  s.spread(underPressure, edges.forward, { gate: notFreeToTank, links: links.push, order: fromSources });
 
   const toRelief = s.field();
   for (const relief of net.reliefs) {
@@ -122,17 +143,17 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   const exits = toTank.slice();
   takesOil(exits, -1);
   const softExits = exits.slice();
-  s.spread(exits, edges.backward, { gate: notPressed, links: links.pull });
-  s.spread(softExits, edges.backward, { links: links.pull });
+  s.spread(exits, edges.backward, { gate: notPressed, links: links.pull, order: backFromTanks });
+  s.spread(softExits, edges.backward, { links: links.pull, order: backFromTanks });
   const freeExits = freeToTank.slice();
   takesOil(freeExits, -1);
-  s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull });
+  s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull, order: backFromTanks });
 
   const plainFills = fromSource.slice();
   for (const line of tanks) s.seed(plainFills, line);
-  s.spread(plainFills, edges.forward, { fromTank: true });
+  s.spread(plainFills, edges.forward, { fromTank: true, order: fromTanks });
   const fills = plainFills.slice();
-  s.spread(fills, edges.forward, { links: links.push, fromTank: true });
+  s.spread(fills, edges.forward, { links: links.push, fromTank: true, order: fromTanks });
 
   return {
     fromSource,

@@ -1,8 +1,8 @@
 import type { NetActuator, Network } from '../../network/network.ts';
 import type { EdgeSet } from '../paths/edges.ts';
 import { compileEdges } from '../paths/edges.ts';
-import { isEqualSided, REST_REASONS } from '../paths/motion.ts';
-import type { RestReason } from '../paths/motion.ts';
+import { isEqualSided, REST_REASONS } from '../paths/motion-bits.ts';
+import type { RestReason } from '../paths/motion-bits.ts';
 import { sourceLines } from '../paths/reach.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome, motionWords } from './actuator-outcomes.ts';

@@ -5,7 +5,7 @@ import type { Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
 import { compileEdges } from '../paths/edges.ts';
 import type { EdgeSet } from '../paths/edges.ts';
-import { REST_REASONS } from '../paths/motion.ts';
+import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome } from './actuator-outcomes.ts';
 import { lineOutcomes } from './line-outcomes.ts';

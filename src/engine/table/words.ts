@@ -47,5 +47,5 @@ export type TrapReason = (typeof TRAP_REASONS)[number];
 export const ACTUATOR_NOTES = ['outward by suction only', 'inward by suction only', 'void forms', 'free outward', 'free inward'] as const;
 export type ActuatorNote = (typeof ACTUATOR_NOTES)[number];
 
-export { REST_REASONS } from '../paths/motion.ts';
-export type { RestReason } from '../paths/motion.ts';
+export { REST_REASONS } from '../paths/motion-bits.ts';
+export type { RestReason } from '../paths/motion-bits.ts';

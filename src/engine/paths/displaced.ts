@@ -1,0 +1,92 @@
+import type { Network } from '../../network/network.ts';
+import type { Chambers } from './chambers.ts';
+import type { EdgeSet } from './edges.ts';
+import type { Field, Spreader } from './field.ts';
+import { loadAgainst, set, word } from './motion-bits.ts';
+import type { Motion } from './motion-bits.ts';
+import type { PathConditions, Reach } from './reach.ts';
+
+/**
+ * Displaced oil: what a moving actuator pushes out may drive the next one, and so on. Adds those motions
+ * to `m` and returns the lines that displaced oil gets to.
+ */
+export function driveByDisplaced(
+  net: Network,
+  edges: EdgeSet,
+  conditions: PathConditions,
+  r: Reach,
+  s: Spreader,
+  m: Omit<Motion, 'pushed'>,
+): Field {
+  const { width } = s;
+  const pushed = s.field();
+  const doubtful = anyRest(m.rests, width);
+  const touched = new Uint8Array(net.lines.length);
+  let moved = net.actuators.map((_, i) => i);
+  while (moved.length > 0) {
+    touched.fill(0);
+    const fresh = moved.flatMap((i) => {
+      const { a, b } = net.actuators[i] as { a: number; b: number };
+      return [pushOut(b, m.out[i] as Uint32Array), pushOut(a, m.in[i] as Uint32Array)].filter((line) => line >= 0);
+    });
+    for (const line of fresh) touched[line] = 1;
+    s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: fresh, touched });
+    moved = net.actuators.flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) ? [i] : [])).filter(drive);
+  }
+  return pushed;
+
+  /** The line, if it got oil that it did not have yet. */
+  function pushOut(line: number, motion: Uint32Array): number {
+    if (line < 0) return -1;
+    let grown = 0;
+    for (let w = 0; w < width; w++) {
+      const at = line * width + w;
+      const before = pushed[at] as number;
+      const after = before | ((motion[w] as number) & (r.notFreeToTank[at] as number));
+      grown |= before ^ after;
+      pushed[at] = after;
+    }
+    return grown === 0 ? -1 : line;
+  }
+
+  function drive(i: number): boolean {
+    const actuator = net.actuators[i] as Network['actuators'][number];
+    const ch = m.chambers[i] as Chambers;
+    const rest = m.rests[i] as readonly Uint32Array[];
+    const [out, inward, displaced] = [m.out[i], m.in[i], m.displaced[i]] as [Uint32Array, Uint32Array, Uint32Array];
+    const place = conditions.places[i];
+    const against = loadAgainst(actuator);
+    let grown = 0;
+    for (let w = 0; w < width; w++) {
+      const moving = (out[w] as number) | (inward[w] as number);
+      const a = word(pushed, actuator.a, w, width) & ~(m.fedA[i]?.[w] as number) & ~moving;
+      const b = actuator.b < 0 ? 0 : word(pushed, actuator.b, w, width) & ~(m.fedB[i]?.[w] as number) & ~moving;
+      const goOut = place === 'out' ? 0 : a & ~b & (ch.exitB[w] as number);
+      const goIn = place === 'in' ? 0 : b & ~a & (ch.exitA[w] as number);
+      const both = a & b & ((ch.exitA[w] as number) | (ch.exitB[w] as number));
+      const now = goOut | goIn;
+      if ((now | both) === 0) continue;
+      grown |= now;
+      out[w] = (out[w] as number) | goOut;
+      inward[w] = (inward[w] as number) | goIn;
+      displaced[w] = (displaced[w] as number) | now;
+      const bleeds =
+        (goOut & word(r.toTank, actuator.a, w, width)) | (goIn & (actuator.b < 0 ? 0 : word(r.toTank, actuator.b, w, width)));
+      const loaded = (goOut & against('in')) | (goIn & against('out'));
+      set(rest, 'upstream', w, now & (doubtful[w] as number));
+      set(rest, 'load', w, loaded);
+      set(rest, 'bleed', w, bleeds);
+      set(rest, 'two feeds', w, both);
+      doubtful[w] = (doubtful[w] as number) | loaded | bleeds | both;
+    }
+    return grown !== 0;
+  }
+}
+
+function anyRest(rests: readonly (readonly Uint32Array[])[], width: number): Uint32Array {
+  const any = new Uint32Array(width);
+  for (const planes of rests) {
+    for (const plane of planes) for (let w = 0; w < width; w++) any[w] = (any[w] as number) | (plane[w] as number);
+  }
+  return any;
+}
