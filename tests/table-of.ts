@@ -18,11 +18,11 @@ export class Asked {
     this.table = new StateTable(tabulate(circuit, conditions, unlimited));
   }
 
-  /** `V1=a V2=0` → row; valves not named stand at rest. */
+  /** `V1=a V2=0` (or with commas, where names have blanks) → row; valves not named stand at rest. */
   row(state: string): number {
     const positions = this.table.positionsOf(this.table.restRow());
-    for (const word of state.split(' ').filter((w) => w !== '')) {
-      const [label = '', name = ''] = word.split('=');
+    for (const word of state.split(state.includes(',') ? ',' : ' ').filter((w) => w !== '')) {
+      const [label = '', name = ''] = word.trim().split('=');
       const input = this.table.data.inputs.findIndex((entry) => entry.label === label);
       const position = this.table.data.inputs[input]?.positions.indexOf(name) ?? -1;
       if (position < 0) throw new Error(`no such position: ${word}`);
