@@ -54,13 +54,24 @@ export interface RowNote {
   readonly text: string;
 }
 
-const SAID: Readonly<Record<ActuatorNote, string>> = {
+const LINEAR: Readonly<Record<ActuatorNote, string>> = {
   'outward by suction only': 'held outward by suction only',
   'inward by suction only': 'held inward by suction only',
   'void forms': 'void forms',
   'free outward': 'free outward',
   'free inward': 'free inward',
 };
+const ROTARY: Readonly<Record<ActuatorNote, string>> = {
+  'outward by suction only': 'held A→B by suction only',
+  'inward by suction only': 'held B→A by suction only',
+  'void forms': 'void forms',
+  'free outward': 'free A→B',
+  'free inward': 'free B→A',
+};
+
+/** A motor knows no in and out. */
+export const sayNote = (note: ActuatorNote, motion: 'linear' | 'rotary'): string =>
+  (motion === 'rotary' ? ROTARY : LINEAR)[note];
 
 /** A finding speaks in a row only if it lists every row that shows it; a cut list would leave rows out in silence. */
 const complete = (finding: Finding): boolean => finding.rows.length === finding.rowCount;
@@ -80,7 +91,7 @@ export function rowNotes(table: StateTable, findings: readonly Finding[], row: n
     for (const note of table.actuatorNotes(i, row)) {
       // Which way it is free matters where it is held the other way.
       if (note.startsWith('free') && table.actuator(i, row) !== 'held one way') continue;
-      notes.push({ level: 'note', text: `${actuator.label} ${SAID[note]}` });
+      notes.push({ level: 'note', text: `${actuator.label} ${sayNote(note, actuator.motion)}` });
     }
   });
   if (row === table.restRow()) notes.push({ level: 'note', text: 'rest: every lever let go' });
