@@ -12,7 +12,7 @@ export interface Balloon {
 /** Modules between the middles of two balloons. */
 const APART = 2.4;
 
-/** One balloon for each step, at its first part or else on its first line; those that would meet stand side by side. */
+/** One balloon for each step, at its first part or else on its first line; those that would meet stand below one another. */
 export function balloons(steps: readonly LitStep[], map: HitMap, lines: readonly { readonly connections: readonly string[] }[]): Balloon[] {
   const out: Balloon[] = [];
   for (const { number, parts, lines: own, current } of steps) {
@@ -25,7 +25,7 @@ export function balloons(steps: readonly LitStep[], map: HitMap, lines: readonly
 function atPart(map: HitMap, ids: readonly string[]): Point | undefined {
   for (const id of ids) {
     const box = map.parts.find((part) => part.id === id)?.box;
-    if (box) return { x: box.x - 0.4, y: box.y - 0.4 };
+    if (box) return { x: box.x - 1.3, y: box.y + 1 };
   }
   return undefined;
 }
@@ -40,6 +40,6 @@ function onLine(map: HitMap, connections: readonly string[]): Point | undefined 
 
 function free(at: Point, taken: readonly Balloon[]): Point {
   let spot = at;
-  while (taken.some((other) => Math.hypot(other.at.x - spot.x, other.at.y - spot.y) < APART)) spot = { x: spot.x + APART, y: spot.y };
+  while (taken.some((other) => Math.hypot(other.at.x - spot.x, other.at.y - spot.y) < APART)) spot = { x: spot.x, y: spot.y + APART };
   return spot;
 }

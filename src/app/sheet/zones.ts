@@ -10,7 +10,7 @@ export interface ZoneMark {
   readonly middle: number;
 }
 
-const column = (index: number): string => String(index < 0 ? index : index + 1);
+const column = (index: number): string => (index < 0 ? `−${-index}` : String(index + 1));
 
 /** A … Z, AA …; above the origin −A, −B. */
 function row(index: number): string {
