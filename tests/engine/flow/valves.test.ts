@@ -149,7 +149,7 @@ test('G21: pump stopped, 20 kN on a 63 mm cap: 64.2 bar trapped; the lever towar
   expect(drop.line('B').voidFlow).toBeGreaterThan(0);
 });
 
-/** Two sequence valves at 60 bar + 0.2 bar per L/min, pump 20 L/min (law: the event check of the notes, worked by hand there). */
+/** Two sequence valves at 60 bar + 0.2 bar per L/min, pump 20 L/min (law: v = Q over area; times are stroke over speed). */
 function clampAndDrill(way: 'out' | 'back', a: 'in' | 'out' | undefined, bAt: 'in' | 'out' | undefined): Seen {
   const b = new FlowBuilder();
   const p = b.line('P');
@@ -162,8 +162,8 @@ function clampAndDrill(way: 'out' | 'back', a: 'in' | 'out' | undefined, bAt: 'i
   b.openPath('feed', p, side.first);
   b.sequenceValve('sequence', p, side.second, valve);
   side.free.forEach((line, i) => b.openPath(`return ${i}`, line, TANK));
-  b.cylinder('A', ac, ar, { areaA: 19.635 * CM2, areaB: 10.014 * CM2, load: { pressing: -300 * DAN, friction: 20 * DAN }, ...(a ? { at: a } : {}) });
-  b.cylinder('B', bc, br, { areaA: 12.566 * CM2, areaB: 6.409 * CM2, load: { pressing: -200 * DAN, friction: 15 * DAN }, ...(bAt ? { at: bAt } : {}) });
+  b.cylinder('A', ac, ar, { areaA: 19.635 * CM2, areaB: 10.014 * CM2, load: { resisting: 300 * DAN, friction: 20 * DAN }, ...(a ? { at: a } : {}) });
+  b.cylinder('B', bc, br, { areaA: 12.566 * CM2, areaB: 6.409 * CM2, load: { resisting: 200 * DAN, friction: 15 * DAN }, ...(bAt ? { at: bAt } : {}) });
   return solve(b.build());
 }
 
