@@ -43,6 +43,8 @@ export default defineConfig(
         { 'ts-expect-error': 'allow-with-description', minimumDescriptionLength: 10 },
       ],
       '@typescript-eslint/consistent-type-imports': 'error',
+      // A map that is built and handed on in one go, or a cache, has no need to be reactive.
+      'svelte/prefer-svelte-reactivity': 'off',
       // A lone _ says "not used here", as in `const { id: _, ...rest } = part`.
       '@typescript-eslint/no-unused-vars': ['error', { varsIgnorePattern: '^_$', argsIgnorePattern: '^_' }],
     },
