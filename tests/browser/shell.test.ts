@@ -32,7 +32,9 @@ test('lever, row and table show one state', async () => {
   expect((await currentCells(page)).slice(0, 4).map((text) => text.trim())).toEqual(['4', 'shut', 'hold', 'stop']);
   await page.getByRole('grid').focus();
   await page.keyboard.press('ArrowUp');
-  await expect.poll(() => page.getByRole('radio', { name: 'run' }).getAttribute('aria-checked')).toBe('true');
+  await expect
+    .poll(() => page.getByRole('radio', { name: 'run', exact: true }).getAttribute('aria-checked'))
+    .toBe('true');
   await page.keyboard.press('r');
   await expect.poll(() => row(page)).toBe('row 10 of 18');
 });
