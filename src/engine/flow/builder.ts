@@ -21,6 +21,8 @@ export interface CylinderData {
   readonly at?: 'in' | 'out';
   /** Viscous drag, N per m/s. */
   readonly drag?: number;
+  /** Loss in each of its ports and hoses; without it nothing slows down two loads that work against each other. */
+  readonly ports?: Loss;
 }
 
 export interface MotorData {
@@ -129,7 +131,11 @@ export class FlowBuilder {
 
   cylinder(id: string, a: number, b: number, data: CylinderData): number {
     const drag = data.drag ?? NEAR_IDEAL.cylinderDrag * Math.max(data.areaA, data.areaB);
-    return this.#actuator(id, 'cylinder', a, b, data.areaA, data.areaB, drag, data.load ?? {}, data.at);
+    const { r, k } = data.ports ? lossOf(data.ports) : { r: 0, k: 0 };
+    // A drop of r·q + k·q² in each port, on its own area, as a force of the speed.
+    const square = data.areaA ** 2 + data.areaB ** 2;
+    const cube = data.areaA ** 3 + data.areaB ** 3;
+    return this.#actuator(id, 'cylinder', a, b, data.areaA, data.areaB, { r: drag + r * square, k: k * cube }, data.load ?? {}, data.at);
   }
 
   motor(id: string, a: number, b: number, data: MotorData): number {
@@ -140,7 +146,7 @@ export class FlowBuilder {
       this.leakage(`${id} drain B`, b, drain, data.drainLeakage);
     }
     const drag = data.drag ?? NEAR_IDEAL.motorDrag * data.displacement;
-    return this.#actuator(id, 'motor', a, b, data.displacement, data.displacement, drag, data.load ?? {}, undefined);
+    return this.#actuator(id, 'motor', a, b, data.displacement, data.displacement, { r: drag, k: 0 }, data.load ?? {}, undefined);
   }
 
   /** Opens from → to when its inlet, less the reference, is above the setting; shut the other way. */
@@ -184,7 +190,7 @@ export class FlowBuilder {
   }
 
   #actuator(
-    id: string, kind: 'cylinder' | 'motor', a: number, b: number, ca: number, cb: number, drag: number, load: Load, at: 'in' | 'out' | undefined,
+    id: string, kind: 'cylinder' | 'motor', a: number, b: number, ca: number, cb: number, loss: { r: number; k: number }, load: Load, at: 'in' | 'out' | undefined,
   ): number {
     const pressing = (load.pressing ?? 0) + (load.spring ?? 0);
     const against = (load.resisting ?? 0) + (load.friction ?? 0);
@@ -192,8 +198,7 @@ export class FlowBuilder {
       id, kind, a, b, ca, cb: -cb, load, on: true,
       forward: pressing + against,
       backward: pressing - against,
-      r: drag,
-      k: 0,
+      ...loss,
       lo: at === 'in' ? 0 : -Infinity,
       hi: at === 'out' ? 0 : Infinity,
     }) - 1;

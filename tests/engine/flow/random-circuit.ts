@@ -98,7 +98,7 @@ export function randomCircuit(seed: number, recipe: Recipe): FlowProblem {
     const load = sense === 0 ? { resisting: force, friction } : sense === 1 ? { pressing: force, friction } : { pressing: -force, friction };
     const place = pick(8);
     const at = place === 0 ? ({ at: 'in' } as const) : place === 1 ? ({ at: 'out' } as const) : {};
-    b.cylinder(`C${c}`, from, to, { areaA, areaB, load, ...at, ...(linear ? { drag: areaA * between(0.5, 5) * BAR } : {}) });
+    b.cylinder(`C${c}`, from, to, { areaA, areaB, load, ...at, ...(linear ? { drag: areaA * between(0.5, 5) * BAR } : { ports: loss() }) });
   }
   return b.build();
 }

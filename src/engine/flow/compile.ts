@@ -1,0 +1,103 @@
+import type { NetPath, Network } from '../../network/network.ts';
+import { FlowBuilder } from './builder.ts';
+import type { Loss } from './builder.ts';
+import { TANK } from './problem.ts';
+import type { FlowProblem } from './problem.ts';
+import { FlowSolver } from './solver.ts';
+
+/** What holds for every state. */
+export interface FlowConditions {
+  readonly pumpsRunning: boolean;
+  readonly places: readonly ('between' | 'in' | 'out')[];
+}
+
+/** A circuit laid out for the solver once; states are set by switching paths. */
+export interface FlowModel {
+  readonly solver: FlowSolver;
+  readonly problem: FlowProblem;
+  /** Line of the network → line of the problem, or TANK. */
+  readonly lineOf: Int32Array;
+  /** Per actuator, relief: its branch. Per pump: its number. */
+  readonly actuators: readonly number[];
+  readonly reliefs: readonly number[];
+  readonly pumps: readonly number[];
+  /** Branch of every path; -1 where another branch stands for it. */
+  readonly paths: readonly number[];
+  readonly switched: readonly { readonly branch: number; readonly input: number; readonly positions: number }[];
+}
+
+/** m³/s per Pa by which a stopped pump lets its outlet down: 0.01 L/min per bar, common practice. */
+const STOPPED_LEAKAGE = (0.01 * 1e-3) / 60 / 1e5;
+/** A charged accumulator stands at this many times its gas pre-charge where nothing else is known. */
+const CHARGED = 1.5;
+
+export function compileFlow(net: Network, conditions: FlowConditions): FlowModel {
+  const builder = new FlowBuilder();
+  const lineOf = Int32Array.from(net.lines, (line) => (line.tank ? TANK : builder.line(line.name)));
+  const at = (line: number): number => (line < 0 ? TANK : (lineOf[line] as number));
+  const label = (part: number): string => net.parts[part]?.label ?? '';
+
+  const paths = net.paths.map((path) => layPath(builder, net, path, at, label(path.part)));
+  const switched = net.paths.flatMap((path, i) => {
+    const branch = paths[i] as number;
+    return path.input >= 0 && branch >= 0 ? [{ branch, input: path.input, positions: path.positions }] : [];
+  });
+  const reliefs = net.reliefs.map((relief) =>
+    builder.relief(label(relief.part), at(relief.from), at(relief.to), relief.setting, relief.override > 0 ? relief.override : undefined),
+  );
+  for (const store of net.accumulators) {
+    if (store.charged) builder.accumulator(label(store.part), at(store.line), store.precharge * CHARGED);
+  }
+  const actuators = net.actuators.map((actuator, i) => {
+    const { forces, areaA, areaB } = actuator;
+    const load = { pressing: forces.pressing, resisting: forces.resisting, friction: forces.friction, spring: forces.spring };
+    if (actuator.rotary) return builder.motor(label(actuator.part), at(actuator.a), at(actuator.b), { displacement: areaA, load });
+    const place = conditions.places[i];
+    return builder.cylinder(label(actuator.part), at(actuator.a), at(actuator.b), {
+      areaA,
+      areaB: actuator.b < 0 ? 0 : areaB,
+      load,
+      ...(place === 'in' || place === 'out' ? { at: place } : {}),
+    });
+  });
+  const pumps = net.pumps.map((pump) => {
+    const id = label(pump.part);
+    if (!conditions.pumpsRunning) return builder.pumpStopped(id, at(pump.outlet), pump.tightWhenStopped ? 0 : STOPPED_LEAKAGE);
+    return pump.compensated
+      ? builder.pumpCompensated(id, at(pump.outlet), pump.flow, pump.setting)
+      : builder.pumpFixed(id, at(pump.outlet), pump.flow);
+  });
+  const built = builder.build();
+  // A full accumulator gives oil and takes none.
+  const problem = { ...built, branches: built.branches.map((branch) => (branch.kind === 'accumulator' ? { ...branch, hi: 0 } : branch)) };
+  return { solver: new FlowSolver(problem), problem, lineOf, actuators, reliefs, pumps, paths, switched };
+}
+
+function layPath(builder: FlowBuilder, net: Network, path: NetPath, at: (line: number) => number, label: string): number {
+  const id = `${label} ${path.fromPort}–${path.toPort}`;
+  const [from, to] = [at(path.from), at(path.to)];
+  if (from === to) return -1;
+  const loss: Loss = path.rated ?? {};
+  const on = path.input < 0;
+  if (path.pilot >= 0) {
+    // The lock check's own free way is part of the same element.
+    return builder.lockCheck(id, to, from, at(path.pilot), path.pilotRatio, { cracking: freeWayOf(net, path)?.cracking ?? 0, loss });
+  }
+  if (path.oneWay && net.paths.some((other) => other.pilot >= 0 && freeWayOf(net, other) === path)) return -1;
+  if (path.throttled) {
+    // A throttled path inside a box without data of its own still takes away more than an open one.
+    return path.oneWay ? builder.check(id, from, to, path.cracking, loss, on) : builder.throttle(id, from, to, loss, on);
+  }
+  return path.oneWay ? builder.check(id, from, to, path.cracking, loss, on) : builder.openPath(id, from, to, loss, on);
+}
+
+/** The one-way path of the same part that runs the other way. */
+const freeWayOf = (net: Network, pilot: NetPath): NetPath | undefined =>
+  net.paths.find((path) => path.part === pilot.part && path.pilot < 0 && path.from === pilot.to && path.to === pilot.from);
+
+/** Opens the paths of a state and shuts the others. */
+export function setState(model: FlowModel, position: (input: number) => number): void {
+  for (const { branch, input, positions } of model.switched) {
+    model.solver.setOn(branch, ((positions >>> position(input)) & 1) === 1);
+  }
+}
