@@ -149,16 +149,18 @@ export function* orderRows(
 
 function* byKey(rows: Uint32Array, keys: Uint16Array, falling: boolean): Work<Uint32Array> {
   let top = 0;
-  for (const row of rows) top = Math.max(top, keys[row] as number);
-  yield;
+  for (let i = 0; i < rows.length; i++) {
+    top = Math.max(top, keys[rows[i] as number] as number);
+    if (i % BLOCK === BLOCK - 1) yield;
+  }
   const start = new Uint32Array(top + 2);
-  for (const row of rows) {
-    const key = keys[row] as number;
+  for (let i = 0; i < rows.length; i++) {
+    const key = keys[rows[i] as number] as number;
     const slot = (falling ? top - key : key) + 1;
     start[slot] = (start[slot] as number) + 1;
+    if (i % BLOCK === BLOCK - 1) yield;
   }
   for (let k = 1; k < start.length; k++) start[k] = (start[k] as number) + (start[k - 1] as number);
-  yield;
   const out = new Uint32Array(rows.length);
   for (let i = 0; i < rows.length; i++) {
     const row = rows[i] as number;
