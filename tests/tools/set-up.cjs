@@ -75,6 +75,24 @@ function main() {
   }
   var why = notInstalled(lock, readJson(path.join(root, 'node_modules', '.package-lock.json')));
   if (why) install(why);
+  if (process.argv[2]) goOn(process.argv[2], process.argv.slice(3));
+}
+
+/** Runs the next script as a child, and ends with it; ends it when npm, which started this one, is gone. */
+function goOn(script, args) {
+  var next = child.spawn(process.execPath, [path.join(root, script)].concat(args), { stdio: 'inherit' });
+  next.on('exit', function (code) {
+    process.exit(code === null ? 1 : code);
+  });
+  ['SIGINT', 'SIGTERM', 'SIGHUP'].forEach(function (signal) {
+    process.on(signal, function () {
+      next.kill(signal);
+    });
+  });
+  var parent = process.ppid;
+  setInterval(function () {
+    if (process.ppid !== parent) next.kill('SIGTERM');
+  }, 500).unref();
 }
 
 module.exports = { nodeTooOld: nodeTooOld, notInstalled: notInstalled };
