@@ -33,8 +33,8 @@ export interface Command {
   readonly title: string;
   readonly group: CommandGroup;
   readonly keys: readonly Chord[];
-  /** Absent: the browser's own clipboard events do it. Returns false to let the key pass on. */
-  readonly run?: (sheet: SheetActions) => boolean | void;
+  /** Absent: the browser's own clipboard events do it. Gives false to let the key pass on. */
+  readonly run?: (sheet: SheetActions) => unknown;
 }
 
 const ZOOM_STEP = 1.25;

@@ -9,23 +9,15 @@ import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scen
 import type { SceneLabel } from '../../drawing/labels.ts';
 import { placePrimitives } from '../../drawing/turned.ts';
 import { kindOf } from '../../parts/catalogue.ts';
-import type { Look } from '../../parts/contract.ts';
-import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { flowWays } from './flow-ways.ts';
 import type { HitMap } from './hit.ts';
 import { lineLook } from './looks.ts';
+import { partStates } from './part-states.ts';
+import type { PartState } from './part-states.ts';
 import { SheetRoutes } from './sheet-routes.ts';
 import { steadyList } from './steady.ts';
-
-/** What the row says of one part. */
-export interface PartState extends Look {
-  readonly note?: string;
-  readonly verdict?: ActuatorVerdict;
-  readonly pump?: PumpVerdict;
-  readonly freeInward?: boolean;
-}
 
 /** The circuit as it is drawn now: routes, looks and places, derived from the circuit and the row. */
 class SheetDrawing {
@@ -89,30 +81,5 @@ const stripShift = (primitives: readonly Primitive[]): Point | undefined => {
   const strip = primitives.find((p) => p.type === 'group' && p.role === 'strip');
   return strip?.type === 'group' ? strip.shift : undefined;
 };
-
-function partStates(circuit: Circuit): Map<string, PartState> {
-  const states = new Map<string, PartState>();
-  for (const input of session.inputs) {
-    const position = session.positionOf(input.part);
-    states.set(input.part, { position, note: input.positions[position] ?? '' });
-  }
-  const { table, row, conditions } = session;
-  const known = new Set(circuit.parts.map((part) => part.id));
-  table?.data.actuators.forEach(({ part }, i) => {
-    if (!known.has(part)) return;
-    const verdict = table.actuator(i, row);
-    const place = conditions.places?.[part];
-    states.set(part, {
-      verdict,
-      note: verdict,
-      freeInward: table.actuatorNotes(i, row).includes('free inward'),
-      ...(place && { stroke: place === 'in' ? 0 : 1 }),
-    });
-  });
-  table?.data.pumps.forEach(({ part }, i) => {
-    if (known.has(part)) states.set(part, { pump: table.pump(i, row), note: table.pump(i, row) });
-  });
-  return states;
-}
 
 export const drawing = new SheetDrawing();
