@@ -78,6 +78,17 @@ function main() {
   if (process.argv[2]) goOn(process.argv[2], process.argv.slice(3));
 }
 
+/** The process that started this one, and, where the system tells, the one above: npm starts a shell in between. */
+function elders() {
+  try {
+    var stat = fs.readFileSync('/proc/' + process.ppid + '/stat', 'utf8');
+    return process.ppid + ' ' + stat.slice(stat.lastIndexOf(')')).split(' ')[2];
+  } catch (error) {
+    void error;
+    return String(process.ppid);
+  }
+}
+
 /** Runs the next script as a child, and ends with it; ends it when npm, which started this one, is gone. */
 function goOn(script, args) {
   var next = child.spawn(process.execPath, [path.join(root, script)].concat(args), { stdio: 'inherit' });
@@ -89,9 +100,9 @@ function goOn(script, args) {
       next.kill(signal);
     });
   });
-  var parent = process.ppid;
+  var started = elders();
   setInterval(function () {
-    if (process.ppid !== parent) next.kill('SIGTERM');
+    if (elders() !== started) next.kill('SIGTERM');
   }, 500).unref();
 }
 
