@@ -4,6 +4,7 @@ import type { Conditions, Explanation } from '../src/analysis/results.ts';
 import type { Circuit } from '../src/circuit/model.ts';
 import { StateTable } from '../src/engine/table/state-table.ts';
 import { findFaults } from '../src/findings/index.ts';
+import type { TableOptions } from '../src/engine/table/tabulate.ts';
 import type { Finding } from '../src/findings/finding.ts';
 
 /** A table that is asked by names, as people would. */
@@ -12,10 +13,11 @@ export class Asked {
   readonly circuit: Circuit;
   readonly conditions: Conditions;
 
-  constructor(circuit: Circuit, conditions: Conditions = { pumps: 'running' }) {
+  /** `pressureRows` 0: what open paths say by themselves. */
+  constructor(circuit: Circuit, conditions: Conditions = { pumps: 'running' }, options: TableOptions = { pressureRows: 20_000 }) {
     this.circuit = circuit;
     this.conditions = conditions;
-    this.table = new StateTable(tabulate(circuit, conditions, unlimited));
+    this.table = new StateTable(tabulate(circuit, conditions, unlimited, options));
   }
 
   /** `V1=a V2=0` (or with commas, where names have blanks) → row; valves not named stand at rest. */

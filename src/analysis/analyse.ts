@@ -5,6 +5,7 @@ import { explain } from '../engine/table/explain.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import { tabulate as tabulateNetwork } from '../engine/table/tabulate.ts';
+import type { TableOptions } from '../engine/table/tabulate.ts';
 import { findFaults } from '../findings/index.ts';
 import type { Finding } from '../findings/finding.ts';
 import { compileNetwork } from '../network/compile.ts';
@@ -22,11 +23,14 @@ export function networkOf(circuit: Circuit): Network {
 }
 
 /** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */
-export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budget): TableData {
+export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budget, options: TableOptions = { pressureRows: MOST_SOLVED }): TableData {
   const net = networkOf(circuit);
   refuseTooMany(net);
-  return tabulateNetwork(net, pathConditions(net, conditions), budget);
+  return tabulateNetwork(net, pathConditions(net, conditions), budget, options);
 }
+
+/** Rows that the pressure layer solves before a table is shown: about a few seconds. */
+export const MOST_SOLVED = 20_000;
 
 /** Design faults, from the table with the pumps running. */
 export function findings(circuit: Circuit, running: StateTable): Finding[] {

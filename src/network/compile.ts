@@ -52,10 +52,19 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             input: element.positions ? input : -1,
             positions: (element.positions ?? []).reduce((mask, p) => mask | (1 << p), 0),
             pilot: element.pilot ? at(element.pilot.port) : -1,
+            pilotRatio: element.pilot?.ratio ?? 0,
+            cracking: element.cracking ?? 0,
+            ...(element.rated && { rated: element.rated }),
           });
           break;
         case 'pressure-opened':
-          reliefs.push({ part: index, from: at(element.from), to: at(element.to) });
+          reliefs.push({
+            part: index,
+            from: at(element.from),
+            to: at(element.to),
+            setting: element.setting,
+            override: element.override ? element.override.rise / element.override.flow : 0,
+          });
           break;
         case 'pump':
           pumps.push({
@@ -64,10 +73,17 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             suction: at(element.suction),
             compensated: element.form === 'compensated',
             tightWhenStopped: element.tightWhenStopped,
+            flow: element.flow,
+            setting: element.setting ?? 0,
           });
           break;
         case 'accumulator':
-          accumulators.push({ part: index, line: at(element.port), charged: element.charged });
+          accumulators.push({
+            part: index,
+            line: at(element.port),
+            charged: element.charged,
+            precharge: element.precharge ?? 0,
+          });
           break;
         case 'actuator':
           actuators.push(compileActuator(element, index, at));
@@ -99,5 +115,11 @@ function compileActuator(element: ActuatorElement, part: number, at: (port: stri
     areaB: element.areaB,
     push: { way, by: gravity ? 'load' : 'spring', size: gravity ? load.size : 0 },
     resisting: load.sense === 'resisting' && load.size > 0,
+    forces: {
+      pressing: gravity === 'in' ? load.size : gravity === 'out' ? -load.size : 0,
+      resisting: load.sense === 'resisting' ? load.size : 0,
+      friction: element.friction ?? 0,
+      spring: spring === undefined ? 0 : (element.springForce ?? 0) * (spring === 'in' ? 1 : -1),
+    },
   };
 }

@@ -56,6 +56,12 @@ export interface NetPath {
   readonly positions: number;
   /** Line whose pressure opens it; -1: none. */
   readonly pilot: number;
+  /** Area ratio by which the pilot outweighs what it opens against. */
+  readonly pilotRatio: number;
+  /** Pa. */
+  readonly cracking: number;
+  /** m³/s at Pa of drop. */
+  readonly rated?: { readonly flow: number; readonly drop: number };
 }
 
 export interface NetPump {
@@ -64,18 +70,28 @@ export interface NetPump {
   readonly suction: number;
   readonly compensated: boolean;
   readonly tightWhenStopped: boolean;
+  /** m³/s. */
+  readonly flow: number;
+  /** Pa, compensated ones. */
+  readonly setting: number;
 }
 
 export interface NetRelief {
   readonly part: number;
   readonly from: number;
   readonly to: number;
+  /** Pa. */
+  readonly setting: number;
+  /** Pa for each m³/s over it; 0 = not given. */
+  readonly override: number;
 }
 
 export interface NetAccumulator {
   readonly part: number;
   readonly line: number;
   readonly charged: boolean;
+  /** Pa of gas when empty of oil; 0 = not given. */
+  readonly precharge: number;
 }
 
 export interface NetActuator {
@@ -91,6 +107,8 @@ export interface NetActuator {
   readonly push: { readonly way: 'none' | 'in' | 'out' | 'both'; readonly by: 'load' | 'spring'; readonly size: number };
   /** A load that only resists motion. */
   readonly resisting: boolean;
+  /** N, or N·m: pressing positive when it pushes in (B→A). */
+  readonly forces: { readonly pressing: number; readonly resisting: number; readonly friction: number; readonly spring: number };
 }
 
 export interface NetOpenPort {

@@ -71,6 +71,7 @@ export function sampleTable(sample: Sample): StateTable {
     linePlanes: planes(lines, sample.lines, LINE_CLASSES),
     blockedPlanes: planes(lines, sample.blocked, BLOCKED_KINDS),
     trapPlanes: planes(lines, sample.trapped, TRAP_REASONS),
+    valued: undefined,
   };
   return new StateTable(data);
 }

@@ -59,4 +59,6 @@ export interface TableData {
   readonly blockedPlanes: readonly (readonly (Plane | undefined)[])[];
   /** [line][reason index of TRAP_REASONS] */
   readonly trapPlanes: readonly (readonly (Plane | undefined)[])[];
+  /** Rows whose verdicts the pressures decided: they rest on entered or assumed values. */
+  readonly valued: Plane | undefined;
 }

@@ -10,6 +10,9 @@ import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome } from './actuator-outcomes.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { PlanePool, PlaneSheet } from './planes.ts';
+import { resolveBlock } from './resolve-block.ts';
+import type { Allowance } from './resolve-block.ts';
+import { PressureSolver } from './resolve.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
 import type { Plane, TableData } from './table-data.ts';
 import { leftBehind, leverMoves, standingReasons } from './trapped.ts';
@@ -35,17 +38,25 @@ interface Sheets {
   readonly trapped: PlaneSheet;
   /** One kind only: under pressure. */
   readonly under: PlaneSheet;
+  /** One item and kind: rows whose verdicts rest on entered or assumed values. */
+  readonly valued: PlaneSheet;
+}
+
+export interface TableOptions {
+  /** Rows that the pressure layer may solve where open paths leave the verdict to it; 0 = open paths alone. */
+  readonly pressureRows: number;
 }
 
 /**
- * The whole state table of a network by open paths. Throws `Cancelled` when the budget says so.
+ * The whole state table of a network: open paths, and pressures where those leave the verdict to them.
+ * Throws `Cancelled` when the budget says so.
  * Cost grows with states × paths / 32; memory is the planes that come out.
  */
-export function tabulate(net: Network, conditions: PathConditions, budget: Budget): TableData {
+export function tabulate(net: Network, conditions: PathConditions, budget: Budget, options: TableOptions = { pressureRows: 0 }): TableData {
   const edges = compileEdges(net);
   const radices = net.inputs.map((input) => input.positions.length);
   const share = conditions.pumpsRunning ? 1 : 0.5;
-  const running = runBlocks(net, edges, { ...conditions, pumpsRunning: true }, part(budget, 0, share));
+  const running = runBlocks(net, edges, { ...conditions, pumpsRunning: true }, part(budget, 0, share), conditions.pumpsRunning ? options.pressureRows : 0);
   const moves = leverMoves(radices, edges.states);
   const left = net.lines.slice(0, net.shown).map((_, line) =>
     leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states),
@@ -54,7 +65,7 @@ export function tabulate(net: Network, conditions: PathConditions, budget: Budge
   if (conditions.pumpsRunning) {
     left.forEach((plane, line) => putTrap(running, line, LEFT_BEHIND, plane));
   } else {
-    sheets = runBlocks(net, edges, conditions, part(budget, share, 1));
+    sheets = runBlocks(net, edges, conditions, part(budget, share, 1), options.pressureRows);
     for (let line = 0; line < net.shown; line++) {
       const cutOff = sheets.lines.get(line, CUT_OFF);
       putTrap(sheets, line, LEFT_BEHIND, meet(cutOff, left[line], edges.states));
@@ -77,10 +88,11 @@ export function tabulate(net: Network, conditions: PathConditions, budget: Budge
     linePlanes: sheets.lines.finish(pool),
     blockedPlanes: sheets.blocked.finish(pool),
     trapPlanes: sheets.trapped.finish(pool),
+    valued: sheets.valued.finish(pool)[0]?.[0],
   };
 }
 
-function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, budget: Budget): Sheets {
+function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, budget: Budget, pressureRows: number): Sheets {
   const { states } = edges;
   const words = wordsFor(states);
   const sheets: Sheets = {
@@ -92,7 +104,10 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
     blocked: new PlaneSheet(net.shown, BLOCKED_KINDS.length, states),
     trapped: new PlaneSheet(net.shown, TRAP_REASONS.length, states),
     under: new PlaneSheet(net.shown, 1, states),
+    valued: new PlaneSheet(1, 1, states),
   };
+  const allowance: Allowance = { rows: pressureRows, every: states <= pressureRows };
+  let pressures: PressureSolver | undefined;
   const solver = new PathSolver(net, edges, conditions, Math.min(BLOCK, words));
   for (let at = 0; at < words; at += BLOCK) {
     if (budget.cancelled()) throw new Cancelled();
@@ -102,13 +117,18 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
     const write = (sheet: PlaneSheet, item: number, planes: readonly Uint32Array[]): void =>
       planes.forEach((plane, kind) => sheet.write(item, kind, at, plane));
 
-    net.actuators.forEach((actuator, i) => {
-      const outcome = actuatorOutcome(i, actuator, block, conditions);
+    const actuators = net.actuators.map((actuator, i) => actuatorOutcome(i, actuator, block, conditions));
+    const pumps = net.pumps.map((pump, i) => pumpOutcome(i, pump, net, block, conditions));
+    if (allowance.rows > 0) {
+      pressures ??= new PressureSolver(net, conditions);
+      sheets.valued.write(0, 0, at, resolveBlock(block, actuators, pumps, pressures, allowance, budget));
+    }
+    actuators.forEach((outcome, i) => {
       write(sheets.actuators, i, outcome.verdicts);
       write(sheets.notes, i, outcome.notes);
       write(sheets.rests, i, block.motion.rests[i] ?? []);
     });
-    net.pumps.forEach((pump, i) => write(sheets.pumps, i, pumpOutcome(i, pump, net, block, conditions)));
+    pumps.forEach((planes, i) => write(sheets.pumps, i, planes));
     const { classes, blocked } = lineOutcomes(net, edges, conditions, block);
     const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
     for (let line = 0; line < net.shown; line++) {

@@ -1,6 +1,9 @@
 import { describe, expect, test } from 'vitest';
+import type { Circuit } from '../../../src/circuit/model.ts';
 import { circuit } from '../../notation.ts';
 import { Asked } from '../../table-of.ts';
+
+const PATHS_ALONE = { pressureRows: 0 };
 
 /** Fixed pump, relief, one cylinder, one valve: the rig that most textbooks draw first. */
 const rig = (valve: string, pump = 'fixed-pump'): Asked =>
@@ -101,8 +104,12 @@ describe('several valves', () => {
     // Shifted alone, both chambers stand open to tank: one through V2, which is at rest.
     expect([t.actuator('C1', 'V1=a V2=0'), t.pump('V1=a V2=0')]).toEqual(['floats', 'unloaded']);
     // Both shifted: two cylinders for one flow, which open paths cannot share out.
-    expect(t.actuator('C1', 'V1=a V2=b')).toBe('rests on pressure');
-    expect(t.rests('C1', 'V1=a V2=b')).toEqual(['rivals']);
+    const paths = new Asked(t.circuit, t.conditions, PATHS_ALONE);
+    expect(paths.actuator('C1', 'V1=a V2=b')).toBe('rests on pressure');
+    expect(paths.rests('C1', 'V1=a V2=b')).toEqual(['rivals']);
+    expect(paths.pump('V1=a V2=b')).toBe('working');
+    // Nor can the pressures where the two are equal.
+    expect([t.actuator('C1', 'V1=a V2=a'), t.actuator('C2', 'V1=a V2=a')]).toEqual(['undetermined', 'undetermined']);
     expect(t.findings().map((finding) => finding.rule)).toContain('idle-valve-unloads');
   });
 
@@ -185,6 +192,8 @@ describe('lock checks', () => {
   });
 });
 
+const paths = (c: Circuit): Asked => new Asked(c, { pumps: 'running' }, PATHS_ALONE);
+
 describe('single acting, motors, loads', () => {
   const single = (place?: 'in' | 'out'): Asked =>
     new Asked(
@@ -213,7 +222,7 @@ describe('single acting, motors, loads', () => {
   });
 
   test('a load that presses in drops through an open valve, and lifting it rests on pressure', () => {
-    const t = new Asked(
+    const t = paths(
       circuit(
         'P1 fixed-pump, R1 relief-valve, V1 directional-valve:valve-4/3-float, C1 cylinder:cylinder-lifting, T1 tank | P1.P R1.P V1.P | A: V1.A C1.A | B: V1.B C1.B | V1.T R1.T T1.T P1.S',
       ),
@@ -248,7 +257,7 @@ describe('single acting, motors, loads', () => {
 
 describe('throttles', () => {
   const through = (parts: string, lines: string): Asked =>
-    new Asked(circuit(`P1 fixed-pump, R1 relief-valve, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank, ${parts} | ${lines}`));
+    paths(circuit(`P1 fixed-pump, R1 relief-valve, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank, ${parts} | ${lines}`));
 
   test('bleed-off leaves it to the pressures', () => {
     const t = through('Q1 throttle', 'P1.P R1.P V1.P | V1.A C1.A Q1.A | V1.B C1.B | V1.T R1.T T1.T P1.S Q1.B');

@@ -1,0 +1,81 @@
+import type { Budget } from '../../base/budget.ts';
+import { Cancelled } from '../../base/budget.ts';
+import type { SettledBlock } from '../paths/block.ts';
+import { REST_REASONS } from '../paths/motion-bits.ts';
+import type { ActuatorOutcome } from './actuator-outcomes.ts';
+import { actuatorByPressure, pumpByPressure } from './resolve.ts';
+import type { PressureSolver } from './resolve.ts';
+import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, PUMP_VERDICTS } from './words.ts';
+
+const RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
+const PUMP_RESTS = PUMP_VERDICTS.indexOf('rests on pressure');
+const PUMP_WORKS = PUMP_VERDICTS.indexOf('working');
+const RIVALS = REST_REASONS.indexOf('rivals');
+const VOID = ACTUATOR_NOTES.indexOf('void forms');
+
+/** How many rows the pressure layer may still solve, shared by all blocks of a table. */
+export interface Allowance {
+  rows: number;
+  /** It reaches for every row, so that those which open paths decide get their voids, stalls and relief flows too. */
+  readonly every: boolean;
+}
+
+/**
+ * Puts the pressure layer's verdict, in place, where open paths leave it to the pressures, and where
+ * they say that something moves. What the pressures do not decide either, or the allowance does not
+ * reach, stays `rests on pressure`. Returns the states whose verdicts rest on entered or assumed values.
+ */
+export function resolveBlock(
+  block: SettledBlock,
+  actuators: readonly ActuatorOutcome[],
+  pumps: readonly (readonly Uint32Array[])[],
+  solver: PressureSolver,
+  allowance: Allowance,
+  budget: Budget,
+): Uint32Array {
+  const { width, motion, hunts, all } = block;
+  const valued = new Uint32Array(width);
+  for (let w = 0; w < width; w++) {
+    let rests = 0;
+    for (const outcome of actuators) rests |= outcome.verdicts[RESTS]?.[w] as number;
+    for (const planes of pumps) rests |= planes[PUMP_RESTS]?.[w] as number;
+    let open = (allowance.every ? (all[w] as number) : rests) & ~(hunts[w] as number);
+    if (open !== 0 && budget.cancelled()) throw new Cancelled();
+    while (open !== 0 && allowance.rows > 0) {
+      const low = open & -open;
+      open ^= low;
+      allowance.rows -= 1;
+      const bit = w * 32 + (31 - Math.clz32(low));
+      const rivals = motion.rests.some((planes) => ((planes[RIVALS]?.[w] as number) & low) !== 0);
+      const answer = solver.solve(block.at * 32 + bit, rivals);
+      if (answer.result.status !== 'solved') continue;
+      const bits = { block, bit };
+      let changed = rests & low;
+      actuators.forEach((outcome, i) => {
+        const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
+        if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) return;
+        const found = actuatorByPressure(i, solver, bits, answer);
+        if (!found) return;
+        changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low);
+        const voids = outcome.notes[VOID] as Uint32Array;
+        if (found.void) voids[w] = (voids[w] as number) | low;
+      });
+      pumps.forEach((planes, i) => {
+        if ((((planes[PUMP_RESTS]?.[w] as number) | (planes[PUMP_WORKS]?.[w] as number)) & low) === 0) return;
+        const found = pumpByPressure(i, solver, bits, answer);
+        if (found) changed |= settle(planes, PUMP_VERDICTS.indexOf(found), w, low);
+      });
+      valued[w] = (valued[w] as number) | changed;
+    }
+  }
+  return valued;
+}
+
+/** Gives the state this verdict and no other; returns its bit if that is news. */
+function settle(planes: readonly Uint32Array[], verdict: number, w: number, bit: number): number {
+  const now = planes[verdict] as Uint32Array;
+  if (((now[w] as number) & bit) !== 0) return 0;
+  for (const plane of planes) plane[w] = (plane[w] as number) & ~bit;
+  now[w] = (now[w] as number) | bit;
+  return bit;
+}

@@ -1,0 +1,160 @@
+import type { Network } from '../../network/network.ts';
+import { compileFlow, setState } from '../flow/compile.ts';
+import type { FlowModel } from '../flow/compile.ts';
+import { describe } from '../flow/result.ts';
+import type { FlowResult, Solved } from '../flow/result.ts';
+import { ties } from '../flow/ties.ts';
+import type { SettledBlock } from '../paths/block.ts';
+import { REST_REASONS } from '../paths/motion-bits.ts';
+import type { PathConditions } from '../paths/reach.ts';
+import { motionWords } from './actuator-outcomes.ts';
+import { strides } from './strides.ts';
+import type { ActuatorVerdict, PumpVerdict } from './words.ts';
+
+/** Flow that counts as motion, and as void: 0.01 and 5e-4 L/min in m³/s. */
+const MOTION = 0.01e-3 / 60;
+const VOID = 5e-7 / 60;
+/** Pa; a chamber below it is not pressed on but sucked full. */
+const PRESSED = 1e4;
+const RIVALS = REST_REASONS.indexOf('rivals');
+/** An unloaded pump stands below this share of its setting. */
+const UNLOADED = 0.1;
+
+/** What the pressures say about one row. */
+export interface PressureAnswer {
+  readonly result: FlowResult;
+  /** Per actuator: its speed rests on the losses, whatever else drives it. */
+  readonly swings: readonly boolean[];
+}
+
+/** Steady pressures of single rows; each solve starts from the last one. */
+export class PressureSolver {
+  readonly net: Network;
+  readonly model: FlowModel;
+  readonly #strides: readonly number[];
+  #warm: Float64Array | undefined;
+
+  constructor(net: Network, conditions: PathConditions) {
+    this.net = net;
+    this.model = compileFlow(net, conditions);
+    this.#strides = strides(net.inputs.map((input) => input.positions.length));
+  }
+
+  /** 0-based row. `rivals`: also find out whose speed rests on losses. */
+  solve(row: number, rivals: boolean): PressureAnswer {
+    const { model, net } = this;
+    setState(model, (input) => Math.floor(row / (this.#strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1));
+    const solution = model.solver.solve(this.#warm ? { warm: this.#warm } : {});
+    const result = describe(model.solver, solution);
+    let swinging: readonly number[] = [];
+    if (result.status === 'solved') {
+      this.#warm = Float64Array.from(solution.pressures);
+      if (rivals) swinging = ties(model.solver, this.#warm);
+    } else {
+      this.#warm = undefined;
+    }
+    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)) };
+  }
+
+  /** Gauge pressure of a line of the network, Pa. */
+  pressure(solved: Solved, line: number): number {
+    const at = line < 0 ? -1 : (this.model.lineOf[line] as number);
+    return at < 0 ? 0 : (solved.lines[at]?.pressure ?? 0);
+  }
+
+  /** m³/s of void that forms in a line. */
+  voidFlow(solved: Solved, line: number): number {
+    const at = line < 0 ? -1 : (this.model.lineOf[line] as number);
+    return at < 0 ? 0 : (solved.lines[at]?.voidFlow ?? 0);
+  }
+
+  /** m³/s over a relief valve of the network. */
+  reliefFlow(solved: Solved, relief: number): number {
+    const id = this.model.problem.branches[this.model.reliefs[relief] as number]?.id;
+    return Math.max(0, solved.branches.find((entry) => entry.kind === 'relief' && entry.id === id)?.flow ?? 0);
+  }
+}
+
+/** One state of a block: reads its bits. */
+export interface BlockBits {
+  readonly block: SettledBlock;
+  /** Bit index within the block. */
+  readonly bit: number;
+}
+
+const on = ({ bit }: BlockBits, plane: Uint32Array | undefined): boolean => (((plane?.[bit >>> 5] ?? 0) >>> (bit & 31)) & 1) === 1;
+
+/** The verdict that pressures give an actuator which open paths left to them; undefined = they do not decide it either. */
+export function actuatorByPressure(
+  index: number,
+  solver: PressureSolver,
+  bits: BlockBits,
+  { result, swings }: PressureAnswer,
+): { verdict: ActuatorVerdict; void: boolean } | undefined {
+  const actuator = solver.net.actuators[index];
+  if (!actuator || result.status !== 'solved') return undefined;
+  const state = result.actuators[index];
+  if (!state) return undefined;
+  if (swings[index] && equalRivals(solver, bits, result, swings).includes(index)) return { verdict: 'undetermined', void: false };
+  const { motion } = bits.block;
+  const words = motionWords(actuator);
+  const flow = Math.max(Math.abs(state.flowIn), Math.abs(state.flowOut));
+  const goesOut = on(bits, motion.out[index]);
+  const goesIn = on(bits, motion.in[index]);
+  if (flow <= MOTION) return { verdict: goesOut || goesIn ? 'stalled' : 'held', void: false };
+  const displaced = on(bits, motion.displaced[index]);
+  if (state.speed > 0) {
+    const fed = on(bits, motion.fedA[index]) || (displaced && goesOut);
+    return { verdict: fed ? words.out : words.pushedOut, void: solver.voidFlow(result, actuator.a) > VOID };
+  }
+  const fed = on(bits, motion.fedB[index]) || (displaced && goesIn);
+  return { verdict: fed ? words.in : words.pushedIn, void: solver.voidFlow(result, actuator.b) > VOID };
+}
+
+/**
+ * Actuators between which losses alone share one flow out: at least two that a pump drives the way it
+ * feeds them, or that stand, and whose speeds rest on the losses. One that its load drives is no rival:
+ * it runs as fast as the losses let it, and that is an answer.
+ */
+function equalRivals(solver: PressureSolver, bits: BlockBits, result: Solved, swings: readonly boolean[]): number[] {
+  const { motion } = bits.block;
+  const found = solver.net.actuators.flatMap((actuator, i) => {
+    if (!swings[i] || !on(bits, motion.rests[i]?.[RIVALS])) return [];
+    const speed = result.actuators[i]?.speed ?? 0;
+    const out = on(bits, motion.out[i]);
+    const driven = out ? speed >= 0 : speed <= 0;
+    return driven && solver.pressure(result, out ? actuator.a : actuator.b) > PRESSED ? [i] : [];
+  });
+  return found.length > 1 ? found : [];
+}
+
+/** The same for a pump. */
+export function pumpByPressure(
+  index: number,
+  solver: PressureSolver,
+  bits: BlockBits,
+  { result }: PressureAnswer,
+): PumpVerdict | undefined {
+  const { net } = solver;
+  const pump = net.pumps[index];
+  if (!pump || result.status !== 'solved') return undefined;
+  const state = result.pumps[index];
+  if (!state) return undefined;
+  const { reach, motion, width } = bits.block;
+  const pressed = reach.pressed[index] as Uint32Array;
+  const offered = (line: number): boolean =>
+    line >= 0 && on(bits, pressed.subarray(line * width, (line + 1) * width));
+  const drives = net.actuators.some((actuator, i) => {
+    const speed = result.actuators[i]?.speed ?? 0;
+    const flow = Math.max(Math.abs(result.actuators[i]?.flowIn ?? 0), Math.abs(result.actuators[i]?.flowOut ?? 0));
+    if (flow <= MOTION) return false;
+    return speed > 0 ? offered(actuator.a) && on(bits, motion.fedA[i]) : offered(actuator.b) && on(bits, motion.fedB[i]);
+  });
+  const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));
+  const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(result, i), 0);
+  if (pump.compensated && !drives && state.delivered < 0.02 * pump.flow && state.pressure > 0.5 * pump.setting) return 'destroked';
+  if (drives) return spilled > MOTION ? 'working, part over relief' : 'working';
+  if (spilled > MOTION) return 'over relief';
+  const setting = Math.max(pump.setting, ...mine.map((i) => net.reliefs[i]?.setting ?? 0), 0);
+  return setting > 0 && state.pressure < UNLOADED * setting ? 'unloaded' : undefined;
+}
