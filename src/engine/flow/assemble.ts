@@ -6,7 +6,13 @@ import type { Plan } from './sparse.ts';
 
 /** Numbers of one branch in `law`: areas, law, bounds. */
 export const WIDTH = 8;
-const CA = 0, CB = 1, FORWARD = 2, BACKWARD = 3, R = 4, K = 5, LO = 6;
+const CA = 0,
+  CB = 1,
+  FORWARD = 2,
+  BACKWARD = 3,
+  R = 4,
+  K = 5,
+  LO = 6;
 /** Offset of the upper bound, which the treatment of pilot-sensed valves lowers. */
 export const HI = 7;
 
@@ -69,14 +75,22 @@ export function assemble(problem: FlowProblem): FlowSystem {
     // Both chambers in one line: the net area drives it.
     const [a, e, ca, cb] = b.a === b.b ? [tank(b.a), n, b.ca + b.cb, 0] : [tank(b.a), tank(b.b), b.ca, b.cb];
     ends.set([a, e, Math.min(plan.at(a, e), plan.at(e, a))], 3 * j);
-    law.set([ca, cb, b.hi > 0 ? b.forward : Infinity, b.lo < 0 ? b.backward : -Infinity, b.r, b.k, b.lo, b.hi], WIDTH * j);
+    law.set(
+      [ca, cb, b.hi > 0 ? b.forward : Infinity, b.lo < 0 ? b.backward : -Infinity, b.r, b.k, b.lo, b.hi],
+      WIDTH * j,
+    );
   });
   const source = new Float64Array(n);
   if (sound) for (const pump of problem.pumps) source[pump.line] = (source[pump.line] as number) + pump.flow;
   const system: FlowSystem = {
     problem,
     contradictions: faults,
-    n, m, plan, ends, law, source,
+    n,
+    m,
+    plan,
+    ends,
+    law,
+    source,
     on: Uint8Array.from(branches, (b) => (b.on ? 1 : 0)),
     pumpFlow: Float64Array.from(problem.pumps, (pump) => pump.flow),
     leak: problem.leak,
@@ -91,7 +105,10 @@ export function assemble(problem: FlowProblem): FlowSystem {
 function layPilots(branches: readonly Branch[], plan: Plan, tank: (line: number) => number): Pilots {
   const list = branches.flatMap((b, j) => (b.pilot ? [{ b, j, pilot: b.pilot }] : []));
   const start = [0];
-  const line: number[] = [], factor: number[] = [], slotA: number[] = [], slotB: number[] = [];
+  const line: number[] = [],
+    factor: number[] = [],
+    slotA: number[] = [],
+    slotB: number[] = [];
   for (const { b, pilot } of list) {
     for (const s of pilot.signals) {
       const q = tank(s.line);

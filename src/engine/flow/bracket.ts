@@ -13,13 +13,16 @@ const HALVINGS = 45;
  */
 export function bracketFlows(at: Pilotage, most: number): Outcome {
   const { h, scale, limits, work, system } = at;
-  const below = new Float64Array(system.n), above = new Float64Array(system.n);
+  const below = new Float64Array(system.n),
+    above = new Float64Array(system.n);
   h.fill(0);
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
     for (let v = 0; v < h.length; v++) {
       if (limits.cancelled()) return 'cancelled';
-      let low = 0, high = most;
-      let excessLow = 0, excessHigh = 0;
+      let low = 0,
+        high = most;
+      let excessLow = 0,
+        excessHigh = 0;
       for (let round = 0; round < HALVINGS && high - low > 1e-9 * scale; round++) {
         h[v] = round === 0 ? 0 : round === 1 ? most : low > 0 ? 0.5 * (low + high) : Math.min(scale, 0.25 * high);
         const outcome = settleAt(at);
@@ -56,7 +59,8 @@ function keep(into: Float64Array, p: Float64Array): void {
 /** Coupled iteration from the pressures that lie the given share of the way from `below` to `above`. */
 function between(at: Pilotage, below: Float64Array, above: Float64Array, share: number): Outcome {
   const { p } = at.work.now;
-  for (let i = 0; i < below.length; i++) p[i] = (below[i] as number) + share * ((above[i] as number) - (below[i] as number));
+  for (let i = 0; i < below.length; i++)
+    p[i] = (below[i] as number) + share * ((above[i] as number) - (below[i] as number));
   const found = couple(at);
   if (found === 'stuck') keep(p.subarray(0, below.length), below);
   return found;

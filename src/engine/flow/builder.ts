@@ -53,7 +53,10 @@ export function lossOf(loss: Loss = {}): { r: number; k: number } {
     const r = loss.laminar ?? NEAR_IDEAL.pathDrop / NEAR_IDEAL.pathFlow;
     return { r, k: 0 };
   }
-  return { r: loss.laminar ?? (NEAR_IDEAL.laminarShare * loss.drop) / loss.flow, k: loss.drop / (loss.flow * loss.flow) };
+  return {
+    r: loss.laminar ?? (NEAR_IDEAL.laminarShare * loss.drop) / loss.flow,
+    k: loss.drop / (loss.flow * loss.flow),
+  };
 }
 
 const free = { forward: 0, backward: 0, lo: -Infinity, hi: Infinity };
@@ -91,7 +94,14 @@ export class FlowBuilder {
   }
 
   /** Opens at `setting` Pa over its outlet; `override` Pa per m³/s. */
-  relief(id: string, line: number, to: number, setting: number, override: number = NEAR_IDEAL.override, on = true): number {
+  relief(
+    id: string,
+    line: number,
+    to: number,
+    setting: number,
+    override: number = NEAR_IDEAL.override,
+    on = true,
+  ): number {
     return this.#between(id, 'relief', line, to, { ...oneWay, forward: setting, r: override, k: 0 }, on);
   }
 
@@ -108,7 +118,14 @@ export class FlowBuilder {
 
   /** Charged accumulator: holds its line near `pressure` Pa. Its flow is what it takes in. */
   accumulator(id: string, line: number, pressure: number, loss?: Loss, on = true): number {
-    return this.#between(id, 'accumulator', line, TANK, { ...free, forward: pressure, backward: pressure, ...lossOf(loss) }, on);
+    return this.#between(
+      id,
+      'accumulator',
+      line,
+      TANK,
+      { ...free, forward: pressure, backward: pressure, ...lossOf(loss) },
+      on,
+    );
   }
 
   /** m³/s into `line`, at any pressure. The number is that of the pump. */
@@ -117,7 +134,13 @@ export class FlowBuilder {
   }
 
   /** Delivers `flow` up to its `setting`, where it is fully destroked; `band` Pa below it destroking begins. */
-  pumpCompensated(id: string, line: number, flow: number, setting: number, band = setting * NEAR_IDEAL.compensatorBand): number {
+  pumpCompensated(
+    id: string,
+    line: number,
+    flow: number,
+    setting: number,
+    band = setting * NEAR_IDEAL.compensatorBand,
+  ): number {
     const law = { ...oneWay, forward: setting - band, r: band / Math.max(flow, Number.MIN_VALUE), k: 0, hi: flow };
     const compensator = this.#between(id, 'compensator', line, TANK, flow > 0 ? law : { ...law, r: 1 }, flow > 0);
     return this.#pumps.push({ id, line, flow, compensator }) - 1;
@@ -135,7 +158,17 @@ export class FlowBuilder {
     // A drop of r·q + k·q² in each port, on its own area, as a force of the speed.
     const square = data.areaA ** 2 + data.areaB ** 2;
     const cube = data.areaA ** 3 + data.areaB ** 3;
-    return this.#actuator(id, 'cylinder', a, b, data.areaA, data.areaB, { r: drag + r * square, k: k * cube }, data.load ?? {}, data.at);
+    return this.#actuator(
+      id,
+      'cylinder',
+      a,
+      b,
+      data.areaA,
+      data.areaB,
+      { r: drag + r * square, k: k * cube },
+      data.load ?? {},
+      data.at,
+    );
   }
 
   motor(id: string, a: number, b: number, data: MotorData): number {
@@ -146,7 +179,17 @@ export class FlowBuilder {
       this.leakage(`${id} drain B`, b, drain, data.drainLeakage);
     }
     const drag = data.drag ?? NEAR_IDEAL.motorDrag * data.displacement;
-    return this.#actuator(id, 'motor', a, b, data.displacement, data.displacement, { r: drag, k: 0 }, data.load ?? {}, undefined);
+    return this.#actuator(
+      id,
+      'motor',
+      a,
+      b,
+      data.displacement,
+      data.displacement,
+      { r: drag, k: 0 },
+      data.load ?? {},
+      undefined,
+    );
   }
 
   /** Opens from → to when its inlet, less the reference, is above the setting; shut the other way. */
@@ -162,7 +205,10 @@ export class FlowBuilder {
   /** Holds a load in line `load`: opens load → valve when load + ratio·pilot, less the reference, is above the setting. Free valve → load. */
   counterbalance(id: string, load: number, valve: number, pilot: number, ratio: number, data: ValveData): number {
     this.check(`${id} check`, valve, load, 0, data.loss);
-    return this.#piloted(id, load, valve, data, [{ line: load, factor: 1 }, { line: pilot, factor: ratio }]);
+    return this.#piloted(id, load, valve, data, [
+      { line: load, factor: 1 },
+      { line: pilot, factor: ratio },
+    ]);
   }
 
   /** Closes from → to when the outlet, less the reference, comes up to the setting. */
@@ -174,34 +220,73 @@ export class FlowBuilder {
   }
 
   /** Free valve → cylinder; back when ratio·(pilot − valve) beats cylinder − valve + cracking. */
-  lockCheck(id: string, valve: number, cylinder: number, pilot: number, ratio: number, data: { cracking?: number; gradient?: number; loss?: Loss } = {}): number {
+  lockCheck(
+    id: string,
+    valve: number,
+    cylinder: number,
+    pilot: number,
+    ratio: number,
+    data: { cracking?: number; gradient?: number; loss?: Loss } = {},
+  ): number {
     const cracking = data.cracking ?? 0;
     this.check(`${id} check`, valve, cylinder, cracking, data.loss);
-    const signals = [{ line: pilot, factor: ratio }, { line: cylinder, factor: -1 }, { line: valve, factor: 1 - ratio }];
-    return this.#valve(id, cylinder, valve, data.loss, { signals, setting: cracking, gradient: data.gradient ?? NEAR_IDEAL.pilotGradient });
+    const signals = [
+      { line: pilot, factor: ratio },
+      { line: cylinder, factor: -1 },
+      { line: valve, factor: 1 - ratio },
+    ];
+    return this.#valve(id, cylinder, valve, data.loss, {
+      signals,
+      setting: cracking,
+      gradient: data.gradient ?? NEAR_IDEAL.pilotGradient,
+    });
   }
 
   build(): FlowProblem {
     return { lines: [...this.#lines], pumps: [...this.#pumps], branches: [...this.#branches], leak: this.#leak };
   }
 
-  #between(id: string, kind: BranchKind, from: number, to: number, law: Pick<Branch, 'forward' | 'backward' | 'r' | 'k' | 'lo' | 'hi'>, on: boolean): number {
+  #between(
+    id: string,
+    kind: BranchKind,
+    from: number,
+    to: number,
+    law: Pick<Branch, 'forward' | 'backward' | 'r' | 'k' | 'lo' | 'hi'>,
+    on: boolean,
+  ): number {
     return this.#branches.push({ id, kind, a: from, b: to, ca: 1, cb: -1, ...law, on }) - 1;
   }
 
   #actuator(
-    id: string, kind: 'cylinder' | 'motor', a: number, b: number, ca: number, cb: number, loss: { r: number; k: number }, load: Load, at: 'in' | 'out' | undefined,
+    id: string,
+    kind: 'cylinder' | 'motor',
+    a: number,
+    b: number,
+    ca: number,
+    cb: number,
+    loss: { r: number; k: number },
+    load: Load,
+    at: 'in' | 'out' | undefined,
   ): number {
     const pressing = (load.pressing ?? 0) + (load.spring ?? 0);
     const against = (load.resisting ?? 0) + (load.friction ?? 0);
-    return this.#branches.push({
-      id, kind, a, b, ca, cb: -cb, load, on: true,
-      forward: pressing + against,
-      backward: pressing - against,
-      ...loss,
-      lo: at === 'in' ? 0 : -Infinity,
-      hi: at === 'out' ? 0 : Infinity,
-    }) - 1;
+    return (
+      this.#branches.push({
+        id,
+        kind,
+        a,
+        b,
+        ca,
+        cb: -cb,
+        load,
+        on: true,
+        forward: pressing + against,
+        backward: pressing - against,
+        ...loss,
+        lo: at === 'in' ? 0 : -Infinity,
+        hi: at === 'out' ? 0 : Infinity,
+      }) - 1
+    );
   }
 
   #piloted(id: string, from: number, to: number, data: ValveData, signals: Signal[]): number {
@@ -215,6 +300,21 @@ export class FlowBuilder {
 
   #valve(id: string, from: number, to: number, loss: Loss | undefined, pilot: Pilot): number {
     const { r, k } = lossOf(loss);
-    return this.#branches.push({ id, kind: 'pressure valve', a: from, b: to, ca: 1, cb: -1, ...oneWay, forward: 0, r, k, on: true, pilot }) - 1;
+    return (
+      this.#branches.push({
+        id,
+        kind: 'pressure valve',
+        a: from,
+        b: to,
+        ca: 1,
+        cb: -1,
+        ...oneWay,
+        forward: 0,
+        r,
+        k,
+        on: true,
+        pilot,
+      }) - 1
+    );
   }
 }

@@ -22,22 +22,31 @@ export interface Certificate {
 export const GOOD_RESIDUAL = 1e-8;
 export const GOOD_POWER = 1e-7;
 
-export const isGood = (c: Certificate): boolean => c.residual <= GOOD_RESIDUAL && c.balance <= GOOD_RESIDUAL && c.power <= GOOD_POWER;
+export const isGood = (c: Certificate): boolean =>
+  c.residual <= GOOD_RESIDUAL && c.balance <= GOOD_RESIDUAL && c.power <= GOOD_POWER;
 
 /** Most that the pilot pressures let pass through pilot number `i`; m³/s. */
 export function pilotLimit(system: FlowSystem, i: number, p: ArrayLike<number>): number {
   const { start, line, factor, setting, slope } = system.pilots;
   let signal = -(setting[i] as number);
-  for (let s = start[i] as number; s < (start[i + 1] as number); s++) signal += (factor[s] as number) * (p[line[s] as number] as number);
+  for (let s = start[i] as number; s < (start[i + 1] as number); s++)
+    signal += (factor[s] as number) * (p[line[s] as number] as number);
   return Math.max(0, signal * (slope[i] as number));
 }
 
 /** Checks `p` (n + 1 pressures, the tank's last) and `x` against the problem as it now stands in `system`. */
-export function certify(system: FlowSystem, p: ArrayLike<number>, x: ArrayLike<number>, iterations: number): Certificate {
+export function certify(
+  system: FlowSystem,
+  p: ArrayLike<number>,
+  x: ArrayLike<number>,
+  iterations: number,
+): Certificate {
   const { n, law, ends, active, source, leak, pilots } = system;
   const scale = flowScale(system);
   const net = new Float64Array(n + 1);
-  let input = 0, used = 0, largest = 0;
+  let input = 0,
+    used = 0,
+    largest = 0;
   for (let i = 0; i < n; i++) {
     const pressure = p[i] as number;
     const drained = pressure * leak + Math.min(0, pressure) / NEAR_IDEAL.void;
@@ -46,11 +55,14 @@ export function certify(system: FlowSystem, p: ArrayLike<number>, x: ArrayLike<n
     used += pressure * drained;
     largest = Math.max(largest, Math.abs(pressure * (source[i] as number)), Math.abs(pressure * drained));
   }
-  let residual = 0, worstBranch = -1;
+  let residual = 0,
+    worstBranch = -1;
   for (const j of active) {
-    const a = ends[3 * j] as number, b = ends[3 * j + 1] as number;
+    const a = ends[3 * j] as number,
+      b = ends[3 * j + 1] as number;
     const at = WIDTH * j;
-    const ca = law[at] as number, cb = law[at + 1] as number;
+    const ca = law[at] as number,
+      cb = law[at + 1] as number;
     const pilot = pilots.of[j] as number;
     const cap = pilot === -1 ? Infinity : pilotLimit(system, pilot, p);
     const own: Law = {
@@ -75,7 +87,8 @@ export function certify(system: FlowSystem, p: ArrayLike<number>, x: ArrayLike<n
     used += u * flow;
     largest = Math.max(largest, Math.abs(u * flow));
   }
-  let balance = 0, worstLine = -1;
+  let balance = 0,
+    worstLine = -1;
   for (let i = 0; i < n; i++) {
     const wrong = Math.abs(net[i] as number) / scale;
     if (!(wrong <= balance)) {

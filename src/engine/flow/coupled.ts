@@ -16,7 +16,13 @@ const LAST_STEP = 1e-3;
  * has one it also finds answers that hang on a flow too fine to be bracketed.
  * `transient` (m³/s per Pa) begins instead with that term and lets it fade, which goes further from a poor start.
  */
-export function solveCoupled(system: FlowSystem, work: Workspace, limits: Limits, scale: number, transient = 0): Outcome {
+export function solveCoupled(
+  system: FlowSystem,
+  work: Workspace,
+  limits: Limits,
+  scale: number,
+  transient = 0,
+): Outcome {
   const { n, plan } = system;
   const { step, counts, simplified } = work;
   const floor = system.leak * 1e-3;
@@ -28,7 +34,8 @@ export function solveCoupled(system: FlowSystem, work: Workspace, limits: Limits
     if ((iteration & 15) === 15 && limits.cancelled()) return 'cancelled';
     counts.iterations++;
     const { f, v, p } = work.now;
-    let norm = 0, highest = 0;
+    let norm = 0,
+      highest = 0;
     for (let i = 0; i < n; i++) {
       step[i] = -(f[i] as number);
       norm = Math.max(norm, Math.abs(f[i] as number));
@@ -95,18 +102,22 @@ function evaluateCoupled(system: FlowSystem, at: Point, before: Float64Array): v
   for (let q = plain; q < active.length; q++) {
     const j = active[q] as number;
     const i = pilots.of[j] as number;
-    const a = ends[3 * j] as number, b = ends[3 * j + 1] as number;
+    const a = ends[3 * j] as number,
+      b = ends[3 * j + 1] as number;
     const l = WIDTH * j;
     const u = (law[l] as number) * (p[a] as number) + (law[l + 1] as number) * (p[b] as number);
-    let flow = 0, s = 0;
+    let flow = 0,
+      s = 0;
     if (u > 0) {
-      const r = law[l + 4] as number, k = law[l + 5] as number;
+      const r = law[l + 4] as number,
+        k = law[l + 5] as number;
       const root = Math.sqrt(r * r + 4 * k * u);
       flow = (2 * u) / (r + root);
       s = (before[j] as number) > 0 ? 1 / root : flow / u;
     }
     let limit = -(pilots.setting[i] as number);
-    const first = pilots.start[i] as number, end = pilots.start[i + 1] as number;
+    const first = pilots.start[i] as number,
+      end = pilots.start[i + 1] as number;
     for (let w = first; w < end; w++) limit += (pilots.factor[w] as number) * (p[pilots.line[w] as number] as number);
     limit *= pilots.slope[i] as number;
     const capped = limit < flow;
@@ -121,13 +132,15 @@ function evaluateCoupled(system: FlowSystem, at: Point, before: Float64Array): v
       const rate = pilots.slope[i] as number;
       for (let w = first; w < end; w++) {
         const g = rate * (pilots.factor[w] as number);
-        const sa = pilots.slotA[w] as number, sb = pilots.slotB[w] as number;
+        const sa = pilots.slotA[w] as number,
+          sb = pilots.slotB[w] as number;
         if (a < n) v[sa] = (v[sa] as number) + (law[l] as number) * g;
         if (b < n) v[sb] = (v[sb] as number) + (law[l + 1] as number) * g;
       }
     } else if (slope[j] !== 0) {
       const slot = ends[3 * j + 2] as number;
-      const ca = law[l] as number, cb = law[l + 1] as number;
+      const ca = law[l] as number,
+        cb = law[l + 1] as number;
       v[a] = (v[a] as number) + ca * ca * s;
       v[b] = (v[b] as number) + cb * cb * s;
       v[slot] = (v[slot] as number) + ca * cb * s;
@@ -149,10 +162,14 @@ function settleCoupled(system: FlowSystem, work: Workspace): void {
     const flow = x[j] as number;
     let after = flow;
     if (s !== 0) {
-      after += s * ((law[l] as number) * (step[ends[3 * j] as number] as number) + (law[l + 1] as number) * (step[ends[3 * j + 1] as number] as number));
+      after +=
+        s *
+        ((law[l] as number) * (step[ends[3 * j] as number] as number) +
+          (law[l + 1] as number) * (step[ends[3 * j + 1] as number] as number));
     } else if (i >= 0 && flow > 0 && flow < (law[l + HI] as number)) {
       for (let w = pilots.start[i] as number; w < (pilots.start[i + 1] as number); w++) {
-        after += (pilots.slope[i] as number) * (pilots.factor[w] as number) * (step[pilots.line[w] as number] as number);
+        after +=
+          (pilots.slope[i] as number) * (pilots.factor[w] as number) * (step[pilots.line[w] as number] as number);
       }
     }
     x[j] = Math.min(law[l + HI] as number, Math.max(law[l + HI - 1] as number, after));

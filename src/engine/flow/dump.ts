@@ -5,13 +5,29 @@ import type { Branch, BranchKind, FlowProblem, Load, Pilot, Pump } from './probl
 
 const FORMAT = 'flow-problem';
 const KINDS: readonly BranchKind[] = [
-  'path', 'check', 'throttle', 'flow control', 'relief', 'compensator', 'accumulator', 'leakage', 'cylinder', 'motor', 'pressure valve',
+  'path',
+  'check',
+  'throttle',
+  'flow control',
+  'relief',
+  'compensator',
+  'accumulator',
+  'leakage',
+  'cylinder',
+  'motor',
+  'pressure valve',
 ];
 
 /** A problem as JSON for a bug report. Numbers keep every bit; infinite bounds are written as words. */
 export function dumpProblem(problem: FlowProblem): string {
   const words = (_: string, value: unknown): unknown =>
-    typeof value === 'number' && !Number.isFinite(value) ? (Number.isNaN(value) ? 'NaN' : value > 0 ? '+inf' : '-inf') : value;
+    typeof value === 'number' && !Number.isFinite(value)
+      ? Number.isNaN(value)
+        ? 'NaN'
+        : value > 0
+          ? '+inf'
+          : '-inf'
+      : value;
   return JSON.stringify({ format: FORMAT, version: 1, ...problem }, words, 1);
 }
 
@@ -32,9 +48,17 @@ export function loadProblem(text: string): Result<FlowProblem> {
       branches: list(top['branches'], 'branches').map(readBranch),
       leak: number(top['leak'], 'leak'),
     };
-    return good(problem, contradictions(problem).map((c) => ({ where: c.where, what: c.what, remedy: 'Mend the data: nothing satisfies them.' })));
+    return good(
+      problem,
+      contradictions(problem).map((c) => ({
+        where: c.where,
+        what: c.what,
+        remedy: 'Mend the data: nothing satisfies them.',
+      })),
+    );
   } catch (error) {
-    if (error instanceof Wrong) return bad({ where: error.where, what: error.message, remedy: 'Use a file written by the problem dump.' });
+    if (error instanceof Wrong)
+      return bad({ where: error.where, what: error.message, remedy: 'Use a file written by the problem dump.' });
     throw error;
   }
 }
@@ -75,8 +99,14 @@ function asText(value: unknown, where: string): string {
 function readPump(value: unknown, i: number): Pump {
   const where = `pumps[${i}]`;
   const o = record(value, where);
-  const pump = { id: asText(o['id'], `${where}.id`), line: number(o['line'], `${where}.line`), flow: number(o['flow'], `${where}.flow`) };
-  return o['compensator'] === undefined ? pump : { ...pump, compensator: number(o['compensator'], `${where}.compensator`) };
+  const pump = {
+    id: asText(o['id'], `${where}.id`),
+    line: number(o['line'], `${where}.line`),
+    flow: number(o['flow'], `${where}.flow`),
+  };
+  return o['compensator'] === undefined
+    ? pump
+    : { ...pump, compensator: number(o['compensator'], `${where}.compensator`) };
 }
 
 function readBranch(value: unknown, i: number): Branch {
@@ -88,8 +118,16 @@ function readBranch(value: unknown, i: number): Branch {
   return {
     id: asText(o['id'], `${where}.id`),
     kind,
-    a: num('a'), b: num('b'), ca: num('ca'), cb: num('cb'),
-    forward: num('forward'), backward: num('backward'), r: num('r'), k: num('k'), lo: num('lo'), hi: num('hi'),
+    a: num('a'),
+    b: num('b'),
+    ca: num('ca'),
+    cb: num('cb'),
+    forward: num('forward'),
+    backward: num('backward'),
+    r: num('r'),
+    k: num('k'),
+    lo: num('lo'),
+    hi: num('hi'),
     on: o['on'] !== false,
     ...(o['pilot'] === undefined ? {} : { pilot: readPilot(o['pilot'], `${where}.pilot`) }),
     ...(o['load'] === undefined ? {} : { load: readLoad(o['load'], `${where}.load`) }),
@@ -100,14 +138,22 @@ function readPilot(value: unknown, where: string): Pilot {
   const o = record(value, where);
   const signals = list(o['signals'], `${where}.signals`).map((s, i) => {
     const signal = record(s, `${where}.signals[${i}]`);
-    return { line: number(signal['line'], `${where}.signals[${i}].line`), factor: number(signal['factor'], `${where}.signals[${i}].factor`) };
+    return {
+      line: number(signal['line'], `${where}.signals[${i}].line`),
+      factor: number(signal['factor'], `${where}.signals[${i}].factor`),
+    };
   });
-  return { signals, setting: number(o['setting'], `${where}.setting`), gradient: number(o['gradient'], `${where}.gradient`) };
+  return {
+    signals,
+    setting: number(o['setting'], `${where}.setting`),
+    gradient: number(o['gradient'], `${where}.gradient`),
+  };
 }
 
 function readLoad(value: unknown, where: string): Load {
   const o = record(value, where);
   const load: Record<string, number> = {};
-  for (const key of ['pressing', 'resisting', 'friction', 'spring'] as const) if (o[key] !== undefined) load[key] = number(o[key], `${where}.${key}`);
+  for (const key of ['pressing', 'resisting', 'friction', 'spring'] as const)
+    if (o[key] !== undefined) load[key] = number(o[key], `${where}.${key}`);
   return load;
 }

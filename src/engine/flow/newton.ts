@@ -152,7 +152,9 @@ function settle(system: FlowSystem, work: Workspace): boolean {
       const s = slope[j] as number;
       if (s === 0) continue;
       const l = WIDTH * j;
-      const du = (law[l] as number) * (step[ends[3 * j] as number] as number) + (law[l + 1] as number) * (step[ends[3 * j + 1] as number] as number);
+      const du =
+        (law[l] as number) * (step[ends[3 * j] as number] as number) +
+        (law[l + 1] as number) * (step[ends[3 * j + 1] as number] as number);
       const before = x[j] as number;
       const after = before + s * du;
       if (pass === 1) x[j] = after;
@@ -177,8 +179,10 @@ export function noise(system: FlowSystem, at: Point): number {
   let most = 0;
   for (let i = 0; i < active.length; i++) {
     const j = active[i] as number;
-    const ca = Math.abs(law[WIDTH * j] as number), cb = Math.abs(law[WIDTH * j + 1] as number);
-    const size = ca * Math.abs(at.p[ends[3 * j] as number] as number) + cb * Math.abs(at.p[ends[3 * j + 1] as number] as number);
+    const ca = Math.abs(law[WIDTH * j] as number),
+      cb = Math.abs(law[WIDTH * j + 1] as number);
+    const size =
+      ca * Math.abs(at.p[ends[3 * j] as number] as number) + cb * Math.abs(at.p[ends[3 * j + 1] as number] as number);
     most = Math.max(most, (at.slope[j] as number) * size * Math.max(ca, cb));
   }
   return 16 * Number.EPSILON * most;

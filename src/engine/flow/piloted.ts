@@ -30,14 +30,28 @@ const ROUNDS = 40;
 /** h − T as a share of the flow scale. */
 const ENOUGH = 1e-10;
 
-export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits, warm: ArrayLike<number> | undefined): Outcome {
+export function solvePiloted(
+  system: FlowSystem,
+  work: Workspace,
+  limits: Limits,
+  warm: ArrayLike<number> | undefined,
+): Outcome {
   const { pilots, active, plain, law, n } = system;
   const count = active.length - plain;
   const valves = Int32Array.from(active.subarray(plain), (j) => pilots.of[j] as number);
   const bounds = Float64Array.from(valves, (i) => law[WIDTH * (pilots.branch[i] as number) + HI] as number);
   const scale = flowScale(system);
   const most = 100 * scale;
-  const at: Pilotage = { system, work, limits, valves, h: new Float64Array(count), open: new Float64Array(count), scale, spent: 0 };
+  const at: Pilotage = {
+    system,
+    work,
+    limits,
+    valves,
+    h: new Float64Array(count),
+    open: new Float64Array(count),
+    scale,
+    spent: 0,
+  };
   let outcome: Outcome = 'stuck';
   try {
     for (let start = warm ? 0 : 1; start < 4; start++) {
@@ -67,7 +81,13 @@ export function solvePiloted(system: FlowSystem, work: Workspace, limits: Limits
 export function couple(at: Pilotage, transient = 0): Outcome {
   const { system, work, limits, valves, scale } = at;
   for (const i of valves) system.law[WIDTH * (system.pilots.branch[i] as number) + HI] = Infinity;
-  return solveCoupled(system, work, { cancelled: limits.cancelled, iterations: transient > 0 ? 150 : 40 }, scale, transient);
+  return solveCoupled(
+    system,
+    work,
+    { cancelled: limits.cancelled, iterations: transient > 0 ? 150 : 40 },
+    scale,
+    transient,
+  );
 }
 
 /** What the pilot pressures at `work.now.p` let open, into `open`. */
@@ -80,14 +100,16 @@ function sense(at: Pilotage): void {
 function signalOf(system: FlowSystem, i: number, p: Float64Array): number {
   const { start, line, factor, setting, slope } = system.pilots;
   let sum = -(setting[i] as number);
-  for (let s = start[i] as number; s < (start[i + 1] as number); s++) sum += (factor[s] as number) * (p[line[s] as number] as number);
+  for (let s = start[i] as number; s < (start[i + 1] as number); s++)
+    sum += (factor[s] as number) * (p[line[s] as number] as number);
   return sum * (slope[i] as number);
 }
 
 /** Convex solve with the flows `h` as upper bounds, from where the last one ended. */
 export function settleAt(at: Pilotage): Outcome {
   const { system, work, limits, valves, h } = at;
-  for (let v = 0; v < valves.length; v++) system.law[WIDTH * (system.pilots.branch[valves[v] as number] as number) + HI] = h[v] as number;
+  for (let v = 0; v < valves.length; v++)
+    system.law[WIDTH * (system.pilots.branch[valves[v] as number] as number) + HI] = h[v] as number;
   let outcome: Outcome = 'stuck';
   let highest = 0;
   for (let i = 0; i < system.n; i++) highest = Math.max(highest, Math.abs(work.now.p[i] as number));
@@ -128,7 +150,11 @@ function newtonOnFlows(at: Pilotage): Outcome {
     if (outcome === 'cancelled') return outcome;
     if (outcome === 'converged' && worst <= ENOUGH * scale) return 'converged';
     if (outcome !== 'converged' || !direction(at, step)) return 'stuck';
-    for (let v = 0; v < count; v++) from[v] = Math.min(h[v] as number, at.work.now.x[at.system.pilots.branch[at.valves[v] as number] as number] as number);
+    for (let v = 0; v < count; v++)
+      from[v] = Math.min(
+        h[v] as number,
+        at.work.now.x[at.system.pilots.branch[at.valves[v] as number] as number] as number,
+      );
     const before = worst;
     for (let share = 1; ; share *= 0.4) {
       for (let v = 0; v < count; v++) h[v] = Math.max(0, (from[v] as number) + share * (step[v] as number));
@@ -178,7 +204,8 @@ function eliminate(matrix: Float64Array[], out: Float64Array): boolean {
   const count = matrix.length;
   for (let k = 0; k < count; k++) {
     let best = k;
-    for (let i = k + 1; i < count; i++) if (Math.abs(matrix[i]?.[k] as number) > Math.abs(matrix[best]?.[k] as number)) best = i;
+    for (let i = k + 1; i < count; i++)
+      if (Math.abs(matrix[i]?.[k] as number) > Math.abs(matrix[best]?.[k] as number)) best = i;
     const row = matrix[best] as Float64Array;
     matrix[best] = matrix[k] as Float64Array;
     matrix[k] = row;

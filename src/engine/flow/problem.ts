@@ -97,9 +97,11 @@ const finite = (value: number): boolean => Number.isFinite(value);
 export function contradictions(problem: FlowProblem): Contradiction[] {
   const found: Contradiction[] = [];
   const known = (line: number): boolean => Number.isInteger(line) && line >= TANK && line < problem.lines.length;
-  if (!(problem.leak > 0) || !finite(problem.leak)) found.push({ where: 'leak', what: 'The leak of the lines must be above 0.' });
+  if (!(problem.leak > 0) || !finite(problem.leak))
+    found.push({ where: 'leak', what: 'The leak of the lines must be above 0.' });
   for (const pump of problem.pumps) {
-    if (!known(pump.line) || pump.line === TANK) found.push({ where: pump.id, what: 'Its outlet is no line of this circuit.' });
+    if (!known(pump.line) || pump.line === TANK)
+      found.push({ where: pump.id, what: 'Its outlet is no line of this circuit.' });
     if (!finite(pump.flow) || pump.flow < 0) found.push({ where: pump.id, what: 'Its flow must be 0 or more.' });
     if (pump.compensator !== undefined && problem.branches[pump.compensator]?.kind !== 'compensator') {
       found.push({ where: pump.id, what: 'Its compensator is missing.' });
@@ -109,16 +111,21 @@ export function contradictions(problem: FlowProblem): Contradiction[] {
     const say = (what: string): void => void found.push({ where: branch.id, what });
     if (!known(branch.a) || !known(branch.b)) say('It joins a line that this circuit does not have.');
     if (!finite(branch.ca) || !finite(branch.cb)) say('Its areas must be numbers.');
-    if (!(branch.r > 0) || !finite(branch.r) || !(branch.k >= 0) || !finite(branch.k)) say('Its loss must rise with the flow.');
+    if (!(branch.r > 0) || !finite(branch.r) || !(branch.k >= 0) || !finite(branch.k))
+      say('Its loss must rise with the flow.');
     if (bad(branch.lo) || bad(branch.hi) || branch.lo > branch.hi) {
       say('The least flow that it must pass is above the most that it can pass: no flow satisfies both.');
     }
-    if (bad(branch.forward) || bad(branch.backward) || branch.backward > branch.forward) say('Friction and cracking pressure must be 0 or more.');
-    if ((branch.hi > 0 && !finite(branch.forward)) || (branch.lo < 0 && !finite(branch.backward))) say('Its setting or load must be a number.');
+    if (bad(branch.forward) || bad(branch.backward) || branch.backward > branch.forward)
+      say('Friction and cracking pressure must be 0 or more.');
+    if ((branch.hi > 0 && !finite(branch.forward)) || (branch.lo < 0 && !finite(branch.backward)))
+      say('Its setting or load must be a number.');
     if (branch.pilot) {
       const { signals, setting, gradient } = branch.pilot;
-      if (!signals.every((s) => known(s.line) && finite(s.factor))) say('It senses a line that this circuit does not have.');
-      if (bad(setting) || !(gradient > 0) || !finite(gradient)) say('Its setting and override must be numbers, the override above 0.');
+      if (!signals.every((s) => known(s.line) && finite(s.factor)))
+        say('It senses a line that this circuit does not have.');
+      if (bad(setting) || !(gradient > 0) || !finite(gradient))
+        say('Its setting and override must be numbers, the override above 0.');
       if (branch.lo > 0) say('A pilot-sensed valve can be shut: its least flow must not be above 0.');
     }
   }

@@ -12,14 +12,16 @@ export function searchRay(system: FlowSystem, work: Workspace, slope: number): n
   const enough = 0.5 * Math.abs(slope);
   const { ray } = work;
   const rise = 2 * system.m;
-  let low = 0, high = 1;
+  let low = 0,
+    high = 1;
   let slopeLow = slope;
   let slopeHigh = slopeOnRay(system, work, 1);
   if (slopeHigh <= enough) return 1;
   let share = 1 - slopeHigh / (ray[rise] as number);
   for (let round = 0; round < 40 && high - low > 1e-9 * high; round++) {
     // Tangent from the last point (exact on the stiff far side of a kink), else secant and middle in turn.
-    if (!(share > low && share < high)) share = (round & 1) === 1 ? 0.5 * (low + high) : low + ((high - low) * slopeLow) / (slopeLow - slopeHigh);
+    if (!(share > low && share < high))
+      share = (round & 1) === 1 ? 0.5 * (low + high) : low + ((high - low) * slopeLow) / (slopeLow - slopeHigh);
     if (!(share > low && share < high)) share = 0.5 * (low + high);
     work.counts.rays++;
     const reached = slopeOnRay(system, work, share);
@@ -41,7 +43,8 @@ export function searchRay(system: FlowSystem, work: Workspace, slope: number): n
 function castRay(system: FlowSystem, work: Workspace): void {
   const { n, m, ends, law, active } = system;
   const { now, step, ray } = work;
-  let constant = 0, linear = 0;
+  let constant = 0,
+    linear = 0;
   for (let i = 0; i < n; i++) {
     const d = step[i] as number;
     constant += d * (system.leak * (now.p[i] as number) - (system.source[i] as number));
@@ -51,8 +54,10 @@ function castRay(system: FlowSystem, work: Workspace): void {
   ray[2 * m + 2] = linear;
   for (let i = 0; i < active.length; i++) {
     const j = active[i] as number;
-    const a = ends[3 * j] as number, b = ends[3 * j + 1] as number;
-    const ca = law[WIDTH * j] as number, cb = law[WIDTH * j + 1] as number;
+    const a = ends[3 * j] as number,
+      b = ends[3 * j + 1] as number;
+    const ca = law[WIDTH * j] as number,
+      cb = law[WIDTH * j + 1] as number;
     ray[2 * i] = ca * (now.p[a] as number) + cb * (now.p[b] as number);
     ray[2 * i + 1] = ca * (step[a] as number) + cb * (step[b] as number);
   }

@@ -11,9 +11,19 @@ export type FlowResult =
   /** The data contradict each other; no steady state can meet them all. */
   | { readonly status: 'infeasible'; readonly contradictions: readonly Contradiction[]; readonly words: string }
   /** A pressure or a speed would rise without limit. */
-  | { readonly status: 'unbounded'; readonly cause: UnboundedCause; readonly names: readonly string[]; readonly words: string }
+  | {
+      readonly status: 'unbounded';
+      readonly cause: UnboundedCause;
+      readonly names: readonly string[];
+      readonly words: string;
+    }
   /** A steady state may exist, but was not found within the budget. */
-  | { readonly status: 'not converged'; readonly cancelled: boolean; readonly certificate: Certificate; readonly words: string };
+  | {
+      readonly status: 'not converged';
+      readonly cancelled: boolean;
+      readonly certificate: Certificate;
+      readonly words: string;
+    };
 
 export type UnboundedCause = 'dead-headed pump' | 'locked loads' | 'free fall';
 
@@ -93,12 +103,21 @@ export function describe(solver: FlowSolver, solution: Solution): FlowResult {
   const { problem, contradictions } = solver.system;
   switch (solution.status) {
     case 'infeasible':
-      return { status: 'infeasible', contradictions, words: contradictions.map((c) => `${c.where}: ${c.what}`).join(' ') };
+      return {
+        status: 'infeasible',
+        contradictions,
+        words: contradictions.map((c) => `${c.where}: ${c.what}`).join(' '),
+      };
     case 'unbounded':
       return unbounded(solver, solution);
     case 'not converged': {
       const why = solution.cancelled ? 'The calculation was stopped before' : 'The calculation ended before';
-      return { status: 'not converged', cancelled: solution.cancelled, certificate: solver.certificate(), words: `${why} a steady state was found.` };
+      return {
+        status: 'not converged',
+        cancelled: solution.cancelled,
+        certificate: solver.certificate(),
+        words: `${why} a steady state was found.`,
+      };
     }
     case 'solved':
       return solved(solver, solution, problem);
@@ -115,15 +134,35 @@ function unbounded(solver: FlowSolver, { pressures, throughputs }: Solution): Fl
     if (pumps.length > 0) {
       const names = pumps.map((pump) => problem.lines[pump.line] as string);
       const say = pumps.map((pump, i) => `${pump.id} pumps into line ${names[i] ?? ''}`).join(', ');
-      return { status: 'unbounded', cause: 'dead-headed pump', names, words: `${say}, which has no way out: its pressure would rise until something bursts.` };
+      return {
+        status: 'unbounded',
+        cause: 'dead-headed pump',
+        names,
+        words: `${say}, which has no way out: its pressure would rise until something bursts.`,
+      };
     }
     const names = problem.lines.filter((_, i) => high(i));
-    return { status: 'unbounded', cause: 'locked loads', names, words: `Loads lock against each other over ${names.join(', ')}: no pressure there holds them.` };
+    return {
+      status: 'unbounded',
+      cause: 'locked loads',
+      names,
+      words: `Loads lock against each other over ${names.join(', ')}: no pressure there holds them.`,
+    };
   }
   const names = problem.branches
-    .filter((b, j) => on[j] === 1 && isActuator(b) && Math.abs(throughputs[j] as number) >= (b.kind === 'motor' ? SANE.rotation : SANE.speed))
+    .filter(
+      (b, j) =>
+        on[j] === 1 &&
+        isActuator(b) &&
+        Math.abs(throughputs[j] as number) >= (b.kind === 'motor' ? SANE.rotation : SANE.speed),
+    )
     .map((b) => b.id);
-  return { status: 'unbounded', cause: 'free fall', names, words: `Nothing slows ${names.join(', ')} down: the load runs away with it.` };
+  return {
+    status: 'unbounded',
+    cause: 'free fall',
+    names,
+    words: `Nothing slows ${names.join(', ')} down: the load runs away with it.`,
+  };
 }
 
 const isActuator = (b: Branch): boolean => b.kind === 'cylinder' || b.kind === 'motor';
@@ -137,7 +176,10 @@ function solved(solver: FlowSolver, { pressures, throughputs }: Solution, proble
   });
   const branches: BranchState[] = [];
   const actuators: ActuatorState[] = [];
-  let loads = 0, stores = 0, useful = 0, lost = 0;
+  let loads = 0,
+    stores = 0,
+    useful = 0,
+    lost = 0;
   problem.branches.forEach((b, j) => {
     if (on[j] !== 1 || b.kind === 'compensator') return;
     const x = throughputs[j] as number;
@@ -157,7 +199,8 @@ function solved(solver: FlowSolver, { pressures, throughputs }: Solution, proble
     branches.push({ id: b.id, kind: b.kind, flow: x, drop: drive, lost: heat });
   });
   const pumps = problem.pumps.map((pump, i): PumpState => {
-    const back = pump.compensator !== undefined && on[pump.compensator] === 1 ? (throughputs[pump.compensator] as number) : 0;
+    const back =
+      pump.compensator !== undefined && on[pump.compensator] === 1 ? (throughputs[pump.compensator] as number) : 0;
     const delivered = (pumpFlow[i] as number) - back;
     return { id: pump.id, pressure: at(pump.line), delivered, power: at(pump.line) * delivered };
   });

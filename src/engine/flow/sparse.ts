@@ -142,7 +142,8 @@ export function solveSymmetric(plan: Plan, v: Float64Array, b: Float64Array): vo
     const k = order[step] as number;
     const end = start[step + 1] as number;
     let sum = 0;
-    for (let i = start[step] as number; i < end; i++) sum += (v[slot[i] as number] as number) * (b[line[i] as number] as number);
+    for (let i = start[step] as number; i < end; i++)
+      sum += (v[slot[i] as number] as number) * (b[line[i] as number] as number);
     b[k] = (b[k] as number) - sum / (v[k] as number);
   }
 }
@@ -195,7 +196,8 @@ export function solveGeneral(plan: Plan, v: Float64Array, b: Float64Array): void
     const k = order[step] as number;
     const end = start[step + 1] as number;
     let sum = 0;
-    for (let i = start[step] as number; i < end; i++) sum += (v[slot[i] as number] as number) * (b[line[i] as number] as number);
+    for (let i = start[step] as number; i < end; i++)
+      sum += (v[slot[i] as number] as number) * (b[line[i] as number] as number);
     b[k] = (b[k] as number) - sum / (v[k] as number);
   }
 }

@@ -4,7 +4,14 @@ import type { BranchKind } from './problem.ts';
 import type { FlowSolver } from './solver.ts';
 
 /** Losses that nobody chose: they may be anything small. A throttle or a setting is somebody's choice. */
-const LOSSES: ReadonlySet<BranchKind> = new Set(['path', 'check', 'flow control', 'pressure valve', 'cylinder', 'motor']);
+const LOSSES: ReadonlySet<BranchKind> = new Set([
+  'path',
+  'check',
+  'flow control',
+  'pressure valve',
+  'cylinder',
+  'motor',
+]);
 /** Flow that counts as motion: 0.01 L/min in m³/s. */
 const MOTION = 1e-5 / 60;
 const TRIALS = 3;
@@ -18,7 +25,9 @@ const TRIALS = 3;
 export function ties(solver: FlowSolver, warm: ArrayLike<number>): number[] {
   const { system } = solver;
   const { problem, law, active } = system;
-  const actuators = [...active].filter((j) => problem.branches[j]?.kind === 'cylinder' || problem.branches[j]?.kind === 'motor').sort((a, b) => a - b);
+  const actuators = [...active]
+    .filter((j) => problem.branches[j]?.kind === 'cylinder' || problem.branches[j]?.kind === 'motor')
+    .sort((a, b) => a - b);
   if (actuators.length === 0) return [];
   const start = Float64Array.from({ length: system.n }, (_, i) => warm[i] as number);
   const kept = law.slice();

@@ -64,7 +64,10 @@ test('meter-out throttle of 40 bar at 10 L/min', () => {
   near(s.bar('rod'), 141.9);
 });
 
-for (const [friction, rodSide] of [[0, 173.333], [100, 163.333]] as const) {
+for (const [friction, rodSide] of [
+  [0, 173.333],
+  [100, 163.333],
+] as const) {
   test(`needle shut on the rod side, friction ${friction} daN: intensified`, () => {
     const { b, p } = rig();
     const cap = b.line('cap');

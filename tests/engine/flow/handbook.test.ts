@@ -48,15 +48,28 @@ test('F2: regenerative extension', () => {
   // 7000 lb is the most: a little more and it sinks, with its own oil over relief too.
   expect(regen(7010 * LBF).actuator('C').speed).toBeLessThan(0);
   expect(regen(7010 * LBF).branch('relief').flow).toBeGreaterThan(20 * GPM);
-  const back = direct('retract', 20 * GPM, { areaA: area, areaB: area - rod, load: { resisting: 17990 * LBF } }, 1000 * PSI);
+  const back = direct(
+    'retract',
+    20 * GPM,
+    { areaA: area, areaB: area - rod, load: { resisting: 17990 * LBF } },
+    1000 * PSI,
+  );
   near(-back.actuator('C').speed / INCH, 4.28, 3);
-  const stalled = direct('retract', 20 * GPM, { areaA: area, areaB: area - rod, load: { resisting: 18010 * LBF } }, 1000 * PSI);
+  const stalled = direct(
+    'retract',
+    20 * GPM,
+    { areaA: area, areaB: area - rod, load: { resisting: 18010 * LBF } },
+    1000 * PSI,
+  );
   expect(Math.abs(stalled.actuator('C').speed)).toBeLessThan(1e-5);
 });
 
 // Published: Esposito, ex. 8-2, 8-3.
 test('F3: relief at 1000 psi, and unloaded at 25 psi', () => {
-  for (const [setting, lost] of [[1000, 11.7], [25, 0.29]] as const) {
+  for (const [setting, lost] of [
+    [1000, 11.7],
+    [25, 0.29],
+  ] as const) {
     const b = new FlowBuilder();
     const p = b.line('P');
     b.pumpFixed('pump', p, 20 * GPM);
@@ -152,7 +165,10 @@ test('F9: 50/36 cylinder, 30 L/min, 200 bar (law)', () => {
 });
 
 test('F10: sharp orifice of 1 mm² at 100 bar (law: q = Cd·A·√(2Δp/ρ))', () => {
-  for (const [cd, expected] of [[0.6, 5.46], [0.7, 6.37]] as const) {
+  for (const [cd, expected] of [
+    [0.6, 5.46],
+    [0.7, 6.37],
+  ] as const) {
     const b = new FlowBuilder();
     const p = b.line('P');
     b.pumpCompensated('pump', p, 50 * LPM, 100 * BAR, 1e-3 * BAR);
@@ -162,7 +178,11 @@ test('F10: sharp orifice of 1 mm² at 100 bar (law: q = Cd·A·√(2Δp/ρ))', (
 });
 
 test('F12: rod port blocked, cap at 200 bar (law: p_rod = (p·A + F_pull)/a)', () => {
-  for (const [bore, rod, pull, expected] of [[50, 36, 0, 415], [63, 45, 0, 408], [63, 45, 20e3, 539]] as const) {
+  for (const [bore, rod, pull, expected] of [
+    [50, 36, 0, 415],
+    [63, 45, 0, 408],
+    [63, 45, 20e3, 539],
+  ] as const) {
     const b = new FlowBuilder();
     const p = b.line('P');
     const blocked = b.line('rod');
@@ -203,8 +223,16 @@ test('F14: two 50 mm bores in parallel, 10 and 20 kN, relief 160 bar (law; the r
     b.pumpFixed('pump', p, 30 * LPM);
     b.relief('relief', p, TANK, 160 * BAR);
     const area = { areaA: circle(0.05), areaB: 0 };
-    b.cylinder('light', p, TANK, { ...area, load: { resisting: 10e3 }, ...(lightAtStop ? { at: 'out' as const } : {}) });
-    b.cylinder('heavy', p, TANK, { ...area, load: { resisting: 20e3 }, ...(heavyAtStop ? { at: 'out' as const } : {}) });
+    b.cylinder('light', p, TANK, {
+      ...area,
+      load: { resisting: 10e3 },
+      ...(lightAtStop ? { at: 'out' as const } : {}),
+    });
+    b.cylinder('heavy', p, TANK, {
+      ...area,
+      load: { resisting: 20e3 },
+      ...(heavyAtStop ? { at: 'out' as const } : {}),
+    });
     return solve(b.build());
   };
   const first = run(false);
@@ -220,7 +248,10 @@ test('F14: two 50 mm bores in parallel, 10 and 20 kN, relief 160 bar (law; the r
 });
 
 test('F16: 30 L/min at 200 and at 2 bar (law)', () => {
-  for (const [setting, kilowatt] of [[200, 10], [2, 0.1]] as const) {
+  for (const [setting, kilowatt] of [
+    [200, 10],
+    [2, 0.1],
+  ] as const) {
     const b = new FlowBuilder();
     const p = b.line('P');
     b.pumpFixed('pump', p, 30 * LPM);

@@ -31,7 +31,9 @@ test(`${COUNT} linearised circuits agree with a general QP solver`, async () => 
       const area = Math.max(Math.abs(b.ca), Math.abs(b.cb));
       const ours = ((throughputs[j] as number) * area) / LPM;
       const theirs = value(`f${j}`) - value(`b${j}`);
-      expect(Math.abs(ours - theirs), `circuit ${seed}, ${b.id}: ${ours} against ${theirs} L/min`).toBeLessThan(0.01 + 1e-4 * Math.abs(ours));
+      expect(Math.abs(ours - theirs), `circuit ${seed}, ${b.id}: ${ours} against ${theirs} L/min`).toBeLessThan(
+        0.01 + 1e-4 * Math.abs(ours),
+      );
     });
   }
   expect(compared).toBeGreaterThanOrEqual(COUNT);
@@ -57,7 +59,8 @@ test('turbulent losses: no line can better its balance by moving its own pressur
     const p = [...new FlowSolver(problem).solve().pressures].slice(0, problem.lines.length);
     for (let line = 0; line < p.length; line++) {
       const at = p[line] as number;
-      let low = at - 100 * BAR, high = at + 100 * BAR;
+      let low = at - 100 * BAR,
+        high = at + 100 * BAR;
       for (let i = 0; i < 60; i++) {
         p[line] = 0.5 * (low + high);
         if (outflow(problem, p, line) > 0) high = p[line] as number;

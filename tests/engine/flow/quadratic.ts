@@ -12,7 +12,14 @@ export function contentProgram(problem: FlowProblem): string {
   const squares: string[] = [];
   const bounds: string[] = [];
   const rows: string[][] = problem.lines.map(() => []);
-  const add = (name: string, cost: number, square: number, least: number, most: number, ends: readonly (readonly [number, number])[]): void => {
+  const add = (
+    name: string,
+    cost: number,
+    square: number,
+    least: number,
+    most: number,
+    ends: readonly (readonly [number, number])[],
+  ): void => {
     linear.push(`${signed(cost)} ${name}`);
     squares.push(`${signed(square)} ${name} ^2`);
     bounds.push(least === -Infinity ? ` ${name} free` : ` ${least} <= ${name} <= ${most === Infinity ? '1e30' : most}`);
@@ -23,7 +30,10 @@ export function contentProgram(problem: FlowProblem): string {
     const area = Math.max(Math.abs(b.ca), Math.abs(b.cb));
     const force = BAR * area;
     const r = (b.r * LPM) / (BAR * area * area);
-    const end = (sign: number): [number, number][] => [[b.a, (sign * b.ca) / area], [b.b, (sign * b.cb) / area]];
+    const end = (sign: number): [number, number][] => [
+      [b.a, (sign * b.ca) / area],
+      [b.b, (sign * b.cb) / area],
+    ];
     if (b.hi > 0) add(`f${j}`, b.forward / force, r, 0, (b.hi * area) / LPM, end(1));
     if (b.lo < 0) add(`b${j}`, -b.backward / force, r, 0, (-b.lo * area) / LPM, end(-1));
   });
@@ -31,7 +41,9 @@ export function contentProgram(problem: FlowProblem): string {
     add(`q${i}`, 0, LPM / BAR / problem.leak, -Infinity, Infinity, [[i, 1]]);
     add(`v${i}`, 0, (NEAR_IDEAL.void * LPM) / BAR, 0, Infinity, [[i, -1]]);
   });
-  const pumped = problem.lines.map((_, i) => problem.pumps.reduce((sum, pump) => sum + (pump.line === i ? pump.flow / LPM : 0), 0));
+  const pumped = problem.lines.map((_, i) =>
+    problem.pumps.reduce((sum, pump) => sum + (pump.line === i ? pump.flow / LPM : 0), 0),
+  );
   return [
     'Minimize',
     ` obj: ${linear.join('\n ')}`,

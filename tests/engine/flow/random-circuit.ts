@@ -40,7 +40,9 @@ export function randomCircuit(seed: number, recipe: Recipe): FlowProblem {
   const n = recipe.lines;
   for (let i = 0; i < n; i++) b.line(`L${i}`);
   const loss = (): { flow?: number; drop?: number; laminar?: number } =>
-    linear ? { laminar: (between(0.02, 0.3) * BAR) / LPM } : { flow: between(20, 80) * LPM, drop: between(0.5, 5) * BAR };
+    linear
+      ? { laminar: (between(0.02, 0.3) * BAR) / LPM }
+      : { flow: between(20, 80) * LPM, drop: between(0.5, 5) * BAR };
   const tight = (): { flow?: number; drop?: number; laminar?: number } =>
     linear ? { laminar: (between(1, 20) * BAR) / LPM } : { flow: between(2, 20) * LPM, drop: between(20, 60) * BAR };
   const setting = between(100, 250) * BAR;
@@ -70,9 +72,15 @@ export function randomCircuit(seed: number, recipe: Recipe): FlowProblem {
     const pilot = pick(n);
     if (kind === 0) b.sequenceValve(id, from, to, data);
     else if (kind === 1) b.unloadingValve(id, from, to, pilot, data);
-    else if (kind === 2) b.counterbalance(id, to, from, pilot, between(2, 8), { ...data, setting: between(80, 200) * BAR });
+    else if (kind === 2)
+      b.counterbalance(id, to, from, pilot, between(2, 8), { ...data, setting: between(80, 200) * BAR });
     else if (kind === 3) b.reducingValve(id, from, to, data);
-    else b.lockCheck(id, from, to, pilot, between(2, 5), { cracking: between(0, 2) * BAR, gradient: gradient * 0.5, loss: loss() });
+    else
+      b.lockCheck(id, from, to, pilot, between(2, 5), {
+        cracking: between(0, 2) * BAR,
+        gradient: gradient * 0.5,
+        loss: loss(),
+      });
   };
   for (let i = 1; i < n; i++) join(`J${i}`, pick(Math.min(i, 1 + pick(i))), i);
   const extra = pick(1 + Math.floor(n / 4));
@@ -95,10 +103,21 @@ export function randomCircuit(seed: number, recipe: Recipe): FlowProblem {
     const force = areaA * between(0, 120) * BAR;
     const sense = pick(3);
     const friction = roll() < 0.5 ? 0 : areaA * between(0, 5) * BAR;
-    const load = sense === 0 ? { resisting: force, friction } : sense === 1 ? { pressing: force, friction } : { pressing: -force, friction };
+    const load =
+      sense === 0
+        ? { resisting: force, friction }
+        : sense === 1
+          ? { pressing: force, friction }
+          : { pressing: -force, friction };
     const place = pick(8);
     const at = place === 0 ? ({ at: 'in' } as const) : place === 1 ? ({ at: 'out' } as const) : {};
-    b.cylinder(`C${c}`, from, to, { areaA, areaB, load, ...at, ...(linear ? { drag: areaA * between(0.5, 5) * BAR } : { ports: loss() }) });
+    b.cylinder(`C${c}`, from, to, {
+      areaA,
+      areaB,
+      load,
+      ...at,
+      ...(linear ? { drag: areaA * between(0.5, 5) * BAR } : { ports: loss() }),
+    });
   }
   return b.build();
 }

@@ -4,7 +4,11 @@ import { FlowSolver } from '../../../src/engine/flow/solver.ts';
 import { describe as tell } from '../../../src/engine/flow/result.ts';
 import { randomCircuit } from './random-circuit.ts';
 
-const recipe = fc.record({ seed: fc.integer({ min: 0, max: 2 ** 31 - 1 }), lines: fc.integer({ min: 3, max: 30 }), cylinders: fc.integer({ min: 1, max: 6 }) });
+const recipe = fc.record({
+  seed: fc.integer({ min: 0, max: 2 ** 31 - 1 }),
+  lines: fc.integer({ min: 3, max: 30 }),
+  cylinders: fc.integer({ min: 1, max: 6 }),
+});
 
 // The runs are seeded: the same circuits every time.
 const fixed = { seed: 20, numRuns: 1500 };
@@ -60,7 +64,9 @@ test('the same problem gives the same bits, and a warm start the same state', ()
     const warm = other.solve({ warm: start });
     expect(warm.status).toBe(one.solve().status);
     // 10 Pa or one part in a million: a cut-off line hangs on its leak alone.
-    warm.pressures.forEach((p, i) => expect(Math.abs(p - (cold[i] as number))).toBeLessThan(10 + 1e-6 * Math.abs(cold[i] as number)));
+    warm.pressures.forEach((p, i) =>
+      expect(Math.abs(p - (cold[i] as number))).toBeLessThan(10 + 1e-6 * Math.abs(cold[i] as number)),
+    );
   }
 });
 
@@ -68,7 +74,9 @@ test('switching branches in place gives what a fresh problem gives', () => {
   for (let seed = 300; seed < 400; seed++) {
     const problem = randomCircuit(seed, { lines: 12, cylinders: 2 });
     const solver = new FlowSolver(problem);
-    const toggled = problem.branches.map((b, j) => ((b.kind === 'path' || b.kind === 'throttle') && j % 3 === 0 ? { ...b, on: !b.on } : b));
+    const toggled = problem.branches.map((b, j) =>
+      (b.kind === 'path' || b.kind === 'throttle') && j % 3 === 0 ? { ...b, on: !b.on } : b,
+    );
     toggled.forEach((b, j) => solver.setOn(j, b.on));
     const fresh = new FlowSolver({ ...problem, branches: toggled }).solve();
     const here = solver.solve();
@@ -78,9 +86,12 @@ test('switching branches in place gives what a fresh problem gives', () => {
 });
 
 test('random circuits with pilot-sensed valves: nearly all are solved, and all that are carry the evidence', () => {
-  let solved = 0, asked = 0;
+  let solved = 0,
+    asked = 0;
   for (let seed = 0; seed < 400; seed++) {
-    const solver = new FlowSolver(randomCircuit(90_000 + seed, { lines: 4 + (seed % 20), cylinders: 1 + (seed % 4), piloted: 1 + (seed % 4) }));
+    const solver = new FlowSolver(
+      randomCircuit(90_000 + seed, { lines: 4 + (seed % 20), cylinders: 1 + (seed % 4), piloted: 1 + (seed % 4) }),
+    );
     const { status } = solver.solve();
     if (status === 'unbounded') continue;
     asked++;

@@ -17,12 +17,20 @@ function lock(side: 'cap' | 'rod', ratio: number, pilot: number): number {
   b.lockCheck('lock', valve, held, fed, ratio, { loss: open });
   b.throttle('return', valve, TANK, { flow: 1000 * LPM, drop: 0.001 * BAR });
   const force = side === 'cap' ? 20e3 : -20e3;
-  b.cylinder('C', side === 'cap' ? held : fed, side === 'cap' ? fed : held, { areaA, areaB, load: { pressing: force } });
+  b.cylinder('C', side === 'cap' ? held : fed, side === 'cap' ? fed : held, {
+    areaA,
+    areaB,
+    load: { pressing: force },
+  });
   return solve(b.build()).lpm('lock');
 }
 
 // F18 (law): opens at F/(R·A − a).
-for (const [ratio, opens] of [[2, 42.5], [3, 25.6], [4, 18.3]] as const) {
+for (const [ratio, opens] of [
+  [2, 42.5],
+  [3, 25.6],
+  [4, 18.3],
+] as const) {
   test(`F18: lock check ${ratio}:1 on the cap side opens at ${opens} bar`, () => {
     expect(Math.abs(lock('cap', ratio, opens * 0.99))).toBeLessThan(1e-4);
     expect(lock('cap', ratio, opens * 1.01)).toBeGreaterThan(0.1);
@@ -32,7 +40,10 @@ for (const [ratio, opens] of [[2, 42.5], [3, 25.6], [4, 18.3]] as const) {
 // G14 (law; published as trade advice that R must be above the area ratio).
 test('G14: lock check on the rod side with a pulling load', () => {
   expect(Math.abs(lock('rod', 2, 1000))).toBeLessThan(1e-3);
-  for (const [ratio, opens] of [[3, 136.7], [4, 66.9]] as const) {
+  for (const [ratio, opens] of [
+    [3, 136.7],
+    [4, 66.9],
+  ] as const) {
     expect(Math.abs(lock('rod', ratio, opens * 0.99))).toBeLessThan(1e-3);
     expect(lock('rod', ratio, opens * 1.01)).toBeGreaterThan(0.1);
   }
@@ -78,7 +89,7 @@ test('G15: counterbalance holds at centre, needs pressure down, is free up', () 
   near(centre.bar('cap'), 60);
   near(centre.bar('P'), 5.004);
   const down = vertical('down');
-  near(down.actuator('C').speed, -40 * LPM / (10 * CM2));
+  near(down.actuator('C').speed, (-40 * LPM) / (10 * CM2));
   expect(down.bar('rod')).toBeGreaterThan(5);
   // Law of the valve: cap + 4·rod = setting + override·flow.
   near(down.bar('cap') + 4 * down.bar('rod'), 100 + (2 / 60) * 80, 5);
@@ -162,8 +173,18 @@ function clampAndDrill(way: 'out' | 'back', a: 'in' | 'out' | undefined, bAt: 'i
   b.openPath('feed', p, side.first);
   b.sequenceValve('sequence', p, side.second, valve);
   side.free.forEach((line, i) => b.openPath(`return ${i}`, line, TANK));
-  b.cylinder('A', ac, ar, { areaA: 19.635 * CM2, areaB: 10.014 * CM2, load: { resisting: 300 * DAN, friction: 20 * DAN }, ...(a ? { at: a } : {}) });
-  b.cylinder('B', bc, br, { areaA: 12.566 * CM2, areaB: 6.409 * CM2, load: { resisting: 200 * DAN, friction: 15 * DAN }, ...(bAt ? { at: bAt } : {}) });
+  b.cylinder('A', ac, ar, {
+    areaA: 19.635 * CM2,
+    areaB: 10.014 * CM2,
+    load: { resisting: 300 * DAN, friction: 20 * DAN },
+    ...(a ? { at: a } : {}),
+  });
+  b.cylinder('B', bc, br, {
+    areaA: 12.566 * CM2,
+    areaB: 6.409 * CM2,
+    load: { resisting: 200 * DAN, friction: 15 * DAN },
+    ...(bAt ? { at: bAt } : {}),
+  });
   return solve(b.build());
 }
 
@@ -195,6 +216,11 @@ test('reducing valve, unloading valve and relief with a reference keep their law
   const { b: d, p: vented } = rig();
   const y = d.line('Y');
   d.accumulator('remote', y, 20 * BAR);
-  d.sequenceValve('remote-controlled', vented, TANK, { setting: 50 * BAR, gradient: (0.1 * BAR) / LPM, reference: y, loss: { laminar: 1e6 } });
+  d.sequenceValve('remote-controlled', vented, TANK, {
+    setting: 50 * BAR,
+    gradient: (0.1 * BAR) / LPM,
+    reference: y,
+    loss: { laminar: 1e6 },
+  });
   near(solve(d.build()).bar('P'), 74);
 });
