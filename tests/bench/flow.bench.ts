@@ -29,16 +29,22 @@ export async function run(print: Print): Promise<void> {
   print('Pressure layer: steady solves of random circuits, one core');
   for (const lines of [10, 20, 40]) {
     const cylinders = Math.round(lines / 6);
-    const solvers = Array.from({ length: 100 }, (_, i) => new FlowSolver(randomCircuit(1000 + i, { lines, cylinders })));
+    const solvers = Array.from(
+      { length: 100 },
+      (_, i) => new FlowSolver(randomCircuit(1000 + i, { lines, cylinders })),
+    );
     let iterations = 0;
     for (const solver of solvers) iterations += solver.solve().iterations;
     const cold = rate(solvers.length, () => solvers.forEach((solver) => solver.solve()));
     // Warm: one path of the circuit opens or closes, as between neighbouring rows of a table.
-    let warmIterations = 0, warmSolves = 0;
+    let warmIterations = 0,
+      warmSolves = 0;
     const last = solvers.map((solver) => solver.solve().pressures.slice());
     const roll = dice(lines);
     const flips = solvers.map((solver) => {
-      const paths = solver.system.problem.branches.flatMap((b, j) => (b.kind === 'path' || b.kind === 'throttle' ? [j] : []));
+      const paths = solver.system.problem.branches.flatMap((b, j) =>
+        b.kind === 'path' || b.kind === 'throttle' ? [j] : [],
+      );
       return paths[Math.floor(roll() * paths.length)] ?? 0;
     });
     const warm = rate(2 * solvers.length, () => {
@@ -58,7 +64,11 @@ export async function run(print: Print): Promise<void> {
     const programs = linear.map(contentProgram);
     const linearSolvers = linear.map((problem) => new FlowSolver(problem));
     const own = rate(linear.length, () => linearSolvers.forEach((solver) => solver.solve()), 0.5);
-    const general = rate(linear.length, () => programs.forEach((text) => highs.solve(text, { output_flag: false })), 0.5);
+    const general = rate(
+      linear.length,
+      () => programs.forEach((text) => highs.solve(text, { output_flag: false })),
+      0.5,
+    );
     print(
       `  ${lines} lines: cold ${Math.round(cold)} /s (${(iterations / solvers.length).toFixed(1)} iterations), ` +
         `warm ${Math.round(warm)} /s (${(warmIterations / warmSolves).toFixed(1)}); ` +
@@ -70,10 +80,14 @@ export async function run(print: Print): Promise<void> {
 }
 
 function share(print: Print, name: string, count: number, piloted: 0 | 1): void {
-  let solved = 0, residual = 0, power = 0;
+  let solved = 0,
+    residual = 0,
+    power = 0;
   const times: number[] = [];
   for (let seed = 0; seed < count; seed++) {
-    const solver = new FlowSolver(randomCircuit(seed, { lines: 3 + (seed % 28), cylinders: 1 + (seed % 6), piloted: piloted * (1 + (seed % 4)) }));
+    const solver = new FlowSolver(
+      randomCircuit(seed, { lines: 3 + (seed % 28), cylinders: 1 + (seed % 6), piloted: piloted * (1 + (seed % 4)) }),
+    );
     const from = performance.now();
     const { status } = solver.solve();
     times.push(performance.now() - from);
