@@ -2,6 +2,8 @@ import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
 import { explain } from '../engine/table/explain.ts';
+import { PressureSolver, rowNumbers } from '../engine/table/resolve.ts';
+import type { RowNumbers } from '../engine/table/resolve.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import { tabulate as tabulateNetwork } from '../engine/table/tabulate.ts';
@@ -44,6 +46,13 @@ export function explainRow(circuit: Circuit, conditions: Conditions, row: number
   const positions = positionsOf(net, row);
   const notes = answer.actuators.flatMap((actuator) => actuator.notes.map((note) => `${actuator.label}: ${note}`));
   return { row, positions, ...answer, notes };
+}
+
+/** Pressures, flows and speeds of rows (0-based), in the order asked; SI. */
+export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readonly number[]): RowNumbers[] {
+  const net = networkOf(circuit);
+  const solver = new PressureSolver(net, pathConditions(net, conditions));
+  return rows.map((row) => rowNumbers(solver, row));
 }
 
 /** 3¹⁴ rows: what a table held in memory can list. */

@@ -1,4 +1,5 @@
 import type { Circuit } from '../circuit/model.ts';
+import type { RowNumbers } from '../engine/table/resolve.ts';
 import type { ActuatorVerdict, PumpVerdict, TrapReason } from '../engine/table/words.ts';
 
 /** What holds for the whole table. */
@@ -55,6 +56,9 @@ export interface Explanation {
   readonly pumps: readonly PumpReason[];
   readonly trapped: readonly TrappedLine[];
   readonly notes: readonly string[];
+  /** Pressures, flows and speeds of the row; SI. */
+  readonly numbers: RowNumbers;
 }
 
+export type { RowNumbers } from '../engine/table/resolve.ts';
 export type { Finding } from '../findings/finding.ts';

@@ -8,6 +8,7 @@ import type {
   NetInput,
   NetOpenPort,
   NetPath,
+  NetPressureValve,
   NetPump,
   NetRelief,
   Network,
@@ -23,6 +24,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   const paths: NetPath[] = [];
   const pumps: NetPump[] = [];
   const reliefs: NetRelief[] = [];
+  const valves: NetPressureValve[] = [];
   const accumulators: NetAccumulator[] = [];
   const actuators: NetActuator[] = [];
   const openPorts: NetOpenPort[] = [];
@@ -99,7 +101,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   });
 
   const parts = circuit.parts.map((part: Part) => ({ id: part.id, label: labelOf(part), kind: part.kind }));
-  return { lines, shown, inputs, paths, pumps, reliefs, accumulators, actuators, parts, openPorts, lineOf };
+  return { lines, shown, inputs, paths, pumps, reliefs, valves, accumulators, actuators, parts, openPorts, lineOf };
 }
 
 function compileActuator(element: ActuatorElement, part: number, at: (port: string) => number): NetActuator {

@@ -10,6 +10,7 @@ export interface Network {
   readonly paths: readonly NetPath[];
   readonly pumps: readonly NetPump[];
   readonly reliefs: readonly NetRelief[];
+  readonly valves: readonly NetPressureValve[];
   readonly accumulators: readonly NetAccumulator[];
   readonly actuators: readonly NetActuator[];
   readonly parts: readonly NetPart[];
@@ -84,6 +85,23 @@ export interface NetRelief {
   readonly setting: number;
   /** Pa for each m³/s over it; 0 = not given. */
   readonly override: number;
+}
+
+/** A valve that pressures open or close: sequence, unloading, counterbalance, reducing. */
+export interface NetPressureValve {
+  readonly part: number;
+  readonly from: number;
+  readonly to: number;
+  /** `closes`: open until its outlet reaches the setting; the others are shut until Σ factor·p passes it. */
+  readonly duty: 'sequence' | 'unloading' | 'counterbalance' | 'closes';
+  /** Lines whose pressures act on it, with the area ratio of each; the reference (drain, spring chamber) counts negative. */
+  readonly signals: readonly { readonly line: number; readonly factor: number }[];
+  /** Pa. */
+  readonly setting: number;
+  /** Pa for each m³/s of opening; 0 = not given. */
+  readonly override: number;
+  /** m³/s at Pa of drop when fully open. */
+  readonly rated?: { readonly flow: number; readonly drop: number };
 }
 
 export interface NetAccumulator {

@@ -1,5 +1,5 @@
 /** Answers one question after another on its own thread. */
-import { explainRow, findings, tabulate } from '../analysis/analyse.ts';
+import { explainRow, findings, numbersOf, tabulate } from '../analysis/analyse.ts';
 import type { Conditions } from '../analysis/results.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
@@ -9,15 +9,23 @@ const scope = self as unknown as { postMessage(reply: Reply): void; onmessage: (
 
 scope.onmessage = ({ data: question }) => {
   try {
-    scope.postMessage(question.ask === 'table' ? answerTable(question.id, question.circuit, question.conditions) : {
-      id: question.id,
-      say: 'explanation',
-      explanation: explainRow(question.circuit, question.conditions, question.row),
-    });
+    scope.postMessage(answer(question));
   } catch (error) {
     scope.postMessage({ id: question.id, say: 'failed', message: error instanceof Error ? error.message : String(error) });
   }
 };
+
+function answer(question: Question): Reply {
+  const { id, circuit, conditions } = question;
+  switch (question.ask) {
+    case 'table':
+      return answerTable(id, circuit, conditions);
+    case 'explain':
+      return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row) };
+    case 'numbers':
+      return { id, say: 'numbers', numbers: numbersOf(circuit, conditions, question.rows) };
+  }
+}
 
 function answerTable(id: number, circuit: Circuit, conditions: Conditions): Reply {
   const began = performance.now();

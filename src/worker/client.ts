@@ -1,12 +1,12 @@
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
-import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
+import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import { Cancelled } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { Question, Reply } from './messages.ts';
 
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
-export type { ActuatorReason, PumpReason, ReasonStep, TrappedLine } from '../analysis/results.ts';
+export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
@@ -28,6 +28,8 @@ export interface Job<T> {
 export interface Analyst {
   table(circuit: Circuit, conditions: Conditions, progress: (share: number) => void): Job<TableAnswer>;
   explain(circuit: Circuit, conditions: Conditions, row: number): Job<Explanation>;
+  /** Pressures, flows and speeds of these rows, in this order; SI. */
+  numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
   close(): void;
 }
 
@@ -43,6 +45,10 @@ export function createAnalyst(): Analyst {
     explain: (circuit, conditions, row) =>
       words.ask({ ask: 'explain', circuit, conditions, row }, () => {}, (reply) =>
         reply.say === 'explanation' ? reply.explanation : undefined,
+      ),
+    numbers: (circuit, conditions, rows) =>
+      words.ask({ ask: 'numbers', circuit, conditions, rows }, () => {}, (reply) =>
+        reply.say === 'numbers' ? reply.numbers : undefined,
       ),
     close: () => {
       tables.stop();

@@ -1,13 +1,15 @@
-import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
+import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 
 export type Question =
   | { readonly id: number; readonly ask: 'table'; readonly circuit: Circuit; readonly conditions: Conditions }
+  | { readonly id: number; readonly ask: 'numbers'; readonly circuit: Circuit; readonly conditions: Conditions; readonly rows: readonly number[] }
   | { readonly id: number; readonly ask: 'explain'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number };
 
 export type Reply =
   | { readonly id: number; readonly say: 'progress'; readonly share: number }
   | { readonly id: number; readonly say: 'table'; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
+  | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };

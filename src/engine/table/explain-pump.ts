@@ -1,19 +1,10 @@
 import type { NetPump } from '../../network/network.ts';
+import type { PumpAnswer } from './answers.ts';
 import { findWay } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
 import { enclosing, lineName, partId, partLabel, step, waySteps } from './reasons.ts';
-import type { Step } from './reasons.ts';
 import { PUMP_VERDICTS } from './words.ts';
-import type { PumpVerdict } from './words.ts';
-
-export interface PumpAnswer {
-  readonly part: string;
-  readonly label: string;
-  readonly verdict: PumpVerdict;
-  readonly rests?: { readonly why: string; readonly candidates: readonly PumpVerdict[] };
-  readonly steps: readonly Step[];
-}
 
 export function explainPump(state: OneState, index: number, pump: NetPump): PumpAnswer {
   const { net } = state;

@@ -1,19 +1,12 @@
+import type { TrapAnswer } from './answers.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { enclosing, partLabel } from './reasons.ts';
-import type { Step } from './reasons.ts';
 import { strides } from './strides.ts';
 import { standingReasons } from './trapped.ts';
 import { LINE_CLASSES } from './words.ts';
 import type { TrapReason } from './words.ts';
-
-export interface TrapAnswer {
-  readonly line: number;
-  readonly name: string;
-  readonly reasons: readonly { readonly kind: TrapReason; readonly text: string }[];
-  readonly steps: readonly Step[];
-}
 
 const CUT_OFF = LINE_CLASSES.indexOf('cut off');
 const FED = LINE_CLASSES.indexOf('fed');

@@ -6,40 +6,37 @@ import type { RestReason } from '../paths/motion-bits.ts';
 import { sourceLines } from '../paths/reach.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome, motionWords } from './actuator-outcomes.ts';
+import { explainPressures } from './explain-pressures.ts';
 import { explainPump } from './explain-pump.ts';
-import type { PumpAnswer } from './explain-pump.ts';
+import type { ActuatorAnswer } from './answers.ts';
+import type { PumpAnswer } from './answers.ts';
 import { explainTrapped } from './explain-trapped.ts';
-import type { TrapAnswer } from './explain-trapped.ts';
+import type { TrapAnswer } from './answers.ts';
 import { findWay, solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { enclosing, lineName, partId, partLabel, sideName, step, waySteps } from './reasons.ts';
 import type { Step } from './reasons.ts';
+import type { RowNumbers } from './resolve.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';
 import type { ActuatorVerdict } from './words.ts';
-
-export interface ActuatorAnswer {
-  readonly part: string;
-  readonly label: string;
-  readonly verdict: ActuatorVerdict;
-  readonly notes: readonly string[];
-  readonly rests?: { readonly why: string; readonly candidates: readonly ActuatorVerdict[] };
-  readonly steps: readonly Step[];
-}
 
 export interface RowAnswer {
   readonly actuators: readonly ActuatorAnswer[];
   readonly pumps: readonly PumpAnswer[];
   readonly trapped: readonly TrapAnswer[];
+  readonly numbers: RowNumbers;
 }
 
 /** Everything one row says, in words, with the lines and parts to light for each link of the reason. */
 export function explain(net: Network, conditions: PathConditions, row: number): RowAnswer {
   const edges: EdgeSet = compileEdges(net);
   const state = solveOne(net, conditions, row, edges);
+  const pressures = explainPressures(state);
   return {
-    actuators: net.actuators.map((actuator, i) => explainActuator(state, i, actuator)),
-    pumps: net.pumps.map((pump, i) => explainPump(state, i, pump)),
+    actuators: net.actuators.map((actuator, i) => pressures.actuator(i, explainActuator(state, i, actuator))),
+    pumps: net.pumps.map((pump, i) => pressures.pump(i, explainPump(state, i, pump))),
     trapped: explainTrapped(state),
+    numbers: pressures.numbers,
   };
 }
 

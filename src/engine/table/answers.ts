@@ -1,0 +1,28 @@
+import type { Step } from './reasons.ts';
+import type { ActuatorVerdict, PumpVerdict, TrapReason } from './words.ts';
+
+/** What is said about one actuator, pump and line of a row. */
+export interface ActuatorAnswer {
+  readonly part: string;
+  readonly label: string;
+  readonly verdict: ActuatorVerdict;
+  readonly notes: readonly string[];
+  readonly rests?: { readonly why: string; readonly candidates: readonly ActuatorVerdict[] };
+  readonly steps: readonly Step[];
+}
+
+export interface PumpAnswer {
+  readonly part: string;
+  readonly label: string;
+  readonly verdict: PumpVerdict;
+  readonly rests?: { readonly why: string; readonly candidates: readonly PumpVerdict[] };
+  readonly steps: readonly Step[];
+}
+
+export interface TrapAnswer {
+  readonly line: number;
+  readonly name: string;
+  readonly reasons: readonly { readonly kind: TrapReason; readonly text: string }[];
+  readonly steps: readonly Step[];
+}
+

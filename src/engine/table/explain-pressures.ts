@@ -1,0 +1,100 @@
+import type { NetActuator } from '../../network/network.ts';
+import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
+import type { OneState } from './one-state.ts';
+import { lineName, partLabel, sideName, step } from './reasons.ts';
+import type { Step } from './reasons.ts';
+import { actuatorByPressure, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
+import type { RowNumbers } from './resolve.ts';
+
+/** The pressure layer's part of an explanation: its verdicts in place of the open ones, and the figures behind them. */
+export interface PressureWords {
+  readonly actuator: (index: number, answer: ActuatorAnswer) => ActuatorAnswer;
+  readonly pump: (index: number, answer: PumpAnswer) => PumpAnswer;
+  readonly numbers: RowNumbers;
+}
+
+export function explainPressures(state: OneState): PressureWords {
+  const solver = new PressureSolver(state.net, state.conditions);
+  const rivals = state.net.actuators.some((_, i) => state.block.motion.rests[i]?.some((plane) => state.is(plane)));
+  const answer = solver.solve(state.row, rivals);
+  const numbers = rowNumbers(solver, state.row, answer);
+  const bits = { block: state.block, bit: state.row & 31 };
+  const hunts = state.is(state.block.hunts);
+
+  const actuator = (index: number, said: ActuatorAnswer): ActuatorAnswer => {
+    const spec = state.net.actuators[index];
+    if (!spec || hunts) return said;
+    if (numbers.status !== 'solved') return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
+    const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
+    if (!said.rests && !moves) return said;
+    const found = actuatorByPressure(index, solver, bits, answer);
+    if (!found) return said;
+    const { rests, ...rest } = said;
+    const notes = found.void && !said.notes.includes('void forms') ? [...said.notes, 'void forms'] : said.notes;
+    const why = rests ? [step(rests.why)] : [];
+    const against = found.verdict.includes('by load') || found.verdict.includes('by spring') ? [overcome(state, spec, said.part)] : [];
+    return { ...rest, verdict: found.verdict, notes, steps: [...said.steps, ...why, ...against, figures(state, index, spec, numbers, found.verdict)] };
+  };
+
+  const pump = (index: number, said: PumpAnswer): PumpAnswer => {
+    if (hunts || (!said.rests && said.verdict !== 'working')) return said;
+    const found = pumpByPressure(index, solver, bits, answer);
+    if (!found) return said;
+    const { rests, steps, ...rest } = said;
+    const at = numbers.pumps[index];
+    const line = state.net.pumps[index]?.outlet ?? -1;
+    const text = `It stands at ${bar(at?.pressure ?? 0)} and delivers ${litres(at?.delivered ?? 0)}${over(numbers)}.`;
+    return { ...rest, verdict: found, steps: [...(rests ? [] : steps), step(text, [line], [said.part])] };
+  };
+  return { actuator, pump, numbers };
+}
+
+/** `Cap side 62 bar, rod side 3 bar: it takes 12 L/min and goes 85 mm/s.` */
+function figures(state: OneState, index: number, actuator: NetActuator, numbers: RowNumbers, verdict: string): Step {
+  const at = numbers.actuators[index];
+  const pressure = (line: number): string => bar(numbers.lines[line] ?? 0);
+  const sides = [
+    `${capital(sideName(state, actuator, 'a'))} ${pressure(actuator.a)}`,
+    ...(actuator.b < 0 ? [] : [`${sideName(state, actuator, 'b')} ${pressure(actuator.b)}`]),
+  ].join(', ');
+  const speed = Math.abs(at?.speed ?? 0);
+  const moving =
+    verdict === 'undetermined'
+      ? 'equal rivals, between which only the losses share the flow: the circuit leaves it open'
+      : verdict === 'stalled' || verdict === 'held'
+        ? standing(state, index, actuator, numbers)
+        : `${litres(at?.flow ?? 0)}, ${actuator.rotary ? `${round((speed * 60) / (2 * Math.PI))} rpm` : `${round(speed * 1000)} mm/s`}`;
+  const parts = [state.net.parts[actuator.part]?.id ?? ''];
+  return step(`${sides}: ${moving}. From entered and assumed values.`, [actuator.a, actuator.b].filter((line) => line >= 0), parts);
+}
+
+/** The push is stronger than what is fed against it. */
+function overcome(state: OneState, actuator: NetActuator, part: string): Step {
+  const inward = actuator.push.way === 'in';
+  const line = inward ? actuator.a : actuator.b;
+  const what = actuator.push.by === 'spring' ? 'spring' : 'load';
+  return step(`The ${what} is stronger than the pressure that stands against it, and pushes its oil back out into ${lineName(state, line)}.`, [line], [part]);
+}
+
+/** Why it does not move: what it would take, and who takes the flow instead. */
+function standing(state: OneState, index: number, actuator: NetActuator, numbers: RowNumbers): string {
+  const { pressing, resisting, spring } = actuator.forces;
+  const load = Math.abs(pressing) + resisting + Math.abs(spring);
+  const others = numbers.actuators.flatMap((other, i) =>
+    i !== index && other.flow > 1e-7 && state.net.actuators[i] ? [partLabel(state, state.net.actuators[i].part)] : [],
+  );
+  const spilled = numbers.reliefs.filter((relief) => relief.flow > 1e-7).map((relief) => relief.label);
+  const force = actuator.rotary ? `${round(load)} N·m` : `${round(load / 1000)} kN`;
+  const why = spilled.length > 0 ? `${spilled.join(' and ')} ${spilled.length > 1 ? 'let' : 'lets'} the flow out before that` : others.length > 0 ? `${others.join(' and ')} ${others.length > 1 ? 'take' : 'takes'} the flow first, at less pressure` : 'the pump stands below that';
+  return load > 0 ? `too little for its load of ${force}; ${why}` : `nothing moves it; ${why}`;
+}
+
+const over = (numbers: RowNumbers): string => {
+  const open = numbers.reliefs.filter((relief) => relief.flow > 1e-7);
+  return open.length === 0 ? '' : `, of which ${open.map((relief) => `${litres(relief.flow)} goes over ${relief.label}`).join(' and ')}`;
+};
+
+const round = (value: number): string => (Math.abs(value) >= 100 ? value.toFixed(0) : Number(value.toPrecision(3)).toString());
+const bar = (pascal: number): string => `${round(pascal / 1e5)} bar`;
+const litres = (flow: number): string => `${round(flow * 60_000)} L/min`;
+const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
