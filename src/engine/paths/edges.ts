@@ -17,6 +17,9 @@ export interface EdgeSet {
   /** The same without throttled paths. */
   readonly freeForward: Adjacency;
   readonly freeBackward: Adjacency;
+  /** With the ways through valves that pressures may open; the same lists where there are none. */
+  readonly valveForward: Adjacency;
+  readonly valveBackward: Adjacency;
 }
 
 /** Edges `start[l] … start[l + 1] - 1` leave line l: they lead to `to`, open in mask `mask`. */
@@ -69,16 +72,24 @@ export function compileEdges(net: Network): EdgeSet {
   // Pilot masks are numbered after the fixed ones, whose number is known only now.
   for (const { pilot, ...edge } of pilotEdges) edges.push({ ...edge, mask: masks.length + pilot });
 
-  const reversed = edges.map((edge) => ({ ...edge, from: edge.to, to: edge.from }));
+  const turn = (edge: Edge): Edge => ({ ...edge, from: edge.to, to: edge.from });
+  const reversed = edges.map(turn);
   const lines = net.lines.length;
+  const valves = net.valves
+    .filter((valve) => valve.duty !== 'closes')
+    .map(({ from, to }): Edge => ({ from, to, mask: 0, free: false }));
+  const forward = adjacency(lines, edges);
+  const backward = adjacency(lines, reversed);
   return {
     states,
     masks,
     pilots,
-    forward: adjacency(lines, edges),
-    backward: adjacency(lines, reversed),
+    forward,
+    backward,
     freeForward: adjacency(lines, edges.filter((edge) => edge.free)),
     freeBackward: adjacency(lines, reversed.filter((edge) => edge.free)),
+    valveForward: valves.length === 0 ? forward : adjacency(lines, [...edges, ...valves]),
+    valveBackward: valves.length === 0 ? backward : adjacency(lines, [...reversed, ...valves.map(turn)]),
   };
 }
 

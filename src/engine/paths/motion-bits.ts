@@ -40,6 +40,9 @@ export const loadAgainst =
   (sense: 'in' | 'out'): number =>
     resisting || push.way === 'both' || (push.by === 'load' && push.way === sense) ? -1 : 0;
 
+/** All ones if a load or spring pushes it this way also at rest. */
+export const pushes = ({ push }: NetActuator, way: 'in' | 'out'): number => (push.way === way || push.way === 'both' ? -1 : 0);
+
 const REASON = Object.fromEntries(REST_REASONS.map((name, i) => [name, i])) as Record<RestReason, number>;
 
 export const word = (field: Field, line: number, w: number, width: number): number => field[line * width + w] as number;

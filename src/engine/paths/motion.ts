@@ -2,10 +2,10 @@ import type { Network } from '../../network/network.ts';
 import { chambersOf } from './chambers.ts';
 import type { Chambers } from './chambers.ts';
 import type { EdgeSet } from './edges.ts';
-import type { Spreader } from './field.ts';
+import type { Field, Spreader } from './field.ts';
 import { driveByDisplaced } from './displaced.ts';
 import type { Motion } from './motion-bits.ts';
-import { isEqualSided, loadAgainst, REST_REASONS, set, word } from './motion-bits.ts';
+import { isEqualSided, loadAgainst, pushes, REST_REASONS, set, word } from './motion-bits.ts';
 import type { Links, PathConditions, Reach } from './reach.ts';
 
 export function findMotion(
@@ -63,6 +63,19 @@ export function findMotion(
       set(rest, 'two feeds', w, a & b & ~regenerative & ~balanced & (exitA | exitB | (equal & (loopBA | loopAB))));
       set(rest, 'pressure valve', w, (stuckOut & ~b & reliefB) | (stuckIn & ~a & reliefA));
       set(rest, 'pressed line', w, (stuckOut & ~b & (ch.softExitB[w] as number)) | (stuckIn & ~a & (ch.softExitA[w] as number)));
+      if (r.valves) {
+        const line = (field: Field, at: number): number => (at < 0 ? 0 : word(field, at, w, width));
+        const { exits, pressed } = r.valves;
+        const wayOutB = actuator.b < 0 ? -1 : line(exits, actuator.b);
+        const wayOutA = line(exits, actuator.a);
+        // Fed, let out, bled or let go only over a valve that pressures open.
+        const viaValve =
+          (a & ~goOut & wayOutB & notOut) | (b & ~goIn & wayOutA & notIn) |
+          (line(pressed, actuator.a) & ~a & wayOutB & notOut) | (line(pressed, actuator.b) & ~b & wayOutA & notIn) |
+          (goOut & wayOutA) | (goIn & line(exits, actuator.b)) |
+          (pushes(actuator, 'in') & ~exitA & wayOutA & notIn) | (pushes(actuator, 'out') & ~exitB & wayOutB & notOut);
+        set(rest, 'pressure valve', w, viaValve & ~balanced);
+      }
       (out[i] as Uint32Array)[w] = goOut;
       (inward[i] as Uint32Array)[w] = goIn;
     }

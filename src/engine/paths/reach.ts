@@ -34,6 +34,8 @@ export interface Reach {
   readonly freeExits: Field;
   /** The same, also into lines under pump pressure. */
   readonly softExits: Field;
+  /** Like `softExits` and `anyPressed`, with the ways through valves that pressures may open; undefined where there are none. */
+  readonly valves: { readonly exits: Field; readonly pressed: Field } | undefined;
   /** Can give oil to a growing chamber. */
   readonly fills: Field;
   /** The same without ways through actuators. */
@@ -137,6 +139,14 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
       toRelief[at] = (toRelief[at] as number) | (toTank[relief.to * s.width + w] as number);
     }
   }
+  for (const valve of net.valves) {
+    // One that its own inlet opens lets out as a relief valve does.
+    if (!valve.signals.some((signal) => signal.line === valve.from && signal.factor > 0)) continue;
+    for (let w = 0; w < s.width; w++) {
+      const at = valve.from * s.width + w;
+      toRelief[at] = (toRelief[at] as number) | (toTank[valve.to * s.width + w] as number);
+    }
+  }
   s.spread(toRelief, edges.backward);
 
   const takesOil = (field: Field, without: number): void => takeIn(net, conditions, s, field, without);
@@ -148,6 +158,15 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   const freeExits = freeToTank.slice();
   takesOil(freeExits, -1);
   s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull, order: backFromTanks });
+
+  let valves: Reach['valves'];
+  if (edges.valveForward !== edges.forward) {
+    const valveExits = softExits.slice();
+    s.spread(valveExits, edges.valveBackward, { links: links.pull });
+    const valvePressed = anyPressed.slice();
+    s.spread(valvePressed, edges.valveForward, { gate: notFreeToTank, links: links.push });
+    valves = { exits: valveExits, pressed: valvePressed };
+  }
 
   const plainFills = fromSource.slice();
   for (const line of tanks) s.seed(plainFills, line);
@@ -169,6 +188,7 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
     exits,
     freeExits,
     softExits,
+    valves,
     fills,
     plainFills,
     notToTank: complement(toTank, s.masks, s.width),

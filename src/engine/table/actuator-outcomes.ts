@@ -1,6 +1,6 @@
 import type { NetActuator } from '../../network/network.ts';
 import type { SettledBlock } from '../paths/block.ts';
-import { isEqualSided } from '../paths/motion-bits.ts';
+import { isEqualSided, pushes } from '../paths/motion-bits.ts';
 import type { Chambers } from '../paths/chambers.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';
@@ -10,6 +10,8 @@ import type { ActuatorNote, ActuatorVerdict } from './words.ts';
 export interface ActuatorOutcome {
   readonly verdicts: readonly Uint32Array[];
   readonly notes: readonly Uint32Array[];
+  /** Where it may float, and be free one way, if nothing feeds it. */
+  readonly unfed: { readonly floats: Uint32Array; readonly oneWay: Uint32Array };
 }
 
 /** Pa: what the atmosphere can push with where a chamber is sealed and stretched. */
@@ -46,7 +48,8 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
   const notOut = place === 'out' ? 0 : -1;
   const notIn = place === 'in' ? 0 : -1;
   const equal = isEqualSided(actuator) ? -1 : 0;
-  const push = (way: 'in' | 'out'): number => (actuator.push.way === way || actuator.push.way === 'both' ? -1 : 0);
+  const push = (way: 'in' | 'out'): number => pushes(actuator, way);
+  const unfed = { floats: new Uint32Array(width), oneWay: new Uint32Array(width) };
   const breaksVacuum = (area: number): number => (actuator.push.size > ATMOSPHERE * area ? -1 : 0);
 
   for (let w = 0; w < width; w++) {
@@ -80,6 +83,8 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
 
     const freeOut = ((exitB & fillA) | (loopBA & (fillA | equal))) & notOut;
     const freeIn = ((exitA & (fillB | loopAB)) | (equal & loopAB)) & notIn;
+    unfed.floats[w] = freeOut & freeIn;
+    unfed.oneWay[w] = freeOut ^ freeIn;
     // A chamber that cannot fill holds by suction alone.
     const suckOut = (exitB | loopBA) & ~freeOut & notOut;
     const suckIn = exitA & ~freeIn & notIn;
@@ -102,7 +107,7 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     freeInward[w] = oneWay & freeIn;
     decide(floats, w, -1);
   }
-  return { verdicts, notes };
+  return { verdicts, notes, unfed };
 }
 
 interface MotionWords {

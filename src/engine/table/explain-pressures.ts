@@ -1,4 +1,5 @@
 import type { NetActuator } from '../../network/network.ts';
+import { actuatorOutcome } from './actuator-outcomes.ts';
 import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
@@ -27,7 +28,8 @@ export function explainPressures(state: OneState): PressureWords {
     if (numbers.status !== 'solved') return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
     if (!said.rests && !moves) return said;
-    const found = actuatorByPressure(index, solver, bits, answer);
+    const { unfed } = actuatorOutcome(index, spec, state.block, state.conditions);
+    const found = actuatorByPressure(index, solver, bits, answer, unfed);
     if (!found) return said;
     const { rests, ...rest } = said;
     const notes = found.void && !said.notes.includes('void forms') ? [...said.notes, 'void forms'] : said.notes;

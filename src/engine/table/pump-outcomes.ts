@@ -47,7 +47,9 @@ export function pumpOutcome(index: number, pump: NetPump, net: Network, block: S
 
     const outlet = pump.outlet;
     decide('unloaded', at(r.freeToTank, outlet, w));
-    decide('rests on pressure', perhaps);
+    // A valve that pressures open may unload it, or let its oil on to something.
+    const valves = r.valves ? at(r.valves.exits, outlet, w) & ~at(r.toTank, outlet, w) : 0;
+    decide('rests on pressure', perhaps | valves);
     decide('working', certain | rivals);
     decide('rests on pressure', drives | at(r.toTank, outlet, w));
     decide('destroked', pump.compensated ? -1 : 0);

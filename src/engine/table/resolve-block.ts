@@ -54,7 +54,7 @@ export function resolveBlock(
       actuators.forEach((outcome, i) => {
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
         if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) return;
-        const found = actuatorByPressure(i, solver, bits, answer);
+        const found = actuatorByPressure(i, solver, bits, answer, outcome.unfed);
         if (!found) return;
         changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low);
         const voids = outcome.notes[VOID] as Uint32Array;

@@ -8,6 +8,7 @@ import type { SettledBlock } from '../paths/block.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { motionWords } from './actuator-outcomes.ts';
+import type { ActuatorOutcome } from './actuator-outcomes.ts';
 import { strides } from './strides.ts';
 import type { ActuatorVerdict, PumpVerdict } from './words.ts';
 
@@ -90,6 +91,7 @@ export function actuatorByPressure(
   solver: PressureSolver,
   bits: BlockBits,
   { result, swings }: PressureAnswer,
+  unfed: ActuatorOutcome['unfed'],
 ): { verdict: ActuatorVerdict; void: boolean } | undefined {
   const actuator = solver.net.actuators[index];
   if (!actuator || result.status !== 'solved') return undefined;
@@ -101,13 +103,22 @@ export function actuatorByPressure(
   const flow = Math.max(Math.abs(state.flowIn), Math.abs(state.flowOut));
   const goesOut = on(bits, motion.out[index]);
   const goesIn = on(bits, motion.in[index]);
-  if (flow <= MOTION) return { verdict: goesOut || goesIn ? 'stalled' : 'held', void: false };
+  const { valves, width } = { valves: bits.block.reach.valves, width: bits.block.width };
+  const overValve = (line: number): boolean =>
+    valves !== undefined && line >= 0 && on(bits, valves.pressed.subarray(line * width, (line + 1) * width));
+  const fedPlain = on(bits, motion.fedA[index]) || on(bits, motion.fedB[index]);
+  if (flow <= MOTION) {
+    if (goesOut || goesIn) return { verdict: 'stalled', void: false };
+    const pressed = Math.max(solver.pressure(result, actuator.a), solver.pressure(result, actuator.b)) > PRESSED;
+    const free = on(bits, unfed.floats) ? 'floats' : on(bits, unfed.oneWay) ? 'held one way' : 'held';
+    return { verdict: fedPlain || pressed ? 'held' : free, void: false };
+  }
   const displaced = on(bits, motion.displaced[index]);
   if (state.speed > 0) {
-    const fed = on(bits, motion.fedA[index]) || (displaced && goesOut);
+    const fed = on(bits, motion.fedA[index]) || (displaced && goesOut) || (overValve(actuator.a) && solver.pressure(result, actuator.a) > PRESSED);
     return { verdict: fed ? words.out : words.pushedOut, void: solver.voidFlow(result, actuator.a) > VOID };
   }
-  const fed = on(bits, motion.fedB[index]) || (displaced && goesIn);
+  const fed = on(bits, motion.fedB[index]) || (displaced && goesIn) || (overValve(actuator.b) && solver.pressure(result, actuator.b) > PRESSED);
   return { verdict: fed ? words.in : words.pushedIn, void: solver.voidFlow(result, actuator.b) > VOID };
 }
 
@@ -140,15 +151,18 @@ export function pumpByPressure(
   if (!pump || result.status !== 'solved') return undefined;
   const state = result.pumps[index];
   if (!state) return undefined;
-  const { reach, motion, width } = bits.block;
+  const { reach, width } = bits.block;
   const pressed = reach.pressed[index] as Uint32Array;
   const offered = (line: number): boolean =>
     line >= 0 && on(bits, pressed.subarray(line * width, (line + 1) * width));
+  const valves = reach.valves?.pressed;
+  const overValve = (line: number): boolean => valves !== undefined && line >= 0 && on(bits, valves.subarray(line * width, (line + 1) * width));
   const drives = net.actuators.some((actuator, i) => {
     const speed = result.actuators[i]?.speed ?? 0;
     const flow = Math.max(Math.abs(result.actuators[i]?.flowIn ?? 0), Math.abs(result.actuators[i]?.flowOut ?? 0));
     if (flow <= MOTION) return false;
-    return speed > 0 ? offered(actuator.a) && on(bits, motion.fedA[i]) : offered(actuator.b) && on(bits, motion.fedB[i]);
+    const grows = speed > 0 ? actuator.a : actuator.b;
+    return offered(grows) || (overValve(grows) && solver.pressure(result, grows) > PRESSED);
   });
   const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));
   const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(result, i), 0);
