@@ -10,12 +10,18 @@ export interface Column {
 
 export const NONE = '–';
 
+/** Behind the number of a row whose verdicts rest on values. */
+const VALUED_MARK = '*';
+export const VALUED_LEGEND = `${VALUED_MARK} Pressures decided what open paths leave to them: from entered or assumed values.`;
+
+const OPEN = ['rests on pressure', 'undetermined'];
+
 const list = (items: readonly string[]): string => (items.length > 0 ? items.join(', ') : NONE);
 
 /** The columns of the text and Markdown tables. Coils show which are on. */
 export function columnsOf(report: Report): Column[] {
   return [
-    { head: 'Row', kind: 'number', cell: (row) => String(row.row) },
+    { head: 'Row', kind: 'number', cell: (row) => `${row.row}${row.valued ? VALUED_MARK : ' '}` },
     ...report.inputs.map(({ label }): Column => ({
       head: label,
       kind: 'position',
@@ -45,11 +51,11 @@ const coilsOn = (coils: readonly string[]): Column => ({
   cell: (row) => list(coils.filter((coil) => row.coils[coil] === 'on')),
 });
 
-/** `rests on pressure (load, rivals)`: the reasons belong to the verdict. */
+/** `rests on pressure (load, rivals)`: the reasons belong to a verdict that stays open. */
 function verdictOf(row: ReportRow, label: string): string {
   const verdict = row.actuators[label] ?? '';
   const reasons = row.rests[label]?.reasons ?? [];
-  return verdict === 'rests on pressure' && reasons.length > 0 ? `${verdict} (${reasons.join(', ')})` : verdict;
+  return OPEN.includes(verdict) && reasons.length > 0 ? `${verdict} (${reasons.join(', ')})` : verdict;
 }
 
 /** Lines above the table: what it is, how many rows, what is not in it, where rest is. */

@@ -39,6 +39,7 @@ function columnsOf(report: Report): CsvColumn[] {
             .map(([label, { reasons }]) => `${label} (${reasons.join(', ')})`),
         ),
     },
+    { head: 'from values', cell: (row) => (row.valued ? 'yes' : 'no') },
     { head: 'notes', cell: (row) => list(row.notes) },
   ];
 }

@@ -1,4 +1,4 @@
-import { columnsOf, headLines, LEVELS, sayRows } from './cells.ts';
+import { columnsOf, headLines, LEVELS, sayRows, VALUED_LEGEND } from './cells.ts';
 import { TRAPPED_CAUTION } from './rows.ts';
 import type { Report } from './rows.ts';
 import { plain } from './width.ts';
@@ -23,10 +23,13 @@ export function* writeMarkdown(report: Report): Generator<string> {
   yield tableRow(columns.map((column) => column.head));
   yield `|${columns.map(({ kind }) => (kind === 'number' ? ' ---: ' : ' --- ')).join('|')}|\n`;
   let trapped = false;
+  let valued = false;
   for (const row of report.rows()) {
     trapped ||= row.trapped.length > 0;
+    valued ||= row.valued;
     yield tableRow(columns.map((column) => column.cell(row)));
   }
+  if (valued) yield `\n${escapeMarkdown(VALUED_LEGEND)}\n`;
   if (trapped) yield `\n> ${TRAPPED_CAUTION}\n`;
   if (report.findings.length === 0) return;
   yield '\n## Findings\n\n';

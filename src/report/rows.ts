@@ -1,4 +1,5 @@
 import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
+import { has } from '../base/bits.ts';
 import { labelOf } from '../circuit/model.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
@@ -58,6 +59,8 @@ export interface ReportRow {
   readonly trapped: readonly { readonly line: string; readonly reasons: readonly TrapReason[] }[];
   readonly rests: Readonly<Record<string, Rests>>;
   readonly notes: readonly string[];
+  /** Pressures decided here what open paths leave to them: it rests on entered or assumed values. */
+  readonly valued: boolean;
 }
 
 /** Why open paths leave a verdict to pressures; with an explanation also in a sentence, and which verdicts are possible. */
@@ -200,6 +203,7 @@ function reportRow({ table, explain }: ReportSource, names: Names, row: number):
     trapped,
     rests: restsOf(table, row, explanation),
     notes: notesOf(table, row, explanation),
+    valued: table.data.valued !== undefined && has(table.data.valued, row),
   };
 }
 

@@ -1,4 +1,4 @@
-import { columnsOf, headLines, LEVELS, sayRows } from './cells.ts';
+import { columnsOf, headLines, LEVELS, sayRows, VALUED_LEGEND } from './cells.ts';
 import type { Column } from './cells.ts';
 import { TRAPPED_CAUTION } from './rows.ts';
 import type { Report } from './rows.ts';
@@ -32,10 +32,13 @@ export function* writeText(report: Report, options: TextOptions = {}): Generator
   yield draw(columns.map((column) => column.head));
   yield draw(widths.map((width) => '─'.repeat(width)));
   let trapped = false;
+  let valued = false;
   for (const row of report.rows()) {
     trapped ||= row.trapped.length > 0;
+    valued ||= row.valued;
     yield draw(columns.map((column) => column.cell(row)));
   }
+  if (valued) yield `\n${VALUED_LEGEND}\n`;
   if (trapped) yield `\n${TRAPPED_CAUTION}\n`;
   yield* findings(report);
 }

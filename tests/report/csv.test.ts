@@ -25,16 +25,16 @@ test('a record per row with a head', () => {
   expect(records).toEqual([
     [
       ...['row', 'V1', 'coil Y1', 'coil Y2', 'CLAMP', 'P1', 'line L1', 'line L2', 'line L3'],
-      ...['blocked under pressure', 'cut off', 'trapped', 'rests on', 'notes'],
+      ...['blocked under pressure', 'cut off', 'trapped', 'rests on', 'from values', 'notes'],
     ],
-    ['1', 'a', 'on', 'off', 'extends', 'working', 'fed', 'fed', 'vented', '', '', '', '', ''],
+    ['1', 'a', 'on', 'off', 'extends', 'working', 'fed', 'fed', 'vented', '', '', '', '', 'no', ''],
     [
       ...['2', '0', 'off', 'off', 'held', 'over relief', 'fed', 'cut off', 'cut off'],
-      ...['L1', 'L2; L3', 'L2 (left behind, heat); L3 (heat)', '', 'CLAMP: void forms'],
+      ...['L1', 'L2; L3', 'L2 (left behind, heat); L3 (heat)', '', 'no', 'CLAMP: void forms'],
     ],
     [
       ...['3', 'b', 'off', 'on', 'rests on pressure', 'working, part over relief', 'fed', 'vented', 'fed'],
-      ...['', '', '', 'CLAMP (load, rivals)', ''],
+      ...['', '', '', 'CLAMP (load, rivals)', 'no', ''],
     ],
   ]);
 });

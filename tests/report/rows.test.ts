@@ -21,6 +21,7 @@ test('rows carry shown names and count from 1', () => {
     ],
     rests: {},
     notes: ['CLAMP: void forms'],
+    valued: false,
   });
   expect(report.rowAt(0).coils).toEqual({ Y1: 'on', Y2: 'off' });
 });
@@ -42,7 +43,15 @@ test('an explanation adds the sentence and the candidates, and is asked for open
       rests,
       steps: [],
     } as const;
-    const none = { row, status: 'not converged', lines: [], actuators: [], pumps: [], reliefs: [], power: { pumps: 0, loads: 0, useful: 0, lost: 0 } } as const;
+    const none = {
+      row,
+      status: 'not converged',
+      lines: [],
+      actuators: [],
+      pumps: [],
+      reliefs: [],
+      power: { pumps: 0, loads: 0, useful: 0, lost: 0 },
+    } as const;
     return { row, numbers: none, positions: [2], actuators: [reason], pumps: [], trapped: [], notes: ['Said so.'] };
   };
   const rows = [...makeReport(sampleSource(CLAMP, { explain })).rows()];

@@ -29,6 +29,8 @@ export interface Sample {
   readonly notPermitted?: number;
   readonly commandCombinations?: number;
   readonly pumpsRunning?: boolean;
+  /** 0-based rows. */
+  readonly valued?: readonly number[];
 }
 
 /** A table written by hand, row by row, for the writers to write. */
@@ -71,9 +73,15 @@ export function sampleTable(sample: Sample): StateTable {
     linePlanes: planes(lines, sample.lines, LINE_CLASSES),
     blockedPlanes: planes(lines, sample.blocked, BLOCKED_KINDS),
     trapPlanes: planes(lines, sample.trapped, TRAP_REASONS),
-    valued: undefined,
+    valued: sample.valued ? valuedPlane(sample.valued, count) : undefined,
   };
   return new StateTable(data);
+}
+
+function valuedPlane(rows: readonly number[], count: number): Plane {
+  const plane = emptySet(count);
+  for (const row of rows) add(plane, row);
+  return plane;
 }
 
 export function sampleSource(sample: Sample, more: Partial<ReportSource> = {}): ReportSource {

@@ -20,9 +20,9 @@ test('columns are aligned and everything is said', () => {
       '',
       'Row  V1  Coils on  CLAMP                             P1                         Blocked under pressure  Cut off  Trapped                            Notes',
       '───  ──  ────────  ────────────────────────────────  ─────────────────────────  ──────────────────────  ───────  ─────────────────────────────────  ─────────────────',
-      '  1  a   Y1        extends                           working                    –                       –        –                                  –',
-      '  2  0   –         held                              over relief                L1                      L2, L3   L2 (left behind, heat), L3 (heat)  CLAMP: void forms',
-      '  3  b   Y2        rests on pressure (load, rivals)  working, part over relief  –                       –        –                                  –',
+      ' 1   a   Y1        extends                           working                    –                       –        –                                  –',
+      ' 2   0   –         held                              over relief                L1                      L2, L3   L2 (left behind, heat), L3 (heat)  CLAMP: void forms',
+      ' 3   b   Y2        rests on pressure (load, rivals)  working, part over relief  –                       –        –                                  –',
       '',
       TRAPPED_CAUTION,
       '',
@@ -66,6 +66,14 @@ test('no verdict is lost at any width', () => {
     }),
     { numRuns: 200 },
   );
+});
+
+test('rows that rest on values are marked, and the mark is explained', () => {
+  const text = write({ ...CLAMP, valued: [2] });
+  expect(text).toMatch(/^ +3\* /m);
+  expect(text).not.toMatch(/^ +2\*/m);
+  expect(text).toContain('* Pressures decided');
+  expect(write(CLAMP)).not.toContain('Pressures decided');
 });
 
 test('the caution stands only where trapped pressure is listed', () => {
