@@ -1,6 +1,6 @@
 import type { Circuit, Part } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
-import type { ActuatorElement, PartKind } from '../parts/contract.ts';
+import type { ActuatorElement, PartKind, PressureValveElement } from '../parts/contract.ts';
 import { findLines } from './lines.ts';
 import type {
   NetAccumulator,
@@ -57,6 +57,22 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             pilotRatio: element.pilot?.ratio ?? 0,
             cracking: element.cracking ?? 0,
             ...(element.rated && { rated: element.rated }),
+            ...(element.limit !== undefined && { limit: element.limit }),
+          });
+          break;
+        case 'pressure-valve':
+          if (element.duty === 'closes') paths.push(openState(element, index, valves.length, at));
+          valves.push({
+            part: index,
+            from: at(element.from),
+            to: at(element.to),
+            fromPort: element.from,
+            toPort: element.to,
+            duty: element.duty,
+            signals: element.signals.map(({ port, factor }) => ({ line: at(port), factor })),
+            setting: element.setting,
+            override: element.override ? element.override.rise / element.override.flow : 0,
+            ...(element.rated && { rated: element.rated }),
           });
           break;
         case 'pressure-opened':
@@ -102,6 +118,26 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
 
   const parts = circuit.parts.map((part: Part) => ({ id: part.id, label: labelOf(part), kind: part.kind }));
   return { lines, shown, inputs, paths, pumps, reliefs, valves, accumulators, actuators, parts, openPorts, lineOf };
+}
+
+/** A reducing valve is open until its outlet is up: a path that takes pressure away. */
+function openState(element: PressureValveElement, part: number, valve: number, at: (port: string) => number): NetPath {
+  return {
+    part,
+    from: at(element.from),
+    to: at(element.to),
+    fromPort: element.from,
+    toPort: element.to,
+    oneWay: true,
+    throttled: true,
+    input: -1,
+    positions: 0,
+    pilot: -1,
+    pilotRatio: 0,
+    cracking: 0,
+    ...(element.rated && { rated: element.rated }),
+    valve,
+  };
 }
 
 function compileActuator(element: ActuatorElement, part: number, at: (port: string) => number): NetActuator {

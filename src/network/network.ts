@@ -63,6 +63,10 @@ export interface NetPath {
   readonly cracking: number;
   /** m³/s at Pa of drop. */
   readonly rated?: { readonly flow: number; readonly drop: number };
+  /** m³/s that it passes at most from → to (flow control). */
+  readonly limit?: number;
+  /** The pressure valve (duty `closes`) whose open state this path is: for open paths it is a path, for pressures that valve stands for it. */
+  readonly valve?: number;
 }
 
 export interface NetPump {
@@ -87,11 +91,13 @@ export interface NetRelief {
   readonly override: number;
 }
 
-/** A valve that pressures open or close: sequence, unloading, counterbalance, reducing. */
+/** A valve that pressures open or close: sequence, unloading, counterbalance, reducing. Shut backwards. */
 export interface NetPressureValve {
   readonly part: number;
   readonly from: number;
   readonly to: number;
+  readonly fromPort: string;
+  readonly toPort: string;
   /** `closes`: open until its outlet reaches the setting; the others are shut until Σ factor·p passes it. */
   readonly duty: 'sequence' | 'unloading' | 'counterbalance' | 'closes';
   /** Lines whose pressures act on it, with the area ratio of each; the reference (drain, spring chamber) counts negative. */

@@ -2,12 +2,14 @@ import { accumulator } from './accumulator.ts';
 import { checkValve } from './check-valve.ts';
 import { compensatedPump } from './compensated-pump.ts';
 import type { PartKind, ReadyMade } from './contract.ts';
+import { counterbalanceValve } from './counterbalance-valve.ts';
 import { cylinder } from './cylinder.ts';
 import { directionalValve } from './directional-valve.ts';
 import { doubleLockCheck } from './double-lock-check.ts';
 import { doubleRodCylinder } from './double-rod-cylinder.ts';
 import { filter } from './filter.ts';
 import { fixedPump } from './fixed-pump.ts';
+import { flowControl } from './flow-control.ts';
 import { gauge } from './gauge.ts';
 import { junction } from './junction.ts';
 import { lockCheck } from './lock-check.ts';
@@ -15,11 +17,15 @@ import { motor } from './motor.ts';
 import { oneWayThrottle } from './one-way-throttle.ts';
 import { plug } from './plug.ts';
 import { quickCoupling } from './quick-coupling.ts';
+import { reducingValve } from './reducing-valve.ts';
 import { reliefValve } from './relief-valve.ts';
+import { sequenceValve } from './sequence-valve.ts';
 import { shutOffValve } from './shut-off-valve.ts';
+import { shuttleValve } from './shuttle-valve.ts';
 import { singleActingCylinder } from './single-acting-cylinder.ts';
 import { tank } from './tank.ts';
 import { throttle } from './throttle.ts';
+import { unloadingValve } from './unloading-valve.ts';
 
 /** All part kinds, in the order of the tray. */
 export const CATALOGUE: readonly PartKind[] = [
@@ -34,11 +40,17 @@ export const CATALOGUE: readonly PartKind[] = [
   directionalValve,
   shutOffValve,
   reliefValve,
+  sequenceValve,
+  unloadingValve,
+  counterbalanceValve,
+  reducingValve,
   checkValve,
   lockCheck,
   doubleLockCheck,
   throttle,
   oneWayThrottle,
+  flowControl,
+  shuttleValve,
   accumulator,
   gauge,
   quickCoupling,
@@ -73,7 +85,8 @@ const plain = (text: string): string =>
 
 /**
  * Ready-made parts whose title or trade words hold every word looked for, best first: whole words
- * of the title, then beginnings, then the rest; equal ones in the order of the tray. An empty search gives all.
+ * of the title, then beginnings, then the rest; equal ones in the order of the tray, a title that says no
+ * more than what was looked for before them. An empty search gives all.
  */
 export function searchCatalogue(query: string): readonly CatalogueEntry[] {
   const wanted = plain(query)
@@ -85,7 +98,7 @@ export function searchCatalogue(query: string): readonly CatalogueEntry[] {
     const others = plain(
       [kind.title, kind.kind, kind.group, ...kind.words, ...(readyMade.words ?? [])].join(' '),
     ).split(' ');
-    let total = 0;
+    let total = title.every((each) => wanted.includes(each)) ? 1 : 0;
     for (const word of wanted) {
       if (title.includes(word)) total += 4;
       else if (title.some((each) => each.startsWith(word))) total += 3;

@@ -137,7 +137,28 @@ export type Element =
       /** Gas volume, m³ */ readonly volume?: number;
       /** Gas pressure when empty of oil, Pa */ readonly precharge?: number;
     }
+  | PressureValveElement
   | ActuatorElement;
+
+/**
+ * A way from → to that pressures open or close. `closes` (reducing) stands open until Σ factor·p comes up
+ * to the setting; the other duties are shut until it passes it. Drain and spring chamber count negative.
+ * Oil never passes it backwards: a bypass check is a path of its own. A `closes` valve is also the open
+ * path from → to; the part must not lay that path a second time.
+ */
+export interface PressureValveElement {
+  readonly type: 'pressure-valve';
+  readonly duty: 'sequence' | 'unloading' | 'counterbalance' | 'closes';
+  readonly from: string;
+  readonly to: string;
+  readonly signals: readonly { readonly port: string; readonly factor: number }[];
+  /** Pa */
+  readonly setting: number;
+  /** Rise over the setting (`closes`: fall below it), Pa, at a flow, m³/s. */
+  readonly override?: { readonly rise: number; readonly flow: number };
+  /** m³/s at Pa of drop when fully open. */
+  readonly rated?: { readonly flow: number; readonly drop: number };
+}
 
 /** An open path. `positions`: input positions in which it exists; absent = always. */
 export interface PathElement {
@@ -153,6 +174,8 @@ export interface PathElement {
   readonly pilot?: { readonly port: string; readonly ratio: number };
   /** m³/s at Pa of drop, for the pressure layer. */
   readonly rated?: { readonly flow: number; readonly drop: number };
+  /** m³/s that it passes at most from → to, whatever the drop (flow control). */
+  readonly limit?: number;
 }
 
 /** Port `a` grows when it extends (turns A→B); `b` undefined: single acting, that side breathes. */

@@ -18,12 +18,18 @@ const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
   'compensated-pump': ['P', 'S'],
   tank: ['T'],
   'relief-valve': ['P', 'T'],
+  'sequence-valve': ['P', 'A', 'Y'],
+  'unloading-valve': ['P', 'T', 'X'],
+  'counterbalance-valve': ['V', 'C', 'X'],
+  'reducing-valve': ['P', 'A', 'Y'],
   'shut-off-valve': ['A', 'B'],
   'check-valve': ['A', 'B'],
   'lock-check': ['V', 'C', 'X'],
   'double-lock-check': ['V1', 'C1', 'V2', 'C2'],
   throttle: ['A', 'B'],
   'one-way-throttle': ['A', 'B'],
+  'flow-control': ['A', 'B'],
+  'shuttle-valve': ['X', 'Y', 'A'],
   cylinder: ['A', 'B'],
   'double-rod-cylinder': ['A', 'B'],
   'single-acting-cylinder': ['A'],
@@ -42,6 +48,8 @@ function portsNamed(element: Element): string[] {
       return [element.from, element.to, ...(element.pilot ? [element.pilot.port] : [])];
     case 'pressure-opened':
       return [element.from, element.to];
+    case 'pressure-valve':
+      return [element.from, element.to, ...element.signals.map((signal) => signal.port)];
     case 'pump':
       return [element.outlet, element.suction];
     case 'tank':
@@ -81,9 +89,9 @@ function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number;
 const within = (box: Box, { x, y }: { x: number; y: number }): boolean =>
   x >= box.x - 1e-9 && x <= box.x + box.width + 1e-9 && y >= box.y - 1e-9 && y <= box.y + box.height + 1e-9;
 
-test('there are 21 kinds, each found by its name and in a known group', () => {
-  expect(CATALOGUE).toHaveLength(21);
-  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(21);
+test('there are 27 kinds, each found by its name and in a known group', () => {
+  expect(CATALOGUE).toHaveLength(27);
+  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(27);
   for (const kind of CATALOGUE) {
     expect(kindOf(kind.kind)).toBe(kind);
     expect(PART_GROUPS).toContain(kind.group);
@@ -192,6 +200,12 @@ test.each([
   ['carry over', 'valve-6/3-carry-over'],
   ['P–T', 'valve-4/3-bypass'],
   ['needle', 'throttle'],
+  ['overcentre', 'counterbalance-valve'],
+  ['pressure compensated', 'flow-control'],
+  ['unloader', 'unloading-valve'],
+  ['regulator', 'reducing-valve'],
+  ['or valve', 'shuttle-valve'],
+  ['back pressure', 'check-valve-spring'],
 ])('searching "%s" finds %s', (query, id) => {
   expect(searchCatalogue(query).map((entry) => entry.readyMade.id)).toContain(id);
 });

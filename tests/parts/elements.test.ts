@@ -43,6 +43,59 @@ test('checks let oil through one way', () => {
   expect(paths('double-lock-check', { ratio: 4 })).toEqual(['V1>C1', 'C1>V1 by V2×4', 'V2>C2', 'C2>V2 by V1×4']);
 });
 
+test('pressure valves name what opens them, the drain counting negative', () => {
+  const rated = { flow: 1e-3, drop: 2e5 };
+  const law = { ratedFlow: '60 L/min', ratedDrop: '2 bar', fullFlowRise: '4 bar' };
+  const valve = (duty: string, from: string, to: string, setting: number, signals: Readonly<Record<string, number>>) => ({
+    type: 'pressure-valve',
+    duty,
+    from,
+    to,
+    setting,
+    signals: Object.entries(signals).map(([port, factor]) => ({ port, factor })),
+    override: { rise: 4e5, flow: 1e-3 },
+    rated,
+  });
+  const back = (from: string, to: string) => ({ type: 'path', from, to, way: 'one-way', throttled: false, rated });
+  expect(elements('sequence-valve', { ...law, setting: '70 bar' })).toEqual([
+    valve('sequence', 'P', 'A', 70e5, { P: 1, Y: -1 }),
+  ]);
+  expect(elements('sequence-valve', { ...law, drain: 'internal', bypass: true })).toEqual([
+    valve('sequence', 'P', 'A', 60e5, { P: 1, A: -1 }),
+    back('A', 'P'),
+  ]);
+  expect(elements('unloading-valve', law)).toEqual([valve('unloading', 'P', 'T', 100e5, { X: 1, T: -1 })]);
+  expect(elements('counterbalance-valve', { ...law, ratio: 4 })).toEqual([
+    valve('counterbalance', 'C', 'V', 150e5, { C: 1, X: 4, V: -5 }),
+    back('V', 'C'),
+  ]);
+  expect(elements('counterbalance-valve', { ...law, springChamber: 'vented' })[0]).toEqual(
+    valve('counterbalance', 'C', 'V', 150e5, { C: 1, X: 3 }),
+  );
+  expect(elements('reducing-valve', { ...law, relieving: true, bypass: true })).toEqual([
+    valve('closes', 'P', 'A', 50e5, { A: 1, Y: -1 }),
+    valve('sequence', 'A', 'Y', 50e5, { A: 1, Y: -1 }),
+    back('A', 'P'),
+  ]);
+});
+
+test('a sequence valve drained inside has no port Y', () => {
+  const ids = (settings: Readonly<Record<string, Setting>>) =>
+    needKind('sequence-valve')
+      .ports(partOf('sequence-valve', settings))
+      .map((port) => port.id);
+  expect(ids({})).toEqual(['P', 'A', 'Y']);
+  expect(ids({ drain: 'internal' })).toEqual(['P', 'A']);
+});
+
+test('a flow control is a throttle with a limit one way; a shuttle lets both inlets to its outlet', () => {
+  expect(elements('flow-control', { flow: '12 L/min', leastDrop: '8 bar' })).toEqual([
+    { type: 'path', from: 'A', to: 'B', way: 'both', throttled: true, limit: 2e-4, rated: { flow: 2e-4, drop: 8e5 } },
+  ]);
+  expect(paths('flow-control', { reverseCheck: true })).toEqual(['A~B', 'B>A']);
+  expect(paths('shuttle-valve')).toEqual(['X>A', 'Y>A']);
+});
+
 test('throttles, open and screwed shut', () => {
   expect(paths('throttle')).toEqual(['A~B']);
   expect(paths('throttle', { shut: true })).toEqual([]);

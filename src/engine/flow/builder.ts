@@ -167,6 +167,11 @@ export class FlowBuilder {
     return this.#valve(id, from, to, data.loss, pilot);
   }
 
+  /** Opens from → to as far as Σ factor·p passes the setting, whatever lines it senses; shut the other way. */
+  pressureValve(id: string, from: number, to: number, signals: readonly Signal[], data: Omit<ValveData, 'reference'>): number {
+    return this.#piloted(id, from, to, data, [...signals]);
+  }
+
   /** Free valve → cylinder; back when ratio·(pilot − valve) beats cylinder − valve + cracking. */
   lockCheck(
     id: string,

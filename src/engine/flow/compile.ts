@@ -1,4 +1,4 @@
-import type { NetPath, Network } from '../../network/network.ts';
+import type { NetPath, NetPressureValve, Network } from '../../network/network.ts';
 import { FlowBuilder } from './builder.ts';
 import type { Loss } from './builder.ts';
 import { TANK } from './problem.ts';
@@ -20,6 +20,8 @@ export interface FlowModel {
   /** Per actuator, relief: its branch. Per pump: its number. */
   readonly actuators: readonly number[];
   readonly reliefs: readonly number[];
+  /** Per pressure valve of the network: its branch; -1 where both ends are one line. */
+  readonly valves: readonly number[];
   readonly pumps: readonly number[];
   /** Branch of every path; -1 where another branch stands for it. */
   readonly paths: readonly number[];
@@ -37,7 +39,8 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   const at = (line: number): number => (line < 0 ? TANK : (lineOf[line] as number));
   const label = (part: number): string => net.parts[part]?.label ?? '';
 
-  const paths = net.paths.map((path) => layPath(builder, net, path, at, label(path.part)));
+  const valves = net.valves.map((valve) => layValve(builder, valve, at, label(valve.part)));
+  const paths = net.paths.map((path) => (path.valve === undefined ? layPath(builder, net, path, at, label(path.part)) : -1));
   const switched = net.paths.flatMap((path, i) => {
     const branch = paths[i] as number;
     return path.input >= 0 && branch >= 0 ? [{ branch, input: path.input, positions: path.positions }] : [];
@@ -70,7 +73,20 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   const built = builder.build();
   // A full accumulator gives oil and takes none.
   const problem = { ...built, branches: built.branches.map((branch) => (branch.kind === 'accumulator' ? { ...branch, hi: 0 } : branch)) };
-  return { solver: new FlowSolver(problem), problem, lineOf, actuators, reliefs, pumps, paths, switched };
+  return { solver: new FlowSolver(problem), problem, lineOf, actuators, reliefs, valves, pumps, paths, switched };
+}
+
+/** A valve that closes is one that opens while its signals, turned round, are above the setting, turned round. */
+function layValve(builder: FlowBuilder, valve: NetPressureValve, at: (line: number) => number, label: string): number {
+  const [from, to] = [at(valve.from), at(valve.to)];
+  if (from === to) return -1;
+  const sign = valve.duty === 'closes' ? -1 : 1;
+  const signals = valve.signals.map(({ line, factor }) => ({ line: at(line), factor: sign * factor }));
+  return builder.pressureValve(`${label} ${valve.fromPort}–${valve.toPort}`, from, to, signals, {
+    setting: sign * valve.setting,
+    ...(valve.override > 0 && { gradient: valve.override }),
+    ...(valve.rated && { loss: valve.rated }),
+  });
 }
 
 function layPath(builder: FlowBuilder, net: Network, path: NetPath, at: (line: number) => number, label: string): number {
@@ -79,6 +95,7 @@ function layPath(builder: FlowBuilder, net: Network, path: NetPath, at: (line: n
   if (from === to) return -1;
   const loss: Loss = path.rated ?? {};
   const on = path.input < 0;
+  if (path.limit !== undefined) return builder.flowControl(id, from, to, path.limit, loss, !path.oneWay, on);
   if (path.pilot >= 0) {
     // The lock check's own free way is part of the same element.
     return builder.lockCheck(id, to, from, at(path.pilot), path.pilotRatio, { cracking: freeWayOf(net, path)?.cracking ?? 0, loss });
