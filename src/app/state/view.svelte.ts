@@ -10,6 +10,10 @@ class View {
   theme = $state<ThemeChoice>(recall<ThemeChoice>('theme', 'system'));
   units = $state<UnitSystem>(recall<UnitSystem>('units', 'metric'));
   grid = $state(recall('grid', true));
+  /** Speeds and pressures in the state table. */
+  tableFigures = $state(recall('tableFigures', window.innerWidth >= 1200));
+  /** Pressures at lines, speeds at actuators. */
+  sheetFigures = $state(recall('sheetFigures', true));
   /** Whether the system asks for dark; `App` keeps it up to date. */
   systemDark = $state(false);
   /** Share of the height below the top bar that the sheet takes, 0 to 1. */
@@ -47,6 +51,16 @@ class View {
   setGrid(on: boolean): void {
     this.grid = on;
     remember('grid', on);
+  }
+
+  setTableFigures(on: boolean): void {
+    this.tableFigures = on;
+    remember('tableFigures', on);
+  }
+
+  setSheetFigures(on: boolean): void {
+    this.sheetFigures = on;
+    remember('sheetFigures', on);
   }
 
   setSheetShare(share: number): void {

@@ -18,6 +18,21 @@ export interface Column {
   readonly track: string;
   /** Least width in px. */
   readonly width: number;
+  /** Its figures stand at the right edge. */
+  readonly figures?: FigureHead;
+}
+
+/** What the head says of the figures below. */
+export interface FigureHead {
+  readonly unit: string;
+  /** All of them rest on assumed values. */
+  readonly assumed: boolean;
+}
+
+/** Heads of the figures of each actuator and pump, by index. */
+export interface FigureHeads {
+  readonly actuators: readonly FigureHead[];
+  readonly pumps: readonly FigureHead[];
 }
 
 export interface ColumnGroup {
@@ -30,9 +45,18 @@ const CHARACTER = 7.2;
 const HEAD_CHARACTER = 9.2;
 const PADDING = 16;
 const GLYPH = 25;
+/** Five figures and the space before them. */
+const FIGURES = 38;
 
 const fits = (texts: readonly string[], extra: number, head: string): number =>
   Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * HEAD_CHARACTER) + PADDING);
+
+/** Room for the figures beside the words, and for their unit beside the label. */
+function withFigures(width: number, label: string, figures: FigureHead | undefined): number {
+  if (!figures) return width;
+  const head = label.length * HEAD_CHARACTER + (sayUnit(figures).length + 1) * CHARACTER + PADDING;
+  return Math.ceil(Math.max(width + FIGURES, head));
+}
 
 /** The column in a sentence. */
 export function sayColumn(column: Column): string {
@@ -49,7 +73,10 @@ function wide(id: 'blocked' | 'trapped' | 'notes', title: string, width: number,
   return { id, of: id, index: 0, title, width, track: `minmax(${width}px, ${share}fr)` };
 }
 
-export function columnGroups(table: StateTable): ColumnGroup[] {
+export const sayUnit = ({ unit, assumed }: FigureHead): string => (assumed ? `${unit}, assumed` : unit);
+
+/** `heads`: figures are shown beside the verdicts. */
+export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGroup[] {
   const { data } = table;
   const digits = String(data.count).length;
   const row = fixed({ id: 'row', of: 'row', index: 0, title: 'row', width: Math.max(76, digits * 8 + 34) });
@@ -74,22 +101,26 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
   ]);
   const actuators = data.actuators.map((actuator, index) => {
     const words = table.actuatorCounts(index).map((each) => each.verdict);
+    const figures = heads?.actuators[index];
     return fixed({
       id: `actuator:${index}`,
       of: 'actuator',
       index,
       title: actuator.label,
-      width: fits(words.length > 0 ? words : ['held'], GLYPH, actuator.label),
+      width: withFigures(fits(words.length > 0 ? words : ['held'], GLYPH, actuator.label), actuator.label, figures),
+      ...(figures && { figures }),
     });
   });
   const pumps = data.pumps.map((pump, index) => {
     const words = table.pumpCounts(index).map((each) => each.verdict);
+    const figures = heads?.pumps[index];
     return fixed({
       id: `pump:${index}`,
       of: 'pump',
       index,
       title: pump.label,
-      width: fits(words.length > 0 ? words : ['working'], GLYPH, pump.label),
+      width: withFigures(fits(words.length > 0 ? words : ['working'], GLYPH, pump.label), pump.label, figures),
+      ...(figures && { figures }),
     });
   });
   const groups: ColumnGroup[] = [
@@ -97,9 +128,9 @@ export function columnGroups(table: StateTable): ColumnGroup[] {
     { title: 'Levers', columns: levers },
     { title: 'Actuators', columns: actuators },
     { title: 'Pumps', columns: pumps },
-    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 196, 1.3)] },
-    { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 216, 1.5)] },
-    { title: 'Danger, notes', columns: [wide('notes', 'gravest first', 150, 1)] },
+    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 150, 1.3)] },
+    { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 160, 1.5)] },
+    { title: 'Danger, notes', columns: [wide('notes', 'gravest first', 130, 1.1)] },
   ];
   return groups.filter((group) => group.columns.length > 0);
 }

@@ -1,0 +1,44 @@
+import type { UnitSystem } from '../../base/units.ts';
+import { speedsAssumed } from '../state/assumed.ts';
+import type { Assumed } from '../state/assumed.ts';
+import { pressureUnit, sayPressure, saySpeed, speedUnit } from '../state/figure-texts.ts';
+import type { RowNumbers, StateTable } from '../../worker/client.ts';
+import type { FigureHeads } from './columns.ts';
+
+/** A figure beside a verdict, in the unit of its column's head. */
+export interface CellFigure {
+  readonly text: string;
+  readonly assumed: boolean;
+  readonly why?: string | undefined;
+}
+
+/** By column id. */
+export type RowFigures = ReadonlyMap<string, CellFigure>;
+
+export const figureHeads = ({ data }: StateTable, units: UnitSystem, assumed: Assumed): FigureHeads => ({
+  actuators: data.actuators.map(({ motion }) => ({ unit: speedUnit(motion, units), assumed: false })),
+  // Every pressure of a pump comes about by flow through the whole circuit.
+  pumps: data.pumps.map(() => ({ unit: pressureUnit(units), assumed: assumed.anywhere })),
+});
+
+const ASSUMED = 'Rests on assumed values that nobody entered';
+
+export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSystem, assumed: Assumed): RowFigures {
+  const out = new Map<string, CellFigure>();
+  const put = (id: string, text: string | undefined, rests: boolean): void => {
+    if (text !== undefined) out.set(id, { text, assumed: rests, why: rests ? ASSUMED : undefined });
+  };
+  const solved = numbers.status === 'solved';
+  const rests = solved ? speedsAssumed(assumed, table, numbers) : [];
+  const none = { text: '–', assumed: false, why: numbers.words };
+  table.data.actuators.forEach(({ motion }, i) => {
+    if (solved) {
+      put(`actuator:${i}`, saySpeed(numbers.actuators[i]?.speed ?? 0, motion, units, true), rests[i] ?? false);
+    } else out.set(`actuator:${i}`, none);
+  });
+  table.data.pumps.forEach((_, i) => {
+    if (solved) put(`pump:${i}`, sayPressure(numbers.pumps[i]?.pressure ?? 0, units, true), assumed.anywhere);
+    else out.set(`pump:${i}`, none);
+  });
+  return out;
+}
