@@ -1,0 +1,120 @@
+import type { Network } from '../../../network/network.ts';
+import type { Adjacency } from '../edges.ts';
+import type { Link } from '../field.ts';
+import type { Diagram, Diagrams } from './diagrams.ts';
+import { ALL, NONE } from './diagrams.ts';
+
+/** A set of combinations per line. */
+export type LineSets = Diagram[];
+
+/** The open paths as directed edges whose masks are diagrams; see `compileEdges` for the same over bit planes. */
+export interface SetEdges {
+  /** By mask number; 0 is always open. Those of lock checks come last and change while they settle. */
+  readonly open: Diagram[];
+  readonly pilots: readonly { readonly line: number; readonly base: Diagram; readonly mask: number }[];
+  readonly forward: Adjacency;
+  readonly backward: Adjacency;
+  readonly freeForward: Adjacency;
+  readonly freeBackward: Adjacency;
+}
+
+interface Edge {
+  readonly from: number;
+  readonly to: number;
+  readonly mask: number;
+  readonly free: boolean;
+}
+
+export function compileSetEdges(net: Network, sets: Diagrams): SetEdges {
+  const open: Diagram[] = [ALL];
+  const numbers = new Map<Diagram, number>([[ALL, 0]]);
+  const edges: Edge[] = [];
+  const piloted: { readonly base: Diagram; readonly line: number; readonly from: number; readonly to: number; readonly free: boolean }[] = [];
+  for (const path of net.paths) {
+    const base = path.input < 0 ? ALL : sets.literal(path.input, path.positions);
+    const free = !path.throttled;
+    if (path.pilot >= 0) {
+      piloted.push({ base, line: path.pilot, from: path.from, to: path.to, free });
+      continue;
+    }
+    if (base === NONE) continue;
+    let mask = numbers.get(base);
+    if (mask === undefined) {
+      mask = open.length;
+      open.push(base);
+      numbers.set(base, mask);
+    }
+    edges.push({ from: path.from, to: path.to, mask, free });
+    if (!path.oneWay) edges.push({ from: path.to, to: path.from, mask, free });
+  }
+  const pilots = piloted.map(({ base, line, from, to, free }) => {
+    const mask = open.length;
+    open.push(NONE);
+    edges.push({ from, to, mask, free });
+    return { line, base, mask };
+  });
+  const reversed = edges.map((edge) => ({ ...edge, from: edge.to, to: edge.from }));
+  const lines = net.lines.length;
+  return {
+    open,
+    pilots,
+    forward: adjacency(lines, edges),
+    backward: adjacency(lines, reversed),
+    freeForward: adjacency(lines, edges.filter((edge) => edge.free)),
+    freeBackward: adjacency(lines, reversed.filter((edge) => edge.free)),
+  };
+}
+
+function adjacency(lines: number, edges: readonly Edge[]): Adjacency {
+  const leaving = Array.from({ length: lines }, (): Edge[] => []);
+  for (const edge of edges) if (edge.from !== edge.to) leaving[edge.from]?.push(edge);
+  const start = new Int32Array(lines + 1);
+  leaving.forEach((list, line) => (start[line + 1] = (start[line] as number) + list.length));
+  const all = leaving.flat();
+  return { start, to: Int32Array.from(all, (edge) => edge.to), mask: Int32Array.from(all, (edge) => edge.mask) };
+}
+
+export interface SetSpread {
+  /** Combinations that may be set in the line arrived at. */
+  readonly gate?: LineSets;
+  /** [line] → ways through actuators, except those of actuator `without`. */
+  readonly links?: readonly (readonly Link[])[];
+  readonly without?: number;
+  readonly fromTank?: boolean;
+  readonly order?: Int32Array;
+}
+
+/**
+ * Grows `field` along `edges` to its fixpoint, a line at a time. Tanks absorb: nothing spreads on from a
+ * tank line unless `fromTank`.
+ */
+export function spreadSets(sets: Diagrams, net: Network, field: LineSets, edges: Adjacency, open: readonly Diagram[], options: SetSpread = {}): void {
+  const { gate, links, without = -1, fromTank = false, order } = options;
+  const queue: number[] = [];
+  const queued = new Uint8Array(field.length);
+  const push = (line: number): void => {
+    if (queued[line] === 1 || (!fromTank && net.lines[line]?.tank === true)) return;
+    queued[line] = 1;
+    queue.push(line);
+  };
+  const grow = (line: number, more: Diagram): void => {
+    const allowed = gate === undefined ? more : sets.and(more, gate[line] as Diagram);
+    const before = field[line] as Diagram;
+    const after = sets.or(before, allowed);
+    if (after === before) return;
+    field[line] = after;
+    push(line);
+  };
+  for (let i = 0; i < field.length; i++) {
+    const line = order === undefined ? i : (order[i] as number);
+    if (field[line] !== NONE) push(line);
+  }
+  for (let head = 0; head < queue.length; head++) {
+    const line = queue[head] as number;
+    queued[line] = 0;
+    for (let e = edges.start[line] as number; e < (edges.start[line + 1] as number); e++) {
+      grow(edges.to[e] as number, sets.and(field[line] as Diagram, open[edges.mask[e] as number] as Diagram));
+    }
+    for (const link of links?.[line] ?? []) if (link.actuator !== without) grow(link.to, field[line] as Diagram);
+  }
+}

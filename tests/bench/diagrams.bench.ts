@@ -1,0 +1,36 @@
+import { networkOf } from '../../src/analysis/analyse.ts';
+import { classSet, openPathSets, PATH_CLASSES } from '../../src/engine/paths/diagrams/open-paths.ts';
+import { FAMILIES, family } from './circuits.ts';
+
+/**
+ * Line classes of every combination as decision diagrams, with exact counts of each class of each line.
+ * Cold: the first run of this circuit in the process, which for the first circuit also warms the program up.
+ */
+function run(print: (line: string) => void): void {
+  print('circuit             combinations   cold ms   warm ms   nodes made   nodes kept   fed somewhere   greatest count');
+  for (const name of FAMILIES) {
+    for (const valves of [8, 16, 24, 40]) {
+      const net = networkOf(family(name, valves));
+      const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
+      const once = () => {
+        const began = performance.now();
+        const paths = openPathSets(net, conditions);
+        const classes = Array.from({ length: net.shown }, (_, line) => PATH_CLASSES.map((word) => classSet(paths, line, word)));
+        const counts = classes.map((row) => row.map((set) => paths.sets.count(set)));
+        return { ms: performance.now() - began, paths, classes, counts };
+      };
+      const { ms: cold, paths, classes, counts } = once();
+      let warm = Infinity;
+      for (let i = 0; i < 5; i++) warm = Math.min(warm, once().ms);
+      const fed = counts.map(([count]) => count ?? 0n).filter((count) => count > 0n);
+      const most = fed.filter((count) => count < paths.sets.total).reduce((a, b) => (a > b ? a : b), 0n);
+      const cell = (text: string | number, width: number): string => String(text).padStart(width);
+      print(
+        `${`${name} ${valves}`.padEnd(10)} ${cell(paths.sets.total.toString(), 21)} ${cell(cold.toFixed(1), 9)} ${cell(warm.toFixed(1), 9)} ` +
+          `${cell(paths.sets.nodes, 12)} ${cell(paths.sets.size(...classes.flat()), 12)} ${cell(fed.length, 15)}   ${most}`,
+      );
+    }
+  }
+}
+
+run((line) => console.log(line));
