@@ -1,0 +1,132 @@
+import { has, wordsFor } from '../../base/bits.ts';
+import type { Network } from '../../network/network.ts';
+import { PathSolver } from '../paths/block.ts';
+import type { Adjacency, EdgeSet } from '../paths/edges.ts';
+import type { PathConditions } from '../paths/reach.ts';
+
+/** The open paths of one row, by themselves: lock checks that a pilot may open are listed apart. */
+export interface RowPaths {
+  /** Line → lines that oil can go on to. */
+  readonly onward: readonly (readonly number[])[];
+  /** Lock checks whose own part lets them open here; `from` and `to` are the way that the pilot opens. */
+  readonly pilots: readonly PilotWay[];
+  /** 1 = an open path leads from this line to tank, or through a stopped pump that leaks. */
+  readonly toTank: Uint8Array;
+  /** 1 = a chamber on this line can fill from tank. */
+  readonly fills: Uint8Array;
+}
+
+export interface PilotWay {
+  readonly index: number;
+  /** Line whose pressure opens it. */
+  readonly pilot: number;
+  readonly from: number;
+  readonly to: number;
+}
+
+/** Open paths row by row, each worked out once. `pumpsRunning` false: pumps that are not tight leak their outlet down. */
+export class RowPathsCache {
+  readonly net: Network;
+  readonly edges: EdgeSet;
+  readonly #leaking: readonly number[];
+  readonly #rows = new Map<number, RowPaths>();
+
+  constructor(net: Network, edges: EdgeSet, pumpsRunning: boolean) {
+    this.net = net;
+    this.edges = edges;
+    this.#leaking = pumpsRunning ? [] : net.pumps.flatMap((pump) => (pump.tightWhenStopped ? [] : [pump.outlet]));
+  }
+
+  at(row: number): RowPaths {
+    const known = this.#rows.get(row);
+    if (known) return known;
+    const made = this.#make(row);
+    this.#rows.set(row, made);
+    return made;
+  }
+
+  #make(row: number): RowPaths {
+    const { net, edges } = this;
+    const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
+    const onward = openEdges(edges.forward, edges, row);
+    const toTank = mark(openEdges(edges.backward, edges, row), [...tanks, ...this.#leaking], net);
+    const fills = mark(onward, tanks, net);
+    return { onward, pilots: pilotWays(edges, row), toTank, fills };
+  }
+}
+
+function openEdges(list: Adjacency, edges: EdgeSet, row: number): number[][] {
+  const lines = list.start.length - 1;
+  return Array.from({ length: lines }, (_, line) => {
+    const out: number[] = [];
+    for (let e = list.start[line] as number; e < (list.start[line + 1] as number); e++) {
+      const mask = edges.masks[list.mask[e] as number];
+      if (mask && has(mask, row)) out.push(list.to[e] as number);
+    }
+    return out;
+  });
+}
+
+function pilotWays(edges: EdgeSet, row: number): PilotWay[] {
+  const { forward, masks, pilots } = edges;
+  const found: PilotWay[] = [];
+  for (let line = 0; line + 1 < forward.start.length; line++) {
+    for (let e = forward.start[line] as number; e < (forward.start[line + 1] as number); e++) {
+      const index = (forward.mask[e] as number) - masks.length;
+      const spec = pilots[index];
+      const base = spec && masks[spec.base];
+      if (base && has(base, row)) found.push({ index, pilot: spec.line, from: line, to: forward.to[e] as number });
+    }
+  }
+  return found.sort((a, b) => a.index - b.index);
+}
+
+/** Marks everything that can be reached from `from`; a tank is not passed through. */
+function mark(next: readonly (readonly number[])[], from: readonly number[], net: Network): Uint8Array {
+  const seen = new Uint8Array(net.lines.length);
+  const queue: number[] = [];
+  for (const line of from) {
+    if (seen[line] === 1) continue;
+    seen[line] = 1;
+    queue.push(line);
+  }
+  for (let head = 0; head < queue.length; head++) {
+    for (const to of next[queue[head] as number] ?? []) {
+      if (seen[to] === 1) continue;
+      seen[to] = 1;
+      if (net.lines[to]?.tank !== true) queue.push(to);
+    }
+  }
+  return seen;
+}
+
+/** Words in a block, and most of them that are looked through one by one. */
+const BLOCK = 128;
+const MOST_WORDS = 16_384;
+
+/**
+ * 1 = no combination of positions opens this line to tank, the pumps being stopped. Past half a million
+ * rows a line counts as opened where its paths would lead to tank with every lever in its best position.
+ */
+export function linesNeverOpen(net: Network, edges: EdgeSet, conditions: PathConditions): Uint8Array {
+  const words = wordsFor(edges.states);
+  if (words > MOST_WORDS) return neverConnected(net, edges);
+  const never = new Uint8Array(net.lines.length).fill(1);
+  const solver = new PathSolver(net, edges, { ...conditions, pumpsRunning: false }, Math.min(BLOCK, words));
+  for (let at = 0; at < words; at += BLOCK) {
+    const { reach, spreader } = solver.solve(at, Math.min(BLOCK, words - at));
+    never.forEach((still, line) => {
+      if (still === 1 && spreader.anyIn(reach.toTank, line)) never[line] = 0;
+    });
+  }
+  return never;
+}
+
+function neverConnected(net: Network, { backward }: EdgeSet): Uint8Array {
+  const next = Array.from({ length: net.lines.length }, (_, line) => [
+    ...backward.to.subarray(backward.start[line], backward.start[line + 1]),
+  ]);
+  const leaking = net.pumps.flatMap((pump) => (pump.tightWhenStopped ? [] : [pump.outlet]));
+  const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
+  return mark(next, [...tanks, ...leaking], net).map((on) => 1 - on);
+}
