@@ -15,7 +15,10 @@ interface Port {
  * The lines of a circuit: connected ports, in document order of their first port. Ports with nothing
  * on them follow as lines of their own (`shown` counts the drawn ones).
  */
-export function findLines(circuit: Circuit, kindOf: (kind: string) => PartKind): { lines: NetLine[]; shown: number; lineOf: Map<string, number> } {
+export function findLines(
+  circuit: Circuit,
+  kindOf: (kind: string) => PartKind,
+): { lines: NetLine[]; shown: number; lineOf: Map<string, number> } {
   const ports: Port[] = [];
   for (const part of circuit.parts) {
     const kind = kindOf(part.kind);

@@ -128,11 +128,20 @@ export interface NetActuator {
   readonly areaA: number;
   readonly areaB: number;
   /** What pushes it at rest, with its size (N; rotary: N·m). */
-  readonly push: { readonly way: 'none' | 'in' | 'out' | 'both'; readonly by: 'load' | 'spring'; readonly size: number };
+  readonly push: {
+    readonly way: 'none' | 'in' | 'out' | 'both';
+    readonly by: 'load' | 'spring';
+    readonly size: number;
+  };
   /** A load that only resists motion. */
   readonly resisting: boolean;
   /** N, or N·m: pressing positive when it pushes in (B→A). */
-  readonly forces: { readonly pressing: number; readonly resisting: number; readonly friction: number; readonly spring: number };
+  readonly forces: {
+    readonly pressing: number;
+    readonly resisting: number;
+    readonly friction: number;
+    readonly spring: number;
+  };
 }
 
 export interface NetOpenPort {

@@ -46,7 +46,11 @@ export const counterbalanceValve: PartKind = {
       [0, -6],
       'up',
       'working',
-      leftOpen('caution', 'The cylinder side C has no line, so the valve holds nothing.', 'Connect C to the side of the actuator that carries the load.'),
+      leftOpen(
+        'caution',
+        'The cylinder side C has no line, so the valve holds nothing.',
+        'Connect C to the side of the actuator that carries the load.',
+      ),
     ),
     port(
       'X',

@@ -36,7 +36,15 @@ export const flowControl: PartKind = {
   title: 'Flow control',
   group: 'Flow and check',
   help: 'Pressure compensated: keeps the flow from A to B whatever the load. What the pump gives beyond it must go elsewhere.',
-  words: ['pressure compensated', 'flow regulator', 'speed control', 'constant flow', 'meter-in', 'meter-out', 'bleed-off'],
+  words: [
+    'pressure compensated',
+    'flow regulator',
+    'speed control',
+    'constant flow',
+    'meter-in',
+    'meter-out',
+    'bleed-off',
+  ],
   prefix: 'FC',
   settings: [FLOW, LEAST_DROP, REVERSE],
   readyMade: [

@@ -12,7 +12,10 @@ import {
 import { readSi, readSwitch, switchSetting } from './settings.ts';
 import { arrow, boxOf, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
 
-const SETTING = pressureSetting('Outlet pressure, over the drain, at which the way from P to A is fully shut.', '50 bar');
+const SETTING = pressureSetting(
+  'Outlet pressure, over the drain, at which the way from P to A is fully shut.',
+  '50 bar',
+);
 const RELIEVING = switchSetting(
   { id: 'relieving', title: 'Relieving', help: 'On: oil pushed back into A over the setting is let out through Y.' },
   false,
@@ -48,7 +51,11 @@ export const reducingValve: PartKind = {
       [0, 5],
       'down',
       'working',
-      leftOpen('note', 'The reducing valve has no outlet line; A counts as plugged.', 'Connect A to what needs the lower pressure.'),
+      leftOpen(
+        'note',
+        'The reducing valve has no outlet line; A counts as plugged.',
+        'Connect A to what needs the lower pressure.',
+      ),
     ),
     port(
       'Y',

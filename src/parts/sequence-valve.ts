@@ -48,14 +48,22 @@ export const sequenceValve: PartKind = {
       [0, -5],
       'up',
       'supply',
-      leftOpen('caution', 'The sequence valve has no inlet line, so nothing gets to A.', 'Connect P to the line that is served first.'),
+      leftOpen(
+        'caution',
+        'The sequence valve has no inlet line, so nothing gets to A.',
+        'Connect P to the line that is served first.',
+      ),
     ),
     port(
       'A',
       [0, 5],
       'down',
       'working',
-      leftOpen('caution', 'The sequence valve has no outlet line; A counts as plugged, so nothing passes.', 'Connect A to what moves second.'),
+      leftOpen(
+        'caution',
+        'The sequence valve has no outlet line; A counts as plugged, so nothing passes.',
+        'Connect A to what moves second.',
+      ),
     ),
     ...(ownDrain(part)
       ? [

@@ -26,7 +26,11 @@ export const shuttleValve: PartKind = {
       [0, -3],
       'up',
       'working',
-      leftOpen('note', 'The outlet of the shuttle valve has no line; it counts as plugged.', 'Connect A to what is to get the higher pressure.'),
+      leftOpen(
+        'note',
+        'The outlet of the shuttle valve has no line; it counts as plugged.',
+        'Connect A to what is to get the higher pressure.',
+      ),
     ),
   ],
   elements: (part) =>

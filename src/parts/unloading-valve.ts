@@ -20,7 +20,11 @@ export const unloadingValve: PartKind = {
       [0, -4],
       'up',
       'supply',
-      leftOpen('caution', 'The unloading valve has no inlet line, so it unloads nothing.', 'Connect P to the outlet line of the pump.'),
+      leftOpen(
+        'caution',
+        'The unloading valve has no inlet line, so it unloads nothing.',
+        'Connect P to the outlet line of the pump.',
+      ),
     ),
     port(
       'T',
@@ -38,7 +42,11 @@ export const unloadingValve: PartKind = {
       [-4, 0],
       'left',
       'pilot',
-      leftOpen('caution', 'The pilot X has no line; it counts as plugged, so the valve never opens.', 'Connect X to the line whose pressure is to unload the pump.'),
+      leftOpen(
+        'caution',
+        'The pilot X has no line; it counts as plugged, so the valve never opens.',
+        'Connect X to the line whose pressure is to unload the pump.',
+      ),
     ),
   ],
   elements: (part) => [

@@ -40,7 +40,9 @@ test('a counterbalance valve is a valve one way and a free check the other', () 
 });
 
 test('a reducing valve is one throttled path for open paths, and that path names the valve that closes it', () => {
-  const n = net('S1 sequence-valve, R1 reducing-valve{bypass=true}, T1 tank | main: S1.P R1.P | low: R1.A S1.A | T1.T R1.Y S1.Y');
+  const n = net(
+    'S1 sequence-valve, R1 reducing-valve{bypass=true}, T1 tank | main: S1.P R1.P | low: R1.A S1.A | T1.T R1.Y S1.Y',
+  );
   expect(n.valves.map((valve) => valve.duty)).toEqual(['sequence', 'closes']);
   const [main, low] = [n.lineOf.get('R1.P'), n.lineOf.get('R1.A')];
   expect(n.paths).toMatchObject([

@@ -46,7 +46,13 @@ test('checks let oil through one way', () => {
 test('pressure valves name what opens them, the drain counting negative', () => {
   const rated = { flow: 1e-3, drop: 2e5 };
   const law = { ratedFlow: '60 L/min', ratedDrop: '2 bar', fullFlowRise: '4 bar' };
-  const valve = (duty: string, from: string, to: string, setting: number, signals: Readonly<Record<string, number>>) => ({
+  const valve = (
+    duty: string,
+    from: string,
+    to: string,
+    setting: number,
+    signals: Readonly<Record<string, number>>,
+  ) => ({
     type: 'pressure-valve',
     duty,
     from,

@@ -168,7 +168,13 @@ export class FlowBuilder {
   }
 
   /** Opens from → to as far as Σ factor·p passes the setting, whatever lines it senses; shut the other way. */
-  pressureValve(id: string, from: number, to: number, signals: readonly Signal[], data: Omit<ValveData, 'reference'>): number {
+  pressureValve(
+    id: string,
+    from: number,
+    to: number,
+    signals: readonly Signal[],
+    data: Omit<ValveData, 'reference'>,
+  ): number {
     return this.#piloted(id, from, to, data, [...signals]);
   }
 

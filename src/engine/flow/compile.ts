@@ -40,21 +40,35 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   const label = (part: number): string => net.parts[part]?.label ?? '';
 
   const valves = net.valves.map((valve) => layValve(builder, valve, at, label(valve.part)));
-  const paths = net.paths.map((path) => (path.valve === undefined ? layPath(builder, net, path, at, label(path.part)) : -1));
+  const paths = net.paths.map((path) =>
+    path.valve === undefined ? layPath(builder, net, path, at, label(path.part)) : -1,
+  );
   const switched = net.paths.flatMap((path, i) => {
     const branch = paths[i] as number;
     return path.input >= 0 && branch >= 0 ? [{ branch, input: path.input, positions: path.positions }] : [];
   });
   const reliefs = net.reliefs.map((relief) =>
-    builder.relief(label(relief.part), at(relief.from), at(relief.to), relief.setting, relief.override > 0 ? relief.override : undefined),
+    builder.relief(
+      label(relief.part),
+      at(relief.from),
+      at(relief.to),
+      relief.setting,
+      relief.override > 0 ? relief.override : undefined,
+    ),
   );
   for (const store of net.accumulators) {
     if (store.charged) builder.accumulator(label(store.part), at(store.line), store.precharge * CHARGED);
   }
   const actuators = net.actuators.map((actuator, i) => {
     const { forces, areaA, areaB } = actuator;
-    const load = { pressing: forces.pressing, resisting: forces.resisting, friction: forces.friction, spring: forces.spring };
-    if (actuator.rotary) return builder.motor(label(actuator.part), at(actuator.a), at(actuator.b), { displacement: areaA, load });
+    const load = {
+      pressing: forces.pressing,
+      resisting: forces.resisting,
+      friction: forces.friction,
+      spring: forces.spring,
+    };
+    if (actuator.rotary)
+      return builder.motor(label(actuator.part), at(actuator.a), at(actuator.b), { displacement: areaA, load });
     const place = conditions.places[i];
     return builder.cylinder(label(actuator.part), at(actuator.a), at(actuator.b), {
       areaA,
@@ -65,14 +79,18 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   });
   const pumps = net.pumps.map((pump) => {
     const id = label(pump.part);
-    if (!conditions.pumpsRunning) return builder.pumpStopped(id, at(pump.outlet), pump.tightWhenStopped ? 0 : STOPPED_LEAKAGE);
+    if (!conditions.pumpsRunning)
+      return builder.pumpStopped(id, at(pump.outlet), pump.tightWhenStopped ? 0 : STOPPED_LEAKAGE);
     return pump.compensated
       ? builder.pumpCompensated(id, at(pump.outlet), pump.flow, pump.setting)
       : builder.pumpFixed(id, at(pump.outlet), pump.flow);
   });
   const built = builder.build();
   // A full accumulator gives oil and takes none.
-  const problem = { ...built, branches: built.branches.map((branch) => (branch.kind === 'accumulator' ? { ...branch, hi: 0 } : branch)) };
+  const problem = {
+    ...built,
+    branches: built.branches.map((branch) => (branch.kind === 'accumulator' ? { ...branch, hi: 0 } : branch)),
+  };
   return { solver: new FlowSolver(problem), problem, lineOf, actuators, reliefs, valves, pumps, paths, switched };
 }
 
@@ -89,7 +107,13 @@ function layValve(builder: FlowBuilder, valve: NetPressureValve, at: (line: numb
   });
 }
 
-function layPath(builder: FlowBuilder, net: Network, path: NetPath, at: (line: number) => number, label: string): number {
+function layPath(
+  builder: FlowBuilder,
+  net: Network,
+  path: NetPath,
+  at: (line: number) => number,
+  label: string,
+): number {
   const id = `${label} ${path.fromPort}–${path.toPort}`;
   const [from, to] = [at(path.from), at(path.to)];
   if (from === to) return -1;
@@ -98,19 +122,26 @@ function layPath(builder: FlowBuilder, net: Network, path: NetPath, at: (line: n
   if (path.limit !== undefined) return builder.flowControl(id, from, to, path.limit, loss, !path.oneWay, on);
   if (path.pilot >= 0) {
     // The lock check's own free way is part of the same element.
-    return builder.lockCheck(id, to, from, at(path.pilot), path.pilotRatio, { cracking: freeWayOf(net, path)?.cracking ?? 0, loss });
+    return builder.lockCheck(id, to, from, at(path.pilot), path.pilotRatio, {
+      cracking: freeWayOf(net, path)?.cracking ?? 0,
+      loss,
+    });
   }
   if (path.oneWay && net.paths.some((other) => other.pilot >= 0 && freeWayOf(net, other) === path)) return -1;
   if (path.throttled) {
     // A throttled path inside a box without data of its own still takes away more than an open one.
-    return path.oneWay ? builder.check(id, from, to, path.cracking, loss, on) : builder.throttle(id, from, to, loss, on);
+    return path.oneWay
+      ? builder.check(id, from, to, path.cracking, loss, on)
+      : builder.throttle(id, from, to, loss, on);
   }
   return path.oneWay ? builder.check(id, from, to, path.cracking, loss, on) : builder.openPath(id, from, to, loss, on);
 }
 
 /** The one-way path of the same part that runs the other way. */
 const freeWayOf = (net: Network, pilot: NetPath): NetPath | undefined =>
-  net.paths.find((path) => path.part === pilot.part && path.pilot < 0 && path.from === pilot.to && path.to === pilot.from);
+  net.paths.find(
+    (path) => path.part === pilot.part && path.pilot < 0 && path.from === pilot.to && path.to === pilot.from,
+  );
 
 /** Opens the paths of a state and shuts the others. */
 export function setState(model: FlowModel, position: (input: number) => number): void {
