@@ -13,6 +13,16 @@ export interface LabelText {
   readonly size: number;
   readonly weight: 400 | 500 | 600;
   readonly tone: 'ink' | 'second' | 'mute' | 'accent';
+  /** Room of `GLYPH_ROOM` is kept before it for the glyph of a verdict. */
+  readonly glyph?: true;
+  /** A figure that rests on values nobody entered. */
+  readonly assumed?: boolean;
+}
+
+/** What a state says of a part, after its name. */
+export interface Figure {
+  readonly text: string;
+  readonly assumed: boolean;
 }
 
 /** One line of text on the sheet; `at` is on the baseline. */
@@ -26,11 +36,16 @@ export interface SceneLabel {
   readonly runs: readonly LabelText[];
 }
 
-export type NoteOf = (part: Part) => string | undefined;
+export interface PartWords {
+  readonly note?: string | undefined;
+  readonly figure?: Figure | undefined;
+}
+export type WordsOf = (part: Part) => PartWords;
 
-interface Spot {
+export interface Spot {
   readonly at: Point;
   readonly align: 'start' | 'middle' | 'end';
+  /** All that may come to stand there. */
   readonly box: Box;
 }
 
@@ -38,18 +53,22 @@ type Place = 'above' | 'right' | 'left' | 'below';
 
 const ACTUATORS = new Set(['cylinder', 'double-rod-cylinder', 'single-acting-cylinder', 'motor']);
 const VALVE = 'directional-valve';
+/** Verdicts have a glyph; positions have none. */
+const hasGlyph = ({ kind }: Part): boolean => ACTUATORS.has(kind) || kind.endsWith('-pump');
 /** Drawn so often, or so small, that an automatic name is noise. */
 const QUIET = new Set(['tank', 'junction', 'plug']);
 const GAP = 0.75;
+/** Modules: the glyph and the gap after it. */
+export const GLYPH_ROOM = 2.2;
 /** Modules kept for a position's or verdict's glyph and words. */
 const NOTE_ROOM: Readonly<Record<string, number>> = {
   'directional-valve': 6,
-  cylinder: 13,
-  'double-rod-cylinder': 13,
-  'single-acting-cylinder': 13,
-  motor: 13,
-  'fixed-pump': 9,
-  'compensated-pump': 9,
+  cylinder: 16,
+  'double-rod-cylinder': 16,
+  'single-acting-cylinder': 16,
+  motor: 17,
+  'fixed-pump': 14,
+  'compensated-pump': 14,
 };
 
 /** Close enough for placing: Inter's capitals and figures are wider than its small letters. */
@@ -65,11 +84,11 @@ export function textWidth(text: string, size: number): number {
 }
 
 const runsWidth = (runs: readonly LabelText[]): number =>
-  runs.reduce((sum, r) => sum + textWidth(`${r.text} `, r.size), 0);
+  runs.reduce((sum, r) => sum + textWidth(`${r.text} `, r.size) + (r.glyph ? GLYPH_ROOM : 0), 0);
 const lineHeight = (runs: readonly LabelText[]): number => (Math.max(...runs.map((r) => r.size)) * 1.2) / MODULE_PX;
 
 /** Where the words of each part stand; free of the state that is shown, so that no name jumps when a lever moves. */
-export type LabelSpots = ReadonlyMap<string, { readonly at: Point; readonly align: 'start' | 'middle' | 'end' }>;
+export type LabelSpots = ReadonlyMap<string, Spot>;
 
 /** `noted`: keep room beside names for what a state says. Each spot is clear of ports, lines and other names if it can be. */
 export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): LabelSpots {
@@ -81,7 +100,7 @@ export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): La
   };
   const out = new Map<string, Spot>();
   for (const { part, box } of parts) {
-    const lines = linesOf(part, undefined);
+    const lines = linesOf(part, {});
     if (lines.length === 0) continue;
     const spot = bestSpot(lines, part, box, ground, noted ? (NOTE_ROOM[part.kind] ?? 0) : 0);
     ground.taken.push(spot.box);
@@ -90,14 +109,14 @@ export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): La
   return out;
 }
 
-/** Label, note and code of every part, and the free labels. */
-export function sceneLabels(circuit: Circuit, spots: LabelSpots, noteOf: NoteOf = () => undefined): SceneLabel[] {
+/** Label, note, figure and code of every part, and the free labels. */
+export function sceneLabels(circuit: Circuit, spots: LabelSpots, wordsOf: WordsOf = () => ({})): SceneLabel[] {
   const out: SceneLabel[] = [];
   for (const part of circuit.parts) {
     const spot = spots.get(part.id);
     if (!spot) continue;
     let y = spot.at.y;
-    for (const runs of linesOf(part, noteOf(part))) {
+    for (const runs of linesOf(part, wordsOf(part))) {
       out.push({
         role: 'part',
         owner: part.id,
@@ -120,7 +139,7 @@ const freeLabels = (circuit: Circuit): SceneLabel[] =>
     runs: [{ text: label.text, size: TEXT_SIZES.label, weight: 400, tone: 'second' }],
   }));
 
-function linesOf(part: Part, note: string | undefined): LabelText[][] {
+function linesOf(part: Part, { note, figure }: PartWords): LabelText[][] {
   const lines: LabelText[][] = [];
   const actuator = ACTUATORS.has(part.kind);
   const size = actuator ? TEXT_SIZES.actuator : TEXT_SIZES.label;
@@ -129,8 +148,12 @@ function linesOf(part: Part, note: string | undefined): LabelText[][] {
     const strong = actuator || part.kind === VALVE;
     first.push({ text: labelOf(part), size, weight: strong ? 600 : 500, tone: strong ? 'ink' : 'second' });
   }
-  if (note)
-    first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone: part.kind === VALVE ? 'accent' : 'ink' });
+  if (note) {
+    const valve = part.kind === VALVE;
+    const tone = valve ? 'accent' : 'ink';
+    first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone, ...(hasGlyph(part) && { glyph: true }) });
+  }
+  if (figure) first.push({ text: figure.text, size: TEXT_SIZES.label, weight: 600, tone: 'ink', assumed: figure.assumed });
   if (first.length > 0) lines.push(first);
   if (part.code) lines.push([{ text: part.code, size: TEXT_SIZES.code, weight: 400, tone: 'mute' }]);
   return lines;

@@ -11,7 +11,7 @@ import type { Routes } from './geometry.ts';
 import { boxOfPoints } from './geometry.ts';
 import type { Dot } from './joints.ts';
 import { junctionDots } from './joints.ts';
-import type { LabelSpots, SceneLabel } from './labels.ts';
+import type { LabelSpots, PartWords, SceneLabel } from './labels.ts';
 import { labelBox, labelSpots, sceneLabels } from './labels.ts';
 import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
@@ -33,6 +33,8 @@ export interface Scene {
   readonly dots: readonly Dot[];
   readonly parts: readonly ScenePart[];
   readonly labels: readonly SceneLabel[];
+  /** Room of the names with all that a state may say beside them; the same list until the circuit changes. */
+  readonly labelRooms: readonly Box[];
 }
 
 export interface SceneLine {
@@ -60,7 +62,7 @@ export interface SceneState {
   /** Connection id → look. */
   readonly lines?: ReadonlyMap<string, LineLook>;
   /** Part id → active position and stroke, and words beside its name (position, verdict). */
-  readonly parts?: ReadonlyMap<string, Look & { readonly note?: string }>;
+  readonly parts?: ReadonlyMap<string, Look & PartWords>;
 }
 
 const IDLE: LineLook = { class: 'idle' };
@@ -74,7 +76,7 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
   const stubs = state.lines ? takeStubs(circuit, parts, looks) : new Map<string, Point>();
   const lines = sceneLines(circuit, routes, stage, looks, stubs);
   const shown = parts.map((part) => hideStubs(part, stubs));
-  const labels = sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id)?.note);
+  const labels = sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id) ?? {});
   return {
     title: circuit.name,
     bounds: sceneBounds(shown, lines, labels),
@@ -86,6 +88,7 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
     dots: stage.dots,
     parts: shown.map((p) => ({ ...p, primitives: p.primitives.filter((x) => !isEnclosure(x)) })),
     labels,
+    labelRooms: stage.rooms,
   };
 }
 
@@ -95,6 +98,7 @@ interface Stage {
   readonly pieces: ReadonlyMap<string, readonly Piece[]>;
   readonly dots: readonly Dot[];
   readonly spots: LabelSpots;
+  readonly rooms: readonly Box[];
   /** `part.port` → connections at it. */
   readonly atPort: ReadonlyMap<string, readonly string[]>;
 }
@@ -109,11 +113,13 @@ function stageOf(circuit: Circuit, routes: Routes, noted: boolean): Stage {
   for (const { id, from, to } of circuit.connections) {
     for (const ref of [from, to]) atPort.set(key(ref), [...(atPort.get(key(ref)) ?? []), id]);
   }
+  const spots = labelSpots(circuit, routes, noted);
   const stage: Stage = {
     numbers,
     pieces: freshPieces(circuit, routes, numbers),
     dots: junctionDots(circuit, routes),
-    spots: labelSpots(circuit, routes, noted),
+    spots,
+    rooms: [...spots.values()].map(({ box }) => box),
     atPort,
   };
   stages.set(circuit, { routes, noted, stage });

@@ -1,7 +1,13 @@
 import type { Circuit } from '../../circuit/model.ts';
+import type { Figure } from '../../drawing/labels.ts';
 import type { Look } from '../../parts/contract.ts';
 import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
+import { speedsAssumed } from '../state/assumed.ts';
+import type { Assumed } from '../state/assumed.ts';
+import { sayPressure, saySpeed } from '../state/figure-texts.ts';
+import { figures } from '../state/figures.svelte.ts';
 import { session } from '../state/session.svelte.ts';
+import { view } from '../state/view.svelte.ts';
 
 /** What the row says of one part. */
 export interface PartState extends Look {
@@ -9,10 +15,12 @@ export interface PartState extends Look {
   readonly verdict?: ActuatorVerdict;
   readonly pump?: PumpVerdict;
   readonly freeInward?: boolean;
+  /** Speed or pressure beside the verdict. */
+  readonly figure?: Figure;
 }
 
 /** Positions, verdicts and strokes of the current row, by part. */
-export function partStates(circuit: Circuit): Map<string, PartState> {
+export function partStates(circuit: Circuit, assumed: Assumed): Map<string, PartState> {
   const states = new Map<string, PartState>();
   for (const input of session.inputs) {
     const position = session.positionOf(input.part);
@@ -20,19 +28,27 @@ export function partStates(circuit: Circuit): Map<string, PartState> {
   }
   const { table, row, conditions } = session;
   const known = new Set(circuit.parts.map((part) => part.id));
-  table?.data.actuators.forEach(({ part }, i) => {
+  const numbers = view.sheetFigures ? figures.current : undefined;
+  const solved = numbers?.status === 'solved' ? numbers : undefined;
+  const rests = table && solved ? speedsAssumed(assumed, table, solved) : [];
+  table?.data.actuators.forEach(({ part, motion }, i) => {
     if (!known.has(part)) return;
     const verdict = table.actuator(i, row);
+    const speed = solved && saySpeed(solved.actuators[i]?.speed ?? 0, motion, view.units);
     const place = conditions.places?.[part];
     states.set(part, {
       verdict,
       note: verdict,
       freeInward: table.actuatorNotes(i, row).includes('free inward'),
+      ...(speed !== undefined && { figure: { text: speed, assumed: rests[i] ?? true } }),
       ...(place && { stroke: place === 'in' ? 0 : 1 }),
     });
   });
   table?.data.pumps.forEach(({ part }, i) => {
-    if (known.has(part)) states.set(part, { pump: table.pump(i, row), note: table.pump(i, row) });
+    if (!known.has(part)) return;
+    const pressure = solved?.pumps[i]?.pressure;
+    const figure = pressure === undefined ? undefined : { text: sayPressure(pressure, view.units), assumed: assumed.anywhere };
+    states.set(part, { pump: table.pump(i, row), note: table.pump(i, row), ...(figure && { figure }) });
   });
   return states;
 }

@@ -11,11 +11,17 @@ import { placePrimitives } from '../../drawing/turned.ts';
 import { kindOf } from '../../parts/catalogue.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
+import { assumedIn } from '../state/assumed.ts';
+import type { Assumed } from '../state/assumed.ts';
+import { figures } from '../state/figures.svelte.ts';
 import { flowWays } from './flow-ways.ts';
 import type { HitMap } from './hit.ts';
 import { lineLook } from './looks.ts';
 import { partStates } from './part-states.ts';
 import type { PartState } from './part-states.ts';
+import { pressureSpots } from './pressure-spots.ts';
+import type { PressureSpot } from './pressure-spots.ts';
+import { realFlows } from './real-flows.ts';
 import { SheetRoutes } from './sheet-routes.ts';
 import { steadyList } from './steady.ts';
 
@@ -32,11 +38,24 @@ class SheetDrawing {
   #layer = new SheetRoutes();
   routes: Routes = $derived(this.#layer.of(this.circuit, this.preview !== undefined));
 
-  states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit));
+  /** Of the circuit that the figures belong to. */
+  assumed: Assumed = $derived(assumedIn(session.answer?.circuit ?? editor.circuit));
+
+  states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit, this.assumed));
 
   #ways = $derived.by(() => {
     const { circuit, pumpsRunning } = { circuit: editor.circuit, pumpsRunning: session.conditions.pumps === 'running' };
-    return flowWays(circuit, (part) => session.positionOf(part), pumpsRunning);
+    const positionOf = (part: string): number => session.positionOf(part);
+    const ways = flowWays(circuit, positionOf, pumpsRunning);
+    const { answer, table } = session;
+    const numbers = figures.current;
+    if (!answer || !table || numbers?.status !== 'solved') return ways;
+    // Where flows are computed they have the last word.
+    for (const [id, way] of realFlows(answer.circuit, table, numbers, positionOf)) {
+      if (way) ways.set(id, way);
+      else ways.delete(id);
+    }
+    return ways;
   });
 
   #steadyLines = steadyList<SceneLine>((line) => line.connection);
@@ -59,6 +78,12 @@ class SheetDrawing {
   });
 
   byId: ReadonlyMap<string, Part> = $derived(new Map(this.circuit.parts.map((part) => [part.id, part])));
+
+  /** Where the pressure of each line of the table is written; the same whatever the row. */
+  #rooms = $derived(this.scene.labelRooms);
+  pressureSpots: ReadonlyMap<number, PressureSpot> = $derived(
+    this.preview ? new Map() : pressureSpots(this.circuit, this.routes, this.#rooms, session.table?.data.lines ?? []),
+  );
 
   map: HitMap = $derived.by(() => ({
     parts: this.scene.parts.map((part) => ({ id: part.id, box: outline(part, this.byId.get(part.id)) })),

@@ -1,0 +1,29 @@
+import { lineAssumed } from '../state/assumed.ts';
+import type { Assumed } from '../state/assumed.ts';
+import { NEAR_NOTHING, sayPressure } from '../state/figure-texts.ts';
+import { figures } from '../state/figures.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { view } from '../state/view.svelte.ts';
+
+export interface LinePressure {
+  /** Index in the table. */
+  readonly line: number;
+  readonly text: string;
+  readonly assumed: boolean;
+}
+
+/**
+ * Pressures of the current row that are worth saying. In a line that is cut off only a load gives one: what an
+ * earlier state left behind, or heat may do, nobody can work out.
+ */
+export function linePressures(assumed: Assumed): LinePressure[] {
+  const { table, row } = session;
+  const numbers = figures.current;
+  if (!table || numbers?.status !== 'solved') return [];
+  return table.data.lines.flatMap((_, line) => {
+    const pressure = numbers.lines[line] ?? 0;
+    if (!(pressure >= NEAR_NOTHING)) return [];
+    if (table.line(line, row) === 'cut off' && !table.trapped(line, row).includes('load')) return [];
+    return [{ line, text: sayPressure(pressure, view.units), assumed: lineAssumed(assumed, table, line, row) }];
+  });
+}
