@@ -36,7 +36,7 @@ export class PathSolver {
     this.conditions = conditions;
     this.links = compileLinks(net, conditions.places);
     this.#orders = compileOrders(net, edges, this.links);
-    const maskCount = edges.masks.length + edges.pilots.length;
+    const maskCount = edges.masks.length + edges.pilots.length + edges.reliefs.length + edges.loadPilots.length;
     this.#spreader = new Spreader(
       net.lines.length,
       net.lines.map((line) => line.tank),

@@ -2,9 +2,11 @@ import type { Network } from '../../network/network.ts';
 import type { Chambers } from './chambers.ts';
 import type { EdgeSet } from './edges.ts';
 import type { Field, Spreader } from './field.ts';
-import { loadAgainst, set, word } from './motion-bits.ts';
+import { loadAgainst, pushes, REST_REASONS, set, word } from './motion-bits.ts';
 import type { Motion } from './motion-bits.ts';
 import type { PathConditions, Reach } from './reach.ts';
+
+const PRESSED_LINE = REST_REASONS.indexOf('pressed line');
 
 /**
  * Displaced oil: what a moving actuator pushes out may drive the next one, and so on. Adds those motions
@@ -22,9 +24,9 @@ export function driveByDisplaced(
   const pushed = s.field();
   const doubtful = anyRest(m.rests, width);
   const touched = new Uint8Array(net.lines.length);
+  pushByLoads();
   let moved = net.actuators.map((_, i) => i);
   while (moved.length > 0) {
-    touched.fill(0);
     const fresh = moved.flatMap((i) => {
       const { a, b } = net.actuators[i] as { a: number; b: number };
       return [pushOut(b, m.out[i] as Uint32Array), pushOut(a, m.in[i] as Uint32Array)].filter((line) => line >= 0);
@@ -32,8 +34,52 @@ export function driveByDisplaced(
     for (const line of fresh) touched[line] = 1;
     s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: fresh, touched });
     moved = net.actuators.flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) ? [i] : [])).filter(drive);
+    touched.fill(0);
   }
+  markRings();
   return pushed;
+
+  /** A load whose oil has no free way to tank may drive other actuators with it, if it is strong enough. */
+  function pushByLoads(): void {
+    const seeded: number[] = [];
+    net.actuators.forEach((actuator, i) => {
+      const ch = m.chambers[i] as Chambers;
+      for (const [way, line, exit, fed] of [
+        ['in', actuator.a, ch.exitA, m.fedA[i]],
+        ['out', actuator.b, ch.exitB, m.fedB[i]],
+      ] as const) {
+        if (line < 0 || pushes(actuator, way) === 0) continue;
+        const plane = new Uint32Array(width);
+        let any = 0;
+        for (let w = 0; w < width; w++) {
+          const bits = (exit[w] as number) & word(r.notFreeToTank, line, w, width) & ~(fed?.[w] as number);
+          plane[w] = bits;
+          any |= bits;
+          doubtful[w] = (doubtful[w] as number) | bits;
+        }
+        if (any !== 0 && pushOut(line, plane) >= 0) seeded.push(line);
+      }
+    });
+    if (seeded.length > 0) s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: seeded, touched });
+    for (const line of seeded) touched[line] = 1;
+  }
+
+  /** Oil forced back into a line under pressure may turn a whole ring of actuators. */
+  function markRings(): void {
+    const ring = new Uint32Array(width);
+    for (const rest of m.rests) {
+      const plane = rest[PRESSED_LINE] as Uint32Array;
+      for (let w = 0; w < width; w++) ring[w] = (ring[w] as number) | (plane[w] as number);
+    }
+    net.actuators.forEach(({ a, b }, i) => {
+      for (let w = 0; w < width; w++) {
+        const bits = ring[w] as number;
+        if (bits === 0) continue;
+        const under = word(r.underPressure, a, w, width) | (b < 0 ? 0 : word(r.underPressure, b, w, width));
+        set(m.rests[i] as readonly Uint32Array[], 'upstream', w, bits & under & ~(m.out[i]?.[w] as number) & ~(m.in[i]?.[w] as number));
+      }
+    });
+  }
 
   /** The line, if it got oil that it did not have yet. */
   function pushOut(line: number, motion: Uint32Array): number {

@@ -20,6 +20,13 @@ export interface EdgeSet {
   /** With the ways through valves that pressures may open; the same lists where there are none. */
   readonly valveForward: Adjacency;
   readonly valveBackward: Adjacency;
+  /**
+   * Relief valves that do not let out straight to a tank, with the mask of the states in which their
+   * outlet is not open to tank either: there they may drive something. The engine fills these masks.
+   */
+  readonly reliefs: readonly { readonly relief: number; readonly mask: number }[];
+  /** Lock checks that a load may hold open over their pilot line; the engine fills these masks too. */
+  readonly loadPilots: readonly { readonly line: number; readonly mask: number }[];
 }
 
 /** Edges `start[l] … start[l + 1] - 1` leave line l: they lead to `to`, open in mask `mask`. */
@@ -75,15 +82,23 @@ export function compileEdges(net: Network): EdgeSet {
   const turn = (edge: Edge): Edge => ({ ...edge, from: edge.to, to: edge.from });
   const reversed = edges.map(turn);
   const lines = net.lines.length;
-  const valves = net.valves
-    .filter((valve) => valve.duty !== 'closes')
-    .map(({ from, to }): Edge => ({ from, to, mask: 0, free: false }));
+  const reliefs = net.reliefs.flatMap(({ to }, relief) => (net.lines[to]?.tank ? [] : [relief])).map((relief, i) => ({ relief, mask: masks.length + pilots.length + i }));
+  const afterReliefs = masks.length + pilots.length + reliefs.length;
+  const loaded = net.actuators.some(({ push }) => push.way !== 'none');
+  const loadPilots = loaded ? pilots.map(({ line }, i) => ({ line, mask: afterReliefs + i })) : [];
+  const valves = [
+    ...loadPilots.map(({ mask }, i): Edge => ({ from: pilotEdges[i]?.from ?? 0, to: pilotEdges[i]?.to ?? 0, mask, free: false })),
+    ...net.valves.filter((valve) => valve.duty !== 'closes').map(({ from, to }): Edge => ({ from, to, mask: 0, free: false })),
+    ...reliefs.map(({ relief, mask }): Edge => ({ from: net.reliefs[relief]?.from ?? 0, to: net.reliefs[relief]?.to ?? 0, mask, free: false })),
+  ];
   const forward = adjacency(lines, edges);
   const backward = adjacency(lines, reversed);
   return {
     states,
     masks,
     pilots,
+    reliefs,
+    loadPilots,
     forward,
     backward,
     freeForward: adjacency(lines, edges.filter((edge) => edge.free)),

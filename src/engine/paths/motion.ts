@@ -71,7 +71,7 @@ export function findMotion(
         // Fed, let out, bled or let go only over a valve that pressures open.
         const viaValve =
           (a & ~goOut & wayOutB & notOut) | (b & ~goIn & wayOutA & notIn) |
-          (line(pressed, actuator.a) & ~a & wayOutB & notOut) | (line(pressed, actuator.b) & ~b & wayOutA & notIn) |
+          (line(pressed, actuator.a) & ~a & (wayOutB | (loopBA & ~equal)) & notOut) | (line(pressed, actuator.b) & ~b & wayOutA & notIn) |
           (goOut & wayOutA) | (goIn & line(exits, actuator.b)) |
           (pushes(actuator, 'in') & ~exitA & wayOutA & notIn) | (pushes(actuator, 'out') & ~exitB & wayOutB & notOut);
         set(rest, 'pressure valve', w, viaValve & ~balanced);

@@ -1,6 +1,7 @@
 import type { Network } from '../../network/network.ts';
 import type { EdgeSet } from './edges.ts';
 import { complement, orderFrom } from './field.ts';
+import { pushes } from './motion-bits.ts';
 import type { Field, Link, Spreader } from './field.ts';
 
 /** What holds for every state of a table. */
@@ -115,6 +116,7 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   s.spread(toTank, edges.backward, { fromTank: true, order: backFromTanks });
 
   const notFreeToTank = complement(freeToTank, s.masks, s.width);
+  const notToTank = complement(toTank, s.masks, s.width);
   const press = (from: number, adjacency: EdgeSet['forward']): Field => {
     const field = s.field();
     if (from < 0) return field;
@@ -153,6 +155,8 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   const exits = toTank.slice();
   takesOil(exits, -1);
   const softExits = exits.slice();
+  // Oil may also be forced into a line under pressure, by the ratio of areas.
+  or(softExits, anyPressed);
   s.spread(exits, edges.backward, { gate: notPressed, links: links.pull, order: backFromTanks });
   s.spread(softExits, edges.backward, { links: links.pull, order: backFromTanks });
   const freeExits = freeToTank.slice();
@@ -160,9 +164,19 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
   s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull, order: backFromTanks });
 
   let valves: Reach['valves'];
-  if (edges.valveForward !== edges.forward) {
+  for (const { relief, mask } of edges.reliefs) {
+    const to = net.reliefs[relief]?.to ?? 0;
+    s.setMask(mask, notToTank, to * s.width);
+  }
+  if (edges.loadPilots.length > 0) {
+    const pressedByLoad = loadedLines(net, conditions, s, notToTank);
+    s.spread(pressedByLoad, edges.forward, { gate: notToTank, links: links.push });
+    for (const { line, mask } of edges.loadPilots) s.setMask(mask, pressedByLoad, line * s.width);
+  }
+  const mayOpen = [...edges.reliefs, ...edges.loadPilots].some(({ mask }) => s.maskLive[mask] === 1);
+  if (net.valves.length > 0 || mayOpen) {
     const valveExits = softExits.slice();
-    s.spread(valveExits, edges.valveBackward, { links: links.pull });
+    s.spread(valveExits, edges.valveBackward, { links: links.pull, fromTank: true });
     const valvePressed = anyPressed.slice();
     s.spread(valvePressed, edges.valveForward, { gate: notFreeToTank, links: links.push });
     valves = { exits: valveExits, pressed: valvePressed };
@@ -191,8 +205,19 @@ export function reach(net: Network, edges: EdgeSet, links: Links, conditions: Pa
     valves,
     fills,
     plainFills,
-    notToTank: complement(toTank, s.masks, s.width),
+    notToTank,
   };
+}
+
+/** Chamber lines that a load or spring presses on at rest, where nothing lets them down. */
+function loadedLines(net: Network, conditions: PathConditions, s: Spreader, notToTank: Field): Field {
+  const field = s.field();
+  net.actuators.forEach((actuator, i) => {
+    if (pushes(actuator, 'in') !== 0 && conditions.places[i] !== 'in') s.seed(field, actuator.a);
+    if (pushes(actuator, 'out') !== 0 && conditions.places[i] !== 'out' && actuator.b >= 0) s.seed(field, actuator.b);
+  });
+  and(field, notToTank);
+  return field;
 }
 
 /** Lines that swallow oil by themselves: single-acting cylinders that can still go out, accumulators not yet full. */

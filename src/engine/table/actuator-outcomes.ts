@@ -96,6 +96,11 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     const tank = block.reach.toTank;
     const tankA = tank[actuator.a * width + w] as number;
     const tankB = actuator.b < 0 ? -1 : (tank[actuator.b * width + w] as number);
+    // Or against the back pressure of a pump that is open to tank.
+    const source = block.reach.fromSource;
+    const backA = source[actuator.a * width + w] as number;
+    const backB = actuator.b < 0 ? 0 : (source[actuator.b * width + w] as number);
+    decide(restsOnPressure, w, (movesIn & backA) | (movesOut & backB));
     decide(restsOnPressure, w, (opposed & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB));
     voidForms[w] = (decide(pushedOut, w, movesOut) & ~freeOut) | (decide(pushedIn, w, movesIn) & ~freeIn);
 
