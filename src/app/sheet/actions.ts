@@ -1,3 +1,4 @@
+import { union } from '../../base/points.ts';
 import { duplicate, flipParts, turnParts } from '../../circuit/build.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
@@ -14,13 +15,8 @@ import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
-import { fitTo, MODULE, panBy, reveal, zoomAt } from './viewport.ts';
-
-/** Pixels of the frame and the status line, which a fitted circuit keeps clear of. */
-const INSET = { left: 18, top: 18, right: 18, bottom: 48 } as const;
-
-/** Pixels kept free at the left of a fitted circuit. */
-const SPARE_LEFT = 80;
+import { coversOf, EDGE, fitClear } from './fit.ts';
+import { MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 
 /** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
 function goTo(cursor: Cursor): void {
@@ -210,18 +206,13 @@ export const sheetActions: SheetActions = {
   },
 
   fit() {
-    const { width, height } = desk.size;
     if (editor.circuit.parts.length === 0) {
       // An empty sheet begins at its first zone.
-      desk.viewport = { x: -INSET.left / MODULE, y: -INSET.top / MODULE, scale: MODULE };
+      desk.viewport = { x: -EDGE / MODULE, y: -EDGE / MODULE, scale: MODULE };
       return;
     }
-    const room = { width: Math.max(50, width - INSET.left - INSET.right), height: Math.max(50, height - INSET.top - INSET.bottom) };
-    const fitted = fitTo(drawing.scene.bounds, room, 2);
-    // Spare width goes to the right, where the panels stand.
-    const spare = (room.width / fitted.scale - drawing.scene.bounds.width) * fitted.scale;
-    const aside = Math.max(0, spare / 2 - SPARE_LEFT);
-    desk.viewport = panBy(fitted, INSET.left - aside, INSET.top);
+    const whole = union([drawing.scene.bounds, ...drawing.scene.labelRooms]) ?? drawing.scene.bounds;
+    desk.viewport = fitClear(whole, desk.size, coversOf(desk.host));
   },
 
   openTray() {

@@ -3,13 +3,13 @@ import type { ActuatorVerdict, TrapReason } from '../../worker/client.ts';
 import type { ConnectionLook } from '../state/session.svelte.ts';
 import type { FlowWay } from './flow-ways.ts';
 
-/** Reasons that give a pressure; what was left behind by an earlier state only may stand there. */
-const KNOWN: readonly TrapReason[] = ['load', 'stopped', 'stored'];
+/** Reasons for which pressure stands there now; heat only raises it once the oil warms up. */
+const KNOWN: readonly TrapReason[] = ['load', 'left behind', 'stopped', 'stored'];
 
-/** Heat alone is noted in words: a hatch on every shut line would hide the ones that hold pressure now. */
+/** Dense hatch for what stands there, sparse for heat alone. */
 export function trappedLook(reasons: readonly TrapReason[]): 'known' | 'possible' | undefined {
   if (reasons.some((reason) => KNOWN.includes(reason))) return 'known';
-  return reasons.includes('left behind') ? 'possible' : undefined;
+  return reasons.length > 0 ? 'possible' : undefined;
 }
 
 export function lineLook(look: ConnectionLook | undefined, way: FlowWay | undefined): LineLook {

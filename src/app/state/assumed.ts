@@ -98,5 +98,5 @@ export const restsOnValues = (table: StateTable, row: number): boolean =>
 export function lineAssumed(assumed: Assumed, table: StateTable, line: number, row: number): boolean {
   if (table.line(line, row) !== 'cut off') return assumed.anywhere;
   const ports = table.data.lines[line]?.ports ?? [];
-  return [...assumed.parts].some((part) => ports.some((port) => port.startsWith(`${part}.`)));
+  return [...assumed.sizes].some((part) => ports.some((port) => port.startsWith(`${part}.`)));
 }
