@@ -6,6 +6,7 @@ import { labelOf } from '../../circuit/model.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import { readyMadeOf } from '../../parts/catalogue.ts';
 import { editor } from '../state/editor.svelte.ts';
+import { withPlaces as keepPlaces } from '../state/places.ts';
 import type { Selection } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { recent } from '../tray/recent.svelte.ts';
@@ -95,7 +96,7 @@ export function previewShift(dx: number, dy: number): void {
     return;
   }
   const edit = tryTo(() => shift(editor.circuit, editor.selection, dx, dy));
-  drawing.preview = edit && applyEdit(editor.circuit, edit);
+  drawing.preview = edit && applyEdit(editor.circuit, keepPlaces(editor.circuit, edit));
 }
 
 export function commitShift(dx: number, dy: number, burst: string): void {

@@ -2,6 +2,7 @@ import type { Circuit } from '../../circuit/model.ts';
 import type { Edit } from '../../circuit/edit.ts';
 import { begin, canRedo, canUndo, commit, endBurst, isSaved, markSaved, redo, undo } from '../../circuit/history.ts';
 import type { History } from '../../circuit/history.ts';
+import { withPlaces } from './places.ts';
 
 /** What is picked on the sheet, by id. */
 export interface Selection {
@@ -41,7 +42,7 @@ class Editor {
 
   /** Apply an edit; edits with the same `burst`, one after another, are one undo. Throws `RefusedEdit`. */
   do(edit: Edit, burst?: string): void {
-    this.#history = commit(this.#history, edit, burst);
+    this.#history = commit(this.#history, withPlaces(this.circuit, edit), burst);
   }
 
   /** The next edit starts an undo step of its own. */

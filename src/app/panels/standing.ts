@@ -1,0 +1,49 @@
+import { formatQuantity } from '../../base/units.ts';
+import type { UnitSystem } from '../../base/units.ts';
+import { restsOnValues } from '../state/assumed.ts';
+import { sayPressure, saySpeed } from '../state/figure-texts.ts';
+import type { Subject } from '../state/session.svelte.ts';
+import type { Conditions, RowNumbers, StateTable } from '../../worker/client.ts';
+
+/** Verdicts that pressures never turn into one another: they follow from what is shut and what is open. */
+const BY_PATHS: ReadonlySet<string> = new Set(['held', 'held one way', 'floats', 'at stop', 'dead-headed', 'stopped']);
+
+/** What the verdict stands on: `Holds for any values, between its stops.` Undefined for lines. */
+export function sayStanding(table: StateTable, row: number, { of, key }: Subject, places: Conditions['places']): string | undefined {
+  if (of === 'line') return undefined;
+  const list = of === 'actuator' ? table.data.actuators : table.data.pumps;
+  const index = list.findIndex(({ part }) => part === key);
+  if (index < 0) return undefined;
+  const verdict = of === 'actuator' ? table.actuator(index, row) : table.pump(index, row);
+  const left = of === 'actuator' && table.actuatorRests(index, row).length > 0;
+  const rests = left || (restsOnValues(table, row) && !BY_PATHS.has(verdict));
+  const words = rests ? 'Rests on entered and assumed values' : 'Holds for any values';
+  if (of === 'pump' || table.data.actuators[index]?.motion === 'rotary') return `${words}.`;
+  const place = places?.[key];
+  return `${words}, ${place === undefined ? 'between its stops' : `at its ${place === 'in' ? 'inner' : 'outer'} stop`}.`;
+}
+
+/** The figures of the subject; the steps give them in metric units. */
+export function sayFigures(table: StateTable, numbers: RowNumbers, { of, key }: Subject, units: UnitSystem): string | undefined {
+  if (numbers.status !== 'solved') return undefined;
+  const flow = (si: number): string => formatQuantity(si, 'flow', units, { digits: 2 });
+  if (of === 'pump') {
+    const pump = numbers.pumps[table.data.pumps.findIndex(({ part }) => part === key)];
+    return pump && `${sayPressure(pump.pressure, units)}, ${flow(pump.delivered)}`;
+  }
+  if (of === 'line') {
+    const pressure = numbers.lines[table.data.lines.findIndex(({ name }) => name === key)];
+    return pressure === undefined ? undefined : sayPressure(pressure, units);
+  }
+  const index = table.data.actuators.findIndex(({ part }) => part === key);
+  const actuator = numbers.actuators[index];
+  const motion = table.data.actuators[index]?.motion;
+  if (!actuator || !motion) return undefined;
+  const sides = ['A', 'B'].flatMap((port) => {
+    const line = table.data.lines.findIndex(({ ports }) => ports.includes(`${key}.${port}`));
+    const pressure = numbers.lines[line];
+    return pressure === undefined ? [] : [`${port} ${sayPressure(pressure, units)}`];
+  });
+  const speed = saySpeed(actuator.speed, motion, units);
+  return [...(speed === undefined ? [] : [speed, flow(actuator.flow)]), ...sides].join(', ');
+}
