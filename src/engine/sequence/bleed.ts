@@ -1,17 +1,13 @@
 import type { Budget } from '../../base/budget.ts';
 import { Cancelled, unlimited } from '../../base/budget.ts';
 import type { Network } from '../../network/network.ts';
-import { compileEdges } from '../paths/edges.ts';
-import { compileLinks } from '../paths/reach.ts';
-import type { EdgeSet } from '../paths/edges.ts';
-import type { Links, PathConditions } from '../paths/reach.ts';
-import { reasonsFor, RunningRows, stridesOf } from './bleed-start.ts';
+import { BleedModel } from './bleed-model.ts';
+import { reasonsFor } from './bleed-start.ts';
 import type { HeldReason } from './bleed-start.ts';
 import { cautionsOf, weightOf } from './cautions.ts';
 import type { MoveCaution, Standing } from './cautions.ts';
-import { initialHeld, keyOf, settle } from './pressure-state.ts';
+import { keyOf } from './pressure-state.ts';
 import type { Held } from './pressure-state.ts';
-import { linesNeverOpen, RowPathsCache } from './row-paths.ts';
 
 /** One move of one lever; rows and lines by their index. */
 export interface BleedMove {
@@ -61,49 +57,57 @@ interface Node extends Standing {
   readonly left: number;
 }
 
-/** Everything that stays the same while pressure is let down, worked out once per circuit. */
-export class BleedModel {
-  readonly net: Network;
-  readonly conditions: PathConditions;
-  readonly links: Links;
-  readonly running: RunningRows;
-  /** Pumps stopped. */
-  readonly paths: RowPathsCache;
-  readonly strides: readonly number[];
-  readonly states: number;
-  readonly #edges: EdgeSet;
-  #never: Uint8Array | undefined;
-
-  constructor(net: Network, conditions: PathConditions) {
-    const edges = compileEdges(net);
-    this.net = net;
-    this.conditions = conditions;
-    this.links = compileLinks(net, conditions.places);
-    this.running = new RunningRows(net, edges, conditions);
-    this.paths = new RowPathsCache(net, edges, false);
-    this.strides = stridesOf(net);
-    this.states = edges.states;
-    this.#edges = edges;
-  }
-
-  /** The machine ran in this row, and its pumps have just stopped. */
-  before(row: number): Held {
-    const lines = this.running.under(row);
-    for (const left of this.running.leftBehind(row)) left.lines.forEach((on, line) => on === 1 && (lines[line] = 1));
-    return initialHeld(this.net, this.conditions, lines);
-  }
-
-  stand(row: number, before: Held): Standing {
-    const paths = this.paths.at(row);
-    return { row, paths, held: settle(this.net, this.links, paths, before) };
-  }
-
-  /** 1 = no combination of positions opens this line to tank. */
-  neverOpen(): Uint8Array {
-    this.#never ??= linesNeverOpen(this.net, this.#edges, this.conditions);
-    return this.#never;
-  }
+/** The plan again with bleed valves standing open, where the levers alone leave pressure. */
+export interface PointPlan {
+  /** Shown lines on which a bleed valve is opened first. */
+  readonly points: readonly number[];
+  /** What moves or empties when they are opened. */
+  readonly opening: readonly MoveCaution[];
+  /** Shown lines that still hold pressure then. */
+  readonly held: readonly number[];
+  readonly moves: readonly BleedMove[];
+  readonly left: BleedPlan['left'];
+  readonly proven: boolean;
 }
+
+/**
+ * What the levers do once bleed valves stand open on the lines that no lever opens to tank; if pressure
+ * is left even so, also on the lines that it is left in. Undefined where the levers do it alone.
+ */
+export function planWithPoints(model: BleedModel, plan: BleedPlan, options: BleedOptions = {}): PointPlan | undefined {
+  if (plan.left.length === 0) return undefined;
+  const { net } = model;
+  const never = model.neverOpen();
+  const unopened = plan.start.map(({ line }) => line).filter((line) => never[line] === 1);
+  const stood = model.stand(plan.row, model.before(plan.row));
+  const planWith = (wanted: readonly number[]): PointPlan => {
+    const points = [...new Set(wanted)].sort((a, b) => a - b);
+    const open = new BleedModel(net, model.conditions, points);
+    const first = open.stand(plan.row, stood.held);
+    const { best, proven } = search(open, rootOf(net, first), options);
+    return {
+      points,
+      opening: cautionsOf(net, undefined, stood.held, first, -1, -1),
+      held: listHeld(net, first.held),
+      moves: movesTo(open, best),
+      left: leftLines(open, best.held),
+      proven,
+    };
+  };
+  const some = unopened.length > 0 ? planWith(unopened) : undefined;
+  if (some?.left.length === 0) return some;
+  return planWith([...unopened, ...plan.left.map(({ line }) => line), ...(some?.left ?? []).map(({ line }) => line)]);
+}
+
+const rootOf = (net: Network, first: Standing): Node => ({
+  ...first,
+  depth: 0,
+  weight: 0,
+  from: undefined,
+  input: -1,
+  position: -1,
+  left: shownHeld(net, first.held),
+});
 
 /**
  * The shortest list of lever moves after which no shown line holds pressure, the pumps being stopped in
@@ -116,15 +120,7 @@ export function planBleed(model: BleedModel, row: number, options: BleedOptions 
   if (!Number.isInteger(row) || row < 0 || row >= model.states) throw new RangeError(`there is no row ${row + 1}`);
   const initial = model.before(row);
   const first = model.stand(row, initial);
-  const root: Node = {
-    ...first,
-    depth: 0,
-    weight: 0,
-    from: undefined,
-    input: -1,
-    position: -1,
-    left: shownHeld(net, first.held),
-  };
+  const root = rootOf(net, first);
   const found = search(model, root, options);
   const moves = movesTo(model, found.best);
   return {

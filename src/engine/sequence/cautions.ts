@@ -5,11 +5,19 @@ import type { RowPaths } from './row-paths.ts';
 
 /** What has to be known before a lever is moved. Numbers are indices in the network. */
 export type MoveCaution =
-  /** A load or spring that pressed on this side comes down: its line is opened to tank. */
-  | { readonly kind: 'drop'; readonly actuator: number; readonly way: 'in' | 'out'; readonly by: 'load' | 'spring' }
+  /** A load or spring that pressed on this side comes down: its line is opened to tank. `slow`: only through the leakage of a stopped pump. */
+  | {
+      readonly kind: 'drop';
+      readonly actuator: number;
+      readonly way: 'in' | 'out';
+      readonly by: 'load' | 'spring';
+      readonly slow: boolean;
+    }
   /** Stored oil reaches one side while the other lets out. */
   | { readonly kind: 'driven'; readonly actuator: number; readonly way: 'in' | 'out' }
   | { readonly kind: 'discharge'; readonly accumulator: number }
+  /** Lines that lose their pressure only through the leakage of a stopped pump. */
+  | { readonly kind: 'leak'; readonly lines: readonly number[] }
   /** Lines that had no pressure get some. */
   | { readonly kind: 'spread'; readonly lines: readonly number[] }
   /** The valve is moved by a coil: it needs the control voltage. */
@@ -34,18 +42,17 @@ export function cautionsOf(
   position: number,
 ): MoveCaution[] {
   const found: MoveCaution[] = [];
-  const { held } = after;
-  const { toTank } = settleTank(net, after.paths, start.stores);
+  const { held, paths } = after;
+  const { toTank } = settleTank(net, paths, start.stores);
+  const tankBefore = before && settleTank(net, before.paths, before.held.stores).toTank;
+  const slow = (line: number): boolean => paths.toTank[line] === 1 && paths.firm[line] === 0;
   start.pressed.forEach((on, side) => {
-    if (on !== 1 || toTank[sideLine(net, side)] !== 1) return;
-    if (
-      before &&
-      held.pressed[side] === 1 &&
-      settleTank(net, before.paths, before.held.stores).toTank[sideLine(net, side)] === 1
-    )
-      return;
+    const line = sideLine(net, side);
+    if (on !== 1 || toTank[line] !== 1) return;
+    // It hangs on suction since an earlier move.
+    if (held.pressed[side] === 1 && tankBefore?.[line] === 1) return;
     const by = net.actuators[side >> 1]?.push.by ?? 'load';
-    found.push({ kind: 'drop', actuator: side >> 1, way: side % 2 === 0 ? 'in' : 'out', by });
+    found.push({ kind: 'drop', actuator: side >> 1, way: side % 2 === 0 ? 'in' : 'out', by, slow: slow(line) });
   });
   const now = drivenSides(net, after, start);
   const earlier = before ? drivenSides(net, before, before.held) : new Set<number>();
@@ -57,8 +64,10 @@ export function cautionsOf(
   });
   const spec = net.inputs[input];
   if (spec?.by === 'coupling' && touchesPressure(net, spec, start)) found.push({ kind: 'coupling', input });
-  const fresh: number[] = [];
-  for (let line = 0; line < net.shown; line++) if (held.lines[line] === 1 && start.lines[line] === 0) fresh.push(line);
+  const shown = Array.from({ length: net.shown }, (_, line) => line);
+  const leaking = shown.filter((line) => start.lines[line] === 1 && held.lines[line] === 0 && slow(line));
+  if (leaking.length > 0) found.push({ kind: 'leak', lines: leaking });
+  const fresh = shown.filter((line) => held.lines[line] === 1 && start.lines[line] === 0);
   if (before && fresh.length > 0) found.push({ kind: 'spread', lines: fresh });
   if (spec?.coils.some((coil) => coil.position === position)) found.push({ kind: 'coil', input });
   return found;
@@ -98,5 +107,6 @@ function touchesPressure(net: Network, { part }: NetInput, held: Held): boolean 
 /** Among equally short lists the one with the least of this is taken: what falls counts most. */
 export function weightOf(cautions: readonly MoveCaution[]): number {
   const fall = cautions.filter(({ kind }) => kind === 'drop' || kind === 'driven').length;
-  return 1000 * fall + cautions.length;
+  const slow = cautions.filter((caution) => caution.kind === 'drop' && caution.slow).length;
+  return 1000 * fall + 500 * slow + cautions.length;
 }

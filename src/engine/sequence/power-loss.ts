@@ -1,5 +1,5 @@
 import { settle } from './pressure-state.ts';
-import type { BleedModel } from './bleed.ts';
+import type { BleedModel } from './bleed-model.ts';
 import { cautionsOf } from './cautions.ts';
 import type { MoveCaution } from './cautions.ts';
 import { RowPathsCache } from './row-paths.ts';

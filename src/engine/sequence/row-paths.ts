@@ -12,6 +12,8 @@ export interface RowPaths {
   readonly pilots: readonly PilotWay[];
   /** 1 = an open path leads from this line to tank, or through a stopped pump that leaks. */
   readonly toTank: Uint8Array;
+  /** The same without the leakage of pumps, which lets pressure down slowly. */
+  readonly firm: Uint8Array;
   /** 1 = a chamber on this line can fill from tank. */
   readonly fills: Uint8Array;
 }
@@ -24,16 +26,21 @@ export interface PilotWay {
   readonly to: number;
 }
 
-/** Open paths row by row, each worked out once. `pumpsRunning` false: pumps that are not tight leak their outlet down. */
+/**
+ * Open paths row by row, each worked out once. `pumpsRunning` false: pumps that are not tight leak their
+ * outlet down. `points`: lines with a bleed valve that stands open.
+ */
 export class RowPathsCache {
   readonly net: Network;
   readonly edges: EdgeSet;
   readonly #leaking: readonly number[];
+  readonly #ends: readonly number[];
   readonly #rows = new Map<number, RowPaths>();
 
-  constructor(net: Network, edges: EdgeSet, pumpsRunning: boolean) {
+  constructor(net: Network, edges: EdgeSet, pumpsRunning: boolean, points: readonly number[] = []) {
     this.net = net;
     this.edges = edges;
+    this.#ends = [...tankLines(net), ...points];
     this.#leaking = pumpsRunning ? [] : net.pumps.flatMap((pump) => (pump.tightWhenStopped ? [] : [pump.outlet]));
   }
 
@@ -47,13 +54,16 @@ export class RowPathsCache {
 
   #make(row: number): RowPaths {
     const { net, edges } = this;
-    const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
     const onward = openEdges(edges.forward, edges, row);
-    const toTank = mark(openEdges(edges.backward, edges, row), [...tanks, ...this.#leaking], net);
-    const fills = mark(onward, tanks, net);
-    return { onward, pilots: pilotWays(edges, row), toTank, fills };
+    const back = openEdges(edges.backward, edges, row);
+    const firm = mark(back, this.#ends, net);
+    const toTank = this.#leaking.length === 0 ? firm : mark(back, [...this.#ends, ...this.#leaking], net);
+    const fills = mark(onward, tankLines(net), net);
+    return { onward, pilots: pilotWays(edges, row), toTank, firm, fills };
   }
 }
+
+const tankLines = (net: Network): number[] => net.lines.flatMap((line, index) => (line.tank ? [index] : []));
 
 function openEdges(list: Adjacency, edges: EdgeSet, row: number): number[][] {
   const lines = list.start.length - 1;
@@ -106,11 +116,16 @@ const MOST_WORDS = 16_384;
 
 /**
  * 1 = no combination of positions opens this line to tank, the pumps being stopped. Past half a million
- * rows a line counts as opened where its paths would lead to tank with every lever in its best position.
+ * rows, or with bleed valves on `points`, a line counts as opened where its paths would lead to tank with every lever in its best position.
  */
-export function linesNeverOpen(net: Network, edges: EdgeSet, conditions: PathConditions): Uint8Array {
+export function linesNeverOpen(
+  net: Network,
+  edges: EdgeSet,
+  conditions: PathConditions,
+  points: readonly number[],
+): Uint8Array {
   const words = wordsFor(edges.states);
-  if (words > MOST_WORDS) return neverConnected(net, edges);
+  if (words > MOST_WORDS || points.length > 0) return neverConnected(net, edges, points);
   const never = new Uint8Array(net.lines.length).fill(1);
   const solver = new PathSolver(net, edges, { ...conditions, pumpsRunning: false }, Math.min(BLOCK, words));
   for (let at = 0; at < words; at += BLOCK) {
@@ -122,11 +137,10 @@ export function linesNeverOpen(net: Network, edges: EdgeSet, conditions: PathCon
   return never;
 }
 
-function neverConnected(net: Network, { backward }: EdgeSet): Uint8Array {
+function neverConnected(net: Network, { backward }: EdgeSet, points: readonly number[]): Uint8Array {
   const next = Array.from({ length: net.lines.length }, (_, line) => [
     ...backward.to.subarray(backward.start[line], backward.start[line + 1]),
   ]);
   const leaking = net.pumps.flatMap((pump) => (pump.tightWhenStopped ? [] : [pump.outlet]));
-  const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
-  return mark(next, [...tanks, ...leaking], net).map((on) => 1 - on);
+  return mark(next, [...tankLines(net), ...points, ...leaking], net).map((on) => 1 - on);
 }

@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { networkOf } from '../../../src/analysis/analyse.ts';
 import type { Circuit } from '../../../src/circuit/model.ts';
-import { BleedModel, planBleed } from '../../../src/engine/sequence/bleed.ts';
+import { BleedModel } from '../../../src/engine/sequence/bleed-model.ts';
+import { planBleed } from '../../../src/engine/sequence/bleed.ts';
 import type { Held } from '../../../src/engine/sequence/pressure-state.ts';
 import { randomCircuit } from '../../random-circuit.ts';
 import { randomMachine } from './random-machine.ts';
@@ -38,7 +39,11 @@ function compare(circuit: Circuit, pick: number, count: Count): void {
   const fewest = fewestLeft(net, now, MOVES);
   for (const move of plan.moves) {
     const before = shownOf(net, now);
+    const { pressed } = now;
     now = tell(net, move.row, now);
+    const down = [...pressed].filter((side) => !now.pressed.has(side)).map((side) => parseInt(side, 10));
+    const told = move.cautions.flatMap((caution) => (caution.kind === 'drop' ? [caution.actuator] : []));
+    expect(told).toEqual(expect.arrayContaining(down));
     expect(move.held).toEqual(shownOf(net, now));
     expect(move.vents).toEqual(before.filter((line) => !move.held.includes(line)));
   }
