@@ -24,6 +24,8 @@ export function driveByDisplaced(
   const pushed = s.field();
   const doubtful = anyRest(m.rests, width);
   const touched = new Uint8Array(net.lines.length);
+  /** States in which its load pushes oil out of it: its own oil does not drive it back. */
+  const yielding = net.actuators.map(() => new Uint32Array(width));
   pushByLoads();
   let moved = net.actuators.map((_, i) => i);
   while (moved.length > 0) {
@@ -55,6 +57,8 @@ export function driveByDisplaced(
           const bits = (exit[w] as number) & word(r.notFreeToTank, line, w, width) & ~(fed?.[w] as number);
           plane[w] = bits;
           any |= bits;
+          const yields = yielding[i] as Uint32Array;
+          yields[w] = (yields[w] as number) | bits;
           doubtful[w] = (doubtful[w] as number) | bits;
         }
         if (any !== 0 && pushOut(line, plane) >= 0) seeded.push(line);
@@ -95,6 +99,15 @@ export function driveByDisplaced(
     return grown === 0 ? -1 : line;
   }
 
+  /** States in which some other actuator pushes oil out. */
+  function othersPush(i: number, w: number): number {
+    let bits = 0;
+    for (let j = 0; j < net.actuators.length; j++) {
+      if (j !== i) bits |= (yielding[j]?.[w] as number) | (m.out[j]?.[w] as number) | (m.in[j]?.[w] as number);
+    }
+    return bits;
+  }
+
   function drive(i: number): boolean {
     const actuator = net.actuators[i] as Network['actuators'][number];
     const ch = m.chambers[i] as Chambers;
@@ -104,7 +117,7 @@ export function driveByDisplaced(
     const against = loadAgainst(actuator);
     let grown = 0;
     for (let w = 0; w < width; w++) {
-      const moving = (out[w] as number) | (inward[w] as number);
+      const moving = (out[w] as number) | (inward[w] as number) | ((yielding[i]?.[w] as number) & ~othersPush(i, w));
       const a = word(pushed, actuator.a, w, width) & ~(m.fedA[i]?.[w] as number) & ~moving;
       const b = actuator.b < 0 ? 0 : word(pushed, actuator.b, w, width) & ~(m.fedB[i]?.[w] as number) & ~moving;
       const goOut = place === 'out' ? 0 : a & ~b & (ch.exitB[w] as number);

@@ -50,13 +50,18 @@ export function enclosing(state: OneState, line: number, except: number): Step {
       const part = state.net.parts.findIndex((entry) => entry.id === port.slice(0, dot));
       const paths = state.net.paths.filter((path) => path.part === part && (path.from === here || path.to === here));
       const leaves = state.hops.some((hop) => hop.path.part === part && hop.from === here && inside.has(hop.to) && hop.to !== here);
-      if (part === except || paths.length === 0 || leaves) continue;
+      const actuator = part !== except && state.net.actuators.some((entry) => entry.part === part);
+      if (part === except || (paths.length === 0 && !actuator) || leaves) continue;
       const ports = walls.get(part) ?? new Set<string>();
       ports.add(port.slice(dot + 1));
       walls.set(part, ports);
     }
   }
-  const said = [...walls].map(([part, ports]) => `${partInState(state, part)} shuts ${[...ports].join(' and ')}`);
+  const said = [...walls].map(([part, ports]) =>
+    state.net.actuators.some((entry) => entry.part === part)
+      ? `it ends at ${[...ports].join(' and ')} of ${partLabel(state, part)}`
+      : `${partInState(state, part)} shuts ${[...ports].join(' and ')}`,
+  );
   const text =
     said.length > 0
       ? `${lineName(state, line)} is shut in: ${said.join('; ')}.`
