@@ -1,4 +1,3 @@
-import { union } from '../../base/points.ts';
 import { duplicate, flipParts, turnParts } from '../../circuit/build.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
@@ -15,7 +14,7 @@ import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
-import { coversOf, EDGE, fitClear } from './fit.ts';
+import { coversOf, EDGE, fitClear, itemsOf } from './fit.ts';
 import { MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 
 /** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
@@ -211,8 +210,7 @@ export const sheetActions: SheetActions = {
       desk.viewport = { x: -EDGE / MODULE, y: -EDGE / MODULE, scale: MODULE };
       return;
     }
-    const whole = union([drawing.scene.bounds, ...drawing.scene.labelRooms]) ?? drawing.scene.bounds;
-    desk.viewport = fitClear(whole, desk.size, coversOf(desk.host));
+    desk.viewport = fitClear(itemsOf(drawing.scene), desk.size, coversOf(desk.host));
   },
 
   openTray() {

@@ -1,5 +1,8 @@
+import { union } from '../../base/points.ts';
 import type { Box } from '../../base/points.ts';
-import { overlaps } from '../../drawing/geometry.ts';
+import { boxOfPoints, overlaps } from '../../drawing/geometry.ts';
+import { labelBox } from '../../drawing/labels.ts';
+import type { Scene } from '../../drawing/scene.ts';
 import { fitTo, toScreen } from './viewport.ts';
 import type { Size, Viewport } from './viewport.ts';
 
@@ -11,15 +14,16 @@ const MARGIN = 1;
 const ASIDE = 90;
 
 /**
- * Show all of `box` as large as can be, in the part of the sheet that nothing covers. `covers`: boxes of open panels
- * and other furniture on the sheet, in its pixels. Where some must be covered, the larger picture wins.
+ * Show all of `items` as large as can be, none of them under a cover. `covers`: boxes of open panels and other
+ * furniture on the sheet, in its pixels. Where some must be covered, the larger picture wins.
  */
-export function fitClear(box: Box, size: Size, covers: readonly Box[]): Viewport {
+export function fitClear(items: readonly Box[], size: Size, covers: readonly Box[]): Viewport {
+  const box = union(items) ?? { x: 0, y: 0, width: 80, height: 50 };
   const whole = { x: EDGE, y: EDGE, width: size.width - 2 * EDGE, height: size.height - 2 * EDGE };
-  const tries = roomsOf(whole, covers).map((room) => within(box, room, covers));
+  const tries = roomsOf(whole, covers).map((room) => within(box, items, room, covers));
   tries.sort((p, q) => p.covered - q.covered || q.view.scale - p.view.scale);
   const clear = tries[0]?.view;
-  const large = within(box, whole, []).view;
+  const large = within(box, items, whole, []).view;
   // Half the size is too dear a price for a panel that can be moved.
   return clear && clear.scale >= 0.7 * large.scale ? clear : large;
 }
@@ -40,12 +44,12 @@ function roomsOf(whole: Box, covers: readonly Box[]): Box[] {
 
 interface Try {
   readonly view: Viewport;
-  /** Covers that the circuit lies under. */
+  /** Parts, names and runs of lines that lie under a cover. */
   readonly covered: number;
 }
 
 /** In a corner, or the middle, of the room: where the fewest covers are. */
-function within(box: Box, room: Box, covers: readonly Box[]): Try {
+function within(box: Box, items: readonly Box[], room: Box, covers: readonly Box[]): Try {
   const fitted = fitTo(box, room, MARGIN);
   const { scale } = fitted;
   const spare = { x: room.width - (box.width + 2 * MARGIN) * scale, y: room.height - (box.height + 2 * MARGIN) * scale };
@@ -57,9 +61,8 @@ function within(box: Box, room: Box, covers: readonly Box[]): Try {
       x: box.x - MARGIN - (room.x + dx) / scale,
       y: box.y - MARGIN - (room.y + dy) / scale,
     };
-    const from = toScreen(view, box);
-    const shown = { ...from, width: box.width * scale, height: box.height * scale };
-    const covered = covers.filter((cover) => overlaps(cover, shown)).length;
+    const shown = items.map((item) => ({ ...toScreen(view, item), width: item.width * scale, height: item.height * scale }));
+    const covered = covers.reduce((sum, cover) => sum + shown.filter((item) => overlaps(cover, item)).length, 0);
     if (!best || covered < best.covered) best = { view, covered };
   }
   return best as Try;
@@ -75,3 +78,11 @@ export function coversOf(host: HTMLElement | undefined): Box[] {
     return width > 0 && overlaps(box, { x: 0, y: 0, width: sheet.width, height: sheet.height }) ? [box] : [];
   });
 }
+
+/** Boxes of everything that is drawn, with room for what a state may say beside a name; runs of lines have no width. */
+export const itemsOf = (scene: Scene): Box[] => [
+  ...scene.parts.map(({ box }) => box),
+  ...scene.labelRooms,
+  ...scene.labels.filter(({ role }) => role === 'free').map(labelBox),
+  ...scene.lines.flatMap(({ points }) => points.slice(1).flatMap((b, i) => boxOfPoints([points[i] ?? b, b]) ?? [])),
+];

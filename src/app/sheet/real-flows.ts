@@ -2,7 +2,6 @@ import type { Circuit, PortRef } from '../../circuit/model.ts';
 import { kindOf } from '../../parts/catalogue.ts';
 import type { PathElement } from '../../parts/contract.ts';
 import type { RowNumbers, StateTable } from '../../worker/client.ts';
-import type { FlowWay } from './flow-ways.ts';
 
 /** What `rated` stands for where a path gives none: m³/s at Pa. */
 const RATED = { flow: 1e-3, drop: 5e5 };
@@ -13,9 +12,15 @@ const LOST = 0.25;
 /** Pa: less says nothing about the way. */
 const LEVEL = 50;
 
+/** m³/s through a connection from its `from` end, and what counts as still in its line. */
+export interface RealFlow {
+  readonly flow: number;
+  readonly still: number;
+}
+
 /**
  * Which way oil runs through each connection of the lines that lead to tank, from the pressures and speeds of the
- * row: what every port takes out of its line or puts into it, summed along the line. Undefined = it stands still.
+ * row: what every port takes out of its line or puts into it, summed along the line.
  * A line whose ports do not add up, because a part passes oil in a way not known here, is left out.
  */
 export function realFlows(
@@ -23,11 +28,11 @@ export function realFlows(
   table: StateTable,
   numbers: RowNumbers,
   positionOf: (part: string) => number,
-): Map<string, FlowWay | undefined> {
+): Map<string, RealFlow> {
   const lineOf = new Map<string, number>();
   table.data.lines.forEach(({ ports }, line) => ports.forEach((port) => lineOf.set(port, line)));
   const { into, tanks } = portFlows(circuit, table, numbers, lineOf, positionOf);
-  const out = new Map<string, FlowWay | undefined>();
+  const out = new Map<string, RealFlow>();
   const byId = new Map(circuit.connections.map((each) => [each.id, each]));
   table.data.lines.forEach(({ ports, connections }, line) => {
     if (table.line(line, numbers.row) !== 'flows to tank') return;
@@ -41,8 +46,8 @@ export function realFlows(
     if (most === 0) return;
     const drawn = connections.flatMap((id) => byId.get(id) ?? []);
     for (const { id, from } of drawn) {
-      const before = reached(drawn, id, from).reduce((all, port) => all + (flows.get(port) ?? 0), 0);
-      out.set(id, Math.abs(before) <= STILL * most ? undefined : before > 0 ? 'forward' : 'backward');
+      const flow = reached(drawn, id, from).reduce((all, port) => all + (flows.get(port) ?? 0), 0);
+      out.set(id, { flow, still: STILL * most });
     }
   });
   return out;

@@ -21,7 +21,9 @@ import { partStates } from './part-states.ts';
 import type { PartState } from './part-states.ts';
 import { pressureSpots } from './pressure-spots.ts';
 import type { PressureSpot } from './pressure-spots.ts';
+import { trueChevrons } from './chevrons.ts';
 import { realFlows } from './real-flows.ts';
+import type { RealFlow } from './real-flows.ts';
 import { SheetRoutes } from './sheet-routes.ts';
 import { steadyList } from './steady.ts';
 
@@ -43,18 +45,18 @@ class SheetDrawing {
 
   states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit, this.assumed));
 
-  #ways = $derived.by(() => {
-    const { circuit, pumpsRunning } = { circuit: editor.circuit, pumpsRunning: session.conditions.pumps === 'running' };
-    const positionOf = (part: string): number => session.positionOf(part);
-    const ways = flowWays(circuit, positionOf, pumpsRunning);
+  /** Where flows are computed they have the last word. */
+  #flows: ReadonlyMap<string, RealFlow> = $derived.by(() => {
     const { answer, table } = session;
     const numbers = figures.current;
-    if (!answer || !table || numbers?.status !== 'solved') return ways;
-    // Where flows are computed they have the last word.
-    for (const [id, way] of realFlows(answer.circuit, table, numbers, positionOf)) {
-      if (way) ways.set(id, way);
-      else ways.delete(id);
-    }
+    if (!answer || !table || numbers?.status !== 'solved') return new Map();
+    return realFlows(answer.circuit, table, numbers, (part) => session.positionOf(part));
+  });
+
+  #ways = $derived.by(() => {
+    const ways = flowWays(editor.circuit, (part) => session.positionOf(part), session.conditions.pumps === 'running');
+    // Marks are laid all along these, and then turned or left out one by one.
+    for (const id of this.#flows.keys()) ways.set(id, 'forward');
     return ways;
   });
 
@@ -71,7 +73,7 @@ class SheetDrawing {
     const scene = buildScene(circuit, routes, state);
     return {
       ...scene,
-      lines: this.#steadyLines(scene.lines),
+      lines: this.#steadyLines(trueChevrons(scene.lines, routes, this.#flows)),
       parts: this.#steadyParts(scene.parts),
       labels: this.#steadyLabels(scene.labels),
     };
