@@ -10,7 +10,7 @@ import {
   valveBox,
 } from './pressure-valve.ts';
 import { readSi, readSwitch, switchSetting } from './settings.ts';
-import { arrow, boxOf, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
+import { boxOf, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
 
 const SETTING = pressureSetting(
   'Outlet pressure, over the drain, at which the way from P to A is fully shut.',
@@ -92,8 +92,10 @@ export const reducingValve: PartKind = {
       ...valveBox(5, false),
       stroke('pilot', ...(bypass ? [] : ([[0, 3]] as const)), [-3, 3], [-3, 0], [-2, 0]),
       ...(bypass ? [dot('symbol', [-3, 3])] : []),
-      // The way that relieving opens leads from the outlet to the drain, off the axis.
-      ...(readSwitch(part, RELIEVING) ? arrow('fine', [0.6, 2], [2, 0.9], 0.7, 0.5) : []),
+      // The third way, from the outlet to the drain, stands shut at rest.
+      ...(readSwitch(part, RELIEVING)
+        ? [stroke('fine', [1.1, 0.9], [1.1, 1.7]), stroke('fine', [1.1, 1.3], [3, 1.3])]
+        : []),
       stroke('pilot', [3, 1], [3, 5]),
       ...adjustableSpring(),
     ];
