@@ -1,0 +1,20 @@
+import type { ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, TrapReason } from '../words.ts';
+
+/** What can hold or not hold in a combination. Items are numbered as in the table. */
+export type Condition =
+  | { readonly type: 'every' | 'any'; readonly of: readonly Condition[] }
+  | { readonly type: 'not'; readonly of: Condition }
+  /** The input stands in one of `positions` (bit p = position p). */
+  | { readonly type: 'position'; readonly input: number; readonly positions: number }
+  | { readonly type: 'actuator'; readonly actuator: number; readonly verdicts: readonly ActuatorVerdict[] }
+  | { readonly type: 'pump'; readonly pump: number; readonly verdicts: readonly PumpVerdict[] }
+  | { readonly type: 'line'; readonly line: number; readonly classes: readonly LineClass[] }
+  | { readonly type: 'blocked'; readonly line: number; readonly kinds: readonly BlockedKind[] }
+  | { readonly type: 'trapped'; readonly line: number; readonly reasons: readonly TrapReason[] };
+
+export interface Rule {
+  /** As it was typed. */
+  readonly text: string;
+  /** Holds where the rule is broken. */
+  readonly breaks: Condition;
+}

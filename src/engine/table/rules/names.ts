@@ -1,0 +1,54 @@
+import type { Network } from '../../../network/network.ts';
+import type { TableData } from '../table-data.ts';
+
+/** The names that a rule may use, numbered as in the table. */
+export interface Names {
+  readonly inputs: readonly {
+    readonly label: string;
+    readonly positions: readonly string[];
+    readonly rest?: number;
+    readonly coils: readonly { readonly name: string; readonly position: number }[];
+  }[];
+  readonly actuators: readonly { readonly label: string; readonly motion: 'linear' | 'rotary' }[];
+  readonly pumps: readonly { readonly label: string }[];
+  readonly lines: readonly { readonly name: string }[];
+}
+
+export type NamedKind = 'valve' | 'coil' | 'actuator' | 'pump' | 'line';
+
+export interface Named {
+  readonly kind: NamedKind;
+  readonly name: string;
+  /** Number of the input, actuator, pump or line. */
+  readonly index: number;
+  /** Coils: the position that the coil holds. */
+  readonly position: number;
+}
+
+/** Names of a circuit too large for a table. */
+export function namesOfNetwork(net: Network): Names {
+  const label = (part: number): string => net.parts[part]?.label ?? '';
+  return {
+    inputs: net.inputs.map(({ part, positions, rest, coils }) => ({ label: label(part), positions, coils, ...(rest === undefined ? {} : { rest }) })),
+    actuators: net.actuators.map(({ part, rotary }) => ({ label: label(part), motion: rotary ? 'rotary' : 'linear' })),
+    pumps: net.pumps.map(({ part }) => ({ label: label(part) })),
+    lines: net.lines.slice(0, net.shown).map(({ name }) => ({ name })),
+  };
+}
+
+export const namesOfTable = ({ inputs, actuators, pumps, lines }: TableData): Names => ({ inputs, actuators, pumps, lines });
+
+/** Everything that has a name; a coil name that two valves use carries the label of its valve. */
+export function namedThings(names: Names): Named[] {
+  const uses = new Map<string, number>();
+  for (const input of names.inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
+  return [
+    ...names.inputs.map(({ label }, index): Named => ({ kind: 'valve', name: label, index, position: 0 })),
+    ...names.actuators.map(({ label }, index): Named => ({ kind: 'actuator', name: label, index, position: 0 })),
+    ...names.pumps.map(({ label }, index): Named => ({ kind: 'pump', name: label, index, position: 0 })),
+    ...names.inputs.flatMap(({ label, coils }, index) =>
+      coils.map(({ name, position }): Named => ({ kind: 'coil', name: uses.get(name) === 1 ? name : `${label}.${name}`, index, position })),
+    ),
+    ...names.lines.map(({ name }, index): Named => ({ kind: 'line', name, index, position: 0 })),
+  ];
+}
