@@ -1,5 +1,5 @@
 /** Answers one question after another on its own thread. */
-import { explainRow, findings, numbersOf, tabulate } from '../analysis/analyse.ts';
+import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
 import type { Conditions } from '../analysis/results.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
@@ -27,6 +27,11 @@ function answer(question: Question): Reply {
   }
 }
 
+/** Up to here pressures take too short a time to show anything before them. */
+const SOON = 1500;
+/** Rows that the pressure layer may solve in the background: some tens of seconds. */
+const BACKGROUND_ROWS = 100_000;
+
 function answerTable(id: number, circuit: Circuit, conditions: Conditions): Reply {
   const began = performance.now();
   const budget = {
@@ -34,7 +39,14 @@ function answerTable(id: number, circuit: Circuit, conditions: Conditions): Repl
     cancelled: () => false,
     progress: (share: number) => scope.postMessage({ id, say: 'progress', share }),
   };
-  const data = tabulate(circuit, conditions, budget);
-  const running = conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget);
-  return { id, say: 'table', data, findings: findings(circuit, new StateTable(running)), took: performance.now() - began };
+  const reply = (pressureRows: number): Reply => {
+    const options = { pressureRows };
+    const data = tabulate(circuit, conditions, budget, options);
+    const running = conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
+    const faults = findings(circuit, new StateTable(running));
+    return { id, say: 'table', early: pressureRows === 0, data, findings: faults, took: performance.now() - began };
+  };
+  const rows = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
+  if (rows > SOON) scope.postMessage(reply(0));
+  return reply(BACKGROUND_ROWS);
 }

@@ -26,7 +26,15 @@ export interface Job<T> {
 }
 
 export interface Analyst {
-  table(circuit: Circuit, conditions: Conditions, progress: (share: number) => void): Job<TableAnswer>;
+  /**
+   * `early` gets what open paths say of a long table, well before the answer that the pressures complete.
+   */
+  table(
+    circuit: Circuit,
+    conditions: Conditions,
+    progress: (share: number) => void,
+    early?: (answer: TableAnswer) => void,
+  ): Job<TableAnswer>;
   explain(circuit: Circuit, conditions: Conditions, row: number): Job<Explanation>;
   /** Pressures, flows and speeds of these rows, in this order; SI. */
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
@@ -38,10 +46,11 @@ export function createAnalyst(): Analyst {
   const tables = new Thread();
   const words = new Thread();
   return {
-    table: (circuit, conditions, progress) =>
-      tables.ask({ ask: 'table', circuit, conditions }, progress, (reply) =>
-        reply.say === 'table' ? { table: new StateTable(reply.data), findings: reply.findings, took: reply.took } : undefined,
-      ),
+    table: (circuit, conditions, progress, early = () => {}) =>
+      tables.ask({ ask: 'table', circuit, conditions }, (reply) => {
+        if (reply.say === 'progress') progress(reply.share);
+        else if (reply.say === 'table') early(tableOf(reply));
+      }, (reply) => (reply.say === 'table' ? tableOf(reply) : undefined)),
     explain: (circuit, conditions, row) =>
       words.ask({ ask: 'explain', circuit, conditions, row }, () => {}, (reply) =>
         reply.say === 'explanation' ? reply.explanation : undefined,
@@ -57,6 +66,12 @@ export function createAnalyst(): Analyst {
   };
 }
 
+const tableOf = (reply: Extract<Reply, { say: 'table' }>): TableAnswer => ({
+  table: new StateTable(reply.data),
+  findings: reply.findings,
+  took: reply.took,
+});
+
 interface Pending {
   readonly question: Question;
   readonly settle: (reply: Reply) => void;
@@ -71,13 +86,13 @@ class Thread {
   #next = 1;
   readonly #pending = new Map<number, Pending>();
 
-  ask<T>(open: Open<Question>, progress: (share: number) => void, read: (reply: Reply) => T | undefined): Job<T> {
+  ask<T>(open: Open<Question>, meanwhile: (reply: Reply) => void, read: (reply: Reply) => T | undefined): Job<T> {
     const id = this.#next++;
     const question = { ...open, id } as Question;
     const answer = new Promise<T>((resolve, reject) => {
       const settle = (reply: Reply): void => {
-        if (reply.say === 'progress') {
-          progress(reply.share);
+        if (reply.say === 'progress' || (reply.say === 'table' && reply.early)) {
+          meanwhile(reply);
           return;
         }
         this.#pending.delete(id);

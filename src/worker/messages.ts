@@ -9,7 +9,8 @@ export type Question =
 
 export type Reply =
   | { readonly id: number; readonly say: 'progress'; readonly share: number }
-  | { readonly id: number; readonly say: 'table'; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
+  /** `early`: what open paths say; the pressures follow in a second reply. */
+  | { readonly id: number; readonly say: 'table'; readonly early: boolean; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };

@@ -174,9 +174,18 @@ class Session {
     this.slow = false;
     clearTimeout(this.#patience);
     this.#patience = setTimeout(() => (this.slow = true), PATIENCE_MS);
-    const job = analyst.table(circuit, conditions, (share) => {
-      if (this.#job === job) this.progress = share;
-    });
+    const job = analyst.table(
+      circuit,
+      conditions,
+      (share) => {
+        if (this.#job === job) this.progress = share;
+      },
+      (early) => {
+        if (this.#job !== job) return;
+        this.answer = { ...early, circuit, conditions };
+        this.failure = undefined;
+      },
+    );
     this.#job = job;
     job.answer.then(
       (answer) => {
