@@ -10,10 +10,10 @@ import type { RowNumbers, StateTable } from '../../worker/client.ts';
 export interface Assumed {
   /** Somewhere in the circuit: every pressure that comes about by flow rests on it. */
   readonly anywhere: boolean;
-  /** Actuators and pumps of whose own values some are assumed. */
-  readonly parts: ReadonlySet<string>;
-  /** Their sizes and flows alone: bore, rod, displacement, delivery. */
+  /** Actuators and pumps whose sizes are: bore, rod, displacement, delivery. */
   readonly sizes: ReadonlySet<string>;
+  /** Actuators whose sizes, load or friction are assumed. */
+  readonly forces: ReadonlySet<string>;
   /** Of some pump. */
   readonly delivery: boolean;
   /** m² (m³/rad) of both sides of each actuator. */
@@ -26,6 +26,7 @@ interface Areas {
 }
 
 const SIZES: ReadonlySet<string> = new Set(['bore', 'rod', 'displacement', 'flow']);
+const FORCES: ReadonlySet<string> = new Set([...SIZES, 'load', 'friction', 'springForce']);
 
 const measured = (spec: SettingSpec): spec is QuantitySpec | NumberSpec =>
   spec.value.type === 'quantity' || spec.value.type === 'number';
@@ -35,7 +36,7 @@ export const assumedSettings = (part: Part): string[] =>
   (kindOf(part.kind)?.settings ?? []).filter(measured).filter((spec) => readSetting(part, spec).assumed).map(({ id }) => id);
 
 export function assumedIn(circuit: Circuit): Assumed {
-  const parts = new Set<string>();
+  const forces = new Set<string>();
   const sizes = new Set<string>();
   const areas = new Map<string, Areas>();
   let anywhere = false;
@@ -49,12 +50,12 @@ export function assumedIn(circuit: Circuit): Assumed {
     anywhere = true;
     const pump = elements.some(({ type }) => type === 'pump');
     if (!actuator && !pump) continue;
-    parts.add(part.id);
+    if (actuator && ids.some((id) => FORCES.has(id))) forces.add(part.id);
     if (!ids.some((id) => SIZES.has(id))) continue;
     sizes.add(part.id);
     if (pump) delivery = true;
   }
-  return { anywhere, parts, sizes, delivery, areas };
+  return { anywhere, sizes, forces, delivery, areas };
 }
 
 /**
@@ -94,9 +95,9 @@ function flows(areas: Areas | undefined, speed: number): [number, number] {
 export const restsOnValues = (table: StateTable, row: number): boolean =>
   table.data.valued !== undefined && has(table.data.valued, row);
 
-/** A load on shut-in oil gives a pressure by its own cylinder alone; any other comes about by flow and losses. */
+/** A load on shut-in oil gives a pressure by its own cylinder, load and friction alone; any other comes about by flow and losses. */
 export function lineAssumed(assumed: Assumed, table: StateTable, line: number, row: number): boolean {
   if (table.line(line, row) !== 'cut off') return assumed.anywhere;
   const ports = table.data.lines[line]?.ports ?? [];
-  return [...assumed.sizes].some((part) => ports.some((port) => port.startsWith(`${part}.`)));
+  return [...assumed.forces].some((part) => ports.some((port) => port.startsWith(`${part}.`)));
 }
