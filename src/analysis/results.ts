@@ -62,3 +62,17 @@ export interface Explanation {
 
 export type { RowNumbers } from '../engine/table/resolve.ts';
 export type { Finding } from '../findings/finding.ts';
+export type {
+  BleedAnswer,
+  BleedCaution,
+  BleedLine,
+  BleedPoints,
+  BleedStep,
+  HeldLine,
+  LeftLine,
+  PowerLossActuator,
+  PowerLossAnswer,
+  PowerLossOutcome,
+  TrappedReason,
+  TrappedSummary,
+} from './bleed-results.ts';

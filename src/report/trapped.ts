@@ -1,0 +1,72 @@
+import type { Conditions, TrappedSummary } from '../analysis/results.ts';
+import { measureOf } from './bleed.ts';
+import { REPORT_VERSION } from './json.ts';
+import { TRAPPED_CAUTION } from './rows.ts';
+import { plain } from './width.ts';
+
+export interface TrappedSource {
+  /** Of this program. */
+  readonly version: string;
+  readonly circuit: string;
+  readonly conditions: Conditions;
+  readonly summary: TrappedSummary;
+  /** Rows of the table. */
+  readonly count: number;
+}
+
+/** Line by line, every reason once with its rows; every line ends with a line feed. */
+export function* writeTrappedText(source: TrappedSource): Generator<string> {
+  for (const line of trappedLines(source)) yield `${plain(line).trimEnd()}\n`;
+}
+
+function* trappedLines({ circuit, conditions, summary, count }: TrappedSource): Generator<string> {
+  yield circuit;
+  yield `Trapped pressure over ${count.toLocaleString('en')} ${count === 1 ? 'row' : 'rows'}, pumps ${conditions.pumps}`;
+  if (summary.lines.length === 0) {
+    yield '';
+    yield 'No line is trapped in any row.';
+  }
+  for (const line of summary.lines) {
+    yield '';
+    yield `${line.name} (${measureOf(line)})`;
+    for (const { kind, rowCount, examples } of line.reasons) {
+      yield `  ${kind}: ${rowCount.toLocaleString('en')} of ${count.toLocaleString('en')} ${count === 1 ? 'row' : 'rows'}`;
+      for (const { text, rows } of sameText(examples)) {
+        yield `    ${rows.length === 1 ? 'row' : 'rows'} ${rows.join(', ')}${text === '' ? '' : `: ${text}`}`;
+      }
+      if (rowCount > examples.length) yield `    and ${(rowCount - examples.length).toLocaleString('en')} more`;
+    }
+  }
+  yield '';
+  yield TRAPPED_CAUTION;
+}
+
+/** Rows in which the same is said, 1-based, put together. */
+function sameText(
+  examples: readonly { readonly row: number; readonly text: string }[],
+): { text: string; rows: number[] }[] {
+  const found = new Map<string, number[]>();
+  for (const { row, text } of examples) found.set(text, [...(found.get(text) ?? []), row + 1]);
+  return [...found].map(([text, rows]) => ({ text, rows }));
+}
+
+/** The same as one JSON object; rows 1-based. */
+export function writeTrappedJson({ version, circuit, conditions, summary, count }: TrappedSource): string {
+  const out = {
+    spooltable: { version, report: REPORT_VERSION },
+    circuit,
+    conditions,
+    rows: count,
+    lines: summary.lines.map(({ name, measure, reasons }) => ({
+      line: name,
+      measure,
+      reasons: reasons.map(({ kind, rowCount, examples }) => ({
+        kind,
+        rowCount,
+        examples: examples.map(({ row, text }) => ({ row: row + 1, text })),
+      })),
+    })),
+    caution: TRAPPED_CAUTION,
+  };
+  return `${JSON.stringify(out, null, 2)}\n`;
+}
