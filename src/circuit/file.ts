@@ -12,6 +12,7 @@ import {
   type Label,
   type Part,
   type PortRef,
+  type RuleText,
   type ValveData,
 } from './model.ts';
 import { quote, sayIssue, shorten } from './problems.ts';
@@ -23,6 +24,7 @@ import {
   type FileConnection,
   type FileLabel,
   type FilePart,
+  type FileRule,
   type FileValve,
 } from './schema.ts';
 
@@ -66,7 +68,7 @@ function checkFormat(raw: RawFile): Problem | undefined {
 }
 
 function checkSize(raw: RawFile): Problem | undefined {
-  for (const field of ['parts', 'connections', 'labels'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'rules'] as const) {
     const list = raw[field];
     if (Array.isArray(list) && list.length > LIMITS[field]) {
       return {
@@ -155,6 +157,8 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       text: label.text,
       extra: extraOf(label, KNOWN.label, ['labels', i]),
     });
+  const toRule = (rule: FileRule, i: number): RuleText =>
+    solid<Required<RuleText>>({ id: rule.id, text: rule.text, extra: extraOf(rule, KNOWN.rule, ['rules', i]) });
   return solid<Required<Circuit>>({
     name: file.name,
     title: file.title,
@@ -162,13 +166,14 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     parts: file.parts.map(toPart),
     connections: file.connections.map(toConnection),
     labels: file.labels?.map(toLabel),
+    rules: file.rules?.map(toRule),
     extra: extraOf(file, KNOWN.circuit, []),
   });
 }
 
 function checkIds(circuit: Circuit): Problem[] {
   const problems: Problem[] = [];
-  for (const field of ['parts', 'connections', 'labels'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'rules'] as const) {
     const first = new Map<string, number>();
     for (const [i, { id }] of (circuit[field] ?? []).entries()) {
       const before = first.get(id);

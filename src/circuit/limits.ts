@@ -5,6 +5,7 @@ export const LIMITS = {
   parts: 10_000,
   connections: 40_000,
   labels: 10_000,
+  rules: 1_000,
   /** Bend points of one connection. */
   bends: 1_000,
   /** Modules from the sheet's origin. */
@@ -13,6 +14,8 @@ export const LIMITS = {
   /** Characters of a name, label, code or setting. */
   label: 200,
   notes: 100_000,
+  /** Characters of a rule. */
+  rule: 1_000,
   /** Objects and lists inside one another. */
   depth: 64,
   /** Problems told at once; the rest is counted. */

@@ -13,6 +13,8 @@ export interface Circuit {
   readonly connections: readonly Connection[];
   /** Free text on the sheet. */
   readonly labels?: readonly Label[];
+  /** What must never or must always be, in the words of the rules' language. */
+  readonly rules?: readonly RuleText[];
   readonly extra?: Extra;
 }
 
@@ -61,6 +63,13 @@ export interface PortRef {
 export interface Label {
   readonly id: string;
   readonly at: Point;
+  readonly text: string;
+  readonly extra?: Extra;
+}
+
+/** Not read here: a rule may speak of parts that are drawn later. */
+export interface RuleText {
+  readonly id: string;
   readonly text: string;
   readonly extra?: Extra;
 }

@@ -89,6 +89,15 @@ const connection = z.looseObject({
 
 const label = z.looseObject({ id, at: spot, text: line });
 
+const rule = z.looseObject({
+  id,
+  text: z
+    .string()
+    .min(1, say('The rule is empty.', 'Write a rule, such as "never C1 moves while C2 moves", or leave it out.'))
+    .max(LIMITS.rule, say(`This rule is longer than ${LIMITS.rule} characters.`, 'Say it in several rules.'))
+    .regex(ONE_LINE, say('This rule holds a control character.', 'Remove tabs, line breaks and other control characters.')),
+});
+
 export const fileSchema = z
   .looseObject({
     format: z.literal(FORMAT),
@@ -106,6 +115,10 @@ export const fileSchema = z
       .array(label)
       .max(LIMITS.labels, say('Too many labels.', `Use at most ${LIMITS.labels}.`))
       .optional(),
+    rules: z
+      .array(rule)
+      .max(LIMITS.rules, say('Too many rules.', `Use at most ${LIMITS.rules}.`))
+      .optional(),
   })
   .meta({
     title: 'Spooltable circuit',
@@ -116,6 +129,7 @@ export type FileCircuit = z.infer<typeof fileSchema>;
 export type FilePart = z.infer<typeof part>;
 export type FileConnection = z.infer<typeof connection>;
 export type FileLabel = z.infer<typeof label>;
+export type FileRule = z.infer<typeof rule>;
 export type FileValve = z.infer<typeof valve>;
 
 const fields = (shape: object): ReadonlySet<string> => new Set(Object.keys(shape));
@@ -125,6 +139,7 @@ export const KNOWN = {
   part: fields(part.shape),
   connection: fields(connection.shape),
   label: fields(label.shape),
+  rule: fields(rule.shape),
   valve: fields(valve.shape),
   valvePort: fields(valve.shape.ports.element.shape),
   valvePosition: fields(valve.shape.positions.element.shape),

@@ -1,5 +1,5 @@
 import type { Point } from '../base/points.ts';
-import { sayPort, type Circuit, type Connection, type Extra, type Label, type Part, type ValveData } from './model.ts';
+import { sayPort, type Circuit, type Connection, type Extra, type Label, type Part, type RuleText, type ValveData } from './model.ts';
 import { FORMAT, VERSION } from './schema.ts';
 
 type Fields = Record<string, unknown>;
@@ -20,11 +20,12 @@ export function writeCircuit(circuit: Circuit): string {
       parts: circuit.parts.map(partFields),
       connections: circuit.connections.map(connectionFields),
       labels: circuit.labels?.map(labelFields),
+      rules: circuit.rules?.map(ruleFields),
     },
     circuit.extra,
   );
   const lines = Object.entries(fields).map(([key, value]) => {
-    const isList = key === 'parts' || key === 'connections' || key === 'labels';
+    const isList = key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules';
     return `  ${JSON.stringify(key)}: ${isList ? broken(value as unknown[], 2) : pretty(value, 2, key.length + 4)}`;
   });
   return `{\n${lines.join(',\n')}\n}\n`;
@@ -79,6 +80,8 @@ const connectionFields = (connection: Connection): Fields =>
 
 const labelFields = (label: Label): Fields =>
   withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
+
+const ruleFields = (rule: RuleText): Fields => withExtra({ id: rule.id, text: rule.text }, rule.extra);
 
 /** Known fields first and never overruled by an unknown one of the same name. */
 function withExtra(fields: Fields, extra: Extra | undefined): Fields {

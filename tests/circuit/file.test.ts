@@ -55,7 +55,8 @@ describe('round trip', () => {
       parts: [{ id: 'V1', kind: 'directional-valve', valve, row: 1 }],
       connections: [{ id: 'c1', from: 'V1.P', to: 'V1.T', hose: true }],
       labels: [{ id: 't1', at: [0, 0], text: 'x', font: 'y' }],
-      rules: [{ never: 'both' }],
+      rules: [{ id: 'r1', text: 'never V1 at a', why: 'both' }],
+      budget: 3,
     });
     const result = readCircuit(text);
     expect(said(result).map((line) => line.split(':')[0])).toEqual([
@@ -66,7 +67,8 @@ describe('round trip', () => {
       'parts[0].row',
       'connections[0].hose',
       'labels[0].font',
-      'rules',
+      'rules[0].why',
+      'budget',
     ]);
     expect(JSON.parse(writeCircuit(read(text)))).toEqual(JSON.parse(text));
   });

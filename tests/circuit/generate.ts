@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import type { Point } from '../../src/base/points.ts';
-import type { Circuit, Connection, Extra, Label, Part, PortRef, ValveData } from '../../src/circuit/model.ts';
+import type { Circuit, Connection, Extra, Label, Part, PortRef, RuleText, ValveData } from '../../src/circuit/model.ts';
 import { KNOWN } from '../../src/circuit/schema.ts';
 
 const RESERVED = /"(__proto__|constructor|prototype)":/;
@@ -23,7 +23,7 @@ export const point: fc.Arbitrary<Point> = fc
 const unknownFields = (known: ReadonlySet<string>): fc.Arbitrary<Extra> =>
   fc
     .dictionary(
-      fc.oneof(fc.constantFrom('weight', 'rules', 'x.y', '7', 'extra'), words),
+      fc.oneof(fc.constantFrom('weight', 'budget', 'x.y', '7', 'extra'), words),
       fc.jsonValue({ maxDepth: 3 }),
       {
         minKeys: 1,
@@ -124,6 +124,11 @@ const label: fc.Arbitrary<Label> = fc.record(
   { requiredKeys: ['id', 'at', 'text'], noNullPrototype: true },
 );
 
+const rule: fc.Arbitrary<RuleText> = fc.record(
+  { id, text: words, extra: unknownFields(KNOWN.rule) },
+  { requiredKeys: ['id', 'text'], noNullPrototype: true },
+);
+
 /** Any circuit that a file can hold, unknown fields at every level among it. */
 export const anyCircuit: fc.Arbitrary<Circuit> = fc
   .uniqueArray(fc.tuple(id, partFields), { maxLength: 6, selector: ([own]) => own })
@@ -145,6 +150,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
             ? fc.constant([])
             : fc.uniqueArray(connection(parts), { maxLength: 6, selector: (c) => c.id }),
         labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
+        rules: fc.uniqueArray(rule, { maxLength: 3, selector: (r) => r.id }),
         extra: unknownFields(KNOWN.circuit),
       },
       { requiredKeys: ['name', 'parts', 'connections'], noNullPrototype: true },

@@ -32,9 +32,12 @@ describe('a second validator, on the published schema', () => {
     ['a bare part', tank({})],
     ['a placed, turned part', tank({ at: [-3, 4.5], turn: 270, flip: true })],
     ['settings of each sort', tank({ settings: { volume: '40 L', heated: false, baffles: 2 } })],
-    ['unknown fields', { ...tank({ mass: 3 }), rules: [] }],
+    ['rules', { ...tank({}), rules: [{ id: 'r1', text: 'never C1 moves' }] }],
+    ['unknown fields', { ...tank({ mass: 3 }), budget: [] }],
   ];
   const BAD: [string, object][] = [
+    ['an empty rule', { ...tank({}), rules: [{ id: 'r1', text: '' }] }],
+    ['a rule of two lines', { ...tank({}), rules: [{ id: 'r1', text: 'never\nT1' }] }],
     ['another format', { ...tank({}), format: 'x' }],
     ['another version', { ...tank({}), version: 2 }],
     ['no name', { ...tank({}), name: undefined }],
