@@ -90,8 +90,8 @@ function candidates({ a, b }: Run): Candidate[] {
 function crowd(box: Box, bodies: readonly Box[], taken: readonly Box[], segments: readonly Run[]): number {
   let cost = 0;
   const room = inflate(box, 0.2);
-  for (const body of bodies) if (overlaps(body, room)) cost += 4;
-  for (const other of taken) if (overlaps(other, box)) cost += 8;
+  for (const body of bodies) if (overlaps(body, room)) cost += WORST;
+  for (const other of taken) if (overlaps(other, box)) cost += WORST;
   for (const { a, b } of segments) if (segmentTouches(a, b, room)) cost += 2;
   return cost;
 }
