@@ -4,7 +4,7 @@ import type { PathConditions } from '../engine/paths/reach.ts';
 import { explain } from '../engine/table/explain.ts';
 import { PressureSolver, rowNumbers } from '../engine/table/resolve.ts';
 import type { RowNumbers } from '../engine/table/resolve.ts';
-import { StateTable } from '../engine/table/state-table.ts';
+import type { StateTable } from '../engine/table/state-table.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import { tabulate as tabulateNetwork } from '../engine/table/tabulate.ts';
 import type { TableOptions } from '../engine/table/tabulate.ts';
@@ -78,7 +78,7 @@ function positionsOf(net: Network, row: number): number[] {
   return out;
 }
 
-function pathConditions(net: Network, conditions: Conditions): PathConditions {
+export function pathConditions(net: Network, conditions: Conditions): PathConditions {
   return {
     pumpsRunning: conditions.pumps === 'running',
     places: net.actuators.map((actuator) => conditions.places?.[net.parts[actuator.part]?.id ?? ''] ?? 'between'),

@@ -1,6 +1,6 @@
-import type { Outcome } from './newton.ts';
-import { couple, gap, settleAt } from './piloted.ts';
-import type { Pilotage } from './piloted.ts';
+import type { Outcome } from './workspace.ts';
+import { couple, gap, settleAt } from './pilotage.ts';
+import type { Pilotage } from './pilotage.ts';
 
 const SWEEPS = 12;
 const HALVINGS = 45;

@@ -2,7 +2,7 @@ import { HI, WIDTH, balance, branchFlows } from './assemble.ts';
 import type { FlowSystem, Point } from './assemble.ts';
 import { NEAR_IDEAL } from './laws.ts';
 import { SLACK, noise } from './newton.ts';
-import type { Limits, Outcome, Workspace } from './newton.ts';
+import type { Limits, Outcome, Workspace } from './workspace.ts';
 import { factorGeneral, solveGeneral } from './sparse.ts';
 
 /** Longest step, Pa. */

@@ -1,7 +1,7 @@
 import { NEAR_IDEAL } from './laws.ts';
 import { WIDTH } from './assemble.ts';
 import type { FlowSystem } from './assemble.ts';
-import type { Workspace } from './newton.ts';
+import type { Workspace } from './workspace.ts';
 
 /**
  * The share of the step where the co-content stops falling, 0 if that cannot be told from rounding.

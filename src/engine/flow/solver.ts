@@ -3,10 +3,12 @@ import type { FlowSystem } from './assemble.ts';
 import { certify, isGood } from './certificate.ts';
 import type { Certificate } from './certificate.ts';
 import { SANE } from './laws.ts';
-import { COLD, SLOW, WARM, minimise, newWorkspace } from './newton.ts';
-import type { Limits, Outcome, Start, Workspace } from './newton.ts';
+import { COLD, SLOW, WARM, minimise } from './newton.ts';
+import type { Start } from './newton.ts';
 import { solvePiloted } from './piloted.ts';
 import type { FlowProblem } from './problem.ts';
+import { newWorkspace } from './workspace.ts';
+import type { Limits, Outcome, Workspace } from './workspace.ts';
 
 /** What one solve may spend, and what it may start from. */
 export interface SolveOptions {

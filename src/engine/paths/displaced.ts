@@ -2,7 +2,8 @@ import type { Network } from '../../network/network.ts';
 import type { Chambers } from './chambers.ts';
 import type { EdgeSet } from './edges.ts';
 import type { Field, Spreader } from './field.ts';
-import { loadAgainst, pushes, REST_REASONS, set, word } from './motion-bits.ts';
+import { loadAgainst, pushes } from './actuator-bits.ts';
+import { REST_REASONS, set, word } from './motion-bits.ts';
 import type { Motion } from './motion-bits.ts';
 import type { PathConditions, Reach } from './reach.ts';
 

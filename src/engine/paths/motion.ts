@@ -5,7 +5,8 @@ import type { EdgeSet } from './edges.ts';
 import type { Field, Spreader } from './field.ts';
 import { driveByDisplaced } from './displaced.ts';
 import type { Motion } from './motion-bits.ts';
-import { isEqualSided, loadAgainst, pushes, REST_REASONS, set, word } from './motion-bits.ts';
+import { isEqualSided, loadAgainst, pushes } from './actuator-bits.ts';
+import { REST_REASONS, set, word } from './motion-bits.ts';
 import type { Links, PathConditions, Reach } from './reach.ts';
 
 export function findMotion(

@@ -1,7 +1,7 @@
 import type { Network } from '../../network/network.ts';
 import type { EdgeSet } from './edges.ts';
 import { complement, orderFrom } from './field.ts';
-import { pushes } from './motion-bits.ts';
+import { pushes } from './actuator-bits.ts';
 import type { Field, Link, Spreader } from './field.ts';
 
 /** What holds for every state of a table. */

@@ -1,6 +1,6 @@
 import type { NetActuator } from '../../network/network.ts';
 import type { SettledBlock } from '../paths/block.ts';
-import { isEqualSided, pushes } from '../paths/motion-bits.ts';
+import { isEqualSided, pushes } from '../paths/actuator-bits.ts';
 import type { Chambers } from '../paths/chambers.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';

@@ -1,7 +1,8 @@
 import type { NetActuator, Network } from '../../network/network.ts';
 import type { EdgeSet } from '../paths/edges.ts';
 import { compileEdges } from '../paths/edges.ts';
-import { isEqualSided, REST_REASONS } from '../paths/motion-bits.ts';
+import { isEqualSided } from '../paths/actuator-bits.ts';
+import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { RestReason } from '../paths/motion-bits.ts';
 import { sourceLines } from '../paths/reach.ts';
 import type { PathConditions } from '../paths/reach.ts';
