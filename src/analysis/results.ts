@@ -76,3 +76,4 @@ export type {
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';
+export type { Check, CheckedInput, CheckedRule, RuleAnswer, RuleCases, RuleOutcome } from './check-results.ts';
