@@ -10,6 +10,7 @@ import {
   type Connection,
   type Extra,
   type Label,
+  type LoadCase,
   type Part,
   type PortRef,
   type RuleText,
@@ -23,6 +24,7 @@ import {
   type FileCircuit,
   type FileConnection,
   type FileLabel,
+  type FileLoadCase,
   type FilePart,
   type FileRule,
   type FileValve,
@@ -68,7 +70,7 @@ function checkFormat(raw: RawFile): Problem | undefined {
 }
 
 function checkSize(raw: RawFile): Problem | undefined {
-  for (const field of ['parts', 'connections', 'labels', 'rules'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'rules', 'loadCases'] as const) {
     const list = raw[field];
     if (Array.isArray(list) && list.length > LIMITS[field]) {
       return {
@@ -159,6 +161,8 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     });
   const toRule = (rule: FileRule, i: number): RuleText =>
     solid<Required<RuleText>>({ id: rule.id, text: rule.text, extra: extraOf(rule, KNOWN.rule, ['rules', i]) });
+  const toLoadCase = ({ id, name, loads, ...rest }: FileLoadCase, i: number): LoadCase =>
+    solid<Required<LoadCase>>({ id, name, loads, extra: extraOf(rest, KNOWN.loadCase, ['loadCases', i]) });
   return solid<Required<Circuit>>({
     name: file.name,
     title: file.title,
@@ -167,13 +171,14 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     connections: file.connections.map(toConnection),
     labels: file.labels?.map(toLabel),
     rules: file.rules?.map(toRule),
+    loadCases: file.loadCases?.map(toLoadCase),
     extra: extraOf(file, KNOWN.circuit, []),
   });
 }
 
 function checkIds(circuit: Circuit): Problem[] {
   const problems: Problem[] = [];
-  for (const field of ['parts', 'connections', 'labels', 'rules'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'rules', 'loadCases'] as const) {
     const first = new Map<string, number>();
     for (const [i, { id }] of (circuit[field] ?? []).entries()) {
       const before = first.get(id);

@@ -6,6 +6,7 @@ export const LIMITS = {
   connections: 40_000,
   labels: 10_000,
   rules: 1_000,
+  loadCases: 100,
   /** Bend points of one connection. */
   bends: 1_000,
   /** Modules from the sheet's origin. */

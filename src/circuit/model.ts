@@ -15,6 +15,8 @@ export interface Circuit {
   readonly labels?: readonly Label[];
   /** What must never or must always be, in the words of the rules' language. */
   readonly rules?: readonly RuleText[];
+  /** Named sets of loads, for the same machine in other work. */
+  readonly loadCases?: readonly LoadCase[];
   readonly extra?: Extra;
 }
 
@@ -71,6 +73,14 @@ export interface Label {
 export interface RuleText {
   readonly id: string;
   readonly text: string;
+  readonly extra?: Extra;
+}
+
+/** Loads that stand in for those of the parts: settings by part id; what a case leaves out stays as the part says. */
+export interface LoadCase {
+  readonly id: string;
+  readonly name: string;
+  readonly loads: Readonly<Record<string, Readonly<Record<string, Setting>>>>;
   readonly extra?: Extra;
 }
 

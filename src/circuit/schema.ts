@@ -98,6 +98,12 @@ const rule = z.looseObject({
     .regex(ONE_LINE, say('This rule holds a control character.', 'Remove tabs, line breaks and other control characters.')),
 });
 
+const loadCase = z.looseObject({
+  id,
+  name: line,
+  loads: z.record(id, z.record(line, setting)).meta({ description: 'part id → settings that stand in for its own' }),
+});
+
 export const fileSchema = z
   .looseObject({
     format: z.literal(FORMAT),
@@ -119,6 +125,10 @@ export const fileSchema = z
       .array(rule)
       .max(LIMITS.rules, say('Too many rules.', `Use at most ${LIMITS.rules}.`))
       .optional(),
+    loadCases: z
+      .array(loadCase)
+      .max(LIMITS.loadCases, say('Too many load cases.', `Use at most ${LIMITS.loadCases}.`))
+      .optional(),
   })
   .meta({
     title: 'Spooltable circuit',
@@ -130,6 +140,7 @@ export type FilePart = z.infer<typeof part>;
 export type FileConnection = z.infer<typeof connection>;
 export type FileLabel = z.infer<typeof label>;
 export type FileRule = z.infer<typeof rule>;
+export type FileLoadCase = z.infer<typeof loadCase>;
 export type FileValve = z.infer<typeof valve>;
 
 const fields = (shape: object): ReadonlySet<string> => new Set(Object.keys(shape));
@@ -140,6 +151,7 @@ export const KNOWN = {
   connection: fields(connection.shape),
   label: fields(label.shape),
   rule: fields(rule.shape),
+  loadCase: fields(loadCase.shape),
   valve: fields(valve.shape),
   valvePort: fields(valve.shape.ports.element.shape),
   valvePosition: fields(valve.shape.positions.element.shape),

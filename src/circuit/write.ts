@@ -1,5 +1,5 @@
 import type { Point } from '../base/points.ts';
-import { sayPort, type Circuit, type Connection, type Extra, type Label, type Part, type RuleText, type ValveData } from './model.ts';
+import { sayPort, type Circuit, type Connection, type Extra, type Label, type LoadCase, type Part, type RuleText, type ValveData } from './model.ts';
 import { FORMAT, VERSION } from './schema.ts';
 
 type Fields = Record<string, unknown>;
@@ -21,11 +21,12 @@ export function writeCircuit(circuit: Circuit): string {
       connections: circuit.connections.map(connectionFields),
       labels: circuit.labels?.map(labelFields),
       rules: circuit.rules?.map(ruleFields),
+      loadCases: circuit.loadCases?.map(loadCaseFields),
     },
     circuit.extra,
   );
   const lines = Object.entries(fields).map(([key, value]) => {
-    const isList = key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules';
+    const isList = key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules' || key === 'loadCases';
     return `  ${JSON.stringify(key)}: ${isList ? broken(value as unknown[], 2) : pretty(value, 2, key.length + 4)}`;
   });
   return `{\n${lines.join(',\n')}\n}\n`;
@@ -82,6 +83,8 @@ const labelFields = (label: Label): Fields =>
   withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
 
 const ruleFields = (rule: RuleText): Fields => withExtra({ id: rule.id, text: rule.text }, rule.extra);
+
+const loadCaseFields = ({ id, name, loads, extra }: LoadCase): Fields => withExtra({ id, name, loads }, extra);
 
 /** Known fields first and never overruled by an unknown one of the same name. */
 function withExtra(fields: Fields, extra: Extra | undefined): Fields {

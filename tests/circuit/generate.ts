@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import type { Point } from '../../src/base/points.ts';
-import type { Circuit, Connection, Extra, Label, Part, PortRef, RuleText, ValveData } from '../../src/circuit/model.ts';
+import type { Circuit, Connection, Extra, Label, Part, PortRef, LoadCase, RuleText, ValveData } from '../../src/circuit/model.ts';
 import { KNOWN } from '../../src/circuit/schema.ts';
 
 const RESERVED = /"(__proto__|constructor|prototype)":/;
@@ -129,6 +129,11 @@ const rule: fc.Arbitrary<RuleText> = fc.record(
   { requiredKeys: ['id', 'text'], noNullPrototype: true },
 );
 
+const loadCase: fc.Arbitrary<LoadCase> = fc.record(
+  { id, name: words, loads: fc.dictionary(id, fc.dictionary(fc.constantFrom('load', 'loadSense'), words, { noNullPrototype: true }), { noNullPrototype: true }), extra: unknownFields(KNOWN.loadCase) },
+  { requiredKeys: ['id', 'name', 'loads'], noNullPrototype: true },
+);
+
 /** Any circuit that a file can hold, unknown fields at every level among it. */
 export const anyCircuit: fc.Arbitrary<Circuit> = fc
   .uniqueArray(fc.tuple(id, partFields), { maxLength: 6, selector: ([own]) => own })
@@ -151,6 +156,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
             : fc.uniqueArray(connection(parts), { maxLength: 6, selector: (c) => c.id }),
         labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
         rules: fc.uniqueArray(rule, { maxLength: 3, selector: (r) => r.id }),
+        loadCases: fc.uniqueArray(loadCase, { maxLength: 3, selector: (l) => l.id }),
         extra: unknownFields(KNOWN.circuit),
       },
       { requiredKeys: ['name', 'parts', 'connections'], noNullPrototype: true },
