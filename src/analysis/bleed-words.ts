@@ -95,7 +95,7 @@ export class BleedWords {
       case 'coil': {
         const part = this.net.inputs[caution.input]?.part;
         return say(
-          `${this.label(part)} is moved by a coil: it needs the control voltage while the pump drive stays locked off, and drops back without it.`,
+          `${this.label(part)} is moved by a coil: it needs the control voltage while the pump drive stays locked off, and goes back without it.`,
           part,
         );
       }

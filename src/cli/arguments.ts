@@ -1,6 +1,6 @@
 import { parseArgs } from 'node:util';
 import { codeOf, Failure, messageOf } from './failure.ts';
-import { EXPLAIN_HELP, HELP, TABLE_HELP } from './help.ts';
+import { BLEED_HELP, CHECK_HELP, EXPLAIN_HELP, HELP, TABLE_HELP, TRAPPED_HELP } from './help.ts';
 
 export type Pumps = 'running' | 'stopped';
 
@@ -19,6 +19,29 @@ export type Command =
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
       readonly state: readonly string[];
+      readonly out: string | undefined;
+    }
+  | {
+      readonly name: 'trapped';
+      readonly file: string;
+      readonly format: ExplainFormat;
+      readonly pumps: Pumps;
+      readonly out: string | undefined;
+    }
+  | {
+      readonly name: 'bleed';
+      readonly file: string;
+      readonly format: ExplainFormat;
+      readonly state: readonly string[];
+      readonly out: string | undefined;
+    }
+  | {
+      readonly name: 'check';
+      readonly file: string;
+      readonly format: ExplainFormat;
+      readonly pumps: Pumps;
+      /** Besides those of the circuit. */
+      readonly rules: readonly string[];
       readonly out: string | undefined;
     };
 
@@ -50,6 +73,12 @@ export function readArguments(args: readonly string[], version: string): Command
       return tableCommand(rest);
     case 'explain':
       return explainCommand(rest);
+    case 'trapped':
+      return trappedCommand(rest);
+    case 'bleed':
+      return bleedCommand(rest);
+    case 'check':
+      return checkCommand(rest);
     default:
       throw usage(first.startsWith('-') ? `Unknown option ${first}.` : `Unknown command "${first}".`);
   }
@@ -86,6 +115,60 @@ function explainCommand(args: string[]): Command {
     pumps: oneOf('explain', '--pumps', values.pumps, ['running', 'stopped']),
     state: values.state,
     out: outFile('explain', values.out),
+  };
+}
+
+function trappedCommand(args: string[]): Command {
+  const { values, positionals } = attempt('trapped', () =>
+    parseArgs({ args, strict: true, allowPositionals: true, options: COMMON }),
+  );
+  if (values.help) return { name: 'say', text: TRAPPED_HELP };
+  return {
+    name: 'trapped',
+    file: oneFile('trapped', positionals),
+    format: oneOf('trapped', '--format', values.format, EXPLAIN_FORMATS),
+    pumps: oneOf('trapped', '--pumps', values.pumps, ['running', 'stopped']),
+    out: outFile('trapped', values.out),
+  };
+}
+
+function bleedCommand(args: string[]): Command {
+  const { format, out, help } = COMMON;
+  const { values, positionals } = attempt('bleed', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { format, out, help, state: { type: 'string', multiple: true, default: [] } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: BLEED_HELP };
+  return {
+    name: 'bleed',
+    file: oneFile('bleed', positionals),
+    format: oneOf('bleed', '--format', values.format, EXPLAIN_FORMATS),
+    state: values.state,
+    out: outFile('bleed', values.out),
+  };
+}
+
+function checkCommand(args: string[]): Command {
+  const { values, positionals } = attempt('check', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { ...COMMON, rule: { type: 'string', multiple: true, default: [] } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: CHECK_HELP };
+  return {
+    name: 'check',
+    file: oneFile('check', positionals),
+    format: oneOf('check', '--format', values.format, EXPLAIN_FORMATS),
+    pumps: oneOf('check', '--pumps', values.pumps, ['running', 'stopped']),
+    rules: values.rule,
+    out: outFile('check', values.out),
   };
 }
 

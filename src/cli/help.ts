@@ -5,13 +5,17 @@ What every combination of lever and coil positions of a hydraulic circuit does.
 Commands:
   table FILE     the whole state table
   explain FILE   one state, with its reasons
+  trapped FILE   where pressure stays trapped, over all states
+  bleed FILE     how to let it down after a stop: the shortest list of lever moves
+  check FILE     whether its rules hold in every combination
 
 Options:
   --help         this text; after a command, the help of that command
   --version      the version
 
 FILE is a circuit saved by the editor (*.spool.json); - reads standard input.
-Exit code: 0 done, 1 a check failed (no command so far checks anything), 2 bad input or usage.
+Exit code: 0 done, 1 a check failed (bleed: pressure is left that no lever list vents; check: a
+rule is broken or not decided), 2 bad input or usage.
 `;
 
 export const TABLE_HELP = `Usage: spooltable table FILE [OPTIONS]
@@ -37,4 +41,54 @@ Options:
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text
+`;
+
+export const TRAPPED_HELP = `Usage: spooltable trapped FILE [OPTIONS]
+
+Every line that pressure stays trapped in: why, in how many rows, and a few of these rows with the moves that
+lead there.
+
+Options:
+  --pumps running|stopped           state of all pumps (running)
+  --format text|json                how it is written (text)
+  --out FILE                        write there, whole or not at all, instead of to standard output
+  --help                            this text
+`;
+
+export const BLEED_HELP = `Usage: spooltable bleed FILE [--state "V1=a,V2=0"] [OPTIONS]
+
+The pumps stop in one state: which lines still hold pressure, and the shortest list of lever moves that lets
+every one of them down to tank, with what to be cautious of before each move. Exit code 1 when pressure is left
+that no list of lever moves lets down. The documents of the machine, the local codes and qualified people go
+before this list.
+
+Options:
+  --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
+                                    rest, and the answer says so; may be given more than once
+  --format text|json                how it is written (text)
+  --out FILE                        write there, whole or not at all, instead of to standard output
+  --help                            this text
+`;
+
+export const CHECK_HELP = `Usage: spooltable check FILE [--rule "never C1 moves while C2 moves" …] [OPTIONS]
+
+Checks the rules of the circuit, then those given here, against every combination. What breaks a rule is told in
+few words: this is the interlock that the panel needs. Exit code 1 when a rule is broken, or not decided because
+a verdict rests on pressure; 2 when a rule cannot be read.
+
+Options:
+  --rule TEXT               one more rule; may be given more than once
+  --pumps running|stopped   state of all pumps (running)
+  --format text|json        how it is written (text)
+  --out FILE                write there, whole or not at all, instead of to standard output
+  --help                    this text
+
+Rules:
+  never A       never A when B        never A unless B        A only if B
+  always A      always A when B       always A unless B       A whenever B
+A and B are statements, joined by and, or, not and parentheses:
+  V1 at raise      V1 at raise/lower      V1 rests      every lever rests      Y1 on      Y2 off
+  C1 extends       C1 moves in            C1 moves      C1 is held             no cylinder moves
+  P1 is unloaded   line supply is fed     line supply is trapped     any line is blocked under pressure
+Names are those on the sheet; one that reads like words of a rule stands in double quotes.
 `;

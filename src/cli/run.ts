@@ -12,7 +12,10 @@ import type { Report } from '../report/rows.ts';
 import { writeText } from '../report/text.ts';
 import { readArguments } from './arguments.ts';
 import type { Command, Pumps, TableFormat } from './arguments.ts';
-import { Failure, messageOf, sayProblems } from './failure.ts';
+import { bleed, trapped } from './bleed.ts';
+import type { Written } from './bleed.ts';
+import { check } from './check.ts';
+import { EXIT, Failure, messageOf, sayProblems } from './failure.ts';
 import { readCircuitFile } from './input.ts';
 import { print, writeWhole } from './output.ts';
 import { readState } from './state.ts';
@@ -28,9 +31,25 @@ export async function run(args: readonly string[], version: string): Promise<voi
     return;
   }
   const circuit = await readCircuitFile(command.file, note);
-  const pieces = command.name === 'table' ? table(command, circuit, version) : explain(command, circuit, version);
+  const { pieces, exit } = perform(command, circuit, version);
   if (command.out === undefined) await print(pieces);
   else await writeWhole(command.out, command.file, pieces);
+  process.exitCode = exit;
+}
+
+function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, version: string): Written {
+  switch (command.name) {
+    case 'table':
+      return { pieces: table(command, circuit, version), exit: EXIT.done };
+    case 'explain':
+      return { pieces: explain(command, circuit, version), exit: EXIT.done };
+    case 'trapped':
+      return trapped(command, circuit, version, tableOf(command.file, circuit, command.pumps));
+    case 'bleed':
+      return bleed(command, circuit, version);
+    case 'check':
+      return check(command, circuit, version);
+  }
 }
 
 const note = (text: string): void => console.error(`spooltable: ${text}`);
