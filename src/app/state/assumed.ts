@@ -99,5 +99,7 @@ export const restsOnValues = (table: StateTable, row: number): boolean =>
 export function lineAssumed(assumed: Assumed, table: StateTable, line: number, row: number): boolean {
   if (table.line(line, row) !== 'cut off') return assumed.anywhere;
   const ports = table.data.lines[line]?.ports ?? [];
-  return [...assumed.forces].some((part) => ports.some((port) => port.startsWith(`${part}.`)));
+  const own = table.data.actuators.filter(({ part }) => ports.some((port) => port.startsWith(`${part}.`)));
+  // Past a throttle or a check the load stands on another line: then any of them may have a say.
+  return own.length > 0 ? own.some(({ part }) => assumed.forces.has(part)) : assumed.forces.size > 0;
 }

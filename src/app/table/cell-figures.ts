@@ -1,7 +1,7 @@
 import type { UnitSystem } from '../../base/units.ts';
-import { speedsAssumed } from '../state/assumed.ts';
+import { lineAssumed, speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
-import { pressureUnit, sayPressure, saySpeed, speedUnit } from '../state/figure-texts.ts';
+import { NEAR_NOTHING, pressureUnit, sayPressure, saySpeed, speedUnit } from '../state/figure-texts.ts';
 import type { RowNumbers, StateTable } from '../../worker/client.ts';
 import type { FigureHeads } from './columns.ts';
 
@@ -12,7 +12,7 @@ export interface CellFigure {
   readonly why?: string | undefined;
 }
 
-/** By column id. */
+/** By column id; `line:` and its index for pressures that a load keeps in a line. */
 export type RowFigures = ReadonlyMap<string, CellFigure>;
 
 export const figureHeads = ({ data }: StateTable, units: UnitSystem, assumed: Assumed): FigureHeads => ({
@@ -40,5 +40,13 @@ export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSy
     if (solved) put(`pump:${i}`, sayPressure(numbers.pumps[i]?.pressure ?? 0, units, true), assumed.anywhere);
     else out.set(`pump:${i}`, none);
   });
+  // Only a load gives shut-in oil a pressure that can be worked out.
+  if (solved) {
+    table.data.lines.forEach((_, line) => {
+      if (!table.trapped(line, numbers.row).includes('load')) return;
+      const pressure = numbers.lines[line] ?? 0;
+      if (pressure >= NEAR_NOTHING) put(`line:${line}`, sayPressure(pressure, units), lineAssumed(assumed, table, line, numbers.row));
+    });
+  }
   return out;
 }

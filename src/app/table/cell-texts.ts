@@ -5,6 +5,8 @@ import type { ActuatorNote, Finding, StateTable, TrapReason } from '../../worker
 export interface NamedGroup {
   readonly word: string;
   readonly names: readonly string[];
+  /** Their lines, by index in the table. */
+  readonly lines?: readonly number[];
 }
 
 /** Lines that no steady flow passes, by kind. */
@@ -30,19 +32,20 @@ export interface TrappedGroup extends NamedGroup {
 
 /** Each line under its gravest reason; heat alone comes last. */
 export function trappedGroups(table: StateTable, row: number): TrappedGroup[] {
-  const groups = new Map<TrapReason, { name: string; reasons: TrapReason[] }[]>();
+  const groups = new Map<TrapReason, { line: number; name: string; reasons: TrapReason[] }[]>();
   table.data.lines.forEach((line, i) => {
     const reasons = table.trapped(i, row);
     const [first] = reasons;
     if (first === undefined) return;
     const group = groups.get(first) ?? [];
-    group.push({ name: line.name, reasons });
+    group.push({ line: i, name: line.name, reasons });
     groups.set(first, group);
   });
   return TRAP_REASONS.flatMap((reason) => {
     const group = groups.get(reason);
     if (!group) return [];
-    return [{ reason, word: reason, names: group.map((each) => each.name), all: group.map((each) => each.reasons) }];
+    const names = group.map((each) => each.name);
+    return [{ reason, word: reason, names, lines: group.map((each) => each.line), all: group.map((each) => each.reasons) }];
   });
 }
 

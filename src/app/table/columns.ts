@@ -99,6 +99,9 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
       }),
     ),
   ]);
+  const [firstLever] = levers;
+  // The heading of the group has its room too.
+  if (firstLever && levers.length === 1) levers[0] = fixed({ ...firstLever, width: Math.max(firstLever.width, 70) });
   const actuators = data.actuators.map((actuator, index) => {
     const words = table.actuatorCounts(index).map((each) => each.verdict);
     const figures = heads?.actuators[index];
