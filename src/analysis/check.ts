@@ -39,7 +39,13 @@ export function ruleProblems(circuit: Circuit, text: string): readonly Problem[]
  * of this size, are problems; then nothing is checked. `table`: the table of these conditions, if it is there already.
  * Throws `Cancelled` when the budget says so.
  */
-export function checkRules(circuit: Circuit, conditions: Conditions, given: readonly GivenRule[], budget: Budget, table?: TableData): Result<Check> {
+export function checkRules(
+  circuit: Circuit,
+  conditions: Conditions,
+  given: readonly GivenRule[],
+  budget: Budget,
+  table?: TableData,
+): Result<Check> {
   const net = networkOf(circuit);
   const names = namesOfNetwork(net);
   const problems: Problem[] = [];
@@ -65,7 +71,8 @@ export function checkRules(circuit: Circuit, conditions: Conditions, given: read
       const paths = openPathSets(net, where, { heartbeat });
       answerTo = (rule) => checkRuleByPaths(net, where, paths, rule);
     } catch (error) {
-      if (error instanceof TooManyNodes) return bad({ where: 'circuit', what: 'The sets of combinations are too large.', remedy: error.message });
+      if (error instanceof TooManyNodes)
+        return bad({ where: 'circuit', what: 'The sets of combinations are too large.', remedy: error.message });
       throw error;
     }
   }

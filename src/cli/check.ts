@@ -9,17 +9,26 @@ import { EXIT, Failure, sayProblems } from './failure.ts';
 type Check = Extract<Command, { name: 'check' }>;
 
 /** Checks the rules of the circuit, then those of the command line. Exit code 1 unless all hold. */
-export function check({ file, format, pumps, rules }: Check, circuit: Circuit, version: string): { readonly pieces: Iterable<string>; readonly exit: number } {
+export function check(
+  { file, format, pumps, rules }: Check,
+  circuit: Circuit,
+  version: string,
+): { readonly pieces: Iterable<string>; readonly exit: number } {
   const given: GivenRule[] = [
     ...rulesOf(circuit),
     ...rules.map((text, i) => ({ text, where: rules.length > 1 ? `--rule ${i + 1}` : '--rule' })),
   ];
   if (given.length === 0) {
-    throw new Failure(`${file}: The circuit has no rules, and none is given. Add --rule "never C1 moves while C2 moves", with names of the sheet.`);
+    throw new Failure(
+      `${file}: The circuit has no rules, and none is given. Add --rule "never C1 moves while C2 moves", with names of the sheet.`,
+    );
   }
   const checked = checkRules(circuit, { pumps }, given, unlimited);
   if (!checked.ok) throw new Failure(sayProblems(file, checked.problems));
   const source = { version, circuit: circuit.name, conditions: { pumps }, check: checked.value };
   const allHold = checked.value.rules.every(({ answer }) => answer.outcome === 'holds');
-  return { pieces: format === 'json' ? [writeCheckJson(source)] : writeCheckText(source), exit: allHold ? EXIT.done : EXIT.checkFailed };
+  return {
+    pieces: format === 'json' ? [writeCheckJson(source)] : writeCheckText(source),
+    exit: allHold ? EXIT.done : EXIT.checkFailed,
+  };
 }

@@ -32,7 +32,8 @@ function* lines({ circuit, conditions, check }: CheckSource): Generator<string> 
     yield '';
     yield `${i + 1}. ${text}`;
     const all = answer.combinations;
-    if (answer.outcome === 'holds') yield `   Holds in ${all === 1n ? 'the only combination' : `all ${amount(all)} combinations`}.`;
+    if (answer.outcome === 'holds')
+      yield `   Holds in ${all === 1n ? 'the only combination' : `all ${amount(all)} combinations`}.`;
     if (answer.broken) {
       yield `   Broken in ${amount(answer.broken.count)} of ${counted(all, 'combination')}:`;
       yield* caseLines(answer.broken, check);
@@ -51,7 +52,9 @@ function* lines({ circuit, conditions, check }: CheckSource): Generator<string> 
 function* caseLines(cases: RuleCases, check: Check): Generator<string> {
   yield* termLines('    ', cases.terms);
   const row = rowOf(cases, check);
-  const state = check.inputs.map(({ label, positions }, i) => `${label} ${positions[cases.example[i] ?? 0] ?? ''}`).join(', ');
+  const state = check.inputs
+    .map(({ label, positions }, i) => `${label} ${positions[cases.example[i] ?? 0] ?? ''}`)
+    .join(', ');
   if (state !== '') yield `   For example ${row === undefined ? '' : `row ${row}: `}${state}`;
 }
 
@@ -71,7 +74,9 @@ const counted = (n: bigint, what: string): string => `${amount(n)} ${what}${n ==
 
 /** 1-based, as in the table. */
 function rowOf({ example }: RuleCases, { inputs, listed }: Check): number | undefined {
-  return listed ? 1 + inputs.reduce((row, { positions }, i) => row * positions.length + (example[i] ?? 0), 0) : undefined;
+  return listed
+    ? 1 + inputs.reduce((row, { positions }, i) => row * positions.length + (example[i] ?? 0), 0)
+    : undefined;
 }
 
 /** The same as one JSON object. Counts past 2⁵³ are strings of digits, since JSON readers would round them. */
@@ -85,7 +90,9 @@ export function writeCheckJson({ version, circuit, conditions, check }: CheckSou
       fewestTerms: found.least,
       example: {
         ...(check.listed && { row: rowOf(found, check) }),
-        state: Object.fromEntries(check.inputs.map(({ label, positions }, i) => [label, positions[found.example[i] ?? 0] ?? ''])),
+        state: Object.fromEntries(
+          check.inputs.map(({ label, positions }, i) => [label, positions[found.example[i] ?? 0] ?? '']),
+        ),
       },
     };
   const report = {

@@ -8,7 +8,9 @@ import { FAMILIES, family } from './circuits.ts';
  * Cold: the first run of this circuit in the process, which for the first circuit also warms the program up.
  */
 function run(print: (line: string) => void): void {
-  print('circuit             combinations   cold ms   warm ms   nodes made   nodes kept   fed somewhere   greatest count');
+  print(
+    'circuit             combinations   cold ms   warm ms   nodes made   nodes kept   fed somewhere   greatest count',
+  );
   for (const name of FAMILIES) {
     for (const valves of [8, 16, 24, 40]) {
       const net = networkOf(family(name, valves));
@@ -16,7 +18,9 @@ function run(print: (line: string) => void): void {
       const once = () => {
         const began = performance.now();
         const paths = openPathSets(net, conditions);
-        const classes = Array.from({ length: net.shown }, (_, line) => PATH_CLASSES.map((word) => classSet(paths, line, word)));
+        const classes = Array.from({ length: net.shown }, (_, line) =>
+          PATH_CLASSES.map((word) => classSet(paths, line, word)),
+        );
         const counts = classes.map((row) => row.map((set) => paths.sets.count(set)));
         return { ms: performance.now() - began, paths, classes, counts };
       };
@@ -45,7 +49,12 @@ function fold(print: (line: string) => void): void {
       const rows = Array.from({ length: net.shown }, (_, line) => foldLine(paths, line).rows.length);
       const ms = performance.now() - began;
       const cell = (n: number, width: number): string => String(n).padStart(width);
-      print(`${`${name} ${valves}`.padEnd(12)} ${cell(net.shown, 8)} ${cell(rows.reduce((a, b) => a + b, 0), 7)} ${cell(Math.max(...rows), 21)}   ${ms.toFixed(0)}`);
+      print(
+        `${`${name} ${valves}`.padEnd(12)} ${cell(net.shown, 8)} ${cell(
+          rows.reduce((a, b) => a + b, 0),
+          7,
+        )} ${cell(Math.max(...rows), 21)}   ${ms.toFixed(0)}`,
+      );
     }
   }
 }

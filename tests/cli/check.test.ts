@@ -24,7 +24,13 @@ test('a rule that holds ends with 0', async () => {
 
 test('a broken rule ends with 1 and names the combinations, one row and the file rules too', async () => {
   // Its own rule: V2's bypass centre lets the pump free to tank (practice), V2 off centre does not.
-  const withRules = { ...circuit(RIG), rules: [{ id: 'r1', text: 'always P1 unloaded when V2 rests' }, { id: 'r2', text: 'never V1 at a and V2 at b' }] };
+  const withRules = {
+    ...circuit(RIG),
+    rules: [
+      { id: 'r1', text: 'always P1 unloaded when V2 rests' },
+      { id: 'r2', text: 'never V1 at a and V2 at b' },
+    ],
+  };
   writeFileSync(rig, writeCircuit(withRules));
   const { code, out } = await spooltable(['check', rig, '--format', 'json', '--rule', 'never C2 extends']);
   expect(code).toBe(1);
@@ -34,18 +40,38 @@ test('a broken rule ends with 1 and names the combinations, one row and the file
     ['r2', 'broken'],
     [undefined, 'broken'],
   ]);
-  expect(report.rules[1]).toMatchObject({ combinations: 9, broken: { count: 1, terms: ['V1 at a and V2 at b'], fewestTerms: true, example: { row: 3, state: { V1: 'a', V2: 'b' } } } });
+  expect(report.rules[1]).toMatchObject({
+    combinations: 9,
+    broken: {
+      count: 1,
+      terms: ['V1 at a and V2 at b'],
+      fewestTerms: true,
+      example: { row: 3, state: { V1: 'a', V2: 'b' } },
+    },
+  });
   const text = await spooltable(['check', rig]);
   expect(text.code).toBe(1);
-  expect(text.out).toContain('   Broken in 1 of 9 combinations:\n     V1 at a and V2 at b\n   For example row 3: V1 a, V2 b\n');
+  expect(text.out).toContain(
+    '   Broken in 1 of 9 combinations:\n     V1 at a and V2 at b\n   For example row 3: V1 a, V2 b\n',
+  );
 });
 
 test('a panel of 40 valves is checked in all its combinations', async () => {
   const file = join(folder.path, 'bank.spool.json');
   writeFileSync(file, writeCircuit(family('SIXWAY', 40)));
-  const { code, out } = await spooltable(['check', file, '--rule', 'always P1 unloaded when every lever rests', '--format', 'json']);
+  const { code, out } = await spooltable([
+    'check',
+    file,
+    '--rule',
+    'always P1 unloaded when every lever rests',
+    '--format',
+    'json',
+  ]);
   expect(code).toBe(0);
-  expect(JSON.parse(out)).toMatchObject({ listed: false, rules: [{ outcome: 'holds', combinations: '12157665459056928801' }] });
+  expect(JSON.parse(out)).toMatchObject({
+    listed: false,
+    rules: [{ outcome: 'holds', combinations: '12157665459056928801' }],
+  });
   const refused = await spooltable(['check', file, '--rule', 'never C1 moves while C2 moves']);
   expect(refused.code).toBe(2);
   expect(refused.err).toMatch(/--rule: What C1 does is decided row by row.*Check a part of the circuit/);

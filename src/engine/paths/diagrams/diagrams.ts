@@ -15,7 +15,9 @@ const MOST_KEPT = 1 << 18;
 /** More nodes than allowed: the sets are too entangled to be held. */
 export class TooManyNodes extends Error {
   constructor(most: number) {
-    super(`The sets of combinations need more than ${most.toLocaleString('en')} nodes. Table a part of the circuit by itself.`);
+    super(
+      `The sets of combinations need more than ${most.toLocaleString('en')} nodes. Table a part of the circuit by itself.`,
+    );
     this.name = 'TooManyNodes';
   }
 }
@@ -60,7 +62,8 @@ export class Diagrams {
     this.order = options.order ?? radices.map((_, i) => i);
     const levelOf = new Array<number>(radices.length).fill(-1);
     this.order.forEach((input, level) => (levelOf[input] = level));
-    if (this.order.length !== radices.length || levelOf.includes(-1)) throw new RangeError('the order must name every input once');
+    if (this.order.length !== radices.length || levelOf.includes(-1))
+      throw new RangeError('the order must name every input once');
     this.levelOf = levelOf;
     const arity = this.order.map((input) => radices[input] as number);
     this.#arity = Int32Array.from(arity);
@@ -72,7 +75,8 @@ export class Diagrams {
     this.#level[NONE] = radices.length;
     this.#level[ALL] = radices.length;
     const below = new Array<bigint>(radices.length + 1).fill(1n);
-    for (let level = radices.length - 1; level >= 0; level--) below[level] = (below[level + 1] as bigint) * BigInt(arity[level] as number);
+    for (let level = radices.length - 1; level >= 0; level--)
+      below[level] = (below[level + 1] as bigint) * BigInt(arity[level] as number);
     this.#below = below;
     this.#keep(LEAST_KEPT);
   }
@@ -176,7 +180,10 @@ export class Diagrams {
   literal(input: number, positions: number): Diagram {
     const level = this.levelOf[input] as number;
     const arity = this.#arity[level] as number;
-    return this.make(level, Array.from({ length: arity }, (_, p) => ((positions >>> p) & 1) as Diagram));
+    return this.make(
+      level,
+      Array.from({ length: arity }, (_, p) => ((positions >>> p) & 1) as Diagram),
+    );
   }
 
   and(a: Diagram, b: Diagram): Diagram {
@@ -262,7 +269,8 @@ export class Diagrams {
   /** Membership of a combination: a position per input. */
   has(a: Diagram, positions: readonly number[]): boolean {
     let node = a;
-    while (node > ALL) node = this.#kids[node * this.#stride + (positions[this.order[this.level(node)] as number] as number)] as number;
+    while (node > ALL)
+      node = this.#kids[node * this.#stride + (positions[this.order[this.level(node)] as number] as number)] as number;
     return node === ALL;
   }
 

@@ -100,6 +100,7 @@ function force(order: readonly number[], groups: readonly (readonly number[])[])
       ties[input] = (ties[input] as number) + 1;
     }
   }
-  const wish = (input: number): number => (ties[input] === 0 ? (places[input] as number) : (sum[input] as number) / (ties[input] as number));
+  const wish = (input: number): number =>
+    ties[input] === 0 ? (places[input] as number) : (sum[input] as number) / (ties[input] as number);
   return [...order].sort((a, b) => wish(a) - wish(b) || (places[a] as number) - (places[b] as number));
 }

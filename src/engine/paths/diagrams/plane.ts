@@ -1,7 +1,7 @@
 import type { BitSet } from '../../../base/bits.ts';
 import { has } from '../../../base/bits.ts';
-import type { Diagram } from './diagrams.ts';
-import { ALL, Diagrams, NONE } from './diagrams.ts';
+import type { Diagram, Diagrams } from './diagrams.ts';
+import { ALL, NONE } from './diagrams.ts';
 
 /**
  * A bit plane of a table (rows in mixed radix, the first input slowest) as a diagram whose order is the

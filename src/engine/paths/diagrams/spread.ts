@@ -29,7 +29,13 @@ export function compileSetEdges(net: Network, sets: Diagrams): SetEdges {
   const open: Diagram[] = [ALL];
   const numbers = new Map<Diagram, number>([[ALL, 0]]);
   const edges: Edge[] = [];
-  const piloted: { readonly base: Diagram; readonly line: number; readonly from: number; readonly to: number; readonly free: boolean }[] = [];
+  const piloted: {
+    readonly base: Diagram;
+    readonly line: number;
+    readonly from: number;
+    readonly to: number;
+    readonly free: boolean;
+  }[] = [];
   for (const path of net.paths) {
     const base = path.input < 0 ? ALL : sets.literal(path.input, path.positions);
     const free = !path.throttled;
@@ -60,8 +66,14 @@ export function compileSetEdges(net: Network, sets: Diagrams): SetEdges {
     pilots,
     forward: adjacency(lines, edges),
     backward: adjacency(lines, reversed),
-    freeForward: adjacency(lines, edges.filter((edge) => edge.free)),
-    freeBackward: adjacency(lines, reversed.filter((edge) => edge.free)),
+    freeForward: adjacency(
+      lines,
+      edges.filter((edge) => edge.free),
+    ),
+    freeBackward: adjacency(
+      lines,
+      reversed.filter((edge) => edge.free),
+    ),
   };
 }
 
@@ -88,7 +100,14 @@ export interface SetSpread {
  * Grows `field` along `edges` to its fixpoint, a line at a time. Tanks absorb: nothing spreads on from a
  * tank line unless `fromTank`.
  */
-export function spreadSets(sets: Diagrams, net: Network, field: LineSets, edges: Adjacency, open: readonly Diagram[], options: SetSpread = {}): void {
+export function spreadSets(
+  sets: Diagrams,
+  net: Network,
+  field: LineSets,
+  edges: Adjacency,
+  open: readonly Diagram[],
+  options: SetSpread = {},
+): void {
   const { gate, links, without = -1, fromTank = false, order } = options;
   const queue: number[] = [];
   const queued = new Uint8Array(field.length);

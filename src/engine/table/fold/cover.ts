@@ -76,7 +76,8 @@ function dropOverlaps(sets: Diagrams, set: Diagram): Cube[] {
       }
       const part = between(missing, room);
       for (const cube of part.cubes) cubes.push(cube.map((mask, i) => (i === input ? positions : mask)));
-      for (let q = 0; q < arity; q++) if (((positions >>> q) & 1) === 1) covered[q] = sets.or(covered[q] as Diagram, part.set);
+      for (let q = 0; q < arity; q++)
+        if (((positions >>> q) & 1) === 1) covered[q] = sets.or(covered[q] as Diagram, part.set);
     }
     const answer = { cubes, set: sets.make(level, covered) };
     known.set(key, answer);
@@ -112,7 +113,8 @@ function expand(sets: Diagrams, set: Diagram, cube: Cube): Cube {
     if (grown[input] !== mask) attempt(input, mask);
   });
   any.forEach((mask, input) => {
-    for (let p = 0; 1 << p <= mask; p++) if ((((grown[input] as number) >>> p) & 1) === 0) attempt(input, (grown[input] as number) | (1 << p));
+    for (let p = 0; 1 << p <= mask; p++)
+      if ((((grown[input] as number) >>> p) & 1) === 0) attempt(input, (grown[input] as number) | (1 << p));
   });
   return grown;
 }
@@ -122,7 +124,8 @@ function irredundant(sets: Diagrams, set: Diagram, cubes: readonly Cube[]): Cube
   const bySize = [...cubes].sort(compareSizes);
   // after[i]: what the cubes from i on cover.
   const after = new Array<Diagram>(bySize.length + 1).fill(NONE);
-  for (let i = bySize.length - 1; i >= 0; i--) after[i] = sets.or(after[i + 1] as Diagram, cubeSet(sets, bySize[i] as Cube));
+  for (let i = bySize.length - 1; i >= 0; i--)
+    after[i] = sets.or(after[i + 1] as Diagram, cubeSet(sets, bySize[i] as Cube));
   if (after[0] !== set) throw new Error('grown cubes differ from their set');
   let kept: Diagram = NONE;
   return bySize.filter((cube, i) => {

@@ -34,13 +34,18 @@ export interface FoldedTable {
 }
 
 /** Outcomes exclude each other and leave no combination out. The commonest one (the first of several) is the rest. */
-export function foldOutcomes<W>(sets: Diagrams, outcomes: readonly { readonly word: W; readonly set: Diagram }[]): Folded<W> {
+export function foldOutcomes<W>(
+  sets: Diagrams,
+  outcomes: readonly { readonly word: W; readonly set: Diagram }[],
+): Folded<W> {
   const counted = outcomes.map((outcome) => ({ ...outcome, count: sets.count(outcome.set) }));
   const [first, ...others] = counted;
   if (first === undefined) throw new RangeError('there is no outcome');
   const rest = others.reduce((most, outcome) => (outcome.count > most.count ? outcome : most), first);
   const rows = counted.flatMap(({ word, set }) =>
-    set === NONE || word === rest.word ? [] : coverOf(sets, set).cubes.map((cube) => ({ cube, outcome: word, count: cubeCount(cube) })),
+    set === NONE || word === rest.word
+      ? []
+      : coverOf(sets, set).cubes.map((cube) => ({ cube, outcome: word, count: cubeCount(cube) })),
   );
   return { rows, otherwise: rest.word, otherwiseCount: rest.count };
 }

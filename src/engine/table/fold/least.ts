@@ -48,7 +48,9 @@ export function leastCover(sets: Diagrams, set: Diagram, greatest: readonly Cube
       const count = coveredBy[point]?.length ?? 0;
       if (count < ways) [hardest, ways] = [point, count];
     }
-    const ranked = (coveredBy[hardest] ?? []).map((c) => ({ c, gain: countBits(meet(open, covers[c] as BitSet)) })).sort((a, b) => b.gain - a.gain || a.c - b.c);
+    const ranked = (coveredBy[hardest] ?? [])
+      .map((c) => ({ c, gain: countBits(meet(open, covers[c] as BitSet)) }))
+      .sort((a, b) => b.gain - a.gain || a.c - b.c);
     for (const { c } of ranked) {
       chosen.push(c);
       search(without(open, covers[c] as BitSet));

@@ -48,7 +48,12 @@ export function checkRule(data: TableData, rule: Rule): RuleAnswer {
 }
 
 /** Checks a rule against every combination of a panel of any size. Throws `NeedsTable` where open paths do not say enough. */
-export function checkRuleByPaths(net: Network, conditions: PathConditions, paths: OpenPathSets, rule: Rule): RuleAnswer {
+export function checkRuleByPaths(
+  net: Network,
+  conditions: PathConditions,
+  paths: OpenPathSets,
+  rule: Rule,
+): RuleAnswer {
   const { sure, maybe } = evaluate(openPathSource(net, conditions, paths), rule.breaks);
   return answer(paths.sets, namesOfNetwork(net), rule, sure, maybe);
 }
@@ -80,7 +85,13 @@ function casesOf(sets: Diagrams, names: Names, set: Diagram): RuleCases {
 /** A name that the rules' language reads back as this name. */
 function sayName(name: string): string {
   const plain = /^[\p{L}\p{N}][\p{L}\p{N}_.→+-]*( [\p{L}\p{N}][\p{L}\p{N}_.→+-]*)*$/u.test(name) && !/[.]$/.test(name);
-  const words = name.split(' ').some((word) => /^(and|or|not|when|while|whenever|if|only|unless|is|at|every|all|each|any|some|no|a|an|never|always|rest)$/i.test(word));
+  const words = name
+    .split(' ')
+    .some((word) =>
+      /^(and|or|not|when|while|whenever|if|only|unless|is|at|every|all|each|any|some|no|a|an|never|always|rest)$/i.test(
+        word,
+      ),
+    );
   return (plain && !words) || name.includes('"') ? name : `"${name}"`;
 }
 
@@ -92,7 +103,9 @@ function sayCube(cube: Cube, { inputs }: Names): string {
   const parts = inputs.flatMap(({ label, positions }, i) => {
     const mask = cube[i] as number;
     if (mask === anyPosition(positions.length)) return [];
-    const named = positions.filter((_, p) => ((mask >>> p) & 1) === 1).map((name) => (name.length === 1 ? name : sayName(name)));
+    const named = positions
+      .filter((_, p) => ((mask >>> p) & 1) === 1)
+      .map((name) => (name.length === 1 ? name : sayName(name)));
     return [`${sayName(label)} at ${named.join('/')}`];
   });
   return parts.length === 0 ? IN_ALL : parts.join(' and ');
@@ -107,7 +120,8 @@ function sayCoils(cube: Cube, { inputs }: Names): string | undefined {
     const mask = cube[i] as number;
     if (mask === anyPosition(positions.length)) continue;
     if (rest === undefined || coils.length !== positions.length - 1) return undefined;
-    const nameOf = (coil: { readonly name: string }): string => sayName(uses.get(coil.name) === 1 ? coil.name : `${label}.${coil.name}`);
+    const nameOf = (coil: { readonly name: string }): string =>
+      sayName(uses.get(coil.name) === 1 ? coil.name : `${label}.${coil.name}`);
     const within = coils.filter(({ position }) => ((mask >>> position) & 1) === 1);
     if (((mask >>> rest) & 1) === 1) {
       parts.push(...coils.filter((coil) => !within.includes(coil)).map((coil) => `${nameOf(coil)} off`));

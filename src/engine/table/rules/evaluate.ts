@@ -32,11 +32,17 @@ export function evaluate<S>(source: RuleSource<S>, condition: Condition): Truth<
     case 'every':
       return condition.of
         .map((part) => evaluate(source, part))
-        .reduce((a, b) => ({ sure: source.and(a.sure, b.sure), maybe: source.and(a.maybe, b.maybe) }), { sure: source.all, maybe: source.all });
+        .reduce((a, b) => ({ sure: source.and(a.sure, b.sure), maybe: source.and(a.maybe, b.maybe) }), {
+          sure: source.all,
+          maybe: source.all,
+        });
     case 'any':
       return condition.of
         .map((part) => evaluate(source, part))
-        .reduce((a, b) => ({ sure: source.or(a.sure, b.sure), maybe: source.or(a.maybe, b.maybe) }), { sure: source.none, maybe: source.none });
+        .reduce((a, b) => ({ sure: source.or(a.sure, b.sure), maybe: source.or(a.maybe, b.maybe) }), {
+          sure: source.none,
+          maybe: source.none,
+        });
     case 'not': {
       const { sure, maybe } = evaluate(source, condition.of);
       return { sure: source.not(maybe), maybe: source.not(sure) };

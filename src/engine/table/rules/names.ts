@@ -29,14 +29,24 @@ export interface Named {
 export function namesOfNetwork(net: Network): Names {
   const label = (part: number): string => net.parts[part]?.label ?? '';
   return {
-    inputs: net.inputs.map(({ part, positions, rest, coils }) => ({ label: label(part), positions, coils, ...(rest === undefined ? {} : { rest }) })),
+    inputs: net.inputs.map(({ part, positions, rest, coils }) => ({
+      label: label(part),
+      positions,
+      coils,
+      ...(rest === undefined ? {} : { rest }),
+    })),
     actuators: net.actuators.map(({ part, rotary }) => ({ label: label(part), motion: rotary ? 'rotary' : 'linear' })),
     pumps: net.pumps.map(({ part }) => ({ label: label(part) })),
     lines: net.lines.slice(0, net.shown).map(({ name }) => ({ name })),
   };
 }
 
-export const namesOfTable = ({ inputs, actuators, pumps, lines }: TableData): Names => ({ inputs, actuators, pumps, lines });
+export const namesOfTable = ({ inputs, actuators, pumps, lines }: TableData): Names => ({
+  inputs,
+  actuators,
+  pumps,
+  lines,
+});
 
 /** Everything that has a name; a coil name that two valves use carries the label of its valve. */
 export function namedThings(names: Names): Named[] {
@@ -47,7 +57,12 @@ export function namedThings(names: Names): Named[] {
     ...names.actuators.map(({ label }, index): Named => ({ kind: 'actuator', name: label, index, position: 0 })),
     ...names.pumps.map(({ label }, index): Named => ({ kind: 'pump', name: label, index, position: 0 })),
     ...names.inputs.flatMap(({ label, coils }, index) =>
-      coils.map(({ name, position }): Named => ({ kind: 'coil', name: uses.get(name) === 1 ? name : `${label}.${name}`, index, position })),
+      coils.map(({ name, position }): Named => ({
+        kind: 'coil',
+        name: uses.get(name) === 1 ? name : `${label}.${name}`,
+        index,
+        position,
+      })),
     ),
     ...names.lines.map(({ name }, index): Named => ({ kind: 'line', name, index, position: 0 })),
   ];

@@ -7,7 +7,8 @@ import { Statements } from './statement.ts';
 
 const WHEN = ['when', 'while', 'whenever', 'if'];
 const ONLY = ['only if', 'only when', 'only while'];
-const HOW = 'Write for example "never C1 moves while C2 moves", "always P1 unloaded when every lever rests" or "C1 moves only if V1 at a".';
+const HOW =
+  'Write for example "never C1 moves while C2 moves", "always P1 unloaded when every lever rests" or "C1 moves only if V1 at a".';
 
 /**
  * Reads a rule:
@@ -71,11 +72,14 @@ class RuleParser {
     }
     const claim = this.condition();
     this.#in.mark(',');
-    if (ONLY.some((words) => this.#in.words(words))) return { text, breaks: this.#last(both(claim, not(this.condition()))) };
+    if (ONLY.some((words) => this.#in.words(words)))
+      return { text, breaks: this.#last(both(claim, not(this.condition()))) };
     if (this.#in.words('whenever')) return { text, breaks: this.#last(both(not(claim), this.condition())) };
     throw new Fault(
       this.#in.at,
-      this.#in.ended ? 'The rule does not say when this must or must not be.' : `"${this.#in.next}" does not go on with the rule.`,
+      this.#in.ended
+        ? 'The rule does not say when this must or must not be.'
+        : `"${this.#in.next}" does not go on with the rule.`,
       'Begin with "never" or "always", or go on with "only if" or "whenever" and a condition.',
     );
   }
@@ -96,7 +100,10 @@ class RuleParser {
 
   end(expected: string): void {
     if (this.#in.ended) return;
-    const what = this.#in.text[this.#in.at] === ')' ? 'This parenthesis closes nothing.' : `"${this.#in.next}" does not go on with the rule.`;
+    const what =
+      this.#in.text[this.#in.at] === ')'
+        ? 'This parenthesis closes nothing.'
+        : `"${this.#in.next}" does not go on with the rule.`;
     throw new Fault(this.#in.at, what, `End the rule here, or go on with ${expected}.`);
   }
 
@@ -119,7 +126,11 @@ class RuleParser {
     if (!this.#in.mark('(')) return this.#statements.read();
     const inner = this.#nested(() => this.condition());
     if (!this.#in.mark(')')) {
-      throw new Fault(this.#in.at, `The parenthesis of column ${opened + 1} is not closed here.`, 'Put ")" here, or go on with "and" or "or".');
+      throw new Fault(
+        this.#in.at,
+        `The parenthesis of column ${opened + 1} is not closed here.`,
+        'Put ")" here, or go on with "and" or "or".',
+      );
     }
     return inner;
   }

@@ -7,8 +7,20 @@ export interface Says<W> {
   readonly means: readonly W[];
 }
 
-const OUTWARD: readonly ActuatorVerdict[] = ['extends', 'turns A→B', 'moved out by load', 'moved out by spring', 'driven A→B by load'];
-const INWARD: readonly ActuatorVerdict[] = ['retracts', 'turns B→A', 'moved in by load', 'moved in by spring', 'driven B→A by load'];
+const OUTWARD: readonly ActuatorVerdict[] = [
+  'extends',
+  'turns A→B',
+  'moved out by load',
+  'moved out by spring',
+  'driven A→B by load',
+];
+const INWARD: readonly ActuatorVerdict[] = [
+  'retracts',
+  'turns B→A',
+  'moved in by load',
+  'moved in by spring',
+  'driven B→A by load',
+];
 const STANDING: readonly ActuatorVerdict[] = ['at stop', 'stalled', 'held', 'held one way', 'floats'];
 
 const group = <W>(means: readonly W[], ...words: string[]): Says<W>[] => words.map((word) => ({ words: word, means }));
@@ -23,7 +35,9 @@ export const ACTUATOR_SAYS: readonly Says<ActuatorVerdict>[] = [
   ...group<ActuatorVerdict>(['turns A→B'], 'turns A>B', 'turns A->B'),
   ...group<ActuatorVerdict>(['turns B→A'], 'turns B>A', 'turns B->A'),
   ...group<ActuatorVerdict>(['floats'], 'float'),
-  ...ACTUATOR_VERDICTS.filter((word) => word !== 'undetermined' && word !== 'rests on pressure').flatMap((word) => group([word], word)),
+  ...ACTUATOR_VERDICTS.filter((word) => word !== 'undetermined' && word !== 'rests on pressure').flatMap((word) =>
+    group([word], word),
+  ),
 ];
 
 export const PUMP_SAYS: readonly Says<PumpVerdict>[] = [

@@ -14,7 +14,11 @@ import type { RuleSource, Truth } from './evaluate.ts';
 export function tableSource(data: TableData): RuleSource<Plane> {
   const { count } = data;
   const radices = data.inputs.map((input) => input.positions.length);
-  const union = <W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], wanted: readonly W[]): Plane => {
+  const union = <W>(
+    planes: readonly (Plane | undefined)[] | undefined,
+    words: readonly W[],
+    wanted: readonly W[],
+  ): Plane => {
     const any = emptySet(count);
     for (const word of wanted) {
       const plane = planes?.[words.indexOf(word)];
@@ -24,7 +28,12 @@ export function tableSource(data: TableData): RuleSource<Plane> {
   };
   const known = (set: Plane): Truth<Plane> => ({ sure: set, maybe: set });
   /** `open`: words that leave the answer open. */
-  const open = <W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], wanted: readonly W[], undecided: readonly W[]): Truth<Plane> => ({
+  const open = <W>(
+    planes: readonly (Plane | undefined)[] | undefined,
+    words: readonly W[],
+    wanted: readonly W[],
+    undecided: readonly W[],
+  ): Truth<Plane> => ({
     sure: union(planes, words, wanted),
     maybe: union(planes, words, [...wanted, ...undecided]),
   });
@@ -33,9 +42,14 @@ export function tableSource(data: TableData): RuleSource<Plane> {
     all: fullSet(count),
     and: (a, b) => a.map((word, i) => word & (b[i] as number)),
     or: (a, b) => a.map((word, i) => word | (b[i] as number)),
-    not: (a) => trim(a.map((word) => ~word), count),
+    not: (a) =>
+      trim(
+        a.map((word) => ~word),
+        count,
+      ),
     position: (input, positions) => positionMask(radices, input, positions, count),
-    actuator: (i, verdicts) => open(data.actuatorPlanes[i], ACTUATOR_VERDICTS, verdicts, ['undetermined', 'rests on pressure']),
+    actuator: (i, verdicts) =>
+      open(data.actuatorPlanes[i], ACTUATOR_VERDICTS, verdicts, ['undetermined', 'rests on pressure']),
     pump: (i, verdicts) => open(data.pumpPlanes[i], PUMP_VERDICTS, verdicts, ['rests on pressure']),
     line: (i, classes) => known(union(data.linePlanes[i], LINE_CLASSES, classes)),
     blocked: (i, kinds) => known(union(data.blockedPlanes[i], BLOCKED_KINDS, kinds)),
@@ -72,18 +86,26 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
       const pump = net.pumps[i];
       const label = net.parts[pump?.part ?? -1]?.label ?? 'a pump';
       if (!conditions.pumpsRunning) return known(verdicts.includes('stopped') ? ALL : NONE);
-      if (verdicts.some((word) => word !== 'unloaded') || pump === undefined) throw new NeedsTable(`More of ${label} than whether a free path to tank unloads it`);
+      if (verdicts.some((word) => word !== 'unloaded') || pump === undefined)
+        throw new NeedsTable(`More of ${label} than whether a free path to tank unloads it`);
       // Pressures may find it unloaded over a throttle too.
-      return { sure: sets.minus(paths.freeToTank[pump.outlet] as Diagram, paths.hunts), maybe: sets.or(paths.toTank[pump.outlet] as Diagram, paths.hunts) };
+      return {
+        sure: sets.minus(paths.freeToTank[pump.outlet] as Diagram, paths.hunts),
+        maybe: sets.or(paths.toTank[pump.outlet] as Diagram, paths.hunts),
+      };
     },
     line: (i, classes) => {
       let sure: Diagram = NONE;
-      for (const word of classes) if (word !== 'carries displaced oil' && word !== 'cut off') sure = sets.or(sure, classSet(paths, i, word));
+      for (const word of classes)
+        if (word !== 'carries displaced oil' && word !== 'cut off') sure = sets.or(sure, classSet(paths, i, word));
       const shut = classSet(paths, i, 'cut off');
       const both = classes.includes('cut off') && classes.includes('carries displaced oil');
       // Open paths alone do not tell a line that carries displaced oil from one that is cut off.
       if (both) return known(sets.or(sure, shut));
-      return { sure, maybe: classes.includes('cut off') || classes.includes('carries displaced oil') ? sets.or(sure, shut) : sure };
+      return {
+        sure,
+        maybe: classes.includes('cut off') || classes.includes('carries displaced oil') ? sets.or(sure, shut) : sure,
+      };
     },
     blocked: (i) => {
       throw new NeedsTable(`Whether line ${net.lines[i]?.name ?? ''} is blocked`);

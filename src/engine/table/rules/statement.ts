@@ -7,7 +7,11 @@ import type { Says } from './says.ts';
 import { ACTUATOR_SAYS, BLOCKED_SAYS, LINE_SAYS, PUMP_SAYS, TRAPPED_SAYS } from './says.ts';
 
 /** Words for all things of a kind. */
-const KINDS: readonly { readonly words: readonly string[]; readonly kind: NamedKind; readonly motion?: 'linear' | 'rotary' }[] = [
+const KINDS: readonly {
+  readonly words: readonly string[];
+  readonly kind: NamedKind;
+  readonly motion?: 'linear' | 'rotary';
+}[] = [
   { words: ['lever', 'levers', 'valve', 'valves'], kind: 'valve' },
   { words: ['coil', 'coils'], kind: 'coil' },
   { words: ['actuator', 'actuators'], kind: 'actuator' },
@@ -36,14 +40,24 @@ export class Statements {
     const start = this.#in.at;
     const quantity = this.#quantity();
     if (quantity) {
-      const things = quantity.kind === 'valve' && this.#aboutRest() ? quantity.things.filter(({ index }) => this.#names.inputs[index]?.rest !== undefined) : quantity.things;
-      if (things.length === 0) throw new Fault(start, 'The circuit has none of these, or none with a rest position.', 'Leave this out, or name a part.');
+      const things =
+        quantity.kind === 'valve' && this.#aboutRest()
+          ? quantity.things.filter(({ index }) => this.#names.inputs[index]?.rest !== undefined)
+          : quantity.things;
+      if (things.length === 0)
+        throw new Fault(
+          start,
+          'The circuit has none of these, or none with a rest position.',
+          'Leave this out, or name a part.',
+        );
       return this.#say(things, quantity.how);
     }
     for (const kind of ['line', 'coil', 'pump', 'valve', 'lever', 'cylinder', 'motor', 'actuator'] as const) {
       const back = this.#in.at;
       if (!this.#in.words(kind)) continue;
-      const only = this.#things.filter((thing) => thing.kind === (KINDS.find(({ words }) => words.includes(kind))?.kind ?? kind));
+      const only = this.#things.filter(
+        (thing) => thing.kind === (KINDS.find(({ words }) => words.includes(kind))?.kind ?? kind),
+      );
       const found = this.#in.oneOf(only.map((thing) => thing.name));
       if (found >= 0) return this.#say([only[found] as Named], 'every');
       if (kind === 'line' || kind === 'coil') throw this.#unknown(only, `${kind} `);
@@ -55,27 +69,39 @@ export class Statements {
     return this.#say([this.#things[found] as Named], 'every');
   }
 
-  #quantity(): { readonly things: readonly Named[]; readonly kind: NamedKind; readonly how: 'every' | 'any' | 'no' } | undefined {
+  #quantity():
+    { readonly things: readonly Named[]; readonly kind: NamedKind; readonly how: 'every' | 'any' | 'no' } | undefined {
     const back = this.#in.at;
-    const how = EVERY.some((w) => this.#in.words(w)) ? 'every' : ANY.some((w) => this.#in.words(w)) ? 'any' : this.#in.words('no') ? 'no' : undefined;
+    const how = EVERY.some((w) => this.#in.words(w))
+      ? 'every'
+      : ANY.some((w) => this.#in.words(w))
+        ? 'any'
+        : this.#in.words('no')
+          ? 'no'
+          : undefined;
     const found = how && KINDS.find(({ words }) => words.some((w) => this.#in.words(w)));
     if (how === undefined || found === undefined) {
       this.#in.at = back;
       return undefined;
     }
     const { kind, motion } = found;
-    const things = this.#things.filter((thing) => thing.kind === kind && (motion === undefined || this.#names.actuators[thing.index]?.motion === motion));
+    const things = this.#things.filter(
+      (thing) => thing.kind === kind && (motion === undefined || this.#names.actuators[thing.index]?.motion === motion),
+    );
     return { things, kind, how };
   }
 
   #aboutRest(): boolean {
-    return ['rests', 'rest', 'is at rest', 'are at rest', 'at rest', 'is not at rest', 'stands at rest'].some((words) => this.#in.peek(words));
+    return ['rests', 'rest', 'is at rest', 'are at rest', 'at rest', 'is not at rest', 'stands at rest'].some((words) =>
+      this.#in.peek(words),
+    );
   }
 
   /** What is said of all these things, which are of one kind. */
   #say(things: readonly Named[], how: 'every' | 'any' | 'no'): Condition {
     const start = this.#in.at;
-    const copula = !this.#in.peek('stands still') && ['is', 'are', 'stays', 'stands'].some((word) => this.#in.words(word));
+    const copula =
+      !this.#in.peek('stands still') && ['is', 'are', 'stays', 'stands'].some((word) => this.#in.words(word));
     const negated = copula ? this.#in.words('not') : this.#in.words('does not') || this.#in.words('do not');
     const predicate = this.#predicate(things, start);
     const each = things.map((thing): Condition => (negated ? { type: 'not', of: predicate(thing) } : predicate(thing)));
@@ -87,7 +113,9 @@ export class Statements {
   #predicate(things: readonly Named[], start: number): (thing: Named) => Condition {
     const kind = things[0]?.kind;
     const one = things.length === 1 ? things[0] : undefined;
-    const called = one ? `${one.kind === 'line' || one.kind === 'coil' ? `${one.kind} ` : ''}${one.name}` : `every ${kind}`;
+    const called = one
+      ? `${one.kind === 'line' || one.kind === 'coil' ? `${one.kind} ` : ''}${one.name}`
+      : `every ${kind}`;
     switch (kind) {
       case 'valve':
         return this.#position(one, called);
@@ -110,11 +138,17 @@ export class Statements {
       case 'line': {
         const says = [...LINE_SAYS, ...BLOCKED_SAYS, ...TRAPPED_SAYS];
         const found = this.#in.oneOf(says.map(({ words }) => words));
-        if (found < 0) throw this.#unsaid(called, says.map(({ words }) => words));
+        if (found < 0)
+          throw this.#unsaid(
+            called,
+            says.map(({ words }) => words),
+          );
         const inTrapped = found - LINE_SAYS.length - BLOCKED_SAYS.length;
-        if (inTrapped >= 0) return ({ index }) => ({ type: 'trapped', line: index, reasons: TRAPPED_SAYS[inTrapped]?.means ?? [] });
+        if (inTrapped >= 0)
+          return ({ index }) => ({ type: 'trapped', line: index, reasons: TRAPPED_SAYS[inTrapped]?.means ?? [] });
         const inBlocked = found - LINE_SAYS.length;
-        if (inBlocked >= 0) return ({ index }) => ({ type: 'blocked', line: index, kinds: BLOCKED_SAYS[inBlocked]?.means ?? [] });
+        if (inBlocked >= 0)
+          return ({ index }) => ({ type: 'blocked', line: index, kinds: BLOCKED_SAYS[inBlocked]?.means ?? [] });
         return ({ index }) => ({ type: 'line', line: index, classes: LINE_SAYS[found]?.means ?? [] });
       }
       case undefined:
@@ -124,17 +158,28 @@ export class Statements {
 
   #meaning<W>(says: readonly Says<W>[], called: string): readonly W[] {
     const found = this.#in.oneOf(says.map(({ words }) => words));
-    if (found < 0) throw this.#unsaid(called, says.map(({ words }) => words));
+    if (found < 0)
+      throw this.#unsaid(
+        called,
+        says.map(({ words }) => words),
+      );
     return says[found]?.means ?? [];
   }
 
   /** `rests`, `at rest`, `at a`, `at a/0`. A position called `rest` goes before the rest position. */
   #position(one: Named | undefined, called: string): (thing: Named) => Condition {
-    const rests = (start: number) => ({ index }: Named): Condition => {
-      const rest = this.#names.inputs[index]?.rest;
-      if (rest === undefined) throw new Fault(start, `${this.#names.inputs[index]?.label ?? ''} has no rest position.`, 'Name one of its positions after "at".');
-      return { type: 'position', input: index, positions: 1 << rest };
-    };
+    const rests =
+      (start: number) =>
+      ({ index }: Named): Condition => {
+        const rest = this.#names.inputs[index]?.rest;
+        if (rest === undefined)
+          throw new Fault(
+            start,
+            `${this.#names.inputs[index]?.label ?? ''} has no rest position.`,
+            'Name one of its positions after "at".',
+          );
+        return { type: 'position', input: index, positions: 1 << rest };
+      };
     const start = this.#in.at;
     if (this.#in.words('rests') || this.#in.words('rest')) return rests(start);
     if (!this.#in.words('at') && !this.#in.words('in')) throw this.#unsaid(called, ['at …', 'rests']);
@@ -145,8 +190,14 @@ export class Statements {
       const found = this.#in.oneOf(names);
       if (found < 0 && positions === 0 && this.#in.words('rest')) return rests(place);
       if (found < 0) {
-        const remedy = one ? `Use one of ${names.join(', ')}.` : 'Of several valves only "rests" can be said; name the valves one by one for other positions.';
-        throw new Fault(this.#in.at, this.#in.ended ? 'A position should stand here.' : `${called} has no position "${this.#in.next}".`, remedy);
+        const remedy = one
+          ? `Use one of ${names.join(', ')}.`
+          : 'Of several valves only "rests" can be said; name the valves one by one for other positions.';
+        throw new Fault(
+          this.#in.at,
+          this.#in.ended ? 'A position should stand here.' : `${called} has no position "${this.#in.next}".`,
+          remedy,
+        );
       }
       positions |= 1 << found;
     } while (this.#in.mark('/'));
@@ -155,15 +206,28 @@ export class Statements {
 
   #unsaid(called: string, words: readonly string[]): Fault {
     const { at, next, ended } = this.#in;
-    return new Fault(at, ended ? `Nothing is said of ${called}.` : `"${next}" cannot be said of ${called}.`, `Say one of: ${words.join('; ')}.`);
+    return new Fault(
+      at,
+      ended ? `Nothing is said of ${called}.` : `"${next}" cannot be said of ${called}.`,
+      `Say one of: ${words.join('; ')}.`,
+    );
   }
 
   #unknown(things: readonly Named[], prefix: string): Fault {
     const { at, next, ended } = this.#in;
     const names = things.map(({ name }) => name);
-    if (ended) return new Fault(at, `The name of a ${prefix === '' ? 'valve, coil, actuator, pump or line' : prefix.trim()} should stand here.`, listed(names));
+    if (ended)
+      return new Fault(
+        at,
+        `The name of a ${prefix === '' ? 'valve, coil, actuator, pump or line' : prefix.trim()} should stand here.`,
+        listed(names),
+      );
     const meant = nearest(next.replaceAll('"', ''), names);
-    return new Fault(at, `There is no ${prefix}"${next.replaceAll('"', '')}".`, meant === undefined ? listed(names) : `Did you mean ${meant}? ${listed(names)}`);
+    return new Fault(
+      at,
+      `There is no ${prefix}"${next.replaceAll('"', '')}".`,
+      meant === undefined ? listed(names) : `Did you mean ${meant}? ${listed(names)}`,
+    );
   }
 }
 

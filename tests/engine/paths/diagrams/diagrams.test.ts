@@ -52,21 +52,31 @@ function holds(f: Formula, at: readonly number[]): boolean {
 }
 
 const RADICES = [3, 2, 4, 3];
-const ROWS = Array.from({ length: 72 }, (_, row) => [Math.floor(row / 24), Math.floor(row / 12) % 2, Math.floor(row / 3) % 4, row % 3]);
+const ROWS = Array.from({ length: 72 }, (_, row) => [
+  Math.floor(row / 24),
+  Math.floor(row / 12) % 2,
+  Math.floor(row / 3) % 4,
+  row % 3,
+]);
 
 test('operations, counts, membership and examples agree with brute force, in any order', () => {
   fc.assert(
-    fc.property(formula, fc.shuffledSubarray([0, 1, 2, 3], { minLength: 4 }), fc.array(fc.nat(1), { minLength: 4, maxLength: 4 }), (f, order, usual) => {
-      const sets = new Diagrams(RADICES, { order });
-      const set = build(sets, f);
-      const rows = ROWS.filter((at) => holds(f, at));
-      expect(sets.count(set)).toBe(BigInt(rows.length));
-      for (const at of ROWS) expect(sets.has(set, at)).toBe(holds(f, at));
-      const example = sets.example(set, usual);
-      if (rows.length === 0) expect([set, example]).toEqual([NONE, undefined]);
-      else expect(holds(f, example ?? [])).toBe(true);
-      if (rows.length === ROWS.length) expect(set).toBe(ALL);
-    }),
+    fc.property(
+      formula,
+      fc.shuffledSubarray([0, 1, 2, 3], { minLength: 4 }),
+      fc.array(fc.nat(1), { minLength: 4, maxLength: 4 }),
+      (f, order, usual) => {
+        const sets = new Diagrams(RADICES, { order });
+        const set = build(sets, f);
+        const rows = ROWS.filter((at) => holds(f, at));
+        expect(sets.count(set)).toBe(BigInt(rows.length));
+        for (const at of ROWS) expect(sets.has(set, at)).toBe(holds(f, at));
+        const example = sets.example(set, usual);
+        if (rows.length === 0) expect([set, example]).toEqual([NONE, undefined]);
+        else expect(holds(f, example ?? [])).toBe(true);
+        if (rows.length === ROWS.length) expect(set).toBe(ALL);
+      },
+    ),
     { numRuns: 500, seed: 5 },
   );
 });
@@ -111,8 +121,10 @@ test('no inputs, inputs of one position, and a limit on the nodes', () => {
   expect(one.literal(0, 0)).toBe(NONE);
   const small = new Diagrams(new Array<number>(12).fill(2), { mostNodes: 20 });
   const parity = (): Diagram =>
-    Array.from({ length: 12 }, (_, i) => small.literal(i, 2)).reduce((set, x) => small.or(small.minus(set, x), small.minus(x, set)), NONE);
+    Array.from({ length: 12 }, (_, i) => small.literal(i, 2)).reduce(
+      (set, x) => small.or(small.minus(set, x), small.minus(x, set)),
+      NONE,
+    );
   expect(parity).toThrow(TooManyNodes);
   expect(() => new Diagrams([2, 2], { order: [0, 0] })).toThrow(RangeError);
 });
-

@@ -32,7 +32,8 @@ function compare(net: Network, pumpsRunning: boolean, order?: readonly number[])
       const set = classSet(paths, line, word);
       const found = emptySet(data.count);
       for (let row = 0; row < data.count; row++) {
-        if (paths.sets.has(set, table.positionsOf(row))) found[row >>> 5] = (found[row >>> 5] as number) | (1 << (row & 31));
+        if (paths.sets.has(set, table.positionsOf(row)))
+          found[row >>> 5] = (found[row >>> 5] as number) | (1 << (row & 31));
       }
       expect(equalSets(found, plane), `${name} ${word}`).toBe(true);
     }
@@ -62,7 +63,9 @@ test('line classes of the valve families are equal to the enumeration, whatever 
 test('hunting combinations are those that the enumeration calls undetermined for every actuator', () => {
   // The lock check's own pilot is vented through the way that it opens.
   const net = networkOf(
-    circuit('P1 fixed-pump, T1 tank, Q1 throttle, L1 lock-check, C1 cylinder | P1.P Q1.A | Q1.B L1.C L1.X | L1.V T1.T P1.S'),
+    circuit(
+      'P1 fixed-pump, T1 tank, Q1 throttle, L1 lock-check, C1 cylinder | P1.P Q1.A | Q1.B L1.C L1.X | L1.V T1.T P1.S',
+    ),
   );
   const conditions = { pumpsRunning: true, places: ['between' as const] };
   const table = new StateTable(tabulate(net, conditions, unlimited, { pressureRows: 0 }));
@@ -96,7 +99,10 @@ test('two valves that sit in one branch but far apart in the list come together'
   // "Some branch is open": 2 nodes to a branch in this order, exponential in the order of the circuit.
   const some = (sets: Diagrams): number =>
     numbers.reduce((set, i) => sets.or(set, sets.and(sets.literal(i - 1, 1), sets.literal(i + 5, 1))), 0);
-  const good = new Diagrams(net.inputs.map(() => 2), { order });
+  const good = new Diagrams(
+    net.inputs.map(() => 2),
+    { order },
+  );
   const bad = new Diagrams(net.inputs.map(() => 2));
   expect(good.size(some(good))).toBe(12);
   expect(bad.size(some(bad))).toBe(126);

@@ -17,13 +17,26 @@ function folded(belongs: (at: readonly number[]) => boolean): { count: bigint; t
 }
 
 function rowsOf(radices: readonly number[]): number[][] {
-  return radices.reduce<number[][]>((rows, radix) => rows.flatMap((row) => Array.from({ length: radix }, (_, p) => [...row, p])), [[]]);
+  return radices.reduce<number[][]>(
+    (rows, radix) => rows.flatMap((row) => Array.from({ length: radix }, (_, p) => [...row, p])),
+    [[]],
+  );
 }
 
 function setOf(sets: Diagrams, belongs: (at: readonly number[]) => boolean): Diagram {
   return rowsOf(sets.radices)
     .filter(belongs)
-    .reduce((set, at) => sets.or(set, cubeSet(sets, at.map((p) => 1 << p))), NONE);
+    .reduce(
+      (set, at) =>
+        sets.or(
+          set,
+          cubeSet(
+            sets,
+            at.map((p) => 1 << p),
+          ),
+        ),
+      NONE,
+    );
 }
 
 const offCentre = (at: readonly number[]): number => at.filter((p) => p !== 1).length;
@@ -40,7 +53,12 @@ test.each<[string, (at: readonly number[]) => boolean, number, number]>([
 
 test('the terms of "any off centre" are the valves one by one', () => {
   const sets = new Diagrams([3, 3, 3]);
-  expect(coverOf(sets, setOf(sets, (at) => offCentre(at) >= 1)).cubes).toEqual([
+  expect(
+    coverOf(
+      sets,
+      setOf(sets, (at) => offCentre(at) >= 1),
+    ).cubes,
+  ).toEqual([
     [OFF, 7, 7],
     [7, OFF, 7],
     [7, 7, OFF],
@@ -52,7 +70,8 @@ const CUBES: Cube[] = rowsOf([3, 7, 7]).map((row) => row.map((p) => p + 1));
 
 /** The fewest cubes by trying all choices of one, two, … cubes. */
 function bruteForce(rows: readonly number[][], inSet: ReadonlySet<number>): number {
-  const inside = (cube: Cube, row: readonly number[]): boolean => cube.every((mask, i) => ((mask >> (row[i] ?? 0)) & 1) === 1);
+  const inside = (cube: Cube, row: readonly number[]): boolean =>
+    cube.every((mask, i) => ((mask >> (row[i] ?? 0)) & 1) === 1);
   const masks = CUBES.map((cube) => rows.reduce((mask, row, i) => (inside(cube, row) ? mask | (1 << i) : mask), 0));
   const want = [...inSet].reduce((mask, i) => mask | (1 << i), 0);
   const usable = masks.filter((mask) => (mask & ~want) === 0);
@@ -84,11 +103,24 @@ test('large sets: every cube lies in the set, none can grow and none can be left
   fc.assert(
     fc.property(
       fc.array(fc.array(fc.nat(2), { minLength: 12, maxLength: 12 }), { minLength: 1, maxLength: 12 }),
-      fc.shuffledSubarray(Array.from({ length: 12 }, (_, i) => i), { minLength: 12 }),
+      fc.shuffledSubarray(
+        Array.from({ length: 12 }, (_, i) => i),
+        { minLength: 12 },
+      ),
       (picks, order) => {
         const sets = new Diagrams(new Array<number>(12).fill(3), { order });
         // Wide terms that overlap: two thirds of the inputs are free.
-        const set = picks.reduce((all, pick) => sets.or(all, cubeSet(sets, pick.map((p, i) => (i % 3 === 0 ? 1 << p : i % 3 === 1 ? 7 & ~(1 << p) : 7)))), NONE);
+        const set = picks.reduce(
+          (all, pick) =>
+            sets.or(
+              all,
+              cubeSet(
+                sets,
+                pick.map((p, i) => (i % 3 === 0 ? 1 << p : i % 3 === 1 ? 7 & ~(1 << p) : 7)),
+              ),
+            ),
+          NONE,
+        );
         const { cubes } = coverOf(sets, set);
         const made = cubes.map((cube) => cubeSet(sets, cube));
         expect(made.reduce((all, one) => sets.or(all, one), NONE)).toBe(set);

@@ -12,7 +12,9 @@ import { randomCircuit } from '../../../random-circuit.ts';
 /** What the folded rows say of one combination: exactly one word, from the rows or from the rest. */
 function said<W>(folded: Folded<W>, positions: readonly number[]): W {
   const words = new Set(
-    folded.rows.filter(({ cube }) => cube.every((mask, i) => ((mask >> (positions[i] ?? 0)) & 1) === 1)).map((row) => row.outcome),
+    folded.rows
+      .filter(({ cube }) => cube.every((mask, i) => ((mask >> (positions[i] ?? 0)) & 1) === 1))
+      .map((row) => row.outcome),
   );
   expect(words.size).toBeLessThan(2);
   return [...words][0] ?? folded.otherwise;
@@ -26,7 +28,9 @@ test('unfolded again, every row of random tables says what it said', () => {
       const folded = foldTable(data, unlimited);
       for (let row = 0; row < table.count; row++) {
         const at = table.positionsOf(row);
-        data.actuators.forEach((_, i) => expect(said(folded.actuators[i] as Folded<string>, at)).toBe(table.actuator(i, row)));
+        data.actuators.forEach((_, i) =>
+          expect(said(folded.actuators[i] as Folded<string>, at)).toBe(table.actuator(i, row)),
+        );
         data.pumps.forEach((_, i) => expect(said(folded.pumps[i] as Folded<string>, at)).toBe(table.pump(i, row)));
         data.lines.forEach((_, i) => expect(said(folded.lines[i] as Folded<string>, at)).toBe(table.line(i, row)));
       }
@@ -40,7 +44,9 @@ test('bypass centres in series: the pump is unloaded at one combination, a cylin
   const data = tabulate(family('SERIES', 4), { pumps: 'running' }, unlimited, { pressureRows: 0 });
   const folded = foldTable(data, unlimited);
   const pump = folded.pumps[0] as Folded<string>;
-  expect(pump.rows.filter((row) => row.outcome === 'unloaded')).toEqual([{ cube: [2, 2, 2, 2], outcome: 'unloaded', count: 1n }]);
+  expect(pump.rows.filter((row) => row.outcome === 'unloaded')).toEqual([
+    { cube: [2, 2, 2, 2], outcome: 'unloaded', count: 1n },
+  ]);
   const again = foldTable(data, unlimited);
   expect(again).toEqual(folded);
 });

@@ -59,7 +59,9 @@ function sameRows(table: StateTable, names: Names, cases: RuleCases | undefined,
   for (const terms of [cases.terms, cases.coilTerms ?? []]) {
     const conditions = terms.filter((term) => term !== IN_ALL).map((term) => need(parseCondition(term, names)));
     if (conditions.length === 0) continue;
-    const found = Array.from({ length: table.count }, (_, row) => row).filter((row) => conditions.some((c) => holds(table, row, c)));
+    const found = Array.from({ length: table.count }, (_, row) => row).filter((row) =>
+      conditions.some((c) => holds(table, row, c)),
+    );
     expect(found).toEqual(rows);
   }
 }
@@ -79,7 +81,8 @@ function ruleFor(names: Names, pick: (most: number) => number): string {
       const input = one(names.inputs);
       return `"${input.label}" at "${one(input.positions)}"${pick(2) === 0 ? '' : `/"${one(input.positions)}"`}`;
     }
-    if (kind === 1 && names.actuators.length > 0) return `"${one(names.actuators).label}" ${one(SAYINGS['actuators'] ?? [])}`;
+    if (kind === 1 && names.actuators.length > 0)
+      return `"${one(names.actuators).label}" ${one(SAYINGS['actuators'] ?? [])}`;
     if (kind === 2) return `"${one(names.pumps).label}" ${one(SAYINGS['pumps'] ?? [])}`;
     if (kind === 4) return `(${statement(depth + 1)} and ${statement(depth + 1)})`;
     if (kind === 5) return `(${statement(depth + 1)} or ${statement(depth + 1)})`;
@@ -87,28 +90,53 @@ function ruleFor(names: Names, pick: (most: number) => number): string {
     return names.lines.length > 0 ? `line "${one(names.lines).name}" ${one(SAYINGS['lines'] ?? [])}` : 'any pump works';
   };
   const [a, b] = [statement(0), statement(0)];
-  return one([`never ${a}`, `never ${a} while ${b}`, `always ${a} when ${b}`, `${a} only if ${b}`, `always ${a} unless ${b}`]);
+  return one([
+    `never ${a}`,
+    `never ${a} while ${b}`,
+    `always ${a} when ${b}`,
+    `${a} only if ${b}`,
+    `always ${a} unless ${b}`,
+  ]);
 }
 
 test('answers agree with brute force over the rows, and their terms can be read back', () => {
   let broken = 0;
   let undecided = 0;
   fc.assert(
-    fc.property(randomCircuit(4), fc.boolean(), fc.array(fc.nat(), { minLength: 40, maxLength: 40 }), (drawn, running, picks) => {
-      const table = new StateTable(tabulate(drawn, { pumps: running ? 'running' : 'stopped' }, unlimited, { pressureRows: 0 }));
-      const names = namesOfTable(table.data);
-      let next = 0;
-      const text = ruleFor(names, (most) => (picks[next++ % picks.length] ?? 0) % most);
-      const rule = need(parseRule(text, names));
-      const answer = checkRule(table.data, rule);
-      const rows = Array.from({ length: table.count }, (_, row) => row);
-      const found = rows.map((row) => holds(table, row, rule.breaks));
-      sameRows(table, names, answer.broken, rows.filter((row) => found[row] === true));
-      sameRows(table, names, answer.undecided, rows.filter((row) => found[row] === undefined));
-      expect(answer.outcome).toBe(found.includes(true) ? 'broken' : found.includes(undefined) ? 'not decided' : 'holds');
-      broken += answer.outcome === 'broken' ? 1 : 0;
-      undecided += answer.outcome === 'not decided' ? 1 : 0;
-    }),
+    fc.property(
+      randomCircuit(4),
+      fc.boolean(),
+      fc.array(fc.nat(), { minLength: 40, maxLength: 40 }),
+      (drawn, running, picks) => {
+        const table = new StateTable(
+          tabulate(drawn, { pumps: running ? 'running' : 'stopped' }, unlimited, { pressureRows: 0 }),
+        );
+        const names = namesOfTable(table.data);
+        let next = 0;
+        const text = ruleFor(names, (most) => (picks[next++ % picks.length] ?? 0) % most);
+        const rule = need(parseRule(text, names));
+        const answer = checkRule(table.data, rule);
+        const rows = Array.from({ length: table.count }, (_, row) => row);
+        const found = rows.map((row) => holds(table, row, rule.breaks));
+        sameRows(
+          table,
+          names,
+          answer.broken,
+          rows.filter((row) => found[row] === true),
+        );
+        sameRows(
+          table,
+          names,
+          answer.undecided,
+          rows.filter((row) => found[row] === undefined),
+        );
+        expect(answer.outcome).toBe(
+          found.includes(true) ? 'broken' : found.includes(undefined) ? 'not decided' : 'holds',
+        );
+        broken += answer.outcome === 'broken' ? 1 : 0;
+        undecided += answer.outcome === 'not decided' ? 1 : 0;
+      },
+    ),
     { numRuns: 400, seed: 21 },
   );
   expect(broken).toBeGreaterThan(50);
@@ -128,7 +156,11 @@ test('two cylinders on one pump: what breaks a rule is the interlock', () => {
   // Closed centres in parallel; practice: a valve moves its own cylinder alone while the other rests.
   expect(ask(circuit(PRESS), 'DRILL moves only if V2 at a/b').outcome).toBe('holds');
   const rule = ask(circuit(PRESS), 'never V1 at b while V2 at a');
-  expect(rule).toMatchObject({ outcome: 'broken', combinations: 9n, broken: { count: 1n, terms: ['V1 at b and V2 at a'], least: true, example: [2, 0] } });
+  expect(rule).toMatchObject({
+    outcome: 'broken',
+    combinations: 9n,
+    broken: { count: 1n, terms: ['V1 at b and V2 at a'], least: true, example: [2, 0] },
+  });
   // The pump has nowhere to go at rest but the relief valve.
   const rests = ask(circuit(PRESS), 'always PUMP unloaded when every lever rests');
   expect(rests.broken).toMatchObject({ count: 1n, terms: ['V1 at 0 and V2 at 0'] });
@@ -148,14 +180,23 @@ test('coils: the interlock in the words of the panel', () => {
     { name: `Y${first}`, position: 0 },
     { name: `Y${first + 1}`, position: 2 },
   ];
-  const driven = { ...data, inputs: data.inputs.map((input, i) => ({ ...input, by: 'coil' as const, coils: coils(2 * i + 1) })) };
-  const terms = (text: string): readonly string[] | undefined => checkRule(driven, need(parseRule(text, namesOfTable(driven)))).broken?.coilTerms;
+  const driven = {
+    ...data,
+    inputs: data.inputs.map((input, i) => ({ ...input, by: 'coil' as const, coils: coils(2 * i + 1) })),
+  };
+  const terms = (text: string): readonly string[] | undefined =>
+    checkRule(driven, need(parseRule(text, namesOfTable(driven)))).broken?.coilTerms;
   expect(terms('never Y1 on while V2 at a/0')).toEqual(['Y1 on and Y4 off']);
   expect(terms('never V1 at a/b while V2 rests')).toEqual(['(Y1 on or Y2 on) and Y3 off and Y4 off']);
 });
 
 test('panels too large to list: exact counts, in agreement with the table where there is one', () => {
-  const texts = ['always P1 unloaded when every lever rests', 'never line V3.T is fed', 'always line V2.A is cut off when V2 rests', 'never line V1.P is fed unless V1 at a or V3 at b'];
+  const texts = [
+    'always P1 unloaded when every lever rests',
+    'never line V3.T is fed',
+    'always line V2.A is cut off when V2 rests',
+    'never line V1.P is fed unless V1 at a or V3 at b',
+  ];
   let compared = 0;
   for (const name of ['BANK', 'SERIES', 'SIXWAY', 'MIX'] as const) {
     const net = networkOf(family(name, 5));
@@ -180,8 +221,12 @@ test('panels too large to list: exact counts, in agreement with the table where 
   const net = networkOf(family('SIXWAY', 40));
   const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
   const paths = openPathSets(net, conditions);
-  const check = (text: string): RuleAnswer => checkRuleByPaths(net, conditions, paths, need(parseRule(text, namesOfNetwork(net))));
-  expect(check('always P1 unloaded when every lever rests')).toMatchObject({ outcome: 'holds', combinations: 3n ** 40n });
+  const check = (text: string): RuleAnswer =>
+    checkRuleByPaths(net, conditions, paths, need(parseRule(text, namesOfNetwork(net))));
+  expect(check('always P1 unloaded when every lever rests')).toMatchObject({
+    outcome: 'holds',
+    combinations: 3n ** 40n,
+  });
   // Any lever off its centre shuts the way to tank: all combinations but one.
   const loaded = check('always P1 unloaded');
   expect((loaded.broken?.count ?? 0n) + (loaded.undecided?.count ?? 0n)).toBe(3n ** 40n - 1n);

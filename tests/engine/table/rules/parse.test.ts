@@ -4,7 +4,15 @@ import type { Names } from '../../../../src/engine/table/rules/names.ts';
 
 const NAMES: Names = {
   inputs: [
-    { label: 'V1', positions: ['raise', 'hold', 'lower'], rest: 1, coils: [{ name: 'Y1', position: 0 }, { name: 'Y2', position: 2 }] },
+    {
+      label: 'V1',
+      positions: ['raise', 'hold', 'lower'],
+      rest: 1,
+      coils: [
+        { name: 'Y1', position: 0 },
+        { name: 'Y2', position: 2 },
+      ],
+    },
     { label: 'V 2', positions: ['a', '0', 'b', 'rest'], coils: [] },
     { label: 'S1', positions: ['open', 'shut'], rest: 0, coils: [{ name: 'Y3', position: 1 }] },
   ],
@@ -73,7 +81,10 @@ test('every, any and no; not binds closest, then and, then or', () => {
   expect(says('any cylinder moves')).toEqual({ type: 'any', of: [says('CLAMP moves'), says('DRILL moves')] });
   expect(says('no motor turns A>B')).toEqual({ type: 'not', of: { type: 'any', of: [says('SPIN turns A→B')] } });
   const [a, b, c] = [says('Y1 on'), says('Y2 on'), says('Y3 on')];
-  expect(says('Y1 on or not Y2 on and Y3 on')).toEqual({ type: 'any', of: [a, { type: 'every', of: [{ type: 'not', of: b }, c] }] });
+  expect(says('Y1 on or not Y2 on and Y3 on')).toEqual({
+    type: 'any',
+    of: [a, { type: 'every', of: [{ type: 'not', of: b }, c] }],
+  });
   expect(says('(Y1 on or Y2 on) and Y3 on')).toEqual({ type: 'every', of: [{ type: 'any', of: [a, b] }, c] });
 });
 
