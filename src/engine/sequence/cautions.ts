@@ -5,7 +5,7 @@ import type { RowPaths } from './row-paths.ts';
 
 /** What has to be known before a lever is moved. Numbers are indices in the network. */
 export type MoveCaution =
-  /** A load or spring that pressed on this side comes down: its line is opened to tank. `slow`: only through the leakage of a stopped pump. */
+  /** A load or spring that pressed on this side comes down: its oil gets a way to tank, straight or through other actuators. `slow`: only through the leakage of a stopped pump. */
   | {
       readonly kind: 'drop';
       readonly actuator: number;
@@ -48,9 +48,9 @@ export function cautionsOf(
   const slow = (line: number): boolean => paths.toTank[line] === 1 && paths.firm[line] === 0;
   start.pressed.forEach((on, side) => {
     const line = sideLine(net, side);
-    if (on !== 1 || toTank[line] !== 1) return;
-    // It hangs on suction since an earlier move.
-    if (held.pressed[side] === 1 && tankBefore?.[line] === 1) return;
+    if (on !== 1 || !letsOut(net, paths, toTank, side)) return;
+    // It came into reach of the tank by an earlier move, and was told then.
+    if (held.pressed[side] === 1 && before && tankBefore && letsOut(net, before.paths, tankBefore, side)) return;
     const by = net.actuators[side >> 1]?.push.by ?? 'load';
     found.push({ kind: 'drop', actuator: side >> 1, way: side % 2 === 0 ? 'in' : 'out', by, slow: slow(line) });
   });
@@ -71,6 +71,26 @@ export function cautionsOf(
   if (before && fresh.length > 0) found.push({ kind: 'spread', lines: fresh });
   if (spec?.coils.some((coil) => coil.position === position)) found.push({ kind: 'coil', input });
   return found;
+}
+
+/** Oil can leave this side to tank, straight or by driving other actuators on its way. */
+function letsOut(net: Network, paths: RowPaths, toTank: Uint8Array, side: number): boolean {
+  const queue = [sideLine(net, side)];
+  const seen = new Set(queue);
+  for (let head = 0; head < queue.length; head++) {
+    const line = queue[head] as number;
+    if (toTank[line] === 1) return true;
+    const through = net.actuators.flatMap(({ a, b }, i) => {
+      if (i === side >> 1 || b < 0) return [];
+      return a === line ? [b] : b === line ? [a] : [];
+    });
+    for (const to of [...(paths.onward[line] ?? []), ...through]) {
+      if (seen.has(to)) continue;
+      seen.add(to);
+      queue.push(to);
+    }
+  }
+  return false;
 }
 
 /** Sides that a charged accumulator presses on while the other side is open to tank or breathes. */
