@@ -1,7 +1,7 @@
 import type { Diagram, Diagrams } from '../../paths/diagrams/diagrams.ts';
 import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
 import { anyPosition, bitsIn, compareCubes, cubeCount, cubeSet, cubeWithin } from './cube.ts';
-import type { Cube } from './cube.ts';
+import type { Cover, Cube } from './cube.ts';
 import { leastCover } from './least.ts';
 import { greatestCubes } from './primes.ts';
 
@@ -9,13 +9,6 @@ import { greatestCubes } from './primes.ts';
 const MOST_GREATEST = 300;
 /** The same for sets with more combinations. */
 const MOST_LISTED = 4096n;
-
-export interface Cover {
-  /** Sorted; together they are the set, no cube can grow, and none is superfluous. */
-  readonly cubes: readonly Cube[];
-  /** No cover has fewer cubes. Where false it is not known whether one has. */
-  readonly least: boolean;
-}
 
 /** A description of the set by few cubes, checked to be equal to it. */
 export function coverOf(sets: Diagrams, set: Diagram): Cover {

@@ -4,6 +4,13 @@ import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
 /** Per input the positions that it may stand in (bit p = position p); all bits = any. */
 export type Cube = readonly number[];
 
+export interface Cover {
+  /** Sorted; together they are the set, no cube can grow, and none is superfluous. */
+  readonly cubes: readonly Cube[];
+  /** No cover has fewer cubes. Where false it is not known whether one has. */
+  readonly least: boolean;
+}
+
 export const anyPosition = (radix: number): number => (1 << radix) - 1;
 
 export function cubeSet(sets: Diagrams, cube: Cube): Diagram {

@@ -2,8 +2,7 @@ import { add, countBits, emptySet, members } from '../../../base/bits.ts';
 import type { BitSet } from '../../../base/bits.ts';
 import type { Diagram, Diagrams } from '../../paths/diagrams/diagrams.ts';
 import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
-import type { Cover } from './cover.ts';
-import type { Cube } from './cube.ts';
+import type { Cover, Cube } from './cube.ts';
 
 /** Steps of the search; with more it stays with the best cover so far. */
 const MOST_STEPS = 20_000;
