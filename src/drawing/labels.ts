@@ -67,8 +67,8 @@ const NOTE_ROOM: Readonly<Record<string, number>> = {
   'double-rod-cylinder': 16,
   'single-acting-cylinder': 16,
   motor: 17,
-  'fixed-pump': 16,
-  'compensated-pump': 16,
+  'fixed-pump': 14,
+  'compensated-pump': 14,
 };
 
 /** Close enough for placing: Inter's capitals and figures are wider than its small letters. */

@@ -4,7 +4,7 @@ import type { Look } from '../../parts/contract.ts';
 import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
 import { speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
-import { sayPressure, saySpeed } from '../state/figure-texts.ts';
+import { sayPump, saySpeed } from '../state/figure-texts.ts';
 import { figures } from '../state/figures.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
@@ -46,8 +46,8 @@ export function partStates(circuit: Circuit, assumed: Assumed): Map<string, Part
   });
   table?.data.pumps.forEach(({ part }, i) => {
     if (!known.has(part)) return;
-    const pressure = solved?.pumps[i]?.pressure;
-    const figure = pressure === undefined ? undefined : { text: sayPressure(pressure, view.units), assumed: assumed.anywhere };
+    const pressure = sayPump(solved?.pumps[i]?.pressure, table.pump(i, row), view.units);
+    const figure = pressure === undefined ? undefined : { text: pressure, assumed: assumed.anywhere };
     states.set(part, { pump: table.pump(i, row), note: table.pump(i, row), ...(figure && { figure }) });
   });
   return states;

@@ -1,5 +1,6 @@
 import { formatNumber, defaultUnit, formatQuantity, toUnit } from '../../base/units.ts';
 import type { Quantity, UnitSystem } from '../../base/units.ts';
+import type { PumpVerdict } from '../../worker/client.ts';
 
 /** Figures are read at a glance: two digits, or all of a whole number. */
 const DIGITS = 2;
@@ -29,4 +30,10 @@ export function saySpeed(speed: number, motion: Motion, units: UnitSystem, bare 
 export function sayPressure(pressure: number, units: UnitSystem, bare = false): string {
   const si = Math.abs(pressure) < 1e4 ? 0 : pressure;
   return bare ? plain(si, 'pressure', units) : formatQuantity(si, 'pressure', units, { digits: DIGITS });
+}
+
+/** A pump's pressure; a stopped pump with nothing at its outlet needs no figure. */
+export function sayPump(pressure: number | undefined, verdict: PumpVerdict, units: UnitSystem, bare = false): string | undefined {
+  if (pressure === undefined || (verdict === 'stopped' && pressure < NEAR_NOTHING)) return undefined;
+  return sayPressure(pressure, units, bare);
 }

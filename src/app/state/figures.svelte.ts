@@ -7,6 +7,9 @@ const PAUSE_MS = 120;
 /** Rows of one request: reasons wait on the same thread, so requests stay short. */
 const BATCH = 12;
 
+/** Rows whose figures are kept: scrolling through a million rows must not fill the memory. */
+const KEPT = 2000;
+
 type Answer = NonNullable<typeof session.answer>;
 
 /** Pressures, speeds and flows of the rows that are looked at: asked for when needed, kept as long as the table is. */
@@ -69,6 +72,11 @@ class Figures {
         if (this.#job !== job) return;
         const known = new Map(this.#known);
         for (const each of numbers) known.set(each.row, each);
+        // The rows longest known go first; they are asked for again when they come into view.
+        for (const row of known.keys()) {
+          if (known.size <= KEPT) break;
+          known.delete(row);
+        }
         this.#known = known;
         after();
       },

@@ -1,7 +1,7 @@
 import type { UnitSystem } from '../../base/units.ts';
 import { lineAssumed, speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
-import { NEAR_NOTHING, pressureUnit, sayPressure, saySpeed, speedUnit } from '../state/figure-texts.ts';
+import { NEAR_NOTHING, pressureUnit, sayPressure, sayPump, saySpeed, speedUnit } from '../state/figure-texts.ts';
 import type { RowNumbers, StateTable } from '../../worker/client.ts';
 import type { FigureHeads } from './columns.ts';
 
@@ -37,7 +37,7 @@ export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSy
     } else out.set(`actuator:${i}`, none);
   });
   table.data.pumps.forEach((_, i) => {
-    if (solved) put(`pump:${i}`, sayPressure(numbers.pumps[i]?.pressure ?? 0, units, true), assumed.anywhere);
+    if (solved) put(`pump:${i}`, sayPump(numbers.pumps[i]?.pressure, table.pump(i, numbers.row), units, true), assumed.anywhere);
     else out.set(`pump:${i}`, none);
   });
   // Only a load gives shut-in oil a pressure that can be worked out.
