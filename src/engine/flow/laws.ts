@@ -33,6 +33,8 @@ export const NEAR_IDEAL = {
   void: 100 / (100 * LITRE_PER_MINUTE),
   /** Laminar share of a path's rated drop: without it the drop would have no slope at rest. */
   laminarShare: 1e-4,
+  /** Pa per m³/s: no path is flatter at rest, or rounding would show in its flow (10 Pa at 60 L/min). */
+  leastSlope: 1e4,
   /** Rated drop of a path for which none is given: 0.01 bar at 100 L/min. */
   pathDrop: 0.01 * BAR,
   pathFlow: 100 * LITRE_PER_MINUTE,

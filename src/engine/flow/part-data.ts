@@ -53,7 +53,7 @@ export function lossOf(loss: Loss = {}): { r: number; k: number } {
     return { r, k: 0 };
   }
   return {
-    r: loss.laminar ?? (NEAR_IDEAL.laminarShare * loss.drop) / loss.flow,
+    r: loss.laminar ?? Math.max(NEAR_IDEAL.leastSlope, (NEAR_IDEAL.laminarShare * loss.drop) / loss.flow),
     k: loss.drop / (loss.flow * loss.flow),
   };
 }

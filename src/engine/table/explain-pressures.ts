@@ -4,7 +4,7 @@ import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import { actuatorByPressure, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
+import { actuatorByPressure, movesOverValve, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
 import type { RowNumbers } from './resolve.ts';
 
 /** The pressure layer's part of an explanation: its verdicts in place of the open ones, and the figures behind them. */
@@ -12,6 +12,8 @@ export interface PressureWords {
   readonly actuator: (index: number, answer: ActuatorAnswer) => ActuatorAnswer;
   readonly pump: (index: number, answer: PumpAnswer) => PumpAnswer;
   readonly numbers: RowNumbers;
+  /** Oil passes the line over a valve that pressures open. */
+  readonly flows: (line: number) => boolean;
 }
 
 export function explainPressures(state: OneState): PressureWords {
@@ -48,7 +50,8 @@ export function explainPressures(state: OneState): PressureWords {
     const text = `It stands at ${bar(at?.pressure ?? 0)} and delivers ${litres(at?.delivered ?? 0)}${over(numbers)}.`;
     return { ...rest, verdict: found, steps: [...(rests ? [] : steps), step(text, [line], [said.part])] };
   };
-  return { actuator, pump, numbers };
+  const overValve = !hunts && movesOverValve(bits, answer);
+  return { actuator, pump, numbers, flows: (line) => overValve && solver.flows(answer, line) };
 }
 
 /** `Cap side 62 bar, rod side 3 bar: it takes 12 L/min and goes 85 mm/s.` */

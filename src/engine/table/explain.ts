@@ -36,7 +36,7 @@ export function explain(net: Network, conditions: PathConditions, row: number): 
   return {
     actuators: net.actuators.map((actuator, i) => pressures.actuator(i, explainActuator(state, i, actuator))),
     pumps: net.pumps.map((pump, i) => pressures.pump(i, explainPump(state, i, pump))),
-    trapped: explainTrapped(state),
+    trapped: explainTrapped(state).filter((entry) => !pressures.flows(entry.line)),
     numbers: pressures.numbers,
   };
 }

@@ -3,8 +3,8 @@ import { Cancelled } from '../../base/budget.ts';
 import type { SettledBlock } from '../paths/block.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { ActuatorOutcome } from './actuator-outcomes.ts';
-import { actuatorByPressure, pumpByPressure } from './resolve.ts';
-import type { PressureSolver } from './resolve.ts';
+import { actuatorByPressure, movesOverValve, pumpByPressure } from './resolve.ts';
+import type { PressureAnswer, PressureSolver } from './resolve.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, PUMP_VERDICTS } from './words.ts';
 
 const RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
@@ -20,10 +20,17 @@ export interface Allowance {
   readonly every: boolean;
 }
 
+export interface Resolved {
+  /** States whose verdicts rest on entered or assumed values. */
+  readonly valued: Uint32Array;
+  /** Per line: states in which oil passes it over a valve that pressures open, so that it is neither blocked nor trapped. */
+  readonly flowing: ReadonlyMap<number, Uint32Array>;
+}
+
 /**
  * Puts the pressure layer's verdict, in place, where open paths leave it to the pressures, and where
  * they say that something moves. What the pressures do not decide either, or the allowance does not
- * reach, stays `rests on pressure`. Returns the states whose verdicts rest on entered or assumed values.
+ * reach, stays `rests on pressure`.
  */
 export function resolveBlock(
   block: SettledBlock,
@@ -32,9 +39,10 @@ export function resolveBlock(
   solver: PressureSolver,
   allowance: Allowance,
   budget: Budget,
-): Uint32Array {
+): Resolved {
   const { width, motion, hunts, all } = block;
   const valued = new Uint32Array(width);
+  const flowing = new Map<number, Uint32Array>();
   for (let w = 0; w < width; w++) {
     let rests = 0;
     for (const outcome of actuators) rests |= outcome.verdicts[RESTS]?.[w] as number;
@@ -65,10 +73,20 @@ export function resolveBlock(
         const found = pumpByPressure(i, solver, bits, answer);
         if (found) changed |= settle(planes, PUMP_VERDICTS.indexOf(found), w, low);
       });
+      if (movesOverValve(bits, answer)) noteFlows(solver, answer, flowing, width, w, low);
       valued[w] = (valued[w] as number) | changed;
     }
   }
-  return valued;
+  return { valued, flowing };
+}
+
+function noteFlows(solver: PressureSolver, answer: PressureAnswer, flowing: Map<number, Uint32Array>, width: number, w: number, bit: number): void {
+  for (let line = 0; line < solver.net.shown; line++) {
+    if (!solver.flows(answer, line)) continue;
+    const plane = flowing.get(line) ?? new Uint32Array(width);
+    plane[w] = (plane[w] as number) | bit;
+    flowing.set(line, plane);
+  }
 }
 
 /** Gives the state this verdict and no other; returns its bit if that is news. */

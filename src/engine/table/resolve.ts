@@ -18,6 +18,7 @@ const VOID = 5e-7 / 60;
 /** Pa; a chamber below it is not pressed on but sucked full. */
 const PRESSED = 1e4;
 const RIVALS = REST_REASONS.indexOf('rivals');
+const PRESSURE_VALVE = REST_REASONS.indexOf('pressure valve');
 /** An unloaded pump stands below this share of its setting. */
 const UNLOADED = 0.1;
 
@@ -26,6 +27,8 @@ export interface PressureAnswer {
   readonly result: FlowResult;
   /** Per actuator: its speed rests on the losses, whatever else drives it. */
   readonly swings: readonly boolean[];
+  /** m³/s that pass each line of the problem on the way to or from something that moves; relief flow is none of it. */
+  readonly through: Float64Array;
 }
 
 /** Steady pressures of single rows; each solve starts from the last one. */
@@ -47,6 +50,7 @@ export class PressureSolver {
     setState(model, (input) => Math.floor(row / (this.#strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1));
     const solution = model.solver.solve(this.#warm ? { warm: this.#warm } : {});
     const result = describe(model.solver, solution);
+    const through = this.#throughflow(solution.throughputs);
     let swinging: readonly number[] = [];
     if (result.status === 'solved') {
       this.#warm = Float64Array.from(solution.pressures);
@@ -54,7 +58,26 @@ export class PressureSolver {
     } else {
       this.#warm = undefined;
     }
-    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)) };
+    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)), through };
+  }
+
+  /** True if oil on its way to or from a moving actuator passes this line. */
+  flows({ through }: PressureAnswer, line: number): boolean {
+    const at = line < 0 ? -1 : (this.model.lineOf[line] as number);
+    return at >= 0 && (through[at] as number) > MOTION;
+  }
+
+  #throughflow(throughputs: Float64Array): Float64Array {
+    const { problem } = this.model;
+    const through = new Float64Array(problem.lines.length);
+    problem.branches.forEach((branch, j) => {
+      if (branch.kind === 'relief' || branch.kind === 'compensator' || branch.kind === 'leakage') return;
+      const x = Math.abs(throughputs[j] as number);
+      if (x === 0) return;
+      if (branch.a >= 0) through[branch.a] = Math.max(through[branch.a] as number, Math.abs(branch.ca) * x);
+      if (branch.b >= 0) through[branch.b] = Math.max(through[branch.b] as number, Math.abs(branch.cb) * x);
+    });
+    return through;
   }
 
   /** Gauge pressure of a line of the network, Pa. */
@@ -139,6 +162,19 @@ function equalRivals(solver: PressureSolver, bits: BlockBits, result: Solved, sw
   return found.length > 1 ? found : [];
 }
 
+/** True if something moves over a valve that pressures open, which open paths do not know of. */
+export function movesOverValve(bits: BlockBits, { result }: PressureAnswer): boolean {
+  if (result.status !== 'solved') return false;
+  const { motion } = bits.block;
+  return result.actuators.some(
+    ({ flowIn, flowOut }, i) =>
+      Math.max(Math.abs(flowIn), Math.abs(flowOut)) > MOTION &&
+      !on(bits, motion.out[i]) &&
+      !on(bits, motion.in[i]) &&
+      on(bits, motion.rests[i]?.[PRESSURE_VALVE]),
+  );
+}
+
 /** The same for a pump. */
 export function pumpByPressure(
   index: number,
@@ -162,6 +198,8 @@ export function pumpByPressure(
     const flow = Math.max(Math.abs(result.actuators[i]?.flowIn ?? 0), Math.abs(result.actuators[i]?.flowOut ?? 0));
     if (flow <= MOTION) return false;
     const grows = speed > 0 ? actuator.a : actuator.b;
+    // A pump that stands lower than the chamber is shut off from it by a check.
+    if (state.pressure + PRESSED < solver.pressure(result, grows)) return false;
     return offered(grows) || (overValve(grows) && solver.pressure(result, grows) > PRESSED);
   });
   const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));

@@ -11,7 +11,7 @@ import { actuatorOutcome } from './actuator-outcomes.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { PlanePool, PlaneSheet } from './planes.ts';
 import { resolveBlock } from './resolve-block.ts';
-import type { Allowance } from './resolve-block.ts';
+import type { Allowance, Resolved } from './resolve-block.ts';
 import { PressureSolver } from './resolve.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
 import type { Plane, TableData } from './table-data.ts';
@@ -40,6 +40,8 @@ interface Sheets {
   readonly under: PlaneSheet;
   /** One item and kind: rows whose verdicts rest on entered or assumed values. */
   readonly valued: PlaneSheet;
+  /** One kind only: oil passes it over a valve that pressures open. */
+  readonly flowing: PlaneSheet;
 }
 
 export interface TableOptions {
@@ -72,7 +74,7 @@ export function tabulate(net: Network, conditions: PathConditions, budget: Budge
       putTrap(sheets, line, STOPPED, meet(cutOff, running.under.get(line, 0), edges.states));
       // With the pumps stopped only a charged accumulator can feed a line.
       const stored = sheets.lines.get(line, FED);
-      if (stored) putTrap(sheets, line, STORED, stored);
+      if (stored) putTrap(sheets, line, STORED, stored.slice());
     }
   }
   const pool = new PlanePool();
@@ -105,6 +107,7 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
     trapped: new PlaneSheet(net.shown, TRAP_REASONS.length, states),
     under: new PlaneSheet(net.shown, 1, states),
     valued: new PlaneSheet(1, 1, states),
+    flowing: new PlaneSheet(net.shown, 1, states),
   };
   const allowance: Allowance = { rows: pressureRows, every: states <= pressureRows };
   let pressures: PressureSolver | undefined;
@@ -119,9 +122,12 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
 
     const actuators = net.actuators.map((actuator, i) => actuatorOutcome(i, actuator, block, conditions));
     const pumps = net.pumps.map((pump, i) => pumpOutcome(i, pump, net, block, conditions));
+    let flowing: Resolved['flowing'] = new Map();
     if (allowance.rows > 0) {
       pressures ??= new PressureSolver(net, conditions);
-      sheets.valued.write(0, 0, at, resolveBlock(block, actuators, pumps, pressures, allowance, budget));
+      const resolved = resolveBlock(block, actuators, pumps, pressures, allowance, budget);
+      flowing = resolved.flowing;
+      sheets.valued.write(0, 0, at, resolved.valued);
     }
     actuators.forEach((outcome, i) => {
       write(sheets.actuators, i, outcome.verdicts);
@@ -131,6 +137,10 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
     pumps.forEach((planes, i) => write(sheets.pumps, i, planes));
     const { classes, blocked } = lineOutcomes(net, edges, conditions, block);
     const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
+    for (const [line, plane] of flowing) {
+      sheets.flowing.write(line, 0, at, plane);
+      for (const other of [...(blocked[line] ?? []), standing[line]?.load, standing[line]?.heat]) remove(other, plane);
+    }
     for (let line = 0; line < net.shown; line++) {
       write(sheets.lines, line, classes[line] ?? []);
       write(sheets.blocked, line, blocked[line] ?? []);
@@ -144,7 +154,12 @@ function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, bud
 }
 
 function putTrap(sheets: Sheets, line: number, reason: number, plane: Plane): void {
+  remove(plane, sheets.flowing.get(line, 0));
   if (!isEmpty(plane)) sheets.trapped.put(line, reason, plane);
+}
+
+function remove(plane: Plane | undefined, other: Plane | undefined): void {
+  if (plane && other) for (let w = 0; w < plane.length; w++) plane[w] = (plane[w] as number) & ~(other[w] as number);
 }
 
 function meet(a: Plane | undefined, b: Plane | undefined, states: number): Plane {
