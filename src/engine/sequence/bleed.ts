@@ -167,7 +167,7 @@ function searchFrom(model: BleedModel, root: Node, least: number, budget: Budget
       const stand = model.stand(node.row + (position - now) * (strides[input] as number), node.held);
       const key = keyOf(stand.row, stand.held);
       const there = known.get(key);
-      if (there && there.depth <= node.depth) return;
+      if (there && (there.depth <= node.depth || there.weight <= node.weight)) return;
       const weight = node.weight + weightOf(cautionsOf(net, node, node.held, stand, input, position));
       const by = { weight, from: node, input, position };
       if (there) {
