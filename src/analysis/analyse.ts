@@ -1,4 +1,5 @@
 import type { Budget } from '../base/budget.ts';
+import { withLoadCase } from '../circuit/load-case.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
 import { explain } from '../engine/table/explain.ts';
@@ -15,9 +16,9 @@ import type { Network } from '../network/network.ts';
 import { kindOf } from '../parts/catalogue.ts';
 import type { Conditions, Explanation } from './results.ts';
 
-/** Dense arrays of a circuit that has passed the checks. Throws on a kind that the catalogue lacks. */
-export function networkOf(circuit: Circuit): Network {
-  return compileNetwork(circuit, (name) => {
+/** Dense arrays of a circuit that has passed the checks. Throws on a kind that the catalogue lacks, or a load case that it does not have. */
+export function networkOf(circuit: Circuit, conditions?: Conditions): Network {
+  return compileNetwork(withLoadCase(circuit, conditions?.loadCase), (name) => {
     const kind = kindOf(name);
     if (!kind) throw new Error(`unknown part kind ${name}`);
     return kind;
@@ -26,7 +27,7 @@ export function networkOf(circuit: Circuit): Network {
 
 /** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */
 export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budget, options: TableOptions = { pressureRows: MOST_SOLVED }): TableData {
-  const net = networkOf(circuit);
+  const net = networkOf(circuit, conditions);
   refuseTooMany(net);
   return tabulateNetwork(net, pathConditions(net, conditions), budget, options);
 }
@@ -35,13 +36,13 @@ export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budge
 export const MOST_SOLVED = 20_000;
 
 /** Design faults, from the table with the pumps running. */
-export function findings(circuit: Circuit, running: StateTable): Finding[] {
-  return findFaults({ net: networkOf(circuit), table: running });
+export function findings(circuit: Circuit, running: StateTable, conditions?: Conditions): Finding[] {
+  return findFaults({ net: networkOf(circuit, conditions), table: running });
 }
 
 /** One row (0-based) in words. */
 export function explainRow(circuit: Circuit, conditions: Conditions, row: number): Explanation {
-  const net = networkOf(circuit);
+  const net = networkOf(circuit, conditions);
   const answer = explain(net, pathConditions(net, conditions), row);
   const positions = positionsOf(net, row);
   const notes = answer.actuators.flatMap((actuator) => actuator.notes.map((note) => `${actuator.label}: ${note}`));
@@ -50,7 +51,7 @@ export function explainRow(circuit: Circuit, conditions: Conditions, row: number
 
 /** Pressures, flows and speeds of rows (0-based), in the order asked; SI. */
 export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readonly number[]): RowNumbers[] {
-  const net = networkOf(circuit);
+  const net = networkOf(circuit, conditions);
   const solver = new PressureSolver(net, pathConditions(net, conditions));
   return rows.map((row) => rowNumbers(solver, row));
 }

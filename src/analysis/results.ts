@@ -7,6 +7,8 @@ export interface Conditions {
   readonly pumps: 'running' | 'stopped';
   /** Part id → where the actuator stands; absent = between its stops. */
   readonly places?: Readonly<Record<string, 'in' | 'out'>>;
+  /** Id of one of the circuit's load cases; absent = the loads that the parts say. */
+  readonly loadCase?: string;
 }
 
 export interface Request {

@@ -43,7 +43,7 @@ function answerTable(id: number, circuit: Circuit, conditions: Conditions): Repl
     const options = { pressureRows };
     const data = tabulate(circuit, conditions, budget, options);
     const running = conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
-    const faults = findings(circuit, new StateTable(running));
+    const faults = findings(circuit, new StateTable(running), conditions);
     return { id, say: 'table', early: pressureRows === 0, data, findings: faults, took: performance.now() - began };
   };
   const rows = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
