@@ -17,8 +17,9 @@ export interface OpenPathSets {
   /** To a tank by open paths; by free (unthrottled) ones. */
   readonly toTank: LineSets;
   readonly freeToTank: LineSets;
-  /** Under pressure by a source, or through an actuator that passes pressure on. */
+  /** Under pressure by a source, or through an actuator that passes pressure on; empty without lock checks. */
   readonly underPressure: LineSets;
+  readonly edges: SetEdges;
   /** Combinations in which no setting of the lock checks agrees with itself. */
   readonly hunts: Diagram;
 }
@@ -69,7 +70,7 @@ export function openPathSets(net: Network, conditions: PathConditions, options: 
       }
       return open;
     });
-    if (!changed || round >= rounds) return { sets, ...found, hunts };
+    if (!changed || round >= rounds) return { sets, edges, ...found, hunts };
     edges.pilots.forEach(({ mask }, i) => (edges.open[mask] = next[i] as Diagram));
   }
 }
@@ -95,7 +96,7 @@ function search(
   links: Links,
   conditions: PathConditions,
   orders: SearchOrders,
-): Omit<OpenPathSets, 'sets' | 'hunts'> {
+): Omit<OpenPathSets, 'sets' | 'edges' | 'hunts'> {
   const sources = sourceLines(net, conditions).filter((line) => line >= 0);
   const none = (): LineSets => net.lines.map(() => NONE);
   const spread = (field: LineSets, adjacency: SetEdges['forward'], options: SetSpread): void =>

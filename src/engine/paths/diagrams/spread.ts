@@ -12,6 +12,11 @@ export interface SetEdges {
   /** By mask number; 0 is always open. Those of lock checks come last and change while they settle. */
   readonly open: Diagram[];
   readonly pilots: readonly { readonly line: number; readonly base: Diagram; readonly mask: number }[];
+  /** As in `EdgeSet`: ways that pressures may open, and the masks of those that loads or back pressure open. */
+  readonly reliefs: readonly { readonly relief: number; readonly mask: number }[];
+  readonly loadPilots: readonly { readonly line: number; readonly mask: number }[];
+  readonly valveForward: Adjacency;
+  readonly valveBackward: Adjacency;
   readonly forward: Adjacency;
   readonly backward: Adjacency;
   readonly freeForward: Adjacency;
@@ -59,11 +64,32 @@ export function compileSetEdges(net: Network, sets: Diagrams): SetEdges {
     edges.push({ from, to, mask, free });
     return { line, base, mask };
   });
+  const closed = (): number => open.push(NONE) - 1;
+  const reliefs = net.reliefs.flatMap(({ to }, relief) => (net.lines[to]?.tank ? [] : [{ relief, mask: closed() }]));
+  const loaded = net.actuators.some(({ push }) => push.way !== 'none');
+  const loadPilots = loaded ? piloted.map(({ line }) => ({ line, mask: closed() })) : [];
+  const valves: Edge[] = [
+    ...loadPilots.map(({ mask }, i) => ({ from: piloted[i]?.from ?? 0, to: piloted[i]?.to ?? 0, mask, free: false })),
+    ...net.valves
+      .filter((valve) => valve.duty !== 'closes')
+      .map(({ from, to }) => ({ from, to, mask: 0, free: false })),
+    ...reliefs.map(({ relief, mask }) => ({
+      from: net.reliefs[relief]?.from ?? 0,
+      to: net.reliefs[relief]?.to ?? 0,
+      mask,
+      free: false,
+    })),
+  ];
+  const turned = valves.map((edge) => ({ ...edge, from: edge.to, to: edge.from }));
   const reversed = edges.map((edge) => ({ ...edge, from: edge.to, to: edge.from }));
   const lines = net.lines.length;
   return {
     open,
     pilots,
+    reliefs,
+    loadPilots,
+    valveForward: adjacency(net.lines.length, [...edges, ...valves]),
+    valveBackward: adjacency(net.lines.length, [...reversed, ...turned]),
     forward: adjacency(lines, edges),
     backward: adjacency(lines, reversed),
     freeForward: adjacency(
