@@ -82,10 +82,13 @@ export function checkRules(
     try {
       rules.push({ ...(one.id !== undefined && { id: one.id }), text: one.text, answer: answerTo(rule) });
     } catch (error) {
-      if (!(error instanceof NeedsTable)) throw error;
+      if (!(error instanceof NeedsTable || error instanceof TooManyNodes)) throw error;
       problems.push({
         where: one.where,
-        what: `${error.message}.`,
+        what:
+          error instanceof NeedsTable
+            ? `${error.message}.`
+            : 'The combinations that it asks for are too entangled to be held as sets.',
         remedy: `Check a part of the circuit by itself, with at most ${MOST_ROWS.toLocaleString('en')} combinations.`,
       });
     }

@@ -2,12 +2,16 @@ import { emptySet, fullSet, orInto, trim } from '../../../base/bits.ts';
 import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
+import { motionSets } from '../../paths/diagrams/motion-sets.ts';
+import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
 import { classSet } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
 import { positionMask } from '../../paths/edges.ts';
 import type { PathConditions } from '../../paths/reach.ts';
+import { verdictSets } from '../fold/verdict-sets.ts';
 import type { Plane, TableData } from '../table-data.ts';
 import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from '../words.ts';
+import type { ActuatorVerdict } from '../words.ts';
 import type { RuleSource, Truth } from './evaluate.ts';
 
 /** Rules on a listed table: bit planes over its rows. */
@@ -66,11 +70,21 @@ export class NeedsTable extends Error {
 }
 
 /**
- * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, line classes, and
- * whether a pump is unloaded by a free path to tank. Throws `NeedsTable` at everything else.
+ * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, actuator verdicts,
+ * line classes, and whether a pump is unloaded by a free path to tank. Throws `NeedsTable` at everything else,
+ * and `TooManyNodes` where motions are too entangled.
  */
 export function openPathSource(net: Network, conditions: PathConditions, paths: OpenPathSets): RuleSource<Diagram> {
   const { sets } = paths;
+  // Motions take more than open paths, so they are sought when a rule speaks of them.
+  let motions: MotionSets | undefined;
+  const moving = (): MotionSets => (motions ??= motionSets(net, conditions, paths));
+  const verdicts = new Map<number, ReadonlyMap<ActuatorVerdict, Diagram>>();
+  const verdictsOf = (i: number): ReadonlyMap<ActuatorVerdict, Diagram> => {
+    const found = verdicts.get(i) ?? verdictSets(net, conditions, paths, moving(), i);
+    verdicts.set(i, found);
+    return found;
+  };
   const known = (set: Diagram): Truth<Diagram> => ({ sure: set, maybe: set });
   return {
     none: NONE,
@@ -79,8 +93,11 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
     or: (a, b) => sets.or(a, b),
     not: (a) => sets.not(a),
     position: (input, positions) => sets.literal(input, positions),
-    actuator: (i) => {
-      throw new NeedsTable(`What ${net.parts[net.actuators[i]?.part ?? -1]?.label ?? 'an actuator'} does`);
+    actuator: (i, verdicts) => {
+      const found = verdictsOf(i);
+      const union = (words: readonly ActuatorVerdict[]): Diagram =>
+        words.reduce((set: Diagram, word) => sets.or(set, found.get(word) ?? NONE), NONE);
+      return { sure: union(verdicts), maybe: union([...verdicts, 'undetermined', 'rests on pressure']) };
     },
     pump: (i, verdicts) => {
       const pump = net.pumps[i];
@@ -98,14 +115,13 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
       let sure: Diagram = NONE;
       for (const word of classes)
         if (word !== 'carries displaced oil' && word !== 'cut off') sure = sets.or(sure, classSet(paths, i, word));
+      const [cutOff, carries] = [classes.includes('cut off'), classes.includes('carries displaced oil')];
+      if (!cutOff && !carries) return known(sure);
       const shut = classSet(paths, i, 'cut off');
-      const both = classes.includes('cut off') && classes.includes('carries displaced oil');
-      // Open paths alone do not tell a line that carries displaced oil from one that is cut off.
-      if (both) return known(sets.or(sure, shut));
-      return {
-        sure,
-        maybe: classes.includes('cut off') || classes.includes('carries displaced oil') ? sets.or(sure, shut) : sure,
-      };
+      if (cutOff && carries) return known(sets.or(sure, shut));
+      // Only motions tell a line that carries displaced oil from one that is cut off.
+      const displaced = sets.and(shut, moving().carries[i] as Diagram);
+      return known(sets.or(sure, carries ? displaced : sets.minus(shut, displaced)));
     },
     blocked: (i) => {
       throw new NeedsTable(`Whether line ${net.lines[i]?.name ?? ''} is blocked`);

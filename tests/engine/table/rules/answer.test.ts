@@ -192,6 +192,9 @@ test('coils: the interlock in the words of the panel', () => {
 
 test('panels too large to list: exact counts, in agreement with the table where there is one', () => {
   const texts = [
+    'never C1 extends while C3 retracts',
+    'C2 moves only if V2 at a/b',
+    'never line V1.B carries displaced oil',
     'always P1 unloaded when every lever rests',
     'never line V3.T is fed',
     'always line V2.A is cut off when V2 rests',
@@ -202,7 +205,7 @@ test('panels too large to list: exact counts, in agreement with the table where 
     const net = networkOf(family(name, 5));
     const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
     const names = namesOfNetwork(net);
-    const data = tabulate(family(name, 5), { pumps: 'running' }, unlimited, { pressureRows: 300 });
+    const data = tabulate(family(name, 5), { pumps: 'running' }, unlimited, { pressureRows: 0 });
     expect(namesOfTable(data).lines.map((line) => line.name)).toEqual(names.lines.map((line) => line.name));
     for (const text of texts) {
       const read = parseRule(text, names);
@@ -217,7 +220,7 @@ test('panels too large to list: exact counts, in agreement with the table where 
       expect((large.broken?.count ?? 0n) + (large.undecided?.count ?? 0n) >= (small.broken?.count ?? 0n)).toBe(true);
     }
   }
-  expect(compared).toBeGreaterThan(8);
+  expect(compared).toBeGreaterThan(20);
   const net = networkOf(family('SIXWAY', 40));
   const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
   const paths = openPathSets(net, conditions);
@@ -231,5 +234,7 @@ test('panels too large to list: exact counts, in agreement with the table where 
   const loaded = check('always P1 unloaded');
   expect((loaded.broken?.count ?? 0n) + (loaded.undecided?.count ?? 0n)).toBe(3n ** 40n - 1n);
   expect(loaded.broken?.terms).toHaveLength(40);
-  expect(() => check('never C1 moves while V1 at a')).toThrow(NeedsTable);
+  // Carry-over sections, open paths: a cylinder can move only with its own lever off centre.
+  expect(check('C1 moves only if V1 at a/b').outcome).toBe('holds');
+  expect(() => check('never line V1.A is trapped')).toThrow(NeedsTable);
 });
