@@ -1,6 +1,9 @@
 import { networkOf } from '../../src/analysis/analyse.ts';
+import { TooManyNodes } from '../../src/engine/paths/diagrams/diagrams.ts';
+import { motionSets } from '../../src/engine/paths/diagrams/motion-sets.ts';
 import { classSet, openPathSets, PATH_CLASSES } from '../../src/engine/paths/diagrams/open-paths.ts';
 import { foldLine } from '../../src/engine/table/fold/folded-table.ts';
+import { verdictSets } from '../../src/engine/table/fold/verdict-sets.ts';
 import { FAMILIES, family } from './circuits.ts';
 
 /**
@@ -59,5 +62,31 @@ function fold(print: (line: string) => void): void {
   }
 }
 
+/** Verdicts of all actuators. Displaced oil entangles long rows of bypass centres; then the run says so. */
+function motions(print: (line: string) => void): void {
+  print('\nverdicts        actuators        ms   nodes made');
+  for (const name of FAMILIES) {
+    for (const valves of [8, 16, 24, 40]) {
+      const net = networkOf(family(name, valves));
+      const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
+      const began = performance.now();
+      let said: string;
+      try {
+        const paths = openPathSets(net, conditions, { mostNodes: 1_000_000 });
+        const found = motionSets(net, conditions, paths);
+        net.actuators.forEach((_, i) => verdictSets(net, conditions, paths, found, i));
+        said = String(paths.sets.nodes);
+      } catch (error) {
+        if (!(error instanceof TooManyNodes)) throw error;
+        said = 'given up at 1000000';
+      }
+      print(
+        `${`${name} ${valves}`.padEnd(12)} ${String(net.actuators.length).padStart(12)} ${(performance.now() - began).toFixed(0).padStart(9)}   ${said}`,
+      );
+    }
+  }
+}
+
 run((line) => console.log(line));
 fold((line) => console.log(line));
+motions((line) => console.log(line));
