@@ -4,8 +4,9 @@ import { session } from './session.svelte.ts';
 
 /** Rows in view are asked for once scrolling has paused. */
 const PAUSE_MS = 120;
-/** Rows of one request: reasons wait on the same thread, so requests stay short. */
-const BATCH = 12;
+/** Reasons wait on the same thread, so a request is as many rows as take about this long. */
+const SHORT_MS = 200;
+const BATCH = { first: 6, least: 2, most: 40 } as const;
 
 /** Rows whose figures are kept: scrolling through a million rows must not fill the memory. */
 const KEPT = 2000;
@@ -20,6 +21,7 @@ class Figures {
   #of: Answer | undefined;
   #analyst: Analyst | undefined;
   #job: Job<readonly RowNumbers[]> | undefined;
+  #batch: number = BATCH.first;
   #pause: ReturnType<typeof setTimeout> | undefined;
   /** Rows that the analysis failed on: not asked for again. */
   #failed = new Set<number>();
@@ -43,6 +45,7 @@ class Figures {
       this.#job = undefined;
       this.#of = answer;
       this.#known = new Map();
+      this.#batch = BATCH.first;
       this.#failed = new Set();
     }
     clearTimeout(this.#pause);
@@ -59,8 +62,9 @@ class Figures {
   #next(rows: readonly number[]): void {
     const answer = this.#of;
     if (this.#job || !answer || !this.#analyst) return;
-    const wanted = this.#missing(rows).slice(0, BATCH);
+    const wanted = this.#missing(rows).slice(0, this.#batch);
     if (wanted.length === 0) return;
+    const started = performance.now();
     const job = this.#analyst.numbers(answer.circuit, answer.conditions, wanted);
     this.#job = job;
     const after = (): void => {
@@ -70,6 +74,8 @@ class Figures {
     job.answer.then(
       (numbers) => {
         if (this.#job !== job) return;
+        const fitting = Math.round((wanted.length * SHORT_MS) / Math.max(1, performance.now() - started));
+        this.#batch = Math.min(BATCH.most, Math.max(BATCH.least, fitting));
         const known = new Map(this.#known);
         for (const each of numbers) known.set(each.row, each);
         // The rows longest known go first; they are asked for again when they come into view.
