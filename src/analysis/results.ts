@@ -32,6 +32,8 @@ export interface ActuatorReason {
   readonly notes: readonly string[];
   /** Why open paths leave it to pressures, and which verdicts are possible. */
   readonly rests?: { readonly why: string; readonly candidates: readonly ActuatorVerdict[] };
+  /** Another value could give another verdict; false = it holds for any sensible values. */
+  readonly onValues: boolean;
   readonly steps: readonly ReasonStep[];
 }
 
@@ -40,6 +42,7 @@ export interface PumpReason {
   readonly label: string;
   readonly verdict: PumpVerdict;
   readonly rests?: { readonly why: string; readonly candidates: readonly PumpVerdict[] };
+  readonly onValues: boolean;
   readonly steps: readonly ReasonStep[];
 }
 

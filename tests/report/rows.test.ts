@@ -39,6 +39,7 @@ test('an explanation adds the sentence and the candidates, and is asked for open
       part: 'id-CLAMP',
       label: 'CLAMP',
       verdict: 'rests on pressure',
+      onValues: true,
       notes: [],
       rests,
       steps: [],

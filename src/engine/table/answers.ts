@@ -8,6 +8,8 @@ export interface ActuatorAnswer {
   readonly verdict: ActuatorVerdict;
   readonly notes: readonly string[];
   readonly rests?: { readonly why: string; readonly candidates: readonly ActuatorVerdict[] };
+  /** Another value could give another verdict; false = it holds for any sensible values. */
+  readonly onValues: boolean;
   readonly steps: readonly Step[];
 }
 
@@ -16,6 +18,7 @@ export interface PumpAnswer {
   readonly label: string;
   readonly verdict: PumpVerdict;
   readonly rests?: { readonly why: string; readonly candidates: readonly PumpVerdict[] };
+  readonly onValues: boolean;
   readonly steps: readonly Step[];
 }
 

@@ -37,7 +37,8 @@ export function explainPressures(state: OneState): PressureWords {
     const notes = found.void && !said.notes.includes('void forms') ? [...said.notes, 'void forms'] : said.notes;
     const why = rests ? [step(rests.why)] : [];
     const against = found.verdict.includes('by load') || found.verdict.includes('by spring') ? [overcome(state, spec, said.part)] : [];
-    return { ...rest, verdict: found.verdict, notes, steps: [...said.steps, ...why, ...against, figures(state, index, spec, numbers, found.verdict)] };
+    const onValues = rests !== undefined || found.verdict !== said.verdict;
+    return { ...rest, onValues, verdict: found.verdict, notes, steps: [...said.steps, ...why, ...against, figures(state, index, spec, numbers, found.verdict)] };
   };
 
   const pump = (index: number, said: PumpAnswer): PumpAnswer => {
@@ -48,7 +49,8 @@ export function explainPressures(state: OneState): PressureWords {
     const at = numbers.pumps[index];
     const line = state.net.pumps[index]?.outlet ?? -1;
     const text = `It stands at ${bar(at?.pressure ?? 0)} and delivers ${litres(at?.delivered ?? 0)}${over(numbers)}.`;
-    return { ...rest, verdict: found, steps: [...(rests ? [] : steps), step(text, [line], [said.part])] };
+    const onValues = rests !== undefined || found !== said.verdict;
+    return { ...rest, onValues, verdict: found, steps: [...(rests ? [] : steps), step(text, [line], [said.part])] };
   };
   const overValve = !hunts && movesOverValve(bits, answer);
   return { actuator, pump, numbers, flows: (line) => overValve && solver.flows(answer, line) };
@@ -100,6 +102,6 @@ const over = (numbers: RowNumbers): string => {
 };
 
 const round = (value: number): string => (Math.abs(value) >= 100 ? value.toFixed(0) : Number(value.toPrecision(3)).toString());
-const bar = (pascal: number): string => `${round(pascal / 1e5)} bar`;
+const bar = (pascal: number): string => `${(pascal / 1e5).toFixed(pascal < 10e5 ? 1 : 0)} bar`;
 const litres = (flow: number): string => `${round(flow * 60_000)} L/min`;
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

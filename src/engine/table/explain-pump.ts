@@ -11,7 +11,7 @@ export function explainPump(state: OneState, index: number, pump: NetPump): Pump
   const planes = pumpOutcome(index, pump, net, state.block, state.conditions);
   const verdict = PUMP_VERDICTS.find((_, i) => state.is(planes[i])) ?? 'rests on pressure';
   const me = partId(state, pump.part);
-  const base = { part: me, label: partLabel(state, pump.part), verdict };
+  const base = { part: me, label: partLabel(state, pump.part), verdict, onValues: verdict === 'rests on pressure' };
   const outlet = lineName(state, pump.outlet);
   switch (verdict) {
     case 'unloaded': {

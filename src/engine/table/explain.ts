@@ -46,7 +46,7 @@ function explainActuator(state: OneState, index: number, actuator: NetActuator):
   const verdict = ACTUATOR_VERDICTS.find((_, i) => state.is(outcome.verdicts[i])) ?? 'undetermined';
   const notes = ACTUATOR_NOTES.filter((_, i) => state.is(outcome.notes[i]));
   const words = motionWords(actuator);
-  const base = { part: partId(state, actuator.part), label: partLabel(state, actuator.part), verdict, notes };
+  const base = { part: partId(state, actuator.part), label: partLabel(state, actuator.part), verdict, notes, onValues: verdict === 'rests on pressure' };
   switch (verdict) {
     case words.out:
       return { ...base, steps: movingSteps(state, index, actuator, 'a') };
