@@ -1,6 +1,9 @@
 /** Answers one question after another on its own thread. */
 import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
+import { bleedPlan } from '../analysis/bleed.ts';
+import { checkRules, rulesOf } from '../analysis/check.ts';
 import type { Conditions } from '../analysis/results.ts';
+import { unlimited } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { Question, Reply } from './messages.ts';
@@ -22,6 +25,10 @@ function answer(question: Question): Reply {
       return answerTable(id, circuit, conditions);
     case 'explain':
       return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row) };
+    case 'check':
+      return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), unlimited) };
+    case 'bleed':
+      return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
     case 'numbers':
       return { id, say: 'numbers', numbers: numbersOf(circuit, conditions, question.rows) };
   }

@@ -1,12 +1,17 @@
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
+import type { BleedAnswer } from '../analysis/bleed-results.ts';
+import type { Check } from '../analysis/check-results.ts';
 import { Cancelled } from '../base/budget.ts';
+import type { Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { Question, Reply } from './messages.ts';
 
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
+export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
+export type { Check, CheckedRule, RuleAnswer } from '../analysis/check-results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
@@ -38,13 +43,18 @@ export interface Analyst {
   explain(circuit: Circuit, conditions: Conditions, row: number): Job<Explanation>;
   /** Pressures, flows and speeds of these rows, in this order; SI. */
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
+  /** The circuit's rules against every combination. */
+  check(circuit: Circuit, conditions: Conditions): Job<Result<Check>>;
+  /** How to let the pressure down once the pumps stop in this row (0-based). */
+  bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
   close(): void;
 }
 
-/** Tables and explanations have a thread each, so that a click on "why" never waits for a long table. */
+/** Tables, explanations and plans have a thread each, so that a click on "why" never waits for a long table. */
 export function createAnalyst(): Analyst {
   const tables = new Thread();
   const words = new Thread();
+  const long = new Thread();
   return {
     table: (circuit, conditions, progress, early = () => {}) =>
       tables.ask({ ask: 'table', circuit, conditions }, (reply) => {
@@ -59,8 +69,13 @@ export function createAnalyst(): Analyst {
       words.ask({ ask: 'numbers', circuit, conditions, rows }, () => {}, (reply) =>
         reply.say === 'numbers' ? reply.numbers : undefined,
       ),
+    check: (circuit, conditions) =>
+      long.ask({ ask: 'check', circuit, conditions }, () => {}, (reply) => (reply.say === 'check' ? reply.result : undefined)),
+    bleed: (circuit, conditions, row) =>
+      long.ask({ ask: 'bleed', circuit, conditions, row }, () => {}, (reply) => (reply.say === 'bleed' ? reply.plan : undefined)),
     close: () => {
       tables.stop();
+      long.stop();
       words.stop();
     },
   };

@@ -1,10 +1,15 @@
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
+import type { BleedAnswer } from '../analysis/bleed-results.ts';
+import type { Check } from '../analysis/check-results.ts';
+import type { Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 
 export type Question =
   | { readonly id: number; readonly ask: 'table'; readonly circuit: Circuit; readonly conditions: Conditions }
   | { readonly id: number; readonly ask: 'numbers'; readonly circuit: Circuit; readonly conditions: Conditions; readonly rows: readonly number[] }
+  | { readonly id: number; readonly ask: 'check'; readonly circuit: Circuit; readonly conditions: Conditions }
+  | { readonly id: number; readonly ask: 'bleed'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number }
   | { readonly id: number; readonly ask: 'explain'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number };
 
 export type Reply =
@@ -12,5 +17,7 @@ export type Reply =
   /** `early`: what open paths say; the pressures follow in a second reply. */
   | { readonly id: number; readonly say: 'table'; readonly early: boolean; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
+  | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
+  | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };
