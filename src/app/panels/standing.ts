@@ -1,6 +1,6 @@
 import { formatQuantity } from '../../base/units.ts';
 import type { UnitSystem } from '../../base/units.ts';
-import { restsOnValues } from '../state/assumed.ts';
+import { pressureKnown, restsOnValues } from '../state/assumed.ts';
 import { sayPressure, saySpeed } from '../state/figure-texts.ts';
 import type { Subject } from '../state/session.svelte.ts';
 import type { Conditions, RowNumbers, StateTable } from '../../worker/client.ts';
@@ -27,23 +27,26 @@ export function sayStanding(table: StateTable, row: number, { of, key }: Subject
 export function sayFigures(table: StateTable, numbers: RowNumbers, { of, key }: Subject, units: UnitSystem): string | undefined {
   if (numbers.status !== 'solved') return undefined;
   const flow = (si: number): string => formatQuantity(si, 'flow', units, { digits: 2 });
+  const pressureIn = (line: number): string | undefined => {
+    const pressure = numbers.lines[line];
+    return pressure === undefined || !pressureKnown(table, line, numbers.row) ? undefined : sayPressure(pressure, units);
+  };
   if (of === 'pump') {
     const pump = numbers.pumps[table.data.pumps.findIndex(({ part }) => part === key)];
     return pump && `${sayPressure(pump.pressure, units)}, ${flow(pump.delivered)}`;
   }
   if (of === 'line') {
-    const pressure = numbers.lines[table.data.lines.findIndex(({ name }) => name === key)];
-    return pressure === undefined ? undefined : sayPressure(pressure, units);
+    return pressureIn(table.data.lines.findIndex(({ name }) => name === key));
   }
   const index = table.data.actuators.findIndex(({ part }) => part === key);
   const actuator = numbers.actuators[index];
   const motion = table.data.actuators[index]?.motion;
   if (!actuator || !motion) return undefined;
   const sides = ['A', 'B'].flatMap((port) => {
-    const line = table.data.lines.findIndex(({ ports }) => ports.includes(`${key}.${port}`));
-    const pressure = numbers.lines[line];
-    return pressure === undefined ? [] : [`${port} ${sayPressure(pressure, units)}`];
+    const pressure = pressureIn(table.data.lines.findIndex(({ ports }) => ports.includes(`${key}.${port}`)));
+    return pressure === undefined ? [] : [`${port} ${pressure}`];
   });
   const speed = saySpeed(actuator.speed, motion, units);
-  return [...(speed === undefined ? [] : [speed, flow(actuator.flow)]), ...sides].join(', ');
+  const said = [...(speed === undefined ? [] : [speed, flow(actuator.flow)]), ...sides];
+  return said.length > 0 ? said.join(', ') : undefined;
 }

@@ -1,4 +1,4 @@
-import { lineAssumed } from '../state/assumed.ts';
+import { lineAssumed, pressureKnown } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
 import { NEAR_NOTHING, sayPressure } from '../state/figure-texts.ts';
 import { figures } from '../state/figures.svelte.ts';
@@ -12,10 +12,7 @@ export interface LinePressure {
   readonly assumed: boolean;
 }
 
-/**
- * Pressures of the current row that are worth saying. In a line that is cut off only a load gives one: what an
- * earlier state left behind, or heat may do, nobody can work out.
- */
+/** Pressures of the current row that can be worked out and are worth saying. */
 export function linePressures(assumed: Assumed): LinePressure[] {
   const { table, row } = session;
   const numbers = figures.current;
@@ -23,7 +20,7 @@ export function linePressures(assumed: Assumed): LinePressure[] {
   return table.data.lines.flatMap((_, line) => {
     const pressure = numbers.lines[line] ?? 0;
     if (!(pressure >= NEAR_NOTHING)) return [];
-    if (table.line(line, row) === 'cut off' && !table.trapped(line, row).includes('load')) return [];
+    if (!pressureKnown(table, line, row)) return [];
     return [{ line, text: sayPressure(pressure, view.units), assumed: lineAssumed(assumed, table, line, row) }];
   });
 }

@@ -103,3 +103,14 @@ export function lineAssumed(assumed: Assumed, table: StateTable, line: number, r
   // Past a throttle or a check the load stands on another line: then any of them may have a say.
   return own.length > 0 ? own.some(({ part }) => assumed.forces.has(part)) : assumed.forces.size > 0;
 }
+
+/**
+ * Whether the pressure in a line can be worked out at all. In one that is cut off only a load gives one: what an
+ * earlier state left behind, or heat may do, nobody knows, and to say nought of it would be dangerous.
+ */
+export function pressureKnown(table: StateTable, line: number, row: number): boolean {
+  const reasons = table.trapped(line, row);
+  if (reasons.includes('load')) return true;
+  const kind = table.line(line, row);
+  return kind === 'vented' ? reasons.length === 0 : kind !== 'cut off';
+}
