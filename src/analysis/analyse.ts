@@ -17,7 +17,7 @@ import { kindOf } from '../parts/catalogue.ts';
 import type { Conditions, Explanation } from './results.ts';
 
 /** Dense arrays of a circuit that has passed the checks. Throws on a kind that the catalogue lacks, or a load case that it does not have. */
-export function networkOf(circuit: Circuit, conditions?: Conditions): Network {
+export function networkOf(circuit: Circuit, conditions?: Pick<Conditions, 'loadCase'>): Network {
   return compileNetwork(withLoadCase(circuit, conditions?.loadCase), (name) => {
     const kind = kindOf(name);
     if (!kind) throw new Error(`unknown part kind ${name}`);

@@ -22,10 +22,11 @@ import { BleedWords } from './bleed-words.ts';
 import type { Conditions } from './results.ts';
 
 /** What holds besides the pumps, which are stopped here. */
-export type BleedConditions = Pick<Conditions, 'places'>;
+export type BleedConditions = Pick<Conditions, 'places' | 'loadCase'>;
 
-function modelOf(circuit: Circuit, { places = {} }: BleedConditions): { model: BleedModel; words: BleedWords } {
-  const net = networkOf(circuit);
+function modelOf(circuit: Circuit, conditions: BleedConditions): { model: BleedModel; words: BleedWords } {
+  const net = networkOf(circuit, conditions);
+  const { places = {} } = conditions;
   const standing = net.actuators.map((actuator) => places[net.parts[actuator.part]?.id ?? ''] ?? ('between' as const));
   return { model: new BleedModel(net, { pumpsRunning: true, places: standing }), words: new BleedWords(net, circuit) };
 }
@@ -148,7 +149,7 @@ const EXAMPLES = 3;
 
 /** Every line that pressure stays trapped in, with the reasons over all rows of the table and a few rows in words. */
 export function trappedSummary(circuit: Circuit, conditions: Conditions, table: StateTable): TrappedSummary {
-  const words = new BleedWords(networkOf(circuit), circuit);
+  const words = new BleedWords(networkOf(circuit, conditions), circuit);
   const said = new Map<number, ReturnType<typeof explainRow>['trapped']>();
   const trappedIn = (row: number): ReturnType<typeof explainRow>['trapped'] => {
     const known = said.get(row) ?? explainRow(circuit, conditions, row).trapped;

@@ -46,7 +46,7 @@ export function checkRules(
   budget: Budget,
   table?: TableData,
 ): Result<Check> {
-  const net = networkOf(circuit);
+  const net = networkOf(circuit, conditions);
   const names = namesOfNetwork(net);
   const problems: Problem[] = [];
   const read: { readonly given: GivenRule; readonly rule: Rule }[] = [];
