@@ -1,4 +1,5 @@
 import { parseArgs } from 'node:util';
+import type { UnitSystem } from '../base/units.ts';
 import { codeOf, Failure, messageOf } from './failure.ts';
 import { BLEED_HELP, CHECK_HELP, EXPLAIN_HELP, HELP, TABLE_HELP, TRAPPED_HELP } from './help.ts';
 
@@ -11,6 +12,10 @@ export type Command =
       readonly file: string;
       readonly format: TableFormat;
       readonly pumps: Pumps;
+      /** Name or id of a load case. */
+      readonly load: string | undefined;
+      readonly numbers: boolean;
+      readonly units: UnitSystem;
       readonly out: string | undefined;
     }
   | {
@@ -18,6 +23,8 @@ export type Command =
       readonly file: string;
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
+      readonly load: string | undefined;
+      readonly units: UnitSystem;
       readonly state: readonly string[];
       readonly out: string | undefined;
     }
@@ -26,6 +33,7 @@ export type Command =
       readonly file: string;
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
+      readonly load: string | undefined;
       readonly out: string | undefined;
     }
   | {
@@ -57,6 +65,10 @@ const COMMON = {
   help: { type: 'boolean', default: false },
 } as const;
 
+const LOAD = { load: { type: 'string' } } as const;
+const UNITS = { units: { type: 'string', default: 'metric' } } as const;
+const UNIT_SYSTEMS = ['metric', 'us'] as const satisfies readonly UnitSystem[];
+
 /** What the user asks for. Throws a `Failure` that says what is wrong with the command line. */
 export function readArguments(args: readonly string[], version: string): Command {
   const [first, ...rest] = args;
@@ -86,7 +98,12 @@ export function readArguments(args: readonly string[], version: string): Command
 
 function tableCommand(args: string[]): Command {
   const { values, positionals } = attempt('table', () =>
-    parseArgs({ args, strict: true, allowPositionals: true, options: COMMON }),
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { ...COMMON, ...LOAD, ...UNITS, numbers: { type: 'boolean', default: false } },
+    }),
   );
   if (values.help) return { name: 'say', text: TABLE_HELP };
   return {
@@ -94,6 +111,9 @@ function tableCommand(args: string[]): Command {
     file: oneFile('table', positionals),
     format: oneOf('table', '--format', values.format, TABLE_FORMATS),
     pumps: oneOf('table', '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase('table', values.load),
+    numbers: values.numbers,
+    units: oneOf('table', '--units', values.units, UNIT_SYSTEMS),
     out: outFile('table', values.out),
   };
 }
@@ -104,7 +124,7 @@ function explainCommand(args: string[]): Command {
       args,
       strict: true,
       allowPositionals: true,
-      options: { ...COMMON, state: { type: 'string', multiple: true, default: [] } },
+      options: { ...COMMON, ...LOAD, ...UNITS, state: { type: 'string', multiple: true, default: [] } },
     }),
   );
   if (values.help) return { name: 'say', text: EXPLAIN_HELP };
@@ -113,6 +133,8 @@ function explainCommand(args: string[]): Command {
     file: oneFile('explain', positionals),
     format: oneOf('explain', '--format', values.format, EXPLAIN_FORMATS),
     pumps: oneOf('explain', '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase('explain', values.load),
+    units: oneOf('explain', '--units', values.units, UNIT_SYSTEMS),
     state: values.state,
     out: outFile('explain', values.out),
   };
@@ -120,7 +142,7 @@ function explainCommand(args: string[]): Command {
 
 function trappedCommand(args: string[]): Command {
   const { values, positionals } = attempt('trapped', () =>
-    parseArgs({ args, strict: true, allowPositionals: true, options: COMMON }),
+    parseArgs({ args, strict: true, allowPositionals: true, options: { ...COMMON, ...LOAD } }),
   );
   if (values.help) return { name: 'say', text: TRAPPED_HELP };
   return {
@@ -128,6 +150,7 @@ function trappedCommand(args: string[]): Command {
     file: oneFile('trapped', positionals),
     format: oneOf('trapped', '--format', values.format, EXPLAIN_FORMATS),
     pumps: oneOf('trapped', '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase('trapped', values.load),
     out: outFile('trapped', values.out),
   };
 }
@@ -197,6 +220,11 @@ function oneOf<T extends string>(command: string, option: string, value: string,
   const found = allowed.find((word) => word === value);
   if (found === undefined) throw usage(`${option} takes ${allowed.join(' or ')}, not "${value}".`, command);
   return found;
+}
+
+function loadCase(command: string, load: string | undefined): string | undefined {
+  if (load === '') throw usage('--load needs the name of a load case.', command);
+  return load;
 }
 
 function outFile(command: string, out: string | undefined): string | undefined {

@@ -49,13 +49,20 @@ export function bleed(
 }
 
 export function trapped(
-  { format, pumps }: Extract<Command, { name: 'trapped' }>,
+  { format }: Extract<Command, { name: 'trapped' }>,
   circuit: Circuit,
+  conditions: Conditions,
   version: string,
   table: StateTable,
 ): Written {
-  const conditions: Conditions = { pumps };
   const summary = trappedSummary(circuit, conditions, table);
-  const source = { version, circuit: circuit.name, conditions, summary, count: table.count };
+  const source = {
+    version,
+    circuit: circuit.name,
+    conditions,
+    loadCases: circuit.loadCases ?? [],
+    summary,
+    count: table.count,
+  };
   return { pieces: format === 'json' ? [writeTrappedJson(source)] : writeTrappedText(source), exit: EXIT.done };
 }

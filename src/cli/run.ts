@@ -1,20 +1,23 @@
-import { explainRow, findings, MOST_ROWS, networkOf, tabulate } from '../analysis/analyse.ts';
+import { explainRow, findings, MOST_ROWS, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
+import type { UnitSystem } from '../base/units.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import { writeCsv } from '../report/csv.ts';
 import { writeExplanationJson, writeExplanationText } from '../report/explain.ts';
+import type { NumberSource } from '../report/figures.ts';
 import { writeJson } from '../report/json.ts';
 import { writeMarkdown } from '../report/markdown.ts';
 import { makeReport } from '../report/rows.ts';
 import type { Report } from '../report/rows.ts';
 import { writeText } from '../report/text.ts';
 import { readArguments } from './arguments.ts';
-import type { Command, Pumps, TableFormat } from './arguments.ts';
+import type { Command, TableFormat } from './arguments.ts';
 import { bleed, trapped } from './bleed.ts';
 import type { Written } from './bleed.ts';
 import { check } from './check.ts';
+import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure, messageOf, sayProblems } from './failure.ts';
 import { readCircuitFile } from './input.ts';
 import { print, writeWhole } from './output.ts';
@@ -43,8 +46,10 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
       return { pieces: table(command, circuit, version), exit: EXIT.done };
     case 'explain':
       return { pieces: explain(command, circuit, version), exit: EXIT.done };
-    case 'trapped':
-      return trapped(command, circuit, version, tableOf(command.file, circuit, command.pumps));
+    case 'trapped': {
+      const conditions = conditionsOf(command, circuit);
+      return trapped(command, circuit, conditions, version, tableOf(command.file, circuit, conditions));
+    }
     case 'bleed':
       return bleed(command, circuit, version);
     case 'check':
@@ -57,32 +62,40 @@ const note = (text: string): void => console.error(`spooltable: ${text}`);
 type Table = Extract<Command, { name: 'table' }>;
 type Explain = Extract<Command, { name: 'explain' }>;
 
-const conditionsOf = (pumps: Pumps): Conditions => ({ pumps });
-
-function tableOf(file: string, circuit: Circuit, pumps: Pumps): StateTable {
+function tableOf(file: string, circuit: Circuit, conditions: Conditions): StateTable {
   const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
   try {
-    return new StateTable(tabulate(circuit, conditionsOf(pumps), unlimited));
+    return new StateTable(tabulate(circuit, conditions, unlimited));
   } catch (error) {
     throw count > MOST_ROWS ? new Failure(`${file}: ${messageOf(error)}`) : error;
   }
 }
 
-function table({ file, format, pumps, out }: Table, circuit: Circuit, version: string): Iterable<string> {
-  const stateTable = tableOf(file, circuit, pumps);
-  const running = pumps === 'running' ? stateTable : tableOf(file, circuit, 'running');
-  const conditions = conditionsOf(pumps);
+function table(command: Table, circuit: Circuit, version: string): Iterable<string> {
+  const { file, format, out } = command;
+  const conditions = conditionsOf(command, circuit);
+  const stateTable = tableOf(file, circuit, conditions);
+  const running =
+    conditions.pumps === 'running' ? stateTable : tableOf(file, circuit, { ...conditions, pumps: 'running' });
   const explained = format === 'json' && stateTable.count <= MOST_EXPLAINED;
   const report = makeReport({
     version,
     circuit,
     conditions,
     table: stateTable,
-    findings: findings(circuit, running),
+    findings: findings(circuit, running, conditions),
     ...(explained ? { explain: (row: number) => explainRow(circuit, conditions, row) } : {}),
+    ...(command.numbers
+      ? { numbers: numberSource(circuit, command.units, (rows) => numbersOf(circuit, conditions, rows)) }
+      : {}),
   });
   const width = out === undefined && process.stdout.isTTY ? process.stdout.columns : undefined;
   return WRITERS[format](report, width);
+}
+
+function numberSource(circuit: Circuit, units: UnitSystem, of: NumberSource['of']): NumberSource {
+  const net = networkOf(circuit);
+  return { units, reliefs: net.reliefs.map(({ part }) => net.parts[part]?.label ?? ''), of };
 }
 
 const WRITERS: Record<TableFormat, (report: Report, width: number | undefined) => Iterable<string>> = {
@@ -92,19 +105,22 @@ const WRITERS: Record<TableFormat, (report: Report, width: number | undefined) =
   markdown: writeMarkdown,
 };
 
-function explain({ file, format, pumps, state }: Explain, circuit: Circuit, version: string): Iterable<string> {
-  const stateTable = tableOf(file, circuit, pumps);
+function explain(command: Explain, circuit: Circuit, version: string): Iterable<string> {
+  const { file, format, state } = command;
+  const conditions = conditionsOf(command, circuit);
+  const stateTable = tableOf(file, circuit, conditions);
   const read = readState(state, stateTable.data.inputs);
   if (!read.ok) throw new Failure(sayProblems(file, read.problems));
-  const conditions = conditionsOf(pumps);
   const row = stateTable.rowOf(read.value.positions);
+  const explanation = explainRow(circuit, conditions, row);
   const source = {
     version,
     circuit,
     conditions,
     table: stateTable,
     findings: [],
-    explanation: explainRow(circuit, conditions, row),
+    explanation,
+    numbers: numberSource(circuit, command.units, () => [explanation.numbers]),
     assumed: read.value.assumed,
   };
   return format === 'json' ? [writeExplanationJson(source)] : writeExplanationText(source);

@@ -1,10 +1,12 @@
+import { sayFigure } from './figures.ts';
+import { motorNotes } from './notes.ts';
 import type { Report, ReportRow } from './rows.ts';
 
 /** One column of the table as people read it. */
 export interface Column {
   readonly head: string;
   /** What a column holds; only lists and remarks may be cut short where space is scarce. */
-  readonly kind: 'number' | 'position' | 'coils' | 'verdict' | 'list';
+  readonly kind: 'number' | 'figure' | 'position' | 'coils' | 'verdict' | 'list';
   readonly cell: (row: ReportRow) => string;
 }
 
@@ -20,6 +22,7 @@ const list = (items: readonly string[]): string => (items.length > 0 ? items.joi
 
 /** The columns of the text and Markdown tables. Coils show which are on. */
 export function columnsOf(report: Report): Column[] {
+  const said = motorNotes(report.motors);
   return [
     { head: 'Row', kind: 'number', cell: (row) => `${row.row}${row.valued ? VALUED_MARK : ' '}` },
     ...report.inputs.map(({ label }): Column => ({
@@ -34,6 +37,11 @@ export function columnsOf(report: Report): Column[] {
       cell: (row) => verdictOf(row, label),
     })),
     ...report.pumps.map((label): Column => ({ head: label, kind: 'verdict', cell: (row) => row.pumps[label] ?? '' })),
+    ...figureColumns(report).map(({ label, unit, cell }): Column => ({
+      head: `${label} ${unit}`,
+      kind: 'figure',
+      cell,
+    })),
     { head: 'Blocked under pressure', kind: 'list', cell: (row) => list(row.blocked.underPressure) },
     { head: 'Cut off', kind: 'list', cell: (row) => list(row.blocked.cutOff) },
     {
@@ -41,7 +49,46 @@ export function columnsOf(report: Report): Column[] {
       kind: 'list',
       cell: (row) => list(row.trapped.map(({ line, reasons }) => `${line} (${reasons.join(', ')})`)),
     },
-    { head: 'Notes', kind: 'list', cell: (row) => (row.notes.length > 0 ? row.notes.join('; ') : NONE) },
+    {
+      head: 'Notes',
+      kind: 'list',
+      cell: (row) => (row.notes.length > 0 ? row.notes.map((note) => said.get(note) ?? note).join('; ') : NONE),
+    },
+  ];
+}
+
+export interface FigureColumn {
+  readonly what: 'speed' | 'pressure' | 'flow';
+  readonly label: string;
+  readonly unit: string;
+  /** Blank where there is no figure. */
+  readonly cell: (row: ReportRow) => string;
+}
+
+/** The numbers of a table: speed of each actuator, pressure of each pump, flow over each relief valve. */
+export function figureColumns({ figures, actuators, motors, pumps }: Report): FigureColumn[] {
+  if (!figures) return [];
+  const { units, reliefs } = figures;
+  const solved = ({ numbers }: ReportRow) => (numbers?.status === 'solved' ? numbers : undefined);
+  return [
+    ...actuators.map((label): FigureColumn => ({
+      what: 'speed',
+      label,
+      unit: motors.includes(label) ? units.rotarySpeed : units.speed,
+      cell: (row) => sayFigure(solved(row)?.actuators[label]?.speed),
+    })),
+    ...pumps.map((label): FigureColumn => ({
+      what: 'pressure',
+      label,
+      unit: units.pressure,
+      cell: (row) => sayFigure(solved(row)?.pumps[label]?.pressure),
+    })),
+    ...reliefs.map((label): FigureColumn => ({
+      what: 'flow',
+      label,
+      unit: units.flow,
+      cell: (row) => sayFigure(solved(row)?.reliefs[label]),
+    })),
   ];
 }
 
@@ -63,7 +110,7 @@ export function headLines(report: Report): string[] {
   const { count, notPermitted, commandCombinations, inputs } = report;
   const rest = inputs.map(({ label, rest: at }) => `${label} ${at ?? 'stays where it was left'}`).join(', ');
   return [
-    `State table, pumps ${report.conditions.pumps}`,
+    `State table, ${report.under}`,
     `${count} ${count === 1 ? 'row' : 'rows'}.` +
       (notPermitted > 0
         ? ` ${notPermitted} of ${commandCombinations} lever and coil combinations ${notPermitted === 1 ? 'is' : 'are'} not permitted (opposed coils on at once); no row is given to what is not permitted.`

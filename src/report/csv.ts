@@ -1,3 +1,4 @@
+import { figureColumns } from './cells.ts';
 import type { Report, ReportRow } from './rows.ts';
 
 const END = '\r\n';
@@ -14,6 +15,8 @@ export function field(text: string): string {
 interface CsvColumn {
   readonly head: string;
   readonly cell: (row: ReportRow) => string;
+  /** Written as it is: a negative number is no formula. */
+  readonly figure?: true;
 }
 
 /** Lists inside a field are parted by `; `. */
@@ -41,6 +44,11 @@ function columnsOf(report: Report): CsvColumn[] {
     },
     { head: 'from values', cell: (row) => (row.valued ? 'yes' : 'no') },
     { head: 'notes', cell: (row) => list(row.notes) },
+    ...figureColumns(report).map(({ what, label, unit, cell }) => ({
+      head: `${what} ${label} ${unit}`,
+      cell,
+      figure: true as const,
+    })),
   ];
 }
 
@@ -48,5 +56,6 @@ function columnsOf(report: Report): CsvColumn[] {
 export function* writeCsv(report: Report): Generator<string> {
   const columns = columnsOf(report);
   yield columns.map((column) => field(column.head)).join(',') + END;
-  for (const row of report.rows()) yield columns.map((column) => field(column.cell(row))).join(',') + END;
+  for (const row of report.rows())
+    yield columns.map(({ cell, figure }) => (figure ? cell(row) : field(cell(row)))).join(',') + END;
 }

@@ -1,5 +1,8 @@
 import type { Explanation, ReasonStep } from '../analysis/results.ts';
 import { REPORT_VERSION } from './json.ts';
+import { sayFigure } from './figures.ts';
+import type { FigureUnits, RowFigures } from './figures.ts';
+import { motorNotes, sayNote } from './notes.ts';
 import { labelOfPart, makeReport, TRAPPED_CAUTION } from './rows.ts';
 import type { ReportRow, ReportSource } from './rows.ts';
 import { plain } from './width.ts';
@@ -28,12 +31,13 @@ function* explanationLines(source: ExplainSource): Generator<string> {
   const { explanation } = source;
   const row = report.rowAt(explanation.row);
   yield report.circuit;
-  yield `Row ${row.row} of ${report.count}, pumps ${source.conditions.pumps}: ${stateOf(row)}`;
+  yield `Row ${row.row} of ${report.count}, ${report.under}: ${stateOf(row)}`;
   if (Object.keys(source.assumed).length > 0) yield `Not given, taken at rest: ${pairs(source.assumed)}`;
   if (report.coils.length > 0) yield `Coils on: ${names(report.coils.filter((coil) => row.coils[coil] === 'on'))}`;
   for (const { label, verdict, notes, rests, steps } of explanation.actuators) {
     yield '';
-    yield `${label}: ${[verdict, ...notes].join('; ')}`;
+    const said = notes.map((note) => sayNote(note, report.motors.includes(label)));
+    yield `${label}: ${[verdict, ...said].join('; ')}`;
     yield* restLines(rests);
     yield* stepLines(steps);
   }
@@ -43,6 +47,7 @@ function* explanationLines(source: ExplainSource): Generator<string> {
     yield* restLines(rests);
     yield* stepLines(steps);
   }
+  if (row.numbers && report.figures) yield* figureLines(row.numbers, report.figures.units, row);
   yield '';
   yield `Blocked under pressure: ${names(row.blocked.underPressure)}`;
   yield `Cut off: ${names(row.blocked.cutOff)}`;
@@ -54,7 +59,8 @@ function* explanationLines(source: ExplainSource): Generator<string> {
   }
   if (explanation.trapped.length > 0) yield TRAPPED_CAUTION;
   if (explanation.notes.length > 0) yield '';
-  for (const note of explanation.notes) yield `Note: ${note}`;
+  const said = motorNotes(report.motors);
+  for (const note of explanation.notes) yield `Note: ${said.get(note) ?? note}`;
 }
 
 const stateOf = (row: ReportRow): string => pairs(row.state) || 'nothing to command';
@@ -69,6 +75,36 @@ function* restLines(
 
 function* stepLines(steps: readonly ReasonStep[]): Generator<string> {
   for (const [i, step] of steps.entries()) yield `  ${i + 1}. ${step.text}`;
+}
+
+export const FIGURES_REST = 'These figures rest on entered values and, where nothing was entered, on assumed ones.';
+
+function* figureLines(figures: RowFigures, units: FigureUnits, row: ReportRow): Generator<string> {
+  yield '';
+  if (figures.status !== 'solved') {
+    yield `No steady pressures: ${figures.words}`;
+    return;
+  }
+  const by = (label: string): boolean =>
+    row.trapped.some(({ line, reasons }) => line === label && reasons.includes('load'));
+  yield 'Pressures';
+  for (const [line, pressure] of Object.entries(figures.lines)) {
+    const said =
+      pressure === null ? 'sealed; what stands in it is not known' : `${sayFigure(pressure)} ${units.pressure}`;
+    yield `  ${line}: ${said}${by(line) && pressure !== null ? ' from its load; more may be trapped in it' : ''}`;
+  }
+  const reliefs = Object.entries(figures.reliefs);
+  if (reliefs.length > 0) yield 'Flow over relief valves';
+  for (const [label, flow] of reliefs) yield `  ${label}: ${sayFigure(flow)} ${units.flow}`;
+  const { pumps, loads, stores, useful, lost } = figures.power;
+  const power = (figure: number): string => `${sayFigure(figure)} ${units.power}`;
+  const spare =
+    stores === 0 ? '' : `, springs and accumulators ${stores > 0 ? 'give' : 'take'} ${power(Math.abs(stores))}`;
+  yield 'Power';
+  yield `  in: pumps give ${power(pumps)}${loads === 0 ? '' : `, loads give ${power(loads)}`}${spare}`;
+  yield `  useful: ${power(useful)}`;
+  yield `  lost: ${power(lost)}`;
+  yield FIGURES_REST;
 }
 
 /** The same as one JSON object; lines and parts by their shown names, `row` 1-based. */
@@ -86,6 +122,8 @@ export function writeExplanationJson(source: ExplainSource): string {
     spooltable: { version: source.version, report: REPORT_VERSION },
     circuit: report.circuit,
     conditions: source.conditions,
+    ...(report.loadCase === undefined ? {} : { loadCase: report.loadCase }),
+    ...(report.figures ? { units: report.figures.units, figuresRestOn: FIGURES_REST } : {}),
     assumed: source.assumed,
     ...report.rowAt(explanation.row),
     actuators: Object.fromEntries(

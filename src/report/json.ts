@@ -14,6 +14,8 @@ export function* writeJson(report: Report): Generator<string> {
     entry('spooltable', { version: report.version, report: REPORT_VERSION }),
     entry('circuit', report.circuit),
     entry('conditions', report.conditions),
+    ...(report.loadCase === undefined ? [] : [entry('loadCase', report.loadCase)]),
+    ...(report.figures ? [entry('units', report.figures.units)] : []),
     entry(
       'inputs',
       report.inputs.map((input) => ({ rest: null, ...input })),

@@ -1,4 +1,5 @@
 import { columnsOf, headLines, LEVELS, sayRows, VALUED_LEGEND } from './cells.ts';
+import { NUMBERS_LEGEND } from './figures.ts';
 import { TRAPPED_CAUTION } from './rows.ts';
 import type { Report } from './rows.ts';
 import { plain } from './width.ts';
@@ -11,7 +12,7 @@ export const escapeMarkdown = (text: string): string =>
     .replace(/^([#+\-=])/, '\\$1')
     .replace(/^(\d+)([.)])/, '$1\\$2');
 
-const tableRow = (cells: readonly string[]): string => `| ${cells.map(escapeCell).join(' | ')} |\n`;
+const tableRow = (cells: readonly string[]): string => `| ${cells.join(' | ')} |\n`;
 const escapeCell = (text: string): string => escapeMarkdown(text).trim();
 
 /** Heading, pipe table and findings (GitHub-flavoured tables). */
@@ -20,15 +21,16 @@ export function* writeMarkdown(report: Report): Generator<string> {
   yield `# ${escapeMarkdown(report.circuit)}\n\n`;
   for (const line of headLines(report)) yield `${escapeMarkdown(line)}  \n`;
   yield '\n';
-  yield tableRow(columns.map((column) => column.head));
-  yield `|${columns.map(({ kind }) => (kind === 'number' ? ' ---: ' : ' --- ')).join('|')}|\n`;
+  yield tableRow(columns.map(({ head }) => escapeCell(head)));
+  yield `|${columns.map(({ kind }) => (kind === 'number' || kind === 'figure' ? ' ---: ' : ' --- ')).join('|')}|\n`;
   let trapped = false;
   let valued = false;
   for (const row of report.rows()) {
     trapped ||= row.trapped.length > 0;
     valued ||= row.valued;
-    yield tableRow(columns.map((column) => column.cell(row)));
+    yield tableRow(columns.map(({ cell, kind }) => (kind === 'figure' ? cell(row) : escapeCell(cell(row)))));
   }
+  if (report.figures) yield `\n${escapeMarkdown(NUMBERS_LEGEND)}\n`;
   if (valued) yield `\n${escapeMarkdown(VALUED_LEGEND)}\n`;
   if (trapped) yield `\n> ${TRAPPED_CAUTION}\n`;
   if (report.findings.length === 0) return;

@@ -4,6 +4,10 @@ import { labelOf } from '../circuit/model.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
 import type { ActuatorVerdict, LineClass, PumpVerdict, RestReason, TrapReason } from '../engine/table/words.ts';
+import { nameOfCase, sayConditions } from './conditions.ts';
+import { figureNotes, figureUnits, rowFigures } from './figures.ts';
+import type { FigureUnits, NumberSource, RowFigures } from './figures.ts';
+import { record } from './record.ts';
 
 /** What a report is made from. */
 export interface ReportSource {
@@ -15,6 +19,8 @@ export interface ReportSource {
   readonly findings: readonly Finding[];
   /** Asked for the rows that rest on pressures or are undetermined; absent = the report gives no reasons. */
   readonly explain?: (row: number) => Explanation;
+  /** Absent = the report gives verdicts only. */
+  readonly numbers?: NumberSource;
 }
 
 /** A state table in words, ready to be written; rows come one by one, because there may be millions. */
@@ -22,9 +28,15 @@ export interface Report {
   readonly version: string;
   readonly circuit: string;
   readonly conditions: Conditions;
+  /** The conditions in words. */
+  readonly under: string;
+  /** Shown name; absent = the loads that the parts say. */
+  readonly loadCase?: string;
   readonly inputs: readonly ReportInput[];
   readonly coils: readonly string[];
   readonly actuators: readonly string[];
+  /** Those of the actuators that turn. */
+  readonly motors: readonly string[];
   readonly pumps: readonly string[];
   readonly lines: readonly string[];
   readonly count: number;
@@ -32,7 +44,10 @@ export interface Report {
   readonly restRow: number;
   readonly notPermitted: number;
   readonly commandCombinations: number;
-  readonly rows: () => Generator<ReportRow>;
+  /** Set if the rows have numbers. */
+  readonly figures?: { readonly units: FigureUnits; readonly reliefs: readonly string[] };
+  /** `bare`: without the numbers, which take a calculation for each row. */
+  readonly rows: (bare?: boolean) => Generator<ReportRow>;
   /** `row` is 0-based here, as in the table. */
   readonly rowAt: (row: number) => ReportRow;
   readonly findings: readonly ReportFinding[];
@@ -61,6 +76,8 @@ export interface ReportRow {
   readonly notes: readonly string[];
   /** Pressures decided here what open paths leave to them: it rests on entered or assumed values. */
   readonly valued: boolean;
+  /** In the units of the report; set if numbers are asked for. */
+  readonly numbers?: RowFigures;
 }
 
 /** Why open paths leave a verdict to pressures; with an explanation also in a sentence, and which verdicts are possible. */
@@ -83,15 +100,32 @@ export interface ReportFinding {
   readonly rowCount: number;
 }
 
+/** Rows whose numbers are worked out at a time. */
+const CHUNK = 500;
+
 export function makeReport(source: ReportSource): Report {
-  const { table } = source;
+  const { table, numbers } = source;
   const { data } = table;
   const names = namesOf(table);
   const { coils } = names;
+  const { loadCases } = source.circuit;
+  const loadCase = nameOfCase(source.conditions.loadCase, loadCases);
+  const withFigures = (rows: readonly number[]): ReportRow[] => {
+    const found = numbers?.of(rows) ?? [];
+    return rows.map((row, i) => {
+      const bare = reportRow(source, names, row);
+      const si = found[i];
+      if (!numbers || !si) return bare;
+      const figures = rowFigures(si, table, numbers);
+      return { ...bare, notes: [...bare.notes, ...figureNotes(figures)], numbers: figures };
+    });
+  };
   return {
     version: source.version,
     circuit: source.circuit.name,
     conditions: source.conditions,
+    under: sayConditions(source.conditions, loadCases),
+    ...(loadCase === undefined ? {} : { loadCase }),
     inputs: data.inputs.map((input, i) => ({
       label: input.label,
       positions: input.positions,
@@ -102,16 +136,25 @@ export function makeReport(source: ReportSource): Report {
     })),
     coils: names.coilNames,
     actuators: names.actuators,
+    motors: data.actuators.filter(({ motion }) => motion === 'rotary').map(({ label }) => label),
     pumps: names.pumps,
     lines: names.lines,
+    ...(numbers ? { figures: { units: figureUnits(numbers.units), reliefs: numbers.reliefs } } : {}),
     count: table.count,
     restRow: table.restRow() + 1,
     notPermitted: data.notPermitted,
     commandCombinations: data.commandCombinations,
-    *rows() {
-      for (let row = 0; row < table.count; row++) yield reportRow(source, names, row);
+    *rows(bare = false) {
+      if (bare || !numbers) {
+        for (let row = 0; row < table.count; row++) yield reportRow(source, names, row);
+        return;
+      }
+      for (let from = 0; from < table.count; from += CHUNK) {
+        const length = Math.min(CHUNK, table.count - from);
+        yield* withFigures(Array.from({ length }, (_, i) => from + i));
+      }
     },
-    rowAt: (row) => reportRow(source, names, row),
+    rowAt: (row) => withFigures([row])[0] as ReportRow,
     findings: source.findings.map((finding) => ({
       ...finding,
       parts: finding.parts.map((id) => labelOfPart(source.circuit, id)),
@@ -139,17 +182,6 @@ function coilsOf(table: StateTable): Coil[] {
       position,
     })),
   );
-}
-
-/** Keys and values in step, millions of times; a label such as `__proto__` is a key like any other. */
-function record<T>(keys: readonly string[], valueOf: (index: number) => T): Record<string, T> {
-  const out: Record<string, T> = {};
-  for (let i = 0; i < keys.length; i++) {
-    const key = keys[i] as string;
-    if (key === '__proto__') Object.defineProperty(out, key, { value: valueOf(i), enumerable: true });
-    else out[key] = valueOf(i);
-  }
-  return out;
 }
 
 /** The shown names of a table, drawn out once. */

@@ -1,5 +1,7 @@
 import type { Conditions, TrappedSummary } from '../analysis/results.ts';
+import type { LoadCase } from '../circuit/model.ts';
 import { measureOf } from './bleed.ts';
+import { nameOfCase, sayConditions } from './conditions.ts';
 import { REPORT_VERSION } from './json.ts';
 import { TRAPPED_CAUTION } from './rows.ts';
 import { plain } from './width.ts';
@@ -9,6 +11,7 @@ export interface TrappedSource {
   readonly version: string;
   readonly circuit: string;
   readonly conditions: Conditions;
+  readonly loadCases?: readonly LoadCase[];
   readonly summary: TrappedSummary;
   /** Rows of the table. */
   readonly count: number;
@@ -19,9 +22,9 @@ export function* writeTrappedText(source: TrappedSource): Generator<string> {
   for (const line of trappedLines(source)) yield `${plain(line).trimEnd()}\n`;
 }
 
-function* trappedLines({ circuit, conditions, summary, count }: TrappedSource): Generator<string> {
+function* trappedLines({ circuit, conditions, loadCases, summary, count }: TrappedSource): Generator<string> {
   yield circuit;
-  yield `Trapped pressure over ${count.toLocaleString('en')} ${count === 1 ? 'row' : 'rows'}, pumps ${conditions.pumps}`;
+  yield `Trapped pressure over ${count.toLocaleString('en')} ${count === 1 ? 'row' : 'rows'}, ${sayConditions(conditions, loadCases)}`;
   if (summary.lines.length === 0) {
     yield '';
     yield 'No line is trapped in any row.';
@@ -51,11 +54,13 @@ function sameText(
 }
 
 /** The same as one JSON object; rows 1-based. */
-export function writeTrappedJson({ version, circuit, conditions, summary, count }: TrappedSource): string {
+export function writeTrappedJson({ version, circuit, conditions, loadCases, summary, count }: TrappedSource): string {
+  const loadCase = nameOfCase(conditions.loadCase, loadCases);
   const out = {
     spooltable: { version, report: REPORT_VERSION },
     circuit,
     conditions,
+    ...(loadCase === undefined ? {} : { loadCase }),
     rows: count,
     lines: summary.lines.map(({ name, measure, reasons }) => ({
       line: name,
