@@ -1,24 +1,18 @@
 import { formatQuantity } from '../../base/units.ts';
 import type { UnitSystem } from '../../base/units.ts';
-import { pressureKnown, restsOnValues } from '../state/assumed.ts';
+import { pressureKnown } from '../state/assumed.ts';
 import { sayPressure, saySpeed } from '../state/figure-texts.ts';
 import type { Subject } from '../state/session.svelte.ts';
-import type { Conditions, RowNumbers, StateTable } from '../../worker/client.ts';
-
-/** Verdicts that pressures never turn into one another: they follow from what is shut and what is open. */
-const BY_PATHS: ReadonlySet<string> = new Set(['held', 'held one way', 'floats', 'at stop', 'dead-headed', 'stopped']);
+import type { Conditions, Explanation, RowNumbers, StateTable } from '../../worker/client.ts';
 
 /** What the verdict stands on: `Holds for any values, between its stops.` Undefined for lines. */
-export function sayStanding(table: StateTable, row: number, { of, key }: Subject, places: Conditions['places']): string | undefined {
+export function sayStanding(explanation: Explanation, table: StateTable, { of, key }: Subject, places: Conditions['places']): string | undefined {
   if (of === 'line') return undefined;
-  const list = of === 'actuator' ? table.data.actuators : table.data.pumps;
-  const index = list.findIndex(({ part }) => part === key);
-  if (index < 0) return undefined;
-  const verdict = of === 'actuator' ? table.actuator(index, row) : table.pump(index, row);
-  const left = of === 'actuator' && table.actuatorRests(index, row).length > 0;
-  const rests = left || (restsOnValues(table, row) && !BY_PATHS.has(verdict));
-  const words = rests ? 'Rests on entered and assumed values' : 'Holds for any values';
-  if (of === 'pump' || table.data.actuators[index]?.motion === 'rotary') return `${words}.`;
+  const reason = (of === 'actuator' ? explanation.actuators : explanation.pumps).find(({ part }) => part === key);
+  if (!reason) return undefined;
+  const words = reason.onValues ? 'Rests on entered and assumed values' : 'Holds for any values';
+  const linear = table.data.actuators.some(({ part, motion }) => part === key && motion === 'linear');
+  if (!linear) return `${words}.`;
   const place = places?.[key];
   return `${words}, ${place === undefined ? 'between its stops' : `at its ${place === 'in' ? 'inner' : 'outer'} stop`}.`;
 }

@@ -1,4 +1,3 @@
-import { has } from '../../base/bits.ts';
 import type { Circuit, Part } from '../../circuit/model.ts';
 import { kindOf } from '../../parts/catalogue.ts';
 import { readSetting } from '../../parts/settings.ts';
@@ -90,10 +89,6 @@ function flows(areas: Areas | undefined, speed: number): [number, number] {
   const { a, b } = areas ?? { a: 0, b: 0 };
   return speed > 0 ? [a * speed, b * speed] : [-b * speed, -a * speed];
 }
-
-/** Pressures decided some verdict of the row. */
-export const restsOnValues = (table: StateTable, row: number): boolean =>
-  table.data.valued !== undefined && has(table.data.valued, row);
 
 /** A load on shut-in oil gives a pressure by its own cylinder, load and friction alone; any other comes about by flow and losses. */
 export function lineAssumed(assumed: Assumed, table: StateTable, line: number, row: number): boolean {

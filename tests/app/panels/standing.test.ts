@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { expect, test } from 'vitest';
-import { numbersOf, tabulate } from '../../../src/analysis/analyse.ts';
+import { explainRow, numbersOf, tabulate } from '../../../src/analysis/analyse.ts';
 import { sayFigures, sayStanding } from '../../../src/app/panels/standing.ts';
 import { unlimited } from '../../../src/base/budget.ts';
 import { StateTable } from '../../../src/engine/table/state-table.ts';
@@ -22,12 +22,12 @@ test('of a held load the pressure under it is said, and nothing of what an earli
   // 20 kN less 0.2 kN of friction on 63 mm bore.
   expect(figures(row, 'metric')).toBe('A 64 bar');
   expect(figures(row, 'us')).toBe('A 921 psi');
-  expect(sayStanding(table, row, LIFT, undefined)).toBe('Holds for any values, between its stops.');
+  expect(sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, undefined)).toBe('Holds for any values, between its stops.');
 });
 
 test('of a moving one speed, flow and both sides are said, and that they rest on values', () => {
   const row = table.rowOf([0, 0, 1]);
   // 20 L/min on 63 mm bore: 107 mm/s.
   expect(figures(row, 'metric')).toMatch(/^107 mm\/s, 20 L\/min, A 6\d bar, B /);
-  expect(sayStanding(table, row, LIFT, { LIFT: 'in' })).toBe('Rests on entered and assumed values, at its inner stop.');
+  expect(sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, { LIFT: 'in' })).toBe('Rests on entered and assumed values, at its inner stop.');
 });
