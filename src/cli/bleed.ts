@@ -41,7 +41,14 @@ export function bleed(
     label,
     names[positions[i] ?? 0] ?? '',
   ]);
-  const source = { version, circuit: circuit.name, answer, state: Object.fromEntries(named), assumed };
+  const source = {
+    version,
+    circuit: circuit.name,
+    loadCases: circuit.loadCases ?? [],
+    answer,
+    state: Object.fromEntries(named),
+    assumed,
+  };
   return {
     pieces: format === 'json' ? [writeBleedJson(source)] : writeBleedText(source),
     exit: answer.left.length > 0 ? EXIT.checkFailed : EXIT.done,

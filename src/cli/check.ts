@@ -25,7 +25,13 @@ export function check(
   }
   const checked = checkRules(circuit, { pumps }, given, unlimited);
   if (!checked.ok) throw new Failure(sayProblems(file, checked.problems));
-  const source = { version, circuit: circuit.name, conditions: { pumps }, check: checked.value };
+  const source = {
+    version,
+    circuit: circuit.name,
+    conditions: { pumps },
+    loadCases: circuit.loadCases ?? [],
+    check: checked.value,
+  };
   const allHold = checked.value.rules.every(({ answer }) => answer.outcome === 'holds');
   return {
     pieces: format === 'json' ? [writeCheckJson(source)] : writeCheckText(source),

@@ -26,18 +26,25 @@ blocked, where pressure stays trapped; then the findings. The first valve change
 Options:
   --format text|csv|json|markdown   how it is written (text); csv holds the rows only, without the findings
   --pumps running|stopped           state of all pumps (running); findings are always those with pumps running
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
+  --numbers                         also the speed of each actuator, the pressure of each pump and the flow over each
+                                    relief valve, from entered and assumed values; in json everything that is known
+  --units metric|us                 units of the numbers (metric)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text
 `;
 
 export const EXPLAIN_HELP = `Usage: spooltable explain FILE [--state "V1=a,V2=0"] [OPTIONS]
 
-One state in words, with the way the oil takes.
+One state in words, with the way the oil takes, then pressures, flows over relief valves and power from entered
+and assumed values.
 
 Options:
   --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
                                     rest, and the answer says so; may be given more than once
   --pumps running|stopped           state of all pumps (running)
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
+  --units metric|us                 units of pressures, flows and power (metric); the reasons stay in metric units
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text
@@ -50,6 +57,7 @@ lead there.
 
 Options:
   --pumps running|stopped           state of all pumps (running)
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text

@@ -1,4 +1,6 @@
 import type { BleedAnswer, BleedCaution, BleedLine, BleedStep, LeftLine } from '../analysis/results.ts';
+import type { LoadCase } from '../circuit/model.ts';
+import { sayConditions } from './conditions.ts';
 import { REPORT_VERSION } from './json.ts';
 import { plain } from './width.ts';
 
@@ -6,6 +8,7 @@ export interface BleedSource {
   /** Of this program. */
   readonly version: string;
   readonly circuit: string;
+  readonly loadCases?: readonly LoadCase[];
   readonly answer: BleedAnswer;
   /** Label → position of the start state, and of those that nobody gave and that were taken as they stand at rest. */
   readonly state: Readonly<Record<string, string>>;
@@ -30,9 +33,9 @@ export function* writeBleedText(source: BleedSource): Generator<string> {
   for (const line of bleedLines(source)) yield `${plain(line).trimEnd()}\n`;
 }
 
-function* bleedLines({ circuit, answer, state, assumed }: BleedSource): Generator<string> {
+function* bleedLines({ circuit, loadCases, answer, state, assumed }: BleedSource): Generator<string> {
   yield circuit;
-  yield `Bleed-down from row ${answer.row + 1}: ${pairs(state) || 'nothing to command'}; pumps stopped`;
+  yield `Bleed-down from row ${answer.row + 1}: ${pairs(state) || 'nothing to command'}; ${sayConditions({ pumps: 'stopped' }, loadCases)}`;
   if (Object.keys(assumed).length > 0) yield `Not given, taken at rest: ${pairs(assumed)}`;
   yield '';
   yield* BLEED_BEFORE;

@@ -1,4 +1,6 @@
 import type { Check, CheckedRule, Conditions, RuleCases } from '../analysis/results.ts';
+import type { LoadCase } from '../circuit/model.ts';
+import { sayConditions } from './conditions.ts';
 import { REPORT_VERSION } from './json.ts';
 import { plain } from './width.ts';
 
@@ -8,6 +10,7 @@ export interface CheckSource {
   readonly version: string;
   readonly circuit: string;
   readonly conditions: Conditions;
+  readonly loadCases?: readonly LoadCase[];
   readonly check: Check;
 }
 
@@ -24,10 +27,10 @@ export function* writeCheckText(source: CheckSource): Generator<string> {
   for (const line of lines(source)) yield `${plain(line).trimEnd()}\n`;
 }
 
-function* lines({ circuit, conditions, check }: CheckSource): Generator<string> {
+function* lines({ circuit, conditions, loadCases, check }: CheckSource): Generator<string> {
   const { rules } = check;
   yield circuit;
-  yield `${counted(BigInt(rules.length), 'rule')} checked, pumps ${conditions.pumps}${check.listed ? '' : '; too many combinations to list, so open paths alone have answered'}`;
+  yield `${counted(BigInt(rules.length), 'rule')} checked, ${sayConditions(conditions, loadCases)}${check.listed ? '' : '; too many combinations to list, so open paths alone have answered'}`;
   for (const [i, { text, answer }] of rules.entries()) {
     yield '';
     yield `${i + 1}. ${text}`;
