@@ -147,7 +147,6 @@ function storesOf({ pumps, loads, useful, lost }: RowNumbers['power'], power: (s
 /** Why the row lacks figures, for its notes. */
 export function figureNotes(figures: RowFigures): string[] {
   if (figures.status !== 'solved') return [`no steady numbers: ${figures.words}`];
-  return Object.entries(figures.actuators).flatMap(([label, { speed }]) =>
-    speed === null ? [`${label}: undetermined, so no speed is given`] : [],
-  );
+  const open = Object.entries(figures.actuators).flatMap(([label, { speed }]) => (speed === null ? [label] : []));
+  return open.length === 0 ? [] : [`${open.join(', ')}: undetermined, so no speed is given`];
 }
