@@ -15,7 +15,7 @@ export interface CheckSource {
 }
 
 /** Terms of one answer that the text lists; JSON has them all. */
-const MOST_TERMS = 20;
+export const MOST_TERMS = 20;
 
 /** Wherever rules are answered. */
 export const RULES_CAUTION =
@@ -35,15 +35,14 @@ function* lines({ circuit, conditions, loadCases, check }: CheckSource): Generat
     yield '';
     yield `${i + 1}. ${text}`;
     const all = answer.combinations;
-    if (answer.outcome === 'holds')
-      yield `   Holds in ${all === 1n ? 'the only combination' : `all ${amount(all)} combinations`}.`;
+    if (answer.outcome === 'holds') yield `   ${sayHolds(all)}.`;
     if (answer.broken) {
-      yield `   Broken in ${amount(answer.broken.count)} of ${counted(all, 'combination')}:`;
+      yield `   ${sayBroken(answer.broken, all)}:`;
       yield* caseLines(answer.broken, check);
       if (answer.broken.coilTerms) yield* termLines('   Interlock, in coils: never', answer.broken.coilTerms);
     }
     if (answer.undecided) {
-      yield `   Not decided in ${amount(answer.undecided.count)} of ${counted(all, 'combination')}, where what it speaks of rests on pressure or is undetermined:`;
+      yield `   ${sayUndecided(answer.undecided, all)}:`;
       yield* caseLines(answer.undecided, check);
     }
   }
@@ -55,9 +54,7 @@ function* lines({ circuit, conditions, loadCases, check }: CheckSource): Generat
 function* caseLines(cases: RuleCases, check: Check): Generator<string> {
   yield* termLines('    ', cases.terms);
   const row = rowOf(cases, check);
-  const state = check.inputs
-    .map(({ label, positions }, i) => `${label} ${positions[cases.example[i] ?? 0] ?? ''}`)
-    .join(', ');
+  const state = sayExample(cases, check);
   if (state !== '') yield `   For example ${row === undefined ? '' : `row ${row}: `}${state}`;
 }
 
@@ -72,11 +69,22 @@ function summary(rules: readonly CheckedRule[]): string {
   return `${count('holds')} hold, ${count('broken')} broken, ${count('not decided')} not decided.`;
 }
 
+export const sayHolds = (all: bigint): string =>
+  `Holds in ${all === 1n ? 'the only combination' : `all ${amount(all)} combinations`}`;
+export const sayBroken = ({ count }: RuleCases, all: bigint): string =>
+  `Broken in ${amount(count)} of ${counted(all, 'combination')}`;
+export const sayUndecided = ({ count }: RuleCases, all: bigint): string =>
+  `Not decided in ${amount(count)} of ${counted(all, 'combination')}, where what it speaks of rests on pressure or is undetermined`;
+
+/** `V1 shut, V2 raise`. */
+export const sayExample = ({ example }: RuleCases, { inputs }: Check): string =>
+  inputs.map(({ label, positions }, i) => `${label} ${positions[example[i] ?? 0] ?? ''}`).join(', ');
+
 const amount = (n: bigint): string => n.toLocaleString('en');
 const counted = (n: bigint, what: string): string => `${amount(n)} ${what}${n === 1n ? '' : 's'}`;
 
-/** 1-based, as in the table. */
-function rowOf({ example }: RuleCases, { inputs, listed }: Check): number | undefined {
+/** 1-based, as in the table; undefined where rows have no numbers. */
+export function rowOf({ example }: RuleCases, { inputs, listed }: Check): number | undefined {
   return listed
     ? 1 + inputs.reduce((row, { positions }, i) => row * positions.length + (example[i] ?? 0), 0)
     : undefined;

@@ -1,6 +1,6 @@
 import type { Conditions, TrappedSummary } from '../analysis/results.ts';
 import type { LoadCase } from '../circuit/model.ts';
-import { measureOf } from './bleed.ts';
+import { measureOf } from './bleed-words.ts';
 import { nameOfCase, sayConditions } from './conditions.ts';
 import { REPORT_VERSION } from './json.ts';
 import { TRAPPED_CAUTION } from './rows.ts';
