@@ -40,6 +40,7 @@ export type Command =
       readonly name: 'bleed';
       readonly file: string;
       readonly format: ExplainFormat;
+      readonly load: string | undefined;
       readonly state: readonly string[];
       readonly out: string | undefined;
     }
@@ -48,6 +49,7 @@ export type Command =
       readonly file: string;
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
+      readonly load: string | undefined;
       /** Besides those of the circuit. */
       readonly rules: readonly string[];
       readonly out: string | undefined;
@@ -162,7 +164,7 @@ function bleedCommand(args: string[]): Command {
       args,
       strict: true,
       allowPositionals: true,
-      options: { format, out, help, state: { type: 'string', multiple: true, default: [] } },
+      options: { format, out, help, ...LOAD, state: { type: 'string', multiple: true, default: [] } },
     }),
   );
   if (values.help) return { name: 'say', text: BLEED_HELP };
@@ -170,6 +172,7 @@ function bleedCommand(args: string[]): Command {
     name: 'bleed',
     file: oneFile('bleed', positionals),
     format: oneOf('bleed', '--format', values.format, EXPLAIN_FORMATS),
+    load: loadCase('bleed', values.load),
     state: values.state,
     out: outFile('bleed', values.out),
   };
@@ -181,7 +184,7 @@ function checkCommand(args: string[]): Command {
       args,
       strict: true,
       allowPositionals: true,
-      options: { ...COMMON, rule: { type: 'string', multiple: true, default: [] } },
+      options: { ...COMMON, ...LOAD, rule: { type: 'string', multiple: true, default: [] } },
     }),
   );
   if (values.help) return { name: 'say', text: CHECK_HELP };
@@ -190,6 +193,7 @@ function checkCommand(args: string[]): Command {
     file: oneFile('check', positionals),
     format: oneOf('check', '--format', values.format, EXPLAIN_FORMATS),
     pumps: oneOf('check', '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase('check', values.load),
     rules: values.rule,
     out: outFile('check', values.out),
   };

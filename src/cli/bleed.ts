@@ -6,6 +6,7 @@ import type { StateTable } from '../engine/table/state-table.ts';
 import { writeBleedJson, writeBleedText } from '../report/bleed.ts';
 import { writeTrappedJson, writeTrappedText } from '../report/trapped.ts';
 import type { Command } from './arguments.ts';
+import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure, sayProblems } from './failure.ts';
 import { readState } from './state.ts';
 
@@ -16,7 +17,7 @@ export interface Written {
 }
 
 export function bleed(
-  { file, format, state }: Extract<Command, { name: 'bleed' }>,
+  { file, format, load, state }: Extract<Command, { name: 'bleed' }>,
   circuit: Circuit,
   version: string,
 ): Written {
@@ -36,7 +37,8 @@ export function bleed(
   if (!read.ok) throw new Failure(sayProblems(file, read.problems));
   const { positions, assumed } = read.value;
   const row = positions.reduce((at, position, i) => at * (inputs[i]?.positions.length ?? 1) + position, 0);
-  const answer = bleedPlan(circuit, {}, row);
+  const conditions = conditionsOf({ file, pumps: 'stopped', load }, circuit);
+  const answer = bleedPlan(circuit, conditions, row);
   const named = inputs.map(({ label, positions: names }, i): [string, string] => [
     label,
     names[positions[i] ?? 0] ?? '',
@@ -44,6 +46,7 @@ export function bleed(
   const source = {
     version,
     circuit: circuit.name,
+    conditions,
     loadCases: circuit.loadCases ?? [],
     answer,
     state: Object.fromEntries(named),

@@ -4,13 +4,14 @@ import { unlimited } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { writeCheckJson, writeCheckText } from '../report/check.ts';
 import type { Command } from './arguments.ts';
+import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure, sayProblems } from './failure.ts';
 
 type Check = Extract<Command, { name: 'check' }>;
 
 /** Checks the rules of the circuit, then those of the command line. Exit code 1 unless all hold. */
 export function check(
-  { file, format, pumps, rules }: Check,
+  { file, format, pumps, load, rules }: Check,
   circuit: Circuit,
   version: string,
 ): { readonly pieces: Iterable<string>; readonly exit: number } {
@@ -23,12 +24,13 @@ export function check(
       `${file}: The circuit has no rules, and none is given. Add --rule "never C1 moves while C2 moves", with names of the sheet.`,
     );
   }
-  const checked = checkRules(circuit, { pumps }, given, unlimited);
+  const conditions = conditionsOf({ file, pumps, load }, circuit);
+  const checked = checkRules(circuit, conditions, given, unlimited);
   if (!checked.ok) throw new Failure(sayProblems(file, checked.problems));
   const source = {
     version,
     circuit: circuit.name,
-    conditions: { pumps },
+    conditions,
     loadCases: circuit.loadCases ?? [],
     check: checked.value,
   };

@@ -73,6 +73,7 @@ before this list.
 Options:
   --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
                                     rest, and the answer says so; may be given more than once
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text
@@ -87,6 +88,7 @@ a verdict rests on pressure; 2 when a rule cannot be read.
 Options:
   --rule TEXT               one more rule; may be given more than once
   --pumps running|stopped   state of all pumps (running)
+  --load NAME               a load case of the circuit, by its name or id (the loads that the parts say)
   --format text|json        how it is written (text)
   --out FILE                write there, whole or not at all, instead of to standard output
   --help                    this text

@@ -57,6 +57,9 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
   }
 }
 
+/** Nobody waits at a screen here: rows that the pressure layer may solve, some thousands a second. */
+const PRESSURE_ROWS = 600_000;
+
 const note = (text: string): void => console.error(`spooltable: ${text}`);
 
 type Table = Extract<Command, { name: 'table' }>;
@@ -65,7 +68,7 @@ type Explain = Extract<Command, { name: 'explain' }>;
 function tableOf(file: string, circuit: Circuit, conditions: Conditions): StateTable {
   const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
   try {
-    return new StateTable(tabulate(circuit, conditions, unlimited));
+    return new StateTable(tabulate(circuit, conditions, unlimited, { pressureRows: PRESSURE_ROWS }));
   } catch (error) {
     throw count > MOST_ROWS ? new Failure(`${file}: ${messageOf(error)}`) : error;
   }

@@ -1,5 +1,4 @@
-import type { Conditions } from '../analysis/results.ts';
-import type { BleedAnswer, BleedCaution, BleedLine, BleedStep, LeftLine } from '../analysis/results.ts';
+import type { BleedAnswer, BleedCaution, BleedLine, BleedStep, Conditions, LeftLine } from '../analysis/results.ts';
 import type { LoadCase } from '../circuit/model.ts';
 import {
   BLEED_AFTER,
