@@ -12,6 +12,9 @@ const PANELS: Readonly<Record<string, PanelId>> = {
   w: 'why',
   f: 'findings',
   e: 'settings',
+  o: 'conditions',
+  u: 'rules',
+  b: 'bleed',
   '?': 'keys',
 };
 

@@ -1,7 +1,7 @@
 /** Answers one question after another on its own thread. */
 import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
 import { bleedPlan } from '../analysis/bleed.ts';
-import { checkRules, rulesOf } from '../analysis/check.ts';
+import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -27,6 +27,8 @@ function answer(question: Question): Reply {
       return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row) };
     case 'check':
       return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), unlimited) };
+    case 'read-rule':
+      return { id, say: 'rule-read', problems: ruleProblems(circuit, question.text) };
     case 'bleed':
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
     case 'numbers':

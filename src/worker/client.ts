@@ -3,7 +3,7 @@ import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/r
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
 import { Cancelled } from '../base/budget.ts';
-import type { Result } from '../base/result.ts';
+import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { Question, Reply } from './messages.ts';
@@ -11,7 +11,7 @@ import type { Question, Reply } from './messages.ts';
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
 export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
-export type { Check, CheckedRule, RuleAnswer } from '../analysis/check-results.ts';
+export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
@@ -45,6 +45,8 @@ export interface Analyst {
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
   /** The circuit's rules against every combination. */
   check(circuit: Circuit, conditions: Conditions): Job<Result<Check>>;
+  /** What keeps a rule's text from being read; empty = it can be checked. */
+  readRule(circuit: Circuit, text: string): Job<readonly Problem[]>;
   /** How to let the pressure down once the pumps stop in this row (0-based). */
   bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
   close(): void;
@@ -71,6 +73,10 @@ export function createAnalyst(): Analyst {
       ),
     check: (circuit, conditions) =>
       long.ask({ ask: 'check', circuit, conditions }, () => {}, (reply) => (reply.say === 'check' ? reply.result : undefined)),
+    readRule: (circuit, text) =>
+      words.ask({ ask: 'read-rule', circuit, conditions: { pumps: 'running' }, text }, () => {}, (reply) =>
+        reply.say === 'rule-read' ? reply.problems : undefined,
+      ),
     bleed: (circuit, conditions, row) =>
       long.ask({ ask: 'bleed', circuit, conditions, row }, () => {}, (reply) => (reply.say === 'bleed' ? reply.plan : undefined)),
     close: () => {

@@ -1,7 +1,7 @@
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
-import type { Result } from '../base/result.ts';
+import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 
@@ -9,6 +9,7 @@ export type Question =
   | { readonly id: number; readonly ask: 'table'; readonly circuit: Circuit; readonly conditions: Conditions }
   | { readonly id: number; readonly ask: 'numbers'; readonly circuit: Circuit; readonly conditions: Conditions; readonly rows: readonly number[] }
   | { readonly id: number; readonly ask: 'check'; readonly circuit: Circuit; readonly conditions: Conditions }
+  | { readonly id: number; readonly ask: 'read-rule'; readonly circuit: Circuit; readonly conditions: Conditions; readonly text: string }
   | { readonly id: number; readonly ask: 'bleed'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number }
   | { readonly id: number; readonly ask: 'explain'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number };
 
@@ -18,6 +19,7 @@ export type Reply =
   | { readonly id: number; readonly say: 'table'; readonly early: boolean; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
+  | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }
   | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };

@@ -35,6 +35,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['Ctrl O', 'Open'],
     ['F6', 'Next band or panel; with Shift, the one before'],
     ['W L F E', 'Why, lines, findings, settings'],
+    ['O U B', 'Conditions, rules, bleed-down'],
     ['?', 'This panel'],
     ['Esc', 'Close the panel in hand'],
   ),

@@ -14,6 +14,8 @@ import type { ConnectionLook } from './connection-looks.ts';
 import { editor } from './editor.svelte.ts';
 import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
+import { conditionsIn, withCase, withPlace } from './conditions.ts';
+import { sayError } from './said.ts';
 import type { CircuitInput } from './inputs.ts';
 import { view } from './view.svelte.ts';
 
@@ -46,7 +48,8 @@ const DARK: Lit = { lines: [], parts: [], steps: [] };
 
 /** The state on show: conditions, the whole table, the current row, and why it is so. */
 class Session {
-  conditions = $state.raw<Conditions>({ pumps: 'running' });
+  #conditions = $state.raw<Conditions>({ pumps: 'running' });
+  #conditionsNow: Conditions = $derived(conditionsIn(editor.circuit, this.#conditions));
   /** The last answer, with the circuit it was computed for. */
   answer = $state.raw<(TableAnswer & { readonly circuit: Circuit; readonly conditions: Conditions }) | undefined>();
   /** Share of the running computation, 0 to 1; undefined = nothing runs. */
@@ -64,6 +67,8 @@ class Session {
   step = $state<number | undefined>();
   /** Finding whose parts and lines are lit. */
   finding = $state<number | undefined>();
+  /** What a line of another panel speaks of, while it is under the pointer or has the focus. */
+  pointed = $state.raw<Pick<Lit, 'lines' | 'parts'> | undefined>();
 
   /** Part id → where its lever stands; survives edits, so a redrawn circuit keeps its state. */
   #levers = $state.raw<Readonly<Record<string, number>>>({});
@@ -131,6 +136,15 @@ class Session {
     this.#levers = levers;
   }
 
+  /** What holds for every row; a load case that is no longer there counts as none. */
+  get conditions(): Conditions {
+    return this.#conditionsNow;
+  }
+
+  set conditions(conditions: Conditions) {
+    this.#conditions = conditions;
+  }
+
   /** Undefined while the connection is in no line of the table yet. */
   connectionLook(connectionId: string): ConnectionLook | undefined {
     return this.#looks.get(connectionId);
@@ -142,9 +156,12 @@ class Session {
 
   /** `between` its stops, or at one. */
   setPlace(partId: string, place: 'between' | 'in' | 'out'): void {
-    const { [partId]: _, ...others } = this.conditions.places ?? {};
-    const places = place === 'between' ? others : { ...others, [partId]: place };
-    this.conditions = { pumps: this.conditions.pumps, places };
+    this.conditions = withPlace(this.conditions, partId, place);
+  }
+
+  /** Undefined = the loads as drawn. */
+  setLoadCase(id: string | undefined): void {
+    if (id !== this.conditions.loadCase) this.conditions = withCase(this.conditions, id);
   }
 
   /** Show the reason of a verdict of the current row, in its panel and on the sheet. */
@@ -247,6 +264,8 @@ class Session {
   }
 
   #light(): Lit {
+    const { pointed } = this;
+    if (pointed) return { ...pointed, steps: [] };
     const found = this.finding === undefined ? undefined : this.findings[this.finding];
     if (found) return { lines: found.lines, parts: found.parts, steps: [] };
     const { steps, step } = this;
@@ -263,7 +282,5 @@ class Session {
 }
 
 const clampTo = (index: number, length: number): number => Math.min(Math.max(index, 0), Math.max(length - 1, 0));
-
-const sayError = (error: unknown): string => (error instanceof Error ? error.message : String(error));
 
 export const session = new Session();

@@ -2,7 +2,7 @@ import type { UnitSystem } from '../../base/units.ts';
 import { recall, remember } from './remembered.ts';
 
 export type ThemeChoice = 'system' | 'light' | 'dark';
-export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions';
+export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions' | 'rules' | 'bleed';
 export type Page = 'sheet' | 'table';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -31,6 +31,8 @@ class View {
     settings: false,
     keys: false,
     conditions: false,
+    rules: false,
+    bleed: false,
   });
 
   /** Panels from the lowest to the one on top. */
