@@ -7,6 +7,8 @@ const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'void forms': 'void forms',
   'free outward': 'free A→B',
   'free inward': 'free B→A',
+  'creeps outward on back pressure': 'creeps A→B on back pressure',
+  'creeps inward on back pressure': 'creeps B→A on back pressure',
 };
 
 /** A note as people read it; one that the table does not know stays as it is. */

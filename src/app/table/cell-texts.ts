@@ -63,6 +63,8 @@ const LINEAR: Readonly<Record<ActuatorNote, string>> = {
   'void forms': 'void forms',
   'free outward': 'free outward',
   'free inward': 'free inward',
+  'creeps outward on back pressure': 'creeps outward on back pressure',
+  'creeps inward on back pressure': 'creeps inward on back pressure',
 };
 const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'outward by suction only': 'held A→B by suction only',
@@ -70,6 +72,8 @@ const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'void forms': 'void forms',
   'free outward': 'free A→B',
   'free inward': 'free B→A',
+  'creeps outward on back pressure': 'creeps A→B on back pressure',
+  'creeps inward on back pressure': 'creeps B→A on back pressure',
 };
 
 /** A motor knows no in and out. */

@@ -4,7 +4,7 @@ import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import { actuatorByPressure, movesOverValve, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
+import { actuatorByPressure, creeps, movesOverValve, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
 import type { RowNumbers } from './resolve.ts';
 
 /** The pressure layer's part of an explanation: its verdicts in place of the open ones, and the figures behind them. */
@@ -29,7 +29,12 @@ export function explainPressures(state: OneState): PressureWords {
     if (!spec || hunts) return said;
     if (numbers.status !== 'solved') return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
-    if (!said.rests && !moves) return said;
+    if (!said.rests && !moves) {
+      const way = said.verdict === 'floats' || said.verdict === 'held one way' ? creeps(index, answer) : undefined;
+      if (way === undefined) return said;
+      const note = way === 'out' ? 'creeps outward on back pressure' : 'creeps inward on back pressure';
+      return { ...said, notes: [...said.notes, note], steps: [...said.steps, figures(state, index, spec, numbers, said.verdict)] };
+    }
     const { unfed } = actuatorOutcome(index, spec, state.block, state.conditions);
     const found = actuatorByPressure(index, solver, bits, answer, unfed);
     if (!found) return said;

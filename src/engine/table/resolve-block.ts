@@ -3,7 +3,7 @@ import { Cancelled } from '../../base/budget.ts';
 import type { SettledBlock } from '../paths/block.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { ActuatorOutcome } from './actuator-outcomes.ts';
-import { actuatorByPressure, movesOverValve, pumpByPressure } from './resolve.ts';
+import { actuatorByPressure, creeps, movesOverValve, pumpByPressure } from './resolve.ts';
 import type { PressureAnswer, PressureSolver } from './resolve.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, PUMP_VERDICTS } from './words.ts';
 
@@ -11,6 +11,10 @@ const RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
 const PUMP_RESTS = PUMP_VERDICTS.indexOf('rests on pressure');
 const PUMP_WORKS = PUMP_VERDICTS.indexOf('working');
 const RIVALS = REST_REASONS.indexOf('rivals');
+const FLOATS = ACTUATOR_VERDICTS.indexOf('floats');
+const ONE_WAY = ACTUATOR_VERDICTS.indexOf('held one way');
+const CREEPS_OUT = ACTUATOR_NOTES.indexOf('creeps outward on back pressure');
+const CREEPS_IN = ACTUATOR_NOTES.indexOf('creeps inward on back pressure');
 const VOID = ACTUATOR_NOTES.indexOf('void forms');
 
 /** How many rows the pressure layer may still solve, shared by all blocks of a table. */
@@ -61,7 +65,15 @@ export function resolveBlock(
       let changed = rests & low;
       actuators.forEach((outcome, i) => {
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
-        if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) return;
+        if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) {
+          const free = ((outcome.verdicts[FLOATS]?.[w] as number) | (outcome.verdicts[ONE_WAY]?.[w] as number)) & low;
+          const way = free === 0 ? undefined : creeps(i, answer);
+          if (way === undefined) return;
+          const note = outcome.notes[way === 'out' ? CREEPS_OUT : CREEPS_IN] as Uint32Array;
+          note[w] = (note[w] as number) | low;
+          changed |= low;
+          return;
+        }
         const found = actuatorByPressure(i, solver, bits, answer, outcome.unfed);
         if (!found) return;
         changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low);

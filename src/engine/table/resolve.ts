@@ -162,6 +162,13 @@ function equalRivals(solver: PressureSolver, bits: BlockBits, result: Solved, sw
   return found.length > 1 ? found : [];
 }
 
+/** An actuator that open paths leave free, and that the back pressure of a flow to tank moves all the same (p·Ar, law). */
+export function creeps(index: number, { result }: PressureAnswer): 'out' | 'in' | undefined {
+  const state = result.status === 'solved' ? result.actuators[index] : undefined;
+  if (!state || Math.max(Math.abs(state.flowIn), Math.abs(state.flowOut)) <= MOTION) return undefined;
+  return state.speed > 0 ? 'out' : 'in';
+}
+
 /** True if something moves over a valve that pressures open, which open paths do not know of. */
 export function movesOverValve(bits: BlockBits, { result }: PressureAnswer): boolean {
   if (result.status !== 'solved') return false;

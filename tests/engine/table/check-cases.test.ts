@@ -6,10 +6,10 @@ import { Asked } from '../../table-of.ts';
 const PATHS_ALONE = { pressureRows: 0 };
 
 /** Fixed pump, relief, one cylinder, one valve: the rig that most textbooks draw first. */
-const rig = (valve: string, pump = 'fixed-pump'): Asked =>
+const rig = (valve: string, pump = 'fixed-pump', cylinder = ''): Asked =>
   new Asked(
     circuit(
-      `P1 ${pump}, R1 relief-valve, V1 directional-valve:${valve}, C1 cylinder, T1 tank | P: P1.P R1.P V1.P | A: V1.A C1.A | B: V1.B C1.B | T: V1.T R1.T T1.T P1.S`,
+      `P1 ${pump}, R1 relief-valve, V1 directional-valve:${valve}, C1 cylinder${cylinder}, T1 tank | P: P1.P R1.P V1.P | A: V1.A C1.A | B: V1.B C1.B | T: V1.T R1.T T1.T P1.S`,
     ),
   );
 
@@ -55,6 +55,10 @@ describe('centre conditions (common practice; published training sheets)', () =>
     const t = rig('valve-4/3-joined');
     expect([t.actuator('C1', 'V1=0'), t.pump('V1=0')]).toEqual(['floats', 'unloaded']);
     expect(t.line('A', 'V1=0')).toBe('flows to tank');
+    // Both sides stand at what the way to tank takes away: p·Ar beats the friction (law).
+    expect(t.notes('C1', 'V1=0')).toEqual([]);
+    const easy = rig('valve-4/3-joined', 'fixed-pump', '{friction=0.01 kN}');
+    expect([easy.actuator('C1', 'V1=0'), easy.notes('C1', 'V1=0')]).toEqual(['floats', ['creeps outward on back pressure']]);
   });
 
   test('compensated pump destrokes over a closed centre (US Army FM 5-499, from memory)', () => {
