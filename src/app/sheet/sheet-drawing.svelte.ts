@@ -41,7 +41,7 @@ class SheetDrawing {
   routes: Routes = $derived(this.#layer.of(this.circuit, this.preview !== undefined));
 
   /** Of the circuit that the figures belong to. */
-  assumed: Assumed = $derived(assumedIn(session.answer?.circuit ?? editor.circuit));
+  assumed: Assumed = $derived(assumedIn(session.tabled));
 
   states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit, this.assumed));
 

@@ -14,7 +14,7 @@ import type { ConnectionLook } from './connection-looks.ts';
 import { editor } from './editor.svelte.ts';
 import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
-import { conditionsIn, withCase, withPlace } from './conditions.ts';
+import { conditionsIn, loaded, withCase, withPlace } from './conditions.ts';
 import { sayError } from './said.ts';
 import type { CircuitInput } from './inputs.ts';
 import { view } from './view.svelte.ts';
@@ -76,6 +76,8 @@ class Session {
   /** Commanded inputs of the circuit as drawn now, in circuit order (needs no table). */
   inputs: readonly CircuitInput[] = $derived(inputsOf(editor.circuit));
   table: StateTable | undefined = $derived(this.answer?.table);
+  /** The circuit of the table on show, with the loads that it was computed for. */
+  tabled: Circuit = $derived(this.answer ? loaded(this.answer.circuit, this.answer.conditions) : editor.circuit);
   findings = $derived(this.answer?.findings ?? []);
   /** True while the table on show belongs to an earlier form of the circuit. */
   stale = $derived(
