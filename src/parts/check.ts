@@ -180,10 +180,45 @@ function checkConnections(circuit: Circuit): CircuitProblem[] {
   });
 }
 
+/** Loads of cases: parts that are gone are a warning, since deleting a part does not ask its load cases. */
+function checkLoadCases(circuit: Circuit): CircuitProblem[] {
+  const parts = new Map(circuit.parts.map((part) => [part.id, part]));
+  return (circuit.loadCases ?? []).flatMap((entry, index) =>
+    Object.entries(entry.loads).flatMap(([id, loads]): CircuitProblem[] => {
+      const where = `loadCases[${index}].loads.${id}`;
+      const part = parts.get(id);
+      const kind = part && kindOf(part.kind);
+      if (!part) {
+        return [
+          {
+            level: 'warning',
+            parts: [],
+            where,
+            what: `Load case "${entry.name}" loads ${id}, but there is no such part.`,
+            remedy: 'Delete this load, or give it the id of an actuator.',
+          },
+        ];
+      }
+      if (!kind) return [];
+      const loaded = { ...part, settings: { ...part.settings, ...loads } };
+      const known = new Set(checkSettings(part, kind.settings).map((problem) => problem.what));
+      return [...checkSettings(loaded, kind.settings), ...(kind.check?.(loaded) ?? [])]
+        .filter((problem) => !known.has(problem.what))
+        .map((problem) => ({
+          level: problem.level ?? 'error',
+          parts: [id],
+          where: `${where}.${problem.where.replace(/^settings\./, '')}`,
+          what: `Load case "${entry.name}", ${labelOf(part)}: ${problem.what}`,
+          remedy: problem.remedy,
+        }));
+    }),
+  );
+}
+
 /**
  * Everything wrong with the parts and connections of a circuit, in file order: unknown kinds, settings
  * that cannot be used, valve data, labels and connections that end nowhere. Never throws.
  */
 export function checkParts(circuit: Circuit): CircuitProblem[] {
-  return [...circuit.parts.flatMap(checkPart), ...checkLabels(circuit), ...checkConnections(circuit)];
+  return [...circuit.parts.flatMap(checkPart), ...checkLabels(circuit), ...checkConnections(circuit), ...checkLoadCases(circuit)];
 }

@@ -119,3 +119,12 @@ test('labels and ids are unique, and a label does not take the id of another par
   expect(only(circuit([PUMP, { ...TANK, label: 'P1' }]))).toMatchObject({ where: 'parts[1].label' });
   expect(only(circuit([PUMP, PUMP]))).toMatchObject({ where: 'parts[1].id' });
 });
+
+test('load cases: a part that is gone is a warning, a load that cannot be read an error with its place', () => {
+  const base = { name: 'x', parts: [{ id: 'C1', kind: 'cylinder' }], connections: [] };
+  const problems = (loads: Record<string, Record<string, string>>) =>
+    checkParts({ ...base, loadCases: [{ id: 'full', name: 'Full', loads }] }).map(({ level, where }) => [level, where]);
+  expect(problems({ C9: { load: '3 kN' } })).toEqual([['warning', 'loadCases[0].loads.C9']]);
+  expect(problems({ C1: { load: '3 bar', loadSense: 'pushes in' } })).toEqual([['error', 'loadCases[0].loads.C1.load']]);
+  expect(problems({ C1: { load: '3 kN', loadSense: 'pushes in' } })).toEqual([]);
+});
