@@ -3,7 +3,15 @@ import type { Circuit, Connection, Part } from '../src/circuit/model.ts';
 import { CATALOGUE } from '../src/parts/catalogue.ts';
 import type { PartKind } from '../src/parts/contract.ts';
 
-const PLENTY = ['directional-valve', 'cylinder', 'directional-valve', 'check-valve', 'throttle', 'lock-check', 'directional-valve'];
+const PLENTY = [
+  'directional-valve',
+  'cylinder',
+  'directional-valve',
+  'check-valve',
+  'throttle',
+  'lock-check',
+  'directional-valve',
+];
 
 /**
  * Circuits joined at random: nobody would build most of them, which is the point. Every kind of the
@@ -12,7 +20,10 @@ const PLENTY = ['directional-valve', 'cylinder', 'directional-valve', 'check-val
 export function randomCircuit(mostInputs = 4, mostParts = 12): fc.Arbitrary<Circuit> {
   return fc
     .tuple(
-      fc.array(fc.tuple(fc.nat({ max: CATALOGUE.length + PLENTY.length - 1 }), fc.nat()), { minLength: 3, maxLength: mostParts }),
+      fc.array(fc.tuple(fc.nat({ max: CATALOGUE.length + PLENTY.length - 1 }), fc.nat()), {
+        minLength: 3,
+        maxLength: mostParts,
+      }),
       fc.array(fc.tuple(fc.nat(), fc.nat()), { minLength: 4, maxLength: 2 * mostParts }),
     )
     .map(([picks, pairs]) => {
@@ -27,7 +38,11 @@ export function randomCircuit(mostInputs = 4, mostParts = 12): fc.Arbitrary<Circ
         }
         parts.push(part);
       });
-      const ports = parts.flatMap((part) => kindNamed(part.kind).ports(part).map((port) => ({ part: part.id, port: port.id })));
+      const ports = parts.flatMap((part) =>
+        kindNamed(part.kind)
+          .ports(part)
+          .map((port) => ({ part: part.id, port: port.id })),
+      );
       const connections: Connection[] = [];
       pairs.forEach(([a, b], i) => {
         const from = ports[a % ports.length];

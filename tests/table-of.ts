@@ -14,7 +14,11 @@ export class Asked {
   readonly conditions: Conditions;
 
   /** `pressureRows` 0: what open paths say by themselves. */
-  constructor(circuit: Circuit, conditions: Conditions = { pumps: 'running' }, options: TableOptions = { pressureRows: 20_000 }) {
+  constructor(
+    circuit: Circuit,
+    conditions: Conditions = { pumps: 'running' },
+    options: TableOptions = { pressureRows: 20_000 },
+  ) {
     this.circuit = circuit;
     this.conditions = conditions;
     this.table = new StateTable(tabulate(circuit, conditions, unlimited, options));

@@ -26,7 +26,12 @@ export function networkOf(circuit: Circuit, conditions?: Pick<Conditions, 'loadC
 }
 
 /** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */
-export function tabulate(circuit: Circuit, conditions: Conditions, budget: Budget, options: TableOptions = { pressureRows: MOST_SOLVED }): TableData {
+export function tabulate(
+  circuit: Circuit,
+  conditions: Conditions,
+  budget: Budget,
+  options: TableOptions = { pressureRows: MOST_SOLVED },
+): TableData {
   const net = networkOf(circuit, conditions);
   refuseTooMany(net);
   return tabulateNetwork(net, pathConditions(net, conditions), budget, options);

@@ -23,12 +23,56 @@ export type PathPen = 'fed' | 'flows-to-tank' | 'vented' | 'cut-off' | 'displace
 export type Fill = 'none' | 'ink' | 'paper' | 'idle' | 'active' | PathPen;
 
 export type Primitive =
-  | { readonly type: 'polyline'; readonly points: readonly Point[]; readonly pen: Pen; readonly closed?: boolean; readonly fill?: Fill }
-  | { readonly type: 'circle'; readonly centre: Point; readonly radius: number; readonly pen: Pen; readonly fill?: Fill }
+  | {
+      readonly type: 'polyline';
+      readonly points: readonly Point[];
+      readonly pen: Pen;
+      readonly closed?: boolean;
+      readonly fill?: Fill;
+    }
+  | {
+      readonly type: 'circle';
+      readonly centre: Point;
+      readonly radius: number;
+      readonly pen: Pen;
+      readonly fill?: Fill;
+    }
   /** Arc from `from` to `to` about `centre`, clockwise on the sheet. */
-  | { readonly type: 'arc'; readonly from: Point; readonly to: Point; readonly radius: number; readonly large?: boolean; readonly clockwise?: boolean; readonly pen: Pen }
-  | { readonly type: 'box'; readonly x: number; readonly y: number; readonly width: number; readonly height: number; readonly pen: Pen; readonly fill?: Fill; readonly corner?: number }
+  | {
+      readonly type: 'arc';
+      readonly from: Point;
+      readonly to: Point;
+      readonly radius: number;
+      readonly large?: boolean;
+      readonly clockwise?: boolean;
+      readonly pen: Pen;
+    }
+  | {
+      readonly type: 'box';
+      readonly x: number;
+      readonly y: number;
+      readonly width: number;
+      readonly height: number;
+      readonly pen: Pen;
+      readonly fill?: Fill;
+      readonly corner?: number;
+    }
   /** Text is never turned with its part; `size` in modules. */
-  | { readonly type: 'text'; readonly at: Point; readonly text: string; readonly size: number; readonly align: 'start' | 'middle' | 'end'; readonly weight?: 400 | 500 | 600; readonly tone?: 'ink' | 'second' | 'mute' | 'accent' }
+  | {
+      readonly type: 'text';
+      readonly at: Point;
+      readonly text: string;
+      readonly size: number;
+      readonly align: 'start' | 'middle' | 'end';
+      readonly weight?: 400 | 500 | 600;
+      readonly tone?: 'ink' | 'second' | 'mute' | 'accent';
+    }
   /** A group that moves as one when a valve is shifted; `role` is for the view's motion and marks. */
-  | { readonly type: 'group'; readonly role: 'strip' | 'box' | 'operator' | 'piston'; readonly index?: number; readonly shift: Point; readonly clip?: { readonly x: number; readonly y: number; readonly width: number; readonly height: number }; readonly children: readonly Primitive[] };
+  | {
+      readonly type: 'group';
+      readonly role: 'strip' | 'box' | 'operator' | 'piston';
+      readonly index?: number;
+      readonly shift: Point;
+      readonly clip?: { readonly x: number; readonly y: number; readonly width: number; readonly height: number };
+      readonly children: readonly Primitive[];
+    };

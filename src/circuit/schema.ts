@@ -95,7 +95,10 @@ const rule = z.looseObject({
     .string()
     .min(1, say('The rule is empty.', 'Write a rule, such as "never C1 moves while C2 moves", or leave it out.'))
     .max(LIMITS.rule, say(`This rule is longer than ${LIMITS.rule} characters.`, 'Say it in several rules.'))
-    .regex(ONE_LINE, say('This rule holds a control character.', 'Remove tabs, line breaks and other control characters.')),
+    .regex(
+      ONE_LINE,
+      say('This rule holds a control character.', 'Remove tabs, line breaks and other control characters.'),
+    ),
 });
 
 const loadCase = z.looseObject({

@@ -1,5 +1,15 @@
 import type { Point } from '../base/points.ts';
-import { sayPort, type Circuit, type Connection, type Extra, type Label, type LoadCase, type Part, type RuleText, type ValveData } from './model.ts';
+import {
+  sayPort,
+  type Circuit,
+  type Connection,
+  type Extra,
+  type Label,
+  type LoadCase,
+  type Part,
+  type RuleText,
+  type ValveData,
+} from './model.ts';
 import { FORMAT, VERSION } from './schema.ts';
 
 type Fields = Record<string, unknown>;
@@ -26,7 +36,8 @@ export function writeCircuit(circuit: Circuit): string {
     circuit.extra,
   );
   const lines = Object.entries(fields).map(([key, value]) => {
-    const isList = key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules' || key === 'loadCases';
+    const isList =
+      key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules' || key === 'loadCases';
     return `  ${JSON.stringify(key)}: ${isList ? broken(value as unknown[], 2) : pretty(value, 2, key.length + 4)}`;
   });
   return `{\n${lines.join(',\n')}\n}\n`;

@@ -153,7 +153,8 @@ function linesOf(part: Part, { note, figure }: PartWords): LabelText[][] {
     const tone = valve ? 'accent' : 'ink';
     first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone, ...(hasGlyph(part) && { glyph: true }) });
   }
-  if (figure) first.push({ text: figure.text, size: TEXT_SIZES.label, weight: 600, tone: 'ink', assumed: figure.assumed });
+  if (figure)
+    first.push({ text: figure.text, size: TEXT_SIZES.label, weight: 600, tone: 'ink', assumed: figure.assumed });
   if (first.length > 0) lines.push(first);
   if (part.code) lines.push([{ text: part.code, size: TEXT_SIZES.code, weight: 400, tone: 'mute' }]);
   return lines;

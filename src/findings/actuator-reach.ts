@@ -15,9 +15,25 @@ export const actuatorReach: Rule = ({ net, table }) =>
     const base = { rule: 'actuator-reach', parts: part ? [part.id] : [], lines: [], rows: [], rowCount: 0 };
     const [goes, back] = actuator.rotary ? ['turn A→B', 'turn B→A'] : ['extend', 'retract'];
     if (!out && !inward) {
-      return [{ ...base, level: 'caution', title: `Nothing moves ${label}`, what: `No combination makes it ${goes} or ${back}.`, remedy: 'Check its lines, and that a valve can both feed it and let it out.' }];
+      return [
+        {
+          ...base,
+          level: 'caution',
+          title: `Nothing moves ${label}`,
+          what: `No combination makes it ${goes} or ${back}.`,
+          remedy: 'Check its lines, and that a valve can both feed it and let it out.',
+        },
+      ];
     }
     if (actuator.rotary || floats) return [];
     const [can, cannot] = out ? [goes, back] : [back, goes];
-    return [{ ...base, level: 'caution', title: `${label} can ${can} but not ${cannot}`, what: `Some combination makes it ${can}; none makes it ${cannot}, and it floats in none.`, remedy: 'Give the other side a feed, or a spring or load that brings it back over a path to tank.' }];
+    return [
+      {
+        ...base,
+        level: 'caution',
+        title: `${label} can ${can} but not ${cannot}`,
+        what: `Some combination makes it ${can}; none makes it ${cannot}, and it floats in none.`,
+        remedy: 'Give the other side a feed, or a spring or load that brings it back over a path to tank.',
+      },
+    ];
   });

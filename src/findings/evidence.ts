@@ -6,13 +6,22 @@ import type { ActuatorVerdict, LineClass, PumpVerdict } from '../engine/table/wo
 import { SHOWN_ROWS } from './finding.ts';
 
 export const actuatorRows = (table: StateTable, actuator: number, ...verdicts: ActuatorVerdict[]): BitSet =>
-  merge(table, verdicts.map((verdict) => table.data.actuatorPlanes[actuator]?.[ACTUATOR_VERDICTS.indexOf(verdict)]));
+  merge(
+    table,
+    verdicts.map((verdict) => table.data.actuatorPlanes[actuator]?.[ACTUATOR_VERDICTS.indexOf(verdict)]),
+  );
 
 export const pumpRows = (table: StateTable, pump: number, ...verdicts: PumpVerdict[]): BitSet =>
-  merge(table, verdicts.map((verdict) => table.data.pumpPlanes[pump]?.[PUMP_VERDICTS.indexOf(verdict)]));
+  merge(
+    table,
+    verdicts.map((verdict) => table.data.pumpPlanes[pump]?.[PUMP_VERDICTS.indexOf(verdict)]),
+  );
 
 export const lineRows = (table: StateTable, line: number, ...classes: LineClass[]): BitSet =>
-  merge(table, classes.map((name) => table.data.linePlanes[line]?.[LINE_CLASSES.indexOf(name)]));
+  merge(
+    table,
+    classes.map((name) => table.data.linePlanes[line]?.[LINE_CLASSES.indexOf(name)]),
+  );
 
 function merge(table: StateTable, planes: readonly (BitSet | undefined)[]): BitSet {
   const all = emptySet(table.count);
@@ -38,5 +47,17 @@ export function sayRows({ rows, rowCount }: { rows: readonly number[]; rowCount:
 }
 
 /** The motions that count as driven or moved, both ways. */
-export const OUTWARD: readonly ActuatorVerdict[] = ['extends', 'turns A→B', 'moved out by load', 'moved out by spring', 'driven A→B by load'];
-export const INWARD: readonly ActuatorVerdict[] = ['retracts', 'turns B→A', 'moved in by load', 'moved in by spring', 'driven B→A by load'];
+export const OUTWARD: readonly ActuatorVerdict[] = [
+  'extends',
+  'turns A→B',
+  'moved out by load',
+  'moved out by spring',
+  'driven A→B by load',
+];
+export const INWARD: readonly ActuatorVerdict[] = [
+  'retracts',
+  'turns B→A',
+  'moved in by load',
+  'moved in by spring',
+  'driven B→A by load',
+];

@@ -14,7 +14,8 @@ export const idleValveUnloads: Rule = ({ net, table }) => {
       const positions = [...rest];
       positions[i] = p;
       const row = table.rowOf(positions);
-      if (nothingDriven(table, row) && unloaded(table, row) && drivenTogether(table, net.inputs, rest, i, p)) alone.push(row);
+      if (nothingDriven(table, row) && unloaded(table, row) && drivenTogether(table, net.inputs, rest, i, p))
+        alone.push(row);
     }
     return alone.length > 0 ? [{ input, rows: alone }] : [];
   });
@@ -29,7 +30,8 @@ export const idleValveUnloads: Rule = ({ net, table }) => {
       level: 'caution',
       title: 'A valve at rest unloads the others',
       what: `${parts.map((part) => part.label).join(', ')}: shifted alone (${sayRows(seen)}), nothing moves, because the flow leaves freely through the ones at rest. They work only when shifted together.`,
-      remedy: 'Usual ways out: connect them in series, use carry-over sections, or closed centres with one valve that unloads the pump.',
+      remedy:
+        'Usual ways out: connect them in series, use carry-over sections, or closed centres with one valve that unloads the pump.',
       parts: parts.map((part) => part.id),
       lines: [],
       ...seen,
@@ -46,7 +48,13 @@ const unloaded = (table: StateTable, row: number): boolean =>
   table.data.pumps.length > 0 && table.data.pumps.every((_, i) => table.pump(i, row) === 'unloaded');
 
 /** With every other sprung valve shifted too, in some way, this position does drive something. */
-function drivenTogether(table: StateTable, inputs: readonly { positions: readonly string[]; rest?: number }[], rest: readonly number[], input: number, position: number): boolean {
+function drivenTogether(
+  table: StateTable,
+  inputs: readonly { positions: readonly string[]; rest?: number }[],
+  rest: readonly number[],
+  input: number,
+  position: number,
+): boolean {
   for (const end of ['first', 'last'] as const) {
     const positions = inputs.map((entry, i) => {
       if (i === input) return position;

@@ -19,7 +19,8 @@ export const loadNotHeld: Rule = ({ net, table }) => {
         level: 'danger',
         title: `Nothing holds the load of ${part?.label ?? ''} at rest`,
         what: `With every lever at rest (row ${rest + 1}) it is ${table.actuator(i, rest)}.`,
-        remedy: 'Usual remedy: a lock check or counterbalance valve on the loaded side, close to the cylinder. Prop the load mechanically before working under it.',
+        remedy:
+          'Usual remedy: a lock check or counterbalance valve on the loaded side, close to the cylinder. Prop the load mechanically before working under it.',
         parts: part ? [part.id] : [],
         lines: [],
         ...witnesses(rows),

@@ -220,5 +220,10 @@ function checkLoadCases(circuit: Circuit): CircuitProblem[] {
  * that cannot be used, valve data, labels and connections that end nowhere. Never throws.
  */
 export function checkParts(circuit: Circuit): CircuitProblem[] {
-  return [...circuit.parts.flatMap(checkPart), ...checkLabels(circuit), ...checkConnections(circuit), ...checkLoadCases(circuit)];
+  return [
+    ...circuit.parts.flatMap(checkPart),
+    ...checkLabels(circuit),
+    ...checkConnections(circuit),
+    ...checkLoadCases(circuit),
+  ];
 }

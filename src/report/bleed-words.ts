@@ -30,13 +30,17 @@ export function sayKeep({ springsTo, keptUntil }: BleedStep): string | undefined
 
 /** Undefined: the move lets nothing down. */
 export const sayVents = ({ vents }: BleedStep): string | undefined =>
-  vents.length > 0 ? `Wait until down: ${vents.map((line) => `${line.name} (${measureOf(line)})`).join('; ')}` : undefined;
+  vents.length > 0
+    ? `Wait until down: ${vents.map((line) => `${line.name} (${measureOf(line)})`).join('; ')}`
+    : undefined;
 
 export const sayHeld = (held: readonly BleedLine[]): string =>
   `Still under pressure: ${held.map(({ name }) => name).join(', ') || 'none'}`;
 
 /** Lines that stay under pressure, by why they do; a group is left out if it has none. */
-export function leftGroups(left: readonly LeftLine[]): { readonly head: string; readonly lines: readonly LeftLine[] }[] {
+export function leftGroups(
+  left: readonly LeftLine[],
+): { readonly head: string; readonly lines: readonly LeftLine[] }[] {
   const groups = [
     {
       head: 'No lever position opens these to tank; they stay under pressure:',

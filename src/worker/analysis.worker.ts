@@ -8,13 +8,20 @@ import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { Question, Reply } from './messages.ts';
 
-const scope = self as unknown as { postMessage(reply: Reply): void; onmessage: ((event: MessageEvent<Question>) => void) | null };
+const scope = self as unknown as {
+  postMessage(reply: Reply): void;
+  onmessage: ((event: MessageEvent<Question>) => void) | null;
+};
 
 scope.onmessage = ({ data: question }) => {
   try {
     scope.postMessage(answer(question));
   } catch (error) {
-    scope.postMessage({ id: question.id, say: 'failed', message: error instanceof Error ? error.message : String(error) });
+    scope.postMessage({
+      id: question.id,
+      say: 'failed',
+      message: error instanceof Error ? error.message : String(error),
+    });
   }
 };
 
@@ -51,7 +58,8 @@ function answerTable(id: number, circuit: Circuit, conditions: Conditions): Repl
   const reply = (pressureRows: number): Reply => {
     const options = { pressureRows };
     const data = tabulate(circuit, conditions, budget, options);
-    const running = conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
+    const running =
+      conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
     const faults = findings(circuit, new StateTable(running), conditions);
     return { id, say: 'table', early: pressureRows === 0, data, findings: faults, took: performance.now() - began };
   };

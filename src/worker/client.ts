@@ -59,26 +59,44 @@ export function createAnalyst(): Analyst {
   const long = new Thread();
   return {
     table: (circuit, conditions, progress, early = () => {}) =>
-      tables.ask({ ask: 'table', circuit, conditions }, (reply) => {
-        if (reply.say === 'progress') progress(reply.share);
-        else if (reply.say === 'table') early(tableOf(reply));
-      }, (reply) => (reply.say === 'table' ? tableOf(reply) : undefined)),
+      tables.ask(
+        { ask: 'table', circuit, conditions },
+        (reply) => {
+          if (reply.say === 'progress') progress(reply.share);
+          else if (reply.say === 'table') early(tableOf(reply));
+        },
+        (reply) => (reply.say === 'table' ? tableOf(reply) : undefined),
+      ),
     explain: (circuit, conditions, row) =>
-      words.ask({ ask: 'explain', circuit, conditions, row }, () => {}, (reply) =>
-        reply.say === 'explanation' ? reply.explanation : undefined,
+      words.ask(
+        { ask: 'explain', circuit, conditions, row },
+        () => {},
+        (reply) => (reply.say === 'explanation' ? reply.explanation : undefined),
       ),
     numbers: (circuit, conditions, rows) =>
-      words.ask({ ask: 'numbers', circuit, conditions, rows }, () => {}, (reply) =>
-        reply.say === 'numbers' ? reply.numbers : undefined,
+      words.ask(
+        { ask: 'numbers', circuit, conditions, rows },
+        () => {},
+        (reply) => (reply.say === 'numbers' ? reply.numbers : undefined),
       ),
     check: (circuit, conditions) =>
-      long.ask({ ask: 'check', circuit, conditions }, () => {}, (reply) => (reply.say === 'check' ? reply.result : undefined)),
+      long.ask(
+        { ask: 'check', circuit, conditions },
+        () => {},
+        (reply) => (reply.say === 'check' ? reply.result : undefined),
+      ),
     readRule: (circuit, text) =>
-      words.ask({ ask: 'read-rule', circuit, conditions: { pumps: 'running' }, text }, () => {}, (reply) =>
-        reply.say === 'rule-read' ? reply.problems : undefined,
+      words.ask(
+        { ask: 'read-rule', circuit, conditions: { pumps: 'running' }, text },
+        () => {},
+        (reply) => (reply.say === 'rule-read' ? reply.problems : undefined),
       ),
     bleed: (circuit, conditions, row) =>
-      long.ask({ ask: 'bleed', circuit, conditions, row }, () => {}, (reply) => (reply.say === 'bleed' ? reply.plan : undefined)),
+      long.ask(
+        { ask: 'bleed', circuit, conditions, row },
+        () => {},
+        (reply) => (reply.say === 'bleed' ? reply.plan : undefined),
+      ),
     close: () => {
       tables.stop();
       long.stop();
@@ -119,7 +137,10 @@ class Thread {
         this.#pending.delete(id);
         const value = read(reply);
         if (value !== undefined) resolve(value);
-        else reject(new Error(reply.say === 'failed' ? reply.message : 'The analysis gave an answer to another question.'));
+        else
+          reject(
+            new Error(reply.say === 'failed' ? reply.message : 'The analysis gave an answer to another question.'),
+          );
       };
       this.#pending.set(id, { question, settle, refuse: reject });
     });
@@ -144,7 +165,8 @@ class Thread {
     const worker = new Worker(new URL('./analysis.worker.ts', import.meta.url), { type: 'module' });
     worker.onmessage = ({ data }: MessageEvent<Reply>) => this.#pending.get(data.id)?.settle(data);
     worker.onerror = (event) => {
-      for (const { refuse } of this.#pending.values()) refuse(new Error(event.message || 'The analysis stopped unexpectedly.'));
+      for (const { refuse } of this.#pending.values())
+        refuse(new Error(event.message || 'The analysis stopped unexpectedly.'));
       this.#pending.clear();
       this.#worker = undefined;
     };

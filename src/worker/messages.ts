@@ -7,16 +7,47 @@ import type { TableData } from '../engine/table/table-data.ts';
 
 export type Question =
   | { readonly id: number; readonly ask: 'table'; readonly circuit: Circuit; readonly conditions: Conditions }
-  | { readonly id: number; readonly ask: 'numbers'; readonly circuit: Circuit; readonly conditions: Conditions; readonly rows: readonly number[] }
+  | {
+      readonly id: number;
+      readonly ask: 'numbers';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly rows: readonly number[];
+    }
   | { readonly id: number; readonly ask: 'check'; readonly circuit: Circuit; readonly conditions: Conditions }
-  | { readonly id: number; readonly ask: 'read-rule'; readonly circuit: Circuit; readonly conditions: Conditions; readonly text: string }
-  | { readonly id: number; readonly ask: 'bleed'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number }
-  | { readonly id: number; readonly ask: 'explain'; readonly circuit: Circuit; readonly conditions: Conditions; readonly row: number };
+  | {
+      readonly id: number;
+      readonly ask: 'read-rule';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly text: string;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'bleed';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly row: number;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'explain';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly row: number;
+    };
 
 export type Reply =
   | { readonly id: number; readonly say: 'progress'; readonly share: number }
   /** `early`: what open paths say; the pressures follow in a second reply. */
-  | { readonly id: number; readonly say: 'table'; readonly early: boolean; readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number }
+  | {
+      readonly id: number;
+      readonly say: 'table';
+      readonly early: boolean;
+      readonly data: TableData;
+      readonly findings: readonly Finding[];
+      readonly took: number;
+    }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
   | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }

@@ -5,7 +5,14 @@ import { circuit } from '../notation.ts';
 export type Family = 'BANK' | 'SERIES' | 'SIXWAY' | 'MIX';
 export const FAMILIES: readonly Family[] = ['BANK', 'SERIES', 'SIXWAY', 'MIX'];
 
-const MIXED = ['valve-4/3-shut', 'valve-4/3-bypass', 'valve-4/3-float', 'valve-4/3-joined', 'valve-4/3-regenerative', 'valve-4/3-b-t'];
+const MIXED = [
+  'valve-4/3-shut',
+  'valve-4/3-bypass',
+  'valve-4/3-float',
+  'valve-4/3-joined',
+  'valve-4/3-regenerative',
+  'valve-4/3-b-t',
+];
 
 export function family(name: Family, valves: number): Circuit {
   const numbers = Array.from({ length: valves }, (_, i) => i + 1);
@@ -18,7 +25,11 @@ export function family(name: Family, valves: number): Circuit {
   const parts = numbers.map((i) => `V${i} directional-valve:${form(i)}, C${i} cylinder`).join(', ');
   const chambers = numbers.map((i) => `V${i}.A C${i}.A | V${i}.B C${i}.B`).join(' | ');
   const all = (port: string): string => numbers.map((i) => `V${i}.${port}`).join(' ');
-  const chain = (from: string, to: string): string => numbers.slice(1).map((i) => `V${i - 1}.${from} V${i}.${to}`).join(' | ');
+  const chain = (from: string, to: string): string =>
+    numbers
+      .slice(1)
+      .map((i) => `V${i - 1}.${from} V${i}.${to}`)
+      .join(' | ');
   const lines = {
     BANK: `P1.P R1.P ${all('P')} | ${all('T')} R1.T T1.T P1.S`,
     SERIES: `P1.P R1.P V1.P | ${chain('T', 'P')} | V${valves}.T R1.T T1.T P1.S`,
@@ -26,7 +37,9 @@ export function family(name: Family, valves: number): Circuit {
     // Half of them in parallel, half in series behind a throttle.
     MIX: mixLines(valves),
   }[name];
-  return circuit(`P1 fixed-pump, R1 relief-valve, T1 tank, Q1 throttle, ${parts} | ${chambers} | ${lines.replaceAll('| |', '|')}`);
+  return circuit(
+    `P1 fixed-pump, R1 relief-valve, T1 tank, Q1 throttle, ${parts} | ${chambers} | ${lines.replaceAll('| |', '|')}`,
+  );
 }
 
 function mixLines(valves: number): string {
@@ -36,6 +49,8 @@ function mixLines(valves: number): string {
   const series = second.slice(1).map((i) => `V${i - 1}.T V${i}.P`);
   return [
     `P1.P R1.P Q1.A ${first.map((i) => `V${i}.P`).join(' ')}`,
-    ...(second.length > 0 ? [`Q1.B V${half + 1}.P`, ...series, `V${valves}.T ${first.map((i) => `V${i}.T`).join(' ')} R1.T T1.T P1.S`] : [`${first.map((i) => `V${i}.T`).join(' ')} R1.T T1.T P1.S`]),
+    ...(second.length > 0
+      ? [`Q1.B V${half + 1}.P`, ...series, `V${valves}.T ${first.map((i) => `V${i}.T`).join(' ')} R1.T T1.T P1.S`]
+      : [`${first.map((i) => `V${i}.T`).join(' ')} R1.T T1.T P1.S`]),
   ].join(' | ');
 }

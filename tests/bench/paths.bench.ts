@@ -41,7 +41,15 @@ const round = (n: number): string => Number(n.toPrecision(3)).toLocaleString('en
 
 function keptBytes(data: TableData): number {
   const buffers = new Set<ArrayBufferLike>();
-  for (const list of [data.actuatorPlanes, data.actuatorNotes, data.actuatorRests, data.pumpPlanes, data.linePlanes, data.blockedPlanes, data.trapPlanes]) {
+  for (const list of [
+    data.actuatorPlanes,
+    data.actuatorNotes,
+    data.actuatorRests,
+    data.pumpPlanes,
+    data.linePlanes,
+    data.blockedPlanes,
+    data.trapPlanes,
+  ]) {
     for (const row of list) for (const plane of row) if (plane) buffers.add(plane.buffer);
   }
   return [...buffers].reduce((sum, buffer) => sum + buffer.byteLength, 0);

@@ -1,6 +1,16 @@
 import fc from 'fast-check';
 import type { Point } from '../../src/base/points.ts';
-import type { Circuit, Connection, Extra, Label, Part, PortRef, LoadCase, RuleText, ValveData } from '../../src/circuit/model.ts';
+import type {
+  Circuit,
+  Connection,
+  Extra,
+  Label,
+  Part,
+  PortRef,
+  LoadCase,
+  RuleText,
+  ValveData,
+} from '../../src/circuit/model.ts';
 import { KNOWN } from '../../src/circuit/schema.ts';
 
 const RESERVED = /"(__proto__|constructor|prototype)":/;
@@ -130,7 +140,14 @@ const rule: fc.Arbitrary<RuleText> = fc.record(
 );
 
 const loadCase: fc.Arbitrary<LoadCase> = fc.record(
-  { id, name: words, loads: fc.dictionary(id, fc.dictionary(fc.constantFrom('load', 'loadSense'), words, { noNullPrototype: true }), { noNullPrototype: true }), extra: unknownFields(KNOWN.loadCase) },
+  {
+    id,
+    name: words,
+    loads: fc.dictionary(id, fc.dictionary(fc.constantFrom('load', 'loadSense'), words, { noNullPrototype: true }), {
+      noNullPrototype: true,
+    }),
+    extra: unknownFields(KNOWN.loadCase),
+  },
   { requiredKeys: ['id', 'name', 'loads'], noNullPrototype: true },
 );
 

@@ -10,7 +10,9 @@ import { Asked } from '../table-of.ts';
 
 const FOLDER = new URL('../../examples/', import.meta.url);
 const ENDING = '.spool.json';
-const names = readdirSync(FOLDER).filter((file) => file.endsWith(ENDING)).map((file) => file.slice(0, -ENDING.length));
+const names = readdirSync(FOLDER)
+  .filter((file) => file.endsWith(ENDING))
+  .map((file) => file.slice(0, -ENDING.length));
 const read = (file: string): string => readFileSync(new URL(file, FOLDER), 'utf8');
 
 function open(name: string): Circuit {
@@ -38,22 +40,31 @@ describe.each(names)('%s', (name) => {
 
 test('no expected table stands without its circuit, and there are enough examples', () => {
   const tables = readdirSync(FOLDER).filter((file) => file.endsWith('.csv'));
-  for (const file of tables) expect(existsSync(new URL(file.replace(/\.(running|stopped)\.csv$/, ENDING), FOLDER)), file).toBe(true);
+  for (const file of tables)
+    expect(existsSync(new URL(file.replace(/\.(running|stopped)\.csv$/, ENDING), FOLDER)), file).toBe(true);
   expect(tables.length).toBe(2 * names.length);
   expect(names.length).toBeGreaterThanOrEqual(7);
 });
 
 /** Worked out on paper from what each lever is for, not from the program. */
 describe('worked by hand', () => {
-  const rows = (name: string, pumps: Conditions['pumps'] = 'running'): { t: Asked; states: Record<string, string>[] } => {
+  const rows = (
+    name: string,
+    pumps: Conditions['pumps'] = 'running',
+  ): { t: Asked; states: Record<string, string>[] } => {
     const t = new Asked(open(name), { pumps });
     const { inputs } = t.table.data;
     const states = Array.from({ length: t.table.count }, (_, row) =>
-      Object.fromEntries(t.table.positionsOf(row).map((p, i) => [inputs[i]?.label ?? '', inputs[i]?.positions[p] ?? ''])),
+      Object.fromEntries(
+        t.table.positionsOf(row).map((p, i) => [inputs[i]?.label ?? '', inputs[i]?.positions[p] ?? '']),
+      ),
     );
     return { t, states };
   };
-  const say = (state: Record<string, string>): string => Object.entries(state).map(([k, v]) => `${k}=${v}`).join(', ');
+  const say = (state: Record<string, string>): string =>
+    Object.entries(state)
+      .map(([k, v]) => `${k}=${v}`)
+      .join(', ');
 
   test('log deck: the clamp has its own pump; lift and feed share the other one in series', () => {
     const { t, states } = rows('log-deck');
@@ -67,7 +78,13 @@ describe('worked by hand', () => {
       expect(t.pump(at, 'PUMP1')).toBe(s.V1 === 'hold' ? 'over relief' : 'working');
       expect(t.pump(at, 'PUMP2')).toBe(s.V2 === 'hold' && s.V3 === 'stop' ? 'unloaded' : 'working');
       expect(t.line('carry', at)).toBe(
-        s.V2 === 'hold' ? (s.V3 === 'stop' ? 'flows to tank' : 'fed') : s.V3 === 'stop' ? 'vented' : 'carries displaced oil',
+        s.V2 === 'hold'
+          ? s.V3 === 'stop'
+            ? 'flows to tank'
+            : 'fed'
+          : s.V3 === 'stop'
+            ? 'vented'
+            : 'carries displaced oil',
       );
     }
   });
@@ -83,8 +100,12 @@ describe('worked by hand', () => {
       // Nothing holds the mast's load back in its section: with a lighter one shifted too, it sinks.
       const mast = { hold: 'held', raise: tilt ? 'moved in by load' : 'extends', lower: 'retracts' }[s.V1 ?? ''];
       expect(t.actuator('MAST', at), at).toBe(mast);
-      expect(t.actuator('TILT', at), at).toBe(!tilt ? 'held' : s.V1 === 'lower' ? 'stalled' : s.V2 === 'out' ? 'extends' : 'retracts');
-      expect(t.actuator('SLEW', at), at).toBe(!slew ? 'held' : s.V1 !== 'hold' || tilt ? 'stalled' : s.V3 === 'left' ? 'turns A→B' : 'turns B→A');
+      expect(t.actuator('TILT', at), at).toBe(
+        !tilt ? 'held' : s.V1 === 'lower' ? 'stalled' : s.V2 === 'out' ? 'extends' : 'retracts',
+      );
+      expect(t.actuator('SLEW', at), at).toBe(
+        !slew ? 'held' : s.V1 !== 'hold' || tilt ? 'stalled' : s.V3 === 'left' ? 'turns A→B' : 'turns B→A',
+      );
       expect(t.pump(at), at).toBe(s.V1 === 'hold' && !tilt && !slew ? 'unloaded' : 'working');
       // Lowered by its load, the mast runs ahead of the pump.
       if (s.V1 === 'lower') expect(t.notes('MAST', at)).toContain('void forms');
@@ -94,8 +115,15 @@ describe('worked by hand', () => {
   test('infeed in series: backwards, the two loads add up to more than the relief valve allows', () => {
     // STOP down: 20 kN / 21 cm² = 95 bar on the cap side of KICK, so back needs (2 kN + 95 bar · 12.6 cm²) / 6.4 cm² = 217 bar, and the relief opens at 160.
     const { t } = rows('infeed-series');
-    expect([t.actuator('KICK', 'V1=back, V2=down'), t.actuator('STOP', 'V1=back, V2=down'), t.pump('V1=back, V2=down')]).toEqual(['stalled', 'stalled', 'over relief']);
-    expect([t.actuator('KICK', 'V1=kick, V2=up'), t.actuator('STOP', 'V1=kick, V2=up')]).toEqual(['extends', 'extends']);
+    expect([
+      t.actuator('KICK', 'V1=back, V2=down'),
+      t.actuator('STOP', 'V1=back, V2=down'),
+      t.pump('V1=back, V2=down'),
+    ]).toEqual(['stalled', 'stalled', 'over relief']);
+    expect([t.actuator('KICK', 'V1=kick, V2=up'), t.actuator('STOP', 'V1=kick, V2=up')]).toEqual([
+      'extends',
+      'extends',
+    ]);
   });
 
   test('net winch: the drum turns freely at rest unless the shut-off is shut', () => {
@@ -103,7 +131,11 @@ describe('worked by hand', () => {
     for (const s of states) {
       const at = say(s);
       const open = s.BRAKE === 'open';
-      const expected = { haul: open ? 'turns A→B' : 'held', free: open ? 'floats' : 'held', 'pay out': open ? 'turns B→A' : 'held' }[s.V1 ?? ''];
+      const expected = {
+        haul: open ? 'turns A→B' : 'held',
+        free: open ? 'floats' : 'held',
+        'pay out': open ? 'turns B→A' : 'held',
+      }[s.V1 ?? ''];
       expect(t.actuator('DRUM', at), at).toBe(expected);
       expect(t.pump(at), at).toBe(s.V1 === 'free' ? 'unloaded' : open ? 'working' : 'over relief');
     }

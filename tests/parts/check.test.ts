@@ -125,6 +125,9 @@ test('load cases: a part that is gone is a warning, a load that cannot be read a
   const problems = (loads: Record<string, Record<string, string>>) =>
     checkParts({ ...base, loadCases: [{ id: 'full', name: 'Full', loads }] }).map(({ level, where }) => [level, where]);
   expect(problems({ C9: { load: '3 kN' } })).toEqual([['warning', 'loadCases[0].loads.C9']]);
-  expect(problems({ C1: { load: '3 bar', loadSense: 'pushes in' } })).toContainEqual(['error', 'loadCases[0].loads.C1.load']);
+  expect(problems({ C1: { load: '3 bar', loadSense: 'pushes in' } })).toContainEqual([
+    'error',
+    'loadCases[0].loads.C1.load',
+  ]);
   expect(problems({ C1: { load: '3 kN', loadSense: 'pushes in' } })).toEqual([]);
 });

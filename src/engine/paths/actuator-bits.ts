@@ -10,4 +10,5 @@ export const loadAgainst =
     resisting || push.way === 'both' || (push.by === 'load' && push.way === sense) ? -1 : 0;
 
 /** All ones if a load or spring pushes it this way also at rest. */
-export const pushes = ({ push }: NetActuator, way: 'in' | 'out'): number => (push.way === way || push.way === 'both' ? -1 : 0);
+export const pushes = ({ push }: NetActuator, way: 'in' | 'out'): number =>
+  push.way === way || push.way === 'both' ? -1 : 0;

@@ -36,7 +36,9 @@ export function driveByDisplaced(
     });
     for (const line of fresh) touched[line] = 1;
     s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: fresh, touched });
-    moved = net.actuators.flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) ? [i] : [])).filter(drive);
+    moved = net.actuators
+      .flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) ? [i] : []))
+      .filter(drive);
     touched.fill(0);
   }
   markRings();
@@ -81,7 +83,12 @@ export function driveByDisplaced(
         const bits = ring[w] as number;
         if (bits === 0) continue;
         const under = word(r.underPressure, a, w, width) | (b < 0 ? 0 : word(r.underPressure, b, w, width));
-        set(m.rests[i] as readonly Uint32Array[], 'upstream', w, bits & under & ~(m.out[i]?.[w] as number) & ~(m.in[i]?.[w] as number));
+        set(
+          m.rests[i] as readonly Uint32Array[],
+          'upstream',
+          w,
+          bits & under & ~(m.out[i]?.[w] as number) & ~(m.in[i]?.[w] as number),
+        );
       }
     });
   }
@@ -131,7 +138,8 @@ export function driveByDisplaced(
       inward[w] = (inward[w] as number) | goIn;
       displaced[w] = (displaced[w] as number) | now;
       const bleeds =
-        (goOut & word(r.toTank, actuator.a, w, width)) | (goIn & (actuator.b < 0 ? 0 : word(r.toTank, actuator.b, w, width)));
+        (goOut & word(r.toTank, actuator.a, w, width)) |
+        (goIn & (actuator.b < 0 ? 0 : word(r.toTank, actuator.b, w, width)));
       const loaded = (goOut & against('in')) | (goIn & against('out'));
       set(rest, 'upstream', w, now & (doubtful[w] as number));
       set(rest, 'load', w, loaded);

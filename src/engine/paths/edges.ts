@@ -82,14 +82,28 @@ export function compileEdges(net: Network): EdgeSet {
   const turn = (edge: Edge): Edge => ({ ...edge, from: edge.to, to: edge.from });
   const reversed = edges.map(turn);
   const lines = net.lines.length;
-  const reliefs = net.reliefs.flatMap(({ to }, relief) => (net.lines[to]?.tank ? [] : [relief])).map((relief, i) => ({ relief, mask: masks.length + pilots.length + i }));
+  const reliefs = net.reliefs
+    .flatMap(({ to }, relief) => (net.lines[to]?.tank ? [] : [relief]))
+    .map((relief, i) => ({ relief, mask: masks.length + pilots.length + i }));
   const afterReliefs = masks.length + pilots.length + reliefs.length;
   const loaded = net.actuators.some(({ push }) => push.way !== 'none');
   const loadPilots = loaded ? pilots.map(({ line }, i) => ({ line, mask: afterReliefs + i })) : [];
   const valves = [
-    ...loadPilots.map(({ mask }, i): Edge => ({ from: pilotEdges[i]?.from ?? 0, to: pilotEdges[i]?.to ?? 0, mask, free: false })),
-    ...net.valves.filter((valve) => valve.duty !== 'closes').map(({ from, to }): Edge => ({ from, to, mask: 0, free: false })),
-    ...reliefs.map(({ relief, mask }): Edge => ({ from: net.reliefs[relief]?.from ?? 0, to: net.reliefs[relief]?.to ?? 0, mask, free: false })),
+    ...loadPilots.map(({ mask }, i): Edge => ({
+      from: pilotEdges[i]?.from ?? 0,
+      to: pilotEdges[i]?.to ?? 0,
+      mask,
+      free: false,
+    })),
+    ...net.valves
+      .filter((valve) => valve.duty !== 'closes')
+      .map(({ from, to }): Edge => ({ from, to, mask: 0, free: false })),
+    ...reliefs.map(({ relief, mask }): Edge => ({
+      from: net.reliefs[relief]?.from ?? 0,
+      to: net.reliefs[relief]?.to ?? 0,
+      mask,
+      free: false,
+    })),
   ];
   const forward = adjacency(lines, edges);
   const backward = adjacency(lines, reversed);
@@ -101,8 +115,14 @@ export function compileEdges(net: Network): EdgeSet {
     loadPilots,
     forward,
     backward,
-    freeForward: adjacency(lines, edges.filter((edge) => edge.free)),
-    freeBackward: adjacency(lines, reversed.filter((edge) => edge.free)),
+    freeForward: adjacency(
+      lines,
+      edges.filter((edge) => edge.free),
+    ),
+    freeBackward: adjacency(
+      lines,
+      reversed.filter((edge) => edge.free),
+    ),
     valveForward: valves.length === 0 ? forward : adjacency(lines, [...edges, ...valves]),
     valveBackward: valves.length === 0 ? backward : adjacency(lines, [...reversed, ...valves.map(turn)]),
   };

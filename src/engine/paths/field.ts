@@ -161,7 +161,12 @@ export interface SpreadOptions {
  * Lines by their distance from `starts`, whatever is open. A search that begins in this order meets
  * most lines after all that can reach them, and seldom has to come back.
  */
-export function orderFrom(starts: readonly number[], lines: number, edges: Adjacency, links: readonly (readonly Link[])[]): Int32Array {
+export function orderFrom(
+  starts: readonly number[],
+  lines: number,
+  edges: Adjacency,
+  links: readonly (readonly Link[])[],
+): Int32Array {
   const seen = new Uint8Array(lines);
   const order: number[] = [];
   const visit = (line: number): void => {

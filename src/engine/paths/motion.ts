@@ -60,10 +60,23 @@ export function findMotion(
       const stuckOut = a & ~exitB & ~regenerative & ~balanced & notOut;
       const stuckIn = b & ~exitA & ~balanced & notIn & ~goOut;
       set(rest, 'load', w, ((goOut | stuckOut) & against('in')) | ((goIn | stuckIn) & against('out')));
-      set(rest, 'bleed', w, (goOut & tankA) | (goIn & tankB) | (stuckOut & tankA & (ch.fillB[w] as number)) | (stuckIn & tankB & (ch.fillA[w] as number)));
+      set(
+        rest,
+        'bleed',
+        w,
+        (goOut & tankA) |
+          (goIn & tankB) |
+          (stuckOut & tankA & (ch.fillB[w] as number)) |
+          (stuckIn & tankB & (ch.fillA[w] as number)),
+      );
       set(rest, 'two feeds', w, a & b & ~regenerative & ~balanced & (exitA | exitB | (equal & (loopBA | loopAB))));
       set(rest, 'pressure valve', w, (stuckOut & ~b & reliefB) | (stuckIn & ~a & reliefA));
-      set(rest, 'pressed line', w, (stuckOut & ~b & (ch.softExitB[w] as number)) | (stuckIn & ~a & (ch.softExitA[w] as number)));
+      set(
+        rest,
+        'pressed line',
+        w,
+        (stuckOut & ~b & (ch.softExitB[w] as number)) | (stuckIn & ~a & (ch.softExitA[w] as number)),
+      );
       if (r.valves) {
         const line = (field: Field, at: number): number => (at < 0 ? 0 : word(field, at, w, width));
         const { exits, pressed } = r.valves;
@@ -71,10 +84,14 @@ export function findMotion(
         const wayOutA = line(exits, actuator.a);
         // Fed, let out, bled or let go only over a valve that pressures open.
         const viaValve =
-          (a & ~goOut & wayOutB & notOut) | (b & ~goIn & wayOutA & notIn) |
-          (line(pressed, actuator.a) & ~a & (wayOutB | (loopBA & ~equal)) & notOut) | (line(pressed, actuator.b) & ~b & wayOutA & notIn) |
-          (goOut & wayOutA) | (goIn & line(exits, actuator.b)) |
-          (pushes(actuator, 'in') & ~exitA & wayOutA & notIn) | (pushes(actuator, 'out') & ~exitB & wayOutB & notOut);
+          (a & ~goOut & wayOutB & notOut) |
+          (b & ~goIn & wayOutA & notIn) |
+          (line(pressed, actuator.a) & ~a & (wayOutB | (loopBA & ~equal)) & notOut) |
+          (line(pressed, actuator.b) & ~b & wayOutA & notIn) |
+          (goOut & wayOutA) |
+          (goIn & line(exits, actuator.b)) |
+          (pushes(actuator, 'in') & ~exitA & wayOutA & notIn) |
+          (pushes(actuator, 'out') & ~exitB & wayOutB & notOut);
         set(rest, 'pressure valve', w, viaValve & ~balanced);
       }
       (out[i] as Uint32Array)[w] = goOut;
@@ -84,7 +101,15 @@ export function findMotion(
 
   markRivals(net, r, out, inward, rests, width);
 
-  const pushed = driveByDisplaced(net, edges, conditions, r, s, { chambers, out, in: inward, displaced, fedA, fedB, rests });
+  const pushed = driveByDisplaced(net, edges, conditions, r, s, {
+    chambers,
+    out,
+    in: inward,
+    displaced,
+    fedA,
+    fedB,
+    rests,
+  });
   return { chambers, out, in: inward, displaced, fedA, fedB, rests, pushed };
 }
 

@@ -95,7 +95,14 @@ export function sourceLines(net: Network, conditions: PathConditions): number[] 
   ];
 }
 
-export function reach(net: Network, edges: EdgeSet, links: Links, conditions: PathConditions, orders: Orders, s: Spreader): Reach {
+export function reach(
+  net: Network,
+  edges: EdgeSet,
+  links: Links,
+  conditions: PathConditions,
+  orders: Orders,
+  s: Spreader,
+): Reach {
   const sources = sourceLines(net, conditions);
   const tanks = tankLines(net);
   const { fromSources, fromTanks, backFromTanks } = orders;

@@ -22,15 +22,30 @@ const ATMOSPHERE = 101_325;
  * undetermined, moving, at stop, stalled, held, held one way, floats. Where open paths leave it to
  * loads, rivals or settings the verdict is `rests on pressure`.
  */
-export function actuatorOutcome(index: number, actuator: NetActuator, block: SettledBlock, conditions: PathConditions): ActuatorOutcome {
+export function actuatorOutcome(
+  index: number,
+  actuator: NetActuator,
+  block: SettledBlock,
+  conditions: PathConditions,
+): ActuatorOutcome {
   const { width, motion, all, hunts } = block;
   const verdicts = ACTUATOR_VERDICTS.map(() => new Uint32Array(width));
   const notes = ACTUATOR_NOTES.map(() => new Uint32Array(width));
-  const planeOf = (verdict: ActuatorVerdict): Uint32Array => verdicts[ACTUATOR_VERDICTS.indexOf(verdict)] as Uint32Array;
+  const planeOf = (verdict: ActuatorVerdict): Uint32Array =>
+    verdicts[ACTUATOR_VERDICTS.indexOf(verdict)] as Uint32Array;
   const noteOf = (name: ActuatorNote): Uint32Array => notes[ACTUATOR_NOTES.indexOf(name)] as Uint32Array;
   const words = motionWords(actuator);
-  const [goesOut, goesIn, pushedOut, pushedIn] = [planeOf(words.out), planeOf(words.in), planeOf(words.pushedOut), planeOf(words.pushedIn)];
-  const [undetermined, restsOnPressure, atStop] = [planeOf('undetermined'), planeOf('rests on pressure'), planeOf('at stop')];
+  const [goesOut, goesIn, pushedOut, pushedIn] = [
+    planeOf(words.out),
+    planeOf(words.in),
+    planeOf(words.pushedOut),
+    planeOf(words.pushedIn),
+  ];
+  const [undetermined, restsOnPressure, atStop] = [
+    planeOf('undetermined'),
+    planeOf('rests on pressure'),
+    planeOf('at stop'),
+  ];
   const [held, heldOneWay, floats] = [planeOf('held'), planeOf('held one way'), planeOf('floats')];
   const [suctionOut, suctionIn] = [noteOf('outward by suction only'), noteOf('inward by suction only')];
   const [voidForms, freeOutward, freeInward] = [noteOf('void forms'), noteOf('free outward'), noteOf('free inward')];
@@ -101,7 +116,11 @@ export function actuatorOutcome(index: number, actuator: NetActuator, block: Set
     const backA = source[actuator.a * width + w] as number;
     const backB = actuator.b < 0 ? 0 : (source[actuator.b * width + w] as number);
     decide(restsOnPressure, w, (movesIn & backA) | (movesOut & backB));
-    decide(restsOnPressure, w, (opposed & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB));
+    decide(
+      restsOnPressure,
+      w,
+      (opposed & (freeOut | freeIn)) | (movesOut & ~tankB & ~loopBA) | (movesIn & ~tankA & ~loopAB),
+    );
     voidForms[w] = (decide(pushedOut, w, movesOut) & ~freeOut) | (decide(pushedIn, w, movesIn) & ~freeIn);
 
     const both = decide(held, w, ~freeOut & ~freeIn);

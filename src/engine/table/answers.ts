@@ -28,4 +28,3 @@ export interface TrapAnswer {
   readonly reasons: readonly { readonly kind: TrapReason; readonly text: string }[];
   readonly steps: readonly Step[];
 }
-

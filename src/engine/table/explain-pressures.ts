@@ -27,13 +27,18 @@ export function explainPressures(state: OneState): PressureWords {
   const actuator = (index: number, said: ActuatorAnswer): ActuatorAnswer => {
     const spec = state.net.actuators[index];
     if (!spec || hunts) return said;
-    if (numbers.status !== 'solved') return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
+    if (numbers.status !== 'solved')
+      return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
     if (!said.rests && !moves) {
       const way = said.verdict === 'floats' || said.verdict === 'held one way' ? creeps(index, answer) : undefined;
       if (way === undefined) return said;
       const note = way === 'out' ? 'creeps outward on back pressure' : 'creeps inward on back pressure';
-      return { ...said, notes: [...said.notes, note], steps: [...said.steps, figures(state, index, spec, numbers, said.verdict)] };
+      return {
+        ...said,
+        notes: [...said.notes, note],
+        steps: [...said.steps, figures(state, index, spec, numbers, said.verdict)],
+      };
     }
     const { unfed } = actuatorOutcome(index, spec, state.block, state.conditions);
     const found = actuatorByPressure(index, solver, bits, answer, unfed);
@@ -41,9 +46,18 @@ export function explainPressures(state: OneState): PressureWords {
     const { rests, ...rest } = said;
     const notes = found.void && !said.notes.includes('void forms') ? [...said.notes, 'void forms'] : said.notes;
     const why = rests ? [step(rests.why)] : [];
-    const against = found.verdict.includes('by load') || found.verdict.includes('by spring') ? [overcome(state, spec, said.part)] : [];
+    const against =
+      found.verdict.includes('by load') || found.verdict.includes('by spring')
+        ? [overcome(state, spec, said.part)]
+        : [];
     const onValues = rests !== undefined || found.verdict !== said.verdict;
-    return { ...rest, onValues, verdict: found.verdict, notes, steps: [...said.steps, ...why, ...against, figures(state, index, spec, numbers, found.verdict)] };
+    return {
+      ...rest,
+      onValues,
+      verdict: found.verdict,
+      notes,
+      steps: [...said.steps, ...why, ...against, figures(state, index, spec, numbers, found.verdict)],
+    };
   };
 
   const pump = (index: number, said: PumpAnswer): PumpAnswer => {
@@ -77,7 +91,11 @@ function figures(state: OneState, index: number, actuator: NetActuator, numbers:
         ? standing(state, index, actuator, numbers)
         : `${litres(at?.flow ?? 0)}, ${actuator.rotary ? `${round((speed * 60) / (2 * Math.PI))} rpm` : `${round(speed * 1000)} mm/s`}`;
   const parts = [state.net.parts[actuator.part]?.id ?? ''];
-  return step(`${sides}: ${moving}. From entered and assumed values.`, [actuator.a, actuator.b].filter((line) => line >= 0), parts);
+  return step(
+    `${sides}: ${moving}. From entered and assumed values.`,
+    [actuator.a, actuator.b].filter((line) => line >= 0),
+    parts,
+  );
 }
 
 /** The push is stronger than what is fed against it. */
@@ -85,7 +103,11 @@ function overcome(state: OneState, actuator: NetActuator, part: string): Step {
   const inward = actuator.push.way === 'in';
   const line = inward ? actuator.a : actuator.b;
   const what = actuator.push.by === 'spring' ? 'spring' : 'load';
-  return step(`The ${what} is stronger than the pressure that stands against it, and pushes its oil back out into ${lineName(state, line)}.`, [line], [part]);
+  return step(
+    `The ${what} is stronger than the pressure that stands against it, and pushes its oil back out into ${lineName(state, line)}.`,
+    [line],
+    [part],
+  );
 }
 
 /** Why it does not move: what it would take, and who takes the flow instead. */
@@ -97,16 +119,24 @@ function standing(state: OneState, index: number, actuator: NetActuator, numbers
   );
   const spilled = numbers.reliefs.filter((relief) => relief.flow > 1e-7).map((relief) => relief.label);
   const force = actuator.rotary ? `${round(load)} N·m` : `${round(load / 1000)} kN`;
-  const why = spilled.length > 0 ? `${spilled.join(' and ')} ${spilled.length > 1 ? 'let' : 'lets'} the flow out before that` : others.length > 0 ? `${others.join(' and ')} ${others.length > 1 ? 'take' : 'takes'} the flow first, at less pressure` : 'the pump stands below that';
+  const why =
+    spilled.length > 0
+      ? `${spilled.join(' and ')} ${spilled.length > 1 ? 'let' : 'lets'} the flow out before that`
+      : others.length > 0
+        ? `${others.join(' and ')} ${others.length > 1 ? 'take' : 'takes'} the flow first, at less pressure`
+        : 'the pump stands below that';
   return load > 0 ? `too little for its load of ${force}; ${why}` : `nothing moves it; ${why}`;
 }
 
 const over = (numbers: RowNumbers): string => {
   const open = numbers.reliefs.filter((relief) => relief.flow > 1e-7);
-  return open.length === 0 ? '' : `, of which ${open.map((relief) => `${litres(relief.flow)} goes over ${relief.label}`).join(' and ')}`;
+  return open.length === 0
+    ? ''
+    : `, of which ${open.map((relief) => `${litres(relief.flow)} goes over ${relief.label}`).join(' and ')}`;
 };
 
-const round = (value: number): string => (Math.abs(value) >= 100 ? value.toFixed(0) : Number(value.toPrecision(3)).toString());
+const round = (value: number): string =>
+  Math.abs(value) >= 100 ? value.toFixed(0) : Number(value.toPrecision(3)).toString();
 const bar = (pascal: number): string => `${(pascal / 1e5).toFixed(pascal < 10e5 ? 1 : 0)} bar`;
 const litres = (flow: number): string => `${round(flow * 60_000)} L/min`;
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

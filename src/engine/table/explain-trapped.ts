@@ -16,8 +16,12 @@ export function explainTrapped(state: OneState): TrapAnswer[] {
   const { net, edges, conditions, block } = state;
   const { classes } = lineOutcomes(net, edges, conditions, block);
   const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
-  const running = conditions.pumpsRunning ? state : solveOne(net, { ...conditions, pumpsRunning: true }, state.row, edges);
-  const runningClasses = conditions.pumpsRunning ? classes : lineOutcomes(net, edges, running.conditions, running.block).classes;
+  const running = conditions.pumpsRunning
+    ? state
+    : solveOne(net, { ...conditions, pumpsRunning: true }, state.row, edges);
+  const runningClasses = conditions.pumpsRunning
+    ? classes
+    : lineOutcomes(net, edges, running.conditions, running.block).classes;
   const moves = neighbours(running);
 
   return net.lines.slice(0, net.shown).flatMap((entry, line): TrapAnswer[] => {
@@ -26,11 +30,20 @@ export function explainTrapped(state: OneState): TrapAnswer[] {
     if (cutOff) {
       if (state.is(standing[line]?.load)) reasons.push({ kind: 'load', text: loadText(state, line) });
       if (state.is(runningClasses[line]?.[CUT_OFF])) {
-        const from = moves.filter((move) => move.state.on(move.state.block.reach.underPressure, line)).map((move) => move.text);
-        if (from.length > 0) reasons.push({ kind: 'left behind', text: `Under pressure before this move of one lever: ${from.join('; ')}.` });
+        const from = moves
+          .filter((move) => move.state.on(move.state.block.reach.underPressure, line))
+          .map((move) => move.text);
+        if (from.length > 0)
+          reasons.push({
+            kind: 'left behind',
+            text: `Under pressure before this move of one lever: ${from.join('; ')}.`,
+          });
       }
       if (!conditions.pumpsRunning && running.on(running.block.reach.underPressure, line)) {
-        reasons.push({ kind: 'stopped', text: 'Under pressure while the pumps run; stopping them does not let it down.' });
+        reasons.push({
+          kind: 'stopped',
+          text: 'Under pressure while the pumps run; stopping them does not let it down.',
+        });
       }
       if (state.is(standing[line]?.heat)) {
         reasons.push({
@@ -69,7 +82,9 @@ function loadText(state: OneState, line: number): string {
   const pressing = state.net.actuators.filter(
     (actuator) => actuator.push.way !== 'none' && (actuator.a === line || actuator.b === line),
   );
-  const names = pressing.map((actuator) => `${actuator.push.by === 'spring' ? 'the spring' : 'the load'} of ${partLabel(state, actuator.part)}`);
+  const names = pressing.map(
+    (actuator) => `${actuator.push.by === 'spring' ? 'the spring' : 'the load'} of ${partLabel(state, actuator.part)}`,
+  );
   if (names.length > 0) return `Pressed on at rest by ${names.join(' and ')}.`;
   return state.on(state.block.reach.underPressure, line)
     ? 'Another chamber of the same actuator is under pressure and passes it on, higher by the ratio of the areas.'

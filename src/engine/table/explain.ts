@@ -46,7 +46,13 @@ function explainActuator(state: OneState, index: number, actuator: NetActuator):
   const verdict = ACTUATOR_VERDICTS.find((_, i) => state.is(outcome.verdicts[i])) ?? 'undetermined';
   const notes = ACTUATOR_NOTES.filter((_, i) => state.is(outcome.notes[i]));
   const words = motionWords(actuator);
-  const base = { part: partId(state, actuator.part), label: partLabel(state, actuator.part), verdict, notes, onValues: verdict === 'rests on pressure' };
+  const base = {
+    part: partId(state, actuator.part),
+    label: partLabel(state, actuator.part),
+    verdict,
+    notes,
+    onValues: verdict === 'rests on pressure',
+  };
   switch (verdict) {
     case words.out:
       return { ...base, steps: movingSteps(state, index, actuator, 'a') };
@@ -55,7 +61,14 @@ function explainActuator(state: OneState, index: number, actuator: NetActuator):
     case 'rests on pressure':
       return { ...base, rests: restsOn(state, index, actuator), steps: restingSteps(state, index, actuator) };
     case 'undetermined':
-      return { ...base, steps: [step('The lock checks of this state open and close each other: no setting agrees with the pressures it causes.')] };
+      return {
+        ...base,
+        steps: [
+          step(
+            'The lock checks of this state open and close each other: no setting agrees with the pressures it causes.',
+          ),
+        ],
+      };
     default:
       return { ...base, steps: standingSteps(state, actuator) };
   }
@@ -80,7 +93,13 @@ function movingSteps(state: OneState, index: number, actuator: NetActuator, grow
   } else {
     steps.push(...feedSteps(state, into));
   }
-  steps.push(step(`${lineName(state, into)} presses on the ${sideName(state, actuator, grows)}.`, [into], [partId(state, actuator.part)]));
+  steps.push(
+    step(
+      `${lineName(state, into)} presses on the ${sideName(state, actuator, grows)}.`,
+      [into],
+      [partId(state, actuator.part)],
+    ),
+  );
   if (from < 0) {
     steps.push(step('The other side breathes to atmosphere.', [], [partId(state, actuator.part)]));
     return steps;
@@ -96,36 +115,71 @@ function feedSteps(state: OneState, into: number): Step[] {
   for (const [i, line] of sources.entries()) {
     const field = state.block.reach.pressed[i];
     if (line < 0 || field === undefined || !state.on(field, into)) continue;
-    const way = findWay(state, [line], (at) => at === into, (at) => state.on(state.block.reach.notFreeToTank, at));
+    const way = findWay(
+      state,
+      [line],
+      (at) => at === into,
+      (at) => state.on(state.block.reach.notFreeToTank, at),
+    );
     if (!way) continue;
     const part = net.pumps[i]?.part ?? net.accumulators[i - net.pumps.length]?.part ?? -1;
-    return [step(`${partLabel(state, part)} presses on ${lineName(state, line)}.`, [line], [partId(state, part)]), ...waySteps(state, way)];
+    return [
+      step(`${partLabel(state, part)} presses on ${lineName(state, line)}.`, [line], [partId(state, part)]),
+      ...waySteps(state, way),
+    ];
   }
   return [];
 }
 
-function leaveSteps(state: OneState, index: number, actuator: NetActuator, from: number, side: string, into: number): Step[] {
+function leaveSteps(
+  state: OneState,
+  index: number,
+  actuator: NetActuator,
+  from: number,
+  side: string,
+  into: number,
+): Step[] {
   const r = state.block.reach;
-  const head = step(`The ${side} lets its oil out into ${lineName(state, from)}.`, [from], [partId(state, actuator.part)]);
+  const head = step(
+    `The ${side} lets its oil out into ${lineName(state, from)}.`,
+    [from],
+    [partId(state, actuator.part)],
+  );
   if (state.on(r.toTank, from)) {
     const way = findWay(state, [from], (line) => state.net.lines[line]?.tank === true) ?? pumpLeak(state, from);
-    return [head, ...(way ? waySteps(state, way) : []), step('From there it runs to tank.', way ? [...way.lines.slice(-1)] : [])];
+    return [
+      head,
+      ...(way ? waySteps(state, way) : []),
+      step('From there it runs to tank.', way ? [...way.lines.slice(-1)] : []),
+    ];
   }
   if (!isEqualSided(actuator) && state.is(state.block.motion.chambers[index]?.fromBtoA) && from === actuator.b) {
     const way = findWay(state, [from], (line) => line === into);
     return [
       head,
       ...(way ? waySteps(state, way) : []),
-      step('It joins the oil to the cap side: the larger area wins, and the rod goes out fast with the force of the rod area (regenerative).', [from, into]),
+      step(
+        'It joins the oil to the cap side: the larger area wins, and the rod goes out fast with the force of the rod area (regenerative).',
+        [from, into],
+      ),
     ];
   }
   const next = state.net.actuators.findIndex(
-    (other, i) => i !== index && (state.is(state.block.motion.displaced[i]) || findWay(state, [from], (line) => line === other.a || line === other.b) !== undefined),
+    (other, i) =>
+      i !== index &&
+      (state.is(state.block.motion.displaced[i]) ||
+        findWay(state, [from], (line) => line === other.a || line === other.b) !== undefined),
   );
   const target = state.net.actuators[next];
   if (!target) return [head];
   const way = findWay(state, [from], (line) => line === target.a || line === target.b);
-  return [head, ...(way ? waySteps(state, way) : []), step(`It goes on into ${partLabel(state, target.part)}, which moves with it.`, way ? way.lines.slice(-1) : [], [partId(state, target.part)])];
+  return [
+    head,
+    ...(way ? waySteps(state, way) : []),
+    step(`It goes on into ${partLabel(state, target.part)}, which moves with it.`, way ? way.lines.slice(-1) : [], [
+      partId(state, target.part),
+    ]),
+  ];
 }
 
 const pumpLeak = (state: OneState, from: number) =>
@@ -147,7 +201,11 @@ function standingSteps(state: OneState, actuator: NetActuator): Step[] {
   const side = (line: number, which: 'a' | 'b'): Step[] => {
     const name = sideName(state, actuator, which);
     if (line < 0) return [step('The other side breathes to atmosphere.', [], [partId(state, actuator.part)])];
-    if (state.on(r.anyPressed, line)) return [...feedSteps(state, line), step(`So the ${name} is under pressure.`, [line], [partId(state, actuator.part)])];
+    if (state.on(r.anyPressed, line))
+      return [
+        ...feedSteps(state, line),
+        step(`So the ${name} is under pressure.`, [line], [partId(state, actuator.part)]),
+      ];
     if (state.on(r.toTank, line)) {
       const way = findWay(state, [line], (at) => state.net.lines[at]?.tank === true) ?? pumpLeak(state, line);
       return [
@@ -156,14 +214,17 @@ function standingSteps(state: OneState, actuator: NetActuator): Step[] {
       ];
     }
     const wall = enclosing(state, line, actuator.part);
-    return [{ ...wall, text: `The ${name} is sealed. ${wall.text}`, parts: [partId(state, actuator.part), ...wall.parts] }];
+    return [
+      { ...wall, text: `The ${name} is sealed. ${wall.text}`, parts: [partId(state, actuator.part), ...wall.parts] },
+    ];
   };
   return [...side(actuator.a, 'a'), ...side(actuator.b, 'b')];
 }
 
 const REST_TEXT: Record<RestReason, string> = {
   load: 'A load works against it: whether it moves depends on the pressure that the pump can reach.',
-  rivals: 'More than one actuator is offered the flow of the same pump: the one that needs the least pressure goes first.',
+  rivals:
+    'More than one actuator is offered the flow of the same pump: the one that needs the least pressure goes first.',
   bleed: 'Its fed side is also open to tank through a throttle.',
   'pressure valve': 'The other side can let out only over a pressure valve.',
   'two feeds': 'Both sides are fed, and one of them lets out.',
@@ -171,7 +232,11 @@ const REST_TEXT: Record<RestReason, string> = {
   upstream: 'It is driven by the oil of an actuator that rests on pressure itself.',
 };
 
-function restsOn(state: OneState, index: number, actuator: NetActuator): { why: string; candidates: ActuatorVerdict[] } {
+function restsOn(
+  state: OneState,
+  index: number,
+  actuator: NetActuator,
+): { why: string; candidates: ActuatorVerdict[] } {
   const { motion } = state.block;
   const reasons = REST_REASONS.filter((_, i) => state.is(motion.rests[index]?.[i]));
   const words = motionWords(actuator);

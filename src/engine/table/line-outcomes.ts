@@ -13,13 +13,24 @@ export interface LineOutcomes {
   readonly carriesOil: Field;
 }
 
-export function lineOutcomes(net: Network, edges: EdgeSet, conditions: PathConditions, block: SettledBlock): LineOutcomes {
+export function lineOutcomes(
+  net: Network,
+  edges: EdgeSet,
+  conditions: PathConditions,
+  block: SettledBlock,
+): LineOutcomes {
   const { width, all, reach: r } = block;
   const { working, displaced } = carryingLines(net, edges, conditions, block);
   const classes: Uint32Array[][] = [];
   const blocked: Uint32Array[][] = [];
   for (let line = 0; line < net.shown; line++) {
-    const planes = LINE_CLASSES.map(() => new Uint32Array(width)) as [Uint32Array, Uint32Array, Uint32Array, Uint32Array, Uint32Array];
+    const planes = LINE_CLASSES.map(() => new Uint32Array(width)) as [
+      Uint32Array,
+      Uint32Array,
+      Uint32Array,
+      Uint32Array,
+      Uint32Array,
+    ];
     const kinds = BLOCKED_KINDS.map(() => new Uint32Array(width)) as [Uint32Array, Uint32Array];
     const [fed, flows, vented, cutOff, carries] = planes;
     for (let w = 0; w < width; w++) {

@@ -1,6 +1,7 @@
 import type { NetActuator, NetPump, Network } from '../../network/network.ts';
 import type { SettledBlock } from '../paths/block.ts';
 import type { Field } from '../paths/field.ts';
+import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { PUMP_VERDICTS } from './words.ts';
 import type { PumpVerdict } from './words.ts';
@@ -8,7 +9,13 @@ import type { PumpVerdict } from './words.ts';
 const INDEX = Object.fromEntries(PUMP_VERDICTS.map((verdict, i) => [verdict, i])) as Record<PumpVerdict, number>;
 
 /** The verdict of one pump in every state of the block; planes by index of the verdict. */
-export function pumpOutcome(index: number, pump: NetPump, net: Network, block: SettledBlock, conditions: PathConditions): Uint32Array[] {
+export function pumpOutcome(
+  index: number,
+  pump: NetPump,
+  net: Network,
+  block: SettledBlock,
+  conditions: PathConditions,
+): Uint32Array[] {
   const { width, all, reach: r, motion } = block;
   const verdicts = PUMP_VERDICTS.map(() => new Uint32Array(width));
   const pressed = r.pressed[index] as Field;
@@ -36,7 +43,9 @@ export function pumpOutcome(index: number, pump: NetPump, net: Network, block: S
       const rests = restWords(motion.rests[i] as readonly Uint32Array[], w);
       // Nothing throttles it on the way there or back.
       const free =
-        (out & at(pressedFree, actuator.a, w) & (at(r.freeExits, actuator.b, w) | (motion.chambers[i]?.fromBtoA[w] as number))) |
+        (out &
+          at(pressedFree, actuator.a, w) &
+          (at(r.freeExits, actuator.b, w) | (motion.chambers[i]?.fromBtoA[w] as number))) |
         (inward & (actuator.b < 0 ? 0 : at(pressedFree, actuator.b, w)) & at(r.freeExits, actuator.a, w));
       drives |= mine;
       certain |= mine & free & ~(rests.rivals | rests.other);
@@ -59,9 +68,9 @@ export function pumpOutcome(index: number, pump: NetPump, net: Network, block: S
   return verdicts;
 }
 
-const RIVALS = 1;
+const RIVALS = REST_REASONS.indexOf('rivals');
 
-/** Reason 1 of REST_REASONS is rivalry: the pump works whoever wins. */
+/** Between rivals the pump works whoever wins. */
 function restWords(planes: readonly Uint32Array[], w: number): { rivals: number; other: number } {
   let other = 0;
   planes.forEach((plane, reason) => {

@@ -9,7 +9,11 @@ export interface Step {
   readonly parts: readonly string[];
 }
 
-export const step = (text: string, lines: readonly number[] = [], parts: readonly string[] = []): Step => ({ text, lines, parts });
+export const step = (text: string, lines: readonly number[] = [], parts: readonly string[] = []): Step => ({
+  text,
+  lines,
+  parts,
+});
 
 export const partId = (state: OneState, part: number): string => state.net.parts[part]?.id ?? '';
 export const partLabel = (state: OneState, part: number): string => state.net.parts[part]?.label ?? '';
@@ -34,8 +38,17 @@ export function sideName(state: OneState, actuator: NetActuator, side: 'a' | 'b'
 export function waySteps(state: OneState, way: Way): Step[] {
   return way.hops.map((hop) => {
     const through = partInState(state, hop.path.part);
-    const kind = hop.path.pilot >= 0 ? `is held open by ${lineName(state, hop.path.pilot)} and passes` : hop.path.throttled ? 'throttles' : 'passes';
-    return step(`${through} ${kind} oil from ${hop.fromPort} to ${hop.toPort}, into ${lineName(state, hop.to)}.`, [hop.from, hop.to], [partId(state, hop.path.part)]);
+    const kind =
+      hop.path.pilot >= 0
+        ? `is held open by ${lineName(state, hop.path.pilot)} and passes`
+        : hop.path.throttled
+          ? 'throttles'
+          : 'passes';
+    return step(
+      `${through} ${kind} oil from ${hop.fromPort} to ${hop.toPort}, into ${lineName(state, hop.to)}.`,
+      [hop.from, hop.to],
+      [partId(state, hop.path.part)],
+    );
   });
 }
 
@@ -49,7 +62,9 @@ export function enclosing(state: OneState, line: number, except: number): Step {
       const dot = port.lastIndexOf('.');
       const part = state.net.parts.findIndex((entry) => entry.id === port.slice(0, dot));
       const paths = state.net.paths.filter((path) => path.part === part && (path.from === here || path.to === here));
-      const leaves = state.hops.some((hop) => hop.path.part === part && hop.from === here && inside.has(hop.to) && hop.to !== here);
+      const leaves = state.hops.some(
+        (hop) => hop.path.part === part && hop.from === here && inside.has(hop.to) && hop.to !== here,
+      );
       const actuator = part !== except && state.net.actuators.some((entry) => entry.part === part);
       if (part === except || (paths.length === 0 && !actuator) || leaves) continue;
       const ports = walls.get(part) ?? new Set<string>();
@@ -66,5 +81,9 @@ export function enclosing(state: OneState, line: number, except: number): Step {
     said.length > 0
       ? `${lineName(state, line)} is shut in: ${said.join('; ')}.`
       : `${lineName(state, line)} has nowhere to go: nothing on it leads on.`;
-  return step(text, region, [...walls.keys()].map((part) => partId(state, part)));
+  return step(
+    text,
+    region,
+    [...walls.keys()].map((part) => partId(state, part)),
+  );
 }

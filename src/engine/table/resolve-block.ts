@@ -92,7 +92,14 @@ export function resolveBlock(
   return { valued, flowing };
 }
 
-function noteFlows(solver: PressureSolver, answer: PressureAnswer, flowing: Map<number, Uint32Array>, width: number, w: number, bit: number): void {
+function noteFlows(
+  solver: PressureSolver,
+  answer: PressureAnswer,
+  flowing: Map<number, Uint32Array>,
+  width: number,
+  w: number,
+  bit: number,
+): void {
   for (let line = 0; line < solver.net.shown; line++) {
     if (!solver.flows(answer, line)) continue;
     const plane = flowing.get(line) ?? new Uint32Array(width);

@@ -47,7 +47,10 @@ export class PressureSolver {
   /** 0-based row. `rivals`: also find out whose speed rests on losses. */
   solve(row: number, rivals: boolean): PressureAnswer {
     const { model, net } = this;
-    setState(model, (input) => Math.floor(row / (this.#strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1));
+    setState(
+      model,
+      (input) => Math.floor(row / (this.#strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1),
+    );
     const solution = model.solver.solve(this.#warm ? { warm: this.#warm } : {});
     const result = describe(model.solver, solution);
     const through = this.#throughflow(solution.throughputs);
@@ -106,7 +109,8 @@ export interface BlockBits {
   readonly bit: number;
 }
 
-const on = ({ bit }: BlockBits, plane: Uint32Array | undefined): boolean => (((plane?.[bit >>> 5] ?? 0) >>> (bit & 31)) & 1) === 1;
+const on = ({ bit }: BlockBits, plane: Uint32Array | undefined): boolean =>
+  (((plane?.[bit >>> 5] ?? 0) >>> (bit & 31)) & 1) === 1;
 
 /** The verdict that pressures give an actuator which open paths left to them; undefined = they do not decide it either. */
 export function actuatorByPressure(
@@ -120,7 +124,8 @@ export function actuatorByPressure(
   if (!actuator || result.status !== 'solved') return undefined;
   const state = result.actuators[index];
   if (!state) return undefined;
-  if (swings[index] && equalRivals(solver, bits, result, swings).includes(index)) return { verdict: 'undetermined', void: false };
+  if (swings[index] && equalRivals(solver, bits, result, swings).includes(index))
+    return { verdict: 'undetermined', void: false };
   const { motion } = bits.block;
   const words = motionWords(actuator);
   const flow = Math.max(Math.abs(state.flowIn), Math.abs(state.flowOut));
@@ -138,10 +143,16 @@ export function actuatorByPressure(
   }
   const displaced = on(bits, motion.displaced[index]);
   if (state.speed > 0) {
-    const fed = on(bits, motion.fedA[index]) || (displaced && goesOut) || (overValve(actuator.a) && solver.pressure(result, actuator.a) > PRESSED);
+    const fed =
+      on(bits, motion.fedA[index]) ||
+      (displaced && goesOut) ||
+      (overValve(actuator.a) && solver.pressure(result, actuator.a) > PRESSED);
     return { verdict: fed ? words.out : words.pushedOut, void: solver.voidFlow(result, actuator.a) > VOID };
   }
-  const fed = on(bits, motion.fedB[index]) || (displaced && goesIn) || (overValve(actuator.b) && solver.pressure(result, actuator.b) > PRESSED);
+  const fed =
+    on(bits, motion.fedB[index]) ||
+    (displaced && goesIn) ||
+    (overValve(actuator.b) && solver.pressure(result, actuator.b) > PRESSED);
   return { verdict: fed ? words.in : words.pushedIn, void: solver.voidFlow(result, actuator.b) > VOID };
 }
 
@@ -196,10 +207,10 @@ export function pumpByPressure(
   if (!state) return undefined;
   const { reach, width } = bits.block;
   const pressed = reach.pressed[index] as Uint32Array;
-  const offered = (line: number): boolean =>
-    line >= 0 && on(bits, pressed.subarray(line * width, (line + 1) * width));
+  const offered = (line: number): boolean => line >= 0 && on(bits, pressed.subarray(line * width, (line + 1) * width));
   const valves = reach.valves?.pressed;
-  const overValve = (line: number): boolean => valves !== undefined && line >= 0 && on(bits, valves.subarray(line * width, (line + 1) * width));
+  const overValve = (line: number): boolean =>
+    valves !== undefined && line >= 0 && on(bits, valves.subarray(line * width, (line + 1) * width));
   const drives = net.actuators.some((actuator, i) => {
     const speed = result.actuators[i]?.speed ?? 0;
     const flow = Math.max(Math.abs(result.actuators[i]?.flowIn ?? 0), Math.abs(result.actuators[i]?.flowOut ?? 0));
@@ -211,7 +222,8 @@ export function pumpByPressure(
   });
   const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));
   const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(result, i), 0);
-  if (pump.compensated && !drives && state.delivered < 0.02 * pump.flow && state.pressure > 0.5 * pump.setting) return 'destroked';
+  if (pump.compensated && !drives && state.delivered < 0.02 * pump.flow && state.pressure > 0.5 * pump.setting)
+    return 'destroked';
   if (drives) return spilled > MOTION ? 'working, part over relief' : 'working';
   if (spilled > MOTION) return 'over relief';
   const setting = Math.max(pump.setting, ...mine.map((i) => net.reliefs[i]?.setting ?? 0), 0);
@@ -239,7 +251,16 @@ export interface RowNumbers {
 export function rowNumbers(solver: PressureSolver, row: number, answer = solver.solve(row, false)): RowNumbers {
   const { result } = answer;
   if (result.status !== 'solved') {
-    return { row, status: result.status, words: result.words, lines: [], actuators: [], pumps: [], reliefs: [], power: { pumps: 0, loads: 0, useful: 0, lost: 0 } };
+    return {
+      row,
+      status: result.status,
+      words: result.words,
+      lines: [],
+      actuators: [],
+      pumps: [],
+      reliefs: [],
+      power: { pumps: 0, loads: 0, useful: 0, lost: 0 },
+    };
   }
   const { net } = solver;
   const { pumps, loads, useful, lost } = result.power;
@@ -247,9 +268,16 @@ export function rowNumbers(solver: PressureSolver, row: number, answer = solver.
     row,
     status: 'solved',
     lines: Array.from({ length: net.shown }, (_, line) => solver.pressure(result, line)),
-    actuators: result.actuators.map(({ speed, flowIn, flowOut, force }) => ({ speed, flow: Math.max(Math.abs(flowIn), Math.abs(flowOut)), force })),
+    actuators: result.actuators.map(({ speed, flowIn, flowOut, force }) => ({
+      speed,
+      flow: Math.max(Math.abs(flowIn), Math.abs(flowOut)),
+      force,
+    })),
     pumps: result.pumps.map(({ pressure, delivered, power }) => ({ pressure, delivered, power })),
-    reliefs: net.reliefs.map((relief, i) => ({ label: net.parts[relief.part]?.label ?? '', flow: solver.reliefFlow(result, i) })),
+    reliefs: net.reliefs.map((relief, i) => ({
+      label: net.parts[relief.part]?.label ?? '',
+      flow: solver.reliefFlow(result, i),
+    })),
     power: { pumps, loads, useful, lost },
   };
 }

@@ -10,7 +10,15 @@ import {
   REST_REASONS,
   TRAP_REASONS,
 } from './words.ts';
-import type { ActuatorNote, ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, RestReason, TrapReason } from './words.ts';
+import type {
+  ActuatorNote,
+  ActuatorVerdict,
+  BlockedKind,
+  LineClass,
+  PumpVerdict,
+  RestReason,
+  TrapReason,
+} from './words.ts';
 
 /** What rows a filter keeps: every field given must match. */
 export interface RowFilter {
@@ -97,7 +105,11 @@ export class StateTable {
   find(filter: RowFilter): Uint32Array {
     const keep: Plane[] = [];
     const { data } = this;
-    const collect = <W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], wanted: readonly W[]): void => {
+    const collect = <W>(
+      planes: readonly (Plane | undefined)[] | undefined,
+      words: readonly W[],
+      wanted: readonly W[],
+    ): void => {
       const any = emptySet(data.count);
       for (const word of wanted) {
         const plane = planes?.[words.indexOf(word)];
@@ -105,9 +117,12 @@ export class StateTable {
       }
       keep.push(any);
     };
-    for (const [i, wanted] of Object.entries(filter.actuators ?? {})) collect(data.actuatorPlanes[Number(i)], ACTUATOR_VERDICTS, wanted);
-    for (const [i, wanted] of Object.entries(filter.pumps ?? {})) collect(data.pumpPlanes[Number(i)], PUMP_VERDICTS, wanted);
-    for (const [i, wanted] of Object.entries(filter.lines ?? {})) collect(data.linePlanes[Number(i)], LINE_CLASSES, wanted);
+    for (const [i, wanted] of Object.entries(filter.actuators ?? {}))
+      collect(data.actuatorPlanes[Number(i)], ACTUATOR_VERDICTS, wanted);
+    for (const [i, wanted] of Object.entries(filter.pumps ?? {}))
+      collect(data.pumpPlanes[Number(i)], PUMP_VERDICTS, wanted);
+    for (const [i, wanted] of Object.entries(filter.lines ?? {}))
+      collect(data.linePlanes[Number(i)], LINE_CLASSES, wanted);
     if (filter.trapped) {
       const any = emptySet(data.count);
       for (const planes of data.trapPlanes) {
@@ -117,7 +132,9 @@ export class StateTable {
       }
       keep.push(any);
     }
-    const wantedPositions = Object.entries(filter.positions ?? {}).map(([i, list]) => [Number(i), new Set(list)] as const);
+    const wantedPositions = Object.entries(filter.positions ?? {}).map(
+      ([i, list]) => [Number(i), new Set(list)] as const,
+    );
     const rows: number[] = [];
     const passes = (row: number): boolean =>
       keep.every((plane) => has(plane, row)) && wantedPositions.every(([i, set]) => set.has(this.position(i, row)));

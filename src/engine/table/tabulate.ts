@@ -16,7 +16,14 @@ import { PressureSolver } from './resolve.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
 import type { Plane, TableData } from './table-data.ts';
 import { leftBehind, leverMoves, standingReasons } from './trapped.ts';
-import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from './words.ts';
+import {
+  ACTUATOR_NOTES,
+  ACTUATOR_VERDICTS,
+  BLOCKED_KINDS,
+  LINE_CLASSES,
+  PUMP_VERDICTS,
+  TRAP_REASONS,
+} from './words.ts';
 
 /** Words of one block: 4,096 states; small enough for the cache, large enough to hide the overhead. */
 const BLOCK = 128;
@@ -54,15 +61,26 @@ export interface TableOptions {
  * Throws `Cancelled` when the budget says so.
  * Cost grows with states × paths / 32; memory is the planes that come out.
  */
-export function tabulate(net: Network, conditions: PathConditions, budget: Budget, options: TableOptions = { pressureRows: 0 }): TableData {
+export function tabulate(
+  net: Network,
+  conditions: PathConditions,
+  budget: Budget,
+  options: TableOptions = { pressureRows: 0 },
+): TableData {
   const edges = compileEdges(net);
   const radices = net.inputs.map((input) => input.positions.length);
   const share = conditions.pumpsRunning ? 1 : 0.5;
-  const running = runBlocks(net, edges, { ...conditions, pumpsRunning: true }, part(budget, 0, share), conditions.pumpsRunning ? options.pressureRows : 0);
-  const moves = leverMoves(radices, edges.states);
-  const left = net.lines.slice(0, net.shown).map((_, line) =>
-    leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states),
+  const running = runBlocks(
+    net,
+    edges,
+    { ...conditions, pumpsRunning: true },
+    part(budget, 0, share),
+    conditions.pumpsRunning ? options.pressureRows : 0,
   );
+  const moves = leverMoves(radices, edges.states);
+  const left = net.lines
+    .slice(0, net.shown)
+    .map((_, line) => leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states));
   let sheets = running;
   if (conditions.pumpsRunning) {
     left.forEach((plane, line) => putTrap(running, line, LEFT_BEHIND, plane));
@@ -94,7 +112,13 @@ export function tabulate(net: Network, conditions: PathConditions, budget: Budge
   };
 }
 
-function runBlocks(net: Network, edges: EdgeSet, conditions: PathConditions, budget: Budget, pressureRows: number): Sheets {
+function runBlocks(
+  net: Network,
+  edges: EdgeSet,
+  conditions: PathConditions,
+  budget: Budget,
+  pressureRows: number,
+): Sheets {
   const { states } = edges;
   const words = wordsFor(states);
   const sheets: Sheets = {
@@ -186,7 +210,10 @@ function describe(net: Network): Pick<TableData, 'inputs' | 'actuators' | 'pumps
       by,
       coils,
     })),
-    actuators: net.actuators.map(({ part, rotary }) => ({ ...named(part), motion: rotary ? ('rotary' as const) : ('linear' as const) })),
+    actuators: net.actuators.map(({ part, rotary }) => ({
+      ...named(part),
+      motion: rotary ? ('rotary' as const) : ('linear' as const),
+    })),
     pumps: net.pumps.map(({ part }) => named(part)),
     lines: net.lines.slice(0, net.shown).map(({ name, ports, connections }) => ({ name, ports, connections })),
   };

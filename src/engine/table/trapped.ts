@@ -35,7 +35,7 @@ export function standingReasons(
     const place = conditions.places[i];
     const press = (line: number): void => {
       if (line < 0) return;
-      for (let w = 0; w < width; w++) pressing[line * width + w] = (sealed[line * width + w] as number);
+      for (let w = 0; w < width; w++) pressing[line * width + w] = sealed[line * width + w] as number;
     };
     if ((way === 'in' || way === 'both') && place !== 'in') press(actuator.a);
     if ((way === 'out' || way === 'both') && place !== 'out') press(actuator.b);
@@ -87,7 +87,12 @@ export function leverMoves(radices: readonly number[], states: number): Move[] {
  * States that one move of one lever leads to from a state with this line under pressure, and in which
  * it is cut off. A move from one end to the other passes the centre without stopping there.
  */
-export function leftBehind(moves: readonly Move[], cutOff: BitSet | undefined, under: BitSet | undefined, states: number): BitSet {
+export function leftBehind(
+  moves: readonly Move[],
+  cutOff: BitSet | undefined,
+  under: BitSet | undefined,
+  states: number,
+): BitSet {
   const found = emptySet(states);
   if (cutOff === undefined || under === undefined) return found;
   const last = under.length;

@@ -44,7 +44,15 @@ export const TRAP_REASONS = ['load', 'left behind', 'stopped', 'stored', 'heat']
 export type TrapReason = (typeof TRAP_REASONS)[number];
 
 /** Remarks on an actuator's verdict that do not change the word. */
-export const ACTUATOR_NOTES = ['outward by suction only', 'inward by suction only', 'void forms', 'free outward', 'free inward', 'creeps outward on back pressure', 'creeps inward on back pressure'] as const;
+export const ACTUATOR_NOTES = [
+  'outward by suction only',
+  'inward by suction only',
+  'void forms',
+  'free outward',
+  'free inward',
+  'creeps outward on back pressure',
+  'creeps inward on back pressure',
+] as const;
 export type ActuatorNote = (typeof ACTUATOR_NOTES)[number];
 
 export { REST_REASONS } from '../paths/motion-bits.ts';

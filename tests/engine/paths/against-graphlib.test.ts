@@ -20,9 +20,18 @@ test('line classes agree with the graph library on 1,000 random circuits, in eve
         states += 1;
         for (let line = 0; line < net.shown; line++) {
           const source = plain.fromSource[line];
-          const expected = source ? (plain.toTank[line] ? 'flows to tank' : 'fed') : plain.toTank[line] ? 'vented' : 'cut off';
+          const expected = source
+            ? plain.toTank[line]
+              ? 'flows to tank'
+              : 'fed'
+            : plain.toTank[line]
+              ? 'vented'
+              : 'cut off';
           const found = table.line(line, row);
-          expect(found === 'carries displaced oil' ? 'cut off' : found, `${net.lines[line]?.name} in row ${row + 1}`).toBe(expected);
+          expect(
+            found === 'carries displaced oil' ? 'cut off' : found,
+            `${net.lines[line]?.name} in row ${row + 1}`,
+          ).toBe(expected);
         }
       }
     }),
@@ -67,22 +76,27 @@ test('a blocked line is fed or cut off, and a trapped one is cut off or stored',
 
 test('the words of a row say what the table says', () => {
   fc.assert(
-    fc.property(randomCircuit(3), fc.constantFrom('running' as const, 'stopped' as const), fc.nat(), (circuit, pumps, pick) => {
-      const table = new StateTable(tabulate(circuit, { pumps }, unlimited));
-      const row = pick % table.count;
-      const words = explainRow(circuit, { pumps }, row);
-      expect(words.positions).toEqual(table.positionsOf(row));
-      words.actuators.forEach((answer, i) => {
-        expect(answer.verdict).toBe(table.actuator(i, row));
-        expect(answer.steps.length).toBeGreaterThan(0);
-        if (answer.rests) expect(answer.rests.candidates.length).toBeGreaterThan(1);
-      });
-      words.pumps.forEach((answer, i) => expect(answer.verdict).toBe(table.pump(i, row)));
-      table.data.lines.forEach((line, i) => {
-        const said = words.trapped.find((entry) => entry.line === i)?.reasons.map((reason) => reason.kind) ?? [];
-        expect(said, line.name).toEqual(table.trapped(i, row));
-      });
-    }),
+    fc.property(
+      randomCircuit(3),
+      fc.constantFrom('running' as const, 'stopped' as const),
+      fc.nat(),
+      (circuit, pumps, pick) => {
+        const table = new StateTable(tabulate(circuit, { pumps }, unlimited));
+        const row = pick % table.count;
+        const words = explainRow(circuit, { pumps }, row);
+        expect(words.positions).toEqual(table.positionsOf(row));
+        words.actuators.forEach((answer, i) => {
+          expect(answer.verdict).toBe(table.actuator(i, row));
+          expect(answer.steps.length).toBeGreaterThan(0);
+          if (answer.rests) expect(answer.rests.candidates.length).toBeGreaterThan(1);
+        });
+        words.pumps.forEach((answer, i) => expect(answer.verdict).toBe(table.pump(i, row)));
+        table.data.lines.forEach((line, i) => {
+          const said = words.trapped.find((entry) => entry.line === i)?.reasons.map((reason) => reason.kind) ?? [];
+          expect(said, line.name).toEqual(table.trapped(i, row));
+        });
+      },
+    ),
     { numRuns: 400, seed: 3 },
   );
 });

@@ -19,7 +19,9 @@ export function plainState(net: Network, positions: readonly number[], pumpsRunn
     const result = search(net, positions, pumpsRunning, open);
     const next = new Set(
       net.paths.flatMap((path, i) =>
-        path.pilot >= 0 && (result.fromSource[path.pilot] || result.under[path.pilot]) && !result.freeToTank[path.pilot] ? [i] : [],
+        path.pilot >= 0 && (result.fromSource[path.pilot] || result.under[path.pilot]) && !result.freeToTank[path.pilot]
+          ? [i]
+          : [],
       ),
     );
     if (next.size === open.size && [...next].every((i) => open.has(i))) return { ...result, settled: true };
@@ -87,5 +89,8 @@ function reversed(graph: Graph): Graph {
 
 function reached(graph: Graph, starts: readonly number[]): boolean[] {
   const found = new Set(starts.length > 0 ? alg.preorder(graph, starts.map(String)) : []);
-  return graph.nodes().sort((a, b) => Number(a) - Number(b)).map((node) => found.has(node));
+  return graph
+    .nodes()
+    .sort((a, b) => Number(a) - Number(b))
+    .map((node) => found.has(node));
 }

@@ -35,13 +35,23 @@ describe('centre conditions (common practice; published training sheets)', () =>
     expect([t.actuator('C1', 'V1=a'), t.pump('V1=a')]).toEqual(['extends', 'working']);
     expect([t.actuator('C1', 'V1=b'), t.pump('V1=b')]).toEqual(['retracts', 'working']);
     expect(['P', 'A', 'B', 'T'].map((line) => t.line(line, 'V1=a'))).toEqual(['fed', 'fed', 'vented', 'vented']);
-    expect(['P', 'A', 'B', 'T'].map((line) => t.blocked(line, 'V1=a'))).toEqual([undefined, undefined, undefined, undefined]);
+    expect(['P', 'A', 'B', 'T'].map((line) => t.blocked(line, 'V1=a'))).toEqual([
+      undefined,
+      undefined,
+      undefined,
+      undefined,
+    ]);
   });
 
   test('bypass centre holds and unloads', () => {
     const t = rig('valve-4/3-bypass');
     expect([t.actuator('C1', 'V1=0'), t.pump('V1=0')]).toEqual(['held', 'unloaded']);
-    expect(['P', 'A', 'B', 'T'].map((line) => t.line(line, 'V1=0'))).toEqual(['flows to tank', 'cut off', 'cut off', 'flows to tank']);
+    expect(['P', 'A', 'B', 'T'].map((line) => t.line(line, 'V1=0'))).toEqual([
+      'flows to tank',
+      'cut off',
+      'cut off',
+      'flows to tank',
+    ]);
   });
 
   test('float centre floats, pump over relief', () => {
@@ -58,7 +68,10 @@ describe('centre conditions (common practice; published training sheets)', () =>
     // Both sides stand at what the way to tank takes away: p·Ar beats the friction (law).
     expect(t.notes('C1', 'V1=0')).toEqual([]);
     const easy = rig('valve-4/3-joined', 'fixed-pump', '{friction=0.01 kN}');
-    expect([easy.actuator('C1', 'V1=0'), easy.notes('C1', 'V1=0')]).toEqual(['floats', ['creeps outward on back pressure']]);
+    expect([easy.actuator('C1', 'V1=0'), easy.notes('C1', 'V1=0')]).toEqual([
+      'floats',
+      ['creeps outward on back pressure'],
+    ]);
   });
 
   test('compensated pump destrokes over a closed centre (US Army FM 5-499, from memory)', () => {
@@ -143,8 +156,16 @@ describe('several valves', () => {
   test('carry-over sections: neutral free to tank, one shifted takes the full flow (US Army FM 5-499, from memory)', () => {
     const t = two('valve-6/3-carry-over', 'P1.P R1.P V1.P V2.P V1.C1 | V1.C2 V2.C1 | V2.C2 V1.T V2.T R1.T T1.T P1.S');
     expect([t.pump(''), t.actuator('C1', ''), t.actuator('C2', '')]).toEqual(['unloaded', 'held', 'held']);
-    expect([t.pump('V1=a'), t.actuator('C1', 'V1=a'), t.actuator('C2', 'V1=a')]).toEqual(['working', 'extends', 'held']);
-    expect([t.pump('V2=b'), t.actuator('C1', 'V2=b'), t.actuator('C2', 'V2=b')]).toEqual(['working', 'held', 'retracts']);
+    expect([t.pump('V1=a'), t.actuator('C1', 'V1=a'), t.actuator('C2', 'V1=a')]).toEqual([
+      'working',
+      'extends',
+      'held',
+    ]);
+    expect([t.pump('V2=b'), t.actuator('C1', 'V2=b'), t.actuator('C2', 'V2=b')]).toEqual([
+      'working',
+      'held',
+      'retracts',
+    ]);
   });
 
   test('counts: 3ⁿ, and three 4/3 with one 4/2 give 54 (counting)', () => {
@@ -174,7 +195,12 @@ describe('lock checks', () => {
   test('with a float centre both sides lock and the lines before the checks are vented (published training sheets)', () => {
     const t = locked('valve-4/3-float');
     expect(t.actuator('C1', 'V1=0')).toBe('held');
-    expect([t.line('A', 'V1=0'), t.line('B', 'V1=0'), t.line('CA', 'V1=0'), t.line('CB', 'V1=0')]).toEqual(['vented', 'vented', 'cut off', 'cut off']);
+    expect([t.line('A', 'V1=0'), t.line('B', 'V1=0'), t.line('CA', 'V1=0'), t.line('CB', 'V1=0')]).toEqual([
+      'vented',
+      'vented',
+      'cut off',
+      'cut off',
+    ]);
     expect([t.actuator('C1', 'V1=a'), t.actuator('C1', 'V1=b')]).toEqual(['extends', 'retracts']);
     expect(t.findings().map((finding) => finding.rule)).not.toContain('lock-check-not-vented');
   });
@@ -222,7 +248,10 @@ describe('single acting, motors, loads', () => {
       );
     expect(t('valve-4/3-float').actuator('M1', 'V1=0')).toBe('floats');
     expect(t('valve-4/3-shut').actuator('M1', 'V1=0')).toBe('held');
-    expect([t('valve-4/3-shut').actuator('M1', 'V1=a'), t('valve-4/3-shut').actuator('M1', 'V1=b')]).toEqual(['turns A→B', 'turns B→A']);
+    expect([t('valve-4/3-shut').actuator('M1', 'V1=a'), t('valve-4/3-shut').actuator('M1', 'V1=b')]).toEqual([
+      'turns A→B',
+      'turns B→A',
+    ]);
   });
 
   test('a load that presses in drops through an open valve, and lifting it rests on pressure', () => {
@@ -253,7 +282,11 @@ describe('single acting, motors, loads', () => {
   });
 
   test('no relief and nowhere to go: dead-headed, always a danger', () => {
-    const t = new Asked(circuit('P1 fixed-pump, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank | P1.P V1.P | V1.A C1.A | V1.B C1.B | V1.T T1.T P1.S'));
+    const t = new Asked(
+      circuit(
+        'P1 fixed-pump, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank | P1.P V1.P | V1.A C1.A | V1.B C1.B | V1.T T1.T P1.S',
+      ),
+    );
     expect(t.pump('V1=0')).toBe('dead-headed');
     expect(t.findings().find((finding) => finding.rule === 'dead-headed-pump')?.level).toBe('danger');
   });
@@ -261,7 +294,11 @@ describe('single acting, motors, loads', () => {
 
 describe('throttles', () => {
   const through = (parts: string, lines: string): Asked =>
-    paths(circuit(`P1 fixed-pump, R1 relief-valve, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank, ${parts} | ${lines}`));
+    paths(
+      circuit(
+        `P1 fixed-pump, R1 relief-valve, V1 directional-valve:valve-4/3-shut, C1 cylinder, T1 tank, ${parts} | ${lines}`,
+      ),
+    );
 
   test('bleed-off leaves it to the pressures', () => {
     const t = through('Q1 throttle', 'P1.P R1.P V1.P | V1.A C1.A Q1.A | V1.B C1.B | V1.T R1.T T1.T P1.S Q1.B');
@@ -275,7 +312,10 @@ describe('throttles', () => {
   });
 
   test('a shut throttle is no path', () => {
-    const t = through('Q1 throttle{shut=true}', 'P1.P R1.P V1.P | V1.A C1.A | V1.B Q1.A | Q1.B C1.B | V1.T R1.T T1.T P1.S');
+    const t = through(
+      'Q1 throttle{shut=true}',
+      'P1.P R1.P V1.P | V1.A C1.A | V1.B Q1.A | Q1.B C1.B | V1.T R1.T T1.T P1.S',
+    );
     expect([t.actuator('C1', 'V1=a'), t.pump('V1=a')]).toEqual(['held', 'over relief']);
   });
 });

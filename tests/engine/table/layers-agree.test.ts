@@ -10,7 +10,12 @@ import { randomCircuit } from '../../random-circuit.ts';
 /** A circuit in few words, for the message. */
 const sketch = (circuit: Circuit): string =>
   [
-    circuit.parts.map((part) => `${part.id} ${part.kind}${part.settings ? JSON.stringify(part.settings) : ''}${part.valve ? part.valve.positions.map((p) => `[${p.paths.join(' ')}]`).join('') : ''}`).join(', '),
+    circuit.parts
+      .map(
+        (part) =>
+          `${part.id} ${part.kind}${part.settings ? JSON.stringify(part.settings) : ''}${part.valve ? part.valve.positions.map((p) => `[${p.paths.join(' ')}]`).join('') : ''}`,
+      )
+      .join(', '),
     circuit.connections.map(({ from, to }) => `${from.part}.${from.port}-${to.part}.${to.port}`).join(' '),
   ].join(' | ');
 
@@ -51,11 +56,14 @@ test('open paths and pressures never contradict each other on 5,000 random circu
             'moved out by load': ['out', 'stands'],
           };
           if (!(allowed[verdict]?.includes(goes) ?? true)) {
-            wrong.push(`${verdict} but ${goes} (${flow * 60000}): ${paths.data.actuators[i]?.label} row ${row + 1} ${pumps} ${sketch(circuit)}`);
+            wrong.push(
+              `${verdict} but ${goes} (${flow * 60000}): ${paths.data.actuators[i]?.label} row ${row + 1} ${pumps} ${sketch(circuit)}`,
+            );
           }
         });
         paths.data.pumps.forEach((_, i) => {
-          if (paths.pump(i, row) === 'dead-headed') wrong.push(`dead-headed but solved: row ${row + 1} ${pumps} ${sketch(circuit)}`);
+          if (paths.pump(i, row) === 'dead-headed')
+            wrong.push(`dead-headed but solved: row ${row + 1} ${pumps} ${sketch(circuit)}`);
         });
       }
     }),
