@@ -277,18 +277,16 @@ test('removeConnections and removeLabels', () => {
   expect(() => build.placeLabel(PRESS, { x: 1, y: 2 }, 'a\nb')).toThrow(/control character/);
 });
 
-test('thousands of parts are copied and removed as one edit each, without searching all for each', () => {
+// A search through all parts for each of them would run into the time limit of a test.
+test('thousands of parts are copied and removed as one edit each', () => {
   const parts = Array.from({ length: 4000 }, (_, i): Part => ({ id: `T${i + 1}`, kind: 'tank', ...at(i, 0) }));
   const connections = parts
     .slice(1)
     .map((p, i) => ({ id: `c${i + 1}`, from: ref(`T${i + 1}.T`), to: { part: p.id, port: 'T' } }));
   const row: Circuit = { name: 'Row', parts, connections };
   const ids = parts.map((p) => p.id);
-  const begun = performance.now();
   const double = applyEdit(row, build.duplicate(row, ids, 0, 9).edit);
   expect([double.parts.length, double.connections.length]).toEqual([8000, 7998]);
   const copies = double.parts.slice(4000).map((p) => p.id);
   expect(applyEdit(double, build.removeParts(double, copies))).toStrictEqual(row);
-  // Far above what it takes, far below the minute that a search for each would take.
-  expect(performance.now() - begun).toBeLessThan(15_000);
 });
