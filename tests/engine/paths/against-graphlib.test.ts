@@ -74,6 +74,24 @@ test('a blocked line is fed or cut off, and a trapped one is cut off or stored',
   );
 });
 
+test('with the pressures, lines are blocked and trapped only where open paths say so', () => {
+  fc.assert(
+    fc.property(randomCircuit(3), fc.constantFrom('running' as const, 'stopped' as const), (circuit, pumps) => {
+      const table = new StateTable(tabulate(circuit, { pumps }, unlimited));
+      const paths = new StateTable(tabulate(circuit, { pumps }, unlimited, { pressureRows: 0 }));
+      for (let row = 0; row < table.count; row++) {
+        table.data.lines.forEach((_, line) => {
+          expect(table.line(line, row)).toBe(paths.line(line, row));
+          const blocked = table.blocked(line, row);
+          if (blocked !== undefined) expect(blocked).toBe(paths.blocked(line, row));
+          for (const reason of table.trapped(line, row)) expect(paths.trapped(line, row)).toContain(reason);
+        });
+      }
+    }),
+    { numRuns: 100, seed: 13 },
+  );
+});
+
 test('the words of a row say what the table says', () => {
   fc.assert(
     fc.property(
