@@ -1,4 +1,5 @@
 import type { Point, Turn } from '../base/points.ts';
+import type { StepPlan } from './plan.ts';
 
 /**
  * The circuit document: plain data, as it stands in a `*.spool.json` file. Nothing here is computed.
@@ -17,6 +18,8 @@ export interface Circuit {
   readonly rules?: readonly RuleText[];
   /** Named sets of loads, for the same machine in other work. */
   readonly loadCases?: readonly LoadCase[];
+  /** Sequences to be checked against the circuit. */
+  readonly plans?: readonly StepPlan[];
   readonly extra?: Extra;
 }
 
