@@ -1,5 +1,3 @@
-import type { Extra } from './model.ts';
-
 /** A step plan: what is commanded step by step, what should move, and what ends each step. As in the file; nothing is computed. */
 export interface StepPlan {
   readonly id: string;
@@ -9,7 +7,7 @@ export interface StepPlan {
   /** Id of the load case that it is played under; absent = the loads of the parts. */
   readonly loadCase?: string;
   readonly steps: readonly PlanStep[];
-  readonly extra?: Extra;
+  readonly extra?: Readonly<Record<string, unknown>>;
 }
 
 export interface PlanStep {
@@ -27,7 +25,7 @@ export interface PlanStep {
   /** Motions in trade notation, labels of actuators with + (out) or - (in): `CLAMP+ DRILL-`; absent = nothing is to move. */
   readonly expect?: string;
   readonly ends: StepEnd;
-  readonly extra?: Extra;
+  readonly extra?: Readonly<Record<string, unknown>>;
 }
 
 export type StepEnd =
