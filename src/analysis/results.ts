@@ -1,6 +1,6 @@
 import type { Circuit } from '../circuit/model.ts';
 import type { ActuatorAnswer, PumpAnswer, TrapAnswer } from '../engine/table/answers.ts';
-import type { RowNumbers } from '../engine/table/resolve.ts';
+import type { RowNumbers } from '../engine/table/row-numbers.ts';
 
 /** What holds for the whole table. */
 export interface Conditions {
@@ -28,7 +28,7 @@ export interface Explanation {
   readonly numbers: RowNumbers;
 }
 
-export type { RowNumbers } from '../engine/table/resolve.ts';
+export type { RowNumbers } from '../engine/table/row-numbers.ts';
 export type { Finding } from '../findings/finding.ts';
 export type {
   BleedAnswer,

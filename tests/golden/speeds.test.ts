@@ -1,7 +1,8 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { networkOf } from '../../src/analysis/analyse.ts';
-import { PressureSolver, rowNumbers } from '../../src/engine/table/resolve.ts';
+import { PressureSolver } from '../../src/engine/table/resolve.ts';
+import { rowNumbers } from '../../src/engine/table/row-numbers.ts';
 import { openCircuit } from '../../src/parts/open.ts';
 
 const BAR = 1e5;

@@ -4,8 +4,9 @@ import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import { actuatorByPressure, creeps, movesOverValve, PressureSolver, pumpByPressure, rowNumbers } from './resolve.ts';
-import type { RowNumbers } from './resolve.ts';
+import { actuatorByPressure, creeps, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
+import { rowNumbers } from './row-numbers.ts';
+import type { RowNumbers } from './row-numbers.ts';
 
 /** The pressure layer's part of an explanation: its verdicts in place of the open ones, and the figures behind them. */
 export interface PressureWords {

@@ -17,7 +17,7 @@ import { findWay, solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { enclosing, lineName, partId, partLabel, sideName, step, waySteps } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import type { RowNumbers } from './resolve.ts';
+import type { RowNumbers } from './row-numbers.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';
 import type { ActuatorVerdict } from './words.ts';
 
