@@ -1,13 +1,15 @@
 import type { Circuit, Part } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
-import type { ActuatorElement, PartKind, PressureValveElement } from '../parts/contract.ts';
+import type { ActuatorElement, DependentSpec, PartKind, PressureValveElement } from '../parts/contract.ts';
 import { findLines } from './lines.ts';
 import type {
   NetAccumulator,
   NetActuator,
+  NetDependent,
   NetInput,
   NetOpenPort,
   NetPath,
+  NetPressureSwitch,
   NetPressureValve,
   NetPump,
   NetRelief,
@@ -27,7 +29,10 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   const valves: NetPressureValve[] = [];
   const accumulators: NetAccumulator[] = [];
   const actuators: NetActuator[] = [];
+  const switches: NetPressureSwitch[] = [];
   const openPorts: NetOpenPort[] = [];
+  const commanded = circuit.parts.filter((part) => kindOf(part.kind).input?.(part)).length;
+  const found: { part: number; input: number; at: (port: string) => number; spec: DependentSpec }[] = [];
 
   circuit.parts.forEach((part, index) => {
     const kind = kindOf(part.kind);
@@ -37,8 +42,11 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
       return line;
     };
     const spec = kind.input?.(part);
-    const input = spec ? inputs.length : -1;
+    const own = spec ? inputs.length : -1;
     if (spec) inputs.push({ part: index, ...spec });
+    const dependent = kind.dependent?.(part);
+    const input = dependent ? commanded + found.length : own;
+    if (dependent) found.push({ part: index, input: own, at, spec: dependent });
 
     for (const element of kind.elements(part)) {
       switch (element.type) {
@@ -103,6 +111,9 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             precharge: element.precharge ?? 0,
           });
           break;
+        case 'pressure-switch':
+          switches.push({ part: index, line: at(element.port), on: element.on, off: element.off });
+          break;
         case 'actuator':
           actuators.push(compileActuator(element, index, at));
           break;
@@ -117,7 +128,21 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   });
 
   const parts = circuit.parts.map((part: Part) => ({ id: part.id, label: labelOf(part), kind: part.kind }));
-  return { lines, shown, inputs, paths, pumps, reliefs, valves, accumulators, actuators, parts, openPorts, lineOf };
+  return {
+    lines,
+    shown,
+    inputs,
+    paths,
+    pumps,
+    reliefs,
+    valves,
+    accumulators,
+    actuators,
+    switches,
+    parts,
+    openPorts,
+    lineOf,
+  };
 }
 
 /** A reducing valve is open until its outlet is up: a path that takes pressure away. */

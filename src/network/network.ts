@@ -7,12 +7,15 @@ export interface Network {
   /** The first `shown` lines are drawn; the others are single open ports, plugged. */
   readonly shown: number;
   readonly inputs: readonly NetInput[];
+  /** Valves that pressures or actuators move. `NetPath.input` counts on into them: input `inputs.length + d` is dependent d. */
+  readonly dependents: readonly NetDependent[];
   readonly paths: readonly NetPath[];
   readonly pumps: readonly NetPump[];
   readonly reliefs: readonly NetRelief[];
   readonly valves: readonly NetPressureValve[];
   readonly accumulators: readonly NetAccumulator[];
   readonly actuators: readonly NetActuator[];
+  readonly switches: readonly NetPressureSwitch[];
   readonly parts: readonly NetPart[];
   /** Ports with nothing on them that have something to say about it. */
   readonly openPorts: readonly NetOpenPort[];
@@ -43,6 +46,40 @@ export interface NetInput {
   readonly coils: readonly { readonly name: string; readonly position: number }[];
 }
 
+/** A valve whose position is no input of a state but follows from it. */
+export interface NetDependent {
+  readonly part: number;
+  /** Follows the label where the part is an input as well. */
+  readonly called?: string;
+  readonly positions: readonly string[];
+  /** Where springs put it; absent = it stays where it was left. */
+  readonly rest?: number;
+  /** The first that acts decides. */
+  readonly shifts: readonly NetShift[];
+}
+
+export type NetShift = NetPressureShift | NetRollerShift;
+
+/** Acts while Σ factor·p of its lines is at least the setting, Pa. */
+export interface NetPressureShift {
+  readonly by: 'pressure';
+  readonly position: number;
+  /** The pilot stage: acts only while this input stands in one of `stages` (bit mask); -1: none. */
+  readonly input: number;
+  readonly stages: number;
+  readonly signals: readonly { readonly line: number; readonly factor: number }[];
+  readonly setting: number;
+}
+
+export interface NetRollerShift {
+  readonly by: 'roller';
+  readonly position: number;
+  /** -1: there is none. */
+  readonly actuator: number;
+  /** At a stop, from a travel outwards, or up to one; m from the inner stop. */
+  readonly trip: { readonly at: 'in' | 'out' } | { readonly from: number } | { readonly upTo: number };
+}
+
 export interface NetPath {
   readonly part: number;
   readonly from: number;
@@ -51,7 +88,7 @@ export interface NetPath {
   readonly toPort: string;
   readonly oneWay: boolean;
   readonly throttled: boolean;
-  /** -1: open whatever the inputs are. */
+  /** -1: open whatever the inputs are. `inputs.length` and above: a dependent. */
   readonly input: number;
   /** Bit p set: open in position p of `input`. */
   readonly positions: number;
@@ -116,6 +153,14 @@ export interface NetAccumulator {
   readonly charged: boolean;
   /** Pa of gas when empty of oil; 0 = not given. */
   readonly precharge: number;
+}
+
+/** Comes on at or above `on` Pa, goes off at or below `off`, and keeps what it was between the two. */
+export interface NetPressureSwitch {
+  readonly part: number;
+  readonly line: number;
+  readonly on: number;
+  readonly off: number;
 }
 
 export interface NetActuator {

@@ -16,6 +16,7 @@ import { lockCheck } from './lock-check.ts';
 import { motor } from './motor.ts';
 import { oneWayThrottle } from './one-way-throttle.ts';
 import { plug } from './plug.ts';
+import { pressureSwitch } from './pressure-switch.ts';
 import { quickCoupling } from './quick-coupling.ts';
 import { reducingValve } from './reducing-valve.ts';
 import { reliefValve } from './relief-valve.ts';
@@ -53,6 +54,7 @@ export const CATALOGUE: readonly PartKind[] = [
   shuttleValve,
   accumulator,
   gauge,
+  pressureSwitch,
   quickCoupling,
   plug,
   junction,

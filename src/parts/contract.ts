@@ -27,6 +27,8 @@ export interface PartKind {
   readonly elements: (part: Part) => readonly Element[];
   /** Commanded positions; undefined for a part that nobody moves. */
   readonly input?: (part: Part) => InputSpec | undefined;
+  /** What moves it besides a hand; its paths' `positions` are then those of this spool. A two-stage valve has an input too. */
+  readonly dependent?: (part: Part) => DependentSpec | undefined;
   readonly draw: (part: Part, look: Look) => readonly Primitive[];
   /** Outline on the sheet in its own frame, without lines. */
   readonly bounds: (part: Part) => Box;
@@ -106,6 +108,38 @@ export interface InputSpec {
   readonly coils: readonly { readonly name: string; readonly position: number }[];
 }
 
+/** A valve whose position follows from pressures, or from where an actuator stands, in the same state. */
+export interface DependentSpec {
+  /** What it is called behind the part's label, where the part is an input as well: `main spool`. */
+  readonly called?: string;
+  readonly positions: readonly string[];
+  /** Where springs put it when nothing shifts it; absent = detent, it stays. */
+  readonly rest?: number;
+  /** The first that acts decides. */
+  readonly shifts: readonly ShiftSpec[];
+}
+
+export type ShiftSpec =
+  | {
+      readonly by: 'pressure';
+      readonly position: number;
+      /** Positions of the part's own input in which it can act; absent = any. */
+      readonly stage?: readonly number[];
+      /** It acts while Σ factor·p is at least the setting, Pa; drain or the other pilot counts negative. */
+      readonly signals: readonly { readonly port: string; readonly factor: number }[];
+      readonly setting: number;
+    }
+  | {
+      readonly by: 'roller';
+      readonly position: number;
+      /** Part id. */
+      readonly actuator: string;
+      readonly trip: RollerTrip;
+    };
+
+/** At a stop, from a travel outwards, or up to a travel (m from the inner stop). */
+export type RollerTrip = { readonly at: 'in' | 'out' } | { readonly from: number } | { readonly upTo: number };
+
 /** What a part does, in terms the network and the engines understand. Values are SI. */
 export type Element =
   | PathElement
@@ -136,6 +170,13 @@ export type Element =
       readonly charged: boolean;
       /** Gas volume, m³ */ readonly volume?: number;
       /** Gas pressure when empty of oil, Pa */ readonly precharge?: number;
+    }
+  | {
+      readonly type: 'pressure-switch';
+      readonly port: string;
+      /** Pa: comes on at or above `on`, goes off at or below `off`, keeps what it was between. */
+      readonly on: number;
+      readonly off: number;
     }
   | PressureValveElement
   | ActuatorElement;

@@ -60,3 +60,14 @@ test('the limit of a flow control stays with its path', () => {
   ]);
   expect(n.valves).toEqual([]);
 });
+
+test('a pressure switch stands on its line with the pressures at which it comes on and goes off', () => {
+  const n = net(
+    'G1 pressure-switch{setting=80 bar;difference=15 bar}, G2 pressure-switch{setting=5 bar;difference=9 bar}, C1 cylinder | A: G1.M C1.A G2.M',
+  );
+  const line = n.lineOf.get('C1.A');
+  expect(n.switches).toEqual([
+    { part: 0, line, on: 80e5, off: 65e5 },
+    { part: 1, line, on: 5e5, off: 0 },
+  ]);
+});

@@ -39,6 +39,7 @@ const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
   'quick-coupling': ['A', 'B'],
   plug: ['A'],
   gauge: ['M'],
+  'pressure-switch': ['M'],
   junction: ['J'],
 };
 
@@ -54,6 +55,7 @@ function portsNamed(element: Element): string[] {
       return [element.outlet, element.suction];
     case 'tank':
     case 'accumulator':
+    case 'pressure-switch':
       return [element.port];
     case 'actuator':
       return [element.a, ...(element.b === undefined ? [] : [element.b])];
@@ -89,9 +91,9 @@ function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number;
 const within = (box: Box, { x, y }: { x: number; y: number }): boolean =>
   x >= box.x - 1e-9 && x <= box.x + box.width + 1e-9 && y >= box.y - 1e-9 && y <= box.y + box.height + 1e-9;
 
-test('there are 27 kinds, each found by its name and in a known group', () => {
-  expect(CATALOGUE).toHaveLength(27);
-  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(27);
+test('there are 28 kinds, each found by its name and in a known group', () => {
+  expect(CATALOGUE).toHaveLength(28);
+  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(28);
   for (const kind of CATALOGUE) {
     expect(kindOf(kind.kind)).toBe(kind);
     expect(PART_GROUPS).toContain(kind.group);
@@ -206,6 +208,7 @@ test.each([
   ['regulator', 'reducing-valve'],
   ['or valve', 'shuttle-valve'],
   ['back pressure', 'check-valve-spring'],
+  ['pressostat', 'pressure-switch'],
 ])('searching "%s" finds %s', (query, id) => {
   expect(searchCatalogue(query).map((entry) => entry.readyMade.id)).toContain(id);
 });
