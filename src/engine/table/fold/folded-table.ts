@@ -1,7 +1,7 @@
 import type { Budget } from '../../../base/budget.ts';
 import { Cancelled } from '../../../base/budget.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
-import { Diagrams, NONE } from '../../paths/diagrams/diagrams.ts';
+import { ALL, Diagrams, NONE } from '../../paths/diagrams/diagrams.ts';
 import { classSet, PATH_CLASSES } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets, PathClass } from '../../paths/diagrams/open-paths.ts';
 import { planeToDiagram } from '../../paths/diagrams/plane.ts';
@@ -25,6 +25,8 @@ export interface Folded<W> {
   readonly rows: readonly FoldedRow<W>[];
   readonly otherwise: W;
   readonly otherwiseCount: bigint;
+  /** No description of any outcome has fewer rows; where false it is not known. */
+  readonly least: boolean;
 }
 
 export interface FoldedTable {
@@ -33,21 +35,29 @@ export interface FoldedTable {
   readonly lines: readonly Folded<LineClass>[];
 }
 
-/** Outcomes exclude each other and leave no combination out. The commonest one (the first of several) is the rest. */
+/**
+ * Outcomes exclude each other and leave no combination out, which is checked, as is every description against its
+ * set. The commonest outcome (the first of several) is the rest.
+ */
 export function foldOutcomes<W>(
   sets: Diagrams,
   outcomes: readonly { readonly word: W; readonly set: Diagram }[],
 ): Folded<W> {
   const counted = outcomes.map((outcome) => ({ ...outcome, count: sets.count(outcome.set) }));
+  const together = outcomes.reduce((all, { set }) => sets.or(all, set), NONE);
+  const sum = counted.reduce((n, { count }) => n + count, 0n);
+  if (together !== ALL || sum !== sets.total) throw new Error('outcomes overlap, or leave combinations out');
   const [first, ...others] = counted;
   if (first === undefined) throw new RangeError('there is no outcome');
   const rest = others.reduce((most, outcome) => (outcome.count > most.count ? outcome : most), first);
-  const rows = counted.flatMap(({ word, set }) =>
-    set === NONE || word === rest.word
-      ? []
-      : coverOf(sets, set).cubes.map((cube) => ({ cube, outcome: word, count: cubeCount(cube) })),
-  );
-  return { rows, otherwise: rest.word, otherwiseCount: rest.count };
+  let least = true;
+  const rows = counted.flatMap(({ word, set }) => {
+    if (set === NONE || word === rest.word) return [];
+    const cover = coverOf(sets, set);
+    if (!cover.least) least = false;
+    return cover.cubes.map((cube) => ({ cube, outcome: word, count: cubeCount(cube) }));
+  });
+  return { rows, otherwise: rest.word, otherwiseCount: rest.count, least };
 }
 
 /** The whole table, folded item by item. Throws `Cancelled` when the budget says so. */
