@@ -32,7 +32,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   const switches: NetPressureSwitch[] = [];
   const openPorts: NetOpenPort[] = [];
   const commanded = circuit.parts.filter((part) => kindOf(part.kind).input?.(part)).length;
-  const found: { part: number; input: number; at: (port: string) => number; spec: DependentSpec }[] = [];
+  const found: FoundDependent[] = [];
 
   circuit.parts.forEach((part, index) => {
     const kind = kindOf(part.kind);
@@ -90,6 +90,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             to: at(element.to),
             setting: element.setting,
             override: element.override ? element.override.rise / element.override.flow : 0,
+            ...(element.vent && { vent: { line: at(element.vent.port), pressure: element.vent.pressure } }),
           });
           break;
         case 'pump':
@@ -132,6 +133,9 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     lines,
     shown,
     inputs,
+    dependents: found.map((entry) =>
+      compileDependent(entry, (id) => actuators.findIndex((a) => parts[a.part]?.id === id)),
+    ),
     paths,
     pumps,
     reliefs,
@@ -142,6 +146,34 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     parts,
     openPorts,
     lineOf,
+  };
+}
+
+interface FoundDependent {
+  readonly part: number;
+  /** Its pilot stage; -1: none. */
+  readonly input: number;
+  readonly at: (port: string) => number;
+  readonly spec: DependentSpec;
+}
+
+function compileDependent({ part, input, at, spec }: FoundDependent, actuator: (id: string) => number): NetDependent {
+  const { shifts, ...rest } = spec;
+  return {
+    part,
+    ...rest,
+    shifts: shifts.map((shift) =>
+      shift.by === 'roller'
+        ? { ...shift, actuator: actuator(shift.actuator) }
+        : {
+            by: 'pressure',
+            position: shift.position,
+            input: shift.stage ? input : -1,
+            stages: (shift.stage ?? []).reduce((mask, p) => mask | (1 << p), 0),
+            signals: shift.signals.map(({ port, factor }) => ({ line: at(port), factor })),
+            setting: shift.setting,
+          },
+    ),
   };
 }
 

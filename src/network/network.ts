@@ -126,6 +126,8 @@ export interface NetRelief {
   readonly setting: number;
   /** Pa for each m³/s over it; 0 = not given. */
   readonly override: number;
+  /** Pilot operated: it opens already `pressure` Pa over that line, in which its pilot stage lets no more stand than `setting` less this. */
+  readonly vent?: { readonly line: number; readonly pressure: number };
 }
 
 /** A valve that pressures open or close: sequence, unloading, counterbalance, reducing. Shut backwards. */

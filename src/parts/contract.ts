@@ -153,6 +153,8 @@ export type Element =
         readonly rise: number;
         readonly flow: number;
       };
+      /** Pilot operated: opens already this many Pa over the pressure at `port`, which its pilot stage limits. A path from → port feeds it. */
+      readonly vent?: { readonly port: string; readonly pressure: number };
     }
   | {
       readonly type: 'pump';
