@@ -12,10 +12,12 @@ import {
   type Label,
   type LoadCase,
   type Part,
+  type PartGroup,
   type PortRef,
   type RuleText,
   type ValveData,
 } from './model.ts';
+import { checkStepIds, toPlan } from './plan-file.ts';
 import { quote, sayIssue, shorten } from './problems.ts';
 import {
   fileSchema,
@@ -23,6 +25,7 @@ import {
   KNOWN,
   type FileCircuit,
   type FileConnection,
+  type FileGroup,
   type FileLabel,
   type FileLoadCase,
   type FilePart,
@@ -70,7 +73,7 @@ function checkFormat(raw: RawFile): Problem | undefined {
 }
 
 function checkSize(raw: RawFile): Problem | undefined {
-  for (const field of ['parts', 'connections', 'labels', 'rules', 'loadCases'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans'] as const) {
     const list = raw[field];
     if (Array.isArray(list) && list.length > LIMITS[field]) {
       return {
@@ -149,6 +152,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       to: toPort(connection.to),
       name: connection.name,
       use: connection.use,
+      size: connection.size,
       bends: connection.bends?.map(toPoint),
       extra: extraOf(connection, KNOWN.connection, ['connections', i]),
     });
@@ -158,6 +162,13 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       at: toPoint(label.at),
       text: label.text,
       extra: extraOf(label, KNOWN.label, ['labels', i]),
+    });
+  const toGroup = (group: FileGroup, i: number): PartGroup =>
+    solid<Required<PartGroup>>({
+      id: group.id,
+      name: group.name,
+      parts: group.parts,
+      extra: extraOf(group, KNOWN.group, ['groups', i]),
     });
   const toRule = (rule: FileRule, i: number): RuleText =>
     solid<Required<RuleText>>({ id: rule.id, text: rule.text, extra: extraOf(rule, KNOWN.rule, ['rules', i]) });
@@ -170,15 +181,17 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     parts: file.parts.map(toPart),
     connections: file.connections.map(toConnection),
     labels: file.labels?.map(toLabel),
+    groups: file.groups?.map(toGroup),
     rules: file.rules?.map(toRule),
     loadCases: file.loadCases?.map(toLoadCase),
+    plans: file.plans?.map((plan, i) => toPlan(plan, i, extraOf)),
     extra: extraOf(file, KNOWN.circuit, []),
   });
 }
 
 function checkIds(circuit: Circuit): Problem[] {
   const problems: Problem[] = [];
-  for (const field of ['parts', 'connections', 'labels', 'rules', 'loadCases'] as const) {
+  for (const field of ['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans'] as const) {
     const first = new Map<string, number>();
     for (const [i, { id }] of (circuit[field] ?? []).entries()) {
       const before = first.get(id);
@@ -203,7 +216,7 @@ function checkIds(circuit: Circuit): Problem[] {
       });
     }
   }
-  return problems;
+  return [...problems, ...checkStepIds(circuit.plans ?? [])];
 }
 
 function checkConnections(circuit: Circuit, warnings: Problem[]): Problem[] {

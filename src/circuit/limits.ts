@@ -7,8 +7,15 @@ export const LIMITS = {
   labels: 10_000,
   rules: 1_000,
   loadCases: 100,
+  plans: 100,
+  /** Steps of one plan. */
+  steps: 500,
+  /** Coils, levers or pumps named in one step, and actuators or valves named before the first. */
+  named: 1_000,
   /** Bend points of one connection. */
   bends: 1_000,
+  /** Blocks drawn round parts. */
+  groups: 1_000,
   /** Modules from the sheet's origin. */
   coordinate: 100_000,
   id: 100,
@@ -26,6 +33,9 @@ export const LIMITS = {
 /** Ids of parts, ports, connections and labels. */
 export const ID = /^[A-Za-z0-9_-]+$/;
 export const PORT_REF = /^[A-Za-z0-9_-]+\.[A-Za-z0-9_-]+$/;
+
+/** Part id and coil name, which may be any word. */
+export const COIL_REF = /^[A-Za-z0-9_-]+\.[^\u0000-\u001f\u007f-\u009f\u2028\u2029]+$/;
 
 /** C0 and C1 control characters and the two Unicode line breaks: nothing that one line of text can hold. */
 export const ONE_LINE = /^[^\u0000-\u001f\u007f-\u009f\u2028\u2029]*$/;

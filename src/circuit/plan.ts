@@ -4,6 +4,8 @@ export interface StepPlan {
   readonly name: string;
   /** Where actuators stand before the first step, by part id: `in`, `out`, or a distance from in (`"120 mm"`); absent = `in`. */
   readonly start?: Readonly<Record<string, string>>;
+  /** Where valves without a rest stand before the first step: part id → position name; absent = the first position. */
+  readonly standing?: Readonly<Record<string, string>>;
   /** Id of the load case that it is played under; absent = the loads of the parts. */
   readonly loadCase?: string;
   readonly steps: readonly PlanStep[];
@@ -11,6 +13,7 @@ export interface StepPlan {
 }
 
 export interface PlanStep {
+  /** Unique within its plan. */
   readonly id: string;
   readonly name?: string;
   /** Coils on during the step, `V1.a` (part id, coil name); all others are off. */
@@ -25,14 +28,17 @@ export interface PlanStep {
   /** Motions in trade notation, labels of actuators with + (out) or - (in): `CLAMP+ DRILL-`; absent = nothing is to move. */
   readonly expect?: string;
   readonly ends: StepEnd;
+  /** Time that the step may take at most (`"20 s"`); absent = what the checker allows every step. */
+  readonly within?: string;
   readonly extra?: Readonly<Record<string, unknown>>;
 }
 
-export type StepEnd =
-  /** Every expected motion has come to its end stop. */
-  | { readonly by: 'motion' }
-  /** A sensor on an actuator (part id): `in`, `out`, or a distance from in. */
+export type StepEnd = (
+  | /** Every expected motion has come to its end stop. */
+    { readonly by: 'motion' }
+    /** A sensor on an actuator (part id): `in`, `out`, or a distance from in. */
   | { readonly by: 'sensor'; readonly actuator: string; readonly at: string }
   /** A pressure switch (part id) goes over its setting, or back under it. */
   | { readonly by: 'pressure'; readonly switch: string; readonly turns: 'on' | 'off' }
-  | { readonly by: 'time'; readonly after: string };
+  | { readonly by: 'time'; readonly after: string }
+) & { readonly extra?: Readonly<Record<string, unknown>> };

@@ -2,7 +2,7 @@ import type { z } from 'zod';
 import type { Problem } from '../base/result.ts';
 import { sayPath } from './json.ts';
 import { LIMITS } from './limits.ts';
-import { HALVES } from './schema.ts';
+import { HALVES } from './schema-words.ts';
 
 type Issue = z.core.$ZodIssue;
 
@@ -40,7 +40,9 @@ export function sayIssue(issue: Issue, root: unknown): Problem {
   const value = valueAt(root, issue.path);
   const wanted = want(issue);
   if (value === undefined) return { where, what: 'This field is missing.', remedy: wanted ?? 'Add it.' };
-  const [what, remedy] = issue.message.split(HALVES);
+  // What is wrong with the name of an entry is told by the name's own issue.
+  const told = issue.code === 'invalid_key' ? (issue.issues[0]?.message ?? issue.message) : issue.message;
+  const [what, remedy] = told.split(HALVES);
   if (what !== undefined && remedy !== undefined) return { where, what, remedy };
   if (issue.code === 'invalid_type')
     return { where, what: `This is ${nounOf(value)}.`, remedy: wanted ?? 'Change it.' };

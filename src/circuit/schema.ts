@@ -1,29 +1,10 @@
 import { z } from 'zod';
-import { ID, ID_REMEDY, LIMITS, ONE_LINE, PORT_REF, RESERVED, SEVERAL_LINES } from './limits.ts';
-
-// The page forbids building code from text, and zod would try to.
-z.config({ jitless: true });
+import { plan } from './plan-schema.ts';
+import { LIMITS, ONE_LINE, PORT_REF, RESERVED, SEVERAL_LINES } from './limits.ts';
+import { id, line, say } from './schema-words.ts';
 
 export const FORMAT = 'spooltable-circuit';
 export const VERSION = 1;
-
-/** Parts a zod message into the two halves of a problem; see `problems.ts`. */
-export const HALVES = '\n';
-const say = (what: string, remedy: string): string => what + HALVES + remedy;
-
-const id = z
-  .string()
-  .max(LIMITS.id, say(`This id is longer than ${LIMITS.id} characters.`, ID_REMEDY))
-  .regex(ID, say('This is no id.', ID_REMEDY))
-  .refine((text) => !RESERVED.has(text), say('This word cannot be an id.', 'Choose another id.'));
-
-const line = z
-  .string()
-  .max(LIMITS.label, say(`This text is longer than ${LIMITS.label} characters.`, 'Shorten it.'))
-  .regex(
-    ONE_LINE,
-    say('This text holds a control character.', 'Remove tabs, line breaks and other control characters.'),
-  );
 
 const portRef = z
   .string()
@@ -81,6 +62,7 @@ const connection = z.looseObject({
   to: portRef,
   name: line.min(1, say('The name is empty.', 'Write a name or leave the field out.')).optional(),
   use: z.enum(['working', 'pilot', 'drain']).optional(),
+  size: line.optional().meta({ description: 'size of tube or hose, such as "12x1.5"; drawn only' }),
   bends: z
     .array(spot)
     .max(LIMITS.bends, say('Too many bends.', `Use at most ${LIMITS.bends}.`))
@@ -88,6 +70,15 @@ const connection = z.looseObject({
 });
 
 const label = z.looseObject({ id, at: spot, text: line });
+
+const group = z.looseObject({
+  id,
+  name: line.min(1, say('The name is empty.', 'Write a name, such as "Block 1".')),
+  parts: z
+    .array(id)
+    .max(LIMITS.parts, say('Too many parts.', `Use at most ${LIMITS.parts}.`))
+    .meta({ description: 'ids of the parts inside the enclosure' }),
+});
 
 const rule = z.looseObject({
   id,
@@ -124,6 +115,10 @@ export const fileSchema = z
       .array(label)
       .max(LIMITS.labels, say('Too many labels.', `Use at most ${LIMITS.labels}.`))
       .optional(),
+    groups: z
+      .array(group)
+      .max(LIMITS.groups, say('Too many blocks.', `Use at most ${LIMITS.groups}.`))
+      .optional(),
     rules: z
       .array(rule)
       .max(LIMITS.rules, say('Too many rules.', `Use at most ${LIMITS.rules}.`))
@@ -131,6 +126,10 @@ export const fileSchema = z
     loadCases: z
       .array(loadCase)
       .max(LIMITS.loadCases, say('Too many load cases.', `Use at most ${LIMITS.loadCases}.`))
+      .optional(),
+    plans: z
+      .array(plan)
+      .max(LIMITS.plans, say('Too many step plans.', `Use at most ${LIMITS.plans}.`))
       .optional(),
   })
   .meta({
@@ -142,6 +141,7 @@ export type FileCircuit = z.infer<typeof fileSchema>;
 export type FilePart = z.infer<typeof part>;
 export type FileConnection = z.infer<typeof connection>;
 export type FileLabel = z.infer<typeof label>;
+export type FileGroup = z.infer<typeof group>;
 export type FileRule = z.infer<typeof rule>;
 export type FileLoadCase = z.infer<typeof loadCase>;
 export type FileValve = z.infer<typeof valve>;
@@ -153,8 +153,11 @@ export const KNOWN = {
   part: fields(part.shape),
   connection: fields(connection.shape),
   label: fields(label.shape),
+  group: fields(group.shape),
   rule: fields(rule.shape),
   loadCase: fields(loadCase.shape),
+  plan: fields(plan.shape),
+  step: fields(plan.shape.steps.element.shape),
   valve: fields(valve.shape),
   valvePort: fields(valve.shape.ports.element.shape),
   valvePosition: fields(valve.shape.positions.element.shape),

@@ -7,13 +7,17 @@ import {
   type Label,
   type LoadCase,
   type Part,
+  type PartGroup,
   type RuleText,
   type ValveData,
 } from './model.ts';
+import type { PlanStep, StepEnd, StepPlan } from './plan.ts';
 import { FORMAT, VERSION } from './schema.ts';
 
 type Fields = Record<string, unknown>;
 const WIDTH = 160;
+/** Lists that have a line for each member. */
+const LISTS: ReadonlySet<string> = new Set(['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans']);
 
 /**
  * The circuit as text of a `*.spool.json` file. Fields come in a fixed order, parts and connections in the
@@ -30,15 +34,15 @@ export function writeCircuit(circuit: Circuit): string {
       parts: circuit.parts.map(partFields),
       connections: circuit.connections.map(connectionFields),
       labels: circuit.labels?.map(labelFields),
+      groups: circuit.groups?.map(groupFields),
       rules: circuit.rules?.map(ruleFields),
       loadCases: circuit.loadCases?.map(loadCaseFields),
+      plans: circuit.plans?.map(planFields),
     },
     circuit.extra,
   );
   const lines = Object.entries(fields).map(([key, value]) => {
-    const isList =
-      key === 'parts' || key === 'connections' || key === 'labels' || key === 'rules' || key === 'loadCases';
-    return `  ${JSON.stringify(key)}: ${isList ? broken(value as unknown[], 2) : pretty(value, 2, key.length + 4)}`;
+    return `  ${JSON.stringify(key)}: ${LISTS.has(key) ? broken(value as unknown[], 2) : pretty(value, 2, key.length + 4)}`;
   });
   return `{\n${lines.join(',\n')}\n}\n`;
 }
@@ -85,6 +89,7 @@ const connectionFields = (connection: Connection): Fields =>
       to: sayPort(connection.to),
       name: connection.name,
       use: connection.use,
+      size: connection.size,
       bends: connection.bends?.map(pair),
     },
     connection.extra,
@@ -93,9 +98,19 @@ const connectionFields = (connection: Connection): Fields =>
 const labelFields = (label: Label): Fields =>
   withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
 
+const groupFields = ({ id, name, parts, extra }: PartGroup): Fields => withExtra({ id, name, parts }, extra);
+
 const ruleFields = (rule: RuleText): Fields => withExtra({ id: rule.id, text: rule.text }, rule.extra);
 
 const loadCaseFields = ({ id, name, loads, extra }: LoadCase): Fields => withExtra({ id, name, loads }, extra);
+
+const planFields = ({ id, name, start, standing, loadCase, steps, extra }: StepPlan): Fields =>
+  withExtra({ id, name, start, standing, loadCase, steps: steps.map(stepFields) }, extra);
+
+const stepFields = ({ id, name, coils, levers, stopped, expect, ends, within, extra }: PlanStep): Fields =>
+  withExtra({ id, name, coils, levers, stopped, expect, ends: endFields(ends), within }, extra);
+
+const endFields = ({ extra, ...known }: StepEnd): Fields => withExtra(known, extra);
 
 /** Known fields first and never overruled by an unknown one of the same name. */
 function withExtra(fields: Fields, extra: Extra | undefined): Fields {

@@ -56,6 +56,14 @@ describe('round trip', () => {
       connections: [{ id: 'c1', from: 'V1.P', to: 'V1.T', hose: true }],
       labels: [{ id: 't1', at: [0, 0], text: 'x', font: 'y' }],
       rules: [{ id: 'r1', text: 'never V1 at a', why: 'both' }],
+      plans: [
+        {
+          id: 'p1',
+          name: 'Cycle',
+          steps: [{ id: 's1', ends: { by: 'sensor', actuator: 'C1', at: 'out', make: 'x' }, lamp: 1 }],
+          shift: 2,
+        },
+      ],
       budget: 3,
     });
     const result = readCircuit(text);
@@ -68,6 +76,9 @@ describe('round trip', () => {
       'connections[0].hose',
       'labels[0].font',
       'rules[0].why',
+      'plans[0].steps[0].ends.make',
+      'plans[0].steps[0].lamp',
+      'plans[0].shift',
       'budget',
     ]);
     expect(JSON.parse(writeCircuit(read(text)))).toEqual(JSON.parse(text));
@@ -77,6 +88,23 @@ describe('round trip', () => {
     const circuit = read(file({ extra: { a: 1 } }));
     expect(circuit.extra).toEqual({ extra: { a: 1 } });
     expect(JSON.parse(writeCircuit(circuit))).toHaveProperty('extra', { a: 1 });
+  });
+
+  test('a plan is read whatever it speaks of, since parts may be drawn later', () => {
+    const plans = [
+      {
+        id: 'p1',
+        name: 'Cycle',
+        start: { C9: 'half way' },
+        standing: { V9: 'nowhere' },
+        loadCase: 'none',
+        steps: [
+          { id: 's1', coils: ['V9.far left'], expect: 'NOBODY+', ends: { by: 'motion' }, within: 'soon' },
+          { id: 's2', levers: { V9: 'x' }, stopped: ['P9'], ends: { by: 'pressure', switch: 'S9', turns: 'on' } },
+        ],
+      },
+    ];
+    expect(read(file({ plans })).plans).toEqual(plans);
   });
 
   test('script text in labels is text', () => {
@@ -156,6 +184,19 @@ describe('the written text', () => {
 `);
   });
 
+  test('a plan has a line for each step', () => {
+    const steps = Array.from({ length: 3 }, (_, i) => ({
+      id: `s${i}`,
+      coils: ['V1.a'],
+      expect: 'C1+',
+      ends: { by: 'sensor', actuator: 'C1', at: 'out' } as const,
+    }));
+    const text = writeCircuit({ ...circuit, plans: [{ id: 'p1', name: 'Cycle', steps }] });
+    expect(text).toContain(
+      '\n        { "id": "s1", "coils": ["V1.a"], "expect": "C1+", "ends": { "by": "sensor", "actuator": "C1", "at": "out" } },\n',
+    );
+  });
+
   test('no line is over 160 characters while it can be broken', () => {
     const settings = Object.fromEntries(Array.from({ length: 12 }, (_, i) => [`setting-${i}`, `${i} L/min of oil`]));
     const text = writeCircuit({
@@ -186,6 +227,19 @@ describe('size', () => {
     expect(read(text(10_000)).parts.length).toBe(10_000);
     expect(said(readCircuit(text(10_001)))).toEqual([
       'parts: The circuit has 10001 parts; at most 10000 can be read. Split it into several circuits.',
+    ]);
+  });
+  test('more than 100 plans, or 500 steps in one, are refused', () => {
+    const plan = (i: number, steps: number): object => ({
+      id: `p${i}`,
+      name: 'Cycle',
+      steps: many(steps, (n) => ({ id: `s${n}`, ends: { by: 'motion' } })),
+    });
+    expect(read(file({ plans: many(100, (i) => plan(i, 1)) })).plans?.length).toBe(100);
+    expect(said(readCircuit(file({ plans: many(101, (i) => plan(i, 1)) })))[0]).toMatch(/^plans: The circuit has 101/);
+    expect(read(file({ plans: [plan(0, 500)] })).plans?.[0]?.steps.length).toBe(500);
+    expect(said(readCircuit(file({ plans: [plan(0, 501)] })))).toEqual([
+      'plans[0].steps: Too many steps. Use at most 500.',
     ]);
   });
   test('more than 40,000 connections are refused', () => {

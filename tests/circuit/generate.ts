@@ -11,6 +11,8 @@ import type {
   RuleText,
   ValveData,
 } from '../../src/circuit/model.ts';
+import { KNOWN_ENDS } from '../../src/circuit/plan-schema.ts';
+import type { PlanStep, StepEnd, StepPlan } from '../../src/circuit/plan.ts';
 import { KNOWN } from '../../src/circuit/schema.ts';
 
 const RESERVED = /"(__proto__|constructor|prototype)":/;
@@ -151,6 +153,57 @@ const loadCase: fc.Arbitrary<LoadCase> = fc.record(
   { requiredKeys: ['id', 'name', 'loads'], noNullPrototype: true },
 );
 
+const placed = fc.constantFrom('in', 'out', '120 mm', 'half way');
+const byPart = (value: fc.Arbitrary<string>): fc.Arbitrary<Record<string, string>> =>
+  fc.dictionary(id, value, { maxKeys: 3, noNullPrototype: true });
+const stepEnd: fc.Arbitrary<StepEnd> = fc
+  .oneof(
+    fc.constant({ by: 'motion' } as const),
+    fc.record({ by: fc.constant('sensor' as const), actuator: id, at: placed }),
+    fc.record({
+      by: fc.constant('pressure' as const),
+      switch: id,
+      turns: fc.constantFrom('on' as const, 'off' as const),
+    }),
+    fc.record({ by: fc.constant('time' as const), after: fc.constantFrom('2 s', '500 ms') }),
+  )
+  .chain((end) =>
+    fc
+      .option(unknownFields(KNOWN_ENDS[end.by]), { nil: undefined })
+      .map((extra) => ({ ...end, ...(extra && { extra }) })),
+  );
+
+const step: fc.Arbitrary<PlanStep> = fc.record(
+  {
+    id,
+    name: words,
+    coils: fc.array(
+      fc.tuple(id, words).map(([part, name]) => `${part}.${name}`),
+      { maxLength: 3 },
+    ),
+    levers: byPart(words),
+    stopped: fc.array(id, { maxLength: 2 }),
+    expect: fc.oneof(fc.constantFrom('A+', 'A+ B-'), words),
+    ends: stepEnd,
+    within: fc.constantFrom('20 s', '1 min'),
+    extra: unknownFields(KNOWN.step),
+  },
+  { requiredKeys: ['id', 'ends'], noNullPrototype: true },
+);
+
+const plan: fc.Arbitrary<StepPlan> = fc.record(
+  {
+    id,
+    name: words,
+    start: byPart(placed),
+    standing: byPart(words),
+    loadCase: id,
+    steps: fc.uniqueArray(step, { maxLength: 4, selector: (s) => s.id }),
+    extra: unknownFields(KNOWN.plan),
+  },
+  { requiredKeys: ['id', 'name', 'steps'], noNullPrototype: true },
+);
+
 /** Any circuit that a file can hold, unknown fields at every level among it. */
 export const anyCircuit: fc.Arbitrary<Circuit> = fc
   .uniqueArray(fc.tuple(id, partFields), { maxLength: 6, selector: ([own]) => own })
@@ -174,6 +227,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
         labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
         rules: fc.uniqueArray(rule, { maxLength: 3, selector: (r) => r.id }),
         loadCases: fc.uniqueArray(loadCase, { maxLength: 3, selector: (l) => l.id }),
+        plans: fc.uniqueArray(plan, { maxLength: 2, selector: (p) => p.id }),
         extra: unknownFields(KNOWN.circuit),
       },
       { requiredKeys: ['name', 'parts', 'connections'], noNullPrototype: true },

@@ -15,6 +15,8 @@ const file = (fields: object): string =>
   });
 const part = (fields: object): string => file({ parts: [{ id: 'T1', kind: 'tank', ...fields }] });
 const line = (...connections: object[]): string => file({ connections });
+const plan = (fields: object, step: object = {}): string =>
+  file({ plans: [{ id: 'p', name: 'Cycle', steps: [{ id: 's', ends: { by: 'motion' }, ...step }], ...fields }] });
 
 function refusals(text: string): string[] {
   const result = readCircuit(text);
@@ -128,6 +130,55 @@ const SHAPE: [string, string, RegExp][] = [
     'an unknown operator',
     part({ valve: { ports: [], positions: [], left: ['string'], right: [] } }),
     /^parts\[0\]\.valve\.left\[0\]: "string" is not allowed here\. Use "lever", /,
+  ],
+  ['a plan without a name', plan({ name: undefined }), /^plans\[0\]\.name: This field is missing/],
+  [
+    'a plan for a part id that is none',
+    plan({ start: { 'C 1': 'in' } }),
+    /^plans\[0\]\.start\["?C 1"?\]: This is no id\. Use letters/,
+  ],
+  ['a step without an end', plan({}, { ends: undefined }), /^plans\[0\]\.steps\[0\]\.ends: This field is missing/],
+  [
+    'a step that ends by chance',
+    plan({}, { ends: { by: 'chance' } }),
+    /^plans\[0\]\.steps\[0\]\.ends.*: This does not end a step\. Use an object with "by"/,
+  ],
+  [
+    'a switch that turns round',
+    plan({}, { ends: { by: 'pressure', switch: 'S1', turns: 'round' } }),
+    /^plans\[0\]\.steps\[0\]\.ends\.turns: "round" is not allowed here\. Use "on", "off"/,
+  ],
+  ['a coil of no valve', plan({}, { coils: ['a'] }), /^plans\[0\]\.steps\[0\]\.coils\[0\]: This is no coil\..*"V1\.a"/],
+  [
+    'a control character in motions',
+    plan({}, { expect: 'C1+\n' }),
+    /^plans\[0\]\.steps\[0\]\.expect: This text holds a control character/,
+  ],
+  [
+    'a plan id taken',
+    file({
+      plans: [
+        { id: 'p', name: 'a', steps: [] },
+        { id: 'p', name: 'b', steps: [] },
+      ],
+    }),
+    /^plans\[1\]\.id: The id "p" is taken by plans\[0\]/,
+  ],
+  [
+    'a step id taken',
+    file({
+      plans: [
+        {
+          id: 'p',
+          name: 'a',
+          steps: [
+            { id: 's', ends: { by: 'motion' } },
+            { id: 's', ends: { by: 'motion' } },
+          ],
+        },
+      ],
+    }),
+    /^plans\[0\]\.steps\[1\]\.id: The id "s" is taken by plans\[0\]\.steps\[0\]/,
   ],
   ['no connections', JSON.stringify({ ...HEAD, parts: [] }), /^connections: This field is missing/],
   [

@@ -28,16 +28,26 @@ describe('a second validator, on the published schema', () => {
     parts: [{ id: 'T1', kind: 'tank', ...fields }],
     connections: [],
   });
+  const plan = (ends: object, fields: object = {}): object => ({
+    id: 'p',
+    name: 'Cycle',
+    steps: [{ id: 's', ends, ...fields }],
+  });
   const GOOD: [string, object][] = [
     ['a bare part', tank({})],
     ['a placed, turned part', tank({ at: [-3, 4.5], turn: 270, flip: true })],
     ['settings of each sort', tank({ settings: { volume: '40 L', heated: false, baffles: 2 } })],
     ['rules', { ...tank({}), rules: [{ id: 'r1', text: 'never C1 moves' }] }],
+    ['step plans', { ...tank({}), plans: [plan({ by: 'time', after: '2 s' }), { id: 'q', name: '', steps: [] }] }],
     ['unknown fields', { ...tank({ mass: 3 }), budget: [] }],
   ];
   const BAD: [string, object][] = [
     ['an empty rule', { ...tank({}), rules: [{ id: 'r1', text: '' }] }],
     ['a rule of two lines', { ...tank({}), rules: [{ id: 'r1', text: 'never\nT1' }] }],
+    ['a plan without steps', { ...tank({}), plans: [{ id: 'p', name: 'Cycle' }] }],
+    ['a step that ends by chance', { ...tank({}), plans: [plan({ by: 'chance' })] }],
+    ['a step that ends by a sensor nowhere', { ...tank({}), plans: [plan({ by: 'sensor', actuator: 'C1' })] }],
+    ['a coil without its valve', { ...tank({}), plans: [plan({ by: 'motion' }, { coils: ['a'] })] }],
     ['another format', { ...tank({}), format: 'x' }],
     ['another version', { ...tank({}), version: 2 }],
     ['no name', { ...tank({}), name: undefined }],
