@@ -110,6 +110,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             line: at(element.port),
             charged: element.charged,
             precharge: element.precharge ?? 0,
+            ...(element.volume !== undefined && { volume: element.volume }),
           });
           break;
         case 'pressure-switch':
@@ -208,6 +209,7 @@ function compileActuator(element: ActuatorElement, part: number, at: (port: stri
     rotary: element.motion === 'rotary',
     areaA: element.areaA,
     areaB: element.areaB,
+    ...(element.stroke !== undefined && { stroke: element.stroke }),
     push: { way, by: gravity ? 'load' : 'spring', size: gravity ? load.size : 0 },
     resisting: load.sense === 'resisting' && load.size > 0,
     forces: {

@@ -155,6 +155,8 @@ export interface NetAccumulator {
   readonly charged: boolean;
   /** Pa of gas when empty of oil; 0 = not given. */
   readonly precharge: number;
+  /** m³ of gas when empty of oil; absent = not given. */
+  readonly volume?: number;
 }
 
 /** Comes on at or above `on` Pa, goes off at or below `off`, and keeps what it was between the two. */
@@ -174,6 +176,8 @@ export interface NetActuator {
   /** m²; rotary: m³/rad. */
   readonly areaA: number;
   readonly areaB: number;
+  /** m from stop to stop; absent = endless, as a motor is. */
+  readonly stroke?: number;
   /** What pushes it at rest, with its size (N; rotary: N·m). */
   readonly push: {
     readonly way: 'none' | 'in' | 'out' | 'both';
