@@ -187,7 +187,7 @@ export function connectToConnection(
 }
 
 /** On which stretch between bends a point lies; the outer stretches are taken to the middles of the parts. */
-function bendsBefore(circuit: Circuit, connection: Connection, at: Point): number {
+export function bendsBefore(circuit: Circuit, connection: Connection, at: Point): number {
   const bends = connection.bends ?? [];
   const start = partOf(circuit, connection.from.part).at ?? bends[0] ?? at;
   const end = partOf(circuit, connection.to.part).at ?? bends.at(-1) ?? at;

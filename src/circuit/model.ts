@@ -20,6 +20,8 @@ export interface Circuit {
   readonly loadCases?: readonly LoadCase[];
   /** Sequences to be checked against the circuit. */
   readonly plans?: readonly StepPlan[];
+  /** Parts drawn inside one enclosure, such as a manifold block. */
+  readonly groups?: readonly PartGroup[];
   readonly extra?: Extra;
 }
 
@@ -54,6 +56,8 @@ export interface Connection {
   /** Names the line that this connection belongs to. */
   readonly name?: string;
   readonly use?: 'working' | 'pilot' | 'drain';
+  /** Size of tube or hose as the user notes it, such as `12x1.5`; drawn, not computed with. */
+  readonly size?: string;
   /** Bend points set by the user, in modules. */
   readonly bends?: readonly Point[];
   readonly extra?: Extra;
@@ -69,6 +73,14 @@ export interface Label {
   readonly id: string;
   readonly at: Point;
   readonly text: string;
+  readonly extra?: Extra;
+}
+
+/** Drawn as a dash-dot enclosure with its name; its parts move together. Ids of parts that are gone mean nothing. */
+export interface PartGroup {
+  readonly id: string;
+  readonly name: string;
+  readonly parts: readonly string[];
   readonly extra?: Extra;
 }
 
