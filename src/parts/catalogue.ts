@@ -15,6 +15,7 @@ import { junction } from './junction.ts';
 import { lockCheck } from './lock-check.ts';
 import { motor } from './motor.ts';
 import { oneWayThrottle } from './one-way-throttle.ts';
+import { pilotReliefValve } from './pilot-relief-valve.ts';
 import { plug } from './plug.ts';
 import { pressureSwitch } from './pressure-switch.ts';
 import { quickCoupling } from './quick-coupling.ts';
@@ -41,6 +42,7 @@ export const CATALOGUE: readonly PartKind[] = [
   directionalValve,
   shutOffValve,
   reliefValve,
+  pilotReliefValve,
   sequenceValve,
   unloadingValve,
   counterbalanceValve,

@@ -1,6 +1,7 @@
 import type { PartKind } from './contract.ts';
+import { adjustableSpring } from './pressure-valve.ts';
 import { quantitySetting, readSi } from './settings.ts';
-import { arrow, boxOf, circle, leftOpen, port, rectangle, spring, stroke } from './shapes.ts';
+import { boxOf, circle, leftOpen, port, rectangle, stroke } from './shapes.ts';
 
 const SETTING = quantitySetting(
   { id: 'setting', title: 'Switches on at', help: 'Pressure, rising, at which its contact changes over.' },
@@ -50,8 +51,7 @@ export const pressureSwitch: PartKind = {
     stroke('fine', [-0.85, 0.05], [1, -1.05]),
     stroke('fine', [-1.1, 0.48], [-1.1, 1.1]),
     stroke('fine', [1.1, 0.48], [1.1, 1.1]),
-    spring('fine', 2, 4.7, 0),
-    ...arrow('fine', [2.2, 2], [4.6, -2.2], 0.9, 0.65),
+    ...adjustableSpring(),
   ],
   bounds: () => boxOf(-2, -3, 7, 7),
   check: (part) =>

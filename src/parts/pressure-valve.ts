@@ -52,10 +52,10 @@ export const valveBox = (reach: number, shut: boolean): Primitive[] => [
   ...arrow('symbol', [shut ? -0.9 : 0, -2], [shut ? -0.9 : 0, 2]),
 ];
 
-/** Spring on the right of the box, with the arrow that says adjustable. */
-export const adjustableSpring = (): Primitive[] => [
-  spring('fine', 2, 4.7, 0),
-  ...arrow('fine', [2.2, 2], [4.6, -2.2], 0.9, 0.65),
+/** Spring on the right of the box, with the arrow that says adjustable; `from`: where it begins. */
+export const adjustableSpring = (from = 2): Primitive[] => [
+  spring('fine', from, from + 2.7, 0),
+  ...arrow('fine', [from + 0.2, 2], [from + 2.6, -2.2], 0.9, 0.65),
 ];
 
 /** Check beside the box that lets oil up, at x; joins the upright line at ±y. */

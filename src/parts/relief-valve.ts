@@ -2,13 +2,13 @@ import type { PartKind } from './contract.ts';
 import { quantitySetting, readSi } from './settings.ts';
 import { arrow, boxOf, leftOpen, port, rectangle, spring, stroke } from './shapes.ts';
 
-const SETTING = quantitySetting(
+export const RELIEF_SETTING = quantitySetting(
   { id: 'setting', title: 'Setting', help: 'Inlet pressure at which it begins to let oil out.' },
   'pressure',
   '200 bar',
   { min: '0.1 bar', max: '1000 bar' },
 );
-const RISE = quantitySetting(
+export const FULL_FLOW_RISE = quantitySetting(
   {
     id: 'fullFlowRise',
     title: 'Rise at rated flow',
@@ -18,7 +18,7 @@ const RISE = quantitySetting(
   '10 bar',
   { min: '0 bar', max: '500 bar' },
 );
-const RATED_FLOW = quantitySetting(
+export const RELIEF_FLOW = quantitySetting(
   { id: 'ratedFlow', title: 'Rated flow', help: 'Flow at which the rise is given.' },
   'flow',
   '60 L/min',
@@ -32,7 +32,7 @@ export const reliefValve: PartKind = {
   help: 'Shut until its inlet reaches the setting, then lets oil out to T.',
   words: ['pressure relief', 'safety valve', 'pressure limiting', 'relief'],
   prefix: 'RV',
-  settings: [SETTING, RISE, RATED_FLOW],
+  settings: [RELIEF_SETTING, FULL_FLOW_RISE, RELIEF_FLOW],
   readyMade: [{ id: 'relief-valve', title: 'Relief valve', make: () => ({}) }],
   ports: () => [
     port(
@@ -64,8 +64,8 @@ export const reliefValve: PartKind = {
       from: 'P',
       to: 'T',
       duty: 'relief',
-      setting: readSi(part, SETTING),
-      override: { rise: readSi(part, RISE), flow: readSi(part, RATED_FLOW) },
+      setting: readSi(part, RELIEF_SETTING),
+      override: { rise: readSi(part, FULL_FLOW_RISE), flow: readSi(part, RELIEF_FLOW) },
     },
   ],
   draw: () => [

@@ -18,6 +18,7 @@ const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
   'compensated-pump': ['P', 'S'],
   tank: ['T'],
   'relief-valve': ['P', 'T'],
+  'pilot-relief-valve': ['P', 'T', 'X'],
   'sequence-valve': ['P', 'A', 'Y'],
   'unloading-valve': ['P', 'T', 'X'],
   'counterbalance-valve': ['V', 'C', 'X'],
@@ -48,7 +49,7 @@ function portsNamed(element: Element): string[] {
     case 'path':
       return [element.from, element.to, ...(element.pilot ? [element.pilot.port] : [])];
     case 'pressure-opened':
-      return [element.from, element.to];
+      return [element.from, element.to, ...(element.vent ? [element.vent.port] : [])];
     case 'pressure-valve':
       return [element.from, element.to, ...element.signals.map((signal) => signal.port)];
     case 'pump':
@@ -91,9 +92,9 @@ function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number;
 const within = (box: Box, { x, y }: { x: number; y: number }): boolean =>
   x >= box.x - 1e-9 && x <= box.x + box.width + 1e-9 && y >= box.y - 1e-9 && y <= box.y + box.height + 1e-9;
 
-test('there are 28 kinds, each found by its name and in a known group', () => {
-  expect(CATALOGUE).toHaveLength(28);
-  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(28);
+test('there are 29 kinds, each found by its name and in a known group', () => {
+  expect(CATALOGUE).toHaveLength(29);
+  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(29);
   for (const kind of CATALOGUE) {
     expect(kindOf(kind.kind)).toBe(kind);
     expect(PART_GROUPS).toContain(kind.group);
@@ -208,6 +209,7 @@ test.each([
   ['regulator', 'reducing-valve'],
   ['or valve', 'shuttle-valve'],
   ['back pressure', 'check-valve-spring'],
+  ['vent port', 'pilot-relief-valve'],
   ['pressostat', 'pressure-switch'],
 ])('searching "%s" finds %s', (query, id) => {
   expect(searchCatalogue(query).map((entry) => entry.readyMade.id)).toContain(id);

@@ -53,6 +53,19 @@ export class FlowBuilder {
     return this.#between(id, 'relief', line, to, { ...oneWay, forward: setting, r: override, k: 0 }, on);
   }
 
+  /**
+   * Main stage of a pilot-operated relief valve: opens from → to as far as `from` passes `pilot` by `pressure` Pa.
+   * It counts as a relief valve.
+   */
+  pilotRelief(id: string, from: number, to: number, pilot: number, pressure: number, override?: number): number {
+    const signals = [
+      { line: from, factor: 1 },
+      { line: pilot, factor: -1 },
+    ];
+    const data = { setting: pressure, ...(override !== undefined && { gradient: override }) };
+    return this.#valve(id, from, to, undefined, this.#pilot(data, signals), 'relief');
+  }
+
   /** Passes at most `flow` m³/s from → to whatever the pressure; back freely only if `reverseFree`. */
   flowControl(id: string, from: number, to: number, flow: number, loss?: Loss, reverseFree = false, on = true): number {
     const law = reverseFree ? { ...free, hi: flow } : { ...oneWay, forward: 0, hi: flow };
@@ -257,12 +270,19 @@ export class FlowBuilder {
     return { signals: all, setting: data.setting, gradient: data.gradient ?? NEAR_IDEAL.pilotGradient };
   }
 
-  #valve(id: string, from: number, to: number, loss: Loss | undefined, pilot: Pilot): number {
+  #valve(
+    id: string,
+    from: number,
+    to: number,
+    loss: Loss | undefined,
+    pilot: Pilot,
+    kind: BranchKind = 'pressure valve',
+  ): number {
     const { r, k } = lossOf(loss);
     return (
       this.#branches.push({
         id,
-        kind: 'pressure valve',
+        kind,
         a: from,
         b: to,
         ca: 1,

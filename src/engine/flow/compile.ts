@@ -47,15 +47,17 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
     const branch = paths[i] as number;
     return path.input >= 0 && branch >= 0 ? [{ branch, input: path.input, positions: path.positions }] : [];
   });
-  const reliefs = net.reliefs.map((relief) =>
-    builder.relief(
-      label(relief.part),
-      at(relief.from),
-      at(relief.to),
-      relief.setting,
-      relief.override > 0 ? relief.override : undefined,
-    ),
-  );
+  const reliefs = net.reliefs.map((relief) => {
+    const id = label(relief.part);
+    const override = relief.override > 0 ? relief.override : undefined;
+    const [from, to] = [at(relief.from), at(relief.to)];
+    return relief.vent && from !== to
+      ? builder.pilotRelief(id, from, to, at(relief.vent.line), relief.vent.pressure, override)
+      : builder.relief(id, from, to, relief.setting, override);
+  });
+  for (const { part, to, setting, vent } of net.reliefs) {
+    if (vent) builder.relief(`${label(part)} pilot`, at(vent.line), at(to), setting - vent.pressure);
+  }
   for (const store of net.accumulators) {
     if (store.charged) builder.accumulator(label(store.part), at(store.line), store.precharge * CHARGED);
   }

@@ -70,7 +70,13 @@ export function explainPressures(state: OneState): PressureWords {
     const line = state.net.pumps[index]?.outlet ?? -1;
     const text = `It stands at ${bar(at?.pressure ?? 0)} and delivers ${litres(at?.delivered ?? 0)}${over(numbers)}.`;
     const onValues = rests !== undefined || found !== said.verdict;
-    return { ...rest, onValues, verdict: found, steps: [...(rests ? [] : steps), step(text, [line], [said.part])] };
+    const why = found === 'unloaded' ? ventedReliefs(state, line, numbers) : [];
+    return {
+      ...rest,
+      onValues,
+      verdict: found,
+      steps: [...(rests ? [] : steps), ...why, step(text, [line], [said.part])],
+    };
   };
   const overValve = !hunts && movesOverValve(bits, answer);
   return { actuator, pump, numbers, flows: (line) => overValve && solver.flows(answer, line) };
@@ -110,6 +116,20 @@ function overcome(state: OneState, actuator: NetActuator, part: string): Step {
     [part],
   );
 }
+
+/** Pilot-operated relief valves on the line that let its oil out because their pilot line stands low. */
+const ventedReliefs = (state: OneState, line: number, numbers: RowNumbers): Step[] =>
+  state.net.reliefs.flatMap(({ part, from, to, vent }, i) =>
+    from === line && vent && (numbers.reliefs[i]?.flow ?? 0) > 1e-7
+      ? [
+          step(
+            `${partLabel(state, part)} is vented: its pilot line ${lineName(state, vent.line)} is let down, so it opens ${bar(vent.pressure)} over that.`,
+            [from, to, vent.line].filter((each) => each < state.net.shown),
+            [state.net.parts[part]?.id ?? ''],
+          ),
+        ]
+      : [],
+  );
 
 /** Why it does not move: what it would take, and who takes the flow instead. */
 function standing(state: OneState, index: number, actuator: NetActuator, numbers: RowNumbers): string {

@@ -98,7 +98,9 @@ export class PressureSolver {
   /** m³/s over a relief valve of the network. */
   reliefFlow(solved: Solved, relief: number): number {
     const id = this.model.problem.branches[this.model.reliefs[relief] as number]?.id;
-    return Math.max(0, solved.branches.find((entry) => entry.kind === 'relief' && entry.id === id)?.flow ?? 0);
+    const over = (name: string | undefined): number =>
+      Math.max(0, solved.branches.find((entry) => entry.kind === 'relief' && entry.id === name)?.flow ?? 0);
+    return over(id) + (this.net.reliefs[relief]?.vent ? over(`${id ?? ''} pilot`) : 0);
   }
 }
 
@@ -227,5 +229,7 @@ export function pumpByPressure(
   if (drives) return spilled > MOTION ? 'working, part over relief' : 'working';
   if (spilled > MOTION) return 'over relief';
   const setting = Math.max(pump.setting, ...mine.map((i) => net.reliefs[i]?.setting ?? 0), 0);
-  return setting > 0 && state.pressure < UNLOADED * setting ? 'unloaded' : undefined;
+  // A vented relief valve lets all of it out too, but at a pressure that counts as none.
+  if (setting > 0 && state.pressure < UNLOADED * setting) return 'unloaded';
+  return spilled > MOTION ? 'over relief' : undefined;
 }
