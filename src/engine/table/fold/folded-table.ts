@@ -37,11 +37,12 @@ export interface FoldedTable {
 
 /**
  * Outcomes exclude each other and leave no combination out, which is checked, as is every description against its
- * set. The commonest outcome (the first of several) is the rest.
+ * set. The commonest outcome is the rest; of several the one of the combination `usual`, or else the first.
  */
 export function foldOutcomes<W>(
   sets: Diagrams,
   outcomes: readonly { readonly word: W; readonly set: Diagram }[],
+  usual: readonly number[] = [],
 ): Folded<W> {
   const counted = outcomes.map((outcome) => ({ ...outcome, count: sets.count(outcome.set) }));
   const together = outcomes.reduce((all, { set }) => sets.or(all, set), NONE);
@@ -49,7 +50,10 @@ export function foldOutcomes<W>(
   if (together !== ALL || sum !== sets.total) throw new Error('outcomes overlap, or leave combinations out');
   const [first, ...others] = counted;
   if (first === undefined) throw new RangeError('there is no outcome');
-  const rest = others.reduce((most, outcome) => (outcome.count > most.count ? outcome : most), first);
+  const rest = others.reduce((most, outcome) => {
+    if (outcome.count !== most.count) return outcome.count > most.count ? outcome : most;
+    return usual.length > 0 && sets.has(outcome.set, usual) ? outcome : most;
+  }, first);
   let least = true;
   const rows = counted.flatMap(({ word, set }) => {
     if (set === NONE || word === rest.word) return [];
