@@ -1,4 +1,4 @@
-import type { TraceEvent, TraceSample } from '../engine/sequence/play/trace.ts';
+import type { TraceSample } from '../engine/sequence/play/trace.ts';
 
 export type { TraceEvent, TraceSample } from '../engine/sequence/play/trace.ts';
 
