@@ -1,14 +1,12 @@
-import type { NetDependent, NetShift, Network } from '../../network/network.ts';
+import { combinations, mayStand, sameSetting, staged, standsAt, trips } from '../../network/dependents.ts';
+import type { ActuatorPlace } from '../../network/dependents.ts';
+import type { NetDependent, Network } from '../../network/network.ts';
 import { setState } from './compile.ts';
 import type { FlowModel } from './compile.ts';
 import { describe } from './result.ts';
 import type { FlowResult } from './result.ts';
 
-/** Where an actuator stands; `travel` in m from the inner stop, where it is known. */
-export interface ActuatorPlace {
-  readonly stop: 'between' | 'in' | 'out';
-  readonly travel?: number;
-}
+export type { ActuatorPlace } from '../../network/dependents.ts';
 
 /** Where the fixpoint starts, and what it may spend. */
 export interface DependentStart {
@@ -43,11 +41,6 @@ export const MOST_SETTINGS = 256;
 /** Gauge pressure of a line of the network, Pa. */
 export type Pressure = (line: number) => number;
 
-const BETWEEN: ActuatorPlace = { stop: 'between' };
-
-/** A travel within this, m, counts as reached. */
-const TRAVEL = 1e-6;
-
 /** Pa that a signal may lack and still count as reaching its setting: rounding of the solver, no hysteresis. */
 const slack = (setting: number): number => 1 + 1e-6 * Math.abs(setting);
 
@@ -56,20 +49,6 @@ export const signalOf = (
   signals: readonly { readonly line: number; readonly factor: number }[],
   at: Pressure,
 ): number => signals.reduce((sum, { line, factor }) => sum + factor * at(line), 0);
-
-/** True if the actuator stands where it trips the roller. Between its stops, its travel not known, it trips none. */
-export function trips(shift: Extract<NetShift, { by: 'roller' }>, places: readonly ActuatorPlace[]): boolean {
-  if (shift.actuator < 0) return false;
-  const { stop, travel } = places[shift.actuator] ?? BETWEEN;
-  const { trip } = shift;
-  if ('at' in trip) return stop === trip.at;
-  if ('from' in trip) return travel === undefined ? stop === 'out' : travel >= trip.from - TRAVEL;
-  return travel === undefined ? stop === 'in' : travel <= trip.upTo + TRAVEL;
-}
-
-/** True if the pilot stage lets this shift act. */
-export const staged = (shift: NetShift, commanded: readonly number[]): boolean =>
-  shift.by === 'roller' || shift.input < 0 || ((shift.stages >>> (commanded[shift.input] ?? 0)) & 1) === 1;
 
 /** The position that a valve goes to from `now` under these pressures. */
 export function shiftedTo(
@@ -85,23 +64,6 @@ export function shiftedTo(
       : staged(shift, commanded) && signalOf(shift.signals, at) >= shift.setting - slack(shift.setting),
   );
   return acting?.position ?? valve.rest ?? now;
-}
-
-/** Positions that a valve may stand in under these commands, whatever the pressures; where it starts from comes first. */
-export function mayStand(
-  valve: NetDependent,
-  commanded: readonly number[],
-  places: readonly ActuatorPlace[],
-  before?: number,
-): number[] {
-  const roller = valve.shifts.find((shift) => shift.by === 'roller' && trips(shift, places));
-  if (roller) return [roller.position];
-  const acting = valve.shifts.filter((shift) => shift.by === 'pressure' && staged(shift, commanded));
-  // A detented valve keeps whatever it has been shifted to.
-  const left = valve.rest === undefined ? valve.positions.map((_, position) => position) : [valve.rest];
-  const first = before ?? valve.rest ?? 0;
-  const all = [...left, ...acting.map((shift) => shift.position)];
-  return all.includes(first) ? [...new Set([first, ...all])] : [...new Set(all)];
 }
 
 /**
@@ -126,38 +88,30 @@ export function settle(
     }
     return known.get(key);
   };
-  const agrees = (setting: readonly number[]): boolean => same(next(setting) ?? [-1], setting);
+  const agrees = (setting: readonly number[]): boolean => sameSetting(next(setting) ?? [-1], setting);
 
   const may = dependents.map((valve, d) => mayStand(valve, commanded, places, before?.[d]));
   const settings = may.reduce((n, list) => n * list.length, 1);
   const path: (readonly number[])[] = [];
   let setting: readonly number[] = dependents.map((valve, d) => before?.[d] ?? valve.rest ?? may[d]?.[0] ?? 0);
-  while (!path.some((earlier) => same(earlier, setting)) && path.length <= MOST_SETTINGS) {
+  while (!path.some((earlier) => sameSetting(earlier, setting)) && path.length <= MOST_SETTINGS) {
     path.push(setting);
     setting = next(setting) ?? setting;
   }
   const last = path.at(-1) as readonly number[];
-  const found = same(last, setting) ? last : undefined;
+  const found = sameSetting(last, setting) ? last : undefined;
   const searched = settings <= (found ? mostSettings : Math.max(mostSettings, MOST_SETTINGS));
   const agreeing = searched ? combinations(may).filter(agrees) : found ? [found] : [];
   const chosen = found ?? agreeing[0];
-  const from = path.findIndex((earlier) => same(earlier, setting));
+  const from = path.findIndex((earlier) => sameSetting(earlier, setting));
   return {
     setting: chosen ?? setting,
     hunts: chosen === undefined,
     cycle: chosen === undefined ? path.slice(Math.max(0, from)) : [],
-    others: agreeing.filter((other) => !same(other, chosen ?? [])),
+    others: agreeing.filter((other) => !sameSetting(other, chosen ?? [])),
     searched,
   };
 }
-
-/** Every choice of one from each list, the first list slowest. */
-export function combinations(lists: readonly (readonly number[])[]): number[][] {
-  return lists.reduce<number[][]>((all, list) => all.flatMap((one) => list.map((p) => [...one, p])), [[]]);
-}
-
-export const same = (a: readonly number[], b: readonly number[]): boolean =>
-  a.length === b.length && a.every((p, i) => p === b[i]);
 
 /**
  * `settle` by the steady pressures of a compiled circuit, and the pressures of the setting that it finds:
@@ -172,7 +126,10 @@ export function settleDependents(
 ): DependentAnswer & { readonly result: FlowResult } {
   let warm: Float64Array | undefined;
   const solve = (setting: readonly number[]): FlowResult => {
-    setState(model, (input) => start.commanded[input] ?? setting[input - net.inputs.length] ?? 0);
+    setState(
+      model,
+      standsAt(net, (input) => start.commanded[input] ?? 0, setting),
+    );
     const solution = model.solver.solve(warm ? { warm } : {});
     const result = describe(model.solver, solution);
     warm = result.status === 'solved' ? Float64Array.from(solution.pressures) : undefined;

@@ -1,4 +1,4 @@
-import { emptySet, fullSet } from '../../base/bits.ts';
+import { emptySet, fillRange, fullSet } from '../../base/bits.ts';
 import type { BitSet } from '../../base/bits.ts';
 import type { Network } from '../../network/network.ts';
 
@@ -10,6 +10,8 @@ export interface EdgeSet {
   readonly states: number;
   /** Distinct sets of states, shared by edges; entry 0 is "all states". */
   readonly masks: readonly BitSet[];
+  /** Masks that follow dependent valves. */
+  readonly follows: readonly Follower[];
   /** Paths with a pilot: their mask is decided by the engine, state by state. */
   readonly pilots: readonly { readonly line: number; readonly base: number }[];
   readonly forward: Adjacency;
@@ -37,6 +39,31 @@ export interface Adjacency {
   readonly mask: Int32Array;
 }
 
+/** This mask holds the rows in which the dependent valve stands in one of `positions` (bit mask). */
+export interface Follower {
+  readonly mask: number;
+  readonly dependent: number;
+  readonly positions: number;
+}
+
+/** Words `at` … `at + width - 1` of the masks that follow dependent valves, for other settings of these. */
+export function follow(
+  masks: readonly BitSet[],
+  follows: readonly Follower[],
+  settings: DependentPlanes,
+  at: number,
+  width: number,
+): void {
+  for (const { mask, dependent, positions } of follows) {
+    const target = masks[mask] as BitSet;
+    target.fill(0, at, at + width);
+    settings[dependent]?.forEach((plane, p) => {
+      if (((positions >>> p) & 1) === 0) return;
+      for (let w = at; w < at + width; w++) target[w] = (target[w] as number) | (plane[w] as number);
+    });
+  }
+}
+
 interface Edge {
   readonly from: number;
   readonly to: number;
@@ -44,19 +71,31 @@ interface Edge {
   readonly free: boolean;
 }
 
-export function compileEdges(net: Network): EdgeSet {
+/** Rows in which each dependent valve stands in each of its positions: [dependent][position]. */
+export type DependentPlanes = readonly (readonly BitSet[])[];
+
+/** `settings`: where the dependent valves stand; a network that has some throws without it. */
+export function compileEdges(net: Network, settings?: DependentPlanes): EdgeSet {
+  if (net.dependents.length > 0 && settings === undefined)
+    throw new Error('open paths need to know where the dependent valves stand');
   const radices = net.inputs.map((input) => input.positions.length);
   const states = radices.reduce((n, r) => n * r, 1);
   const masks: BitSet[] = [fullSet(states)];
   const known = new Map<string, number>();
+  const follows: Follower[] = [];
   const maskOf = (input: number, positions: number): number => {
-    const radix = radices[input];
+    const dependent = input - radices.length;
+    const radix = radices[input] ?? net.dependents[dependent]?.positions.length;
     if (input < 0 || radix === undefined || positions === (1 << radix) - 1) return 0;
     const key = `${input}:${positions}`;
     let index = known.get(key);
     if (index === undefined) {
       index = masks.length;
-      masks.push(positionMask(radices, input, positions, states));
+      if (dependent < 0) masks.push(positionMask(radices, input, positions, states));
+      else {
+        masks.push(emptySet(states));
+        follows.push({ mask: index, dependent, positions });
+      }
       known.set(key, index);
     }
     return index;
@@ -76,6 +115,7 @@ export function compileEdges(net: Network): EdgeSet {
     edges.push({ from: path.from, to: path.to, mask: base, free });
     if (!path.oneWay) edges.push({ from: path.to, to: path.from, mask: base, free });
   }
+  if (settings) follow(masks, follows, settings, 0, masks[0]?.length ?? 0);
   // Pilot masks are numbered after the fixed ones, whose number is known only now.
   for (const { pilot, ...edge } of pilotEdges) edges.push({ ...edge, mask: masks.length + pilot });
 
@@ -110,6 +150,7 @@ export function compileEdges(net: Network): EdgeSet {
   return {
     states,
     masks,
+    follows,
     pilots,
     reliefs,
     loadPilots,
@@ -156,19 +197,4 @@ export function positionMask(radices: readonly number[], input: number, position
     for (let from = p * stride; from < states; from += period) fillRange(set, from, from + stride);
   }
   return set;
-}
-
-/** Set bits `from` … `to - 1`. */
-function fillRange(set: BitSet, from: number, to: number): void {
-  const first = from >>> 5;
-  const last = (to - 1) >>> 5;
-  const head = -1 << (from & 31);
-  const tail = (to & 31) === 0 ? -1 : (1 << (to & 31)) - 1;
-  if (first === last) {
-    set[first] = (set[first] as number) | (head & tail);
-    return;
-  }
-  set[first] = (set[first] as number) | head;
-  set.fill(0xffffffff, first + 1, last);
-  set[last] = (set[last] as number) | tail;
 }

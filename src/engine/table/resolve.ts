@@ -1,3 +1,4 @@
+import { standsAt } from '../../network/dependents.ts';
 import type { Network } from '../../network/network.ts';
 import { compileFlow, setState } from '../flow/compile.ts';
 import type { FlowModel } from '../flow/compile.ts';
@@ -5,6 +6,8 @@ import { describe } from '../flow/result.ts';
 import type { FlowResult, Solved } from '../flow/result.ts';
 import { ties } from '../flow/ties.ts';
 import type { SettledBlock } from '../paths/block.ts';
+import { settingOf } from '../paths/dependents.ts';
+import type { DependentPlanes } from '../paths/edges.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { motionWords } from './actuator-outcomes.ts';
@@ -35,21 +38,29 @@ export interface PressureAnswer {
 export class PressureSolver {
   readonly net: Network;
   readonly model: FlowModel;
+  /** Where the dependent valves stand, row by row; needed where the circuit has some. */
+  settings: DependentPlanes | undefined;
   readonly #strides: readonly number[];
   #warm: Float64Array | undefined;
 
-  constructor(net: Network, conditions: PathConditions) {
+  constructor(net: Network, conditions: PathConditions, settings?: DependentPlanes) {
     this.net = net;
+    this.settings = settings;
     this.model = compileFlow(net, conditions);
     this.#strides = strides(net.inputs.map((input) => input.positions.length));
   }
 
-  /** 0-based row. `rivals`: also find out whose speed rests on losses. */
-  solve(row: number, rivals: boolean): PressureAnswer {
+  /** Position of a commanded input in a row. */
+  commanded(row: number, input: number): number {
+    return Math.floor(row / (this.#strides[input] as number)) % (this.net.inputs[input]?.positions.length ?? 1);
+  }
+
+  /** 0-based row. `rivals`: also find out whose speed rests on losses. `setting`: other positions of the dependent valves. */
+  solve(row: number, rivals: boolean, setting = settingOf(this.net, this.settings, row)): PressureAnswer {
     const { model, net } = this;
     setState(
       model,
-      (input) => Math.floor(row / (this.#strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1),
+      standsAt(net, (input) => this.commanded(row, input), setting),
     );
     const solution = model.solver.solve(this.#warm ? { warm: this.#warm } : {});
     const result = describe(model.solver, solution);
@@ -227,7 +238,6 @@ export function pumpByPressure(
   if (pump.compensated && !drives && state.delivered < 0.02 * pump.flow && state.pressure > 0.5 * pump.setting)
     return 'destroked';
   if (drives) return spilled > MOTION ? 'working, part over relief' : 'working';
-  if (spilled > MOTION) return 'over relief';
   const setting = Math.max(pump.setting, ...mine.map((i) => net.reliefs[i]?.setting ?? 0), 0);
   // A vented relief valve lets all of it out too, but at a pressure that counts as none.
   if (setting > 0 && state.pressure < UNLOADED * setting) return 'unloaded';
