@@ -14,13 +14,14 @@ export interface Bent {
 }
 
 /**
- * Moves stretch `segment` of a right-angled route across itself, `by` modules right or down. Stretches beside it grow
+ * Moves stretch `segment` of a right-angled route across itself, `wanted` modules right or down. Stretches beside it grow
  * or shrink; one that ends at a port keeps a stub there.
  */
-export function moveSegment(route: readonly Point[], segment: number, by: number): Bent {
+export function moveSegment(route: readonly Point[], segment: number, wanted: number): Bent {
   const [a, b] = [route[segment], route[segment + 1]];
   if (!a || !b) return { bends: route.slice(1, -1), segment };
   const flat = a.y === b.y;
+  const by = clamped(route, segment, flat, wanted);
   const moved = (p: Point): Point => (flat ? { x: p.x, y: Math.round(p.y + by) } : { x: Math.round(p.x + by), y: p.y });
   const length = Math.abs(a.x - b.x) + Math.abs(a.y - b.y);
   const both = segment === 0 && segment === route.length - 2;
@@ -36,6 +37,22 @@ export function moveSegment(route: readonly Point[], segment: number, by: number
       : [moved(b), ...route.slice(segment + 2)];
   const next = by === 0 ? route : straighten([...start, ...end]);
   return { bends: next.slice(1, -1), segment: segmentOn(next, middle(moved(a), moved(b)), flat) };
+}
+
+/** The stub at a port stays at least 1 M long, and never turns round. */
+function clamped(route: readonly Point[], segment: number, flat: boolean, by: number): number {
+  const on = (p: Point): number => (flat ? p.y : p.x);
+  let out = by;
+  const keep = (port: Point | undefined, corner: Point | undefined): void => {
+    if (!port || !corner) return;
+    const way = Math.sign(on(corner) - on(port));
+    const least = on(port) + way - on(corner);
+    if (way > 0) out = Math.max(out, Math.ceil(least));
+    if (way < 0) out = Math.min(out, Math.floor(least));
+  };
+  if (segment === 1) keep(route[0], route[1]);
+  if (segment === route.length - 3) keep(route.at(-1), route.at(-2));
+  return out;
 }
 
 const middle = (a: Point, b: Point): Point => ({ x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 });

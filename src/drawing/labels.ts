@@ -27,8 +27,8 @@ export interface Figure {
 
 /** One line of text on the sheet; `at` is on the baseline. */
 export interface SceneLabel {
-  readonly role: 'part' | 'free';
-  /** Part id, or id of the free label. */
+  readonly role: 'part' | 'free' | 'line';
+  /** Id of the part, of the free label, or of the connection that bears a line's name. */
   readonly owner: string;
   readonly at: Point;
   readonly align: 'start' | 'middle' | 'end';

@@ -1,7 +1,7 @@
 import type { Point } from '../base/points.ts';
 import type { PathPen } from '../base/primitives.ts';
 import { straighten } from './routing.ts';
-import { LINE_WEIGHTS, PILOT_DASH } from './palette.ts';
+import { DRAIN_DASH, LINE_WEIGHTS, PILOT_DASH } from './palette.ts';
 import type { ColourToken } from './palette.ts';
 import type { LineLook, LineUse, Stroke } from './strokes.ts';
 import { MODULE_PX } from './strokes.ts';
@@ -53,7 +53,7 @@ export function lineMarks(
   const [first, second] = path;
   if (!first || !second || (path.length === 2 && first.x === second.x && first.y === second.y)) return [];
   const pilot = use !== 'working';
-  const dash = pilot ? { dash: PILOT_DASH } : {};
+  const dash = pilot ? { dash: use === 'drain' ? DRAIN_DASH : PILOT_DASH } : {};
   const colour = lineColour(look);
   const strokes: Stroke[] = [];
   if (look.trapped && !pilot) strokes.push(hatch(path, look.trapped));

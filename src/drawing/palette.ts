@@ -114,6 +114,8 @@ export const LINE_WEIGHTS = {
 } as const;
 
 export const PILOT_DASH: readonly number[] = [4, 2.5];
+/** Shorter than that of a pilot line, so that the two are told apart without colour. */
+export const DRAIN_DASH: readonly number[] = [1.75, 1.75];
 
 /** Fallback list that any viewer can serve. */
 export const FONT_FAMILY = "Inter, 'Helvetica Neue', Arial, sans-serif";

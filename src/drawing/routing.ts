@@ -59,7 +59,7 @@ export function routeConnection(sheet: RoutingSheet, connection: Connection): Po
   if (!from || !to) return [];
   const bends = connection.bends ?? [];
   if (bends.length === 0 && facing(sheet, from, to)) return [from.port.at, to.port.at];
-  const via = [from.stub, ...bends, to.stub];
+  const via = [outOf(from, bends[0]), ...bends, outOf(to, bends.at(-1))];
   const near = inflate(boxOfPoints([from.port.at, ...via, to.port.at]) as Box, REACH);
   const window = whole(near);
   let found = searchAll(sheet, connection, from, to, via, window);
@@ -157,6 +157,17 @@ function stubOf(port: PlacedPort, box: Box): Point {
   }
 }
 
+/** Where a bent line leaves the part: no further out than a bend that the user set straight before the port. */
+function outOf(end: End, bend: Point | undefined): Point {
+  const { at, side } = end.port;
+  if (!bend || end.out === undefined) return end.stub;
+  const out = vector(side);
+  const ahead = (bend.x - at.x) * out.x + (bend.y - at.y) * out.y;
+  const aside = (bend.x - at.x) * out.y + (bend.y - at.y) * out.x;
+  const stub = (end.stub.x - at.x) * out.x + (end.stub.y - at.y) * out.y;
+  return aside === 0 && ahead >= 0.5 && ahead < stub ? bend : end.stub;
+}
+
 /** Ports that look straight at each other with nothing between them need no search. */
 function facing(sheet: RoutingSheet, from: End, to: End): boolean {
   const a = from.port;
@@ -194,6 +205,13 @@ function searchAll(
   let cost = 0;
   for (let i = 1; i < via.length; i++) {
     const last = i === via.length - 1;
+    // Between two bends that the user set, the line runs as the user drew it.
+    const drawn = via.length > 2 ? straightOn(via[i - 1] as Point, via[i] as Point, headings) : undefined;
+    if (drawn !== undefined && !(last && to.out !== undefined && drawn !== opposite(to.out))) {
+      points.push(via[i - 1] as Point, via[i] as Point);
+      headings = [drawn];
+      continue;
+    }
     const arrive = last && to.out !== undefined ? { arrive: opposite(to.out) } : {};
     const leg = searchLeg(field, { from: via[i - 1] as Point, headings, to: via[i] as Point, ...arrive });
     if (!leg) return undefined;
@@ -202,6 +220,13 @@ function searchAll(
     cost += leg.cost;
   }
   return { points, heading: headings[0] as Direction, cost };
+}
+
+/** The direction of a stretch that needs no search: along the grid, and not back the way the line came. */
+function straightOn(a: Point, b: Point, headings: readonly Direction[]): Direction | undefined {
+  if ((a.x === b.x) === (a.y === b.y)) return undefined;
+  const way: Direction = a.x === b.x ? (b.y > a.y ? 1 : 3) : b.x > a.x ? 0 : 2;
+  return headings.every((heading) => heading === opposite(way)) ? undefined : way;
 }
 
 const isJointEnd = (end: End, partId: string): boolean => end.out === undefined && end.port.ref.part === partId;

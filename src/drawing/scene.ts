@@ -9,8 +9,13 @@ import type { PortPen } from './active-box.ts';
 import { showActiveBox } from './active-box.ts';
 import type { Routes } from './geometry.ts';
 import { boxOfPoints } from './geometry.ts';
+import type { SceneBlock } from './blocks.ts';
+import { sceneBlocks } from './blocks.ts';
+import { hopsOf, withHops } from './hops.ts';
+import type { Hops } from './hops.ts';
 import type { Dot } from './joints.ts';
-import { junctionDots } from './joints.ts';
+import { crossings, junctionDots } from './joints.ts';
+import { lineLabels } from './line-labels.ts';
 import type { LabelSpots, PartWords, SceneLabel } from './labels.ts';
 import { labelBox, labelSpots, sceneLabels } from './labels.ts';
 import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
@@ -24,10 +29,11 @@ import { ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.t
 import type { LineLook, Stroke } from './strokes.ts';
 import { placePrimitives } from './turned.ts';
 
-/** Everything that is drawn, in sheet modules and in drawing order: enclosures, lines, dots, parts, labels. */
+/** Everything that is drawn, in sheet modules and in drawing order: blocks, enclosures, lines, dots, parts, labels. */
 export interface Scene {
   readonly title: string;
   readonly bounds: Box;
+  readonly blocks: readonly SceneBlock[];
   readonly enclosures: readonly { readonly part: string; readonly primitives: readonly Primitive[] }[];
   readonly lines: readonly SceneLine[];
   readonly dots: readonly Dot[];
@@ -63,6 +69,8 @@ export interface SceneState {
   readonly lines?: ReadonlyMap<string, LineLook>;
   /** Part id → active position and stroke, and words beside its name (position, verdict). */
   readonly parts?: ReadonlyMap<string, Look & PartWords>;
+  /** Flat lines hop over those they cross; else they cross plainly, as ISO 1219-1 has it. */
+  readonly hops?: boolean;
 }
 
 const IDLE: LineLook = { class: 'idle' };
@@ -74,12 +82,16 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
     scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)),
   );
   const stubs = state.lines ? takeStubs(circuit, parts, looks) : new Map<string, Point>();
-  const lines = sceneLines(circuit, routes, stage, looks, stubs);
+  const plain = sceneLines(circuit, routes, stage, looks, stubs);
+  const hops = state.hops ? stage.hops() : undefined;
+  const lines = hops ? plain.map((line) => ({ ...line, strokes: withHops(line.strokes, hops) })) : plain;
   const shown = parts.map((part) => hideStubs(part, stubs));
-  const labels = sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id) ?? {});
+  const labels = [...sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id) ?? {}), ...stage.lineLabels];
+  const blocks = stage.blocks;
   return {
     title: circuit.name,
-    bounds: sceneBounds(shown, lines, labels),
+    bounds: sceneBounds(shown, lines, labels, blocks),
+    blocks,
     enclosures: shown.flatMap(({ id, primitives }) => {
       const own = primitives.filter(isEnclosure);
       return own.length > 0 ? [{ part: id, primitives: own }] : [];
@@ -99,6 +111,10 @@ interface Stage {
   readonly dots: readonly Dot[];
   readonly spots: LabelSpots;
   readonly rooms: readonly Box[];
+  readonly lineLabels: readonly SceneLabel[];
+  readonly blocks: readonly SceneBlock[];
+  /** Asked for seldom. */
+  readonly hops: () => Hops;
   /** `part.port` → connections at it. */
   readonly atPort: ReadonlyMap<string, readonly string[]>;
 }
@@ -114,12 +130,18 @@ function stageOf(circuit: Circuit, routes: Routes, noted: boolean): Stage {
     for (const ref of [from, to]) atPort.set(key(ref), [...(atPort.get(key(ref)) ?? []), id]);
   }
   const spots = labelSpots(circuit, routes, noted);
+  const rooms = [...spots.values()].map(({ box }) => box);
+  const named = lineLabels(circuit, routes, rooms);
+  let hops: Hops | undefined;
   const stage: Stage = {
     numbers,
     pieces: freshPieces(circuit, routes, numbers),
     dots: junctionDots(circuit, routes),
     spots,
-    rooms: [...spots.values()].map(({ box }) => box),
+    rooms: [...rooms, ...named.map(labelBox)],
+    lineLabels: named,
+    blocks: sceneBlocks(circuit),
+    hops: () => (hops ??= hopsOf(crossings(circuit, routes))),
     atPort,
   };
   stages.set(circuit, { routes, noted, stage });
@@ -252,8 +274,13 @@ function hideStubs(part: ScenePart, stubs: ReadonlyMap<string, Point>): ScenePar
   };
 }
 
-function sceneBounds(parts: readonly ScenePart[], lines: readonly SceneLine[], labels: readonly SceneLabel[]): Box {
-  const boxes = [...parts.map((p) => p.box), ...labels.map(labelBox)];
+function sceneBounds(
+  parts: readonly ScenePart[],
+  lines: readonly SceneLine[],
+  labels: readonly SceneLabel[],
+  blocks: readonly SceneBlock[],
+): Box {
+  const boxes = [...parts.map((p) => p.box), ...labels.map(labelBox), ...blocks.map(({ box }) => box)];
   for (const { points } of lines) {
     const box = boxOfPoints(points);
     if (box) boxes.push(box);

@@ -55,6 +55,7 @@ export function sceneToSvg(scene: Scene, options: SvgOptions): string {
           `<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`,
         ]
       : []),
+    ...scene.blocks.map((b) => pen.group(`<title>${escapeXml(b.name)}</title>`, b.primitives)),
     ...scene.enclosures.map((e) => pen.group('', e.primitives)),
     ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
     ...scene.dots.map(

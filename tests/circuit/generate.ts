@@ -6,6 +6,7 @@ import type {
   Extra,
   Label,
   Part,
+  PartGroup,
   PortRef,
   LoadCase,
   RuleText,
@@ -119,6 +120,7 @@ export const connectionFields: fc.Arbitrary<Omit<Connection, 'id' | 'from' | 'to
   {
     name: words,
     use: fc.constantFrom('working', 'pilot', 'drain'),
+    size: words,
     bends: fc.array(point, { maxLength: 3 }),
     extra: unknownFields(KNOWN.connection),
   },
@@ -134,6 +136,11 @@ const connection = (parts: readonly Part[]): fc.Arbitrary<Connection> =>
 const label: fc.Arbitrary<Label> = fc.record(
   { id, at: point, text: words, extra: unknownFields(KNOWN.label) },
   { requiredKeys: ['id', 'at', 'text'], noNullPrototype: true },
+);
+
+const group: fc.Arbitrary<PartGroup> = fc.record(
+  { id, name: words, parts: fc.array(id, { maxLength: 3 }), extra: unknownFields(KNOWN.group) },
+  { requiredKeys: ['id', 'name', 'parts'], noNullPrototype: true },
 );
 
 const rule: fc.Arbitrary<RuleText> = fc.record(
@@ -225,6 +232,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
             ? fc.constant([])
             : fc.uniqueArray(connection(parts), { maxLength: 6, selector: (c) => c.id }),
         labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
+        groups: fc.uniqueArray(group, { maxLength: 3, selector: (g) => g.id }),
         rules: fc.uniqueArray(rule, { maxLength: 3, selector: (r) => r.id }),
         loadCases: fc.uniqueArray(loadCase, { maxLength: 3, selector: (l) => l.id }),
         plans: fc.uniqueArray(plan, { maxLength: 2, selector: (p) => p.id }),

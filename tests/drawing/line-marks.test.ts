@@ -106,9 +106,12 @@ test('displaced oil is a double line: paper inside a wider stroke', () => {
   expect(strokes[1]?.colour).toBe('paper');
 });
 
-test.each(['pilot', 'drain'] as const)('a %s line is dashed 4/2.5 in the colour of its class', (use) => {
+test.each([
+  ['pilot', [4, 2.5]],
+  ['drain', [1.75, 1.75]],
+] as const)('a %s line is dashed %j in the colour of its class', (use, dash) => {
   const [core] = lineMarks(BENT, { class: 'fed' }, use);
-  expect(core).toMatchObject({ dash: [4, 2.5], colour: 'fed' });
+  expect(core).toMatchObject({ dash, colour: 'fed' });
 });
 
 test('no points, or twice the same one, draw nothing', () => {

@@ -1,0 +1,76 @@
+import type { Box, Point } from '../base/points.ts';
+import type { Circuit, Connection } from '../circuit/model.ts';
+import { inflate, overlaps, segmentTouches } from './geometry.ts';
+import type { Routes } from './geometry.ts';
+import type { LabelText, SceneLabel } from './labels.ts';
+import { labelBox } from './labels.ts';
+import { TEXT_SIZES } from './palette.ts';
+import { partReach } from './shapes.ts';
+
+/** Modules between a line and its name, and between the places tried along it. */
+const GAP = 0.5;
+const STEP = 2;
+/** Shares of a stretch at which a name is tried, the middle first. */
+const SPOTS = [0.5, 0.35, 0.65, 0.2, 0.8] as const;
+
+const worded = ({ name, size }: Connection): boolean => name !== undefined || (size ?? '') !== '';
+
+/** Names and sizes of lines, each on the longest stretches of its connection, clear of what stands there if it can be. */
+export function lineLabels(circuit: Circuit, routes: Routes, taken: readonly Box[]): SceneLabel[] {
+  const named = circuit.connections.filter(worded);
+  if (named.length === 0) return [];
+  const rooms: Box[] = [...taken, ...circuit.parts.map(partReach)];
+  const stretches = [...routes.values()].flatMap((points) => points.slice(1).map((b, i) => [points[i] as Point, b] as const));
+  return named.flatMap((connection) => {
+    const label = best(connection, routes.get(connection.id) ?? [], rooms, stretches);
+    if (!label) return [];
+    rooms.push(labelBox(label));
+    return [label];
+  });
+}
+
+function best(
+  connection: Connection,
+  points: readonly Point[],
+  rooms: readonly Box[],
+  stretches: readonly (readonly [Point, Point])[],
+): SceneLabel | undefined {
+  const runs: LabelText[] = [
+    ...(connection.name === undefined ? [] : [{ text: connection.name, size: TEXT_SIZES.code, weight: 500, tone: 'second' } as const]),
+    ...(connection.size ? [{ text: connection.size, size: TEXT_SIZES.code, weight: 400, tone: 'mute' } as const] : []),
+  ];
+  let found: SceneLabel | undefined;
+  let least = Infinity;
+  const lengths = points.slice(1).map((b, i) => ({ a: points[i] as Point, b, length: lengthOf(points[i] as Point, b) }));
+  lengths.sort((p, q) => q.length - p.length);
+  for (const { a, b, length } of lengths.slice(0, 3)) {
+    if (length < STEP && found) break;
+    for (const share of SPOTS) {
+      const at = { x: a.x + (b.x - a.x) * share, y: a.y + (b.y - a.y) * share };
+      for (const label of spotsAt(connection.id, runs, at, a.y === b.y)) {
+        const box = labelBox(label);
+        const cost = crowd(box, rooms, stretches) + (lengths[0] ? (lengths[0].length - length) / 100 : 0) + Math.abs(share - 0.5) / 10;
+        if (cost < least) [least, found] = [cost, label];
+      }
+    }
+  }
+  return found;
+}
+
+const lengthOf = (a: Point, b: Point): number => Math.abs(a.x - b.x) + Math.abs(a.y - b.y);
+
+function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boolean): SceneLabel[] {
+  const label = (x: number, y: number, align: SceneLabel['align']): SceneLabel => ({ role: 'line', owner, at: { x, y }, align, runs });
+  const tall = TEXT_SIZES.code / 8;
+  return flat
+    ? [label(at.x, at.y - GAP, 'middle'), label(at.x, at.y + GAP + tall * 0.8, 'middle')]
+    : [label(at.x + GAP, at.y + tall * 0.35, 'start'), label(at.x - GAP, at.y + tall * 0.35, 'end')];
+}
+
+function crowd(box: Box, rooms: readonly Box[], stretches: readonly (readonly [Point, Point])[]): number {
+  const own = inflate(box, 0.1);
+  let cost = 0;
+  for (const room of rooms) if (overlaps(room, own)) cost += 5;
+  for (const [a, b] of stretches) if (segmentTouches(a, b, box)) cost += 2;
+  return cost;
+}
