@@ -37,36 +37,69 @@ export function chambersOf(
   const at = (field: Field, line: number, w: number): number => (line < 0 ? 0 : (field[line * width + w] as number));
 
   // The shared searches also pass through this actuator itself. That can mislead only where one side
-  // got its answer from the other one, or a single-acting cylinder from itself; there, search again
-  // without it.
-  const misled = (field: Field, plain: Field, matters: (w: number) => number): boolean => {
+  // got its answer from the other one, or a single-acting cylinder from itself; there, and where the answer
+  // matters, take that of a search without it. State by state, so that no state hangs on its neighbours.
+  const apart = (
+    shared: Field,
+    plain: Field,
+    matters: (w: number) => number,
+    again: () => Field,
+  ): [Uint32Array, Uint32Array] => {
+    const misled = new Uint32Array(width);
+    let any = 0;
     for (let w = 0; w < width; w++) {
-      const [x, y] = [at(field, a, w), at(field, b, w)];
+      const [x, y] = [at(shared, a, w), at(shared, b, w)];
       const borrowed = b < 0 ? x & ~at(plain, a, w) : x & y & ~(at(plain, a, w) & at(plain, b, w));
-      if ((borrowed & matters(w)) !== 0) return true;
+      const bits = borrowed & matters(w);
+      misled[w] = bits;
+      any |= bits;
     }
-    return false;
+    const sides: [Uint32Array, Uint32Array] = [plane(shared, a), b < 0 ? all : plane(shared, b)];
+    if (any === 0) return sides;
+    const found = again();
+    for (const [side, line] of [a, b].entries()) {
+      const words = sides[side] as Uint32Array;
+      if (line < 0) continue;
+      for (let w = 0; w < width; w++) {
+        const bits = misled[w] as number;
+        words[w] = ((words[w] as number) & ~bits) | (at(found, line, w) & bits);
+      }
+    }
+    return sides;
   };
 
-  let { exits, softExits, fills } = r;
   const withoutMe = (gate?: Field): Field => {
     const field = r.toTank.slice();
     takeIn(net, conditions, s, field, index);
     s.spread(field, edges.backward, { links: links.pull, without: index, ...(gate && { gate }) });
     return field;
   };
-  if (misled(exits, r.toTank, () => -1)) exits = withoutMe(r.notPressed);
+  const [exitA, exitB] = apart(
+    r.exits,
+    r.toTank,
+    () => -1,
+    () => withoutMe(r.notPressed),
+  );
+  const fed = (line: number, w: number): number => at(r.anyPressed, line, w);
   // Soft exits matter only where a fed actuator has no plain one.
   const stuck = (w: number): number =>
-    (at(r.anyPressed, a, w) & (b < 0 ? 0 : ~at(exits, b, w))) | (at(r.anyPressed, b, w) & ~at(exits, a, w));
-  if (misled(softExits, r.toTank, stuck)) softExits = withoutMe();
-  // What fills a chamber matters only where nothing feeds the actuator and something lets it go.
+    (fed(a, w) & (b < 0 ? 0 : ~(exitB[w] as number))) | (fed(b, w) & ~(exitA[w] as number));
+  const [softExitA, softExitB] = apart(r.softExits, r.toTank, stuck, () => withoutMe());
+  // What fills a chamber matters where nothing feeds the actuator and something lets it go, and where it
+  // is stuck but bleeds to tank.
   const free = (w: number): number =>
-    ~at(r.anyPressed, a, w) & ~at(r.anyPressed, b, w) & (b < 0 ? -1 : at(exits, a, w) | at(exits, b, w));
-  if (misled(fills, r.plainFills, free)) {
-    fills = r.plainFills.slice();
-    s.spread(fills, edges.forward, { links: links.push, without: index, fromTank: true });
-  }
+    ~fed(a, w) & ~fed(b, w) & (b < 0 ? -1 : (exitA[w] as number) | (exitB[w] as number));
+  const bled = (w: number): number => stuck(w) & ((fed(a, w) & at(r.toTank, a, w)) | (fed(b, w) & at(r.toTank, b, w)));
+  const [fillA, fillB] = apart(
+    r.fills,
+    r.plainFills,
+    (w) => free(w) | bled(w),
+    () => {
+      const field = r.plainFills.slice();
+      s.spread(field, edges.forward, { links: links.push, without: index, fromTank: true });
+      return field;
+    },
+  );
 
   // Oil that can also run to tank needs no loop, so only states with both sides shut off from it count.
   const across = (from: number, to: number): Uint32Array => {
@@ -85,12 +118,12 @@ export function chambersOf(
   };
 
   return {
-    exitA: plane(exits, a),
-    exitB: b < 0 ? all : plane(exits, b),
-    softExitA: plane(softExits, a),
-    softExitB: b < 0 ? all : plane(softExits, b),
-    fillA: plane(fills, a),
-    fillB: b < 0 ? all : plane(fills, b),
+    exitA,
+    exitB,
+    softExitA,
+    softExitB,
+    fillA,
+    fillB,
     fromBtoA: across(b, a),
     fromAtoB: across(a, b),
   };

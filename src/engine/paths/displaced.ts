@@ -27,6 +27,7 @@ export function driveByDisplaced(
   const touched = new Uint8Array(net.lines.length);
   /** States in which its load pushes oil out of it: its own oil does not drive it back. */
   const yielding = net.actuators.map(() => new Uint32Array(width));
+  const yields = new Uint8Array(net.actuators.length);
   pushByLoads();
   let moved = net.actuators.map((_, i) => i);
   while (moved.length > 0) {
@@ -37,7 +38,8 @@ export function driveByDisplaced(
     for (const line of fresh) touched[line] = 1;
     s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: fresh, touched });
     moved = net.actuators
-      .flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) ? [i] : []))
+      // One that a load pushes may also be driven back once others have moved.
+      .flatMap(({ a, b }, i) => (touched[a] === 1 || (b >= 0 && touched[b] === 1) || yields[i] === 1 ? [i] : []))
       .filter(drive);
     touched.fill(0);
   }
@@ -60,11 +62,13 @@ export function driveByDisplaced(
           const bits = (exit[w] as number) & word(r.notFreeToTank, line, w, width) & ~(fed?.[w] as number);
           plane[w] = bits;
           any |= bits;
-          const yields = yielding[i] as Uint32Array;
-          yields[w] = (yields[w] as number) | bits;
+          const mine = yielding[i] as Uint32Array;
+          mine[w] = (mine[w] as number) | bits;
           doubtful[w] = (doubtful[w] as number) | bits;
         }
-        if (any !== 0 && pushOut(line, plane) >= 0) seeded.push(line);
+        if (any === 0) continue;
+        yields[i] = 1;
+        if (pushOut(line, plane) >= 0) seeded.push(line);
       }
     });
     if (seeded.length > 0) s.spread(pushed, edges.forward, { gate: r.notFreeToTank, from: seeded, touched });

@@ -1,17 +1,19 @@
 import type { Network } from '../../../network/network.ts';
-import { orderFrom } from '../field.ts';
 import { compileLinks, sourceLines } from '../reach.ts';
 import type { Links, PathConditions } from '../reach.ts';
 import type { Diagram } from './diagrams.ts';
 import { ALL, Diagrams, NONE } from './diagrams.ts';
 import type { DiagramOptions } from './diagrams.ts';
 import { orderInputs } from './order.ts';
-import { compileSetEdges, spreadSets } from './spread.ts';
-import type { LineSets, SetEdges, SetSpread } from './spread.ts';
+import { Elimination } from './eliminate.ts';
+import type { Ways } from './eliminate.ts';
+import type { SetAlgebra } from './set-algebra.ts';
+import { compileSetEdges } from './set-edges.ts';
+import type { LineSets, SetEdges } from './set-edges.ts';
 
 /** What open paths say of every line in every combination, as exact sets, however many combinations there are. */
-export interface OpenPathSets {
-  readonly sets: Diagrams;
+export interface OpenPathSets<S extends SetAlgebra = Diagrams> {
+  readonly sets: S;
   /** From a running pump or charged accumulator by open paths. */
   readonly fromSource: LineSets;
   /** To a tank by open paths; by free (unthrottled) ones. */
@@ -29,7 +31,11 @@ export const PATH_CLASSES = ['fed', 'flows to tank', 'vented', 'cut off'] as con
 export type PathClass = (typeof PATH_CLASSES)[number];
 
 /** The combinations in which a line is of a class. */
-export function classSet({ sets, fromSource, toTank }: OpenPathSets, line: number, name: PathClass): Diagram {
+export function classSet(
+  { sets, fromSource, toTank }: Pick<OpenPathSets<SetAlgebra>, 'sets' | 'fromSource' | 'toTank'>,
+  line: number,
+  name: PathClass,
+): Diagram {
   const source = fromSource[line] as Diagram;
   const tank = toTank[line] as Diagram;
   switch (name) {
@@ -50,15 +56,26 @@ export function classSet({ sets, fromSource, toTank }: OpenPathSets, line: numbe
  */
 export function openPathSets(net: Network, conditions: PathConditions, options: DiagramOptions = {}): OpenPathSets {
   const radices = net.inputs.map((input) => input.positions.length);
-  const sets = new Diagrams(radices, { ...options, order: options.order ?? orderInputs(net) });
+  return openPathsOver(
+    net,
+    conditions,
+    new Diagrams(radices, { ...options, order: options.order ?? orderInputs(net) }),
+  );
+}
+
+/** The same with sets of another kind. */
+export function openPathsOver<S extends SetAlgebra>(
+  net: Network,
+  conditions: PathConditions,
+  sets: S,
+): OpenPathSets<S> {
   const edges = compileSetEdges(net, sets);
   const links = compileLinks(net, conditions.places);
-  const orders = searchOrders(net, edges, links);
   let hunts = NONE;
   // Each round can settle at least one more lock check, unless they chase each other; as in `PathSolver`.
   const rounds = 2 * edges.pilots.length + 2;
   for (let round = 0; ; round++) {
-    const found = search(net, sets, edges, links, conditions, orders);
+    const found = search(net, sets, edges, links, conditions);
     let changed = false;
     const next = edges.pilots.map(({ line, base, mask }) => {
       const pressed = sets.or(found.fromSource[line] as Diagram, found.underPressure[line] as Diagram);
@@ -75,46 +92,31 @@ export function openPathSets(net: Network, conditions: PathConditions, options: 
   }
 }
 
-interface SearchOrders {
-  readonly ahead: Int32Array;
-  readonly back: Int32Array;
-}
-
-function searchOrders(net: Network, edges: SetEdges, links: Links): SearchOrders {
-  const sources = [...net.pumps.map((pump) => pump.outlet), ...net.accumulators.map((store) => store.line)];
-  const tanks = net.lines.flatMap((line, index) => (line.tank ? [index] : []));
-  return {
-    ahead: orderFrom(sources, net.lines.length, edges.forward, links.push),
-    back: orderFrom(tanks, net.lines.length, edges.backward, links.pull),
-  };
-}
-
 function search(
   net: Network,
-  sets: Diagrams,
+  sets: SetAlgebra,
   edges: SetEdges,
   links: Links,
   conditions: PathConditions,
-  orders: SearchOrders,
 ): Omit<OpenPathSets, 'sets' | 'edges' | 'hunts'> {
   const sources = sourceLines(net, conditions).filter((line) => line >= 0);
   const none = (): LineSets => net.lines.map(() => NONE);
-  const spread = (field: LineSets, adjacency: SetEdges['forward'], options: SetSpread): void =>
-    spreadSets(sets, net, field, adjacency, edges.open, options);
+  const spread = (field: LineSets, ways: Omit<Ways, 'open'>): LineSets =>
+    new Elimination(sets, net, { ...ways, open: edges.open }).spread(field);
 
   const fromSource = none();
   for (const line of sources) fromSource[line] = ALL;
-  spread(fromSource, edges.forward, { order: orders.ahead });
+  spread(fromSource, { edges: edges.forward });
 
   const freeToTank = net.lines.map((line) => (line.tank ? ALL : NONE));
-  spread(freeToTank, edges.freeBackward, { fromTank: true, order: orders.back });
+  spread(freeToTank, { edges: edges.freeBackward, fromTank: true });
 
   const toTank = [...freeToTank];
   if (!conditions.pumpsRunning) {
     // A stopped pump leaks its outlet line down to tank, slowly.
     for (const pump of net.pumps) if (!pump.tightWhenStopped) toTank[pump.outlet] = ALL;
   }
-  spread(toTank, edges.backward, { fromTank: true, order: orders.back });
+  spread(toTank, { edges: edges.backward, fromTank: true });
 
   const underPressure = none();
   if (edges.pilots.length > 0) pressOn();
@@ -124,7 +126,7 @@ function search(
   function pressOn(): void {
     const gate = freeToTank.map((set) => sets.not(set));
     for (const line of sources) underPressure[line] = gate[line] as Diagram;
-    spread(underPressure, edges.forward, { gate, order: orders.ahead });
-    spread(underPressure, edges.forward, { gate, links: links.push, order: orders.ahead });
+    spread(underPressure, { edges: edges.forward, gate });
+    spread(underPressure, { edges: edges.forward, gate, links: links.push });
   }
 }

@@ -1,8 +1,8 @@
 import type { Network } from '../../../network/network.ts';
 import type { Adjacency } from '../edges.ts';
-import type { Link } from '../field.ts';
-import type { Diagram, Diagrams } from './diagrams.ts';
+import type { Diagram } from './diagrams.ts';
 import { ALL, NONE } from './diagrams.ts';
+import type { SetAlgebra } from './set-algebra.ts';
 
 /** A set of combinations per line. */
 export type LineSets = Diagram[];
@@ -30,7 +30,7 @@ interface Edge {
   readonly free: boolean;
 }
 
-export function compileSetEdges(net: Network, sets: Diagrams): SetEdges {
+export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
   const open: Diagram[] = [ALL];
   const numbers = new Map<Diagram, number>([[ALL, 0]]);
   const edges: Edge[] = [];
@@ -110,56 +110,4 @@ function adjacency(lines: number, edges: readonly Edge[]): Adjacency {
   leaving.forEach((list, line) => (start[line + 1] = (start[line] as number) + list.length));
   const all = leaving.flat();
   return { start, to: Int32Array.from(all, (edge) => edge.to), mask: Int32Array.from(all, (edge) => edge.mask) };
-}
-
-export interface SetSpread {
-  /** Combinations that may be set in the line arrived at. */
-  readonly gate?: LineSets;
-  /** [line] → ways through actuators, except those of actuator `without`. */
-  readonly links?: readonly (readonly Link[])[];
-  readonly without?: number;
-  readonly fromTank?: boolean;
-  readonly order?: Int32Array;
-}
-
-/**
- * Grows `field` along `edges` to its fixpoint, a line at a time. Tanks absorb: nothing spreads on from a
- * tank line unless `fromTank`.
- */
-export function spreadSets(
-  sets: Diagrams,
-  net: Network,
-  field: LineSets,
-  edges: Adjacency,
-  open: readonly Diagram[],
-  options: SetSpread = {},
-): void {
-  const { gate, links, without = -1, fromTank = false, order } = options;
-  const queue: number[] = [];
-  const queued = new Uint8Array(field.length);
-  const push = (line: number): void => {
-    if (queued[line] === 1 || (!fromTank && net.lines[line]?.tank === true)) return;
-    queued[line] = 1;
-    queue.push(line);
-  };
-  const grow = (line: number, more: Diagram): void => {
-    const allowed = gate === undefined ? more : sets.and(more, gate[line] as Diagram);
-    const before = field[line] as Diagram;
-    const after = sets.or(before, allowed);
-    if (after === before) return;
-    field[line] = after;
-    push(line);
-  };
-  for (let i = 0; i < field.length; i++) {
-    const line = order === undefined ? i : (order[i] as number);
-    if (field[line] !== NONE) push(line);
-  }
-  for (let head = 0; head < queue.length; head++) {
-    const line = queue[head] as number;
-    queued[line] = 0;
-    for (let e = edges.start[line] as number; e < (edges.start[line + 1] as number); e++) {
-      grow(edges.to[e] as number, sets.and(field[line] as Diagram, open[edges.mask[e] as number] as Diagram));
-    }
-    for (const link of links?.[line] ?? []) if (link.actuator !== without) grow(link.to, field[line] as Diagram);
-  }
 }
