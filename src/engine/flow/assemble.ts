@@ -37,6 +37,8 @@ export interface FlowSystem {
   readonly pilots: Pilots;
   /** Branches that are on: the first `plain` without pilot, the rest with one. */
   active: Int32Array;
+  /** Where `active` lies. */
+  readonly room: Int32Array;
   plain: number;
 }
 
@@ -96,6 +98,7 @@ export function assemble(problem: FlowProblem): FlowSystem {
     leak: problem.leak,
     pilots: layPilots(branches, plan, tank),
     active: new Int32Array(0),
+    room: new Int32Array(m),
     plain: 0,
   };
   listActive(system);
@@ -136,13 +139,12 @@ function layPilots(branches: readonly Branch[], plan: Plan, tank: (line: number)
 
 /** To be called after `on` was changed. */
 export function listActive(system: FlowSystem): void {
-  const plain: number[] = [];
-  const piloted: number[] = [];
-  for (let j = 0; j < system.m; j++) {
-    if (system.on[j] === 1) (system.pilots.of[j] === -1 ? plain : piloted).push(j);
-  }
-  system.active = Int32Array.from([...plain, ...piloted]);
-  system.plain = plain.length;
+  const { m, on, pilots, room } = system;
+  let count = 0;
+  for (let j = 0; j < m; j++) if (on[j] === 1 && pilots.of[j] === -1) room[count++] = j;
+  system.plain = count;
+  for (const j of pilots.branch) if (on[j] === 1) room[count++] = j;
+  if (system.active.length !== count) system.active = room.subarray(0, count);
 }
 
 /** Largest part of the flow scale: residuals are measured against it. m³/s. */
@@ -200,6 +202,24 @@ export function balance(system: FlowSystem, at: Point): void {
   }
 }
 
+/** Through-put by the law that stands at `l`, as it is without softness. */
+export function flowAt(law: Float64Array, l: number, u: number): number {
+  let t = u - (law[l + FORWARD] as number);
+  let flow = 0;
+  if (t > 0) {
+    const r = law[l + R] as number;
+    flow = (2 * t) / (r + Math.sqrt(r * r + 4 * (law[l + K] as number) * t));
+  } else {
+    t = (law[l + BACKWARD] as number) - u;
+    if (t > 0) {
+      const r = law[l + R] as number;
+      flow = (-2 * t) / (r + Math.sqrt(r * r + 4 * (law[l + K] as number) * t));
+    }
+  }
+  if (flow >= (law[l + HI] as number)) flow = law[l + HI] as number;
+  return flow <= (law[l + LO] as number) ? (law[l + LO] as number) : flow;
+}
+
 /** Active branches from `first` to before `end`. `before`: through-puts at the last point, to tell where a flow turned. */
 export function branchFlows(system: FlowSystem, at: Point, before: Float64Array, first: number, end: number): void {
   const { ends, law, active } = system;
@@ -213,13 +233,13 @@ export function branchFlows(system: FlowSystem, at: Point, before: Float64Array,
     const b = ends[e + 1] as number;
     const ca = law[l + CA] as number;
     const cb = law[l + CB] as number;
-    const c2 = ca * ca > cb * cb ? ca * ca : cb * cb;
     const u = ca * (p[a] as number) + cb * (p[b] as number);
     let t = u - (law[l + FORWARD] as number);
     let flow = 0;
     let s = 0;
     if (t > 0) {
-      const r = (law[l + R] as number) + soft * c2;
+      let r = law[l + R] as number;
+      if (soft !== 0) r += soft * (ca * ca > cb * cb ? ca * ca : cb * cb);
       const k = law[l + K] as number;
       if (k === 0) {
         s = 1 / r;
@@ -233,7 +253,8 @@ export function branchFlows(system: FlowSystem, at: Point, before: Float64Array,
     } else {
       t = (law[l + BACKWARD] as number) - u;
       if (t > 0) {
-        const r = (law[l + R] as number) + soft * c2;
+        let r = law[l + R] as number;
+        if (soft !== 0) r += soft * (ca * ca > cb * cb ? ca * ca : cb * cb);
         const k = law[l + K] as number;
         const root = k === 0 ? r : Math.sqrt(r * r + 4 * k * t);
         s = 1 / root;

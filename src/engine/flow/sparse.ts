@@ -97,20 +97,22 @@ function layOut(n: number, order: Int32Array, rank: Int32Array, rows: readonly n
 }
 
 /**
- * Factors the symmetric matrix in `v` (above the diagonal only) in place. A pivot that rounding has
- * driven to `floor` or below is raised to it.
+ * Factors the symmetric matrix in `v` (above the diagonal only) in place; the diagonal becomes one over the
+ * pivots. A pivot that rounding has driven to `floor` or below is raised to it.
  */
 export function factorSymmetric(plan: Plan, v: Float64Array, floor: number): void {
-  const { n, order, start, slot, target } = plan;
+  const { n, order, start, target } = plan;
   let next = 0;
+  // Slots above the diagonal lie in the order of elimination.
+  let i = n + 1;
   for (let step = 0; step < n; step++) {
     const k = order[step] as number;
-    let pivot = v[k] as number;
-    if (!(pivot > floor)) v[k] = pivot = floor;
-    const inverse = 1 / pivot;
-    const end = start[step + 1] as number;
-    for (let i = start[step] as number; i < end; i++) {
-      const entry = v[slot[i] as number] as number;
+    const pivot = v[k] as number;
+    const inverse = 1 / (pivot > floor ? pivot : floor);
+    v[k] = inverse;
+    const end = n + 1 + (start[step + 1] as number);
+    for (; i < end; i++) {
+      const entry = v[i] as number;
       if (entry === 0) {
         next += end - i;
         continue;
@@ -118,7 +120,7 @@ export function factorSymmetric(plan: Plan, v: Float64Array, floor: number): voi
       const factor = entry * inverse;
       for (let j = i; j < end; j++) {
         const t = target[next++] as number;
-        v[t] = (v[t] as number) - factor * (v[slot[j] as number] as number);
+        v[t] = (v[t] as number) - factor * (v[j] as number);
       }
     }
   }
@@ -126,25 +128,25 @@ export function factorSymmetric(plan: Plan, v: Float64Array, floor: number): voi
 
 /** Solves with the factors of `factorSymmetric`; `b` becomes the solution. */
 export function solveSymmetric(plan: Plan, v: Float64Array, b: Float64Array): void {
-  const { n, order, start, line, slot } = plan;
+  const { n, order, start, line } = plan;
+  let i = 0;
   for (let step = 0; step < n; step++) {
     const k = order[step] as number;
-    const value = (b[k] as number) / (v[k] as number);
+    const value = (b[k] as number) * (v[k] as number);
     b[k] = value;
-    if (value === 0) continue;
     const end = start[step + 1] as number;
-    for (let i = start[step] as number; i < end; i++) {
+    for (; i < end; i++) {
       const a = line[i] as number;
-      b[a] = (b[a] as number) - (v[slot[i] as number] as number) * value;
+      b[a] = (b[a] as number) - (v[n + 1 + i] as number) * value;
     }
   }
   for (let step = n - 1; step >= 0; step--) {
     const k = order[step] as number;
-    const end = start[step + 1] as number;
+    const begin = start[step] as number;
     let sum = 0;
-    for (let i = start[step] as number; i < end; i++)
-      sum += (v[slot[i] as number] as number) * (b[line[i] as number] as number);
-    b[k] = (b[k] as number) - sum / (v[k] as number);
+    for (i = begin; i < (start[step + 1] as number); i++)
+      sum += (v[n + 1 + i] as number) * (b[line[i] as number] as number);
+    b[k] = (b[k] as number) - sum * (v[k] as number);
   }
 }
 
