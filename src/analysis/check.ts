@@ -7,12 +7,14 @@ import { TooManyNodes } from '../engine/paths/diagrams/diagrams.ts';
 import { openPathSets } from '../engine/paths/diagrams/open-paths.ts';
 import { checkRule, checkRuleByPaths } from '../engine/table/rules/answer.ts';
 import type { RuleAnswer } from '../engine/table/rules/answer.ts';
+import { figuresIn } from '../engine/table/rules/condition.ts';
 import type { Rule } from '../engine/table/rules/condition.ts';
 import { namesOfNetwork } from '../engine/table/rules/names.ts';
 import { parseRule } from '../engine/table/rules/parse.ts';
 import { NeedsTable } from '../engine/table/rules/sources.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, networkOf, pathConditions, tabulate } from './analyse.ts';
+import { figuresFor } from './ask.ts';
 import type { Check, CheckedRule } from './check-results.ts';
 import type { Conditions } from './results.ts';
 
@@ -61,7 +63,15 @@ export function checkRules(
   let answerTo: (rule: Rule) => RuleAnswer;
   if (listed) {
     const data = table ?? tabulate(circuit, conditions, budget);
-    answerTo = (rule) => checkRule(data, rule);
+    const figure = figuresFor(
+      circuit,
+      conditions,
+      data,
+      read.flatMap(({ rule }) => figuresIn(rule.breaks)),
+      budget,
+    );
+    if (!figure.ok) return figure;
+    answerTo = (rule) => checkRule(data, rule, figure.value);
   } else {
     const where = pathConditions(net, conditions);
     const heartbeat = (): void => {

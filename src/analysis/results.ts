@@ -44,6 +44,17 @@ export type {
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';
+export type { AskAnswer, Continuation, Continuations } from './ask-results.ts';
+export type {
+  FoldAnswer,
+  FoldBy,
+  FoldItem,
+  FoldRow,
+  Influence,
+  InfluenceOf,
+  InfluenceRow,
+  SubCircuit,
+} from './fold-results.ts';
 export type { Check, CheckedInput, CheckedRule, RuleAnswer, RuleCases, RuleOutcome } from './check-results.ts';
 
 export type {

@@ -7,11 +7,12 @@ import type { PathConditions } from '../../paths/reach.ts';
 import { coverOf } from '../fold/cover.ts';
 import { anyPosition } from '../fold/cube.ts';
 import type { Cube } from '../fold/cube.ts';
-import type { TableData } from '../table-data.ts';
+import type { Plane, TableData } from '../table-data.ts';
 import type { Rule } from './condition.ts';
 import { evaluate } from './evaluate.ts';
+import type { RuleSource } from './evaluate.ts';
 import type { Names } from './names.ts';
-import { namesOfNetwork, namesOfTable } from './names.ts';
+import { namesOfNetwork, namesOfTable, sayName } from './names.ts';
 import { openPathSource, tableSource } from './sources.ts';
 
 export const RULE_OUTCOMES = ['holds', 'broken', 'not decided'] as const;
@@ -40,9 +41,9 @@ export interface RuleAnswer {
   readonly undecided?: RuleCases;
 }
 
-/** Checks a rule against every row of a table. */
-export function checkRule(data: TableData, rule: Rule): RuleAnswer {
-  const { sure, maybe } = evaluate(tableSource(data), rule.breaks);
+/** Checks a rule against every row of a table. `figure` answers for pressures and speeds, see `figurePlanes`. */
+export function checkRule(data: TableData, rule: Rule, figure?: RuleSource<Plane>['figure']): RuleAnswer {
+  const { sure, maybe } = evaluate(tableSource(data, figure), rule.breaks);
   const sets = new Diagrams(data.inputs.map((input) => input.positions.length));
   return answer(sets, namesOfTable(data), rule, planeToDiagram(sets, sure), planeToDiagram(sets, maybe));
 }
@@ -69,7 +70,7 @@ function answer(sets: Diagrams, names: Names, rule: Rule, sure: Diagram, maybe: 
   };
 }
 
-function casesOf(sets: Diagrams, names: Names, set: Diagram): RuleCases {
+export function casesOf(sets: Diagrams, names: Names, set: Diagram): RuleCases {
   const { cubes, least } = coverOf(sets, set);
   const coilTerms = cubes.map((cube) => sayCoils(cube, names));
   const rest = names.inputs.map((input) => input.rest ?? 0);
@@ -80,19 +81,6 @@ function casesOf(sets: Diagrams, names: Names, set: Diagram): RuleCases {
     least,
     example: sets.example(set, rest) ?? rest,
   };
-}
-
-/** A name that the rules' language reads back as this name. */
-function sayName(name: string): string {
-  const plain = /^[\p{L}\p{N}][\p{L}\p{N}_.→+-]*( [\p{L}\p{N}][\p{L}\p{N}_.→+-]*)*$/u.test(name) && !/[.]$/.test(name);
-  const words = name
-    .split(' ')
-    .some((word) =>
-      /^(and|or|not|when|while|whenever|if|only|unless|is|at|every|all|each|any|some|no|a|an|never|always|rest)$/i.test(
-        word,
-      ),
-    );
-  return (plain && !words) || name.includes('"') ? name : `"${name}"`;
 }
 
 /** Every combination: a condition that always holds. */

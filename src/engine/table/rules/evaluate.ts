@@ -1,5 +1,5 @@
 import type { ActuatorVerdict, BlockedKind, LineClass, PumpVerdict, TrapReason } from '../words.ts';
-import type { Condition } from './condition.ts';
+import type { Condition, FigureCondition } from './condition.ts';
 
 /** Combinations in which something surely holds, and those in which it may hold (these include the sure ones). */
 export interface Truth<S> {
@@ -21,6 +21,7 @@ export interface RuleSource<S> {
   readonly line: (index: number, classes: readonly LineClass[]) => Truth<S>;
   readonly blocked: (index: number, kinds: readonly BlockedKind[]) => Truth<S>;
   readonly trapped: (index: number, reasons: readonly TrapReason[]) => Truth<S>;
+  readonly figure: (condition: FigureCondition) => Truth<S>;
 }
 
 /**
@@ -61,5 +62,8 @@ export function evaluate<S>(source: RuleSource<S>, condition: Condition): Truth<
       return source.blocked(condition.line, condition.kinds);
     case 'trapped':
       return source.trapped(condition.line, condition.reasons);
+    case 'pressure':
+    case 'speed':
+      return source.figure(condition);
   }
 }

@@ -11,7 +11,8 @@ export interface Names {
   }[];
   readonly actuators: readonly { readonly label: string; readonly motion: 'linear' | 'rotary' }[];
   readonly pumps: readonly { readonly label: string }[];
-  readonly lines: readonly { readonly name: string }[];
+  /** `ports`: by the labels of their parts. */
+  readonly lines: readonly { readonly name: string; readonly ports?: readonly string[] }[];
 }
 
 export type NamedKind = 'valve' | 'coil' | 'actuator' | 'pump' | 'line';
@@ -37,7 +38,9 @@ export function namesOfNetwork(net: Network): Names {
     })),
     actuators: net.actuators.map(({ part, rotary }) => ({ label: label(part), motion: rotary ? 'rotary' : 'linear' })),
     pumps: net.pumps.map(({ part }) => ({ label: label(part) })),
-    lines: net.lines.slice(0, net.shown).map(({ name }) => ({ name })),
+    lines: net.lines
+      .slice(0, net.shown)
+      .map(({ name, ports }) => ({ name, ports: ports.map((port) => labelled(net, port)) })),
   };
 }
 
@@ -45,8 +48,39 @@ export const namesOfTable = ({ inputs, actuators, pumps, lines }: TableData): Na
   inputs,
   actuators,
   pumps,
-  lines,
+  lines: lines.map(({ name }) => ({ name })),
 });
+
+/** A port says its part by id; people know the label. */
+function labelled(net: Network, port: string): string {
+  const dot = port.lastIndexOf('.');
+  const part = net.parts.find(({ id }) => id === port.slice(0, dot));
+  return part ? `${part.label}${port.slice(dot)}` : port;
+}
+
+/** Where a pressure can be asked for: lines by their names and ports, and pumps for their outlets. */
+export function pressurePoints(names: Names): Named[] {
+  return [
+    ...names.lines.map(({ name }, index): Named => ({ kind: 'line', name, index, position: 0 })),
+    ...names.pumps.map(({ label }, index): Named => ({ kind: 'pump', name: label, index, position: 0 })),
+    ...names.lines.flatMap(({ ports = [] }, index) =>
+      ports.map((name): Named => ({ kind: 'line', name, index, position: 0 })),
+    ),
+  ];
+}
+
+/** A name that the rules' language reads back as this name. */
+export function sayName(name: string): string {
+  const plain = /^[\p{L}\p{N}][\p{L}\p{N}_.→+-]*( [\p{L}\p{N}][\p{L}\p{N}_.→+-]*)*$/u.test(name) && !/[.]$/.test(name);
+  const words = name
+    .split(' ')
+    .some((word) =>
+      /^(and|or|not|when|while|whenever|if|only|unless|is|at|every|all|each|any|some|no|a|an|never|always|rest)$/i.test(
+        word,
+      ),
+    );
+  return (plain && !words) || name.includes('"') ? name : `"${name}"`;
+}
 
 /** Everything that has a name; a coil name that two valves use carries the label of its valve. */
 export function namedThings(names: Names): Named[] {

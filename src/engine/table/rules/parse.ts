@@ -3,6 +3,7 @@ import type { Result } from '../../../base/result.ts';
 import type { Condition, Rule } from './condition.ts';
 import type { Names } from './names.ts';
 import { Fault, Reader } from './reader.ts';
+import type { Continuation } from './reader.ts';
 import { Statements } from './statement.ts';
 
 const WHEN = ['when', 'while', 'whenever', 'if'];
@@ -18,16 +19,17 @@ const HOW =
  *     never A unless B        always A unless B
  *
  * A and B are statements joined by `and`, `or`, `not` and parentheses; `not` binds closest, then `and`.
- * A fault is one problem whose place is the column, counted from 1.
+ * A fault is one problem whose place is the column, counted from 1. `wanted` gets what may follow where the text ends.
  */
-export function parseRule(text: string, names: Names): Result<Rule> {
-  return attempt(() => new RuleParser(text, names).rule());
+export function parseRule(text: string, names: Names, wanted?: Continuation[]): Result<Rule> {
+  return attempt(() => new RuleParser(text, names, wanted).rule());
 }
 
-/** A condition by itself, such as the interlock of an answer. */
-export function parseCondition(text: string, names: Names): Result<Condition> {
+/** A condition by itself, such as the interlock of an answer, or a question to the table. */
+export function parseCondition(text: string, names: Names, wanted?: Continuation[]): Result<Condition> {
   return attempt(() => {
-    const parser = new RuleParser(text, names);
+    const parser = new RuleParser(text, names, wanted);
+    parser.noRule();
     const condition = parser.condition();
     parser.end('"and" or "or"');
     return condition;
@@ -52,10 +54,10 @@ class RuleParser {
   readonly #statements: Statements;
   #depth = 0;
 
-  constructor(text: string, names: Names) {
+  constructor(text: string, names: Names, wanted?: Continuation[]) {
     this.#text = text;
     // A full stop may end the sentence.
-    this.#in = new Reader(text.replace(/[\s.]+$/, ''));
+    this.#in = new Reader(text.replace(/[\s.]+$/, ''), wanted);
     this.#statements = new Statements(this.#in, names);
   }
 
@@ -82,6 +84,18 @@ class RuleParser {
         : `"${this.#in.next}" does not go on with the rule.`,
       'Begin with "never" or "always", or go on with "only if" or "whenever" and a condition.',
     );
+  }
+
+  /** A condition states something; what must or must not be is a rule. */
+  noRule(): void {
+    const { at, text } = this.#in;
+    const first = /^(never|always)\s/i.exec(text)?.[1];
+    if (first !== undefined)
+      throw new Fault(
+        at,
+        `"${first}" begins a rule, not a question.`,
+        'Leave it out here, or check it with the rules.',
+      );
   }
 
   /** `never` or `always`: where it applies. */

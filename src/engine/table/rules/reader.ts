@@ -19,13 +19,22 @@ export class Fault extends Error {
 
 const ENDS = /[\s(),/"]/;
 
+/** Words, names or a figure that may come next. */
+export interface Continuation {
+  readonly kind: 'word' | 'name' | 'figure';
+  readonly text: string;
+}
+
 /** Reads a rule from left to right: words of the language in any case, names as they are shown. */
 export class Reader {
   readonly text: string;
   at = 0;
+  /** What was looked for where the text ends: how it may go on. */
+  readonly #wanted: Continuation[] | undefined;
 
-  constructor(text: string) {
+  constructor(text: string, wanted?: Continuation[]) {
     this.text = text;
+    this.#wanted = wanted;
     this.skip();
   }
 
@@ -35,6 +44,10 @@ export class Reader {
 
   get ended(): boolean {
     return this.at >= this.text.length;
+  }
+
+  want(kind: Continuation['kind'], text: string): void {
+    if (this.ended) this.#wanted?.push({ kind, text });
   }
 
   /** The word that comes next, for messages. */
@@ -47,6 +60,7 @@ export class Reader {
 
   /** Takes a mark such as `(` if it comes next. */
   mark(mark: string): boolean {
+    this.want('word', mark);
     if (this.text[this.at] !== mark) return false;
     this.at += 1;
     this.skip();
@@ -71,6 +85,7 @@ export class Reader {
 
   /** Takes these words of the language if they come next. */
   words(words: string): boolean {
+    this.want('word', words);
     const end = this.#endOf(words, false);
     if (end < 0) return false;
     this.at = end;
@@ -86,7 +101,8 @@ export class Reader {
    * Takes the longest of the phrases that comes next, in quotes or without; as written first, then in any
    * case. Returns its number, -1 if none comes.
    */
-  oneOf(phrases: readonly string[]): number {
+  oneOf(phrases: readonly string[], kind: Continuation['kind'] = 'word'): number {
+    if (this.ended && this.#wanted) for (const phrase of phrases) this.want(kind, phrase);
     if (this.text[this.at] === '"') return this.#quoted(phrases);
     for (const exact of [true, false]) {
       let best = -1;

@@ -14,8 +14,12 @@ import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REA
 import type { ActuatorVerdict } from '../words.ts';
 import type { RuleSource, Truth } from './evaluate.ts';
 
-/** Rules on a listed table: bit planes over its rows. */
-export function tableSource(data: TableData): RuleSource<Plane> {
+const unsolved = (): never => {
+  throw new Error('pressures and speeds were not solved for this question');
+};
+
+/** Rules on a listed table: bit planes over its rows. `figure` answers for pressures and speeds, see `figurePlanes`. */
+export function tableSource(data: TableData, figure: RuleSource<Plane>['figure'] = unsolved): RuleSource<Plane> {
   const { count } = data;
   const radices = data.inputs.map((input) => input.positions.length);
   const union = <W>(
@@ -58,6 +62,7 @@ export function tableSource(data: TableData): RuleSource<Plane> {
     line: (i, classes) => known(union(data.linePlanes[i], LINE_CLASSES, classes)),
     blocked: (i, kinds) => known(union(data.blockedPlanes[i], BLOCKED_KINDS, kinds)),
     trapped: (i, reasons) => known(union(data.trapPlanes[i], TRAP_REASONS, reasons)),
+    figure,
   };
 }
 
@@ -102,7 +107,7 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
     pump: (i, verdicts) => {
       const pump = net.pumps[i];
       const label = net.parts[pump?.part ?? -1]?.label ?? 'a pump';
-      if (!conditions.pumpsRunning) return known(verdicts.includes('stopped') ? ALL : NONE);
+      if (!conditions.pumpsRunning || pump?.atRest) return known(verdicts.includes('stopped') ? ALL : NONE);
       if (verdicts.some((word) => word !== 'unloaded') || pump === undefined)
         throw new NeedsTable(`More of ${label} than whether a free path to tank unloads it`);
       // Pressures may find it unloaded over a throttle too.
@@ -128,6 +133,9 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
     },
     trapped: (i) => {
       throw new NeedsTable(`Whether line ${net.lines[i]?.name ?? ''} is trapped`);
+    },
+    figure: ({ type }) => {
+      throw new NeedsTable(type === 'pressure' ? 'A pressure' : 'A speed');
     },
   };
 }

@@ -1,6 +1,7 @@
 import type { Condition } from './condition.ts';
+import { readFigure, readComparison } from './figures.ts';
 import type { Named, NamedKind, Names } from './names.ts';
-import { namedThings } from './names.ts';
+import { namedThings, pressurePoints } from './names.ts';
 import type { Reader } from './reader.ts';
 import { Fault, nearest } from './reader.ts';
 import type { Says } from './says.ts';
@@ -38,6 +39,7 @@ export class Statements {
 
   read(): Condition {
     const start = this.#in.at;
+    if (this.#in.words('pressure at')) return this.#pressure(start);
     const quantity = this.#quantity();
     if (quantity) {
       const things =
@@ -58,19 +60,26 @@ export class Statements {
       const only = this.#things.filter(
         (thing) => thing.kind === (KINDS.find(({ words }) => words.includes(kind))?.kind ?? kind),
       );
-      const found = this.#in.oneOf(only.map((thing) => thing.name));
+      const found = this.#in.oneOf(
+        only.map((thing) => thing.name),
+        'name',
+      );
       if (found >= 0) return this.#say([only[found] as Named], 'every');
       if (kind === 'line' || kind === 'coil') throw this.#unknown(only, `${kind} `);
       // A part may have such a name itself.
       this.#in.at = back;
     }
-    const found = this.#in.oneOf(this.#things.map((thing) => thing.name));
+    const found = this.#in.oneOf(
+      this.#things.map((thing) => thing.name),
+      'name',
+    );
     if (found < 0) throw this.#unknown(this.#things, '');
     return this.#say([this.#things[found] as Named], 'every');
   }
 
-  #quantity():
-    { readonly things: readonly Named[]; readonly kind: NamedKind; readonly how: 'every' | 'any' | 'no' } | undefined {
+  #quantity(
+    kinds?: readonly NamedKind[],
+  ): { readonly things: readonly Named[]; readonly kind: NamedKind; readonly how: 'every' | 'any' | 'no' } | undefined {
     const back = this.#in.at;
     const how = EVERY.some((w) => this.#in.words(w))
       ? 'every'
@@ -79,7 +88,8 @@ export class Statements {
         : this.#in.words('no')
           ? 'no'
           : undefined;
-    const found = how && KINDS.find(({ words }) => words.some((w) => this.#in.words(w)));
+    const found =
+      how && KINDS.find(({ kind, words }) => (kinds?.includes(kind) ?? true) && words.some((w) => this.#in.words(w)));
     if (how === undefined || found === undefined) {
       this.#in.at = back;
       return undefined;
@@ -128,8 +138,14 @@ export class Statements {
         };
       }
       case 'actuator': {
-        const verdicts = this.#meaning(ACTUATOR_SAYS, called);
-        return ({ index }) => ({ type: 'actuator', actuator: index, verdicts });
+        const speed = this.#speed(things);
+        if (speed) return speed;
+        const verdicts = this.#meaning(ACTUATOR_SAYS, called, ['faster than …', 'slower than …']);
+        const moving = this.#speed(things);
+        return (thing) => {
+          const does: Condition = { type: 'actuator', actuator: thing.index, verdicts };
+          return moving ? { type: 'every', of: [does, moving(thing)] } : does;
+        };
       }
       case 'pump': {
         const verdicts = this.#meaning(PUMP_SAYS, called);
@@ -156,13 +172,58 @@ export class Statements {
     }
   }
 
-  #meaning<W>(says: readonly Says<W>[], called: string): readonly W[] {
-    const found = this.#in.oneOf(says.map(({ words }) => words));
-    if (found < 0)
-      throw this.#unsaid(
-        called,
-        says.map(({ words }) => words),
+  /** `pressure at V1.A over 160 bar`, `pressure at any pump under 10 bar`. */
+  #pressure(start: number): Condition {
+    const quantity = this.#quantity(['line', 'pump']);
+    const points = quantity ? [] : pressurePoints(this.#names);
+    const found = quantity
+      ? -1
+      : this.#in.oneOf(
+          points.map(({ name }) => name),
+          'name',
+        );
+    if (!quantity && found < 0) {
+      const { at, next, ended } = this.#in;
+      throw new Fault(
+        at,
+        ended ? 'The name of a line, port or pump should stand here.' : `There is no line, port or pump "${next}".`,
+        listed([...new Set(points.map(({ name }) => name))]),
       );
+    }
+    const things = quantity ? quantity.things : [points[found] as Named];
+    if (things.length === 0) throw new Fault(start, 'The circuit has none of these.', 'Leave this out.');
+    const copula = this.#in.words('is') || this.#in.words('stays');
+    const negated = copula && this.#in.words('not');
+    const is = readComparison(this.#in);
+    const than = readFigure(this.#in, 'pressure');
+    const each = things.map(({ kind, index }): Condition => {
+      const one: Condition = { type: 'pressure', of: kind === 'pump' ? 'pump' : 'line', index, is, than };
+      return negated ? { type: 'not', of: one } : one;
+    });
+    const [only] = each;
+    if (quantity?.how === 'no') return { type: 'not', of: { type: 'any', of: each } };
+    return each.length === 1 && only ? only : { type: quantity?.how === 'any' ? 'any' : 'every', of: each };
+  }
+
+  /** `faster than 120 mm/s`, if it comes next. */
+  #speed(things: readonly Named[]): ((thing: Named) => Condition) | undefined {
+    const faster = this.#in.words('faster than');
+    if (!faster && !this.#in.words('slower than')) return undefined;
+    const rotary = things.map(({ index }) => this.#names.actuators[index]?.motion === 'rotary');
+    if (rotary.includes(true) && rotary.includes(false))
+      throw new Fault(
+        this.#in.at,
+        'Cylinders and motors have different units of speed.',
+        'Say it of every cylinder and of every motor apart.',
+      );
+    const size = readFigure(this.#in, rotary[0] ? 'frequency' : 'speed');
+    const than = rotary[0] ? size * 2 * Math.PI : size;
+    return ({ index }) => ({ type: 'speed', actuator: index, is: faster ? 'over' : 'under', than });
+  }
+
+  #meaning<W>(says: readonly Says<W>[], called: string, also: readonly string[] = []): readonly W[] {
+    const found = this.#in.oneOf(says.map(({ words }) => words));
+    if (found < 0) throw this.#unsaid(called, [...says.map(({ words }) => words), ...also]);
     return says[found]?.means ?? [];
   }
 
@@ -187,7 +248,7 @@ export class Statements {
     const names = one ? (this.#names.inputs[one.index]?.positions ?? []) : [];
     let positions = 0;
     do {
-      const found = this.#in.oneOf(names);
+      const found = this.#in.oneOf(names, 'name');
       if (found < 0 && positions === 0 && this.#in.words('rest')) return rests(place);
       if (found < 0) {
         const remedy = one
