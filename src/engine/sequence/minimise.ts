@@ -8,7 +8,7 @@ export interface Term {
 /** A sum of terms; none = never true. */
 export interface Minimised {
   readonly terms: readonly Term[];
-  /** Known to be the fewest terms and, with that many, the fewest literals. */
+  /** Known to be the fewest terms and, with that many, the fewest literals; of these the fewest negated. */
   readonly least: boolean;
 }
 
@@ -16,8 +16,8 @@ export interface Minimised {
 export const MOST_VARIABLES = 30;
 const MOST_TERMS = 4000;
 const MOST_NODES = 40_000;
-/** Above the literals of any sum that comes about here, so that terms count first. */
-const TERM_COST = 10_000;
+/** Terms count before literals, and these before negated ones, for any sum that comes about here. */
+const [TERM_COST, LITERAL_COST] = [1e8, 1e4];
 
 const holds = ({ mask, value }: Term, vector: number): boolean => (vector & mask) === value;
 
@@ -95,7 +95,8 @@ function cover(vectors: readonly number[], primes: readonly Term[]): { chosen: r
   return { chosen: search.chosen, proven };
 }
 
-const cost = (term: Term): number => TERM_COST + literals(term);
+const cost = (term: Term): number =>
+  TERM_COST + LITERAL_COST * literals(term) + literals({ mask: term.mask & ~term.value, value: 0 });
 
 function branch(
   vectors: readonly number[],
