@@ -2,8 +2,7 @@ import type { Plane } from '../engine/table/table-data.ts';
 import type { RuleCases } from '../engine/table/rules/answer.ts';
 import type { CheckedInput } from './check-results.ts';
 
-export type { Continuation } from '../engine/table/rules/reader.ts';
-export type { Continuations } from '../engine/table/rules/continue.ts';
+export type { Next } from '../engine/table/rules/continue.ts';
 
 /** The combinations in which a condition holds. */
 export interface AskAnswer {

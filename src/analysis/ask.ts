@@ -9,7 +9,7 @@ import { casesOf } from '../engine/table/rules/answer.ts';
 import { figuresIn } from '../engine/table/rules/condition.ts';
 import type { FigureCondition } from '../engine/table/rules/condition.ts';
 import { continuations } from '../engine/table/rules/continue.ts';
-import type { Continuations } from '../engine/table/rules/continue.ts';
+import type { Next } from '../engine/table/rules/continue.ts';
 import { evaluate } from '../engine/table/rules/evaluate.ts';
 import type { RuleSource } from '../engine/table/rules/evaluate.ts';
 import { figurePlanes } from '../engine/table/rules/figures.ts';
@@ -42,6 +42,8 @@ export function askTable(
   const inputs = names.inputs.map(({ label, positions }) => ({ label, positions }));
   const count = net.inputs.reduce((n, input) => n * BigInt(input.positions.length), 1n);
   if (count <= BigInt(MOST_ROWS)) {
+    const unsolved = tooManyToSolve(Number(count), figuresIn(condition));
+    if (unsolved) return bad(unsolved);
     const data = table ?? tabulate(circuit, conditions, budget);
     const figure = figuresFor(circuit, conditions, data, figuresIn(condition), budget);
     if (!figure.ok) return figure;
@@ -86,6 +88,16 @@ export const tooLarge = (error: NeedsTable, where: string): Problem => ({
   remedy: `Ask about a part of the circuit by itself, with at most ${MOST_ROWS.toLocaleString('en')} combinations.`,
 });
 
+/** Why pressures and speeds cannot be asked for, if they are. */
+export function tooManyToSolve(count: number, wanted: readonly FigureCondition[]): Problem | undefined {
+  if (wanted.length === 0 || count <= MOST_SOLVED) return undefined;
+  return {
+    where: 'circuit',
+    what: `Pressures and speeds are solved row by row, for up to ${MOST_SOLVED.toLocaleString('en')} combinations; this circuit has ${count.toLocaleString('en')}.`,
+    remedy: 'Ask without pressures and speeds, or about a part of the circuit by itself.',
+  };
+}
+
 /** Solves the rows for conditions on pressures and speeds; undefined where there are none. */
 export function figuresFor(
   circuit: Circuit,
@@ -95,16 +107,12 @@ export function figuresFor(
   budget: Budget,
 ): Result<RuleSource<Plane>['figure'] | undefined> {
   if (wanted.length === 0) return good(undefined);
-  if (data.count > MOST_SOLVED)
-    return bad({
-      where: 'circuit',
-      what: `Pressures and speeds are solved row by row, for up to ${MOST_SOLVED.toLocaleString('en')} combinations; this circuit has ${data.count.toLocaleString('en')}.`,
-      remedy: 'Ask without pressures and speeds, or about a part of the circuit by itself.',
-    });
+  const unsolved = tooManyToSolve(data.count, wanted);
+  if (unsolved) return bad(unsolved);
   const net = networkOf(circuit, conditions);
   return good(figurePlanes(new PressureSolver(net, pathConditions(net, conditions)), data, wanted, budget));
 }
 
 /** How a rule or question may go on where its text ends. */
-export const continueText = (circuit: Circuit, text: string, as: 'rule' | 'condition'): Continuations =>
+export const continueText = (circuit: Circuit, text: string, as: 'rule' | 'condition'): Next[] =>
   continuations(text, namesOfNetwork(networkOf(circuit)), as);

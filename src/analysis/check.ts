@@ -14,7 +14,7 @@ import { parseRule } from '../engine/table/rules/parse.ts';
 import { NeedsTable } from '../engine/table/rules/sources.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, networkOf, pathConditions, tabulate } from './analyse.ts';
-import { figuresFor } from './ask.ts';
+import { figuresFor, tooManyToSolve } from './ask.ts';
 import type { Check, CheckedRule } from './check-results.ts';
 import type { Conditions } from './results.ts';
 
@@ -62,6 +62,12 @@ export function checkRules(
   const listed = names.inputs.reduce((n, input) => n * input.positions.length, 1) <= MOST_ROWS;
   let answerTo: (rule: Rule) => RuleAnswer;
   if (listed) {
+    const count = names.inputs.reduce((n, input) => n * input.positions.length, 1);
+    const unsolved = tooManyToSolve(
+      count,
+      read.flatMap(({ rule }) => figuresIn(rule.breaks)),
+    );
+    if (unsolved) return bad(unsolved);
     const data = table ?? tabulate(circuit, conditions, budget);
     const figure = figuresFor(
       circuit,

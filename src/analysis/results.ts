@@ -44,7 +44,7 @@ export type {
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';
-export type { AskAnswer, Continuation, Continuations } from './ask-results.ts';
+export type { AskAnswer, Next } from './ask-results.ts';
 export type {
   FoldAnswer,
   FoldBy,

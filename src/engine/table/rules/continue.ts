@@ -3,10 +3,9 @@ import { sayName } from './names.ts';
 import { parseCondition, parseRule } from './parse.ts';
 import type { Continuation } from './reader.ts';
 
-/** What may follow a text, ready to be put in, and where the unfinished word begins that it replaces. */
-export interface Continuations {
+/** What may follow a text, ready to be put in from the column `from` on (0-based), where what is begun of it begins. */
+export interface Next extends Continuation {
   readonly from: number;
-  readonly options: readonly Continuation[];
 }
 
 /** Other spellings of words that are offered already. */
@@ -14,8 +13,10 @@ const SPARED = new Set(
   (
     'move,move out,move in,stand still,extend,retract,float,work,turns A>B,turns A->B,turns B>A,turns B->A,energised,' +
     'energized,rest,is at rest,stands at rest,are,stays,stands,in,each,all,some,a,an,do not,while,if,above,below,' +
-    'levers,valve,valves,coils,actuators,cylinders,motors,pumps,lines,only when,only while,;,,'
-  ).split(','),
+    'levers,valve,valves,coils,actuators,cylinders,motors,pumps,lines,only when,only while'
+  )
+    .split(',')
+    .concat(','),
 );
 /** Names past this many are left to be typed. */
 const MOST = 60;
@@ -24,25 +25,26 @@ const MOST = 60;
  * How a rule or a condition may go on at its end. The parser itself is asked: whatever it looked for where the text
  * ends may stand there.
  */
-export function continuations(text: string, names: Names, as: 'rule' | 'condition'): Continuations {
+export function continuations(text: string, names: Names, as: 'rule' | 'condition'): Next[] {
   const parse = as === 'rule' ? parseRule : parseCondition;
   const at = (cut: number): Continuation[] => {
     const wanted: Continuation[] = [];
-    parse(`${text.slice(0, cut).trimEnd()} `, names, wanted);
+    parse(text.slice(0, cut), names, wanted);
     return offered(wanted);
   };
-  // Back from the end over the blanks: what is typed of a phrase narrows what is offered.
-  const starts = [text.length, ...[...text.matchAll(/(?<=^|[\s(/])\S/g)].map(({ index }) => index).reverse()];
-  for (const from of starts.slice(0, 5)) {
+  // Back from the end, a word at a time: what is typed of a phrase narrows what is offered.
+  const begun = [...text.matchAll(/(?<=^|[\s(/])\S/g)].map(({ index }) => index).reverse();
+  const starts = [...(text === '' || /[\s(/]$/.test(text) ? [text.length] : []), ...begun.slice(0, 4)];
+  const found = new Map<string, Next>();
+  for (const from of starts) {
     const typed = text.slice(from).replace(/\s+/g, ' ').replace(/^"/, '').toLowerCase();
-    if (typed === '' && text !== '' && !/[\s(/]$/.test(text)) continue;
-    const options = at(from).filter(({ text: each }) => {
-      const plain = each.replace(/^"/, '').toLowerCase();
-      return plain.startsWith(typed) && plain !== typed.trimEnd();
-    });
-    if (options.length > 0) return { from, options: options.slice(0, MOST) };
+    for (const option of at(from)) {
+      const plain = option.text.replace(/^"/, '').toLowerCase();
+      if (!plain.startsWith(typed) || plain === typed.trimEnd() || found.has(option.text)) continue;
+      found.set(option.text, { ...option, from });
+    }
   }
-  return { from: text.length, options: [] };
+  return [...found.values()].slice(0, MOST);
 }
 
 function offered(wanted: readonly Continuation[]): Continuation[] {

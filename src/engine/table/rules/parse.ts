@@ -52,22 +52,25 @@ class RuleParser {
   readonly #text: string;
   readonly #in: Reader;
   readonly #statements: Statements;
+  /** Somebody asks how the text may go on. */
+  readonly #asked: boolean;
   #depth = 0;
 
   constructor(text: string, names: Names, wanted?: Continuation[]) {
     this.#text = text;
     // A full stop may end the sentence.
     this.#in = new Reader(text.replace(/[\s.]+$/, ''), wanted);
+    this.#asked = wanted !== undefined;
     this.#statements = new Statements(this.#in, names);
   }
 
   rule(): Rule {
     const text = this.#text;
-    if (this.#in.ended) throw new Fault(0, 'The rule is empty.', HOW);
+    if (this.#in.ended && !this.#asked) throw new Fault(0, 'The rule is empty.', HOW);
     for (const first of ['never', 'always']) {
       if (!this.#in.words(first)) continue;
       this.#in.mark(',');
-      if (this.#in.ended) throw new Fault(this.#in.at, `Nothing follows "${first}".`, HOW);
+      if (this.#in.ended && !this.#asked) throw new Fault(this.#in.at, `Nothing follows "${first}".`, HOW);
       const claim = this.condition();
       const wrong = first === 'never' ? claim : not(claim);
       return { text, breaks: this.#within(wrong) };
@@ -101,9 +104,9 @@ class RuleParser {
   /** `never` or `always`: where it applies. */
   #within(wrong: Condition): Condition {
     this.#in.mark(',');
-    if (this.#in.ended) return wrong;
     if (WHEN.some((word) => this.#in.words(word))) return this.#last(both(wrong, this.condition()));
     if (this.#in.words('unless')) return this.#last(both(wrong, not(this.condition())));
+    if (this.#in.ended) return wrong;
     return this.#last(wrong, '"and", "or", "when", "while", "unless"');
   }
 
