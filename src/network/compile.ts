@@ -100,6 +100,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             suction: at(element.suction),
             compensated: element.form === 'compensated',
             tightWhenStopped: element.tightWhenStopped,
+            atRest: element.atRest ?? false,
             flow: element.flow,
             setting: element.setting ?? 0,
           });
@@ -110,6 +111,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             line: at(element.port),
             charged: element.charged,
             precharge: element.precharge ?? 0,
+            pressure: Math.max(element.pressure ?? 0, element.precharge ?? 0),
             ...(element.volume !== undefined && { volume: element.volume }),
           });
           break;
@@ -211,6 +213,8 @@ function compileActuator(element: ActuatorElement, part: number, at: (port: stri
     areaB: element.areaB,
     ...(element.stroke !== undefined && { stroke: element.stroke }),
     push: { way, by: gravity ? 'load' : 'spring', size: gravity ? load.size : 0 },
+    leakage: element.leakage ?? 0,
+    ...(element.drain && { drain: { line: at(element.drain.port), leakage: element.drain.leakage } }),
     resisting: load.sense === 'resisting' && load.size > 0,
     forces: {
       pressing: gravity === 'in' ? load.size : gravity === 'out' ? -load.size : 0,

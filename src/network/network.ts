@@ -112,6 +112,8 @@ export interface NetPump {
   readonly suction: number;
   readonly compensated: boolean;
   readonly tightWhenStopped: boolean;
+  /** Stopped whatever the condition of the table: a hand pump that nobody works. */
+  readonly atRest: boolean;
   /** m³/s. */
   readonly flow: number;
   /** Pa, compensated ones. */
@@ -155,6 +157,8 @@ export interface NetAccumulator {
   readonly charged: boolean;
   /** Pa of gas when empty of oil; 0 = not given. */
   readonly precharge: number;
+  /** Pa at which it stands when charged; never below `precharge`. */
+  readonly pressure: number;
   /** m³ of gas when empty of oil; absent = not given. */
   readonly volume?: number;
 }
@@ -184,6 +188,10 @@ export interface NetActuator {
     readonly by: 'load' | 'spring';
     readonly size: number;
   };
+  /** m³/s per Pa that slips past it between a and b. */
+  readonly leakage: number;
+  /** Line of its case drain with m³/s per Pa from each port into it; absent without one. */
+  readonly drain?: { readonly line: number; readonly leakage: number };
   /** A load that only resists motion. */
   readonly resisting: boolean;
   /** N, or N·m: pressing positive when it pushes in (B→A). */

@@ -23,6 +23,16 @@ const PRECHARGE = quantitySetting(
   '90 bar',
   { min: '0 bar', max: '1000 bar' },
 );
+const PRESSURE = quantitySetting(
+  {
+    id: 'pressure',
+    title: 'Charged to',
+    help: 'Pressure of gas and oil while it is charged: it feeds its line at this pressure. A full one takes no more oil.',
+  },
+  'pressure',
+  '135 bar',
+  { min: '0 bar', max: '1000 bar' },
+);
 
 export const accumulator: PartKind = {
   kind: 'accumulator',
@@ -31,7 +41,7 @@ export const accumulator: PartKind = {
   help: 'Stores oil against gas. It keeps pressure when the pumps stop: it must vent by itself, be isolated, or carry a warning.',
   words: ['bladder', 'gas loaded', 'nitrogen', 'energy store', 'pressure store'],
   prefix: 'ACC',
-  settings: [CHARGE, VOLUME, PRECHARGE],
+  settings: [CHARGE, VOLUME, PRECHARGE, PRESSURE],
   readyMade: [{ id: 'accumulator', title: 'Accumulator, gas loaded', make: () => ({}) }],
   ports: () => [
     port(
@@ -53,6 +63,7 @@ export const accumulator: PartKind = {
       charged: readChoice(part, CHARGE) === 'charged',
       volume: readSi(part, VOLUME),
       precharge: readSi(part, PRECHARGE),
+      pressure: readSi(part, PRESSURE),
     },
   ],
   draw: () => [
@@ -62,4 +73,15 @@ export const accumulator: PartKind = {
     shape('fine', 'none', [-0.9, -2.6], [0.9, -2.6], [0, -1.1]),
   ],
   bounds: () => boxOf(-2, -4, 4, 9),
+  check: (part) =>
+    readChoice(part, CHARGE) === 'empty' || readSi(part, PRESSURE) >= readSi(part, PRECHARGE)
+      ? []
+      : [
+          {
+            level: 'warning',
+            where: 'settings.pressure',
+            what: 'It is charged to less than its gas pre-charge, at which it holds no oil; the pre-charge is taken instead.',
+            remedy: 'Give the pressure to which the pump charges it, above the pre-charge, or set it as empty.',
+          },
+        ],
 };

@@ -11,6 +11,7 @@ import { filter } from './filter.ts';
 import { fixedPump } from './fixed-pump.ts';
 import { flowControl } from './flow-control.ts';
 import { gauge } from './gauge.ts';
+import { handPump } from './hand-pump.ts';
 import { junction } from './junction.ts';
 import { lockCheck } from './lock-check.ts';
 import { motor } from './motor.ts';
@@ -36,6 +37,7 @@ export const CATALOGUE: readonly PartKind[] = [
   tank,
   filter,
   cylinder,
+  handPump,
   doubleRodCylinder,
   singleActingCylinder,
   motor,

@@ -166,6 +166,8 @@ export type Element =
       readonly tightWhenStopped: boolean;
     }
   | { readonly type: 'tank'; readonly port: string }
+      /** A hand pump that nobody works: stopped whatever the condition of the table. */
+      readonly atRest?: boolean;
   | {
       readonly type: 'accumulator';
       readonly port: string;
@@ -174,6 +176,7 @@ export type Element =
       /** Gas pressure when empty of oil, Pa */ readonly precharge?: number;
     }
   | {
+      /** Gas and oil pressure when charged, Pa */ readonly pressure?: number;
       readonly type: 'pressure-switch';
       readonly port: string;
       /** Pa: comes on at or above `on`, goes off at or below `off`, keeps what it was between. */
@@ -238,6 +241,10 @@ export interface ActuatorElement {
   readonly friction?: number;
   /** m; absent for a motor. */
   readonly stroke?: number;
+  /** m³/s per Pa that slips past it from the higher port to the lower; 0 = none. */
+  readonly leakage?: number;
+  /** Case drain: m³/s per Pa from each port into it. */
+  readonly drain?: { readonly port: string; readonly leakage: number };
   /** N or N·m that acts from outside: `in`/`out` (motor: `B→A`/`A→B`) presses also at rest, `resisting` only against motion. */
   readonly load: { readonly sense: 'none' | 'resisting' | 'in' | 'out'; readonly size: number };
 }

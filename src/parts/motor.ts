@@ -1,6 +1,6 @@
 import type { PartKind } from './contract.ts';
 import { checkLoad, MOTOR_LOAD, readLoad } from './load.ts';
-import { quantitySetting, readSi } from './settings.ts';
+import { quantitySetting, readSi, type QuantitySpec } from './settings.ts';
 import { boxOf, circle, leftOpen, port, shape, stroke } from './shapes.ts';
 
 const DISPLACEMENT = quantitySetting(
@@ -9,6 +9,20 @@ const DISPLACEMENT = quantitySetting(
   '82 cm³/rev',
   { min: '0.01 cm³/rev', max: '1000000 cm³/rev' },
 );
+const leakage = (id: string, title: string, help: string): QuantitySpec =>
+  quantitySetting({ id, title, help }, 'flow', '0 L/min', { min: '0 L/min', max: '1000 L/min' });
+const LEAKAGE = leakage(
+  'leakage',
+  'Leakage at 100 bar',
+  'Oil that slips past its working parts at 100 bar between A and B, in proportion at other drops. It lowers the speed, and lets a load turn a motor whose lines are blocked.',
+);
+const CASE_LEAKAGE = leakage(
+  'caseLeakage',
+  'Case leakage at 100 bar',
+  'Oil that leaks from each of A and B into the case at 100 bar over L, in proportion at other pressures.',
+);
+/** Pa at which the two are given. */
+const LEAKAGE_AT = 100e5;
 const OPEN = leftOpen(
   'caution',
   'One port of the motor has no line; it counts as plugged, so the motor cannot turn.',
@@ -22,7 +36,7 @@ export const motor: PartKind = {
   help: 'Oil through it from A to B turns the shaft one way, from B to A the other way.',
   words: ['hydraulic motor', 'rotary actuator', 'winch', 'hydromotor'],
   prefix: 'MOT',
-  settings: [DISPLACEMENT, ...MOTOR_LOAD.all],
+  settings: [DISPLACEMENT, ...MOTOR_LOAD.all, LEAKAGE, CASE_LEAKAGE],
   readyMade: [{ id: 'motor', title: 'Motor, both ways', make: () => ({}) }],
   ports: () => [
     port('A', [-4, 0], 'left', 'working', OPEN),
@@ -42,7 +56,17 @@ export const motor: PartKind = {
   elements: (part) => {
     const area = readSi(part, DISPLACEMENT);
     return [
-      { type: 'actuator', a: 'A', b: 'B', motion: 'rotary', areaA: area, areaB: area, ...readLoad(part, MOTOR_LOAD) },
+      {
+        type: 'actuator',
+        a: 'A',
+        b: 'B',
+        motion: 'rotary',
+        areaA: area,
+        areaB: area,
+        ...readLoad(part, MOTOR_LOAD),
+        leakage: readSi(part, LEAKAGE) / LEAKAGE_AT,
+        drain: { port: 'L', leakage: readSi(part, CASE_LEAKAGE) / LEAKAGE_AT },
+      },
     ];
   },
   draw: () => [

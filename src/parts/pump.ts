@@ -49,10 +49,15 @@ export const PUMP_BOUNDS = boxOf(-5, -4, 9, 8);
 
 /** Circle, outlet triangle, shaft and both stubs. */
 export const pumpBody = (): Primitive[] => [
-  stroke('symbol', [0, -4], [0, -3]),
-  stroke('symbol', [0, 3], [0, 4]),
   stroke('fine', [-4.6, -0.35], [-2.98, -0.35]),
   stroke('fine', [-4.6, 0.35], [-2.98, 0.35]),
+  ...pumpCircle(),
+];
+
+/** The same without a shaft. */
+export const pumpCircle = (): Primitive[] => [
+  stroke('symbol', [0, -4], [0, -3]),
+  stroke('symbol', [0, 3], [0, 4]),
   circle('symbol', [0, 0], 3, 'paper'),
   shape('symbol', 'ink', [0, -3], [-1.1, -1.1], [1.1, -1.1]),
 ];

@@ -9,6 +9,7 @@ const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'free inward': 'free B→A',
   'creeps outward on back pressure': 'creeps A→B on back pressure',
   'creeps inward on back pressure': 'creeps B→A on back pressure',
+  'creeps through its own leakage': 'creeps through its own leakage',
 };
 
 /** A note as people read it; one that the table does not know stays as it is. */

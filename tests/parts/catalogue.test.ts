@@ -16,6 +16,7 @@ const made = ENTRIES.map(({ kind, readyMade }) => ({ id: readyMade.id, kind, par
 const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
   'fixed-pump': ['P', 'S'],
   'compensated-pump': ['P', 'S'],
+  'hand-pump': ['P', 'S'],
   tank: ['T'],
   'relief-valve': ['P', 'T'],
   'pilot-relief-valve': ['P', 'T', 'X'],
@@ -59,7 +60,11 @@ function portsNamed(element: Element): string[] {
     case 'pressure-switch':
       return [element.port];
     case 'actuator':
-      return [element.a, ...(element.b === undefined ? [] : [element.b])];
+      return [
+        element.a,
+        ...(element.b === undefined ? [] : [element.b]),
+        ...(element.drain ? [element.drain.port] : []),
+      ];
   }
 }
 
@@ -209,6 +214,7 @@ test.each([
   ['regulator', 'reducing-valve'],
   ['or valve', 'shuttle-valve'],
   ['back pressure', 'check-valve-spring'],
+  ['lever pump', 'hand-pump'],
   ['vent port', 'pilot-relief-valve'],
   ['pressostat', 'pressure-switch'],
 ])('searching "%s" finds %s', (query, id) => {

@@ -65,6 +65,7 @@ const LINEAR: Readonly<Record<ActuatorNote, string>> = {
   'free inward': 'free inward',
   'creeps outward on back pressure': 'creeps outward on back pressure',
   'creeps inward on back pressure': 'creeps inward on back pressure',
+  'creeps through its own leakage': 'creeps through its own leakage',
 };
 const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'outward by suction only': 'held A→B by suction only',
@@ -74,6 +75,7 @@ const ROTARY: Readonly<Record<ActuatorNote, string>> = {
   'free inward': 'free B→A',
   'creeps outward on back pressure': 'creeps A→B on back pressure',
   'creeps inward on back pressure': 'creeps B→A on back pressure',
+  'creeps through its own leakage': 'creeps through its own leakage',
 };
 
 /** A motor knows no in and out. */

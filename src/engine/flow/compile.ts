@@ -2,7 +2,7 @@ import type { NetPath, NetPressureValve, Network } from '../../network/network.t
 import { FlowBuilder } from './builder.ts';
 import type { Loss } from './builder.ts';
 import { TANK } from './problem.ts';
-import type { FlowProblem } from './problem.ts';
+import type { Branch, FlowProblem } from './problem.ts';
 import { FlowSolver } from './solver.ts';
 
 /** What holds for every state. */
@@ -23,6 +23,8 @@ export interface FlowModel {
   /** Per pressure valve of the network: its branch; -1 where both ends are one line. */
   readonly valves: readonly number[];
   readonly pumps: readonly number[];
+  /** Per accumulator: its branch, whose flow is what it takes in. */
+  readonly stores: readonly number[];
   /** Branch of every path; -1 where another branch stands for it. */
   readonly paths: readonly number[];
   readonly switched: readonly { readonly branch: number; readonly input: number; readonly positions: number }[];
@@ -30,8 +32,6 @@ export interface FlowModel {
 
 /** m³/s per Pa by which a stopped pump lets its outlet down: 0.01 L/min per bar, common practice. */
 const STOPPED_LEAKAGE = (0.01 * 1e-3) / 60 / 1e5;
-/** A charged accumulator stands at this many times its gas pre-charge where nothing else is known. */
-const CHARGED = 1.5;
 
 export function compileFlow(net: Network, conditions: FlowConditions): FlowModel {
   const builder = new FlowBuilder();
@@ -58,9 +58,9 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   for (const { part, to, setting, vent } of net.reliefs) {
     if (vent) builder.relief(`${label(part)} pilot`, at(vent.line), at(to), setting - vent.pressure);
   }
-  for (const store of net.accumulators) {
-    if (store.charged) builder.accumulator(label(store.part), at(store.line), store.precharge * CHARGED);
-  }
+  const stores = net.accumulators.map((store) =>
+    builder.accumulator(label(store.part), at(store.line), store.charged ? store.pressure : store.precharge),
+  );
   const actuators = net.actuators.map((actuator, i) => {
     const { forces, areaA, areaB } = actuator;
     const load = {
@@ -70,7 +70,12 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
       spring: forces.spring,
     };
     if (actuator.rotary)
-      return builder.motor(label(actuator.part), at(actuator.a), at(actuator.b), { displacement: areaA, load });
+      return builder.motor(label(actuator.part), at(actuator.a), at(actuator.b), {
+        displacement: areaA,
+        load,
+        leakage: actuator.leakage,
+        ...(actuator.drain && { drain: at(actuator.drain.line), drainLeakage: actuator.drain.leakage }),
+      });
     const place = conditions.places[i];
     return builder.cylinder(label(actuator.part), at(actuator.a), at(actuator.b), {
       areaA,
@@ -81,19 +86,22 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   });
   const pumps = net.pumps.map((pump) => {
     const id = label(pump.part);
-    if (!conditions.pumpsRunning)
+    if (!conditions.pumpsRunning || pump.atRest)
       return builder.pumpStopped(id, at(pump.outlet), pump.tightWhenStopped ? 0 : STOPPED_LEAKAGE);
     return pump.compensated
       ? builder.pumpCompensated(id, at(pump.outlet), pump.flow, pump.setting)
       : builder.pumpFixed(id, at(pump.outlet), pump.flow);
   });
   const built = builder.build();
-  // A full accumulator gives oil and takes none.
-  const problem = {
-    ...built,
-    branches: built.branches.map((branch) => (branch.kind === 'accumulator' ? { ...branch, hi: 0 } : branch)),
-  };
-  return { solver: new FlowSolver(problem), problem, lineOf, actuators, reliefs, valves, pumps, paths, switched };
+  // A charged accumulator gives oil and takes none; an empty one takes it at its pre-charge and gives none.
+  const branches = [...built.branches];
+  net.accumulators.forEach((store, i) => {
+    const branch = stores[i] as number;
+    branches[branch] = { ...(branches[branch] as Branch), ...(store.charged ? { hi: 0 } : { lo: 0 }) };
+  });
+  const problem = { ...built, branches };
+  const solver = new FlowSolver(problem);
+  return { solver, problem, lineOf, actuators, reliefs, valves, pumps, stores, paths, switched };
 }
 
 /** A valve that closes is one that opens while its signals, turned round, are above the setting, turned round. */

@@ -90,7 +90,7 @@ export function compileLinks(net: Network, places: PathConditions['places']): Li
 /** Everything that has oil under pressure behind it: pumps in circuit order, then charged accumulators. */
 export function sourceLines(net: Network, conditions: PathConditions): number[] {
   return [
-    ...net.pumps.map((pump) => (conditions.pumpsRunning ? pump.outlet : -1)),
+    ...net.pumps.map((pump) => (conditions.pumpsRunning && !pump.atRest ? pump.outlet : -1)),
     ...net.accumulators.map((store) => (store.charged ? store.line : -1)),
   ];
 }

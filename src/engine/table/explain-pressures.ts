@@ -32,9 +32,15 @@ export function explainPressures(state: OneState): PressureWords {
       return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
     if (!said.rests && !moves) {
-      const way = said.verdict === 'floats' || said.verdict === 'held one way' ? creeps(index, answer) : undefined;
+      const free = said.verdict === 'floats' || said.verdict === 'held one way';
+      const leaks = spec.leakage > 0 || (spec.drain?.leakage ?? 0) > 0;
+      const way = free || leaks ? creeps(index, answer) : undefined;
       if (way === undefined) return said;
-      const note = way === 'out' ? 'creeps outward on back pressure' : 'creeps inward on back pressure';
+      const note = !free
+        ? 'creeps through its own leakage'
+        : way === 'out'
+          ? 'creeps outward on back pressure'
+          : 'creeps inward on back pressure';
       return {
         ...said,
         notes: [...said.notes, note],
@@ -94,7 +100,7 @@ function figures(state: OneState, index: number, actuator: NetActuator, numbers:
   const moving =
     verdict === 'undetermined'
       ? 'equal rivals, between which only the losses share the flow: the circuit leaves it open'
-      : verdict === 'stalled' || verdict === 'held'
+      : verdict === 'stalled' || (verdict === 'held' && (at?.flow ?? 0) < STILL)
         ? standing(state, index, actuator, numbers)
         : `${litres(at?.flow ?? 0)}, ${actuator.rotary ? `${round((speed * 60) / (2 * Math.PI))} rpm` : `${round(speed * 1000)} mm/s`}`;
   const parts = [state.net.parts[actuator.part]?.id ?? ''];
@@ -130,6 +136,9 @@ const ventedReliefs = (state: OneState, line: number, numbers: RowNumbers): Step
         ]
       : [],
   );
+
+/** m³/s: less is no motion. */
+const STILL = 0.01e-3 / 60;
 
 /** Why it does not move: what it would take, and who takes the flow instead. */
 function standing(state: OneState, index: number, actuator: NetActuator, numbers: RowNumbers): string {

@@ -84,9 +84,11 @@ export function explainPump(state: OneState, index: number, pump: NetPump): Pump
         ...base,
         steps: [
           step(
-            pump.tightWhenStopped
-              ? 'It is stopped and set as tight: it lets nothing back.'
-              : 'It is stopped: its outlet line comes down slowly through its own leakage.',
+            pump.atRest
+              ? 'Nobody works it: its checks let nothing back.'
+              : pump.tightWhenStopped
+                ? 'It is stopped and set as tight: it lets nothing back.'
+                : 'It is stopped: its outlet line comes down slowly through its own leakage.',
             [pump.outlet],
             [me],
           ),

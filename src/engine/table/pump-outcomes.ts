@@ -29,7 +29,7 @@ export function pumpOutcome(
       plane[w] = (plane[w] as number) | (bits & left);
       left &= ~bits;
     };
-    if (!conditions.pumpsRunning) decide('stopped', -1);
+    if (!conditions.pumpsRunning || pump.atRest) decide('stopped', -1);
     decide('rests on pressure', block.hunts[w] as number);
 
     let drives = 0;
@@ -53,6 +53,9 @@ export function pumpOutcome(
       // An actuator that may let go although open paths do not move it.
       perhaps |= rests.other & (at(pressed, actuator.a, w) | (actuator.b < 0 ? 0 : at(pressed, actuator.b, w)));
     });
+
+    // An empty accumulator takes its flow until it is full.
+    for (const store of net.accumulators) if (!store.charged) perhaps |= at(pressed, store.line, w);
 
     const outlet = pump.outlet;
     decide('unloaded', at(r.freeToTank, outlet, w));

@@ -14,6 +14,7 @@ const RIVALS = REST_REASONS.indexOf('rivals');
 const FLOATS = ACTUATOR_VERDICTS.indexOf('floats');
 const ONE_WAY = ACTUATOR_VERDICTS.indexOf('held one way');
 const CREEPS_OUT = ACTUATOR_NOTES.indexOf('creeps outward on back pressure');
+const LEAKS = ACTUATOR_NOTES.indexOf('creeps through its own leakage');
 const CREEPS_IN = ACTUATOR_NOTES.indexOf('creeps inward on back pressure');
 const VOID = ACTUATOR_NOTES.indexOf('void forms');
 
@@ -67,9 +68,9 @@ export function resolveBlock(
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
         if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) {
           const free = ((outcome.verdicts[FLOATS]?.[w] as number) | (outcome.verdicts[ONE_WAY]?.[w] as number)) & low;
-          const way = free === 0 ? undefined : creeps(i, answer);
+          const way = free === 0 && !leaks(solver, i) ? undefined : creeps(i, answer);
           if (way === undefined) return;
-          const note = outcome.notes[way === 'out' ? CREEPS_OUT : CREEPS_IN] as Uint32Array;
+          const note = outcome.notes[free === 0 ? LEAKS : way === 'out' ? CREEPS_OUT : CREEPS_IN] as Uint32Array;
           note[w] = (note[w] as number) | low;
           changed |= low;
           return;
@@ -107,6 +108,12 @@ function noteFlows(
     flowing.set(line, plane);
   }
 }
+
+/** A motor through which oil slips while its lines are blocked. */
+const leaks = (solver: PressureSolver, actuator: number): boolean => {
+  const { leakage, drain } = solver.net.actuators[actuator] ?? { leakage: 0 };
+  return leakage > 0 || (drain?.leakage ?? 0) > 0;
+};
 
 /** Gives the state this verdict and no other; returns its bit if that is news. */
 function settle(planes: readonly Uint32Array[], verdict: number, w: number, bit: number): number {

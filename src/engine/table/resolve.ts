@@ -106,6 +106,12 @@ export class PressureSolver {
     return at < 0 ? 0 : (solved.lines[at]?.voidFlow ?? 0);
   }
 
+  /** m³/s into an accumulator of the network; negative while it gives. */
+  storeFlow(solved: Solved, store: number): number {
+    const id = this.model.problem.branches[this.model.stores[store] as number]?.id;
+    return solved.branches.find((entry) => entry.kind === 'accumulator' && entry.id === id)?.flow ?? 0;
+  }
+
   /** m³/s over a relief valve of the network. */
   reliefFlow(solved: Solved, relief: number): number {
     const id = this.model.problem.branches[this.model.reliefs[relief] as number]?.id;
@@ -233,11 +239,18 @@ export function pumpByPressure(
     if (state.pressure + PRESSED < solver.pressure(result, grows)) return false;
     return offered(grows) || (overValve(grows) && solver.pressure(result, grows) > PRESSED);
   });
+  const charges = net.accumulators.some((store, i) => offered(store.line) && solver.storeFlow(result, i) > MOTION);
   const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));
   const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(result, i), 0);
-  if (pump.compensated && !drives && state.delivered < 0.02 * pump.flow && state.pressure > 0.5 * pump.setting)
+  if (
+    pump.compensated &&
+    !drives &&
+    !charges &&
+    state.delivered < 0.02 * pump.flow &&
+    state.pressure > 0.5 * pump.setting
+  )
     return 'destroked';
-  if (drives) return spilled > MOTION ? 'working, part over relief' : 'working';
+  if (drives || charges) return spilled > MOTION ? 'working, part over relief' : 'working';
   const setting = Math.max(pump.setting, ...mine.map((i) => net.reliefs[i]?.setting ?? 0), 0);
   // A vented relief valve lets all of it out too, but at a pressure that counts as none.
   if (setting > 0 && state.pressure < UNLOADED * setting) return 'unloaded';

@@ -52,6 +52,7 @@ export const ACTUATOR_NOTES = [
   'free inward',
   'creeps outward on back pressure',
   'creeps inward on back pressure',
+  'creeps through its own leakage',
 ] as const;
 export type ActuatorNote = (typeof ACTUATOR_NOTES)[number];
 

@@ -83,7 +83,7 @@ export function pathOutcomes(net: Network, conditions: PathConditions, paths: Op
     });
   };
   const pump = (index: number): OutcomeSet[] => {
-    if (!conditions.pumpsRunning) return [{ word: 'stopped', set: ALL }];
+    if (!conditions.pumpsRunning || net.pumps[index]?.atRest) return [{ word: 'stopped', set: ALL }];
     const outlet = net.pumps[index]?.outlet ?? 0;
     const free = sets.minus(paths.freeToTank[outlet] as Diagram, paths.hunts);
     return [
