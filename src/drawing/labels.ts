@@ -1,4 +1,5 @@
 import type { Box, Point } from '../base/points.ts';
+import { isStripValve } from '../parts/valve-kinds.ts';
 import type { Circuit, Part } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
@@ -52,7 +53,6 @@ export interface Spot {
 type Place = 'above' | 'right' | 'left' | 'below';
 
 const ACTUATORS = new Set(['cylinder', 'double-rod-cylinder', 'single-acting-cylinder', 'motor']);
-const VALVE = 'directional-valve';
 /** Verdicts have a glyph; positions have none. */
 const hasGlyph = ({ kind }: Part): boolean => ACTUATORS.has(kind) || kind.endsWith('-pump');
 /** Drawn so often, or so small, that an automatic name is noise. */
@@ -63,6 +63,9 @@ export const GLYPH_ROOM = 2.2;
 /** Modules kept for a position's or verdict's glyph and words. */
 const NOTE_ROOM: Readonly<Record<string, number>> = {
   'directional-valve': 6,
+  'pilot-valve': 6,
+  'two-stage-valve': 6,
+  'roller-valve': 6,
   cylinder: 16,
   'double-rod-cylinder': 16,
   'single-acting-cylinder': 16,
@@ -96,7 +99,10 @@ export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): La
   const ground: Ground = {
     parts,
     lines: [...routes.values()].flatMap((points) => points.slice(1).map((b, i) => [points[i] as Point, b] as const)),
-    taken: [...freeLabels(circuit).map(labelBox), ...circuit.parts.filter((p) => p.kind === VALVE).flatMap(letterRoom)],
+    taken: [
+      ...freeLabels(circuit).map(labelBox),
+      ...circuit.parts.filter((p) => isStripValve(p.kind)).flatMap(letterRoom),
+    ],
   };
   const out = new Map<string, Spot>();
   for (const { part, box } of parts) {
@@ -145,11 +151,11 @@ function linesOf(part: Part, { note, figure }: PartWords): LabelText[][] {
   const size = actuator ? TEXT_SIZES.actuator : TEXT_SIZES.label;
   const first: LabelText[] = [];
   if (part.label !== undefined || !QUIET.has(part.kind)) {
-    const strong = actuator || part.kind === VALVE;
+    const strong = actuator || isStripValve(part.kind);
     first.push({ text: labelOf(part), size, weight: strong ? 600 : 500, tone: strong ? 'ink' : 'second' });
   }
   if (note) {
-    const valve = part.kind === VALVE;
+    const valve = isStripValve(part.kind);
     const tone = valve ? 'accent' : 'ink';
     first.push({ text: note, size: TEXT_SIZES.label, weight: 600, tone, ...(hasGlyph(part) && { glyph: true }) });
   }
@@ -162,7 +168,7 @@ function linesOf(part: Part, { note, figure }: PartWords): LabelText[][] {
 
 /** Where a name is looked for on each kind, best first. */
 function orderOf(part: Part, box: Box): readonly Place[] {
-  if (part.kind === VALVE) return ['right', 'left', 'below', 'above'];
+  if (isStripValve(part.kind)) return ['right', 'left', 'below', 'above'];
   if (ACTUATORS.has(part.kind))
     return box.width >= box.height ? ['above', 'right', 'left', 'below'] : ['right', 'left', 'above', 'below'];
   const facesAcross = placedPorts(part).some((p) => p.side === 'left' || p.side === 'right');

@@ -1,4 +1,5 @@
 import type { Box, Point } from '../base/points.ts';
+import { isStripValve } from '../parts/valve-kinds.ts';
 import type { Circuit, Part } from '../circuit/model.ts';
 import type { Meetings } from './neighbours.ts';
 import { meetings, reach } from './neighbours.ts';
@@ -13,7 +14,6 @@ const TANK_ROOM = 2 * SPACE;
 
 const ACTUATORS = new Set(['cylinder', 'double-rod-cylinder', 'single-acting-cylinder', 'motor']);
 const PUMPS = new Set(['fixed-pump', 'compensated-pump']);
-const VALVE = 'directional-valve';
 const TANK = 'tank';
 const RELIEF = 'relief-valve';
 
@@ -111,16 +111,16 @@ class Plan {
     const parts = [...this.#parts.values()];
     const stop = (id: string): boolean => {
       const kind = this.#parts.get(id)?.kind ?? '';
-      return kind === VALVE || kind === TANK || kind === RELIEF || PUMPS.has(kind) || ACTUATORS.has(kind);
+      return isStripValve(kind) || kind === TANK || kind === RELIEF || PUMPS.has(kind) || ACTUATORS.has(kind);
     };
-    const valves = parts.filter((p) => p.kind === VALVE);
+    const valves = parts.filter((p) => isStripValve(p.kind));
     for (const valve of valves) this.#taken.add(valve.id);
     const owners = new Map<string, { column: number; distance: number; through: number }>();
     valves.forEach((valve, column) => {
       const top = (valve.valve?.ports ?? []).filter((p) => p.side === 'top').map((p) => p.id);
       for (const found of reach(this.#all, valve.id, (port) => top.includes(port), stop)) {
         const kind = this.#parts.get(found.part)?.kind ?? '';
-        if (kind === VALVE || kind === TANK || kind === RELIEF || PUMPS.has(kind)) continue;
+        if (isStripValve(kind) || kind === TANK || kind === RELIEF || PUMPS.has(kind)) continue;
         const known = owners.get(found.part);
         if (known && known.distance <= found.distance) continue;
         owners.set(found.part, { column, distance: found.distance, through: top.indexOf(found.through) });
@@ -155,7 +155,9 @@ class Plan {
     const beside: Part[] = [];
     let from = Infinity;
     const stop = (id: string): boolean =>
-      this.#taken.has(id) || [TANK, VALVE, RELIEF].includes(this.#parts.get(id)?.kind ?? '');
+      this.#taken.has(id) ||
+      isStripValve(this.#parts.get(id)?.kind) ||
+      [TANK, RELIEF].includes(this.#parts.get(id)?.kind ?? '');
     for (const found of reach(this.#all, pump.id, () => true, stop)) {
       const part = this.#parts.get(found.part);
       const column = this.at.get(found.part);
@@ -195,7 +197,7 @@ class Plan {
     for (const [id, spot] of spots) {
       const part = this.#parts.get(id) as Part;
       this.at.set(id, { x: Math.round(spot.x + shift), y: Math.round(spot.y) });
-      if (part.kind === VALVE)
+      if (isStripValve(part.kind))
         this.#valveBottom = Math.max(this.#valveBottom, spot.y + partReach(part).y + partReach(part).height);
     }
     this.#right = right + shift + COLUMN_SPACE;
@@ -204,7 +206,7 @@ class Plan {
   /** The middle of the ports that face the column: of a valve its upper ones. */
   #axis(part: Part): number {
     const ports = placedPorts(part).filter((p) => p.role !== 'pilot' && p.role !== 'drain');
-    const upper = part.kind === VALVE ? ports.filter((p) => p.side === 'up') : ports;
+    const upper = isStripValve(part.kind) ? ports.filter((p) => p.side === 'up') : ports;
     const used = upper.length > 0 ? upper : ports;
     const box = partReach(part);
     return used.length > 0 ? used.reduce((sum, p) => sum + p.at.x, 0) / used.length : box.x + box.width / 2;

@@ -1,6 +1,7 @@
 import type { Box, Placement, Point } from '../base/points.ts';
 import { place, union } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
+import { isStripValve } from '../parts/valve-kinds.ts';
 import type { Circuit, Part, PortRef } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
 import { kindOf } from '../parts/catalogue.ts';
@@ -209,7 +210,7 @@ function sceneLines(
 ): SceneLine[] {
   const kinds = new Map(circuit.parts.map((p) => [p.id, p.kind]));
   // A valve's port letter stands where a bar would.
-  const barAt = (ref: PortRef): number => (kinds.get(ref.part) === 'directional-valve' ? BAR_AT + 1 : BAR_AT);
+  const barAt = (ref: PortRef): number => (isStripValve(kinds.get(ref.part)) ? BAR_AT + 1 : BAR_AT);
   return circuit.connections.map((connection) => {
     const { id, from, to } = connection;
     const strokes = (stage.pieces.get(id) ?? []).flatMap((piece) => {
