@@ -74,6 +74,7 @@ function readSetting(text: string, kind: PartKind, key: string, value: string): 
       if (!spec.value.options.includes(value)) throw wrong(text, `${key} is one of ${spec.value.options.join(', ')}`);
       return value;
     case 'quantity':
+    case 'actuator':
       return value;
   }
 }

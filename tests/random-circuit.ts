@@ -15,12 +15,17 @@ const PLENTY = [
 
 /**
  * Circuits joined at random: nobody would build most of them, which is the point. Every kind of the
- * catalogue occurs; `mostInputs` bounds the number of combinations.
+ * catalogue occurs but valves that move by themselves, unless `kinds` has them; `mostInputs` bounds the number of combinations.
  */
-export function randomCircuit(mostInputs = 4, mostParts = 12): fc.Arbitrary<Circuit> {
+export function randomCircuit(
+  mostInputs = 4,
+  mostParts = 12,
+  kinds: readonly PartKind[] = CATALOGUE.filter((kind) => !kind.dependent),
+  plenty: readonly string[] = PLENTY,
+): fc.Arbitrary<Circuit> {
   return fc
     .tuple(
-      fc.array(fc.tuple(fc.nat({ max: CATALOGUE.length + PLENTY.length - 1 }), fc.nat()), {
+      fc.array(fc.tuple(fc.nat({ max: kinds.length + plenty.length - 1 }), fc.nat()), {
         minLength: 3,
         maxLength: mostParts,
       }),
@@ -30,7 +35,7 @@ export function randomCircuit(mostInputs = 4, mostParts = 12): fc.Arbitrary<Circ
       const parts: Part[] = [make('PUMP', 'fixed-pump', 0), make('TANK', 'tank', 0), make('RELIEF', 'relief-valve', 0)];
       let inputs = 0;
       picks.forEach(([kindIndex, formIndex], i) => {
-        const kind = CATALOGUE[kindIndex]?.kind ?? PLENTY[kindIndex - CATALOGUE.length] ?? 'junction';
+        const kind = kinds[kindIndex]?.kind ?? plenty[kindIndex - kinds.length] ?? 'junction';
         const part = make(`N${i}`, kind, formIndex);
         if (kindNamed(kind).input?.(part)) {
           if (inputs === mostInputs) return;

@@ -17,31 +17,37 @@ import { lockCheck } from './lock-check.ts';
 import { motor } from './motor.ts';
 import { oneWayThrottle } from './one-way-throttle.ts';
 import { pilotReliefValve } from './pilot-relief-valve.ts';
+import { pilotValve } from './pilot-valve.ts';
 import { plug } from './plug.ts';
 import { pressureSwitch } from './pressure-switch.ts';
 import { quickCoupling } from './quick-coupling.ts';
 import { reducingValve } from './reducing-valve.ts';
 import { reliefValve } from './relief-valve.ts';
+import { rollerValve } from './roller-valve.ts';
 import { sequenceValve } from './sequence-valve.ts';
 import { shutOffValve } from './shut-off-valve.ts';
 import { shuttleValve } from './shuttle-valve.ts';
 import { singleActingCylinder } from './single-acting-cylinder.ts';
 import { tank } from './tank.ts';
 import { throttle } from './throttle.ts';
+import { twoStageValve } from './two-stage-valve.ts';
 import { unloadingValve } from './unloading-valve.ts';
 
 /** All part kinds, in the order of the tray. */
 export const CATALOGUE: readonly PartKind[] = [
   fixedPump,
   compensatedPump,
+  handPump,
   tank,
   filter,
   cylinder,
-  handPump,
   doubleRodCylinder,
   singleActingCylinder,
   motor,
   directionalValve,
+  pilotValve,
+  twoStageValve,
+  rollerValve,
   shutOffValve,
   reliefValve,
   pilotReliefValve,

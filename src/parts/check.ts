@@ -3,6 +3,7 @@ import { labelOf, sayPort, type Circuit, type Part, type PortRef } from '../circ
 import { CATALOGUE, kindOf } from './catalogue.ts';
 import type { PartKind, PartProblem } from './contract.ts';
 import { checkSettings } from './settings.ts';
+import { isStripValve } from './valve-kinds.ts';
 
 /** A problem of the circuit as drawn; `where` is a path in the file, `what` names the part in words. */
 export interface CircuitProblem extends Problem {
@@ -56,7 +57,7 @@ function checkPart(part: Part, index: number): CircuitProblem[] {
   const kind = kindOf(part.kind);
   if (!kind) return checkKind(part, index);
   const stray: PartProblem[] =
-    part.valve && kind.kind !== 'directional-valve'
+    part.valve && !isStripValve(kind.kind)
       ? [
           {
             level: 'warning',
@@ -73,6 +74,28 @@ function checkPart(part: Part, index: number): CircuitProblem[] {
     what: `${labelOf(part)}: ${problem.what}`,
     remedy: problem.remedy,
   }));
+}
+
+/** A setting that names an actuator names one that the circuit has. */
+function checkNamed(circuit: Circuit): CircuitProblem[] {
+  return circuit.parts.flatMap((part, index) =>
+    (kindOf(part.kind)?.settings ?? []).flatMap((spec): CircuitProblem[] => {
+      const id = part.settings?.[spec.id];
+      if (spec.value.type !== 'actuator' || typeof id !== 'string' || id === '') return [];
+      const named = circuit.parts.find((other) => other.id === id);
+      const kind = named && kindOf(named.kind);
+      if (named && kind?.elements(named).some((element) => element.type === 'actuator')) return [];
+      return [
+        {
+          level: 'warning',
+          parts: [part.id],
+          where: `parts[${index}].settings.${spec.id}`,
+          what: `${labelOf(part)}: ${named ? `${labelOf(named)} is no actuator` : `there is no part "${id}"`}.`,
+          remedy: 'Name a cylinder or motor of this circuit.',
+        },
+      ];
+    }),
+  );
 }
 
 function checkLabels(circuit: Circuit): CircuitProblem[] {
@@ -222,6 +245,7 @@ function checkLoadCases(circuit: Circuit): CircuitProblem[] {
 export function checkParts(circuit: Circuit): CircuitProblem[] {
   return [
     ...circuit.parts.flatMap(checkPart),
+    ...checkNamed(circuit),
     ...checkLabels(circuit),
     ...checkConnections(circuit),
     ...checkLoadCases(circuit),

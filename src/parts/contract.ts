@@ -96,6 +96,8 @@ export interface SettingSpec {
       }
     | { readonly type: 'choice'; readonly options: readonly string[]; readonly default: string }
     | { readonly type: 'switch'; readonly default: boolean }
+    /** Id of an actuator of the circuit; empty = none. */
+    | { readonly type: 'actuator'; readonly default: '' }
     | { readonly type: 'number'; readonly default: number; readonly min?: number; readonly max?: number };
 }
 
@@ -164,19 +166,19 @@ export type Element =
       /** m³/s */ readonly flow: number;
       /** Pa, compensated only */ readonly setting?: number;
       readonly tightWhenStopped: boolean;
-    }
-  | { readonly type: 'tank'; readonly port: string }
       /** A hand pump that nobody works: stopped whatever the condition of the table. */
       readonly atRest?: boolean;
+    }
+  | { readonly type: 'tank'; readonly port: string }
   | {
       readonly type: 'accumulator';
       readonly port: string;
       readonly charged: boolean;
       /** Gas volume, m³ */ readonly volume?: number;
       /** Gas pressure when empty of oil, Pa */ readonly precharge?: number;
+      /** Gas and oil pressure when charged, Pa */ readonly pressure?: number;
     }
   | {
-      /** Gas and oil pressure when charged, Pa */ readonly pressure?: number;
       readonly type: 'pressure-switch';
       readonly port: string;
       /** Pa: comes on at or above `on`, goes off at or below `off`, keeps what it was between. */
@@ -239,12 +241,12 @@ export interface ActuatorElement {
   readonly springForce?: number;
   /** N or N·m against any motion. */
   readonly friction?: number;
-  /** m; absent for a motor. */
-  readonly stroke?: number;
   /** m³/s per Pa that slips past it from the higher port to the lower; 0 = none. */
   readonly leakage?: number;
   /** Case drain: m³/s per Pa from each port into it. */
   readonly drain?: { readonly port: string; readonly leakage: number };
+  /** m; absent for a motor. */
+  readonly stroke?: number;
   /** N or N·m that acts from outside: `in`/`out` (motor: `B→A`/`A→B`) presses also at rest, `resisting` only against motion. */
   readonly load: { readonly sense: 'none' | 'resisting' | 'in' | 'out'; readonly size: number };
 }

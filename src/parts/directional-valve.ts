@@ -20,8 +20,8 @@ const COMMANDS: readonly (readonly [Operator, InputSpec['by']])[] = [
   ['hand', 'hand'],
 ];
 
-function inputOf(part: Part): InputSpec {
-  const { left, right, positions, rest, coils } = valveOf(part);
+export function valveInput(data: ValveData): InputSpec {
+  const { left, right, positions, rest, coils } = data;
   const by = COMMANDS.find(([operator]) => left.includes(operator) || right.includes(operator))?.[1] ?? 'hand';
   // A rest position that does not exist is reported by the check and must not lead the engines astray.
   const atRest = rest !== undefined && Number.isInteger(rest) && rest >= 0 && rest < positions.length ? { rest } : {};
@@ -39,7 +39,7 @@ export const directionalValve: PartKind = {
   readyMade: VALVE_FORMS,
   ports: (part) => valvePorts(valveOf(part)),
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
-  input: inputOf,
+  input: (part) => valveInput(valveOf(part)),
   draw: (part, look) => drawValve(valveOf(part), look.position),
   bounds: (part) => valveBounds(valveOf(part)),
   reach: (part) => valveReach(valveOf(part)),

@@ -13,6 +13,10 @@ export type NumberSpec = SettingSpec & { readonly value: NumberValue };
 export type ChoiceSpec = SettingSpec & { readonly value: ChoiceValue };
 export type SwitchSpec = SettingSpec & { readonly value: SwitchValue };
 
+export type ActuatorSpec = SettingSpec & {
+  readonly value: Extract<SettingSpec['value'], { type: 'actuator' }>;
+};
+
 type Words = Pick<SettingSpec, 'id' | 'title' | 'help'>;
 
 export const quantitySetting = (
@@ -37,6 +41,9 @@ export const switchSetting = (words: Words, preset: boolean): SwitchSpec => ({
   ...words,
   value: { type: 'switch', default: preset },
 });
+
+/** Names an actuator of the circuit by its part id. */
+export const actuatorSetting = (words: Words): ActuatorSpec => ({ ...words, value: { type: 'actuator', default: '' } });
 
 export interface Reading {
   readonly si: number;
@@ -97,6 +104,12 @@ export function readChoice(part: Part, spec: ChoiceSpec): string {
   return typeof typed === 'string' && spec.value.options.includes(typed) ? typed : spec.value.default;
 }
 
+/** Part id; empty where none is named. */
+export function readActuator(part: Part, spec: ActuatorSpec): string {
+  const typed = part.settings?.[spec.id];
+  return typeof typed === 'string' ? typed : '';
+}
+
 export function readSwitch(part: Part, spec: SwitchSpec): boolean {
   const typed = part.settings?.[spec.id];
   return typeof typed === 'boolean' ? typed : spec.value.default;
@@ -110,6 +123,11 @@ function checkOne(typed: Setting, spec: SettingSpec): PartProblem[] {
     case 'switch':
       if (typeof typed === 'boolean') return [];
       return [{ where, what: `${spec.title} is ${JSON.stringify(typed)}.`, remedy: 'Set it to true or false.' }];
+    case 'actuator':
+      if (typeof typed === 'string') return [];
+      return [
+        { where, what: `${spec.title} is ${JSON.stringify(typed)}.`, remedy: 'Give the id of an actuator as text.' },
+      ];
     case 'choice':
       if (typeof typed === 'string' && value.options.includes(typed)) return [];
       return [

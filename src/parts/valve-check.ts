@@ -96,7 +96,7 @@ function checkShape(data: ValveData): PartProblem[] {
   return problems;
 }
 
-function checkOperators(data: ValveData): PartProblem[] {
+function checkOperators(data: ValveData, follows: readonly Operator[]): PartProblem[] {
   const problems: PartProblem[] = [];
   const operators: Operator[] = [...data.left, ...data.right];
   const count = data.positions.length;
@@ -134,12 +134,12 @@ function checkOperators(data: ValveData): PartProblem[] {
     });
   }
   for (const operator of ['pilot', 'roller'] as const) {
-    if (operators.includes(operator)) {
+    if (operators.includes(operator) && !follows.includes(operator)) {
       problems.push({
         level: 'warning',
         where: 'valve.left',
-        what: `A ${operator} is drawn, but what moves it is not followed yet: the table takes the valve as moved by hand.`,
-        remedy: 'Look only at the rows that can occur.',
+        what: `A ${operator} is drawn, but a directional valve is one that somebody commands: the table takes it as moved by hand.`,
+        remedy: `Take a ${operator === 'pilot' ? 'pilot-operated or two-stage' : 'roller'} valve for one that moves by itself.`,
       });
     }
   }
@@ -180,8 +180,8 @@ function checkOperators(data: ValveData): PartProblem[] {
   return problems;
 }
 
-/** Everything wrong with the data of a directional valve; `where` is relative to the part. */
-export function checkValve(data: ValveData): PartProblem[] {
+/** Everything wrong with the data of a directional valve; `where` is relative to the part. `follows`: operators that move it by themselves. */
+export function checkValve(data: ValveData, follows: readonly Operator[] = []): PartProblem[] {
   const paths = data.positions.flatMap((position, index) =>
     checkPaths(data, position.paths, `valve.positions[${index}].paths`, `position "${position.name}"`),
   );
@@ -199,5 +199,5 @@ export function checkValve(data: ValveData): PartProblem[] {
           },
         ]
       : [];
-  return [...checkShape(data), ...paths, ...many, ...crossing, ...checkOperators(data)];
+  return [...checkShape(data), ...paths, ...many, ...crossing, ...checkOperators(data, follows)];
 }

@@ -7,7 +7,7 @@ import { frameOf, HALF_HEIGHT } from './valve-frame.ts';
 import { drawEnd, operatorTop, placeOperators } from './valve-operators.ts';
 
 /** The position drawn at the ports: the one asked for, else the rest position, else the first. */
-function activeOf(data: ValveData, position: number | undefined): number {
+export function activeOf(data: ValveData, position: number | undefined): number {
   const last = data.positions.length - 1;
   return Math.max(0, Math.min(last, position ?? data.rest ?? 0));
 }
@@ -23,13 +23,13 @@ function coilNames(data: ValveData): { left: string[]; right: string[] } {
  * The whole valve. The box that is at the ports stands about (0, 0); the strip of boxes with its
  * operators slides, the ports and their letters stay.
  */
-export function drawValve(data: ValveData, position?: number): Primitive[] {
+export function drawValve(data: ValveData, position?: number, staged = false): Primitive[] {
   const frame = frameOf(data);
   const { width } = frame;
   const active = activeOf(data, position);
   const count = data.positions.length;
   const names = coilNames(data);
-  const end = { positions: count, active };
+  const end = { positions: count, active, staged };
   const boxes = data.positions.map((_, index): Primitive => ({
     type: 'group',
     role: 'box',
@@ -71,21 +71,21 @@ function portLetters(data: ValveData): Primitive[] {
   });
 }
 
-function boundsAt(data: ValveData, position: number): Box {
+function boundsAt(data: ValveData, position: number, staged: boolean): Box {
   const { width } = frameOf(data);
-  const left = -(position + 0.5) * width - placeOperators(data.left).length;
-  const right = (data.positions.length - position - 0.5) * width + placeOperators(data.right).length;
+  const left = -(position + 0.5) * width - placeOperators(data.left, staged).length;
+  const right = (data.positions.length - position - 0.5) * width + placeOperators(data.right, staged).length;
   const top = Math.max(operatorTop(data.left), operatorTop(data.right));
   const x = Math.floor(left);
   return boxOf(x, -top, Math.ceil(right) - x, top + HALF_HEIGHT);
 }
 
 /** Outline with the rest position at the ports. */
-export const valveBounds = (data: ValveData): Box => boundsAt(data, activeOf(data, undefined));
+export const valveBounds = (data: ValveData, staged = false): Box => boundsAt(data, activeOf(data, undefined), staged);
 
 /** Outline over all positions, for keeping room free. */
-export function valveReach(data: ValveData): Box {
-  const first = boundsAt(data, 0);
-  const last = boundsAt(data, Math.max(0, data.positions.length - 1));
+export function valveReach(data: ValveData, staged = false): Box {
+  const first = boundsAt(data, 0, staged);
+  const last = boundsAt(data, Math.max(0, data.positions.length - 1), staged);
   return boxOf(last.x, first.y, first.x + first.width - last.x, first.height);
 }

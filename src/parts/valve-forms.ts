@@ -2,7 +2,7 @@ import type { ValveData, ValvePort, ValvePosition } from '../circuit/model.ts';
 import type { ReadyMade } from './contract.ts';
 
 /** The ready-made directional valves. Position `a` leads P to A, position `b` leads P to B. */
-interface Actuation extends Pick<ValveData, 'left' | 'right' | 'rest' | 'coils'> {
+export interface Actuation extends Pick<ValveData, 'left' | 'right' | 'rest' | 'coils'> {
   readonly id: string;
   readonly title: string;
   readonly words: readonly string[];
@@ -10,9 +10,9 @@ interface Actuation extends Pick<ValveData, 'left' | 'right' | 'rest' | 'coils'>
 
 const top = (...ids: string[]): ValvePort[] => ids.map((id) => ({ id, side: 'top' }));
 const bottom = (...ids: string[]): ValvePort[] => ids.map((id) => ({ id, side: 'bottom' }));
-const position = (name: string, ...paths: string[]): ValvePosition => ({ name, paths });
+export const position = (name: string, ...paths: string[]): ValvePosition => ({ name, paths });
 
-const coil = (name: string, index: number): { name: string; position: number } => ({ name, position: index });
+export const coil = (name: string, index: number): { name: string; position: number } => ({ name, position: index });
 
 // Two positions: the spring stands on the right and puts the right box to the ports.
 const BY_COIL: Actuation = {
@@ -66,7 +66,7 @@ const CENTRED_COILS: Actuation = {
   coils: [coil('a', 0), coil('b', 2)],
 };
 
-function valve(
+export function valve(
   id: string,
   title: string,
   words: readonly string[],
@@ -91,9 +91,9 @@ function valve(
   };
 }
 
-const PORTS_2 = [...top('A'), ...bottom('P')];
-const PORTS_3 = [...top('A'), ...bottom('P', 'T')];
-const PORTS_4 = [...top('A', 'B'), ...bottom('P', 'T')];
+export const PORTS_2 = [...top('A'), ...bottom('P')];
+export const PORTS_3 = [...top('A'), ...bottom('P', 'T')];
+export const PORTS_4 = [...top('A', 'B'), ...bottom('P', 'T')];
 const PORTS_5 = [...top('A', 'B'), ...bottom('T1', 'P', 'T2')];
 const PORTS_6 = [...top('A', 'C2', 'B'), ...bottom('P', 'C1', 'T')];
 

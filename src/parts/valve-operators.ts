@@ -10,6 +10,8 @@ export interface EndLook {
   /** For the notches of a detent: how many, and which one is engaged, counted left to right. */
   readonly positions: number;
   readonly active: number;
+  /** A pilot is a stage of the valve itself, drawn in a box of its own. */
+  readonly staged?: boolean;
 }
 
 /** How far each operator reaches out, in modules. */
@@ -25,6 +27,12 @@ const REACH: Readonly<Record<Operator, number>> = {
   pilot: 2.8,
 };
 
+/** Width of the box of a pilot stage. */
+const STAGE = 2;
+
+const reachOf = (operator: Operator, staged: boolean): number =>
+  operator === 'pilot' && staged ? STAGE : REACH[operator];
+
 const STEMS: readonly Operator[] = ['lever', 'pedal', 'button', 'hand', 'roller'];
 const UNDER_A_STEM: readonly Operator[] = ['spring', 'detent'];
 
@@ -38,28 +46,33 @@ interface Placed {
  * Operators in their places: a stem takes the upper lane when a spring or detent shares the end with
  * it and goes below; all else stacks outwards.
  */
-export function placeOperators(operators: readonly Operator[]): {
+export function placeOperators(
+  operators: readonly Operator[],
+  staged = false,
+): {
   readonly placed: readonly Placed[];
   readonly length: number;
 } {
-  const twoLanes =
-    operators.some((each) => STEMS.includes(each)) && operators.some((each) => UNDER_A_STEM.includes(each));
+  // A pilot by itself shares its end as a stem does; with a coil or lever behind it, it is one of a stack.
+  const alone = operators.every((each) => each === 'pilot' || UNDER_A_STEM.includes(each));
+  const above = (each: Operator): boolean => (alone ? each === 'pilot' : STEMS.includes(each));
+  const twoLanes = operators.some(above) && operators.some((each) => UNDER_A_STEM.includes(each));
   const placed: Placed[] = [];
   let middle = 0;
-  const stacked = operators.filter((each) => !twoLanes || !(STEMS.includes(each) || UNDER_A_STEM.includes(each)));
+  const stacked = operators.filter((each) => !twoLanes || !(above(each) || UNDER_A_STEM.includes(each)));
   for (const operator of stacked) {
     placed.push({ operator, u: middle, y: 0 });
-    middle += REACH[operator];
+    middle += reachOf(operator, staged);
   }
   let upper = middle;
   let lower = middle;
   for (const operator of operators.filter((each) => !stacked.includes(each))) {
-    if (STEMS.includes(operator)) {
+    if (above(operator)) {
       placed.push({ operator, u: upper, y: -0.9 });
-      upper += REACH[operator];
+      upper += reachOf(operator, staged);
     } else {
       placed.push({ operator, u: lower, y: 1 });
-      lower += REACH[operator];
+      lower += reachOf(operator, staged);
     }
   }
   return { placed, length: Math.max(middle, upper, lower) };
@@ -70,7 +83,7 @@ export const operatorTop = (operators: readonly Operator[]): number => (operator
 
 export function drawEnd(operators: readonly Operator[], look: EndLook): Primitive[] {
   let coil = 0;
-  return placeOperators(operators).placed.flatMap((each) =>
+  return placeOperators(operators, look.staged).placed.flatMap((each) =>
     drawOperator(each, look, each.operator === 'coil' ? (look.coils[coil++] ?? '') : ''),
   );
 }
@@ -110,6 +123,7 @@ function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): 
     case 'roller':
       return [...stem(1.6), circle('symbol', p(2.2, 0), 0.6, 'paper')];
     case 'pilot':
+      if (look.staged) return [box(0, -1, STAGE, 2), shape('symbol', 'ink', p(0.35, 0), p(1.65, -0.65), p(1.65, 0.65))];
       return [shape('symbol', 'ink', p(0, 0), p(1.3, -0.7), p(1.3, 0.7)), stroke('pilot', p(1.3, 0), p(2.8, 0))];
   }
 }

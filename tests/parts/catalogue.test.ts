@@ -97,9 +97,9 @@ function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number;
 const within = (box: Box, { x, y }: { x: number; y: number }): boolean =>
   x >= box.x - 1e-9 && x <= box.x + box.width + 1e-9 && y >= box.y - 1e-9 && y <= box.y + box.height + 1e-9;
 
-test('there are 29 kinds, each found by its name and in a known group', () => {
-  expect(CATALOGUE).toHaveLength(29);
-  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(29);
+test('there are 33 kinds, each found by its name and in a known group', () => {
+  expect(CATALOGUE).toHaveLength(33);
+  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(33);
   for (const kind of CATALOGUE) {
     expect(kindOf(kind.kind)).toBe(kind);
     expect(PART_GROUPS).toContain(kind.group);
@@ -141,7 +141,7 @@ test.each(made)('$id: ports and outline on the grid, ports on or inside the outl
 
 test.each(made)('$id: elements name its own ports and its own check is clean', ({ kind, part }) => {
   const ids = kind.ports(part).map((port) => port.id);
-  const positions = kind.input?.(part)?.positions.length ?? 0;
+  const positions = (kind.dependent ?? kind.input)?.(part)?.positions.length ?? 0;
   for (const element of kind.elements(part)) {
     for (const id of portsNamed(element)) expect(ids).toContain(id);
     if (element.type === 'path') for (const index of element.positions ?? []) expect(index).toBeLessThan(positions);
@@ -150,7 +150,7 @@ test.each(made)('$id: elements name its own ports and its own check is clean', (
 });
 
 test.each(made)('$id: what is drawn stays inside its outline, in every look', ({ kind, part }) => {
-  const positions = kind.input?.(part)?.positions.length ?? 1;
+  const positions = (kind.dependent ?? kind.input)?.(part)?.positions.length ?? 1;
   const reach = kind.reach?.(part) ?? kind.bounds(part);
   const looks: Look[] = [
     {},

@@ -1,3 +1,4 @@
+import { isStripValve } from '../../parts/valve-kinds.ts';
 import type { Box, Point } from '../../base/points.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import { inflate, overlaps, segmentTouches } from '../../drawing/geometry.ts';
@@ -40,7 +41,7 @@ export function pressureSpots(
   const bodies = circuit.parts.filter(({ kind }) => kind !== 'junction').map(partReach);
   // A valve writes a letter at each port.
   for (const part of circuit.parts) {
-    if (part.kind !== 'directional-valve') continue;
+    if (!isStripValve(part.kind)) continue;
     for (const { at } of placedPorts(part)) taken.push({ x: at.x - 1.8, y: at.y - 1.8, width: 3.6, height: 3.6 });
   }
   const segments = [...routes.values()].flatMap(runsOf);
@@ -77,7 +78,11 @@ function candidates({ a, b }: Run): Candidate[] {
     const box = (x: number, y: number): Box => ({ x, y, width: WIDTH, height: HEIGHT });
     const base = HEIGHT * 0.8;
     if (flat) {
-      return [p.y - GAP - HEIGHT, p.y + GAP].map((top) => ({ at: { x: p.x, y: top + base }, align: 'middle', box: box(p.x - WIDTH / 2, top) }));
+      return [p.y - GAP - HEIGHT, p.y + GAP].map((top) => ({
+        at: { x: p.x, y: top + base },
+        align: 'middle',
+        box: box(p.x - WIDTH / 2, top),
+      }));
     }
     const top = p.y - HEIGHT / 2;
     return [
