@@ -1,19 +1,28 @@
 /** Answers one question after another on its own thread. */
 import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
+import { askTable, continueText } from '../analysis/ask.ts';
 import { bleedPlan } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
+import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
-import type { Question, Reply } from './messages.ts';
+import { Held } from './held.ts';
+import type { Holding, Question, Reply } from './messages.ts';
 
 const scope = self as unknown as {
   postMessage(reply: Reply): void;
-  onmessage: ((event: MessageEvent<Question>) => void) | null;
+  onmessage: ((event: MessageEvent<Question | Holding>) => void) | null;
 };
 
+const held = new Held();
+
 scope.onmessage = ({ data: question }) => {
+  if (question.ask === 'hold') {
+    held.take(question.data);
+    return;
+  }
   try {
     scope.postMessage(answer(question));
   } catch (error) {
@@ -36,6 +45,14 @@ function answer(question: Question): Reply {
       return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), unlimited) };
     case 'read-rule':
       return { id, say: 'rule-read', problems: ruleProblems(circuit, question.text) };
+    case 'fold':
+      return { id, say: 'fold', result: held.fold(circuit, conditions, question.by, tell(id)) };
+    case 'influence':
+      return { id, say: 'influence', result: held.influence(circuit, conditions, tell(id)) };
+    case 'rows':
+      return { id, say: 'rows', result: askTable(circuit, conditions, question.text, tell(id), held.table) };
+    case 'continue':
+      return { id, say: 'continue', next: continueText(circuit, question.text, question.as) };
     case 'bleed':
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
     case 'numbers':
@@ -48,13 +65,15 @@ const SOON = 1500;
 /** Rows that the pressure layer may solve in the background: some tens of seconds. */
 const BACKGROUND_ROWS = 100_000;
 
+/** Giving up ends the whole thread, so there is nobody to ask. */
+const tell = (id: number): Budget => ({
+  cancelled: () => false,
+  progress: (share) => scope.postMessage({ id, say: 'progress', share }),
+});
+
 function answerTable(id: number, circuit: Circuit, conditions: Conditions): Reply {
   const began = performance.now();
-  const budget = {
-    // Giving up ends the whole thread, so there is nobody to ask.
-    cancelled: () => false,
-    progress: (share: number) => scope.postMessage({ id, say: 'progress', share }),
-  };
+  const budget = tell(id);
   const reply = (pressureRows: number): Reply => {
     const options = { pressureRows };
     const data = tabulate(circuit, conditions, budget, options);

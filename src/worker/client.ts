@@ -1,4 +1,5 @@
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
+import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
@@ -6,10 +7,13 @@ import { Cancelled } from '../base/budget.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
-import type { Question, Reply } from './messages.ts';
+import type { TableData } from '../engine/table/table-data.ts';
+import type { Holding, Question, Reply } from './messages.ts';
 
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
+export type { AskAnswer, FoldAnswer, FoldBy, FoldItem, FoldRow, Next } from '../analysis/results.ts';
+export type { Influence, InfluenceRow, SubCircuit } from '../analysis/results.ts';
 export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
 export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
@@ -49,14 +53,35 @@ export interface Analyst {
   readRule(circuit: Circuit, text: string): Job<readonly Problem[]>;
   /** How to let the pressure down once the pumps stop in this row (0-based). */
   bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
+  /** The table folded; `table` is the one of these conditions, undefined where there are too many combinations to list. */
+  fold(asked: Asked, by: FoldBy, progress: (share: number) => void): Job<Result<FoldAnswer>>;
+  /** Which levers can change which outcome, and what is independent. */
+  influence(asked: Asked, progress: (share: number) => void): Job<Result<Influence>>;
+  /** The rows in which a condition of the rules' language holds. */
+  rows(asked: Asked, text: string, progress: (share: number) => void): Job<Result<AskAnswer>>;
+  /** How a rule or question may go on at its end. */
+  next(circuit: Circuit, text: string, as: 'rule' | 'condition'): Job<readonly Next[]>;
   close(): void;
 }
 
-/** Tables, explanations and plans have a thread each, so that a click on "why" never waits for a long table. */
+/** What a question about the whole table is about. */
+export interface Asked {
+  readonly circuit: Circuit;
+  readonly conditions: Conditions;
+  readonly table: StateTable | undefined;
+}
+
+/** Tables, explanations, plans and questions about whole tables have a thread each, so that a click on "why" never waits for a long table. */
 export function createAnalyst(): Analyst {
   const tables = new Thread();
   const words = new Thread();
   const long = new Thread();
+  const whole = new Thread();
+  const share =
+    (progress: (share: number) => void) =>
+    (reply: Reply): void => {
+      if (reply.say === 'progress') progress(reply.share);
+    };
   return {
     table: (circuit, conditions, progress, early = () => {}) =>
       tables.ask(
@@ -97,7 +122,35 @@ export function createAnalyst(): Analyst {
         () => {},
         (reply) => (reply.say === 'bleed' ? reply.plan : undefined),
       ),
+    fold: ({ circuit, conditions, table }, by, progress) =>
+      whole.ask(
+        { ask: 'fold', circuit, conditions, by },
+        share(progress),
+        (reply) => (reply.say === 'fold' ? reply.result : undefined),
+        { table: table?.data },
+      ),
+    influence: ({ circuit, conditions, table }, progress) =>
+      whole.ask(
+        { ask: 'influence', circuit, conditions },
+        share(progress),
+        (reply) => (reply.say === 'influence' ? reply.result : undefined),
+        { table: table?.data },
+      ),
+    rows: ({ circuit, conditions, table }, text, progress) =>
+      whole.ask(
+        { ask: 'rows', circuit, conditions, text },
+        share(progress),
+        (reply) => (reply.say === 'rows' ? reply.result : undefined),
+        { table: table?.data },
+      ),
+    next: (circuit, text, as) =>
+      words.ask(
+        { ask: 'continue', circuit, conditions: { pumps: 'running' }, text, as },
+        () => {},
+        (reply) => (reply.say === 'continue' ? reply.next : undefined),
+      ),
     close: () => {
+      whole.stop();
       tables.stop();
       long.stop();
       words.stop();
@@ -111,8 +164,14 @@ const tableOf = (reply: Extract<Reply, { say: 'table' }>): TableAnswer => ({
   took: reply.took,
 });
 
+/** A table that goes with a question; it crosses over once for all questions about it. */
+interface With {
+  readonly table: TableData | undefined;
+}
+
 interface Pending {
   readonly question: Question;
+  readonly held: With | undefined;
   readonly settle: (reply: Reply) => void;
   readonly refuse: (error: Error) => void;
 }
@@ -124,8 +183,14 @@ class Thread {
   #worker: Worker | undefined;
   #next = 1;
   readonly #pending = new Map<number, Pending>();
+  #holds: TableData | undefined;
 
-  ask<T>(open: Open<Question>, meanwhile: (reply: Reply) => void, read: (reply: Reply) => T | undefined): Job<T> {
+  ask<T>(
+    open: Open<Question>,
+    meanwhile: (reply: Reply) => void,
+    read: (reply: Reply) => T | undefined,
+    held?: With,
+  ): Job<T> {
     const id = this.#next++;
     const question = { ...open, id } as Question;
     const answer = new Promise<T>((resolve, reject) => {
@@ -142,9 +207,9 @@ class Thread {
             new Error(reply.say === 'failed' ? reply.message : 'The analysis gave an answer to another question.'),
           );
       };
-      this.#pending.set(id, { question, settle, refuse: reject });
+      this.#pending.set(id, { question, held, settle, refuse: reject });
     });
-    this.#send(question);
+    this.#send(question, held);
     return { answer, cancel: () => this.#giveUp(id) };
   }
 
@@ -155,13 +220,19 @@ class Thread {
     this.#pending.clear();
   }
 
-  #send(question: Question): void {
+  #send(question: Question, held: With | undefined): void {
+    const worker = this.#running();
+    if (held && held.table !== this.#holds) {
+      this.#holds = held.table;
+      worker.postMessage({ ask: 'hold', data: held.table } satisfies Holding);
+    }
     // Reactive proxies cannot be cloned across threads; circuits are plain JSON anyway.
-    this.#running().postMessage(JSON.parse(JSON.stringify(question)));
+    worker.postMessage(JSON.parse(JSON.stringify(question)));
   }
 
   #running(): Worker {
     if (this.#worker) return this.#worker;
+    this.#holds = undefined;
     const worker = new Worker(new URL('./analysis.worker.ts', import.meta.url), { type: 'module' });
     worker.onmessage = ({ data }: MessageEvent<Reply>) => this.#pending.get(data.id)?.settle(data);
     worker.onerror = (event) => {
@@ -181,6 +252,6 @@ class Thread {
     given.refuse(new Cancelled());
     this.#worker?.terminate();
     this.#worker = undefined;
-    for (const { question } of this.#pending.values()) this.#send(question);
+    for (const { question, held } of this.#pending.values()) this.#send(question, held);
   }
 }

@@ -1,3 +1,4 @@
+import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
@@ -29,6 +30,30 @@ export type Question =
       readonly conditions: Conditions;
       readonly row: number;
     }
+  /** The three of them answer from the table that was held out, if it is of the same question. */
+  | {
+      readonly id: number;
+      readonly ask: 'fold';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly by: FoldBy;
+    }
+  | { readonly id: number; readonly ask: 'influence'; readonly circuit: Circuit; readonly conditions: Conditions }
+  | {
+      readonly id: number;
+      readonly ask: 'rows';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly text: string;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'continue';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly text: string;
+      readonly as: 'rule' | 'condition';
+    }
   | {
       readonly id: number;
       readonly ask: 'explain';
@@ -36,6 +61,12 @@ export type Question =
       readonly conditions: Conditions;
       readonly row: number;
     };
+
+/** A table for the questions that follow, until another one comes; undefined = there is none. */
+export interface Holding {
+  readonly ask: 'hold';
+  readonly data: TableData | undefined;
+}
 
 export type Reply =
   | { readonly id: number; readonly say: 'progress'; readonly share: number }
@@ -50,6 +81,10 @@ export type Reply =
     }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
+  | { readonly id: number; readonly say: 'fold'; readonly result: Result<FoldAnswer> }
+  | { readonly id: number; readonly say: 'influence'; readonly result: Result<Influence> }
+  | { readonly id: number; readonly say: 'rows'; readonly result: Result<AskAnswer> }
+  | { readonly id: number; readonly say: 'continue'; readonly next: readonly Next[] }
   | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }
   | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
