@@ -4,7 +4,7 @@ import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import { actuatorByPressure, creeps, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
+import { actuatorByPressure, creeps, givesWay, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
 import { rowNumbers } from './row-numbers.ts';
 import type { RowNumbers } from './row-numbers.ts';
 
@@ -32,6 +32,18 @@ export function explainPressures(state: OneState): PressureWords {
       return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
     if (!said.rests && !moves) {
+      const yields = said.verdict === 'held' ? givesWay(index, solver, answer) : undefined;
+      if (yields) {
+        const over = [...new Set(yields.reliefs.map((i) => partLabel(state, state.net.reliefs[i]?.part ?? -1)))];
+        const text = `Its ${spec.push.by} presses harder than ${over.join(' and ')} ${over.length > 1 ? 'allow' : 'allows'}: it gives way over that.`;
+        return {
+          ...said,
+          verdict: yields.verdict,
+          onValues: true,
+          notes: yields.void ? [...said.notes, 'void forms'] : said.notes,
+          steps: [...said.steps, step(text, [], [said.part]), figures(state, index, spec, numbers, yields.verdict)],
+        };
+      }
       const free = said.verdict === 'floats' || said.verdict === 'held one way';
       const leaks = spec.leakage > 0 || (spec.drain?.leakage ?? 0) > 0;
       const way = free || leaks ? creeps(index, answer) : undefined;

@@ -3,7 +3,7 @@ import { Cancelled } from '../../base/budget.ts';
 import type { SettledBlock } from '../paths/block.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { ActuatorOutcome } from './actuator-outcomes.ts';
-import { actuatorByPressure, creeps, movesOverValve, pumpByPressure } from './resolve.ts';
+import { actuatorByPressure, creeps, givesWay, movesOverValve, pumpByPressure } from './resolve.ts';
 import type { PressureAnswer, PressureSolver } from './resolve.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, PUMP_VERDICTS } from './words.ts';
 
@@ -11,6 +11,7 @@ const RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
 const PUMP_RESTS = PUMP_VERDICTS.indexOf('rests on pressure');
 const PUMP_WORKS = PUMP_VERDICTS.indexOf('working');
 const RIVALS = REST_REASONS.indexOf('rivals');
+const HELD = ACTUATOR_VERDICTS.indexOf('held');
 const FLOATS = ACTUATOR_VERDICTS.indexOf('floats');
 const ONE_WAY = ACTUATOR_VERDICTS.indexOf('held one way');
 const CREEPS_OUT = ACTUATOR_NOTES.indexOf('creeps outward on back pressure');
@@ -67,6 +68,14 @@ export function resolveBlock(
       actuators.forEach((outcome, i) => {
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
         if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) {
+          const yields =
+            ((outcome.verdicts[HELD]?.[w] as number) & low) === 0 ? undefined : givesWay(i, solver, answer);
+          if (yields) {
+            changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(yields.verdict), w, low);
+            const voids = outcome.notes[VOID] as Uint32Array;
+            if (yields.void) voids[w] = (voids[w] as number) | low;
+            return;
+          }
           const free = ((outcome.verdicts[FLOATS]?.[w] as number) | (outcome.verdicts[ONE_WAY]?.[w] as number)) & low;
           const way = free === 0 && !leaks(solver, i) ? undefined : creeps(i, answer);
           if (way === undefined) return;

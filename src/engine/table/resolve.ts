@@ -199,6 +199,31 @@ export function creeps(index: number, { result }: PressureAnswer): 'out' | 'in' 
   return state.speed > 0 ? 'out' : 'in';
 }
 
+/**
+ * An actuator that open paths hold, whose load or spring is stronger than a relief valve allows: it gives way over
+ * that valve. undefined if it does not.
+ */
+export function givesWay(
+  index: number,
+  solver: PressureSolver,
+  answer: PressureAnswer,
+): { readonly verdict: ActuatorVerdict; readonly void: boolean; readonly reliefs: readonly number[] } | undefined {
+  const actuator = solver.net.actuators[index];
+  const way = creeps(index, answer);
+  const { result } = answer;
+  if (!actuator || way === undefined || result.status !== 'solved') return undefined;
+  const pushed = actuator.push.way === way || actuator.push.way === 'both';
+  const reliefs = solver.net.reliefs.flatMap((_, i) => (solver.reliefFlow(result, i) > MOTION ? [i] : []));
+  if (!pushed || reliefs.length === 0) return undefined;
+  const words = motionWords(actuator);
+  const grows = way === 'out' ? actuator.a : actuator.b;
+  return {
+    verdict: way === 'out' ? words.pushedOut : words.pushedIn,
+    void: solver.voidFlow(result, grows) > VOID,
+    reliefs,
+  };
+}
+
 /** True if something moves over a valve that pressures open, which open paths do not know of. */
 export function movesOverValve(bits: BlockBits, { result }: PressureAnswer): boolean {
   if (result.status !== 'solved') return false;

@@ -56,6 +56,8 @@ test('open paths and pressures never contradict each other on 5,000 random circu
             'moved in by spring': ['in', 'stands'],
             'moved out by load': ['out', 'stands'],
           };
+          // Held up to the force at which a relief valve lets go; the table says so from the pressures.
+          if (verdict === 'held' && numbers.reliefs.some((relief) => relief.flow > MOTION)) return;
           if (!(allowed[verdict]?.includes(goes) ?? true)) {
             wrong.push(
               `${verdict} but ${goes} (${flow * 60000}): ${paths.data.actuators[i]?.label} row ${row + 1} ${pumps} ${sketch(circuit)}`,
