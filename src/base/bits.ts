@@ -84,3 +84,65 @@ export function shiftSet(set: BitSet, by: number, size: number): BitSet {
   }
   return trim(out, size);
 }
+
+/** Set bits `from` … `to - 1`. */
+export function fillRange(set: BitSet, from: number, to: number): void {
+  const first = from >>> 5;
+  const last = (to - 1) >>> 5;
+  const head = -1 << (from & 31);
+  const tail = (to & 31) === 0 ? -1 : (1 << (to & 31)) - 1;
+  if (first === last) {
+    set[first] = (set[first] as number) | (head & tail);
+    return;
+  }
+  set[first] = (set[first] as number) | head;
+  set.fill(0xffffffff, first + 1, last);
+  set[last] = (set[last] as number) | tail;
+}
+
+/** Set at `to` … what stands at `from` … `from + size - 1`; the two stretches must not overlap, and the target must be empty. */
+export function copyRange(set: BitSet, from: number, to: number, size: number): void {
+  let source = from;
+  let target = to;
+  const end = to + size;
+  const lead = (32 - (target & 31)) & 31;
+  if (lead > 0) {
+    const bits = Math.min(lead, size);
+    orBits(set, target, bitsAt(set, source, bits));
+    source += bits;
+    target += bits;
+  }
+  const words = (end - target) >>> 5;
+  const shift = source & 31;
+  let at = target >>> 5;
+  let read = source >>> 5;
+  if (shift === 0) {
+    set.copyWithin(at, read, read + words);
+  } else {
+    const left = 32 - shift;
+    let low = set[read] as number;
+    for (const last = at + words; at < last; at++) {
+      read += 1;
+      const high = set[read] as number;
+      set[at] = (low >>> shift) | (high << left);
+      low = high;
+    }
+  }
+  const done = words * 32;
+  if (target + done < end) orBits(set, target + done, bitsAt(set, source + done, end - target - done));
+}
+
+/** Up to 32 bits from row `from` on, the first lowest. */
+function bitsAt(set: BitSet, from: number, size: number): number {
+  const shift = from & 31;
+  const word = from >>> 5;
+  const low = (set[word] as number) >>> shift;
+  const bits = shift === 0 ? low : low | ((set[word + 1] ?? 0) << (32 - shift));
+  return size === 32 ? bits : bits & ((1 << size) - 1);
+}
+
+/** All of `bits` must lie in one word of the set. */
+function orBits(set: BitSet, at: number, bits: number): void {
+  const word = at >>> 5;
+  set[word] = (set[word] as number) | (bits << (at & 31));
+}
