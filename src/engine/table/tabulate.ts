@@ -1,20 +1,25 @@
 import { emptySet, isEmpty, wordsFor } from '../../base/bits.ts';
 import type { Budget } from '../../base/budget.ts';
 import { Cancelled } from '../../base/budget.ts';
+import { dependentLabel } from '../../network/dependents.ts';
 import type { Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
 import { compileEdges } from '../paths/edges.ts';
-import type { EdgeSet } from '../paths/edges.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome } from './actuator-outcomes.ts';
+import { dependentPlanes, doubt } from './doubt.ts';
+import { settleRows } from './dependents.ts';
+import type { DependentRows } from './dependents.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { PlanePool, PlaneSheet } from './planes.ts';
 import { resolveBlock } from './resolve-block.ts';
 import type { Allowance, Resolved } from './resolve-block.ts';
 import { PressureSolver } from './resolve.ts';
 import { pumpOutcome } from './pump-outcomes.ts';
+import { pathPlanes } from './sets/path-planes.ts';
 import type { Plane, TableData } from './table-data.ts';
+import { TouchFinder } from './touched.ts';
 import { leftBehind, leverMoves, standingReasons } from './trapped.ts';
 import {
   ACTUATOR_NOTES,
@@ -47,19 +52,27 @@ interface Sheets {
   readonly under: PlaneSheet;
   /** One item and kind: rows whose verdicts rest on entered or assumed values. */
   readonly valued: PlaneSheet;
+  /** One kind: the same by actuator, pump. */
+  readonly valuedActuators: PlaneSheet;
+  readonly valuedPumps: PlaneSheet;
   /** One kind only: oil passes it over a valve that pressures open. */
   readonly flowing: PlaneSheet;
+  readonly dependents: DependentRows | undefined;
 }
 
 export interface TableOptions {
   /** Rows that the pressure layer may solve where open paths leave the verdict to it; 0 = open paths alone. */
   readonly pressureRows: number;
+  /** Go through the rows also where sets of rows are faster; the table is the same. */
+  readonly rowByRow?: boolean;
 }
 
 /**
  * The whole state table of a network: open paths, and pressures where those leave the verdict to them.
  * Throws `Cancelled` when the budget says so.
- * Cost grows with states × paths / 32; memory is the planes that come out.
+ * Open paths alone are found as sets of rows (`pathPlanes`), whose cost is that of the circuit rather than of
+ * its rows. Where the sets get entangled, or pressures are asked for, the cost grows with states × paths / 32.
+ * Memory is the planes that come out, equal ones kept once.
  */
 export function tabulate(
   net: Network,
@@ -67,29 +80,46 @@ export function tabulate(
   budget: Budget,
   options: TableOptions = { pressureRows: 0 },
 ): TableData {
-  const edges = compileEdges(net);
+  if (options.pressureRows === 0 && options.rowByRow !== true && net.dependents.length === 0) {
+    const planes = pathPlanes(net, conditions, budget);
+    if (planes) {
+      budget.progress(1);
+      return {
+        pumpsRunning: conditions.pumpsRunning,
+        ...describe(net),
+        count: net.inputs.reduce((n, input) => n * input.positions.length, 1),
+        ...commandCounts(net),
+        ...planes,
+        valued: undefined,
+        valuedActuators: [],
+        valuedPumps: [],
+        ...dependentPlanes(undefined, new PlanePool()),
+      };
+    }
+  }
   const radices = net.inputs.map((input) => input.positions.length);
+  const states = radices.reduce((n, r) => n * r, 1);
   const share = conditions.pumpsRunning ? 1 : 0.5;
   const running = runBlocks(
     net,
-    edges,
     { ...conditions, pumpsRunning: true },
     part(budget, 0, share),
     conditions.pumpsRunning ? options.pressureRows : 0,
+    options.pressureRows,
   );
-  const moves = leverMoves(radices, edges.states);
+  const moves = leverMoves(radices, states);
   const left = net.lines
     .slice(0, net.shown)
-    .map((_, line) => leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), edges.states));
+    .map((_, line) => leftBehind(moves, running.lines.get(line, CUT_OFF), running.under.get(line, 0), states));
   let sheets = running;
   if (conditions.pumpsRunning) {
     left.forEach((plane, line) => putTrap(running, line, LEFT_BEHIND, plane));
   } else {
-    sheets = runBlocks(net, edges, conditions, part(budget, share, 1), options.pressureRows);
+    sheets = runBlocks(net, conditions, part(budget, share, 1), options.pressureRows, options.pressureRows);
     for (let line = 0; line < net.shown; line++) {
       const cutOff = sheets.lines.get(line, CUT_OFF);
-      putTrap(sheets, line, LEFT_BEHIND, meet(cutOff, left[line], edges.states));
-      putTrap(sheets, line, STOPPED, meet(cutOff, running.under.get(line, 0), edges.states));
+      putTrap(sheets, line, LEFT_BEHIND, meet(cutOff, left[line], states));
+      putTrap(sheets, line, STOPPED, meet(cutOff, running.under.get(line, 0), states));
       // With the pumps stopped only a charged accumulator can feed a line.
       const stored = sheets.lines.get(line, FED);
       if (stored) putTrap(sheets, line, STORED, stored.slice());
@@ -99,7 +129,7 @@ export function tabulate(
   return {
     pumpsRunning: conditions.pumpsRunning,
     ...describe(net),
-    count: edges.states,
+    count: states,
     ...commandCounts(net),
     actuatorPlanes: sheets.actuators.finish(pool),
     actuatorNotes: sheets.notes.finish(pool),
@@ -109,16 +139,24 @@ export function tabulate(
     blockedPlanes: sheets.blocked.finish(pool),
     trapPlanes: sheets.trapped.finish(pool),
     valued: sheets.valued.finish(pool)[0]?.[0],
+    valuedActuators: sheets.valuedActuators.finish(pool).map(([plane]) => plane),
+    valuedPumps: sheets.valuedPumps.finish(pool).map(([plane]) => plane),
+    ...dependentPlanes(sheets.dependents, pool),
   };
 }
 
+/** `pressureRows`: rows whose verdicts the pressures may decide; `settledRows`: rows whose dependent valves they may. */
 function runBlocks(
   net: Network,
-  edges: EdgeSet,
   conditions: PathConditions,
   budget: Budget,
   pressureRows: number,
+  settledRows: number,
 ): Sheets {
+  let pressures = net.dependents.length > 0 && settledRows > 0 ? new PressureSolver(net, conditions) : undefined;
+  const dependents = settleRows(net, conditions, budget, settledRows, pressures);
+  if (pressures) pressures.settings = dependents?.planes;
+  const edges = compileEdges(net, dependents?.planes);
   const { states } = edges;
   const words = wordsFor(states);
   const sheets: Sheets = {
@@ -132,9 +170,12 @@ function runBlocks(
     under: new PlaneSheet(net.shown, 1, states),
     valued: new PlaneSheet(1, 1, states),
     flowing: new PlaneSheet(net.shown, 1, states),
+    valuedActuators: new PlaneSheet(net.actuators.length, 1, states),
+    valuedPumps: new PlaneSheet(net.pumps.length, 1, states),
+    dependents,
   };
   const allowance: Allowance = { rows: pressureRows, every: states <= pressureRows };
-  let pressures: PressureSolver | undefined;
+  const touch = dependents && new TouchFinder(net, conditions, Math.min(BLOCK, words));
   const solver = new PathSolver(net, edges, conditions, Math.min(BLOCK, words));
   for (let at = 0; at < words; at += BLOCK) {
     if (budget.cancelled()) throw new Cancelled();
@@ -148,11 +189,15 @@ function runBlocks(
     const pumps = net.pumps.map((pump, i) => pumpOutcome(i, pump, net, block, conditions));
     let flowing: Resolved['flowing'] = new Map();
     if (allowance.rows > 0) {
-      pressures ??= new PressureSolver(net, conditions);
+      pressures ??= new PressureSolver(net, conditions, dependents?.planes);
       const resolved = resolveBlock(block, actuators, pumps, pressures, allowance, budget);
       flowing = resolved.flowing;
       sheets.valued.write(0, 0, at, resolved.valued);
+      resolved.actuators.forEach((plane, i) => sheets.valuedActuators.write(i, 0, at, plane));
+      resolved.pumps.forEach((plane, i) => sheets.valuedPumps.write(i, 0, at, plane));
     }
+    if (touch && dependents)
+      doubt(sheets, dependents, touch.at(at, width, dependents), at, width, block, actuators, pumps);
     actuators.forEach((outcome, i) => {
       write(sheets.actuators, i, outcome.verdicts);
       write(sheets.notes, i, outcome.notes);
@@ -197,7 +242,7 @@ const part = (budget: Budget, from: number, to: number): Budget => ({
   progress: (share) => budget.progress(from + share * (to - from)),
 });
 
-function describe(net: Network): Pick<TableData, 'inputs' | 'actuators' | 'pumps' | 'lines'> {
+function describe(net: Network): Pick<TableData, 'inputs' | 'dependents' | 'actuators' | 'pumps' | 'lines'> {
   const named = (part: number): { part: string; label: string } => {
     const entry = net.parts[part];
     return { part: entry?.id ?? '', label: entry?.label ?? '' };
@@ -209,6 +254,12 @@ function describe(net: Network): Pick<TableData, 'inputs' | 'actuators' | 'pumps
       ...(rest === undefined ? {} : { rest }),
       by,
       coils,
+    })),
+    dependents: net.dependents.map(({ part, positions, rest }, d) => ({
+      part: net.parts[part]?.id ?? '',
+      label: dependentLabel(net, d),
+      positions,
+      ...(rest === undefined ? {} : { rest }),
     })),
     actuators: net.actuators.map(({ part, rotary }) => ({
       ...named(part),

@@ -15,7 +15,7 @@ import { randomCircuit } from '../../../random-circuit.ts';
 /** Every actuator and cut-off line in every combination; returns how many verdicts were compared. */
 function compare(net: Network, pumpsRunning: boolean, place: 'between' | 'in' | 'out' = 'between'): number {
   const conditions = { pumpsRunning, places: net.actuators.map(() => place) };
-  const table = new StateTable(tabulate(net, conditions, unlimited, { pressureRows: 0 }));
+  const table = new StateTable(tabulate(net, conditions, unlimited, { pressureRows: 0, rowByRow: true }));
   const paths = openPathSets(net, conditions);
   const motions = motionSets(net, conditions, paths);
   let compared = 0;
