@@ -1,9 +1,16 @@
 import type { Circuit, Part } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
-import type { ActuatorElement, DependentSpec, PartKind, PressureValveElement } from '../parts/contract.ts';
+import type {
+  ActuatorElement,
+  DividerElement,
+  DependentSpec,
+  PartKind,
+  PressureValveElement,
+} from '../parts/contract.ts';
 import { findLines } from './lines.ts';
 import type {
   NetAccumulator,
+  NetDivider,
   NetActuator,
   NetDependent,
   NetInput,
@@ -27,6 +34,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   const pumps: NetPump[] = [];
   const reliefs: NetRelief[] = [];
   const valves: NetPressureValve[] = [];
+  const dividers: NetDivider[] = [];
   const accumulators: NetAccumulator[] = [];
   const actuators: NetActuator[] = [];
   const switches: NetPressureSwitch[] = [];
@@ -105,6 +113,10 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
             setting: element.setting ?? 0,
           });
           break;
+        case 'divider':
+          paths.push(...dividerPaths(element, index, dividers.length, at));
+          dividers.push(compileDivider(element, index, at));
+          break;
         case 'accumulator':
           accumulators.push({
             part: index,
@@ -143,6 +155,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     pumps,
     reliefs,
     valves,
+    dividers,
     accumulators,
     actuators,
     switches,
@@ -199,6 +212,36 @@ function openState(element: PressureValveElement, part: number, valve: number, a
     valve,
   };
 }
+
+const compileDivider = (element: DividerElement, part: number, at: (port: string) => number): NetDivider => ({
+  part,
+  inlet: at(element.inlet),
+  outlets: [at(element.outlets[0]), at(element.outlets[1])],
+  ports: [element.inlet, ...element.outlets],
+  share: element.share,
+  rest: element.rest,
+  form: element.form,
+  combines: element.combines,
+  rated: element.rated,
+});
+
+/** For open paths a divider is a throttled way to each outlet: what passes there depends on the other. */
+const dividerPaths = (element: DividerElement, part: number, index: number, at: (port: string) => number): NetPath[] =>
+  ([0, 1] as const).map((outlet) => ({
+    part,
+    from: at(element.inlet),
+    to: at(element.outlets[outlet]),
+    fromPort: element.inlet,
+    toPort: element.outlets[outlet],
+    oneWay: !element.combines,
+    throttled: true,
+    input: -1,
+    positions: 0,
+    pilot: -1,
+    pilotRatio: 0,
+    cracking: 0,
+    divider: { index, outlet },
+  }));
 
 function compileActuator(element: ActuatorElement, part: number, at: (port: string) => number): NetActuator {
   const { spring, load } = element;

@@ -13,6 +13,7 @@ export interface Network {
   readonly pumps: readonly NetPump[];
   readonly reliefs: readonly NetRelief[];
   readonly valves: readonly NetPressureValve[];
+  readonly dividers: readonly NetDivider[];
   readonly accumulators: readonly NetAccumulator[];
   readonly actuators: readonly NetActuator[];
   readonly switches: readonly NetPressureSwitch[];
@@ -104,6 +105,8 @@ export interface NetPath {
   readonly limit?: number;
   /** The pressure valve (duty `closes`) whose open state this path is: for open paths it is a path, for pressures that valve stands for it. */
   readonly valve?: number;
+  /** The flow divider and its outlet (0, 1) that this path stands for where only open paths count. */
+  readonly divider?: { readonly index: number; readonly outlet: 0 | 1 };
 }
 
 export interface NetPump {
@@ -149,6 +152,21 @@ export interface NetPressureValve {
   readonly override: number;
   /** m³/s at Pa of drop when fully open. */
   readonly rated?: { readonly flow: number; readonly drop: number };
+}
+
+/** A flow divider: see `DividerElement`. */
+export interface NetDivider {
+  readonly part: number;
+  readonly inlet: number;
+  readonly outlets: readonly [number, number];
+  /** Names of the inlet and of the two outlets. */
+  readonly ports: readonly [string, string, string];
+  readonly share: number;
+  readonly rest: number;
+  readonly form: 'spool' | 'gear';
+  readonly combines: boolean;
+  /** m³/s at Pa of drop. */
+  readonly rated: { readonly flow: number; readonly drop: number };
 }
 
 export interface NetAccumulator {

@@ -10,6 +10,7 @@ import { doubleRodCylinder } from './double-rod-cylinder.ts';
 import { filter } from './filter.ts';
 import { fixedPump } from './fixed-pump.ts';
 import { flowControl } from './flow-control.ts';
+import { flowDivider } from './flow-divider.ts';
 import { gauge } from './gauge.ts';
 import { handPump } from './hand-pump.ts';
 import { junction } from './junction.ts';
@@ -61,6 +62,7 @@ export const CATALOGUE: readonly PartKind[] = [
   throttle,
   oneWayThrottle,
   flowControl,
+  flowDivider,
   shuttleValve,
   accumulator,
   gauge,

@@ -185,8 +185,25 @@ export type Element =
       readonly on: number;
       readonly off: number;
     }
+  | DividerElement
   | PressureValveElement
   | ActuatorElement;
+
+/** Divides what enters at the inlet between two outlets in a fixed ratio; backwards it combines them if it can. */
+export interface DividerElement {
+  readonly type: 'divider';
+  readonly inlet: string;
+  readonly outlets: readonly [string, string];
+  /** Part of the flow of the first outlet, 0 … 1. */
+  readonly share: number;
+  /** Share of its rated flow that an outlet passes while the other is blocked. */
+  readonly rest: number;
+  /** `spool` throttles the lighter outlet, `gear` are two motors on one shaft. */
+  readonly form: 'spool' | 'gear';
+  readonly combines: boolean;
+  /** m³/s at Pa of drop for the whole of it. */
+  readonly rated: { readonly flow: number; readonly drop: number };
+}
 
 /**
  * A way from → to that pressures open or close. `closes` (reducing) stands open until Σ factor·p comes up

@@ -31,6 +31,7 @@ const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
   throttle: ['A', 'B'],
   'one-way-throttle': ['A', 'B'],
   'flow-control': ['A', 'B'],
+  'flow-divider': ['P', 'A', 'B'],
   'shuttle-valve': ['X', 'Y', 'A'],
   cylinder: ['A', 'B'],
   'double-rod-cylinder': ['A', 'B'],
@@ -55,6 +56,8 @@ function portsNamed(element: Element): string[] {
       return [element.from, element.to, ...element.signals.map((signal) => signal.port)];
     case 'pump':
       return [element.outlet, element.suction];
+    case 'divider':
+      return [element.inlet, ...element.outlets];
     case 'tank':
     case 'accumulator':
     case 'pressure-switch':
@@ -97,9 +100,9 @@ function corners(primitives: readonly Primitive[], dx = 0, dy = 0): { x: number;
 const within = (box: Box, { x, y }: { x: number; y: number }): boolean =>
   x >= box.x - 1e-9 && x <= box.x + box.width + 1e-9 && y >= box.y - 1e-9 && y <= box.y + box.height + 1e-9;
 
-test('there are 33 kinds, each found by its name and in a known group', () => {
-  expect(CATALOGUE).toHaveLength(33);
-  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(33);
+test('there are 34 kinds, each found by its name and in a known group', () => {
+  expect(CATALOGUE).toHaveLength(34);
+  expect(new Set(CATALOGUE.map((kind) => kind.kind)).size).toBe(34);
   for (const kind of CATALOGUE) {
     expect(kindOf(kind.kind)).toBe(kind);
     expect(PART_GROUPS).toContain(kind.group);
@@ -215,6 +218,7 @@ test.each([
   ['or valve', 'shuttle-valve'],
   ['back pressure', 'check-valve-spring'],
   ['lever pump', 'hand-pump'],
+  ['gear divider', 'flow-divider-gear'],
   ['vent port', 'pilot-relief-valve'],
   ['pressostat', 'pressure-switch'],
 ])('searching "%s" finds %s', (query, id) => {

@@ -1,3 +1,5 @@
+import { addCouplers, coupledLines, layCouplers } from './couplers.ts';
+import type { Couplers } from './couplers.ts';
 import { NEAR_IDEAL } from './laws.ts';
 import { contradictions } from './problem.ts';
 import type { Branch, Contradiction, FlowProblem } from './problem.ts';
@@ -36,6 +38,7 @@ export interface FlowSystem {
   readonly leak: number;
   readonly pilots: Pilots;
   /** Branches that are on: the first `plain` without pilot, the rest with one. */
+  readonly couplers: Couplers;
   active: Int32Array;
   /** Where `active` lies. */
   readonly room: Int32Array;
@@ -71,6 +74,8 @@ export function assemble(problem: FlowProblem): FlowSystem {
     for (const s of b.pilot?.signals ?? []) edges.push([b.a, s.line], [b.b, s.line]);
   }
   const plan = planElimination(n, edges);
+  const couplers = sound ? (problem.couplers ?? []) : [];
+  edges.push(...coupledLines(couplers, tank));
   const ends = new Int32Array(3 * m);
   const law = new Float64Array(WIDTH * m);
   branches.forEach((b, j) => {
@@ -98,6 +103,7 @@ export function assemble(problem: FlowProblem): FlowSystem {
     leak: problem.leak,
     pilots: layPilots(branches, plan, tank),
     active: new Int32Array(0),
+    couplers: layCouplers(couplers, plan, tank),
     room: new Int32Array(m),
     plain: 0,
   };
@@ -201,6 +207,7 @@ export function balance(system: FlowSystem, at: Point): void {
     v[i] = slope;
   }
 }
+  if (system.couplers.count > 0) addCouplers(system.couplers, p, f, v, at.softness);
 
 /** Through-put by the law that stands at `l`, as it is without softness. */
 export function flowAt(law: Float64Array, l: number, u: number): number {

@@ -2,7 +2,7 @@ import { NEAR_IDEAL } from './laws.ts';
 import { lossOf } from './part-data.ts';
 import type { CylinderData, Loss, MotorData, ValveData } from './part-data.ts';
 import { TANK } from './problem.ts';
-import type { Branch, BranchKind, FlowProblem, Load, Pilot, Pump, Signal } from './problem.ts';
+import type { Branch, BranchKind, Coupler, FlowProblem, Load, Pilot, Pump, Signal } from './problem.ts';
 
 export { lossOf } from './part-data.ts';
 export type { CylinderData, Loss, MotorData, ValveData } from './part-data.ts';
@@ -15,6 +15,7 @@ export class FlowBuilder {
   readonly #lines: string[] = [];
   readonly #pumps: Pump[] = [];
   readonly #branches: Branch[] = [];
+  readonly #couplers: Coupler[] = [];
   readonly #leak: number;
 
   /** `leak`: m³/s per Pa from every line to tank. */
@@ -214,8 +215,19 @@ export class FlowBuilder {
     });
   }
 
+  /** Two motors on one shaft: of what enters at `inlet`, `share` goes to the first outlet; `loss` Pa per m³/s. */
+  divider(id: string, inlet: number, outlets: readonly [number, number], share: number, loss: number): void {
+    this.#couplers.push({ id, lines: [inlet, ...outlets], factors: [1, -share, share - 1], r: loss });
+  }
+
   build(): FlowProblem {
-    return { lines: [...this.#lines], pumps: [...this.#pumps], branches: [...this.#branches], leak: this.#leak };
+    return {
+      lines: [...this.#lines],
+      pumps: [...this.#pumps],
+      branches: [...this.#branches],
+      ...(this.#couplers.length > 0 && { couplers: [...this.#couplers] }),
+      leak: this.#leak,
+    };
   }
 
   #between(

@@ -1,5 +1,6 @@
 import { WIDTH, flowScale } from './assemble.ts';
 import type { FlowSystem } from './assemble.ts';
+import { pull } from './couplers.ts';
 import { NEAR_IDEAL, driveAt, stiffness } from './laws.ts';
 import type { Law } from './laws.ts';
 
@@ -84,6 +85,17 @@ export function certify(
     }
     net[a] = (net[a] as number) + ca * flow;
     net[b] = (net[b] as number) + cb * flow;
+    used += u * flow;
+    largest = Math.max(largest, Math.abs(u * flow));
+  }
+  const { couplers } = system;
+  for (let c = 0; c < couplers.count; c++) {
+    const u = pull(couplers, c, p);
+    const flow = u / (couplers.r[c] as number);
+    for (let e = couplers.start[c] as number; e < (couplers.start[c + 1] as number); e++) {
+      const i = couplers.line[e] as number;
+      net[i] = (net[i] as number) + (couplers.factor[e] as number) * flow;
+    }
     used += u * flow;
     largest = Math.max(largest, Math.abs(u * flow));
   }

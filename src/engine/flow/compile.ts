@@ -1,6 +1,7 @@
 import type { NetPath, NetPressureValve, Network } from '../../network/network.ts';
 import { FlowBuilder } from './builder.ts';
 import type { Loss } from './builder.ts';
+import { layDivider } from './dividers.ts';
 import { TANK } from './problem.ts';
 import type { Branch, FlowProblem } from './problem.ts';
 import { FlowSolver } from './solver.ts';
@@ -40,8 +41,13 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   const label = (part: number): string => net.parts[part]?.label ?? '';
 
   const valves = net.valves.map((valve) => layValve(builder, valve, at, label(valve.part)));
+  const dividers = net.dividers.map((divider) => layDivider(builder, divider, at, label(divider.part)));
   const paths = net.paths.map((path) =>
-    path.valve === undefined ? layPath(builder, net, path, at, label(path.part)) : -1,
+    path.divider !== undefined
+      ? (dividers[path.divider.index]?.[path.divider.outlet] ?? -1)
+      : path.valve === undefined
+        ? layPath(builder, net, path, at, label(path.part))
+        : -1,
   );
   const switched = net.paths.flatMap((path, i) => {
     const branch = paths[i] as number;

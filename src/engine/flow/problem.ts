@@ -13,6 +13,8 @@ export interface FlowProblem {
   readonly lines: readonly string[];
   readonly pumps: readonly Pump[];
   readonly branches: readonly Branch[];
+  /** Ties of more than two lines. */
+  readonly couplers?: readonly Coupler[];
   /** m³/s per Pa from each line to tank. */
   readonly leak: number;
 }
@@ -27,6 +29,18 @@ export interface Pump {
   readonly flow: number;
   /** Branch that takes back what a compensated pump does not deliver. */
   readonly compensator?: number;
+}
+
+/**
+ * Flows of several lines in a fixed ratio, as of two motors on one shaft: driven by `u = Σ factor·p`, it takes
+ * `factor·x` out of each of its lines, x = u / r. The factors of lines that get oil are negative.
+ */
+export interface Coupler {
+  readonly id: string;
+  readonly lines: readonly number[];
+  readonly factors: readonly number[];
+  /** Pa per m³/s */
+  readonly r: number;
 }
 
 export type BranchKind =

@@ -1,3 +1,4 @@
+import { pull } from './couplers.ts';
 import { NEAR_IDEAL } from './laws.ts';
 import { WIDTH } from './assemble.ts';
 import type { FlowSystem } from './assemble.ts';
@@ -57,6 +58,13 @@ function castRay(system: FlowSystem, work: Workspace): void {
     along.constant += d * (system.leak * pressure - (system.source[i] as number));
     along.linear += d * d * system.leak;
     if (pressure < 0 || pressure + d < 0) addPiece(work, -pressure, -d, hollow, 0, Infinity);
+  }
+  const { couplers } = system;
+  for (let c = 0; c < couplers.count; c++) {
+    const r = (couplers.r[c] as number) + soft * (couplers.square[c] as number);
+    const du = pull(couplers, c, step);
+    along.constant += (pull(couplers, c, p) * du) / r;
+    along.linear += (du * du) / r;
   }
   for (let i = 0; i < active.length; i++) {
     const j = active[i] as number;

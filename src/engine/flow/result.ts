@@ -198,6 +198,10 @@ function solved(solver: FlowSolver, { pressures, throughputs }: Solution, proble
     lost += heat;
     branches.push({ id: b.id, kind: b.kind, flow: x, drop: drive, lost: heat });
   });
+  for (const { lines: ends, factors, r } of problem.couplers ?? []) {
+    const drive = ends.reduce((sum, line, i) => sum + (factors[i] as number) * at(line), 0);
+    lost += (drive * drive) / r;
+  }
   const pumps = problem.pumps.map((pump, i): PumpState => {
     const back =
       pump.compensator !== undefined && on[pump.compensator] === 1 ? (throughputs[pump.compensator] as number) : 0;
