@@ -74,6 +74,14 @@ export function sampleTable(sample: Sample): StateTable {
     blockedPlanes: planes(lines, sample.blocked, BLOCKED_KINDS),
     trapPlanes: planes(lines, sample.trapped, TRAP_REASONS),
     valued: sample.valued ? valuedPlane(sample.valued, count) : undefined,
+    valuedActuators: [],
+    valuedPumps: [],
+    dependents: [],
+    dependentPlanes: [],
+    dependentRests: [],
+    dependentHunts: undefined,
+    dependentOthers: [],
+    dependentsSearched: true,
   };
   return new StateTable(data);
 }

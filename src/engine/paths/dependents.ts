@@ -29,7 +29,7 @@ const MOST_SETTINGS = 128;
 const BLOCK = 128;
 
 /** The same setting of the dependent valves in every row. */
-export const constantPlanes = (net: Network, setting: readonly number[], states: number): DependentPlanes =>
+export const constantPlanes = (net: Network, setting: readonly number[], states: number): Choice[] =>
   net.dependents.map(({ positions }, d) =>
     positions.map((_, p) => (p === setting[d] ? fullSet(states) : emptySet(states))),
   );
@@ -41,7 +41,7 @@ export function settingOf(net: Network, planes: DependentPlanes | undefined, row
   return (planes ?? []).map((positions) =>
     Math.max(
       0,
-      positions.findIndex((plane) => has(plane, row)),
+      positions.findIndex((plane) => plane !== undefined && has(plane, row)),
     ),
   );
 }
@@ -187,7 +187,7 @@ export class PathDependents {
 }
 
 /** Rows in which two settings put some valve differently, words of a block. */
-function differ(a: readonly (readonly Uint32Array[])[], b: DependentPlanes, at: number, width: number): Uint32Array {
+function differ(a: readonly (readonly Uint32Array[])[], b: readonly Choice[], at: number, width: number): Uint32Array {
   const out = new Uint32Array(width);
   a.forEach((planes, d) =>
     planes.forEach((plane, p) => {

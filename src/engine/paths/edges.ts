@@ -58,7 +58,7 @@ export function follow(
     const target = masks[mask] as BitSet;
     target.fill(0, at, at + width);
     settings[dependent]?.forEach((plane, p) => {
-      if (((positions >>> p) & 1) === 0) return;
+      if (plane === undefined || ((positions >>> p) & 1) === 0) return;
       for (let w = at; w < at + width; w++) target[w] = (target[w] as number) | (plane[w] as number);
     });
   }
@@ -71,8 +71,8 @@ interface Edge {
   readonly free: boolean;
 }
 
-/** Rows in which each dependent valve stands in each of its positions: [dependent][position]. */
-export type DependentPlanes = readonly (readonly BitSet[])[];
+/** Rows in which each dependent valve stands in each of its positions: [dependent][position]; absent = none. */
+export type DependentPlanes = readonly (readonly (BitSet | undefined)[])[];
 
 /** `settings`: where the dependent valves stand; a network that has some throws without it. */
 export function compileEdges(net: Network, settings?: DependentPlanes): EdgeSet {

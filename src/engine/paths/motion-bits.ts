@@ -10,6 +10,7 @@ export const REST_REASONS = [
   'two feeds', // both chambers are fed
   'pressed line', // the other chamber can only let out into a line under pressure
   'upstream', // it is driven by displaced oil of one that rests on pressure
+  'dependent valve', // where a valve that pressures move stands has not been computed
 ] as const;
 export type RestReason = (typeof REST_REASONS)[number];
 

@@ -230,6 +230,7 @@ const REST_TEXT: Record<RestReason, string> = {
   'two feeds': 'Both sides are fed, and one of them lets out.',
   'pressed line': 'The other side can let out only into a line under pressure.',
   upstream: 'It is driven by the oil of an actuator that rests on pressure itself.',
+  'dependent valve': 'A valve that pressures move stands in the way, and where it stands is for the pressures to say.',
 };
 
 function restsOn(

@@ -22,6 +22,13 @@ export class PlaneSheet {
     plane.set(words, at);
   }
 
+  /** The same, on top of what is there. */
+  add(item: number, kind: number, at: number, words: Uint32Array): void {
+    const now = this.#planes[item]?.[kind];
+    if (now === undefined) return this.write(item, kind, at, words);
+    for (let w = 0; w < words.length; w++) now[at + w] = (now[at + w] as number) | (words[w] as number);
+  }
+
   get(item: number, kind: number): Plane | undefined {
     return this.#planes[item]?.[kind];
   }

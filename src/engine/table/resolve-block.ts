@@ -29,6 +29,9 @@ export interface Allowance {
 export interface Resolved {
   /** States whose verdicts rest on entered or assumed values. */
   readonly valued: Uint32Array;
+  /** The same for each actuator and each pump. */
+  readonly actuators: readonly Uint32Array[];
+  readonly pumps: readonly Uint32Array[];
   /** Per line: states in which oil passes it over a valve that pressures open, so that it is neither blocked nor trapped. */
   readonly flowing: ReadonlyMap<number, Uint32Array>;
 }
@@ -48,6 +51,8 @@ export function resolveBlock(
 ): Resolved {
   const { width, motion, hunts, all } = block;
   const valued = new Uint32Array(width);
+  const byActuator = actuators.map(() => new Uint32Array(width));
+  const byPump = pumps.map(() => new Uint32Array(width));
   const flowing = new Map<number, Uint32Array>();
   for (let w = 0; w < width; w++) {
     let rests = 0;
@@ -64,8 +69,13 @@ export function resolveBlock(
       const answer = solver.solve(block.at * 32 + bit, rivals);
       if (answer.result.status !== 'solved') continue;
       const bits = { block, bit };
-      let changed = rests & low;
+      let changed = 0;
+      const note = (plane: Uint32Array | undefined, at: number): void => {
+        if (plane) plane[w] = (plane[w] as number) | at;
+        changed |= at;
+      };
       actuators.forEach((outcome, i) => {
+        note(byActuator[i], (outcome.verdicts[RESTS]?.[w] as number) & low);
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
         if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) {
           const yields =
@@ -79,27 +89,28 @@ export function resolveBlock(
           const free = ((outcome.verdicts[FLOATS]?.[w] as number) | (outcome.verdicts[ONE_WAY]?.[w] as number)) & low;
           const way = free === 0 && !leaks(solver, i) ? undefined : creeps(i, answer);
           if (way === undefined) return;
-          const note = outcome.notes[free === 0 ? LEAKS : way === 'out' ? CREEPS_OUT : CREEPS_IN] as Uint32Array;
-          note[w] = (note[w] as number) | low;
-          changed |= low;
+          const creeping = outcome.notes[free === 0 ? LEAKS : way === 'out' ? CREEPS_OUT : CREEPS_IN] as Uint32Array;
+          creeping[w] = (creeping[w] as number) | low;
+          note(byActuator[i], low);
           return;
         }
         const found = actuatorByPressure(i, solver, bits, answer, outcome.unfed);
         if (!found) return;
-        changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low);
+        note(byActuator[i], settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low));
         const voids = outcome.notes[VOID] as Uint32Array;
         if (found.void) voids[w] = (voids[w] as number) | low;
       });
       pumps.forEach((planes, i) => {
+        note(byPump[i], (planes[PUMP_RESTS]?.[w] as number) & low);
         if ((((planes[PUMP_RESTS]?.[w] as number) | (planes[PUMP_WORKS]?.[w] as number)) & low) === 0) return;
         const found = pumpByPressure(i, solver, bits, answer);
-        if (found) changed |= settle(planes, PUMP_VERDICTS.indexOf(found), w, low);
+        if (found) note(byPump[i], settle(planes, PUMP_VERDICTS.indexOf(found), w, low));
       });
       if (movesOverValve(bits, answer)) noteFlows(solver, answer, flowing, width, w, low);
       valued[w] = (valued[w] as number) | changed;
     }
   }
-  return { valued, flowing };
+  return { valued, actuators: byActuator, pumps: byPump, flowing };
 }
 
 function noteFlows(
@@ -125,7 +136,7 @@ const leaks = (solver: PressureSolver, actuator: number): boolean => {
 };
 
 /** Gives the state this verdict and no other; returns its bit if that is news. */
-function settle(planes: readonly Uint32Array[], verdict: number, w: number, bit: number): number {
+export function settle(planes: readonly Uint32Array[], verdict: number, w: number, bit: number): number {
   const now = planes[verdict] as Uint32Array;
   if (((now[w] as number) & bit) !== 0) return 0;
   for (const plane of planes) plane[w] = (plane[w] as number) & ~bit;

@@ -56,7 +56,11 @@ export class PressureSolver {
   }
 
   /** 0-based row. `rivals`: also find out whose speed rests on losses. `setting`: other positions of the dependent valves. */
-  solve(row: number, rivals: boolean, setting = settingOf(this.net, this.settings, row)): PressureAnswer {
+  solve(
+    row: number,
+    rivals: boolean,
+    setting: readonly number[] = settingOf(this.net, this.settings, row),
+  ): PressureAnswer {
     const { model, net } = this;
     setState(
       model,

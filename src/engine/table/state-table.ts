@@ -76,6 +76,45 @@ export class StateTable {
     return pickAll(this.data.actuatorRests[index], REST_REASONS, row);
   }
 
+  /** Position of a dependent valve. */
+  dependent(index: number, row: number): number {
+    const planes = this.data.dependentPlanes[index];
+    return Math.max(0, planes?.findIndex((plane) => plane !== undefined && has(plane, row)) ?? 0);
+  }
+
+  /** No setting of the dependent valves agrees with the pressures that it causes. */
+  hunts(row: number): boolean {
+    const { dependentHunts } = this.data;
+    return dependentHunts !== undefined && has(dependentHunts, row);
+  }
+
+  /** Positions that a dependent valve has in other settings that agree; empty where the row leaves no choice. */
+  dependentOthers(index: number, row: number): number[] {
+    return (this.data.dependentOthers[index] ?? []).flatMap((plane, p) => (plane && has(plane, row) ? [p] : []));
+  }
+
+  /** The row depends on what came before. */
+  history(row: number): boolean {
+    return this.data.dependents.length > 0 && this.dependentOthers(0, row).length > 0;
+  }
+
+  /** Where the valve stands is for pressures that nobody has computed. */
+  dependentRests(index: number, row: number): boolean {
+    const plane = this.data.dependentRests[index];
+    return plane !== undefined && has(plane, row);
+  }
+
+  /** Another value could give another verdict; false = it holds for any sensible values. */
+  actuatorOnValues(index: number, row: number): boolean {
+    const plane = this.data.valuedActuators[index];
+    return (plane !== undefined && has(plane, row)) || this.actuator(index, row) === 'rests on pressure';
+  }
+
+  pumpOnValues(index: number, row: number): boolean {
+    const plane = this.data.valuedPumps[index];
+    return (plane !== undefined && has(plane, row)) || this.pump(index, row) === 'rests on pressure';
+  }
+
   pump(index: number, row: number): PumpVerdict {
     return pick(this.data.pumpPlanes[index], PUMP_VERDICTS, row) ?? 'rests on pressure';
   }

@@ -12,6 +12,16 @@ export interface TableInput {
   readonly coils: readonly { readonly name: string; readonly position: number }[];
 }
 
+/** A valve that is no input: its position follows from pressures or from where an actuator stands. */
+export interface TableDependent {
+  readonly part: string;
+  /** Label of the part, and `main spool` behind it where the part is an input as well. */
+  readonly label: string;
+  readonly positions: readonly string[];
+  /** Where springs put it; absent = it stays. */
+  readonly rest?: number;
+}
+
 export interface TableActuator {
   readonly part: string;
   readonly label: string;
@@ -38,6 +48,7 @@ export interface TableLine {
 export interface TableData {
   readonly pumpsRunning: boolean;
   readonly inputs: readonly TableInput[];
+  readonly dependents: readonly TableDependent[];
   readonly actuators: readonly TableActuator[];
   readonly pumps: readonly TablePump[];
   readonly lines: readonly TableLine[];
@@ -61,4 +72,17 @@ export interface TableData {
   readonly trapPlanes: readonly (readonly (Plane | undefined)[])[];
   /** Rows whose verdicts the pressures decided: they rest on entered or assumed values. */
   readonly valued: Plane | undefined;
+  /** [actuator], [pump]: the same for each verdict; in other rows it holds for any values. */
+  readonly valuedActuators: readonly (Plane | undefined)[];
+  readonly valuedPumps: readonly (Plane | undefined)[];
+  /** [dependent][position]: where it stands; in rows that hunt, one of the settings that they run through. */
+  readonly dependentPlanes: readonly (readonly (Plane | undefined)[])[];
+  /** [dependent]: rows in which where it stands is for pressures that nobody has computed; `dependentPlanes` then goes by open paths. */
+  readonly dependentRests: readonly (Plane | undefined)[];
+  /** Rows in which no setting of the dependent valves agrees with the pressures that it causes. */
+  readonly dependentHunts: Plane | undefined;
+  /** [dependent][position]: another setting that agrees has it there; which one holds depends on what came before. */
+  readonly dependentOthers: readonly (readonly (Plane | undefined)[])[];
+  /** False where there were too many settings to look for others. */
+  readonly dependentsSearched: boolean;
 }
