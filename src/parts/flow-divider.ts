@@ -3,7 +3,7 @@ import type { Part } from '../circuit/model.ts';
 import type { PartKind } from './contract.ts';
 import { lossSettings, readLoss } from './losses.ts';
 import { choiceSetting, quantitySetting, readChoice, readSi } from './settings.ts';
-import { arrow, boxOf, circle, leftOpen, port, rectangle, shape, stroke, throttleArcs } from './shapes.ts';
+import { arrow, boxOf, circle, dot, leftOpen, port, rectangle, shape, stroke, throttleArcs } from './shapes.ts';
 
 const FORM = choiceSetting(
   {
@@ -52,15 +52,17 @@ const gears = (): Primitive[] =>
   [-3, 3].flatMap((x): Primitive[] => [
     stroke('symbol', [x, 0], [x, -4]),
     circle('symbol', [x, 0], 1.7, 'paper'),
-    shape('symbol', 'ink', [x, 0.55], [x - 0.7, 1.6], [x + 0.7, 1.6]),
+    shape('fine', 'ink', [x, 0.45], [x - 0.7, 1.45], [x + 0.7, 1.45]),
   ]);
 
 const spool = (): Primitive[] => [
-  rectangle('symbol', boxOf(-4, -2, 8, 4), 'paper'),
+  rectangle('symbol', boxOf(-4.5, -2, 9, 4), 'paper'),
+  stroke('symbol', [0, 2], [0, 1.3]),
+  dot('symbol', [0, 1.3]),
   ...[-3, 3].flatMap((x): Primitive[] => [
-    stroke('symbol', [0, 2], [x, 0.6], [x, -0.4]),
-    ...arrow('symbol', [x, -0.4], [x, -2]),
-    ...throttleArcs('symbol', [x * 0.5, 1.3], [x / 3, -0.467], 0.62),
+    stroke('symbol', [0, 1.3], [x, 1.3], [x, -0.4]),
+    ...arrow('symbol', [x, 0], [x, -2]),
+    ...throttleArcs('symbol', [x, 0.2], [0, -1], 0.7),
     stroke('symbol', [x, -2], [x, -4]),
   ]),
 ];
