@@ -9,7 +9,11 @@ import { endOnLine, portEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
-import { commitShift, finishLine, middleOfView, nameOf, putDown, sayThings, setLever, startLine } from './hand.ts';
+import { commitShift, finishLine, middleOfView, nameOf, putDown, putDownSeveral, sayThings, setLever, startLine, writeAt } from './hand.ts';
+import { arrangeActions } from './arrange-actions.ts';
+import { lineActions, nudgeStretch, stepStretch, straightenStretch } from './line-actions.ts';
+import { lookActions } from './look-actions.ts';
+import { menuActsOn } from './sheet-menu.ts';
 import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts';
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
@@ -18,7 +22,7 @@ import { coversOf, EDGE, fitClear, itemsOf } from './fit.ts';
 import { MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 
 /** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
-function goTo(cursor: Cursor): void {
+export function goTo(cursor: Cursor): void {
   desk.cursor = cursor;
   const at = placeOf(drawing.map, cursor);
   if (at) desk.viewport = reveal(desk.viewport, desk.size, { ...at, width: 0, height: 0 }, 5);
@@ -28,7 +32,13 @@ function goTo(cursor: Cursor): void {
     desk.gesture = { ...gesture, over, to: over?.at ?? gesture.to };
     return;
   }
-  editor.select(cursor.type === 'part' ? { parts: [cursor.id] } : cursor.type === 'connection' ? { connections: [cursor.id] } : {});
+  selectAt(cursor);
+}
+
+function selectAt(cursor: Cursor): void {
+  if (cursor.type === 'part') editor.select({ parts: [cursor.id] });
+  else if (cursor.type === 'connection') editor.select({ connections: [cursor.id] });
+  else editor.select(cursor.type === 'label' ? { labels: [cursor.id] } : {});
 }
 
 function endOf(cursor: Cursor): End | undefined {
@@ -50,6 +60,10 @@ function refuseEmpty(): boolean {
 }
 
 export const sheetActions: SheetActions = {
+  ...arrangeActions,
+  ...lineActions,
+  ...lookActions,
+
   cancel() {
     const { gesture } = desk;
     drawing.preview = undefined;
@@ -57,6 +71,8 @@ export const sheetActions: SheetActions = {
       desk.rest();
       if (gesture.type === 'connect') desk.say('The line was given up.');
       if (gesture.type === 'place') desk.say(`${gesture.form.title} put away.`);
+      if (gesture.type === 'place-several') desk.say(`${gesture.title} put away.`);
+      if (gesture.type === 'bend') desk.say('Stretches left as they are.');
       return;
     }
     desk.cursor = undefined;
@@ -66,6 +82,9 @@ export const sheetActions: SheetActions = {
   accept() {
     const { gesture, cursor } = desk;
     if (gesture.type === 'place') return putDown(gesture.at ?? middleOfView());
+    if (gesture.type === 'place-several') return putDownSeveral(gesture.at ?? middleOfView());
+    if (gesture.type === 'text') return writeAt(gesture.at ?? middleOfView());
+    if (gesture.type === 'bend') return desk.rest();
     const end = cursor && endOf(cursor);
     if (gesture.type === 'connect') {
       if (end) return finishLine(end);
@@ -76,8 +95,13 @@ export const sheetActions: SheetActions = {
   },
 
   step(by) {
-    if (desk.gesture.type === 'place') return false;
-    const order = readingOrder(drawing.map, desk.gesture.type === 'connect');
+    const { gesture } = desk;
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') return false;
+    if (gesture.type === 'bend') {
+      stepStretch(gesture, by);
+      return true;
+    }
+    const order = readingOrder(drawing.map, gesture.type === 'connect');
     const next = stepFrom(order, desk.cursor, by);
     if (!next) return false;
     goTo(next);
@@ -86,7 +110,8 @@ export const sheetActions: SheetActions = {
 
   arrow(dx, dy) {
     const { gesture, cursor } = desk;
-    if (gesture.type === 'place') {
+    if (gesture.type === 'bend') return nudgeStretch(gesture, dx, dy);
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') {
       const at = gesture.at ?? middleOfView();
       const moved = { x: at.x + dx, y: at.y + dy };
       desk.gesture = { ...gesture, at: moved };
@@ -128,6 +153,8 @@ export const sheetActions: SheetActions = {
   },
 
   remove(heal) {
+    const { gesture } = desk;
+    if (gesture.type === 'bend') return straightenStretch(gesture);
     const { selection } = editor;
     const { parts, connections, labels } = selection;
     if (parts.length + connections.length + labels.length === 0) return desk.refuse('Nothing is selected.');
@@ -157,12 +184,14 @@ export const sheetActions: SheetActions = {
   },
 
   rename() {
-    const { parts, connections } = editor.selection;
+    const { parts, connections, labels } = editor.selection;
     const [part] = parts;
     const [connection] = connections;
+    const [label] = labels;
     if (part !== undefined) desk.naming = { of: 'part', id: part };
     else if (connection !== undefined) desk.naming = { of: 'connection', id: connection };
-    else desk.refuse('Select a part or a line to name it.');
+    else if (label !== undefined) desk.naming = { of: 'label', id: label };
+    else desk.refuse('Select a part, a line or a text to name it.');
   },
 
   connectFrom() {
@@ -214,6 +243,10 @@ export const sheetActions: SheetActions = {
   },
 
   openTray() {
+    desk.swapping = undefined;
+    desk.target = undefined;
     desk.trayOpen = true;
   },
 };
+
+menuActsOn(sheetActions);

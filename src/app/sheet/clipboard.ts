@@ -29,6 +29,12 @@ export function copyText(): string | undefined {
   return text;
 }
 
+/** What was copied here last, for menus: they may not read the clipboard unasked. */
+export function pasteCopied(): void {
+  if (lastText === '') desk.refuse('Nothing was copied here yet. Ctrl+V pastes what another window copied.');
+  else pasteText(lastText);
+}
+
 export function pasteText(text: string): void {
   const read = readCircuit(text);
   if (!read.ok) {

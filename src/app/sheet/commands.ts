@@ -1,41 +1,9 @@
 import { matches } from './chords.ts';
 import type { Chord, KeyPress } from './chords.ts';
+import type { Command } from './command-types.ts';
+import { MORE_COMMANDS } from './more-commands.ts';
 
-/** What the commands act on; the sheet's desk implements it. */
-export interface SheetActions {
-  cancel(): void;
-  accept(): void;
-  /** Go to the next or previous thing in reading order; false at the end, so that Tab leaves the sheet. */
-  step(by: 1 | -1): boolean;
-  /** Nudge what is selected, move what is being placed, go to the next port, or pan. */
-  arrow(dx: number, dy: number): void;
-  turn(by: 90 | -90): void;
-  /** False if nothing is there to flip. */
-  flip(): boolean;
-  remove(heal: boolean): void;
-  duplicate(): void;
-  selectAll(): void;
-  rename(): void;
-  connectFrom(): void;
-  openSettings(): void;
-  shiftLever(by: 1 | -1): void;
-  undo(): void;
-  redo(): void;
-  zoom(factor: number): void;
-  fit(): void;
-  openTray(): void;
-}
-
-export type CommandGroup = 'Draw' | 'Change' | 'Select and go' | 'Levers' | 'View';
-
-export interface Command {
-  readonly id: string;
-  readonly title: string;
-  readonly group: CommandGroup;
-  readonly keys: readonly Chord[];
-  /** Absent: the browser's own clipboard events do it. Gives false to let the key pass on. */
-  readonly run?: (sheet: SheetActions) => unknown;
-}
+export type { Command, CommandGroup, SheetActions } from './command-types.ts';
 
 const ZOOM_STEP = 1.25;
 /** Modules that Shift makes of one. */
@@ -51,7 +19,7 @@ const WORDS: Record<string, string> = { ArrowLeft: 'left', ArrowRight: 'right', 
 
 /** Everything that the sheet can be told by keys, once. The Keys panel lists it. */
 export const SHEET_COMMANDS: readonly Command[] = [
-  { id: 'tray', title: 'Add a part: open the parts tray', group: 'Draw', keys: ['A', '/'], run: (s) => s.openTray() },
+  { id: 'tray', title: 'Add a part: open the parts tray', group: 'Draw', keys: ['A'], run: (s) => s.openTray() },
   { id: 'connect', title: 'Draw a line from here', group: 'Draw', keys: ['C'], run: (s) => s.connectFrom() },
   {
     id: 'accept',
@@ -100,12 +68,15 @@ export const SHEET_COMMANDS: readonly Command[] = [
     run: (s) => s.arrow(dx, dy),
   })),
 
+  ...MORE_COMMANDS.filter(({ group }) => group !== 'View'),
+
   { id: 'lever-back', title: 'Selected valve: lever to the position on the left', group: 'Levers', keys: ['Ctrl+ArrowLeft'], run: (s) => s.shiftLever(-1) },
   { id: 'lever-on', title: 'Selected valve: lever to the position on the right', group: 'Levers', keys: ['Ctrl+ArrowRight'], run: (s) => s.shiftLever(1) },
 
   { id: 'zoom-in', title: 'Zoom in', group: 'View', keys: ['+', '='], run: (s) => s.zoom(ZOOM_STEP) },
   { id: 'zoom-out', title: 'Zoom out', group: 'View', keys: ['-'], run: (s) => s.zoom(1 / ZOOM_STEP) },
   { id: 'fit', title: 'Show the whole circuit', group: 'View', keys: ['.', 'Home'], run: (s) => s.fit() },
+  ...MORE_COMMANDS.filter(({ group }) => group === 'View'),
 ];
 
 /** What only the mouse or a finger does, for the same list. */
@@ -113,6 +84,10 @@ export const MOUSE_HINTS: readonly { readonly hand: string; readonly does: strin
   { hand: 'Drag from a port, or click two ports', does: 'Draw a line; end on a line to join it' },
   { hand: 'Drag across the paper', does: 'Select what lies inside' },
   { hand: 'Shift-click', does: 'Add to the selection, or take from it' },
+  { hand: 'Drop a part on a line', does: 'It goes into the line' },
+  { hand: 'Drag a stretch of a line', does: 'Move it; the bends stay' },
+  { hand: 'Ctrl-drag a part of a block', does: 'Move it without the block' },
+  { hand: 'Right-click, or press long', does: 'Menu of what is there' },
   { hand: 'Double-click a part', does: 'Open its settings' },
   { hand: 'Alt-click a box of a valve, or click its position name', does: 'Move the lever' },
   { hand: 'Wheel, or pinch', does: 'Zoom at the pointer' },

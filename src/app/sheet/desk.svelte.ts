@@ -1,5 +1,7 @@
 import type { Point, Side, Turn } from '../../base/points.ts';
-import type { PortRef } from '../../circuit/model.ts';
+import type { Circuit, PortRef } from '../../circuit/model.ts';
+import type { Insertion } from '../../drawing/through.ts';
+import type { MenuItem } from '../ui/menu-item.ts';
 import type { Hit } from './hit.ts';
 import type { Cursor } from './reading-order.ts';
 import type { Size, Viewport } from './viewport.ts';
@@ -14,7 +16,14 @@ export type Gesture =
   | { readonly type: 'none' }
   | { readonly type: 'pan' }
   | { readonly type: 'band'; readonly from: Point; readonly to: Point; readonly adds: boolean }
-  | { readonly type: 'drag'; readonly ids: readonly string[] }
+  /** `into`: the line that the part would go into if it were let go. */
+  | { readonly type: 'drag'; readonly ids: readonly string[]; readonly into?: Insertion | undefined }
+  /** A stretch of a line is moved: `held` by the pointer, else by the keys. */
+  | { readonly type: 'bend'; readonly connection: string; readonly segment: number; readonly route: readonly Point[]; readonly held: boolean }
+  /** A text on its way to its place. */
+  | { readonly type: 'text'; readonly at: Point | undefined }
+  /** Several parts with their lines, as one. */
+  | { readonly type: 'place-several'; readonly title: string; readonly fragment: Circuit; readonly at: Point | undefined }
   /** `held`: the button is down; otherwise the line waits for its second click. */
   | { readonly type: 'connect'; readonly from: End; readonly to: Point; readonly over: End | undefined; readonly held: boolean }
   | { readonly type: 'place'; readonly form: Form; readonly at: Point | undefined; readonly turn: Turn; readonly flip: boolean };
@@ -26,9 +35,18 @@ export interface Form {
   readonly title: string;
 }
 
+/** What gets a name or a text: `size` is that of the connection, `text` a label that is not there yet. */
 export interface Naming {
-  readonly of: 'part' | 'connection';
+  readonly of: 'part' | 'connection' | 'size' | 'label' | 'text' | 'group';
   readonly id: string;
+  readonly at?: Point;
+}
+
+/** A menu at its place in the window. */
+export interface SheetMenu {
+  readonly at: Point;
+  readonly title: string;
+  readonly items: readonly MenuItem[];
 }
 
 export const RESTING: Gesture = { type: 'none' };
@@ -43,6 +61,12 @@ class Desk {
   cursor = $state.raw<Cursor | undefined>();
   naming = $state.raw<Naming | undefined>();
   trayOpen = $state(false);
+  /** Part that what is picked in the tray takes the place of. */
+  swapping = $state<string | undefined>();
+  /** Where the keyboard puts the next part that is taken from the tray. */
+  target = $state.raw<Point | undefined>();
+  menu = $state.raw<SheetMenu | undefined>();
+  finding = $state(false);
   /** Space is down: the next drag pans. */
   panning = $state(false);
   /** A part is being dragged here from the tray. */

@@ -1,9 +1,13 @@
 import type { Point } from '../../base/points.ts';
 import { moveLabel, moveParts, placePart } from '../../circuit/build.ts';
-import { all, applyEdit } from '../../circuit/edit.ts';
+import { all, applyEdit, changeConnection } from '../../circuit/edit.ts';
 import type { Edit } from '../../circuit/edit.ts';
+import { paste } from '../../circuit/build.ts';
+import { withGroups } from '../../circuit/groups.ts';
 import { labelOf } from '../../circuit/model.ts';
 import type { Circuit } from '../../circuit/model.ts';
+import { slideBends } from '../../drawing/bending.ts';
+import type { Insertion } from '../../drawing/through.ts';
 import { readyMadeOf } from '../../parts/catalogue.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { withPlaces as keepPlaces } from '../state/places.ts';
@@ -15,6 +19,7 @@ import { joinEnds, sayEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
+import { insertionInHand, sayLine, withInsertion } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { snap, toSheet } from './viewport.ts';
 import { zoneAt } from './zones.ts';
@@ -32,6 +37,31 @@ export function takeUp(readyId: string, at?: Point): void {
   desk.say(`${readyMade.title} in hand.`);
 }
 
+/** Take several parts with their lines into the hand, as one. */
+export function takeUpSeveral(title: string, fragment: Circuit, at?: Point): void {
+  editor.select({});
+  desk.cursor = undefined;
+  desk.gesture = { type: 'place-several', title, fragment, at };
+  desk.say(`${title} in hand.`);
+}
+
+export function putDownSeveral(at: Point, again = false): void {
+  const { gesture } = desk;
+  if (gesture.type !== 'place-several') return;
+  const where = snap(at);
+  const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y));
+  if (!put) return;
+  if (!again) desk.rest();
+  if (!attempt(() => put.edit, `${gesture.title} placed in zone ${zoneAt(where)}: ${counted(put.parts.length, 'part')}.`)) return;
+  editor.select({ parts: put.parts, labels: put.labels });
+}
+
+/** Opens the field in which the text is typed that begins at `at`. */
+export function writeAt(at: Point): void {
+  desk.rest();
+  desk.naming = { of: 'text', id: '', at: snap(at) };
+}
+
 export const middleOfView = (): Point => snap(toSheet(desk.viewport, { x: desk.size.width / 2, y: desk.size.height / 2 }));
 
 /** Put the part in hand down. `again`: keep another one in hand. */
@@ -41,18 +71,22 @@ export function putDown(at: Point, again = false): void {
   const entry = readyMadeOf(gesture.form.ready);
   if (!entry) return;
   const { kind, readyMade } = entry;
+  const into = insertionInHand({ ...gesture, at: snap(at) });
+  const turn = into?.turn ?? gesture.turn;
   const put = tryTo(() =>
     placePart(editor.circuit, kind.prefix, {
       kind: kind.kind,
-      at: snap(at),
-      ...(gesture.turn !== 0 && { turn: gesture.turn }),
+      at: into?.at ?? snap(at),
+      ...(turn !== 0 && { turn }),
       ...(gesture.flip && { flip: true }),
       ...readyMade.make(),
     }),
   );
   if (!put) return;
   if (!again) desk.rest();
-  if (!attempt(() => put, `${put.part.id}, ${readyMade.title.toLowerCase()}, placed in zone ${zoneAt(at)}.`)) return;
+  const where = into ? `put into ${sayLine(into.connection)}` : `placed in zone ${zoneAt(at)}`;
+  const edit = (): Edit => (into ? withInsertion(withPlaces(editor.circuit), put, put.part.id, into) : put);
+  if (!attempt(edit, `${put.part.id}, ${readyMade.title.toLowerCase()}, ${where}.`)) return;
   recent.use(readyMade.id);
   desk.cursor = { type: 'part', id: put.part.id };
   editor.select({ parts: [put.part.id] });
@@ -79,30 +113,50 @@ export function finishLine(to: End): void {
 
 const withPlaces = (circuit: Circuit): Circuit => (circuit === editor.circuit ? drawing.circuit : circuit);
 
-/** The edit that moves what is selected. */
-export function shift(circuit: Circuit, { parts, labels }: Selection, dx: number, dy: number): Edit {
+/** The edit that moves what is selected, and with it, unless `alone`, what stands in a block with it. */
+export function shift(circuit: Circuit, { parts, labels }: Selection, dx: number, dy: number, alone = false): Edit {
+  const moving = alone ? parts : withGroups(circuit, parts);
   const edits: Edit[] = labels.flatMap((id) => {
     const label = circuit.labels?.find((each) => each.id === id);
     return label ? [moveLabel(id, { x: label.at.x + dx, y: label.at.y + dy })] : [];
   });
-  if (parts.length > 0) edits.unshift(moveParts(circuit, parts, dx, dy, drawing.places));
+  if (parts.length > 0) {
+    edits.unshift(moveParts(circuit, moving, dx, dy, drawing.places));
+    for (const [id, bends] of slideBends(circuit, new Set(moving), dx, dy)) edits.push(changeConnection(id, { bends }));
+  }
   return all(edits);
 }
 
 /** Show the selection moved, before it is. */
-export function previewShift(dx: number, dy: number): void {
+export function previewShift(dx: number, dy: number, alone = false): void {
   if (dx === 0 && dy === 0) {
     drawing.preview = undefined;
     return;
   }
-  const edit = tryTo(() => shift(editor.circuit, editor.selection, dx, dy));
+  const edit = tryTo(() => shift(editor.circuit, editor.selection, dx, dy, alone));
   drawing.preview = edit && applyEdit(editor.circuit, keepPlaces(editor.circuit, edit));
 }
 
-export function commitShift(dx: number, dy: number, burst: string): void {
+export interface ShiftOptions {
+  /** A line that the moved part goes into. */
+  readonly into?: Insertion | undefined;
+  /** Not with what stands in a block with it. */
+  readonly alone?: boolean;
+}
+
+export function commitShift(dx: number, dy: number, burst: string, { into, alone = false }: ShiftOptions = {}): void {
   const { parts, labels } = editor.selection;
-  if (dx !== 0 || dy !== 0) {
-    attempt(() => shift(editor.circuit, editor.selection, dx, dy), `${sayThings(parts, labels)} moved.`, burst);
+  const [first] = parts;
+  const { circuit } = editor;
+  if (into && first !== undefined) {
+    const at = drawing.places.get(first);
+    // The part as it stands now, wherever the preview shows it.
+    drawing.preview = undefined;
+    const from = circuit.parts.find(({ id }) => id === first)?.at ?? at ?? into.at;
+    const moved = (): Edit => shift(circuit, editor.selection, into.at.x - from.x, into.at.y - from.y, true);
+    attempt(() => withInsertion(circuit, moved(), first, into), `${nameOf(first)} put into ${sayLine(into.connection)}.`);
+  } else if (dx !== 0 || dy !== 0) {
+    attempt(() => shift(circuit, editor.selection, dx, dy, alone), `${sayThings(parts, labels)} moved.`, burst);
   }
   drawing.preview = undefined;
 }

@@ -5,6 +5,8 @@ export interface HitMap {
   readonly parts: readonly { readonly id: string; readonly box: Box }[];
   readonly ports: readonly HitPort[];
   readonly routes: readonly { readonly id: string; readonly points: readonly Point[] }[];
+  /** Free texts. */
+  readonly labels?: readonly { readonly id: string; readonly box: Box }[];
 }
 
 export interface HitPort {
@@ -98,11 +100,12 @@ const within = (outer: Box, inner: Box): boolean =>
   inner.x + inner.width <= outer.x + outer.width &&
   inner.y + inner.height <= outer.y + outer.height;
 
-/** Parts and connections that lie wholly in the rubber band. */
-export function inBand(map: HitMap, band: Box): { parts: string[]; connections: string[] } {
+/** Parts, connections and texts that lie wholly in the rubber band. */
+export function inBand(map: HitMap, band: Box): { parts: string[]; connections: string[]; labels: string[] } {
   return {
     parts: map.parts.filter(({ box }) => within(band, box)).map(({ id }) => id),
     connections: map.routes.filter(({ points }) => points.every((p) => inBox(band, p))).map(({ id }) => id),
+    labels: (map.labels ?? []).filter(({ box }) => within(band, box)).map(({ id }) => id),
   };
 }
 

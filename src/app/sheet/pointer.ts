@@ -5,9 +5,12 @@ import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 import { endAt, portEnd } from './connecting.ts';
 import { desk } from './desk.svelte.ts';
-import { commitShift, finishLine, previewShift, putDown, setLever, startLine } from './hand.ts';
+import { commitShift, finishLine, previewShift, putDown, putDownSeveral, setLever, startLine, writeAt } from './hand.ts';
 import { boxOf, hitAt, inBand } from './hit.ts';
 import type { Hit } from './hit.ts';
+import { insertionOfDragged } from './inserting.ts';
+import { dropStretch, previewStretch, takeStretch } from './line-actions.ts';
+import { openMenuAt } from './sheet-menu.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { panBy, snap, zoomAt } from './viewport.ts';
 
@@ -19,6 +22,8 @@ interface Press {
   readonly hit: Hit | { readonly type: 'label'; readonly id: string };
   readonly adds: boolean;
   readonly pans: boolean;
+  /** Ctrl: a part is moved without its block. */
+  readonly alone: boolean;
   /** It was selected before. */
   readonly was: boolean;
   moved: boolean;
@@ -47,7 +52,7 @@ export class SheetPointer {
     const client = { x: event.clientX, y: event.clientY };
     if (event.pointerType === 'touch') this.#fingers.set(event.pointerId, client);
     if (this.#fingers.size > 1) return this.#giveUp();
-    if (event.button === 2) return;
+    if (event.button === 2) return this.#giveUp(true);
     const at = this.#toSheet(client);
     const { gesture } = desk;
     const pans = event.button === 1 || desk.panning;
@@ -58,15 +63,16 @@ export class SheetPointer {
       return;
     }
     if (!pans && this.#lever(event)) return;
-    const label = event.target instanceof Element ? event.target.closest('[data-label]')?.getAttribute('data-label') : undefined;
-    const hit = label ? ({ type: 'label', id: label } as const) : this.#hitAt(at, event);
+    const label = labelAt(event);
+    const hit = label !== undefined ? ({ type: 'label', id: label } as const) : frameOf(event, this.#hitAt(at, event));
     const adds = event.shiftKey;
     // A finger on bare paper pans: a rubber band is seldom wanted there.
+    if (gesture.type === 'bend') desk.rest();
     const slides = pans || (event.pointerType === 'touch' && hit.type === 'paper' && gesture.type === 'none');
     const was = hit.type === 'port' && editor.isSelected('parts', hit.port.part);
-    this.#press = { pointer: event.pointerId, client, at, hit, adds, pans: slides, was, moved: false, last: client };
+    this.#press = { pointer: event.pointerId, client, at, hit, adds, pans: slides, alone: event.ctrlKey || event.metaKey, was, moved: false, last: client };
     host.setPointerCapture(event.pointerId);
-    if (!slides && gesture.type === 'none') pick(hit, adds);
+    if (!slides && (gesture.type === 'none' || gesture.type === 'bend')) pick(hit, adds);
   }
 
   move(event: PointerEvent): void {
@@ -86,7 +92,7 @@ export class SheetPointer {
       return;
     }
     const { gesture } = desk;
-    if (gesture.type === 'place') desk.gesture = { ...gesture, at: snap(at) };
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') desk.gesture = { ...gesture, at: snap(at) };
     else this.#hover(at, event);
   }
 
@@ -99,10 +105,14 @@ export class SheetPointer {
     const at = this.#toSheet({ x: event.clientX, y: event.clientY });
     const { gesture } = desk;
     if (gesture.type === 'place') return putDown(snap(at), event.shiftKey);
-    if (gesture.type === 'drag') {
+    if (gesture.type === 'place-several') return putDownSeveral(snap(at), event.shiftKey);
+    if (gesture.type === 'text') return writeAt(at);
+    if (gesture.type === 'drag' || (gesture.type === 'bend' && gesture.held)) {
       const { x, y } = deltaOf(press.at, at);
+      const burst = `drag ${press.pointer} ${event.timeStamp}`;
+      if (gesture.type === 'bend') return dropStretch(gesture, x, y, burst);
       desk.rest();
-      return commitShift(x, y, `drag ${press.pointer} ${event.timeStamp}`);
+      return commitShift(x, y, burst, { into: gesture.into, alone: press.alone });
     }
     if (gesture.type === 'band') return this.#band(gesture.from, gesture.to, gesture.adds);
     if (gesture.type === 'connect' && gesture.held) {
@@ -126,13 +136,18 @@ export class SheetPointer {
   leave(): void {
     if (this.#press) return;
     desk.hover = { type: 'paper' };
-    if (desk.gesture.type === 'place') desk.gesture = { ...desk.gesture, at: undefined };
+    const { gesture } = desk;
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') desk.gesture = { ...gesture, at: undefined };
   }
 
   doubleClick(event: MouseEvent): void {
     const hit = this.#hitAt(this.#toSheet({ x: event.clientX, y: event.clientY }), event);
     if (hit.type === 'part') view.open('settings');
     if (hit.type === 'connection') desk.naming = { of: 'connection', id: hit.id };
+    const label = labelAt(event);
+    if (label !== undefined) desk.naming = { of: 'label', id: label };
+    const block = blockAt(event);
+    if (block !== undefined && hit.type === 'paper') desk.naming = { of: 'group', id: block };
   }
 
   /** A shifted valve reaches beyond its outline: there the drawing itself tells. */
@@ -143,10 +158,24 @@ export class SheetPointer {
     return id ? { type: 'part', id } : hit;
   }
 
-  #giveUp(): void {
+  /** `keeps`: what is in hand stays there; only a drag under way is given up. */
+  #giveUp(keeps = false): void {
+    const { gesture } = desk;
     this.#press = undefined;
     drawing.preview = undefined;
-    desk.rest();
+    if (!keeps || gesture.type === 'drag' || gesture.type === 'band' || (gesture.type === 'bend' && gesture.held)) desk.rest();
+  }
+
+  /** Right button, or a long press: the menu of what is there; what is selected already stays selected. */
+  menu(event: MouseEvent): void {
+    this.#giveUp(true);
+    if (desk.gesture.type !== 'none') return;
+    const label = labelAt(event);
+    const hit = frameOf(event, this.#hitAt(this.#toSheet({ x: event.clientX, y: event.clientY }), event));
+    const of: Press['hit'] = label !== undefined ? { type: 'label', id: label } : hit.type === 'port' ? { type: 'part', id: hit.port.part } : hit;
+    if (of.type === 'paper') editor.select({});
+    else pick(of, false);
+    openMenuAt({ x: event.clientX, y: event.clientY });
   }
 
   /** A click on the position name moves the lever on; Alt-click on a box moves it there. */
@@ -168,7 +197,7 @@ export class SheetPointer {
   #drag(press: Press, at: Point): void {
     const { gesture } = desk;
     const { hit } = press;
-    if (gesture.type === 'place') {
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') {
       desk.gesture = { ...gesture, at: snap(at) };
       return;
     }
@@ -177,13 +206,20 @@ export class SheetPointer {
       const joint = hit.type === 'port' && hit.port.joint && press.was;
       if (hit.type === 'port' && !joint) startLine(portEnd(hit.port), true);
       else if (hit.type === 'part' || hit.type === 'label' || joint) desk.gesture = { type: 'drag', ids: editor.selection.parts };
+      else if (hit.type === 'connection' && !press.adds) takeStretch(hit.id, hit.segment, true);
       else if (hit.type === 'paper') desk.gesture = { type: 'band', from: press.at, to: at, adds: press.adds };
       else return;
     }
     const now = desk.gesture;
     if (now.type === 'drag') {
       const { x, y } = deltaOf(press.at, at);
-      previewShift(x, y);
+      previewShift(x, y, press.alone);
+      const { parts, labels } = editor.selection;
+      const into = labels.length === 0 ? insertionOfDragged(parts, x, y) : undefined;
+      if (into !== now.into) desk.gesture = { ...now, into };
+    } else if (now.type === 'bend') {
+      const { x, y } = deltaOf(press.at, at);
+      previewStretch(now, x, y);
     } else if (now.type === 'band') desk.gesture = { ...now, to: at };
     else if (now.type === 'connect') this.#aim(at);
   }
@@ -206,7 +242,11 @@ export class SheetPointer {
     desk.rest();
     const inside = inBand(drawing.map, boxOf(from, to));
     const { parts, connections, labels } = editor.selection;
-    editor.select(adds ? { parts: union(parts, inside.parts), connections: union(connections, inside.connections), labels } : inside);
+    editor.select(
+      adds
+        ? { parts: union(parts, inside.parts), connections: union(connections, inside.connections), labels: union(labels, inside.labels) }
+        : inside,
+    );
     const count = inside.parts.length + inside.connections.length;
     desk.say(count === 0 ? 'Nothing lies wholly inside.' : `${inside.parts.length} parts and ${inside.connections.length} connections selected.`);
   }
@@ -222,6 +262,26 @@ export class SheetPointer {
     const panned = panBy(desk.viewport, (client.x - before.x) / 2, (client.y - before.y) / 2);
     desk.viewport = zoomAt(panned, middle, spread(client) / spread(before));
   }
+}
+
+/** The frame of a block stands for its parts. */
+function frameOf(event: MouseEvent, hit: Hit): Hit {
+  const block = hit.type === 'paper' ? blockAt(event) : undefined;
+  const parts = editor.circuit.groups?.find(({ id }) => id === block)?.parts ?? [];
+  const [first] = parts;
+  if (first === undefined || desk.gesture.type !== 'none') return hit;
+  editor.select({ parts });
+  return { type: 'part', id: first };
+}
+
+function blockAt(event: MouseEvent): string | undefined {
+  if (!(event.target instanceof Element)) return undefined;
+  return event.target.closest('[data-block]')?.getAttribute('data-block') ?? undefined;
+}
+
+function labelAt(event: MouseEvent): string | undefined {
+  if (!(event.target instanceof Element)) return undefined;
+  return event.target.closest('[data-label]')?.getAttribute('data-label') ?? undefined;
 }
 
 const deltaOf = (from: Point, to: Point): Point => snap({ x: to.x - from.x, y: to.y - from.y });
@@ -243,7 +303,7 @@ function pick(hit: Press['hit'], adds: boolean): void {
   else if (hit.type === 'port' && hit.port.joint && !adds) [list, id] = ['parts', hit.port.part];
   else return;
   const was = editor.isSelected(list, id);
-  if (hit.type === 'part' || hit.type === 'connection') desk.cursor = { type: hit.type, id };
+  if (hit.type === 'part' || hit.type === 'connection' || hit.type === 'label') desk.cursor = { type: hit.type, id };
   if (!adds && was) return;
   if (!adds) editor.select({ [list]: [id] });
   else {

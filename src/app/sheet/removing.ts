@@ -1,6 +1,7 @@
 import { removeConnections, removeLabels, removeParts } from '../../circuit/build.ts';
 import { all, applyEdit } from '../../circuit/edit.ts';
 import type { Edit } from '../../circuit/edit.ts';
+import { pruneGroups } from '../../circuit/groups.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import type { Selection } from '../state/editor.svelte.ts';
 
@@ -23,7 +24,8 @@ export function removal(circuit: Circuit, selection: Selection, heal: boolean): 
     now = applyEdit(now, tidy);
     edits.push(tidy);
   }
-  return all(edits);
+  const pruned = pruneGroups(now);
+  return all(pruned ? [...edits, pruned] : edits);
 }
 
 /** Junctions at the far end of something that goes. */

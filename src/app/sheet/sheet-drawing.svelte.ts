@@ -6,6 +6,7 @@ import type { Routes } from '../../drawing/geometry.ts';
 import { placeMissing } from '../../drawing/place.ts';
 import { buildScene } from '../../drawing/scene.ts';
 import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scene.ts';
+import { labelBox } from '../../drawing/labels.ts';
 import type { SceneLabel } from '../../drawing/labels.ts';
 import { placePrimitives } from '../../drawing/turned.ts';
 import { kindOf } from '../../parts/catalogue.ts';
@@ -25,6 +26,7 @@ import { trueChevrons } from './chevrons.ts';
 import { realFlows } from './real-flows.ts';
 import type { RealFlow } from './real-flows.ts';
 import { SheetRoutes } from './sheet-routes.ts';
+import { sheetView } from './sheet-view.svelte.ts';
 import { steadyList } from './steady.ts';
 
 /** The circuit as it is drawn now: routes, looks and places, derived from the circuit and the row. */
@@ -69,7 +71,7 @@ class SheetDrawing {
     const looks = new Map(
       circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
     );
-    const state: SceneState = { lines: looks, parts: states };
+    const state: SceneState = { lines: looks, parts: states, hops: sheetView.hops };
     const scene = buildScene(circuit, routes, state);
     return {
       ...scene,
@@ -93,6 +95,7 @@ class SheetDrawing {
       part.ports.map(({ ref, at, side, role }) => ({ part: ref.part, port: ref.port, at, side, joint: role === 'joint' })),
     ),
     routes: this.scene.lines.map(({ connection, points }) => ({ id: connection, points })),
+    labels: this.scene.labels.filter(({ role }) => role === 'free').map((label) => ({ id: label.owner, box: labelBox(label) })),
   }));
 }
 

@@ -3,6 +3,7 @@ import type { Circuit, Connection, Part } from '../../circuit/model.ts';
 import { kindOf } from '../../parts/catalogue.ts';
 import { session } from '../state/session.svelte.ts';
 import { desk } from './desk.svelte.ts';
+import { insertHint } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 
 /** What a screen reader says of a part. */
@@ -21,6 +22,11 @@ export function sayConnection(connection: Connection, parts: ReadonlyMap<string,
 /** One line on what can be done now. */
 export function hint(circuit: Circuit, selected: number): string {
   const { gesture, hover, cursor } = desk;
+  const inserts = insertHint();
+  if (inserts !== undefined) return inserts;
+  if (gesture.type === 'place-several') return `Click to put ${gesture.title.toLowerCase()} down, Shift for several. Escape puts it away.`;
+  if (gesture.type === 'text') return 'Click where the text is to begin. Escape gives it up.';
+  if (gesture.type === 'bend') return gesture.held ? 'Let go to leave the stretch here.' : 'Tab: next stretch. Arrows move it, Del takes its bends away, Escape ends.';
   if (gesture.type === 'place') return `Click to put ${gesture.form.title.toLowerCase()} down, Shift for several. T turns, F flips, Escape puts it away.`;
   if (gesture.type === 'connect') return 'End at a port or on a line. Escape gives the line up.';
   if (gesture.type === 'drag') return 'Let go to put it here. Escape leaves it where it was.';
@@ -28,7 +34,8 @@ export function hint(circuit: Circuit, selected: number): string {
   if (hover.type === 'port' && !hover.port.joint) return `${sayPortOf(circuit, hover.port.part, hover.port.port)}: drag or click to draw a line.`;
   if (cursor?.type === 'port' && desk.focused) return `${sayPortOf(circuit, cursor.part, cursor.port)}: Enter starts a line, arrows go to the next port.`;
   if (hover.type === 'connection') return sayConnectionById(circuit, hover.id);
-  if (selected > 0) return 'T turns, F flips, F2 names, Del deletes, arrows move.';
+  if (selected > 1) return 'Arrows move, H and V line up, G draws a block, Del deletes; the menu key or a right click has the rest.';
+  if (selected > 0) return 'T turns, F flips, S swaps, F2 names, Del deletes, arrows move.';
   return '';
 }
 

@@ -1,6 +1,9 @@
 import type { Action } from 'svelte/action';
+import type { Point } from '../../base/points.ts';
 import { desk } from '../sheet/desk.svelte.ts';
-import { middleOfView, takeUp } from '../sheet/hand.ts';
+import { middleOfView, takeUp, takeUpSeveral } from '../sheet/hand.ts';
+import { swapFor } from '../sheet/swapping.ts';
+import { severalOf } from './several.ts';
 
 /** Pixels the pointer may tremble in a click. */
 const TREMBLE = 5;
@@ -14,6 +17,11 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
   let start: { readonly x: number; readonly y: number } | undefined;
   let dragged = false;
 
+  const take = (at?: Point): void => {
+    const several = severalOf(id);
+    if (several) takeUpSeveral(several.title, several.make(), at);
+    else takeUp(id, at);
+  };
   const down = (event: PointerEvent): void => {
     if (event.button !== 0) return;
     start = { x: event.clientX, y: event.clientY };
@@ -22,7 +30,8 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
   const move = (event: PointerEvent): void => {
     if (!start || dragged || Math.hypot(event.clientX - start.x, event.clientY - start.y) < TREMBLE) return;
     dragged = true;
-    takeUp(id);
+    desk.swapping = undefined;
+    take();
     desk.carrying = true;
     desk.trayOpen = false;
   };
@@ -31,9 +40,13 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
   };
   const click = (event: MouseEvent): void => {
     if (dragged) return;
-    // A click that no pointer made comes from the keyboard.
-    takeUp(id, event.detail === 0 ? middleOfView() : undefined);
+    const { swapping, target } = desk;
     desk.trayOpen = false;
+    desk.swapping = undefined;
+    desk.target = undefined;
+    if (swapping !== undefined && !severalOf(id)) swapFor(swapping, id);
+    // A click that no pointer made comes from the keyboard.
+    else take(target ?? (event.detail === 0 ? middleOfView() : undefined));
     desk.host?.focus({ preventScroll: true });
   };
   node.addEventListener('pointerdown', down);
