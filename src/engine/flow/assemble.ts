@@ -35,10 +35,11 @@ export interface FlowSystem {
   /** m³/s into each line at full stroke. */
   readonly source: Float64Array;
   readonly pumpFlow: Float64Array;
-  readonly leak: number;
+  /** m³/s per Pa; larger than the problem's own while a solve is carried along from leaky lines. */
+  leak: number;
   readonly pilots: Pilots;
-  /** Branches that are on: the first `plain` without pilot, the rest with one. */
   readonly couplers: Couplers;
+  /** Branches that are on: the first `plain` without pilot, the rest with one. */
   active: Int32Array;
   /** Where `active` lies. */
   readonly room: Int32Array;
@@ -73,9 +74,9 @@ export function assemble(problem: FlowProblem): FlowSystem {
     edges.push([b.a, b.b]);
     for (const s of b.pilot?.signals ?? []) edges.push([b.a, s.line], [b.b, s.line]);
   }
-  const plan = planElimination(n, edges);
   const couplers = sound ? (problem.couplers ?? []) : [];
   edges.push(...coupledLines(couplers, tank));
+  const plan = planElimination(n, edges);
   const ends = new Int32Array(3 * m);
   const law = new Float64Array(WIDTH * m);
   branches.forEach((b, j) => {
@@ -102,8 +103,8 @@ export function assemble(problem: FlowProblem): FlowSystem {
     pumpFlow: Float64Array.from(problem.pumps, (pump) => pump.flow),
     leak: problem.leak,
     pilots: layPilots(branches, plan, tank),
-    active: new Int32Array(0),
     couplers: layCouplers(couplers, plan, tank),
+    active: new Int32Array(0),
     room: new Int32Array(m),
     plain: 0,
   };
@@ -206,8 +207,8 @@ export function balance(system: FlowSystem, at: Point): void {
     f[i] = pressure * slope - (source[i] as number);
     v[i] = slope;
   }
-}
   if (system.couplers.count > 0) addCouplers(system.couplers, p, f, v, at.softness);
+}
 
 /** Through-put by the law that stands at `l`, as it is without softness. */
 export function flowAt(law: Float64Array, l: number, u: number): number {

@@ -181,7 +181,9 @@ function settleShort(system: FlowSystem, work: Workspace, scale: number): boolea
     const exact = flowAt(law, l, u);
     const off = Math.abs(exact - after);
     if (off * Math.abs(ca) > slack || off * Math.abs(cb) > slack) return false;
-    next.x[j] = after;
+    // At rest and at a bound the law itself stands, lest rounding set the flow beyond the corner.
+    const bound = exact >= (law[l + HI] as number) || exact <= (law[l + HI - 1] as number);
+    next.x[j] = bound || after * exact <= 0 ? exact : after;
   }
   for (let i = 0; i < active.length; i++) {
     const j = active[i] as number;

@@ -14,13 +14,16 @@ const LOSSES: ReadonlySet<BranchKind> = new Set([
 ]);
 /** Flow that counts as motion: 0.01 L/min in m³/s. */
 const MOTION = 1e-5 / 60;
+/** Trials that must end in a steady state, and how many may be made for that. */
 const TRIALS = 3;
+const MOST_TRIALS = 8;
 
 /**
  * Actuators whose speed rests on losses alone: equal rivals for one flow. The losses are made small, by
  * different factors for every branch, a few times over; where that swings a speed, the circuit leaves it
- * open. Differences of load, area or setting do not swing, whatever the losses. Branch numbers in rising order;
- * empty as well if a trial has no steady state. Leaves the solver's problem as it was.
+ * open. Differences of load, area or setting do not swing, whatever the losses. Branch numbers in rising order.
+ * A trial without a steady state is made again with losses less small; where not even two have one, nothing
+ * shows that any speed is free of the losses, and all are named. Leaves the solver's problem as it was.
  */
 export function ties(solver: FlowSolver, warm: ArrayLike<number>): number[] {
   const { system } = solver;
@@ -33,20 +36,23 @@ export function ties(solver: FlowSolver, warm: ArrayLike<number>): number[] {
   const kept = law.slice();
   const speeds: number[][] = [];
   try {
-    for (let trial = 0; trial < TRIALS; trial++) {
+    for (let trial = 0; speeds.length < TRIALS && trial < MOST_TRIALS; trial++) {
+      const mild = trial - speeds.length;
       for (const j of active) {
         if (!LOSSES.has(problem.branches[j]?.kind as BranchKind)) continue;
-        const share = 10 ** -(1 + 2 * scatter(j, trial));
+        const share = 10 ** (-(1 + 2 * scatter(j, trial)) / (1 + mild));
         law[WIDTH * j + 4] = (kept[WIDTH * j + 4] as number) * share;
         law[WIDTH * j + 5] = (kept[WIDTH * j + 5] as number) * share;
       }
       const solution = solver.solve({ warm: start });
-      if (solution.status !== 'solved') return [];
+      if (solution.cancelled) return [];
+      if (solution.status !== 'solved') continue;
       speeds.push(actuators.map((j) => solution.throughputs[j] as number));
     }
   } finally {
     law.set(kept);
   }
+  if (speeds.length < 2) return actuators;
   return actuators.filter((j, i) => {
     const area = Math.max(Math.abs(law[WIDTH * j] as number), Math.abs(law[WIDTH * j + 1] as number));
     const seen = speeds.map((trial) => (trial[i] as number) * area);

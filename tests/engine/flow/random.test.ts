@@ -11,7 +11,7 @@ const recipe = fc.record({
 });
 
 // The runs are seeded: the same circuits every time.
-const fixed = { seed: 20, numRuns: 1500 };
+const fixed = { seed: 20, numRuns: 5000 };
 
 test('every random pilot-free circuit is solved, with its evidence, or is named free fall', () => {
   let solved = 0;
@@ -33,8 +33,8 @@ test('every random pilot-free circuit is solved, with its evidence, or is named 
     }),
     fixed,
   );
-  expect(solved + falls).toBe(1500);
-  expect(falls).toBeLessThan(30);
+  expect(solved + falls).toBe(5000);
+  expect(falls).toBeLessThan(100);
 });
 
 test('named powers balance: pumps, loads and stores against use and loss', () => {
@@ -85,12 +85,12 @@ test('switching branches in place gives what a fresh problem gives', () => {
   }
 });
 
-test('random circuits with pilot-sensed valves: nearly all are solved, and all that are carry the evidence', () => {
+test('random circuits with pilot-sensed valves: 999 of 1,000 are solved, and all that are carry the evidence', () => {
   let solved = 0,
     asked = 0;
-  for (let seed = 0; seed < 400; seed++) {
+  for (let seed = 0; seed < 1000; seed++) {
     const solver = new FlowSolver(
-      randomCircuit(90_000 + seed, { lines: 4 + (seed % 20), cylinders: 1 + (seed % 4), piloted: 1 + (seed % 4) }),
+      randomCircuit(90_000 + seed, { lines: 3 + (seed % 28), cylinders: 1 + (seed % 6), piloted: 1 + (seed % 4) }),
     );
     const { status } = solver.solve();
     if (status === 'unbounded') continue;
@@ -102,6 +102,17 @@ test('random circuits with pilot-sensed valves: nearly all are solved, and all t
     expect(balance).toBeLessThan(1e-8);
     expect(power).toBeLessThan(1e-7);
   }
-  expect(asked).toBeGreaterThan(370);
-  expect(solved / asked).toBeGreaterThan(0.985);
+  expect(asked).toBeGreaterThan(970);
+  expect(solved / asked).toBeGreaterThanOrEqual(0.999);
+});
+
+test('circuits that once defeated the search for pilot-sensed valves are solved', () => {
+  // Valves in feedback over lines that only their leak drains: answers hang on a hair of flow.
+  for (const seed of [114, 739, 846, 1175, 2653, 3491, 4775, 100_246, 100_627, 101_607]) {
+    const solver = new FlowSolver(
+      randomCircuit(seed, { lines: 3 + (seed % 28), cylinders: 1 + (seed % 6), piloted: 1 + (seed % 4) }),
+    );
+    expect([seed, solver.solve().status]).toEqual([seed, 'solved']);
+    expect(solver.certificate().residual).toBeLessThan(1e-8);
+  }
 });
