@@ -1,5 +1,6 @@
 import { editor } from './state/editor.svelte.ts';
 import { session } from './state/session.svelte.ts';
+import { asking } from './table/asking.svelte.ts';
 import { view } from './state/view.svelte.ts';
 import type { PanelId } from './state/view.svelte.ts';
 import { openFromDisk } from './files/open.ts';
@@ -15,6 +16,7 @@ const PANELS: Readonly<Record<string, PanelId>> = {
   o: 'conditions',
   u: 'rules',
   b: 'bleed',
+  v: 'influence',
   '?': 'keys',
 };
 
@@ -76,6 +78,7 @@ function plain(event: KeyboardEvent): boolean {
   const panel = PANELS[key.toLowerCase()];
   if (/^\d$/.test(key)) digit(key, event.timeStamp);
   else if (panel) view.toggle(panel);
+  else if (key === 'q' || key === 'Q') asking.on = true;
   else if (key === '[') session.goToRow(session.row - 1);
   else if (key === ']') session.goToRow(session.row + 1);
   else if (key === 'r' || key === 'R') session.letGo();

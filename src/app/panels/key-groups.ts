@@ -36,6 +36,8 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['F6', 'Next band or panel; with Shift, the one before'],
     ['W L F E', 'Why, lines, findings, settings'],
     ['O U B', 'Conditions, rules, bleed-down'],
+    ['Q', 'Ask the table: rows in which something holds'],
+    ['V', 'Influence: which lever matters to what'],
     ['?', 'This panel'],
     ['Esc', 'Close the panel in hand'],
   ),

@@ -2,7 +2,7 @@ import type { UnitSystem } from '../../base/units.ts';
 import { recall, remember } from './remembered.ts';
 
 export type ThemeChoice = 'system' | 'light' | 'dark';
-export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions' | 'rules' | 'bleed';
+export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions' | 'rules' | 'bleed' | 'influence';
 export type Page = 'sheet' | 'table';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -33,6 +33,7 @@ class View {
     conditions: false,
     rules: false,
     bleed: false,
+    influence: false,
   });
 
   /** Panels from the lowest to the one on top. */

@@ -29,8 +29,8 @@ const WORDS = BLOCK / 32;
 
 type Work<T> = Generator<undefined, T, undefined>;
 
-function* kept(table: StateTable, filters: readonly ColumnFilter[]): Work<BitSet> {
-  const keep = fullSet(table.count);
+function* kept(table: StateTable, filters: readonly ColumnFilter[], among: BitSet | undefined): Work<BitSet> {
+  const keep = among?.slice() ?? fullSet(table.count);
   for (const { column, keep: wanted } of filters) {
     const any = new Uint32Array(keep.length);
     for (const value of wanted) {
@@ -127,15 +127,16 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
 
 /**
  * Counting sort on small whole keys: stable, so rows of one key stay in row order in both directions.
- * Undefined when the natural order of all rows is asked for.
+ * Undefined when the natural order of all rows is asked for. `among`: rows that other than filters leave.
  */
 export function* orderRows(
   table: StateTable,
   filters: readonly ColumnFilter[],
   sort: Sort | undefined,
+  among?: BitSet,
 ): Work<Order | undefined> {
-  if (filters.length === 0 && (!sort || (sort.column.of === 'row' && !sort.falling))) return undefined;
-  const keep = yield* kept(table, filters);
+  if (filters.length === 0 && !among && (!sort || (sort.column.of === 'row' && !sort.falling))) return undefined;
+  const keep = yield* kept(table, filters, among);
   const shown = new Uint32Array(table.count);
   let size = 0;
   for (let row = 0; row < table.count; row++) {

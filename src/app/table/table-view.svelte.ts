@@ -1,3 +1,4 @@
+import type { BitSet } from '../../base/bits.ts';
 import { session } from '../state/session.svelte.ts';
 import type { Column } from './columns.ts';
 import { orderRows } from './order.ts';
@@ -46,6 +47,14 @@ class TableView {
     this.filters = keep === undefined ? rest : [...rest, { column, keep }];
   }
 
+  /** Only rows in which these levers stand as given; filters of other columns go. */
+  holdLevers(columns: readonly Column[], positions: ReadonlyMap<number, number>): void {
+    this.filters = columns.flatMap((column) => {
+      const position = column.of === 'input' ? positions.get(column.index) : undefined;
+      return position === undefined ? [] : [{ column, keep: [position] }];
+    });
+  }
+
   clear(): void {
     this.filters = [];
   }
@@ -62,10 +71,11 @@ class TableView {
     this.sort = this.sort && column ? { ...this.sort, column } : undefined;
   }
 
-  async arrange(table: StateTable | undefined): Promise<void> {
+  /** `among`: the rows of this table that a question leaves. */
+  async arrange(table: StateTable | undefined, among?: BitSet): Promise<void> {
     const turn = ++this.#turn;
     if (!table) return;
-    const work = orderRows(table, this.filters, this.sort);
+    const work = orderRows(table, this.filters, this.sort, among);
     let until = performance.now() + SLICE_MS;
     for (let step = work.next(); ; step = work.next()) {
       if (step.done) {
