@@ -103,13 +103,16 @@ function conditionOf(
 
 const any = (of: readonly Expression[]): Expression => (of.length === 1 ? (of[0] as Expression) : { type: 'any', of });
 
+/** Closed contacts first. */
 function product({ mask, value }: Term): Expression {
-  const of: Expression[] = [];
-  for (let signal = 0; signal < MOST_VARIABLES; signal++) {
-    if (((mask >>> signal) & 1) === 0) continue;
-    const contact: Expression = { type: 'signal', signal };
-    of.push(((value >>> signal) & 1) === 1 ? contact : { type: 'not', of: contact });
-  }
+  const contacts = (bits: number): Expression[] =>
+    Array.from({ length: MOST_VARIABLES }, (_, signal): Expression => ({ type: 'signal', signal })).filter(
+      (_, signal) => ((bits >>> signal) & 1) === 1,
+    );
+  const of = [
+    ...contacts(value),
+    ...contacts(mask & ~value).map((contact): Expression => ({ type: 'not', of: contact })),
+  ];
   return of.length === 1 ? (of[0] as Expression) : { type: 'all', of };
 }
 

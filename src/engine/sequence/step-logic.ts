@@ -103,6 +103,16 @@ export function endProblems({ actuators, steps }: LogicPlan): Problem[] {
   return steps.flatMap(({ motions, end }, i): Problem[] => {
     const where = `step ${i + 1}`;
     if (end.by === 'motion') {
+      const twice = motions.find(({ actuator }, k) => motions.findIndex((m) => m.actuator === actuator) < k);
+      if (twice) {
+        return [
+          {
+            where,
+            what: `${actuators[twice.actuator]?.label ?? ''} goes there and back in it, so no sensor tells when it is over.`,
+            remedy: 'Make a step of each motion.',
+          },
+        ];
+      }
       const motor = motions.find(({ actuator }) => actuators[actuator]?.rotary === true);
       if (motor === undefined) return [];
       return [
@@ -142,8 +152,8 @@ export function signalStates(plan: LogicPlan, mostSignals: number): SignalStates
     for (const { actuator, way } of step.motions) {
       const course = courses[actuator];
       if (!course) continue;
-      const from = stand[actuator] as number;
-      const reach = way === '+' ? range(lowest(from), course.last) : range(0, highest(from));
+      const from = during[actuator] as number;
+      const reach = from | (way === '+' ? range(lowest(from), course.last) : range(0, highest(from)));
       during[actuator] = reach;
       after[actuator] = step.end.by === 'motion' ? bit(way === '+' ? course.last : 0) : reach;
     }

@@ -191,7 +191,7 @@ test('interlocks: what is allowed passes, what is forbidden never comes out', ()
         expect([...out].every((coil) => asked.has(coil))).toBe(true);
       }
     }),
-    { numRuns: 150 },
+    { numRuns: 60 },
   );
 });
 
