@@ -2,6 +2,7 @@ import type { Budget } from '../base/budget.ts';
 import { withLoadCase } from '../circuit/load-case.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
+import { RowSettler } from '../engine/table/dependents.ts';
 import { explain } from '../engine/table/explain.ts';
 import { PressureSolver } from '../engine/table/resolve.ts';
 import { rowNumbers } from '../engine/table/row-numbers.ts';
@@ -58,8 +59,11 @@ export function explainRow(circuit: Circuit, conditions: Conditions, row: number
 /** Pressures, flows and speeds of rows (0-based), in the order asked; SI. */
 export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readonly number[]): RowNumbers[] {
   const net = networkOf(circuit, conditions);
-  const solver = new PressureSolver(net, pathConditions(net, conditions));
-  return rows.map((row) => rowNumbers(solver, row));
+  const where = pathConditions(net, conditions);
+  const solver = new PressureSolver(net, where);
+  const settler = new RowSettler(solver, where);
+  // Memory and hunting do not matter here: the figures are those of the setting that the row gives.
+  return rows.map((row) => rowNumbers(solver, row, solver.solve(row, false, settler.at(row).setting)));
 }
 
 /** 3¹⁴ rows: what a table held in memory can list. */

@@ -110,7 +110,7 @@ export function figuresFor(
   const unsolved = tooManyToSolve(data.count, wanted);
   if (unsolved) return bad(unsolved);
   const net = networkOf(circuit, conditions);
-  return good(figurePlanes(new PressureSolver(net, pathConditions(net, conditions)), data, wanted, budget));
+  return good(figurePlanes(new PressureSolver(net, pathConditions(net, conditions), data.dependentPlanes), data, wanted, budget));
 }
 
 /** How a rule or question may go on where its text ends. */

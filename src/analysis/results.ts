@@ -1,5 +1,5 @@
 import type { Circuit } from '../circuit/model.ts';
-import type { ActuatorAnswer, PumpAnswer, TrapAnswer } from '../engine/table/answers.ts';
+import type { ActuatorAnswer, DependentReason, PumpAnswer, TrapAnswer } from '../engine/table/answers.ts';
 import type { RowNumbers } from '../engine/table/row-numbers.ts';
 
 /** What holds for the whole table. */
@@ -20,6 +20,8 @@ export interface Request {
 export interface Explanation {
   readonly row: number;
   readonly positions: readonly number[];
+  /** Valves that pressures or actuators move. */
+  readonly dependents: readonly DependentReason[];
   readonly actuators: readonly ActuatorAnswer[];
   readonly pumps: readonly PumpAnswer[];
   readonly trapped: readonly TrapAnswer[];
@@ -58,6 +60,7 @@ export type {
 export type { Check, CheckedInput, CheckedRule, RuleAnswer, RuleCases, RuleOutcome } from './check-results.ts';
 
 export type {
+  DependentReason,
   ActuatorAnswer as ActuatorReason,
   PumpAnswer as PumpReason,
   TrapAnswer as TrappedLine,

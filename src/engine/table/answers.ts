@@ -22,6 +22,19 @@ export interface PumpAnswer {
   readonly steps: readonly Step[];
 }
 
+/** Where a valve stands that pressures or actuators move, and why. */
+export interface DependentReason {
+  readonly part: string;
+  readonly label: string;
+  readonly position: number;
+  readonly name: string;
+  /** No setting agrees with the pressures that it causes. */
+  readonly hunts: boolean;
+  /** Names of positions that it has in other settings that agree: which holds depends on what came before. */
+  readonly others: readonly string[];
+  readonly steps: readonly Step[];
+}
+
 export interface TrapAnswer {
   readonly line: number;
   readonly name: string;

@@ -20,7 +20,7 @@ export interface PressureWords {
 export function explainPressures(state: OneState): PressureWords {
   const solver = new PressureSolver(state.net, state.conditions);
   const rivals = state.net.actuators.some((_, i) => state.block.motion.rests[i]?.some((plane) => state.is(plane)));
-  const answer = solver.solve(state.row, rivals);
+  const answer = solver.solve(state.row, rivals, state.settled.setting);
   const numbers = rowNumbers(solver, state.row, answer);
   const bits = { block: state.block, bit: state.row & 31 };
   const hunts = state.is(state.block.hunts);

@@ -1,15 +1,14 @@
 import type { NetActuator, Network } from '../../network/network.ts';
-import type { EdgeSet } from '../paths/edges.ts';
-import { compileEdges } from '../paths/edges.ts';
 import { isEqualSided } from '../paths/actuator-bits.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { RestReason } from '../paths/motion-bits.ts';
 import { sourceLines } from '../paths/reach.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { actuatorOutcome, motionWords } from './actuator-outcomes.ts';
+import { explainDependents } from './explain-dependents.ts';
 import { explainPressures } from './explain-pressures.ts';
 import { explainPump } from './explain-pump.ts';
-import type { ActuatorAnswer } from './answers.ts';
+import type { ActuatorAnswer, DependentReason } from './answers.ts';
 import type { PumpAnswer } from './answers.ts';
 import { explainTrapped } from './explain-trapped.ts';
 import type { TrapAnswer } from './answers.ts';
@@ -22,6 +21,7 @@ import { ACTUATOR_NOTES, ACTUATOR_VERDICTS } from './words.ts';
 import type { ActuatorVerdict } from './words.ts';
 
 export interface RowAnswer {
+  readonly dependents: readonly DependentReason[];
   readonly actuators: readonly ActuatorAnswer[];
   readonly pumps: readonly PumpAnswer[];
   readonly trapped: readonly TrapAnswer[];
@@ -30,12 +30,15 @@ export interface RowAnswer {
 
 /** Everything one row says, in words, with the lines and parts to light for each link of the reason. */
 export function explain(net: Network, conditions: PathConditions, row: number): RowAnswer {
-  const edges: EdgeSet = compileEdges(net);
-  const state = solveOne(net, conditions, row, edges);
+  const state = solveOne(net, conditions, row);
   const pressures = explainPressures(state);
+  const dependents = explainDependents(state);
   return {
-    actuators: net.actuators.map((actuator, i) => pressures.actuator(i, explainActuator(state, i, actuator))),
-    pumps: net.pumps.map((pump, i) => pressures.pump(i, explainPump(state, i, pump))),
+    dependents: dependents.answers,
+    actuators: net.actuators.map((actuator, i) =>
+      dependents.actuator(i, pressures.actuator(i, explainActuator(state, i, actuator))),
+    ),
+    pumps: net.pumps.map((pump, i) => dependents.pump(i, pressures.pump(i, explainPump(state, i, pump)))),
     trapped: explainTrapped(state).filter((entry) => !pressures.flows(entry.line)),
     numbers: pressures.numbers,
   };

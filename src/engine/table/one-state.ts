@@ -1,11 +1,16 @@
-import { wordsFor } from '../../base/bits.ts';
+import { emptySet, wordsFor } from '../../base/bits.ts';
+import { standsAt } from '../../network/dependents.ts';
 import type { NetPath, Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
 import type { SettledBlock } from '../paths/block.ts';
-import { compileEdges } from '../paths/edges.ts';
+import type { DependentAnswer } from '../flow/dependents.ts';
+import { constantPlanes } from '../paths/dependents.ts';
+import { compileEdges, follow } from '../paths/edges.ts';
 import type { EdgeSet } from '../paths/edges.ts';
 import type { Field } from '../paths/field.ts';
 import type { PathConditions } from '../paths/reach.ts';
+import { RowSettler } from './dependents.ts';
+import { PressureSolver } from './resolve.ts';
 
 /** One state, solved by the same engine as the table, with searches that remember their way. */
 export interface OneState {
@@ -14,11 +19,15 @@ export interface OneState {
   readonly conditions: PathConditions;
   readonly block: SettledBlock;
   readonly edges: EdgeSet;
+  /** Where the dependent valves stand, and of whom to ask it for other rows. */
+  readonly settled: DependentAnswer;
+  readonly settlers: Settlers;
   readonly is: (plane: Uint32Array | undefined) => boolean;
   /** Bit of a line in a field. */
   readonly on: (field: Field, line: number) => boolean;
   /** Directed hops that are open in this state. */
   readonly hops: readonly Hop[];
+  /** Also of dependent valves, which count on behind the inputs. */
   readonly position: (input: number) => number;
 }
 
@@ -31,18 +40,62 @@ export interface Hop {
   readonly toPort: string;
 }
 
-export function solveOne(net: Network, conditions: PathConditions, row: number, edges = compileEdges(net)): OneState {
+/** Settles the dependent valves of single rows, pumps running or stopped; needs a steady state each. */
+export class Settlers {
+  readonly net: Network;
+  readonly #settlers = new Map<boolean, RowSettler>();
+  #base: EdgeSet | undefined;
+
+  constructor(net: Network) {
+    this.net = net;
+  }
+
+  at(conditions: PathConditions, row: number): DependentAnswer {
+    let settler = this.#settlers.get(conditions.pumpsRunning);
+    if (settler === undefined) {
+      settler = new RowSettler(new PressureSolver(this.net, conditions), conditions);
+      this.#settlers.set(conditions.pumpsRunning, settler);
+    }
+    return settler.at(row);
+  }
+
+  /** Open paths with this setting, good for the word of this row. */
+  edges(setting: readonly number[], row: number): EdgeSet {
+    const { net } = this;
+    const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
+    const planes = constantPlanes(net, setting, count);
+    if (net.dependents.length === 0) return (this.#base ??= compileEdges(net));
+    this.#base ??= compileEdges(net, planes);
+    const follows = new Set(this.#base.follows.map(({ mask }) => mask));
+    const masks = this.#base.masks.map((mask, i) => (follows.has(i) ? emptySet(count) : mask));
+    follow(masks, this.#base.follows, planes, row >>> 5, 1);
+    return { ...this.#base, masks };
+  }
+}
+
+const NOTHING: DependentAnswer = { setting: [], hunts: false, cycle: [], others: [], searched: true };
+
+export function solveOne(
+  net: Network,
+  conditions: PathConditions,
+  row: number,
+  settlers: Settlers = new Settlers(net),
+): OneState {
   const word = row >>> 5;
-  if (word >= wordsFor(edges.states)) throw new RangeError(`row ${row} is past the last of ${edges.states}`);
+  const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
+  if (word >= wordsFor(count)) throw new RangeError(`row ${row} is past the last of ${count}`);
+  const settled = net.dependents.length === 0 ? NOTHING : settlers.at(conditions, row);
+  const edges = settlers.edges(settled.setting, row);
   const block = new PathSolver(net, edges, conditions, 1).solve(word, 1);
   const bit = row & 31;
   const is = (plane: Uint32Array | undefined): boolean => (((plane?.[0] ?? 0) >>> bit) & 1) === 1;
   const on = (field: Field, line: number): boolean => line >= 0 && (((field[line] as number) >>> bit) & 1) === 1;
   const radices = net.inputs.map((input) => input.positions.length);
-  const position = (input: number): number => {
+  const commanded = (input: number): number => {
     const stride = radices.slice(input + 1).reduce((n, r) => n * r, 1);
     return Math.floor(row / stride) % (radices[input] ?? 1);
   };
+  const position = standsAt(net, commanded, settled.setting);
   const r = block.reach;
   const hops = net.paths.flatMap((path): Hop[] => {
     if (path.input >= 0 && ((path.positions >>> position(path.input)) & 1) === 0) return [];
@@ -54,7 +107,7 @@ export function solveOne(net: Network, conditions: PathConditions, row: number, 
     if (path.oneWay) return [ahead];
     return [ahead, { from: path.to, to: path.from, path, fromPort: path.toPort, toPort: path.fromPort }];
   });
-  return { net, row, conditions, block, edges, is, on, hops, position };
+  return { net, row, conditions, block, edges, settled, settlers, is, on, hops, position };
 }
 
 /** A way along open paths: lines passed, and the hop before each but the first. */

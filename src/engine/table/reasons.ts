@@ -1,3 +1,4 @@
+import { dependentLabel } from '../../network/dependents.ts';
 import type { NetActuator } from '../../network/network.ts';
 import { spreadFrom } from './one-state.ts';
 import type { OneState, Way } from './one-state.ts';
@@ -21,6 +22,12 @@ export const lineName = (state: OneState, line: number): string => state.net.lin
 
 /** `V1 at raise`, or the plain label of a part that nobody moves. */
 export function partInState(state: OneState, part: number): string {
+  const { net } = state;
+  const dependent = net.dependents.findIndex((entry) => entry.part === part);
+  if (dependent >= 0) {
+    const at = state.settled.setting[dependent] ?? 0;
+    return `${dependentLabel(net, dependent)} at ${net.dependents[dependent]?.positions[at] ?? '?'}`;
+  }
   const input = state.net.inputs.findIndex((entry) => entry.part === part);
   const label = partLabel(state, part);
   if (input < 0) return label;
