@@ -71,7 +71,7 @@ export function chambersOf(
   const withoutMe = (gate?: Field): Field => {
     const field = r.toTank.slice();
     takeIn(net, conditions, s, field, index);
-    s.spread(field, edges.backward, { links: links.pull, without: index, ...(gate && { gate }) });
+    s.spread(field, edges.backward, { links: links.pull, without: index, fromTank: true, ...(gate && { gate }) });
     return field;
   };
   const [exitA, exitB] = apart(

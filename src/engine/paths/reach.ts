@@ -164,11 +164,17 @@ export function reach(
   const softExits = exits.slice();
   // Oil may also be forced into a line under pressure, by the ratio of areas.
   or(softExits, anyPressed);
-  s.spread(exits, edges.backward, { gate: notPressed, links: links.pull, order: backFromTanks });
-  s.spread(softExits, edges.backward, { links: links.pull, order: backFromTanks });
+  // An actuator that stands straight on a tank line lets oil out through itself too.
+  s.spread(exits, edges.backward, { gate: notPressed, links: links.pull, fromTank: true, order: backFromTanks });
+  s.spread(softExits, edges.backward, { links: links.pull, fromTank: true, order: backFromTanks });
   const freeExits = freeToTank.slice();
   takesOil(freeExits, -1);
-  s.spread(freeExits, edges.freeBackward, { gate: notPressed, links: links.pull, order: backFromTanks });
+  s.spread(freeExits, edges.freeBackward, {
+    gate: notPressed,
+    links: links.pull,
+    fromTank: true,
+    order: backFromTanks,
+  });
 
   let valves: Reach['valves'];
   for (const { relief, mask } of edges.reliefs) {

@@ -46,7 +46,7 @@ function search(net: Network, positions: readonly number[], pumpsRunning: boolea
     }
   });
   const sources = [
-    ...net.pumps.flatMap((pump) => (pumpsRunning ? [pump.outlet] : [])),
+    ...net.pumps.flatMap((pump) => (pumpsRunning && !pump.atRest ? [pump.outlet] : [])),
     ...net.accumulators.flatMap((store) => (store.charged ? [store.line] : [])),
   ];
   const tanks = net.lines.flatMap((line, i) => (line.tank ? [i] : []));

@@ -74,8 +74,10 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
   spread(toRelief, { edges: edges.backward });
 
   const takesOil = (seed: LineSets): LineSets => takeOil(net, conditions, seed, -1);
-  const back = { edges: edges.backward, links: links.pull };
-  const exits = spread(takesOil(toTank), { ...back, gate: notPressed });
+  const back = { edges: edges.backward, links: links.pull, fromTank: true };
+  const backToExits = eliminate(net, paths, { ...back, gate: notPressed });
+  const backToSoftExits = eliminate(net, paths, back);
+  const exits = backToExits.spread(takesOil(toTank));
   const freeExits = spread(takesOil(freeToTank), { ...back, edges: edges.freeBackward, gate: notPressed });
   // Oil may also be forced into a line under pressure, by the ratio of areas.
   const softExits = spread(

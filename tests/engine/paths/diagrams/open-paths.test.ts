@@ -49,7 +49,7 @@ test('line classes are equal to the enumeration on 1,000 random circuits', { tim
     }),
     { numRuns: 1000, seed: 20261202 },
   );
-  expect(combinations).toBeGreaterThan(5_000);
+  expect(combinations).toBeGreaterThan(4_500);
 });
 
 test('line classes of the valve families are equal to the enumeration, whatever the order of the inputs', () => {
