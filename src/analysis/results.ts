@@ -57,6 +57,21 @@ export type {
   InfluenceRow,
   SubCircuit,
 } from './fold-results.ts';
+export type {
+  LossActuator,
+  PlanLevel,
+  PlanPowerLoss,
+  PlanProblem,
+  PlanReport,
+  PlanTrace,
+  PowerLossCase,
+  StepMotion,
+  StepReport,
+  TraceEvent,
+  TracedActuator,
+  TracedStep,
+  TraceSample,
+} from './plan-results.ts';
 export type { Check, CheckedInput, CheckedRule, RuleAnswer, RuleCases, RuleOutcome } from './check-results.ts';
 
 export type {

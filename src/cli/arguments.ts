@@ -1,7 +1,7 @@
 import { parseArgs } from 'node:util';
 import type { UnitSystem } from '../base/units.ts';
 import { codeOf, Failure, messageOf } from './failure.ts';
-import { BLEED_HELP, CHECK_HELP, EXPLAIN_HELP, HELP, TABLE_HELP, TRAPPED_HELP } from './help.ts';
+import { BLEED_HELP, CHECK_HELP, EXPLAIN_HELP, HELP, PLAN_HELP, TABLE_HELP, TRAPPED_HELP } from './help.ts';
 
 export type Pumps = 'running' | 'stopped';
 
@@ -53,6 +53,16 @@ export type Command =
       /** Besides those of the circuit. */
       readonly rules: readonly string[];
       readonly out: string | undefined;
+    }
+  | {
+      readonly name: 'plan';
+      readonly file: string;
+      readonly format: ExplainFormat;
+      readonly load: string | undefined;
+      /** Name or id; all of them if not given. */
+      readonly plan: string | undefined;
+      readonly units: UnitSystem;
+      readonly out: string | undefined;
     };
 
 export const TABLE_FORMATS = ['text', 'csv', 'json', 'markdown'] as const;
@@ -93,6 +103,8 @@ export function readArguments(args: readonly string[], version: string): Command
       return bleedCommand(rest);
     case 'check':
       return checkCommand(rest);
+    case 'plan':
+      return planCommand(rest);
     default:
       throw usage(first.startsWith('-') ? `Unknown option ${first}.` : `Unknown command "${first}".`);
   }
@@ -196,6 +208,29 @@ function checkCommand(args: string[]): Command {
     load: loadCase('check', values.load),
     rules: values.rule,
     out: outFile('check', values.out),
+  };
+}
+
+function planCommand(args: string[]): Command {
+  const { format, out, help } = COMMON;
+  const { values, positionals } = attempt('plan', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { format, out, help, ...LOAD, ...UNITS, plan: { type: 'string' } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: PLAN_HELP };
+  if (values.plan === '') throw usage('--plan needs the name of a step plan.', 'plan');
+  return {
+    name: 'plan',
+    file: oneFile('plan', positionals),
+    format: oneOf('plan', '--format', values.format, EXPLAIN_FORMATS),
+    load: loadCase('plan', values.load),
+    plan: values.plan,
+    units: oneOf('plan', '--units', values.units, UNIT_SYSTEMS),
+    out: outFile('plan', values.out),
   };
 }
 

@@ -8,6 +8,7 @@ Commands:
   trapped FILE   where pressure stays trapped, over all states
   bleed FILE     how to let it down after a stop: the shortest list of lever moves
   check FILE     whether its rules hold in every combination
+  plan FILE      whether its step plans do what they say, and what a loss of power does
 
 Options:
   --help         this text; after a command, the help of that command
@@ -15,7 +16,7 @@ Options:
 
 FILE is a circuit saved by the editor (*.spool.json); - reads standard input.
 Exit code: 0 done, 1 a check failed (bleed: pressure is left that no lever list vents; check: a
-rule is broken or not decided), 2 bad input or usage.
+rule is broken or not decided; plan: a step does not do what it says), 2 bad input or usage.
 `;
 
 export const TABLE_HELP = `Usage: spooltable table FILE [OPTIONS]
@@ -101,4 +102,20 @@ A and B are statements, joined by and, or, not and parentheses:
   C1 extends       C1 moves in            C1 moves      C1 is held             no cylinder moves
   P1 is unloaded   line supply is fed     line supply is trapped     any line is blocked under pressure
 Names are those on the sheet; one that reads like words of a rule stands in double quotes.
+`;
+
+export const PLAN_HELP = `Usage: spooltable plan FILE [--plan NAME] [OPTIONS]
+
+Plays the step plans of the circuit, event by event: what moves in each step against what is asked, the time and
+energy it takes, and what ends it. Then, in the middle and at the end of each step, the power is lost: what holds,
+what comes down, which lines stay under pressure, and whether the plan can go on from there. Exit code 1 when a
+plan does not do what it says.
+
+Options:
+  --plan NAME               a plan by its name or id (all of them)
+  --load NAME               a load case of the circuit, by its name or id (what the plan says)
+  --units metric|us         units of the figures (metric)
+  --format text|json        how it is written (text); json is in SI and has every event
+  --out FILE                write there, whole or not at all, instead of to standard output
+  --help                    this text
 `;

@@ -21,6 +21,7 @@ import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure, messageOf, sayProblems } from './failure.ts';
 import { readCircuitFile } from './input.ts';
 import { print, writeWhole } from './output.ts';
+import { plan } from './plan.ts';
 import { readState } from './state.ts';
 
 /** Up to here the rows of a JSON table also carry sentences and candidates, which take a search for each row. */
@@ -54,6 +55,8 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
       return bleed(command, circuit, version);
     case 'check':
       return check(command, circuit, version);
+    case 'plan':
+      return plan(command, circuit, version);
   }
 }
 

@@ -108,8 +108,8 @@ function standingOf(net: Network, machine: Machine, charged: readonly boolean[])
   const edges = compileEdges(still);
   const places = machine.stops;
   const { reach } = new PathSolver(still, edges, { pumpsRunning: running, places }, 1).solve(0, 1);
-  const plane = (field: Uint32Array): Uint8Array =>
-    Uint8Array.from(net.lines, (_, line) => (field[line] as number) & 1);
+  const plane = (field: ArrayLike<number> | undefined): Uint8Array =>
+    Uint8Array.from(net.lines, (_, line) => (field?.[line] ?? 0) & 1);
   const paths = new RowPathsCache(still, edges, running).at(0);
   // A pump that stands still beside running ones lets its own outlet down as well.
   return {
