@@ -4,6 +4,8 @@ import type { Pilotage } from './pilotage.ts';
 
 const SWEEPS = 12;
 const HALVINGS = 45;
+/** Newton iterations that the search may take in all: about a fifth of a second. */
+const SPEND = 50_000;
 
 /**
  * Last resort for pilot-sensed valves: one flow after the other is bracketed between shut and `most`,
@@ -15,6 +17,7 @@ export function bracketFlows(at: Pilotage, most: number): Outcome {
   const { h, scale, limits, work, system } = at;
   const below = new Float64Array(system.n),
     above = new Float64Array(system.n);
+  const end = work.counts.iterations + SPEND;
   h.fill(0);
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
     for (let v = 0; v < h.length; v++) {
@@ -25,6 +28,7 @@ export function bracketFlows(at: Pilotage, most: number): Outcome {
         excessHigh = 0;
       for (let round = 0; round < HALVINGS && high - low > 1e-9 * scale; round++) {
         h[v] = round === 0 ? 0 : round === 1 ? most : low > 0 ? 0.5 * (low + high) : Math.min(scale, 0.25 * high);
+        if (work.counts.iterations > end) return 'stuck';
         const outcome = settleAt(at);
         if (outcome === 'cancelled') return outcome;
         const excess = gap(at, v);

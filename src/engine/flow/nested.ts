@@ -5,8 +5,8 @@ import type { Pilotage } from './pilotage.ts';
 import type { Outcome } from './workspace.ts';
 
 const HALVINGS = 60;
-/** Convex solves that the search may take in all. */
-const SOLVES = 4000;
+/** Newton iterations that the search may take in all: about a fifth of a second. */
+const SPEND = 50_000;
 /** Gap of an inner valve that counts as none, as a share of the flow scale: the coupled iteration does the rest. */
 const NEARLY = 1e-7;
 
@@ -16,12 +16,11 @@ const NEARLY = 1e-7;
  * the two ends, so that this finds an answer wherever those of the inner valves hang together.
  */
 export function nestBrackets(at: Pilotage, most: number): Outcome {
-  const budget = { left: SOLVES };
   at.h.fill(0);
-  return agree(at, at.h.length, most, budget);
+  return agree(at, at.h.length, most, at.work.counts.iterations + SPEND);
 }
 
-function agree(at: Pilotage, count: number, most: number, budget: { left: number }): Outcome {
+function agree(at: Pilotage, count: number, most: number, end: number): Outcome {
   const { system, valves, h, scale, work } = at;
   const inner: Pilotage = {
     ...at,
@@ -29,11 +28,7 @@ function agree(at: Pilotage, count: number, most: number, budget: { left: number
     h: h.subarray(0, count),
     open: at.open.subarray(0, count),
   };
-  if (count === 0) {
-    budget.left--;
-    return settleAt(inner);
-  }
-  budget.left -= 8;
+  if (count === 0) return settleAt(inner);
   const quick = newtonOnFlows(inner);
   if (quick !== 'stuck') return quick;
   const v = count - 1;
@@ -44,11 +39,11 @@ function agree(at: Pilotage, count: number, most: number, budget: { left: number
   let high = most;
   let excessLow = 0;
   let excessHigh = 0;
-  for (let round = 0; round < HALVINGS && budget.left > 0; round++) {
+  for (let round = 0; round < HALVINGS && work.counts.iterations < end; round++) {
     h[v] = round === 0 ? 0 : round === 1 ? most : low > 0 ? 0.5 * (low + high) : Math.min(scale, 0.1 * high);
     if (round > 1 && (h[v] === low || h[v] === high)) break;
     system.law[bound] = h[v] as number;
-    const outcome = agree(at, count - 1, most, budget);
+    const outcome = agree(at, count - 1, most, end);
     if (outcome === 'cancelled') return outcome;
     sense(at);
     const excess = gap(at, v);

@@ -21,7 +21,6 @@ export interface Pilotage {
   readonly h: Float64Array;
   readonly open: Float64Array;
   readonly scale: number;
-  spent: number;
 }
 
 /** All at once from the pressures as they stand, with the true bounds of the valves. */

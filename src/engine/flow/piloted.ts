@@ -29,7 +29,6 @@ export function solvePiloted(
     h: new Float64Array(count),
     open: new Float64Array(count),
     scale,
-    spent: 0,
   };
   const restore = (): void =>
     valves.forEach((i, v) => (law[WIDTH * (pilots.branch[i] as number) + HI] = bounds[v] as number));
@@ -64,6 +63,5 @@ export function solvePiloted(
     return outcome;
   } finally {
     restore();
-    work.counts.iterations += at.spent;
   }
 }
