@@ -7,6 +7,8 @@ import type { Link } from '../field.ts';
  */
 export interface EliminationPlan {
   readonly ways: number;
+  /** Pairs of ways that are joined, over all steps. */
+  readonly operations: number;
   /** Edge e of the adjacency is way `edgeWay[e]`; -1: it leads nowhere. */
   readonly edgeWay: Int32Array;
   /** Ways through actuators. */
@@ -105,7 +107,8 @@ function makePlan(
       joined,
     });
   }
-  return { ways, edgeWay, links: linked, steps };
+  const operations = steps.reduce((n, { joined }) => n + joined.length, 0);
+  return { ways, operations, edgeWay, links: linked, steps };
 }
 
 function remove(list: number[], line: number): void {

@@ -7,6 +7,7 @@ import type { ActuatorMotion, ChamberSets } from './actuator-motion.ts';
 import type { Diagram, Diagrams } from './diagrams.ts';
 import { ALL, NONE } from './diagrams.ts';
 import { driveByDisplaced } from './displaced-sets.ts';
+import type { Elimination } from './eliminate.ts';
 import type { OpenPathSets } from './open-paths.ts';
 import { at, eliminate, none, operations, reachSets, takeOil } from './reach-sets.ts';
 import type { Operations, ReachSets } from './reach-sets.ts';
@@ -55,7 +56,7 @@ function chambers(
   i: number,
 ): ChamberSets {
   const { and, or, minus } = operations(paths);
-  const { edges, toTank } = paths;
+  const { toTank } = paths;
   const single = b < 0;
   const [fedA, fedB] = [at(r.anyPressed, a), at(r.anyPressed, b)];
   // The shared searches pass through this actuator too; where that can mislead, search again without it.
@@ -69,21 +70,15 @@ function chambers(
     return [mended(x, a), single ? ALL : mended(y, b)];
   };
   const ends = single ? [a] : [a, b];
-  const out = (gate?: LineSets): LineSets =>
-    eliminate(net, paths, { edges: edges.backward, links: r.links.pull, without: i, gate }).spread(
-      takeOil(net, conditions, toTank, i),
-      ends,
-    );
-  const [exitA, exitB] = apart(r.exits, toTank, ALL, () => out(r.notPressed));
+  const out = (search: Elimination): LineSets =>
+    search.without(net, i).spread(takeOil(net, conditions, toTank, i), ends);
+  const [exitA, exitB] = apart(r.exits, toTank, ALL, () => out(r.backToExits));
   const stuck = or(single ? NONE : minus(fedA, exitB), minus(fedB, exitA));
-  const [softExitA, softExitB] = apart(r.softExits, toTank, stuck, () => out());
+  const [softExitA, softExitB] = apart(r.softExits, toTank, stuck, () => out(r.backToSoftExits));
   const free = minus(single ? ALL : or(exitA, exitB), or(fedA, fedB));
   const bled = and(stuck, or(and(fedA, at(toTank, a)), and(fedB, at(toTank, b))));
   const [fillA, fillB] = apart(r.fills, r.plainFills, or(free, bled), () =>
-    eliminate(net, paths, { edges: edges.forward, links: r.links.push, without: i, fromTank: true }).spread(
-      [...r.plainFills],
-      ends,
-    ),
+    r.aheadToFills.without(net, i).spread([...r.plainFills], ends),
   );
   const across = (from: number, to: number): Diagram => {
     if (from < 0 || to < 0) return NONE;

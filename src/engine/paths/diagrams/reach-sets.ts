@@ -32,6 +32,10 @@ export interface ReachSets {
   /** Searches along open paths into lines not freely open to tank / not open to tank at all. */
   readonly aheadUnderPressure: Elimination;
   readonly aheadShut: Elimination;
+  /** The searches of `exits`, `softExits` and `fills`, to do them again without one actuator. */
+  readonly backToExits: Elimination;
+  readonly backToSoftExits: Elimination;
+  readonly aheadToFills: Elimination;
 }
 
 export const none = (net: Network): LineSets => net.lines.map(() => NONE);
@@ -80,13 +84,11 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
   const exits = backToExits.spread(takesOil(toTank));
   const freeExits = spread(takesOil(freeToTank), { ...back, edges: edges.freeBackward, gate: notPressed });
   // Oil may also be forced into a line under pressure, by the ratio of areas.
-  const softExits = spread(
-    takesOil(toTank).map((set, line) => or(set, at(anyPressed, line))),
-    back,
-  );
+  const softExits = backToSoftExits.spread(takesOil(toTank)).map((set, line) => or(set, at(anyPressed, line)));
   const plainFills = fromSource.map((set, line) => (net.lines[line]?.tank ? ALL : set));
   spread(plainFills, { edges: edges.forward, fromTank: true });
-  const fills = spread([...plainFills], { edges: edges.forward, links: links.push, fromTank: true });
+  const aheadToFills = eliminate(net, paths, { edges: edges.forward, links: links.push, fromTank: true });
+  const fills = aheadToFills.spread([...plainFills]);
   const valves = waysOverValves();
   return {
     links,
@@ -106,6 +108,9 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
     plainFills,
     aheadUnderPressure,
     aheadShut,
+    backToExits,
+    backToSoftExits,
+    aheadToFills,
   };
 
   function waysOverValves(): ReachSets['valves'] {

@@ -43,7 +43,7 @@ function compare(net: Network, pumpsRunning: boolean, place: 'between' | 'in' | 
 }
 
 test(
-  'sets of rows give the same table as the rows one block at a time, on 500 random circuits',
+  'sets of rows give the same table as the rows one block at a time, on 300 random circuits',
   { timeout: 60_000 },
   () => {
     let planes = 0;
@@ -57,9 +57,9 @@ test(
           if (net.dependents.length === 0) planes += compare(net, running, place);
         },
       ),
-      { numRuns: 500, seed: 20261204 },
+      { numRuns: 300, seed: 20261204 },
     );
-    expect(planes).toBeGreaterThan(5_000);
+    expect(planes).toBeGreaterThan(3_000);
   },
 );
 
