@@ -198,6 +198,10 @@ function differ(a: readonly (readonly Uint32Array[])[], b: readonly Choice[], at
   return out;
 }
 
+/** Rows of a word with a further setting that agrees. */
+const elsewhere = (others: readonly Choice[], w: number): number =>
+  (others[0] ?? []).reduce((sum, plane) => sum | (plane[w] as number), 0);
+
 /** Settles every row by open paths. `heartbeat` may throw. */
 export function settleByPaths(net: Network, conditions: PathConditions, heartbeat: () => void = () => {}): PathSettled {
   const states = net.inputs.reduce((n, input) => n * input.positions.length, 1);
@@ -269,7 +273,8 @@ export function settleByPaths(net: Network, conditions: PathConditions, heartbea
     mine.forEach((planes, d) => planes.forEach((plane, p) => chosen[d]?.[p]?.set(plane, at)));
     solver.put(chosen, at, width);
     const block = solver.solve(at, width);
-    const any = new Uint32Array(width);
+    // It has moved, or could have been elsewhere before, or a pressure may yet move it.
+    const any = differ(mine, rest, at, width).map((word, w) => word | elsewhere(others, at + w));
     net.dependents.forEach((_, d) =>
       solver.mayShift(block, d).forEach((word, w) => (any[w] = (any[w] as number) | word)),
     );
