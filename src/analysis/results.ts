@@ -48,6 +48,13 @@ export type {
 } from './bleed-results.ts';
 export type { AskAnswer, Next } from './ask-results.ts';
 export type {
+  CoilLogic,
+  CoilLogicCoil,
+  LogicSignal,
+  LogicStepWords,
+  SignalGroupWords,
+} from './coil-logic-results.ts';
+export type {
   FoldAnswer,
   FoldBy,
   FoldItem,
