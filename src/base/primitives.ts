@@ -15,6 +15,9 @@ export type Pen =
   | 'enclosure' // dash-dot
   | 'chosen' // outline of the box at the ports, in a shown state
   | 'unseen' // no outline: filled shapes only
+  | 'trace' // curve of a diagram
+  | 'hair' // scale of a diagram
+  | 'boundary' // dashed: between the steps of a diagram
   | PathPen;
 
 /** A path inside a symbol that takes part in a line, in a shown state: drawn as its line is. */

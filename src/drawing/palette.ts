@@ -57,6 +57,15 @@ export const PALETTE: Readonly<Record<Theme, Readonly<Record<ColourToken, string
   },
 };
 
+/** Black on white, for paper: what would be a colour or a tint is told by weight and dash alone. */
+export const PRINT: Readonly<Record<ColourToken, string>> = {
+  ...(Object.fromEntries(Object.keys(PALETTE.light).map((token) => [token, '#000000'])) as Record<ColourToken, string>),
+  ...(Object.fromEntries(SURFACE_TOKENS.map((token) => [token, '#FFFFFF'])) as Record<SurfaceToken, string>),
+  rule: '#555555',
+  hair: '#999999',
+  idle: '#555555',
+};
+
 export interface PenStyle {
   readonly colour: ColourToken;
   /** Pixels at 8 px a module. */
@@ -73,6 +82,9 @@ export const PENS: Readonly<Record<Pen, PenStyle>> = {
   enclosure: { colour: 'idle', weight: 1.25, dash: [8, 2.5, 1.5, 2.5] },
   chosen: { colour: 'accent', weight: 2.25 },
   unseen: { colour: 'ink', weight: 0 },
+  trace: { colour: 'ink', weight: 2.25 },
+  hair: { colour: 'rule', weight: 0.75 },
+  boundary: { colour: 'rule', weight: 0.75, dash: [2, 2.5] },
   fed: { colour: 'fed', weight: 3.5 },
   'flows-to-tank': { colour: 'flows-to-tank', weight: 2 },
   vented: { colour: 'vented', weight: 1.25 },

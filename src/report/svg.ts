@@ -1,14 +1,15 @@
-import type { Point } from '../base/points.ts';
+import type { Box, Point } from '../base/points.ts';
 import type { Fill, Pen, Primitive } from '../base/primitives.ts';
 import type { SceneLabel } from '../drawing/labels.ts';
 import type { ColourToken, Theme } from '../drawing/palette.ts';
-import { FILLS, FONT_FAMILY, PALETTE, PENS } from '../drawing/palette.ts';
+import { FILLS, FONT_FAMILY, PALETTE, PENS, PRINT } from '../drawing/palette.ts';
 import type { Scene } from '../drawing/scene.ts';
 import type { Stroke } from '../drawing/strokes.ts';
 import { MODULE_PX, pathData } from '../drawing/strokes.ts';
 
 export interface SvgOptions {
-  readonly theme: Theme;
+  /** `print`: black on white. */
+  readonly theme: Theme | 'print';
   /** With its own name space, size and paper: a file of its own. Otherwise an `svg` element to set into a page. */
   readonly standalone: boolean;
   /** Free space round the drawing, in modules; 3 when absent. */
@@ -41,21 +42,9 @@ function allowedInXml(c: string): boolean {
 
 /** The scene as SVG text: plain colours, no style sheet, no script, nothing fetched; any viewer shows it. */
 export function sceneToSvg(scene: Scene, options: SvgOptions): string {
-  const margin = options.margin ?? 3;
-  const { x, y, width, height } = scene.bounds;
-  const view = [x - margin, y - margin, width + 2 * margin, height + 2 * margin];
   const pen = new Writer(options.theme);
-  const size = `width="${num((view[2] as number) * MODULE_PX)}" height="${num((view[3] as number) * MODULE_PX)}"`;
   const counts = `${scene.parts.length} parts, ${new Set(scene.lines.map((l) => l.line)).size} lines.`;
-  const body = [
-    `<title>${escapeXml(scene.title)}</title>`,
-    `<desc>${escapeXml(options.description ?? counts)}</desc>`,
-    ...(options.standalone
-      ? [
-          `<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`,
-        ]
-      : []),
-    ...scene.blocks.map((b) => pen.group(`<title>${escapeXml(b.name)}</title>`, b.primitives)),
+  return svgElement(scene.title, options.description ?? counts, scene.bounds, options, pen, [
     ...scene.enclosures.map((e) => pen.group('', e.primitives)),
     ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
     ...scene.dots.map(
@@ -63,6 +52,40 @@ export function sceneToSvg(scene: Scene, options: SvgOptions): string {
     ),
     ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
     ...scene.labels.map((l) => pen.label(l)),
+  ]);
+}
+
+/** A list of primitives, such as a diagram, as SVG text of the same kind. `description` is what cannot be seen from the title. */
+export function drawingToSvg(
+  drawing: { readonly title: string; readonly bounds: Box; readonly primitives: readonly Primitive[] },
+  options: SvgOptions & { readonly description: string },
+): string {
+  const pen = new Writer(options.theme);
+  return svgElement(drawing.title, options.description, drawing.bounds, options, pen, [
+    pen.group('', drawing.primitives),
+  ]);
+}
+
+function svgElement(
+  title: string,
+  description: string,
+  { x, y, width, height }: Box,
+  options: SvgOptions,
+  pen: Writer,
+  drawn: readonly string[],
+): string {
+  const margin = options.margin ?? 3;
+  const view = [x - margin, y - margin, width + 2 * margin, height + 2 * margin];
+  const size = `width="${num((view[2] as number) * MODULE_PX)}" height="${num((view[3] as number) * MODULE_PX)}"`;
+  const body = [
+    `<title>${escapeXml(title)}</title>`,
+    `<desc>${escapeXml(description)}</desc>`,
+    ...(options.standalone
+      ? [
+          `<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`,
+        ]
+      : []),
+    ...drawn,
   ];
   const head = options.standalone ? '<?xml version="1.0" encoding="UTF-8"?>\n' : '';
   const open = `<svg xmlns="http://www.w3.org/2000/svg" viewBox="${view.map(num).join(' ')}" ${size} role="img" font-family="${escapeXml(FONT_FAMILY)}">`;
@@ -73,15 +96,15 @@ const num = (v: number | undefined): string => String(Math.round((v ?? 0) * 1000
 const xy = (p: Point): string => `${num(p.x)} ${num(p.y)}`;
 
 class Writer {
-  readonly #theme: Theme;
+  readonly #colours: Readonly<Record<ColourToken, string>>;
   #clips = 0;
 
-  constructor(theme: Theme) {
-    this.#theme = theme;
+  constructor(theme: SvgOptions['theme']) {
+    this.#colours = theme === 'print' ? PRINT : PALETTE[theme];
   }
 
   colour(token: ColourToken): string {
-    return PALETTE[this.#theme][token];
+    return this.#colours[token];
   }
 
   stroke(s: Stroke): string {
