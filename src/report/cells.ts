@@ -31,6 +31,11 @@ export function columnsOf(report: Report): Column[] {
       cell: (row) => row.state[label] ?? '',
     })),
     ...(report.coils.length === 0 ? [] : [coilsOn(report.coils)]),
+    ...report.dependents.map(({ label }): Column => ({
+      head: label,
+      kind: 'position',
+      cell: (row) => row.dependents?.[label] ?? '',
+    })),
     ...report.actuators.map((label): Column => ({
       head: label,
       kind: 'verdict',

@@ -27,6 +27,10 @@ function columnsOf(report: Report): CsvColumn[] {
     { head: 'row', cell: (row) => String(row.row) },
     ...report.inputs.map(({ label }) => ({ head: label, cell: (row: ReportRow) => row.state[label] ?? '' })),
     ...report.coils.map((coil) => ({ head: `coil ${coil}`, cell: (row: ReportRow) => row.coils[coil] ?? '' })),
+    ...report.dependents.map(({ label }) => ({
+      head: label,
+      cell: (row: ReportRow) => row.dependents?.[label] ?? '',
+    })),
     ...report.actuators.map((label) => ({ head: label, cell: (row: ReportRow) => row.actuators[label] ?? '' })),
     ...report.pumps.map((label) => ({ head: label, cell: (row: ReportRow) => row.pumps[label] ?? '' })),
     ...report.lines.map((line) => ({ head: `line ${line}`, cell: (row: ReportRow) => row.lines[line] ?? '' })),

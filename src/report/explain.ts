@@ -34,6 +34,11 @@ function* explanationLines(source: ExplainSource): Generator<string> {
   yield `Row ${row.row} of ${report.count}, ${report.under}: ${stateOf(row)}`;
   if (Object.keys(source.assumed).length > 0) yield `Not given, taken at rest: ${pairs(source.assumed)}`;
   if (report.coils.length > 0) yield `Coils on: ${names(report.coils.filter((coil) => row.coils[coil] === 'on'))}`;
+  for (const { label, name, hunts, others, steps } of explanation.dependents) {
+    yield '';
+    yield `${label}: ${hunts ? 'hunts' : [name, ...others.map((other) => `or ${other}`)].join(' ')}`;
+    yield* stepLines(steps);
+  }
   for (const { label, verdict, notes, rests, steps } of explanation.actuators) {
     yield '';
     const said = notes.map((note) => sayNote(note, report.motors.includes(label)));
@@ -96,6 +101,10 @@ function* figureLines(figures: RowFigures, units: FigureUnits, row: ReportRow): 
   const reliefs = Object.entries(figures.reliefs);
   if (reliefs.length > 0) yield 'Flow over relief valves';
   for (const [label, flow] of reliefs) yield `  ${label}: ${sayFigure(flow)} ${units.flow}`;
+  const flows = Object.entries(figures.flows);
+  if (flows.length > 0) yield 'Flows';
+  for (const [way, { flow, drop }] of flows)
+    yield `  ${way}: ${sayFigure(flow)} ${units.flow}, drop ${sayFigure(drop)} ${units.pressure}`;
   const { pumps, loads, stores, useful, lost } = figures.power;
   const power = (figure: number): string => `${sayFigure(figure)} ${units.power}`;
   const spare =
@@ -104,6 +113,12 @@ function* figureLines(figures: RowFigures, units: FigureUnits, row: ReportRow): 
   yield `  in: pumps give ${power(pumps)}${loads === 0 ? '' : `, loads give ${power(loads)}`}${spare}`;
   yield `  useful: ${power(useful)}`;
   yield `  lost: ${power(lost)}`;
+  for (const [part, share] of Object.entries(figures.powerBy)) {
+    const said = (['given', 'useful', 'lost'] as const).flatMap((word) =>
+      share[word] === 0 ? [] : [`${word} ${power(share[word])}`],
+    );
+    if (said.length > 0) yield `  ${part}: ${said.join(', ')}`;
+  }
   yield FIGURES_REST;
 }
 
@@ -126,6 +141,14 @@ export function writeExplanationJson(source: ExplainSource): string {
     ...(report.figures ? { units: report.figures.units, figuresRestOn: FIGURES_REST } : {}),
     assumed: source.assumed,
     ...report.rowAt(explanation.row),
+    ...(explanation.dependents.length > 0 && {
+      dependents: Object.fromEntries(
+        explanation.dependents.map((d) => [
+          d.label,
+          { position: d.name, hunts: d.hunts, others: d.others, steps: steps(d.steps) },
+        ]),
+      ),
+    }),
     actuators: Object.fromEntries(
       explanation.actuators.map((a) => [
         a.label,

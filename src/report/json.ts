@@ -20,6 +20,14 @@ export function* writeJson(report: Report): Generator<string> {
       'inputs',
       report.inputs.map((input) => ({ rest: null, ...input })),
     ),
+    ...(report.dependents.length === 0
+      ? []
+      : [
+          entry(
+            'dependents',
+            report.dependents.map((valve) => ({ rest: null, ...valve })),
+          ),
+        ]),
     entry('restRow', report.restRow),
   ];
   yield `{\n${head.join(',\n')},\n  "rows": [`;

@@ -34,6 +34,8 @@ export interface Report {
   readonly loadCase?: string;
   readonly inputs: readonly ReportInput[];
   readonly coils: readonly string[];
+  /** Valves whose position follows from pressures or from where an actuator stands. */
+  readonly dependents: readonly Omit<ReportInput, 'coils'>[];
   readonly actuators: readonly string[];
   /** Those of the actuators that turn. */
   readonly motors: readonly string[];
@@ -67,6 +69,8 @@ export interface ReportRow {
   readonly row: number;
   readonly state: Readonly<Record<string, string>>;
   readonly coils: Readonly<Record<string, 'on' | 'off'>>;
+  /** Positions that follow; absent where the circuit has no such valve. */
+  readonly dependents?: Readonly<Record<string, string>>;
   readonly actuators: Readonly<Record<string, ActuatorVerdict>>;
   readonly pumps: Readonly<Record<string, PumpVerdict>>;
   readonly lines: Readonly<Record<string, LineClass>>;
@@ -135,6 +139,11 @@ export function makeReport(source: ReportSource): Report {
         .map((c) => ({ name: c.name, position: input.positions[c.position] ?? '' })),
     })),
     coils: names.coilNames,
+    dependents: data.dependents.map(({ label, positions, rest }) => ({
+      label,
+      positions,
+      ...(rest === undefined ? {} : { rest: positions[rest] ?? String(rest) }),
+    })),
     actuators: names.actuators,
     motors: data.actuators.filter(({ motion }) => motion === 'rotary').map(({ label }) => label),
     pumps: names.pumps,
@@ -189,6 +198,7 @@ interface Names {
   readonly inputs: readonly string[];
   readonly coils: readonly Coil[];
   readonly coilNames: readonly string[];
+  readonly dependents: readonly string[];
   readonly actuators: readonly string[];
   readonly pumps: readonly string[];
   readonly lines: readonly string[];
@@ -201,10 +211,30 @@ function namesOf(table: StateTable): Names {
     inputs: inputs.map((input) => input.label),
     coils,
     coilNames: coils.map((coil) => coil.name),
+    dependents: table.data.dependents.map((valve) => valve.label),
     actuators: actuators.map((a) => a.label),
     pumps: pumps.map((p) => p.label),
     lines: lines.map((line) => line.name),
   };
+}
+
+/** What is to be said of the dependent valves beside their positions. */
+export function dependentNotes(table: StateTable, row: number): string[] {
+  if (table.hunts(row))
+    return table.data.dependents.map(
+      ({ label }) => `${label}: hunts, no position agrees with the pressures that it causes`,
+    );
+  return table.data.dependents.flatMap(({ label, positions }, i) => {
+    const others = table.dependentOthers(i, row).filter((p) => p !== table.dependent(i, row));
+    return [
+      ...(others.length > 0
+        ? [
+            `${label}: depends on what came before, could be at ${others.map((p) => positions[p] ?? '?').join(' or ')} as well`,
+          ]
+        : []),
+      ...(table.dependentRests(i, row) ? [`${label}: by open paths, the pressures may put it elsewhere`] : []),
+    ];
+  });
 }
 
 function reportRow({ table, explain }: ReportSource, names: Names, row: number): ReportRow {
@@ -228,6 +258,9 @@ function reportRow({ table, explain }: ReportSource, names: Names, row: number):
     row: row + 1,
     state: record(names.inputs, (i) => inputs[i]?.positions[positions[i] ?? 0] ?? ''),
     coils: record(names.coilNames, (i) => (isOn(names.coils[i], positions) ? 'on' : 'off')),
+    ...(names.dependents.length > 0 && {
+      dependents: record(names.dependents, (i) => table.data.dependents[i]?.positions[table.dependent(i, row)] ?? ''),
+    }),
     actuators,
     pumps,
     lines: record(names.lines, (i) => table.line(i, row)),
@@ -259,7 +292,7 @@ function restsOf(table: StateTable, row: number, explanation: Explanation | unde
 
 /** An explanation may say again what the table knows. */
 function notesOf(table: StateTable, row: number, explanation: Explanation | undefined): string[] {
-  const notes: string[] = [];
+  const notes = dependentNotes(table, row);
   table.data.actuators.forEach(({ label }, i) => {
     for (const note of table.actuatorNotes(i, row)) notes.push(`${label}: ${note}`);
   });
