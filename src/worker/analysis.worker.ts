@@ -8,11 +8,12 @@ import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
+import { planeBuffers } from './buffers.ts';
 import { Held } from './held.ts';
 import type { Holding, Question, Reply } from './messages.ts';
 
 const scope = self as unknown as {
-  postMessage(reply: Reply): void;
+  postMessage(reply: Reply, handOver?: ArrayBuffer[]): void;
   onmessage: ((event: MessageEvent<Question | Holding>) => void) | null;
 };
 
@@ -24,7 +25,7 @@ scope.onmessage = ({ data: question }) => {
     return;
   }
   try {
-    scope.postMessage(answer(question));
+    send(answer(question));
   } catch (error) {
     scope.postMessage({
       id: question.id,
@@ -33,6 +34,12 @@ scope.onmessage = ({ data: question }) => {
     });
   }
 };
+
+/** Nobody here reads a table once it is answered, so its planes go over without a copy. */
+function send(reply: Reply): void {
+  if (reply.say === 'table') scope.postMessage(reply, planeBuffers(reply.data));
+  else scope.postMessage(reply);
+}
 
 function answer(question: Question): Reply {
   const { id, circuit, conditions } = question;
@@ -83,6 +90,6 @@ function answerTable(id: number, circuit: Circuit, conditions: Conditions): Repl
     return { id, say: 'table', early: pressureRows === 0, data, findings: faults, took: performance.now() - began };
   };
   const rows = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
-  if (rows > SOON) scope.postMessage(reply(0));
+  if (rows > SOON) send(reply(0));
   return reply(BACKGROUND_ROWS);
 }

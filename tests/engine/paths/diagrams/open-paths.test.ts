@@ -17,7 +17,7 @@ import { randomCircuit } from '../../../random-circuit.ts';
 /** Every line, class and combination; returns how many combinations were compared. */
 function compare(net: Network, pumpsRunning: boolean, order?: readonly number[]): number {
   const conditions = { pumpsRunning, places: net.actuators.map(() => 'between' as const) };
-  const data = tabulate(net, conditions, unlimited, { pressureRows: 0 });
+  const data = tabulate(net, conditions, unlimited, { pressureRows: 0, rowByRow: true });
   const paths = openPathSets(net, conditions, order ? { order } : {});
   const table = new StateTable(data);
   expect(paths.sets.total).toBe(BigInt(data.count));
@@ -68,7 +68,7 @@ test('hunting combinations are those that the enumeration calls undetermined for
     ),
   );
   const conditions = { pumpsRunning: true, places: ['between' as const] };
-  const table = new StateTable(tabulate(net, conditions, unlimited, { pressureRows: 0 }));
+  const table = new StateTable(tabulate(net, conditions, unlimited, { pressureRows: 0, rowByRow: true }));
   const paths = openPathSets(net, conditions);
   expect(table.actuator(0, 0)).toBe('undetermined');
   expect(paths.sets.count(paths.hunts)).toBe(1n);
