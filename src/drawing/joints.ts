@@ -24,12 +24,13 @@ interface Spans {
 }
 
 /** Straight pieces of each line, overlapping and touching ones merged. */
-function spansOf(circuit: Circuit, routes: Routes): Spans {
+function spansOf(circuit: Circuit, routes: Routes, only?: ReadonlySet<number>): Spans {
   const lines = lineNumbers(circuit);
   const flat: Span[] = [];
   const upright: Span[] = [];
   for (const connection of circuit.connections) {
     const line = lines.get(connection.id) ?? -1;
+    if (only && !only.has(line)) continue;
     const points = routes.get(connection.id) ?? [];
     for (let i = 1; i < points.length; i++) {
       const a = points[i - 1] as Point;
@@ -57,10 +58,10 @@ function merge(spans: Span[]): Span[] {
 
 /**
  * Where three or more ends of one line meet: branches of its routes, and ports that lines leave in
- * different directions (the port itself is one end). In the order of lines, then down the sheet.
+ * different directions (the port itself is one end). In the order of lines, then down the sheet. `only`: of these lines.
  */
-export function junctionDots(circuit: Circuit, routes: Routes): Dot[] {
-  const spans = spansOf(circuit, routes);
+export function junctionDots(circuit: Circuit, routes: Routes, only?: ReadonlySet<number>): Dot[] {
+  const spans = spansOf(circuit, routes, only);
   const ends = new Map<string, { at: Point; line: number; ways: Set<string> }>();
   const note = (line: number, at: Point, way: string): void => {
     const key = `${line} ${at.x} ${at.y}`;
@@ -86,18 +87,23 @@ export function junctionDots(circuit: Circuit, routes: Routes): Dot[] {
       if (s.fixed < u.high) note(s.line, at, 'down');
     }
   }
-  notePorts(circuit, note);
+  notePorts(circuit, note, only);
   return [...ends.values()]
     .filter((e) => e.ways.size >= 3)
     .map(({ at, line }) => ({ at, line }))
     .sort((a, b) => a.line - b.line || a.at.y - b.at.y || a.at.x - b.at.x);
 }
 
-function notePorts(circuit: Circuit, note: (line: number, at: Point, way: string) => void): void {
+function notePorts(
+  circuit: Circuit,
+  note: (line: number, at: Point, way: string) => void,
+  only?: ReadonlySet<number>,
+): void {
   const lines = lineNumbers(circuit);
   const parts = new Map(circuit.parts.map((p) => [p.id, p]));
   const done = new Set<string>();
   for (const connection of circuit.connections) {
+    if (only && !only.has(lines.get(connection.id) ?? -1)) continue;
     for (const ref of [connection.from, connection.to]) {
       const part = parts.get(ref.part);
       const key = `${ref.part}.${ref.port}`;

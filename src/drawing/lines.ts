@@ -7,6 +7,15 @@ const key = (ref: PortRef): string => `${ref.part}.${ref.port}`;
 
 /** Connections that share a port are one line. Lines of different number never join where they cross. */
 export function lineNumbers(circuit: Circuit): LineNumbers {
+  let numbers = known.get(circuit.connections);
+  if (!numbers) known.set(circuit.connections, (numbers = numbered(circuit)));
+  return numbers;
+}
+
+/** Parts may move as they like: the lines are those of the list of connections. */
+const known = new WeakMap<Circuit['connections'], LineNumbers>();
+
+function numbered(circuit: Circuit): LineNumbers {
   const parent = new Map<string, string>();
   const find = (start: string): string => {
     let at = start;

@@ -20,14 +20,20 @@ interface Covered {
 
 /**
  * What each connection has to draw so that a shared trunk is drawn once: dashes, chevrons and hatches
- * laid twice would blur each other.
+ * laid twice would blur each other. `only`: of these lines.
  */
-export function freshPieces(circuit: Circuit, routes: Routes, numbers: LineNumbers): Map<string, Piece[]> {
+export function freshPieces(
+  circuit: Circuit,
+  routes: Routes,
+  numbers: LineNumbers,
+  only?: ReadonlySet<number>,
+): Map<string, Piece[]> {
   const covered = new Map<number, Covered[]>();
   const out = new Map<string, Piece[]>();
   for (const connection of circuit.connections) {
     const points = routes.get(connection.id) ?? [];
     const line = numbers.get(connection.id) ?? -1;
+    if (only && !only.has(line)) continue;
     const before = covered.get(line) ?? [];
     out.set(connection.id, piecesOf(points, before));
     const added = points.slice(1).map((b, i) => spanOf(points[i] as Point, b));

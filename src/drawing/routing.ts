@@ -21,7 +21,8 @@ export interface RoutingSheet {
   readonly laid: LaidSegment[];
 }
 
-interface End {
+/** One end of a route. */
+export interface RoutingEnd {
   readonly port: PlacedPort;
   /** Where the line has left the part; the port itself at a joint. */
   readonly stub: Point;
@@ -133,7 +134,7 @@ function stillFits(parts: ReadonlyMap<string, Part>, connection: Connection, poi
 
 const same = (a: Point, b: Point): boolean => a.x === b.x && a.y === b.y;
 
-function endOf(sheet: RoutingSheet, partId: string, port: string): End | undefined {
+export function endOf(sheet: RoutingSheet, partId: string, port: string): RoutingEnd | undefined {
   const part = sheet.parts.get(partId);
   if (!part) return undefined;
   const placed = portOf(part, { part: partId, port });
@@ -158,7 +159,7 @@ function stubOf(port: PlacedPort, box: Box): Point {
 }
 
 /** Where a bent line leaves the part: no further out than a bend that the user set straight before the port. */
-function outOf(end: End, bend: Point | undefined): Point {
+function outOf(end: RoutingEnd, bend: Point | undefined): Point {
   const { at, side } = end.port;
   if (!bend || end.out === undefined) return end.stub;
   const out = vector(side);
@@ -169,7 +170,7 @@ function outOf(end: End, bend: Point | undefined): Point {
 }
 
 /** Ports that look straight at each other with nothing between them need no search. */
-function facing(sheet: RoutingSheet, from: End, to: End): boolean {
+function facing(sheet: RoutingSheet, from: RoutingEnd, to: RoutingEnd): boolean {
   const a = from.port;
   const b = to.port;
   if (from.out === undefined || to.out === undefined || from.out !== opposite(to.out)) return false;
@@ -188,8 +189,8 @@ function facing(sheet: RoutingSheet, from: End, to: End): boolean {
 function searchAll(
   sheet: RoutingSheet,
   connection: Connection,
-  from: End,
-  to: End,
+  from: RoutingEnd,
+  to: RoutingEnd,
   via: readonly Point[],
   window: Box,
 ): Found | undefined {
@@ -229,7 +230,7 @@ function straightOn(a: Point, b: Point, headings: readonly Direction[]): Directi
   return headings.every((heading) => heading === opposite(way)) ? undefined : way;
 }
 
-const isJointEnd = (end: End, partId: string): boolean => end.out === undefined && end.port.ref.part === partId;
+const isJointEnd = (end: RoutingEnd, partId: string): boolean => end.out === undefined && end.port.ref.part === partId;
 
 /** The last resort: straight out, across in the middle, straight in. */
 function plainRoute(via: readonly Point[]): Point[] {

@@ -11,22 +11,16 @@ import { showActiveBox } from './active-box.ts';
 import type { Routes } from './geometry.ts';
 import { boxOfPoints } from './geometry.ts';
 import type { SceneBlock } from './blocks.ts';
-import { sceneBlocks } from './blocks.ts';
-import { hopsOf, withHops } from './hops.ts';
-import type { Hops } from './hops.ts';
+import { withHops } from './hops.ts';
 import type { Dot } from './joints.ts';
-import { crossings, junctionDots } from './joints.ts';
-import { lineLabels } from './line-labels.ts';
-import type { LabelSpots, PartWords, SceneLabel } from './labels.ts';
-import { labelBox, labelSpots, sceneLabels } from './labels.ts';
+import type { PartWords, SceneLabel } from './labels.ts';
+import { labelBox, sceneLabels } from './labels.ts';
 import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
-import type { LineNumbers } from './lines.ts';
-import { lineNumbers } from './lines.ts';
-import type { Piece } from './pieces.ts';
-import { freshPieces } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
 import { ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
+import { stageOf } from './stage.ts';
+import type { Before, Stage } from './stage.ts';
 import type { LineLook, Stroke } from './strokes.ts';
 import { placePrimitives } from './turned.ts';
 
@@ -70,6 +64,8 @@ export interface SceneState {
   readonly lines?: ReadonlyMap<string, LineLook>;
   /** Part id → active position and stroke, and words beside its name (position, verdict). */
   readonly parts?: ReadonlyMap<string, Look & PartWords>;
+  /** While something is dragged: the circuit and routes as they stood before, of which all that did not move is kept. */
+  readonly from?: Before | undefined;
   /** Flat lines hop over those they cross; else they cross plainly, as ISO 1219-1 has it. */
   readonly hops?: boolean;
 }
@@ -78,7 +74,7 @@ const IDLE: LineLook = { class: 'idle' };
 
 export function buildScene(circuit: Circuit, routes: Routes, state: SceneState = {}): Scene {
   const looks = (id: string): LineLook => state.lines?.get(id) ?? IDLE;
-  const stage = stageOf(circuit, routes, state.parts !== undefined);
+  const stage = stageOf(circuit, routes, state.parts !== undefined, state.from);
   const parts = circuit.parts.map((part) =>
     scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)),
   );
@@ -103,50 +99,6 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
     labels,
     labelRooms: stage.rooms,
   };
-}
-
-/** What a scene needs that does not depend on the state: computed once for a circuit and its routes. */
-interface Stage {
-  readonly numbers: LineNumbers;
-  readonly pieces: ReadonlyMap<string, readonly Piece[]>;
-  readonly dots: readonly Dot[];
-  readonly spots: LabelSpots;
-  readonly rooms: readonly Box[];
-  readonly lineLabels: readonly SceneLabel[];
-  readonly blocks: readonly SceneBlock[];
-  /** Asked for seldom. */
-  readonly hops: () => Hops;
-  /** `part.port` → connections at it. */
-  readonly atPort: ReadonlyMap<string, readonly string[]>;
-}
-
-const stages = new WeakMap<Circuit, { readonly routes: Routes; readonly noted: boolean; readonly stage: Stage }>();
-
-function stageOf(circuit: Circuit, routes: Routes, noted: boolean): Stage {
-  const known = stages.get(circuit);
-  if (known && known.routes === routes && known.noted === noted) return known.stage;
-  const numbers = lineNumbers(circuit);
-  const atPort = new Map<string, string[]>();
-  for (const { id, from, to } of circuit.connections) {
-    for (const ref of [from, to]) atPort.set(key(ref), [...(atPort.get(key(ref)) ?? []), id]);
-  }
-  const spots = labelSpots(circuit, routes, noted);
-  const rooms = [...spots.values()].map(({ box }) => box);
-  const named = lineLabels(circuit, routes, rooms);
-  let hops: Hops | undefined;
-  const stage: Stage = {
-    numbers,
-    pieces: freshPieces(circuit, routes, numbers),
-    dots: junctionDots(circuit, routes),
-    spots,
-    rooms: [...rooms, ...named.map(labelBox)],
-    lineLabels: named,
-    blocks: sceneBlocks(circuit),
-    hops: () => (hops ??= hopsOf(crossings(circuit, routes))),
-    atPort,
-  };
-  stages.set(circuit, { routes, noted, stage });
-  return stage;
 }
 
 function portPens(stage: Stage, part: Part, looks: (id: string) => LineLook): PortPen[] {

@@ -34,8 +34,9 @@ class SheetDrawing {
   /** While parts are dragged: the circuit with them moved. */
   preview = $state.raw<Circuit | undefined>();
 
+  #rest: Circuit = $derived(placeMissing(editor.circuit));
   /** With a place for every part that the file gives none. */
-  circuit: Circuit = $derived(placeMissing(this.preview ?? editor.circuit));
+  circuit: Circuit = $derived(this.preview ? placeMissing(this.preview) : this.#rest);
   /** For edits that move parts which have no place of their own yet. */
   places: Places = $derived(new Map(this.circuit.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
 
@@ -52,7 +53,7 @@ class SheetDrawing {
     const { answer, table } = session;
     const numbers = figures.current;
     if (!answer || !table || numbers?.status !== 'solved') return new Map();
-    return realFlows(answer.circuit, table, numbers, (part) => session.positionOf(part));
+    return realFlows(answer.circuit, table, numbers);
   });
 
   #ways = $derived.by(() => {
@@ -71,7 +72,7 @@ class SheetDrawing {
     const looks = new Map(
       circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
     );
-    const state: SceneState = { lines: looks, parts: states, hops: sheetView.hops };
+    const state: SceneState = { lines: looks, parts: states, hops: sheetView.hops, from: this.preview && { circuit: this.#rest, routes: this.#layer.settled } };
     const scene = buildScene(circuit, routes, state);
     return {
       ...scene,

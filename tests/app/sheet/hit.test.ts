@@ -36,8 +36,8 @@ test('a hit on a line gives the foot on it', () => {
 });
 
 test('the rubber band takes what lies wholly inside', () => {
-  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 25 })).toEqual({ parts: ['T1', 'P1'], connections: ['c1'] });
-  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 10 })).toEqual({ parts: ['P1'], connections: [] });
+  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 25 })).toEqual({ parts: ['T1', 'P1'], connections: ['c1'], labels: [] });
+  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 10 })).toEqual({ parts: ['P1'], connections: [], labels: [] });
 });
 
 test('reading order: rows from the top, each part followed by its ports, lines last', () => {
