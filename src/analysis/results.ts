@@ -47,13 +47,7 @@ export type {
   TrappedSummary,
 } from './bleed-results.ts';
 export type { AskAnswer, Next } from './ask-results.ts';
-export type {
-  CoilLogic,
-  CoilLogicCoil,
-  LogicSignal,
-  LogicStepWords,
-  SignalGroupWords,
-} from './coil-logic-results.ts';
+export type { CoilLogic, CoilLogicCoil, LogicSignal, LogicStepWords, SignalGroupWords } from './coil-logic-results.ts';
 export type {
   FoldAnswer,
   FoldBy,
