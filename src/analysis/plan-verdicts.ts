@@ -327,7 +327,7 @@ class StepJudge {
         'pressure left trapped',
         'caution',
         [],
-        `At the end pressure stays shut in in ${names}.`,
+        `At the end pressure stays shut in: ${names}.`,
         'Let it down before anybody works there: bleed gives the list of lever moves. Follow the machine’s documents.',
         { lines: trapped },
       );

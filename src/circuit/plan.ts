@@ -25,7 +25,10 @@ export interface PlanStep {
   readonly levers?: Readonly<Record<string, string>>;
   /** Pumps that stand still during the step, part ids. */
   readonly stopped?: readonly string[];
-  /** Motions in trade notation, labels of actuators with + (out) or - (in): `CLAMP+ DRILL-`; absent = nothing is to move. */
+  /**
+   * Motions in trade notation, labels of actuators with + (out) or - (in), one after another: `CLAMP+ DRILL+`;
+   * in parentheses in any order: `(CLAMP- DRILL-)`. Absent = nothing is to move.
+   */
   readonly expect?: string;
   readonly ends: StepEnd;
   /** Time that the step may take at most (`"20 s"`); absent = what the checker allows every step. */
@@ -34,7 +37,7 @@ export interface PlanStep {
 }
 
 export type StepEnd = (
-  | /** Every expected motion has come to its end stop. */
+  | /** Every expected motion has come to its end stop; if none is expected, nothing moves any more and no accumulator fills or empties. */
     { readonly by: 'motion' }
     /** A sensor on an actuator (part id): `in`, `out`, or a distance from in. */
   | { readonly by: 'sensor'; readonly actuator: string; readonly at: string }

@@ -88,7 +88,7 @@ function doneBy({ ends, expect }: PlayStep): (machine: Machine, steady: Steady) 
   switch (ends.by) {
     case 'motion': {
       const wanted = expect.flat();
-      if (wanted.length === 0) return (_, { speeds }) => speeds.every((speed) => speed === 0);
+      if (wanted.length === 0) return (_, { speeds, stores }) => [...speeds, ...stores].every((flow) => flow === 0);
       return (machine, steady) => wanted.every((motion) => isThere(motion, machine, steady));
     }
     case 'sensor': {

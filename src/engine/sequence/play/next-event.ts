@@ -26,7 +26,7 @@ export interface NextEvent {
 /** Events closer together than this, s, are one. */
 export const TOGETHER = 1e-9;
 /** Share of its pressure by which a gas may change within one interval, and of its stroke by which a sprung actuator may move. */
-const GAS_SHARE = 0.01;
+const GAS_SHARE = 0.025;
 const SPRING_SHARE = 1 / 16;
 
 /** The first thing to happen if everything goes on as in `steady`. */

@@ -6,7 +6,7 @@ import { fullAt, stopAt } from './machine.ts';
 import type { Machine } from './machine.ts';
 import { MotionLog } from './motion-log.ts';
 import type { Ledger } from './motion-log.ts';
-import { nextEvent, rollerTravels } from './next-event.ts';
+import { nextEvent, rollerTravels, TOGETHER } from './next-event.ts';
 import type { NextEvent, Travel } from './next-event.ts';
 import { PressureMemory } from './pressure-memory.ts';
 import { steadyNow, steadyOver } from './steady.ts';
@@ -52,6 +52,8 @@ const MOST_EVENTS = 5_000;
 const MOST_AT_ONCE = 40;
 /** A mean flow below this share of the first one shows that the interval is long against what it settles in. */
 const STIFF = 0.5;
+/** Share of an interval by which a switch is overshot, so that rounding does not leave it short. */
+const HAIR = 1e-4;
 
 /** Plays commands through the circuit, event by event: steady state, constant speeds, next event. */
 export class Player {
@@ -63,6 +65,8 @@ export class Player {
   readonly #budget: Budget;
   machine: Machine;
   time: number;
+  /** Pressures at the switches one event ago, to see when they will turn. */
+  #last: { readonly time: number; readonly pressures: readonly number[] } | undefined;
 
   constructor(net: Network, machine: Machine, budget: Budget, shared?: Player) {
     this.net = net;
@@ -94,6 +98,7 @@ export class Player {
 
   #play(run: Run, start: number, log: MotionLog, events: TraceEvent[]): RunEnd {
     const travels = [...run.travels, ...this.#rollers];
+    this.#last = undefined;
     let atOnce = 0;
     let before: Steady | undefined;
     for (let count = 0; count < MOST_EVENTS; count++) {
@@ -111,7 +116,7 @@ export class Player {
       noteSpeeds(before, steady, events);
       log.moment(this.time, this.machine, steady);
       const elapsed = this.time - start;
-      if (run.done(this.machine, steady) || (run.after !== undefined && elapsed >= run.after)) {
+      if (run.done(this.machine, steady) || (run.after !== undefined && elapsed >= run.after - TOGETHER)) {
         events.push({ kind: 'step end', step: run.step });
         this.#sample(run, steady, events);
         return { as: 'done' };
@@ -186,7 +191,9 @@ export class Player {
     left: number,
   ): { readonly mean: Steady; readonly next: NextEvent } {
     const { net, machine } = this;
-    const first = nextEvent(net, machine, steady, travels);
+    const free = nextEvent(net, machine, steady, travels);
+    const turn = this.#switchAhead();
+    const first = turn < free.after ? { ...free, after: turn, reached: [], empty: [], full: [], stage: true } : free;
     const elastic =
       steady.stores.some((flow) => flow !== 0) ||
       net.actuators.some(({ forces }, i) => forces.spring !== 0 && steady.speeds[i] !== 0);
@@ -212,6 +219,25 @@ export class Player {
       if (Math.abs(Math.min(next.after, left) - span) <= 1e-12 * span) break;
     }
     return { mean: { ...mean, rivals: steady.rivals }, next };
+  }
+
+  /** s until a switch turns, if the pressures go on as they have come; a hair longer, so that it has turned then. */
+  #switchAhead(): number {
+    const { net, machine, time } = this;
+    const now = net.switches.map(({ line }) => machine.pressures[line] ?? 0);
+    const last = this.#last;
+    this.#last = { time, pressures: now };
+    if (!last || last.time >= time) return Infinity;
+    const spans = net.switches.flatMap(({ on, off }, i) => {
+      const pressure = now[i] ?? 0;
+      const slope = (pressure - (last.pressures[i] ?? 0)) / (time - last.time);
+      const wanted = machine.switches[i] ? off : on;
+      const span = (wanted - pressure) / slope;
+      return Number.isFinite(span) && span > 0 && slope > 0 === !machine.switches[i]
+        ? [span * (1 + HAIR) + TOGETHER]
+        : [];
+    });
+    return Math.min(Infinity, ...spans);
   }
 
   #advance(mean: Steady, next: NextEvent, log: MotionLog, events: TraceEvent[]): void {
