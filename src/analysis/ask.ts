@@ -20,7 +20,7 @@ import { PressureSolver } from '../engine/table/resolve.ts';
 import type { Plane, TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, MOST_SOLVED, networkOf, pathConditions, tabulate } from './analyse.ts';
 import type { AskAnswer } from './ask-results.ts';
-import { entangled } from './outcomes.ts';
+import { entangled, refuseDependents } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
 /**
@@ -58,6 +58,8 @@ export function askTable(
       rows: { matches: sure, undecided: open },
     });
   }
+  const follows = refuseDependents(net);
+  if (follows) return bad(follows);
   try {
     const found = entangled((): AskAnswer => {
       const where = pathConditions(net, conditions);
@@ -110,7 +112,9 @@ export function figuresFor(
   const unsolved = tooManyToSolve(data.count, wanted);
   if (unsolved) return bad(unsolved);
   const net = networkOf(circuit, conditions);
-  return good(figurePlanes(new PressureSolver(net, pathConditions(net, conditions), data.dependentPlanes), data, wanted, budget));
+  return good(
+    figurePlanes(new PressureSolver(net, pathConditions(net, conditions), data.dependentPlanes), data, wanted, budget),
+  );
 }
 
 /** How a rule or question may go on where its text ends. */

@@ -6,10 +6,11 @@ import { BleedModel } from '../engine/sequence/bleed-model.ts';
 import { planBleed, planWithPoints } from '../engine/sequence/bleed.ts';
 import type { BleedMove } from '../engine/sequence/bleed.ts';
 import { loseCoils, runningPaths } from '../engine/sequence/power-loss.ts';
+import { settledPlanes } from '../engine/table/dependents.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
 import { TRAP_REASONS } from '../engine/table/words.ts';
 import type { ActuatorVerdict } from '../engine/table/words.ts';
-import { explainRow, networkOf } from './analyse.ts';
+import { explainRow, MOST_SOLVED, networkOf } from './analyse.ts';
 import type {
   BleedAnswer,
   BleedStep,
@@ -24,11 +25,19 @@ import type { Conditions } from './results.ts';
 /** What holds besides the pumps, which are stopped here. */
 export type BleedConditions = Pick<Conditions, 'places' | 'loadCase'>;
 
-function modelOf(circuit: Circuit, conditions: BleedConditions): { model: BleedModel; words: BleedWords } {
+function modelOf(
+  circuit: Circuit,
+  conditions: BleedConditions,
+  budget: Budget,
+): { model: BleedModel; words: BleedWords } {
   const net = networkOf(circuit, conditions);
   const { places = {} } = conditions;
   const standing = net.actuators.map((actuator) => places[net.parts[actuator.part]?.id ?? ''] ?? ('between' as const));
-  return { model: new BleedModel(net, { pumpsRunning: true, places: standing }), words: new BleedWords(net, circuit) };
+  const where = { pumpsRunning: true, places: standing };
+  const running = settledPlanes(net, where, budget, MOST_SOLVED);
+  const stopped = settledPlanes(net, { ...where, pumpsRunning: false }, budget, MOST_SOLVED);
+  const settings = running && stopped && { running, stopped };
+  return { model: new BleedModel(net, where, [], settings), words: new BleedWords(net, circuit) };
 }
 
 /**
@@ -41,7 +50,7 @@ export function bleedPlan(
   row: number,
   budget: Budget = unlimited,
 ): BleedAnswer {
-  const { model, words } = modelOf(circuit, conditions);
+  const { model, words } = modelOf(circuit, conditions, budget);
   const plan = planBleed(model, row, { budget });
   const points = planWithPoints(model, plan, { budget });
   const { net } = model;
@@ -89,7 +98,7 @@ function stepsOf(words: BleedWords, moves: readonly BleedMove[]): BleedStep[] {
  * pumps running on and stopped. Throws a RangeError for a row that is not there.
  */
 export function powerLoss(circuit: Circuit, conditions: BleedConditions, row: number): PowerLossAnswer {
-  const { model, words } = modelOf(circuit, conditions);
+  const { model, words } = modelOf(circuit, conditions, unlimited);
   const rows = loseCoils(model, runningPaths(model), row);
   const { net, strides } = model;
   const verdicts = (pumps: Conditions['pumps'], at: number): ActuatorVerdict[] =>

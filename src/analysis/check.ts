@@ -16,6 +16,7 @@ import type { TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, networkOf, pathConditions, tabulate } from './analyse.ts';
 import { figuresFor, tooManyToSolve } from './ask.ts';
 import type { Check, CheckedRule } from './check-results.ts';
+import { refuseDependents } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
 /** A rule as it was typed. */
@@ -79,6 +80,8 @@ export function checkRules(
     if (!figure.ok) return figure;
     answerTo = (rule) => checkRule(data, rule, figure.value);
   } else {
+    const follows = refuseDependents(net);
+    if (follows) return bad(follows);
     const where = pathConditions(net, conditions);
     const heartbeat = (): void => {
       if (budget.cancelled()) throw new Cancelled();

@@ -1,13 +1,14 @@
 import type { Budget } from '../base/budget.ts';
 import { Cancelled } from '../base/budget.ts';
 import { bad, good } from '../base/result.ts';
-import type { Result } from '../base/result.ts';
+import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { TooManyNodes } from '../engine/paths/diagrams/diagrams.ts';
 import { openPathSets } from '../engine/paths/diagrams/open-paths.ts';
 import { pathOutcomes, tableOutcomes } from '../engine/table/fold/outcome-sets.ts';
 import type { OutcomeSource } from '../engine/table/fold/outcome-sets.ts';
 import type { TableData } from '../engine/table/table-data.ts';
+import { dependentLabel } from '../network/dependents.ts';
 import type { Network } from '../network/network.ts';
 import { MOST_ROWS, networkOf, pathConditions, tabulate } from './analyse.ts';
 import type { Conditions } from './results.ts';
@@ -38,11 +39,24 @@ export function outcomesOf(
     const data = table ?? tabulate(circuit, conditions, budget);
     return good({ net, source: tableOutcomes(data, heartbeat), listed: true });
   }
+  const follows = refuseDependents(net);
+  if (follows) return bad(follows);
   return entangled(() => {
     const where = pathConditions(net, conditions);
     const paths = openPathSets(net, where, { heartbeat });
     return { net, source: pathOutcomes(net, where, paths), listed: false };
   });
+}
+
+/** Sets of combinations do not follow valves that pressures or actuators move; undefined if there are none. */
+export function refuseDependents(net: Network): Problem | undefined {
+  if (net.dependents.length === 0) return undefined;
+  const labels = net.dependents.map((_, d) => dependentLabel(net, d));
+  return {
+    where: 'circuit',
+    what: `There are too many combinations to list, and ${labels.join(', ')} ${labels.length > 1 ? 'follow' : 'follows'} from pressures or from where an actuator stands: sets of combinations do not know that.`,
+    remedy: `Ask about a part of the circuit by itself, with at most ${MOST_ROWS.toLocaleString('en')} combinations.`,
+  };
 }
 
 /** Sets that do not fit are a problem in words. */

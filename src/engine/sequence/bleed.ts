@@ -82,7 +82,7 @@ export function planWithPoints(model: BleedModel, plan: BleedPlan, options: Blee
   const stood = model.stand(plan.row, model.before(plan.row));
   const planWith = (wanted: readonly number[]): PointPlan => {
     const points = [...new Set(wanted)].sort((a, b) => a - b);
-    const open = new BleedModel(net, model.conditions, points);
+    const open = new BleedModel(net, model.conditions, points, model.settings);
     const first = open.stand(plan.row, stood.held);
     const { best, proven } = search(open, rootOf(net, first), options);
     return {

@@ -48,4 +48,5 @@ export function loseCoils(model: BleedModel, running: RowPathsCache, row: number
 }
 
 /** The open paths of every row with the pumps running. */
-export const runningPaths = (model: BleedModel): RowPathsCache => new RowPathsCache(model.net, model.paths.edges, true);
+export const runningPaths = (model: BleedModel): RowPathsCache =>
+  new RowPathsCache(model.net, model.runningEdges, true);

@@ -8,7 +8,7 @@ import type { DependentAnswer } from '../flow/dependents.ts';
 import { constantPlanes, PathDependents, settleByPaths } from '../paths/dependents.ts';
 import type { DependentPlanes } from '../paths/edges.ts';
 import type { PathConditions } from '../paths/reach.ts';
-import type { PressureSolver } from './resolve.ts';
+import { PressureSolver } from './resolve.ts';
 import type { Plane } from './table-data.ts';
 
 /** Where the dependent valves stand in every row, and how far that is certain. */
@@ -134,6 +134,17 @@ export function settleRows(
     searched &&= found.searched;
   }
   return { planes, hunts, others, moved, byPressure: true, searched };
+}
+
+/** Where the dependent valves of every row stand, for engines that only need their paths; undefined if there are none. */
+export function settledPlanes(
+  net: Network,
+  conditions: PathConditions,
+  budget: Budget,
+  rows: number,
+): DependentPlanes | undefined {
+  if (net.dependents.length === 0) return undefined;
+  return settleRows(net, conditions, budget, rows, new PressureSolver(net, conditions))?.planes;
 }
 
 /** Rows in which some other setting agrees as well. */
