@@ -19,6 +19,7 @@ import type {
   NetPressureSwitch,
   NetPressureValve,
   NetPump,
+  NetRating,
   NetRelief,
   Network,
 } from './network.ts';
@@ -38,6 +39,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
   const accumulators: NetAccumulator[] = [];
   const actuators: NetActuator[] = [];
   const switches: NetPressureSwitch[] = [];
+  const ratings: NetRating[] = [];
   const openPorts: NetOpenPort[] = [];
   const commanded = circuit.parts.filter((part) => kindOf(part.kind).input?.(part)).length;
   const found: FoundDependent[] = [];
@@ -137,6 +139,8 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
           break;
       }
     }
+    for (const { ports, ...rating } of kind.ratings?.(part) ?? [])
+      for (const port of ports) ratings.push({ part: index, line: at(port), port, ...rating });
     for (const port of kind.ports(part)) {
       const line = at(port.id);
       if (line >= shown && port.leftOpen) openPorts.push({ part: index, port: port.id, line, ...port.leftOpen });
@@ -159,6 +163,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     accumulators,
     actuators,
     switches,
+    ratings,
     parts,
     openPorts,
     lineOf,

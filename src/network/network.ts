@@ -17,6 +17,7 @@ export interface Network {
   readonly accumulators: readonly NetAccumulator[];
   readonly actuators: readonly NetActuator[];
   readonly switches: readonly NetPressureSwitch[];
+  readonly ratings: readonly NetRating[];
   readonly parts: readonly NetPart[];
   /** Ports with nothing on them that have something to say about it. */
   readonly openPorts: readonly NetOpenPort[];
@@ -179,6 +180,17 @@ export interface NetAccumulator {
   readonly pressure: number;
   /** m³ of gas when empty of oil; absent = not given. */
   readonly volume?: number;
+}
+
+/** A port of a part stands on this line and is built for no more than `pressure` Pa. */
+export interface NetRating {
+  readonly part: number;
+  readonly line: number;
+  readonly port: string;
+  readonly pressure: number;
+  /** Nobody entered it. */
+  readonly assumed: boolean;
+  readonly tankPort: boolean;
 }
 
 /** Comes on at or above `on` Pa, goes off at or below `off`, and keeps what it was between the two. */

@@ -34,8 +34,20 @@ export interface PartKind {
   readonly bounds: (part: Part) => Box;
   /** Outline over all positions, where it is larger than `bounds` (a valve's strip slides). */
   readonly reach?: (part: Part) => Box;
+  /** Pressures that its ports are built for. */
+  readonly ratings?: (part: Part) => readonly Rating[];
   /** Checks of its own data beyond the settings (the directional valve's). */
   readonly check?: (part: Part) => readonly PartProblem[];
+}
+
+export interface Rating {
+  readonly ports: readonly string[];
+  /** Pa */
+  readonly pressure: number;
+  /** Nobody entered it. */
+  readonly assumed: boolean;
+  /** Return ports of a valve, which often stand less than the others. */
+  readonly tankPort: boolean;
 }
 
 /** `where` is relative to the part, e.g. `settings.flow`; an error unless it says otherwise. */

@@ -13,12 +13,14 @@ import {
   travelOf,
 } from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
+import { ratingSetting, readRating } from './ratings.ts';
 import { readSi } from './settings.ts';
 
 const BORE = boreSetting('50 mm');
 const ROD = rodSetting('36 mm');
 const STROKE = strokeSetting('400 mm');
 const PORTS = [capPort(), rodPort()];
+const RATING = ratingSetting('250 bar');
 
 export const cylinder: PartKind = {
   kind: 'cylinder',
@@ -27,7 +29,7 @@ export const cylinder: PartKind = {
   help: 'Double acting, rod at one end: oil into A extends it, oil into B retracts it.',
   words: ['double acting cylinder', 'differential cylinder', 'ram', 'actuator', 'jack'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all],
+  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, RATING],
   readyMade: [
     { id: 'cylinder', title: 'Cylinder', make: () => ({}) },
     {
@@ -38,6 +40,7 @@ export const cylinder: PartKind = {
     },
   ],
   ports: () => PORTS,
+  ratings: (part) => [readRating(part, RATING, ['A', 'B'])],
   elements: (part) => {
     const areas = readAreas(part, BORE, ROD);
     return [

@@ -1,6 +1,7 @@
 import type { Operator, Part, ValveData } from '../circuit/model.ts';
 import type { InputSpec, PartKind } from './contract.ts';
 import { lossSettings, readLoss } from './losses.ts';
+import { ratingSetting, readRating, TANK_PORT_RATING } from './ratings.ts';
 import { checkValve } from './valve-check.ts';
 import { drawValve, valveBounds, valveReach } from './valve-drawing.ts';
 import { DEFAULT_VALVE, VALVE_FORMS } from './valve-forms.ts';
@@ -8,6 +9,7 @@ import { valvePorts } from './valve-frame.ts';
 import { valveElements } from './valve-paths.ts';
 
 const LOSS = lossSettings('40 L/min', '5 bar');
+const RATING = ratingSetting('350 bar');
 
 export const valveOf = (part: Part): ValveData => part.valve ?? DEFAULT_VALVE;
 
@@ -35,9 +37,14 @@ export const directionalValve: PartKind = {
   help: 'Joins and shuts its ports by position. Ways, positions, paths and operators are free. One input of the table.',
   words: ['DCV', 'spool valve', 'control valve', 'way valve'],
   prefix: 'V',
-  settings: [...LOSS.all],
+  settings: [...LOSS.all, RATING, TANK_PORT_RATING],
   readyMade: VALVE_FORMS,
   ports: (part) => valvePorts(valveOf(part)),
+  ratings: (part) => {
+    const returns = new Set(valvePorts(valveOf(part)).flatMap(({ id, role }) => (role === 'return' ? [id] : [])));
+    const others = valvePorts(valveOf(part)).flatMap(({ id }) => (returns.has(id) ? [] : [id]));
+    return [readRating(part, RATING, others), readRating(part, TANK_PORT_RATING, [...returns], true)];
+  },
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
   input: (part) => valveInput(valveOf(part)),
   draw: (part, look) => drawValve(valveOf(part), look.position),

@@ -10,6 +10,7 @@ import {
   travelOf,
 } from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
+import { ratingSetting, readRating } from './ratings.ts';
 import { readSi } from './settings.ts';
 import { boxOf, leftOpen, port } from './shapes.ts';
 
@@ -22,6 +23,7 @@ const OPEN = leftOpen(
   'Connect both sides, or plug one on purpose.',
 );
 const PORTS = [port('A', [-5, 3], 'down', 'working', OPEN), port('B', [5, 3], 'down', 'working', OPEN)];
+const RATING = ratingSetting('250 bar');
 
 export const doubleRodCylinder: PartKind = {
   kind: 'double-rod-cylinder',
@@ -30,9 +32,10 @@ export const doubleRodCylinder: PartKind = {
   help: 'Rod at both ends, equal areas: the same speed and force both ways. Oil into A moves it towards B.',
   words: ['through rod cylinder', 'double ended', 'equal area', 'table drive', 'actuator'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all],
+  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, RATING],
   readyMade: [{ id: 'double-rod-cylinder', title: 'Double-rod cylinder', make: () => ({}) }],
   ports: () => PORTS,
+  ratings: (part) => [readRating(part, RATING, ['A', 'B'])],
   elements: (part) => {
     const { annulus } = readAreas(part, BORE, ROD);
     return [

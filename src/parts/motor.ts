@@ -1,5 +1,6 @@
 import type { PartKind } from './contract.ts';
 import { checkLoad, MOTOR_LOAD, readLoad } from './load.ts';
+import { ratingSetting, readRating } from './ratings.ts';
 import { quantitySetting, readSi, type QuantitySpec } from './settings.ts';
 import { boxOf, circle, leftOpen, port, shape, stroke } from './shapes.ts';
 
@@ -28,6 +29,7 @@ const OPEN = leftOpen(
   'One port of the motor has no line; it counts as plugged, so the motor cannot turn.',
   'Connect A and B.',
 );
+const RATING = ratingSetting('350 bar');
 
 export const motor: PartKind = {
   kind: 'motor',
@@ -36,7 +38,7 @@ export const motor: PartKind = {
   help: 'Oil through it from A to B turns the shaft one way, from B to A the other way.',
   words: ['hydraulic motor', 'rotary actuator', 'winch', 'hydromotor'],
   prefix: 'MOT',
-  settings: [DISPLACEMENT, ...MOTOR_LOAD.all, LEAKAGE, CASE_LEAKAGE],
+  settings: [DISPLACEMENT, ...MOTOR_LOAD.all, LEAKAGE, CASE_LEAKAGE, RATING],
   readyMade: [{ id: 'motor', title: 'Motor, both ways', make: () => ({}) }],
   ports: () => [
     port('A', [-4, 0], 'left', 'working', OPEN),
@@ -53,6 +55,7 @@ export const motor: PartKind = {
       ),
     ),
   ],
+  ratings: (part) => [readRating(part, RATING, ['A', 'B'])],
   elements: (part) => {
     const area = readSi(part, DISPLACEMENT);
     return [

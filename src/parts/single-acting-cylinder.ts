@@ -11,6 +11,7 @@ import {
   travelOf,
 } from './cylinder-body.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
+import { ratingSetting, readRating } from './ratings.ts';
 import { choiceSetting, quantitySetting, readChoice, readSi } from './settings.ts';
 import { leftOpen, port, spring } from './shapes.ts';
 
@@ -41,6 +42,7 @@ const PORTS = [
     ),
   ),
 ];
+const RATING = ratingSetting('250 bar');
 
 export const singleActingCylinder: PartKind = {
   kind: 'single-acting-cylinder',
@@ -49,7 +51,7 @@ export const singleActingCylinder: PartKind = {
   help: 'Oil into A extends it; a spring or the load brings it back. The rod side breathes.',
   words: ['spring return cylinder', 'plunger', 'ram', 'one way', 'actuator'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, RETURN, SPRING_FORCE, ...CYLINDER_LOAD.all],
+  settings: [BORE, ROD, STROKE, RETURN, SPRING_FORCE, ...CYLINDER_LOAD.all, RATING],
   readyMade: [
     { id: 'single-acting-cylinder', title: 'Single-acting cylinder, spring return', make: () => ({}) },
     {
@@ -60,6 +62,7 @@ export const singleActingCylinder: PartKind = {
     },
   ],
   ports: () => PORTS,
+  ratings: (part) => [readRating(part, RATING, ['A'])],
   elements: (part) => {
     const areas = readAreas(part, BORE, ROD);
     const sprung = readChoice(part, RETURN) === 'spring';
