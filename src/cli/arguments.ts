@@ -1,11 +1,32 @@
 import { parseArgs } from 'node:util';
 import type { UnitSystem } from '../base/units.ts';
 import { codeOf, Failure, messageOf } from './failure.ts';
-import { BLEED_HELP, CHECK_HELP, EXPLAIN_HELP, HELP, PLAN_HELP, TABLE_HELP, TRAPPED_HELP } from './help.ts';
+import {
+  ASK_HELP,
+  BLEED_HELP,
+  CHECK_HELP,
+  EXPLAIN_HELP,
+  FOLD_HELP,
+  HELP,
+  INFLUENCE_HELP,
+  PLAN_HELP,
+  TABLE_HELP,
+  TRAPPED_HELP,
+} from './help.ts';
+import { PLAN_SHOW_OPTIONS, planShows } from './plan-shows.ts';
+import type { PlanShows } from './plan-shows.ts';
 
 export type Pumps = 'running' | 'stopped';
 
 export type Command =
+  | (Whole & { readonly name: 'fold'; readonly by: readonly string[] })
+  | (Whole & { readonly name: 'influence' })
+  | (Whole & {
+      readonly name: 'ask';
+      readonly question: string;
+      /** Rows that are listed at most. */
+      readonly limit: number;
+    })
   | { readonly name: 'say'; readonly text: string }
   | {
       readonly name: 'table';
@@ -61,9 +82,19 @@ export type Command =
       readonly load: string | undefined;
       /** Name or id; all of them if not given. */
       readonly plan: string | undefined;
+      /** Absent = the check of the plans. */
+      readonly shows: PlanShows | undefined;
       readonly units: UnitSystem;
       readonly out: string | undefined;
     };
+
+export interface Whole {
+  readonly file: string;
+  readonly format: ExplainFormat;
+  readonly pumps: Pumps;
+  readonly load: string | undefined;
+  readonly out: string | undefined;
+}
 
 export const TABLE_FORMATS = ['text', 'csv', 'json', 'markdown'] as const;
 export type TableFormat = (typeof TABLE_FORMATS)[number];
@@ -105,6 +136,12 @@ export function readArguments(args: readonly string[], version: string): Command
       return checkCommand(rest);
     case 'plan':
       return planCommand(rest);
+    case 'fold':
+      return foldCommand(rest);
+    case 'influence':
+      return influenceCommand(rest);
+    case 'ask':
+      return askCommand(rest);
     default:
       throw usage(first.startsWith('-') ? `Unknown option ${first}.` : `Unknown command "${first}".`);
   }
@@ -218,19 +255,79 @@ function planCommand(args: string[]): Command {
       args,
       strict: true,
       allowPositionals: true,
-      options: { format, out, help, ...LOAD, ...UNITS, plan: { type: 'string' } },
+      options: { format, out, help, ...LOAD, ...UNITS, ...PLAN_SHOW_OPTIONS, plan: { type: 'string' } },
     }),
   );
   if (values.help) return { name: 'say', text: PLAN_HELP };
   if (values.plan === '') throw usage('--plan needs the name of a step plan.', 'plan');
+  const shows = planShows(values);
+  if (typeof shows === 'string') throw usage(shows, 'plan');
   return {
     name: 'plan',
     file: oneFile('plan', positionals),
     format: oneOf('plan', '--format', values.format, EXPLAIN_FORMATS),
     load: loadCase('plan', values.load),
     plan: values.plan,
+    shows,
     units: oneOf('plan', '--units', values.units, UNIT_SYSTEMS),
     out: outFile('plan', values.out),
+  };
+}
+
+function foldCommand(args: string[]): Command {
+  const { values, positionals } = attempt('fold', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { ...COMMON, ...LOAD, by: { type: 'string', multiple: true, default: [] } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: FOLD_HELP };
+  return { name: 'fold', ...wholeOf('fold', values, positionals), by: values.by };
+}
+
+function influenceCommand(args: string[]): Command {
+  const { values, positionals } = attempt('influence', () =>
+    parseArgs({ args, strict: true, allowPositionals: true, options: { ...COMMON, ...LOAD } }),
+  );
+  if (values.help) return { name: 'say', text: INFLUENCE_HELP };
+  return { name: 'influence', ...wholeOf('influence', values, positionals) };
+}
+
+function askCommand(args: string[]): Command {
+  const { values, positionals } = attempt('ask', () =>
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: { ...COMMON, ...LOAD, limit: { type: 'string', default: '20' } },
+    }),
+  );
+  if (values.help) return { name: 'say', text: ASK_HELP };
+  const [file, question = '', more] = positionals;
+  if (more !== undefined) throw usage(`The question ends before "${more}"; put it in quotes.`, 'ask');
+  if (file !== undefined && question.trim() === '') throw usage('No question is given.', 'ask');
+  if (!/^\d+$/.test(values.limit)) throw usage(`--limit takes a number, not "${values.limit}".`, 'ask');
+  return {
+    name: 'ask',
+    ...wholeOf('ask', values, file === undefined ? [] : [file]),
+    question,
+    limit: Number(values.limit),
+  };
+}
+
+function wholeOf(
+  command: string,
+  values: { readonly format: string; readonly pumps: string; readonly load?: string; readonly out?: string },
+  files: readonly string[],
+): Whole {
+  return {
+    file: oneFile(command, files),
+    format: oneOf(command, '--format', values.format, EXPLAIN_FORMATS),
+    pumps: oneOf(command, '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase(command, values.load),
+    out: outFile(command, values.out),
   };
 }
 

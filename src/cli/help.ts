@@ -4,6 +4,9 @@ What every combination of lever and coil positions of a hydraulic circuit does.
 
 Commands:
   table FILE     the whole state table
+  fold FILE      the same in the fewest rows found, by actuator, pump or line
+  influence FILE which lever can change what, and what is independent
+  ask FILE TEXT  the rows in which something holds
   explain FILE   one state, with its reasons
   trapped FILE   where pressure stays trapped, over all states
   bleed FILE     how to let it down after a stop: the shortest list of lever moves
@@ -16,7 +19,7 @@ Options:
 
 FILE is a circuit saved by the editor (*.spool.json); - reads standard input.
 Exit code: 0 done, 1 a check failed (bleed: pressure is left that no lever list vents; check: a
-rule is broken or not decided; plan: a step does not do what it says), 2 bad input or usage.
+rule is broken or not decided; ask: it holds in no row; plan: a step does not do what it says), 2 bad input or usage.
 `;
 
 export const TABLE_HELP = `Usage: spooltable table FILE [OPTIONS]
@@ -101,6 +104,8 @@ A and B are statements, joined by and, or, not and parentheses:
   V1 at raise      V1 at raise/lower      V1 rests      every lever rests      Y1 on      Y2 off
   C1 extends       C1 moves in            C1 moves      C1 is held             no cylinder moves
   P1 is unloaded   line supply is fed     line supply is trapped     any line is blocked under pressure
+  pressure at V1.A over 160 bar           pressure at any pump at most 2900 psi
+  C1 faster than 120 mm/s                 C1 moves out slower than 4 in/s
 Names are those on the sheet; one that reads like words of a rule stands in double quotes.
 `;
 
@@ -113,9 +118,59 @@ plan does not do what it says.
 
 Options:
   --plan NAME               a plan by its name or id (all of them)
+  --coils                   instead of the check: when each coil has to be on, which steps look alike to the sensors,
+                            signal groups and the interlocks that the rules call for
+  --st                      instead: all that as structured text (IEC 61131-3), a draft that a qualified person reviews
+  --diagram step|time       instead: the displacement-step or displacement-time diagram as SVG, black on white
+  --line NAME               a line whose pressure the diagram shows; may be given more than once (lines at pumps and
+                            actuators)
   --load NAME               a load case of the circuit, by its name or id (what the plan says)
   --units metric|us         units of the figures (metric)
   --format text|json        how it is written (text); json is in SI and has every event
+  --out FILE                write there, whole or not at all, instead of to standard output
+  --help                    this text
+`;
+
+export const FOLD_HELP = `Usage: spooltable fold FILE [--by NAME …] [OPTIONS]
+
+The table in the fewest rows found that say the same: "any" stands for a lever that does not matter, a/0 for
+positions that may be either, and the last row for every combination that the others leave. Each fold is set
+against the whole table and equal to it. Rows of one outcome may share combinations. Without --by: every actuator,
+every pump, and actuators that share valves together. Panels too large to list are folded from open paths alone.
+
+Options:
+  --by NAME                 an actuator, pump or line; may be given more than once
+  --pumps running|stopped   state of all pumps (running)
+  --load NAME               a load case of the circuit, by its name or id (the loads that the parts say)
+  --format text|json        how it is written (text)
+  --out FILE                write there, whole or not at all, instead of to standard output
+  --help                    this text
+`;
+
+export const INFLUENCE_HELP = `Usage: spooltable influence FILE [OPTIONS]
+
+Which lever can change which outcome at all (x), which positions change nothing, and which parts of the circuit are
+independent, with the product of their combinations. What one pump or accumulator can feed counts as one part.
+
+Options:
+  --pumps running|stopped   state of all pumps (running)
+  --load NAME               a load case of the circuit, by its name or id (the loads that the parts say)
+  --format text|json        how it is written (text)
+  --out FILE                write there, whole or not at all, instead of to standard output
+  --help                    this text
+`;
+
+export const ASK_HELP = `Usage: spooltable ask FILE "CONDITION" [OPTIONS]
+
+Counts and lists the rows in which a condition holds, such as "LIFT moves and not PUMP unloaded" or "pressure at
+V1.A over 160 bar". It is written as in rules, without "never" and "always"; see check --help and the readme. Exit
+code 0 when it holds in some row, 1 when it surely holds in none, 2 when it cannot be read.
+
+Options:
+  --limit N                 rows that are listed at most (20); 0 only counts
+  --pumps running|stopped   state of all pumps (running)
+  --load NAME               a load case of the circuit, by its name or id (the loads that the parts say)
+  --format text|json        how it is written (text)
   --out FILE                write there, whole or not at all, instead of to standard output
   --help                    this text
 `;

@@ -23,6 +23,7 @@ import { readCircuitFile } from './input.ts';
 import { print, writeWhole } from './output.ts';
 import { plan } from './plan.ts';
 import { readState } from './state.ts';
+import { ask, fold, influence } from './whole.ts';
 
 /** Up to here the rows of a JSON table also carry sentences and candidates, which take a search for each row. */
 const MOST_EXPLAINED = 250;
@@ -55,6 +56,12 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
       return bleed(command, circuit, version);
     case 'check':
       return check(command, circuit, version);
+    case 'fold':
+      return fold(command, circuit, version);
+    case 'influence':
+      return influence(command, circuit, version);
+    case 'ask':
+      return ask(command, circuit, version);
     case 'plan':
       return plan(command, circuit, version);
   }
