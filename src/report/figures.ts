@@ -28,8 +28,12 @@ export interface SolvedFigures {
     Record<string, { readonly pressure: number | null; readonly flow: number; readonly power: number }>
   >;
   readonly reliefs: Readonly<Record<string, number>>;
+  /** What passes each part, in the direction in which it passes: `V1 P→A`. Still ones are left out. */
+  readonly flows: Readonly<Record<string, { readonly flow: number; readonly drop: number }>>;
   /** `pumps + loads + stores = useful + lost`; stores are springs and accumulators. */
   readonly power: Readonly<Record<'pumps' | 'loads' | 'stores' | 'useful' | 'lost', number>>;
+  /** The same by part; what a part gives is negative while a spring or an accumulator is charged. */
+  readonly powerBy: Readonly<Record<string, Readonly<Record<'given' | 'useful' | 'lost', number>>>>;
 }
 
 interface Motion {
@@ -123,25 +127,36 @@ export function rowFigures(numbers: RowNumbers, table: StateTable, { units, reli
       pump,
     ),
     reliefs: record(reliefs, (i) => flow(numbers.reliefs[i]?.flow ?? 0)),
+    flows: record(numbers.flows.map(sayWay), (i) => {
+      const through = numbers.flows[i];
+      return { flow: flow(Math.abs(through?.flow ?? 0)), drop: pressure(Math.abs(through?.drop ?? 0)) };
+    }),
     power: {
       pumps: power(given.pumps),
       loads: power(given.loads),
-      stores: storesOf(given, power),
+      stores: power(given.stores),
       useful: power(given.useful),
       lost: power(given.lost),
     },
+    powerBy: record(
+      numbers.shares.map(({ label }) => label),
+      (i) => {
+        const share = numbers.shares[i];
+        return { given: power(share?.given ?? 0), useful: power(share?.useful ?? 0), lost: power(share?.lost ?? 0) };
+      },
+    ),
   };
+}
+
+/** `V1 P→A`, from where the oil comes to where it goes; of an accumulator `ACC in` or `ACC out`. */
+function sayWay({ label, from, to, flow }: RowNumbers['flows'][number]): string {
+  if (to === undefined) return `${label} ${flow > 0 ? 'in' : 'out'}`;
+  return flow > 0 ? `${label} ${from}→${to}` : `${label} ${to}→${from}`;
 }
 
 /** A sealed line keeps what was in it; only a load gives it a pressure that can be worked out. */
 function isUnknown(table: StateTable, line: number, row: number): boolean {
   return table.blocked(line, row) === 'cut off' && !table.trapped(line, row).includes('load');
-}
-
-/** What the balance leaves for springs and accumulators, unless it is within the accuracy of the others. */
-function storesOf({ pumps, loads, useful, lost }: RowNumbers['power'], power: (si: number) => number): number {
-  const stores = useful + lost - pumps - loads;
-  return Math.abs(stores) < 1e-4 * (useful + lost) ? 0 : power(stores);
 }
 
 /** Why the row lacks figures, for its notes. */

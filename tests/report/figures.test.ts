@@ -17,7 +17,10 @@ const numbersOf = (row: number, more: Partial<RowNumbers> = {}): RowNumbers => (
   actuators: [{ speed: -0.1, flow: 1e-4, force: 2500 }],
   pumps: [{ pressure: 1e5, delivered: 1e-4, power: 10 }],
   reliefs: [{ label: 'R1', flow: 5e-5 }],
-  power: { pumps: 10, loads: 0, useful: 0, lost: 10 },
+  paths: [],
+  flows: [{ part: 'R1', label: 'R1', from: 'P', to: 'T', flow: 5e-5, drop: 1e5 }],
+  shares: [{ part: 'P1', label: 'P1', given: 10, useful: 0, lost: 0 }],
+  power: { pumps: 10, loads: 0, stores: 0, useful: 0, lost: 10 },
   ...more,
 });
 const source = (more: Partial<NumberSource> = {}): NumberSource => ({
@@ -51,7 +54,7 @@ test('what the calculation cannot tell from nought is nought, without a sign', (
   const still = figures({
     lines: [-300, 0, 0],
     actuators: [{ speed: -1e-7, flow: 1e-7, force: -0.01 }],
-    power: { pumps: 0.01, loads: 0, useful: 0, lost: 0.01 },
+    power: { pumps: 0.01, loads: 0, stores: 0, useful: 0, lost: 0.01 },
   });
   expect(Object.is(still.actuators['CLAMP']?.speed, 0)).toBe(true);
   expect(still.actuators['CLAMP']?.flow).toBe(0);
@@ -67,9 +70,9 @@ test('a sealed line has a pressure only from a load', () => {
 });
 
 test('springs and accumulators give what the balance lacks (first law)', () => {
-  expect(figures({ power: { pumps: 1000, loads: 0, useful: 900, lost: 300 } }).power.stores).toBe(0.2);
-  expect(figures({ power: { pumps: 1000, loads: 0, useful: 700, lost: 100 } }).power.stores).toBe(-0.2);
-  expect(figures({ power: { pumps: 100_000, loads: 0, useful: 0, lost: 100_001 } }).power.stores).toBe(0);
+  expect(figures({ power: { pumps: 1000, loads: 0, stores: 200, useful: 900, lost: 300 } }).power.stores).toBe(0.2);
+  expect(figures({ power: { pumps: 1000, loads: 0, stores: -200, useful: 700, lost: 100 } }).power.stores).toBe(-0.2);
+  expect(figures({ power: { pumps: 100_000, loads: 0, stores: 0.05, useful: 0, lost: 100_000 } }).power.stores).toBe(0);
 });
 
 test('every row is worked out once, in parts', () => {

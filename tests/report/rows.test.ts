@@ -51,9 +51,21 @@ test('an explanation adds the sentence and the candidates, and is asked for open
       actuators: [],
       pumps: [],
       reliefs: [],
-      power: { pumps: 0, loads: 0, useful: 0, lost: 0 },
+      paths: [],
+      flows: [],
+      shares: [],
+      power: { pumps: 0, loads: 0, stores: 0, useful: 0, lost: 0 },
     } as const;
-    return { row, numbers: none, positions: [2], dependents: [], actuators: [reason], pumps: [], trapped: [], notes: ['Said so.'] };
+    return {
+      row,
+      numbers: none,
+      positions: [2],
+      dependents: [],
+      actuators: [reason],
+      pumps: [],
+      trapped: [],
+      notes: ['Said so.'],
+    };
   };
   const rows = [...makeReport(sampleSource(CLAMP, { explain })).rows()];
   expect(asked).toEqual([2]);

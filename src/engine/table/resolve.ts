@@ -32,6 +32,8 @@ export interface PressureAnswer {
   readonly swings: readonly boolean[];
   /** m³/s that pass each line of the problem on the way to or from something that moves; relief flow is none of it. */
   readonly through: Float64Array;
+  /** Through-put of every branch of the problem: m³/s, m/s or rad/s; 0 where it is off. */
+  readonly flows: Float64Array;
 }
 
 /** Steady pressures of single rows; each solve starts from the last one. */
@@ -68,7 +70,8 @@ export class PressureSolver {
     );
     const solution = model.solver.solve(this.#warm ? { warm: this.#warm } : {});
     const result = describe(model.solver, solution);
-    const through = this.#throughflow(solution.throughputs);
+    const flows = solution.throughputs.slice();
+    const through = this.#throughflow(flows);
     let swinging: readonly number[] = [];
     if (result.status === 'solved') {
       this.#warm = Float64Array.from(solution.pressures);
@@ -76,7 +79,7 @@ export class PressureSolver {
     } else {
       this.#warm = undefined;
     }
-    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)), through };
+    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)), through, flows };
   }
 
   /** True if oil on its way to or from a moving actuator passes this line. */
