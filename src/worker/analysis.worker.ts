@@ -3,6 +3,7 @@ import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysi
 import { askTable, continueText } from '../analysis/ask.ts';
 import { bleedPlan } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
+import { checkPlan } from '../analysis/plan.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
@@ -62,6 +63,8 @@ function answer(question: Question): Reply {
       return { id, say: 'continue', next: continueText(circuit, question.text, question.as) };
     case 'bleed':
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
+    case 'plan':
+      return { id, say: 'plan', report: checkPlan(circuit, question.plan, conditions, tell(id)) };
     case 'numbers':
       return { id, say: 'numbers', numbers: numbersOf(circuit, conditions, question.rows) };
   }

@@ -3,6 +3,7 @@ import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
+import type { PlanReport } from '../analysis/plan-results.ts';
 import { Cancelled } from '../base/budget.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -16,6 +17,7 @@ export type { AskAnswer, FoldAnswer, FoldBy, FoldItem, FoldRow, Next } from '../
 export type { Influence, InfluenceRow, SubCircuit } from '../analysis/results.ts';
 export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
 export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
+export type * from '../analysis/plan-results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
@@ -53,6 +55,8 @@ export interface Analyst {
   readRule(circuit: Circuit, text: string): Job<readonly Problem[]>;
   /** How to let the pressure down once the pumps stop in this row (0-based). */
   bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
+  /** A step plan played event by event, by its id; `conditions.loadCase` goes before its own. */
+  plan(circuit: Circuit, conditions: Conditions, plan: string, progress: (share: number) => void): Job<PlanReport>;
   /** The table folded; `table` is the one of these conditions, undefined where there are too many combinations to list. */
   fold(asked: Asked, by: FoldBy, progress: (share: number) => void): Job<Result<FoldAnswer>>;
   /** Which levers can change which outcome, and what is independent. */
@@ -121,6 +125,10 @@ export function createAnalyst(): Analyst {
         { ask: 'bleed', circuit, conditions, row },
         () => {},
         (reply) => (reply.say === 'bleed' ? reply.plan : undefined),
+      ),
+    plan: (circuit, conditions, plan, progress) =>
+      long.ask({ ask: 'plan', circuit, conditions, plan }, share(progress), (reply) =>
+        reply.say === 'plan' ? reply.report : undefined,
       ),
     fold: ({ circuit, conditions, table }, by, progress) =>
       whole.ask(

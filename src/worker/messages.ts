@@ -2,6 +2,7 @@ import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
+import type { PlanReport } from '../analysis/plan-results.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { TableData } from '../engine/table/table-data.ts';
@@ -56,6 +57,13 @@ export type Question =
     }
   | {
       readonly id: number;
+      readonly ask: 'plan';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly plan: string;
+    }
+  | {
+      readonly id: number;
       readonly ask: 'explain';
       readonly circuit: Circuit;
       readonly conditions: Conditions;
@@ -87,5 +95,6 @@ export type Reply =
   | { readonly id: number; readonly say: 'continue'; readonly next: readonly Next[] }
   | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }
   | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
+  | { readonly id: number; readonly say: 'plan'; readonly report: PlanReport }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };
