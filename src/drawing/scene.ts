@@ -17,6 +17,7 @@ import type { PartWords, SceneLabel } from './labels.ts';
 import { labelBox, sceneLabels } from './labels.ts';
 import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
+import type { Piece } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
 import { ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
 import { stageOf } from './stage.ts';
@@ -82,20 +83,17 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
   const plain = sceneLines(circuit, routes, stage, looks, stubs);
   const hops = state.hops ? stage.hops() : undefined;
   const lines = hops ? plain.map((line) => ({ ...line, strokes: withHops(line.strokes, hops) })) : plain;
-  const shown = parts.map((part) => hideStubs(part, stubs));
+  const shown = parts.map((part, i) => shownPart(circuit.parts[i] as Part, part, stubs));
   const labels = [...sceneLabels(circuit, stage.spots, (part) => state.parts?.get(part.id) ?? {}), ...stage.lineLabels];
   const blocks = stage.blocks;
   return {
     title: circuit.name,
     bounds: sceneBounds(shown, lines, labels, blocks),
     blocks,
-    enclosures: shown.flatMap(({ id, primitives }) => {
-      const own = primitives.filter(isEnclosure);
-      return own.length > 0 ? [{ part: id, primitives: own }] : [];
-    }),
+    enclosures: shown.flatMap(({ id, enclosure }) => (enclosure.length > 0 ? [{ part: id, primitives: enclosure }] : [])),
     lines,
     dots: stage.dots,
-    parts: shown.map((p) => ({ ...p, primitives: p.primitives.filter((x) => !isEnclosure(x)) })),
+    parts: shown,
     labels,
     labelRooms: stage.rooms,
   };
@@ -153,6 +151,9 @@ function drawn(part: Part, look: Look): readonly Primitive[] {
   ];
 }
 
+/** A line is marked anew only when its pieces or its look change: while one part is dragged, hundreds do not. */
+const drawnLines = new WeakMap<readonly Piece[], { readonly said: string; readonly line: SceneLine }>();
+
 function sceneLines(
   circuit: Circuit,
   routes: Routes,
@@ -165,7 +166,15 @@ function sceneLines(
   const barAt = (ref: PortRef): number => (isStripValve(kinds.get(ref.part)) ? BAR_AT + 1 : BAR_AT);
   return circuit.connections.map((connection) => {
     const { id, from, to } = connection;
-    const strokes = (stage.pieces.get(id) ?? []).flatMap((piece) => {
+    const pieces = stage.pieces.get(id) ?? [];
+    const points = routes.get(id) ?? [];
+    const line = stage.numbers.get(id) ?? -1;
+    const look = looks(id);
+    const marks = [look, connection.use, stubs.get(key(from)), stubs.get(key(to)), barAt(from), barAt(to), id, line];
+    const said = JSON.stringify(marks);
+    const before = drawnLines.get(pieces);
+    if (before?.said === said && before.line.points === points) return before.line;
+    const strokes = pieces.flatMap((piece) => {
       const start = piece.fromPort ? stubs.get(key(from)) : undefined;
       const end = piece.toPort ? stubs.get(key(to)) : undefined;
       const reached = [...(start ? [start] : []), ...piece.points, ...(end ? [end] : [])];
@@ -173,9 +182,11 @@ function sceneLines(
         ...(piece.fromPort && { start: barAt(from) + lengthTo(start, piece.points[0]) }),
         ...(piece.toPort && { end: barAt(to) + lengthTo(end, piece.points.at(-1)) }),
       };
-      return lineMarks(reached, looks(id), connection.use ?? 'working', ends);
+      return lineMarks(reached, look, connection.use ?? 'working', ends);
     });
-    return { connection: id, line: stage.numbers.get(id) ?? -1, points: routes.get(id) ?? [], strokes };
+    const drawn: SceneLine = { connection: id, line, points, strokes };
+    drawnLines.set(pieces, { said, line: drawn });
+    return drawn;
   });
 }
 
@@ -218,13 +229,22 @@ function stubEnd(p: Primitive, port: Point): Point | undefined {
   return samePoint(b, port) ? a : undefined;
 }
 
-function hideStubs(part: ScenePart, stubs: ReadonlyMap<string, Point>): ScenePart {
-  const taken = part.ports.filter((p) => stubs.has(key(p.ref)));
-  if (taken.length === 0) return part;
-  return {
-    ...part,
-    primitives: part.primitives.filter((p) => !taken.some((port) => stubEnd(p, port.at) !== undefined)),
-  };
+interface ShownPart extends ScenePart {
+  readonly enclosure: readonly Primitive[];
+}
+
+const shownParts = new WeakMap<Part, { readonly from: readonly Primitive[]; readonly taken: string; readonly part: ShownPart }>();
+
+/** Without its enclosure and what its lines draw; the same object as before if nothing about it changed. */
+function shownPart(own: Part, part: ScenePart, stubs: ReadonlyMap<string, Point>): ShownPart {
+  const hidden = part.ports.filter((p) => stubs.has(key(p.ref)));
+  const taken = hidden.map(({ ref }) => ref.port).join(' ');
+  const known = shownParts.get(own);
+  if (known && known.from === part.primitives && known.taken === taken) return known.part;
+  const left = part.primitives.filter((p) => !hidden.some((port) => stubEnd(p, port.at) !== undefined));
+  const shown = { ...part, primitives: left.filter((p) => !isEnclosure(p)), enclosure: left.filter(isEnclosure) };
+  shownParts.set(own, { from: part.primitives, taken, part: shown });
+  return shown;
 }
 
 function sceneBounds(

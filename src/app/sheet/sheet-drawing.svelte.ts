@@ -1,6 +1,6 @@
 import type { Box, Point } from '../../base/points.ts';
 import type { Primitive } from '../../base/primitives.ts';
-import type { Circuit, Part } from '../../circuit/model.ts';
+import type { Circuit, Connection, Part } from '../../circuit/model.ts';
 import type { Places } from '../../circuit/build.ts';
 import type { Routes } from '../../drawing/geometry.ts';
 import { placeMissing } from '../../drawing/place.ts';
@@ -46,7 +46,7 @@ class SheetDrawing {
   /** Of the circuit that the figures belong to. */
   assumed: Assumed = $derived(assumedIn(session.tabled));
 
-  states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.circuit, this.assumed));
+  states: ReadonlyMap<string, PartState> = $derived.by(() => partStates(this.#rest, this.assumed));
 
   /** Where flows are computed they have the last word. */
   #flows: ReadonlyMap<string, RealFlow> = $derived.by(() => {
@@ -82,7 +82,10 @@ class SheetDrawing {
     };
   });
 
-  byId: ReadonlyMap<string, Part> = $derived(new Map(this.circuit.parts.map((part) => [part.id, part])));
+  /** As they stand at rest: what they are called and what they are, not where they are dragged. */
+  byId: ReadonlyMap<string, Part> = $derived(new Map(this.#rest.parts.map((part) => [part.id, part])));
+  #connections = $derived(this.circuit.connections);
+  connectionById: ReadonlyMap<string, Connection> = $derived(new Map(this.#connections.map((each) => [each.id, each])));
 
   /** Where the pressure of each line of the table is written; the same whatever the row. */
   #rooms = $derived(this.scene.labelRooms);
