@@ -1,14 +1,25 @@
 import { isEmpty } from '../base/bits.ts';
+import { unlimited } from '../base/budget.ts';
+import { StateTable } from '../engine/table/state-table.ts';
+import { tabulate } from '../engine/table/tabulate.ts';
+import type { ActuatorVerdict } from '../engine/table/words.ts';
+import { asInputs } from '../network/dependents.ts';
+import type { Network } from '../network/network.ts';
 import { actuatorRows, INWARD, OUTWARD } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 /** An actuator that no combination moves, or that can go one way but not back. */
-export const actuatorReach: Rule = ({ net, table }) =>
-  net.actuators.flatMap((actuator, i): Finding[] => {
-    if (!isEmpty(actuatorRows(table, i, 'rests on pressure', 'undetermined'))) return [];
-    const out = !isEmpty(actuatorRows(table, i, ...OUTWARD));
-    const inward = !isEmpty(actuatorRows(table, i, ...INWARD));
-    const floats = !isEmpty(actuatorRows(table, i, 'floats'));
+export const actuatorReach: Rule = ({ net, table: given }) => {
+  const elsewhere = freeTable(net);
+  return net.actuators.flatMap((actuator, i): Finding[] => {
+    // A roller trips only at a stop, which this table does not show.
+    const tables = elsewhere ? [given, elsewhere] : [given];
+    const some = (...verdicts: ActuatorVerdict[]): boolean =>
+      tables.some((table) => !isEmpty(actuatorRows(table, i, ...verdicts)));
+    if (some('rests on pressure', 'undetermined')) return [];
+    const out = some(...OUTWARD);
+    const inward = some(...INWARD);
+    const floats = some('floats');
     if (out && inward) return [];
     const part = net.parts[actuator.part];
     const label = part?.label ?? '';
@@ -37,3 +48,16 @@ export const actuatorReach: Rule = ({ net, table }) =>
       },
     ];
   });
+};
+
+/** More combinations than this are not gone through on every edit. */
+const MOST_ROWS = 250_000;
+
+/** What could be if the dependent valves stood anywhere: they as further inputs; open paths alone. */
+function freeTable(net: Network): StateTable | undefined {
+  if (net.dependents.length === 0) return undefined;
+  const free = asInputs(net);
+  if (free.inputs.reduce((n, input) => n * input.positions.length, 1) > MOST_ROWS) return undefined;
+  const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
+  return new StateTable(tabulate(free, conditions, unlimited));
+}

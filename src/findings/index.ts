@@ -1,5 +1,6 @@
 import { actuatorReach } from './actuator-reach.ts';
 import { deadHeadedPump } from './dead-headed-pump.ts';
+import { dependentUnsettled } from './dependent-unsettled.ts';
 import type { Evidence, Finding, Rule } from './finding.ts';
 import { idleValveUnloads } from './idle-valve-unloads.ts';
 import { intensified } from './intensified.ts';
@@ -12,6 +13,7 @@ import { overReliefAtRest } from './over-relief-at-rest.ts';
 import { positionChangesNothing } from './position-changes-nothing.ts';
 import { sequenceDrain } from './sequence-drain.ts';
 import { tankPortPressure } from './tank-port-pressure.ts';
+import { twoStageNoPilot } from './two-stage-no-pilot.ts';
 import { undischargedAccumulator } from './undischarged-accumulator.ts';
 import { unventableLine } from './unventable-line.ts';
 import { wrongWayRound } from './wrong-way-round.ts';
@@ -28,6 +30,8 @@ const RULES: readonly Rule[] = [
   sequenceDrain,
   undischargedAccumulator,
   idleValveUnloads,
+  twoStageNoPilot,
+  dependentUnsettled,
   lockCheckNotVented,
   overReliefAtRest,
   actuatorReach,

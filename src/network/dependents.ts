@@ -55,6 +55,22 @@ export const standsAt =
   (input: number): number =>
     input < net.inputs.length ? commanded(input) : (setting[input - net.inputs.length] ?? 0);
 
+/** The same circuit with its dependent valves as further inputs, moved by hand: what could be, wherever they stand. */
+export const asInputs = (net: Network): Network => ({
+  ...net,
+  inputs: [
+    ...net.inputs,
+    ...net.dependents.map(({ part, positions, rest }) => ({
+      part,
+      positions,
+      ...(rest !== undefined && { rest }),
+      by: 'hand' as const,
+      coils: [],
+    })),
+  ],
+  dependents: [],
+});
+
 /** Every choice of one from each list, the first list slowest. */
 export function combinations(lists: readonly (readonly number[])[]): number[][] {
   return lists.reduce<number[][]>((all, list) => all.flatMap((one) => list.map((p) => [...one, p])), [[]]);
