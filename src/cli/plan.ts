@@ -5,15 +5,17 @@ import type { Command } from './arguments.ts';
 import type { Written } from './bleed.ts';
 import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure } from './failure.ts';
+import { showPlans } from './plan-shows.ts';
 
 /** Plays the plans of the circuit, or the one that is named, by its name or id. */
 export function plan(
-  { file, format, load, plan: wanted, units }: Extract<Command, { name: 'plan' }>,
+  { file, format, load, plan: wanted, units, shows }: Extract<Command, { name: 'plan' }>,
   circuit: Circuit,
   version: string,
 ): Written {
   const ids = idsOf(file, wanted, circuit);
   const conditions = conditionsOf({ file, pumps: 'running', load }, circuit);
+  if (shows) return showPlans(shows, { file, ids, units, format, conditions }, circuit, version);
   const reports = ids.map((id) => checkPlan(circuit, id, conditions));
   const source = { version, circuit: circuit.name, loadCases: circuit.loadCases ?? [], units, reports };
   return {
