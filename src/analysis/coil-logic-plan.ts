@@ -47,6 +47,7 @@ export function numberedPlan(net: Network, plan: StepPlan): Result<NumberedPlan>
       name: plan.steps[i]?.name ?? '',
       coils: [...new Set(step.coils.map(({ input, coil }) => coilAt(input, coil)))],
       motions: step.expect.flat(),
+      earlier: step.expect.slice(0, -1).flatMap((together) => together.map(({ actuator }) => actuator)),
       end: endOf(step.ends),
     })),
   };

@@ -21,6 +21,8 @@ export interface LogicStep {
   /** Coils that are on. */
   readonly coils: readonly number[];
   readonly motions: MotionStep;
+  /** Actuators that come to their stop before another motion of the step begins. */
+  readonly earlier?: readonly number[];
   readonly end: LogicEnd;
 }
 
@@ -155,7 +157,8 @@ export function signalStates(plan: LogicPlan, mostSignals: number): SignalStates
       const from = during[actuator] as number;
       const reach = from | (way === '+' ? range(lowest(from), course.last) : range(0, highest(from)));
       during[actuator] = reach;
-      after[actuator] = step.end.by === 'motion' ? bit(way === '+' ? course.last : 0) : reach;
+      const comesToStop = step.end.by === 'motion' || step.earlier?.includes(actuator) === true;
+      after[actuator] = comesToStop ? bit(way === '+' ? course.last : 0) : reach;
     }
     if (step.end.by === 'sensor') {
       const course = courses[step.end.actuator];
