@@ -1,5 +1,5 @@
 import type { PartKind } from './contract.ts';
-import { lossSettings, readLoss } from './losses.ts';
+import { checkLossSettings, readLoss } from './losses.ts';
 import { quantitySetting, readSi, readSwitch, switchSetting } from './settings.ts';
 import { arrow, boxOf, checkSeat, dot, leftOpen, port, rectangle, stroke, throttleArcs } from './shapes.ts';
 
@@ -23,8 +23,7 @@ const REVERSE = switchSetting(
   { id: 'reverseCheck', title: 'Reverse check', help: 'On: a check lets oil freely back from B to A.' },
   false,
 );
-// The check is sized like the valve's own line; its loss is not worth a setting of its own.
-const FREE = lossSettings('40 L/min', '2 bar');
+const FREE = checkLossSettings('40 L/min', '2 bar');
 const OPEN = leftOpen(
   'note',
   'One port of the flow control has no line; it counts as plugged, so nothing passes.',
@@ -46,7 +45,7 @@ export const flowControl: PartKind = {
     'bleed-off',
   ],
   prefix: 'FC',
-  settings: [FLOW, LEAST_DROP, REVERSE],
+  settings: [FLOW, LEAST_DROP, REVERSE, ...FREE.all],
   readyMade: [
     { id: 'flow-control', title: 'Flow control, pressure compensated', make: () => ({}) },
     {
@@ -77,7 +76,7 @@ export const flowControl: PartKind = {
               to: 'A',
               way: 'one-way',
               throttled: false,
-              rated: readLoss({ ...part, settings: {} }, FREE),
+              rated: readLoss(part, FREE),
             } as const,
           ]
         : []),

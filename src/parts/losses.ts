@@ -24,6 +24,24 @@ export function lossSettings(flow: string, drop: string): LossSpecs {
   return { flow: flowSpec, drop: dropSpec, all: [flowSpec, dropSpec] };
 }
 
+/** The same of a check beside something else that has its own. */
+export function checkLossSettings(flow: string, drop: string): LossSpecs {
+  const plain = lossSettings(flow, drop);
+  const flowSpec = {
+    ...plain.flow,
+    id: 'checkFlow',
+    title: 'Rated flow of the check',
+    help: 'Flow at which the pressure drop of the check is given.',
+  };
+  const dropSpec = {
+    ...plain.drop,
+    id: 'checkDrop',
+    title: 'Drop of the check',
+    help: 'Pressure lost in the check at its rated flow.',
+  };
+  return { flow: flowSpec, drop: dropSpec, all: [flowSpec, dropSpec] };
+}
+
 /** m³/s at Pa. */
 export const readLoss = (part: Part, specs: LossSpecs): { readonly flow: number; readonly drop: number } => ({
   flow: readSi(part, specs.flow),

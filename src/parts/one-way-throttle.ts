@@ -1,5 +1,5 @@
 import type { PartKind } from './contract.ts';
-import { lossSettings, readLoss } from './losses.ts';
+import { checkLossSettings, readLoss } from './losses.ts';
 import { quantitySetting, readSi } from './settings.ts';
 import { boxOf, checkSeat, dot, leftOpen, port, rectangle, stroke } from './shapes.ts';
 import { adjustableThrottle, THROTTLE_SETTINGS, throttledPaths } from './throttle-settings.ts';
@@ -14,8 +14,7 @@ const CRACKING = quantitySetting(
   '0.5 bar',
   { min: '0 bar', max: '100 bar' },
 );
-// The check is sized like the throttle's own line; its loss is not worth a setting of its own.
-const FREE = lossSettings('40 L/min', '2 bar');
+const FREE = checkLossSettings('40 L/min', '2 bar');
 const OPEN = leftOpen(
   'note',
   'One port of the one-way throttle has no line; it counts as plugged, so nothing passes.',
@@ -29,7 +28,7 @@ export const oneWayThrottle: PartKind = {
   help: 'Free from A to B through its check, throttled from B to A.',
   words: ['throttle check', 'speed control', 'meter-in', 'meter-out', 'flow control with bypass check'],
   prefix: 'OT',
-  settings: [...THROTTLE_SETTINGS, CRACKING],
+  settings: [...THROTTLE_SETTINGS, CRACKING, ...FREE.all],
   readyMade: [{ id: 'one-way-throttle', title: 'One-way throttle, adjustable', make: () => ({}) }],
   ports: () => [port('A', [0, 5], 'down', 'working', OPEN), port('B', [0, -5], 'up', 'working', OPEN)],
   elements: (part) => [
@@ -41,7 +40,7 @@ export const oneWayThrottle: PartKind = {
       way: 'one-way',
       throttled: false,
       cracking: readSi(part, CRACKING),
-      rated: readLoss({ ...part, settings: {} }, FREE),
+      rated: readLoss(part, FREE),
     },
   ],
   draw: () => [

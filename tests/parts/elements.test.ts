@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest';
 import type { Part, Setting } from '../../src/circuit/model.ts';
+import { ENTRIES } from '../../src/parts/catalogue.ts';
 import type { Element } from '../../src/parts/contract.ts';
 import { needKind } from './need.ts';
 
@@ -156,4 +157,23 @@ test('ports left open say what that means and what to do', () => {
     level: 'caution',
     what: expect.stringContaining('never opens') as string,
   });
+});
+
+test('every path takes a rated flow and drop from the settings of its part', () => {
+  for (const { kind, readyMade } of ENTRIES) {
+    const bare = { id: 'X1', kind: kind.kind, ...readyMade.make() };
+    const halved = Object.fromEntries(
+      kind.settings.flatMap(({ id, value }) =>
+        value.type === 'quantity' && value.quantity === 'flow' ? [[id, '0.5 L/min']] : [],
+      ),
+    );
+    const paths = (part: typeof bare): (number | undefined)[] =>
+      kind.elements(part).flatMap((element) => (element.type === 'path' ? [element.rated?.flow] : []));
+    const changed = paths({ ...bare, settings: { ...bare.settings, ...halved } });
+    paths(bare).forEach((flow, i) => {
+      expect(flow, `${readyMade.id} path ${i}`).toBeGreaterThan(0);
+      // The bore of a pilot stage comes with the valve; nobody rates it.
+      if (kind.kind !== 'pilot-relief-valve') expect(changed[i], `${readyMade.id} path ${i}`).not.toBe(flow);
+    });
+  }
 });
