@@ -57,9 +57,9 @@ const DRILL: LogicPlan = {
   ],
 };
 
-test('the whole text of a small plan', () => {
+test('the whole text of a small plan', async () => {
   const text = structuredText(programOf(DRILL, { valves: [[0, 1], [2]] }), { coils: 'signals' });
-  expect(text).toMatchSnapshot();
+  await expect(text).toMatchFileSnapshot('press-cycle.st');
   expect(text).toContain('replaces no safety function');
   expect(() => new StMachine(text)).not.toThrow();
 });
