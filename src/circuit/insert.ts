@@ -66,7 +66,8 @@ export function swapPart(circuit: Circuit, id: string, into: SwapInto): Swapped 
   const kept = Object.fromEntries(had.filter(([key]) => into.keeps.has(key)));
   const settings = { ...into.settings, ...kept };
   const ports = new Set(into.ports);
-  const isLost = (ref: { readonly part: string; readonly port: string }): boolean => ref.part === id && !ports.has(ref.port);
+  const isLost = (ref: { readonly part: string; readonly port: string }): boolean =>
+    ref.part === id && !ports.has(ref.port);
   const cut = circuit.connections.filter(({ from, to }) => isLost(from) || isLost(to));
   const lostPorts = new Set(cut.flatMap(({ from, to }) => [from, to].filter(isLost).map(({ port }) => port)));
   return {

@@ -17,7 +17,15 @@ export interface AddedSection {
 
 const VALVE = 'directional-valve';
 /** Where a section ends: what it shares with others. */
-const SHARED = new Set([VALVE, 'tank', 'fixed-pump', 'compensated-pump', 'hand-pump', 'relief-valve', 'pilot-relief-valve']);
+const SHARED = new Set([
+  VALVE,
+  'tank',
+  'fixed-pump',
+  'compensated-pump',
+  'hand-pump',
+  'relief-valve',
+  'pilot-relief-valve',
+]);
 /** Modules between two sections. */
 const SPACE = 5;
 
@@ -33,11 +41,18 @@ export function appendSection(circuit: Circuit, valveId: string): AddedSection {
   const upper = upperPorts(valve);
   const kinds = new Map(circuit.parts.map(({ id, kind }) => [id, kind]));
   const isShared = (id: string): boolean => SHARED.has(kinds.get(id) ?? '');
-  const above = reach(meetings(circuit), valveId, (port) => upper.has(port), isShared).filter(({ part }) => !isShared(part));
+  const above = reach(meetings(circuit), valveId, (port) => upper.has(port), isShared).filter(
+    ({ part }) => !isShared(part),
+  );
   const ids = [valveId, ...above.map(({ part }) => part)];
   const copied = copyOut(circuit, ids);
   // Named lines and coils of the first are its own.
-  const fragment = { ...copied, connections: copied.connections.filter(({ from, to }) => within(from, valveId, upper) && within(to, valveId, upper)) };
+  const fragment = {
+    ...copied,
+    connections: copied.connections.filter(
+      ({ from, to }) => within(from, valveId, upper) && within(to, valveId, upper),
+    ),
+  };
   const box = union(fragment.parts.map(partReach)) ?? { x: 0, y: 0, width: 0, height: 0 };
   const others = circuit.parts.map(partReach);
   const step = Math.ceil(box.width + SPACE);
@@ -79,13 +94,18 @@ const same = (ref: PortRef, part: string, port: string): boolean => ref.part ===
 
 /** A to the actuators: the working ports on the upper edge, the carry-over apart. */
 const upperPorts = (valve: Part): ReadonlySet<string> =>
-  new Set((valve.valve?.ports ?? []).filter(({ id, side }) => side === 'top' && !/^(C\d|P|T)$/.test(id)).map(({ id }) => id));
+  new Set(
+    (valve.valve?.ports ?? []).filter(({ id, side }) => side === 'top' && !/^(C\d|P|T)$/.test(id)).map(({ id }) => id),
+  );
 
-const within = (ref: PortRef, valve: string, upper: ReadonlySet<string>): boolean => ref.part !== valve || upper.has(ref.port);
+const within = (ref: PortRef, valve: string, upper: ReadonlySet<string>): boolean =>
+  ref.part !== valve || upper.has(ref.port);
 
 /** Its T leads to the P of another valve, or its P comes from the T of one. */
 function handsOn(circuit: Circuit, kinds: ReadonlyMap<string, string>, valve: string): boolean {
   const leads = (from: string, to: string): boolean =>
-    (meetings(circuit).get(valve) ?? []).some(({ own, other }) => own === from && other.port === to && kinds.get(other.part) === VALVE);
+    (meetings(circuit).get(valve) ?? []).some(
+      ({ own, other }) => own === from && other.port === to && kinds.get(other.part) === VALVE,
+    );
   return leads('T', 'P') || leads('P', 'T');
 }

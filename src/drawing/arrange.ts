@@ -74,7 +74,8 @@ function chosen(circuit: Circuit, ids: readonly string[]): Part[] {
 /** `upright`: one above the other, on a common vertical axis. */
 function onAxis(circuit: Circuit, parts: readonly Part[], upright: boolean): Shifts {
   const lines = linesAtPorts(circuit);
-  const facing = (part: Part): PlacedPort[] => placedPorts(part).filter(({ side }) => (vector(side).x === 0) === upright);
+  const facing = (part: Part): PlacedPort[] =>
+    placedPorts(part).filter(({ side }) => (vector(side).x === 0) === upright);
   const on = (p: Point): number => (upright ? p.x : p.y);
   const middle = ({ x, y, width, height }: Box): number => (upright ? x + width / 2 : y + height / 2);
   const [anchor] = parts;

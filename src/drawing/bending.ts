@@ -32,9 +32,7 @@ export function moveSegment(route: readonly Point[], segment: number, wanted: nu
   });
   const start = segment === 0 ? [a, towards(a, b), moved(towards(a, b))] : [...route.slice(0, segment), moved(a)];
   const end =
-    segment === route.length - 2
-      ? [moved(towards(b, a)), towards(b, a), b]
-      : [moved(b), ...route.slice(segment + 2)];
+    segment === route.length - 2 ? [moved(towards(b, a)), towards(b, a), b] : [moved(b), ...route.slice(segment + 2)];
   const next = by === 0 ? route : straighten([...start, ...end]);
   return { bends: next.slice(1, -1), segment: segmentOn(next, middle(moved(a), moved(b)), flat) };
 }

@@ -20,7 +20,9 @@ export function lineLabels(circuit: Circuit, routes: Routes, taken: readonly Box
   const named = circuit.connections.filter(worded);
   if (named.length === 0) return [];
   const rooms: Box[] = [...taken, ...circuit.parts.map(partReach)];
-  const stretches = [...routes.values()].flatMap((points) => points.slice(1).map((b, i) => [points[i] as Point, b] as const));
+  const stretches = [...routes.values()].flatMap((points) =>
+    points.slice(1).map((b, i) => [points[i] as Point, b] as const),
+  );
   return named.flatMap((connection) => {
     const label = best(connection, routes.get(connection.id) ?? [], rooms, stretches);
     if (!label) return [];
@@ -36,12 +38,16 @@ function best(
   stretches: readonly (readonly [Point, Point])[],
 ): SceneLabel | undefined {
   const runs: LabelText[] = [
-    ...(connection.name === undefined ? [] : [{ text: connection.name, size: TEXT_SIZES.code, weight: 500, tone: 'second' } as const]),
+    ...(connection.name === undefined
+      ? []
+      : [{ text: connection.name, size: TEXT_SIZES.code, weight: 500, tone: 'second' } as const]),
     ...(connection.size ? [{ text: connection.size, size: TEXT_SIZES.code, weight: 400, tone: 'mute' } as const] : []),
   ];
   let found: SceneLabel | undefined;
   let least = Infinity;
-  const lengths = points.slice(1).map((b, i) => ({ a: points[i] as Point, b, length: lengthOf(points[i] as Point, b) }));
+  const lengths = points
+    .slice(1)
+    .map((b, i) => ({ a: points[i] as Point, b, length: lengthOf(points[i] as Point, b) }));
   lengths.sort((p, q) => q.length - p.length);
   for (const { a, b, length } of lengths.slice(0, 3)) {
     if (length < STEP && found) break;
@@ -49,7 +55,10 @@ function best(
       const at = { x: a.x + (b.x - a.x) * share, y: a.y + (b.y - a.y) * share };
       for (const label of spotsAt(connection.id, runs, at, a.y === b.y)) {
         const box = labelBox(label);
-        const cost = crowd(box, rooms, stretches) + (lengths[0] ? (lengths[0].length - length) / 100 : 0) + Math.abs(share - 0.5) / 10;
+        const cost =
+          crowd(box, rooms, stretches) +
+          (lengths[0] ? (lengths[0].length - length) / 100 : 0) +
+          Math.abs(share - 0.5) / 10;
         if (cost < least) [least, found] = [cost, label];
       }
     }
@@ -60,7 +69,13 @@ function best(
 const lengthOf = (a: Point, b: Point): number => Math.abs(a.x - b.x) + Math.abs(a.y - b.y);
 
 function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boolean): SceneLabel[] {
-  const label = (x: number, y: number, align: SceneLabel['align']): SceneLabel => ({ role: 'line', owner, at: { x, y }, align, runs });
+  const label = (x: number, y: number, align: SceneLabel['align']): SceneLabel => ({
+    role: 'line',
+    owner,
+    at: { x, y },
+    align,
+    runs,
+  });
   const tall = TEXT_SIZES.code / 8;
   return flat
     ? [label(at.x, at.y - GAP, 'middle'), label(at.x, at.y + GAP + tall * 0.8, 'middle')]

@@ -45,8 +45,14 @@ function legs(via: readonly Point[]): Point[] {
 
 function shapesBetween(from: RoutingEnd, to: RoutingEnd): Point[][] {
   const [a, b] = [from.stub, to.stub];
-  const across = (y: number): Point[] => [{ x: a.x, y }, { x: b.x, y }];
-  const down = (x: number): Point[] => [{ x, y: a.y }, { x, y: b.y }];
+  const across = (y: number): Point[] => [
+    { x: a.x, y },
+    { x: b.x, y },
+  ];
+  const down = (x: number): Point[] => [
+    { x, y: a.y },
+    { x, y: b.y },
+  ];
   const [left, right] = [Math.min(a.x, b.x) - ROUND, Math.max(a.x, b.x) + ROUND];
   const [top, bottom] = [Math.min(a.y, b.y) - ROUND, Math.max(a.y, b.y) + ROUND];
   const middle = { x: Math.round((a.x + b.x) / 2), y: Math.round((a.y + b.y) / 2) };
@@ -58,8 +64,18 @@ function shapesBetween(from: RoutingEnd, to: RoutingEnd): Point[][] {
     ...[middle.x, left, right].map(down),
     // Out to a side, along it, and back in: between ports that look away from each other.
     ...sides.flatMap((x) => [
-      [{ x: a.x, y: top }, { x, y: top }, { x, y: bottom }, { x: b.x, y: bottom }],
-      [{ x: a.x, y: bottom }, { x, y: bottom }, { x, y: top }, { x: b.x, y: top }],
+      [
+        { x: a.x, y: top },
+        { x, y: top },
+        { x, y: bottom },
+        { x: b.x, y: bottom },
+      ],
+      [
+        { x: a.x, y: bottom },
+        { x, y: bottom },
+        { x, y: top },
+        { x: b.x, y: top },
+      ],
     ]),
   ];
 }
@@ -73,8 +89,10 @@ function costOf(points: readonly Point[], near: readonly Box[]): number {
     const [y0, y1] = a.y < b.y ? [a.y, b.y] : [b.y, a.y];
     for (const box of near) {
       if (x0 < box.x + box.width && box.x < x1 && y0 < box.y + box.height && box.y < y1) cost += COST.part;
-      else if (x0 === x1 && x0 > box.x && x0 < box.x + box.width && y0 < box.y + box.height && box.y < y1) cost += COST.part;
-      else if (y0 === y1 && y0 > box.y && y0 < box.y + box.height && x0 < box.x + box.width && box.x < x1) cost += COST.part;
+      else if (x0 === x1 && x0 > box.x && x0 < box.x + box.width && y0 < box.y + box.height && box.y < y1)
+        cost += COST.part;
+      else if (y0 === y1 && y0 > box.y && y0 < box.y + box.height && x0 < box.x + box.width && box.x < x1)
+        cost += COST.part;
     }
   }
   return cost;

@@ -90,7 +90,9 @@ export function buildScene(circuit: Circuit, routes: Routes, state: SceneState =
     title: circuit.name,
     bounds: sceneBounds(shown, lines, labels, blocks),
     blocks,
-    enclosures: shown.flatMap(({ id, enclosure }) => (enclosure.length > 0 ? [{ part: id, primitives: enclosure }] : [])),
+    enclosures: shown.flatMap(({ id, enclosure }) =>
+      enclosure.length > 0 ? [{ part: id, primitives: enclosure }] : [],
+    ),
     lines,
     dots: stage.dots,
     parts: shown,
@@ -233,7 +235,10 @@ interface ShownPart extends ScenePart {
   readonly enclosure: readonly Primitive[];
 }
 
-const shownParts = new WeakMap<Part, { readonly from: readonly Primitive[]; readonly taken: string; readonly part: ShownPart }>();
+const shownParts = new WeakMap<
+  Part,
+  { readonly from: readonly Primitive[]; readonly taken: string; readonly part: ShownPart }
+>();
 
 /** Without its enclosure and what its lines draw; the same object as before if nothing about it changed. */
 function shownPart(own: Part, part: ScenePart, stubs: ReadonlyMap<string, Point>): ShownPart {

@@ -83,7 +83,8 @@ function connectionsAt(circuit: Circuit): Map<string, string[]> {
 function movedStage(old: Stage, from: Before, circuit: Circuit, routes: Routes): Stage {
   const numbers = lineNumbers(circuit);
   const changed = new Set<number>();
-  for (const { id } of circuit.connections) if (routes.get(id) !== from.routes.get(id)) changed.add(numbers.get(id) ?? -1);
+  for (const { id } of circuit.connections)
+    if (routes.get(id) !== from.routes.get(id)) changed.add(numbers.get(id) ?? -1);
   const numbered = numbers === old.numbers || sameNumbers(numbers, old.numbers);
   const only = numbered ? changed : undefined;
   const stood = new Map(from.circuit.parts.map((part) => [part.id, part]));
@@ -100,7 +101,9 @@ function movedStage(old: Stage, from: Before, circuit: Circuit, routes: Routes):
   return {
     ...old,
     numbers,
-    pieces: only ? new Map([...old.pieces, ...freshPieces(circuit, routes, numbers, only)]) : freshPieces(circuit, routes, numbers),
+    pieces: only
+      ? new Map([...old.pieces, ...freshPieces(circuit, routes, numbers, only)])
+      : freshPieces(circuit, routes, numbers),
     dots: only
       ? [...old.dots.filter(({ line }) => !only.has(line)), ...junctionDots(circuit, routes, only)]
       : junctionDots(circuit, routes),

@@ -28,7 +28,12 @@ export function throughPairs(part: Part): readonly (readonly [string, string])[]
   const [first, second] = ids;
   if (ids.length === 1 && first !== undefined && ports[0]?.role === 'joint') return [[first, first]];
   if (ids.length === 2 && first !== undefined && second !== undefined) return [[first, second]];
-  const pairs = [['V1', 'C1'], ['V2', 'C2'], ['P', 'T'], ['P', 'A']] as const;
+  const pairs = [
+    ['V1', 'C1'],
+    ['V2', 'C2'],
+    ['P', 'T'],
+    ['P', 'A'],
+  ] as const;
   return pairs.filter(([a, b]) => ids.includes(a) && ids.includes(b));
 }
 

@@ -13,7 +13,13 @@ import { family } from './circuits.ts';
 
 /** The built editor in Chromium: work of one frame while a part is dragged, the sheet zoomed and panned; edit to table. */
 const FRAMES = 90;
-const TYPES: Readonly<Record<string, string>> = { '.html': 'text/html', '.js': 'text/javascript', '.css': 'text/css', '.json': 'application/json', '.woff2': 'font/woff2' };
+const TYPES: Readonly<Record<string, string>> = {
+  '.html': 'text/html',
+  '.js': 'text/javascript',
+  '.css': 'text/css',
+  '.json': 'application/json',
+  '.woff2': 'font/woff2',
+};
 
 function sheetOf(count: number): Circuit {
   const parts = Array.from({ length: count }, (_, i): Part => ({
@@ -34,7 +40,9 @@ const kept = (circuit: Circuit): string =>
 
 async function open(browser: Browser, address: string, circuit: Circuit): Promise<Page> {
   const page = await (await browser.newContext({ viewport: { width: 1440, height: 900 } })).newPage();
-  await page.addInitScript(`localStorage.setItem('spooltable.open', ${JSON.stringify(kept(circuit))});localStorage.setItem('spooltable.sheetShare', '0.75')`);
+  await page.addInitScript(
+    `localStorage.setItem('spooltable.open', ${JSON.stringify(kept(circuit))});localStorage.setItem('spooltable.sheetShare', '0.75')`,
+  );
   await page.goto(address);
   await page.locator('[data-part]').first().waitFor({ state: 'attached' });
   await page.waitForTimeout(1500);
@@ -48,7 +56,10 @@ function frames(page: Page, kind: 'drag' | 'zoom' | 'pan', count: number): Promi
       const host = document.querySelector<HTMLElement>('.host');
       if (!host) return [];
       const box = host.getBoundingClientRect();
-      const { x, y } = (window as unknown as { benchAt?: { x: number; y: number } }).benchAt ?? { x: box.left + box.width / 2, y: box.top + box.height / 2 };
+      const { x, y } = (window as unknown as { benchAt?: { x: number; y: number } }).benchAt ?? {
+        x: box.left + box.width / 2,
+        y: box.top + box.height / 2,
+      };
       const times: number[] = [];
       for (let i = 0; i < most; i++) {
         await new Promise<void>((done) =>
@@ -59,10 +70,20 @@ function frames(page: Page, kind: 'drag' | 'zoom' | 'pan', count: number): Promi
               times.push(performance.now() - start);
               done();
             };
-            const at = { clientX: x + Math.sin(i / 9) * 160, clientY: y + Math.sin(i / 6) * 90, bubbles: true, cancelable: true };
-            if (what === 'drag') host.dispatchEvent(new PointerEvent('pointermove', { ...at, pointerId: 1, pointerType: 'mouse', buttons: 1 }));
-            else if (what === 'zoom') host.dispatchEvent(new WheelEvent('wheel', { ...at, deltaY: i % 30 < 15 ? 60 : -60 }));
-            else host.dispatchEvent(new WheelEvent('wheel', { ...at, deltaX: 0.5, deltaY: i % 30 < 15 ? 12.5 : -12.5 }));
+            const at = {
+              clientX: x + Math.sin(i / 9) * 160,
+              clientY: y + Math.sin(i / 6) * 90,
+              bubbles: true,
+              cancelable: true,
+            };
+            if (what === 'drag')
+              host.dispatchEvent(
+                new PointerEvent('pointermove', { ...at, pointerId: 1, pointerType: 'mouse', buttons: 1 }),
+              );
+            else if (what === 'zoom')
+              host.dispatchEvent(new WheelEvent('wheel', { ...at, deltaY: i % 30 < 15 ? 60 : -60 }));
+            else
+              host.dispatchEvent(new WheelEvent('wheel', { ...at, deltaX: 0.5, deltaY: i % 30 < 15 ? 12.5 : -12.5 }));
             port2.postMessage(0);
           }),
         );
@@ -91,8 +112,10 @@ async function drag(page: Page): Promise<number[]> {
   return times;
 }
 
-const share = (times: readonly number[], part: number): number => [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) * part)] ?? NaN;
-const said = (times: readonly number[]): string => `${share(times, 0.5).toFixed(1).padStart(6)} ${share(times, 0.95).toFixed(1).padStart(6)}`;
+const share = (times: readonly number[], part: number): number =>
+  [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) * part)] ?? NaN;
+const said = (times: readonly number[]): string =>
+  `${share(times, 0.5).toFixed(1).padStart(6)} ${share(times, 0.95).toFixed(1).padStart(6)}`;
 
 function serve(folder: string): Promise<{ address: string; stop: () => void }> {
   const server = createServer((request, response) => {
@@ -115,7 +138,11 @@ async function run(print: (line: string) => void): Promise<void> {
   const require = createRequire(join(process.cwd(), 'package.json'));
   const { chromium } = require('playwright-core') as typeof import('playwright-core');
   const folder = mkdtempSync(join(tmpdir(), 'spooltable-sheet-'));
-  const built = spawnSync(process.execPath, ['node_modules/vite/bin/vite.js', 'build', '--outDir', folder, '--emptyOutDir', '--logLevel', 'error'], { stdio: ['ignore', 'ignore', 'inherit'] });
+  const built = spawnSync(
+    process.execPath,
+    ['node_modules/vite/bin/vite.js', 'build', '--outDir', folder, '--emptyOutDir', '--logLevel', 'error'],
+    { stdio: ['ignore', 'ignore', 'inherit'] },
+  );
   if (built.status !== 0) throw new Error('The editor could not be built.');
   const server = await serve(folder);
   const browser = await chromium.launch({ executablePath: findChromium(), args: CHROMIUM_FLAGS });
@@ -128,7 +155,9 @@ async function run(print: (line: string) => void): Promise<void> {
       const all = [await drag(page), await frames(page, 'zoom', FRAMES), await frames(page, 'pan', FRAMES)];
       const medians = all.map((times) => share(times, 0.5));
       if (count === 1) one = medians;
-      print(`${String(count).padStart(5)}${all.map((times, i) => `  ${said(times)} ${((medians[i] ?? NaN) / (one[i] ?? NaN)).toFixed(1).padStart(6)}`).join('')}`);
+      print(
+        `${String(count).padStart(5)}${all.map((times, i) => `  ${said(times)} ${((medians[i] ?? NaN) / (one[i] ?? NaN)).toFixed(1).padStart(6)}`).join('')}`,
+      );
       await page.context().close();
     }
     const page = await open(browser, server.address, placeMissing(family('BANK', 8)));
@@ -148,7 +177,9 @@ async function run(print: (line: string) => void): Promise<void> {
       await page.getByText('of 6561').first().waitFor();
       times.push(performance.now() - start);
     }
-    print(`edit to table, 8 valves, 6561 rows: ${share(times, 0.5).toFixed(0)} ms, at most ${Math.max(...times).toFixed(0)} ms`);
+    print(
+      `edit to table, 8 valves, 6561 rows: ${share(times, 0.5).toFixed(0)} ms, at most ${Math.max(...times).toFixed(0)} ms`,
+    );
   } finally {
     await browser.close();
     server.stop();

@@ -33,7 +33,9 @@ test.each(Object.keys(sides) as Edge[])('%s: all stand on one edge, and one undo
   expect(new Set(at).size).toBe(1);
   // Nothing moves along the edge itself.
   const upright = edge === 'left' || edge === 'centre' || edge === 'right';
-  moved.parts.forEach((each, i) => expect(upright ? each.at?.y : each.at?.x).toBe(upright ? SHEET.parts[i]?.at?.y : SHEET.parts[i]?.at?.x));
+  moved.parts.forEach((each, i) =>
+    expect(upright ? each.at?.y : each.at?.x).toBe(upright ? SHEET.parts[i]?.at?.y : SHEET.parts[i]?.at?.x),
+  );
   expect(applyEdit(moved, invertEdit(SHEET, edit))).toEqual(SHEET);
 });
 
@@ -54,7 +56,8 @@ test('distributing leaves the outermost where they are and makes the gaps equal'
     });
     // Whole modules: two roundings of half a module each.
     expect(Math.max(...gaps) - Math.min(...gaps)).toBeLessThanOrEqual(1);
-    const low = (each: Circuit): number => Math.min(...each.parts.map((p) => (way === 'across' ? partBox(p).x : partBox(p).y)));
+    const low = (each: Circuit): number =>
+      Math.min(...each.parts.map((p) => (way === 'across' ? partBox(p).x : partBox(p).y)));
     expect(low(moved)).toBe(low(SHEET));
   }
   expect(distributeShifts(SHEET, ['F1', 'F2'], 'across').size).toBe(0);

@@ -35,9 +35,17 @@ test('a stretch that is moved stays where it was put, whatever stands there', ()
 });
 
 test('a straight line from port to port gets a jog with a stub at both ends', () => {
-  const points = [{ x: 0, y: 20 }, { x: 0, y: 0 }];
+  const points = [
+    { x: 0, y: 20 },
+    { x: 0, y: 0 },
+  ];
   const { bends } = moveSegment(points, 0, 5);
-  expect(bends).toEqual([{ x: 0, y: 18 }, { x: 5, y: 18 }, { x: 5, y: 2 }, { x: 0, y: 2 }]);
+  expect(bends).toEqual([
+    { x: 0, y: 18 },
+    { x: 5, y: 18 },
+    { x: 5, y: 2 },
+    { x: 0, y: 2 },
+  ]);
 });
 
 test('moved back, a stretch leaves no bend more than it needs', () => {
@@ -60,7 +68,10 @@ test('a bend that stood straight over a port goes along with the part, so that n
   const { bends } = moveSegment(route(), 1, -6);
   const bent = applyEdit(SHEET, setBends(SHEET, 'c1', bends));
   const slid = slideBends(bent, new Set(['V1']), 3, 0);
-  const moved = applyEdit(bent, all([moveParts(bent, ['V1'], 3, 0), ...[...slid].map(([id, to]) => changeConnection(id, { bends: to }))]));
+  const moved = applyEdit(
+    bent,
+    all([moveParts(bent, ['V1'], 3, 0), ...[...slid].map(([id, to]) => changeConnection(id, { bends: to }))]),
+  );
   expect(route(moved)).toHaveLength(route(bent).length);
   expect(route(moved)[0]?.x).toBe((route(bent)[0]?.x ?? 0) + 3);
 });

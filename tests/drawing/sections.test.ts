@@ -10,31 +10,42 @@ import { SUB_CIRCUITS } from '../../src/drawing/sub-circuits.ts';
 import { kindOf } from '../../src/parts/catalogue.ts';
 
 const said = (circuit: Circuit): string[] =>
-  circuit.connections.map(({ from, to }) => [`${from.part}.${from.port}`, `${to.part}.${to.port}`].sort().join(' ')).sort();
+  circuit.connections
+    .map(({ from, to }) => [`${from.part}.${from.port}`, `${to.part}.${to.port}`].sort().join(' '))
+    .sort();
 const made = (id: string): Circuit => (SUB_CIRCUITS.find((each) => each.id === id) as (typeof SUB_CIRCUITS)[0]).make();
 const EMPTY: Circuit = { name: 'bank', parts: [], connections: [] };
 
-test.each(SUB_CIRCUITS.map((each) => [each.id, each] as const))('%s: ports exist, parts stand clear, lines run round them', (_, each) => {
-  const circuit = each.make();
-  for (const { from, to } of circuit.connections) {
-    for (const ref of [from, to]) {
-      const part = circuit.parts.find(({ id }) => id === ref.part);
-      expect(part && placedPorts(part).map((port) => port.ref.port)).toContain(ref.port);
+test.each(SUB_CIRCUITS.map((each) => [each.id, each] as const))(
+  '%s: ports exist, parts stand clear, lines run round them',
+  (_, each) => {
+    const circuit = each.make();
+    for (const { from, to } of circuit.connections) {
+      for (const ref of [from, to]) {
+        const part = circuit.parts.find(({ id }) => id === ref.part);
+        expect(part && placedPorts(part).map((port) => port.ref.port)).toContain(ref.port);
+      }
     }
-  }
-  circuit.parts.forEach((a, i) => circuit.parts.slice(i + 1).forEach((b) => expect(overlaps(partReach(a), partReach(b))).toBe(false)));
-  for (const part of circuit.parts) {
-    const known = new Set(kindOf(part.kind)?.settings.map(({ id }) => id));
-    for (const key of Object.keys(part.settings ?? {})) expect(known.has(key)).toBe(true);
-  }
-  expect([...routeAll(circuit).values()].every((points) => points.length >= 2)).toBe(true);
-  expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50).edit).parts).toHaveLength(circuit.parts.length);
-});
+    circuit.parts.forEach((a, i) =>
+      circuit.parts.slice(i + 1).forEach((b) => expect(overlaps(partReach(a), partReach(b))).toBe(false)),
+    );
+    for (const part of circuit.parts) {
+      const known = new Set(kindOf(part.kind)?.settings.map(({ id }) => id));
+      for (const key of Object.keys(part.settings ?? {})) expect(known.has(key)).toBe(true);
+    }
+    expect([...routeAll(circuit).values()].every((points) => points.length >= 2)).toBe(true);
+    expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50).edit).parts).toHaveLength(circuit.parts.length);
+  },
+);
 
 test('a section beside another stands on the same pump and tank lines', () => {
   const bank: Circuit = {
     ...made('lever-section'),
-    parts: [...made('lever-section').parts, { id: 'PU', kind: 'fixed-pump', at: { x: -20, y: 30 } }, { id: 'TA', kind: 'tank', at: { x: 5, y: 30 } }],
+    parts: [
+      ...made('lever-section').parts,
+      { id: 'PU', kind: 'fixed-pump', at: { x: -20, y: 30 } },
+      { id: 'TA', kind: 'tank', at: { x: 5, y: 30 } },
+    ],
     connections: [
       ...made('lever-section').connections,
       { id: 'p', from: { part: 'PU', port: 'P' }, to: { part: 'V1', port: 'P' } },
@@ -58,7 +69,9 @@ test('a carry-over section comes in between: C2 of the first to its C1, and what
     connections: [...first.connections, { id: 't', from: { part: 'V1', port: 'C2' }, to: { part: 'TA', port: 'T' } }],
   };
   const after = applyEdit(bank, appendSection(bank, 'V1').edit);
-  expect(said(after)).toEqual(['CYL1.A V1.A', 'CYL1.B V1.B', 'CYL2.A V2.A', 'CYL2.B V2.B', 'TA.T V2.C2', 'V1.C2 V2.C1'].sort());
+  expect(said(after)).toEqual(
+    ['CYL1.A V1.A', 'CYL1.B V1.B', 'CYL2.A V2.A', 'CYL2.B V2.B', 'TA.T V2.C2', 'V1.C2 V2.C1'].sort(),
+  );
 });
 
 test('in a series bank the new valve takes its oil from the tank port of the one before', () => {
@@ -83,6 +96,8 @@ test('in a series bank the new valve takes its oil from the tank port of the one
 test('the lock goes along with its section, and only a valve begins one', () => {
   const bank = made('lock-section');
   const after = applyEdit(bank, appendSection(bank, 'V1').edit);
-  expect(after.parts.map(({ kind }) => kind).sort()).toEqual([...bank.parts, ...bank.parts].map(({ kind }) => kind).sort());
+  expect(after.parts.map(({ kind }) => kind).sort()).toEqual(
+    [...bank.parts, ...bank.parts].map(({ kind }) => kind).sort(),
+  );
   expect(() => appendSection(bank, 'CYL1')).toThrow('directional valve');
 });

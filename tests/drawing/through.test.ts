@@ -14,8 +14,21 @@ test('lines end at pumps and actuators, and run through what has two working por
     const sample = { id: 'X', kind: kind.kind, ...kind.readyMade[0]?.make() };
     return throughPairs(sample).length > 0 ? [kind.kind] : [];
   });
-  expect(through).toEqual(expect.arrayContaining(['filter', 'check-valve', 'throttle', 'one-way-throttle', 'lock-check', 'double-lock-check', 'shut-off-valve', 'relief-valve', 'junction']));
-  for (const end of ['cylinder', 'motor', 'fixed-pump', 'tank', 'gauge', 'plug', 'accumulator']) expect(through).not.toContain(end);
+  expect(through).toEqual(
+    expect.arrayContaining([
+      'filter',
+      'check-valve',
+      'throttle',
+      'one-way-throttle',
+      'lock-check',
+      'double-lock-check',
+      'shut-off-valve',
+      'relief-valve',
+      'junction',
+    ]),
+  );
+  for (const end of ['cylinder', 'motor', 'fixed-pump', 'tank', 'gauge', 'plug', 'accumulator'])
+    expect(through).not.toContain(end);
 });
 
 test.each([
@@ -39,17 +52,38 @@ test('what the user has turned stays turned', () => {
 });
 
 test('the line is cut and joined; bends are shared out; taking the part out with healing brings one line back', () => {
-  const line = { ...(joins('V1.A V2.A')[0] as ReturnType<typeof joins>[0]), name: 'LIFT', use: 'working' as const, size: '12x1.5', bends: [{ x: -1, y: 10 }, { x: 39, y: 10 }] };
-  const sheet = circuit([valve('V1', { x: 0, y: 30 }), valve('V2', { x: 40, y: 30 }), part('F1', 'filter', { x: 20, y: 10 })], [line]);
+  const line = {
+    ...(joins('V1.A V2.A')[0] as ReturnType<typeof joins>[0]),
+    name: 'LIFT',
+    use: 'working' as const,
+    size: '12x1.5',
+    bends: [
+      { x: -1, y: 10 },
+      { x: 39, y: 10 },
+    ],
+  };
+  const sheet = circuit(
+    [valve('V1', { x: 0, y: 30 }), valve('V2', { x: 40, y: 30 }), part('F1', 'filter', { x: 20, y: 10 })],
+    [line],
+  );
   const edit = insertInto(sheet, 'c1', 'F1', { entry: 'A', exit: 'B' }, { x: 20, y: 10 });
   const cut = applyEdit(sheet, edit);
   expect(cut.connections).toEqual([
     { ...line, to: { part: 'F1', port: 'A' }, bends: [{ x: -1, y: 10 }] },
-    { id: 'c2', from: { part: 'F1', port: 'B' }, to: line.to, use: 'working', size: '12x1.5', bends: [{ x: 39, y: 10 }] },
+    {
+      id: 'c2',
+      from: { part: 'F1', port: 'B' },
+      to: line.to,
+      use: 'working',
+      size: '12x1.5',
+      bends: [{ x: 39, y: 10 }],
+    },
   ]);
   expect(applyEdit(cut, invertEdit(sheet, edit))).toEqual(sheet);
   expect(applyEdit(cut, removeParts(cut, ['F1'], { heal: true })).connections).toEqual([line]);
-  expect(() => insertInto(sheet, 'c1', 'V1', { entry: 'P', exit: 'T' }, { x: 0, y: 10 })).toThrow('an end of that line');
+  expect(() => insertInto(sheet, 'c1', 'V1', { entry: 'P', exit: 'T' }, { x: 0, y: 10 })).toThrow(
+    'an end of that line',
+  );
 });
 
 test('a swap keeps lines of the same letters and settings that mean the same, and tells the rest', () => {

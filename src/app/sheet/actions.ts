@@ -9,8 +9,20 @@ import { endOnLine, portEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
-import { commitShift, finishLine, middleOfView, nameOf, putDown, putDownSeveral, sayThings, setLever, startLine, writeAt } from './hand.ts';
+import {
+  commitShift,
+  finishLine,
+  middleOfView,
+  nameOf,
+  putDown,
+  putDownSeveral,
+  sayThings,
+  setLever,
+  startLine,
+  writeAt,
+} from './hand.ts';
 import { arrangeActions } from './arrange-actions.ts';
+import { insertHint } from './inserting.ts';
 import { lineActions, nudgeStretch, stepStretch, straightenStretch } from './line-actions.ts';
 import { lookActions } from './look-actions.ts';
 import { menuActsOn } from './sheet-menu.ts';
@@ -114,7 +126,10 @@ export const sheetActions: SheetActions = {
     if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') {
       const at = gesture.at ?? middleOfView();
       const moved = { x: at.x + dx, y: at.y + dy };
+      const before = insertHint();
       desk.gesture = { ...gesture, at: moved };
+      const now = insertHint();
+      if (now !== undefined && now !== before) desk.say(now);
       desk.viewport = reveal(desk.viewport, desk.size, { ...moved, width: 0, height: 0 }, 6);
       return;
     }
@@ -138,7 +153,10 @@ export const sheetActions: SheetActions = {
       return;
     }
     if (refuseEmpty()) return;
-    attempt(() => turnParts(editor.circuit, selectedParts(), quarter, drawing.places), `${sayThings(selectedParts(), [])} turned.`);
+    attempt(
+      () => turnParts(editor.circuit, selectedParts(), quarter, drawing.places),
+      `${sayThings(selectedParts(), [])} turned.`,
+    );
   },
 
   flip() {
@@ -149,7 +167,10 @@ export const sheetActions: SheetActions = {
     }
     // With nothing to flip the key is free for others.
     if (selectedParts().length === 0) return false;
-    return attempt(() => flipParts(editor.circuit, selectedParts(), drawing.places), `${sayThings(selectedParts(), [])} flipped.`);
+    return attempt(
+      () => flipParts(editor.circuit, selectedParts(), drawing.places),
+      `${sayThings(selectedParts(), [])} flipped.`,
+    );
   },
 
   remove(heal) {

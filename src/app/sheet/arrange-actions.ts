@@ -35,22 +35,31 @@ export const arrangeActions: ArrangeActions = {
     const parts = several(2, 'align them');
     if (!parts) return;
     const shifts = alignShifts(drawing.circuit, parts, edge);
-    attempt(() => shiftEach(editor.circuit, shifts, drawing.places), `${counted(parts.length, 'part')} ${EDGE_WORDS[edge]}.`);
+    attempt(
+      () => shiftEach(editor.circuit, shifts, drawing.places),
+      `${counted(parts.length, 'part')} ${EDGE_WORDS[edge]}.`,
+    );
   },
 
   distribute(way) {
     const parts = several(3, 'space them evenly');
     if (!parts) return;
     const shifts = distributeShifts(drawing.circuit, parts, way);
-    attempt(() => shiftEach(editor.circuit, shifts, drawing.places), `${counted(parts.length, 'part')} spaced evenly ${way}.`);
+    attempt(
+      () => shiftEach(editor.circuit, shifts, drawing.places),
+      `${counted(parts.length, 'part')} spaced evenly ${way}.`,
+    );
   },
 
   selectKind() {
     const { parts, connections, labels } = editor.selection;
     const { circuit } = editor;
-    if (parts.length + connections.length + labels.length === 0) return desk.refuse('Select a part, a line or a text first.');
+    if (parts.length + connections.length + labels.length === 0)
+      return desk.refuse('Select a part, a line or a text first.');
     const kinds = new Set(circuit.parts.filter(({ id }) => parts.includes(id)).map(({ kind }) => kind));
-    const uses = new Set(circuit.connections.filter(({ id }) => connections.includes(id)).map(({ use }) => use ?? 'working'));
+    const uses = new Set(
+      circuit.connections.filter(({ id }) => connections.includes(id)).map(({ use }) => use ?? 'working'),
+    );
     const found = {
       parts: circuit.parts.filter(({ kind }) => kinds.has(kind)).map(({ id }) => id),
       connections: circuit.connections.filter(({ use }) => uses.has(use ?? 'working')).map(({ id }) => id),
@@ -102,7 +111,8 @@ export const arrangeActions: ArrangeActions = {
     if (valve === undefined) return desk.refuse('Select the valve beside which the section is to go.');
     const made = tryTo(() => appendSection(drawing.circuit, valve));
     if (!made) return;
-    if (!attempt(() => made.edit, `Section with ${counted(made.parts.length, 'part')} added beside ${nameOf(valve)}.`)) return;
+    if (!attempt(() => made.edit, `Section with ${counted(made.parts.length, 'part')} added beside ${nameOf(valve)}.`))
+      return;
     editor.select({ parts: made.parts });
     desk.cursor = { type: 'part', id: made.valve };
   },
@@ -112,7 +122,8 @@ export const arrangeActions: ArrangeActions = {
     if (parts.length + labels.length === 0) return desk.refuse('Select what is to be kept.');
     const all = withGroups(editor.circuit, parts);
     const kept = own.keep(drawing.circuit, all, labels);
-    if (kept === undefined) desk.refuse('This browser has no room to keep it. Remove one of your own from the tray first.');
+    if (kept === undefined)
+      desk.refuse('This browser has no room to keep it. Remove one of your own from the tray first.');
     else desk.say(`Kept in the tray as ${kept}, under Your own.`);
   },
 

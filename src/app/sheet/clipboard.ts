@@ -48,7 +48,16 @@ export function pasteText(text: string): void {
   const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y));
   if (!pasted) return;
   const { edit, parts, labels } = pasted;
-  if (attempt(() => edit, `${sayThings(fragment.parts.map(({ id }) => id), labels)} pasted.`)) editor.select({ parts, labels });
+  if (
+    attempt(
+      () => edit,
+      `${sayThings(
+        fragment.parts.map(({ id }) => id),
+        labels,
+      )} pasted.`,
+    )
+  )
+    editor.select({ parts, labels });
 }
 
 /** A little off the original; in the middle of the view if the original is out of sight. */

@@ -28,10 +28,22 @@ export const SHEET_COMMANDS: readonly Command[] = [
     keys: ['Enter'],
     run: (s) => s.accept(),
   },
-  { id: 'cancel', title: 'Give up the line or placement, then select nothing', group: 'Draw', keys: ['Escape'], run: (s) => s.cancel() },
+  {
+    id: 'cancel',
+    title: 'Give up the line or placement, then select nothing',
+    group: 'Draw',
+    keys: ['Escape'],
+    run: (s) => s.cancel(),
+  },
 
   { id: 'name', title: 'Name the part or line', group: 'Change', keys: ['F2'], run: (s) => s.rename() },
-  { id: 'settings', title: 'Open the settings of the part', group: 'Change', keys: ['E'], run: (s) => s.openSettings() },
+  {
+    id: 'settings',
+    title: 'Open the settings of the part',
+    group: 'Change',
+    keys: ['E'],
+    run: (s) => s.openSettings(),
+  },
   { id: 'turn', title: 'Turn clockwise', group: 'Change', keys: ['T'], run: (s) => s.turn(90) },
   { id: 'turn-back', title: 'Turn anticlockwise', group: 'Change', keys: ['Shift+T'], run: (s) => s.turn(-90) },
   { id: 'flip', title: 'Flip left to right', group: 'Change', keys: ['F'], run: (s) => s.flip() },
@@ -52,7 +64,13 @@ export const SHEET_COMMANDS: readonly Command[] = [
 
   { id: 'select-all', title: 'Select everything', group: 'Select and go', keys: ['Ctrl+A'], run: (s) => s.selectAll() },
   { id: 'next', title: 'Next part, port or line', group: 'Select and go', keys: ['Tab'], run: (s) => s.step(1) },
-  { id: 'previous', title: 'Previous part, port or line', group: 'Select and go', keys: ['Shift+Tab'], run: (s) => s.step(-1) },
+  {
+    id: 'previous',
+    title: 'Previous part, port or line',
+    group: 'Select and go',
+    keys: ['Shift+Tab'],
+    run: (s) => s.step(-1),
+  },
   ...arrows(1).map(([key, dx, dy]): Command => ({
     id: `arrow-${WORDS[key] ?? key}`,
     title: `Move 1 module ${WORDS[key] ?? ''}; from a port: next port that way; with nothing selected: pan`,
@@ -70,8 +88,20 @@ export const SHEET_COMMANDS: readonly Command[] = [
 
   ...MORE_COMMANDS.filter(({ group }) => group !== 'View'),
 
-  { id: 'lever-back', title: 'Selected valve: lever to the position on the left', group: 'Levers', keys: ['Ctrl+ArrowLeft'], run: (s) => s.shiftLever(-1) },
-  { id: 'lever-on', title: 'Selected valve: lever to the position on the right', group: 'Levers', keys: ['Ctrl+ArrowRight'], run: (s) => s.shiftLever(1) },
+  {
+    id: 'lever-back',
+    title: 'Selected valve: lever to the position on the left',
+    group: 'Levers',
+    keys: ['Ctrl+ArrowLeft'],
+    run: (s) => s.shiftLever(-1),
+  },
+  {
+    id: 'lever-on',
+    title: 'Selected valve: lever to the position on the right',
+    group: 'Levers',
+    keys: ['Ctrl+ArrowRight'],
+    run: (s) => s.shiftLever(1),
+  },
 
   { id: 'zoom-in', title: 'Zoom in', group: 'View', keys: ['+', '='], run: (s) => s.zoom(ZOOM_STEP) },
   { id: 'zoom-out', title: 'Zoom out', group: 'View', keys: ['-'], run: (s) => s.zoom(1 / ZOOM_STEP) },

@@ -19,14 +19,37 @@ export type Gesture =
   /** `into`: the line that the part would go into if it were let go. */
   | { readonly type: 'drag'; readonly ids: readonly string[]; readonly into?: Insertion | undefined }
   /** A stretch of a line is moved: `held` by the pointer, else by the keys. */
-  | { readonly type: 'bend'; readonly connection: string; readonly segment: number; readonly route: readonly Point[]; readonly held: boolean }
+  | {
+      readonly type: 'bend';
+      readonly connection: string;
+      readonly segment: number;
+      readonly route: readonly Point[];
+      readonly held: boolean;
+    }
   /** A text on its way to its place. */
   | { readonly type: 'text'; readonly at: Point | undefined }
   /** Several parts with their lines, as one. */
-  | { readonly type: 'place-several'; readonly title: string; readonly fragment: Circuit; readonly at: Point | undefined }
+  | {
+      readonly type: 'place-several';
+      readonly title: string;
+      readonly fragment: Circuit;
+      readonly at: Point | undefined;
+    }
   /** `held`: the button is down; otherwise the line waits for its second click. */
-  | { readonly type: 'connect'; readonly from: End; readonly to: Point; readonly over: End | undefined; readonly held: boolean }
-  | { readonly type: 'place'; readonly form: Form; readonly at: Point | undefined; readonly turn: Turn; readonly flip: boolean };
+  | {
+      readonly type: 'connect';
+      readonly from: End;
+      readonly to: Point;
+      readonly over: End | undefined;
+      readonly held: boolean;
+    }
+  | {
+      readonly type: 'place';
+      readonly form: Form;
+      readonly at: Point | undefined;
+      readonly turn: Turn;
+      readonly flip: boolean;
+    };
 
 /** A ready-made form in the hand: the part kind and the form's id. */
 export interface Form {
@@ -76,7 +99,11 @@ class Desk {
   /** The element that has the keyboard while the sheet does. */
   host = $state.raw<HTMLElement | undefined>();
 
-  #said = $state.raw<{ readonly text: string; readonly refused: boolean; readonly count: number }>({ text: '', refused: false, count: 0 });
+  #said = $state.raw<{ readonly text: string; readonly refused: boolean; readonly count: number }>({
+    text: '',
+    refused: false,
+    count: 0,
+  });
   said = $derived(this.#said);
 
   /** Shown in the status line and read out. */

@@ -19,7 +19,7 @@ import { joinEnds, sayEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
-import { insertionInHand, sayLine, withInsertion } from './inserting.ts';
+import { insertHint, insertionInHand, sayLine, withInsertion } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { snap, toSheet } from './viewport.ts';
 import { zoneAt } from './zones.ts';
@@ -33,8 +33,14 @@ export function takeUp(readyId: string, at?: Point): void {
   const { kind, readyMade } = entry;
   editor.select({});
   desk.cursor = undefined;
-  desk.gesture = { type: 'place', form: { kind: kind.kind, ready: readyMade.id, title: readyMade.title }, at, turn: 0, flip: false };
-  desk.say(`${readyMade.title} in hand.`);
+  desk.gesture = {
+    type: 'place',
+    form: { kind: kind.kind, ready: readyMade.id, title: readyMade.title },
+    at,
+    turn: 0,
+    flip: false,
+  };
+  desk.say([`${readyMade.title} in hand.`, insertHint()].filter(Boolean).join(' '));
 }
 
 /** Take several parts with their lines into the hand, as one. */
@@ -52,7 +58,10 @@ export function putDownSeveral(at: Point, again = false): void {
   const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y));
   if (!put) return;
   if (!again) desk.rest();
-  if (!attempt(() => put.edit, `${gesture.title} placed in zone ${zoneAt(where)}: ${counted(put.parts.length, 'part')}.`)) return;
+  if (
+    !attempt(() => put.edit, `${gesture.title} placed in zone ${zoneAt(where)}: ${counted(put.parts.length, 'part')}.`)
+  )
+    return;
   editor.select({ parts: put.parts, labels: put.labels });
 }
 
@@ -62,7 +71,8 @@ export function writeAt(at: Point): void {
   desk.naming = { of: 'text', id: '', at: snap(at) };
 }
 
-export const middleOfView = (): Point => snap(toSheet(desk.viewport, { x: desk.size.width / 2, y: desk.size.height / 2 }));
+export const middleOfView = (): Point =>
+  snap(toSheet(desk.viewport, { x: desk.size.width / 2, y: desk.size.height / 2 }));
 
 /** Put the part in hand down. `again`: keep another one in hand. */
 export function putDown(at: Point, again = false): void {
@@ -154,7 +164,10 @@ export function commitShift(dx: number, dy: number, burst: string, { into, alone
     drawing.preview = undefined;
     const from = circuit.parts.find(({ id }) => id === first)?.at ?? at ?? into.at;
     const moved = (): Edit => shift(circuit, editor.selection, into.at.x - from.x, into.at.y - from.y, true);
-    attempt(() => withInsertion(circuit, moved(), first, into), `${nameOf(first)} put into ${sayLine(into.connection)}.`);
+    attempt(
+      () => withInsertion(circuit, moved(), first, into),
+      `${nameOf(first)} put into ${sayLine(into.connection)}.`,
+    );
   } else if (dx !== 0 || dy !== 0) {
     attempt(() => shift(circuit, editor.selection, dx, dy, alone), `${sayThings(parts, labels)} moved.`, burst);
   }

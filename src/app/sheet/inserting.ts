@@ -34,7 +34,13 @@ export function insertionInHand(gesture: Gesture): Insertion | undefined {
   if (gesture.type !== 'place' || !gesture.at) return undefined;
   const ready = readyMadeOf(gesture.form.ready)?.readyMade;
   if (!ready) return undefined;
-  const part: Part = { id: '?', kind: gesture.form.kind, ...ready.make(), turn: gesture.turn, ...(gesture.flip && { flip: true }) };
+  const part: Part = {
+    id: '?',
+    kind: gesture.form.kind,
+    ...ready.make(),
+    turn: gesture.turn,
+    ...(gesture.flip && { flip: true }),
+  };
   return insertionUnder(part, gesture.at, gesture.turn === 0 && !gesture.flip);
 }
 
@@ -42,14 +48,20 @@ export function insertionInHand(gesture: Gesture): Insertion | undefined {
 export function insertionOfDragged(ids: readonly string[], dx: number, dy: number): Insertion | undefined {
   const [id] = ids;
   const { circuit } = editor;
-  if (ids.length !== 1 || circuit.connections.some(({ from, to }) => from.part === id || to.part === id)) return undefined;
+  if (ids.length !== 1 || circuit.connections.some(({ from, to }) => from.part === id || to.part === id))
+    return undefined;
   const part = circuit.parts.find((each) => each.id === id);
   const at = part && (part.at ?? drawing.places.get(part.id));
   return part && at ? insertionUnder(part, { x: at.x + dx, y: at.y + dy }, false) : undefined;
 }
 
 /** `before`, which puts the part where it belongs, and the line cut and joined to it. */
-export function withInsertion(circuit: Circuit, before: Edit, part: string, { connection, entry, exit, at }: Insertion): Edit {
+export function withInsertion(
+  circuit: Circuit,
+  before: Edit,
+  part: string,
+  { connection, entry, exit, at }: Insertion,
+): Edit {
   return all([before, insertInto(applyEdit(circuit, before), connection, part, { entry, exit }, at)]);
 }
 
@@ -57,7 +69,8 @@ export const sayLine = (connection: string): string => {
   const found = editor.circuit.connections.find(({ id }) => id === connection);
   if (!found) return 'the line';
   if (found.name !== undefined) return `line ${found.name}`;
-  const end = ({ part, port }: { readonly part: string; readonly port: string }): string => `${drawing.byId.get(part)?.label ?? part}.${port}`;
+  const end = ({ part, port }: { readonly part: string; readonly port: string }): string =>
+    `${drawing.byId.get(part)?.label ?? part}.${port}`;
   return `the line from ${end(found.from)} to ${end(found.to)}`;
 };
 

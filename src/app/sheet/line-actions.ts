@@ -44,7 +44,11 @@ export function dropStretch(gesture: Bending, dx: number, dy: number, burst: str
   drawing.preview = undefined;
   desk.rest();
   if (across(gesture, dx, dy) === 0) return;
-  attempt(() => setBends(editor.circuit, gesture.connection, bends), `Stretch of ${sayLine(gesture.connection)} moved.`, burst);
+  attempt(
+    () => setBends(editor.circuit, gesture.connection, bends),
+    `Stretch of ${sayLine(gesture.connection)} moved.`,
+    burst,
+  );
 }
 
 const isFlat = ({ route, segment }: Bending): boolean => route[segment]?.y === route[segment + 1]?.y;
@@ -73,7 +77,12 @@ export function stepStretch(gesture: Bending, by: 1 | -1): void {
   desk.gesture = { ...gesture, segment };
   const [a, b] = [gesture.route[segment], gesture.route[segment + 1]];
   if (a && b) {
-    const box = { x: Math.min(a.x, b.x), y: Math.min(a.y, b.y), width: Math.abs(a.x - b.x), height: Math.abs(a.y - b.y) };
+    const box = {
+      x: Math.min(a.x, b.x),
+      y: Math.min(a.y, b.y),
+      width: Math.abs(a.x - b.x),
+      height: Math.abs(a.y - b.y),
+    };
     desk.viewport = reveal(desk.viewport, desk.size, box, 3);
   }
   desk.say(sayStretch(gesture.route, segment));
@@ -95,21 +104,33 @@ export const lineActions: LineActions = {
     const [connection] = editor.selection.connections;
     if (connection === undefined) return desk.refuse('Select a line first.');
     const route = routeOf(connection);
-    const lengths = route.slice(1).map((b, i) => Math.abs(b.x - (route[i]?.x ?? 0)) + Math.abs(b.y - (route[i]?.y ?? 0)));
+    const lengths = route
+      .slice(1)
+      .map((b, i) => Math.abs(b.x - (route[i]?.x ?? 0)) + Math.abs(b.y - (route[i]?.y ?? 0)));
     takeStretch(connection, Math.max(0, lengths.indexOf(Math.max(...lengths))), false);
     const { gesture } = desk;
-    if (gesture.type === 'bend') desk.say(`${sayStretch(gesture.route, gesture.segment)} Tab goes to the next, Escape ends.`);
+    if (gesture.type === 'bend')
+      desk.say(`${sayStretch(gesture.route, gesture.segment)} Tab goes to the next, Escape ends.`);
   },
 
   tidy() {
     const { parts, connections } = editor.selection;
     const { circuit } = editor;
     const at = new Set(parts);
-    const picked = circuit.connections.filter(({ id, from, to }) => connections.includes(id) || (at.has(from.part) && at.has(to.part)));
+    const picked = circuit.connections.filter(
+      ({ id, from, to }) => connections.includes(id) || (at.has(from.part) && at.has(to.part)),
+    );
     const lines = picked.length > 0 ? picked : parts.length + connections.length === 0 ? circuit.connections : [];
     const bent = lines.filter(({ bends }) => (bends?.length ?? 0) > 0);
     if (bent.length === 0) return desk.refuse('No bend was set there: the sheet lays these lines itself.');
-    attempt(() => clearBends(circuit, bent.map(({ id }) => id)), `${counted(bent.length, 'connection')} laid anew.`);
+    attempt(
+      () =>
+        clearBends(
+          circuit,
+          bent.map(({ id }) => id),
+        ),
+      `${counted(bent.length, 'connection')} laid anew.`,
+    );
   },
 
   nextUse() {

@@ -5,7 +5,16 @@ import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 import { endAt, portEnd } from './connecting.ts';
 import { desk } from './desk.svelte.ts';
-import { commitShift, finishLine, previewShift, putDown, putDownSeveral, setLever, startLine, writeAt } from './hand.ts';
+import {
+  commitShift,
+  finishLine,
+  previewShift,
+  putDown,
+  putDownSeveral,
+  setLever,
+  startLine,
+  writeAt,
+} from './hand.ts';
 import { boxOf, hitAt, inBand } from './hit.ts';
 import type { Hit } from './hit.ts';
 import { insertionOfDragged } from './inserting.ts';
@@ -70,7 +79,18 @@ export class SheetPointer {
     if (gesture.type === 'bend') desk.rest();
     const slides = pans || (event.pointerType === 'touch' && hit.type === 'paper' && gesture.type === 'none');
     const was = hit.type === 'port' && editor.isSelected('parts', hit.port.part);
-    this.#press = { pointer: event.pointerId, client, at, hit, adds, pans: slides, alone: event.ctrlKey || event.metaKey, was, moved: false, last: client };
+    this.#press = {
+      pointer: event.pointerId,
+      client,
+      at,
+      hit,
+      adds,
+      pans: slides,
+      alone: event.ctrlKey || event.metaKey,
+      was,
+      moved: false,
+      last: client,
+    };
     host.setPointerCapture(event.pointerId);
     if (!slides && (gesture.type === 'none' || gesture.type === 'bend')) pick(hit, adds);
   }
@@ -92,7 +112,8 @@ export class SheetPointer {
       return;
     }
     const { gesture } = desk;
-    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') desk.gesture = { ...gesture, at: snap(at) };
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text')
+      desk.gesture = { ...gesture, at: snap(at) };
     else this.#hover(at, event);
   }
 
@@ -137,7 +158,8 @@ export class SheetPointer {
     if (this.#press) return;
     desk.hover = { type: 'paper' };
     const { gesture } = desk;
-    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text') desk.gesture = { ...gesture, at: undefined };
+    if (gesture.type === 'place' || gesture.type === 'place-several' || gesture.type === 'text')
+      desk.gesture = { ...gesture, at: undefined };
   }
 
   doubleClick(event: MouseEvent): void {
@@ -163,7 +185,8 @@ export class SheetPointer {
     const { gesture } = desk;
     this.#press = undefined;
     drawing.preview = undefined;
-    if (!keeps || gesture.type === 'drag' || gesture.type === 'band' || (gesture.type === 'bend' && gesture.held)) desk.rest();
+    if (!keeps || gesture.type === 'drag' || gesture.type === 'band' || (gesture.type === 'bend' && gesture.held))
+      desk.rest();
   }
 
   /** Right button, or a long press: the menu of what is there; what is selected already stays selected. */
@@ -172,7 +195,12 @@ export class SheetPointer {
     if (desk.gesture.type !== 'none') return;
     const label = labelAt(event);
     const hit = frameOf(event, this.#hitAt(this.#toSheet({ x: event.clientX, y: event.clientY }), event));
-    const of: Press['hit'] = label !== undefined ? { type: 'label', id: label } : hit.type === 'port' ? { type: 'part', id: hit.port.part } : hit;
+    const of: Press['hit'] =
+      label !== undefined
+        ? { type: 'label', id: label }
+        : hit.type === 'port'
+          ? { type: 'part', id: hit.port.part }
+          : hit;
     if (of.type === 'paper') editor.select({});
     else pick(of, false);
     openMenuAt({ x: event.clientX, y: event.clientY });
@@ -205,7 +233,8 @@ export class SheetPointer {
       // A junction is picked by a click and then dragged; before that, a drag from it draws a line.
       const joint = hit.type === 'port' && hit.port.joint && press.was;
       if (hit.type === 'port' && !joint) startLine(portEnd(hit.port), true);
-      else if (hit.type === 'part' || hit.type === 'label' || joint) desk.gesture = { type: 'drag', ids: editor.selection.parts };
+      else if (hit.type === 'part' || hit.type === 'label' || joint)
+        desk.gesture = { type: 'drag', ids: editor.selection.parts };
       else if (hit.type === 'connection' && !press.adds) takeStretch(hit.id, hit.segment, true);
       else if (hit.type === 'paper') desk.gesture = { type: 'band', from: press.at, to: at, adds: press.adds };
       else return;
@@ -228,7 +257,11 @@ export class SheetPointer {
     const { gesture } = desk;
     if (gesture.type !== 'connect') return;
     const over = endAt(hitAt(drawing.map, at, reach() * 1.3));
-    const self = over?.type === 'port' && gesture.from.type === 'port' && over.ref.part === gesture.from.ref.part && over.ref.port === gesture.from.ref.port;
+    const self =
+      over?.type === 'port' &&
+      gesture.from.type === 'port' &&
+      over.ref.part === gesture.from.ref.part &&
+      over.ref.port === gesture.from.ref.port;
     desk.gesture = { ...gesture, to: at, over: self ? undefined : over };
   }
 
@@ -244,11 +277,19 @@ export class SheetPointer {
     const { parts, connections, labels } = editor.selection;
     editor.select(
       adds
-        ? { parts: union(parts, inside.parts), connections: union(connections, inside.connections), labels: union(labels, inside.labels) }
+        ? {
+            parts: union(parts, inside.parts),
+            connections: union(connections, inside.connections),
+            labels: union(labels, inside.labels),
+          }
         : inside,
     );
     const count = inside.parts.length + inside.connections.length;
-    desk.say(count === 0 ? 'Nothing lies wholly inside.' : `${inside.parts.length} parts and ${inside.connections.length} connections selected.`);
+    desk.say(
+      count === 0
+        ? 'Nothing lies wholly inside.'
+        : `${inside.parts.length} parts and ${inside.connections.length} connections selected.`,
+    );
   }
 
   /** Two fingers: the sheet follows both. */

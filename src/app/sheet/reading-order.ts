@@ -34,7 +34,10 @@ export function readingOrder(map: HitMap, ends: boolean): Cursor[] {
     ports.set(port.part, list);
   }
   return [
-    ...order.flatMap(({ id }): Cursor[] => [...(ends ? [] : [{ type: 'part' as const, id }]), ...(ports.get(id) ?? [])]),
+    ...order.flatMap(({ id }): Cursor[] => [
+      ...(ends ? [] : [{ type: 'part' as const, id }]),
+      ...(ports.get(id) ?? []),
+    ]),
     ...map.routes.map(({ id }): Cursor => ({ type: 'connection', id })),
     ...(ends ? [] : (map.labels ?? []).map(({ id }): Cursor => ({ type: 'label', id }))),
   ];

@@ -14,7 +14,10 @@ export function removal(circuit: Circuit, selection: Selection, heal: boolean): 
   const parts = removeParts(circuit, selection.parts, { heal });
   const withoutParts = applyEdit(circuit, parts);
   const left = new Set(withoutParts.connections.map(({ id }) => id));
-  const rest = all([removeConnections(selection.connections.filter((id) => left.has(id))), removeLabels(selection.labels)]);
+  const rest = all([
+    removeConnections(selection.connections.filter((id) => left.has(id))),
+    removeLabels(selection.labels),
+  ]);
   const edits: Edit[] = [parts, rest];
   let now = applyEdit(withoutParts, rest);
   for (const id of touched) {
@@ -32,7 +35,9 @@ export function removal(circuit: Circuit, selection: Selection, heal: boolean): 
 function junctionsAt(circuit: Circuit, { parts, connections }: Selection): Set<string> {
   const gone = new Set(parts);
   const cut = new Set(connections);
-  const junctions = new Set(circuit.parts.flatMap(({ id, kind }) => (kind === 'junction' && !gone.has(id) ? [id] : [])));
+  const junctions = new Set(
+    circuit.parts.flatMap(({ id, kind }) => (kind === 'junction' && !gone.has(id) ? [id] : [])),
+  );
   const touched = new Set<string>();
   for (const { id, from, to } of circuit.connections) {
     if (!cut.has(id) && !gone.has(from.part) && !gone.has(to.part)) continue;

@@ -72,7 +72,12 @@ class SheetDrawing {
     const looks = new Map(
       circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
     );
-    const state: SceneState = { lines: looks, parts: states, hops: sheetView.hops, from: this.preview && { circuit: this.#rest, routes: this.#layer.settled } };
+    const state: SceneState = {
+      lines: looks,
+      parts: states,
+      hops: sheetView.hops,
+      from: this.preview && { circuit: this.#rest, routes: this.#layer.settled },
+    };
     const scene = buildScene(circuit, routes, state);
     return {
       ...scene,
@@ -96,10 +101,18 @@ class SheetDrawing {
   map: HitMap = $derived.by(() => ({
     parts: this.scene.parts.map((part) => ({ id: part.id, box: outline(part, this.byId.get(part.id)) })),
     ports: this.scene.parts.flatMap((part) =>
-      part.ports.map(({ ref, at, side, role }) => ({ part: ref.part, port: ref.port, at, side, joint: role === 'joint' })),
+      part.ports.map(({ ref, at, side, role }) => ({
+        part: ref.part,
+        port: ref.port,
+        at,
+        side,
+        joint: role === 'joint',
+      })),
     ),
     routes: this.scene.lines.map(({ connection, points }) => ({ id: connection, points })),
-    labels: this.scene.labels.filter(({ role }) => role === 'free').map((label) => ({ id: label.owner, box: labelBox(label) })),
+    labels: this.scene.labels
+      .filter(({ role }) => role === 'free')
+      .map((label) => ({ id: label.owner, box: labelBox(label) })),
   }));
 }
 

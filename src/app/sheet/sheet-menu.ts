@@ -65,7 +65,9 @@ export function menuItems(): { title: string; items: MenuItem[] } {
               ...(parts.length > 2 ? items('space-across', 'space-down') : []),
             ]
           : []),
-        ...(parts.length > 1 || grouped ? [heading('Block'), ...(parts.length > 1 ? items('group') : []), ...(grouped ? items('ungroup') : [])] : []),
+        ...(parts.length > 1 || grouped
+          ? [heading('Block'), ...(parts.length > 1 ? items('group') : []), ...(grouped ? items('ungroup') : [])]
+          : []),
         heading('Selection'),
         ...items('select-kind', 'duplicate', 'copy', 'cut', 'save-own'),
         ...(only ? [] : items('tidy')),
@@ -87,7 +89,8 @@ export function menuItems(): { title: string; items: MenuItem[] } {
       ],
     };
   }
-  if (labels.length > 0) return { title: sayThings([], labels), items: items('name', 'select-kind', 'duplicate', 'copy', 'cut', 'delete') };
+  if (labels.length > 0)
+    return { title: sayThings([], labels), items: items('name', 'select-kind', 'duplicate', 'copy', 'cut', 'delete') };
   return {
     title: 'Sheet',
     items: [
@@ -124,4 +127,3 @@ export function openMenuAtSelection(): void {
   const inside = spot ? toScreen(desk.viewport, spot) : { x: desk.size.width / 2, y: desk.size.height / 3 };
   openMenuAt({ x: (box?.left ?? 0) + inside.x, y: (box?.top ?? 0) + inside.y });
 }
-

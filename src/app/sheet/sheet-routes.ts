@@ -58,10 +58,14 @@ const standsAsBefore = (a: Part | undefined, b: Part): boolean =>
 
 /** The same parts, and the same connections but for their names. */
 function sameLines(before: Circuit, after: Circuit): boolean {
-  if (before.parts.length !== after.parts.length || before.connections.length !== after.connections.length) return false;
+  if (before.parts.length !== after.parts.length || before.connections.length !== after.connections.length)
+    return false;
   return before.connections.every((c, i) => {
     const now = after.connections[i];
-    return now === c || (now?.id === c.id && now.from === c.from && now.to === c.to && now.bends === c.bends && now.use === c.use);
+    return (
+      now === c ||
+      (now?.id === c.id && now.from === c.from && now.to === c.to && now.bends === c.bends && now.use === c.use)
+    );
   });
 }
 
@@ -81,7 +85,10 @@ function layPassing(routes: Routes, before: Circuit, circuit: Circuit, changed: 
     const was = stood.get(part.id);
     if (was === part) continue;
     const turned = !was || was.turn !== part.turn || was.flip !== part.flip || !was.at || !part.at;
-    moved.set(part.id, turned ? NOWHERE : { x: (part.at?.x ?? 0) - (was.at?.x ?? 0), y: (part.at?.y ?? 0) - (was.at?.y ?? 0) });
+    moved.set(
+      part.id,
+      turned ? NOWHERE : { x: (part.at?.x ?? 0) - (was.at?.x ?? 0), y: (part.at?.y ?? 0) - (was.at?.y ?? 0) },
+    );
   }
   const gone = new Set(changed);
   const known = new Map(before.connections.map((connection) => [connection.id, connection]));
@@ -96,7 +103,13 @@ function layPassing(routes: Routes, before: Circuit, circuit: Circuit, changed: 
     const [a, b] = [moved.get(from.part), moved.get(to.part)];
     const together = was && route && a && b && a !== NOWHERE && b !== NOWHERE && a.x === b.x && a.y === b.y;
     if (together) {
-      out.set(id, keep(route, route.map((p) => ({ x: p.x + a.x, y: p.y + a.y }))));
+      out.set(
+        id,
+        keep(
+          route,
+          route.map((p) => ({ x: p.x + a.x, y: p.y + a.y })),
+        ),
+      );
       continue;
     }
     sheet ??= routingSheet(circuit);

@@ -28,7 +28,14 @@ export function swapFor(id: string, readyId: string): void {
     specs
       .filter((spec) => {
         const value = part.settings?.[spec.id];
-        return value !== undefined && fits(spec, kind.settings.find((each) => each.id === spec.id), value);
+        return (
+          value !== undefined &&
+          fits(
+            spec,
+            kind.settings.find((each) => each.id === spec.id),
+            value,
+          )
+        );
       })
       .map((spec) => spec.id),
   );

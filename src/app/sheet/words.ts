@@ -15,8 +15,16 @@ export function sayPart(part: Part): string {
 export function sayConnection(connection: Connection, parts: ReadonlyMap<string, Part>): string {
   const look = session.connectionLook(connection.id);
   const end = ({ part, port }: Connection['from']): string => `${parts.get(part)?.label ?? part}.${port}`;
-  const state = look ? [look.class, look.blocked === 'under pressure' ? 'blocked under pump pressure' : '', look.trapped.length > 0 ? `trapped: ${look.trapped.join(', ')}` : ''] : [];
-  return [`Line ${look?.name ?? connection.name ?? ''} from ${end(connection.from)} to ${end(connection.to)}`, ...state].filter(Boolean).join(', ');
+  const state = look
+    ? [
+        look.class,
+        look.blocked === 'under pressure' ? 'blocked under pump pressure' : '',
+        look.trapped.length > 0 ? `trapped: ${look.trapped.join(', ')}` : '',
+      ]
+    : [];
+  return [`Line ${look?.name ?? connection.name ?? ''} from ${end(connection.from)} to ${end(connection.to)}`, ...state]
+    .filter(Boolean)
+    .join(', ');
 }
 
 /** One line on what can be done now. */
@@ -24,17 +32,25 @@ export function hint(circuit: Circuit, selected: number): string {
   const { gesture, hover, cursor } = desk;
   const inserts = insertHint();
   if (inserts !== undefined) return inserts;
-  if (gesture.type === 'place-several') return `Click to put ${gesture.title.toLowerCase()} down, Shift for several. Escape puts it away.`;
+  if (gesture.type === 'place-several')
+    return `Click to put ${gesture.title.toLowerCase()} down, Shift for several. Escape puts it away.`;
   if (gesture.type === 'text') return 'Click where the text is to begin. Escape gives it up.';
-  if (gesture.type === 'bend') return gesture.held ? 'Let go to leave the stretch here.' : 'Tab: next stretch. Arrows move it, Del takes its bends away, Escape ends.';
-  if (gesture.type === 'place') return `Click to put ${gesture.form.title.toLowerCase()} down, Shift for several. T turns, F flips, Escape puts it away.`;
+  if (gesture.type === 'bend')
+    return gesture.held
+      ? 'Let go to leave the stretch here.'
+      : 'Tab: next stretch. Arrows move it, Del takes its bends away, Escape ends.';
+  if (gesture.type === 'place')
+    return `Click to put ${gesture.form.title.toLowerCase()} down, Shift for several. T turns, F flips, Escape puts it away.`;
   if (gesture.type === 'connect') return 'End at a port or on a line. Escape gives the line up.';
   if (gesture.type === 'drag') return 'Let go to put it here. Escape leaves it where it was.';
   if (gesture.type !== 'none' || circuit.parts.length === 0) return '';
-  if (hover.type === 'port' && !hover.port.joint) return `${sayPortOf(circuit, hover.port.part, hover.port.port)}: drag or click to draw a line.`;
-  if (cursor?.type === 'port' && desk.focused) return `${sayPortOf(circuit, cursor.part, cursor.port)}: Enter starts a line, arrows go to the next port.`;
+  if (hover.type === 'port' && !hover.port.joint)
+    return `${sayPortOf(circuit, hover.port.part, hover.port.port)}: drag or click to draw a line.`;
+  if (cursor?.type === 'port' && desk.focused)
+    return `${sayPortOf(circuit, cursor.part, cursor.port)}: Enter starts a line, arrows go to the next port.`;
   if (hover.type === 'connection') return sayConnectionById(circuit, hover.id);
-  if (selected > 1) return 'Arrows move, H and V line up, G draws a block, Del deletes; the menu key or a right click has the rest.';
+  if (selected > 1)
+    return 'Arrows move, H and V line up, G draws a block, Del deletes; the menu key or a right click has the rest.';
   if (selected > 0) return 'T turns, F flips, S swaps, F2 names, Del deletes, arrows move.';
   return '';
 }

@@ -35,14 +35,17 @@ function along(from: number, length: number, scale: number, zone: number, name: 
   return marks;
 }
 
-export const columnsInSight = (view: Viewport, size: Size): ZoneMark[] => along(view.x, size.width, view.scale, ZONE.width, column);
-export const rowsInSight = (view: Viewport, size: Size): ZoneMark[] => along(view.y, size.height, view.scale, ZONE.height, row);
+export const columnsInSight = (view: Viewport, size: Size): ZoneMark[] =>
+  along(view.x, size.width, view.scale, ZONE.width, column);
+export const rowsInSight = (view: Viewport, size: Size): ZoneMark[] =>
+  along(view.y, size.height, view.scale, ZONE.height, row);
 
 /** Modules between two numbers of a ruler. */
 const RULER = 10;
 const modules = (index: number): string => (index < 0 ? `−${-index * RULER}` : String(index * RULER));
 /** Where a ruler's numbers stand: at the start of each mark. */
-export const rulerInSight = (from: number, length: number, scale: number): ZoneMark[] => along(from, length, scale, RULER, modules);
+export const rulerInSight = (from: number, length: number, scale: number): ZoneMark[] =>
+  along(from, length, scale, RULER, modules);
 
 /** `B3`: the zone that a point lies in. */
 export const zoneAt = (p: { readonly x: number; readonly y: number }): string =>

@@ -19,7 +19,10 @@ export function severalOf(id: string): { readonly title: string; readonly make: 
 }
 
 export function searchSeveral(query: string): readonly SubCircuit[] {
-  const wanted = query.toLowerCase().split(/\s+/).filter((word) => word !== '');
+  const wanted = query
+    .toLowerCase()
+    .split(/\s+/)
+    .filter((word) => word !== '');
   return SUB_CIRCUITS.filter(({ title, help, words }) => {
     const text = [title, help, ...words].join(' ').toLowerCase();
     return wanted.every((word) => text.includes(word));

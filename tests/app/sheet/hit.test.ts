@@ -17,7 +17,15 @@ const MAP: HitMap = {
     { part: 'P1', port: 'S', at: { x: 0, y: 4 }, side: 'down', joint: false },
     { part: 'V1', port: 'P', at: { x: 15, y: 2 }, side: 'down', joint: false },
   ],
-  routes: [{ id: 'c1', points: [{ x: 0, y: 4 }, { x: 0, y: 12 }] }],
+  routes: [
+    {
+      id: 'c1',
+      points: [
+        { x: 0, y: 4 },
+        { x: 0, y: 12 },
+      ],
+    },
+  ],
 };
 
 test.each([
@@ -27,7 +35,12 @@ test.each([
   [{ x: 6, y: 8 }, 'paper'],
 ])('at %o stands %s', (p, wanted) => {
   const hit = hitAt(MAP, p, 0.8);
-  const said = hit.type === 'port' ? `port ${hit.port.part}.${hit.port.port}` : hit.type === 'paper' ? 'paper' : `${hit.type} ${hit.id}`;
+  const said =
+    hit.type === 'port'
+      ? `port ${hit.port.part}.${hit.port.port}`
+      : hit.type === 'paper'
+        ? 'paper'
+        : `${hit.type} ${hit.id}`;
   expect(said).toBe(wanted);
 });
 
@@ -36,15 +49,25 @@ test('a hit on a line gives the foot on it', () => {
 });
 
 test('the rubber band takes what lies wholly inside', () => {
-  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 25 })).toEqual({ parts: ['T1', 'P1'], connections: ['c1'], labels: [] });
+  expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 25 })).toEqual({
+    parts: ['T1', 'P1'],
+    connections: ['c1'],
+    labels: [],
+  });
   expect(inBand(MAP, { x: -5, y: -5, width: 10, height: 10 })).toEqual({ parts: ['P1'], connections: [], labels: [] });
 });
 
 test('reading order: rows from the top, each part followed by its ports, lines last', () => {
   const all = readingOrder(MAP, false).map(keyOf);
   expect(all).toEqual([
-    'sheet-part-P1', 'sheet-port-P1.P', 'sheet-port-P1.S', 'sheet-part-V1', 'sheet-port-V1.P',
-    'sheet-part-T1', 'sheet-port-T1.T', 'sheet-connection-c1',
+    'sheet-part-P1',
+    'sheet-port-P1.P',
+    'sheet-port-P1.S',
+    'sheet-part-V1',
+    'sheet-port-V1.P',
+    'sheet-part-T1',
+    'sheet-port-T1.T',
+    'sheet-connection-c1',
   ]);
   expect(readingOrder(MAP, true).map(keyOf)).toEqual(all.filter((key) => !key.startsWith('sheet-part')));
 });
@@ -66,5 +89,6 @@ test('balloons of one part do not cover each other', () => {
   const steps = [1, 2, 3].map((number) => ({ number, lines: [], parts: ['P1'], current: false }));
   const placed = balloons(steps, MAP, []);
   expect(placed.map(({ number }) => number)).toEqual([1, 2, 3]);
-  for (const a of placed) for (const b of placed) if (a !== b) expect(Math.hypot(a.at.x - b.at.x, a.at.y - b.at.y)).toBeGreaterThan(2.1);
+  for (const a of placed)
+    for (const b of placed) if (a !== b) expect(Math.hypot(a.at.x - b.at.x, a.at.y - b.at.y)).toBeGreaterThan(2.1);
 });
