@@ -28,6 +28,8 @@ export function driveByDisplaced(
   const ops = operations(paths);
   const { and, or, minus } = ops;
   const pushed = none(net);
+  /** Oil that has not been pushed on yet. */
+  let fresh = none(net);
   let doubtful = or(...actuators.map((motion) => motion.rests));
   // A load whose oil has no free way to tank may drive other actuators with it; its own oil does not drive it back.
   const yielding = net.actuators.map((actuator, i) => {
@@ -35,28 +37,36 @@ export function driveByDisplaced(
     const push = (line: number, way: 'in' | 'out', exit: Diagram, fed: Diagram): Diagram => {
       if (line < 0 || pushes(actuator, way) === 0) return NONE;
       const set = minus(and(exit, at(r.notFree, line)), fed);
-      pushed[line] = or(at(pushed, line), set);
+      fresh[line] = or(at(fresh, line), set);
       return set;
     };
     return or(push(actuator.a, 'in', m.exitA, m.fedA), push(actuator.b, 'out', m.exitB, m.fedB));
   });
   doubtful = or(doubtful, ...yielding);
-  let before = none(net);
   let moved = net.actuators.map((_, i) => i);
   while (moved.length > 0) {
+    const push = (line: number, motion: Diagram): void => {
+      if (line < 0 || motion === NONE) return;
+      const set = minus(and(motion, at(r.notFree, line)), at(pushed, line));
+      fresh[line] = or(at(fresh, line), set);
+    };
     for (const i of moved) {
       const { a, b } = net.actuators[i] as NetActuator;
       const { out, in: inward } = actuators[i] as ActuatorMotion;
-      if (b >= 0) pushed[b] = or(at(pushed, b), and(out, at(r.notFree, b)));
-      pushed[a] = or(at(pushed, a), and(inward, at(r.notFree, a)));
+      push(b, out);
+      push(a, inward);
     }
-    r.aheadUnderPressure.spread(pushed);
-    const touched = (line: number): boolean => line >= 0 && before[line] !== pushed[line];
+    r.aheadUnderPressure.spread(fresh);
+    const touched = fresh.map((set, line) => {
+      const before = pushed[line] as Diagram;
+      pushed[line] = or(before, set);
+      return pushed[line] !== before;
+    });
+    fresh = none(net);
     // One that a load pushes may also be driven back once others have moved.
     moved = net.actuators
-      .flatMap(({ a, b }, i) => (touched(a) || touched(b) || yielding[i] !== NONE ? [i] : []))
+      .flatMap(({ a, b }, i) => (touched[a] || (b >= 0 && touched[b]) || yielding[i] !== NONE ? [i] : []))
       .filter(drive);
-    before = [...pushed];
   }
   markRings();
   return pushed;

@@ -29,18 +29,19 @@ export class PackedSets implements SetAlgebra {
   readonly #strides: readonly number[];
   readonly #full: number;
   readonly #width: number;
+  /** Numbers of a node. */
+  readonly #size: number;
   readonly #mostNodes: number;
   readonly #heartbeat: () => void;
   /** Level → levels before it whose input can move at all. */
   readonly #movable: readonly number[];
-  #level: Int32Array = new Int32Array(FIRST_NODES);
-  #kids: Int32Array;
+  /** Node n: its level at `n * size`, then its children. */
+  #table: Int32Array;
   #nodes = 2;
   #slots: Int32Array = new Int32Array(FIRST_NODES * 2).fill(-1);
   #kept = 0;
-  #keyA: Int32Array = new Int32Array(0);
-  #keyB: Int32Array = new Int32Array(0);
-  #found: Int32Array = new Int32Array(0);
+  /** Latest results, four numbers each: the operation's two sets and what it gave. */
+  #results: Int32Array = new Int32Array(0);
   readonly #scratch: Int32Array;
   readonly #moved = new Map<Diagram, Diagram>();
   /** One move of an input inside a word: the rows that can make it, and how far it takes them. */
@@ -58,13 +59,14 @@ export class PackedSets implements SetAlgebra {
     const bits = strides[levels] as number;
     this.#full = bits === 1 ? 1 : (1 << bits) - 1;
     this.#width = Math.max(1, ...radices.slice(0, levels));
+    this.#size = this.#width + 1;
     this.#mostNodes = mostNodes;
     this.#heartbeat = heartbeat;
     const movable = [0];
     for (let level = 0; level < levels; level++)
       movable.push((movable[level] as number) + ((radices[level] as number) > 1 ? 1 : 0));
     this.#movable = movable;
-    this.#kids = new Int32Array(FIRST_NODES * this.#width);
+    this.#table = new Int32Array(FIRST_NODES * this.#size);
     this.#scratch = new Int32Array((levels + 1) * this.#width);
     this.#keep(LEAST_KEPT);
     this.#wordMoves = radices.slice(levels).flatMap((radix, i) =>
@@ -87,13 +89,11 @@ export class PackedSets implements SetAlgebra {
   #keep(results: number): void {
     this.#kept = results;
     // ~0 is no set, so it marks an empty place.
-    this.#keyA = new Int32Array(3 * results).fill(-1);
-    this.#keyB = new Int32Array(3 * results);
-    this.#found = new Int32Array(3 * results);
+    this.#results = new Int32Array(3 * 4 * results).fill(-1);
   }
 
   #levelOf(set: Diagram): number {
-    return set > ALL ? (this.#level[set] as number) : this.#levels;
+    return set > ALL ? (this.#table[set * this.#size] as number) : this.#levels;
   }
 
   /** The set that asks nothing above the words. */
@@ -156,24 +156,30 @@ export class PackedSets implements SetAlgebra {
     }
     if (op !== MINUS && a > b) [a, b] = [b, a];
     const hash = Math.imul(Math.imul(a, 0x9e3779b1) ^ b, 0x85ebca6b);
-    const known = op * this.#kept + ((hash ^ (hash >>> 16)) & (this.#kept - 1));
-    if (this.#keyA[known] === a && this.#keyB[known] === b) return this.#found[known] as number;
-    const levelA = this.#levelOf(a);
-    const levelB = this.#levelOf(b);
+    const kept = this.#kept;
+    const place = 4 * (op * kept + ((hash ^ (hash >>> 16)) & (kept - 1)));
+    const results = this.#results;
+    if (results[place] === a && results[place + 1] === b) return results[place + 2] as number;
+    const size = this.#size;
+    const table = this.#table;
+    const levelA = a > ALL ? (table[a * size] as number) : this.#levels;
+    const levelB = b > ALL ? (table[b * size] as number) : this.#levels;
     const level = Math.min(levelA, levelB);
     const arity = this.#radices[level] as number;
     // Every level has its own stretch of scratch, since the recursion only goes down.
+    const scratch = this.#scratch;
     const base = level * this.#width;
     for (let p = 0; p < arity; p++) {
-      const kidA = levelA === level ? (this.#kids[a * this.#width + p] as number) : a;
-      const kidB = levelB === level ? (this.#kids[b * this.#width + p] as number) : b;
-      this.#scratch[base + p] = this.#apply(op, kidA, kidB);
+      const kidA = levelA === level ? (table[a * size + 1 + p] as number) : a;
+      const kidB = levelB === level ? (table[b * size + 1 + p] as number) : b;
+      scratch[base + p] = this.#apply(op, kidA, kidB);
     }
     const found = this.#make(level, base);
-    const slot = op * this.#kept + ((hash ^ (hash >>> 16)) & (this.#kept - 1));
-    this.#keyA[slot] = a;
-    this.#keyB[slot] = b;
-    this.#found[slot] = found;
+    // The places move when there come to be more of them.
+    if (kept !== this.#kept) return found;
+    results[place] = a;
+    results[place + 1] = b;
+    results[place + 2] = found;
     return found;
   }
 
@@ -185,27 +191,35 @@ export class PackedSets implements SetAlgebra {
     let same = true;
     for (let p = 1; p < arity; p++) if (kids[base + p] !== first) same = false;
     if (same) return first;
-    const mask = this.#slots.length - 1;
+    const slots = this.#slots;
+    const table = this.#table;
+    const size = this.#size;
+    const mask = slots.length - 1;
     let slot = hashOf(level, kids, base, arity) & mask;
-    for (let node = this.#slots[slot] as number; node >= 0; node = this.#slots[slot] as number) {
-      if (this.#level[node] === level) {
-        const at = node * this.#width;
+    for (let node = slots[slot] as number; node >= 0; node = slots[slot] as number) {
+      const at = node * size;
+      if (table[at] === level) {
         let p = 0;
-        while (p < arity && this.#kids[at + p] === kids[base + p]) p += 1;
+        while (p < arity && table[at + 1 + p] === kids[base + p]) p += 1;
         if (p === arity) return node;
       }
       slot = (slot + 1) & mask;
     }
+    return this.#add(level, base, slot);
+  }
+
+  #add(level: number, base: number, slot: number): Diagram {
     const node = this.#nodes;
     if (node >= this.#mostNodes) throw new TooManyNodes(this.#mostNodes);
     if ((node & 0xfff) === 0) this.#heartbeat();
-    if (node === this.#level.length) {
-      this.#level = grown(this.#level);
-      this.#kids = grown(this.#kids);
+    if ((node + 1) * this.#size > this.#table.length) {
+      this.#table = grown(this.#table);
       if (this.#kept < MOST_KEPT) this.#keep(this.#kept * 2);
     }
-    this.#level[node] = level;
-    for (let p = 0; p < arity; p++) this.#kids[node * this.#width + p] = kids[base + p] as number;
+    const at = node * this.#size;
+    this.#table[at] = level;
+    const arity = this.#radices[level] as number;
+    for (let p = 0; p < arity; p++) this.#table[at + 1 + p] = this.#scratch[base + p] as number;
     this.#slots[slot] = node;
     this.#nodes = node + 1;
     if (this.#nodes * 2 > this.#slots.length) this.#rehash();
@@ -216,8 +230,9 @@ export class PackedSets implements SetAlgebra {
     const slots = new Int32Array(this.#slots.length * 2).fill(-1);
     const mask = slots.length - 1;
     for (let node = 2; node < this.#nodes; node++) {
-      const level = this.#level[node] as number;
-      let slot = hashOf(level, this.#kids, node * this.#width, this.#radices[level] as number) & mask;
+      const at = node * this.#size;
+      const level = this.#table[at] as number;
+      let slot = hashOf(level, this.#table, at + 1, this.#radices[level] as number) & mask;
       while (slots[slot] !== -1) slot = (slot + 1) & mask;
       slots[slot] = node;
     }
@@ -238,9 +253,9 @@ export class PackedSets implements SetAlgebra {
     if (set <= ALL) return this.#ofWord(this.#movesInWord(this.#wordOf(set)));
     const known = this.#moved.get(set);
     if (known !== undefined) return known;
-    const level = this.#level[set] as number;
+    const level = this.#table[set * this.#size] as number;
     const arity = this.#radices[level] as number;
-    const kids = Array.from({ length: arity }, (_, p) => this.#kids[set * this.#width + p] as Diagram);
+    const kids = Array.from({ length: arity }, (_, p) => this.#table[set * this.#size + 1 + p] as Diagram);
     const found = kids.map((kid, p) => {
       let from = this.or(this.#moves(kid), this.#skips(level + 1, kid) ? kid : NONE);
       kids.forEach((other, q) => {
@@ -298,7 +313,7 @@ export class PackedSets implements SetAlgebra {
       return;
     }
     for (let p = 0; p < arity; p++) {
-      this.#write(this.#kids[set * this.#width + p] as Diagram, level + 1, at + p * stride, plane, written);
+      this.#write(this.#table[set * this.#size + 1 + p] as Diagram, level + 1, at + p * stride, plane, written);
     }
     written.set(set, at);
   }
