@@ -28,6 +28,19 @@ export function partStates(circuit: Circuit, assumed: Assumed): Map<string, Part
   }
   const { table, row, conditions } = session;
   const known = new Set(circuit.parts.map((part) => part.id));
+  // Drawn where the row puts them; of a two-stage valve that is the main spool, whatever its lever says.
+  table?.data.dependents.forEach(({ part, positions }, i) => {
+    if (!known.has(part)) return;
+    const position = table.dependent(i, row);
+    const name = positions[position] ?? '';
+    const asked = states.get(part)?.note;
+    const note = table.hunts(row)
+      ? 'hunts'
+      : asked === undefined || asked === name
+        ? name
+        : `${asked}, spool at ${name}`;
+    states.set(part, { position, note });
+  });
   const numbers = view.sheetFigures ? figures.current : undefined;
   const solved = numbers?.status === 'solved' ? numbers : undefined;
   const rests = table && solved ? speedsAssumed(assumed, table, solved) : [];

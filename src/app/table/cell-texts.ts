@@ -1,3 +1,4 @@
+import { dependentNotes } from '../../report/rows.ts';
 import { TRAP_REASONS } from '../../worker/client.ts';
 import type { ActuatorNote, Finding, StateTable, TrapReason } from '../../worker/client.ts';
 
@@ -45,12 +46,24 @@ export function trappedGroups(table: StateTable, row: number): TrappedGroup[] {
     const group = groups.get(reason);
     if (!group) return [];
     const names = group.map((each) => each.name);
-    return [{ reason, word: reason, names, lines: group.map((each) => each.line), all: group.map((each) => each.reasons) }];
+    return [
+      { reason, word: reason, names, lines: group.map((each) => each.line), all: group.map((each) => each.reasons) },
+    ];
   });
 }
 
 export const sayGroups = (groups: readonly NamedGroup[]): string =>
   groups.map(({ word, names }) => `${word}: ${names.join(', ')}`).join('; ');
+
+/** Where a valve stands that follows: `a`, `a or 0` where it depends on what came before, `a?` where pressures are to say. */
+export function dependentText(table: StateTable, index: number, row: number): string {
+  if (table.hunts(row)) return 'hunts';
+  const { positions = [] } = table.data.dependents[index] ?? {};
+  const at = table.dependent(index, row);
+  const others = table.dependentOthers(index, row).filter((p) => p !== at);
+  const said = [at, ...others].map((p) => positions[p] ?? '?').join(' or ');
+  return table.dependentRests(index, row) ? `${said}?` : said;
+}
 
 export interface RowNote {
   readonly level: 'danger' | 'caution' | 'note';
@@ -103,6 +116,7 @@ export function rowNotes(table: StateTable, findings: readonly Finding[], row: n
       notes.push({ level: 'note', text: `${actuator.label} ${sayNote(note, actuator.motion)}` });
     }
   });
+  for (const text of dependentNotes(table, row)) notes.push({ level: table.hunts(row) ? 'caution' : 'note', text });
   if (row === table.restRow()) notes.push({ level: 'note', text: 'rest: every lever let go' });
   const order = { danger: 0, caution: 1, note: 2 };
   return notes.sort((a, b) => order[a.level] - order[b.level]);

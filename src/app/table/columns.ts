@@ -3,7 +3,7 @@ import type { BitSet } from '../../base/bits.ts';
 import { ACTUATOR_VERDICTS, PUMP_VERDICTS, TRAP_REASONS } from '../../worker/client.ts';
 import type { StateTable } from '../../worker/client.ts';
 
-export type ColumnOf = 'row' | 'input' | 'coil' | 'actuator' | 'pump' | 'blocked' | 'trapped' | 'notes';
+export type ColumnOf = 'row' | 'input' | 'coil' | 'dependent' | 'actuator' | 'pump' | 'blocked' | 'trapped' | 'notes';
 
 export interface Column {
   /** Unique in the table, also the key of its filter. */
@@ -102,6 +102,15 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
   const [firstLever] = levers;
   // The heading of the group has its room too.
   if (firstLever && levers.length === 1) levers[0] = fixed({ ...firstLever, width: Math.max(firstLever.width, 70) });
+  const followers = data.dependents.map((valve, index) =>
+    fixed({
+      id: `dependent:${index}`,
+      of: 'dependent',
+      index,
+      title: valve.label,
+      width: Math.max(fits(valve.positions, 2 * CHARACTER, valve.label), 70),
+    }),
+  );
   const actuators = data.actuators.map((actuator, index) => {
     const words = table.actuatorCounts(index).map((each) => each.verdict);
     const figures = heads?.actuators[index];
@@ -129,6 +138,7 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
   const groups: ColumnGroup[] = [
     { title: '', columns: [row] },
     { title: 'Levers', columns: levers },
+    { title: data.dependents.length === 1 ? 'Follows' : 'Follow', columns: followers },
     { title: 'Actuators', columns: actuators },
     { title: 'Pumps', columns: pumps },
     { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 150, 1.3)] },
@@ -193,6 +203,8 @@ export function planeOf(table: StateTable, column: Pick<Column, 'of' | 'index'>,
     case 'input':
     case 'coil':
       return positionPlane(table, column.index, value);
+    case 'dependent':
+      return joined(table, [data.dependentPlanes[column.index]?.[value]]);
     case 'actuator':
       return joined(table, [data.actuatorPlanes[column.index]?.[value]]);
     case 'pump':
@@ -224,6 +236,8 @@ export function optionsOf(table: StateTable, column: Column): Option[] {
       const positions = data.inputs[column.index]?.positions ?? [];
       return positions.map((text, value) => ({ value, text, rows: data.count / positions.length }));
     }
+    case 'dependent':
+      return (data.dependents[column.index]?.positions ?? []).flatMap((text, value) => counted(value, text));
     case 'actuator':
       return ACTUATOR_VERDICTS.flatMap((word, value) => counted(value, word));
     case 'pump':

@@ -96,6 +96,9 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
         if (row % BLOCK === BLOCK - 1) yield;
       }
       break;
+    case 'dependent':
+      yield* byWord(data.dependentPlanes[column.index] ?? []);
+      break;
     case 'actuator':
       yield* byWord(data.actuatorPlanes[column.index] ?? []);
       break;
