@@ -149,17 +149,18 @@ function rivalsOf(
   speeds: readonly number[],
   pressures: readonly number[],
 ): number[] {
-  if (net.actuators.length < 2 || speeds.every((speed) => speed === 0)) return [];
-  const swinging = ties(
-    model.solver,
-    result.lines.map(({ pressure }) => pressure),
-  );
-  if (swinging.length < 2) return [];
-  const found = net.actuators.flatMap(({ a, b }, i) => {
-    if (!swinging.includes(model.actuators[i] as number)) return [];
+  if (speeds.every((speed) => speed === 0)) return [];
+  const pressed = net.actuators.flatMap(({ a, b }, i) => {
     const speed = speeds[i] ?? 0;
     const side = speed > 0 || (speed === 0 && machine.stops[i] === 'in') ? a : b;
     return side >= 0 && (pressures[side] ?? 0) > PRESSED ? [i] : [];
   });
+  // The search for what swings costs several solves, and one alone has no rival.
+  if (pressed.length < 2) return [];
+  const swinging = ties(
+    model.solver,
+    result.lines.map(({ pressure }) => pressure),
+  );
+  const found = pressed.filter((i) => swinging.includes(model.actuators[i] as number));
   return found.length > 1 ? found : [];
 }
