@@ -13,8 +13,8 @@ import {
   TABLE_HELP,
   TRAPPED_HELP,
 } from './help.ts';
-import { PLAN_SHOW_OPTIONS, planShows } from './plan-shows.ts';
-import type { PlanShows } from './plan-shows.ts';
+import { PLAN_SHOW_OPTIONS, planShows } from './plan-options.ts';
+import type { PlanShows } from './plan-options.ts';
 
 export type Pumps = 'running' | 'stopped';
 
