@@ -13,6 +13,7 @@ import type { Plane, TableData } from '../table-data.ts';
 import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from '../words.ts';
 import type { ActuatorVerdict } from '../words.ts';
 import type { RuleSource, Truth } from './evaluate.ts';
+import { sealedSets } from './sealed-sets.ts';
 
 const unsolved = (): never => {
   throw new Error('pressures and speeds were not solved for this question');
@@ -76,7 +77,7 @@ export class NeedsTable extends Error {
 
 /**
  * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, actuator verdicts,
- * line classes, and whether a pump is unloaded by a free path to tank. Throws `NeedsTable` at everything else,
+ * line classes, blocked and trapped lines as far as open paths are sure of them, and whether a pump is unloaded by a free path to tank. Throws `NeedsTable` at everything else,
  * and `TooManyNodes` where motions are too entangled.
  */
 export function openPathSource(net: Network, conditions: PathConditions, paths: OpenPathSets): RuleSource<Diagram> {
@@ -84,6 +85,7 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
   // Motions take more than open paths, so they are sought when a rule speaks of them.
   let motions: MotionSets | undefined;
   const moving = (): MotionSets => (motions ??= motionSets(net, conditions, paths));
+  const sealed = sealedSets(net, conditions, paths, moving);
   const verdicts = new Map<number, ReadonlyMap<ActuatorVerdict, Diagram>>();
   const verdictsOf = (i: number): ReadonlyMap<ActuatorVerdict, Diagram> => {
     const found = verdicts.get(i) ?? verdictSets(net, conditions, paths, moving(), i);
@@ -128,12 +130,8 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
       const displaced = sets.and(shut, moving().carries[i] as Diagram);
       return known(sets.or(sure, carries ? displaced : sets.minus(shut, displaced)));
     },
-    blocked: (i) => {
-      throw new NeedsTable(`Whether line ${net.lines[i]?.name ?? ''} is blocked`);
-    },
-    trapped: (i) => {
-      throw new NeedsTable(`Whether line ${net.lines[i]?.name ?? ''} is trapped`);
-    },
+    blocked: sealed.blocked,
+    trapped: sealed.trapped,
     figure: ({ type }) => {
       throw new NeedsTable(type === 'pressure' ? 'A pressure' : 'A speed');
     },
