@@ -4,7 +4,7 @@ import { createServer } from 'node:http';
 import { createRequire } from 'node:module';
 import { tmpdir } from 'node:os';
 import { extname, join, normalize } from 'node:path';
-import type { Browser, Page } from 'playwright-core';
+import type { Browser, BrowserType, Page } from 'playwright-core';
 import { writeCircuit } from '../../src/circuit/file.ts';
 import type { Circuit, Part } from '../../src/circuit/model.ts';
 import { placeMissing } from '../../src/drawing/place.ts';
@@ -136,7 +136,7 @@ function serve(folder: string): Promise<{ address: string; stop: () => void }> {
 
 async function run(print: (line: string) => void): Promise<void> {
   const require = createRequire(join(process.cwd(), 'package.json'));
-  const { chromium } = require('playwright-core') as typeof import('playwright-core');
+  const { chromium } = require('playwright-core') as { readonly chromium: BrowserType };
   const folder = mkdtempSync(join(tmpdir(), 'spooltable-sheet-'));
   const built = spawnSync(
     process.execPath,
@@ -161,7 +161,7 @@ async function run(print: (line: string) => void): Promise<void> {
       await page.context().close();
     }
     const page = await open(browser, server.address, placeMissing(family('BANK', 8)));
-    await page.getByText('of 6561').first().waitFor();
+    await page.locator('.where', { hasText: 'of 6,561' }).first().waitFor();
     await page.getByRole('application').first().focus();
     const times: number[] = [];
     for (let i = 0; i < 5; i++) {
@@ -171,10 +171,10 @@ async function run(print: (line: string) => void): Promise<void> {
       await page.keyboard.type('V8');
       await page.keyboard.press('Enter');
       await page.keyboard.press('Delete');
-      await page.getByText('of 2187').first().waitFor();
+      await page.locator('.where', { hasText: 'of 2,187' }).first().waitFor();
       const start = performance.now();
       await page.keyboard.press('Control+z');
-      await page.getByText('of 6561').first().waitFor();
+      await page.locator('.where', { hasText: 'of 6,561' }).first().waitFor();
       times.push(performance.now() - start);
     }
     print(

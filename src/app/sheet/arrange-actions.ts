@@ -32,13 +32,16 @@ function several(least: number, what: string): readonly string[] | undefined {
 
 export const arrangeActions: ArrangeActions = {
   align(edge) {
+    // With nothing to align the key is free for others.
+    if (editor.selection.parts.length === 0) return false;
     const parts = several(2, 'align them');
-    if (!parts) return;
+    if (!parts) return true;
     const shifts = alignShifts(drawing.circuit, parts, edge);
     attempt(
       () => shiftEach(editor.circuit, shifts, drawing.places),
       `${counted(parts.length, 'part')} ${EDGE_WORDS[edge]}.`,
     );
+    return true;
   },
 
   distribute(way) {

@@ -27,7 +27,8 @@ export interface SheetActions extends ArrangeActions, LineActions, LookActions {
 }
 
 export interface ArrangeActions {
-  align(edge: Edge): void;
+  /** False if no part is selected. */
+  align(edge: Edge): boolean;
   distribute(way: Way): void;
   /** All parts of the kinds that are selected; likewise lines of one use, and texts. */
   selectKind(): void;
