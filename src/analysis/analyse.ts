@@ -1,4 +1,5 @@
 import type { Budget } from '../base/budget.ts';
+import type { UnitSystem } from '../base/units.ts';
 import { withLoadCase } from '../circuit/load-case.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
@@ -47,10 +48,15 @@ export function findings(circuit: Circuit, running: StateTable, conditions?: Con
   return findFaults({ net: networkOf(circuit, conditions), table: running });
 }
 
-/** One row (0-based) in words. */
-export function explainRow(circuit: Circuit, conditions: Conditions, row: number): Explanation {
+/** One row (0-based) in words, with quantities in these units. */
+export function explainRow(
+  circuit: Circuit,
+  conditions: Conditions,
+  row: number,
+  units: UnitSystem = 'metric',
+): Explanation {
   const net = networkOf(circuit, conditions);
-  const answer = explain(net, pathConditions(net, conditions), row);
+  const answer = explain(net, pathConditions(net, conditions), row, units);
   const positions = positionsOf(net, row);
   const notes = answer.actuators.flatMap((actuator) => actuator.notes.map((note) => `${actuator.label}: ${note}`));
   return { row, positions, ...answer, notes };

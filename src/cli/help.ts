@@ -48,7 +48,7 @@ Options:
                                     rest, and the answer says so; may be given more than once
   --pumps running|stopped           state of all pumps (running)
   --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
-  --units metric|us                 units of pressures, flows and power (metric); the reasons stay in metric units
+  --units metric|us                 units of pressures, flows and power (metric)
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text

@@ -97,7 +97,7 @@ function table(command: Table, circuit: Circuit, version: string): Iterable<stri
     conditions,
     table: stateTable,
     findings: findings(circuit, running, conditions),
-    ...(explained ? { explain: (row: number) => explainRow(circuit, conditions, row) } : {}),
+    ...(explained ? { explain: (row: number) => explainRow(circuit, conditions, row, command.units) } : {}),
     ...(command.numbers
       ? { numbers: numberSource(circuit, command.units, (rows) => numbersOf(circuit, conditions, rows)) }
       : {}),
@@ -125,7 +125,7 @@ function explain(command: Explain, circuit: Circuit, version: string): Iterable<
   const read = readState(state, stateTable.data.inputs);
   if (!read.ok) throw new Failure(sayProblems(file, read.problems));
   const row = stateTable.rowOf(read.value.positions);
-  const explanation = explainRow(circuit, conditions, row);
+  const explanation = explainRow(circuit, conditions, row, command.units);
   const source = {
     version,
     circuit,

@@ -48,7 +48,7 @@ function answer(question: Question): Reply {
     case 'table':
       return answerTable(id, circuit, conditions);
     case 'explain':
-      return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row) };
+      return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row, question.units) };
     case 'check':
       return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), unlimited) };
     case 'read-rule':

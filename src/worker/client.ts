@@ -1,3 +1,4 @@
+import type { UnitSystem } from '../base/units.ts';
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
 import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
@@ -46,7 +47,8 @@ export interface Analyst {
     progress: (share: number) => void,
     early?: (answer: TableAnswer) => void,
   ): Job<TableAnswer>;
-  explain(circuit: Circuit, conditions: Conditions, row: number): Job<Explanation>;
+  /** Quantities in the sentences are in these units; metric when absent. */
+  explain(circuit: Circuit, conditions: Conditions, row: number, units?: UnitSystem): Job<Explanation>;
   /** Pressures, flows and speeds of these rows, in this order; SI. */
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
   /** The circuit's rules against every combination. */
@@ -96,9 +98,9 @@ export function createAnalyst(): Analyst {
         },
         (reply) => (reply.say === 'table' ? tableOf(reply) : undefined),
       ),
-    explain: (circuit, conditions, row) =>
+    explain: (circuit, conditions, row, units = 'metric') =>
       words.ask(
-        { ask: 'explain', circuit, conditions, row },
+        { ask: 'explain', circuit, conditions, row, units },
         () => {},
         (reply) => (reply.say === 'explanation' ? reply.explanation : undefined),
       ),

@@ -1,3 +1,4 @@
+import type { UnitSystem } from '../base/units.ts';
 import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
@@ -68,6 +69,7 @@ export type Question =
       readonly circuit: Circuit;
       readonly conditions: Conditions;
       readonly row: number;
+      readonly units: UnitSystem;
     };
 
 /** A table for the questions that follow, until another one comes; undefined = there is none. */

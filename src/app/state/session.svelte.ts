@@ -1,3 +1,4 @@
+import type { UnitSystem } from '../../base/units.ts';
 import { Cancelled } from '../../base/budget.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import type {
@@ -231,12 +232,12 @@ class Session {
     this.#job?.cancel();
   }
 
-  explain(): void {
+  explain(units: UnitSystem): void {
     this.#explaining?.cancel();
     this.#explaining = undefined;
     const { answer } = this;
     if (!answer || !this.#analyst) return;
-    const job = this.#analyst.explain(answer.circuit, answer.conditions, this.row);
+    const job = this.#analyst.explain(answer.circuit, answer.conditions, this.row, units);
     this.#explaining = job;
     job.answer.then(
       (explanation) => {

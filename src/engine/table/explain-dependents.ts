@@ -5,6 +5,7 @@ import { signalOf } from '../flow/dependents.ts';
 import { constantPlanes } from '../paths/dependents.ts';
 import type { ActuatorAnswer, DependentReason, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
+import { sayPressure } from './say-quantities.ts';
 import { partId, partLabel, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
 import { PressureSolver } from './resolve.ts';
@@ -35,7 +36,7 @@ export function explainDependents(state: OneState): DependentWords {
     const has = signal(shift, setting);
     return has === undefined
       ? 'these have no steady pressures, and open paths decide'
-      : `pilot ${bar(has)} against ${bar(shift.setting)} needed`;
+      : `pilot ${sayPressure(has, state.units)} against ${sayPressure(shift.setting, state.units)} needed`;
   };
 
   const standing = (valve: NetDependent, d: number): Step[] => {
@@ -171,5 +172,3 @@ const saySetting = (state: OneState, setting: readonly number[]): string =>
   setting
     .map((p, d) => `${dependentLabel(state.net, d)} at ${state.net.dependents[d]?.positions[p] ?? '?'}`)
     .join(' with ');
-
-const bar = (pascal: number): string => `${(pascal / 1e5).toFixed(Math.abs(pascal) < 10e5 ? 1 : 0)} bar`;

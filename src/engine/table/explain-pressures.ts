@@ -7,6 +7,7 @@ import type { Step } from './reasons.ts';
 import { actuatorByPressure, creeps, givesWay, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
 import { rowNumbers } from './row-numbers.ts';
 import type { RowNumbers } from './row-numbers.ts';
+import { sayFlow, sayForce, sayPressure, saySpeed } from './say-quantities.ts';
 
 /** The pressure layer's part of an explanation: its verdicts in place of the open ones, and the figures behind them. */
 export interface PressureWords {
@@ -86,7 +87,7 @@ export function explainPressures(state: OneState): PressureWords {
     const { rests, steps, ...rest } = said;
     const at = numbers.pumps[index];
     const line = state.net.pumps[index]?.outlet ?? -1;
-    const text = `It stands at ${bar(at?.pressure ?? 0)} and delivers ${litres(at?.delivered ?? 0)}${over(numbers)}.`;
+    const text = `It stands at ${sayPressure(at?.pressure ?? 0, state.units)} and delivers ${sayFlow(at?.delivered ?? 0, state.units)}${over(state, numbers)}.`;
     const onValues = rests !== undefined || found !== said.verdict;
     const why = found === 'unloaded' ? ventedReliefs(state, line, numbers) : [];
     return {
@@ -103,18 +104,17 @@ export function explainPressures(state: OneState): PressureWords {
 /** `Cap side 62 bar, rod side 3 bar: it takes 12 L/min and goes 85 mm/s.` */
 function figures(state: OneState, index: number, actuator: NetActuator, numbers: RowNumbers, verdict: string): Step {
   const at = numbers.actuators[index];
-  const pressure = (line: number): string => bar(numbers.lines[line] ?? 0);
+  const pressure = (line: number): string => sayPressure(numbers.lines[line] ?? 0, state.units);
   const sides = [
     `${capital(sideName(state, actuator, 'a'))} ${pressure(actuator.a)}`,
     ...(actuator.b < 0 ? [] : [`${sideName(state, actuator, 'b')} ${pressure(actuator.b)}`]),
   ].join(', ');
-  const speed = Math.abs(at?.speed ?? 0);
   const moving =
     verdict === 'undetermined'
       ? 'equal rivals, between which only the losses share the flow: the circuit leaves it open'
       : verdict === 'stalled' || (verdict === 'held' && (at?.flow ?? 0) < STILL)
         ? standing(state, index, actuator, numbers)
-        : `${litres(at?.flow ?? 0)}, ${actuator.rotary ? `${round((speed * 60) / (2 * Math.PI))} rpm` : `${round(speed * 1000)} mm/s`}`;
+        : `${sayFlow(at?.flow ?? 0, state.units)}, ${saySpeed(at?.speed ?? 0, actuator.rotary, state.units)}`;
   const parts = [state.net.parts[actuator.part]?.id ?? ''];
   return step(
     `${sides}: ${moving}. From entered and assumed values.`,
@@ -141,7 +141,7 @@ const ventedReliefs = (state: OneState, line: number, numbers: RowNumbers): Step
     from === line && vent && (numbers.reliefs[i]?.flow ?? 0) > 1e-7
       ? [
           step(
-            `${partLabel(state, part)} is vented: its pilot line ${lineName(state, vent.line)} is let down, so it opens ${bar(vent.pressure)} over that.`,
+            `${partLabel(state, part)} is vented: its pilot line ${lineName(state, vent.line)} is let down, so it opens ${sayPressure(vent.pressure, state.units)} over that.`,
             [from, to, vent.line].filter((each) => each < state.net.shown),
             [state.net.parts[part]?.id ?? ''],
           ),
@@ -160,7 +160,7 @@ function standing(state: OneState, index: number, actuator: NetActuator, numbers
     i !== index && other.flow > 1e-7 && state.net.actuators[i] ? [partLabel(state, state.net.actuators[i].part)] : [],
   );
   const spilled = numbers.reliefs.filter((relief) => relief.flow > 1e-7).map((relief) => relief.label);
-  const force = actuator.rotary ? `${round(load)} N·m` : `${round(load / 1000)} kN`;
+  const force = sayForce(load, actuator.rotary, state.units);
   const why =
     spilled.length > 0
       ? `${spilled.join(' and ')} ${spilled.length > 1 ? 'let' : 'lets'} the flow out before that`
@@ -170,15 +170,11 @@ function standing(state: OneState, index: number, actuator: NetActuator, numbers
   return load > 0 ? `too little for its load of ${force}; ${why}` : `nothing moves it; ${why}`;
 }
 
-const over = (numbers: RowNumbers): string => {
+const over = (state: OneState, numbers: RowNumbers): string => {
   const open = numbers.reliefs.filter((relief) => relief.flow > 1e-7);
   return open.length === 0
     ? ''
-    : `, of which ${open.map((relief) => `${litres(relief.flow)} goes over ${relief.label}`).join(' and ')}`;
+    : `, of which ${open.map((relief) => `${sayFlow(relief.flow, state.units)} goes over ${relief.label}`).join(' and ')}`;
 };
 
-const round = (value: number): string =>
-  Math.abs(value) >= 100 ? value.toFixed(0) : Number(value.toPrecision(3)).toString();
-const bar = (pascal: number): string => `${(pascal / 1e5).toFixed(pascal < 10e5 ? 1 : 0)} bar`;
-const litres = (flow: number): string => `${round(flow * 60_000)} L/min`;
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

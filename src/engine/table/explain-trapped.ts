@@ -18,7 +18,7 @@ export function explainTrapped(state: OneState): TrapAnswer[] {
   const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
   const running = conditions.pumpsRunning
     ? state
-    : solveOne(net, { ...conditions, pumpsRunning: true }, state.row, state.settlers);
+    : solveOne(net, { ...conditions, pumpsRunning: true }, state.row, state.settlers, state.units);
   const runningClasses = conditions.pumpsRunning
     ? classes
     : lineOutcomes(net, edges, running.conditions, running.block).classes;
@@ -70,7 +70,7 @@ function neighbours(state: OneState): { state: OneState; text: string }[] {
       const from = row + (p - now) * (steps[i] as number);
       return [
         {
-          state: solveOne(net, state.conditions, from, state.settlers),
+          state: solveOne(net, state.conditions, from, state.settlers, state.units),
           text: `${partLabel(state, input.part)} from ${name} to ${input.positions[now] ?? '?'} (row ${from + 1})`,
         },
       ];

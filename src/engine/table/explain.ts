@@ -1,3 +1,4 @@
+import type { UnitSystem } from '../../base/units.ts';
 import type { NetActuator, Network } from '../../network/network.ts';
 import { isEqualSided } from '../paths/actuator-bits.ts';
 import { REST_REASONS } from '../paths/motion-bits.ts';
@@ -29,8 +30,13 @@ export interface RowAnswer {
 }
 
 /** Everything one row says, in words, with the lines and parts to light for each link of the reason. */
-export function explain(net: Network, conditions: PathConditions, row: number): RowAnswer {
-  const state = solveOne(net, conditions, row);
+export function explain(
+  net: Network,
+  conditions: PathConditions,
+  row: number,
+  units: UnitSystem = 'metric',
+): RowAnswer {
+  const state = solveOne(net, conditions, row, undefined, units);
   const pressures = explainPressures(state);
   const dependents = explainDependents(state);
   return {

@@ -1,4 +1,5 @@
 import { emptySet, wordsFor } from '../../base/bits.ts';
+import type { UnitSystem } from '../../base/units.ts';
 import { standsAt } from '../../network/dependents.ts';
 import type { NetPath, Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
@@ -29,6 +30,8 @@ export interface OneState {
   readonly hops: readonly Hop[];
   /** Also of dependent valves, which count on behind the inputs. */
   readonly position: (input: number) => number;
+  /** Of the quantities in the sentences. */
+  readonly units: UnitSystem;
 }
 
 /** Oil can go from one line to the next through a path of a part. */
@@ -80,6 +83,7 @@ export function solveOne(
   conditions: PathConditions,
   row: number,
   settlers: Settlers = new Settlers(net),
+  units: UnitSystem = 'metric',
 ): OneState {
   const word = row >>> 5;
   const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
@@ -107,7 +111,7 @@ export function solveOne(
     if (path.oneWay) return [ahead];
     return [ahead, { from: path.to, to: path.from, path, fromPort: path.toPort, toPort: path.fromPort }];
   });
-  return { net, row, conditions, block, edges, settled, settlers, is, on, hops, position };
+  return { net, row, conditions, block, edges, settled, settlers, is, on, hops, position, units };
 }
 
 /** A way along open paths: lines passed, and the hop before each but the first. */
