@@ -1,6 +1,5 @@
-import { spawnSync } from 'node:child_process';
-import { accessSync, constants, existsSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
+import { aptInstall, runs } from '../tools/apt.mjs';
 
 const NAMES = ['chromium', 'chromium-browser', 'google-chrome', 'google-chrome-stable', 'chrome', 'msedge'];
 const PLACES = [
@@ -18,15 +17,6 @@ export const CHROMIUM_FLAGS = [
   ...['--disable-component-update', '--disable-sync'],
 ];
 
-const runs = (file: string): boolean => {
-  try {
-    accessSync(file, constants.X_OK);
-    return true;
-  } catch {
-    return false;
-  }
-};
-
 function look(): string | undefined {
   const suffix = process.platform === 'win32' ? '.exe' : '';
   const onPath = (process.env['PATH'] ?? '')
@@ -42,16 +32,7 @@ export function findChromium(): string {
     if (runs(told)) return told;
     throw new Error(`CHROMIUM_PATH names ${told}, which cannot be run: correct it or unset it.`);
   }
-  const found = look() ?? (install() ? look() : undefined);
+  const found = look() ?? (aptInstall('chromium', 'Chromium') ? look() : undefined);
   if (found) return found;
   throw new Error('The browser tests need Chromium or Chrome: install it, or set CHROMIUM_PATH to its program file.');
-}
-
-function install(): boolean {
-  if (process.platform !== 'linux' || process.getuid?.() !== 0 || !existsSync('/usr/bin/apt-get')) return false;
-  console.log('Chromium is missing: installing it with apt-get …');
-  const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
-  const apt = (...args: string[]): boolean =>
-    spawnSync('apt-get', args, { env, stdio: ['ignore', 'ignore', 'inherit'], timeout: 15 * 60_000 }).status === 0;
-  return apt('update') && apt('install', '-y', '--no-install-recommends', 'chromium');
 }

@@ -1,0 +1,2 @@
+export function runs(file: string): boolean;
+export function aptInstall(name: string, called: string): boolean;

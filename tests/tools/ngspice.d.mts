@@ -1,0 +1,2 @@
+export function findNgspice(): string | undefined;
+export function ensureNgspice(): string | undefined;
