@@ -11,6 +11,7 @@ export function problemsOf(net: Network, played: PlayedStep, step: PlayStep, las
 }
 
 const WAYS = { '+': 'out', '-': 'in', '0': 'to rest' } as const;
+const TURNS = { '+': 'A→B', '-': 'B→A', '0': 'to rest' } as const;
 
 class StepJudge {
   readonly #net: Network;
@@ -41,6 +42,10 @@ class StepJudge {
 
   #label(actuator: number): string {
     return this.#net.parts[this.#net.actuators[actuator]?.part ?? -1]?.label ?? '';
+  }
+
+  #way(actuator: number, way: Wanted['way']): string {
+    return (this.#net.actuators[actuator]?.rotary ? TURNS : WAYS)[way];
   }
 
   #say(
@@ -142,7 +147,7 @@ class StepJudge {
     switch (ends.by) {
       case 'motion': {
         const open = this.#wanted.filter(({ actuator, way }) => after.stops[actuator] !== (way === '+' ? 'out' : 'in'));
-        return `${open.map(({ actuator, way }) => `${this.#label(actuator)} is not all the way ${WAYS[way]}`).join(', ')}`;
+        return `${open.map(({ actuator, way }) => `${this.#label(actuator)} is not all the way ${this.#way(actuator, way)}`).join(', ')}`;
       }
       case 'sensor': {
         const at =
@@ -182,7 +187,7 @@ class StepJudge {
         'load unsecured',
         'fault',
         [actuator],
-        `${label} is moved ${WAYS[way]} by its ${push.by}, ${far}, though nobody asked.`,
+        `${label} is moved ${this.#way(actuator, way)} by its ${push.by}, ${far}, though nobody asked.`,
         'Hold the load: a lock check or counterbalance valve on its chamber, or a centre that blocks it.',
         at,
       );
@@ -191,7 +196,7 @@ class StepJudge {
         'wrong way',
         'fault',
         [actuator],
-        `${label} moves ${WAYS[way]}, ${far}, the other way from what is asked.`,
+        `${label} moves ${this.#way(actuator, way)}, ${far}, the other way from what is asked.`,
         'Change the coil or lever of its valve, or swap the lines at its ports.',
         at,
       );
@@ -200,7 +205,7 @@ class StepJudge {
         'moved unasked',
         'fault',
         [actuator],
-        `${label} moves ${WAYS[way]}, ${far}, though nobody asked.`,
+        `${label} moves ${this.#way(actuator, way)}, ${far}, though nobody asked.`,
         'Find what opens its line in this step: a coil left on, a valve in its last position, a pressure valve that opens.',
         at,
       );
@@ -225,10 +230,10 @@ class StepJudge {
         'fault',
         [actuator],
         there
-          ? `${label} is to go ${WAYS[way]}, but is ${target} already when the step begins.`
+          ? `${label} is to go ${this.#way(actuator, way)}, but is ${target} already when the step begins.`
           : early
-            ? `${label} does not go ${WAYS[way]}: what ends the step is met before anything moves.`
-            : `${label} does not go ${WAYS[way]}.`,
+            ? `${label} does not go ${this.#way(actuator, way)}: what ends the step is met before anything moves.`
+            : `${label} does not go ${this.#way(actuator, way)}.`,
         there
           ? 'Take it back in an earlier step, or leave the motion out.'
           : early
@@ -240,7 +245,7 @@ class StepJudge {
         'not finished',
         'caution',
         [actuator],
-        `${label} is still on its way ${WAYS[way]} when the step ends: it has come to ${millimetres(after.strokes[actuator] ?? 0)}.`,
+        `${label} is still on its way ${this.#way(actuator, way)} when the step ends: it has come to ${millimetres(after.strokes[actuator] ?? 0)}.`,
         'Let its own sensor end the step, or give it more time.',
         { time: stop },
       );
@@ -271,7 +276,7 @@ class StepJudge {
             'wrong order',
             'fault',
             [first.actuator, second.actuator],
-            `${this.#label(second.actuator)} goes ${WAYS[second.way]} ${before ? 'before' : 'while'} ${this.#label(first.actuator)} ${before ? 'goes' : 'is still going'} ${WAYS[first.way]}; it is to come after.`,
+            `${this.#label(second.actuator)} goes ${this.#way(second.actuator, second.way)} ${before ? 'before' : 'while'} ${this.#label(first.actuator)} ${before ? 'goes' : 'is still going'} ${this.#way(first.actuator, first.way)}; it is to come after.`,
             'Set the sequence valve above the pressure that the first motion needs, or give the second a step of its own.',
             { time: begins.start },
           );

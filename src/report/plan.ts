@@ -79,7 +79,7 @@ function sayMotion({ label, way, asked, start, end, atStop, rotary, by }: StepMo
   return `${asked ? '' : '! '}${label}${way} ${from} to ${to} s${by === 'load' ? ' by load' : ''}${short}`;
 }
 
-function* lossLines({ powerLoss, steps }: PlanReport): Generator<string> {
+function* lossLines({ powerLoss, steps, trace }: PlanReport): Generator<string> {
   const [first] = powerLoss;
   if (!first) return;
   yield '';
@@ -92,7 +92,7 @@ function* lossLines({ powerLoss, steps }: PlanReport): Generator<string> {
       `${loss.step + 1}`,
       loss.at,
       loss.lost,
-      ...loss.actuators.map(sayActuator),
+      ...loss.actuators.map((actuator, i) => sayActuator(actuator, trace.actuators[i]?.rotary ?? false)),
       loss.underPressure.join(', ') || '–',
       loss.resumes ? (loss.step + 1 === steps.length && loss.at === 'step end' ? '–' : 'yes') : 'no',
     ]),
@@ -107,8 +107,10 @@ function* lossLines({ powerLoss, steps }: PlanReport): Generator<string> {
 const sayWhy = ({ step, at, lost, why }: PlanPowerLoss): string =>
   `Cannot go on after step ${step + 1}, ${at}, ${lost}: ${why ?? ''}`;
 
-const sayActuator = ({ comes, from, to }: PlanPowerLoss['actuators'][number]): string =>
-  from === to ? comes : `${comes} ${to > from ? 'out' : 'in'}`;
+const sayActuator = ({ comes, from, to }: PlanPowerLoss['actuators'][number], rotary: boolean): string => {
+  if (from === to) return comes;
+  return `${comes} ${rotary ? (to > from ? 'A→B' : 'B→A') : to > from ? 'out' : 'in'}`;
+};
 
 function* table(
   heads: readonly string[],
