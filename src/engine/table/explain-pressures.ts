@@ -33,7 +33,7 @@ export function explainPressures(state: OneState): PressureWords {
       return said.rests ? { ...said, steps: [...said.steps, step(numbers.words ?? '')] } : said;
     const moves = state.is(state.block.motion.out[index]) || state.is(state.block.motion.in[index]);
     if (!said.rests && !moves) {
-      const yields = said.verdict === 'held' ? givesWay(index, solver, answer) : undefined;
+      const yields = said.verdict === 'held' ? givesWay(index, solver, bits, answer) : undefined;
       if (yields) {
         const over = [...new Set(yields.reliefs.map((i) => partLabel(state, state.net.reliefs[i]?.part ?? -1)))];
         const text = `Its ${spec.push.by} presses harder than ${over.join(' and ')} ${over.length > 1 ? 'allow' : 'allows'}: it gives way over that.`;

@@ -79,7 +79,7 @@ export function resolveBlock(
         const moves = ((motion.out[i]?.[w] as number) | (motion.in[i]?.[w] as number)) & low;
         if ((moves | ((outcome.verdicts[RESTS]?.[w] as number) & low)) === 0) {
           const yields =
-            ((outcome.verdicts[HELD]?.[w] as number) & low) === 0 ? undefined : givesWay(i, solver, answer);
+            ((outcome.verdicts[HELD]?.[w] as number) & low) === 0 ? undefined : givesWay(i, solver, bits, answer);
           if (yields) {
             changed |= settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(yields.verdict), w, low);
             const voids = outcome.notes[VOID] as Uint32Array;

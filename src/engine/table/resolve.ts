@@ -138,6 +138,17 @@ export interface BlockBits {
 const on = ({ bit }: BlockBits, plane: Uint32Array | undefined): boolean =>
   (((plane?.[bit >>> 5] ?? 0) >>> (bit & 31)) & 1) === 1;
 
+/**
+ * A chamber with a free way from the tank fills by suction; the solver, which knows no pressure under that of the
+ * tank, lets a void make up for the small loss on that way.
+ */
+function voidForms(solver: PressureSolver, { block, bit }: BlockBits, result: Solved, line: number): boolean {
+  if (solver.voidFlow(result, line) <= VOID) return false;
+  const at = line * block.width + (bit >>> 5);
+  const freely = (block.reach.freeToTank[at] as number) & (block.reach.plainFills[at] as number);
+  return ((freely >>> (bit & 31)) & 1) === 0;
+}
+
 /** The verdict that pressures give an actuator which open paths left to them; undefined = they do not decide it either. */
 export function actuatorByPressure(
   index: number,
@@ -173,13 +184,13 @@ export function actuatorByPressure(
       on(bits, motion.fedA[index]) ||
       (displaced && goesOut) ||
       (overValve(actuator.a) && solver.pressure(result, actuator.a) > PRESSED);
-    return { verdict: fed ? words.out : words.pushedOut, void: solver.voidFlow(result, actuator.a) > VOID };
+    return { verdict: fed ? words.out : words.pushedOut, void: voidForms(solver, bits, result, actuator.a) };
   }
   const fed =
     on(bits, motion.fedB[index]) ||
     (displaced && goesIn) ||
     (overValve(actuator.b) && solver.pressure(result, actuator.b) > PRESSED);
-  return { verdict: fed ? words.in : words.pushedIn, void: solver.voidFlow(result, actuator.b) > VOID };
+  return { verdict: fed ? words.in : words.pushedIn, void: voidForms(solver, bits, result, actuator.b) };
 }
 
 /**
@@ -213,6 +224,7 @@ export function creeps(index: number, { result }: PressureAnswer): 'out' | 'in' 
 export function givesWay(
   index: number,
   solver: PressureSolver,
+  bits: BlockBits,
   answer: PressureAnswer,
 ): { readonly verdict: ActuatorVerdict; readonly void: boolean; readonly reliefs: readonly number[] } | undefined {
   const actuator = solver.net.actuators[index];
@@ -226,7 +238,7 @@ export function givesWay(
   const grows = way === 'out' ? actuator.a : actuator.b;
   return {
     verdict: way === 'out' ? words.pushedOut : words.pushedIn,
-    void: solver.voidFlow(result, grows) > VOID,
+    void: voidForms(solver, bits, result, grows),
     reliefs,
   };
 }
