@@ -8,7 +8,7 @@ import { TEXT_SIZES } from './palette.ts';
 import { partReach } from './shapes.ts';
 
 /** Modules between a line and its name, and between the places tried along it. */
-const GAP = 0.5;
+const GAP = 0.8;
 const STEP = 2;
 /** Shares of a stretch at which a name is tried, the middle first. */
 const SPOTS = [0.5, 0.35, 0.65, 0.2, 0.8] as const;

@@ -82,6 +82,7 @@ export function coversOf(host: HTMLElement | undefined): Box[] {
 /** Boxes of everything that is drawn, with room for what a state may say beside a name; runs of lines have no width. */
 export const itemsOf = (scene: Scene): Box[] => [
   ...scene.parts.map(({ box }) => box),
+  ...scene.blocks.map(({ box }) => box),
   ...scene.labelRooms,
   ...scene.labels.filter(({ role }) => role === 'free').map(labelBox),
   ...scene.lines.flatMap(({ points }) => points.slice(1).flatMap((b, i) => boxOfPoints([points[i] ?? b, b]) ?? [])),

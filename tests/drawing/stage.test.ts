@@ -1,0 +1,96 @@
+import { expect, test } from 'vitest';
+import { moveParts } from '../../src/circuit/build.ts';
+import { applyEdit } from '../../src/circuit/edit.ts';
+import { hopsOf, withHops } from '../../src/drawing/hops.ts';
+import { crossings } from '../../src/drawing/joints.ts';
+import { quickRoute } from '../../src/drawing/quick-route.ts';
+import { routeAll, routingSheet } from '../../src/drawing/routing.ts';
+import { buildScene } from '../../src/drawing/scene.ts';
+import type { SceneState } from '../../src/drawing/scene.ts';
+import { partBox } from '../../src/drawing/shapes.ts';
+import { overlaps } from '../../src/drawing/geometry.ts';
+import { placeMissing } from '../../src/drawing/place.ts';
+import { circuit, joins, part, unplacedRig } from './samples.ts';
+
+const STATE: SceneState = { lines: new Map(), parts: new Map() };
+
+test('while a part is dragged, lines and marks of all that stands still are the very same objects', () => {
+  const rest = placeMissing(unplacedRig());
+  const routes = routeAll(rest);
+  const before = buildScene(rest, routes, STATE);
+  const moved = applyEdit(rest, moveParts(rest, ['PG'], 3, 0));
+  const line = rest.connections.filter(({ from, to }) => from.part === 'PG' || to.part === 'PG').map(({ id }) => id);
+  const passing = new Map(routes);
+  for (const id of line)
+    passing.set(
+      id,
+      quickRoute(routingSheet(moved), moved.connections.find((c) => c.id === id) as (typeof moved.connections)[0]),
+    );
+  const now = buildScene(moved, passing, { ...STATE, from: { circuit: rest, routes } });
+  const numbers = new Set(before.lines.filter(({ connection }) => line.includes(connection)).map((each) => each.line));
+  const still = now.lines.filter((each) => !numbers.has(each.line));
+  expect(still.length).toBeGreaterThan(3);
+  for (const each of still) expect(before.lines).toContain(each);
+  for (const each of now.parts.filter(({ id }) => id !== 'PG')) expect(before.parts).toContain(each);
+  // And what moved is drawn as a scene from the start would draw it, but for where names settle.
+  const fresh = buildScene(moved, passing, STATE);
+  expect(now.lines).toEqual(fresh.lines);
+  expect(now.dots.length).toBe(fresh.dots.length);
+  expect(now.parts).toEqual(fresh.parts);
+});
+
+test('a quick route begins and ends at its ports, is right-angled, and goes round a part in the way', () => {
+  const sheet = circuit(
+    [
+      part('F1', 'filter', { x: 0, y: 40 }),
+      part('F2', 'filter', { x: 0, y: 0 }),
+      part('F3', 'filter', { x: 1, y: 20 }),
+    ],
+    joins('F1.B F2.A'),
+  );
+  const points = quickRoute(routingSheet(sheet), sheet.connections[0] as (typeof sheet.connections)[0]);
+  expect([points[0], points.at(-1)]).toEqual([
+    { x: 0, y: 36 },
+    { x: 0, y: 4 },
+  ]);
+  const inTheWay = partBox(sheet.parts[2] as (typeof sheet.parts)[0]);
+  points.slice(1).forEach((b, i) => {
+    const a = points[i] as typeof b;
+    expect(a.x === b.x || a.y === b.y).toBe(true);
+    const box = {
+      x: Math.min(a.x, b.x) - 0.1,
+      y: Math.min(a.y, b.y) - 0.1,
+      width: Math.abs(a.x - b.x) + 0.2,
+      height: Math.abs(a.y - b.y) + 0.2,
+    };
+    expect(overlaps(box, inTheWay)).toBe(false);
+  });
+});
+
+test('a flat line hops over an upright one of another line, once, and ends where it ended', () => {
+  const sheet = circuit(
+    [
+      part('F1', 'filter', { x: -20, y: 0 }, 90),
+      part('F2', 'filter', { x: 20, y: 0 }, 90),
+      part('F3', 'filter', { x: 0, y: 20 }),
+      part('F4', 'filter', { x: 0, y: -20 }),
+    ],
+    joins('F1.B F2.A', 'F3.B F4.A'),
+  );
+  const routes = routeAll(sheet);
+  const found = crossings(sheet, routes);
+  expect(found.length).toBe(1);
+  const plain = buildScene(sheet, routes);
+  const hopping = buildScene(sheet, routes, { hops: true });
+  const core = (scene: typeof plain, id: string) =>
+    scene.lines.find((l) => l.connection === id)?.strokes.find((s) => s.role === 'core')?.lines[0] ?? [];
+  const bumped = plain.lines.filter(
+    ({ connection }) => core(hopping, connection).length > core(plain, connection).length,
+  );
+  expect(bumped).toHaveLength(1);
+  const id = bumped[0]?.connection ?? '';
+  expect(core(hopping, id)[0]).toEqual(core(plain, id)[0]);
+  expect(core(hopping, id).at(-1)).toEqual(core(plain, id).at(-1));
+  expect(Math.min(...core(hopping, id).map((p) => p.y))).toBeCloseTo((found[0]?.y ?? 0) - 0.55);
+  expect(withHops([], hopsOf(found))).toEqual([]);
+});
