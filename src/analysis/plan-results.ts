@@ -1,3 +1,4 @@
+import type { PlanStep } from '../circuit/plan.ts';
 import type { TraceSample } from '../engine/sequence/play/trace.ts';
 
 export type { TraceEvent, TraceSample } from '../engine/sequence/play/trace.ts';
@@ -159,4 +160,11 @@ export interface PlanReport {
   readonly powerLoss: readonly PlanPowerLoss[];
   /** Laws and defaults that the numbers rest on, in words. */
   readonly assumptions: readonly string[];
+}
+
+/** Steps for a motion sequence, not played yet. */
+export interface PlanDraft {
+  /** Part id → `out` for actuators that have to stand out before the first step. */
+  readonly start: Readonly<Record<string, string>>;
+  readonly steps: readonly Omit<PlanStep, 'id'>[];
 }

@@ -3,7 +3,9 @@ import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysi
 import { askTable, continueText } from '../analysis/ask.ts';
 import { bleedPlan } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
+import { coilLogic } from '../analysis/coil-logic.ts';
 import { checkPlan } from '../analysis/plan.ts';
+import { draftPlan } from '../analysis/plan-draft.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
@@ -65,6 +67,10 @@ function answer(question: Question): Reply {
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
     case 'plan':
       return { id, say: 'plan', report: checkPlan(circuit, question.plan, conditions, tell(id)) };
+    case 'coil-logic':
+      return { id, say: 'coil-logic', result: coilLogic(circuit, question.plan, tell(id)) };
+    case 'draft-plan':
+      return { id, say: 'draft-plan', result: draftPlan(circuit, question.text, conditions.loadCase, tell(id)) };
     case 'numbers':
       return { id, say: 'numbers', numbers: numbersOf(circuit, conditions, question.rows) };
   }

@@ -4,7 +4,8 @@ import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
-import type { PlanReport } from '../analysis/plan-results.ts';
+import type { CoilLogic } from '../analysis/coil-logic-results.ts';
+import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
 import { Cancelled } from '../base/budget.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -18,11 +19,13 @@ export type { AskAnswer, FoldAnswer, FoldBy, FoldItem, FoldRow, Next } from '../
 export type { Influence, InfluenceRow, SubCircuit } from '../analysis/results.ts';
 export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
 export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
+export type * from '../analysis/coil-logic-results.ts';
 export type * from '../analysis/plan-results.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
 export * from '../engine/table/words.ts';
+export { parseMotions, sayMotion } from '../engine/sequence/notation.ts';
 
 export interface TableAnswer {
   readonly table: StateTable;
@@ -59,6 +62,15 @@ export interface Analyst {
   bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
   /** A step plan played event by event, by its id; `conditions.loadCase` goes before its own. */
   plan(circuit: Circuit, conditions: Conditions, plan: string, progress: (share: number) => void): Job<PlanReport>;
+  /** What a control has to do for a step plan. */
+  coilLogic(circuit: Circuit, plan: string): Job<Result<CoilLogic>>;
+  /** Steps for a motion sequence in trade notation. */
+  draftPlan(
+    circuit: Circuit,
+    conditions: Conditions,
+    text: string,
+    progress: (share: number) => void,
+  ): Job<Result<PlanDraft>>;
   /** The table folded; `table` is the one of these conditions, undefined where there are too many combinations to list. */
   fold(asked: Asked, by: FoldBy, progress: (share: number) => void): Job<Result<FoldAnswer>>;
   /** Which levers can change which outcome, and what is independent. */
@@ -77,12 +89,13 @@ export interface Asked {
   readonly table: StateTable | undefined;
 }
 
-/** Tables, explanations, plans and questions about whole tables have a thread each, so that a click on "why" never waits for a long table. */
+/** Tables, explanations, bleed plans, step plans and questions about whole tables have a thread each, so that a click on "why" never waits for a long table. */
 export function createAnalyst(): Analyst {
   const tables = new Thread();
   const words = new Thread();
   const long = new Thread();
   const whole = new Thread();
+  const steps = new Thread();
   const share =
     (progress: (share: number) => void) =>
     (reply: Reply): void => {
@@ -129,8 +142,18 @@ export function createAnalyst(): Analyst {
         (reply) => (reply.say === 'bleed' ? reply.plan : undefined),
       ),
     plan: (circuit, conditions, plan, progress) =>
-      long.ask({ ask: 'plan', circuit, conditions, plan }, share(progress), (reply) =>
+      steps.ask({ ask: 'plan', circuit, conditions, plan }, share(progress), (reply) =>
         reply.say === 'plan' ? reply.report : undefined,
+      ),
+    coilLogic: (circuit, plan) =>
+      steps.ask(
+        { ask: 'coil-logic', circuit, conditions: { pumps: 'running' }, plan },
+        () => {},
+        (reply) => (reply.say === 'coil-logic' ? reply.result : undefined),
+      ),
+    draftPlan: (circuit, conditions, text, progress) =>
+      steps.ask({ ask: 'draft-plan', circuit, conditions, text }, share(progress), (reply) =>
+        reply.say === 'draft-plan' ? reply.result : undefined,
       ),
     fold: ({ circuit, conditions, table }, by, progress) =>
       whole.ask(
@@ -160,6 +183,7 @@ export function createAnalyst(): Analyst {
         (reply) => (reply.say === 'continue' ? reply.next : undefined),
       ),
     close: () => {
+      steps.stop();
       whole.stop();
       tables.stop();
       long.stop();

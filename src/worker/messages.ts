@@ -3,7 +3,8 @@ import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
 import type { BleedAnswer } from '../analysis/bleed-results.ts';
 import type { Check } from '../analysis/check-results.ts';
-import type { PlanReport } from '../analysis/plan-results.ts';
+import type { CoilLogic } from '../analysis/coil-logic-results.ts';
+import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { TableData } from '../engine/table/table-data.ts';
@@ -58,10 +59,17 @@ export type Question =
     }
   | {
       readonly id: number;
-      readonly ask: 'plan';
+      readonly ask: 'plan' | 'coil-logic';
       readonly circuit: Circuit;
       readonly conditions: Conditions;
       readonly plan: string;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'draft-plan';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly text: string;
     }
   | {
       readonly id: number;
@@ -98,5 +106,7 @@ export type Reply =
   | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }
   | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
   | { readonly id: number; readonly say: 'plan'; readonly report: PlanReport }
+  | { readonly id: number; readonly say: 'coil-logic'; readonly result: Result<CoilLogic> }
+  | { readonly id: number; readonly say: 'draft-plan'; readonly result: Result<PlanDraft> }
   | { readonly id: number; readonly say: 'explanation'; readonly explanation: Explanation }
   | { readonly id: number; readonly say: 'failed'; readonly message: string };
