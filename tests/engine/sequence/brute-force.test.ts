@@ -60,7 +60,7 @@ function compare(circuit: Circuit, pick: number, count: Count): void {
 }
 
 test.each([
-  ['circuits joined at random', randomCircuit(3), 150, { moved: 5, left: 5 }],
+  ['circuits joined at random', randomCircuit(3), 300, { moved: 5, left: 5 }],
   ['machines with loads and checks', randomMachine(), 350, { moved: 150, left: 100 }],
 ])(`plans agree with every list of up to ${MOVES} moves: %s`, (_, circuits, numRuns, atLeast) => {
   const count: Count = { plans: 0, moved: 0, left: 0, longest: 0 };
