@@ -89,12 +89,24 @@ export function fedFrom(net: Network, start: number): Fed {
     lines.add(line);
     queue.push(line);
   };
+  /** What moves a dependent valve has a bearing on what it gates. */
+  const follow = (dependent: number): void => {
+    for (const shift of net.dependents[dependent]?.shifts ?? []) {
+      if (shift.by === 'roller') {
+        if (shift.actuator >= 0) actuators.add(shift.actuator);
+        continue;
+      }
+      if (shift.input >= 0 && shift.input < net.inputs.length) inputs.add(shift.input);
+      for (const { line } of shift.signals) get(line);
+    }
+  };
   for (let line = queue.pop(); line !== undefined; line = queue.pop()) {
     if (net.lines[line]?.tank) continue;
     for (const path of net.paths) {
       const on = path.from === line ? path.to : path.to === line && !path.oneWay ? path.from : -1;
       if (on < 0) continue;
-      if (path.input >= 0) inputs.add(path.input);
+      if (path.input >= net.inputs.length) follow(path.input - net.inputs.length);
+      else if (path.input >= 0) inputs.add(path.input);
       get(on);
     }
     for (const { from, to } of [...net.reliefs, ...net.valves]) if (from === line) get(to);
