@@ -46,6 +46,7 @@ export type {
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';
+export type { LeverMove, MoveEffect, MoveNote, MovesAnswer, MoveStage, VentAnswer } from './moves-results.ts';
 export type { AskAnswer, Next } from './ask-results.ts';
 export type { CoilLogic, CoilLogicCoil, LogicSignal, LogicStepWords, SignalGroupWords } from './coil-logic-results.ts';
 export type {

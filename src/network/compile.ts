@@ -4,7 +4,9 @@ import type {
   ActuatorElement,
   DividerElement,
   DependentSpec,
+  InputSpec,
   PartKind,
+  PathElement,
   PressureValveElement,
 } from '../parts/contract.ts';
 import { findLines } from './lines.ts';
@@ -53,7 +55,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     };
     const spec = kind.input?.(part);
     const own = spec ? inputs.length : -1;
-    if (spec) inputs.push({ part: index, ...spec });
+    if (spec) inputs.push(compileInput(spec, index, at));
     const dependent = kind.dependent?.(part);
     const input = dependent ? commanded + found.length : own;
     if (dependent) found.push({ part: index, input: own, at, spec: dependent });
@@ -61,22 +63,7 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     for (const element of kind.elements(part)) {
       switch (element.type) {
         case 'path':
-          paths.push({
-            part: index,
-            from: at(element.from),
-            to: at(element.to),
-            fromPort: element.from,
-            toPort: element.to,
-            oneWay: element.way === 'one-way',
-            throttled: element.throttled,
-            input: element.positions ? input : -1,
-            positions: (element.positions ?? []).reduce((mask, p) => mask | (1 << p), 0),
-            pilot: element.pilot ? at(element.pilot.port) : -1,
-            pilotRatio: element.pilot?.ratio ?? 0,
-            cracking: element.cracking ?? 0,
-            ...(element.rated && { rated: element.rated }),
-            ...(element.limit !== undefined && { limit: element.limit }),
-          });
+          paths.push(compilePath(element, index, input, at));
           break;
         case 'pressure-valve':
           if (element.duty === 'closes') paths.push(openState(element, index, valves.length, at));
@@ -169,6 +156,33 @@ export function compileNetwork(circuit: Circuit, kindOf: (kind: string) => PartK
     lineOf,
   };
 }
+
+function compileInput({ crossing, ...spec }: InputSpec, part: number, at: (port: string) => number): NetInput {
+  if (!crossing) return { part, ...spec };
+  const paths = (list: readonly PathElement[]): NetPath[] => list.map((path) => compilePath(path, part, -1, at));
+  return {
+    part,
+    ...spec,
+    crossing: { between: crossing.between.map((list) => list && paths(list)), allJoined: paths(crossing.allJoined) },
+  };
+}
+
+const compilePath = (element: PathElement, part: number, input: number, at: (port: string) => number): NetPath => ({
+  part,
+  from: at(element.from),
+  to: at(element.to),
+  fromPort: element.from,
+  toPort: element.to,
+  oneWay: element.way === 'one-way',
+  throttled: element.throttled,
+  input: element.positions ? input : -1,
+  positions: (element.positions ?? []).reduce((mask, p) => mask | (1 << p), 0),
+  pilot: element.pilot ? at(element.pilot.port) : -1,
+  pilotRatio: element.pilot?.ratio ?? 0,
+  cracking: element.cracking ?? 0,
+  ...(element.rated && { rated: element.rated }),
+  ...(element.limit !== undefined && { limit: element.limit }),
+});
 
 interface FoundDependent {
   readonly part: number;

@@ -46,6 +46,15 @@ export interface NetInput {
   readonly rest?: number;
   readonly by: 'lever' | 'pedal' | 'button' | 'coil' | 'hand' | 'coupling';
   readonly coils: readonly { readonly name: string; readonly position: number }[];
+  /** Its open paths while it shifts, `input` being -1 in them; absent = nothing but its positions is to be looked at. */
+  readonly crossing?: NetCrossing;
+}
+
+export interface NetCrossing {
+  /** Between position i and i + 1; undefined = not known. */
+  readonly between: readonly (readonly NetPath[] | undefined)[];
+  /** All ways joined, for what is not known. */
+  readonly allJoined: readonly NetPath[];
 }
 
 /** A valve whose position is no input of a state but follows from it. */

@@ -120,6 +120,16 @@ export interface InputSpec {
   readonly rest?: number;
   readonly by: 'lever' | 'pedal' | 'button' | 'coil' | 'hand' | 'coupling';
   readonly coils: readonly { readonly name: string; readonly position: number }[];
+  /** What is open while it shifts; absent = nothing but its positions is to be looked at. */
+  readonly crossing?: CrossingSpec;
+}
+
+/** Paths of a valve on its way from one position to the next. */
+export interface CrossingSpec {
+  /** Between position i and i + 1; an entry that is not there is not known. */
+  readonly between: readonly (readonly PathElement[] | undefined)[];
+  /** All its ways joined: one of the two bounds of what is not known, the other being all shut. */
+  readonly allJoined: readonly PathElement[];
 }
 
 /** A valve whose position follows from pressures, or from where an actuator stands, in the same state. */

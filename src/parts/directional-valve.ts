@@ -6,7 +6,7 @@ import { checkValve } from './valve-check.ts';
 import { drawValve, valveBounds, valveReach } from './valve-drawing.ts';
 import { DEFAULT_VALVE, VALVE_FORMS } from './valve-forms.ts';
 import { valvePorts } from './valve-frame.ts';
-import { valveElements } from './valve-paths.ts';
+import { valveCrossing, valveElements } from './valve-paths.ts';
 
 const LOSS = lossSettings('40 L/min', '5 bar');
 const RATING = ratingSetting('350 bar');
@@ -46,7 +46,7 @@ export const directionalValve: PartKind = {
     return [readRating(part, RATING, others), readRating(part, TANK_PORT_RATING, [...returns], true)];
   },
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
-  input: (part) => valveInput(valveOf(part)),
+  input: (part) => ({ ...valveInput(valveOf(part)), crossing: valveCrossing(valveOf(part), readLoss(part, LOSS)) }),
   draw: (part, look) => drawValve(valveOf(part), look.position),
   bounds: (part) => valveBounds(valveOf(part)),
   reach: (part) => valveReach(valveOf(part)),

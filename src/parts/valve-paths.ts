@@ -1,6 +1,6 @@
 import { bad, good, type Result } from '../base/result.ts';
 import type { ValveData } from '../circuit/model.ts';
-import type { PathElement } from './contract.ts';
+import type { CrossingSpec, PathElement } from './contract.ts';
 
 /** One path of a position, as written. Two ports, or more that are all joined. */
 export interface ValvePath {
@@ -56,9 +56,12 @@ export function pairKey({ from, to, way, throttled }: PathPair): string {
 }
 
 /** The readable paths of a position whose ports exist; the rest is for `checkValve` to report. */
-export function pathsOf(data: ValveData, position: number): ValvePath[] {
+export const pathsOf = (data: ValveData, position: number): ValvePath[] =>
+  readable(data, data.positions[position]?.paths ?? []);
+
+function readable(data: ValveData, paths: readonly string[]): ValvePath[] {
   const known = new Set(data.ports.map((port) => port.id));
-  return (data.positions[position]?.paths ?? []).flatMap((text) => {
+  return paths.flatMap((text) => {
     const parsed = parsePath(text);
     return parsed.ok && parsed.value.ports.every((id) => known.has(id)) ? [parsed.value] : [];
   });
@@ -76,4 +79,16 @@ export function valveElements(data: ValveData, rated: { readonly flow: number; r
     }
   });
   return [...found.values()].map(({ pair, positions }) => ({ type: 'path', ...pair, positions, rated }));
+}
+
+/** What is open while the valve shifts from one position to the next. */
+export function valveCrossing(data: ValveData, rated: { readonly flow: number; readonly drop: number }): CrossingSpec {
+  const elements = (paths: readonly ValvePath[]): PathElement[] =>
+    paths.flatMap(pairsOf).map((pair): PathElement => ({ type: 'path', ...pair, rated }));
+  const between = data.positions.slice(1).map((_, gap) => {
+    const paths = data.crossovers?.[gap];
+    return paths && elements(readable(data, paths));
+  });
+  const all: ValvePath = { ports: data.ports.map(({ id }) => id), way: 'both', throttled: false };
+  return { between, allJoined: elements([all]) };
 }
