@@ -91,6 +91,8 @@ export interface VentAnswer {
   readonly outcome: 'now' | 'moves' | 'never';
   /** It stays fed and open to tank at once: what stands in it is what the flow to tank needs. */
   readonly flows: boolean;
+  /** It comes down only through the leakage of a stopped pump. */
+  readonly slow: boolean;
   /** A shortest list, in an order with few loads coming down on the way. */
   readonly steps: readonly LeverMove[];
   /** Other lists of the same length, each as positions of levers; cut at a few. */
