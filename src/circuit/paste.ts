@@ -24,8 +24,14 @@ export interface Pasted {
   readonly labels: readonly string[];
 }
 
-/** Add a fragment, moved by dx, dy modules, under fresh ids, labels and line names. */
-export function paste(circuit: Circuit, fragment: Circuit, dx = 0, dy = 0): Pasted {
+/** Settings of a part that name another part by its id; kinds of parts are not known here. */
+export type NamingSettings = (part: Part) => readonly string[];
+
+/**
+ * Add a fragment, moved by dx, dy modules, under fresh ids, labels and line names. A setting that names a part of the
+ * fragment names its copy afterwards; any other stays as it is.
+ */
+export function paste(circuit: Circuit, fragment: Circuit, dx: number, dy: number, naming: NamingSettings): Pasted {
   const move = <P extends { x: number; y: number }>(p: P) => ({ x: p.x + dx, y: p.y + dy });
   const partName = partNames(circuit);
   const connectionName = connectionNames(circuit);
@@ -50,8 +56,15 @@ export function paste(circuit: Circuit, fragment: Circuit, dx = 0, dy = 0): Past
   };
   const parts = fragment.parts.map((part): Part => {
     const { label, at, ...rest } = part;
+    const { settings } = part;
+    const own = naming(part).flatMap((id): [string, string][] => {
+      const named = settings?.[id];
+      const copy = typeof named === 'string' ? newIds.get(named) : undefined;
+      return copy === undefined ? [] : [[id, copy]];
+    });
     return {
       ...rest,
+      ...(own.length > 0 && { settings: { ...settings, ...Object.fromEntries(own) } }),
       id: newIds.get(part.id) as string,
       ...(label !== undefined && { label: partName.like(label) }),
       ...(at && { at: move(at) }),
@@ -90,8 +103,9 @@ export const duplicate = (
   ids: Iterable<string>,
   dx: number,
   dy: number,
+  naming: NamingSettings,
   labelIds: Iterable<string> = [],
-): Pasted => paste(circuit, copyOut(circuit, ids, labelIds), dx, dy);
+): Pasted => paste(circuit, copyOut(circuit, ids, labelIds), dx, dy, naming);
 
 /** Whether a shown name is free for this part. */
 export const isFreeLabel = (circuit: Circuit, id: string, label: string): boolean =>

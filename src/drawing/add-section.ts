@@ -4,6 +4,7 @@ import { all, applyEdit, changeConnection } from '../circuit/edit.ts';
 import type { Edit } from '../circuit/edit.ts';
 import type { Circuit, Part, PortRef } from '../circuit/model.ts';
 import { RefusedEdit } from '../circuit/refused.ts';
+import { namingSettings } from '../parts/naming.ts';
 import { inflate, overlaps } from './geometry.ts';
 import { meetings, reach } from './neighbours.ts';
 import { partReach, portSpecs } from './shapes.ts';
@@ -58,7 +59,7 @@ export function appendSection(circuit: Circuit, valveId: string): AddedSection {
   const step = Math.ceil(box.width + SPACE);
   let dx = step;
   while (others.some((other) => overlaps(other, inflate({ ...box, x: box.x + dx }, 1)))) dx += 2;
-  const pasted = paste(circuit, fragment, dx, 0);
+  const pasted = paste(circuit, fragment, dx, 0, namingSettings);
   const added = pasted.parts[fragment.parts.findIndex(({ id }) => id === valveId)] as string;
   const edits: Edit[] = [pasted.edit];
   let now = applyEdit(circuit, pasted.edit);

@@ -240,7 +240,7 @@ describe('connections', () => {
 
 describe('copies', () => {
   test('duplicate gives fresh ids, labels and line names, and the connections between the copies only', () => {
-    const { edit, parts } = build.duplicate(bent, ['V1', 'C1'], 40, 0);
+    const { edit, parts } = build.duplicate(bent, ['V1', 'C1'], 40, 0, () => []);
     const after = apply(bent, edit);
     expect(parts).toEqual(['V2', 'C2']);
     expect(part(after, 'C2')).toMatchObject({ label: 'RAM 2', at: { x: 50, y: -10 } });
@@ -249,7 +249,7 @@ describe('copies', () => {
       { x: 48, y: 0 },
       { x: 52, y: -4 },
     ]);
-    const third = apply(after, build.duplicate(after, ['C2'], 1, 1).edit);
+    const third = apply(after, build.duplicate(after, ['C2'], 1, 1, () => []).edit);
     expect(third.parts.at(-1)).toMatchObject({ id: 'C3', label: 'RAM 3' });
   });
   test('a copy goes through a file, labels too, and into an empty circuit', () => {
@@ -258,7 +258,7 @@ describe('copies', () => {
     const read = readCircuit(text);
     if (!read.ok) throw new Error(text);
     const empty: Circuit = { name: 'New', parts: [], connections: [] };
-    const { edit, labels } = build.paste(empty, read.value, 2, 2);
+    const { edit, labels } = build.paste(empty, read.value, 2, 2, () => []);
     const after = apply(empty, edit);
     expect(labels).toEqual(['t1']);
     expect(after.labels?.[0]).toEqual({ id: 't1', at: { x: 3, y: 4 }, text: 'Station 1' });
@@ -285,7 +285,7 @@ test('thousands of parts are copied and removed as one edit each', () => {
     .map((p, i) => ({ id: `c${i + 1}`, from: ref(`T${i + 1}.T`), to: { part: p.id, port: 'T' } }));
   const row: Circuit = { name: 'Row', parts, connections };
   const ids = parts.map((p) => p.id);
-  const double = applyEdit(row, build.duplicate(row, ids, 0, 9).edit);
+  const double = applyEdit(row, build.duplicate(row, ids, 0, 9, () => []).edit);
   expect([double.parts.length, double.connections.length]).toEqual([8000, 7998]);
   const copies = double.parts.slice(4000).map((p) => p.id);
   expect(applyEdit(double, build.removeParts(double, copies))).toStrictEqual(row);

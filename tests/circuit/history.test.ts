@@ -241,7 +241,7 @@ function cook(c: Circuit, r: Recipe): Edit {
     case 'tee':
       return build.connectToConnection(c, port(r.b), line(), r.at);
     case 'duplicate':
-      return build.duplicate(c, new Set([one(), pick(c.parts, r.b).id]), 3, 3).edit;
+      return build.duplicate(c, new Set([one(), pick(c.parts, r.b).id]), 3, 3, () => []).edit;
     case 'label':
       return build.placeLabel(c, r.at, r.word);
     case 'label text':

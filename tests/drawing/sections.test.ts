@@ -8,6 +8,7 @@ import { overlaps } from '../../src/drawing/geometry.ts';
 import { partReach, placedPorts } from '../../src/drawing/shapes.ts';
 import { SUB_CIRCUITS } from '../../src/drawing/sub-circuits.ts';
 import { kindOf } from '../../src/parts/catalogue.ts';
+import { namingSettings } from '../../src/parts/naming.ts';
 
 const said = (circuit: Circuit): string[] =>
   circuit.connections
@@ -34,7 +35,7 @@ test.each(SUB_CIRCUITS.map((each) => [each.id, each] as const))(
       for (const key of Object.keys(part.settings ?? {})) expect(known.has(key)).toBe(true);
     }
     expect([...routeAll(circuit).values()].every((points) => points.length >= 2)).toBe(true);
-    expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50).edit).parts).toHaveLength(circuit.parts.length);
+    expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50, namingSettings).edit).parts).toHaveLength(circuit.parts.length);
   },
 );
 
@@ -76,7 +77,7 @@ test('a carry-over section comes in between: C2 of the first to its C1, and what
 
 test('in a series bank the new valve takes its oil from the tank port of the one before', () => {
   const section = made('lever-section');
-  const second = paste(section, section, 40, 0);
+  const second = paste(section, section, 40, 0, namingSettings);
   const two = applyEdit(section, second.edit);
   const bank: Circuit = {
     ...two,

@@ -1,4 +1,5 @@
 import { duplicate, flipParts, turnParts } from '../../circuit/build.ts';
+import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
@@ -191,7 +192,7 @@ export const sheetActions: SheetActions = {
   duplicate() {
     const { parts, labels } = editor.selection;
     if (parts.length + labels.length === 0) return desk.refuse('Nothing is selected.');
-    const copy = tryTo(() => duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, labels));
+    const copy = tryTo(() => duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, namingSettings, labels));
     if (copy && attempt(() => copy.edit, `${sayThings(parts, labels)} duplicated.`)) {
       editor.select({ parts: copy.parts, labels: copy.labels });
     }

@@ -2,6 +2,7 @@ import type { Point } from '../../base/points.ts';
 import { copyOut, paste } from '../../circuit/build.ts';
 import { readCircuit, writeCircuit } from '../../circuit/file.ts';
 import { circuitBounds } from '../../drawing/geometry.ts';
+import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { attempt, tryTo } from './attempt.ts';
 import { desk } from './desk.svelte.ts';
@@ -45,7 +46,7 @@ export function pasteText(text: string): void {
   lastText = text;
   const fragment = read.value;
   const by = offsetInSight(circuitBounds(fragment), times);
-  const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y));
+  const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y, namingSettings));
   if (!pasted) return;
   const { edit, parts, labels } = pasted;
   if (

@@ -9,6 +9,7 @@ import type { Circuit } from '../../circuit/model.ts';
 import { slideBends } from '../../drawing/bending.ts';
 import type { Insertion } from '../../drawing/through.ts';
 import { readyMadeOf } from '../../parts/catalogue.ts';
+import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { withPlaces as keepPlaces } from '../state/places.ts';
 import type { Selection } from '../state/editor.svelte.ts';
@@ -55,7 +56,7 @@ export function putDownSeveral(at: Point, again = false): void {
   const { gesture } = desk;
   if (gesture.type !== 'place-several') return;
   const where = snap(at);
-  const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y));
+  const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y, namingSettings));
   if (!put) return;
   if (!again) desk.rest();
   if (
