@@ -177,6 +177,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
   return solid<Required<Circuit>>({
     name: file.name,
     title: file.title,
+    paper: file.paper,
     notes: file.notes,
     parts: file.parts.map(toPart),
     connections: file.connections.map(toConnection),

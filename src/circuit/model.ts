@@ -1,4 +1,5 @@
 import type { Point, Turn } from '../base/points.ts';
+import type { Paper } from './paper.ts';
 import type { StepPlan } from './plan.ts';
 
 /**
@@ -8,8 +9,10 @@ import type { StepPlan } from './plan.ts';
 export interface Circuit {
   readonly name: string;
   readonly notes?: string;
-  /** Drawing furniture: drawn by, number, revision, date. */
+  /** Fields of the title block, see `TITLE_FIELDS`; others are kept. */
   readonly title?: Readonly<Record<string, string>>;
+  /** What it is printed on; `DEFAULT_PAPER` when absent. */
+  readonly paper?: Paper;
   readonly parts: readonly Part[];
   readonly connections: readonly Connection[];
   /** Free text on the sheet. */

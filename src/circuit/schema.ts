@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { PAPERS } from './paper.ts';
 import { plan } from './plan-schema.ts';
 import { LIMITS, ONE_LINE, PORT_REF, RESERVED, SEVERAL_LINES } from './limits.ts';
 import { id, line, say } from './schema-words.ts';
@@ -104,6 +105,7 @@ export const fileSchema = z
     version: z.literal(VERSION),
     name: line,
     title: z.record(line, line).optional(),
+    paper: z.enum(PAPERS).optional(),
     notes: z
       .string()
       .max(LIMITS.notes, say(`The notes are longer than ${LIMITS.notes} characters.`, 'Shorten them.'))

@@ -30,6 +30,7 @@ export function writeCircuit(circuit: Circuit): string {
       version: VERSION,
       name: circuit.name,
       title: circuit.title,
+      paper: circuit.paper,
       notes: circuit.notes,
       parts: circuit.parts.map(partFields),
       connections: circuit.connections.map(connectionFields),
