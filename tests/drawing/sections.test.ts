@@ -35,7 +35,9 @@ test.each(SUB_CIRCUITS.map((each) => [each.id, each] as const))(
       for (const key of Object.keys(part.settings ?? {})) expect(known.has(key)).toBe(true);
     }
     expect([...routeAll(circuit).values()].every((points) => points.length >= 2)).toBe(true);
-    expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50, namingSettings).edit).parts).toHaveLength(circuit.parts.length);
+    expect(applyEdit(EMPTY, paste(EMPTY, circuit, 50, 50, namingSettings).edit).parts).toHaveLength(
+      circuit.parts.length,
+    );
   },
 );
 
