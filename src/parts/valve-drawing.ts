@@ -13,7 +13,7 @@ export function activeOf(data: ValveData, position: number | undefined): number 
 }
 
 /** Coil names by end, from the box outwards. Coils are bound in drawn order, left to right. */
-function coilNames(data: ValveData): { left: string[]; right: string[] } {
+export function coilNames(data: ValveData): { left: string[]; right: string[] } {
   const names = (data.coils ?? []).map((coil) => coil.name);
   const onLeft = data.left.filter((operator) => operator === 'coil').length;
   return { left: names.slice(0, onLeft).reverse(), right: names.slice(onLeft) };
