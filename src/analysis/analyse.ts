@@ -69,7 +69,7 @@ export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readon
   const solver = new PressureSolver(net, where);
   const settler = new RowSettler(solver, where);
   // Memory and hunting do not matter here: the figures are those of the setting that the row gives.
-  return rows.map((row) => rowNumbers(solver, row, solver.solve(row, false, settler.at(row).setting)));
+  return rows.map((row) => rowNumbers(solver, row, solver.solve(row, settler.at(row).setting)));
 }
 
 /** 3¹⁴ rows: what a table held in memory can list. */

@@ -1,16 +1,21 @@
+import { add, emptySet, has, members } from '../base/bits.ts';
 import type { Network } from '../network/network.ts';
 import { PressureSolver } from '../engine/table/resolve.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
 import type { Evidence } from './finding.ts';
 
-/** Rows whose pressures are computed for findings; a longer table is looked at in its first ones and at rest. */
-const MOST_ROWS = 600;
+/** Rows of a table that is looked at as a whole; each costs a solve. */
+const ALL_ROWS = 1000;
+/** Rows that a longer one is looked at in. */
+const SOME_ROWS = 240;
 
 /** Steady pressures of a table's rows, with the pumps running and every actuator between its stops. */
 export interface Pressures {
   /** Solved rows, 0-based, and for each the pressure of every line, Pa. */
   readonly rows: readonly number[];
   readonly of: readonly Float64Array[];
+  /** Rows looked at, those without a steady state included. */
+  readonly looked: number;
   /** Pa: the highest at which a pump or accumulator can stand. */
   readonly source: number;
 }
@@ -24,19 +29,68 @@ export function pressuresOf({ net, table }: Evidence): Pressures {
   const solver = new PressureSolver(net, { pumpsRunning: true, places }, table.data.dependentPlanes);
   const rows: number[] = [];
   const of: Float64Array[] = [];
-  const rest = table.restRow();
-  const wanted = Array.from({ length: Math.min(table.count, MOST_ROWS) }, (_, row) => row);
-  if (rest >= wanted.length) wanted.push(rest);
-  for (const row of wanted) {
+  const looked =
+    table.count <= ALL_ROWS ? Array.from({ length: table.count }, (_, row) => row) : telling(table, SOME_ROWS);
+  for (const row of looked) {
     const { result } = solver.solve(row, false);
     if (result.status !== 'solved') continue;
     rows.push(row);
     of.push(Float64Array.from(net.lines, (_, line) => solver.pressure(result, line)));
   }
-  const found: Pressures = { rows, of, source: highestSource(net) };
+  const found: Pressures = { rows, of, looked: looked.length, source: highestSource(net) };
   known.set(table, found);
   return found;
 }
+
+/**
+ * Rows of a long table in which a pressure is likely to be high, in rising order: rest, every single lever moved
+ * from it, a row for each verdict and line class that occurs at all, two levers moved from rest, and others spread
+ * over the table.
+ */
+export function telling(table: StateTable, most: number): number[] {
+  const taken = emptySet(table.count);
+  let count = 0;
+  const take = (row: number): void => {
+    if (count >= most || has(taken, row)) return;
+    add(taken, row);
+    count += 1;
+  };
+  const { data } = table;
+  const rest = table.positionsOf(table.restRow());
+  take(table.rowOf(rest));
+  const moves = data.inputs.flatMap(({ positions }, input) =>
+    positions.flatMap((_, to) => (to === rest[input] ? [] : [{ input, to }])),
+  );
+  const moved = (...some: readonly { readonly input: number; readonly to: number }[]): number =>
+    table.rowOf(rest.map((at, i) => some.find(({ input }) => input === i)?.to ?? at));
+  for (const move of moves) take(moved(move));
+  for (const list of [data.actuatorPlanes, data.pumpPlanes, data.linePlanes]) {
+    for (const plane of list.flat()) {
+      if (!plane || [...members(taken)].some((row) => has(plane, row))) continue;
+      for (const row of members(plane)) {
+        take(row);
+        break;
+      }
+    }
+  }
+  const pairs = moves.flatMap((one, i) =>
+    moves.slice(i + 1).flatMap((two) => (two.input === one.input ? [] : [[one, two] as const])),
+  );
+  const room = Math.floor((most - count) / 2);
+  for (const k of spread(pairs.length, room)) take(moved(...(pairs[k] ?? [])));
+  for (const row of spread(table.count, most - count)) take(row);
+  return [...members(taken)];
+}
+
+/** Up to `wanted` different indexes below `length`, in steps of the golden ratio: no lever is in step with them. */
+function spread(length: number, wanted: number): number[] {
+  if (wanted >= length) return Array.from({ length }, (_, i) => i);
+  const out = new Set<number>();
+  for (let i = 1; out.size < wanted && i <= 4 * wanted; i++) out.add(Math.floor(((i * GOLDEN) % 1) * length));
+  return [...out];
+}
+
+const GOLDEN = (Math.sqrt(5) - 1) / 2;
 
 /** What relief valves, compensators and stores allow, with the rise of a relief valve at the flow of all pumps. */
 function highestSource(net: Network): number {

@@ -60,7 +60,7 @@ export class RowSettler {
       unsolved: (setting: readonly number[]) => this.byPaths(row, setting),
     };
     return settle(this.net, start, (setting) => {
-      const { result } = solver.solve(row, false, setting);
+      const { result } = solver.solve(row, setting);
       return result.status === 'solved' ? (line) => solver.pressure(result, line) : undefined;
     });
   }

@@ -26,7 +26,7 @@ export function explainDependents(state: OneState): DependentWords {
   const places = conditions.places.map((stop) => ({ stop }));
   const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
   const signal = (shift: NetPressureShift, setting: readonly number[]): number | undefined => {
-    const { result } = solver.solve(row, false, setting);
+    const { result } = solver.solve(row, setting);
     return result.status === 'solved' ? signalOf(shift.signals, (line) => solver.pressure(result, line)) : undefined;
   };
   const signalLines = (shift: NetPressureShift): number[] => shift.signals.map(({ line }) => line);

@@ -4,7 +4,7 @@ import type { ActuatorAnswer, PumpAnswer } from './answers.ts';
 import type { OneState } from './one-state.ts';
 import { lineName, partLabel, sideName, step } from './reasons.ts';
 import type { Step } from './reasons.ts';
-import { actuatorByPressure, creeps, givesWay, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
+import { actuatorByPressure, creeps, equalRivals, givesWay, movesOverValve, PressureSolver, pumpByPressure } from './resolve.ts';
 import { rowNumbers } from './row-numbers.ts';
 import type { RowNumbers } from './row-numbers.ts';
 import { sayFlow, sayForce, sayPressure, saySpeed } from './say-quantities.ts';
@@ -20,11 +20,11 @@ export interface PressureWords {
 
 export function explainPressures(state: OneState): PressureWords {
   const solver = new PressureSolver(state.net, state.conditions);
-  const rivals = state.net.actuators.some((_, i) => state.block.motion.rests[i]?.some((plane) => state.is(plane)));
-  const answer = solver.solve(state.row, rivals, state.settled.setting);
+  const answer = solver.solve(state.row, state.settled.setting);
   const numbers = rowNumbers(solver, state.row, answer);
   const bits = { block: state.block, bit: state.row & 31 };
   const hunts = state.is(state.block.hunts);
+  const rivals = equalRivals(solver, bits, answer);
 
   const actuator = (index: number, said: ActuatorAnswer): ActuatorAnswer => {
     const spec = state.net.actuators[index];
@@ -61,7 +61,7 @@ export function explainPressures(state: OneState): PressureWords {
       };
     }
     const { unfed } = actuatorOutcome(index, spec, state.block, state.conditions);
-    const found = actuatorByPressure(index, solver, bits, answer, unfed);
+    const found = actuatorByPressure(index, solver, bits, answer, unfed, rivals);
     if (!found) return said;
     const { rests, ...rest } = said;
     const notes = found.void && !said.notes.includes('void forms') ? [...said.notes, 'void forms'] : said.notes;

@@ -1,16 +1,14 @@
 import type { Budget } from '../../base/budget.ts';
 import { Cancelled } from '../../base/budget.ts';
 import type { SettledBlock } from '../paths/block.ts';
-import { REST_REASONS } from '../paths/motion-bits.ts';
 import type { ActuatorOutcome } from './actuator-outcomes.ts';
-import { actuatorByPressure, creeps, givesWay, movesOverValve, pumpByPressure } from './resolve.ts';
+import { actuatorByPressure, creeps, equalRivals, givesWay, movesOverValve, pumpByPressure } from './resolve.ts';
 import type { PressureAnswer, PressureSolver } from './resolve.ts';
 import { ACTUATOR_NOTES, ACTUATOR_VERDICTS, PUMP_VERDICTS } from './words.ts';
 
 const RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
 const PUMP_RESTS = PUMP_VERDICTS.indexOf('rests on pressure');
 const PUMP_WORKS = PUMP_VERDICTS.indexOf('working');
-const RIVALS = REST_REASONS.indexOf('rivals');
 const HELD = ACTUATOR_VERDICTS.indexOf('held');
 const FLOATS = ACTUATOR_VERDICTS.indexOf('floats');
 const ONE_WAY = ACTUATOR_VERDICTS.indexOf('held one way');
@@ -65,10 +63,10 @@ export function resolveBlock(
       open ^= low;
       allowance.rows -= 1;
       const bit = w * 32 + (31 - Math.clz32(low));
-      const rivals = motion.rests.some((planes) => ((planes[RIVALS]?.[w] as number) & low) !== 0);
-      const answer = solver.solve(block.at * 32 + bit, rivals);
+      const answer = solver.solve(block.at * 32 + bit);
       if (answer.result.status !== 'solved') continue;
       const bits = { block, bit };
+      const rivals = equalRivals(solver, bits, answer);
       let changed = 0;
       const note = (plane: Uint32Array | undefined, at: number): void => {
         if (plane) plane[w] = (plane[w] as number) | at;
@@ -94,7 +92,7 @@ export function resolveBlock(
           note(byActuator[i], low);
           return;
         }
-        const found = actuatorByPressure(i, solver, bits, answer, outcome.unfed);
+        const found = actuatorByPressure(i, solver, bits, answer, outcome.unfed, rivals);
         if (!found) return;
         note(byActuator[i], settle(outcome.verdicts, ACTUATOR_VERDICTS.indexOf(found.verdict), w, low));
         const voids = outcome.notes[VOID] as Uint32Array;

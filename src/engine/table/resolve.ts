@@ -1,5 +1,5 @@
 import { standsAt } from '../../network/dependents.ts';
-import type { Network } from '../../network/network.ts';
+import type { NetActuator, Network } from '../../network/network.ts';
 import { compileFlow, setState } from '../flow/compile.ts';
 import type { FlowModel } from '../flow/compile.ts';
 import { describe } from '../flow/result.ts';
@@ -28,8 +28,8 @@ const UNLOADED = 0.1;
 /** What the pressures say about one row. */
 export interface PressureAnswer {
   readonly result: FlowResult;
-  /** Per actuator: its speed rests on the losses, whatever else drives it. */
-  readonly swings: readonly boolean[];
+  /** Per actuator: its speed rests on the losses, whatever else drives it. Costs several solves; to be asked before the next row. */
+  readonly swings: () => readonly boolean[];
   /** m³/s that pass each line of the problem on the way to or from something that moves; relief flow is none of it. */
   readonly through: Float64Array;
   /** Through-put of every branch of the problem: m³/s, m/s or rad/s; 0 where it is off. */
@@ -44,6 +44,7 @@ export class PressureSolver {
   settings: DependentPlanes | undefined;
   readonly #strides: readonly number[];
   #warm: Float64Array | undefined;
+  #solves = 0;
 
   constructor(net: Network, conditions: PathConditions, settings?: DependentPlanes) {
     this.net = net;
@@ -57,12 +58,8 @@ export class PressureSolver {
     return Math.floor(row / (this.#strides[input] as number)) % (this.net.inputs[input]?.positions.length ?? 1);
   }
 
-  /** 0-based row. `rivals`: also find out whose speed rests on losses. `setting`: other positions of the dependent valves. */
-  solve(
-    row: number,
-    rivals: boolean,
-    setting: readonly number[] = settingOf(this.net, this.settings, row),
-  ): PressureAnswer {
+  /** 0-based row. `setting`: other positions of the dependent valves. */
+  solve(row: number, setting: readonly number[] = settingOf(this.net, this.settings, row)): PressureAnswer {
     const { model, net } = this;
     setState(
       model,
@@ -72,14 +69,24 @@ export class PressureSolver {
     const result = describe(model.solver, solution);
     const flows = solution.throughputs.slice();
     const through = this.#throughflow(flows);
-    let swinging: readonly number[] = [];
-    if (result.status === 'solved') {
-      this.#warm = Float64Array.from(solution.pressures);
-      if (rivals) swinging = ties(model.solver, this.#warm);
-    } else {
-      this.#warm = undefined;
-    }
-    return { result, swings: model.actuators.map((branch) => swinging.includes(branch)), through, flows };
+    const warm = result.status === 'solved' ? Float64Array.from(solution.pressures) : undefined;
+    this.#warm = warm;
+    const solve = ++this.#solves;
+    let swings: readonly boolean[] | undefined;
+    return {
+      result,
+      through,
+      flows,
+      swings: () => {
+        if (swings === undefined && this.#solves !== solve) throw new Error('Asked after another row was solved.');
+        return (swings ??= this.#swings(warm));
+      },
+    };
+  }
+
+  #swings(warm: Float64Array | undefined): readonly boolean[] {
+    const swinging = warm === undefined ? [] : ties(this.model.solver, warm);
+    return this.model.actuators.map((branch) => swinging.includes(branch));
   }
 
   /** True if oil on its way to or from a moving actuator passes this line. */
@@ -149,20 +156,23 @@ function voidForms(solver: PressureSolver, { block, bit }: BlockBits, result: So
   return ((freely >>> (bit & 31)) & 1) === 0;
 }
 
-/** The verdict that pressures give an actuator which open paths left to them; undefined = they do not decide it either. */
+/**
+ * The verdict that pressures give an actuator which open paths left to them; undefined = they do not decide it either.
+ * `rivals`: the row's `equalRivals`.
+ */
 export function actuatorByPressure(
   index: number,
   solver: PressureSolver,
   bits: BlockBits,
-  { result, swings }: PressureAnswer,
+  { result }: PressureAnswer,
   unfed: ActuatorOutcome['unfed'],
+  rivals: readonly number[],
 ): { verdict: ActuatorVerdict; void: boolean } | undefined {
   const actuator = solver.net.actuators[index];
   if (!actuator || result.status !== 'solved') return undefined;
   const state = result.actuators[index];
   if (!state) return undefined;
-  if (swings[index] && equalRivals(solver, bits, result, swings).includes(index))
-    return { verdict: 'undetermined', void: false };
+  if (rivals.includes(index)) return { verdict: 'undetermined', void: false };
   const { motion } = bits.block;
   const words = motionWords(actuator);
   const flow = Math.max(Math.abs(state.flowIn), Math.abs(state.flowOut));
@@ -198,15 +208,21 @@ export function actuatorByPressure(
  * feeds them, or that stand, and whose speeds rest on the losses. One that its load drives is no rival:
  * it runs as fast as the losses let it, and that is an answer.
  */
-function equalRivals(solver: PressureSolver, bits: BlockBits, result: Solved, swings: readonly boolean[]): number[] {
+export function equalRivals(solver: PressureSolver, bits: BlockBits, { result, swings }: PressureAnswer): number[] {
+  if (result.status !== 'solved') return [];
   const { motion } = bits.block;
-  const found = solver.net.actuators.flatMap((actuator, i) => {
-    if (!swings[i] || !on(bits, motion.rests[i]?.[RIVALS])) return [];
+  const driven: number[] = [];
+  for (let i = 0; i < solver.net.actuators.length; i++) {
+    const actuator = solver.net.actuators[i] as NetActuator;
+    if (!on(bits, motion.rests[i]?.[RIVALS])) continue;
     const speed = result.actuators[i]?.speed ?? 0;
     const out = on(bits, motion.out[i]);
-    const driven = out ? speed >= 0 : speed <= 0;
-    return driven && solver.pressure(result, out ? actuator.a : actuator.b) > PRESSED ? [i] : [];
-  });
+    if ((out ? speed >= 0 : speed <= 0) && solver.pressure(result, out ? actuator.a : actuator.b) > PRESSED)
+      driven.push(i);
+  }
+  // What swings costs several solves, and one alone has no rival.
+  if (driven.length < 2) return [];
+  const found = driven.filter((i) => swings()[i]);
   return found.length > 1 ? found : [];
 }
 

@@ -62,7 +62,7 @@ const NO_POWER = 0.05;
 
 const NOTHING = { lines: [], actuators: [], pumps: [], reliefs: [], paths: [], flows: [], shares: [] } as const;
 
-export function rowNumbers(solver: PressureSolver, row: number, answer = solver.solve(row, false)): RowNumbers {
+export function rowNumbers(solver: PressureSolver, row: number, answer = solver.solve(row)): RowNumbers {
   const { result } = answer;
   if (result.status !== 'solved') {
     const power = { pumps: 0, loads: 0, stores: 0, useful: 0, lost: 0 };

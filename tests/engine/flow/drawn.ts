@@ -48,7 +48,7 @@ export function drawn(
   });
   const row = position === '' ? 0 : (net.inputs[0]?.positions.indexOf(position) ?? -1);
   if (row < 0 || net.inputs.length > 1) throw new Error(`No single input with a position ${position}`);
-  const { result } = solver.solve(row, false);
+  const { result } = solver.solve(row);
   if (result.status !== 'solved') throw new Error(`${result.status}: ${result.words}`);
   // Paths that lose 0.001 bar are so steep that rounding of a pressure of 200 bar shows as 4e-7 of the flow.
   expect(result.certificate.residual).toBeLessThan(1e-6);

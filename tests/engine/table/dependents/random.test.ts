@@ -107,7 +107,7 @@ test('the setting of every row agrees with its own pressures or the row hunts, a
         const agreeing: number[][] = [];
         let solved = true;
         for (const setting of everySetting(net)) {
-          const { result } = solver.solve(row, false, setting);
+          const { result } = solver.solve(row, setting);
           solved &&= result.status === 'solved';
           if (result.status !== 'solved') continue;
           const at = (line: number): number => solver.pressure(result, line);
