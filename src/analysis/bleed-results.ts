@@ -75,16 +75,24 @@ export interface PowerLossActuator {
   readonly part: string;
   readonly label: string;
   readonly before: ActuatorVerdict;
-  /** Verdict after it, pumps running on and stopped; `comes`: what that means against the state before. */
-  readonly running: { readonly verdict: ActuatorVerdict; readonly comes: PowerLossOutcome };
-  readonly stopped: { readonly verdict: ActuatorVerdict; readonly comes: PowerLossOutcome };
+  /** Verdict after it with the coils off, pumps running on and stopped; and with the pumps stopped alone. */
+  readonly running: PowerLossVerdict;
+  readonly stopped: PowerLossVerdict;
+  readonly alone: PowerLossVerdict;
+}
+
+/** `comes`: what the verdict means against the state before. */
+export interface PowerLossVerdict {
+  readonly verdict: ActuatorVerdict;
+  readonly comes: PowerLossOutcome;
 }
 
 /** `open`: the circuit or its values leave it open. */
 export type PowerLossOutcome = 'drops' | 'moves by spring' | 'goes on' | 'starts' | 'holds' | 'floats' | 'open';
 
-/** Coils off, levers where they are. */
+/** Coils off, pumps running on or stopped; or the pumps stopped and the coils kept on. Levers stay where they are. */
 export interface PowerLossAnswer {
+  /** 0-based rows. */
   readonly before: number;
   readonly after: number;
   readonly returned: readonly {
@@ -94,8 +102,14 @@ export interface PowerLossAnswer {
     readonly to: string;
   }[];
   readonly actuators: readonly PowerLossActuator[];
-  readonly underPressure: { readonly running: readonly BleedLine[]; readonly stopped: readonly BleedLine[] };
+  readonly underPressure: {
+    readonly running: readonly BleedLine[];
+    readonly stopped: readonly BleedLine[];
+    readonly alone: readonly BleedLine[];
+  };
+  /** What comes down, is driven or empties when the coils go and the pumps stop, and when the pumps stop alone. */
   readonly cautions: readonly BleedCaution[];
+  readonly aloneCautions: readonly BleedCaution[];
 }
 
 /** Where pressure stays trapped, over all rows. */

@@ -94,8 +94,8 @@ function stepsOf(words: BleedWords, moves: readonly BleedMove[]): BleedStep[] {
 }
 
 /**
- * What happens when the control voltage goes in `row` (0-based): every coil valve to rest, levers stay,
- * pumps running on and stopped. Throws a RangeError for a row that is not there.
+ * What happens when power goes in `row` (0-based): every coil valve to rest, pumps running on and stopped; or the
+ * pumps stop alone. Levers stay. Throws a RangeError for a row that is not there.
  */
 export function powerLoss(circuit: Circuit, conditions: BleedConditions, row: number): PowerLossAnswer {
   const { model, words } = modelOf(circuit, conditions, unlimited);
@@ -106,6 +106,7 @@ export function powerLoss(circuit: Circuit, conditions: BleedConditions, row: nu
   const before = verdicts('running', row);
   const running = verdicts('running', rows.after);
   const stopped = verdicts('stopped', rows.after);
+  const alone = rows.after === row ? stopped : verdicts('stopped', row);
   const nameAt = (input: number, at: number): string =>
     words.position(input, Math.floor(at / (strides[input] as number)) % (net.inputs[input]?.positions.length ?? 1));
   return {
@@ -126,10 +127,16 @@ export function powerLoss(circuit: Circuit, conditions: BleedConditions, row: nu
         before: was,
         running: come(running[i] as ActuatorVerdict),
         stopped: come(stopped[i] as ActuatorVerdict),
+        alone: come(alone[i] as ActuatorVerdict),
       };
     }),
-    underPressure: { running: words.lines(rows.running), stopped: words.lines(rows.stopped) },
+    underPressure: {
+      running: words.lines(rows.running),
+      stopped: words.lines(rows.stopped),
+      alone: words.lines(rows.alone),
+    },
     cautions: rows.stopping.map((caution) => words.caution(caution)),
+    aloneCautions: rows.stoppingAlone.map((caution) => words.caution(caution)),
   };
 }
 

@@ -43,6 +43,7 @@ export type {
   PowerLossActuator,
   PowerLossAnswer,
   PowerLossOutcome,
+  PowerLossVerdict,
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';

@@ -9,7 +9,9 @@ import {
   FOLD_HELP,
   HELP,
   INFLUENCE_HELP,
+  MOVES_HELP,
   PLAN_HELP,
+  POWERLOSS_HELP,
   TABLE_HELP,
   TRAPPED_HELP,
 } from './help.ts';
@@ -40,7 +42,7 @@ export type Command =
       readonly out: string | undefined;
     }
   | {
-      readonly name: 'explain';
+      readonly name: 'explain' | 'moves';
       readonly file: string;
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
@@ -55,10 +57,13 @@ export type Command =
       readonly format: ExplainFormat;
       readonly pumps: Pumps;
       readonly load: string | undefined;
+      /** A line that is to be vented, and from which state. */
+      readonly line: string | undefined;
+      readonly state: readonly string[];
       readonly out: string | undefined;
     }
   | {
-      readonly name: 'bleed';
+      readonly name: 'bleed' | 'powerloss';
       readonly file: string;
       readonly format: ExplainFormat;
       readonly load: string | undefined;
@@ -127,11 +132,15 @@ export function readArguments(args: readonly string[], version: string): Command
     case 'table':
       return tableCommand(rest);
     case 'explain':
-      return explainCommand(rest);
+      return explainCommand('explain', EXPLAIN_HELP, rest);
+    case 'moves':
+      return explainCommand('moves', MOVES_HELP, rest);
     case 'trapped':
       return trappedCommand(rest);
     case 'bleed':
-      return bleedCommand(rest);
+      return bleedCommand('bleed', BLEED_HELP, rest);
+    case 'powerloss':
+      return bleedCommand('powerloss', POWERLOSS_HELP, rest);
     case 'check':
       return checkCommand(rest);
     case 'plan':
@@ -169,8 +178,8 @@ function tableCommand(args: string[]): Command {
   };
 }
 
-function explainCommand(args: string[]): Command {
-  const { values, positionals } = attempt('explain', () =>
+function explainCommand(name: 'explain' | 'moves', text: string, args: string[]): Command {
+  const { values, positionals } = attempt(name, () =>
     parseArgs({
       args,
       strict: true,
@@ -178,37 +187,51 @@ function explainCommand(args: string[]): Command {
       options: { ...COMMON, ...LOAD, ...UNITS, state: { type: 'string', multiple: true, default: [] } },
     }),
   );
-  if (values.help) return { name: 'say', text: EXPLAIN_HELP };
+  if (values.help) return { name: 'say', text };
   return {
-    name: 'explain',
-    file: oneFile('explain', positionals),
-    format: oneOf('explain', '--format', values.format, EXPLAIN_FORMATS),
-    pumps: oneOf('explain', '--pumps', values.pumps, ['running', 'stopped']),
-    load: loadCase('explain', values.load),
-    units: oneOf('explain', '--units', values.units, UNIT_SYSTEMS),
+    name,
+    file: oneFile(name, positionals),
+    format: oneOf(name, '--format', values.format, EXPLAIN_FORMATS),
+    pumps: oneOf(name, '--pumps', values.pumps, ['running', 'stopped']),
+    load: loadCase(name, values.load),
+    units: oneOf(name, '--units', values.units, UNIT_SYSTEMS),
     state: values.state,
-    out: outFile('explain', values.out),
+    out: outFile(name, values.out),
   };
 }
 
 function trappedCommand(args: string[]): Command {
   const { values, positionals } = attempt('trapped', () =>
-    parseArgs({ args, strict: true, allowPositionals: true, options: { ...COMMON, ...LOAD } }),
+    parseArgs({
+      args,
+      strict: true,
+      allowPositionals: true,
+      options: {
+        ...COMMON,
+        ...LOAD,
+        line: { type: 'string' },
+        state: { type: 'string', multiple: true, default: [] },
+      },
+    }),
   );
   if (values.help) return { name: 'say', text: TRAPPED_HELP };
+  if (values.line === '') throw usage('--line needs the name of a line.', 'trapped');
+  if (values.line === undefined && values.state.length > 0) throw usage('--state goes with --line.', 'trapped');
   return {
     name: 'trapped',
     file: oneFile('trapped', positionals),
     format: oneOf('trapped', '--format', values.format, EXPLAIN_FORMATS),
     pumps: oneOf('trapped', '--pumps', values.pumps, ['running', 'stopped']),
     load: loadCase('trapped', values.load),
+    line: values.line,
+    state: values.state,
     out: outFile('trapped', values.out),
   };
 }
 
-function bleedCommand(args: string[]): Command {
+function bleedCommand(name: 'bleed' | 'powerloss', text: string, args: string[]): Command {
   const { format, out, help } = COMMON;
-  const { values, positionals } = attempt('bleed', () =>
+  const { values, positionals } = attempt(name, () =>
     parseArgs({
       args,
       strict: true,
@@ -216,14 +239,14 @@ function bleedCommand(args: string[]): Command {
       options: { format, out, help, ...LOAD, state: { type: 'string', multiple: true, default: [] } },
     }),
   );
-  if (values.help) return { name: 'say', text: BLEED_HELP };
+  if (values.help) return { name: 'say', text };
   return {
-    name: 'bleed',
-    file: oneFile('bleed', positionals),
-    format: oneOf('bleed', '--format', values.format, EXPLAIN_FORMATS),
-    load: loadCase('bleed', values.load),
+    name,
+    file: oneFile(name, positionals),
+    format: oneOf(name, '--format', values.format, EXPLAIN_FORMATS),
+    load: loadCase(name, values.load),
     state: values.state,
-    out: outFile('bleed', values.out),
+    out: outFile(name, values.out),
   };
 }
 

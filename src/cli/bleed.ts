@@ -1,4 +1,4 @@
-import { networkOf, MOST_ROWS } from '../analysis/analyse.ts';
+import { networkOf } from '../analysis/analyse.ts';
 import { bleedPlan, trappedSummary } from '../analysis/bleed.ts';
 import type { Conditions } from '../analysis/results.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -7,8 +7,8 @@ import { writeBleedJson, writeBleedText } from '../report/bleed.ts';
 import { writeTrappedJson, writeTrappedText } from '../report/trapped.ts';
 import type { Command } from './arguments.ts';
 import { conditionsOf } from './conditions.ts';
-import { EXIT, Failure, sayProblems } from './failure.ts';
-import { readState } from './state.ts';
+import { EXIT } from './failure.ts';
+import { listedRow, stateOf } from './standing.ts';
 
 /** What a command writes, and the exit code once it is written. */
 export interface Written {
@@ -22,35 +22,17 @@ export function bleed(
   version: string,
 ): Written {
   const net = networkOf(circuit);
-  const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);
-  if (count > MOST_ROWS) {
-    throw new Failure(
-      `${file}: It has ${count.toLocaleString('en')} combinations of positions; up to ${MOST_ROWS.toLocaleString('en')} can be listed. Plan a part of it by itself.`,
-    );
-  }
-  const inputs = net.inputs.map(({ part, positions, rest }) => ({
-    label: net.parts[part]?.label ?? '',
-    positions,
-    ...(rest === undefined ? {} : { rest }),
-  }));
-  const read = readState(state, inputs);
-  if (!read.ok) throw new Failure(sayProblems(file, read.problems));
-  const { positions, assumed } = read.value;
-  const row = positions.reduce((at, position, i) => at * (inputs[i]?.positions.length ?? 1) + position, 0);
+  const { positions, ...standing } = stateOf(file, net, state);
+  const row = listedRow(file, net, positions);
   const conditions = conditionsOf({ file, pumps: 'stopped', load }, circuit);
   const answer = bleedPlan(circuit, conditions, row);
-  const named = inputs.map(({ label, positions: names }, i): [string, string] => [
-    label,
-    names[positions[i] ?? 0] ?? '',
-  ]);
   const source = {
     version,
     circuit: circuit.name,
     conditions,
     loadCases: circuit.loadCases ?? [],
     answer,
-    state: Object.fromEntries(named),
-    assumed,
+    ...standing,
   };
   return {
     pieces: format === 'json' ? [writeBleedJson(source)] : writeBleedText(source),

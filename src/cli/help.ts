@@ -8,7 +8,9 @@ Commands:
   influence FILE which lever can change what, and what is independent
   ask FILE TEXT  the rows in which something holds
   explain FILE   one state, with its reasons
-  trapped FILE   where pressure stays trapped, over all states
+  moves FILE     what each move of one lever does from one state, also on the way
+  trapped FILE   where pressure stays trapped, over all states; which moves vent a line
+  powerloss FILE what a loss of power does in one state
   bleed FILE     how to let it down after a stop: the shortest list of lever moves
   check FILE     whether its rules hold in every combination
   plan FILE      whether its step plans do what they say, and what a loss of power does
@@ -19,7 +21,8 @@ Options:
 
 FILE is a circuit saved by the editor (*.spool.json); - reads standard input.
 Exit code: 0 done, 1 a check failed (bleed: pressure is left that no lever list vents; check: a
-rule is broken or not decided; ask: it holds in no row; plan: a step does not do what it says), 2 bad input or usage.
+rule is broken or not decided; ask: it holds in no row; plan: a step does not do what it says; trapped --line: no
+combination vents it; powerloss: something comes down or starts), 2 bad input or usage.
 `;
 
 export const TABLE_HELP = `Usage: spooltable table FILE [OPTIONS]
@@ -54,12 +57,48 @@ Options:
   --help                            this text
 `;
 
-export const TRAPPED_HELP = `Usage: spooltable trapped FILE [OPTIONS]
+export const MOVES_HELP = `Usage: spooltable moves FILE [--state "V1=a,V2=0"] [OPTIONS]
 
-Every line that pressure stays trapped in: why, in how many rows, and a few of these rows with the moves that
-lead there.
+Every move of one lever from one state: what starts, stops or comes down, which lines are shut in with pressure or
+vented; and what happens on the way, from the crossovers that are drawn at the valve. Where a crossover is not
+drawn, what happens with all ways shut and with all ways joined. Works on panels of any size.
 
 Options:
+  --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
+                                    rest, and the answer says so; may be given more than once
+  --pumps running|stopped           state of all pumps (running)
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
+  --units metric|us                 units of pressures (metric)
+  --format text|json                how it is written (text)
+  --out FILE                        write there, whole or not at all, instead of to standard output
+  --help                            this text
+`;
+
+export const POWERLOSS_HELP = `Usage: spooltable powerloss FILE [--state "V1=a,V2=0"] [OPTIONS]
+
+Power goes in one state: the coils off with the pumps running on, the coils off and the pumps stopped, the pumps
+stopped alone. What comes down, holds, starts or floats, and which lines stay under pressure. Exit code 1 when
+something comes down or starts by itself. The documents of the machine, the local codes and qualified people go
+before this.
+
+Options:
+  --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
+                                    rest, and the answer says so; may be given more than once
+  --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
+  --format text|json                how it is written (text)
+  --out FILE                        write there, whole or not at all, instead of to standard output
+  --help                            this text
+`;
+
+export const TRAPPED_HELP = `Usage: spooltable trapped FILE [--line NAME [--state "V1=a,V2=0"]] [OPTIONS]
+
+Every line that pressure stays trapped in: why, in how many rows, and a few of these rows with the moves that
+lead there. With --line: the fewest lever moves that open this line to tank, from the state given; exit code 1 when
+no combination of positions does.
+
+Options:
+  --line NAME               a line by its name
+  --state VALVE=POSITION,…  where the levers stand before; a valve that is left out stands at rest
   --pumps running|stopped           state of all pumps (running)
   --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
   --format text|json                how it is written (text)

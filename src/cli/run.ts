@@ -20,6 +20,7 @@ import { check } from './check.ts';
 import { conditionsOf } from './conditions.ts';
 import { EXIT, Failure, messageOf, sayProblems } from './failure.ts';
 import { readCircuitFile } from './input.ts';
+import { loseAllPower, moves, vent } from './moves.ts';
 import { print, writeWhole } from './output.ts';
 import { plan } from './plan.ts';
 import { readState } from './state.ts';
@@ -49,11 +50,16 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
     case 'explain':
       return { pieces: explain(command, circuit, version), exit: EXIT.done };
     case 'trapped': {
+      if (command.line !== undefined) return vent(command, command.line, circuit, version);
       const conditions = conditionsOf(command, circuit);
       return trapped(command, circuit, conditions, version, tableOf(command.file, circuit, conditions));
     }
     case 'bleed':
       return bleed(command, circuit, version);
+    case 'powerloss':
+      return loseAllPower(command, circuit, version);
+    case 'moves':
+      return moves(command, circuit, version);
     case 'check':
       return check(command, circuit, version);
     case 'fold':

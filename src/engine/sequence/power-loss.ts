@@ -16,6 +16,9 @@ export interface PowerLossRows {
   readonly stopped: readonly number[];
   /** What comes down, is driven by stored oil or runs empty when the pumps stop too. */
   readonly stopping: readonly MoveCaution[];
+  /** The same where the pumps stop and the coils stay on. */
+  readonly alone: readonly number[];
+  readonly stoppingAlone: readonly MoveCaution[];
 }
 
 /** Coil valves go to rest, levers stay. Throws a RangeError for a row (0-based) that does not exist. */
@@ -35,6 +38,7 @@ export function loseCoils(model: BleedModel, running: RowPathsCache, row: number
   const under = model.running.under(after);
   const on = settle(net, links, running.at(after), initial, under);
   const off = model.stand(after, initial);
+  const alone = model.stand(row, initial);
   const shown = (lines: Uint8Array): number[] =>
     Array.from({ length: net.shown }, (_, line) => line).filter((line) => lines[line] === 1);
   return {
@@ -44,6 +48,8 @@ export function loseCoils(model: BleedModel, running: RowPathsCache, row: number
     running: shown(on.lines.map((held, line) => held | (under[line] as number))),
     stopped: shown(off.held.lines),
     stopping: cautionsOf(net, undefined, initial, off, -1, -1),
+    alone: shown(alone.held.lines),
+    stoppingAlone: cautionsOf(net, undefined, initial, alone, -1, -1),
   };
 }
 
