@@ -46,7 +46,7 @@ export function influenceFrom({ net, source, listed }: Outcomes, budget: Budget)
     names.actuators.forEach(({ label }, i) => add('actuator', i, label, source.of('actuator', i)));
     names.pumps.forEach(({ label }, i) => add('pump', i, label, source.of('pump', i)));
     names.lines.forEach(({ name }, i) => add('line', i, name, source.of('line', i)));
-    if (listed) names.lines.forEach(({ name }, i) => add('blocked', i, name, source.blocked(i)));
+    names.lines.forEach(({ name }, i) => add('blocked', i, name, source.blocked(i)));
     names.lines.forEach(({ name }, i) => add('trapped', i, name, source.trapped(i)));
     return {
       inputs: net.inputs.map(({ part, positions, rest }) => ({

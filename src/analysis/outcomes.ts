@@ -75,4 +75,4 @@ export function entangled<T>(work: () => T): Result<T> {
 
 /** Wherever open paths alone have answered. */
 export const PATHS_ONLY =
-  'Too many combinations to list, so open paths alone have answered: what loads, rivals or settings decide is left open, and of a pump it is said only whether a free path to tank unloads it.';
+  'Too many combinations to list, so open paths alone have answered: what loads, rivals or settings decide is left open.';

@@ -1,9 +1,7 @@
 import { networkOf } from '../../src/analysis/analyse.ts';
-import { TooManyNodes } from '../../src/engine/paths/diagrams/diagrams.ts';
-import { motionSets } from '../../src/engine/paths/diagrams/motion-sets.ts';
 import { classSet, openPathSets, PATH_CLASSES } from '../../src/engine/paths/diagrams/open-paths.ts';
 import { foldLine } from '../../src/engine/table/fold/folded-table.ts';
-import { verdictSets } from '../../src/engine/table/fold/verdict-sets.ts';
+import { PanelSets } from '../../src/engine/table/sets/panel-sets.ts';
 import { FAMILIES, family } from './circuits.ts';
 
 /**
@@ -62,26 +60,34 @@ function fold(print: (line: string) => void): void {
   }
 }
 
-/** Verdicts of all actuators. Displaced oil entangles long rows of bypass centres; then the run says so. */
-function motions(print: (line: string) => void): void {
-  print('\nverdicts        actuators        ms   nodes made');
+/** Verdicts of all actuators and pumps, classes and blockages of all lines, each counted. Processor time, cold and warm. */
+function outcomes(print: (line: string) => void): void {
+  print('\nall outcomes     sets   cold ms   warm ms   nodes made   nodes kept   MB');
   for (const name of FAMILIES) {
-    for (const valves of [8, 16, 24, 40]) {
+    for (const valves of [8, 16, 24, 32, 40]) {
       const net = networkOf(family(name, valves));
       const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
-      const began = performance.now();
-      let said: string;
-      try {
-        const paths = openPathSets(net, conditions, { mostNodes: 1_000_000 });
-        const found = motionSets(net, conditions, paths);
-        net.actuators.forEach((_, i) => verdictSets(net, conditions, paths, found, i));
-        said = String(paths.sets.nodes);
-      } catch (error) {
-        if (!(error instanceof TooManyNodes)) throw error;
-        said = 'given up at 1000000';
-      }
+      const once = () => {
+        const began = process.cpuUsage();
+        const paths = openPathSets(net, conditions);
+        const panel = new PanelSets(net, conditions, paths);
+        const found = [
+          ...net.actuators.flatMap((_, i) => panel.actuator(i).verdicts),
+          ...net.pumps.flatMap((_, i) => panel.pump(i)),
+          ...panel.lines.classes.flat(),
+          ...panel.lines.blocked.flat(),
+        ];
+        for (const set of found) paths.sets.count(set);
+        const { user, system } = process.cpuUsage(began);
+        return { ms: (user + system) / 1000, paths, found };
+      };
+      const { ms: cold, paths, found } = once();
+      let warm = Infinity;
+      for (let i = 0; i < 3; i++) warm = Math.min(warm, once().ms);
+      const cell = (text: string | number, width: number): string => String(text).padStart(width);
       print(
-        `${`${name} ${valves}`.padEnd(12)} ${String(net.actuators.length).padStart(12)} ${(performance.now() - began).toFixed(0).padStart(9)}   ${said}`,
+        `${`${name} ${valves}`.padEnd(12)} ${cell(found.length, 8)} ${cell(cold.toFixed(0), 9)} ${cell(warm.toFixed(0), 9)} ` +
+          `${cell(paths.sets.nodes, 12)} ${cell(paths.sets.size(...found), 12)} ${cell((paths.sets.bytes / 1e6).toFixed(1), 4)}`,
       );
     }
   }
@@ -89,4 +95,4 @@ function motions(print: (line: string) => void): void {
 
 run((line) => console.log(line));
 fold((line) => console.log(line));
-motions((line) => console.log(line));
+outcomes((line) => console.log(line));

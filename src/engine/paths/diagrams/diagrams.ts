@@ -93,6 +93,12 @@ export class Diagrams {
     return this.#nodes;
   }
 
+  /** Of the arrays of nodes and of kept results. */
+  get bytes(): number {
+    const arrays = [this.#level, this.#kids, this.#slots, this.#keyA, this.#keyB, this.#found];
+    return arrays.reduce((sum, array) => sum + array.byteLength, 0);
+  }
+
   /** Combinations of all inputs. */
   get total(): bigint {
     return this.#below[0] as bigint;

@@ -2,15 +2,12 @@ import type { BitSet } from '../../../base/bits.ts';
 import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { ALL, Diagrams, NONE } from '../../paths/diagrams/diagrams.ts';
-import { motionSets } from '../../paths/diagrams/motion-sets.ts';
-import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
-import { classSet } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
 import { planeToDiagram } from '../../paths/diagrams/plane.ts';
 import type { PathConditions } from '../../paths/reach.ts';
+import { PanelSets } from '../sets/panel-sets.ts';
 import type { TableData } from '../table-data.ts';
 import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from '../words.ts';
-import { verdictSets } from './verdict-sets.ts';
 
 /** An outcome, and the combinations that have it. */
 export interface OutcomeSet {
@@ -67,43 +64,25 @@ export function tableOutcomes(data: TableData, heartbeat: () => void = () => und
   };
 }
 
-/** What open paths alone say of a pump on a panel too large to list. */
-export const PUMP_BY_PATHS = { free: 'unloaded', otherwise: 'no free path to tank' } as const;
-
-/** From exact sets of open paths, however many combinations there are. Throws `TooManyNodes` where they do not fit. */
+/** From exact sets of open paths, however many combinations there are. Asking throws `TooManyNodes` where they do not fit. */
 export function pathOutcomes(net: Network, conditions: PathConditions, paths: OpenPathSets): OutcomeSource {
-  const { sets } = paths;
-  let motions: MotionSets | undefined;
-  const moving = (): MotionSets => (motions ??= motionSets(net, conditions, paths));
-  const actuator = (index: number): OutcomeSet[] => {
-    const found = verdictSets(net, conditions, paths, moving(), index);
-    return ACTUATOR_VERDICTS.flatMap((word) => {
-      const set = found.get(word);
-      return set === undefined ? [] : [{ word, set }];
-    });
-  };
-  const pump = (index: number): OutcomeSet[] => {
-    if (!conditions.pumpsRunning || net.pumps[index]?.atRest) return [{ word: 'stopped', set: ALL }];
-    const outlet = net.pumps[index]?.outlet ?? 0;
-    const free = sets.minus(paths.freeToTank[outlet] as Diagram, paths.hunts);
-    return [
-      { word: PUMP_BY_PATHS.free, set: free },
-      { word: PUMP_BY_PATHS.otherwise, set: sets.not(free) },
-    ];
-  };
-  const line = (index: number): OutcomeSet[] => {
-    const shut = classSet(paths, index, 'cut off');
-    const displaced = sets.and(shut, moving().carries[index] as Diagram);
-    return [
-      ...(['fed', 'flows to tank', 'vented'] as const).map((word) => ({ word, set: classSet(paths, index, word) })),
-      { word: 'cut off', set: sets.minus(shut, displaced) },
-      { word: 'carries displaced oil', set: displaced },
-    ];
+  const panel = new PanelSets(net, conditions, paths);
+  const list = (found: readonly Diagram[] | undefined, words: readonly string[]): OutcomeSet[] =>
+    words.map((word, i) => ({ word, set: found?.[i] ?? NONE }));
+  const of: OutcomeSource['of'] = (kind, index) => {
+    switch (kind) {
+      case 'actuator':
+        return list(panel.actuator(index).verdicts, ACTUATOR_VERDICTS);
+      case 'pump':
+        return list(panel.pump(index), PUMP_VERDICTS);
+      case 'line':
+        return list(panel.lines.classes[index], LINE_CLASSES);
+    }
   };
   return {
-    sets,
-    of: (kind, index) => (kind === 'actuator' ? actuator(index) : kind === 'pump' ? pump(index) : line(index)),
-    blocked: () => [],
+    sets: paths.sets,
+    of,
+    blocked: (line) => list(panel.lines.blocked[line], BLOCKED_KINDS),
     trapped: () => undefined,
   };
 }

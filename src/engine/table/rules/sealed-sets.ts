@@ -6,7 +6,7 @@ import { classSet } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
 import { pushes } from '../../paths/actuator-bits.ts';
 import type { PathConditions } from '../../paths/reach.ts';
-import type { BlockedKind, TrapReason } from '../words.ts';
+import type { TrapReason } from '../words.ts';
 import type { Truth } from './evaluate.ts';
 
 /** Combinations from which one move of one lever leads into the set. */
@@ -37,11 +37,10 @@ function movedAt(sets: Diagrams, set: Diagram, level: number): Diagram {
 }
 
 /**
- * Blocked and trapped lines of a panel too large to list: what open paths are sure of, and what they do not rule
+ * Trapped lines of a panel too large to list: what open paths are sure of, and what they do not rule
  * out. Sure bounds of what a table says from open paths; where it would search further, the answer stays open.
  */
 export interface SealedSets {
-  readonly blocked: (line: number, kinds: readonly BlockedKind[]) => Truth<Diagram>;
   readonly trapped: (line: number, reasons: readonly TrapReason[]) => Truth<Diagram>;
 }
 
@@ -73,10 +72,6 @@ export function sealedSets(
         (actuator.b === line && pushes(actuator, 'out') !== 0 && conditions.places[i] !== 'out'),
     );
   return {
-    blocked: (line, kinds) => {
-      const found = kinds.map((kind) => sureOf(kind === 'cut off' ? shut(line) : classSet(paths, line, 'fed')));
-      return found.reduce(both, none);
-    },
     trapped: (line, reasons) => {
       const cut = shut(line);
       const maybe: Truth<Diagram> = { sure: NONE, maybe: cut };

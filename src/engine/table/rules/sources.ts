@@ -2,16 +2,13 @@ import { emptySet, fullSet, orInto, trim } from '../../../base/bits.ts';
 import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
-import { motionSets } from '../../paths/diagrams/motion-sets.ts';
-import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
-import { classSet } from '../../paths/diagrams/open-paths.ts';
+import { classSet, PATH_CLASSES } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
 import { positionMask } from '../../paths/edges.ts';
 import type { PathConditions } from '../../paths/reach.ts';
-import { verdictSets } from '../fold/verdict-sets.ts';
+import { PanelSets } from '../sets/panel-sets.ts';
 import type { Plane, TableData } from '../table-data.ts';
 import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from '../words.ts';
-import type { ActuatorVerdict } from '../words.ts';
 import type { RuleSource, Truth } from './evaluate.ts';
 import { sealedSets } from './sealed-sets.ts';
 
@@ -76,23 +73,18 @@ export class NeedsTable extends Error {
 }
 
 /**
- * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, actuator verdicts,
- * line classes, blocked and trapped lines as far as open paths are sure of them, and whether a pump is unloaded by a free path to tank. Throws `NeedsTable` at everything else,
- * and `TooManyNodes` where motions are too entangled.
+ * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, verdicts of actuators and
+ * pumps, line classes, blocked lines, and trapped lines as far as open paths are sure of them. Throws `NeedsTable` at
+ * everything else, and `TooManyNodes` where motions are too entangled.
  */
 export function openPathSource(net: Network, conditions: PathConditions, paths: OpenPathSets): RuleSource<Diagram> {
   const { sets } = paths;
   // Motions take more than open paths, so they are sought when a rule speaks of them.
-  let motions: MotionSets | undefined;
-  const moving = (): MotionSets => (motions ??= motionSets(net, conditions, paths));
-  const sealed = sealedSets(net, conditions, paths, moving);
-  const verdicts = new Map<number, ReadonlyMap<ActuatorVerdict, Diagram>>();
-  const verdictsOf = (i: number): ReadonlyMap<ActuatorVerdict, Diagram> => {
-    const found = verdicts.get(i) ?? verdictSets(net, conditions, paths, moving(), i);
-    verdicts.set(i, found);
-    return found;
-  };
+  const panel = new PanelSets(net, conditions, paths);
+  const sealed = sealedSets(net, conditions, paths, () => panel.motions);
   const known = (set: Diagram): Truth<Diagram> => ({ sure: set, maybe: set });
+  const union = <W>(found: readonly Diagram[] | undefined, words: readonly W[], wanted: readonly W[]): Diagram =>
+    wanted.reduce((all: Diagram, word) => sets.or(all, found?.[words.indexOf(word)] ?? NONE), NONE);
   return {
     none: NONE,
     all: ALL,
@@ -101,36 +93,37 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
     not: (a) => sets.not(a),
     position: (input, positions) => sets.literal(input, positions),
     actuator: (i, verdicts) => {
-      const found = verdictsOf(i);
-      const union = (words: readonly ActuatorVerdict[]): Diagram =>
-        words.reduce((set: Diagram, word) => sets.or(set, found.get(word) ?? NONE), NONE);
-      return { sure: union(verdicts), maybe: union([...verdicts, 'undetermined', 'rests on pressure']) };
+      const found = panel.actuator(i).verdicts;
+      return {
+        sure: union(found, ACTUATOR_VERDICTS, verdicts),
+        maybe: union(found, ACTUATOR_VERDICTS, [...verdicts, 'undetermined', 'rests on pressure']),
+      };
     },
     pump: (i, verdicts) => {
-      const pump = net.pumps[i];
-      const label = net.parts[pump?.part ?? -1]?.label ?? 'a pump';
-      if (!conditions.pumpsRunning || pump?.atRest) return known(verdicts.includes('stopped') ? ALL : NONE);
-      if (verdicts.some((word) => word !== 'unloaded') || pump === undefined)
-        throw new NeedsTable(`More of ${label} than whether a free path to tank unloads it`);
-      // Pressures may find it unloaded over a throttle too.
+      const found = panel.pump(i);
       return {
-        sure: sets.minus(paths.freeToTank[pump.outlet] as Diagram, paths.hunts),
-        maybe: sets.or(paths.toTank[pump.outlet] as Diagram, paths.hunts),
+        sure: union(found, PUMP_VERDICTS, verdicts),
+        maybe: union(found, PUMP_VERDICTS, [...verdicts, 'rests on pressure']),
       };
     },
     line: (i, classes) => {
-      let sure: Diagram = NONE;
-      for (const word of classes)
-        if (word !== 'carries displaced oil' && word !== 'cut off') sure = sets.or(sure, classSet(paths, i, word));
-      const [cutOff, carries] = [classes.includes('cut off'), classes.includes('carries displaced oil')];
-      if (!cutOff && !carries) return known(sure);
-      const shut = classSet(paths, i, 'cut off');
-      if (cutOff && carries) return known(sets.or(sure, shut));
       // Only motions tell a line that carries displaced oil from one that is cut off.
-      const displaced = sets.and(shut, moving().carries[i] as Diagram);
-      return known(sets.or(sure, carries ? displaced : sets.minus(shut, displaced)));
+      if (!classes.includes('cut off') && !classes.includes('carries displaced oil')) {
+        const plain = PATH_CLASSES.filter((word) => classes.includes(word));
+        return known(plain.reduce((all: Diagram, word) => sets.or(all, classSet(paths, i, word)), NONE));
+      }
+      return known(union(panel.lines.classes[i], LINE_CLASSES, classes));
     },
-    blocked: sealed.blocked,
+    blocked: (i, kinds) => {
+      const found = union(panel.lines.blocked[i], BLOCKED_KINDS, kinds);
+      // Where pressures decide what moves, they also decide whether oil gets on.
+      const away = kinds.map((kind) => classSet(paths, i, kind === 'cut off' ? 'cut off' : 'fed'));
+      const perhaps = sets.and(
+        panel.open,
+        away.reduce((all, set) => sets.or(all, set), NONE),
+      );
+      return { sure: sets.minus(found, panel.open), maybe: sets.or(found, perhaps) };
+    },
     trapped: sealed.trapped,
     figure: ({ type }) => {
       throw new NeedsTable(type === 'pressure' ? 'A pressure' : 'A speed');

@@ -1,0 +1,68 @@
+import type { NetPump, Network } from '../../../network/network.ts';
+import type { Diagram } from '../../paths/diagrams/diagrams.ts';
+import { NONE } from '../../paths/diagrams/diagrams.ts';
+import { motionSets } from '../../paths/diagrams/motion-sets.ts';
+import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
+import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
+import type { PathConditions } from '../../paths/reach.ts';
+import { actuatorSets } from './actuator-sets.ts';
+import type { ActuatorSets } from './actuator-sets.ts';
+import { lineSets } from './line-sets.ts';
+import type { LineOutcomeSets } from './line-sets.ts';
+import { pumpSets } from './pump-sets.ts';
+
+/**
+ * Outcomes of a panel of any size by open paths, each sought when it is first asked for: the sets that the
+ * planes of a listed table would have without pressures. Asking throws `TooManyNodes` where they do not fit.
+ */
+export class PanelSets {
+  readonly net: Network;
+  readonly conditions: PathConditions;
+  readonly paths: OpenPathSets;
+  readonly #actuators = new Map<number, ActuatorSets>();
+  readonly #pumps = new Map<number, readonly Diagram[]>();
+  #motions: MotionSets | undefined;
+  #lines: LineOutcomeSets | undefined;
+  #open: Diagram | undefined;
+
+  constructor(net: Network, conditions: PathConditions, paths: OpenPathSets) {
+    this.net = net;
+    this.conditions = conditions;
+    this.paths = paths;
+  }
+
+  get motions(): MotionSets {
+    return (this.#motions ??= motionSets(this.net, this.conditions, this.paths));
+  }
+
+  /** By index of the verdict or note. */
+  actuator(index: number): ActuatorSets {
+    const found =
+      this.#actuators.get(index) ?? actuatorSets(this.net, this.conditions, this.paths, this.motions, index);
+    this.#actuators.set(index, found);
+    return found;
+  }
+
+  /** By index of the verdict. */
+  pump(index: number): readonly Diagram[] {
+    const known = this.#pumps.get(index);
+    if (known) return known;
+    const pump = this.net.pumps[index] as NetPump;
+    const found = pumpSets(index, pump, this.net, this.conditions, this.paths, this.motions);
+    this.#pumps.set(index, found);
+    return found;
+  }
+
+  get lines(): LineOutcomeSets {
+    return (this.#lines ??= lineSets(this.net, this.conditions, this.paths, this.motions));
+  }
+
+  /** Combinations in which some motion is left to the pressures, or nothing settles it. */
+  get open(): Diagram {
+    const { sets, hunts } = this.paths;
+    return (this.#open ??= this.motions.actuators.reduce(
+      (all, { rests }) => sets.or(all, rests),
+      sets.or(hunts, NONE),
+    ));
+  }
+}
