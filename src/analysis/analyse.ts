@@ -5,6 +5,7 @@ import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
 import { RowSettler } from '../engine/table/dependents.ts';
 import { explain } from '../engine/table/explain.ts';
+import type { Beside } from '../engine/table/left-behind.ts';
 import { PressureSolver } from '../engine/table/resolve.ts';
 import { rowNumbers } from '../engine/table/row-numbers.ts';
 import type { RowNumbers } from '../engine/table/row-numbers.ts';
@@ -15,16 +16,44 @@ import type { TableOptions } from '../engine/table/tabulate.ts';
 import { findFaults } from '../findings/index.ts';
 import type { Finding } from '../findings/finding.ts';
 import { compileNetwork } from '../network/compile.ts';
+import { hold } from '../network/hold.ts';
 import type { Network } from '../network/network.ts';
 import { kindOf } from '../parts/catalogue.ts';
+import { MOST_ROWS } from './limits.ts';
 import type { Conditions, Explanation } from './results.ts';
 
+export { MOST_ROWS } from './limits.ts';
+
 /** Dense arrays of a circuit that has passed the checks. Throws on a kind that the catalogue lacks, or a load case that it does not have. */
-export function networkOf(circuit: Circuit, conditions?: Pick<Conditions, 'loadCase'>): Network {
-  return compileNetwork(withLoadCase(circuit, conditions?.loadCase), (name) => {
+export function networkOf(circuit: Circuit, conditions?: Pick<Conditions, 'loadCase' | 'held'>): Network {
+  const net = compileNetwork(withLoadCase(circuit, conditions?.loadCase), (name) => {
     const kind = kindOf(name);
     if (!kind) throw new Error(`unknown part kind ${name}`);
     return kind;
+  });
+  return conditions?.held ? hold(net, heldIn(net, conditions)) : net;
+}
+
+/** Per input the position in which it is held; undefined = it is free. */
+export const heldIn = (net: Network, { held }: Pick<Conditions, 'held'>): (number | undefined)[] =>
+  net.inputs.map(({ part }) => held?.[net.parts[part]?.id ?? '']);
+
+/** The circuits one move of a held lever away. */
+export function besides(circuit: Circuit, conditions: Conditions): Beside[] {
+  if (!conditions.held) return [];
+  const { held: _, ...free } = conditions;
+  const net = networkOf(circuit, free);
+  const held = heldIn(net, conditions);
+  return net.inputs.flatMap(({ part, positions }, i) => {
+    const now = held[i];
+    if (now === undefined) return [];
+    return positions.flatMap((name, p): Beside[] => {
+      if (p === now) return [];
+      const moved = held.map((at, other) => (other === i ? p : at));
+      return [
+        { net: hold(net, moved), text: `${net.parts[part]?.label ?? ''} from ${name} to ${positions[now] ?? ''}` },
+      ];
+    });
   });
 }
 
@@ -56,8 +85,9 @@ export function explainRow(
   units: UnitSystem = 'metric',
 ): Explanation {
   const net = networkOf(circuit, conditions);
-  const answer = explain(net, pathConditions(net, conditions), row, units);
-  const positions = positionsOf(net, row);
+  const answer = explain(net, pathConditions(net, conditions), row, units, besides(circuit, conditions));
+  const held = heldIn(net, conditions);
+  const positions = positionsOf(net, row).map((position, i) => held[i] ?? position);
   const notes = answer.actuators.flatMap((actuator) => actuator.notes.map((note) => `${actuator.label}: ${note}`));
   return { row, positions, ...answer, notes };
 }
@@ -71,9 +101,6 @@ export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readon
   // Memory and hunting do not matter here: the figures are those of the setting that the row gives.
   return rows.map((row) => rowNumbers(solver, row, solver.solve(row, settler.at(row).setting)));
 }
-
-/** 3¹⁴ rows: what a table held in memory can list. */
-export const MOST_ROWS = 4_782_969;
 
 function refuseTooMany(net: Network): void {
   const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);

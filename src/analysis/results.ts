@@ -9,6 +9,8 @@ export interface Conditions {
   readonly places?: Readonly<Record<string, 'in' | 'out'>>;
   /** Id of one of the circuit's load cases; absent = the loads that the parts say. */
   readonly loadCase?: string;
+  /** Part id → position of a valve that stays there: combinations of the others alone. For panels too large to list. */
+  readonly held?: Readonly<Record<string, number>>;
 }
 
 export interface Request {

@@ -1,4 +1,5 @@
 import type { TrapAnswer } from './answers.ts';
+import type { Beside } from './left-behind.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
@@ -12,7 +13,7 @@ const CUT_OFF = LINE_CLASSES.indexOf('cut off');
 const FED = LINE_CLASSES.indexOf('fed');
 
 /** Every trapped line of the state with its reasons in words, and the moves that leave it behind. */
-export function explainTrapped(state: OneState): TrapAnswer[] {
+export function explainTrapped(state: OneState, besides: readonly Beside[] = []): TrapAnswer[] {
   const { net, edges, conditions, block } = state;
   const { classes } = lineOutcomes(net, edges, conditions, block);
   const standing = standingReasons(net, edges, conditions, block, (line) => classes[line]?.[CUT_OFF]);
@@ -22,7 +23,7 @@ export function explainTrapped(state: OneState): TrapAnswer[] {
   const runningClasses = conditions.pumpsRunning
     ? classes
     : lineOutcomes(net, edges, running.conditions, running.block).classes;
-  const moves = neighbours(running);
+  const moves = [...neighbours(running), ...heldNeighbours(running, besides)];
 
   return net.lines.slice(0, net.shown).flatMap((entry, line): TrapAnswer[] => {
     const reasons: { kind: TrapReason; text: string }[] = [];
@@ -77,6 +78,10 @@ function neighbours(state: OneState): { state: OneState; text: string }[] {
     });
   });
 }
+
+/** The same for levers that are held here. */
+const heldNeighbours = (state: OneState, besides: readonly Beside[]): { state: OneState; text: string }[] =>
+  besides.map(({ net, text }) => ({ state: solveOne(net, state.conditions, state.row, undefined, state.units), text }));
 
 function loadText(state: OneState, line: number): string {
   const pressing = state.net.actuators.filter(

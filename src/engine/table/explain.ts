@@ -13,6 +13,7 @@ import type { ActuatorAnswer, DependentReason } from './answers.ts';
 import type { PumpAnswer } from './answers.ts';
 import { explainTrapped } from './explain-trapped.ts';
 import type { TrapAnswer } from './answers.ts';
+import type { Beside } from './left-behind.ts';
 import { findWay, solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { enclosing, lineName, partId, partLabel, sideName, step, waySteps } from './reasons.ts';
@@ -29,12 +30,16 @@ export interface RowAnswer {
   readonly numbers: RowNumbers;
 }
 
-/** Everything one row says, in words, with the lines and parts to light for each link of the reason. */
+/**
+ * Everything one row says, in words, with the lines and parts to light for each link of the reason. `besides`: where
+ * levers are held, the circuits one move of a held lever away.
+ */
 export function explain(
   net: Network,
   conditions: PathConditions,
   row: number,
   units: UnitSystem = 'metric',
+  besides: readonly Beside[] = [],
 ): RowAnswer {
   const state = solveOne(net, conditions, row, undefined, units);
   const pressures = explainPressures(state);
@@ -45,7 +50,7 @@ export function explain(
       dependents.actuator(i, pressures.actuator(i, explainActuator(state, i, actuator))),
     ),
     pumps: net.pumps.map((pump, i) => dependents.pump(i, pressures.pump(i, explainPump(state, i, pump)))),
-    trapped: explainTrapped(state).filter((entry) => !pressures.flows(entry.line)),
+    trapped: explainTrapped(state, besides).filter((entry) => !pressures.flows(entry.line)),
     numbers: pressures.numbers,
   };
 }
