@@ -2,7 +2,8 @@ import type { UnitSystem } from '../base/units.ts';
 /** The only door of the app to the analysis: the same requests, answered on another thread. */
 import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
-import type { BleedAnswer } from '../analysis/bleed-results.ts';
+import type { BleedAnswer, PowerLossAnswer } from '../analysis/bleed-results.ts';
+import type { MovesAnswer, VentAnswer } from '../analysis/moves-results.ts';
 import type { Check } from '../analysis/check-results.ts';
 import type { CoilLogic } from '../analysis/coil-logic-results.ts';
 import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
@@ -12,15 +13,18 @@ import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import type { Holding, Question, Reply } from './messages.ts';
+import { startThread } from './thread.ts';
 
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
 export type { AskAnswer, FoldAnswer, FoldBy, FoldItem, FoldRow, Next } from '../analysis/results.ts';
 export type { Influence, InfluenceRow, SubCircuit } from '../analysis/results.ts';
-export type { BleedAnswer, BleedCaution, BleedLine, BleedStep } from '../analysis/bleed-results.ts';
+export type { BleedAnswer, BleedCaution, BleedLine, BleedStep, PowerLossAnswer } from '../analysis/bleed-results.ts';
+export type { LeverMove, MoveNote, MovesAnswer, MoveStage, VentAnswer } from '../analysis/moves-results.ts';
 export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
 export type * from '../analysis/coil-logic-results.ts';
 export type * from '../analysis/plan-results.ts';
+export { MOST_ROWS } from '../analysis/limits.ts';
 export { StateTable } from '../engine/table/state-table.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
@@ -60,6 +64,12 @@ export interface Analyst {
   readRule(circuit: Circuit, text: string): Job<readonly Problem[]>;
   /** How to let the pressure down once the pumps stop in this row (0-based). */
   bleed(circuit: Circuit, conditions: Conditions, row: number): Job<BleedAnswer>;
+  /** What a loss of power does in this row (0-based). */
+  powerLoss(circuit: Circuit, conditions: Conditions, row: number): Job<PowerLossAnswer>;
+  /** Every move of one lever from here, an entry of `positions` for each input. */
+  moves(circuit: Circuit, conditions: Conditions, positions: readonly number[], units: UnitSystem): Job<MovesAnswer>;
+  /** The fewest moves that open a line (its index in the table) to tank. */
+  vent(asked: VentQuestion): Job<Result<VentAnswer>>;
   /** A step plan played event by event, by its id; `conditions.loadCase` goes before its own. */
   plan(circuit: Circuit, conditions: Conditions, plan: string, progress: (share: number) => void): Job<PlanReport>;
   /** What a control has to do for a step plan. */
@@ -82,6 +92,14 @@ export interface Analyst {
   close(): void;
 }
 
+export interface VentQuestion {
+  readonly circuit: Circuit;
+  readonly conditions: Conditions;
+  readonly line: number;
+  readonly positions: readonly number[];
+  readonly units: UnitSystem;
+}
+
 /** What a question about the whole table is about. */
 export interface Asked {
   readonly circuit: Circuit;
@@ -95,6 +113,7 @@ export function createAnalyst(): Analyst {
   const words = new Thread();
   const long = new Thread();
   const whole = new Thread();
+  const moving = new Thread();
   const steps = new Thread();
   const share =
     (progress: (share: number) => void) =>
@@ -141,6 +160,24 @@ export function createAnalyst(): Analyst {
         () => {},
         (reply) => (reply.say === 'bleed' ? reply.plan : undefined),
       ),
+    powerLoss: (circuit, conditions, row) =>
+      moving.ask(
+        { ask: 'power-loss', circuit, conditions, row },
+        () => {},
+        (reply) => (reply.say === 'power-loss' ? reply.loss : undefined),
+      ),
+    moves: (circuit, conditions, positions, units) =>
+      moving.ask(
+        { ask: 'moves', circuit, conditions, positions, units },
+        () => {},
+        (reply) => (reply.say === 'moves' ? reply.moves : undefined),
+      ),
+    vent: (asked) =>
+      moving.ask(
+        { ask: 'vent', ...asked },
+        () => {},
+        (reply) => (reply.say === 'vent' ? reply.result : undefined),
+      ),
     plan: (circuit, conditions, plan, progress) =>
       steps.ask({ ask: 'plan', circuit, conditions, plan }, share(progress), (reply) =>
         reply.say === 'plan' ? reply.report : undefined,
@@ -185,6 +222,7 @@ export function createAnalyst(): Analyst {
     close: () => {
       steps.stop();
       whole.stop();
+      moving.stop();
       tables.stop();
       long.stop();
       words.stop();
@@ -267,7 +305,7 @@ class Thread {
   #running(): Worker {
     if (this.#worker) return this.#worker;
     this.#holds = undefined;
-    const worker = new Worker(new URL('./analysis.worker.ts', import.meta.url), { type: 'module' });
+    const worker = startThread();
     worker.onmessage = ({ data }: MessageEvent<Reply>) => this.#pending.get(data.id)?.settle(data);
     worker.onerror = (event) => {
       for (const { refuse } of this.#pending.values())

@@ -16,10 +16,18 @@ declare module 'vitest' {
   }
 }
 
+/** The test runner's own NODE_ENV would make another build than the one that ships. */
+async function buildToShip(configFile: string): Promise<void> {
+  const before = process.env['NODE_ENV'];
+  process.env['NODE_ENV'] = 'production';
+  await build({ configFile, logLevel: 'warn' });
+  process.env['NODE_ENV'] = before;
+}
+
 /** Builds the editor unless that has just been done, and serves it once for all browser tests. */
 export default async function setUp(project: TestProject): Promise<() => Promise<void>> {
   const configFile = fileURLToPath(new URL('../../vite.config.ts', import.meta.url));
-  if (!process.env['SPOOLTABLE_BUILT']) await build({ configFile, logLevel: 'warn' });
+  if (!process.env['SPOOLTABLE_BUILT']) await buildToShip(configFile);
   const server = await preview({ configFile, logLevel: 'error', preview: { host: '127.0.0.1', port: 0, open: false } });
   const address = server.httpServer.address();
   if (address === null || typeof address === 'string') throw new Error('The editor is not served on a port.');

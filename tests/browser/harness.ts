@@ -20,6 +20,8 @@ import { CHROMIUM_FLAGS } from './chromium.ts';
 export interface OpenOptions extends BrowserContextOptions {
   /** Below the address of the editor, e.g. `?file=…`. */
   readonly path?: string;
+  /** Where else the editor is, with a slash at its end: another server, or a folder on disk (`file://…/`). */
+  readonly address?: string;
   /** Runs in the page before anything of the editor does. */
   readonly before?: string;
 }
@@ -29,14 +31,26 @@ const open = new Map<Page, string[]>();
 
 export async function openEditor(options: OpenOptions = {}): Promise<Page> {
   browser ??= chromium.launch({ executablePath: inject('chromium'), args: CHROMIUM_FLAGS });
-  const { path = '', before, ...context } = options;
-  const page = await (
-    await (await browser).newContext({ viewport: { width: 1440, height: 900 }, ...context })
-  ).newPage();
+  const { path = '', before, address = inject('editor'), ...context } = options;
+  const page =
+    await // Only the tests of it have the program kept by the browser: all others would fetch every file once more.
+    (
+      await (await browser).newContext({ viewport: { width: 1440, height: 900 }, serviceWorkers: 'block', ...context })
+    ).newPage();
+  watch(page, address);
+  if (before !== undefined) await page.addInitScript(before);
+  await page.goto(address + path);
+  return page;
+}
+
+/** From now on the page's complaints count; also for windows that a test opens by itself, in the context of another. */
+export function watch(page: Page, address: string = inject('editor')): void {
   const said: string[] = [];
   open.set(page, said);
   page.on('console', (message) => {
-    if (message.type() === 'error' || message.type() === 'warning') said.push(`${message.type()}: ${message.text()}`);
+    const text = message.text();
+    if (text.includes('Service Worker registration blocked')) return;
+    if (message.type() === 'error' || message.type() === 'warning') said.push(`${message.type()}: ${text}`);
   });
   page.on('pageerror', (error) => said.push(`not caught: ${error.message}`));
   page.on('requestfailed', (request) => {
@@ -47,11 +61,8 @@ export async function openEditor(options: OpenOptions = {}): Promise<Page> {
   });
   page.on('request', (request) => {
     const url = request.url();
-    if (!url.startsWith(inject('editor')) && !/^(data|blob):/.test(url)) said.push(`left this machine: ${url}`);
+    if (!url.startsWith(address) && !/^(data|blob):/.test(url)) said.push(`left this machine: ${url}`);
   });
-  if (before !== undefined) await page.addInitScript(before);
-  await page.goto(inject('editor') + path);
-  return page;
 }
 
 /** What the page complained about so far; taking it means that the test expects it. */
@@ -68,7 +79,7 @@ export async function shot(page: Page, name: string): Promise<string> {
 
 afterEach(async () => {
   const said = [...open.values()].flat();
-  await Promise.all([...open.keys()].map((page) => page.context().close()));
+  await Promise.all([...new Set([...open.keys()].map((page) => page.context()))].map((context) => context.close()));
   open.clear();
   expect(said, 'the page complained').toEqual([]);
 });
