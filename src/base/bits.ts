@@ -72,19 +72,6 @@ export function* members(set: BitSet): Generator<number> {
   }
 }
 
-/** `out[i] = set[i + by]` for every row; rows from beyond the ends read 0. */
-export function shiftSet(set: BitSet, by: number, size: number): BitSet {
-  const out = new Uint32Array(set.length);
-  const words = by >> 5;
-  const bits = by & 31;
-  for (let i = 0; i < out.length; i++) {
-    const low = set[i + words] ?? 0;
-    const high = set[i + words + 1] ?? 0;
-    out[i] = bits === 0 ? low : (low >>> bits) | (high << (32 - bits));
-  }
-  return trim(out, size);
-}
-
 /** Set bits `from` … `to - 1`. */
 export function fillRange(set: BitSet, from: number, to: number): void {
   const first = from >>> 5;

@@ -1,11 +1,10 @@
-import { isEmpty } from '../base/bits.ts';
 import { unlimited } from '../base/budget.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import { tabulate } from '../engine/table/tabulate.ts';
 import type { ActuatorVerdict } from '../engine/table/words.ts';
 import { asInputs } from '../network/dependents.ts';
 import type { Network } from '../network/network.ts';
-import { actuatorRows, INWARD, OUTWARD } from './evidence.ts';
+import { actuatorEver, INWARD, OUTWARD } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 /** An actuator that no combination moves, or that can go one way but not back. */
@@ -15,7 +14,7 @@ export const actuatorReach: Rule = ({ net, table: given }) => {
     // A roller trips only at a stop, which this table does not show.
     const tables = elsewhere ? [given, elsewhere] : [given];
     const some = (...verdicts: ActuatorVerdict[]): boolean =>
-      tables.some((table) => !isEmpty(actuatorRows(table, i, ...verdicts)));
+      tables.some((table) => actuatorEver(table, i, ...verdicts));
     if (some('rests on pressure', 'undetermined')) return [];
     const out = some(...OUTWARD);
     const inward = some(...INWARD);

@@ -1,4 +1,5 @@
 import { add, emptySet, isEmpty } from '../base/bits.ts';
+import type { BitSet } from '../base/bits.ts';
 import type { NetRating } from '../network/network.ts';
 import { sayRows, witnesses } from './evidence.ts';
 import type { Evidence, Finding } from './finding.ts';
@@ -11,7 +12,9 @@ const bar = (pressure: number): string => `${Math.round(pressure / 1e5)} bar`;
 interface Beyond {
   readonly rating: NetRating;
   readonly highest: number;
-  readonly rows: Uint32Array;
+  readonly rows: BitSet;
+  /** Rows whose pressures were looked at. */
+  readonly looked: number;
 }
 
 /** Ratings that the pressure of their line passes, one for each part: the one passed by most. */
@@ -21,7 +24,7 @@ export function beyond(
 ): Beyond[] {
   const { net, table } = evidence;
   if (net.ratings.length === 0) return [];
-  const { rows, of, source } = pressuresOf(evidence);
+  const { rows, of, looked, source } = pressuresOf(evidence);
   const byPart = new Map<number, Beyond>();
   for (const rating of net.ratings) {
     const found = emptySet(table.count);
@@ -34,19 +37,23 @@ export function beyond(
     });
     const before = byPart.get(rating.part);
     if (!isEmpty(found) && (before === undefined || highest > before.highest))
-      byPart.set(rating.part, { rating, highest, rows: found });
+      byPart.set(rating.part, { rating, highest, rows: found, looked });
   }
   return [...byPart.values()];
 }
 
 export const ratingFinding = (
-  { net }: Evidence,
-  { rating, highest, rows }: Beyond,
+  { net, table }: Evidence,
+  { rating, highest, rows, looked }: Beyond,
   words: { rule: string; title: (label: string) => string; why: string; remedy: string },
 ): Finding => {
   const part = net.parts[rating.part];
   const seen = witnesses(rows);
-  const stands = `${part?.label ?? ''}.${rating.port} stands at ${bar(highest)} (${sayRows(seen)}), and is built for ${bar(rating.pressure)}`;
+  const sample =
+    looked < table.count
+      ? `; ${looked} of ${table.count.toLocaleString('en')} rows were looked at, others may stand higher`
+      : '';
+  const stands = `${part?.label ?? ''}.${rating.port} stands at ${bar(highest)} (${sayRows(seen)}${sample}), and is built for ${bar(rating.pressure)}`;
   return {
     rule: words.rule,
     level: rating.assumed ? 'caution' : 'danger',

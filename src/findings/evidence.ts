@@ -1,4 +1,4 @@
-import { countBits, emptySet, members, orInto } from '../base/bits.ts';
+import { countBits, emptySet, isEmpty, members, orInto } from '../base/bits.ts';
 import type { BitSet } from '../base/bits.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
 import { ACTUATOR_VERDICTS, LINE_CLASSES, PUMP_VERDICTS } from '../engine/table/words.ts';
@@ -23,11 +23,30 @@ export const lineRows = (table: StateTable, line: number, ...classes: LineClass[
     classes.map((name) => table.data.linePlanes[line]?.[LINE_CLASSES.indexOf(name)]),
   );
 
+/** Whether any row has one of these: nothing is merged for it. */
+export const actuatorEver = (table: StateTable, actuator: number, ...verdicts: ActuatorVerdict[]): boolean =>
+  verdicts.some((verdict) => some(table.data.actuatorPlanes[actuator]?.[ACTUATOR_VERDICTS.indexOf(verdict)]));
+
+export const lineEver = (table: StateTable, line: number, ...classes: LineClass[]): boolean =>
+  classes.some((name) => some(table.data.linePlanes[line]?.[LINE_CLASSES.indexOf(name)]));
+
+const some = (plane: BitSet | undefined): boolean => plane !== undefined && !isEmpty(plane);
+
 function merge(table: StateTable, planes: readonly (BitSet | undefined)[]): BitSet {
   const all = emptySet(table.count);
   for (const plane of planes) if (plane) orInto(all, plane);
   return all;
 }
+
+/** Up to `wanted` different indexes below `length`, rising, by the golden ratio: no lever is in step with them. */
+export function spreadOver(length: number, wanted: number): number[] {
+  if (wanted >= length) return Array.from({ length }, (_, i) => i);
+  const out = new Set<number>();
+  for (let i = 1; out.size < wanted && i <= 4 * wanted; i++) out.add(Math.floor(((i * GOLDEN) % 1) * length));
+  return [...out].sort((a, b) => a - b);
+}
+
+const GOLDEN = (Math.sqrt(5) - 1) / 2;
 
 /** A few rows as witnesses, and how many there are. */
 export function witnesses(rows: BitSet): { rows: number[]; rowCount: number } {

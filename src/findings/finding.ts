@@ -14,6 +14,8 @@ export interface Finding {
   /** 0-based rows that show it, a few at most, and how many there are in all. */
   readonly rows: readonly number[];
   readonly rowCount: number;
+  /** Where rows have no numbers: position of each input in a combination that shows it. */
+  readonly example?: readonly number[];
 }
 
 /** What a finding may look at. The table is the one with the pumps running. */

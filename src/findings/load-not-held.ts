@@ -1,5 +1,3 @@
-import { add, emptySet } from '../base/bits.ts';
-import { witnesses } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 const MOVED = ['moved in by load', 'moved out by load', 'driven A→B by load', 'driven B→A by load', 'floats'];
@@ -11,8 +9,6 @@ export const loadNotHeld: Rule = ({ net, table }) => {
     const { push } = actuator;
     if (push.by !== 'load' || push.way === 'none' || !MOVED.includes(table.actuator(i, rest))) return [];
     const part = net.parts[actuator.part];
-    const rows = emptySet(table.count);
-    add(rows, rest);
     return [
       {
         rule: 'load-not-held',
@@ -23,7 +19,8 @@ export const loadNotHeld: Rule = ({ net, table }) => {
           'Usual remedy: a lock check or counterbalance valve on the loaded side, close to the cylinder. Prop the load mechanically before working under it.',
         parts: part ? [part.id] : [],
         lines: [],
-        ...witnesses(rows),
+        rows: [rest],
+        rowCount: 1,
       },
     ];
   });

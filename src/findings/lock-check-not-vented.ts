@@ -1,12 +1,8 @@
-import { add, emptySet } from '../base/bits.ts';
-import { witnesses } from './evidence.ts';
 import type { Rule } from './finding.ts';
 
 /** A lock check closes surely only when its pilot line can drain at rest. */
 export const lockCheckNotVented: Rule = ({ net, table }) => {
   const rest = table.restRow();
-  const rows = emptySet(table.count);
-  add(rows, rest);
   const byPart = new Map<number, number[]>();
   for (const path of net.paths) {
     if (path.pilot < 0) continue;
@@ -25,7 +21,8 @@ export const lockCheckNotVented: Rule = ({ net, table }) => {
       remedy: 'Usual remedy: a float centre (A and B to tank, P shut) on the valve before the lock check.',
       parts: part ? [part.id] : [],
       lines,
-      ...witnesses(rows),
+      rows: [rest],
+      rowCount: 1,
     };
   });
 };

@@ -1,15 +1,11 @@
-import { add, emptySet, has } from '../base/bits.ts';
-import { pumpRows, witnesses } from './evidence.ts';
 import type { Rule } from './finding.ts';
 
 /** The whole flow over the relief valve while nobody asks for anything: heat, and nothing for it. */
 export const overReliefAtRest: Rule = ({ net, table }) => {
   const rest = table.restRow();
   return net.pumps.flatMap((pump, i) => {
-    if (!has(pumpRows(table, i, 'over relief'), rest)) return [];
+    if (table.pump(i, rest) !== 'over relief') return [];
     const part = net.parts[pump.part];
-    const rows = emptySet(table.count);
-    add(rows, rest);
     return [
       {
         rule: 'over-relief-at-rest',
@@ -19,7 +15,8 @@ export const overReliefAtRest: Rule = ({ net, table }) => {
         remedy: 'Usual ways out: a bypass centre, an unloading valve, or a pressure-compensated pump.',
         parts: part ? [part.id] : [],
         lines: [],
-        ...witnesses(rows),
+        rows: [rest],
+        rowCount: 1,
       },
     ];
   });

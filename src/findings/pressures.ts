@@ -1,13 +1,14 @@
-import { add, emptySet, has, members } from '../base/bits.ts';
+import { has, members } from '../base/bits.ts';
 import type { Network } from '../network/network.ts';
 import { PressureSolver } from '../engine/table/resolve.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
+import { spreadOver } from './evidence.ts';
 import type { Evidence } from './finding.ts';
 
 /** Rows of a table that is looked at as a whole; each costs a solve. */
 const ALL_ROWS = 1000;
 /** Rows that a longer one is looked at in. */
-const SOME_ROWS = 240;
+const SOME_ROWS = 160;
 
 /** Steady pressures of a table's rows, with the pumps running and every actuator between its stops. */
 export interface Pressures {
@@ -32,7 +33,7 @@ export function pressuresOf({ net, table }: Evidence): Pressures {
   const looked =
     table.count <= ALL_ROWS ? Array.from({ length: table.count }, (_, row) => row) : telling(table, SOME_ROWS);
   for (const row of looked) {
-    const { result } = solver.solve(row, false);
+    const { result } = solver.solve(row);
     if (result.status !== 'solved') continue;
     rows.push(row);
     of.push(Float64Array.from(net.lines, (_, line) => solver.pressure(result, line)));
@@ -43,17 +44,14 @@ export function pressuresOf({ net, table }: Evidence): Pressures {
 }
 
 /**
- * Rows of a long table in which a pressure is likely to be high, in rising order: rest, every single lever moved
- * from it, a row for each verdict and line class that occurs at all, two levers moved from rest, and others spread
- * over the table.
+ * Rows of a long table in which a pressure is likely to be high: rest, every single lever moved from it, a row for
+ * each verdict and line class that occurs at all, two levers moved from rest, and some others spread over the table.
+ * Neighbours follow each other, since each solve starts from the one before.
  */
 export function telling(table: StateTable, most: number): number[] {
-  const taken = emptySet(table.count);
-  let count = 0;
+  const taken = new Set<number>();
   const take = (row: number): void => {
-    if (count >= most || has(taken, row)) return;
-    add(taken, row);
-    count += 1;
+    if (taken.size < most) taken.add(row);
   };
   const { data } = table;
   const rest = table.positionsOf(table.restRow());
@@ -66,7 +64,7 @@ export function telling(table: StateTable, most: number): number[] {
   for (const move of moves) take(moved(move));
   for (const list of [data.actuatorPlanes, data.pumpPlanes, data.linePlanes]) {
     for (const plane of list.flat()) {
-      if (!plane || [...members(taken)].some((row) => has(plane, row))) continue;
+      if (!plane || [...taken].some((row) => has(plane, row))) continue;
       for (const row of members(plane)) {
         take(row);
         break;
@@ -76,21 +74,11 @@ export function telling(table: StateTable, most: number): number[] {
   const pairs = moves.flatMap((one, i) =>
     moves.slice(i + 1).flatMap((two) => (two.input === one.input ? [] : [[one, two] as const])),
   );
-  const room = Math.floor((most - count) / 2);
-  for (const k of spread(pairs.length, room)) take(moved(...(pairs[k] ?? [])));
-  for (const row of spread(table.count, most - count)) take(row);
-  return [...members(taken)];
+  const room = Math.floor(((most - taken.size) * 3) / 4);
+  for (const k of spreadOver(pairs.length, room)) take(moved(...(pairs[k] ?? [])));
+  for (const row of spreadOver(table.count, most - taken.size)) take(row);
+  return [...taken];
 }
-
-/** Up to `wanted` different indexes below `length`, in steps of the golden ratio: no lever is in step with them. */
-function spread(length: number, wanted: number): number[] {
-  if (wanted >= length) return Array.from({ length }, (_, i) => i);
-  const out = new Set<number>();
-  for (let i = 1; out.size < wanted && i <= 4 * wanted; i++) out.add(Math.floor(((i * GOLDEN) % 1) * length));
-  return [...out];
-}
-
-const GOLDEN = (Math.sqrt(5) - 1) / 2;
 
 /** What relief valves, compensators and stores allow, with the rise of a relief valve at the flow of all pumps. */
 function highestSource(net: Network): number {

@@ -6,6 +6,7 @@ import type { Finding, Rule } from './finding.ts';
 
 /** A two-stage valve that is commanded, and whose main spool stays at rest for want of pilot pressure. */
 export const twoStageNoPilot: Rule = ({ net, table }) => {
+  if (net.dependents.length === 0) return [];
   const radices = net.inputs.map((input) => input.positions.length);
   const unloaded = net.pumps.map((_, i) => pumpRows(table, i, 'unloaded'));
   return net.dependents.flatMap((valve, d): Finding[] => {

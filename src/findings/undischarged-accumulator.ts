@@ -1,11 +1,10 @@
-import { isEmpty } from '../base/bits.ts';
-import { lineRows } from './evidence.ts';
+import { lineEver } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 /** ISO 4413 (paraphrased): an accumulator must vent by itself or be isolated positively, else it carries a warning. */
 export const undischargedAccumulator: Rule = ({ net, table }) =>
   net.accumulators.flatMap((store): Finding[] => {
-    if (store.line >= net.shown || !isEmpty(lineRows(table, store.line, 'flows to tank', 'vented'))) return [];
+    if (store.line >= net.shown || lineEver(table, store.line, 'flows to tank', 'vented')) return [];
     const part = net.parts[store.part];
     return [
       {

@@ -1,12 +1,11 @@
-import { isEmpty } from '../base/bits.ts';
-import { lineRows, witnesses } from './evidence.ts';
+import { lineEver, lineRows, witnesses } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 /** A line that can be cut off under pressure and that no lever position opens to tank. */
 export const unventableLine: Rule = ({ net, table }) => {
   const lines = net.lines.slice(0, net.shown).flatMap((_, line) => {
-    const cutOff = lineRows(table, line, 'cut off');
-    return !isEmpty(cutOff) && isEmpty(lineRows(table, line, 'vented', 'flows to tank')) ? [{ line, cutOff }] : [];
+    if (!lineEver(table, line, 'cut off') || lineEver(table, line, 'vented', 'flows to tank')) return [];
+    return [{ line, cutOff: lineRows(table, line, 'cut off') }];
   });
   return lines.map(({ line, cutOff }): Finding => {
     const name = net.lines[line]?.name ?? '';

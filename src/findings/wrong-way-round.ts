@@ -1,5 +1,4 @@
-import { isEmpty } from '../base/bits.ts';
-import { lineRows, witnesses } from './evidence.ts';
+import { lineEver, lineRows, witnesses } from './evidence.ts';
 import type { Finding, Rule } from './finding.ts';
 
 /**
@@ -13,9 +12,8 @@ export const wrongWayRound: Rule = ({ net, table }) =>
     const base = { rule: 'wrong-way-round', level: 'caution' as const, parts: [part.id], lines: [path.from, path.to] };
     if (part.kind === 'check-valve') {
       if (net.lines[path.from]?.tank) return [];
-      const before = lineRows(table, path.from, 'fed', 'flows to tank', 'vented', 'carries displaced oil');
-      const behind = lineRows(table, path.to, 'fed');
-      if (!isEmpty(before) || isEmpty(behind)) return [];
+      if (lineEver(table, path.from, 'fed', 'flows to tank', 'vented', 'carries displaced oil')) return [];
+      if (!lineEver(table, path.to, 'fed')) return [];
       // A line that a cylinder stands on may be emptied through it by its load.
       if (net.actuators.some(({ a, b }) => a === path.from || b === path.from)) return [];
       return [
@@ -24,7 +22,7 @@ export const wrongWayRound: Rule = ({ net, table }) =>
           title: `${part.label} stands the wrong way round`,
           what: `It lets oil on from ${net.lines[path.from]?.name ?? ''}, into which nothing ever leads, and holds back the oil of ${net.lines[path.to]?.name ?? ''}, which is fed. So nothing passes it in any row.`,
           remedy: 'Turn it round: oil passes from A to B.',
-          ...witnesses(behind),
+          ...witnesses(lineRows(table, path.to, 'fed')),
         },
       ];
     }
