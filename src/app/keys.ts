@@ -17,6 +17,8 @@ const PANELS: Readonly<Record<string, PanelId>> = {
   u: 'rules',
   b: 'bleed',
   v: 'influence',
+  m: 'moves',
+  y: 'loss',
   '?': 'keys',
 };
 

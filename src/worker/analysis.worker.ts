@@ -1,12 +1,14 @@
 /** Answers one question after another on its own thread. */
 import { explainRow, findings, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
 import { askTable, continueText } from '../analysis/ask.ts';
-import { bleedPlan } from '../analysis/bleed.ts';
+import { bleedPlan, powerLoss } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
 import { coilLogic } from '../analysis/coil-logic.ts';
 import { checkPlan } from '../analysis/plan.ts';
 import { draftPlan } from '../analysis/plan-draft.ts';
+import { movesOf } from '../analysis/moves.ts';
 import type { Conditions } from '../analysis/results.ts';
+import { ventLine } from '../analysis/vent-line.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -65,6 +67,17 @@ function answer(question: Question): Reply {
       return { id, say: 'continue', next: continueText(circuit, question.text, question.as) };
     case 'bleed':
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
+    case 'power-loss':
+      return { id, say: 'power-loss', loss: powerLoss(circuit, conditions, question.row) };
+    case 'moves': {
+      const { positions, units } = question;
+      return { id, say: 'moves', moves: movesOf(circuit, conditions, positions, { budget: tell(id), units }) };
+    }
+    case 'vent': {
+      const { line, positions, units } = question;
+      const options = { budget: tell(id), units };
+      return { id, say: 'vent', result: ventLine(circuit, conditions, line, positions, options) };
+    }
     case 'plan':
       return { id, say: 'plan', report: checkPlan(circuit, question.plan, conditions, tell(id)) };
     case 'coil-logic':

@@ -1,7 +1,8 @@
 import type { UnitSystem } from '../base/units.ts';
 import type { AskAnswer, FoldAnswer, FoldBy, Influence, Next } from '../analysis/results.ts';
 import type { Conditions, Explanation, Finding, RowNumbers } from '../analysis/results.ts';
-import type { BleedAnswer } from '../analysis/bleed-results.ts';
+import type { BleedAnswer, PowerLossAnswer } from '../analysis/bleed-results.ts';
+import type { MovesAnswer, VentAnswer } from '../analysis/moves-results.ts';
 import type { Check } from '../analysis/check-results.ts';
 import type { CoilLogic } from '../analysis/coil-logic-results.ts';
 import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
@@ -32,6 +33,30 @@ export type Question =
       readonly circuit: Circuit;
       readonly conditions: Conditions;
       readonly row: number;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'power-loss';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly row: number;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'moves';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly positions: readonly number[];
+      readonly units: UnitSystem;
+    }
+  | {
+      readonly id: number;
+      readonly ask: 'vent';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly line: number;
+      readonly positions: readonly number[];
+      readonly units: UnitSystem;
     }
   /** The three of them answer from the table that was held out, if it is of the same question. */
   | {
@@ -105,6 +130,9 @@ export type Reply =
   | { readonly id: number; readonly say: 'continue'; readonly next: readonly Next[] }
   | { readonly id: number; readonly say: 'rule-read'; readonly problems: readonly Problem[] }
   | { readonly id: number; readonly say: 'bleed'; readonly plan: BleedAnswer }
+  | { readonly id: number; readonly say: 'power-loss'; readonly loss: PowerLossAnswer }
+  | { readonly id: number; readonly say: 'moves'; readonly moves: MovesAnswer }
+  | { readonly id: number; readonly say: 'vent'; readonly result: Result<VentAnswer> }
   | { readonly id: number; readonly say: 'plan'; readonly report: PlanReport }
   | { readonly id: number; readonly say: 'coil-logic'; readonly result: Result<CoilLogic> }
   | { readonly id: number; readonly say: 'draft-plan'; readonly result: Result<PlanDraft> }

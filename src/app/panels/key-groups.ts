@@ -36,6 +36,8 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['F6', 'Next band or panel; with Shift, the one before'],
     ['W L F E', 'Why, lines, findings, settings'],
     ['O U B', 'Conditions, rules, bleed-down'],
+    ['M', 'Moves of one lever, also on the way, and which vent a line'],
+    ['Y', 'Loss of power'],
     ['Q', 'Ask the table: rows in which something holds'],
     ['V', 'Influence: which lever matters to what'],
     ['?', 'This panel'],

@@ -2,7 +2,18 @@ import type { UnitSystem } from '../../base/units.ts';
 import { recall, remember } from './remembered.ts';
 
 export type ThemeChoice = 'system' | 'light' | 'dark';
-export type PanelId = 'why' | 'legend' | 'findings' | 'settings' | 'keys' | 'conditions' | 'rules' | 'bleed' | 'influence';
+export type PanelId =
+  | 'why'
+  | 'legend'
+  | 'findings'
+  | 'settings'
+  | 'keys'
+  | 'conditions'
+  | 'rules'
+  | 'bleed'
+  | 'influence'
+  | 'moves'
+  | 'loss';
 export type Page = 'sheet' | 'table';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -34,6 +45,8 @@ class View {
     rules: false,
     bleed: false,
     influence: false,
+    moves: false,
+    loss: false,
   });
 
   /** Panels from the lowest to the one on top. */
