@@ -1,4 +1,5 @@
 import { editor } from './state/editor.svelte.ts';
+import { plans } from './state/plans.svelte.ts';
 import { session } from './state/session.svelte.ts';
 import { asking } from './table/asking.svelte.ts';
 import { view } from './state/view.svelte.ts';
@@ -83,6 +84,8 @@ function plain(event: KeyboardEvent): boolean {
   else if (key === 'q' || key === 'Q') asking.on = true;
   else if (key === '[') session.goToRow(session.row - 1);
   else if (key === ']') session.goToRow(session.row + 1);
+  else if (key === 'h' || key === 'H') view.showLower(view.lower === 'plans' ? 'table' : 'plans');
+  else if (key === ',' || key === ';') plans.showNext(key === ',' ? -1 : 1);
   else if (key === 'r' || key === 'R') session.letGo();
   else if (key === 'p' || key === 'P') session.setPumps(session.conditions.pumps === 'running' ? 'stopped' : 'running');
   else return false;

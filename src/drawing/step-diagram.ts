@@ -41,6 +41,39 @@ export interface Diagram {
   readonly primitives: readonly Primitive[];
 }
 
+/** A diagram of a plan, and where its curves stand. */
+export interface StepDiagram extends Diagram {
+  readonly plot: Box;
+}
+
+/** Where a moment of a step stands in the plot, in modules. */
+export function momentX({ steps }: StepChart, kind: DiagramKind, plot: Box, step: number, time: number): number {
+  if (kind === 'time') {
+    const total = steps.at(-1)?.end ?? 0;
+    return plot.x + (total > 0 ? (time / total) * plot.width : 0);
+  }
+  const { start = 0, end = 0 } = steps[step] ?? {};
+  const share = end > start ? Math.min(1, Math.max(0, (time - start) / (end - start))) : 0;
+  return plot.x + ((step + share) * plot.width) / Math.max(1, steps.length);
+}
+
+/** The step and time at a place of the plot; what lies beside it is its nearest edge. */
+export function momentAtX(
+  { steps }: StepChart,
+  kind: DiagramKind,
+  plot: Box,
+  x: number,
+): { readonly step: number; readonly time: number } {
+  const share = Math.min(1, Math.max(0, plot.width > 0 ? (x - plot.x) / plot.width : 0));
+  if (kind === 'time') {
+    const time = share * (steps.at(-1)?.end ?? 0);
+    return { step: Math.max(0, steps.findLastIndex(({ start }) => start <= time)), time };
+  }
+  const step = Math.max(0, Math.min(steps.length - 1, Math.floor(share * steps.length)));
+  const { start = 0, end = 0 } = steps[step] ?? {};
+  return { step, time: start + (share * steps.length - step) * (end - start) };
+}
+
 const TEXT = 1.5;
 const SMALL = 1.2;
 const [MOST_LABEL, LEAST_STEP, MOST_STEP, TIME_WIDTH, SCALE_ROOM] = [24, 7, 13, 88, 7];
@@ -54,7 +87,7 @@ const STEPS_WIDTH = 96;
  * actuator, thin lines from the motion that ends a step to the one it starts, pressures below, and bars while coils
  * are on.
  */
-export function stepDiagram(chart: StepChart, kind: DiagramKind): Diagram {
+export function stepDiagram(chart: StepChart, kind: DiagramKind): StepDiagram {
   return new Layout(chart, kind).draw();
 }
 
@@ -76,7 +109,7 @@ class Layout {
     this.#width = kind === 'time' ? TIME_WIDTH : count * Math.min(MOST_STEP, Math.max(LEAST_STEP, STEPS_WIDTH / count));
   }
 
-  draw(): Diagram {
+  draw(): StepDiagram {
     const { title, steps, actuators, pressures, coils } = this.#chart;
     this.#text({ x: 0, y: 0 }, title, 1.9, 'start', 600);
     let y = 2.2;
@@ -102,6 +135,7 @@ class Layout {
       this.#coil(coil.label, coil.spans, y);
       y += ROW.coil;
     }
+    const plot = { x: this.#left, y: top, width: this.#width, height: y + 0.3 - top };
     this.#boundaries(top, y + 0.3);
     this.#signals(rows);
     y = this.#axis(y + 0.3);
@@ -113,15 +147,13 @@ class Layout {
       title,
       bounds: { x: 0, y: -1.9, width: this.#left + this.#width + 3, height: y + 3 },
       primitives: this.#out,
+      plot,
     };
   }
 
   /** Where a moment of a step stands. */
   #x(step: number, time: number): number {
-    if (this.#kind === 'time') return this.#left + (this.#total > 0 ? (time / this.#total) * this.#width : 0);
-    const { start = 0, end = 0 } = this.#chart.steps[step] ?? {};
-    const share = end > start ? Math.min(1, Math.max(0, (time - start) / (end - start))) : 0;
-    return this.#left + ((step + share) * this.#width) / Math.max(1, this.#chart.steps.length);
+    return momentX(this.#chart, this.#kind, { x: this.#left, y: 0, width: this.#width, height: 0 }, step, time);
   }
 
   /** Where a span of a step ends; a step without any time still has its width in a step diagram. */

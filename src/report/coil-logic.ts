@@ -9,7 +9,7 @@ export interface CoilLogicSource {
   readonly logic: readonly CoilLogic[];
 }
 
-const CAUTION =
+export const COIL_LOGIC_CAUTION =
   'Caution: conditions of a step plan are no safety functions. Have them reviewed by a qualified person against the documents of the machine and the local codes.';
 
 /** For each plan the steps, the condition of every coil, what needs a memory, groups and interlocks; a line at a time. */
@@ -72,7 +72,7 @@ function* lines(circuit: string, logic: CoilLogic): Generator<string> {
   }
   yield '';
   yield 'A sensor counts as on only while its actuator stands at its place.';
-  yield CAUTION;
+  yield COIL_LOGIC_CAUTION;
 }
 
 function* groupLines({ groups, groupProblems }: CoilLogic): Generator<string> {

@@ -16,7 +16,7 @@ export interface PlanSource {
 }
 
 const LEVELS = { fault: 'Fault', caution: 'Caution', note: 'Note' } as const;
-const LOSS_CAUTION =
+export const LOSS_CAUTION =
   'Stored energy stays after a stop: before work on the machine follow its documents and the local rules, and let qualified people do it.';
 
 /** Every plan as a table by step, its problems in words and what a loss of power does; a line at a time. */

@@ -28,6 +28,16 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['P', 'Pumps running or stopped'],
   ),
   group(
+    'Step plans',
+    ['H', 'Step plans or state table below the bench'],
+    [', ;', 'Event before, event after: levers, sheet and diagram go along'],
+    ['← → ↑ ↓', 'In the coil chart: from cell to cell; Space switches'],
+    ['Alt ↑ ↓', 'Move the step'],
+    ['Ctrl Enter', 'Insert a step after this one'],
+    ['Ctrl Shift D', 'Duplicate the step'],
+    ['Del', 'On the number of a step: delete it'],
+  ),
+  group(
     'Everywhere',
     ['Ctrl Z', 'Undo'],
     ['Ctrl Shift Z', 'Redo'],

@@ -12,9 +12,16 @@ export interface LinePressure {
   readonly assumed: boolean;
 }
 
-/** Pressures of the current row that can be worked out and are worth saying. */
+/** Pressures of the moment on show, or of the current row, that can be worked out and are worth saying. */
 export function linePressures(assumed: Assumed): LinePressure[] {
-  const { table, row } = session;
+  const { table, row, moment } = session;
+  if (table && moment) {
+    return table.data.lines.flatMap(({ name }, line) => {
+      const pressure = moment.pressures.get(name) ?? 0;
+      if (!(pressure >= NEAR_NOTHING)) return [];
+      return [{ line, text: sayPressure(pressure, view.units), assumed: lineAssumed(assumed, table, line, row) }];
+    });
+  }
   const numbers = figures.current;
   if (!table || numbers?.status !== 'solved') return [];
   return table.data.lines.flatMap((_, line) => {

@@ -1,11 +1,12 @@
 import type { Circuit } from '../../circuit/model.ts';
 import type { Figure } from '../../drawing/labels.ts';
 import type { Look } from '../../parts/contract.ts';
-import type { ActuatorVerdict, PumpVerdict } from '../../worker/client.ts';
+import type { ActuatorVerdict, PumpVerdict, StateTable } from '../../worker/client.ts';
 import { speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
 import { sayPump, saySpeed } from '../state/figure-texts.ts';
 import { figures } from '../state/figures.svelte.ts';
+import type { Moment } from '../state/moment.ts';
 import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 
@@ -63,5 +64,57 @@ export function partStates(circuit: Circuit, assumed: Assumed): Map<string, Part
     const figure = pressure === undefined ? undefined : { text: pressure, assumed: assumed.anywhere };
     states.set(part, { pump: table.pump(i, row), note: table.pump(i, row), ...(figure && { figure }) });
   });
+  if (session.moment) atMoment(states, session.moment, table, assumed);
   return states;
+}
+
+/** A moment of a plan has the last word on where things stand and how fast they go. */
+function atMoment(
+  states: Map<string, PartState>,
+  { strokes, speeds, positions }: Moment,
+  table: StateTable | undefined,
+  assumed: Assumed,
+): void {
+  for (const [part, { index, name }] of positions) states.set(part, { position: index, note: name });
+  table?.data.actuators.forEach(({ part, motion }) => {
+    const before = states.get(part);
+    if (!before) return;
+    const { figure: _, ...state } = before;
+    const speed = speeds.get(part) ?? 0;
+    const verdict = verdictAt(before.verdict, speed, motion, strokes.get(part));
+    const said = view.sheetFigures ? saySpeed(speed, motion, view.units) : undefined;
+    const stroke = strokes.get(part);
+    states.set(part, {
+      ...state,
+      verdict,
+      note: verdict,
+      ...(stroke !== undefined && { stroke }),
+      ...(said !== undefined && { figure: { text: said, assumed: assumed.anywhere } }),
+    });
+  });
+}
+
+const OUTWARD: readonly ActuatorVerdict[] = ['extends', 'moved out by load', 'moved out by spring'];
+const INWARD: readonly ActuatorVerdict[] = ['retracts', 'moved in by load', 'moved in by spring'];
+const TURNING: readonly ActuatorVerdict[] = ['turns A→B', 'turns B→A', 'driven A→B by load', 'driven B→A by load'];
+
+/** The word of the row, as long as it agrees with the motion. */
+function verdictAt(
+  word: ActuatorVerdict | undefined,
+  speed: number,
+  motion: 'linear' | 'rotary',
+  stroke: number | undefined,
+): ActuatorVerdict {
+  const moves = saySpeed(speed, motion, 'metric') !== undefined;
+  if (motion === 'rotary') {
+    if (!moves) return word && !TURNING.includes(word) ? word : 'held';
+    const ways: readonly ActuatorVerdict[] = speed > 0 ? ['turns A→B', 'driven A→B by load'] : ['turns B→A', 'driven B→A by load'];
+    return word && ways.includes(word) ? word : (ways[0] as ActuatorVerdict);
+  }
+  if (!moves) {
+    const said = word && !OUTWARD.includes(word) && !INWARD.includes(word) ? word : undefined;
+    return said ?? (stroke !== undefined && (stroke <= 0 || stroke >= 1) ? 'at stop' : 'held');
+  }
+  const ways = speed > 0 ? OUTWARD : INWARD;
+  return word && ways.includes(word) ? word : (ways[0] as ActuatorVerdict);
 }

@@ -18,6 +18,7 @@ import { inputsOf } from './inputs.ts';
 import { conditionsIn, loaded, withCase, withPlace } from './conditions.ts';
 import { sayError } from './said.ts';
 import type { CircuitInput } from './inputs.ts';
+import type { Moment } from './moment.ts';
 import { view } from './view.svelte.ts';
 
 export type { ConnectionLook } from './connection-looks.ts';
@@ -71,6 +72,11 @@ class Session {
   /** What a line of another panel speaks of, while it is under the pointer or has the focus. */
   pointed = $state.raw<Pick<Lit, 'lines' | 'parts'> | undefined>();
 
+  /** The moment of a step plan that is on show; moving a lever or changing the conditions ends it. */
+  #moment = $state.raw<Moment | undefined>();
+  /** Conditions from before the first moment on show. */
+  #before: Conditions | undefined;
+
   /** Part id → where its lever stands; survives edits, so a redrawn circuit keeps its state. */
   #levers = $state.raw<Readonly<Record<string, number>>>({});
 
@@ -108,12 +114,14 @@ class Session {
   setPosition(partId: string, index: number): void {
     const input = this.inputs.find((each) => each.part === partId);
     if (!input || index < 0 || index >= input.positions.length) return;
+    this.leaveMoment();
     this.#levers = { ...this.#levers, [partId]: index };
     hint.dismiss();
   }
 
   /** Every lever back to where its springs put it; detented ones stay. */
   letGo(): void {
+    this.leaveMoment();
     const levers = { ...this.#levers };
     for (const input of this.inputs) if (input.rest !== undefined) levers[input.part] = input.rest;
     this.#levers = levers;
@@ -122,12 +130,40 @@ class Session {
   goToRow(row: number): void {
     const { table } = this;
     if (!table || row < 0 || row >= table.count) return;
+    this.leaveMoment();
     const levers = { ...this.#levers };
     table.positionsOf(row).forEach((position, i) => {
       const input = table.data.inputs[i];
       if (input) levers[input.part] = position;
     });
     this.#levers = levers;
+  }
+
+  get moment(): Moment | undefined {
+    return this.#moment;
+  }
+
+  /** Levers, conditions and the sheet go to this moment of a plan. */
+  showMoment(moment: Moment): void {
+    if (!this.#moment) this.#before = this.#conditions;
+    const levers = { ...this.#levers };
+    for (const { part, positions } of this.inputs) {
+      const at = moment.levers.get(part);
+      if (at !== undefined && at < positions.length) levers[part] = at;
+    }
+    this.#levers = levers;
+    this.#moment = moment;
+    const { conditions } = moment;
+    if (JSON.stringify(conditions) !== JSON.stringify(this.#conditions)) this.#conditions = conditions;
+    hint.dismiss();
+  }
+
+  /** The levers stay where they are; what holds for every row is as before again. */
+  leaveMoment(): void {
+    if (!this.#moment) return;
+    this.#moment = undefined;
+    if (this.#before) this.#conditions = this.#before;
+    this.#before = undefined;
   }
 
   /** Levers as part id → index, to be kept beside the circuit. */
@@ -145,6 +181,7 @@ class Session {
   }
 
   set conditions(conditions: Conditions) {
+    this.leaveMoment();
     this.#conditions = conditions;
   }
 
@@ -154,17 +191,22 @@ class Session {
   }
 
   setPumps(pumps: Conditions['pumps']): void {
-    if (pumps !== this.conditions.pumps) this.conditions = { ...this.conditions, pumps };
+    if (pumps === this.conditions.pumps) return;
+    this.leaveMoment();
+    this.conditions = { ...this.conditions, pumps };
   }
 
   /** `between` its stops, or at one. */
   setPlace(partId: string, place: 'between' | 'in' | 'out'): void {
+    this.leaveMoment();
     this.conditions = withPlace(this.conditions, partId, place);
   }
 
   /** Undefined = the loads as drawn. */
   setLoadCase(id: string | undefined): void {
-    if (id !== this.conditions.loadCase) this.conditions = withCase(this.conditions, id);
+    if (id === this.conditions.loadCase) return;
+    this.leaveMoment();
+    this.conditions = withCase(this.conditions, id);
   }
 
   /** Show the reason of a verdict of the current row, in its panel and on the sheet. */
@@ -186,9 +228,11 @@ class Session {
 
   /** Ask for the table anew; an answer to an older question is dropped. */
   compute(circuit: Circuit, conditions: Conditions): void {
-    this.#job?.cancel();
     const analyst = this.#analyst;
-    if (!analyst) return;
+    if (!analyst || this.#stillFits(circuit, conditions)) return;
+    // What was played belongs to the circuit as it was.
+    if (this.answer && !sameMachine(this.answer.circuit, circuit)) this.leaveMoment();
+    this.#job?.cancel();
     this.stopped = false;
     this.progress = 0;
     this.slow = false;
@@ -221,6 +265,16 @@ class Session {
         else this.failure = sayError(error);
       },
     );
+  }
+
+  /** Nothing changed that a table is about, such as a step plan: the answer goes on with the new circuit. */
+  #stillFits(circuit: Circuit, conditions: Conditions): boolean {
+    const { answer } = this;
+    const settled = this.progress === undefined && !this.stopped && this.failure === undefined;
+    if (!settled || answer?.conditions !== conditions || answer.circuit === circuit) return false;
+    if (!sameMachine(answer.circuit, circuit)) return false;
+    this.answer = { ...answer, circuit };
+    return true;
   }
 
   again(): void {
@@ -285,5 +339,9 @@ class Session {
 }
 
 const clampTo = (index: number, length: number): number => Math.min(Math.max(index, 0), Math.max(length - 1, 0));
+
+/** Rules, step plans and texts on the sheet aside. */
+export const sameMachine = (a: Circuit, b: Circuit): boolean =>
+  a.parts === b.parts && a.connections === b.connections && a.loadCases === b.loadCases;
 
 export const session = new Session();

@@ -14,7 +14,7 @@ export type PanelId =
   | 'influence'
   | 'moves'
   | 'loss';
-export type Page = 'sheet' | 'table';
+export type Page = 'sheet' | 'table' | 'plans';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
 class View {
@@ -29,12 +29,16 @@ class View {
   systemDark = $state(false);
   /** Share of the height below the top bar that the sheet takes, 0 to 1. */
   sheetShare = $state(recall('sheetShare', 0.56));
+  /** The same while step plans stand below, which need more room. */
+  sheetSharePlans = $state(recall('sheetSharePlans', 0.4));
   /** Height of the bench in px; 0 = as tall as its slots need. */
   benchHeight = $state(recall('benchHeight', 0));
   /** Upper and lower edge of the sheet in the window, px: panels find their first place there. */
   sheetArea = $state.raw({ top: 40, bottom: 500 });
   /** Which page a small screen shows above the bench. */
   page = $state<Page>('sheet');
+  /** What stands below the bench. */
+  lower = $state<'table' | 'plans'>('table');
   panels = $state<Record<PanelId, boolean>>({
     why: false,
     legend: recall('legendOpen', window.innerWidth >= 900),
@@ -79,14 +83,26 @@ class View {
     remember('sheetFigures', on);
   }
 
-  setSheetShare(share: number): void {
-    this.sheetShare = share;
-    remember('sheetShare', share);
+  /** Undefined = as it is when nobody has dragged it. */
+  setSheetShare(share: number | undefined): void {
+    if (this.lower === 'plans') {
+      this.sheetSharePlans = share ?? 0.4;
+      remember('sheetSharePlans', this.sheetSharePlans);
+    } else {
+      this.sheetShare = share ?? 0.56;
+      remember('sheetShare', this.sheetShare);
+    }
   }
 
   setBenchHeight(height: number): void {
     this.benchHeight = height;
     remember('benchHeight', height);
+  }
+
+  /** Below the bench, or as a page of its own on a small screen. */
+  showLower(what: 'table' | 'plans'): void {
+    this.lower = what;
+    this.page = what;
   }
 
   open(panel: PanelId): void {
