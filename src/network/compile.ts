@@ -263,7 +263,7 @@ const dividerPaths = (element: DividerElement, part: number, index: number, at: 
   }));
 
 function compileActuator(element: ActuatorElement, part: number, at: (port: string) => number): NetActuator {
-  const { spring, load } = element;
+  const { spring, load, work = 0 } = element;
   const gravity = load.size > 0 && (load.sense === 'in' || load.sense === 'out') ? load.sense : undefined;
   const way = gravity && spring && gravity !== spring ? 'both' : (gravity ?? spring ?? 'none');
   return {
@@ -277,10 +277,10 @@ function compileActuator(element: ActuatorElement, part: number, at: (port: stri
     push: { way, by: gravity ? 'load' : 'spring', size: gravity ? load.size : 0 },
     leakage: element.leakage ?? 0,
     ...(element.drain && { drain: { line: at(element.drain.port), leakage: element.drain.leakage } }),
-    resisting: load.sense === 'resisting' && load.size > 0,
+    resisting: work > 0 || (load.sense === 'resisting' && load.size > 0),
     forces: {
       pressing: gravity === 'in' ? load.size : gravity === 'out' ? -load.size : 0,
-      resisting: load.sense === 'resisting' ? load.size : 0,
+      resisting: work + (load.sense === 'resisting' ? load.size : 0),
       friction: element.friction ?? 0,
       spring: spring === undefined ? 0 : (element.springForce ?? 0) * (spring === 'in' ? 1 : -1),
     },

@@ -96,6 +96,8 @@ export interface Look {
 
 export interface SettingSpec {
   readonly id: string;
+  /** Left out it means none, which is no assumption. */
+  readonly optional?: boolean;
   readonly title: string;
   readonly help: string;
   readonly value:
@@ -286,6 +288,8 @@ export interface ActuatorElement {
   readonly drain?: { readonly port: string; readonly leakage: number };
   /** m; absent for a motor. */
   readonly stroke?: number;
+  /** N or N·m against any motion, besides `load`: what the machine works on. */
+  readonly work?: number;
   /** N or N·m that acts from outside: `in`/`out` (motor: `B→A`/`A→B`) presses also at rest, `resisting` only against motion. */
   readonly load: { readonly sense: 'none' | 'resisting' | 'in' | 'out'; readonly size: number };
 }

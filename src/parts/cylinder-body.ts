@@ -110,3 +110,11 @@ export const piston = (travel: number, left: number, rods: readonly ('left' | 'r
     rectangle('symbol', boxOf(left, -2, 1, 4), 'ink'),
   ],
 });
+
+/** A rod that fills the bore with a little play, drawn retracted and shifted by the travel. */
+export const plunger = (travel: number): Primitive => ({
+  type: 'group',
+  role: 'piston',
+  shift: { x: travel, y: 0 },
+  children: [rectangle('symbol', boxOf(-4, -1.25, 11, 2.5), 'paper')],
+});

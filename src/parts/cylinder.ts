@@ -12,6 +12,7 @@ import {
   strokeSetting,
   travelOf,
 } from './cylinder-body.ts';
+import { checkSpring, drawnSpring, readSpring, SPRING } from './cylinder-spring.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
 import { ratingSetting, readRating } from './ratings.ts';
 import { readSi } from './settings.ts';
@@ -29,7 +30,7 @@ export const cylinder: PartKind = {
   help: 'Double acting, rod at one end: oil into A extends it, oil into B retracts it.',
   words: ['double acting cylinder', 'differential cylinder', 'ram', 'actuator', 'jack'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, RATING],
+  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, ...SPRING.all, RATING],
   readyMade: [
     { id: 'cylinder', title: 'Cylinder', make: () => ({}) },
     {
@@ -52,11 +53,16 @@ export const cylinder: PartKind = {
         areaA: areas.piston,
         areaB: areas.annulus,
         stroke: readSi(part, STROKE),
+        ...readSpring(part),
         ...readLoad(part, CYLINDER_LOAD),
       },
     ];
   },
-  draw: (_part, look) => [...barrel(PORTS), piston(travelOf(look), -4, ['right'])],
+  draw: (part, look) => [
+    ...barrel(PORTS),
+    ...drawnSpring(part, travelOf(look) - 4),
+    piston(travelOf(look), -4, ['right']),
+  ],
   bounds: () => CYLINDER_BOUNDS,
-  check: (part) => [...checkBoreAndRod(part, BORE, ROD), ...checkLoad(part, CYLINDER_LOAD)],
+  check: (part) => [...checkBoreAndRod(part, BORE, ROD), ...checkLoad(part, CYLINDER_LOAD), ...checkSpring(part)],
 };

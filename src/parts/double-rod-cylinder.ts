@@ -9,6 +9,7 @@ import {
   strokeSetting,
   travelOf,
 } from './cylinder-body.ts';
+import { checkSpring, drawnSpring, readSpring, SPRING } from './cylinder-spring.ts';
 import { checkLoad, CYLINDER_LOAD, readLoad } from './load.ts';
 import { ratingSetting, readRating } from './ratings.ts';
 import { readSi } from './settings.ts';
@@ -32,7 +33,7 @@ export const doubleRodCylinder: PartKind = {
   help: 'Rod at both ends, equal areas: the same speed and force both ways. Oil into A moves it towards B.',
   words: ['through rod cylinder', 'double ended', 'equal area', 'table drive', 'actuator'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, RATING],
+  settings: [BORE, ROD, STROKE, ...CYLINDER_LOAD.all, ...SPRING.all, RATING],
   readyMade: [{ id: 'double-rod-cylinder', title: 'Double-rod cylinder', make: () => ({}) }],
   ports: () => PORTS,
   ratings: (part) => [readRating(part, RATING, ['A', 'B'])],
@@ -47,11 +48,16 @@ export const doubleRodCylinder: PartKind = {
         areaA: annulus,
         areaB: annulus,
         stroke: readSi(part, STROKE),
+        ...readSpring(part),
         ...readLoad(part, CYLINDER_LOAD),
       },
     ];
   },
-  draw: (_part, look) => [...barrel(PORTS), piston(travelOf(look), -3.5, ['left', 'right'])],
+  draw: (part, look) => [
+    ...barrel(PORTS),
+    ...drawnSpring(part, travelOf(look) - 3.5),
+    piston(travelOf(look), -3.5, ['left', 'right']),
+  ],
   bounds: () => boxOf(-13, -2, 26, 5),
-  check: (part) => [...checkBoreAndRod(part, BORE, ROD), ...checkLoad(part, CYLINDER_LOAD)],
+  check: (part) => [...checkBoreAndRod(part, BORE, ROD), ...checkLoad(part, CYLINDER_LOAD), ...checkSpring(part)],
 };

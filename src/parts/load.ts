@@ -6,19 +6,23 @@ import { choiceSetting, quantitySetting, readChoice, readSi, type ChoiceSpec, ty
 export interface LoadSpecs {
   readonly size: QuantitySpec;
   readonly sense: ChoiceSpec;
+  /** Resists motion besides a load that presses. */
+  readonly work: QuantitySpec;
   readonly friction: QuantitySpec;
-  readonly all: readonly [QuantitySpec, ChoiceSpec, QuantitySpec];
+  readonly all: readonly [QuantitySpec, ChoiceSpec, QuantitySpec, QuantitySpec];
 }
 
 const SENSE_HELP = 'A resisting load only acts against motion; the others press at rest too, as gravity does.';
 
-function specs(size: QuantitySpec, senses: readonly string[], friction: QuantitySpec): LoadSpecs {
+const WORK_HELP = 'Resists motion both ways, besides the load: a tool that cuts, a slide that drags. None at rest.';
+
+function specs(size: QuantitySpec, senses: readonly string[], work: QuantitySpec, friction: QuantitySpec): LoadSpecs {
   const sense = choiceSetting(
     { id: 'loadSense', title: 'Load acts', help: SENSE_HELP },
     ['none', 'resisting', ...senses],
     'none',
   );
-  return { size, sense, friction, all: [size, sense, friction] };
+  return { size, sense, work, friction, all: [size, sense, work, friction] };
 }
 
 export const CYLINDER_LOAD = specs(
@@ -27,6 +31,10 @@ export const CYLINDER_LOAD = specs(
     max: '100000 kN',
   }),
   ['pushes in', 'pulls out'],
+  quantitySetting({ id: 'work', title: 'Work against motion', help: WORK_HELP, optional: true }, 'force', '0 kN', {
+    min: '0 kN',
+    max: '100000 kN',
+  }),
   quantitySetting(
     { id: 'friction', title: 'Friction', help: 'Force of seals and guides against any motion.' },
     'force',
@@ -41,6 +49,10 @@ export const MOTOR_LOAD = specs(
     max: '10000000 N·m',
   }),
   ['drives A to B', 'drives B to A'],
+  quantitySetting({ id: 'work', title: 'Work against motion', help: WORK_HELP, optional: true }, 'torque', '0 N·m', {
+    min: '0 N·m',
+    max: '10000000 N·m',
+  }),
   quantitySetting(
     { id: 'friction', title: 'Friction torque', help: 'Torque of the motor itself against any motion.' },
     'torque',
@@ -59,10 +71,11 @@ const SENSES: Readonly<Record<string, ActuatorElement['load']['sense']>> = {
 };
 
 /** N or N·m; no direction means no load. */
-export function readLoad(part: Part, load: LoadSpecs): Pick<ActuatorElement, 'load' | 'friction'> {
+export function readLoad(part: Part, load: LoadSpecs): Pick<ActuatorElement, 'load' | 'work' | 'friction'> {
   const sense = SENSES[readChoice(part, load.sense)] ?? 'none';
   return {
     load: { sense, size: sense === 'none' ? 0 : readSi(part, load.size) },
+    work: readSi(part, load.work),
     friction: readSi(part, load.friction),
   };
 }

@@ -17,7 +17,7 @@ export type ActuatorSpec = SettingSpec & {
   readonly value: Extract<SettingSpec['value'], { type: 'actuator' }>;
 };
 
-type Words = Pick<SettingSpec, 'id' | 'title' | 'help'>;
+type Words = Pick<SettingSpec, 'id' | 'title' | 'help' | 'optional'>;
 
 export const quantitySetting = (
   words: Words,
@@ -94,7 +94,7 @@ export function readSetting(part: Part, spec: QuantitySpec | NumberSpec): Readin
     const { min, max } = limitsOf(spec.value);
     if (si !== undefined && si >= min && si <= max) return { si, typed, assumed: false };
   }
-  return { si: defaultOf(spec.value), assumed: true };
+  return { si: defaultOf(spec.value), assumed: typed !== undefined || spec.optional !== true };
 }
 
 export const readSi = (part: Part, spec: QuantitySpec | NumberSpec): number => readSetting(part, spec).si;

@@ -5,6 +5,7 @@ import {
   checkBoreAndRod,
   CYLINDER_BOUNDS,
   piston,
+  plunger,
   readAreas,
   rodSetting,
   strokeSetting,
@@ -29,6 +30,11 @@ const SPRING_FORCE = quantitySetting(
   '0.5 kN',
   { min: '0 kN', max: '1000 kN' },
 );
+const FORM = choiceSetting(
+  { id: 'form', title: 'Form', help: 'A plunger is a rod as thick as the bore, which only its load brings back.' },
+  ['piston', 'plunger'],
+  'piston',
+);
 const PORTS = [
   port(
     'A',
@@ -49,9 +55,9 @@ export const singleActingCylinder: PartKind = {
   title: 'Single-acting cylinder',
   group: 'Motion',
   help: 'Oil into A extends it; a spring or the load brings it back. The rod side breathes.',
-  words: ['spring return cylinder', 'plunger', 'ram', 'one way', 'actuator'],
+  words: ['spring return cylinder', 'ram', 'one way', 'actuator'],
   prefix: 'CYL',
-  settings: [BORE, ROD, STROKE, RETURN, SPRING_FORCE, ...CYLINDER_LOAD.all, RATING],
+  settings: [FORM, BORE, ROD, STROKE, RETURN, SPRING_FORCE, ...CYLINDER_LOAD.all, RATING],
   readyMade: [
     { id: 'single-acting-cylinder', title: 'Single-acting cylinder, spring return', make: () => ({}) },
     {
@@ -60,12 +66,18 @@ export const singleActingCylinder: PartKind = {
       words: ['lift', 'gravity', 'ram'],
       make: () => ({ settings: { return: 'load', load: '10 kN', loadSense: 'pushes in' } }),
     },
+    {
+      id: 'plunger-cylinder',
+      title: 'Plunger cylinder, returned by load',
+      words: ['ram', 'lift', 'press', 'jack'],
+      make: () => ({ settings: { form: 'plunger', return: 'load', load: '10 kN', loadSense: 'pushes in' } }),
+    },
   ],
   ports: () => PORTS,
   ratings: (part) => [readRating(part, RATING, ['A'])],
   elements: (part) => {
     const areas = readAreas(part, BORE, ROD);
-    const sprung = readChoice(part, RETURN) === 'spring';
+    const sprung = readChoice(part, FORM) === 'piston' && readChoice(part, RETURN) === 'spring';
     return [
       {
         type: 'actuator',
@@ -82,6 +94,7 @@ export const singleActingCylinder: PartKind = {
   draw: (part, look) => {
     const travel = travelOf(look);
     const face = -3 + travel;
+    if (readChoice(part, FORM) === 'plunger') return [...barrel(PORTS), plunger(travel)];
     return [
       ...barrel(PORTS),
       // The spring is squeezed between the piston and the far end, so it is drawn anew for each stroke.
@@ -90,5 +103,8 @@ export const singleActingCylinder: PartKind = {
     ];
   },
   bounds: () => CYLINDER_BOUNDS,
-  check: (part) => [...checkBoreAndRod(part, BORE, ROD), ...checkLoad(part, CYLINDER_LOAD)],
+  check: (part) => [
+    ...(readChoice(part, FORM) === 'plunger' ? [] : checkBoreAndRod(part, BORE, ROD)),
+    ...checkLoad(part, CYLINDER_LOAD),
+  ],
 };

@@ -8,9 +8,9 @@ import { checkSettings } from '../../parts/settings.ts';
 import type { SettingSpec } from '../../parts/contract.ts';
 
 /** Settings that are a load: its size, and the way it acts. */
-const LOADS: ReadonlySet<string> = new Set(['load', 'loadSense']);
+const LOADS: ReadonlySet<string> = new Set(['load', 'loadSense', 'work']);
 
-/** The two load settings of an actuator; empty for any other part. */
+/** The load settings of an actuator; empty for any other part. */
 export const loadSpecs = (part: Part): readonly SettingSpec[] =>
   (kindOf(part.kind)?.settings ?? []).filter(({ id }) => LOADS.has(id));
 
@@ -29,7 +29,8 @@ export function addCase(circuit: Circuit, from?: string): { readonly edit: Edit;
   const name = names(cases.map((entry) => entry.name)).fresh('Case ');
   const loads = Object.fromEntries(
     withLoadCase(circuit, from).parts.flatMap((part) => {
-      const set = loadSpecs(part).map((spec) => [spec.id, part.settings?.[spec.id] ?? spec.value.default] as const);
+      const given = loadSpecs(part).filter(({ id, optional }) => !optional || part.settings?.[id] !== undefined);
+      const set = given.map((spec) => [spec.id, part.settings?.[spec.id] ?? spec.value.default] as const);
       return set.length > 0 ? [[part.id, Object.fromEntries(set)]] : [];
     }),
   );
