@@ -12,9 +12,9 @@ export interface Column {
 
 export const NONE = '–';
 
-/** Behind the number of a row whose verdicts rest on values. */
+/** Behind a verdict that rests on values. */
 const VALUED_MARK = '*';
-export const VALUED_LEGEND = `${VALUED_MARK} Pressures decided what open paths leave to them: from entered or assumed values.`;
+export const VALUED_LEGEND = `${VALUED_MARK} Rests on entered or assumed values: pressures decide here. Other decided verdicts hold for any values.`;
 
 const OPEN = ['rests on pressure', 'undetermined'];
 
@@ -24,7 +24,7 @@ const list = (items: readonly string[]): string => (items.length > 0 ? items.joi
 export function columnsOf(report: Report): Column[] {
   const said = motorNotes(report.motors);
   return [
-    { head: 'Row', kind: 'number', cell: (row) => `${row.row}${row.valued ? VALUED_MARK : ' '}` },
+    { head: 'Row', kind: 'number', cell: (row) => String(row.row) },
     ...report.inputs.map(({ label }): Column => ({
       head: label,
       kind: 'position',
@@ -41,7 +41,11 @@ export function columnsOf(report: Report): Column[] {
       kind: 'verdict',
       cell: (row) => verdictOf(row, label),
     })),
-    ...report.pumps.map((label): Column => ({ head: label, kind: 'verdict', cell: (row) => row.pumps[label] ?? '' })),
+    ...report.pumps.map((label): Column => ({
+      head: label,
+      kind: 'verdict',
+      cell: (row) => marked(row, label, row.pumps[label] ?? ''),
+    })),
     ...figureColumns(report).map(({ label, unit, cell }): Column => ({
       head: `${label} ${unit}`,
       kind: 'figure',
@@ -107,8 +111,14 @@ const coilsOn = (coils: readonly string[]): Column => ({
 function verdictOf(row: ReportRow, label: string): string {
   const verdict = row.actuators[label] ?? '';
   const reasons = row.rests[label]?.reasons ?? [];
-  return OPEN.includes(verdict) && reasons.length > 0 ? `${verdict} (${reasons.join(', ')})` : verdict;
+  return OPEN.includes(verdict) && reasons.length > 0
+    ? `${verdict} (${reasons.join(', ')})`
+    : marked(row, label, verdict);
 }
+
+/** What is left open says so itself. */
+const marked = (row: ReportRow, label: string, verdict: string): string =>
+  row.fromValues.includes(label) && !OPEN.includes(verdict) ? `${verdict}${VALUED_MARK}` : verdict;
 
 /** Lines above the table: what it is, how many rows, what is not in it, where rest is. */
 export function headLines(report: Report): string[] {

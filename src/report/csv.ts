@@ -53,6 +53,8 @@ function columnsOf(report: Report): CsvColumn[] {
       cell,
       figure: true as const,
     })),
+    // Last, so that columns of older tables stay where they were.
+    { head: 'verdicts from values', cell: (row) => list(row.fromValues) },
   ];
 }
 

@@ -27,7 +27,7 @@ export function* writeMarkdown(report: Report): Generator<string> {
   let valued = false;
   for (const row of report.rows()) {
     trapped ||= row.trapped.length > 0;
-    valued ||= row.valued;
+    valued ||= row.fromValues.length > 0;
     yield tableRow(columns.map(({ cell, kind }) => (kind === 'figure' ? cell(row) : escapeCell(cell(row)))));
   }
   if (report.figures) yield `\n${escapeMarkdown(NUMBERS_LEGEND)}\n`;

@@ -3,6 +3,7 @@ import { has } from '../base/bits.ts';
 import { labelOf } from '../circuit/model.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
+import type { TableData } from '../engine/table/table-data.ts';
 import type { ActuatorVerdict, LineClass, PumpVerdict, RestReason, TrapReason } from '../engine/table/words.ts';
 import { nameOfCase, sayConditions } from './conditions.ts';
 import { figureNotes, figureUnits, rowFigures } from './figures.ts';
@@ -80,6 +81,8 @@ export interface ReportRow {
   readonly notes: readonly string[];
   /** Pressures decided here what open paths leave to them: it rests on entered or assumed values. */
   readonly valued: boolean;
+  /** Actuators and pumps whose verdict that is; the others hold for any values, as far as they are decided. */
+  readonly fromValues: readonly string[];
   /** In the units of the report; set if numbers are asked for. */
   readonly numbers?: RowFigures;
 }
@@ -269,7 +272,16 @@ function reportRow({ table, explain }: ReportSource, names: Names, row: number):
     rests: restsOf(table, row, explanation),
     notes: notesOf(table, row, explanation),
     valued: table.data.valued !== undefined && has(table.data.valued, row),
+    fromValues: fromValues(table, names, row),
   };
+}
+
+function fromValues({ data }: StateTable, names: Names, row: number): string[] {
+  const valued = (planes: TableData['valuedActuators']) => (_: string, i: number) => {
+    const plane = planes[i];
+    return plane !== undefined && has(plane, row);
+  };
+  return [...names.actuators.filter(valued(data.valuedActuators)), ...names.pumps.filter(valued(data.valuedPumps))];
 }
 
 const isOn = (coil: Coil | undefined, positions: readonly number[]): boolean =>

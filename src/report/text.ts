@@ -41,7 +41,7 @@ export function* writeText(report: Report, options: TextOptions = {}): Generator
   let valued = false;
   for (const row of report.rows()) {
     trapped ||= row.trapped.length > 0;
-    valued ||= row.valued;
+    valued ||= row.fromValues.length > 0;
     yield draw(columns.map((column) => column.cell(row)));
   }
   if (report.figures) yield `\n${NUMBERS_LEGEND}\n`;

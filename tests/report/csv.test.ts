@@ -25,18 +25,23 @@ test('a record per row with a head', () => {
   expect(records).toEqual([
     [
       ...['row', 'V1', 'coil Y1', 'coil Y2', 'CLAMP', 'P1', 'line L1', 'line L2', 'line L3'],
-      ...['blocked under pressure', 'cut off', 'trapped', 'rests on', 'from values', 'notes'],
+      ...['blocked under pressure', 'cut off', 'trapped', 'rests on', 'from values', 'notes', 'verdicts from values'],
     ],
-    ['1', 'a', 'on', 'off', 'extends', 'working', 'fed', 'fed', 'vented', '', '', '', '', 'no', ''],
+    ['1', 'a', 'on', 'off', 'extends', 'working', 'fed', 'fed', 'vented', '', '', '', '', 'no', '', ''],
     [
       ...['2', '0', 'off', 'off', 'held', 'over relief', 'fed', 'cut off', 'cut off'],
-      ...['L1', 'L2; L3', 'L2 (left behind, heat); L3 (heat)', '', 'no', 'CLAMP: void forms'],
+      ...['L1', 'L2; L3', 'L2 (left behind, heat); L3 (heat)', '', 'no', 'CLAMP: void forms', ''],
     ],
     [
       ...['3', 'b', 'off', 'on', 'rests on pressure', 'working, part over relief', 'fed', 'vented', 'fed'],
-      ...['', '', '', 'CLAMP (load, rivals)', 'no', ''],
+      ...['', '', '', 'CLAMP (load, rivals)', 'no', '', ''],
     ],
   ]);
+});
+
+test('verdicts that rest on values stand in the last column, behind those that there were before', () => {
+  const records = parse(joined(writeCsv(makeReport(sampleSource({ ...CLAMP, valued: { CLAMP: [1], P1: [1] } })))));
+  expect(records.map((record) => record.at(-1))).toEqual(['verdicts from values', '', 'CLAMP; P1', '']);
 });
 
 test.each([

@@ -22,8 +22,14 @@ test('rows carry shown names and count from 1', () => {
     rests: {},
     notes: ['CLAMP: void forms'],
     valued: false,
+    fromValues: [],
   });
   expect(report.rowAt(0).coils).toEqual({ Y1: 'on', Y2: 'off' });
+});
+
+test('each row names the verdicts that rest on values', () => {
+  const valued = makeReport(sampleSource({ ...CLAMP, valued: { CLAMP: [1], P1: [1, 2] } }));
+  expect([0, 1, 2].map((row) => valued.rowAt(row).fromValues)).toEqual([[], ['CLAMP', 'P1'], ['P1']]);
 });
 
 test('a verdict that rests on pressure says why', () => {

@@ -29,8 +29,8 @@ export interface Sample {
   readonly notPermitted?: number;
   readonly commandCombinations?: number;
   readonly pumpsRunning?: boolean;
-  /** 0-based rows. */
-  readonly valued?: readonly number[];
+  /** Actuator or pump → 0-based rows in which its verdict rests on values. */
+  readonly valued?: Readonly<Record<string, readonly number[]>>;
 }
 
 /** A table written by hand, row by row, for the writers to write. */
@@ -73,9 +73,9 @@ export function sampleTable(sample: Sample): StateTable {
     linePlanes: planes(lines, sample.lines, LINE_CLASSES),
     blockedPlanes: planes(lines, sample.blocked, BLOCKED_KINDS),
     trapPlanes: planes(lines, sample.trapped, TRAP_REASONS),
-    valued: sample.valued ? valuedPlane(sample.valued, count) : undefined,
-    valuedActuators: [],
-    valuedPumps: [],
+    valued: sample.valued ? valuedPlane(Object.values(sample.valued).flat(), count) : undefined,
+    valuedActuators: actuators.map((label) => valuedPlane(sample.valued?.[label] ?? [], count)),
+    valuedPumps: pumps.map((label) => valuedPlane(sample.valued?.[label] ?? [], count)),
     dependents: [],
     dependentPlanes: [],
     dependentRests: [],
