@@ -14,6 +14,7 @@ import {
   type Part,
   type PartGroup,
   type PortRef,
+  type ReadyMadeValve,
   type RuleText,
   type ValveData,
 } from './model.ts';
@@ -29,11 +30,24 @@ import {
   type FileLabel,
   type FileLoadCase,
   type FilePart,
+  type FileReadyMadeValve,
   type FileRule,
   type FileValve,
 } from './schema.ts';
 
 export { writeCircuit } from './write.ts';
+
+/** Lists of things with ids. */
+const LISTS = [
+  'parts',
+  'connections',
+  'labels',
+  'groups',
+  'readyMadeValves',
+  'rules',
+  'loadCases',
+  'plans',
+] as const satisfies readonly (keyof typeof LIMITS)[];
 
 /**
  * Read a `*.spool.json` text. A file with a problem is refused whole; unknown fields and doubled
@@ -73,7 +87,7 @@ function checkFormat(raw: RawFile): Problem | undefined {
 }
 
 function checkSize(raw: RawFile): Problem | undefined {
-  for (const field of ['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans'] as const) {
+  for (const field of LISTS) {
     const list = raw[field];
     if (Array.isArray(list) && list.length > LIMITS[field]) {
       return {
@@ -170,6 +184,14 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       parts: group.parts,
       extra: extraOf(group, KNOWN.group, ['groups', i]),
     });
+  const toReadyMade = (ready: FileReadyMadeValve, i: number): ReadyMadeValve =>
+    solid<Required<ReadyMadeValve>>({
+      id: ready.id,
+      title: ready.title,
+      kind: ready.kind,
+      valve: toValve(ready.valve, ['readyMadeValves', i, 'valve']),
+      extra: extraOf(ready, KNOWN.readyMadeValve, ['readyMadeValves', i]),
+    });
   const toRule = (rule: FileRule, i: number): RuleText =>
     solid<Required<RuleText>>({ id: rule.id, text: rule.text, extra: extraOf(rule, KNOWN.rule, ['rules', i]) });
   const toLoadCase = ({ id, name, loads, ...rest }: FileLoadCase, i: number): LoadCase =>
@@ -183,6 +205,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     connections: file.connections.map(toConnection),
     labels: file.labels?.map(toLabel),
     groups: file.groups?.map(toGroup),
+    readyMadeValves: file.readyMadeValves?.map(toReadyMade),
     rules: file.rules?.map(toRule),
     loadCases: file.loadCases?.map(toLoadCase),
     plans: file.plans?.map((plan, i) => toPlan(plan, i, extraOf)),
@@ -192,7 +215,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
 
 function checkIds(circuit: Circuit): Problem[] {
   const problems: Problem[] = [];
-  for (const field of ['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans'] as const) {
+  for (const field of LISTS) {
     const first = new Map<string, number>();
     for (const [i, { id }] of (circuit[field] ?? []).entries()) {
       const before = first.get(id);

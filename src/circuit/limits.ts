@@ -16,6 +16,8 @@ export const LIMITS = {
   bends: 1_000,
   /** Blocks drawn round parts. */
   groups: 1_000,
+  /** Valves of the circuit's own make. */
+  readyMadeValves: 200,
   /** Modules from the sheet's origin. */
   coordinate: 100_000,
   id: 100,

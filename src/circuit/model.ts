@@ -25,6 +25,8 @@ export interface Circuit {
   readonly plans?: readonly StepPlan[];
   /** Parts drawn inside one enclosure, such as a manifold block. */
   readonly groups?: readonly PartGroup[];
+  /** Valves of this circuit's own make, to be placed again. */
+  readonly readyMadeValves?: readonly ReadyMadeValve[];
   readonly extra?: Extra;
 }
 
@@ -84,6 +86,17 @@ export interface PartGroup {
   readonly id: string;
   readonly name: string;
   readonly parts: readonly string[];
+  readonly extra?: Extra;
+}
+
+/** Placed parts are copies: they do not change with it unless somebody says so. */
+export interface ReadyMadeValve {
+  readonly id: string;
+  /** Shown, unique in the circuit. */
+  readonly title: string;
+  /** Kind of the placed part; `directional-valve` when absent. */
+  readonly kind?: string;
+  readonly valve: ValveData;
   readonly extra?: Extra;
 }
 

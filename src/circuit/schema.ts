@@ -81,6 +81,13 @@ const group = z.looseObject({
     .meta({ description: 'ids of the parts inside the enclosure' }),
 });
 
+const readyMadeValve = z.looseObject({
+  id,
+  title: line.min(1, say('The title is empty.', 'Write a name for the valve.')),
+  kind: line.min(1, say('The kind is empty.', 'Leave it out for a directional valve.')).optional(),
+  valve,
+});
+
 const rule = z.looseObject({
   id,
   text: z
@@ -121,6 +128,10 @@ export const fileSchema = z
       .array(group)
       .max(LIMITS.groups, say('Too many blocks.', `Use at most ${LIMITS.groups}.`))
       .optional(),
+    readyMadeValves: z
+      .array(readyMadeValve)
+      .max(LIMITS.readyMadeValves, say('Too many ready-made valves.', `Use at most ${LIMITS.readyMadeValves}.`))
+      .optional(),
     rules: z
       .array(rule)
       .max(LIMITS.rules, say('Too many rules.', `Use at most ${LIMITS.rules}.`))
@@ -144,6 +155,7 @@ export type FilePart = z.infer<typeof part>;
 export type FileConnection = z.infer<typeof connection>;
 export type FileLabel = z.infer<typeof label>;
 export type FileGroup = z.infer<typeof group>;
+export type FileReadyMadeValve = z.infer<typeof readyMadeValve>;
 export type FileRule = z.infer<typeof rule>;
 export type FileLoadCase = z.infer<typeof loadCase>;
 export type FileValve = z.infer<typeof valve>;
@@ -156,6 +168,7 @@ export const KNOWN = {
   connection: fields(connection.shape),
   label: fields(label.shape),
   group: fields(group.shape),
+  readyMadeValve: fields(readyMadeValve.shape),
   rule: fields(rule.shape),
   loadCase: fields(loadCase.shape),
   plan: fields(plan.shape),

@@ -8,6 +8,7 @@ import {
   type LoadCase,
   type Part,
   type PartGroup,
+  type ReadyMadeValve,
   type RuleText,
   type ValveData,
 } from './model.ts';
@@ -17,7 +18,16 @@ import { FORMAT, VERSION } from './schema.ts';
 type Fields = Record<string, unknown>;
 const WIDTH = 160;
 /** Lists that have a line for each member. */
-const LISTS: ReadonlySet<string> = new Set(['parts', 'connections', 'labels', 'groups', 'rules', 'loadCases', 'plans']);
+const LISTS: ReadonlySet<string> = new Set([
+  'parts',
+  'connections',
+  'labels',
+  'groups',
+  'readyMadeValves',
+  'rules',
+  'loadCases',
+  'plans',
+]);
 
 /**
  * The circuit as text of a `*.spool.json` file. Fields come in a fixed order, parts and connections in the
@@ -36,6 +46,7 @@ export function writeCircuit(circuit: Circuit): string {
       connections: circuit.connections.map(connectionFields),
       labels: circuit.labels?.map(labelFields),
       groups: circuit.groups?.map(groupFields),
+      readyMadeValves: circuit.readyMadeValves?.map(readyMadeFields),
       rules: circuit.rules?.map(ruleFields),
       loadCases: circuit.loadCases?.map(loadCaseFields),
       plans: circuit.plans?.map(planFields),
@@ -100,6 +111,9 @@ const labelFields = (label: Label): Fields =>
   withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
 
 const groupFields = ({ id, name, parts, extra }: PartGroup): Fields => withExtra({ id, name, parts }, extra);
+
+const readyMadeFields = ({ id, title, kind, valve, extra }: ReadyMadeValve): Fields =>
+  withExtra({ id, title, kind, valve: valveFields(valve) }, extra);
 
 const ruleFields = (rule: RuleText): Fields => withExtra({ id: rule.id, text: rule.text }, rule.extra);
 

@@ -102,11 +102,14 @@ const plain = (text: string): string =>
  * of the title, then beginnings, then the rest; equal ones in the order of the tray, a title that says no
  * more than what was looked for before them. An empty search gives all.
  */
-export function searchCatalogue(query: string): readonly CatalogueEntry[] {
+export function searchCatalogue(
+  query: string,
+  entries: readonly CatalogueEntry[] = ENTRIES,
+): readonly CatalogueEntry[] {
   const wanted = plain(query)
     .split(' ')
     .filter((word) => word !== '');
-  if (wanted.length === 0) return ENTRIES;
+  if (wanted.length === 0) return entries;
   const score = ({ kind, readyMade }: CatalogueEntry): number => {
     const title = plain(readyMade.title).split(' ');
     const others = plain(
@@ -122,7 +125,8 @@ export function searchCatalogue(query: string): readonly CatalogueEntry[] {
     }
     return total;
   };
-  return ENTRIES.map((entry) => ({ entry, score: score(entry) }))
+  return entries
+    .map((entry) => ({ entry, score: score(entry) }))
     .filter((each) => each.score > 0)
     .sort((a, b) => b.score - a.score)
     .map((each) => each.entry);

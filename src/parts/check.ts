@@ -2,6 +2,7 @@ import type { Problem } from '../base/result.ts';
 import { labelOf, sayPort, type Circuit, type Part, type PortRef } from '../circuit/model.ts';
 import { CATALOGUE, kindOf } from './catalogue.ts';
 import type { PartKind, PartProblem } from './contract.ts';
+import { checkReadyValves } from './file-valves.ts';
 import { checkSettings } from './settings.ts';
 import { isStripValve } from './valve-kinds.ts';
 
@@ -249,5 +250,6 @@ export function checkParts(circuit: Circuit): CircuitProblem[] {
     ...checkLabels(circuit),
     ...checkConnections(circuit),
     ...checkLoadCases(circuit),
+    ...checkReadyValves(circuit).map(({ level = 'error', ...problem }) => ({ ...problem, level, parts: [] })),
   ];
 }

@@ -8,6 +8,7 @@ import type {
   Part,
   PartGroup,
   PortRef,
+  ReadyMadeValve,
   LoadCase,
   RuleText,
   ValveData,
@@ -143,6 +144,11 @@ const group: fc.Arbitrary<PartGroup> = fc.record(
   { requiredKeys: ['id', 'name', 'parts'], noNullPrototype: true },
 );
 
+const readyMade: fc.Arbitrary<ReadyMadeValve> = fc.record(
+  { id, title: words, kind: fc.constantFrom('pilot-valve'), valve, extra: unknownFields(KNOWN.readyMadeValve) },
+  { requiredKeys: ['id', 'title', 'valve'], noNullPrototype: true },
+);
+
 const rule: fc.Arbitrary<RuleText> = fc.record(
   { id, text: words, extra: unknownFields(KNOWN.rule) },
   { requiredKeys: ['id', 'text'], noNullPrototype: true },
@@ -233,6 +239,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
             : fc.uniqueArray(connection(parts), { maxLength: 6, selector: (c) => c.id }),
         labels: fc.uniqueArray(label, { maxLength: 3, selector: (l) => l.id }),
         groups: fc.uniqueArray(group, { maxLength: 3, selector: (g) => g.id }),
+        readyMadeValves: fc.uniqueArray(readyMade, { maxLength: 2, selector: (r) => r.id }),
         rules: fc.uniqueArray(rule, { maxLength: 3, selector: (r) => r.id }),
         loadCases: fc.uniqueArray(loadCase, { maxLength: 3, selector: (l) => l.id }),
         plans: fc.uniqueArray(plan, { maxLength: 2, selector: (p) => p.id }),
