@@ -4,6 +4,8 @@ import { askTable, continueText } from '../analysis/ask.ts';
 import { bleedPlan, powerLoss } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
 import { coilLogic } from '../analysis/coil-logic.ts';
+import { tabulateHeld } from '../analysis/held.ts';
+import { PanelFindings } from '../analysis/panel-findings.ts';
 import { checkPlan } from '../analysis/plan.ts';
 import { draftPlan } from '../analysis/plan-draft.ts';
 import { movesOf } from '../analysis/moves.ts';
@@ -13,6 +15,7 @@ import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
+import type { TableData } from '../engine/table/table-data.ts';
 import { planeBuffers } from './buffers.ts';
 import { Held } from './held.ts';
 import type { Holding, Question, Reply } from './messages.ts';
@@ -23,6 +26,7 @@ const scope = self as unknown as {
 };
 
 const held = new Held();
+const panel = new PanelFindings();
 
 scope.onmessage = ({ data: question }) => {
   if (question.ask === 'hold') {
@@ -103,6 +107,15 @@ const tell = (id: number): Budget => ({
 function answerTable(id: number, circuit: Circuit, conditions: Conditions): Reply {
   const began = performance.now();
   const budget = tell(id);
+  if (conditions.held) {
+    const faults = panel.of(circuit, conditions);
+    const reply = (early: boolean, data: TableData): Reply => {
+      return { id, say: 'table', early, data, findings: faults, took: performance.now() - began };
+    };
+    // What moves of held levers leave behind takes a search for each of them.
+    send(reply(true, tabulate(circuit, conditions, budget)));
+    return reply(false, tabulateHeld(circuit, conditions, budget));
+  }
   const reply = (pressureRows: number): Reply => {
     const options = { pressureRows };
     const data = tabulate(circuit, conditions, budget, options);

@@ -10,6 +10,7 @@ import type {
   StateTable,
   TableAnswer,
 } from '../../worker/client.ts';
+import { MOST_ROWS } from '../../worker/client.ts';
 import { connectionLooks } from './connection-looks.ts';
 import type { ConnectionLook } from './connection-looks.ts';
 import { editor } from './editor.svelte.ts';
@@ -46,6 +47,8 @@ export interface Subject {
 }
 
 const PATIENCE_MS = 250;
+/** Rows that the levers picked on a large panel may have. */
+const MOST_LISTED = 20_000;
 const DARK: Lit = { lines: [], parts: [], steps: [] };
 
 /** The state on show: conditions, the whole table, the current row, and why it is so. */
@@ -82,13 +85,28 @@ class Session {
 
   /** Commanded inputs of the circuit as drawn now, in circuit order (needs no table). */
   inputs: readonly CircuitInput[] = $derived(inputsOf(editor.circuit));
+  /** All combinations of the circuit as drawn now. */
+  combinations = $derived(this.inputs.reduce((n, input) => n * BigInt(input.positions.length), 1n));
+  /** Too many to list: the table has the rows of some levers, the others stay where they stand. */
+  large = $derived(this.combinations > BigInt(MOST_ROWS));
+  /** Part ids of the levers that a large panel has rows of, as picked. */
+  #listed = $state.raw<readonly string[]>([]);
+  /** Those of them that the circuit has. */
+  listed: readonly CircuitInput[] = $derived(this.inputs.filter(({ part }) => this.#listed.includes(part)));
+  #held = $derived(this.large ? JSON.stringify(this.#heldNow()) : undefined);
+  /** What the table is asked for: the conditions, and the levers of a large panel that are held. */
+  wanted: Conditions = $derived(
+    this.#held === undefined
+      ? this.conditions
+      : { ...this.conditions, held: JSON.parse(this.#held) as Readonly<Record<string, number>> },
+  );
   table: StateTable | undefined = $derived(this.answer?.table);
   /** The circuit of the table on show, with the loads that it was computed for. */
   tabled: Circuit = $derived(this.answer ? loaded(this.answer.circuit, this.answer.conditions) : editor.circuit);
   findings = $derived(this.answer?.findings ?? []);
   /** True while the table on show belongs to an earlier form of the circuit. */
   stale = $derived(
-    this.answer !== undefined && (this.answer.circuit !== editor.circuit || this.answer.conditions !== this.conditions),
+    this.answer !== undefined && (this.answer.circuit !== editor.circuit || this.answer.conditions !== this.wanted),
   );
   /** Current row, 0-based; 0 while there is no table. */
   row = $derived(this.table ? this.table.rowOf(this.#positionsFor(this.table)) : 0);
@@ -111,6 +129,22 @@ class Session {
     return input ? clampTo(this.#levers[partId] ?? input.rest ?? 0, input.positions.length) : 0;
   }
 
+  /** Gives a lever of a large panel rows of its own, or holds it again. */
+  list(partId: string, on: boolean): void {
+    const others = this.#listed.filter((part) => part !== partId);
+    this.#listed = on ? [...others, partId] : others;
+  }
+
+  /** Whether one lever more can have rows of its own. */
+  canList({ positions }: CircuitInput): boolean {
+    return positions.length * this.listed.reduce((n, each) => n * each.positions.length, 1) <= MOST_LISTED;
+  }
+
+  #heldNow(): Record<string, number> {
+    const free = this.inputs.filter(({ part }) => !this.#listed.includes(part));
+    return Object.fromEntries(free.map(({ part }) => [part, this.positionOf(part)]));
+  }
+
   setPosition(partId: string, index: number): void {
     const input = this.inputs.find((each) => each.part === partId);
     if (!input || index < 0 || index >= input.positions.length) return;
@@ -127,6 +161,11 @@ class Session {
     this.#levers = levers;
   }
 
+  /** A position for each input of the circuit. */
+  goToPositions(positions: readonly number[]): void {
+    this.inputs.forEach(({ part }, i) => this.setPosition(part, positions[i] ?? 0));
+  }
+
   goToRow(row: number): void {
     const { table } = this;
     if (!table || row < 0 || row >= table.count) return;
@@ -134,7 +173,7 @@ class Session {
     const levers = { ...this.#levers };
     table.positionsOf(row).forEach((position, i) => {
       const input = table.data.inputs[i];
-      if (input) levers[input.part] = position;
+      if (input && this.answer?.conditions.held?.[input.part] === undefined) levers[input.part] = position;
     });
     this.#levers = levers;
   }
@@ -262,7 +301,11 @@ class Session {
         if (this.#job !== job) return;
         this.progress = undefined;
         if (error instanceof Cancelled) this.stopped = true;
-        else this.failure = sayError(error);
+        else {
+          this.failure = sayError(error);
+          // A table of another circuit must not pass for one of this.
+          this.answer = undefined;
+        }
       },
     );
   }
@@ -278,7 +321,7 @@ class Session {
   }
 
   again(): void {
-    this.compute(editor.circuit, this.conditions);
+    this.compute(editor.circuit, this.wanted);
   }
 
   /** The person stops a long computation; the last table stays on show. */

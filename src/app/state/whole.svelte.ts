@@ -22,11 +22,11 @@ class Whole {
   /** What a question is about now; undefined = there is nothing to ask about yet. */
   asked: Asked | undefined = $derived.by(() => {
     if (session.inputs.length === 0) return undefined;
-    // Without a table the circuit has too many combinations to list, and open paths answer.
-    if (session.failure !== undefined)
+    // With too many combinations to list, open paths answer; a table of some levers is no table of all.
+    if (session.large || session.failure !== undefined)
       return { circuit: editor.circuit, conditions: session.conditions, table: undefined };
     const { answer } = session;
-    return answer && { circuit: answer.circuit, conditions: answer.conditions, table: answer.table };
+    return answer && answer.conditions.held === undefined && { circuit: answer.circuit, conditions: answer.conditions, table: answer.table };
   });
 
   start(analyst: Analyst): void {
