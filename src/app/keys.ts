@@ -69,6 +69,7 @@ function command(event: KeyboardEvent): boolean {
   const key = event.key.toLowerCase();
   if (key === 's') void (event.shiftKey ? saveAs() : save());
   else if (key === 'o') void openFromDisk();
+  else if (key === 'p') view.open('print');
   else if (isTyping(event.target)) return false;
   else if (key === 'z') void (event.shiftKey ? editor.redo() : editor.undo());
   else if (key === 'y') editor.redo();

@@ -130,7 +130,7 @@ export const PILOT_DASH: readonly number[] = [4, 2.5];
 export const DRAIN_DASH: readonly number[] = [1.75, 1.75];
 
 /** Fallback list that any viewer can serve. */
-export const FONT_FAMILY = "Inter, 'Helvetica Neue', Arial, sans-serif";
+export const FONT_FAMILY = "Inter, 'Inter Variable', 'Helvetica Neue', Arial, sans-serif";
 /** Text sizes in pixels at 8 px a module. */
 export const TEXT_SIZES = { letter: 11, code: 12, label: 13, actuator: 15 } as const;
 

@@ -14,7 +14,7 @@ export interface TitleBlock {
   readonly document: string;
   /** Below the name: the state that is shown, the conditions. */
   readonly shows: string;
-  /** Such as `module 2.5 mm`; empty where nothing is drawn to a module. */
+  /** Such as `100 %, M 2.5 mm`, M being the module; empty where nothing is drawn to one. */
   readonly fit: string;
   readonly sheet: number;
   readonly sheets: number;
@@ -51,7 +51,7 @@ export function titleBlock(frame: Frame, block: TitleBlock, following: boolean):
   const cells = following ? followingCells(block) : wholeCells(block);
   return [
     { type: 'box', ...corner, width, height, pen: 'symbol', fill: 'paper' },
-    ...cells.flatMap((cell) => drawCell(cell, corner, width / WIDTH)),
+    ...cells.flatMap((cell) => drawCell(cell, corner, width / BLOCK_WIDTH)),
   ];
 }
 

@@ -6,6 +6,7 @@ import { FILLS, FONT_FAMILY, PALETTE, PENS, PRINT } from '../drawing/palette.ts'
 import type { Scene } from '../drawing/scene.ts';
 import type { Stroke } from '../drawing/strokes.ts';
 import { MODULE_PX, pathData } from '../drawing/strokes.ts';
+import { advance, isMeasured } from '../drawing/text-advance.ts';
 
 export interface SvgOptions {
   /** `print`: black on white. */
@@ -16,6 +17,21 @@ export interface SvgOptions {
   readonly margin?: number;
   /** What a reader who cannot see it is told; the circuit's size when absent. */
   readonly description?: string;
+  /** Text of a style element, such as a typeface to carry along. */
+  readonly style?: string;
+}
+
+/** A sheet of paper: what lies on it in its own modules, and a drawing set into it. */
+export interface SvgSheet {
+  readonly title: string;
+  readonly description: string;
+  /** In modules, and of one module in mm. */
+  readonly width: number;
+  readonly height: number;
+  readonly module: number;
+  readonly primitives: readonly Primitive[];
+  readonly strokes: readonly Stroke[];
+  readonly scene?: { readonly scene: Scene; readonly at: Point; readonly scale: number };
 }
 
 const JOINT_RADIUS = 0.36;
@@ -42,17 +58,56 @@ function allowedInXml(c: string): boolean {
 
 /** The scene as SVG text: plain colours, no style sheet, no script, nothing fetched; any viewer shows it. */
 export function sceneToSvg(scene: Scene, options: SvgOptions): string {
-  const pen = new Writer(options.theme);
+  const pen = new Writer(options.theme, options.standalone);
   const counts = `${scene.parts.length} parts, ${new Set(scene.lines.map((l) => l.line)).size} lines.`;
-  return svgElement(scene.title, options.description ?? counts, scene.bounds, options, pen, [
-    ...scene.enclosures.map((e) => pen.group('', e.primitives)),
-    ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
-    ...scene.dots.map(
-      (d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour('ink')}"/>`,
-    ),
-    ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
-    ...scene.labels.map((l) => pen.label(l)),
-  ]);
+  return svgElement(scene.title, options.description ?? counts, scene.bounds, options, pen, sceneElements(scene, pen));
+}
+
+const sceneElements = (scene: Scene, pen: Writer): string[] => [
+  ...scene.blocks.map((b) => pen.group('', b.primitives)),
+  ...scene.enclosures.map((e) => pen.group('', e.primitives)),
+  ...scene.lines.map((l) => `<g>${l.strokes.map((s) => pen.stroke(s)).join('')}</g>`),
+  ...scene.dots.map(
+    (d) => `<circle cx="${num(d.at.x)}" cy="${num(d.at.y)}" r="${JOINT_RADIUS}" fill="${pen.colour('ink')}"/>`,
+  ),
+  ...scene.parts.map((p) => pen.group(`<title>${escapeXml(p.label)}</title>`, p.primitives)),
+  ...scene.labels.map((l) => pen.label(l)),
+];
+
+export interface SheetOptions {
+  readonly theme: SvgOptions['theme'];
+  readonly standalone: boolean;
+  /** Text of a style element, such as a typeface to carry along. */
+  readonly style?: string;
+  /** Stands before every id, where several sheets share one document. */
+  readonly ids?: string;
+}
+
+/**
+ * A sheet of paper as SVG text, its size in mm. Each text says how long it is in the typeface of the screen, so that another
+ * typeface takes the same room.
+ */
+export function sheetToSvg(sheet: SvgSheet, { theme, standalone, style, ids }: SheetOptions): string {
+  const pen = new Writer(theme, true, ids);
+  const { width, height, module, scene } = sheet;
+  const body = [
+    `<title>${escapeXml(sheet.title)}</title>`,
+    `<desc>${escapeXml(sheet.description)}</desc>`,
+    ...(style === undefined ? [] : [`<style>${style}</style>`]),
+    `<rect width="${num(width)}" height="${num(height)}" fill="${pen.colour('paper')}"/>`,
+    ...(scene
+      ? [
+          `<g transform="translate(${xy(scene.at)}) scale(${num(scene.scale)})">`,
+          ...sceneElements(scene.scene, pen),
+          '</g>',
+        ]
+      : []),
+    pen.group('', sheet.primitives),
+    ...sheet.strokes.map((s) => pen.stroke(s)),
+  ];
+  const head = standalone ? '<?xml version="1.0" encoding="UTF-8"?>\n' : '';
+  const size = `width="${num(width * module)}mm" height="${num(height * module)}mm"`;
+  return `${head}<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${num(width)} ${num(height)}" ${size} role="img" font-family="${escapeXml(FONT_FAMILY)}">\n${body.join('\n')}\n</svg>\n`;
 }
 
 /** A list of primitives, such as a diagram, as SVG text of the same kind. `description` is what cannot be seen from the title. */
@@ -80,6 +135,7 @@ function svgElement(
   const body = [
     `<title>${escapeXml(title)}</title>`,
     `<desc>${escapeXml(description)}</desc>`,
+    ...(options.style === undefined ? [] : [`<style>${options.style}</style>`]),
     ...(options.standalone
       ? [
           `<rect x="${num(view[0])}" y="${num(view[1])}" width="${num(view[2])}" height="${num(view[3])}" fill="${pen.colour('paper')}"/>`,
@@ -97,9 +153,14 @@ const xy = (p: Point): string => `${num(p.x)} ${num(p.y)}`;
 
 class Writer {
   readonly #colours: Readonly<Record<ColourToken, string>>;
+  readonly #measured: boolean;
+  readonly #ids: string;
   #clips = 0;
 
-  constructor(theme: SvgOptions['theme']) {
+  /** `measured`: texts say how long they are. `ids` stands before every id. */
+  constructor(theme: SvgOptions['theme'], measured = false, ids = '') {
+    this.#measured = measured;
+    this.#ids = ids;
     this.#colours = theme === 'print' ? PRINT : PALETTE[theme];
   }
 
@@ -132,12 +193,12 @@ class Writer {
         return `<rect x="${num(p.x)}" y="${num(p.y)}" width="${num(p.width)}" height="${num(p.height)}"${corner} ${this.#paint(p.pen, p.fill)}/>`;
       }
       case 'text':
-        return `<text x="${num(p.at.x)}" y="${num(p.at.y)}" font-size="${num(p.size)}" text-anchor="${p.align}" font-weight="${p.weight ?? 400}" fill="${this.colour(p.tone ?? 'ink')}">${escapeXml(p.text)}</text>`;
+        return `<text x="${num(p.at.x)}" y="${num(p.at.y)}" font-size="${num(p.size)}" text-anchor="${p.align}" font-weight="${p.weight ?? 400}" fill="${this.colour(p.tone ?? 'ink')}"${this.#length(p.text, p.size, p.weight)}>${escapeXml(p.text)}</text>`;
       case 'group': {
         const move = p.shift.x !== 0 || p.shift.y !== 0 ? ` transform="translate(${xy(p.shift)})"` : '';
         const inner = `<g${move}>${p.children.map((c) => this.primitive(c)).join('')}</g>`;
         if (!p.clip) return inner;
-        const id = `clip-${this.#clips++}`;
+        const id = `${this.#ids}clip-${this.#clips++}`;
         const { x, y, width, height } = p.clip;
         const rect = `<rect x="${num(x)}" y="${num(y)}" width="${num(width)}" height="${num(height)}"/>`;
         return `<clipPath id="${id}">${rect}</clipPath><g clip-path="url(#${id})">${inner}</g>`;
@@ -148,9 +209,15 @@ class Writer {
   label(l: SceneLabel): string {
     const runs = l.runs.map((r, i) => {
       const gap = i > 0 ? ` dx="${num((r.size * 0.5) / MODULE_PX)}"` : '';
-      return `<tspan${gap} font-size="${num(r.size / MODULE_PX)}" font-weight="${r.weight}" fill="${this.colour(r.tone)}">${escapeXml(r.text)}</tspan>`;
+      const assumed = r.assumed ? ' font-style="italic" text-decoration="underline"' : '';
+      return `<tspan${gap}${assumed} font-size="${num(r.size / MODULE_PX)}" font-weight="${r.weight}" fill="${this.colour(r.tone)}"${this.#length(r.text, r.size / MODULE_PX, r.weight)}>${escapeXml(r.text)}</tspan>`;
     });
     return `<text x="${num(l.at.x)}" y="${num(l.at.y)}" text-anchor="${l.align}">${runs.join('')}</text>`;
+  }
+
+  #length(text: string, size: number, weight: 400 | 500 | 600 = 400): string {
+    if (!this.#measured || text.trim() !== text || text.length < 2 || !isMeasured(text)) return '';
+    return ` textLength="${num(advance(text, size, weight))}" lengthAdjust="spacingAndGlyphs"`;
   }
 
   #paint(pen: Pen, fill: Fill | undefined): string {

@@ -1,13 +1,9 @@
 import { version } from '../../../package.json';
-import type { Theme } from '../../drawing/palette.ts';
 import { writeCsv } from '../../report/csv.ts';
 import { writeJson } from '../../report/json.ts';
 import { writeMarkdown } from '../../report/markdown.ts';
 import { makeReport } from '../../report/rows.ts';
 import type { Report } from '../../report/rows.ts';
-import { sceneToSvg } from '../../report/svg.ts';
-import { drawing } from '../sheet/sheet-drawing.svelte.ts';
-import { editor } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { download, fileStem } from './save.ts';
@@ -22,11 +18,6 @@ const WRITERS: Readonly<
 const SLICE_MS = 12;
 /** Strings join into one piece of the file at this length, so that a million rows are not a million pieces. */
 const PIECE = 1 << 20;
-
-export function exportDrawing(theme: Theme): void {
-  const svg = sceneToSvg(drawing.scene, { theme, standalone: true });
-  download(`${fileStem(editor.circuit.name)}.svg`, svg, 'image/svg+xml');
-}
 
 export async function exportTable(form: keyof typeof WRITERS): Promise<void> {
   const { answer } = session;

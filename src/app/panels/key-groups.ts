@@ -43,6 +43,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['Ctrl Shift Z', 'Redo'],
     ['Ctrl S', 'Save; with Shift, save as'],
     ['Ctrl O', 'Open'],
+    ['Ctrl P', 'Drawing and print: title block, paper, part codes, what is printed'],
     ['F6', 'Next band or panel; with Shift, the one before'],
     ['W L F E', 'Why, lines, findings, settings'],
     ['O U B', 'Conditions, rules, bleed-down'],

@@ -13,7 +13,8 @@ export type PanelId =
   | 'bleed'
   | 'influence'
   | 'moves'
-  | 'loss';
+  | 'loss'
+  | 'print';
 export type Page = 'sheet' | 'table' | 'plans';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -51,6 +52,7 @@ class View {
     influence: false,
     moves: false,
     loss: false,
+    print: false,
   });
 
   /** Panels from the lowest to the one on top. */

@@ -1,0 +1,116 @@
+import { version } from '../../../package.json';
+import { DEFAULT_PAPER } from '../../circuit/paper.ts';
+import { TEXT_SIZES } from '../../drawing/palette.ts';
+import { buildScene } from '../../drawing/scene.ts';
+import type { Scene } from '../../drawing/scene.ts';
+import { bleedPages } from '../../report/pages/bleed.ts';
+import type { DrawingSheet, PrintedPage, Section } from '../../report/pages/pages.ts';
+import { hasRoomBeside, joined, printedPages } from '../../report/pages/pages.ts';
+import {
+  chartSection,
+  findingsSection,
+  notesSection,
+  partListBlock,
+  partListSection,
+} from '../../report/pages/sections.ts';
+import { makeReport } from '../../report/rows.ts';
+import type { Report } from '../../report/rows.ts';
+import type { BleedAnswer } from '../../worker/client.ts';
+import { linePressures } from '../sheet/line-pressures.ts';
+import { drawing } from '../sheet/sheet-drawing.svelte.ts';
+import { sheetView } from '../sheet/sheet-view.svelte.ts';
+import { editor } from '../state/editor.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { view } from '../state/view.svelte.ts';
+import type { Choices } from './choice.svelte.ts';
+
+/** The sheet as it stands in the row on show, with the pressures that the screen writes at its lines. */
+export function sceneInRow(): Scene {
+  const { scene, pressureSpots, assumed } = drawing;
+  if (!view.sheetFigures) return scene;
+  const pressures = linePressures(assumed).flatMap(({ line, text, assumed: isAssumed }): Scene['labels'][number][] => {
+    const spot = pressureSpots.get(line);
+    if (!spot) return [];
+    return [
+      {
+        role: 'line',
+        owner: `pressure ${line}`,
+        at: spot.at,
+        align: spot.align,
+        runs: [{ text, size: TEXT_SIZES.code, weight: 500, tone: 'ink', assumed: isAssumed }],
+      },
+    ];
+  });
+  return { ...scene, labels: [...scene.labels, ...pressures] };
+}
+
+/** The sheet at rest, without anything that a state would show. */
+export const plainScene = (): Scene => buildScene(drawing.circuit, drawing.routes, { hops: sheetView.hops });
+
+/** `V1 raise, V2 hold`. */
+function sayPositions(positionOf: (index: number, part: string) => number): string {
+  return session.inputs
+    .map(({ part, label, positions }, i) => `${label} ${positions[positionOf(i, part)] ?? ''}`)
+    .join(', ');
+}
+
+/** What the drawing shows. */
+export function sayShown(how: Choices['drawing']): string {
+  if (how !== 'row') return 'Every valve at rest';
+  const row = session.table ? `Row ${(session.row + 1).toLocaleString('en')}: ` : '';
+  const levers = sayPositions((_, part) => session.positionOf(part));
+  return `${row}${levers === '' ? '' : `${levers}; `}pumps ${session.conditions.pumps}`;
+}
+
+function report(): Report | undefined {
+  const { answer } = session;
+  if (!answer) return undefined;
+  const { table, findings, circuit, conditions } = answer;
+  return makeReport({ version, circuit, conditions, table, findings });
+}
+
+/** All sheets that are chosen. */
+export function chosenPages(choices: Choices): PrintedPage[] {
+  const { circuit } = editor;
+  const paper = circuit.paper ?? DEFAULT_PAPER;
+  const table = choices.chart || choices.findings ? report() : undefined;
+  const list = partListBlock(circuit);
+  const beside =
+    choices.partsOn === 'drawing' &&
+    choices.drawing !== 'none' &&
+    circuit.parts.length > 0 &&
+    hasRoomBeside(paper, list);
+  const prose: (Section | undefined)[] = [
+    choices.notes ? notesSection(circuit) : undefined,
+    choices.findings && table ? findingsSection(table.findings) : undefined,
+  ];
+  const sheet: DrawingSheet | undefined =
+    choices.drawing === 'none'
+      ? undefined
+      : {
+          scene: choices.drawing === 'row' ? sceneInRow() : plainScene(),
+          shows: sayShown(choices.drawing),
+          key: choices.drawing === 'row',
+          ...(beside && { beside: list }),
+        };
+  return printedPages({
+    circuit,
+    paper,
+    ...(sheet && { drawing: sheet }),
+    sections: [
+      ...(choices.chart && table ? [chartSection(table)] : []),
+      ...joined(prose.flatMap((section) => section ?? [])),
+      ...(choices.partsOn !== 'none' && !beside && circuit.parts.length > 0 ? [partListSection(circuit)] : []),
+    ],
+  });
+}
+
+/** The bleed-down list as sheets to take along. */
+export function pagesOfPlan(answer: BleedAnswer): PrintedPage[] {
+  const state = session.inputs.map(({ label, positions }, i): [string, string] => [
+    label,
+    positions[answer.positions[i] ?? 0] ?? '',
+  ]);
+  const { circuit, conditions } = session.answer ?? { circuit: editor.circuit, conditions: session.conditions };
+  return bleedPages({ circuit, conditions, answer, state: Object.fromEntries(state) });
+}
