@@ -24,8 +24,8 @@ export interface OutcomeSource {
   readonly of: (kind: OutcomeOf, index: number) => readonly OutcomeSet[];
   /** Kinds of blockage of a line; in the other combinations it is not blocked. */
   readonly blocked: (line: number) => readonly OutcomeSet[];
-  /** Reasons for pressure trapped in a line, which may hold at once; undefined = open paths alone do not say. */
-  readonly trapped: (line: number) => readonly OutcomeSet[] | undefined;
+  /** Reasons for pressure trapped in a line, which may hold at once. */
+  readonly trapped: (line: number) => readonly OutcomeSet[];
 }
 
 type Planes = readonly (BitSet | undefined)[] | undefined;
@@ -83,7 +83,7 @@ export function pathOutcomes(net: Network, conditions: PathConditions, paths: Op
     sets: paths.sets,
     of,
     blocked: (line) => list(panel.lines.blocked[line], BLOCKED_KINDS),
-    trapped: () => undefined,
+    trapped: (line) => list(panel.traps[line], TRAP_REASONS),
   };
 }
 

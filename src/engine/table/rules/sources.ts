@@ -10,7 +10,6 @@ import { PanelSets } from '../sets/panel-sets.ts';
 import type { Plane, TableData } from '../table-data.ts';
 import { ACTUATOR_VERDICTS, BLOCKED_KINDS, LINE_CLASSES, PUMP_VERDICTS, TRAP_REASONS } from '../words.ts';
 import type { RuleSource, Truth } from './evaluate.ts';
-import { sealedSets } from './sealed-sets.ts';
 
 const unsolved = (): never => {
   throw new Error('pressures and speeds were not solved for this question');
@@ -74,14 +73,12 @@ export class NeedsTable extends Error {
 
 /**
  * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, verdicts of actuators and
- * pumps, line classes, blocked lines, and trapped lines as far as open paths are sure of them. Throws `NeedsTable` at
- * everything else, and `TooManyNodes` where motions are too entangled.
+ * pumps, line classes, blocked and trapped lines. Throws `NeedsTable` at everything else, and `TooManyNodes` where motions are too entangled.
  */
 export function openPathSource(net: Network, conditions: PathConditions, paths: OpenPathSets): RuleSource<Diagram> {
   const { sets } = paths;
   // Motions take more than open paths, so they are sought when a rule speaks of them.
   const panel = new PanelSets(net, conditions, paths);
-  const sealed = sealedSets(net, conditions, paths, () => panel.motions);
   const known = (set: Diagram): Truth<Diagram> => ({ sure: set, maybe: set });
   const union = <W>(found: readonly Diagram[] | undefined, words: readonly W[], wanted: readonly W[]): Diagram =>
     wanted.reduce((all: Diagram, word) => sets.or(all, found?.[words.indexOf(word)] ?? NONE), NONE);
@@ -124,7 +121,10 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
       );
       return { sure: sets.minus(found, panel.open), maybe: sets.or(found, perhaps) };
     },
-    trapped: sealed.trapped,
+    trapped: (i, reasons) => {
+      const found = union(panel.traps[i], TRAP_REASONS, reasons);
+      return { sure: sets.minus(found, panel.moving), maybe: found };
+    },
     figure: ({ type }) => {
       throw new NeedsTable(type === 'pressure' ? 'A pressure' : 'A speed');
     },

@@ -3,6 +3,8 @@ import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { NONE } from '../../paths/diagrams/diagrams.ts';
 import { motionSets } from '../../paths/diagrams/motion-sets.ts';
 import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
+import { oneMoveFrom } from '../../paths/diagrams/one-move.ts';
+import { openPathsOver } from '../../paths/diagrams/open-paths.ts';
 import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
 import type { PathConditions } from '../../paths/reach.ts';
 import { actuatorSets } from './actuator-sets.ts';
@@ -10,6 +12,8 @@ import type { ActuatorSets } from './actuator-sets.ts';
 import { lineSets } from './line-sets.ts';
 import type { LineOutcomeSets } from './line-sets.ts';
 import { pumpSets } from './pump-sets.ts';
+import { trapSets } from './trap-sets.ts';
+import type { PanelState } from './trap-sets.ts';
 
 /**
  * Outcomes of a panel of any size by open paths, each sought when it is first asked for: the sets that the
@@ -23,7 +27,9 @@ export class PanelSets {
   readonly #pumps = new Map<number, readonly Diagram[]>();
   #motions: MotionSets | undefined;
   #lines: LineOutcomeSets | undefined;
+  #traps: readonly (readonly Diagram[])[] | undefined;
   #open: Diagram | undefined;
+  #moving: Diagram | undefined;
 
   constructor(net: Network, conditions: PathConditions, paths: OpenPathSets) {
     this.net = net;
@@ -55,6 +61,37 @@ export class PanelSets {
 
   get lines(): LineOutcomeSets {
     return (this.#lines ??= lineSets(this.net, this.conditions, this.paths, this.motions));
+  }
+
+  /** By line and index of the reason. With the pumps stopped this also takes what they do while they run. */
+  get traps(): readonly (readonly Diagram[])[] {
+    const { net, conditions, paths } = this;
+    const asked: PanelState = { paths, motions: this.motions, lines: this.lines };
+    return (this.#traps ??= trapSets(
+      net,
+      conditions,
+      (set) => oneMoveFrom(paths.sets, set),
+      this.#running(asked),
+      asked,
+    ));
+  }
+
+  #running(asked: PanelState): PanelState {
+    const { net, conditions, paths } = this;
+    if (conditions.pumpsRunning) return asked;
+    const where = { ...conditions, pumpsRunning: true };
+    const found = openPathsOver(net, where, paths.sets);
+    const motions = motionSets(net, where, found);
+    return { paths: found, motions, lines: lineSets(net, where, found, motions) };
+  }
+
+  /** Combinations in which something moves, or may move by pressures: oil may then pass where open paths see a dead end. */
+  get moving(): Diagram {
+    const { sets } = this.paths;
+    return (this.#moving ??= this.motions.actuators.reduce(
+      (all, { out, in: inward }) => sets.or(all, sets.or(out, inward)),
+      this.open,
+    ));
   }
 
   /** Combinations in which some motion is left to the pressures, or nothing settles it. */
