@@ -1,8 +1,7 @@
 import { WIDTH, flowScale } from './assemble.ts';
 import type { FlowSystem } from './assemble.ts';
 import { pull } from './couplers.ts';
-import { NEAR_IDEAL, driveAt, stiffness } from './laws.ts';
-import type { Law } from './laws.ts';
+import { NEAR_IDEAL } from './laws.ts';
 
 /** Evidence that pressures and flows belong together. Flows are relative to the largest pump flow (at least 1 L/min). */
 export interface Certificate {
@@ -35,6 +34,18 @@ export function pilotLimit(system: FlowSystem, i: number, p: ArrayLike<number>):
   return Math.max(0, signal * (slope[i] as number));
 }
 
+/** Drive that the law at `l` asks for at `x`; at rest the nearest one to `u`. */
+function driveAt(law: Float64Array, l: number, x: number, u: number): number {
+  const forward = law[l + 2] as number;
+  const backward = law[l + 3] as number;
+  if (x === 0) return Math.min(forward, Math.max(backward, u));
+  return (x > 0 ? forward : backward) + (law[l + 4] as number) * x + (law[l + 5] as number) * x * Math.abs(x);
+}
+
+/** Slope du/dx of it, away from its bounds. */
+const stiffness = (law: Float64Array, l: number, x: number): number =>
+  (law[l + 4] as number) + 2 * (law[l + 5] as number) * Math.abs(x);
+
 /** Checks `p` (n + 1 pressures, the tank's last) and `x` against the problem as it now stands in `system`. */
 export function certify(
   system: FlowSystem,
@@ -66,19 +77,13 @@ export function certify(
       cb = law[at + 1] as number;
     const pilot = pilots.of[j] as number;
     const cap = pilot === -1 ? Infinity : pilotLimit(system, pilot, p);
-    const own: Law = {
-      forward: law[at + 2] as number,
-      backward: law[at + 3] as number,
-      r: law[at + 4] as number,
-      k: law[at + 5] as number,
-      lo: law[at + 6] as number,
-      hi: Math.min(cap, law[at + 7] as number),
-    };
+    const lo = law[at + 6] as number,
+      hi = Math.min(cap, law[at + 7] as number);
     const flow = x[j] as number;
     const u = ca * (p[a] as number) + cb * (p[b] as number);
-    const moved = flow + (u - driveAt(own, flow, u)) / stiffness(own, flow);
+    const moved = flow + (u - driveAt(law, at, flow, u)) / stiffness(law, at, flow);
     const area = Math.max(Math.abs(ca), Math.abs(cb));
-    const wrong = (area * Math.abs(flow - Math.min(own.hi, Math.max(own.lo, moved)))) / scale;
+    const wrong = (area * Math.abs(flow - Math.min(hi, Math.max(lo, moved)))) / scale;
     if (!(wrong <= residual)) {
       residual = wrong;
       worstBranch = j;

@@ -21,6 +21,8 @@ export interface FlowModel {
   /** Per actuator, relief: its branch. Per pump: its number. */
   readonly actuators: readonly number[];
   readonly reliefs: readonly number[];
+  /** Per relief: the branch of its pilot stage; -1 without. */
+  readonly vents: readonly number[];
   /** Per pressure valve of the network: its branch; -1 where both ends are one line. */
   readonly valves: readonly number[];
   readonly pumps: readonly number[];
@@ -61,9 +63,9 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
       ? builder.pilotRelief(id, from, to, at(relief.vent.line), relief.vent.pressure, override)
       : builder.relief(id, from, to, relief.setting, override);
   });
-  for (const { part, to, setting, vent } of net.reliefs) {
-    if (vent) builder.relief(`${label(part)} pilot`, at(vent.line), at(to), setting - vent.pressure);
-  }
+  const vents = net.reliefs.map(({ part, to, setting, vent }) =>
+    vent ? builder.relief(`${label(part)} pilot`, at(vent.line), at(to), setting - vent.pressure) : -1,
+  );
   const stores = net.accumulators.map((store) =>
     builder.accumulator(label(store.part), at(store.line), store.charged ? store.pressure : store.precharge),
   );
@@ -107,7 +109,7 @@ export function compileFlow(net: Network, conditions: FlowConditions): FlowModel
   });
   const problem = { ...built, branches };
   const solver = new FlowSolver(problem);
-  return { solver, problem, lineOf, actuators, reliefs, valves, pumps, stores, paths, switched };
+  return { solver, problem, lineOf, actuators, reliefs, vents, valves, pumps, stores, paths, switched };
 }
 
 /** A valve that closes is one that opens while its signals, turned round, are above the setting, turned round. */

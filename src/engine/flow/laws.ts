@@ -73,13 +73,3 @@ export function throughput(law: Law, u: number): number {
   }
   return Math.min(hi, Math.max(lo, 0));
 }
-
-/** Drive that the law itself asks for at `x`; at rest the nearest one to `u`. */
-export function driveAt(law: Law, x: number, u: number): number {
-  if (x > 0) return law.forward + law.r * x + law.k * x * x;
-  if (x < 0) return law.backward + law.r * x - law.k * x * x;
-  return Math.min(law.forward, Math.max(law.backward, u));
-}
-
-/** Slope du/dx of the law at `x`, away from its bounds. */
-export const stiffness = (law: Law, x: number): number => law.r + 2 * law.k * Math.abs(x);

@@ -1,3 +1,4 @@
+import { isGood } from './certificate.ts';
 import type { Certificate } from './certificate.ts';
 import { NEAR_IDEAL, SANE } from './laws.ts';
 import type { Branch, BranchKind, Contradiction, FlowProblem } from './problem.ts';
@@ -110,18 +111,19 @@ export function describe(solver: FlowSolver, solution: Solution): FlowResult {
       };
     case 'unbounded':
       return unbounded(solver, solution);
-    case 'not converged': {
-      const why = solution.cancelled ? 'The calculation was stopped before' : 'The calculation ended before';
-      return {
-        status: 'not converged',
-        cancelled: solution.cancelled,
-        certificate: solver.certificate(),
-        words: `${why} a steady state was found.`,
-      };
+    case 'not converged':
+      return notConverged(solution, solver.certificate());
+    case 'solved': {
+      // No figure goes out without its evidence.
+      const certificate = solver.certificate();
+      return isGood(certificate) ? solved(solver, solution, problem, certificate) : notConverged(solution, certificate);
     }
-    case 'solved':
-      return solved(solver, solution, problem);
   }
+}
+
+function notConverged({ cancelled }: Solution, certificate: Certificate): FlowResult {
+  const why = cancelled ? 'The calculation was stopped before' : 'The calculation ended before';
+  return { status: 'not converged', cancelled, certificate, words: `${why} a steady state was found.` };
 }
 
 function unbounded(solver: FlowSolver, { pressures, throughputs }: Solution): FlowResult {
@@ -167,40 +169,22 @@ function unbounded(solver: FlowSolver, { pressures, throughputs }: Solution): Fl
 
 const isActuator = (b: Branch): boolean => b.kind === 'cylinder' || b.kind === 'motor';
 
-function solved(solver: FlowSolver, { pressures, throughputs }: Solution, problem: FlowProblem): Solved {
-  const { on, pumpFlow } = solver.system;
+/** Tables need neither branches nor powers of most rows: these are worked out when they are read. */
+function solved(solver: FlowSolver, solution: Solution, problem: FlowProblem, certificate: Certificate): Solved {
+  const on = solver.system.on.slice();
+  const { pumpFlow } = solver.system;
+  const pressures = solution.pressures.slice();
+  const throughputs = solution.throughputs.slice();
   const at = (line: number): number => (line === TANK ? 0 : (pressures[line] as number));
   const lines = problem.lines.map((name, i): LineState => {
     const pressure = at(i);
     return { name, pressure: Math.max(0, pressure), voidFlow: Math.max(0, -pressure) / NEAR_IDEAL.void };
   });
-  const branches: BranchState[] = [];
   const actuators: ActuatorState[] = [];
-  let loads = 0,
-    stores = 0,
-    useful = 0,
-    lost = 0;
-  problem.branches.forEach((b, j) => {
-    if (on[j] !== 1 || b.kind === 'compensator') return;
-    const x = throughputs[j] as number;
-    const drive = b.ca * at(b.a) + b.cb * at(b.b);
-    if (isActuator(b)) {
-      const state = actuatorState(b, x, drive);
-      actuators.push(state);
-      useful += Math.max(0, state.useful);
-      loads += Math.max(0, -state.useful);
-      stores -= state.sprung;
-      lost += state.lost;
-      return;
-    }
-    const heat = b.kind === 'accumulator' ? (drive - b.forward) * x : drive * x;
-    if (b.kind === 'accumulator') stores -= b.forward * x;
-    lost += heat;
-    branches.push({ id: b.id, kind: b.kind, flow: x, drop: drive, lost: heat });
-  });
-  for (const { lines: ends, factors, r } of problem.couplers ?? []) {
-    const drive = ends.reduce((sum, line, i) => sum + (factors[i] as number) * at(line), 0);
-    lost += (drive * drive) / r;
+  for (let j = 0; j < problem.branches.length; j++) {
+    const b = problem.branches[j] as Branch;
+    if (on[j] === 1 && isActuator(b))
+      actuators.push(actuatorState(b, throughputs[j] as number, b.ca * at(b.a) + b.cb * at(b.b)));
   }
   const pumps = problem.pumps.map((pump, i): PumpState => {
     const back =
@@ -208,12 +192,65 @@ function solved(solver: FlowSolver, { pressures, throughputs }: Solution, proble
     const delivered = (pumpFlow[i] as number) - back;
     return { id: pump.id, pressure: at(pump.line), delivered, power: at(pump.line) * delivered };
   });
-  for (let i = 0; i < problem.lines.length; i++) {
+  let branches: readonly BranchState[] | undefined;
+  let power: PowerBalance | undefined;
+  return {
+    status: 'solved',
+    lines,
+    get branches() {
+      return (branches ??= branchStates(problem, on, at, throughputs));
+    },
+    actuators,
+    pumps,
+    get power() {
+      return (power ??= powerBalance(problem, at, throughputs, this.branches, actuators, pumps));
+    },
+    certificate,
+  };
+}
+
+function branchStates(
+  problem: FlowProblem,
+  on: Uint8Array,
+  at: (line: number) => number,
+  throughputs: Float64Array,
+): BranchState[] {
+  return problem.branches.flatMap((b, j): BranchState[] => {
+    if (on[j] !== 1 || b.kind === 'compensator' || isActuator(b)) return [];
+    const flow = throughputs[j] as number;
+    const drop = b.ca * at(b.a) + b.cb * at(b.b);
+    const lost = b.kind === 'accumulator' ? (drop - b.forward) * flow : drop * flow;
+    return [{ id: b.id, kind: b.kind, flow, drop, lost }];
+  });
+}
+
+function powerBalance(
+  problem: FlowProblem,
+  at: (line: number) => number,
+  throughputs: Float64Array,
+  branches: readonly BranchState[],
+  actuators: readonly ActuatorState[],
+  pumps: readonly PumpState[],
+): PowerBalance {
+  const sum = (values: readonly number[]): number => values.reduce((total, value) => total + value, 0);
+  const charged = problem.branches.map((b, j) =>
+    b.kind === 'accumulator' ? b.forward * (throughputs[j] as number) : 0,
+  );
+  const coupled = (problem.couplers ?? []).map(({ lines, factors, r }) => {
+    const drive = sum(lines.map((line, i) => (factors[i] as number) * at(line)));
+    return (drive * drive) / r;
+  });
+  const leaked = problem.lines.map((_, i) => {
     const pressure = at(i);
-    lost += pressure * pressure * problem.leak + (pressure < 0 ? (pressure * pressure) / NEAR_IDEAL.void : 0);
-  }
-  const power = { pumps: pumps.reduce((sum, pump) => sum + pump.power, 0), loads, stores, useful, lost };
-  return { status: 'solved', lines, branches, actuators, pumps, power, certificate: solver.certificate() };
+    return pressure * pressure * problem.leak + (pressure < 0 ? (pressure * pressure) / NEAR_IDEAL.void : 0);
+  });
+  return {
+    pumps: sum(pumps.map((pump) => pump.power)),
+    loads: sum(actuators.map(({ useful }) => Math.max(0, -useful))),
+    stores: -sum(actuators.map(({ sprung }) => sprung)) - sum(charged),
+    useful: sum(actuators.map(({ useful }) => Math.max(0, useful))),
+    lost: sum([...branches, ...actuators].map(({ lost }) => lost)) + sum(coupled) + sum(leaked),
+  };
 }
 
 function actuatorState(b: Branch, x: number, drive: number): ActuatorState {

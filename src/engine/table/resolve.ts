@@ -4,7 +4,7 @@ import { compileFlow, setState } from '../flow/compile.ts';
 import type { FlowModel } from '../flow/compile.ts';
 import { describe } from '../flow/result.ts';
 import type { FlowResult, Solved } from '../flow/result.ts';
-import { ties } from '../flow/ties.ts';
+import { TieFinder } from '../flow/ties.ts';
 import type { SettledBlock } from '../paths/block.ts';
 import { settingOf } from '../paths/dependents.ts';
 import type { DependentPlanes } from '../paths/edges.ts';
@@ -28,8 +28,10 @@ const UNLOADED = 0.1;
 /** What the pressures say about one row. */
 export interface PressureAnswer {
   readonly result: FlowResult;
-  /** Per actuator: its speed rests on the losses, whatever else drives it. Costs several solves; to be asked before the next row. */
-  readonly swings: () => readonly boolean[];
+  /** Which of these actuators' speeds rest on the losses; empty unless two do. Costs several solves; to be asked before the next row. */
+  readonly swings: (rivals: readonly number[]) => readonly number[];
+  /** Per actuator: it moves, or the losses could make it. */
+  readonly wavers: (actuator: number) => boolean;
   /** m³/s that pass each line of the problem on the way to or from something that moves; relief flow is none of it. */
   readonly through: Float64Array;
   /** Through-put of every branch of the problem: m³/s, m/s or rad/s; 0 where it is off. */
@@ -45,11 +47,13 @@ export class PressureSolver {
   readonly #strides: readonly number[];
   #warm: Float64Array | undefined;
   #solves = 0;
+  readonly #ties: TieFinder;
 
   constructor(net: Network, conditions: PathConditions, settings?: DependentPlanes) {
     this.net = net;
     this.settings = settings;
     this.model = compileFlow(net, conditions);
+    this.#ties = new TieFinder(this.model.solver);
     this.#strides = strides(net.inputs.map((input) => input.positions.length));
   }
 
@@ -72,21 +76,28 @@ export class PressureSolver {
     const warm = result.status === 'solved' ? Float64Array.from(solution.pressures) : undefined;
     this.#warm = warm;
     const solve = ++this.#solves;
-    let swings: readonly boolean[] | undefined;
+    let wavers: ((branch: number) => boolean) | undefined;
+    const inTime = (): void => {
+      if (this.#solves !== solve) throw new Error('Asked after another row was solved.');
+    };
+    const branchOf = (actuator: number): number => model.actuators[actuator] as number;
     return {
       result,
       through,
       flows,
-      swings: () => {
-        if (swings === undefined && this.#solves !== solve) throw new Error('Asked after another row was solved.');
-        return (swings ??= this.#swings(warm));
+      wavers: (actuator) => {
+        if (warm === undefined) return false;
+        if (wavers === undefined) inTime();
+        wavers ??= this.#ties.wavers(warm, flows);
+        return wavers(branchOf(actuator));
+      },
+      swings: (rivals) => {
+        inTime();
+        if (warm === undefined || rivals.length < 2) return [];
+        const found = this.#ties.find(warm, { rivals: rivals.map(branchOf), flows });
+        return found.length < 2 ? [] : rivals.filter((i) => found.includes(branchOf(i)));
       },
     };
-  }
-
-  #swings(warm: Float64Array | undefined): readonly boolean[] {
-    const swinging = warm === undefined ? [] : ties(this.model.solver, warm);
-    return this.model.actuators.map((branch) => swinging.includes(branch));
   }
 
   /** True if oil on its way to or from a moving actuator passes this line. */
@@ -121,17 +132,14 @@ export class PressureSolver {
   }
 
   /** m³/s into an accumulator of the network; negative while it gives. */
-  storeFlow(solved: Solved, store: number): number {
-    const id = this.model.problem.branches[this.model.stores[store] as number]?.id;
-    return solved.branches.find((entry) => entry.kind === 'accumulator' && entry.id === id)?.flow ?? 0;
+  storeFlow({ flows }: PressureAnswer, store: number): number {
+    return flows[this.model.stores[store] as number] ?? 0;
   }
 
   /** m³/s over a relief valve of the network. */
-  reliefFlow(solved: Solved, relief: number): number {
-    const id = this.model.problem.branches[this.model.reliefs[relief] as number]?.id;
-    const over = (name: string | undefined): number =>
-      Math.max(0, solved.branches.find((entry) => entry.kind === 'relief' && entry.id === name)?.flow ?? 0);
-    return over(id) + (this.net.reliefs[relief]?.vent ? over(`${id ?? ''} pilot`) : 0);
+  reliefFlow({ flows }: PressureAnswer, relief: number): number {
+    const { reliefs, vents } = this.model;
+    return Math.max(0, flows[reliefs[relief] as number] ?? 0) + Math.max(0, flows[vents[relief] as number] ?? 0);
   }
 }
 
@@ -208,22 +216,24 @@ export function actuatorByPressure(
  * feeds them, or that stand, and whose speeds rest on the losses. One that its load drives is no rival:
  * it runs as fast as the losses let it, and that is an answer.
  */
-export function equalRivals(solver: PressureSolver, bits: BlockBits, { result, swings }: PressureAnswer): number[] {
+export function equalRivals(
+  solver: PressureSolver,
+  bits: BlockBits,
+  { result, swings, wavers }: PressureAnswer,
+): readonly number[] {
   if (result.status !== 'solved') return [];
   const { motion } = bits.block;
   const driven: number[] = [];
   for (let i = 0; i < solver.net.actuators.length; i++) {
     const actuator = solver.net.actuators[i] as NetActuator;
-    if (!on(bits, motion.rests[i]?.[RIVALS])) continue;
+    if (!on(bits, motion.rests[i]?.[RIVALS]) || !wavers(i)) continue;
     const speed = result.actuators[i]?.speed ?? 0;
     const out = on(bits, motion.out[i]);
     if ((out ? speed >= 0 : speed <= 0) && solver.pressure(result, out ? actuator.a : actuator.b) > PRESSED)
       driven.push(i);
   }
   // What swings costs several solves, and one alone has no rival.
-  if (driven.length < 2) return [];
-  const found = driven.filter((i) => swings()[i]);
-  return found.length > 1 ? found : [];
+  return driven.length < 2 ? [] : swings(driven);
 }
 
 /** An actuator that open paths leave free, and that the back pressure of a flow to tank moves all the same (p·Ar, law). */
@@ -248,7 +258,7 @@ export function givesWay(
   const { result } = answer;
   if (!actuator || way === undefined || result.status !== 'solved') return undefined;
   const pushed = actuator.push.way === way || actuator.push.way === 'both';
-  const reliefs = solver.net.reliefs.flatMap((_, i) => (solver.reliefFlow(result, i) > MOTION ? [i] : []));
+  const reliefs = solver.net.reliefs.flatMap((_, i) => (solver.reliefFlow(answer, i) > MOTION ? [i] : []));
   if (!pushed || reliefs.length === 0) return undefined;
   const words = motionWords(actuator);
   const grows = way === 'out' ? actuator.a : actuator.b;
@@ -277,9 +287,10 @@ export function pumpByPressure(
   index: number,
   solver: PressureSolver,
   bits: BlockBits,
-  { result }: PressureAnswer,
+  answer: PressureAnswer,
 ): PumpVerdict | undefined {
   const { net } = solver;
+  const { result } = answer;
   const pump = net.pumps[index];
   if (!pump || result.status !== 'solved') return undefined;
   const state = result.pumps[index];
@@ -299,9 +310,9 @@ export function pumpByPressure(
     if (state.pressure + PRESSED < solver.pressure(result, grows)) return false;
     return offered(grows) || (overValve(grows) && solver.pressure(result, grows) > PRESSED);
   });
-  const charges = net.accumulators.some((store, i) => offered(store.line) && solver.storeFlow(result, i) > MOTION);
+  const charges = net.accumulators.some((store, i) => offered(store.line) && solver.storeFlow(answer, i) > MOTION);
   const mine = net.reliefs.flatMap((relief, i) => (relief.from === pump.outlet || offered(relief.from) ? [i] : []));
-  const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(result, i), 0);
+  const spilled = mine.reduce((sum, i) => sum + solver.reliefFlow(answer, i), 0);
   if (
     pump.compensated &&
     !drives &&

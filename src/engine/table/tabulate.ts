@@ -190,7 +190,14 @@ function runBlocks(
     let flowing: Resolved['flowing'] = new Map();
     if (allowance.rows > 0) {
       pressures ??= new PressureSolver(net, conditions, dependents?.planes);
-      const resolved = resolveBlock(block, actuators, pumps, pressures, allowance, budget);
+      const resolved = resolveBlock(
+        block,
+        actuators,
+        pumps,
+        pressures,
+        allowance,
+        part(budget, at / words, (at + width) / words),
+      );
       flowing = resolved.flowing;
       sheets.valued.write(0, 0, at, resolved.valued);
       resolved.actuators.forEach((plane, i) => sheets.valuedActuators.write(i, 0, at, plane));
