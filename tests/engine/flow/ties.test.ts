@@ -23,7 +23,7 @@ function circuit(
   b.cylinder('falls', high, TANK, { areaA: 20 * CM2, areaB: 0, load: { pressing: 2000 * DAN } });
   const held = b.line('held');
   b.relief('R2', held, TANK, 150 * BAR);
-  b.cylinder('stands', held, TANK, { areaA: 20 * CM2, areaB: 0, load: { resisting: 500 * DAN } });
+  b.cylinder('stands', held, TANK, { areaA: 20 * CM2, areaB: 0, load: { resisting: 6000 * DAN } });
   const solver = new FlowSolver(b.build());
   return { solver, branch: (id) => solver.system.problem.branches.findIndex((each) => each.id === id) };
 }
