@@ -1,11 +1,12 @@
 import type { Conditions } from '../analysis/results.ts';
 import type { LoadCase } from '../circuit/model.ts';
 
-/** `pumps running, load case Full tub`; a circuit without load cases has nothing to tell them apart. */
-export function sayConditions({ pumps, loadCase }: Conditions, cases: readonly LoadCase[] = []): string {
+/** `pumps running, load case Full tub, 17 levers held`; a circuit without load cases has nothing to tell them apart. */
+export function sayConditions({ pumps, loadCase, held }: Conditions, cases: readonly LoadCase[] = []): string {
   const name = nameOfCase(loadCase, cases);
   const loads = name === undefined ? (cases.length > 0 ? ', loads as the parts say' : '') : `, load case ${name}`;
-  return `pumps ${pumps}${loads}`;
+  const levers = Object.keys(held ?? {}).length;
+  return `pumps ${pumps}${loads}${levers > 0 ? `, ${levers} ${levers === 1 ? 'lever' : 'levers'} held` : ''}`;
 }
 
 /** The name that a load case has on the sheet. */

@@ -52,6 +52,8 @@ function send(reply: Reply): void {
 
 function answer(question: Question): Reply {
   const { id, circuit, conditions } = question;
+  // Who names a position for every lever holds none.
+  const { held: _, ...free } = conditions;
   switch (question.ask) {
     case 'table':
       return answerTable(id, circuit, conditions);
@@ -70,17 +72,19 @@ function answer(question: Question): Reply {
     case 'continue':
       return { id, say: 'continue', next: continueText(circuit, question.text, question.as) };
     case 'bleed':
+      refuseHeld(conditions);
       return { id, say: 'bleed', plan: bleedPlan(circuit, conditions, question.row) };
     case 'power-loss':
+      refuseHeld(conditions);
       return { id, say: 'power-loss', loss: powerLoss(circuit, conditions, question.row) };
     case 'moves': {
       const { positions, units } = question;
-      return { id, say: 'moves', moves: movesOf(circuit, conditions, positions, { budget: tell(id), units }) };
+      return { id, say: 'moves', moves: movesOf(circuit, free, positions, { budget: tell(id), units }) };
     }
     case 'vent': {
       const { line, positions, units } = question;
       const options = { budget: tell(id), units };
-      return { id, say: 'vent', result: ventLine(circuit, conditions, line, positions, options) };
+      return { id, say: 'vent', result: ventLine(circuit, free, line, positions, options) };
     }
     case 'plan':
       return { id, say: 'plan', report: checkPlan(circuit, question.plan, conditions, tell(id)) };
@@ -91,6 +95,11 @@ function answer(question: Question): Reply {
     case 'numbers':
       return { id, say: 'numbers', numbers: numbersOf(circuit, conditions, question.rows) };
   }
+}
+
+/** Lists of moves start from a row of the whole table, and held levers could not move in them. */
+function refuseHeld({ held }: Conditions): void {
+  if (held) throw new Error('The circuit has too many combinations to list. Ask about a part of it by itself.');
 }
 
 /** Up to here pressures take too short a time to show anything before them. */

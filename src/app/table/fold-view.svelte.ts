@@ -60,7 +60,9 @@ class FoldView {
 }
 
 function choicesOf(): FoldChoices[] {
-  const data = whole.asked?.table?.data;
+  // A table of some levers has the lines of all.
+  const data =
+    whole.asked?.table?.data ?? (session.answer?.circuit === editor.circuit ? session.table?.data : undefined);
   const groups = whole.fold.value?.groups ?? [];
   const circuit = whole.asked?.circuit ?? editor.circuit;
   const actuators = data?.actuators ?? actuatorsOf(circuit);
