@@ -5,12 +5,9 @@ import { initialHeld, settle } from '../engine/sequence/pressure-state.ts';
 import type { Held } from '../engine/sequence/pressure-state.ts';
 import { RowPathsCache } from '../engine/sequence/row-paths.ts';
 import type { RowPaths } from '../engine/sequence/row-paths.ts';
-import { RowSettler } from '../engine/table/dependents.ts';
+import { mostPressures } from '../engine/table/most-pressures.ts';
 import type { OneState } from '../engine/table/one-state.ts';
 import { solveOne } from '../engine/table/one-state.ts';
-import { PressureSolver } from '../engine/table/resolve.ts';
-import { rowNumbers } from '../engine/table/row-numbers.ts';
-import type { RowNumbers } from '../engine/table/row-numbers.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import { tabulate } from '../engine/table/tabulate.ts';
 import type { ActuatorVerdict, LineClass, PumpVerdict } from '../engine/table/words.ts';
@@ -80,11 +77,9 @@ export class MoveBench {
     return { ...settled, lines: settled.lines.map((on, line) => on | (pressed[line] as number)) };
   }
 
-  /** Pressures of a network; SI. */
-  numbers(net: Network): RowNumbers {
-    const solver = new PressureSolver(net, this.conditions);
-    const { setting } = new RowSettler(solver, this.conditions).at(0);
-    return rowNumbers(solver, 0, solver.solve(0, false, setting));
+  /** Pa by line: the most that stands in it before a move, whatever has come to its stop meanwhile. */
+  most(net: Network): readonly number[] {
+    return mostPressures(solveOne(net, this.conditions, 0));
   }
 
   #take(net: Network, before: Held): Snapshot {

@@ -2,7 +2,6 @@ import { formatQuantity } from '../base/units.ts';
 import type { UnitSystem } from '../base/units.ts';
 import { dependentLabel } from '../network/dependents.ts';
 import type { NetPath, Network } from '../network/network.ts';
-import type { RowNumbers } from '../engine/table/row-numbers.ts';
 import type { ActuatorVerdict } from '../engine/table/words.ts';
 import type { Held } from '../engine/sequence/pressure-state.ts';
 import type { Snapshot } from './move-bench.ts';
@@ -30,8 +29,8 @@ export class MoveWords {
     this.units = units;
   }
 
-  /** What another state does that this one does not. `numbers`: pressures before. */
-  effects(before: Snapshot, after: Snapshot, numbers: RowNumbers): MoveEffect[] {
+  /** What another state does that this one does not. `most`: Pa by line that can stand before. */
+  effects(before: Snapshot, after: Snapshot, most: readonly number[]): MoveEffect[] {
     const { net } = this;
     const found: MoveEffect[] = [];
     net.actuators.forEach(({ part }, i) => {
@@ -59,7 +58,7 @@ export class MoveWords {
     });
     for (let line = 0; line < net.shown; line++) {
       const shut = (at: Snapshot): boolean => at.held.lines[line] === 1 && isShut(at, line);
-      if (shut(after) && !shut(before)) found.push(this.#traps(line, before, numbers));
+      if (shut(after) && !shut(before)) found.push(this.#traps(line, before, most));
       if (before.held.lines[line] === 1 && after.held.lines[line] === 0 && after.toTank[line] === 1) {
         found.push({
           kind: 'vents',
@@ -72,11 +71,11 @@ export class MoveWords {
     return found;
   }
 
-  #traps(line: number, before: Snapshot, numbers: RowNumbers): MoveEffect {
-    const stood = before.held.lines[line] === 1 ? numbers.lines[line] : undefined;
+  #traps(line: number, before: Snapshot, most: readonly number[]): MoveEffect {
+    const stood = before.held.lines[line] === 1 ? most[line] : undefined;
     const bound =
       stood !== undefined && stood > 1e4
-        ? `, at most the ${formatQuantity(stood, 'pressure', this.units, { digits: 3 })} of the state before unless a load or heat adds to it`
+        ? `, up to ${formatQuantity(stood, 'pressure', this.units, { digits: 3 })} from before; a load or heat can add to it`
         : '';
     return {
       kind: 'traps',

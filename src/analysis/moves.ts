@@ -4,7 +4,6 @@ import type { UnitSystem } from '../base/units.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { stagesOf } from '../engine/sequence/move.ts';
 import type { Moment, Stage } from '../engine/sequence/move.ts';
-import type { RowNumbers } from '../engine/table/row-numbers.ts';
 import { networkOf, pathConditions } from './analyse.ts';
 import { MoveBench } from './move-bench.ts';
 import type { Snapshot } from './move-bench.ts';
@@ -44,7 +43,7 @@ export function movesOf(
 export class Mover {
   readonly bench: MoveBench;
   readonly words: MoveWords;
-  readonly #starts = new Map<string, { readonly snapshot: Snapshot; readonly numbers: RowNumbers }>();
+  readonly #starts = new Map<string, { readonly snapshot: Snapshot; readonly most: readonly number[] }>();
 
   constructor(circuit: Circuit, conditions: Conditions, units: UnitSystem) {
     const net = networkOf(circuit, conditions);
@@ -70,7 +69,7 @@ export class Mover {
     const { bench, words } = this;
     const { net } = bench;
     const spec = net.inputs[input];
-    const { snapshot: before, numbers } = this.#start(positions);
+    const { snapshot: before, most } = this.#start(positions);
     const reached = positions.map((position, i) => (i === input ? to : position));
     const after = bench.next(bench.at(reached), before);
     const stages = stagesOf(net, positions, input, to).map((stage) => this.#stage(stage, input, before, after));
@@ -86,18 +85,18 @@ export class Mover {
       positions: reached,
       ...this.rowOf(reached),
       ...(rest !== undefined && rest !== to && { springsTo: spec?.positions[rest] ?? '' }),
-      effects: words.effects(before, after, numbers),
+      effects: words.effects(before, after, most),
       stages: stages.filter(({ notes, ifShut, ifJoined }) => notes.length + ifShut.length + ifJoined.length > 0),
       follows: net.dependents.some((dependent) => dependent.part === spec?.part),
     };
   }
 
-  #start(positions: readonly number[]): { readonly snapshot: Snapshot; readonly numbers: RowNumbers } {
+  #start(positions: readonly number[]): { readonly snapshot: Snapshot; readonly most: readonly number[] } {
     const key = positions.join();
     const known = this.#starts.get(key);
     if (known) return known;
     const snapshot = this.bench.start(positions);
-    const made = { snapshot, numbers: this.bench.numbers(snapshot.net) };
+    const made = { snapshot, most: this.bench.most(snapshot.net) };
     this.#starts.set(key, made);
     return made;
   }

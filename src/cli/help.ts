@@ -10,8 +10,8 @@ Commands:
   explain FILE   one state, with its reasons
   moves FILE     what each move of one lever does from one state, also on the way
   trapped FILE   where pressure stays trapped, over all states; which moves vent a line
-  powerloss FILE what a loss of power does in one state
   bleed FILE     how to let it down after a stop: the shortest list of lever moves
+  powerloss FILE what a loss of power does in one state
   check FILE     whether its rules hold in every combination
   plan FILE      whether its step plans do what they say, and what a loss of power does
 

@@ -131,9 +131,9 @@ describe('trapped', () => {
     expect({ code, err }).toEqual({ code: 0, err: '' });
     // Closed centre: A is left behind from a, B from b (check case G1, practice).
     expect(out).toMatch(/^A \(measure at PG1\)$/m);
-    expect(out).toContain('load: 1 of 3 rows\n    row 2: Pressed on at rest by the load of C1.');
-    expect(out).toContain('row 2: Under pressure before this move of one lever: V1 from a to 0 (row 1).');
-    expect(out).toContain('row 2: Under pressure before this move of one lever: V1 from b to 0 (row 3).');
+    expect(out).toContain('load: 1 of 3 rows\n    row 2: Pressed on at rest by the load of C1: 64 bar (F/A).');
+    expect(out).toContain('row 2: Under pressure before this move of one lever: V1 from a to 0 (row 1), at up to');
+    expect(out).toContain('row 2: Under pressure before this move of one lever: V1 from b to 0 (row 3), at up to');
     expect(out.match(/^A \(/gm)).toHaveLength(1);
     expect(out).toContain('qualified people');
   });

@@ -47,7 +47,7 @@ describe('moves', () => {
 
   test('the pressures are in the units asked for', async () => {
     const { out } = await spooltable(['moves', writeRig(folder.path, LIFT), '--state', 'V1=a', '--units', 'us']);
-    expect(out).toMatch(/A is shut in with pressure, at most the [\d,.]+ psi/);
+    expect(out).toMatch(/A is shut in with pressure, up to [\d,.]+ psi/);
   });
 });
 

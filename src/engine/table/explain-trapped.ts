@@ -1,9 +1,11 @@
 import type { TrapAnswer } from './answers.ts';
 import type { Beside } from './left-behind.ts';
 import { lineOutcomes } from './line-outcomes.ts';
+import { mostPressures } from './most-pressures.ts';
 import { solveOne } from './one-state.ts';
 import type { OneState } from './one-state.ts';
 import { enclosing, partLabel } from './reasons.ts';
+import { sayPressure } from './say-quantities.ts';
 import { strides } from './strides.ts';
 import { standingReasons } from './trapped.ts';
 import { LINE_CLASSES } from './words.ts';
@@ -11,6 +13,8 @@ import type { TrapReason } from './words.ts';
 
 const CUT_OFF = LINE_CLASSES.indexOf('cut off');
 const FED = LINE_CLASSES.indexOf('fed');
+/** Pa: less is not worth a number. */
+const NOTICED = 0.5e5;
 
 /** Every trapped line of the state with its reasons in words, and the moves that leave it behind. */
 export function explainTrapped(state: OneState, besides: readonly Beside[] = []): TrapAnswer[] {
@@ -33,7 +37,7 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
       if (state.is(runningClasses[line]?.[CUT_OFF])) {
         const from = moves
           .filter((move) => move.state.on(move.state.block.reach.underPressure, line))
-          .map((move) => move.text);
+          .map((move) => `${move.text}${stoodAt(move.state, line)}`);
         if (from.length > 0)
           reasons.push({
             kind: 'left behind',
@@ -43,7 +47,7 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
       if (!conditions.pumpsRunning && running.on(running.block.reach.underPressure, line)) {
         reasons.push({
           kind: 'stopped',
-          text: 'Under pressure while the pumps run; stopping them does not let it down.',
+          text: `Under pressure while the pumps run${stoodAt(running, line)}; stopping them does not let it down.`,
         });
       }
       if (state.is(standing[line]?.heat)) {
@@ -53,7 +57,9 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
         });
       }
     } else if (!conditions.pumpsRunning && state.is(classes[line]?.[FED])) {
-      reasons.push({ kind: 'stored', text: 'A charged accumulator keeps it under pressure.' });
+      const at = pressureIn(state, line);
+      const text = `A charged accumulator keeps it under pressure${at === undefined ? '' : `, at ${at}`}.`;
+      reasons.push({ kind: 'stored', text });
     }
     if (reasons.length === 0) return [];
     return [{ line, name: entry.name, reasons, steps: [enclosing(state, line, -1)] }];
@@ -83,6 +89,18 @@ function neighbours(state: OneState): { state: OneState; text: string }[] {
 const heldNeighbours = (state: OneState, besides: readonly Beside[]): { state: OneState; text: string }[] =>
   besides.map(({ net, text }) => ({ state: solveOne(net, state.conditions, state.row, undefined, state.units), text }));
 
+/** In words; undefined where there is no steady state, or next to nothing. */
+function pressureIn(state: OneState, line: number): string | undefined {
+  const pressure = mostPressures(state)[line] ?? 0;
+  return pressure < NOTICED ? undefined : sayPressure(pressure, state.units);
+}
+
+/** The bound of what can be left: it stood there before, and nothing but a load or heat adds to it. */
+function stoodAt(state: OneState, line: number): string {
+  const at = pressureIn(state, line);
+  return at === undefined ? '' : `, at up to ${at}`;
+}
+
 function loadText(state: OneState, line: number): string {
   const pressing = state.net.actuators.filter(
     (actuator) => actuator.push.way !== 'none' && (actuator.a === line || actuator.b === line),
@@ -90,8 +108,17 @@ function loadText(state: OneState, line: number): string {
   const names = pressing.map(
     (actuator) => `${actuator.push.by === 'spring' ? 'the spring' : 'the load'} of ${partLabel(state, actuator.part)}`,
   );
-  if (names.length > 0) return `Pressed on at rest by ${names.join(' and ')}.`;
+  const [only, second] = pressing;
+  if (only && !second && !state.on(state.block.reach.underPressure, line)) {
+    const area = only.a === line ? only.areaA : only.areaB;
+    const size =
+      only.push.by === 'load' && area > 0 ? `: ${sayPressure(only.push.size / area, state.units)} (F/A)` : '';
+    return `Pressed on at rest by ${names.join(' and ')}${size}.`;
+  }
+  const at = pressureIn(state, line);
+  const steady = at === undefined ? '' : ` It stands at ${at}.`;
+  if (names.length > 0) return `Pressed on at rest by ${names.join(' and ')}.${steady}`;
   return state.on(state.block.reach.underPressure, line)
-    ? 'Another chamber of the same actuator is under pressure and passes it on, higher by the ratio of the areas.'
-    : 'A load presses on it at rest through the lines it is joined to.';
+    ? `Another chamber of the same actuator is under pressure and passes it on by the ratio of the areas (p·A1/A2).${steady}`
+    : `A load presses on it at rest through the lines it is joined to.${steady}`;
 }
