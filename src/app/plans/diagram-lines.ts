@@ -1,4 +1,3 @@
-import { plans } from '../state/plans.svelte.ts';
 import type { PlanTrace } from '../../worker/client.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
 
@@ -14,15 +13,17 @@ export function diagramLines({ lines, samples }: PlanTrace): readonly string[] {
   return lines.filter((_, i) => kept.has(i));
 }
 
-export function lineItems({ lines }: PlanTrace, shown: readonly string[]): MenuItem[] {
+export function lineItems(
+  { lines }: PlanTrace,
+  shown: readonly string[],
+  onchange: (shown: readonly string[]) => void,
+): MenuItem[] {
   return [
     { heading: 'Lines whose pressures are drawn' },
     ...lines.map((name) => ({
       text: name,
       checked: shown.includes(name),
-      run: () => {
-        plans.lines = lines.filter((each) => (each === name ? !shown.includes(name) : shown.includes(each)));
-      },
+      run: () => onchange(lines.filter((each) => (each === name ? !shown.includes(name) : shown.includes(each)))),
     })),
   ];
 }
