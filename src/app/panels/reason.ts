@@ -65,6 +65,18 @@ export function reasonOf(explanation: Explanation, subject: Subject): Reason | u
       trapped: [],
     };
   }
+  if (subject.of === 'dependent') {
+    const found = explanation.dependents.find((each) => each.part === key);
+    if (!found) return undefined;
+    return {
+      title: found.hunts ? `${found.label} hunts` : `${found.label} stands at ${found.name}`,
+      part: found.part,
+      freeInward: false,
+      notes: [],
+      steps: found.steps,
+      trapped: [],
+    };
+  }
   const found = explanation.trapped.find((each) => each.name === key);
   if (!found) return undefined;
   return {

@@ -7,7 +7,7 @@ import type { Conditions, Explanation, RowNumbers, StateTable } from '../../work
 
 /** What the verdict stands on: `Holds for any values, between its stops.` Undefined for lines. */
 export function sayStanding(explanation: Explanation, table: StateTable, { of, key }: Subject, places: Conditions['places']): string | undefined {
-  if (of === 'line') return undefined;
+  if (of === 'line' || of === 'dependent') return undefined;
   const reason = (of === 'actuator' ? explanation.actuators : explanation.pumps).find(({ part }) => part === key);
   if (!reason) return undefined;
   const words = reason.onValues ? 'Rests on entered and assumed values' : 'Holds for any values';
@@ -19,7 +19,7 @@ export function sayStanding(explanation: Explanation, table: StateTable, { of, k
 
 /** The figures of the subject; the steps give them in metric units. */
 export function sayFigures(table: StateTable, numbers: RowNumbers, { of, key }: Subject, units: UnitSystem): string | undefined {
-  if (numbers.status !== 'solved') return undefined;
+  if (numbers.status !== 'solved' || of === 'dependent') return undefined;
   const flow = (si: number): string => formatQuantity(si, 'flow', units, { digits: 2 });
   const pressureIn = (line: number): string | undefined => {
     const pressure = numbers.lines[line];

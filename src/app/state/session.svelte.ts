@@ -40,9 +40,9 @@ export interface Lit {
   readonly steps: readonly LitStep[];
 }
 
-/** What a reason is asked for: an actuator or pump by part id, a line by its name. */
+/** What a reason is asked for: an actuator, a pump or a valve that follows by part id, a line by its name. */
 export interface Subject {
-  readonly of: 'actuator' | 'pump' | 'line';
+  readonly of: 'actuator' | 'pump' | 'dependent' | 'line';
   readonly key: string;
 }
 
@@ -360,6 +360,7 @@ class Session {
     const { key } = subject;
     if (subject.of === 'actuator') return explanation.actuators.find((each) => each.part === key)?.steps ?? [];
     if (subject.of === 'pump') return explanation.pumps.find((each) => each.part === key)?.steps ?? [];
+    if (subject.of === 'dependent') return explanation.dependents.find((each) => each.part === key)?.steps ?? [];
     return explanation.trapped.find((line) => line.name === key)?.steps ?? [];
   }
 

@@ -13,6 +13,10 @@ export function whyOf(table: StateTable, column: Column, row: number): Subject |
     const pump = table.data.pumps[column.index];
     return pump && { of: 'pump', key: pump.part };
   }
+  if (column.of === 'dependent') {
+    const valve = table.data.dependents[column.index];
+    return valve && { of: 'dependent', key: valve.part };
+  }
   if (column.of !== 'trapped') return undefined;
   const name = trappedGroups(table, row)[0]?.names[0];
   return name === undefined ? undefined : { of: 'line', key: name };
