@@ -13,6 +13,7 @@ import type {
   RuleText,
   ValveData,
 } from '../../src/circuit/model.ts';
+import { PAPERS } from '../../src/circuit/paper.ts';
 import { KNOWN_ENDS } from '../../src/circuit/plan-schema.ts';
 import type { PlanStep, StepEnd, StepPlan } from '../../src/circuit/plan.ts';
 import { KNOWN } from '../../src/circuit/schema.ts';
@@ -231,6 +232,7 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
       {
         name: fc.oneof(words, fc.constant('')),
         title: named,
+        paper: fc.constantFrom(...PAPERS),
         notes: words.map((text) => `${text}\n\t${text}`),
         parts: fc.constant(parts),
         connections:

@@ -83,6 +83,7 @@ export function chosenPages(choices: Choices): PrintedPage[] {
   const prose: (Section | undefined)[] = [
     choices.notes ? notesSection(circuit) : undefined,
     choices.findings && table ? findingsSection(table.findings) : undefined,
+    choices.partsOn !== 'none' && !beside && circuit.parts.length > 0 ? partListSection(circuit) : undefined,
   ];
   const sheet: DrawingSheet | undefined =
     choices.drawing === 'none'
@@ -100,7 +101,6 @@ export function chosenPages(choices: Choices): PrintedPage[] {
     sections: [
       ...(choices.chart && table ? [chartSection(table)] : []),
       ...joined(prose.flatMap((section) => section ?? [])),
-      ...(choices.partsOn !== 'none' && !beside && circuit.parts.length > 0 ? [partListSection(circuit)] : []),
     ],
   });
 }

@@ -33,5 +33,20 @@ export function lineKey(width: number): Block {
     strokes.push(...lineMarks(points, look, use ?? 'working', { start: 0.8, end: 0.8 }));
     primitives.push({ type: 'text', at: { x: x + 5.8, y: y + 0.35 }, text: word, size: TEXT.table, align: 'start' });
   });
-  return { type: 'drawn', height: Math.ceil(SAMPLES.length / across) * 2.1, primitives, strokes };
+  const last = SAMPLES.length;
+  const x = (last % across) * cell;
+  const y = 1 + Math.floor(last / across) * 2.1;
+  primitives.push(
+    { type: 'text', at: { x: x + 2.5, y: y + 0.35 }, text: '14 bar', size: TEXT.table, align: 'middle', weight: 500 },
+    {
+      type: 'polyline',
+      points: [
+        { x: x + 0.9, y: y + 0.6 },
+        { x: x + 4.1, y: y + 0.6 },
+      ],
+      pen: 'hair',
+    },
+    { type: 'text', at: { x: x + 5.8, y: y + 0.35 }, text: 'assumed data', size: TEXT.table, align: 'start' },
+  );
+  return { type: 'drawn', height: Math.ceil((SAMPLES.length + 1) / across) * 2.1, primitives, strokes };
 }

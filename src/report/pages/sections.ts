@@ -69,7 +69,7 @@ export const partListBlock = (circuit: Circuit): Block => ({
 export const partListSection = (circuit: Circuit): Section => ({
   document: 'Part list',
   shows: '',
-  columns: 'one',
+  columns: 'two',
   blocks: [
     { type: 'heading', text: 'Part list', level: 1 },
     said(
