@@ -1,3 +1,4 @@
+import { maker } from './maker/maker.svelte.ts';
 import { editor } from './state/editor.svelte.ts';
 import { plans } from './state/plans.svelte.ts';
 import { session } from './state/session.svelte.ts';
@@ -81,6 +82,7 @@ function plain(event: KeyboardEvent): boolean {
   const { key } = event;
   const panel = PANELS[key.toLowerCase()];
   if (/^\d$/.test(key)) digit(key, event.timeStamp);
+  else if (key === 'E') maker.openForSelection();
   else if (panel) view.toggle(panel);
   else if (key === 'q' || key === 'Q') asking.on = true;
   else if (key === '[') session.goToRow(session.row - 1);

@@ -51,6 +51,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['Y', 'Loss of power'],
     ['Q', 'Ask the table: rows in which something holds'],
     ['V', 'Influence: which lever matters to what'],
+    ['Shift E', 'Valve maker: the selected valve, or a new one'],
     ['?', 'This panel'],
     ['Esc', 'Close the panel in hand'],
   ),

@@ -57,6 +57,8 @@ export interface LookActions {
   toggleRulers(): void;
   toggleGrid(): void;
   toggleHops(): void;
+  /** On the selected valve, or on a new ready-made one. */
+  openMaker(): void;
 }
 
 export type CommandGroup = 'Draw' | 'Change' | 'Arrange' | 'Lines' | 'Select and go' | 'Levers' | 'View';

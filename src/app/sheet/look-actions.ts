@@ -1,3 +1,4 @@
+import { maker } from '../maker/maker.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 import type { LookActions } from './command-types.ts';
 import { desk } from './desk.svelte.ts';
@@ -6,6 +7,7 @@ import { sheetView } from './sheet-view.svelte.ts';
 
 export const lookActions: LookActions = {
   openMenu: () => openMenuAtSelection(),
+  openMaker: () => maker.openForSelection(),
   find() {
     desk.finding = true;
   },

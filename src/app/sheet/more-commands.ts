@@ -39,6 +39,13 @@ export const MORE_COMMANDS: readonly Command[] = [
     run: (s) => s.saveOwn(),
   },
 
+  {
+    id: 'maker',
+    title: 'Valve maker: paths, ports, positions and operators of the valve',
+    group: 'Change',
+    keys: ['Shift+E'],
+    run: (s) => s.openMaker(),
+  },
   { id: 'swap', title: 'Swap the part for another kind', group: 'Change', keys: ['S'], run: (s) => s.swap() },
 
   ...EDGES.map(([edge, title, key]): Command => ({

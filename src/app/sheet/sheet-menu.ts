@@ -1,5 +1,6 @@
 import type { Point } from '../../base/points.ts';
 import { groupOf } from '../../circuit/groups.ts';
+import { isStripValve } from '../../parts/valve-kinds.ts';
 import { editor } from '../state/editor.svelte.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
 import { sayChord } from './chords.ts';
@@ -50,12 +51,14 @@ export function menuItems(): { title: string; items: MenuItem[] } {
   if (parts.length > 0) {
     const [first] = parts;
     const only = parts.length === 1 && first !== undefined;
-    const isValve = only && circuit.parts.some(({ id, kind }) => id === first && kind === 'directional-valve');
+    const kind = circuit.parts.find(({ id }) => id === first)?.kind;
+    const isValve = only && kind === 'directional-valve';
     const grouped = parts.some((id) => groupOf(circuit, id));
     return {
       title: sayThings(parts, labels),
       items: [
         ...(only ? items('settings', 'name', 'swap') : []),
+        ...(only && isStripValve(kind) ? items('maker') : []),
         ...(isValve ? items('add-section') : []),
         ...items('turn', 'turn-back', 'flip'),
         ...(parts.length > 1

@@ -14,7 +14,8 @@ export type PanelId =
   | 'influence'
   | 'moves'
   | 'loss'
-  | 'print';
+  | 'print'
+  | 'maker';
 export type Page = 'sheet' | 'table' | 'plans';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -53,6 +54,7 @@ class View {
     moves: false,
     loss: false,
     print: false,
+    maker: false,
   });
 
   /** Panels from the lowest to the one on top. */
