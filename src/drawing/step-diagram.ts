@@ -67,7 +67,13 @@ export function momentAtX(
   const share = Math.min(1, Math.max(0, plot.width > 0 ? (x - plot.x) / plot.width : 0));
   if (kind === 'time') {
     const time = share * (steps.at(-1)?.end ?? 0);
-    return { step: Math.max(0, steps.findLastIndex(({ start }) => start <= time)), time };
+    return {
+      step: Math.max(
+        0,
+        steps.findLastIndex(({ start }) => start <= time),
+      ),
+      time,
+    };
   }
   const step = Math.max(0, Math.min(steps.length - 1, Math.floor(share * steps.length)));
   const { start = 0, end = 0 } = steps[step] ?? {};

@@ -117,27 +117,31 @@ test('without a plan one is drafted from a motion sequence, and it plays', async
   expect(await band(page).locator('[aria-pressed="true"][aria-label^="Coil"]').count()).toBe(4);
 });
 
-test.each(['light', 'dark'] as const)('stop, coil conditions and diagram, %s', { timeout: 180_000 }, async (colorScheme) => {
-  const page = await opened('Peg drill', { colorScheme });
-  await step(page, 1).getByText('as asked', { exact: false }).first().waitFor();
-  expect(await severe(page)).toEqual([]);
-  await band(page).getByText('Stop and power loss').click();
-  await band(page).getByRole('columnheader', { name: 'Goes on afterwards' }).waitFor();
-  await band(page).getByText('follow its documents', { exact: false }).waitFor();
-  expect(await severe(page)).toEqual([]);
-  await shot(page, `plans-loss-${colorScheme}`);
-  await band(page).getByText('Coil conditions').click();
-  await expect.poll(() => band(page).getByLabel('Structured text').inputValue()).toContain('FUNCTION_BLOCK');
-  expect(await severe(page)).toEqual([]);
-  await shot(page, `plans-conditions-${colorScheme}`);
-  await band(page).getByText('Diagram alone').click();
-  const slider = band(page).getByRole('slider');
-  await slider.focus();
-  await page.keyboard.press('End');
-  await expect.poll(() => slider.getAttribute('aria-valuetext')).toMatch(/^3\.901 s, step 3 wait/);
-  expect(await severe(page)).toEqual([]);
-  await shot(page, `plans-diagram-${colorScheme}`);
-});
+test.each(['light', 'dark'] as const)(
+  'stop, coil conditions and diagram, %s',
+  { timeout: 180_000 },
+  async (colorScheme) => {
+    const page = await opened('Peg drill', { colorScheme });
+    await step(page, 1).getByText('as asked', { exact: false }).first().waitFor();
+    expect(await severe(page)).toEqual([]);
+    await band(page).getByText('Stop and power loss').click();
+    await band(page).getByRole('columnheader', { name: 'Goes on afterwards' }).waitFor();
+    await band(page).getByText('follow its documents', { exact: false }).waitFor();
+    expect(await severe(page)).toEqual([]);
+    await shot(page, `plans-loss-${colorScheme}`);
+    await band(page).getByText('Coil conditions').click();
+    await expect.poll(() => band(page).getByLabel('Structured text').inputValue()).toContain('FUNCTION_BLOCK');
+    expect(await severe(page)).toEqual([]);
+    await shot(page, `plans-conditions-${colorScheme}`);
+    await band(page).getByText('Diagram alone').click();
+    const slider = band(page).getByRole('slider');
+    await slider.focus();
+    await page.keyboard.press('End');
+    await expect.poll(() => slider.getAttribute('aria-valuetext')).toMatch(/^3\.901 s, step 3 wait/);
+    expect(await severe(page)).toEqual([]);
+    await shot(page, `plans-diagram-${colorScheme}`);
+  },
+);
 
 test('on a small screen plans are a page of their own', async () => {
   const page = await openEditor({ viewport: { width: 800, height: 900 } });
@@ -145,6 +149,9 @@ test('on a small screen plans are a page of their own', async () => {
   await band(page).waitFor();
   // The first circuit has no plans: the page says what to do next.
   await band(page).getByRole('button', { name: 'Draft the steps' }).waitFor();
-  expect(await severe(page)).toEqual([]);
+  const { violations } = await new AxeBuilder({ page })
+    .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
+    .analyze();
+  expect(violations.map(({ id, nodes }) => [id, nodes[0]?.html])).toEqual([]);
   await shot(page, 'plans-small');
 });

@@ -6,6 +6,7 @@ import { speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
 import { sayPump, saySpeed } from '../state/figure-texts.ts';
 import { figures } from '../state/figures.svelte.ts';
+import { AT_STOP } from '../state/moment.ts';
 import type { Moment } from '../state/moment.ts';
 import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
@@ -108,12 +109,13 @@ function verdictAt(
   const moves = saySpeed(speed, motion, 'metric') !== undefined;
   if (motion === 'rotary') {
     if (!moves) return word && !TURNING.includes(word) ? word : 'held';
-    const ways: readonly ActuatorVerdict[] = speed > 0 ? ['turns A→B', 'driven A→B by load'] : ['turns B→A', 'driven B→A by load'];
+    const ways: readonly ActuatorVerdict[] =
+      speed > 0 ? ['turns A→B', 'driven A→B by load'] : ['turns B→A', 'driven B→A by load'];
     return word && ways.includes(word) ? word : (ways[0] as ActuatorVerdict);
   }
   if (!moves) {
     const said = word && !OUTWARD.includes(word) && !INWARD.includes(word) ? word : undefined;
-    return said ?? (stroke !== undefined && (stroke <= 0 || stroke >= 1) ? 'at stop' : 'held');
+    return said ?? (stroke !== undefined && (stroke < AT_STOP || stroke > 1 - AT_STOP) ? 'at stop' : 'held');
   }
   const ways = speed > 0 ? OUTWARD : INWARD;
   return word && ways.includes(word) ? word : (ways[0] as ActuatorVerdict);

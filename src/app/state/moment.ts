@@ -17,8 +17,8 @@ export interface Moment {
   readonly conditions: Conditions;
 }
 
-/** So near a stop it is at the stop: what the solver leaves of a stroke. */
-const AT_STOP = 1e-6;
+/** Share of a stroke that counts as nothing: so near a stop it is at the stop. */
+export const AT_STOP = 1e-6;
 
 /** What stood at a time within this sample and the next; undefined = there is no such sample. */
 export function momentOf(trace: PlanTrace, index: number, time: number, loadCase?: string): Moment | undefined {
