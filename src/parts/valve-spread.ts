@@ -21,7 +21,7 @@ export interface Spread {
 }
 
 const STUB = 1;
-const LETTER = 1.25;
+const LETTER = 1.1;
 /** Outside the box: stub of a line, and the letter. */
 const MARGIN = 3;
 

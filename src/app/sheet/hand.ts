@@ -8,12 +8,12 @@ import { labelOf } from '../../circuit/model.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import { slideBends } from '../../drawing/bending.ts';
 import type { Insertion } from '../../drawing/through.ts';
-import { readyMadeOf } from '../../parts/catalogue.ts';
 import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { withPlaces as keepPlaces } from '../state/places.ts';
 import type { Selection } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
+import { entryOf } from '../tray/entries.ts';
 import { recent } from '../tray/recent.svelte.ts';
 import { attempt, tryTo } from './attempt.ts';
 import { joinEnds, sayEnd } from './connecting.ts';
@@ -29,7 +29,7 @@ import { zoneAt } from './zones.ts';
 
 /** Take a ready-made part into the hand. `at`: already over the sheet, as with the keyboard. */
 export function takeUp(readyId: string, at?: Point): void {
-  const entry = readyMadeOf(readyId);
+  const entry = entryOf(readyId);
   if (!entry) return;
   const { kind, readyMade } = entry;
   editor.select({});
@@ -79,7 +79,7 @@ export const middleOfView = (): Point =>
 export function putDown(at: Point, again = false): void {
   const { gesture } = desk;
   if (gesture.type !== 'place') return;
-  const entry = readyMadeOf(gesture.form.ready);
+  const entry = entryOf(gesture.form.ready);
   if (!entry) return;
   const { kind, readyMade } = entry;
   const into = insertionInHand({ ...gesture, at: snap(at) });

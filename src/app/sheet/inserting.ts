@@ -6,7 +6,7 @@ import type { Circuit, Part } from '../../circuit/model.ts';
 import { insertionAt, throughPairs } from '../../drawing/through.ts';
 import type { Insertion } from '../../drawing/through.ts';
 import { placedPorts } from '../../drawing/shapes.ts';
-import { readyMadeOf } from '../../parts/catalogue.ts';
+import { entryOf } from '../tray/entries.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { desk } from './desk.svelte.ts';
 import type { Gesture } from './desk.svelte.ts';
@@ -32,7 +32,7 @@ export function insertionUnder(part: Part, at: Point, mayTurn: boolean): Inserti
 export function insertionInHand(gesture: Gesture): Insertion | undefined {
   if (gesture.type === 'drag') return gesture.into;
   if (gesture.type !== 'place' || !gesture.at) return undefined;
-  const ready = readyMadeOf(gesture.form.ready)?.readyMade;
+  const ready = entryOf(gesture.form.ready)?.readyMade;
   if (!ready) return undefined;
   const part: Part = {
     id: '?',

@@ -1,8 +1,9 @@
 import { swapPart } from '../../circuit/insert.ts';
 import { portSpecs } from '../../drawing/shapes.ts';
-import { kindOf, readyMadeOf } from '../../parts/catalogue.ts';
+import { kindOf } from '../../parts/catalogue.ts';
 import type { SettingSpec } from '../../parts/contract.ts';
 import type { Setting } from '../../circuit/model.ts';
+import { entryOf } from '../tray/entries.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { attempt, tryTo } from './attempt.ts';
 import { desk } from './desk.svelte.ts';
@@ -18,7 +19,7 @@ function fits(spec: SettingSpec, other: SettingSpec | undefined, value: Setting)
 
 /** Makes of a part what was picked in the tray, and says what was lost. */
 export function swapFor(id: string, readyId: string): void {
-  const entry = readyMadeOf(readyId);
+  const entry = entryOf(readyId);
   const part = editor.circuit.parts.find((each) => each.id === id);
   if (!entry || !part) return;
   const { kind, readyMade } = entry;
