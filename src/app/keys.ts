@@ -87,7 +87,7 @@ function plain(event: KeyboardEvent): boolean {
   else if (key === 'q' || key === 'Q') asking.on = true;
   else if (key === '[') session.goToRow(session.row - 1);
   else if (key === ']') session.goToRow(session.row + 1);
-  else if (key === 'h' || key === 'H') view.showLower(view.lower === 'plans' ? 'table' : 'plans');
+  else if (key === 'j' || key === 'J') view.showLower(view.lower === 'plans' ? 'table' : 'plans');
   else if (key === ',' || key === ';') plans.showNext(key === ',' ? -1 : 1);
   else if (key === 'r' || key === 'R') session.letGo();
   else if (key === 'p' || key === 'P') session.setPumps(session.conditions.pumps === 'running' ? 'stopped' : 'running');

@@ -62,6 +62,10 @@ test('picking a step takes levers, strokes and pressures on the sheet along, fro
   await chip.getByRole('button', { name: 'Leave the moment: back to lasting states' }).click();
   await page.getByText('all between their stops').waitFor();
   expect(await chip.count()).toBe(0);
+  await page.keyboard.press('j');
+  await page.getByRole('grid').waitFor();
+  await page.keyboard.press('j');
+  await band(page).waitFor();
 });
 
 test('steps come, go and move by the keyboard, and all of it can be undone', async () => {

@@ -29,7 +29,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
   ),
   group(
     'Step plans',
-    ['H', 'Step plans or state table below the bench'],
+    ['J', 'Step plans or state table below the bench'],
     [', ;', 'Event before, event after: levers, sheet and diagram go along'],
     ['← → ↑ ↓', 'In the coil chart: from cell to cell; Space switches'],
     ['Alt ↑ ↓', 'Move the step'],
