@@ -9,7 +9,7 @@ import { PanelFindings } from '../analysis/panel-findings.ts';
 import { checkPlan } from '../analysis/plan.ts';
 import { draftPlan } from '../analysis/plan-draft.ts';
 import { movesOf } from '../analysis/moves.ts';
-import type { Conditions } from '../analysis/results.ts';
+import type { Conditions, Finding } from '../analysis/results.ts';
 import { ventLine } from '../analysis/vent-line.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
@@ -46,7 +46,8 @@ scope.onmessage = ({ data: question }) => {
 
 /** Nobody here reads a table once it is answered, so its planes go over without a copy. */
 function send(reply: Reply): void {
-  if (reply.say === 'table') scope.postMessage(reply, planeBuffers(reply.data));
+  const table = reply.say === 'open-paths' ? reply.table : reply.say === 'table' ? reply : undefined;
+  if (table) scope.postMessage(reply, planeBuffers(table.data));
   else scope.postMessage(reply);
 }
 
@@ -57,6 +58,8 @@ function answer(question: Question): Reply {
   switch (question.ask) {
     case 'table':
       return answerTable(id, circuit, conditions);
+    case 'open-paths':
+      return { id, say: 'open-paths', table: openPaths(circuit, conditions) };
     case 'explain':
       return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row, question.units) };
     case 'check':
@@ -102,8 +105,8 @@ function refuseHeld({ held }: Conditions): void {
   if (held) throw new Error('The circuit has too many combinations to list. Ask about a part of it by itself.');
 }
 
-/** Up to here pressures take too short a time to show anything before them. */
-const SOON = 1500;
+/** Rows whose pressures take a tenth of a second or so: nothing need be shown before them. */
+const SOON = 700;
 /** Rows that the pressure layer may solve in the background: some tens of seconds. */
 const BACKGROUND_ROWS = 100_000;
 
@@ -125,15 +128,29 @@ function answerTable(id: number, circuit: Circuit, conditions: Conditions): Repl
     send(reply(true, tabulate(circuit, conditions, budget)));
     return reply(false, tabulateHeld(circuit, conditions, budget));
   }
-  const reply = (pressureRows: number): Reply => {
-    const options = { pressureRows };
-    const data = tabulate(circuit, conditions, budget, options);
-    const running =
-      conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
-    const faults = findings(circuit, new StateTable(running), conditions);
-    return { id, say: 'table', early: pressureRows === 0, data, findings: faults, took: performance.now() - began };
-  };
+  const { data, faults } = tableBy(circuit, conditions, budget, BACKGROUND_ROWS);
+  return { id, say: 'table', early: false, data, findings: faults, took: performance.now() - began };
+}
+
+/** Undefined where the pressures take too short a time to show anything before them. */
+function openPaths(circuit: Circuit, conditions: Conditions): Extract<Reply, { say: 'open-paths' }>['table'] {
+  const began = performance.now();
   const rows = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
-  if (rows > SOON) send(reply(0));
-  return reply(BACKGROUND_ROWS);
+  // Held levers leave few rows, and are answered early by themselves.
+  if (conditions.held || rows <= SOON) return undefined;
+  const { data, faults } = tableBy(circuit, conditions, unlimited, 0);
+  return { data, findings: faults, took: performance.now() - began };
+}
+
+function tableBy(
+  circuit: Circuit,
+  conditions: Conditions,
+  budget: Budget,
+  pressureRows: number,
+): { readonly data: TableData; readonly faults: readonly Finding[] } {
+  const options = { pressureRows };
+  const data = tabulate(circuit, conditions, budget, options);
+  const running =
+    conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget, options);
+  return { data, faults: findings(circuit, new StateTable(running), conditions) };
 }

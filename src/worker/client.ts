@@ -7,14 +7,14 @@ import type { MovesAnswer, VentAnswer } from '../analysis/moves-results.ts';
 import type { Check } from '../analysis/check-results.ts';
 import type { CoilLogic } from '../analysis/coil-logic-results.ts';
 import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
-import { Cancelled } from '../base/budget.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { StateTable } from '../engine/table/state-table.ts';
-import type { TableData } from '../engine/table/table-data.ts';
-import type { Holding, Question, Reply } from './messages.ts';
-import { startThread } from './thread.ts';
+import { Asking } from './asking.ts';
+import type { Job } from './asking.ts';
+import type { Reply } from './messages.ts';
 
+export type { Job } from './asking.ts';
 export type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 export type { ActuatorReason, PumpReason, ReasonStep, RowNumbers, TrappedLine } from '../analysis/results.ts';
 export type { AskAnswer, FoldAnswer, FoldBy, FoldItem, FoldRow, Next } from '../analysis/results.ts';
@@ -36,12 +36,6 @@ export interface TableAnswer {
   readonly findings: readonly Finding[];
   /** Milliseconds the computation took. */
   readonly took: number;
-}
-
-/** A running request: await `answer`, or `cancel()`, upon which `answer` rejects with `Cancelled`. */
-export interface Job<T> {
-  readonly answer: Promise<T>;
-  readonly cancel: () => void;
 }
 
 export interface Analyst {
@@ -107,29 +101,51 @@ export interface Asked {
   readonly table: StateTable | undefined;
 }
 
-/** Tables, explanations, bleed plans, step plans and questions about whole tables have a thread each, so that a click on "why" never waits for a long table. */
+/** ms: questions of a moment are left to finish so long when nobody wants their answer any more. */
+const PATIENCE = 300;
+const ignore = (): void => {};
+
+/**
+ * Tables, their open paths, explanations, bleed plans, step plans and questions about whole tables have a thread each,
+ * so that neither a click on "why" nor the first sight of an edited circuit waits for a long table.
+ */
 export function createAnalyst(): Analyst {
-  const tables = new Thread();
-  const words = new Thread();
-  const long = new Thread();
-  const whole = new Thread();
-  const moving = new Thread();
-  const steps = new Thread();
+  const tables = new Asking();
+  const quick = new Asking(PATIENCE);
+  const words = new Asking(PATIENCE);
+  const long = new Asking();
+  const whole = new Asking();
+  const moving = new Asking();
+  const steps = new Asking();
   const share =
     (progress: (share: number) => void) =>
     (reply: Reply): void => {
       if (reply.say === 'progress') progress(reply.share);
     };
   return {
-    table: (circuit, conditions, progress, early = () => {}) =>
-      tables.ask(
+    table: (circuit, conditions, progress, early = () => {}) => {
+      const first = quick.ask({ ask: 'open-paths', circuit, conditions }, ignore, (reply) =>
+        reply.say === 'open-paths' ? reply : undefined,
+      );
+      const whole = tables.ask(
         { ask: 'table', circuit, conditions },
         (reply) => {
           if (reply.say === 'progress') progress(reply.share);
           else if (reply.say === 'table') early(tableOf(reply));
         },
         (reply) => (reply.say === 'table' ? tableOf(reply) : undefined),
-      ),
+      );
+      // What keeps open paths from an answer, the whole table tells.
+      first.answer.then(({ table }) => table && early(tableOf(table)), ignore);
+      whole.answer.then(first.cancel, first.cancel);
+      return {
+        answer: whole.answer,
+        cancel: () => {
+          first.cancel();
+          whole.cancel();
+        },
+      };
+    },
     explain: (circuit, conditions, row, units = 'metric') =>
       words.ask(
         { ask: 'explain', circuit, conditions, row, units },
@@ -224,106 +240,15 @@ export function createAnalyst(): Analyst {
       whole.stop();
       moving.stop();
       tables.stop();
+      quick.stop();
       long.stop();
       words.stop();
     },
   };
 }
 
-const tableOf = (reply: Extract<Reply, { say: 'table' }>): TableAnswer => ({
+const tableOf = (reply: NonNullable<Extract<Reply, { say: 'open-paths' }>['table']>): TableAnswer => ({
   table: new StateTable(reply.data),
   findings: reply.findings,
   took: reply.took,
 });
-
-/** A table that goes with a question; it crosses over once for all questions about it. */
-interface With {
-  readonly table: TableData | undefined;
-}
-
-interface Pending {
-  readonly question: Question;
-  readonly held: With | undefined;
-  readonly settle: (reply: Reply) => void;
-  readonly refuse: (error: Error) => void;
-}
-
-type Open<Q> = Q extends unknown ? Omit<Q, 'id'> : never;
-
-/** A worker that can be given up in the middle of a computation: it is ended and a fresh one takes over the rest. */
-class Thread {
-  #worker: Worker | undefined;
-  #next = 1;
-  readonly #pending = new Map<number, Pending>();
-  #holds: TableData | undefined;
-
-  ask<T>(
-    open: Open<Question>,
-    meanwhile: (reply: Reply) => void,
-    read: (reply: Reply) => T | undefined,
-    held?: With,
-  ): Job<T> {
-    const id = this.#next++;
-    const question = { ...open, id } as Question;
-    const answer = new Promise<T>((resolve, reject) => {
-      const settle = (reply: Reply): void => {
-        if (reply.say === 'progress' || (reply.say === 'table' && reply.early)) {
-          meanwhile(reply);
-          return;
-        }
-        this.#pending.delete(id);
-        const value = read(reply);
-        if (value !== undefined) resolve(value);
-        else
-          reject(
-            new Error(reply.say === 'failed' ? reply.message : 'The analysis gave an answer to another question.'),
-          );
-      };
-      this.#pending.set(id, { question, held, settle, refuse: reject });
-    });
-    this.#send(question, held);
-    return { answer, cancel: () => this.#giveUp(id) };
-  }
-
-  stop(): void {
-    this.#worker?.terminate();
-    this.#worker = undefined;
-    for (const { refuse } of this.#pending.values()) refuse(new Cancelled());
-    this.#pending.clear();
-  }
-
-  #send(question: Question, held: With | undefined): void {
-    const worker = this.#running();
-    if (held && held.table !== this.#holds) {
-      this.#holds = held.table;
-      worker.postMessage({ ask: 'hold', data: held.table } satisfies Holding);
-    }
-    // Reactive proxies cannot be cloned across threads; circuits are plain JSON anyway.
-    worker.postMessage(JSON.parse(JSON.stringify(question)));
-  }
-
-  #running(): Worker {
-    if (this.#worker) return this.#worker;
-    this.#holds = undefined;
-    const worker = startThread();
-    worker.onmessage = ({ data }: MessageEvent<Reply>) => this.#pending.get(data.id)?.settle(data);
-    worker.onerror = (event) => {
-      for (const { refuse } of this.#pending.values())
-        refuse(new Error(event.message || 'The analysis stopped unexpectedly.'));
-      this.#pending.clear();
-      this.#worker = undefined;
-    };
-    this.#worker = worker;
-    return worker;
-  }
-
-  #giveUp(id: number): void {
-    const given = this.#pending.get(id);
-    if (!given) return;
-    this.#pending.delete(id);
-    given.refuse(new Cancelled());
-    this.#worker?.terminate();
-    this.#worker = undefined;
-    for (const { question, held } of this.#pending.values()) this.#send(question, held);
-  }
-}

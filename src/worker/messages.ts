@@ -12,6 +12,8 @@ import type { TableData } from '../engine/table/table-data.ts';
 
 export type Question =
   | { readonly id: number; readonly ask: 'table'; readonly circuit: Circuit; readonly conditions: Conditions }
+  /** What open paths say of a table that the pressures take long for. */
+  | { readonly id: number; readonly ask: 'open-paths'; readonly circuit: Circuit; readonly conditions: Conditions }
   | {
       readonly id: number;
       readonly ask: 'numbers';
@@ -113,7 +115,7 @@ export interface Holding {
 
 export type Reply =
   | { readonly id: number; readonly say: 'progress'; readonly share: number }
-  /** `early`: what open paths say; the pressures follow in a second reply. */
+  /** `early`: there is a second reply to come, which knows more. */
   | {
       readonly id: number;
       readonly say: 'table';
@@ -121,6 +123,13 @@ export type Reply =
       readonly data: TableData;
       readonly findings: readonly Finding[];
       readonly took: number;
+    }
+  /** `table` is absent where the whole one comes as soon. */
+  | {
+      readonly id: number;
+      readonly say: 'open-paths';
+      readonly table:
+        { readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number } | undefined;
     }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
   | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
