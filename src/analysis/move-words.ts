@@ -197,11 +197,8 @@ const LINE_TEXTS = {
   'shut in': (names: string) => `Pressure gets into ${names} on the way and stays shut in there.`,
 } as const;
 
-/** Nothing feeds it and nothing lets it down. */
-const isShut = (at: Snapshot, line: number): boolean => {
-  const name = at.classes[line];
-  return name === 'cut off' || (name === 'carries displaced oil' && at.toTank[line] === 0);
-};
+/** Nothing feeds it, nothing lets it down, and no actuator pushes oil through it. */
+const isShut = (at: Snapshot, line: number): boolean => at.classes[line] === 'cut off';
 
 function changeOf(was: ActuatorVerdict, is: ActuatorVerdict): MoveEffect['kind'] {
   const [from, to] = [directionOf(was), directionOf(is)];
