@@ -11,3 +11,11 @@ interface Window {
     readonly types: readonly FilePickerType[];
   }) => Promise<FileSystemFileHandle>;
 }
+
+interface FileSystemHandle {
+  requestPermission?: (what: { readonly mode: 'read' | 'readwrite' }) => Promise<PermissionState>;
+}
+
+interface DataTransferItem {
+  getAsFileSystemHandle?: () => Promise<FileSystemHandle | null>;
+}

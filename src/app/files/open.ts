@@ -5,6 +5,7 @@ import { editor, EMPTY } from '../state/editor.svelte.ts';
 import type { OpenFile } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
 import { session } from '../state/session.svelte.ts';
+import { seenOnDisk } from './disk.ts';
 
 /** Larger than any circuit: what is bigger is not one, and reading it would stop the screen. */
 const LARGEST = 8 * 1024 * 1024;
@@ -76,7 +77,9 @@ export async function openBlob(blob: File, handle?: FileSystemFileHandle): Promi
     return false;
   }
   try {
-    return openText(await blob.text(), { name: blob.name, handle });
+    const text = await blob.text();
+    if (handle) seenOnDisk(handle, blob.lastModified);
+    return openText(text, { name: blob.name, handle });
   } catch {
     notices.say({
       level: 'error',
@@ -102,6 +105,15 @@ export async function openFromDisk(): Promise<void> {
     if (blob) void openBlob(blob);
   });
   input.click();
+}
+
+/** A file dropped on the page, with its place on disk where the browser tells it, so that Save writes there. */
+export async function openDropped(transfer: DataTransfer | null): Promise<void> {
+  const blob = transfer?.files[0];
+  if (!blob) return;
+  const item = [...(transfer?.items ?? [])].find(({ kind }) => kind === 'file');
+  const handle = await item?.getAsFileSystemHandle?.().catch(() => null);
+  await openBlob(blob, handle instanceof FileSystemFileHandle ? handle : undefined);
 }
 
 /** Undefined when the person closes the system's window without picking. */

@@ -1,6 +1,7 @@
 import { writeCircuit } from '../../circuit/file.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
+import { look, writtenByOthers } from './disk.ts';
 import { FILE_TYPES, pick } from './open.ts';
 
 const ENDING = '.spool.json';
@@ -29,6 +30,7 @@ async function writeTo(handle: FileSystemFileHandle, text: string): Promise<bool
     const stream = await handle.createWritable();
     await stream.write(text);
     await stream.close();
+    await look(handle);
     return true;
   } catch {
     notices.say({
@@ -43,6 +45,16 @@ async function writeTo(handle: FileSystemFileHandle, text: string): Promise<bool
 export async function save(): Promise<void> {
   const { handle } = editor;
   if (!handle) return saveAs();
+  if (!(await writtenByOthers(handle))) return saveOver(handle);
+  notices.say({
+    level: 'error',
+    title: `${handle.name} was not saved: it has changed on disk`,
+    text: 'Another window or program has written it since it was opened or saved here. Save as… keeps both; nothing is lost here.',
+    action: { text: 'Write over it', run: () => void saveOver(handle) },
+  });
+}
+
+async function saveOver(handle: FileSystemFileHandle): Promise<void> {
   if (await writeTo(handle, writeCircuit(editor.circuit))) editor.markSaved({ name: handle.name, handle });
 }
 

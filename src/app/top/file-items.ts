@@ -1,5 +1,6 @@
 import { EXAMPLES } from '../files/examples.ts';
 import { newCircuit, openFromDisk, openText } from '../files/open.ts';
+import { recent } from '../files/recent.svelte.ts';
 import { save, saveAs } from '../files/save.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
 
@@ -19,4 +20,17 @@ export const labelledExamples = (): MenuItem[] =>
           text: title,
           run: () => void openText(text, { name: undefined }),
         })),
+      ];
+
+export const recentItems = (): MenuItem[] =>
+  recent.list.length === 0
+    ? []
+    : [
+        { heading: 'Recent files' },
+        ...recent.list.map((file): MenuItem => ({
+          text: file.name,
+          hint: file.handle ? file.circuit : `${file.circuit}; this browser asks for the file again`,
+          run: () => void recent.open(file),
+        })),
+        { text: 'Forget these names', run: () => recent.clear() },
       ];
