@@ -36,6 +36,7 @@ test('a panel too large to list: the row follows the levers, picked levers have 
   // By hand: at rest all centres let the pump down and hold their cylinders; V1 at a extends C1 alone.
   await expect.poll(async () => (await cells(page, 0)).filter((cell) => cell.startsWith('held')).length).toBe(20);
   await page.keyboard.press('1');
+  await page.keyboard.press('ArrowLeft');
   await expect.poll(async () => (await cells(page, 0)).filter((cell) => cell.startsWith('extends')).length).toBe(1);
   expect(await severe(page)).toEqual([]);
 

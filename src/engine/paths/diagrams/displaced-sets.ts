@@ -6,6 +6,7 @@ import { rest } from './actuator-motion.ts';
 import type { ActuatorMotion } from './actuator-motion.ts';
 import type { Diagram } from './diagrams.ts';
 import { NONE } from './diagrams.ts';
+import { closeDisplaced } from './displaced-closure.ts';
 import type { OpenPathSets } from './open-paths.ts';
 import { at, none, operations } from './reach-sets.ts';
 import type { ReachSets } from './reach-sets.ts';
@@ -43,11 +44,14 @@ export function driveByDisplaced(
     return or(push(actuator.a, 'in', m.exitA, m.fedA), push(actuator.b, 'out', m.exitB, m.fedB));
   });
   doubtful = or(doubtful, ...yielding);
-  let moved = net.actuators.map((_, i) => i);
+  const closure = closeDisplaced(net, conditions, paths, r, actuators, doubtful);
+  // Where the order of the rounds may matter, they are gone through.
+  const { open } = closure;
+  let moved = open === NONE ? [] : net.actuators.map((_, i) => i);
   while (moved.length > 0) {
     const push = (line: number, motion: Diagram): void => {
       if (line < 0 || motion === NONE) return;
-      const set = minus(and(motion, at(r.notFree, line)), at(pushed, line));
+      const set = minus(and(motion, open, at(r.notFree, line)), at(pushed, line));
       fresh[line] = or(at(fresh, line), set);
     };
     for (const i of moved) {
@@ -69,7 +73,7 @@ export function driveByDisplaced(
       .filter(drive);
   }
   markRings();
-  return pushed;
+  return pushed.map((set, line) => or(set, at(closure.pushed, line)));
 
   function drive(i: number): boolean {
     const { a, b } = net.actuators[i] as NetActuator;

@@ -17,6 +17,8 @@ export interface Ways {
   /** [line] → ways through actuators, except those of actuator `without`. */
   readonly links?: readonly (readonly Link[])[] | undefined;
   readonly without?: number | undefined;
+  /** In what set a way through an actuator is open, by the line it leads to; absent: in all. */
+  readonly passes?: ((actuator: number, to: number) => Diagram) | undefined;
   readonly fromTank?: boolean | undefined;
 }
 
@@ -74,7 +76,7 @@ export class Elimination {
   #opened(): Int32Array {
     const found = new Int32Array(this.#plan.ways);
     this.#plan.edgeWay.forEach((way, e) => this.#openEdge(found, way, e));
-    for (const { way, to } of this.#plan.links) this.#openWay(found, way, to, ALL);
+    for (const { way, to, actuator } of this.#plan.links) this.#openWay(found, way, to, this.#passes(actuator, to));
     return found;
   }
 
@@ -87,9 +89,14 @@ export class Elimination {
       found[way] = NONE;
       for (let e = edgeWay.indexOf(way); e >= 0; e = edgeWay.indexOf(way, e + 1)) this.#openEdge(found, way, e);
       for (const other of links)
-        if (other.way === way && other.actuator !== without) this.#openWay(found, way, other.to, ALL);
+        if (other.way === way && other.actuator !== without)
+          this.#openWay(found, way, other.to, this.#passes(other.actuator, other.to));
     }
     return found;
+  }
+
+  #passes(actuator: number, to: number): Diagram {
+    return this.#ways.passes?.(actuator, to) ?? ALL;
   }
 
   #openEdge(found: Int32Array, way: number, edge: number): void {

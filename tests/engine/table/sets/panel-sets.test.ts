@@ -13,6 +13,7 @@ import { tabulate } from '../../../../src/engine/table/tabulate.ts';
 import { ACTUATOR_VERDICTS } from '../../../../src/engine/table/words.ts';
 import type { Network } from '../../../../src/network/network.ts';
 import { family, FAMILIES } from '../../../bench/circuits.ts';
+import { circuit } from '../../../notation.ts';
 import { randomCircuit } from '../../../random-circuit.ts';
 
 type Place = 'between' | 'in' | 'out';
@@ -95,6 +96,56 @@ test('the valve families, series circuits with displaced oil among them', () => 
     for (const running of [true, false]) expect(compare(networkOf(family(name, 5)), running)).toBeGreaterThan(10);
   }
 });
+
+const CENTRES = [
+  'valve-4/3-shut',
+  'valve-4/3-bypass',
+  'valve-4/3-float',
+  'valve-4/3-joined',
+  'valve-4/3-regenerative',
+  'valve-4/3-b-t',
+];
+
+test(
+  'rows of five valves of any centres, some loaded, with lines across: oil goes from one to the next',
+  { timeout: 60_000 },
+  () => {
+    let displaced = 0;
+    fc.assert(
+      fc.property(
+        fc.array(fc.tuple(fc.constantFrom(...CENTRES), fc.nat(5)), { minLength: 5, maxLength: 5 }),
+        fc.array(fc.tuple(fc.nat(4), fc.constantFrom('A', 'B'), fc.nat(4), fc.constantFrom('A', 'B')), {
+          maxLength: 2,
+        }),
+        (valves, across) => {
+          const numbers = valves.map((_, i) => i + 1);
+          const parts = valves.map(
+            ([form, load], i) =>
+              `V${i + 1} directional-valve:${form}, C${i + 1} cylinder${load === 0 ? '{load=5 kN;loadSense=pushes in}' : ''}`,
+          );
+          const lines = [
+            'P1.P R1.P V1.P',
+            ...numbers.slice(1).map((i) => `V${i - 1}.T V${i}.P`),
+            'V5.T R1.T T1.T P1.S',
+            ...numbers.flatMap((i) => [`V${i}.A C${i}.A`, `V${i}.B C${i}.B`]),
+            ...across
+              .filter(([from, port, to, other]) => from !== to || port !== other)
+              .map(([from, port, to, other]) => `V${from + 1}.${port} V${to + 1}.${other}`),
+          ];
+          const net = networkOf(
+            circuit(`P1 fixed-pump, R1 relief-valve, T1 tank, ${parts.join(', ')} | ${lines.join(' | ')}`),
+          );
+          compare(net, true);
+          const conditions = { pumpsRunning: true, places: net.actuators.map(() => 'between' as const) };
+          const { motions } = new PanelSets(net, conditions, openPathSets(net, conditions));
+          if (motions.actuators.some((motion) => motion.displaced !== NONE)) displaced += 1;
+        },
+      ),
+      { numRuns: 40, seed: 20261207 },
+    );
+    expect(displaced).toBeGreaterThan(12);
+  },
+);
 
 test('bypass centres in series, 10 valves: a cylinder extends in one of three combinations of its own valve', () => {
   // Check case of series circuits: with the displaced oil counted, each cylinder answers to its own valve alone.
