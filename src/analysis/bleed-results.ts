@@ -123,3 +123,19 @@ export interface TrappedReason {
   /** A few of the rows, 0-based, with what is said in them. */
   readonly examples: readonly { readonly row: number; readonly text: string }[];
 }
+
+/** The same for panels of any size, by open paths alone. */
+export interface TrappedPanel {
+  /** Combinations of positions. */
+  readonly total: bigint;
+  readonly lines: readonly (BleedLine & { readonly reasons: readonly TrappedPanelReason[] })[];
+}
+
+export interface TrappedPanelReason {
+  readonly kind: TrapReason;
+  readonly count: bigint;
+  /** The levers that it depends on, as they stand in one of the combinations. */
+  readonly levers: readonly { readonly label: string; readonly position: string }[];
+  /** What is said of this combination. */
+  readonly text: string;
+}

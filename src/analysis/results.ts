@@ -46,6 +46,8 @@ export type {
   PowerLossAnswer,
   PowerLossOutcome,
   PowerLossVerdict,
+  TrappedPanel,
+  TrappedPanelReason,
   TrappedReason,
   TrappedSummary,
 } from './bleed-results.ts';

@@ -1,13 +1,17 @@
 import { networkOf } from '../analysis/analyse.ts';
 import { bleedPlan, trappedSummary } from '../analysis/bleed.ts';
 import type { Conditions } from '../analysis/results.ts';
+import { trappedPanel } from '../analysis/trapped-panel.ts';
+import { unlimited } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
 import { writeBleedJson, writeBleedText } from '../report/bleed.ts';
-import { writeTrappedJson, writeTrappedText } from '../report/trapped.ts';
+import { bleedPages } from '../report/pages/bleed.ts';
+import { writePrintDocument } from '../report/pages/document.ts';
+import { writeTrappedJson, writeTrappedPanelJson, writeTrappedPanelText, writeTrappedText } from '../report/trapped.ts';
 import type { Command } from './arguments.ts';
 import { conditionsOf } from './conditions.ts';
-import { EXIT } from './failure.ts';
+import { EXIT, Failure, sayProblems } from './failure.ts';
 import { listedRow, stateOf } from './standing.ts';
 
 /** What a command writes, and the exit code once it is written. */
@@ -34,9 +38,28 @@ export function bleed(
     answer,
     ...standing,
   };
+  const sheet = (): Iterable<string> =>
+    writePrintDocument(`${circuit.name}, bleed-down`, bleedPages({ circuit, conditions, answer, ...standing }));
   return {
-    pieces: format === 'json' ? [writeBleedJson(source)] : writeBleedText(source),
+    pieces: format === 'json' ? [writeBleedJson(source)] : format === 'html' ? sheet() : writeBleedText(source),
     exit: answer.left.length > 0 ? EXIT.checkFailed : EXIT.done,
+  };
+}
+
+/** Of a panel too large to list: exact counts by open paths alone. */
+export function trappedSets(
+  { file, format, ...rest }: Extract<Command, { name: 'trapped' }>,
+  circuit: Circuit,
+  version: string,
+): Written {
+  const conditions = conditionsOf({ file, ...rest }, circuit);
+  const found = trappedPanel(circuit, conditions, unlimited);
+  if (!found.ok) throw new Failure(sayProblems(file, found.problems));
+  const panel = found.value;
+  const source = { version, circuit: circuit.name, conditions, loadCases: circuit.loadCases ?? [], panel };
+  return {
+    pieces: format === 'json' ? [writeTrappedPanelJson(source)] : writeTrappedPanelText(source),
+    exit: EXIT.done,
   };
 }
 

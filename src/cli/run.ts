@@ -1,4 +1,5 @@
 import { explainRow, findings, MOST_ROWS, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
+import { tabulateHeld } from '../analysis/held.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
 import type { UnitSystem } from '../base/units.ts';
@@ -14,16 +15,17 @@ import type { Report } from '../report/rows.ts';
 import { writeText } from '../report/text.ts';
 import { readArguments } from './arguments.ts';
 import type { Command, TableFormat } from './arguments.ts';
-import { bleed, trapped } from './bleed.ts';
+import { bleed, trapped, trappedSets } from './bleed.ts';
 import type { Written } from './bleed.ts';
 import { check } from './check.ts';
 import { conditionsOf } from './conditions.ts';
-import { EXIT, Failure, messageOf, sayProblems } from './failure.ts';
+import { EXIT, Failure, messageOf } from './failure.ts';
 import { readCircuitFile } from './input.ts';
 import { loseAllPower, moves, vent } from './moves.ts';
 import { print, writeWhole } from './output.ts';
 import { plan } from './plan.ts';
-import { readState } from './state.ts';
+import { parts, printed } from './print.ts';
+import { heldWhereLarge, stateOf } from './standing.ts';
 import { ask, fold, influence } from './whole.ts';
 
 /** Up to here the rows of a JSON table also carry sentences and candidates, which take a search for each row. */
@@ -51,11 +53,16 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
       return { pieces: explain(command, circuit, version), exit: EXIT.done };
     case 'trapped': {
       if (command.line !== undefined) return vent(command, command.line, circuit, version);
+      if (rowsOf(circuit) > MOST_ROWS) return trappedSets(command, circuit, version);
       const conditions = conditionsOf(command, circuit);
       return trapped(command, circuit, conditions, version, tableOf(command.file, circuit, conditions));
     }
     case 'bleed':
       return bleed(command, circuit, version);
+    case 'print':
+      return printed(command, circuit, version);
+    case 'parts':
+      return parts(command, circuit);
     case 'powerloss':
       return loseAllPower(command, circuit, version);
     case 'moves':
@@ -73,6 +80,9 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
   }
 }
 
+const rowsOf = (circuit: Circuit): number =>
+  networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
+
 /** Nobody waits at a screen here: rows that the pressure layer may solve, some thousands a second. */
 const PRESSURE_ROWS = 600_000;
 
@@ -81,12 +91,14 @@ const note = (text: string): void => console.error(`spooltable: ${text}`);
 type Table = Extract<Command, { name: 'table' }>;
 type Explain = Extract<Command, { name: 'explain' }>;
 
+const ANSWERS_ALL = 'For all of it there are explain, moves, fold, ask, influence and check.';
+
 function tableOf(file: string, circuit: Circuit, conditions: Conditions): StateTable {
   const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
   try {
     return new StateTable(tabulate(circuit, conditions, unlimited, { pressureRows: PRESSURE_ROWS }));
   } catch (error) {
-    throw count > MOST_ROWS ? new Failure(`${file}: ${messageOf(error)}`) : error;
+    throw count > MOST_ROWS ? new Failure(`${file}: ${messageOf(error)} ${ANSWERS_ALL}`) : error;
   }
 }
 
@@ -127,20 +139,23 @@ const WRITERS: Record<TableFormat, (report: Report, width: number | undefined) =
 function explain(command: Explain, circuit: Circuit, version: string): Iterable<string> {
   const { file, format, state } = command;
   const conditions = conditionsOf(command, circuit);
-  const stateTable = tableOf(file, circuit, conditions);
-  const read = readState(state, stateTable.data.inputs);
-  if (!read.ok) throw new Failure(sayProblems(file, read.problems));
-  const row = stateTable.rowOf(read.value.positions);
-  const explanation = explainRow(circuit, conditions, row, command.units);
+  const net = networkOf(circuit);
+  const { positions, assumed } = stateOf(file, net, state);
+  // One row needs no table of all: where they are too many to list, every lever is held where it stands.
+  const held = heldWhereLarge(net, positions);
+  const where = held ? { ...conditions, held } : conditions;
+  const stateTable = held ? new StateTable(tabulateHeld(circuit, where, unlimited)) : tableOf(file, circuit, where);
+  const row = held ? 0 : stateTable.rowOf(positions);
+  const explanation = explainRow(circuit, where, row, command.units);
   const source = {
     version,
     circuit,
-    conditions,
+    conditions: where,
     table: stateTable,
     findings: [],
     explanation,
     numbers: numberSource(circuit, command.units, () => [explanation.numbers]),
-    assumed: read.value.assumed,
+    assumed,
   };
   return format === 'json' ? [writeExplanationJson(source)] : writeExplanationText(source);
 }

@@ -1,4 +1,4 @@
-import type { Conditions, TrappedSummary } from '../analysis/results.ts';
+import type { Conditions, TrappedPanel, TrappedSummary } from '../analysis/results.ts';
 import type { LoadCase } from '../circuit/model.ts';
 import { measureOf } from './bleed-words.ts';
 import { nameOfCase, sayConditions } from './conditions.ts';
@@ -69,6 +69,57 @@ export function writeTrappedJson({ version, circuit, conditions, loadCases, summ
         kind,
         rowCount,
         examples: examples.map(({ row, text }) => ({ row: row + 1, text })),
+      })),
+    })),
+    caution: TRAPPED_CAUTION,
+  };
+  return `${JSON.stringify(out, null, 2)}\n`;
+}
+
+export interface TrappedPanelSource extends Omit<TrappedSource, 'summary' | 'count'> {
+  readonly panel: TrappedPanel;
+}
+
+/** The same of a panel too large to list: exact counts, and one combination for each reason. */
+export function* writeTrappedPanelText({
+  circuit,
+  conditions,
+  loadCases,
+  panel,
+}: TrappedPanelSource): Generator<string> {
+  const line = (text: string): string => `${plain(text).trimEnd()}\n`;
+  const total = panel.total.toLocaleString('en');
+  yield line(circuit);
+  yield line(`Trapped pressure over ${total} combinations, ${sayConditions(conditions, loadCases)}; open paths alone`);
+  if (panel.lines.length === 0) yield line('\nNo line is trapped in any combination.');
+  for (const entry of panel.lines) {
+    yield '\n';
+    yield line(`${entry.name} (${measureOf(entry)})`);
+    for (const { kind, count, levers, text } of entry.reasons) {
+      yield line(`  ${kind}: ${count.toLocaleString('en')} of ${total}`);
+      const state = levers.map(({ label, position }) => `${label} ${position}`).join(', ');
+      yield line(`    ${state === '' ? 'always' : `with ${state}`}: ${text}`);
+    }
+  }
+  yield '\n';
+  yield line(TRAPPED_CAUTION);
+}
+
+/** The same as one JSON object; counts as strings, since they can be larger than a number holds. */
+export function writeTrappedPanelJson({ version, circuit, conditions, panel }: TrappedPanelSource): string {
+  const out = {
+    spooltable: { version, report: REPORT_VERSION },
+    circuit,
+    conditions,
+    combinations: String(panel.total),
+    openPathsAlone: true,
+    lines: panel.lines.map(({ name, measure, reasons }) => ({
+      line: name,
+      measure,
+      reasons: reasons.map(({ kind, count, levers, text }) => ({
+        kind,
+        combinations: String(count),
+        example: { state: Object.fromEntries(levers.map(({ label, position }) => [label, position])), text },
       })),
     })),
     caution: TRAPPED_CAUTION,

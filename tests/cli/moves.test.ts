@@ -107,3 +107,44 @@ describe('powerloss', () => {
       expect((await spooltable(['powerloss', example(name)])).out).toContain('Pumps stopped, coils on:');
   });
 });
+
+describe('trapped on a panel too large to list', () => {
+  /** One pump, sections side by side, a load on the first cylinder. */
+  const panel = (sections: number): string => {
+    const ids = Array.from({ length: sections }, (_, i) => i + 1);
+    const parts = ids.map(
+      (i) =>
+        `V${i} directional-valve:valve-4/3-shut, C${i} cylinder${i === 1 ? '{load=20 kN;loadSense=pushes in}' : ''}`,
+    );
+    const lines = ids.map((i) => `A${i}: V${i}.A C${i}.A | B${i}: V${i}.B C${i}.B`);
+    const all = (port: string): string => ids.map((i) => `V${i}.${port}`).join(' ');
+    return `P1 fixed-pump, R1 relief-valve, T1 tank, ${parts.join(', ')} | P: P1.P R1.P ${all('P')} | T: R1.T P1.S T1.T ${all('T')} | ${lines.join(' | ')}`;
+  };
+
+  test('exact counts over 3⁴⁰ combinations', async () => {
+    const { code, out, err } = await spooltable(['trapped', writeRig(folder.path, panel(40)), '--format', 'json']);
+    expect({ code, err }).toEqual({ code: 0, err: '' });
+    const found = JSON.parse(out) as {
+      combinations: string;
+      lines: { line: string; reasons: { kind: string; combinations: string }[] }[];
+    };
+    expect(found.combinations).toBe(String(3n ** 40n));
+    // A1 is cut off in the centre of V1 only, whatever the 39 others do.
+    const first = found.lines.find(({ line }) => line === 'A1');
+    expect(first?.reasons.map(({ kind, combinations }) => [kind, combinations])).toEqual([
+      ['load', String(3n ** 39n)],
+      ['left behind', String(3n ** 39n)],
+      ['heat', String(3n ** 39n)],
+    ]);
+  });
+
+  test('in words, with a combination for each reason', async () => {
+    const { out } = await spooltable(['trapped', writeRig(folder.path, panel(15))]);
+    expect(out).toContain('Trapped pressure over 14,348,907 combinations, pumps running; open paths alone');
+    expect(out).toMatch(
+      /^ {2}left behind: 4,782,969 of 14,348,907\n {4}with V1 0: Under pressure before .* V1 from a to 0/m,
+    );
+    expect(out).toMatch(/^ {2}load: 4,782,969 of 14,348,907\n {4}with V1 0: Pressed on at rest by the load of C1/m);
+    expect(out).toContain('qualified people');
+  });
+});
