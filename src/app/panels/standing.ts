@@ -6,11 +6,19 @@ import type { Subject } from '../state/session.svelte.ts';
 import type { Conditions, Explanation, RowNumbers, StateTable } from '../../worker/client.ts';
 
 /** What the verdict stands on: `Holds for any values, between its stops.` Undefined for lines. */
-export function sayStanding(explanation: Explanation, table: StateTable, { of, key }: Subject, places: Conditions['places']): string | undefined {
+export function sayStanding(
+  explanation: Explanation,
+  table: StateTable,
+  { of, key }: Subject,
+  places: Conditions['places'],
+  assumed: boolean,
+): string | undefined {
   if (of === 'line' || of === 'dependent') return undefined;
   const reason = (of === 'actuator' ? explanation.actuators : explanation.pumps).find(({ part }) => part === key);
   if (!reason) return undefined;
-  const words = reason.onValues ? 'Rests on entered and assumed values' : 'Holds for any values';
+  const words = reason.onValues
+    ? `Rests on ${assumed ? 'entered and assumed' : 'entered'} values`
+    : 'Holds for any values';
   const linear = table.data.actuators.some(({ part, motion }) => part === key && motion === 'linear');
   if (!linear) return `${words}.`;
   const place = places?.[key];
@@ -18,12 +26,19 @@ export function sayStanding(explanation: Explanation, table: StateTable, { of, k
 }
 
 /** The figures of the subject; the steps give them in metric units. */
-export function sayFigures(table: StateTable, numbers: RowNumbers, { of, key }: Subject, units: UnitSystem): string | undefined {
+export function sayFigures(
+  table: StateTable,
+  numbers: RowNumbers,
+  { of, key }: Subject,
+  units: UnitSystem,
+): string | undefined {
   if (numbers.status !== 'solved' || of === 'dependent') return undefined;
   const flow = (si: number): string => formatQuantity(si, 'flow', units, { digits: 2 });
   const pressureIn = (line: number): string | undefined => {
     const pressure = numbers.lines[line];
-    return pressure === undefined || !pressureKnown(table, line, numbers.row) ? undefined : sayPressure(pressure, units);
+    return pressure === undefined || !pressureKnown(table, line, numbers.row)
+      ? undefined
+      : sayPressure(pressure, units);
   };
   if (of === 'pump') {
     const pump = numbers.pumps[table.data.pumps.findIndex(({ part }) => part === key)];

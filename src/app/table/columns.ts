@@ -51,6 +51,9 @@ const FIGURES = 38;
 const fits = (texts: readonly string[], extra: number, head: string): number =>
   Math.ceil(Math.max(...texts.map((text) => text.length * CHARACTER + extra), head.length * HEAD_CHARACTER) + PADDING);
 
+/** Room for the asterisk of verdicts that rest on values. */
+const mark = (valued: BitSet | undefined): number => (valued ? CHARACTER : 0);
+
 /** Room for the figures beside the words, and for their unit beside the label. */
 function withFigures(width: number, label: string, figures: FigureHead | undefined): number {
   if (!figures) return width;
@@ -119,7 +122,11 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
       of: 'actuator',
       index,
       title: actuator.label,
-      width: withFigures(fits(words.length > 0 ? words : ['held'], GLYPH, actuator.label), actuator.label, figures),
+      width: withFigures(
+        fits(words.length > 0 ? words : ['held'], GLYPH + mark(data.valuedActuators[index]), actuator.label),
+        actuator.label,
+        figures,
+      ),
       ...(figures && { figures }),
     });
   });
@@ -131,7 +138,11 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
       of: 'pump',
       index,
       title: pump.label,
-      width: withFigures(fits(words.length > 0 ? words : ['working'], GLYPH, pump.label), pump.label, figures),
+      width: withFigures(
+        fits(words.length > 0 ? words : ['working'], GLYPH + mark(data.valuedPumps[index]), pump.label),
+        pump.label,
+        figures,
+      ),
       ...(figures && { figures }),
     });
   });
@@ -141,7 +152,7 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
     { title: data.dependents.length === 1 ? 'Follows' : 'Follow', columns: followers },
     { title: 'Actuators', columns: actuators },
     { title: 'Pumps', columns: pumps },
-    { title: 'Blocked lines', columns: [wide('blocked', 'dead end under pressure, or cut off', 150, 1.3)] },
+    { title: 'Blocked lines', columns: [wide('blocked', 'dead end, or cut off', 150, 1.3)] },
     { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 160, 1.5)] },
     { title: 'Danger, notes', columns: [wide('notes', 'gravest first', 130, 1.1)] },
   ];

@@ -22,12 +22,17 @@ test('of a held load the pressure under it is said, and nothing of what an earli
   // 20 kN less 0.2 kN of friction on 63 mm bore.
   expect(figures(row, 'metric')).toBe('A 64 bar');
   expect(figures(row, 'us')).toBe('A 921 psi');
-  expect(sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, undefined)).toBe('Holds for any values, between its stops.');
+  expect(sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, undefined, true)).toBe(
+    'Holds for any values, between its stops.',
+  );
 });
 
 test('of a moving one speed, flow and both sides are said, and that they rest on values', () => {
   const row = table.rowOf([0, 0, 1]);
   // 20 L/min on 63 mm bore: 107 mm/s.
   expect(figures(row, 'metric')).toMatch(/^107 mm\/s, 20 L\/min, A 6\d bar, B /);
-  expect(sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, { LIFT: 'in' })).toBe('Rests on entered and assumed values, at its inner stop.');
+  const said = (assumed: boolean): string | undefined =>
+    sayStanding(explainRow(circuit, { pumps: 'running' }, row), table, LIFT, { LIFT: 'in' }, assumed);
+  expect(said(true)).toBe('Rests on entered and assumed values, at its inner stop.');
+  expect(said(false)).toBe('Rests on entered values, at its inner stop.');
 });
