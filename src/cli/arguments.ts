@@ -1,6 +1,5 @@
 import { parseArgs } from 'node:util';
 import type { UnitSystem } from '../base/units.ts';
-import { codeOf, Failure, messageOf } from './failure.ts';
 import {
   ASK_HELP,
   BLEED_HELP,
@@ -15,12 +14,22 @@ import {
   TABLE_HELP,
   TRAPPED_HELP,
 } from './help.ts';
+import { attempt, loadCase, oneFile, oneOf, outFile, usage } from './option-reading.ts';
 import { PLAN_SHOW_OPTIONS, planShows } from './plan-options.ts';
 import type { PlanShows } from './plan-options.ts';
+import { partsCommand, printCommand } from './print-options.ts';
+import type { PartsFormat, PrintCommand } from './print-options.ts';
 
 export type Pumps = 'running' | 'stopped';
 
 export type Command =
+  | PrintCommand
+  | {
+      readonly name: 'parts';
+      readonly file: string;
+      readonly format: PartsFormat;
+      readonly out: string | undefined;
+    }
   | (Whole & { readonly name: 'fold'; readonly by: readonly string[] })
   | (Whole & { readonly name: 'influence' })
   | (Whole & {
@@ -41,16 +50,8 @@ export type Command =
       readonly units: UnitSystem;
       readonly out: string | undefined;
     }
-  | {
-      readonly name: 'explain' | 'moves';
-      readonly file: string;
-      readonly format: ExplainFormat;
-      readonly pumps: Pumps;
-      readonly load: string | undefined;
-      readonly units: UnitSystem;
-      readonly state: readonly string[];
-      readonly out: string | undefined;
-    }
+  | (ExplainOptions & { readonly name: 'explain' })
+  | (ExplainOptions & { readonly name: 'moves' })
   | {
       readonly name: 'trapped';
       readonly file: string;
@@ -62,14 +63,8 @@ export type Command =
       readonly state: readonly string[];
       readonly out: string | undefined;
     }
-  | {
-      readonly name: 'bleed' | 'powerloss';
-      readonly file: string;
-      readonly format: ExplainFormat;
-      readonly load: string | undefined;
-      readonly state: readonly string[];
-      readonly out: string | undefined;
-    }
+  | (BleedOptions & { readonly name: 'bleed' })
+  | (BleedOptions & { readonly name: 'powerloss' })
   | {
       readonly name: 'check';
       readonly file: string;
@@ -93,6 +88,24 @@ export type Command =
       readonly out: string | undefined;
     };
 
+interface ExplainOptions {
+  readonly file: string;
+  readonly format: ExplainFormat;
+  readonly pumps: Pumps;
+  readonly load: string | undefined;
+  readonly units: UnitSystem;
+  readonly state: readonly string[];
+  readonly out: string | undefined;
+}
+
+interface BleedOptions {
+  readonly file: string;
+  readonly format: BleedFormat;
+  readonly load: string | undefined;
+  readonly state: readonly string[];
+  readonly out: string | undefined;
+}
+
 export interface Whole {
   readonly file: string;
   readonly format: ExplainFormat;
@@ -105,6 +118,9 @@ export const TABLE_FORMATS = ['text', 'csv', 'json', 'markdown'] as const;
 export type TableFormat = (typeof TABLE_FORMATS)[number];
 export const EXPLAIN_FORMATS = ['text', 'json'] as const;
 export type ExplainFormat = (typeof EXPLAIN_FORMATS)[number];
+/** `html`: the sheet to print. */
+const BLEED_FORMATS = [...EXPLAIN_FORMATS, 'html'] as const;
+export type BleedFormat = (typeof BLEED_FORMATS)[number];
 
 const COMMON = {
   format: { type: 'string', default: 'text' },
@@ -151,6 +167,10 @@ export function readArguments(args: readonly string[], version: string): Command
       return influenceCommand(rest);
     case 'ask':
       return askCommand(rest);
+    case 'print':
+      return printCommand(rest);
+    case 'parts':
+      return partsCommand(rest);
     default:
       throw usage(first.startsWith('-') ? `Unknown option ${first}.` : `Unknown command "${first}".`);
   }
@@ -243,7 +263,7 @@ function bleedCommand(name: 'bleed' | 'powerloss', text: string, args: string[])
   return {
     name,
     file: oneFile(name, positionals),
-    format: oneOf(name, '--format', values.format, EXPLAIN_FORMATS),
+    format: oneOf(name, '--format', values.format, name === 'bleed' ? BLEED_FORMATS : EXPLAIN_FORMATS),
     load: loadCase(name, values.load),
     state: values.state,
     out: outFile(name, values.out),
@@ -352,41 +372,4 @@ function wholeOf(
     load: loadCase(command, values.load),
     out: outFile(command, values.out),
   };
-}
-
-const usage = (what: string, command = ''): Failure =>
-  new Failure(`${what} See spooltable ${command}${command && ' '}--help.`);
-
-function attempt<T>(command: string, parse: () => T): T {
-  try {
-    return parse();
-  } catch (error) {
-    if (codeOf(error)?.startsWith('ERR_PARSE_ARGS') !== true) throw error;
-    // Node adds advice after the first sentence, and line feeds.
-    const [sentence = ''] = messageOf(error).split(/\.\s|\n/);
-    throw usage(`${sentence.replace(/\.$/, '')}.`, command);
-  }
-}
-
-function oneFile(command: string, files: readonly string[]): string {
-  const [file, second] = files;
-  if (file === undefined || file === '') throw usage('No circuit file is given.', command);
-  if (second !== undefined) throw usage(`One circuit file is taken, and "${second}" is a second one.`, command);
-  return file;
-}
-
-function oneOf<T extends string>(command: string, option: string, value: string, allowed: readonly T[]): T {
-  const found = allowed.find((word) => word === value);
-  if (found === undefined) throw usage(`${option} takes ${allowed.join(' or ')}, not "${value}".`, command);
-  return found;
-}
-
-function loadCase(command: string, load: string | undefined): string | undefined {
-  if (load === '') throw usage('--load needs the name of a load case.', command);
-  return load;
-}
-
-function outFile(command: string, out: string | undefined): string | undefined {
-  if (out === '') throw usage('--out needs the name of a file.', command);
-  return out === '-' ? undefined : out;
 }

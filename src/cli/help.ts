@@ -13,6 +13,8 @@ Commands:
   bleed FILE     how to let it down after a stop: the shortest list of lever moves
   powerloss FILE what a loss of power does in one state
   check FILE     whether its rules hold in every combination
+  print FILE     drawing, operating chart, findings and part list as sheets to print
+  parts FILE     the part list
   plan FILE      whether its step plans do what they say, and what a loss of power does
 
 Options:
@@ -117,7 +119,7 @@ Options:
   --state VALVE=POSITION,…          labels and position names as on the sheet; a valve that is left out stands at
                                     rest, and the answer says so; may be given more than once
   --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
-  --format text|json                how it is written (text)
+  --format text|json|html           how it is written (text); html is a sheet to print and fill in
   --out FILE                        write there, whole or not at all, instead of to standard output
   --help                            this text
 `;

@@ -1,4 +1,4 @@
-import { explainRow, findings, MOST_ROWS, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
+import { dumpRow, explainRow, findings, MOST_ROWS, networkOf, numbersOf, tabulate } from '../analysis/analyse.ts';
 import { tabulateHeld } from '../analysis/held.ts';
 import type { Conditions } from '../analysis/results.ts';
 import { unlimited } from '../base/budget.ts';
@@ -39,7 +39,8 @@ export async function run(args: readonly string[], version: string): Promise<voi
     return;
   }
   const circuit = await readCircuitFile(command.file, note);
-  const { pieces, exit } = perform(command, circuit, version);
+  const { pieces, exit, dump } = perform(command, circuit, version);
+  if (dump) await writeWhole(dump.file, command.file, [dump.text]);
   if (command.out === undefined) await print(pieces);
   else await writeWhole(command.out, command.file, pieces);
   process.exitCode = exit;
@@ -50,7 +51,7 @@ function perform(command: Exclude<Command, { name: 'say' }>, circuit: Circuit, v
     case 'table':
       return { pieces: table(command, circuit, version), exit: EXIT.done };
     case 'explain':
-      return { pieces: explain(command, circuit, version), exit: EXIT.done };
+      return explain(command, circuit, version);
     case 'trapped': {
       if (command.line !== undefined) return vent(command, command.line, circuit, version);
       if (rowsOf(circuit) > MOST_ROWS) return trappedSets(command, circuit, version);
@@ -136,7 +137,7 @@ const WRITERS: Record<TableFormat, (report: Report, width: number | undefined) =
   markdown: writeMarkdown,
 };
 
-function explain(command: Explain, circuit: Circuit, version: string): Iterable<string> {
+function explain(command: Explain, circuit: Circuit, version: string): Written {
   const { file, format, state } = command;
   const conditions = conditionsOf(command, circuit);
   const net = networkOf(circuit);
@@ -157,5 +158,7 @@ function explain(command: Explain, circuit: Circuit, version: string): Iterable<
     numbers: numberSource(circuit, command.units, () => [explanation.numbers]),
     assumed,
   };
-  return format === 'json' ? [writeExplanationJson(source)] : writeExplanationText(source);
+  const pieces = format === 'json' ? [writeExplanationJson(source)] : writeExplanationText(source);
+  const dump = command.dump === undefined ? undefined : { file: command.dump, text: dumpRow(circuit, where, row) };
+  return { pieces, exit: EXIT.done, ...(dump && { dump }) };
 }

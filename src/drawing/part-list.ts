@@ -25,7 +25,9 @@ export function partList(circuit: Circuit): PartListEntry[] {
   for (const part of circuit.parts) {
     if (POINTS.has(part.kind)) continue;
     const [kind, data] = [kindOf(part.kind)?.title ?? part.kind, sizeOf(part)];
-    const key = JSON.stringify([part.kind, data]);
+    // Spools may differ beyond what is said of them.
+    const { ports, positions, crossovers } = part.valve ?? {};
+    const key = JSON.stringify([part.kind, data, ports, positions, crossovers]);
     const group = groups.get(key);
     if (group) group.parts.push(part);
     else groups.set(key, { parts: [part], kind, data });
@@ -83,5 +85,10 @@ function valveWords({ valve }: Part): string[] {
   if (!valve) return [];
   const operators = [...new Set([...valve.left, ...valve.right])].join(', ');
   const ways = `${valve.ports.length}/${valve.positions.length}`;
-  return [`${ways} (${valve.positions.map(({ name }) => name).join(', ')})`, ...(operators === '' ? [] : [operators])];
+  const rest = valve.rest === undefined ? undefined : valve.positions[valve.rest];
+  return [
+    `${ways} (${valve.positions.map(({ name }) => name).join(', ')})`,
+    ...(rest ? [`at rest ${rest.paths.length > 0 ? rest.paths.join(' ') : 'all shut'}`] : []),
+    ...(operators === '' ? [] : [operators]),
+  ];
 }
