@@ -28,6 +28,15 @@ export function stateOf(file: string, net: Network, texts: readonly string[]): S
   return { positions, state: Object.fromEntries(state), assumed };
 }
 
+/** Part id → position, for `Conditions.held`, where the combinations are too many to list; undefined where they are not. */
+export function heldWhereLarge(
+  net: Network,
+  positions: readonly number[],
+): Readonly<Record<string, number>> | undefined {
+  if (net.inputs.reduce((n, input) => n * input.positions.length, 1) <= MOST_ROWS) return undefined;
+  return Object.fromEntries(net.inputs.map(({ part }, i) => [net.parts[part]?.id ?? '', positions[i] ?? 0]));
+}
+
 /** 0-based row of these positions. Throws a `Failure` where the combinations are too many to be listed. */
 export function listedRow(file: string, net: Network, positions: readonly number[]): number {
   const count = net.inputs.reduce((n, input) => n * input.positions.length, 1);

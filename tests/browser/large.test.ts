@@ -29,7 +29,7 @@ const cells = async (page: Page, place: number): Promise<string[]> =>
 const severe = async (page: Page): Promise<unknown[]> =>
   (await new AxeBuilder({ page }).analyze()).violations.map(({ id, nodes }) => [id, nodes[0]?.html]);
 
-test('a panel too large to list: the row follows the levers, picked levers have rows, folds say the rest', async () => {
+test('a panel too large to list: the row follows the levers, picked levers have rows, folds say the rest', { timeout: 150_000 }, async () => {
   const page = await openLarge();
   const grid = page.getByRole('grid');
   await expect.poll(() => grid.locator('[data-place]').count()).toBe(1);
