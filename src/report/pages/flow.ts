@@ -1,25 +1,11 @@
-import type { Box, Point } from '../../base/points.ts';
+import type { Box } from '../../base/points.ts';
 import type { Primitive } from '../../base/primitives.ts';
 import type { Stroke } from '../../drawing/strokes.ts';
 import { advance, brokenAt } from '../../drawing/text-advance.ts';
 import type { Block, TextBlock } from './blocks.ts';
 import { LEADING, TEXT } from './blocks.ts';
+import type { Drawn, Piece } from './piece.ts';
 import { tablePieces } from './table.ts';
-
-export interface Drawn {
-  readonly primitives: readonly Primitive[];
-  readonly strokes: readonly Stroke[];
-}
-
-/** What is not parted by the end of a sheet. */
-export interface Piece {
-  readonly height: number;
-  readonly draw: (at: Point) => Drawn;
-  /** Stays on one sheet with what follows. */
-  readonly keep?: boolean;
-  /** Drawn before it wherever it comes first in a column. */
-  readonly head?: Piece;
-}
 
 export interface Flowed extends Drawn {
   /** Where the text ends, for each column that was begun. */

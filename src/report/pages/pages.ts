@@ -10,9 +10,9 @@ import type { Scene } from '../../drawing/scene.ts';
 import type { Stroke } from '../../drawing/strokes.ts';
 import { BLOCK_HEIGHT, BLOCK_WIDTH, titleBlock } from '../../drawing/title-block.ts';
 import type { Block } from './blocks.ts';
-import type { Drawn } from './flow.ts';
 import { flow, piecesOf, stacked } from './flow.ts';
 import { lineKey } from './line-key.ts';
+import type { Drawn } from './piece.ts';
 
 /** One sheet of paper, in modules from its upper left corner. */
 export interface PrintedPage {

@@ -3,7 +3,7 @@ import type { Primitive } from '../../base/primitives.ts';
 import { advance, brokenAt } from '../../drawing/text-advance.ts';
 import type { TableBlock, TableColumn } from './blocks.ts';
 import { LEADING, TEXT } from './blocks.ts';
-import type { Piece } from './flow.ts';
+import type { Piece } from './piece.ts';
 
 const SIZE = TEXT.table;
 const PAD = 0.6;
