@@ -49,3 +49,22 @@ test('a motor is left to be added by hand', () => {
 test('it can be given up', () => {
   expect(() => draftPlan(PUSHER, 'LIFT+', undefined, { cancelled: () => true, progress: () => {} })).toThrow(Cancelled);
 });
+
+test.each([
+  ['bale-gate', 'GATE+ GATE-'],
+  ['grain-tipper', 'BODY+ BODY-'],
+  ['infeed-series', 'KICK+ STOP+ STOP- KICK-'],
+  ['kiln-door', 'DOOR+ DOOR-'],
+  ['log-deck', 'CLAMP+ LIFT+ LIFT- CLAMP-'],
+  ['peg-drill', 'CLAMP+ DRILL+ DRILL- CLAMP-'],
+])('what is drafted for %s, %s, does what it says when it is played', (name, text) => {
+  const circuit = example(name);
+  const drafted = draftPlan(circuit, text);
+  if (!drafted.ok) throw new Error(why(drafted));
+  const steps = drafted.value.steps.map((step, i) => ({ ...step, id: `s${i}` }));
+  const played = checkPlan({ ...circuit, plans: [{ id: 'd', name: 'drafted', steps }] }, 'd', {}, undefined, {
+    powerLoss: false,
+  });
+  const faults = played.steps.flatMap(({ problems }) => problems.filter(({ level }) => level === 'fault'));
+  expect([played.good, faults]).toEqual([true, []]);
+});

@@ -26,20 +26,24 @@ async function pistonAt(page: Page, part: string): Promise<number> {
   return box?.x ?? NaN;
 }
 
-test('a wrongly wired step is told in words, mended in the chart, and then does what it says', async () => {
-  const page = await opened('Crate pusher');
-  await band(page).getByText('does not do what it says: 3 faults').waitFor();
-  // Step 3 switches both coils of V2 on (the fault that the example is made for).
-  await step(page, 3).getByText('Coils a and b of V2 are on together', { exact: false }).waitFor();
-  await step(page, 3).getByText('never ends', { exact: true }).waitFor();
-  await step(page, 4).getByText('not played', { exact: true }).waitFor();
-  expect(await severe(page)).toEqual([]);
-  await step(page, 3).getByRole('button', { name: 'Coil a of V2, step 3: on' }).press('Space');
-  await band(page).getByText('does what it says', { exact: false }).and(page.locator('.stamp.note')).waitFor();
-  await step(page, 4).getByText('as asked').waitFor();
-  await page.keyboard.press('Control+z');
-  await band(page).getByText('3 faults', { exact: false }).waitFor();
-});
+test(
+  'a wrongly wired step is told in words, mended in the chart, and then does what it says',
+  { timeout: 120_000 },
+  async () => {
+    const page = await opened('Crate pusher');
+    await band(page).getByText('does not do what it says: 3 faults').waitFor();
+    // Step 3 switches both coils of V2 on (the fault that the example is made for).
+    await step(page, 3).getByText('Coils a and b of V2 are on together', { exact: false }).waitFor();
+    await step(page, 3).getByText('never ends', { exact: true }).waitFor();
+    await step(page, 4).getByText('not played', { exact: true }).waitFor();
+    expect(await severe(page)).toEqual([]);
+    await step(page, 3).getByRole('button', { name: 'Coil a of V2, step 3: on' }).press('Space');
+    await band(page).getByText('does what it says', { exact: false }).and(page.locator('.stamp.note')).waitFor();
+    await step(page, 4).getByText('as asked').waitFor();
+    await page.keyboard.press('Control+z');
+    await band(page).getByText('3 faults', { exact: false }).waitFor();
+  },
+);
 
 test('picking a step takes levers, strokes and pressures on the sheet along, from event to event', async () => {
   const page = await opened('Crate pusher');
