@@ -16,6 +16,8 @@ export type PanelId =
   | 'loss'
   | 'print'
   | 'maker';
+/** Numbers that the table shows in columns of their own. */
+export type NumberGroup = 'lines' | 'forces' | 'flows' | 'power';
 export type Page = 'sheet' | 'table' | 'plans';
 
 /** How the person likes to see things; kept between visits, no part of the circuit. */
@@ -25,6 +27,8 @@ class View {
   grid = $state(recall('grid', true));
   /** Speeds and pressures in the state table. */
   tableFigures = $state(recall('tableFigures', window.innerWidth >= 1200));
+  /** Further numbers in columns of their own. */
+  tableNumbers = $state.raw<readonly NumberGroup[]>(recall<readonly NumberGroup[]>('tableNumbers', []));
   /** Pressures at lines, speeds at actuators. */
   sheetFigures = $state(recall('sheetFigures', true));
   /** Whether the system asks for dark; `App` keeps it up to date. */
@@ -80,6 +84,12 @@ class View {
   setTableFigures(on: boolean): void {
     this.tableFigures = on;
     remember('tableFigures', on);
+  }
+
+  showNumbers(group: NumberGroup, on: boolean): void {
+    const others = this.tableNumbers.filter((each) => each !== group);
+    this.tableNumbers = on ? [...others, group] : others;
+    remember('tableNumbers', this.tableNumbers);
   }
 
   setSheetFigures(on: boolean): void {

@@ -3,7 +3,8 @@ import type { BitSet } from '../../base/bits.ts';
 import { ACTUATOR_VERDICTS, PUMP_VERDICTS, TRAP_REASONS } from '../../worker/client.ts';
 import type { StateTable } from '../../worker/client.ts';
 
-export type ColumnOf = 'row' | 'input' | 'coil' | 'dependent' | 'actuator' | 'pump' | 'blocked' | 'trapped' | 'notes';
+export type ColumnOf =
+  'row' | 'input' | 'coil' | 'dependent' | 'actuator' | 'pump' | 'blocked' | 'trapped' | 'notes' | 'number';
 
 export interface Column {
   /** Unique in the table, also the key of its filter. */
@@ -79,7 +80,11 @@ function wide(id: 'blocked' | 'trapped' | 'notes', title: string, width: number,
 export const sayUnit = ({ unit, assumed }: FigureHead): string => (assumed ? `${unit}, assumed` : unit);
 
 /** `heads`: figures are shown beside the verdicts. */
-export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGroup[] {
+export function columnGroups(
+  table: StateTable,
+  heads?: FigureHeads,
+  numbers: readonly ColumnGroup[] = [],
+): ColumnGroup[] {
   const { data } = table;
   const digits = String(data.count).length;
   const row = fixed({ id: 'row', of: 'row', index: 0, title: 'row', width: Math.max(76, digits * 8 + 34) });
@@ -152,6 +157,7 @@ export function columnGroups(table: StateTable, heads?: FigureHeads): ColumnGrou
     { title: data.dependents.length === 1 ? 'Follows' : 'Follow', columns: followers },
     { title: 'Actuators', columns: actuators },
     { title: 'Pumps', columns: pumps },
+    ...numbers,
     { title: 'Blocked lines', columns: [wide('blocked', 'dead end, or cut off', 150, 1.3)] },
     { title: 'Trapped pressure', columns: [wide('trapped', 'by reason', 160, 1.5)] },
     { title: 'Danger, notes', columns: [wide('notes', 'gravest first', 130, 1.1)] },
@@ -230,6 +236,7 @@ export function planeOf(table: StateTable, column: Pick<Column, 'of' | 'index'>,
     case 'notes':
       return levelPlanes(table)[value] ?? emptySet(table.count);
     case 'row':
+    case 'number':
       return emptySet(table.count);
   }
 }
@@ -260,6 +267,7 @@ export function optionsOf(table: StateTable, column: Column): Option[] {
     case 'notes':
       return LEVELS.flatMap((word, value) => counted(value, word));
     case 'row':
+    case 'number':
       return [];
   }
 }

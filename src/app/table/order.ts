@@ -86,6 +86,7 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
     }
   };
   switch (column.of) {
+    case 'number':
     case 'row':
       break;
     case 'input':
