@@ -141,19 +141,16 @@ function columnsOf({ inside }: Frame, columns: Section['columns'], first: boolea
 
 /** Least free width beside the title block in which the key of the marks is set; else it stands above it. */
 const KEY_ROOM = 34;
-const KEY_ABOVE = 6;
 
 function drawnSheet(frame: Frame, { scene, shows, key, beside }: DrawingSheet): Sheet {
   const { inside } = frame;
   const free = inside.width - BLOCK_WIDTH;
   const keyBeside = free >= KEY_ROOM;
-  const strip = BLOCK_HEIGHT.whole + (key && !keyBeside ? KEY_ABOVE : 0);
+  const marks = key ? stacked(piecesOf(lineKey((keyBeside ? free : inside.width) - 2 * PAD), inside.width)) : undefined;
+  const strip = BLOCK_HEIGHT.whole + (marks && !keyBeside ? marks.height + 0.6 : 0);
   const bottom = inside.y + inside.height;
   const drawn: Drawn[] = [];
-  if (key) {
-    const piece = stacked(piecesOf(lineKey((keyBeside ? free : inside.width) - 2 * PAD), inside.width));
-    drawn.push(piece.draw({ x: inside.x + PAD, y: bottom - strip + 0.6 }));
-  }
+  if (marks) drawn.push(marks.draw({ x: inside.x + PAD, y: bottom - strip + 0.6 }));
   let room: Box = { ...inside, height: inside.height - strip };
   if (beside) {
     const piece = stacked(piecesOf(beside, BLOCK_WIDTH - 2 * PAD));

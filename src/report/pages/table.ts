@@ -32,6 +32,11 @@ function columnWidths(columns: readonly TableColumn[], rows: TableBlock['rows'],
     const widest = [...new Set(texts)].reduce((most, text) => Math.max(most, advance(text, SIZE, weight)), 0);
     return Math.max(least, advance(head, SIZE, 600) + SLACK, widest + SLACK);
   });
+  /** How much of a column is written on, on the average. */
+  const filled = (i: number): number => {
+    const looked = rows.slice(0, LOOKED_AT);
+    return 1 + looked.reduce((sum, row) => sum + advance(row[i] ?? '', SIZE), 0) / Math.max(1, looked.length);
+  };
   const total = wanted.reduce((sum, width) => sum + width, 0);
   if (total <= room) return wanted;
   const given: (number | undefined)[] = wanted.map(() => undefined);
@@ -41,11 +46,22 @@ function columnWidths(columns: readonly TableColumn[], rows: TableBlock['rows'],
     const share = left / open.length;
     const modest = open.filter((i) => (wanted[i] ?? 0) <= share);
     if (modest.length === 0) {
-      for (const i of open) given[i] = share;
-      return given.map((width) => width ?? share);
+      return shareOut(left, given, filled);
     }
     for (const i of modest) given[i] = wanted[i];
   }
+}
+
+/** Least width of a column that has to be broken. */
+const LEAST = 5;
+
+/** What is left goes to the open columns by how full they are, so that a long remark in one row does not starve the others. */
+function shareOut(left: number, given: readonly (number | undefined)[], weight: (i: number) => number): number[] {
+  const open = given.flatMap((width, i) => (width === undefined ? [i] : []));
+  const least = Math.min(LEAST, left / open.length);
+  const all = open.reduce((sum, i) => sum + weight(i), 0);
+  const spare = left - least * open.length;
+  return given.map((width, i) => width ?? least + (spare * weight(i)) / all);
 }
 
 function rowPiece(
