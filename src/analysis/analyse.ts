@@ -3,6 +3,7 @@ import type { UnitSystem } from '../base/units.ts';
 import { withLoadCase } from '../circuit/load-case.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PathConditions } from '../engine/paths/reach.ts';
+import { dumpProblem, problemNow } from '../engine/flow/dump.ts';
 import { RowSettler } from '../engine/table/dependents.ts';
 import { explain } from '../engine/table/explain.ts';
 import type { Beside } from '../engine/table/left-behind.ts';
@@ -38,23 +39,34 @@ export function networkOf(circuit: Circuit, conditions?: Pick<Conditions, 'loadC
 export const heldIn = (net: Network, { held }: Pick<Conditions, 'held'>): (number | undefined)[] =>
   net.inputs.map(({ part }) => held?.[net.parts[part]?.id ?? '']);
 
+/** Every move of a held lever, in words, and where the held inputs of the free circuit then stand. */
+export function movesOfHeld(
+  net: Network,
+  conditions: Conditions,
+): { readonly held: readonly (number | undefined)[]; readonly text: string }[] {
+  const held = heldIn(net, conditions);
+  return net.inputs.flatMap(({ part, positions }, i) => {
+    const now = held[i];
+    if (now === undefined) return [];
+    return positions.flatMap((name, p) =>
+      p === now
+        ? []
+        : [
+            {
+              held: held.map((at, other) => (other === i ? p : at)),
+              text: `${net.parts[part]?.label ?? ''} from ${name} to ${positions[now] ?? ''}`,
+            },
+          ],
+    );
+  });
+}
+
 /** The circuits one move of a held lever away. */
 export function besides(circuit: Circuit, conditions: Conditions): Beside[] {
   if (!conditions.held) return [];
   const { held: _, ...free } = conditions;
   const net = networkOf(circuit, free);
-  const held = heldIn(net, conditions);
-  return net.inputs.flatMap(({ part, positions }, i) => {
-    const now = held[i];
-    if (now === undefined) return [];
-    return positions.flatMap((name, p): Beside[] => {
-      if (p === now) return [];
-      const moved = held.map((at, other) => (other === i ? p : at));
-      return [
-        { net: hold(net, moved), text: `${net.parts[part]?.label ?? ''} from ${name} to ${positions[now] ?? ''}` },
-      ];
-    });
-  });
+  return movesOfHeld(net, conditions).map(({ held, text }) => ({ net: hold(net, held), text }));
 }
 
 /** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */
@@ -69,8 +81,8 @@ export function tabulate(
   return tabulateNetwork(net, pathConditions(net, conditions), budget, options);
 }
 
-/** Rows that the pressure layer solves before a table is shown: about a few seconds. */
-export const MOST_SOLVED = 20_000;
+/** Rows that the pressure layer solves before an answer is given, 3¹⁰ and some more: several seconds. */
+export const MOST_SOLVED = 60_000;
 
 /** Design faults, from the table with the pumps running. */
 export function findings(circuit: Circuit, running: StateTable, conditions?: Conditions): Finding[] {
@@ -100,6 +112,15 @@ export function numbersOf(circuit: Circuit, conditions: Conditions, rows: readon
   const settler = new RowSettler(solver, where);
   // Memory and hunting do not matter here: the figures are those of the setting that the row gives.
   return rows.map((row) => rowNumbers(solver, row, solver.solve(row, settler.at(row).setting)));
+}
+
+/** The flow problem of a row (0-based) as the solver gets it, in JSON: for a report of a fault, or another solver. */
+export function dumpRow(circuit: Circuit, conditions: Conditions, row: number): string {
+  const net = networkOf(circuit, conditions);
+  const where = pathConditions(net, conditions);
+  const solver = new PressureSolver(net, where);
+  solver.solve(row, new RowSettler(solver, where).at(row).setting);
+  return `${dumpProblem(problemNow(solver.model.solver))}\n`;
 }
 
 function refuseTooMany(net: Network): void {

@@ -2,7 +2,7 @@ import type { Budget } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { withLeftBehind } from '../engine/table/left-behind.ts';
 import type { TableData } from '../engine/table/table-data.ts';
-import { besides, networkOf, pathConditions, tabulate } from './analyse.ts';
+import { movesOfHeld, networkOf, pathConditions, tabulate } from './analyse.ts';
 import type { Conditions } from './results.ts';
 
 /**
@@ -13,6 +13,8 @@ export function tabulateHeld(circuit: Circuit, conditions: Conditions, budget: B
   const data = tabulate(circuit, conditions, budget);
   const running =
     conditions.pumps === 'running' ? data : tabulate(circuit, { ...conditions, pumps: 'running' }, budget);
-  const net = networkOf(circuit, conditions);
-  return withLeftBehind(data, running, pathConditions(net, conditions), besides(circuit, conditions));
+  const { held: _, ...free } = conditions;
+  const net = networkOf(circuit, free);
+  const moved = movesOfHeld(net, conditions).map(({ held }) => held);
+  return withLeftBehind(data, running, net, pathConditions(net, conditions), moved);
 }

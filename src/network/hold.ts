@@ -37,3 +37,30 @@ export function hold(net: Network, held: readonly (number | undefined)[]): Netwo
     }),
   };
 }
+
+/** States of `holdEach` at once: as many positions as a bit mask holds. */
+export const MOST_HELD = 30;
+
+/**
+ * The same for several choices of held positions at once: choice k is position k of one more input, the last and so
+ * the fastest. At most `MOST_HELD` of them, all holding the same inputs; for circuits without dependent valves.
+ */
+export function holdEach(net: Network, choices: readonly (readonly (number | undefined)[])[]): Network {
+  const [first = []] = choices;
+  if (net.dependents.length > 0 || choices.length > MOST_HELD)
+    throw new RangeError('these choices cannot be one input');
+  const one = hold(net, first);
+  const choice = net.inputs.length;
+  return {
+    ...one,
+    inputs: [...one.inputs, { part: -1, by: 'lever', positions: choices.map((_, k) => String(k)), coils: [] }],
+    paths: net.paths.flatMap((path): NetPath[] => {
+      if (path.input < 0 || first[path.input] === undefined) return [path];
+      let positions = 0;
+      choices.forEach((held, k) => {
+        if (((path.positions >>> (held[path.input] ?? 0)) & 1) === 1) positions |= 1 << k;
+      });
+      return positions === 0 ? [] : [{ ...path, input: choice, positions }];
+    }),
+  };
+}

@@ -73,7 +73,7 @@ test(
       { numRuns: 60, seed: 20261205 },
     );
     expect(rows).toBeGreaterThan(100);
-    expect(trapped).toBeGreaterThan(20);
+    expect(trapped).toBeGreaterThan(8);
   },
 );
 

@@ -48,7 +48,7 @@ export interface Subject {
 
 const PATIENCE_MS = 250;
 /** Rows that the levers picked on a large panel may have. */
-const MOST_LISTED = 20_000;
+const MOST_LISTED = 7_000;
 const DARK: Lit = { lines: [], parts: [], steps: [] };
 
 /** The state on show: conditions, the whole table, the current row, and why it is so. */

@@ -1,5 +1,8 @@
-import { emptySet } from '../../base/bits.ts';
+import { emptySet, wordsFor } from '../../base/bits.ts';
+import { hold, holdEach, MOST_HELD } from '../../network/hold.ts';
 import type { Network } from '../../network/network.ts';
+import { PathSolver } from '../paths/block.ts';
+import { compileEdges } from '../paths/edges.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { Settlers, solveOne } from './one-state.ts';
 import type { Plane, TableData } from './table-data.ts';
@@ -13,35 +16,35 @@ export interface Beside {
 }
 
 const CUT_OFF = LINE_CLASSES.indexOf('cut off');
+/** Words of states that are searched at once. */
+const BLOCK = 128;
 const LEFT_BEHIND = TRAP_REASONS.indexOf('left behind');
 
 /**
  * Adds what moves of held levers leave behind to a table in which they are held: lines cut off here that were
- * under pressure one move before. `running`: the same table with the pumps running.
+ * under pressure one move before. `running`: the same table with the pumps running; `moved`: per move of a held
+ * lever, where the held inputs of `net` then stand.
  */
 export function withLeftBehind(
   data: TableData,
   running: TableData,
+  net: Network,
   conditions: PathConditions,
-  besides: readonly Beside[],
+  moved: readonly (readonly (number | undefined)[])[],
 ): TableData {
   const planes = data.lines.map((_, line) =>
     Uint32Array.from(data.trapPlanes[line]?.[LEFT_BEHIND] ?? emptySet(data.count)),
   );
-  for (const { net } of besides) {
-    const settlers = new Settlers(net);
-    // Where no valve follows from pressures, one search answers for 32 rows.
-    const step = net.dependents.length === 0 ? 32 : 1;
-    for (let row = 0; row < data.count; row += step) {
-      const { block } = solveOne(net, { ...conditions, pumpsRunning: true }, row, settlers);
-      const [word, rows] = [row >>> 5, step === 32 ? -1 : 1 << (row & 31)];
-      planes.forEach((plane, line) => {
-        const shut =
-          (data.linePlanes[line]?.[CUT_OFF]?.[word] ?? 0) & (running.linePlanes[line]?.[CUT_OFF]?.[word] ?? 0);
-        plane[word] = (plane[word] ?? 0) | ((block.reach.underPressure[line] ?? 0) & shut & rows);
-      });
-    }
-  }
+  const where = { ...conditions, pumpsRunning: true };
+  const before = net.dependents.length === 0 ? together(net, where, moved) : oneByOne(net, where, moved, data.count);
+  before((row, under) => {
+    const [word, bit] = [row >>> 5, 1 << (row & 31)];
+    planes.forEach((plane, line) => {
+      if (!under(line)) return;
+      const shut = (data.linePlanes[line]?.[CUT_OFF]?.[word] ?? 0) & (running.linePlanes[line]?.[CUT_OFF]?.[word] ?? 0);
+      plane[word] = (plane[word] ?? 0) | (shut & bit);
+    });
+  });
   return {
     ...data,
     trapPlanes: data.trapPlanes.map((reasons, line) =>
@@ -49,3 +52,49 @@ export function withLeftBehind(
     ),
   };
 }
+
+/** Calls back with the row of the table and which lines are under pressure, for every state one move of a held lever away. */
+type Before = (each: (row: number, under: (line: number) => boolean) => void) => void;
+
+/** All moves as positions of one more input, 32 states to a word. */
+const together =
+  (net: Network, conditions: PathConditions, moved: readonly (readonly (number | undefined)[])[]): Before =>
+  (each) => {
+    for (let start = 0; start < moved.length; start += MOST_HELD) {
+      const choices = moved.slice(start, start + MOST_HELD);
+      const all = holdEach(net, choices);
+      const count = all.inputs.reduce((n, input) => n * input.positions.length, 1);
+      const words = wordsFor(count);
+      const solver = new PathSolver(all, compileEdges(all), conditions, Math.min(BLOCK, words));
+      for (let at = 0; at < words; at += BLOCK) {
+        const width = Math.min(BLOCK, words - at);
+        const { underPressure } = solver.solve(at, width).reach;
+        for (let state = 32 * at; state < Math.min(count, 32 * (at + width)); state++) {
+          const [word, bit] = [(state >>> 5) - at, state & 31];
+          each(
+            Math.floor(state / choices.length),
+            (line) => (((underPressure[line * width + word] ?? 0) >>> bit) & 1) === 1,
+          );
+        }
+      }
+    }
+  };
+
+/** State by state, since pressures decide where dependent valves stand. */
+const oneByOne =
+  (
+    net: Network,
+    conditions: PathConditions,
+    moved: readonly (readonly (number | undefined)[])[],
+    count: number,
+  ): Before =>
+  (each) => {
+    for (const held of moved) {
+      const one = hold(net, held);
+      const settlers = new Settlers(one);
+      for (let row = 0; row < count; row++) {
+        const state = solveOne(one, conditions, row, settlers);
+        each(row, (line) => state.on(state.block.reach.underPressure, line));
+      }
+    }
+  };
