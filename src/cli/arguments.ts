@@ -50,7 +50,11 @@ export type Command =
       readonly units: UnitSystem;
       readonly out: string | undefined;
     }
-  | (ExplainOptions & { readonly name: 'explain' })
+  | (ExplainOptions & {
+      readonly name: 'explain';
+      /** File for the flow problem of the row. */
+      readonly dump: string | undefined;
+    })
   | (ExplainOptions & { readonly name: 'moves' })
   | {
       readonly name: 'trapped';
@@ -204,12 +208,19 @@ function explainCommand(name: 'explain' | 'moves', text: string, args: string[])
       args,
       strict: true,
       allowPositionals: true,
-      options: { ...COMMON, ...LOAD, ...UNITS, state: { type: 'string', multiple: true, default: [] } },
+      options: {
+        ...COMMON,
+        ...LOAD,
+        ...UNITS,
+        ...(name === 'explain' && { dump: { type: 'string' } as const }),
+        state: { type: 'string', multiple: true, default: [] },
+      },
     }),
   );
   if (values.help) return { name: 'say', text };
-  return {
-    name,
+  const dump = typeof values.dump === 'string' ? values.dump : undefined;
+  if (dump === '') throw usage('--dump needs the name of a file.', name);
+  const options = {
     file: oneFile(name, positionals),
     format: oneOf(name, '--format', values.format, EXPLAIN_FORMATS),
     pumps: oneOf(name, '--pumps', values.pumps, ['running', 'stopped']),
@@ -218,6 +229,7 @@ function explainCommand(name: 'explain' | 'moves', text: string, args: string[])
     state: values.state,
     out: outFile(name, values.out),
   };
+  return name === 'explain' ? { name, ...options, dump } : { name, ...options };
 }
 
 function trappedCommand(args: string[]): Command {

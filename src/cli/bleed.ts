@@ -18,6 +18,8 @@ import { listedRow, stateOf } from './standing.ts';
 export interface Written {
   readonly pieces: Iterable<string>;
   readonly exit: number;
+  /** A second file, whatever becomes of the first. */
+  readonly dump?: { readonly file: string; readonly text: string };
 }
 
 export function bleed(

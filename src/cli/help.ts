@@ -56,6 +56,7 @@ Options:
   --units metric|us                 units of pressures, flows and power (metric)
   --format text|json                how it is written (text)
   --out FILE                        write there, whole or not at all, instead of to standard output
+  --dump FILE                       also write the row as the equations see it, in JSON, for a report of a fault
   --help                            this text
 `;
 

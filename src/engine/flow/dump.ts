@@ -1,7 +1,8 @@
 import { bad, good } from '../../base/result.ts';
 import type { Result } from '../../base/result.ts';
 import { contradictions } from './problem.ts';
-import type { Branch, BranchKind, FlowProblem, Load, Pilot, Pump } from './problem.ts';
+import type { Branch, BranchKind, Coupler, FlowProblem, Load, Pilot, Pump } from './problem.ts';
+import type { FlowSolver } from './solver.ts';
 
 const FORMAT = 'flow-problem';
 const KINDS: readonly BranchKind[] = [
@@ -31,6 +32,16 @@ export function dumpProblem(problem: FlowProblem): string {
   return JSON.stringify({ format: FORMAT, version: 1, ...problem }, words, 1);
 }
 
+/** The problem of the state that a solver stands in: what is switched off there is off. */
+export function problemNow({ system }: FlowSolver): FlowProblem {
+  const { problem, on, pumpFlow } = system;
+  return {
+    ...problem,
+    pumps: problem.pumps.map((pump, i) => ({ ...pump, flow: pumpFlow[i] ?? pump.flow })),
+    branches: problem.branches.map((branch, j) => ({ ...branch, on: on[j] === 1 })),
+  };
+}
+
 /** The reverse of `dumpProblem`; says what is wrong with a text that is no such problem. */
 export function loadProblem(text: string): Result<FlowProblem> {
   let raw: unknown;
@@ -46,6 +57,7 @@ export function loadProblem(text: string): Result<FlowProblem> {
       lines: list(top['lines'], 'lines').map((name, i) => asText(name, `lines[${i}]`)),
       pumps: list(top['pumps'], 'pumps').map(readPump),
       branches: list(top['branches'], 'branches').map(readBranch),
+      ...(top['couplers'] !== undefined && { couplers: list(top['couplers'], 'couplers').map(readCoupler) }),
       leak: number(top['leak'], 'leak'),
     };
     return good(
@@ -131,6 +143,19 @@ function readBranch(value: unknown, i: number): Branch {
     on: o['on'] !== false,
     ...(o['pilot'] === undefined ? {} : { pilot: readPilot(o['pilot'], `${where}.pilot`) }),
     ...(o['load'] === undefined ? {} : { load: readLoad(o['load'], `${where}.load`) }),
+  };
+}
+
+function readCoupler(value: unknown, i: number): Coupler {
+  const where = `couplers[${i}]`;
+  const o = record(value, where);
+  const numbers = (key: 'lines' | 'factors'): number[] =>
+    list(o[key], `${where}.${key}`).map((entry, k) => number(entry, `${where}.${key}[${k}]`));
+  return {
+    id: asText(o['id'], `${where}.id`),
+    lines: numbers('lines'),
+    factors: numbers('factors'),
+    r: number(o['r'], `${where}.r`),
   };
 }
 
