@@ -15,7 +15,7 @@ import { fetchStored, putStored } from './stored.ts';
 /** Every change is kept at once, unless keeping takes so long that it would be felt; then at this share of the time. */
 const SHARE = 0.05;
 const QUICK_MS = 4;
-const LONGEST_MS = 2000;
+const LONGEST_MS = 500;
 /** Undo steps that are still kept when the browser has no room for all of them. */
 const FEWER = [200, 20, 0] as const;
 const NO_ROOM = 'The browser has no room to keep this circuit';
