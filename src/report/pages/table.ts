@@ -46,22 +46,30 @@ function columnWidths(columns: readonly TableColumn[], rows: TableBlock['rows'],
     const share = left / open.length;
     const modest = open.filter((i) => (wanted[i] ?? 0) <= share);
     if (modest.length === 0) {
-      return shareOut(left, given, filled);
+      return shareOut(left, given, filled, (i) => wordRoom(columns[i]?.head ?? ''));
     }
     for (const i of modest) given[i] = wanted[i];
   }
 }
 
-/** Least width of a column that has to be broken. */
+/** Least width of a column that has to be broken: no word of its head is parted. */
 const LEAST = 5;
+const wordRoom = (head: string): number =>
+  Math.max(LEAST, ...head.split(' ').map((word) => advance(word, SIZE, 600) + SLACK));
 
 /** What is left goes to the open columns by how full they are, so that a long remark in one row does not starve the others. */
-function shareOut(left: number, given: readonly (number | undefined)[], weight: (i: number) => number): number[] {
+function shareOut(
+  left: number,
+  given: readonly (number | undefined)[],
+  weight: (i: number) => number,
+  wanted: (i: number) => number,
+): number[] {
   const open = given.flatMap((width, i) => (width === undefined ? [i] : []));
-  const least = Math.min(LEAST, left / open.length);
+  const most = open.reduce((sum, i) => sum + wanted(i), 0);
   const all = open.reduce((sum, i) => sum + weight(i), 0);
-  const spare = left - least * open.length;
-  return given.map((width, i) => width ?? least + (spare * weight(i)) / all);
+  const squeeze = Math.min(1, left / most);
+  const spare = Math.max(0, left - most);
+  return given.map((width, i) => width ?? wanted(i) * squeeze + (spare * weight(i)) / all);
 }
 
 function rowPiece(
