@@ -7,7 +7,9 @@ const move = { part: 'v1', label: 'V1', from: 'hold', to: 'lower', row: 2, cauti
 test('a move says how long the lever is kept against its spring', () => {
   expect(sayMove(move)).toBe('Move V1 from hold to lower.');
   expect(sayKeep(move)).toBeUndefined();
-  expect(sayKeep({ ...move, springsTo: 'hold' })).toBe('Keep it there to the end of the list: let go, it returns to hold.');
+  expect(sayKeep({ ...move, springsTo: 'hold' })).toBe(
+    'Keep it there to the end of the list: let go, it returns to hold.',
+  );
   // Steps are counted from 1 on show.
   expect(sayKeep({ ...move, springsTo: 'hold', keptUntil: 2 })).toContain('until step 3');
 });

@@ -33,4 +33,4 @@ export const fetchStored = <T>(key: string): Promise<T | undefined> =>
   run('readonly', (store) => store.get(key) as IDBRequest<T>);
 
 export const putStored = (key: string, value: unknown): Promise<unknown> =>
-  run<unknown>('readwrite', (store) => (value === undefined ? store.delete(key) : store.put(value, key)));
+  run<unknown>('readwrite', (store): IDBRequest => (value === undefined ? store.delete(key) : store.put(value, key)));

@@ -26,7 +26,8 @@ class Whole {
     if (session.large || session.failure !== undefined)
       return { circuit: editor.circuit, conditions: session.conditions, table: undefined };
     const { answer } = session;
-    return answer && answer.conditions.held === undefined && { circuit: answer.circuit, conditions: answer.conditions, table: answer.table };
+    if (!answer || answer.conditions.held !== undefined) return undefined;
+    return { circuit: answer.circuit, conditions: answer.conditions, table: answer.table };
   });
 
   start(analyst: Analyst): void {

@@ -37,7 +37,8 @@ export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSy
     } else out.set(`actuator:${i}`, none);
   });
   table.data.pumps.forEach((_, i) => {
-    if (solved) put(`pump:${i}`, sayPump(numbers.pumps[i]?.pressure, table.pump(i, numbers.row), units, true), assumed.anywhere);
+    if (solved)
+      put(`pump:${i}`, sayPump(numbers.pumps[i]?.pressure, table.pump(i, numbers.row), units, true), assumed.anywhere);
     else out.set(`pump:${i}`, none);
   });
   // Only a load gives shut-in oil a pressure that can be worked out.
@@ -45,7 +46,8 @@ export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSy
     table.data.lines.forEach((_, line) => {
       if (!table.trapped(line, numbers.row).includes('load')) return;
       const pressure = numbers.lines[line] ?? 0;
-      if (pressure >= NEAR_NOTHING) put(`line:${line}`, sayPressure(pressure, units), lineAssumed(assumed, table, line, numbers.row));
+      if (pressure >= NEAR_NOTHING)
+        put(`line:${line}`, sayPressure(pressure, units), lineAssumed(assumed, table, line, numbers.row));
     });
   }
   return out;
