@@ -192,6 +192,12 @@ export function reach(
     s.spread(valveExits, edges.valveBackward, { links: links.pull, fromTank: true });
     const valvePressed = anyPressed.slice();
     s.spread(valvePressed, edges.valveForward, { gate: notFreeToTank, links: links.push });
+    // A state in which none of them may open must not hang on the others of its block.
+    const live = new Uint32Array(s.width);
+    for (const { mask } of [...edges.reliefs, ...edges.loadPilots]) {
+      for (let w = 0; w < s.width; w++) live[w] = (live[w] as number) | (s.masks[mask * s.width + w] as number);
+    }
+    if (net.valves.length === 0) for (const field of [valveExits, valvePressed]) keep(field, live, s.width);
     valves = { exits: valveExits, pressed: valvePressed };
   }
 
@@ -220,6 +226,11 @@ export function reach(
     plainFills,
     notToTank,
   };
+}
+
+/** Takes the states out of every line of a field that are not in `set`. */
+function keep(field: Field, set: Uint32Array, width: number): void {
+  for (let i = 0; i < field.length; i++) field[i] = (field[i] as number) & (set[i % width] as number);
 }
 
 /** Chamber lines that a load or spring presses on at rest, where nothing lets them down. */

@@ -47,7 +47,7 @@ export const eliminate = (net: Network, paths: OpenPathSets<SetAlgebra>, ways: O
 
 export function reachSets(net: Network, conditions: PathConditions, paths: OpenPathSets<SetAlgebra>): ReachSets {
   const { edges, toTank, freeToTank, fromSource } = paths;
-  const { or, not } = operations(paths);
+  const { and, or, not } = operations(paths);
   const links = compileLinks(net, conditions.places);
   const spread = (field: LineSets, ways: Omit<Ways, 'open'>): LineSets => eliminate(net, paths, ways).spread(field);
 
@@ -125,12 +125,12 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
       spread(field, { edges: edges.forward, gate: notToTank, links: links.push });
       for (const { line, mask } of edges.loadPilots) edges.open[mask] = at(field, line);
     }
-    const mayOpen = [...edges.reliefs, ...edges.loadPilots].some(({ mask }) => edges.open[mask] !== NONE);
-    if (net.valves.length === 0 && !mayOpen) return undefined;
-    return {
-      exits: spread([...softExits], { edges: edges.valveBackward, links: links.pull, fromTank: true }),
-      pressed: spread([...anyPressed], { edges: edges.valveForward, gate: notFree, links: links.push }),
-    };
+    const mayOpen = or(...[...edges.reliefs, ...edges.loadPilots].map(({ mask }) => edges.open[mask] as Diagram));
+    const live = net.valves.length > 0 ? ALL : mayOpen;
+    if (live === NONE) return undefined;
+    const exits = spread([...softExits], { edges: edges.valveBackward, links: links.pull, fromTank: true });
+    const pressed = spread([...anyPressed], { edges: edges.valveForward, gate: notFree, links: links.push });
+    return { exits: exits.map((set) => and(set, live)), pressed: pressed.map((set) => and(set, live)) };
   }
 }
 
