@@ -4,7 +4,7 @@ import type { Look } from '../../parts/contract.ts';
 import type { ActuatorVerdict, PumpVerdict, StateTable } from '../../worker/client.ts';
 import { speedsAssumed } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
-import { sayPump, saySpeed } from '../state/figure-texts.ts';
+import { sayPump, sayForce, saySpeed } from '../state/figure-texts.ts';
 import { figures } from '../state/figures.svelte.ts';
 import { AT_STOP } from '../state/moment.ts';
 import type { Moment } from '../state/moment.ts';
@@ -49,13 +49,20 @@ export function partStates(circuit: Circuit, assumed: Assumed): Map<string, Part
   table?.data.actuators.forEach(({ part, motion }, i) => {
     if (!known.has(part)) return;
     const verdict = table.actuator(i, row);
-    const speed = solved && saySpeed(solved.actuators[i]?.speed ?? 0, motion, view.units);
+    const state = solved?.actuators[i];
+    const speed = state && saySpeed(state.speed, motion, view.units);
+    const force = state && sayForce(state.force, motion, view.units);
     const place = conditions.places?.[part];
     states.set(part, {
       verdict,
       note: verdict,
       freeInward: table.actuatorNotes(i, row).includes('free inward'),
-      ...(speed !== undefined && { figure: { text: speed, assumed: rests[i] ?? true } }),
+      ...(speed !== undefined && {
+        figure: {
+          text: force === undefined ? speed : `${speed} · ${force}`,
+          assumed: (rests[i] ?? true) || (force !== undefined && assumed.forces.has(part)),
+        },
+      }),
       ...(place && { stroke: place === 'in' ? 0 : 1 }),
     });
   });

@@ -26,6 +26,12 @@ export function saySpeed(speed: number, motion: Motion, units: UnitSystem, bare 
   return bare ? plain(si, quantity, units) : formatQuantity(si, quantity, units, { digits: DIGITS });
 }
 
+/** N or N·m that the oil exerts, either way; undefined = next to none. */
+export function sayForce(force: number, motion: Motion, units: UnitSystem): string | undefined {
+  const size = Math.abs(force);
+  return size < 1 ? undefined : formatQuantity(size, motion === 'linear' ? 'force' : 'torque', units, { digits: DIGITS });
+}
+
 /** Pa, over the air. Below a tenth of a bar there is nothing to say but nought. */
 export function sayPressure(pressure: number, units: UnitSystem, bare = false): string {
   const si = Math.abs(pressure) < 1e4 ? 0 : pressure;
