@@ -12,7 +12,8 @@ export const NEAR_NOTHING = 5e4;
 export type Motion = 'linear' | 'rotary';
 
 /** The unit that stands in a column head. */
-export const speedUnit = (motion: Motion, units: UnitSystem): string => defaultUnit(motion === 'linear' ? 'speed' : 'frequency', units);
+export const speedUnit = (motion: Motion, units: UnitSystem): string =>
+  defaultUnit(motion === 'linear' ? 'speed' : 'frequency', units);
 export const pressureUnit = (units: UnitSystem): string => defaultUnit('pressure', units);
 
 const plain = (si: number, quantity: Quantity, units: UnitSystem): string =>
@@ -22,14 +23,17 @@ const plain = (si: number, quantity: Quantity, units: UnitSystem): string =>
 export function saySpeed(speed: number, motion: Motion, units: UnitSystem, bare = false): string | undefined {
   const size = Math.abs(speed);
   if (!(size >= STILL[motion])) return undefined;
-  const [si, quantity] = motion === 'linear' ? ([size, 'speed'] as const) : ([size / (2 * Math.PI), 'frequency'] as const);
+  const [si, quantity] =
+    motion === 'linear' ? ([size, 'speed'] as const) : ([size / (2 * Math.PI), 'frequency'] as const);
   return bare ? plain(si, quantity, units) : formatQuantity(si, quantity, units, { digits: DIGITS });
 }
 
 /** N or N·m that the oil exerts, either way; undefined = next to none. */
 export function sayForce(force: number, motion: Motion, units: UnitSystem): string | undefined {
   const size = Math.abs(force);
-  return size < 1 ? undefined : formatQuantity(size, motion === 'linear' ? 'force' : 'torque', units, { digits: DIGITS });
+  return size < 1
+    ? undefined
+    : formatQuantity(size, motion === 'linear' ? 'force' : 'torque', units, { digits: DIGITS });
 }
 
 /** Pa, over the air. Below a tenth of a bar there is nothing to say but nought. */
@@ -39,7 +43,12 @@ export function sayPressure(pressure: number, units: UnitSystem, bare = false): 
 }
 
 /** A pump's pressure; a stopped pump with nothing at its outlet needs no figure. */
-export function sayPump(pressure: number | undefined, verdict: PumpVerdict, units: UnitSystem, bare = false): string | undefined {
+export function sayPump(
+  pressure: number | undefined,
+  verdict: PumpVerdict,
+  units: UnitSystem,
+  bare = false,
+): string | undefined {
   if (pressure === undefined || (verdict === 'stopped' && pressure < NEAR_NOTHING)) return undefined;
   return sayPressure(pressure, units, bare);
 }
