@@ -56,7 +56,8 @@ export function watch(page: Page, address: string = inject('editor')): void {
   page.on('requestfailed', (request) => {
     const text = request.failure()?.errorText ?? '';
     // A reload, or a computation given up, ends threads whose script is still on its way: nothing went wrong there.
-    if (text === 'net::ERR_ABORTED' && request.url().includes('analysis.worker')) return;
+    // In the editor of one file that script is a blob.
+    if (text === 'net::ERR_ABORTED' && /^blob:|analysis\.worker/.test(request.url())) return;
     said.push(`failed: ${request.url()} ${text}`);
   });
   page.on('request', (request) => {
