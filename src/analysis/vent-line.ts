@@ -42,11 +42,11 @@ export function ventLine(
   if (!found.ok) return found;
   const { sets, vented, firm, flowing } = found.value;
   const flows = vented === NONE;
-  const any = nearest(sets, flows ? flowing : vented, positions, MOST_OTHERS + 1);
+  const fewest = nearest(sets, flows ? flowing : vented, positions, MOST_OTHERS + 1);
   const head = { line, name: net.lines[line]?.name ?? '', positions, ...mover.rowOf(positions) };
-  if (!any) return good({ ...head, outcome: 'never', flows: false, slow: false, steps: [], others: [] });
+  if (!fewest) return good({ ...head, outcome: 'never', flows: false, slow: false, steps: [], others: [] });
   const sound = flows ? undefined : nearest(sets, firm, positions, MOST_OTHERS + 1);
-  const way = sound?.moves === any.moves ? sound : any;
+  const way = sound?.moves === fewest.moves ? sound : fewest;
   const [first = positions, ...others] = way.list;
   const steps = orderMoves(mover, positions, first);
   return good({

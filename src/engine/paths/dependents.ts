@@ -152,10 +152,10 @@ export class PathDependents {
 
   /** Rows in which a valve has a shift that its pilot stage lets act. */
   staged(d: number, w: number): number {
-    let any = 0;
+    let shifted = 0;
     for (const shift of this.net.dependents[d]?.shifts ?? [])
-      if (shift.by === 'pressure') any |= this.#stages.get(shift)?.[w] as number;
-    return (this.#tripped[d] as number) >= 0 ? 0 : any;
+      if (shift.by === 'pressure') shifted |= this.#stages.get(shift)?.[w] as number;
+    return (this.#tripped[d] as number) >= 0 ? 0 : shifted;
   }
 
   #choicesOf(valve: NetDependent, d: number, states: number): Choice[] {

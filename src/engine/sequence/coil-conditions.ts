@@ -85,7 +85,7 @@ function conditionOf(
 ): CoilCondition {
   const isOn = (step: number): boolean => steps[step]?.coils.includes(coil) === true;
   const on = steps.flatMap((_, i) => (isOn(i) ? [i] : []));
-  const bySteps = any(on.map((step): Expression => ({ type: 'step', step })));
+  const bySteps = oneOf(on.map((step): Expression => ({ type: 'step', step })));
   if (!owners) return { coil, on, bySteps, clashes: [] };
   const [ones, zeros]: [number[], number[]] = [[], []];
   const clashes = new Map<string, { on: number; off: number }>();
@@ -98,10 +98,11 @@ function conditionOf(
   const list = [...clashes.values()].toSorted((a, b) => a.on - b.on || a.off - b.off);
   if (list.length > 0) return { coil, on, bySteps, clashes: list };
   const { terms, least } = minimise(ones, zeros);
-  return { coil, on, bySteps, clashes: [], bySignals: { expression: any(terms.map(product)), least } };
+  return { coil, on, bySteps, clashes: [], bySignals: { expression: oneOf(terms.map(product)), least } };
 }
 
-const any = (of: readonly Expression[]): Expression => (of.length === 1 ? (of[0] as Expression) : { type: 'any', of });
+const oneOf = (of: readonly Expression[]): Expression =>
+  of.length === 1 ? (of[0] as Expression) : { type: 'any', of };
 
 /** Closed contacts first. */
 function product({ mask, value }: Term): Expression {
