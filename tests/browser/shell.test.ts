@@ -137,6 +137,8 @@ test('undo survives a reload', async () => {
 test('a bad file is refused in words and leaves the open circuit alone', async () => {
   const page = await opened();
   const chooser = page.waitForEvent('filechooser');
+  // The wish to hear of the window must have reached the browser before the key does.
+  await page.evaluate(() => document.readyState);
   await page.keyboard.press('Control+o');
   const bad = {
     format: 'spooltable-circuit',

@@ -100,10 +100,17 @@ export async function openFromDisk(): Promise<void> {
   const input = document.createElement('input');
   input.type = 'file';
   input.accept = '.json,application/json';
+  input.hidden = true;
+  input.addEventListener('cancel', () => {
+    input.remove();
+  });
   input.addEventListener('change', () => {
     const [blob] = input.files ?? [];
+    input.remove();
     if (blob) void openBlob(blob);
   });
+  // Outside the page the browser may clear it away while its window is still open.
+  document.body.append(input);
   input.click();
 }
 
