@@ -115,10 +115,7 @@ export class MoveBench {
 
 /** 1 = a source presses on it, straight, over a piston or over a valve that pressures may open. */
 function under({ net, block, on }: OneState): Uint8Array {
-  const { underPressure, valves } = block.reach;
-  return Uint8Array.from(net.lines, (_, line) =>
-    on(underPressure, line) || (valves && on(valves.pressed, line)) ? 1 : 0,
-  );
+  return Uint8Array.from(net.lines, (_, line) => (on(block.reach.leaves, line) ? 1 : 0));
 }
 
 function groupsOf({ net, hops }: OneState): number[] {

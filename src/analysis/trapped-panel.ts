@@ -83,7 +83,7 @@ function exampleOf(
         positions.map((position, i) => (i === input ? p : position)),
       );
       const state = solveOne(before, { ...where, pumpsRunning: true }, 0);
-      return state.on(state.block.reach.underPressure, line)
+      return state.on(state.block.reach.leaves, line)
         ? [`${label(input)} from ${from} to ${name(input, positions[input] ?? 0)}`]
         : [];
     }),

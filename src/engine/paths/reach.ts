@@ -37,6 +37,11 @@ export interface Reach {
   readonly softExits: Field;
   /** Like `softExits` and `anyPressed`, with the ways through valves that pressures may open; undefined where there are none. */
   readonly valves: { readonly exits: Field; readonly pressed: Field } | undefined;
+  /**
+   * May come under pressure as long as the state stands: what moves comes to its stop sooner or later, and then
+   * pressure valves open. For what is left behind.
+   */
+  readonly leaves: Field;
   /** Can give oil to a growing chamber. */
   readonly fills: Field;
   /** The same without ways through actuators. */
@@ -200,6 +205,8 @@ export function reach(
     if (net.valves.length === 0) for (const field of [valveExits, valvePressed]) keep(field, live, s.width);
     valves = { exits: valveExits, pressed: valvePressed };
   }
+  const leaves = valves ? underPressure.slice() : underPressure;
+  if (valves) or(leaves, valves.pressed);
 
   const plainFills = fromSource.slice();
   for (const line of tanks) s.seed(plainFills, line);
@@ -222,6 +229,7 @@ export function reach(
     freeExits,
     softExits,
     valves,
+    leaves,
     fills,
     plainFills,
     notToTank,

@@ -37,11 +37,7 @@ export class RunningRows {
   under(row: number): Uint8Array {
     const { reach } = this.#block(row);
     const bit = row & 31;
-    const valves = reach.valves?.pressed;
-    return Uint8Array.from(
-      this.net.lines,
-      (_, line) => (((reach.underPressure[line] as number) | (valves?.[line] ?? 0)) >>> bit) & 1,
-    );
+    return Uint8Array.from(this.net.lines, (_, line) => ((reach.leaves[line] as number) >>> bit) & 1);
   }
 
   toTank(row: number): Uint8Array {

@@ -36,7 +36,7 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
       if (state.is(standing[line]?.load)) reasons.push({ kind: 'load', text: loadText(state, line) });
       if (state.is(runningClasses[line]?.[CUT_OFF])) {
         const from = moves
-          .filter((move) => move.state.on(move.state.block.reach.underPressure, line))
+          .filter((move) => move.state.on(move.state.block.reach.leaves, line))
           .map((move) => `${move.text}${stoodAt(move.state, line)}`);
         if (from.length > 0)
           reasons.push({
@@ -44,7 +44,7 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
             text: `Under pressure before this move of one lever: ${from.join('; ')}.`,
           });
       }
-      if (!conditions.pumpsRunning && running.on(running.block.reach.underPressure, line)) {
+      if (!conditions.pumpsRunning && running.on(running.block.reach.leaves, line)) {
         reasons.push({
           kind: 'stopped',
           text: `Under pressure while the pumps run${stoodAt(running, line)}; stopping them does not let it down.`,

@@ -68,12 +68,12 @@ const together =
       const solver = new PathSolver(all, compileEdges(all), conditions, Math.min(BLOCK, words));
       for (let at = 0; at < words; at += BLOCK) {
         const width = Math.min(BLOCK, words - at);
-        const { underPressure } = solver.solve(at, width).reach;
+        const { leaves } = solver.solve(at, width).reach;
         for (let state = 32 * at; state < Math.min(count, 32 * (at + width)); state++) {
           const [word, bit] = [(state >>> 5) - at, state & 31];
           each(
             Math.floor(state / choices.length),
-            (line) => (((underPressure[line * width + word] ?? 0) >>> bit) & 1) === 1,
+            (line) => (((leaves[line * width + word] ?? 0) >>> bit) & 1) === 1,
           );
         }
       }
@@ -94,7 +94,7 @@ const oneByOne =
       const settlers = new Settlers(one);
       for (let row = 0; row < count; row++) {
         const state = solveOne(one, conditions, row, settlers);
-        each(row, (line) => state.on(state.block.reach.underPressure, line));
+        each(row, (line) => state.on(state.block.reach.leaves, line));
       }
     }
   };

@@ -48,7 +48,7 @@ interface Sheets {
   readonly lines: PlaneSheet;
   readonly blocked: PlaneSheet;
   readonly trapped: PlaneSheet;
-  /** One kind only: under pressure. */
+  /** One kind only: what the state may leave under pressure. */
   readonly under: PlaneSheet;
   /** One item and kind: rows whose verdicts rest on entered or assumed values. */
   readonly valued: PlaneSheet;
@@ -220,7 +220,7 @@ function runBlocks(
     for (let line = 0; line < net.shown; line++) {
       write(sheets.lines, line, classes[line] ?? []);
       write(sheets.blocked, line, blocked[line] ?? []);
-      sheets.under.write(line, 0, at, block.reach.underPressure.slice(line * width, (line + 1) * width));
+      sheets.under.write(line, 0, at, block.reach.leaves.slice(line * width, (line + 1) * width));
       sheets.trapped.write(line, LOAD, at, standing[line]?.load ?? new Uint32Array(width));
       sheets.trapped.write(line, HEAT, at, standing[line]?.heat ?? new Uint32Array(width));
     }

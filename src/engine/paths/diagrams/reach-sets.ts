@@ -27,6 +27,7 @@ export interface ReachSets {
   readonly softExits: LineSets;
   /** Exits and pressure over valves that pressures may open; undefined where there are none. */
   readonly valves: { readonly exits: LineSets; readonly pressed: LineSets } | undefined;
+  readonly leaves: LineSets;
   readonly fills: LineSets;
   readonly plainFills: LineSets;
   /** Searches along open paths into lines not freely open to tank / not open to tank at all. */
@@ -90,6 +91,7 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
   const aheadToFills = eliminate(net, paths, { edges: edges.forward, links: links.push, fromTank: true });
   const fills = aheadToFills.spread([...plainFills]);
   const valves = waysOverValves();
+  const leaves = valves ? underPressure.map((set, line) => or(set, at(valves.pressed, line))) : underPressure;
   return {
     links,
     notFree,
@@ -104,6 +106,7 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
     freeExits,
     softExits,
     valves,
+    leaves,
     fills,
     plainFills,
     aheadUnderPressure,

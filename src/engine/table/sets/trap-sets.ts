@@ -34,7 +34,7 @@ export function trapSets(
   const kind = ({ lines }: PanelState, line: number, index: number): Diagram => lines.classes[line]?.[index] ?? NONE;
   const standing = standingSets(net, conditions, asked.paths, asked.motions, (line) => kind(asked, line, CUT_OFF));
   return standing.map(({ load, heat }, line) => {
-    const under = running.motions.underPressure[line] as Diagram;
+    const under = running.motions.reach.leaves[line] as Diagram;
     const cutOff = kind(asked, line, CUT_OFF);
     const left = sets.and(kind(running, line, CUT_OFF), oneMoveFrom(under));
     const stopped = !conditions.pumpsRunning;
