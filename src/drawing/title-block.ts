@@ -1,7 +1,7 @@
 import type { Point } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
 import type { TitleKey } from '../circuit/paper.ts';
-import { advance, brokenAt, cutTo } from './text-advance.ts';
+import { advance, brokenAt, cutTo } from '../base/text-advance.ts';
 import type { Frame } from './frame.ts';
 import { mm } from './frame.ts';
 

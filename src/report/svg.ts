@@ -6,7 +6,7 @@ import { FILLS, FONT_FAMILY, PALETTE, PENS, PRINT } from '../drawing/palette.ts'
 import type { Scene } from '../drawing/scene.ts';
 import type { Stroke } from '../drawing/strokes.ts';
 import { MODULE_PX, pathData } from '../drawing/strokes.ts';
-import { advance, isMeasured } from '../drawing/text-advance.ts';
+import { advance, isMeasured } from '../base/text-advance.ts';
 
 export interface SvgOptions {
   /** `print`: black on white. */

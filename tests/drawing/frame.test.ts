@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { PAPERS, paperExtent } from '../../src/circuit/paper.ts';
 import { fieldAt, frameOf, mm, MODULE_MM } from '../../src/drawing/frame.ts';
-import { advance, brokenAt, cutTo, isMeasured } from '../../src/drawing/text-advance.ts';
+import { advance, brokenAt, cutTo, isMeasured } from '../../src/base/text-advance.ts';
 import { BLOCK_WIDTH, titleBlock } from '../../src/drawing/title-block.ts';
 import type { TitleBlock } from '../../src/drawing/title-block.ts';
 

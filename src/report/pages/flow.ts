@@ -1,7 +1,7 @@
 import type { Box } from '../../base/points.ts';
 import type { Primitive } from '../../base/primitives.ts';
 import type { Stroke } from '../../drawing/strokes.ts';
-import { advance, brokenAt } from '../../drawing/text-advance.ts';
+import { advance, brokenAt } from '../../base/text-advance.ts';
 import type { Block, TextBlock } from './blocks.ts';
 import { LEADING, TEXT } from './blocks.ts';
 import type { Drawn, Piece } from './piece.ts';

@@ -1,6 +1,6 @@
 import type { Point } from '../../base/points.ts';
 import type { Primitive } from '../../base/primitives.ts';
-import { advance, brokenAt } from '../../drawing/text-advance.ts';
+import { advance, brokenAt } from '../../base/text-advance.ts';
 import type { TableBlock, TableColumn } from './blocks.ts';
 import { LEADING, TEXT } from './blocks.ts';
 import type { Piece } from './piece.ts';

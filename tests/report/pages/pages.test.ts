@@ -6,7 +6,7 @@ import { PAPERS } from '../../../src/circuit/paper.ts';
 import { placeMissing } from '../../../src/drawing/place.ts';
 import { routeAll } from '../../../src/drawing/routing.ts';
 import { buildScene } from '../../../src/drawing/scene.ts';
-import { advance } from '../../../src/drawing/text-advance.ts';
+import { advance } from '../../../src/base/text-advance.ts';
 import { writePrintDocument, pageToSvg } from '../../../src/report/pages/document.ts';
 import { flow } from '../../../src/report/pages/flow.ts';
 import { hasRoomBeside, joined, printedPages } from '../../../src/report/pages/pages.ts';
