@@ -26,6 +26,7 @@ import {
 import { isFreeLabel } from './paste.ts';
 import { partOf, partsOf } from './place.ts';
 import { RefusedEdit } from './refused.ts';
+import { crosses, onSheet, sheetLookup } from './sheets.ts';
 
 export { copyOut, duplicate, isFreeLabel, paste, type Pasted } from './paste.ts';
 export { flipParts, moveLabel, movePart, moveParts, turnParts, type Places } from './place.ts';
@@ -38,12 +39,17 @@ export function placePart(circuit: Circuit, prefix: string, part: Omit<Part, 'id
   return { type: 'put-part', index: circuit.parts.length, part: { id: partNames(circuit).fresh(prefix), ...part } };
 }
 
-export function placeLabel(circuit: Circuit, at: Point, text: string): PutLabel {
+export function placeLabel(circuit: Circuit, at: Point, text: string, sheet?: string): PutLabel {
   checkText('label', text);
   return {
     type: 'put-label',
     index: (circuit.labels ?? []).length,
-    label: { id: labelNames(circuit).fresh(LABEL_PREFIX), at, text },
+    label: {
+      id: labelNames(circuit).fresh(LABEL_PREFIX),
+      ...(sheet !== undefined && onSheet(circuit, sheet)),
+      at,
+      text,
+    },
   };
 }
 
@@ -102,7 +108,7 @@ function bridgeOver(circuit: Circuit, part: Part, own: readonly Connection[]): C
   if (isConnected(circuit, from, to)) return undefined;
   const before = isOut ? (first.bends ?? []) : (first.bends ?? []).toReversed();
   const after = secondIsIn ? (second.bends ?? []) : (second.bends ?? []).toReversed();
-  const bends = [...before, ...after];
+  const bends = crosses(sheetLookup(circuit), { from, to }) ? [] : [...before, ...after];
   const name = first.name ?? second.name;
   return { ...omit(first, 'bends'), from, to, ...(name !== undefined && { name }), ...(bends.length > 0 && { bends }) };
 }
@@ -139,6 +145,8 @@ export interface TeeOptions {
   readonly bendsBefore?: number;
   readonly use?: NonNullable<Connection['use']>;
   readonly bends?: readonly Point[];
+  /** Which sheet the junction stands on, for a connection between two; else, and by default, that of its first end. */
+  readonly sheet?: string;
 }
 
 /**
@@ -160,7 +168,9 @@ export function connectToConnection(
   const bends = old.bends ?? [];
   const cut = options.bendsBefore ?? bendsBefore(circuit, old, at);
   const [before, after] = [bends.slice(0, cut), bends.slice(cut)];
-  const junction: Part = { id: partNames(circuit).fresh('J'), kind: 'junction', at };
+  const of = sheetLookup(circuit);
+  const sheet = options.sheet !== undefined && crosses(of, old) ? options.sheet : of(old.from.part);
+  const junction: Part = { id: partNames(circuit).fresh('J'), kind: 'junction', at, ...onSheet(circuit, sheet) };
   const middle: PortRef = { part: junction.id, port: 'J' };
   const ids = connectionNames(circuit);
   const next = circuit.connections.findIndex((c) => c.id === old.id) + 1;

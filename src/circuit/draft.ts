@@ -31,6 +31,7 @@ export class Draft {
 
   /** Lists that were not changed are those of the circuit before. */
   done(): Circuit {
+    this.#checkSheets();
     const circuit = { ...this.#sheet, parts: this.parts.items, connections: this.connections.items };
     return this.#labels === undefined ? omit(circuit, 'labels') : { ...circuit, labels: this.#labels.items };
   }
@@ -107,6 +108,17 @@ export class Draft {
     this.#count(before, -1);
     this.#count(after, 1);
     this.connections.change(index, after);
+  }
+
+  /** At the end, as a sheet may go before the parts on it do. */
+  #checkSheets(): void {
+    const known = new Set(this.#sheet.sheets?.map(({ id }) => id));
+    if (this.#sheet.sheets !== undefined && known.size < Math.max(1, this.#sheet.sheets.length))
+      throw new RefusedEdit('sheets', 'Sheets need ids of their own, and there is one at least.', 'Add a sheet first.');
+    for (const thing of [...this.parts.items, ...(this.#labels?.items ?? [])]) {
+      if (thing.sheet === undefined || known.has(thing.sheet)) continue;
+      throw new RefusedEdit(thing.id, `There is no sheet "${thing.sheet}".`, 'It may have been deleted before.');
+    }
   }
 
   #names(): Map<string, string> {

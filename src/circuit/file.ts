@@ -7,6 +7,7 @@ import { migrate, STEPS, type RawFile, type Step } from './migrate.ts';
 import {
   labelOf,
   type Circuit,
+  type CircuitSheet,
   type Connection,
   type Extra,
   type Label,
@@ -32,6 +33,7 @@ import {
   type FilePart,
   type FileReadyMadeValve,
   type FileRule,
+  type FileSheet,
   type FileValve,
 } from './schema.ts';
 
@@ -39,6 +41,7 @@ export { writeCircuit } from './write.ts';
 
 /** Lists of things with ids. */
 const LISTS = [
+  'sheets',
   'parts',
   'connections',
   'labels',
@@ -74,7 +77,7 @@ export function readCircuit(text: string, steps: ReadonlyMap<number, Step> = STE
   if (!shaped.success) return bad(...shorten(shaped.error.issues.map((issue) => sayIssue(issue, raised.value))));
   const warnings: Problem[] = [];
   const circuit = toCircuit(shaped.data, warnings);
-  const problems = [...checkIds(circuit), ...checkConnections(circuit, warnings)];
+  const problems = [...checkIds(circuit), ...checkSheets(circuit), ...checkConnections(circuit, warnings)];
   return problems.length > 0 ? bad(...shorten(problems)) : good(circuit, shorten(warnings));
 }
 
@@ -146,12 +149,19 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
       ),
       extra: extraOf(valve, KNOWN.valve, path),
     });
+  const toSheet = (sheet: FileSheet, i: number): CircuitSheet =>
+    solid<Required<CircuitSheet>>({
+      id: sheet.id,
+      name: sheet.name,
+      extra: extraOf(sheet, KNOWN.sheet, ['sheets', i]),
+    });
   const toPart = (part: FilePart, i: number): Part =>
     solid<Required<Part>>({
       id: part.id,
       kind: part.kind,
       label: part.label,
       code: part.code,
+      sheet: part.sheet,
       at: part.at && toPoint(part.at),
       turn: part.turn,
       flip: part.flip,
@@ -173,6 +183,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
   const toLabel = (label: FileLabel, i: number): Label =>
     solid<Required<Label>>({
       id: label.id,
+      sheet: label.sheet,
       at: toPoint(label.at),
       text: label.text,
       extra: extraOf(label, KNOWN.label, ['labels', i]),
@@ -201,6 +212,7 @@ function toCircuit(file: FileCircuit, warnings: Problem[]): Circuit {
     title: file.title,
     paper: file.paper,
     notes: file.notes,
+    sheets: file.sheets?.map(toSheet),
     parts: file.parts.map(toPart),
     connections: file.connections.map(toConnection),
     labels: file.labels?.map(toLabel),
@@ -241,6 +253,26 @@ function checkIds(circuit: Circuit): Problem[] {
     }
   }
   return [...problems, ...checkStepIds(circuit.plans ?? [])];
+}
+
+function checkSheets(circuit: Circuit): Problem[] {
+  const known = new Set(circuit.sheets?.map(({ id }) => id));
+  const listed = circuit.sheets?.map(({ id }) => `"${id}"`).join(', ');
+  return (['parts', 'labels'] as const).flatMap((list) =>
+    (circuit[list] ?? []).flatMap(({ sheet }, i): Problem[] =>
+      sheet === undefined || known.has(sheet)
+        ? []
+        : [
+            {
+              where: `${list}[${i}].sheet`,
+              what: `There is no sheet "${sheet}".`,
+              remedy: listed
+                ? `Write ${listed}, or leave the field out for the first sheet.`
+                : 'List it under "sheets" with id and name, or leave the field out.',
+            },
+          ],
+    ),
+  );
 }
 
 function checkConnections(circuit: Circuit, warnings: Problem[]): Problem[] {

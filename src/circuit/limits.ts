@@ -16,6 +16,7 @@ export const LIMITS = {
   bends: 1_000,
   /** Blocks drawn round parts. */
   groups: 1_000,
+  sheets: 200,
   /** Valves of the circuit's own make. */
   readyMadeValves: 200,
   /** Modules from the sheet's origin. */

@@ -13,6 +13,8 @@ export interface Circuit {
   readonly title?: Readonly<Record<string, string>>;
   /** What it is printed on; `DEFAULT_PAPER` when absent. */
   readonly paper?: Paper;
+  /** Sheets that the circuit is drawn on, in their order; one without a name when absent. Never empty. */
+  readonly sheets?: readonly CircuitSheet[];
   readonly parts: readonly Part[];
   readonly connections: readonly Connection[];
   /** Free text on the sheet. */
@@ -30,6 +32,13 @@ export interface Circuit {
   readonly extra?: Extra;
 }
 
+/** One sheet of the drawing. The circuit is one, whichever sheets its parts stand on. */
+export interface CircuitSheet {
+  readonly id: string;
+  readonly name: string;
+  readonly extra?: Extra;
+}
+
 export type Extra = Readonly<Record<string, unknown>>;
 
 export interface Part {
@@ -40,6 +49,8 @@ export interface Part {
   readonly label?: string;
   /** Second line of the label, such as `H1.1`. */
   readonly code?: string;
+  /** Id of the sheet that it stands on; the first when absent. */
+  readonly sheet?: string;
   /** Origin of the symbol in modules; absent = the sheet places the part. */
   readonly at?: Point;
   readonly turn?: Turn;
@@ -63,7 +74,7 @@ export interface Connection {
   readonly use?: 'working' | 'pilot' | 'drain';
   /** Size of tube or hose as the user notes it, such as `12x1.5`; drawn, not computed with. */
   readonly size?: string;
-  /** Bend points set by the user, in modules. */
+  /** Bend points set by the user, in modules; without effect while the ends stand on two sheets. */
   readonly bends?: readonly Point[];
   readonly extra?: Extra;
 }
@@ -76,6 +87,8 @@ export interface PortRef {
 
 export interface Label {
   readonly id: string;
+  /** As of a part. */
+  readonly sheet?: string;
   readonly at: Point;
   readonly text: string;
   readonly extra?: Extra;

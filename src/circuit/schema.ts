@@ -40,11 +40,19 @@ const valve = z.looseObject({
   coils: z.array(z.looseObject({ name: line, position: index })).optional(),
 });
 
+const sheetId = id.meta({ description: 'id of the sheet that it stands on; the first when left out' });
+
+const sheet = z.looseObject({
+  id,
+  name: line.min(1, say('The name is empty.', 'Write a name, such as "Power unit".')),
+});
+
 const part = z.looseObject({
   id,
   kind: line.min(1, say('The kind is empty.', 'Write a part kind, such as "tank".')),
   label: line.min(1, say('The label is empty.', 'Write a label or leave the field out.')).optional(),
   code: line.optional(),
+  sheet: sheetId.optional(),
   at: spot.optional(),
   turn: z
     .union(
@@ -70,7 +78,7 @@ const connection = z.looseObject({
     .optional(),
 });
 
-const label = z.looseObject({ id, at: spot, text: line });
+const label = z.looseObject({ id, sheet: sheetId.optional(), at: spot, text: line });
 
 const group = z.looseObject({
   id,
@@ -118,6 +126,12 @@ export const fileSchema = z
       .max(LIMITS.notes, say(`The notes are longer than ${LIMITS.notes} characters.`, 'Shorten them.'))
       .regex(SEVERAL_LINES, say('The notes hold a control character.', 'Keep only text, tabs and line breaks.'))
       .optional(),
+    sheets: z
+      .array(sheet)
+      .min(1, say('The list of sheets is empty.', 'Name one sheet at least, or leave the list out.'))
+      .max(LIMITS.sheets, say('Too many sheets.', `Use at most ${LIMITS.sheets}.`))
+      .optional()
+      .meta({ description: 'sheets of the drawing, in their order; left out, there is one' }),
     parts: z.array(part).max(LIMITS.parts),
     connections: z.array(connection).max(LIMITS.connections),
     labels: z
@@ -151,6 +165,7 @@ export const fileSchema = z
   });
 
 export type FileCircuit = z.infer<typeof fileSchema>;
+export type FileSheet = z.infer<typeof sheet>;
 export type FilePart = z.infer<typeof part>;
 export type FileConnection = z.infer<typeof connection>;
 export type FileLabel = z.infer<typeof label>;
@@ -164,6 +179,7 @@ const fields = (shape: object): ReadonlySet<string> => new Set(Object.keys(shape
 /** The fields that this version knows, for each kind of object in the file. */
 export const KNOWN = {
   circuit: fields(fileSchema.shape),
+  sheet: fields(sheet.shape),
   part: fields(part.shape),
   connection: fields(connection.shape),
   label: fields(label.shape),

@@ -2,6 +2,7 @@ import type { Point } from '../base/points.ts';
 import {
   sayPort,
   type Circuit,
+  type CircuitSheet,
   type Connection,
   type Extra,
   type Label,
@@ -19,6 +20,7 @@ type Fields = Record<string, unknown>;
 const WIDTH = 160;
 /** Lists that have a line for each member. */
 const LISTS: ReadonlySet<string> = new Set([
+  'sheets',
   'parts',
   'connections',
   'labels',
@@ -42,6 +44,7 @@ export function writeCircuit(circuit: Circuit): string {
       title: circuit.title,
       paper: circuit.paper,
       notes: circuit.notes,
+      sheets: circuit.sheets?.map(sheetFields),
       parts: circuit.parts.map(partFields),
       connections: circuit.connections.map(connectionFields),
       labels: circuit.labels?.map(labelFields),
@@ -61,6 +64,8 @@ export function writeCircuit(circuit: Circuit): string {
 
 const pair = (p: Point): [number, number] => [p.x, p.y];
 
+const sheetFields = ({ id, name, extra }: CircuitSheet): Fields => withExtra({ id, name }, extra);
+
 const partFields = (part: Part): Fields =>
   withExtra(
     {
@@ -68,6 +73,7 @@ const partFields = (part: Part): Fields =>
       kind: part.kind,
       label: part.label,
       code: part.code,
+      sheet: part.sheet,
       at: part.at && pair(part.at),
       turn: part.turn,
       flip: part.flip,
@@ -108,7 +114,7 @@ const connectionFields = (connection: Connection): Fields =>
   );
 
 const labelFields = (label: Label): Fields =>
-  withExtra({ id: label.id, at: pair(label.at), text: label.text }, label.extra);
+  withExtra({ id: label.id, sheet: label.sheet, at: pair(label.at), text: label.text }, label.extra);
 
 const groupFields = ({ id, name, parts, extra }: PartGroup): Fields => withExtra({ id, name, parts }, extra);
 

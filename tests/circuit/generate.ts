@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import type { Point } from '../../src/base/points.ts';
 import type {
   Circuit,
+  CircuitSheet,
   Connection,
   Extra,
   Label,
@@ -140,6 +141,11 @@ const label: fc.Arbitrary<Label> = fc.record(
   { requiredKeys: ['id', 'at', 'text'], noNullPrototype: true },
 );
 
+const sheet: fc.Arbitrary<CircuitSheet> = fc.record(
+  { id, name: words, extra: unknownFields(KNOWN.sheet) },
+  { requiredKeys: ['id', 'name'], noNullPrototype: true },
+);
+
 const group: fc.Arbitrary<PartGroup> = fc.record(
   { id, name: words, parts: fc.array(id, { maxLength: 3 }), extra: unknownFields(KNOWN.group) },
   { requiredKeys: ['id', 'name', 'parts'], noNullPrototype: true },
@@ -249,4 +255,23 @@ export const anyCircuit: fc.Arbitrary<Circuit> = fc
       },
       { requiredKeys: ['name', 'parts', 'connections'], noNullPrototype: true },
     );
-  });
+  })
+  .chain((circuit) =>
+    fc
+      .option(fc.uniqueArray(sheet, { minLength: 1, maxLength: 3, selector: (s) => s.id }), { nil: undefined })
+      .map((sheets) => (sheets ? spread(circuit, sheets) : circuit)),
+  );
+
+/** Parts and texts in turn on no sheet of their own, on the first, the second and so on. */
+function spread(circuit: Circuit, sheets: readonly CircuitSheet[]): Circuit {
+  const on = <T>(thing: T, i: number): T => {
+    const id = sheets[(i % (sheets.length + 1)) - 1]?.id;
+    return id === undefined ? thing : { ...thing, sheet: id };
+  };
+  return {
+    ...circuit,
+    sheets,
+    parts: circuit.parts.map(on),
+    ...(circuit.labels && { labels: circuit.labels.map(on) }),
+  };
+}
