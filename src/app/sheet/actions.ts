@@ -23,6 +23,7 @@ import {
   writeAt,
 } from './hand.ts';
 import { arrangeActions } from './arrange-actions.ts';
+import { followed } from './following.ts';
 import { insertHint } from './inserting.ts';
 import { lineActions, nudgeStretch, stepStretch, straightenStretch } from './line-actions.ts';
 import { lookActions } from './look-actions.ts';
@@ -31,6 +32,8 @@ import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { saySpot } from './spot-text.ts';
+import { typeSpot } from './spots.ts';
 import { coversOf, EDGE, fitClear, itemsOf } from './fit.ts';
 import { MODULE, panBy, reveal, zoomAt } from './viewport.ts';
 
@@ -63,6 +66,9 @@ function endOf(cursor: Cursor): End | undefined {
   const at = placeOf(map, cursor);
   return cursor.type === 'connection' && at ? endOnLine(map, cursor.id, at) : undefined;
 }
+
+/** Where the keyboard last went along a line from. */
+let cameFrom: Cursor | undefined;
 
 const selectedParts = (): readonly string[] => editor.selection.parts;
 
@@ -121,6 +127,14 @@ export const sheetActions: SheetActions = {
     return true;
   },
 
+  follow() {
+    const from = desk.cursor;
+    const next = followed(editor.circuit.connections, from, cameFrom);
+    if (!next) return desk.refuse('Go to a port with a line, or to a line, first.');
+    cameFrom = from;
+    goTo(next);
+  },
+
   arrow(dx, dy) {
     const { gesture, cursor } = desk;
     if (gesture.type === 'bend') return nudgeStretch(gesture, dx, dy);
@@ -130,7 +144,7 @@ export const sheetActions: SheetActions = {
       const before = insertHint();
       desk.gesture = { ...gesture, at: moved };
       const now = insertHint();
-      if (now !== undefined && now !== before) desk.say(now);
+      desk.say(now !== undefined && now !== before ? `${saySpot(moved)}. ${now}` : `${saySpot(moved)}.`);
       desk.viewport = reveal(desk.viewport, desk.size, { ...moved, width: 0, height: 0 }, 6);
       return;
     }
@@ -216,6 +230,8 @@ export const sheetActions: SheetActions = {
     else desk.refuse('Select a part, a line or a text to name it.');
   },
 
+  typeSpot: () => typeSpot(),
+
   connectFrom() {
     const { cursor } = desk;
     const part = cursor?.type === 'part' ? cursor.id : selectedParts()[0];
@@ -228,7 +244,7 @@ export const sheetActions: SheetActions = {
 
   openSettings() {
     if (view.panels.settings) view.close('settings');
-    else if (!refuseEmpty()) view.open('settings');
+    else if (!refuseEmpty()) view.enter('settings');
   },
 
   shiftLever(by) {

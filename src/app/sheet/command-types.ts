@@ -7,6 +7,8 @@ export interface SheetActions extends ArrangeActions, LineActions, LookActions {
   accept(): void;
   /** Go to the next or previous thing in reading order; false at the end, so that Tab leaves the sheet. */
   step(by: 1 | -1): boolean;
+  /** Along the line that the keyboard is at: from a port to it, and on to its other end. */
+  follow(): void;
   /** Nudge what is selected, move what is being placed, go to the next port, or pan. */
   arrow(dx: number, dy: number): void;
   turn(by: 90 | -90): void;
@@ -16,6 +18,8 @@ export interface SheetActions extends ArrangeActions, LineActions, LookActions {
   duplicate(): void;
   selectAll(): void;
   rename(): void;
+  /** Type where what is selected, or in hand, is to stand. */
+  typeSpot(): void;
   connectFrom(): void;
   openSettings(): void;
   shiftLever(by: 1 | -1): void;

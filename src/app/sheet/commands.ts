@@ -38,6 +38,13 @@ export const SHEET_COMMANDS: readonly Command[] = [
 
   { id: 'name', title: 'Name the part or line', group: 'Change', keys: ['F2'], run: (s) => s.rename() },
   {
+    id: 'spot',
+    title: 'Type the position: what is in hand is placed there, what is selected moves there',
+    group: 'Change',
+    keys: ['@', 'Shift+W'],
+    run: (s) => s.typeSpot(),
+  },
+  {
     id: 'settings',
     title: 'Open the settings of the part',
     group: 'Change',
@@ -70,6 +77,13 @@ export const SHEET_COMMANDS: readonly Command[] = [
     group: 'Select and go',
     keys: ['Shift+Tab'],
     run: (s) => s.step(-1),
+  },
+  {
+    id: 'follow',
+    title: 'From a port to its line, and along it to its other end',
+    group: 'Select and go',
+    keys: ['Shift+Enter'],
+    run: (s) => s.follow(),
   },
   ...arrows(1).map(([key, dx, dy]): Command => ({
     id: `arrow-${WORDS[key] ?? key}`,

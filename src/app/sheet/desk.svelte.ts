@@ -58,11 +58,16 @@ export interface Form {
   readonly title: string;
 }
 
-/** What gets a name or a text: `size` is that of the connection, `text` a label that is not there yet. */
+/**
+ * What gets a name or a text: `size` is that of the connection, `text` a label that is not there yet, `spot` the place
+ * of what is in hand or selected.
+ */
 export interface Naming {
-  readonly of: 'part' | 'connection' | 'size' | 'label' | 'text' | 'group';
+  readonly of: 'part' | 'connection' | 'size' | 'label' | 'text' | 'group' | 'spot';
   readonly id: string;
   readonly at?: Point;
+  /** Typed already. */
+  readonly begun?: string;
 }
 
 /** A menu at its place in the window. */

@@ -22,6 +22,7 @@ import { desk } from './desk.svelte.ts';
 import type { End } from './desk.svelte.ts';
 import { insertHint, insertionInHand, sayLine, withInsertion } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { saySpot } from './spot-text.ts';
 import { snap, toSheet } from './viewport.ts';
 import { zoneAt } from './zones.ts';
 
@@ -138,6 +139,14 @@ export function shift(circuit: Circuit, { parts, labels }: Selection, dx: number
   return all(edits);
 }
 
+/** Where the first of what is selected stands; undefined with nothing selected. */
+export function placeNow(): Point | undefined {
+  const { parts, labels } = editor.selection;
+  const [part] = parts;
+  if (part !== undefined) return drawing.places.get(part);
+  return editor.circuit.labels?.find(({ id }) => id === labels[0])?.at;
+}
+
 /** Show the selection moved, before it is. */
 export function previewShift(dx: number, dy: number, alone = false): void {
   if (dx === 0 && dy === 0) {
@@ -155,7 +164,7 @@ export interface ShiftOptions {
   readonly alone?: boolean;
 }
 
-export function commitShift(dx: number, dy: number, burst: string, { into, alone = false }: ShiftOptions = {}): void {
+export function commitShift(dx: number, dy: number, burst: string | undefined, { into, alone = false }: ShiftOptions = {}): void {
   const { parts, labels } = editor.selection;
   const [first] = parts;
   const { circuit } = editor;
@@ -170,7 +179,10 @@ export function commitShift(dx: number, dy: number, burst: string, { into, alone
       `${nameOf(first)} put into ${sayLine(into.connection)}.`,
     );
   } else if (dx !== 0 || dy !== 0) {
-    attempt(() => shift(circuit, editor.selection, dx, dy, alone), `${sayThings(parts, labels)} moved.`, burst);
+    const done = attempt(() => shift(circuit, editor.selection, dx, dy, alone), '', burst);
+    drawing.preview = undefined;
+    const at = placeNow();
+    if (done && at) desk.say(`${sayThings(parts, labels)} moved to ${saySpot(at)}.`);
   }
   drawing.preview = undefined;
 }

@@ -60,7 +60,7 @@ export function menuItems(): { title: string; items: MenuItem[] } {
         ...(only ? items('settings', 'name', 'swap') : []),
         ...(only && isStripValve(kind) ? items('maker') : []),
         ...(isValve ? items('add-section') : []),
-        ...items('turn', 'turn-back', 'flip'),
+        ...items('turn', 'turn-back', 'flip', 'spot'),
         ...(parts.length > 1
           ? [
               heading('Arrange'),
@@ -88,12 +88,12 @@ export function menuItems(): { title: string; items: MenuItem[] } {
         heading('Shape'),
         ...items('bend', 'tidy'),
         heading('Selection'),
-        ...items('select-kind', 'delete'),
+        ...items('follow', 'select-kind', 'delete'),
       ],
     };
   }
   if (labels.length > 0)
-    return { title: sayThings([], labels), items: items('name', 'select-kind', 'duplicate', 'copy', 'cut', 'delete') };
+    return { title: sayThings([], labels), items: items('name', 'spot', 'select-kind', 'duplicate', 'copy', 'cut', 'delete') };
   return {
     title: 'Sheet',
     items: [

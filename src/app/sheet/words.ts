@@ -33,15 +33,16 @@ export function hint(circuit: Circuit, selected: number): string {
   const inserts = insertHint();
   if (inserts !== undefined) return inserts;
   if (gesture.type === 'place-several')
-    return `Click to put ${gesture.title.toLowerCase()} down, Shift for several. Escape puts it away.`;
+    return `Click to put ${gesture.title.toLowerCase()} down, or type its position. Shift for several, Escape puts it away.`;
   if (gesture.type === 'text') return 'Click where the text is to begin. Escape gives it up.';
   if (gesture.type === 'bend')
     return gesture.held
       ? 'Let go to leave the stretch here.'
       : 'Tab: next stretch. Arrows move it, Del takes its bends away, Escape ends.';
   if (gesture.type === 'place')
-    return `Click to put ${gesture.form.title.toLowerCase()} down, Shift for several. T turns, F flips, Escape puts it away.`;
-  if (gesture.type === 'connect') return 'End at a port or on a line. Escape gives the line up.';
+    return `Click to put ${gesture.form.title.toLowerCase()} down, or type its position, such as 20, 38. Shift for several, T turns, F flips, Escape puts it away.`;
+  if (gesture.type === 'connect')
+    return 'End at a port or on a line; / finds a port by its name. Escape gives the line up.';
   if (gesture.type === 'drag') return 'Let go to put it here. Escape leaves it where it was.';
   if (gesture.type !== 'none' || circuit.parts.length === 0) return '';
   if (hover.type === 'port' && !hover.port.joint)

@@ -64,6 +64,9 @@ class View {
   /** Panels from the lowest to the one on top. */
   stack = $state.raw<readonly PanelId[]>([]);
 
+  /** The panel that the keyboard is on its way into. */
+  entering = $state<PanelId | undefined>();
+
   dark = $derived(this.theme === 'dark' || (this.theme === 'system' && this.systemDark));
 
   setTheme(theme: ThemeChoice): void {
@@ -123,6 +126,12 @@ class View {
     this.panels[panel] = true;
     this.raise(panel);
     if (panel === 'legend') remember('legendOpen', true);
+  }
+
+  /** Open, and the keyboard goes into its first field. */
+  enter(panel: PanelId): void {
+    this.entering = panel;
+    this.open(panel);
   }
 
   raise(panel: PanelId): void {
