@@ -69,6 +69,8 @@ export type Primitive =
       readonly align: 'start' | 'middle' | 'end';
       readonly weight?: 400 | 500 | 600;
       readonly tone?: 'ink' | 'second' | 'mute' | 'accent';
+      /** What keeps its place when the symbol is turned and the text stays upright; the baseline when absent. */
+      readonly held?: 'top';
     }
   /** A group that moves as one when a valve is shifted; `role` is for the view's motion and marks. */
   | {

@@ -11,6 +11,8 @@ const table = (list: string): ReadonlyMap<string, number> => {
   return new Map([...LETTERS].map((letter, i) => [letter, (widths[i] ?? 0) / 1000]));
 };
 const TABLES = { regular: table(REGULAR), semibold: table(SEMIBOLD) };
+/** Height of its capitals and figures, in its size. */
+export const CAP_HEIGHT = 0.73;
 /** Wide enough for nearly any letter that is not in the list. */
 const UNKNOWN = 1;
 

@@ -1,8 +1,9 @@
 import type { Placement, Point } from '../base/points.ts';
 import { place, placeBox } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
+import { CAP_HEIGHT } from '../base/text-advance.ts';
 
-const ALIGN_BACK = { start: 'end', middle: 'middle', end: 'start' } as const;
+type Text = Extract<Primitive, { type: 'text' }>;
 
 /**
  * Primitives of a symbol, on the sheet: flipped, turned and moved, with text kept upright. Group shifts
@@ -23,7 +24,7 @@ export function placePrimitives(primitives: readonly Primitive[], placement: Pla
       case 'box':
         return { ...p, ...placeBox(p, placement) };
       case 'text':
-        return { ...p, at: to(p.at), align: alignOf(p.align, placement) };
+        return { ...p, ...placeText(p, placement) };
       case 'group': {
         const { clip, ...rest } = p;
         return {
@@ -37,8 +38,22 @@ export function placePrimitives(primitives: readonly Primitive[], placement: Pla
   });
 }
 
-/** Text beside a point stays on the same side of it; upright turns centre it. */
-function alignOf(align: 'start' | 'middle' | 'end', { turn, flip }: Placement): 'start' | 'middle' | 'end' {
-  if (turn === 90 || turn === 270) return 'middle';
-  return (turn === 180) !== flip ? ALIGN_BACK[align] : align;
+const SIGN = { start: 1, middle: 0, end: -1 } as const;
+
+/**
+ * Where text that is kept upright begins: its box stays in the same quadrant about its anchor as the symbol has it, so
+ * that a letter above and to the right of a port is below and to the right of it after a quarter turn.
+ */
+function placeText({ at, align, size, held }: Text, placement: Placement): Pick<Text, 'at' | 'align'> {
+  const still: Placement = { ...placement, at: { x: 0, y: 0 } };
+  const tall = CAP_HEIGHT * size;
+  const anchor = place(held === 'top' ? { x: at.x, y: at.y - tall } : at, placement);
+  // From the anchor, text runs along its line, and up from its baseline or down from its top.
+  const along = place({ x: SIGN[align], y: 0 }, still);
+  const over = place({ x: 0, y: held === 'top' ? 1 : -1 }, still);
+  const way = { x: along.x + over.x, y: along.y + over.y };
+  return {
+    at: { x: anchor.x, y: anchor.y + ((way.y + 1) / 2) * tall },
+    align: way.x > 0 ? 'start' : way.x < 0 ? 'end' : 'middle',
+  };
 }

@@ -261,6 +261,8 @@ export interface PathElement {
   readonly cracking?: number;
   /** Reverse path of a lock check: open while this port is fed and not freely open to tank. */
   readonly pilot?: { readonly port: string; readonly ratio: number };
+  /** Way back through a shuttle valve: open while this port, the other inlet, is open to tank and nothing presses on it. */
+  readonly vent?: string;
   /** m³/s at Pa of drop, for the pressure layer. */
   readonly rated?: { readonly flow: number; readonly drop: number };
   /** m³/s that it passes at most from → to, whatever the drop (flow control). */

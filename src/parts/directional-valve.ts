@@ -3,7 +3,7 @@ import type { InputSpec, PartKind } from './contract.ts';
 import { lossSettings, readLoss } from './losses.ts';
 import { ratingSetting, readRating, TANK_PORT_RATING } from './ratings.ts';
 import { checkValve } from './valve-check.ts';
-import { drawValve, valveBounds, valveReach } from './valve-drawing.ts';
+import { drawValve, isTurned, valveBounds, valveReach } from './valve-drawing.ts';
 import { DEFAULT_VALVE, VALVE_FORMS } from './valve-forms.ts';
 import { valvePorts } from './valve-frame.ts';
 import { valveCrossing, valveElements } from './valve-paths.ts';
@@ -48,8 +48,8 @@ export const directionalValve: PartKind = {
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
   input: (part) => ({ ...valveInput(valveOf(part)), crossing: valveCrossing(valveOf(part), readLoss(part, LOSS)) }),
   draw: (part, look) => drawValve(valveOf(part), look.position),
-  bounds: (part) => valveBounds(valveOf(part)),
-  reach: (part) => valveReach(valveOf(part)),
+  bounds: (part) => valveBounds(valveOf(part), false, isTurned(part)),
+  reach: (part) => valveReach(valveOf(part), false, isTurned(part)),
   check: (part) =>
     part.valve
       ? checkValve(part.valve)

@@ -112,14 +112,14 @@ export const flowDivider: PartKind = {
     ];
   },
   draw: (part) => [
-    stroke('symbol', [0, 4], [0, 2]),
+    stroke('symbol', [0, 4], [0, isGear(part) ? 2.5 : 2]),
     ...(isGear(part)
       ? [
           stroke('symbol', [-3, 1.7], [-3, 2.5], [3, 2.5], [3, 1.7]),
           // The common shaft.
           stroke('fine', [-3, -0.3], [3, -0.3]),
           stroke('fine', [-3, 0.3], [3, 0.3]),
-          stroke('symbol', [0, 2], [0, 2.5]),
+          dot('symbol', [0, 2.5]),
           ...gears(),
         ]
       : spool()),

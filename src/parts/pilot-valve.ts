@@ -4,6 +4,7 @@ import { lossSettings, readLoss } from './losses.ts';
 import { quantitySetting, readSi } from './settings.ts';
 import { checkValve } from './valve-check.ts';
 import { dataOf, PILOT_FORMS } from './valve-forms-dependent.ts';
+import { isTurned } from './valve-drawing.ts';
 import { valvePorts } from './valve-frame.ts';
 import { valveElements } from './valve-paths.ts';
 import { drawPiloted, pilotedBounds, pilotedReach, pilotPorts, type PilotPort } from './valve-pilots.ts';
@@ -89,7 +90,7 @@ export const pilotValve: PartKind = {
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
   dependent: dependentOf,
   draw: (part, look) => drawPiloted(valveOf(part), pilotsOf(valveOf(part)), false, look.position),
-  bounds: (part) => pilotedBounds(valveOf(part), pilotsOf(valveOf(part)), false),
-  reach: (part) => pilotedReach(valveOf(part), pilotsOf(valveOf(part)), false),
+  bounds: (part) => pilotedBounds(valveOf(part), pilotsOf(valveOf(part)), false, isTurned(part)),
+  reach: (part) => pilotedReach(valveOf(part), pilotsOf(valveOf(part)), false, isTurned(part)),
   check: (part) => (part.valve ? checkPilots(part.valve) : []),
 };

@@ -3,7 +3,7 @@ import type { DependentSpec, PartKind, PartProblem, RollerTrip } from './contrac
 import { lossSettings, readLoss } from './losses.ts';
 import { actuatorSetting, choiceSetting, quantitySetting, readActuator, readChoice, readSi } from './settings.ts';
 import { checkValve } from './valve-check.ts';
-import { drawValve, valveBounds, valveReach } from './valve-drawing.ts';
+import { drawValve, isTurned, valveBounds, valveReach } from './valve-drawing.ts';
 import { dataOf, ROLLER_FORMS } from './valve-forms-dependent.ts';
 import { valvePorts } from './valve-frame.ts';
 import { valveElements } from './valve-paths.ts';
@@ -79,7 +79,7 @@ export const rollerValve: PartKind = {
   elements: (part) => valveElements(valveOf(part), readLoss(part, LOSS)),
   dependent: dependentOf,
   draw: (part, look) => drawValve(valveOf(part), look.position),
-  bounds: (part) => valveBounds(valveOf(part)),
-  reach: (part) => valveReach(valveOf(part)),
+  bounds: (part) => valveBounds(valveOf(part), false, isTurned(part)),
+  reach: (part) => valveReach(valveOf(part), false, isTurned(part)),
   check: checkRoller,
 };

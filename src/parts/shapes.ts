@@ -1,5 +1,6 @@
 import type { Box, Point } from '../base/points.ts';
 import type { Fill, Pen, Primitive } from '../base/primitives.ts';
+import { CAP_HEIGHT } from '../base/text-advance.ts';
 import type { PortSpec } from './contract.ts';
 
 /** Strokes that several symbols share. Everything in modules, y down. */
@@ -110,13 +111,19 @@ export const text = (
   [x, y]: Pair,
   size = 1.2,
   align: 'start' | 'middle' | 'end' = 'middle',
-): Primitive => ({
+): Extract<Primitive, { type: 'text' }> => ({
   type: 'text',
   at: { x, y },
   text: value,
   size,
   align,
   tone: 'second',
+});
+
+/** The same by its upper edge, as a letter below a port stands. */
+export const hungText = (value: string, [x, y]: Pair, size: number, align: 'start' | 'middle' | 'end'): Primitive => ({
+  ...text(value, [x, y + CAP_HEIGHT * size], size, align),
+  held: 'top',
 });
 
 export type LeftOpen = NonNullable<PortSpec['leftOpen']>;

@@ -1,4 +1,4 @@
-import type { PartKind } from './contract.ts';
+import type { PartKind, PathElement } from './contract.ts';
 import { lossSettings, readLoss } from './losses.ts';
 import { boxOf, checkSeat, leftOpen, port, rectangle, stroke } from './shapes.ts';
 
@@ -13,7 +13,7 @@ export const shuttleValve: PartKind = {
   kind: 'shuttle-valve',
   title: 'Shuttle valve',
   group: 'Flow and check',
-  help: 'A gets the higher of the pressures at X and Y. Computed as two checks: that A can drain back through the inlet that fed it last is not.',
+  help: 'A gets the higher of the pressures at X and Y. It drains back through an inlet while the other one is let down; which of them the ball stands at with both shut in is not known, and then A counts as shut in.',
   words: ['or valve', 'double check', 'higher of two', 'selector', 'load sensing', 'brake release'],
   prefix: 'SH',
   settings: [...LOSS.all],
@@ -34,14 +34,16 @@ export const shuttleValve: PartKind = {
     ),
   ],
   elements: (part) =>
-    (['X', 'Y'] as const).map((from) => ({
-      type: 'path',
-      from,
-      to: 'A',
-      way: 'one-way',
-      throttled: false,
-      rated: readLoss(part, LOSS),
-    })),
+    [
+      ['X', 'Y'],
+      ['Y', 'X'],
+    ].flatMap(([inlet = '', other = '']): PathElement[] => {
+      const common = { type: 'path', way: 'one-way', throttled: false, rated: readLoss(part, LOSS) } as const;
+      return [
+        { ...common, from: inlet, to: 'A' },
+        { ...common, from: 'A', to: inlet, vent: other },
+      ];
+    }),
   draw: () => [
     rectangle('symbol', boxOf(-3, -2, 6, 4), 'paper'),
     stroke('symbol', [-4, 0], [-1.6, 0]),

@@ -5,6 +5,7 @@ import { lossSettings, readLoss } from './losses.ts';
 import { choiceSetting, quantitySetting, readChoice, readSi } from './settings.ts';
 import { checkValve } from './valve-check.ts';
 import { dataOf, TWO_STAGE_FORMS } from './valve-forms-dependent.ts';
+import { isTurned } from './valve-drawing.ts';
 import { valvePorts } from './valve-frame.ts';
 import { valveElements } from './valve-paths.ts';
 import { drawPiloted, pilotedBounds, pilotedReach, pilotPorts, type PilotPort } from './valve-pilots.ts';
@@ -127,7 +128,7 @@ export const twoStageValve: PartKind = {
   input: (part) => valveInput(valveOf(part)),
   dependent: dependentOf,
   draw: (part, look) => drawPiloted(valveOf(part), pilotsOf(part), true, look.position),
-  bounds: (part) => pilotedBounds(valveOf(part), pilotsOf(part), true),
-  reach: (part) => pilotedReach(valveOf(part), pilotsOf(part), true),
+  bounds: (part) => pilotedBounds(valveOf(part), pilotsOf(part), true, isTurned(part)),
+  reach: (part) => pilotedReach(valveOf(part), pilotsOf(part), true, isTurned(part)),
   check: checkStages,
 };

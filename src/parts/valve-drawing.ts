@@ -1,10 +1,11 @@
 import type { Box } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
-import type { ValveData } from '../circuit/model.ts';
-import { boxOf, rectangle, text } from './shapes.ts';
+import { advance } from '../base/text-advance.ts';
+import type { Part, ValveData } from '../circuit/model.ts';
+import { boxOf, hungText, rectangle, text, type Pair } from './shapes.ts';
 import { drawPaths } from './valve-box.ts';
 import { frameOf, HALF_HEIGHT } from './valve-frame.ts';
-import { drawEnd, operatorTop, placeOperators } from './valve-operators.ts';
+import { drawEnd, endExtent } from './valve-operators.ts';
 
 /** The position drawn at the ports: the one asked for, else the rest position, else the first. */
 export function activeOf(data: ValveData, position: number | undefined): number {
@@ -62,30 +63,49 @@ export function drawValve(data: ValveData, position?: number, staged = false): P
   ];
 }
 
-/** Letters beside the lines, on the outer side of each port. */
+const LETTER = 1.2;
+/** From the edge of the box to the letter. */
+const OFF = 0.45;
+
+/** Letters beside the lines, on the outer side of each port; where the next line is near, halfway between the two. */
 function portLetters(data: ValveData): Primitive[] {
   const { places } = frameOf(data);
   return data.ports.map(({ id, side }) => {
-    const [x] = places.get(id) as readonly [number, number];
-    return text(id, [x + (x < 0 ? -0.4 : 0.4), side === 'top' ? -2.45 : 3.25], 1.2, x < 0 ? 'end' : 'start');
+    const [x] = places.get(id) as Pair;
+    const out = x < 0 ? -1 : 1;
+    const next = data.ports.some((other) => other.side === side && (places.get(other.id) as Pair)[0] === x + 2 * out);
+    const gap = next ? Math.min(0.7, Math.max(0.2, (2 - advance(id, LETTER)) / 2)) : 0.7;
+    const align = out < 0 ? 'end' : 'start';
+    return side === 'top'
+      ? text(id, [x + gap * out, -HALF_HEIGHT - OFF], LETTER, align)
+      : hungText(id, [x + gap * out, HALF_HEIGHT + OFF], LETTER, align);
   });
 }
 
-function boundsAt(data: ValveData, position: number, staged: boolean): Box {
+function boundsAt(data: ValveData, position: number, staged: boolean, turned: boolean): Box {
   const { width } = frameOf(data);
-  const left = -(position + 0.5) * width - placeOperators(data.left, staged).length;
-  const right = (data.positions.length - position - 0.5) * width + placeOperators(data.right, staged).length;
-  const top = Math.max(operatorTop(data.left), operatorTop(data.right));
+  const names = coilNames(data);
+  const [leftEnd, rightEnd] = [
+    endExtent(data.left, names.left, staged, turned),
+    endExtent(data.right, names.right, staged, turned),
+  ];
+  const left = -(position + 0.5) * width - leftEnd.length;
+  const right = (data.positions.length - position - 0.5) * width + rightEnd.length;
+  const top = Math.max(leftEnd.top, rightEnd.top);
   const x = Math.floor(left);
   return boxOf(x, -top, Math.ceil(right) - x, top + HALF_HEIGHT);
 }
 
+/** A quarter turn: names of coils, which stay upright, then stand out to the side. */
+export const isTurned = ({ turn }: Pick<Part, 'turn'>): boolean => turn === 90 || turn === 270;
+
 /** Outline with the rest position at the ports. */
-export const valveBounds = (data: ValveData, staged = false): Box => boundsAt(data, activeOf(data, undefined), staged);
+export const valveBounds = (data: ValveData, staged = false, turned = false): Box =>
+  boundsAt(data, activeOf(data, undefined), staged, turned);
 
 /** Outline over all positions, for keeping room free. */
-export function valveReach(data: ValveData, staged = false): Box {
-  const first = boundsAt(data, 0, staged);
-  const last = boundsAt(data, Math.max(0, data.positions.length - 1), staged);
+export function valveReach(data: ValveData, staged = false, turned = false): Box {
+  const first = boundsAt(data, 0, staged, turned);
+  const last = boundsAt(data, Math.max(0, data.positions.length - 1), staged, turned);
   return boxOf(last.x, first.y, first.x + first.width - last.x, first.height);
 }

@@ -1,4 +1,5 @@
 import type { Primitive } from '../base/primitives.ts';
+import { advance, cutTo } from '../base/text-advance.ts';
 import type { Operator } from '../circuit/model.ts';
 import { arrowHead, boxOf, circle, rectangle, shape, spring, stroke, text, type Pair } from './shapes.ts';
 
@@ -81,14 +82,66 @@ export function placeOperators(
 /** Height over mid line that the operators of an end need, 2 at least. */
 export const operatorTop = (operators: readonly Operator[]): number => (operators.includes('lever') ? 3 : 2);
 
-export function drawEnd(operators: readonly Operator[], look: EndLook): Primitive[] {
-  let coil = 0;
-  return placeOperators(operators, look.staged).placed.flatMap((each) =>
-    drawOperator(each, look, each.operator === 'coil' ? (look.coils[coil++] ?? '') : ''),
-  );
+/** Name of a coil over its box, about or from `u` outwards. */
+interface CoilName {
+  readonly text: string;
+  readonly u: number;
+  readonly centred: boolean;
 }
 
-function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): Primitive[] {
+const NAME = 1.1;
+/** Baseline of the names over the mid line. */
+const NAME_Y = -1.35;
+/** A name stands out no further than this. */
+const LONGEST = 8;
+
+/**
+ * Names over their coils. One that is too wide runs on outwards, over a spring or past the end, and is cut where the next
+ * coil or a stem stands in its way.
+ */
+function coilNamesOf(operators: readonly Operator[], names: readonly string[], staged: boolean): CoilName[] {
+  const { placed } = placeOperators(operators, staged);
+  const coils = placed.filter(({ operator }) => operator === 'coil');
+  return coils.flatMap(({ u }, i): CoilName[] => {
+    const name = names[i] ?? '';
+    if (name === '') return [];
+    const width = advance(name, NAME);
+    if (width <= REACH.coil - 0.3) return [{ text: name, u: u + REACH.coil / 2, centred: true }];
+    const inTheWay = placed.filter(
+      (each) => each.u > u && (each.operator === 'coil' || each.operator === 'lever' || each.y < 0),
+    );
+    const room = Math.min(LONGEST, ...inTheWay.map((each) => each.u - u));
+    return [{ text: cutTo(name, NAME, room - 0.3), u: u + 0.15, centred: false }];
+  });
+}
+
+/** How far an end reaches out with its names, and up where they stand across it because the valve is turned. */
+export function endExtent(
+  operators: readonly Operator[],
+  names: readonly string[],
+  staged: boolean,
+  turned: boolean,
+): { readonly length: number; readonly top: number } {
+  const { length } = placeOperators(operators, staged);
+  const top = operatorTop(operators);
+  const texts = coilNamesOf(operators, names, staged);
+  if (turned) {
+    const widest = Math.max(0, ...names.map((name) => advance(cutTo(name, NAME, LONGEST), NAME)));
+    return { length, top: texts.length > 0 ? Math.max(top, Math.ceil(widest - NAME_Y)) : top };
+  }
+  const ends = texts.map(({ text: said, u, centred }) => (centred ? u : u + advance(said, NAME)));
+  return { length: Math.max(length, ...ends), top };
+}
+
+export function drawEnd(operators: readonly Operator[], look: EndLook): Primitive[] {
+  const sign = look.side === 'right' ? 1 : -1;
+  const names = coilNamesOf(operators, look.coils, look.staged ?? false).map(({ text: said, u, centred }) =>
+    text(said, [sign * u, NAME_Y], NAME, centred ? 'middle' : sign === 1 ? 'start' : 'end'),
+  );
+  return [...placeOperators(operators, look.staged).placed.flatMap((each) => drawOperator(each, look)), ...names];
+}
+
+function drawOperator({ operator, u, y }: Placed, look: EndLook): Primitive[] {
   const sign = look.side === 'right' ? 1 : -1;
   const p = (du: number, dy: number): Pair => [sign * (u + du), y + dy];
   const box = (du: number, dy: number, width: number, height: number): Primitive =>
@@ -99,11 +152,7 @@ function drawOperator({ operator, u, y }: Placed, look: EndLook, name: string): 
   ];
   switch (operator) {
     case 'coil':
-      return [
-        box(0, -1, 3, 2),
-        stroke('fine', p(2, 1), p(1, -1)),
-        ...(name === '' ? [] : [text(name, p(1.5, -1.5), 1.1)]),
-      ];
+      return [box(0, -1, 3, 2), stroke('fine', p(2, 1), p(1, -1))];
     case 'spring':
       return [spring('symbol', sign * u, sign * (u + 2.7), y, y === 0 ? 1 : 0.8)];
     case 'detent':

@@ -2,7 +2,7 @@ import type { Box } from '../base/points.ts';
 import type { Primitive } from '../base/primitives.ts';
 import type { ValveData } from '../circuit/model.ts';
 import type { PortSpec } from './contract.ts';
-import { boxOf, leftOpen, port, stroke, text, type Pair } from './shapes.ts';
+import { boxOf, hungText, leftOpen, port, stroke, type Pair } from './shapes.ts';
 import { activeOf, drawValve, valveBounds, valveReach } from './valve-drawing.ts';
 import { frameOf, HALF_HEIGHT } from './valve-frame.ts';
 import { placeOperators } from './valve-operators.ts';
@@ -98,7 +98,9 @@ export function drawPiloted(
           : down && outside && Math.abs(slid) < 0.01
             ? [here, [here[0], 1.6], [x, 1.6], at]
             : [here, [here[0], RUN_Y], [x, RUN_Y], at];
-    return [stroke('pilot', ...way), text(id, [x + (x < 0 ? -0.4 : 0.4), PORT_Y + 0.25], 1.2, x < 0 ? 'end' : 'start')];
+    // Clear of the run under a strip that has slid out over the port.
+    const letter = hungText(id, [x + (x < 0 ? -0.6 : 0.6), RUN_Y + 0.3], 1.2, x < 0 ? 'end' : 'start');
+    return [stroke('pilot', ...way), letter];
   });
   return [...drawValve(data, position, staged), ...lines];
 }
@@ -110,8 +112,8 @@ const down = (box: Box, ports: readonly PilotPort[], spots: readonly [PilotPort,
   return boxOf(left, box.y, right - left, PORT_Y - box.y);
 };
 
-export const pilotedBounds = (data: ValveData, ports: readonly PilotPort[], staged: boolean): Box =>
-  down(valveBounds(data, staged), ports, spotsOf(data, ports, staged));
+export const pilotedBounds = (data: ValveData, ports: readonly PilotPort[], staged: boolean, turned: boolean): Box =>
+  down(valveBounds(data, staged, turned), ports, spotsOf(data, ports, staged));
 
-export const pilotedReach = (data: ValveData, ports: readonly PilotPort[], staged: boolean): Box =>
-  down(valveReach(data, staged), ports, spotsOf(data, ports, staged));
+export const pilotedReach = (data: ValveData, ports: readonly PilotPort[], staged: boolean, turned: boolean): Box =>
+  down(valveReach(data, staged, turned), ports, spotsOf(data, ports, staged));

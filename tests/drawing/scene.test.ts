@@ -147,7 +147,8 @@ test('a turned and flipped symbol keeps its text upright and its group shift alo
     { type: 'arc', from: { x: 0, y: 0 }, to: { x: 2, y: 0 }, radius: 1, clockwise: true, pen: 'symbol' },
   ];
   const [text, group, arc] = placePrimitives(primitives, { at: { x: 10, y: 20 }, turn: 90, flip: false });
-  expect(text).toMatchObject({ at: { x: 12, y: 21 }, align: 'middle' });
+  // What stood above and to the right of (1, −2) stands to the right of it and below.
+  expect(text).toMatchObject({ at: { x: 12, y: 21.73 }, align: 'start' });
   expect(group).toMatchObject({ shift: { x: 0, y: 4 }, children: [{ x: 9, y: 18, width: 2, height: 4 }] });
   expect(arc).toMatchObject({ from: { x: 10, y: 20 }, to: { x: 10, y: 22 }, clockwise: true });
   const flipped = placePrimitives(primitives, { at: { x: 0, y: 0 }, turn: 0, flip: true });
