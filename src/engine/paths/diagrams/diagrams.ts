@@ -8,9 +8,10 @@ const AND = 0;
 const OR = 1;
 const MINUS = 2;
 const FIRST_NODES = 1 << 10;
-/** Results kept of each operation; as many as there are nodes, within bounds. */
-const LEAST_KEPT = 1 << 10;
-const MOST_KEPT = 1 << 18;
+/** Places for results of operations: some for each node, within bounds. */
+const LEAST_KEPT = 1 << 13;
+const MOST_KEPT = 1 << 21;
+const KEPT_PER_NODE = 4;
 
 /** More nodes than allowed: the sets are too entangled to be held. */
 export class TooManyNodes extends Error {
@@ -48,10 +49,8 @@ export class Diagrams {
   #kids: Int32Array;
   #nodes = 2;
   #slots: Int32Array = new Int32Array(FIRST_NODES * 2).fill(-1);
-  #kept = 0;
-  #keyA: Int32Array = new Int32Array(0);
-  #keyB: Int32Array = new Int32Array(0);
-  #found: Int32Array = new Int32Array(0);
+  /** Latest results, four numbers each: the operation's sets, what it gave, and the operation; a first number of 0 is an empty place. */
+  #results: Int32Array = new Int32Array(4 * LEAST_KEPT);
   readonly #scratch: Int32Array;
   readonly #counts: bigint[] = [0n, 1n];
   /** Level → combinations of the inputs from there on. */
@@ -78,14 +77,20 @@ export class Diagrams {
     for (let level = radices.length - 1; level >= 0; level--)
       below[level] = (below[level + 1] as bigint) * BigInt(arity[level] as number);
     this.#below = below;
-    this.#keep(LEAST_KEPT);
   }
 
-  #keep(results: number): void {
-    this.#kept = results;
-    this.#keyA = new Int32Array(3 * results).fill(-1);
-    this.#keyB = new Int32Array(3 * results);
-    this.#found = new Int32Array(3 * results);
+  /** Room for more results; those there are move to their new places. */
+  #keepMore(): void {
+    const before = this.#results;
+    const results = new Int32Array(before.length * 2);
+    const mask = results.length - 4;
+    for (let old = 0; old < before.length; old += 4) {
+      const a = before[old] as number;
+      if (a === 0) continue;
+      const place = placeOf(before[old + 3] as number, a, before[old + 1] as number) & mask;
+      for (let i = 0; i < 4; i++) results[place + i] = before[old + i] as number;
+    }
+    this.#results = results;
   }
 
   /** Nodes made so far, the two ends among them. */
@@ -95,7 +100,7 @@ export class Diagrams {
 
   /** Of the arrays of nodes and of kept results. */
   get bytes(): number {
-    const arrays = [this.#level, this.#kids, this.#slots, this.#keyA, this.#keyB, this.#found];
+    const arrays = [this.#level, this.#kids, this.#slots, this.#results];
     return arrays.reduce((sum, array) => sum + array.byteLength, 0);
   }
 
@@ -153,7 +158,7 @@ export class Diagrams {
     if (node === this.#level.length) {
       this.#level = grown(this.#level);
       this.#kids = grown(this.#kids);
-      if (this.#kept < MOST_KEPT) this.#keep(this.#kept * 2);
+      while (this.#results.length < 4 * Math.min(MOST_KEPT, KEPT_PER_NODE * this.#level.length)) this.#keepMore();
     }
     this.#level[node] = level;
     const base = node * this.#stride;
@@ -230,25 +235,31 @@ export class Diagrams {
       if (b === NONE) return a;
     }
     if (op !== MINUS && a > b) [a, b] = [b, a];
-    const hash = Math.imul(Math.imul(a, 0x9e3779b1) ^ b, 0x85ebca6b);
-    const known = op * this.#kept + ((hash ^ (hash >>> 16)) & (this.#kept - 1));
-    if (this.#keyA[known] === a && this.#keyB[known] === b) return this.#found[known] as number;
+    const place = placeOf(op, a, b);
+    const results = this.#results;
+    const at = place & (results.length - 4);
+    if (results[at] === a && results[at + 1] === b && results[at + 3] === op) return results[at + 2] as number;
+    const kids = this.#kids;
+    const stride = this.#stride;
     const levelA = this.#level[a] as number;
     const levelB = this.#level[b] as number;
-    const level = Math.min(levelA, levelB);
+    const level = levelA < levelB ? levelA : levelB;
     const arity = this.#arity[level] as number;
     // Every level has its own stretch of scratch, since the recursion only goes down.
-    const base = level * this.#stride;
+    const scratch = this.#scratch;
+    const base = level * stride;
     for (let p = 0; p < arity; p++) {
-      const kidA = levelA === level ? (this.#kids[a * this.#stride + p] as number) : a;
-      const kidB = levelB === level ? (this.#kids[b * this.#stride + p] as number) : b;
-      this.#scratch[base + p] = this.#apply(op, kidA, kidB);
+      const kidA = levelA === level ? (kids[a * stride + p] as number) : a;
+      const kidB = levelB === level ? (kids[b * stride + p] as number) : b;
+      scratch[base + p] = this.#apply(op, kidA, kidB);
     }
-    const found = this.make(level, this.#scratch, base);
-    const slot = op * this.#kept + ((hash ^ (hash >>> 16)) & (this.#kept - 1));
-    this.#keyA[slot] = a;
-    this.#keyB[slot] = b;
-    this.#found[slot] = found;
+    const found = this.make(level, scratch, base);
+    const now = this.#results;
+    const slot = place & (now.length - 4);
+    now[slot] = a;
+    now[slot + 1] = b;
+    now[slot + 2] = found;
+    now[slot + 3] = op;
     return found;
   }
 
@@ -311,6 +322,12 @@ export class Diagrams {
     }
     return seen.size;
   }
+}
+
+/** Where a result is kept, but for the bits above the number of places. */
+function placeOf(op: number, a: number, b: number): number {
+  const hash = Math.imul(Math.imul(a, 0x9e3779b1) ^ Math.imul(b + op, 0x85ebca6b), 0xc2b2ae35);
+  return (hash ^ (hash >>> 15)) << 2;
 }
 
 function grown(array: Int32Array): Int32Array {

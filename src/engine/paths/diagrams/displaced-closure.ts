@@ -2,8 +2,11 @@ import type { Network } from '../../../network/network.ts';
 import { loadAgainst } from '../actuator-bits.ts';
 import type { PathConditions } from '../reach.ts';
 import type { ActuatorMotion } from './actuator-motion.ts';
+import { spreadApart } from './apart.ts';
+import type { Ends } from './apart.ts';
 import type { Diagram } from './diagrams.ts';
 import { NONE } from './diagrams.ts';
+import type { Ways } from './eliminate.ts';
 import type { OpenPathSets } from './open-paths.ts';
 import { at, eliminate, none, operations } from './reach-sets.ts';
 import type { ReachSets } from './reach-sets.ts';
@@ -56,7 +59,8 @@ export function closeDisplaced(
       goIn: conditions.places[i] === 'in' ? NONE : minus(exitA, or(fedB, moving)),
     };
   });
-  const search = eliminate(net, paths, {
+  const search: Ways = {
+    open: paths.edges.open,
     edges: paths.edges.forward,
     gate: r.notFree,
     links: r.links.push,
@@ -65,16 +69,22 @@ export function closeDisplaced(
       if (way === undefined) return NONE;
       return net.actuators[actuator]?.b === to ? way.goOut : way.goIn;
     },
-  });
-  const pushed = search.spread([...seeds]);
+  };
+  const pushed = eliminate(net, paths, search).spread([...seeds]);
+  const oil = (i: number, a: Diagram, b: Diagram): Ends => {
+    const { takesA, takesB } = ways[i] as (typeof ways)[number];
+    return [minus(a, takesA), minus(b, takesB)];
+  };
+  const shared = net.actuators.map(({ a, b }, i) => oil(i, at(pushed, a), at(pushed, b)));
+  // What an actuator pushes out itself is no oil of others.
+  const misled = shared.flatMap(([a, b], i) => (and(a, b) === NONE ? [] : [i]));
+  const apart = spreadApart(paths.sets, net, search, seeds, misled);
   let open = doubtful;
   const driven = net.actuators.map((actuator, i) => {
     const { a, b } = actuator;
-    const { takesA, takesB, goOut, goIn } = ways[i] as (typeof ways)[number];
-    const oil = (field: LineSets): [Diagram, Diagram] => [minus(at(field, a), takesA), minus(at(field, b), takesB)];
-    let [oilA, oilB] = oil(pushed);
-    // What it pushes out itself is no oil of others.
-    if (and(oilA, oilB) !== NONE) [oilA, oilB] = oil(search.without(net, i).spread([...seeds], [a, b]));
+    const { goOut, goIn } = ways[i] as (typeof ways)[number];
+    const alone = apart.get(i);
+    const [oilA, oilB] = alone ? oil(i, ...alone) : (shared[i] as Ends);
     const out = and(oilA, goOut);
     const inward = and(oilB, goIn);
     const against = loadAgainst(actuator);

@@ -7,8 +7,6 @@ import type { Link } from '../field.ts';
  */
 export interface EliminationPlan {
   readonly ways: number;
-  /** Pairs of ways that are joined, over all steps. */
-  readonly operations: number;
   /** Edge e of the adjacency is way `edgeWay[e]`; -1: it leads nowhere. */
   readonly edgeWay: Int32Array;
   /** Ways through actuators. */
@@ -107,8 +105,7 @@ function makePlan(
       joined,
     });
   }
-  const operations = steps.reduce((n, { joined }) => n + joined.length, 0);
-  return { ways, operations, edgeWay, links: linked, steps };
+  return { ways, edgeWay, links: linked, steps };
 }
 
 function remove(list: number[], line: number): void {

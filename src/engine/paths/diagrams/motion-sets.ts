@@ -4,12 +4,12 @@ import { REST_REASONS } from '../motion-bits.ts';
 import type { PathConditions } from '../reach.ts';
 import { rest } from './actuator-motion.ts';
 import type { ActuatorMotion, ChamberSets } from './actuator-motion.ts';
+import { chamberSets } from './chamber-sets.ts';
 import type { Diagram, Diagrams } from './diagrams.ts';
 import { ALL, NONE } from './diagrams.ts';
 import { driveByDisplaced } from './displaced-sets.ts';
-import type { Elimination } from './eliminate.ts';
 import type { OpenPathSets } from './open-paths.ts';
-import { at, eliminate, none, operations, reachSets, takeOil } from './reach-sets.ts';
+import { at, eliminate, none, operations, reachSets } from './reach-sets.ts';
 import type { Operations, ReachSets } from './reach-sets.ts';
 import type { SetAlgebra } from './set-algebra.ts';
 import type { LineSets } from './set-edges.ts';
@@ -35,7 +35,10 @@ export function motionSets(
 ): MotionSets {
   const reach = reachSets(net, conditions, paths);
   const ops = operations(paths);
-  const actuators = net.actuators.map((actuator, i) => start(net, conditions, paths, reach, actuator, i));
+  const chambers = chamberSets(net, conditions, paths, reach);
+  const actuators = net.actuators.map((actuator, i) =>
+    start(conditions, paths, reach, chambers[i] as ChamberSets, actuator, i),
+  );
   markRivals(net, reach, ops, actuators);
   const pushed = driveByDisplaced(net, conditions, paths, reach, actuators);
   return {
@@ -47,64 +50,11 @@ export function motionSets(
   };
 }
 
-function chambers(
-  net: Network,
-  conditions: PathConditions,
-  paths: OpenPathSets<SetAlgebra>,
-  r: ReachSets,
-  { a, b }: NetActuator,
-  i: number,
-): ChamberSets {
-  const { and, or, minus } = operations(paths);
-  const { toTank } = paths;
-  const single = b < 0;
-  const [fedA, fedB] = [at(r.anyPressed, a), at(r.anyPressed, b)];
-  // The shared searches pass through this actuator too; where that can mislead, search again without it.
-  const apart = (shared: LineSets, plain: LineSets, matters: Diagram, again: () => LineSets): [Diagram, Diagram] => {
-    const [x, y] = [at(shared, a), at(shared, b)];
-    const borrowed = single ? minus(x, at(plain, a)) : minus(and(x, y), and(at(plain, a), at(plain, b)));
-    const misled = and(borrowed, matters);
-    if (misled === NONE) return [x, single ? ALL : y];
-    const found = again();
-    const mended = (set: Diagram, line: number): Diagram => or(minus(set, misled), and(at(found, line), misled));
-    return [mended(x, a), single ? ALL : mended(y, b)];
-  };
-  const ends = single ? [a] : [a, b];
-  const out = (search: Elimination): LineSets =>
-    search.without(net, i).spread(takeOil(net, conditions, toTank, i), ends);
-  const [exitA, exitB] = apart(r.exits, toTank, ALL, () => out(r.backToExits));
-  const stuck = or(single ? NONE : minus(fedA, exitB), minus(fedB, exitA));
-  const [softExitA, softExitB] = apart(r.softExits, toTank, stuck, () => out(r.backToSoftExits));
-  const free = minus(single ? ALL : or(exitA, exitB), or(fedA, fedB));
-  const bled = and(stuck, or(and(fedA, at(toTank, a)), and(fedB, at(toTank, b))));
-  const [fillA, fillB] = apart(r.fills, r.plainFills, or(free, bled), () =>
-    r.aheadToFills.without(net, i).spread([...r.plainFills], ends),
-  );
-  const across = (from: number, to: number): Diagram => {
-    if (from < 0 || to < 0) return NONE;
-    if (from === to) return ALL;
-    const field = none(net);
-    field[from] = and(at(r.notToTank, from), at(r.notToTank, to));
-    if (field[from] === NONE) return NONE;
-    return at(r.aheadShut.spread(field, [to]), to);
-  };
-  return {
-    exitA,
-    exitB,
-    softExitA,
-    softExitB,
-    fillA,
-    fillB,
-    fromBtoA: across(b, a),
-    fromAtoB: across(a, b),
-  };
-}
-
 function start(
-  net: Network,
   conditions: PathConditions,
   paths: OpenPathSets<SetAlgebra>,
   r: ReachSets,
+  ch: ChamberSets,
   actuator: NetActuator,
   i: number,
 ): ActuatorMotion {
@@ -112,7 +62,6 @@ function start(
   const { and, or, minus } = ops;
   const { a, b } = actuator;
   const { toTank } = paths;
-  const ch = chambers(net, conditions, paths, r, actuator, i);
   const { exitA, exitB, softExitA, softExitB, fillA, fillB, fromBtoA, fromAtoB } = ch;
   const [fedA, fedB] = [at(r.anyPressed, a), at(r.anyPressed, b)];
   const when = (yes: boolean): Diagram => (yes ? ALL : NONE);

@@ -33,10 +33,6 @@ export interface ReachSets {
   /** Searches along open paths into lines not freely open to tank / not open to tank at all. */
   readonly aheadUnderPressure: Elimination;
   readonly aheadShut: Elimination;
-  /** The searches of `exits`, `softExits` and `fills`, to do them again without one actuator. */
-  readonly backToExits: Elimination;
-  readonly backToSoftExits: Elimination;
-  readonly aheadToFills: Elimination;
 }
 
 export const none = (net: Network): LineSets => net.lines.map(() => NONE);
@@ -78,18 +74,15 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
   }
   spread(toRelief, { edges: edges.backward });
 
-  const takesOil = (seed: LineSets): LineSets => takeOil(net, conditions, seed, -1);
+  const takesOil = (seed: LineSets): LineSets => takeOil(net, conditions, seed);
   const back = { edges: edges.backward, links: links.pull, fromTank: true };
-  const backToExits = eliminate(net, paths, { ...back, gate: notPressed });
-  const backToSoftExits = eliminate(net, paths, back);
-  const exits = backToExits.spread(takesOil(toTank));
+  const exits = spread(takesOil(toTank), { ...back, gate: notPressed });
   const freeExits = spread(takesOil(freeToTank), { ...back, edges: edges.freeBackward, gate: notPressed });
   // Oil may also be forced into a line under pressure, by the ratio of areas.
-  const softExits = backToSoftExits.spread(takesOil(toTank)).map((set, line) => or(set, at(anyPressed, line)));
+  const softExits = spread(takesOil(toTank), back).map((set, line) => or(set, at(anyPressed, line)));
   const plainFills = fromSource.map((set, line) => (net.lines[line]?.tank ? ALL : set));
   spread(plainFills, { edges: edges.forward, fromTank: true });
-  const aheadToFills = eliminate(net, paths, { edges: edges.forward, links: links.push, fromTank: true });
-  const fills = aheadToFills.spread([...plainFills]);
+  const fills = spread([...plainFills], { edges: edges.forward, links: links.push, fromTank: true });
   const valves = waysOverValves();
   const leaves = valves ? underPressure.map((set, line) => or(set, at(valves.pressed, line))) : underPressure;
   return {
@@ -111,9 +104,6 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
     plainFills,
     aheadUnderPressure,
     aheadShut,
-    backToExits,
-    backToSoftExits,
-    aheadToFills,
   };
 
   function waysOverValves(): ReachSets['valves'] {
@@ -137,11 +127,18 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
   }
 }
 
+/** The line where a single-acting cylinder that can still go out swallows oil by itself; -1: none. As in `takeIn`. */
+export function swallowsAt(net: Network, conditions: PathConditions, actuator: number): number {
+  const { a, b } = net.actuators[actuator] as Network['actuators'][number];
+  return b < 0 && conditions.places[actuator] !== 'out' ? a : -1;
+}
+
 /** The seeds, and the lines that swallow oil by themselves; as `takeIn`. */
-export function takeOil(net: Network, conditions: PathConditions, seeds: LineSets, without: number): LineSets {
+function takeOil(net: Network, conditions: PathConditions, seeds: LineSets): LineSets {
   const field = [...seeds];
-  net.actuators.forEach(({ a, b }, i) => {
-    if (b < 0 && i !== without && conditions.places[i] !== 'out') field[a] = ALL;
+  net.actuators.forEach((_, i) => {
+    const line = swallowsAt(net, conditions, i);
+    if (line >= 0) field[line] = ALL;
   });
   for (const store of net.accumulators) if (!store.charged) field[store.line] = ALL;
   return field;

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
+import { spreadApart } from '../../../../src/engine/paths/diagrams/apart.ts';
 import { Diagrams, ALL, NONE } from '../../../../src/engine/paths/diagrams/diagrams.ts';
 import type { Diagram } from '../../../../src/engine/paths/diagrams/diagrams.ts';
 import { Elimination } from '../../../../src/engine/paths/diagrams/eliminate.ts';
@@ -21,6 +22,16 @@ const drawn = fc.record({
   again: fc.array(fc.tuple(line, fc.nat({ max: 6 })), { maxLength: 2 }),
 });
 
+const masksOf = (sets: Diagrams): Diagram[] => [
+  ALL,
+  NONE,
+  sets.literal(0, 1),
+  sets.literal(0, 6),
+  sets.literal(1, 1),
+  sets.literal(2, 5),
+  sets.literal(2, 2),
+];
+
 type Drawn = typeof drawn extends fc.Arbitrary<infer T> ? T : never;
 
 function waysOf(sets: Diagrams, masks: readonly Diagram[], { edges, links, fromTank, gated }: Drawn): Ways {
@@ -40,7 +51,7 @@ function waysOf(sets: Diagrams, masks: readonly Diagram[], { edges, links, fromT
 }
 
 /** Step by step until nothing changes. */
-function grow(sets: Diagrams, net: Network, ways: Ways, seeds: readonly Diagram[]): Diagram[] {
+function grow(sets: Diagrams, net: Network, ways: Ways, seeds: readonly Diagram[], without = -1): Diagram[] {
   const field = [...seeds];
   for (let changed = true; changed;) {
     changed = false;
@@ -54,26 +65,19 @@ function grow(sets: Diagrams, net: Network, ways: Ways, seeds: readonly Diagram[
     for (let from = 0; from < LINES; from++) {
       for (let e = ways.edges.start[from] as number; e < (ways.edges.start[from + 1] as number); e++)
         reach(from, ways.edges.to[e] as number, ways.open[ways.edges.mask[e] as number] as Diagram);
-      for (const { to, actuator } of ways.links?.[from] ?? []) if (actuator !== ways.without) reach(from, to, ALL);
+      for (const { to, actuator } of ways.links?.[from] ?? [])
+        if (actuator !== without) reach(from, to, ways.passes?.(actuator, to) ?? ALL);
     }
   }
   return field;
 }
 
-test('elimination finds what growing step by step finds, and the same without an actuator', () => {
+test('elimination finds what growing step by step finds', () => {
   let somewhere = 0;
   fc.assert(
     fc.property(drawn, (circuit) => {
       const sets = new Diagrams([3, 2, 3]);
-      const masks = [
-        ALL,
-        NONE,
-        sets.literal(0, 1),
-        sets.literal(0, 6),
-        sets.literal(1, 1),
-        sets.literal(2, 5),
-        sets.literal(2, 2),
-      ];
+      const masks = masksOf(sets);
       const net = {
         lines: Array.from({ length: LINES }, (_, at) => ({ tank: circuit.tanks.includes(at) })),
       } as unknown as Network;
@@ -89,17 +93,63 @@ test('elimination finds what growing step by step finds, and the same without an
         expect(found).toEqual(grow(sets, net, ways, seeds));
         if (found.some((set, at) => set !== seeds[at])) somewhere += 1;
       }
-      for (const without of [0, 1, 2]) {
-        for (const seeds of [seedsOf(circuit.seeds), seedsOf(circuit.again)]) {
-          const expected = grow(sets, net, { ...ways, without }, seeds);
-          expect(search.without(net, without).spread([...seeds])).toEqual(expected);
-          for (const wanted of [0, 4]) {
-            expect(search.without(net, without).spread([...seeds], [wanted])[wanted]).toBe(expected[wanted]);
-          }
-        }
+      for (const wanted of [0, 4]) {
+        const seeds = seedsOf(circuit.seeds);
+        expect(search.spread([...seeds], [wanted])[wanted]).toBe(grow(sets, net, ways, seeds)[wanted]);
       }
     }),
     { numRuns: 400, seed: 11 },
   );
   expect(somewhere).toBeGreaterThan(200);
+});
+
+const actuator = fc.record({ a: line, b: fc.option(line, { nil: -1 }), swallows: fc.boolean() });
+
+test('searches without one actuator each find, all together, what growing step by step without it finds', () => {
+  let apart = 0;
+  fc.assert(
+    fc.property(
+      drawn,
+      fc.array(actuator, { minLength: 1, maxLength: 6 }),
+      fc.array(fc.boolean(), { minLength: 6, maxLength: 6 }),
+      (circuit, actuators, asks) => {
+        const sets = new Diagrams([3, 2, 3]);
+        const masks = masksOf(sets);
+        const net = {
+          lines: Array.from({ length: LINES }, (_, at) => ({ tank: circuit.tanks.includes(at) })),
+          actuators,
+        } as unknown as Network;
+        const links: Link[][] = Array.from({ length: LINES }, (_, from) =>
+          actuators.flatMap(({ a, b }, index) => {
+            if (b < 0) return [];
+            return [
+              ...(a === from ? [{ from, to: b, actuator: index }] : []),
+              ...(b === from ? [{ from, to: a, actuator: index }] : []),
+            ];
+          }),
+        );
+        const passes = (index: number, to: number): Diagram => masks[(index + to) % 7] as Diagram;
+        const ways: Ways = { ...waysOf(sets, masks, circuit), links, ...(circuit.fromTank && { passes }) };
+        const seeds: Diagram[] = Array.from({ length: LINES }, () => NONE);
+        for (const [at, mask] of circuit.seeds) seeds[at] = masks[mask] as Diagram;
+        const swallows = (index: number): number => (actuators[index]?.swallows ? (actuators[index]?.a ?? -1) : -1);
+        const asked = actuators.map((_, i) => i).filter((i) => asks[i]);
+        const found = spreadApart(sets, net, ways, seeds, asked, swallows);
+        expect([...found.keys()].sort()).toEqual(asked);
+        const withAll = grow(sets, net, ways, seeds);
+        for (const index of asked) {
+          const { a, b } = actuators[index] as (typeof actuators)[number];
+          const own = [...seeds];
+          actuators.forEach((_, i) => {
+            if (i !== index && swallows(i) >= 0) own[swallows(i)] = ALL;
+          });
+          const expected = grow(sets, net, ways, own, index);
+          expect(found.get(index)).toEqual([expected[a], b < 0 ? NONE : expected[b]]);
+          if (expected[a] !== withAll[a]) apart += 1;
+        }
+      },
+    ),
+    { numRuns: 600, seed: 12 },
+  );
+  expect(apart).toBeGreaterThan(200);
 });
