@@ -5,6 +5,7 @@ import { labelOf } from '../circuit/model.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
 import type { Routes } from './geometry.ts';
 import { TEXT_SIZES } from './palette.ts';
+import { REFERENCE } from './reference-symbol.ts';
 import { partReach, placedPorts } from './shapes.ts';
 import { MODULE_PX } from './strokes.ts';
 
@@ -56,7 +57,7 @@ const ACTUATORS = new Set(['cylinder', 'double-rod-cylinder', 'single-acting-cyl
 /** Verdicts have a glyph; positions have none. */
 const hasGlyph = ({ kind }: Part): boolean => ACTUATORS.has(kind) || kind.endsWith('-pump');
 /** Drawn so often, or so small, that an automatic name is noise. */
-const QUIET = new Set(['tank', 'junction', 'plug']);
+const QUIET = new Set(['tank', 'junction', 'plug', REFERENCE]);
 const GAP = 0.75;
 /** Modules: the glyph and the gap after it. */
 export const GLYPH_ROOM = 2.2;

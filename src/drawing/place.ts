@@ -1,6 +1,7 @@
 import type { Box, Point } from '../base/points.ts';
 import { union } from '../base/points.ts';
 import type { Circuit, Part } from '../circuit/model.ts';
+import { hasSheets, sheetOf, sheetsOf } from '../circuit/sheets.ts';
 import { inflate, overlaps } from './geometry.ts';
 import type { Meetings } from './neighbours.ts';
 import { meetings, reach } from './neighbours.ts';
@@ -11,9 +12,22 @@ const TANK = 'tank';
 
 /**
  * Gives every part without coordinates a readable place on the module grid, at least 4 M from all
- * others. Parts that have a place keep it, even if those overlap each other.
+ * others of its sheet. Parts that have a place keep it, even if those overlap each other.
  */
 export function placeMissing(circuit: Circuit): Circuit {
+  if (circuit.parts.every((p) => p.at)) return circuit;
+  if (!hasSheets(circuit)) return placeOnSheet(circuit);
+  const placed = new Map<string, Part>();
+  for (const { id } of sheetsOf(circuit)) {
+    const parts = circuit.parts.filter((part) => sheetOf(circuit, part) === id);
+    const known = new Set(parts.map((part) => part.id));
+    const connections = circuit.connections.filter(({ from, to }) => known.has(from.part) && known.has(to.part));
+    for (const part of placeOnSheet({ ...circuit, parts, connections }).parts) placed.set(part.id, part);
+  }
+  return { ...circuit, parts: circuit.parts.map((p) => placed.get(p.id) ?? p) };
+}
+
+function placeOnSheet(circuit: Circuit): Circuit {
   if (circuit.parts.every((p) => p.at)) return circuit;
   const all = meetings(circuit);
   const plan = planSheet(circuit);

@@ -3,6 +3,8 @@ import { place, placeBox, placeSide } from '../base/points.ts';
 import type { Part, PortRef } from '../circuit/model.ts';
 import { kindOf } from '../parts/catalogue.ts';
 import type { PortSpec } from '../parts/contract.ts';
+import type { DrawnKind } from './reference-symbol.ts';
+import { isReference, referenceKind } from './reference-symbol.ts';
 
 /** Parts of a kind that the catalogue does not know are still shown, as an empty box. */
 const UNKNOWN_BOUNDS: Box = { x: -2, y: -2, width: 4, height: 4 };
@@ -21,7 +23,10 @@ export const placementOf = (part: Part): Placement => ({
   flip: part.flip ?? false,
 });
 
-export const ownBox = (part: Part): Box => kindOf(part.kind)?.bounds(part) ?? UNKNOWN_BOUNDS;
+/** References to other sheets are drawn and reached like parts. */
+export const drawnKind = (part: Part): DrawnKind | undefined => (isReference(part) ? referenceKind : kindOf(part.kind));
+
+export const ownBox = (part: Part): Box => drawnKind(part)?.bounds(part) ?? UNKNOWN_BOUNDS;
 
 /** Parts are never changed in place, so what follows from one is computed once. */
 function once<T>(of: (part: Part) => T): (part: Part) => T {
@@ -33,14 +38,14 @@ function once<T>(of: (part: Part) => T): (part: Part) => T {
   };
 }
 
-export const portSpecs: (part: Part) => readonly PortSpec[] = once((part) => kindOf(part.kind)?.ports(part) ?? []);
+export const portSpecs: (part: Part) => readonly PortSpec[] = once((part) => drawnKind(part)?.ports(part) ?? []);
 
 /** The part's outline on the sheet. */
 export const partBox: (part: Part) => Box = once((part) => placeBox(ownBox(part), placementOf(part)));
 
 /** The outline over all positions: what lines, names and other parts keep clear of. */
 export const partReach: (part: Part) => Box = once((part) => {
-  const own = kindOf(part.kind)?.reach?.(part);
+  const own = drawnKind(part)?.reach?.(part);
   return own ? placeBox(own, placementOf(part)) : partBox(part);
 });
 
