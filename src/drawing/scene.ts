@@ -4,7 +4,6 @@ import type { Primitive } from '../base/primitives.ts';
 import { isStripValve } from '../parts/valve-kinds.ts';
 import type { Circuit, Part, PortRef } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
-import { kindOf } from '../parts/catalogue.ts';
 import type { Look } from '../parts/contract.ts';
 import type { PortPen } from './active-box.ts';
 import { showActiveBox } from './active-box.ts';
@@ -19,7 +18,7 @@ import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
 import type { Piece } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
-import { ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
+import { drawnKind, ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
 import { stageOf } from './stage.ts';
 import type { Before, Stage } from './stage.ts';
 import type { LineLook, Stroke } from './strokes.ts';
@@ -137,7 +136,7 @@ function placedSymbol(part: Part, look: Look, pens: readonly PortPen[] | undefin
 }
 
 function drawn(part: Part, look: Look): readonly Primitive[] {
-  const kind = kindOf(part.kind);
+  const kind = drawnKind(part);
   if (kind) return kind.draw(part, look);
   const box = ownBox(part);
   return [
