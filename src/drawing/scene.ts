@@ -20,7 +20,7 @@ import type { Piece } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
 import { drawnKind, ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
 import { stageOf } from './stage.ts';
-import type { Before, Stage } from './stage.ts';
+import type { Stage } from './stage.ts';
 import type { LineLook, Stroke } from './strokes.ts';
 import { placePrimitives } from './turned.ts';
 
@@ -64,8 +64,6 @@ export interface SceneState {
   readonly lines?: ReadonlyMap<string, LineLook>;
   /** Part id → active position and stroke, and words beside its name (position, verdict). */
   readonly parts?: ReadonlyMap<string, Look & PartWords>;
-  /** While something is dragged: the circuit and routes as they stood before, of which all that did not move is kept. */
-  readonly from?: Before | undefined;
   /** Flat lines hop over those they cross; else they cross plainly, as ISO 1219-1 has it. */
   readonly hops?: boolean;
 }
@@ -73,8 +71,12 @@ export interface SceneState {
 const IDLE: LineLook = { class: 'idle' };
 
 export function buildScene(circuit: Circuit, routes: Routes, state: SceneState = {}): Scene {
+  return sceneOn(circuit, routes, state, stageOf(circuit, routes, state.parts !== undefined));
+}
+
+/** With a stage made by hand, which may be one for a part of the circuit. */
+export function sceneOn(circuit: Circuit, routes: Routes, state: SceneState, stage: Stage): Scene {
   const looks = (id: string): LineLook => state.lines?.get(id) ?? IDLE;
-  const stage = stageOf(circuit, routes, state.parts !== undefined, state.from);
   const parts = circuit.parts.map((part) =>
     scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)),
   );

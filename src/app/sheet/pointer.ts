@@ -19,6 +19,7 @@ import { boxOf, hitAt, inBand } from './hit.ts';
 import type { Hit } from './hit.ts';
 import { insertionOfDragged } from './inserting.ts';
 import { dropStretch, previewStretch, takeStretch } from './line-actions.ts';
+import { plane } from './plane.svelte.ts';
 import { openMenuAt } from './sheet-menu.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { panBy, snap, zoomAt } from './viewport.ts';
@@ -298,6 +299,7 @@ export class SheetPointer {
     const other = [...this.#fingers].find(([id]) => id !== pointer)?.[1];
     if (!before || !other) return;
     this.#fingers.set(pointer, client);
+    plane.flow();
     const spread = (a: Point): number => Math.max(1, Math.hypot(a.x - other.x, a.y - other.y));
     const middle = this.#offset({ x: (client.x + other.x) / 2, y: (client.y + other.y) / 2 });
     const panned = panBy(desk.viewport, (client.x - before.x) / 2, (client.y - before.y) / 2);

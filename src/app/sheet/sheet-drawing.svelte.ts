@@ -4,6 +4,9 @@ import type { Circuit, Connection, Part } from '../../circuit/model.ts';
 import type { Places } from '../../circuit/build.ts';
 import type { Routes } from '../../drawing/geometry.ts';
 import { placeMissing } from '../../drawing/place.ts';
+import { laidScene, movesOf, sketchRoutes } from '../../drawing/moving.ts';
+import type { Laid, Moves } from '../../drawing/moving.ts';
+import { routeAll } from '../../drawing/routing.ts';
 import { buildScene } from '../../drawing/scene.ts';
 import type { Scene, SceneLine, ScenePart, SceneState } from '../../drawing/scene.ts';
 import { labelBox } from '../../drawing/labels.ts';
@@ -14,12 +17,17 @@ import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { assumedIn } from '../state/assumed.ts';
 import type { Assumed } from '../state/assumed.ts';
+import { headings } from '../state/headings.ts';
 import { figures } from '../state/figures.svelte.ts';
+import { within } from './culling.ts';
 import { flowWays } from './flow-ways.ts';
+import { heldItems, heldOf } from './held.ts';
+import type { Held } from './held.ts';
 import type { HitMap } from './hit.ts';
 import { lineLook } from './looks.ts';
 import { partStates } from './part-states.ts';
 import type { PartState } from './part-states.ts';
+import { plane } from './plane.svelte.ts';
 import { pressureSpots } from './pressure-spots.ts';
 import type { PressureSpot } from './pressure-spots.ts';
 import { trueChevrons } from './chevrons.ts';
@@ -38,10 +46,23 @@ class SheetDrawing {
   /** With a place for every part that the file gives none. */
   circuit: Circuit = $derived(this.preview ? placeMissing(this.preview) : this.#rest);
   /** For edits that move parts which have no place of their own yet. */
-  places: Places = $derived(new Map(this.circuit.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
+  places: Places = $derived(new Map(this.#rest.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
 
   #layer = new SheetRoutes();
-  routes: Routes = $derived(this.#layer.of(this.circuit, this.preview !== undefined));
+  #settled: Routes = $derived(this.#layer.of(this.#rest));
+
+  // While something is dragged, all that stands still is left alone: nothing that it is drawn from may be derived from
+  // where the hand is, only from what it holds.
+  #moves: Moves | undefined = $derived(this.preview && movesOf(this.#rest, this.circuit));
+  routes: Routes = $derived.by(() => {
+    if (!this.preview) return this.#settled;
+    return this.#moves ? sketchRoutes(this.#rest, this.#settled, this.circuit, this.#moves) : routeAll(this.circuit);
+  });
+  #heldBefore: Held | undefined;
+  /** What the hand holds: the same object for as long as that is the same. */
+  #held: Held | undefined = $derived.by(() => (this.#heldBefore = heldOf(this.#moves, this.#heldBefore)));
+  /** More changed than something that moved: all of it is drawn anew. */
+  #upset: boolean = $derived(this.preview !== undefined && this.#moves === undefined);
 
   /** Of the circuit that the figures belong to. */
   assumed: Assumed = $derived(assumedIn(session.tabled));
@@ -65,39 +86,66 @@ class SheetDrawing {
 
   #steadyLines = steadyList<SceneLine>((line) => line.connection);
   #steadyParts = steadyList<ScenePart>((part) => part.id);
-  #steadyLabels = steadyList<SceneLabel>((label, i) => `${label.owner} ${i}`);
+  #steadyLabels = steadyList<SceneLabel>((label) => labelKey(label));
 
+  #state: SceneState = $derived({
+    lines: new Map(
+      editor.circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
+    ),
+    parts: this.states,
+    hops: sheetView.hops,
+  });
+
+  /** The drawing at rest: while something is dragged, as it was before. */
   scene: Scene = $derived.by(() => {
-    const { circuit, routes, states } = this;
-    const looks = new Map(
-      circuit.connections.map(({ id }) => [id, lineLook(session.connectionLook(id), this.#ways.get(id))]),
-    );
-    const state: SceneState = {
-      lines: looks,
-      parts: states,
-      hops: sheetView.hops,
-      from: this.preview && { circuit: this.#rest, routes: this.#layer.settled },
-    };
-    const scene = buildScene(circuit, routes, state);
+    const [circuit, routes] = this.#upset ? [this.circuit, this.routes] : [this.#rest, this.#settled];
+    const scene = buildScene(circuit, routes, this.#state);
     return {
       ...scene,
       lines: this.#steadyLines(trueChevrons(scene.lines, routes, this.#flows)),
       parts: this.#steadyParts(scene.parts),
-      labels: this.#steadyLabels(scene.labels),
+      labels: this.#steadyLabels(keyed(scene.labels)),
     };
+  });
+
+  /** What of the drawing stands still, as far as it is near what is in view. */
+  still: Laid = $derived.by(() => {
+    const { scene } = this;
+    const held = this.#held;
+    return within(plane.region, held ? { ...scene, ...heldItems(scene, held, false) } : scene);
+  });
+
+  /** What goes along with the hand as it is; `shift` says how far. */
+  carried: Laid | undefined = $derived.by(() => {
+    const held = this.#held;
+    return held && heldItems(this.scene, held, true);
+  });
+  shift: Point = $derived(this.#moves?.by ?? { x: 0, y: 0 });
+  /** Parts that the shift is true of. */
+  shifted: ReadonlySet<string> = $derived(this.#held?.parts ?? NONE);
+
+  /** What the hand draws anew as it goes. */
+  laid: Laid | undefined = $derived.by(() => {
+    const moves = this.#moves;
+    if (!moves) return undefined;
+    const laid = laidScene(this.#rest, this.circuit, this.routes, moves, this.#state);
+    return { ...laid, labels: keyed(laid.labels), lines: trueChevrons(laid.lines, this.routes, this.#flows) };
   });
 
   /** As they stand at rest: what they are called and what they are, not where they are dragged. */
   byId: ReadonlyMap<string, Part> = $derived(new Map(this.#rest.parts.map((part) => [part.id, part])));
-  #connections = $derived(this.circuit.connections);
-  connectionById: ReadonlyMap<string, Connection> = $derived(new Map(this.#connections.map((each) => [each.id, each])));
+  connectionById: ReadonlyMap<string, Connection> = $derived(
+    new Map(this.#rest.connections.map((each) => [each.id, each])),
+  );
+  headings: ReadonlyMap<string, number> = $derived(headings(this.#rest));
 
   /** Where the pressure of each line of the table is written; the same whatever the row. */
   #rooms = $derived(this.scene.labelRooms);
   pressureSpots: ReadonlyMap<number, PressureSpot> = $derived(
-    this.preview ? new Map() : pressureSpots(this.circuit, this.routes, this.#rooms, session.table?.data.lines ?? []),
+    this.#held ? new Map() : pressureSpots(this.#rest, this.#settled, this.#rooms, session.table?.data.lines ?? []),
   );
 
+  /** At rest, too. */
   map: HitMap = $derived.by(() => ({
     parts: this.scene.parts.map((part) => ({ id: part.id, box: outline(part, this.byId.get(part.id)) })),
     ports: this.scene.parts.flatMap((part) =>
@@ -128,5 +176,23 @@ const stripShift = (primitives: readonly Primitive[]): Point | undefined => {
   const strip = primitives.find((p) => p.type === 'group' && p.role === 'strip');
   return strip?.type === 'group' ? strip.shift : undefined;
 };
+
+const NONE: ReadonlySet<string> = new Set();
+
+const keys = new WeakMap<SceneLabel, string>();
+/** What a label is known by, whatever others there are. */
+export const labelKey = (label: SceneLabel): string => keys.get(label) ?? label.owner;
+
+/** Names of one owner stand in lines below one another. */
+function keyed(labels: readonly SceneLabel[]): readonly SceneLabel[] {
+  const counts = new Map<string, number>();
+  for (const label of labels) {
+    const of = `${label.role} ${label.owner}`;
+    const count = counts.get(of) ?? 0;
+    counts.set(of, count + 1);
+    keys.set(label, `${of} ${count}`);
+  }
+  return labels;
+}
 
 export const drawing = new SheetDrawing();

@@ -1,9 +1,7 @@
 import type { Point } from '../../base/points.ts';
 import type { Circuit, Part } from '../../circuit/model.ts';
 import type { Routes } from '../../drawing/geometry.ts';
-import { quickRoute } from '../../drawing/quick-route.ts';
-import { reroute, routeAll, routingSheet } from '../../drawing/routing.ts';
-import type { RoutingSheet } from '../../drawing/routing.ts';
+import { reroute, routeAll } from '../../drawing/routing.ts';
 
 /**
  * Up to here every edit lays all lines, so that the sheet shows what the file shows when it is opened or printed,
@@ -17,16 +15,9 @@ export class SheetRoutes {
   #before: Circuit | undefined;
   #routes: Routes = new Map();
 
-  /** As laid last at rest. */
-  get settled(): Routes {
-    return this.#routes;
-  }
-
-  /** `passing`: a form that is shown during a drag; see `layPassing`. */
-  of(circuit: Circuit, passing: boolean): Routes {
+  of(circuit: Circuit): Routes {
     if (circuit === this.#before) return this.#routes;
     const changed = movedParts(this.#before, circuit);
-    if (passing && this.#before) return layPassing(this.#routes, this.#before, circuit, changed);
     if (changed.length === 0 && this.#before && sameLines(this.#before, circuit)) {
       this.#before = circuit;
       return this.#routes;
@@ -73,50 +64,3 @@ function keep(before: readonly Point[] | undefined, after: readonly Point[]): re
   const same = before?.length === after.length && before.every((p, i) => p.x === after[i]?.x && p.y === after[i]?.y);
   return same ? before : after;
 }
-
-/**
- * The lines of moved parts only, without a search: a drag must follow the hand on a sheet of hundreds of parts. What
- * moves as a whole keeps its lines as they were. Lines give way to one another when the parts are put down.
- */
-function layPassing(routes: Routes, before: Circuit, circuit: Circuit, changed: readonly string[]): Routes {
-  const stood = new Map(before.parts.map((part) => [part.id, part]));
-  const moved = new Map<string, Point>();
-  for (const part of circuit.parts) {
-    const was = stood.get(part.id);
-    if (was === part) continue;
-    const turned = !was || was.turn !== part.turn || was.flip !== part.flip || !was.at || !part.at;
-    moved.set(
-      part.id,
-      turned ? NOWHERE : { x: (part.at?.x ?? 0) - (was.at?.x ?? 0), y: (part.at?.y ?? 0) - (was.at?.y ?? 0) },
-    );
-  }
-  const gone = new Set(changed);
-  const known = new Map(before.connections.map((connection) => [connection.id, connection]));
-  const out = new Map(routes);
-  let sheet: RoutingSheet | undefined;
-  for (const connection of circuit.connections) {
-    const { id, from, to } = connection;
-    const was = known.get(id);
-    const route = routes.get(id);
-    const touched = gone.has(from.part) || gone.has(to.part);
-    if (was === connection && !touched && route) continue;
-    const [a, b] = [moved.get(from.part), moved.get(to.part)];
-    const together = was && route && a && b && a !== NOWHERE && b !== NOWHERE && a.x === b.x && a.y === b.y;
-    if (together) {
-      out.set(
-        id,
-        keep(
-          route,
-          route.map((p) => ({ x: p.x + a.x, y: p.y + a.y })),
-        ),
-      );
-      continue;
-    }
-    sheet ??= routingSheet(circuit);
-    out.set(id, keep(route, quickRoute(sheet, connection)));
-  }
-  return out;
-}
-
-/** Stands for a way that cannot be told: the part turned, or was not there. */
-const NOWHERE: Point = { x: NaN, y: NaN };

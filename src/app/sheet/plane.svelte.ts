@@ -1,0 +1,70 @@
+import type { Box } from '../../base/points.ts';
+import { desk } from './desk.svelte.ts';
+import type { Size, Viewport } from './viewport.ts';
+
+/** A wheel or a pinch has come to rest when it was still for so long, ms. */
+const REST_MS = 160;
+/** Between these the drawing is scaled as a picture while the wheel turns; beyond, it is set anew. */
+const LEAST = 0.4;
+const MOST = 4;
+
+/** The scale that the drawing is set at, px per module: that of the view, or while it is zoomed, one not far from it. */
+export function settledScale(last: number, scale: number, flows: boolean): number {
+  const share = scale / last;
+  return flows && share >= LEAST && share <= MOST ? last : scale;
+}
+
+/** Share of the view's size that is drawn beyond each of its edges, so that most pans need nothing new. */
+const BEYOND = 0.5;
+
+/** The part of the sheet that is drawn, in modules: all that is in view and some way round it. */
+export function drawnRegion(last: Box | undefined, view: Viewport, size: Size): Box {
+  const seen = { x: view.x, y: view.y, width: size.width / view.scale, height: size.height / view.scale };
+  const holds =
+    last !== undefined &&
+    seen.x >= last.x &&
+    seen.y >= last.y &&
+    seen.x + seen.width <= last.x + last.width &&
+    seen.y + seen.height <= last.y + last.height;
+  // A region much too large for the view holds what nobody sees.
+  const spare = (1 + 2 * BEYOND) * 2;
+  if (holds && last.width <= seen.width * spare && last.height <= seen.height * spare) return last;
+  return {
+    x: seen.x - seen.width * BEYOND,
+    y: seen.y - seen.height * BEYOND,
+    width: seen.width * (1 + 2 * BEYOND),
+    height: seen.height * (1 + 2 * BEYOND),
+  };
+}
+
+/**
+ * What stands on the paper is laid out once for a scale; panning and zooming only move and scale it as one picture,
+ * which costs the same however much is drawn. It is set anew, sharp, as soon as the hand rests.
+ */
+class Plane {
+  #flows = $state(false);
+  #timer: ReturnType<typeof setTimeout> | undefined;
+  #scale = desk.viewport.scale;
+  #region: Box | undefined;
+
+  /** Pixels per module that the drawing is set at. */
+  scale: number = $derived.by(() => (this.#scale = settledScale(this.#scale, desk.viewport.scale, this.#flows)));
+
+  region: Box = $derived.by(() => (this.#region = drawnRegion(this.#region, desk.viewport, desk.size)));
+
+  /** The view itself, its corner on a whole pixel of the screen: letters between pixels would be blurred. */
+  view: Viewport = $derived.by(() => {
+    const { x, y, scale } = desk.viewport;
+    const dots = window.devicePixelRatio * scale;
+    return { x: Math.round(x * dots) / dots, y: Math.round(y * dots) / dots, scale };
+  });
+
+  /** A wheel turns or two fingers move: more of it is likely to come. */
+  flow(): void {
+    this.#flows = true;
+    clearTimeout(this.#timer);
+    this.#timer = setTimeout(() => (this.#flows = false), REST_MS);
+  }
+}
+
+export const plane = new Plane();
