@@ -22,6 +22,8 @@ export const FLAG = {
   foreignAcross: 16,
   foreignUpright: 32,
   foreignCorner: 64,
+  /** Through a letter beside a port. */
+  letter: 128,
 } as const;
 
 /**
@@ -42,6 +44,7 @@ export interface Field {
 export interface FieldInput {
   readonly window: Box;
   readonly boxes: readonly Box[];
+  readonly letters: readonly Box[];
   readonly segments: readonly LaidSegment[];
   readonly line: number;
   /** Ends, stubs and bends: their coordinates are always on the grid. */
@@ -50,17 +53,24 @@ export interface FieldInput {
 
 /** Space that a line keeps from a part, in modules. */
 export const MARGIN = 1;
+/** And from a letter. */
+export const LETTER_MARGIN = 0.3;
 
 export function buildField(input: FieldInput): Field {
   const { window, line } = input;
   const seen = inflate(window, MARGIN + 0.01);
   const boxes = input.boxes.filter((box) => overlaps(box, seen));
+  const letters = input.letters.map((box) => inflate(box, LETTER_MARGIN)).filter((box) => overlaps(box, seen));
   const segments = input.segments.filter((s) => segmentTouches(s.a, s.b, seen));
   const xs = new Set<number>();
   const ys = new Set<number>();
   for (const box of boxes) {
     xs.add(Math.floor(box.x - MARGIN)).add(Math.ceil(box.x + box.width + MARGIN));
     ys.add(Math.floor(box.y - MARGIN)).add(Math.ceil(box.y + box.height + MARGIN));
+  }
+  for (const box of letters) {
+    xs.add(Math.floor(box.x)).add(Math.ceil(box.x + box.width));
+    ys.add(Math.floor(box.y)).add(Math.ceil(box.y + box.height));
   }
   for (const s of segments) {
     // Room on both sides of another line; the same line is joined rather than followed.
@@ -96,6 +106,7 @@ export function buildField(input: FieldInput): Field {
     markBox(field, box, FLAG.box);
     markBox(field, inflate(box, MARGIN), FLAG.margin);
   }
+  for (const box of letters) markBox(field, box, FLAG.letter);
   for (const s of segments) markSegment(field, s, s.line === line);
   return field;
 }

@@ -15,6 +15,7 @@ const COST = {
   foreign: 40,
   margin: 4,
   box: 600,
+  letter: 18,
   own: 0.7,
   atEnd: 1.5,
   offMiddle: 0.01,
@@ -171,6 +172,7 @@ function stepCost(field: Field, node: number, next: number, way: Direction): num
   let cost = length * ((flags & FLAG.own) !== 0 ? COST.own : 1);
   if ((flags & FLAG.box) !== 0) cost += COST.box;
   else if ((flags & FLAG.margin) !== 0) cost += COST.margin * length;
+  if ((flags & FLAG.letter) !== 0) cost += COST.letter;
   if ((flags & FLAG.foreign) !== 0) cost += COST.foreign + COST.foreign * length;
   const there = field.nodes[next] as number;
   if ((there & FLAG.foreignCorner) !== 0) cost += COST.corner;

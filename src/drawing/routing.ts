@@ -3,6 +3,7 @@ import { vector } from '../base/points.ts';
 import type { Circuit, Connection, Part } from '../circuit/model.ts';
 import type { Routes } from './geometry.ts';
 import { boxOfPoints, inflate, overlaps, portOf, routeTouches, segmentTouches } from './geometry.ts';
+import { partLetters } from './letters.ts';
 import type { LineNumbers } from './lines.ts';
 import { lineNumbers } from './lines.ts';
 import type { LaidSegment } from './route-field.ts';
@@ -17,6 +18,8 @@ export interface RoutingSheet {
   readonly circuit: Circuit;
   readonly parts: ReadonlyMap<string, Part>;
   readonly boxes: ReadonlyMap<string, Box>;
+  /** Letters beside ports. */
+  readonly letters: readonly Box[];
   readonly lines: LineNumbers;
   readonly laid: LaidSegment[];
 }
@@ -40,6 +43,7 @@ export function routingSheet(circuit: Circuit, routes?: Routes): RoutingSheet {
     circuit,
     parts: new Map(circuit.parts.map((p) => [p.id, p])),
     boxes: new Map(circuit.parts.map((p) => [p.id, partReach(p)])),
+    letters: circuit.parts.flatMap(partLetters),
     lines: lineNumbers(circuit),
     laid: [],
   };
@@ -86,13 +90,15 @@ export function routeAll(circuit: Circuit): Map<string, Point[]> {
  */
 export function reroute(previous: Routes, circuit: Circuit, changedPartIds: Iterable<string>): Map<string, Point[]> {
   const changed = new Set(changedPartIds);
-  const covering = circuit.parts.filter((p) => changed.has(p.id)).map(partReach);
+  const covering = circuit.parts
+    .filter((p) => changed.has(p.id))
+    .flatMap((p) => [inflate(partReach(p), MARGIN - 0.01), ...partLetters(p).map((box) => inflate(box, 0.1))]);
   const parts = new Map(circuit.parts.map((p) => [p.id, p]));
   const kept = new Map<string, readonly Point[]>();
   for (const connection of circuit.connections) {
     const points = previous.get(connection.id);
     if (!points || changed.has(connection.from.part) || changed.has(connection.to.part)) continue;
-    if (covering.some((box) => routeTouches(points, inflate(box, MARGIN - 0.01)))) continue;
+    if (covering.some((box) => routeTouches(points, box))) continue;
     if (!stillFits(parts, connection, points)) continue;
     kept.set(connection.id, points);
   }
@@ -182,6 +188,7 @@ function facing(sheet: RoutingSheet, from: RoutingEnd, to: RoutingEnd): boolean 
   for (const [id, box] of sheet.boxes) {
     if (id !== a.ref.part && id !== b.ref.part && overlaps(box, path)) return false;
   }
+  if (sheet.letters.some((box) => overlaps(box, path))) return false;
   const clear = !sheet.laid.some((s) => segmentTouches(s.a, s.b, path));
   return clear || along < 2 * MARGIN;
 }
@@ -197,6 +204,7 @@ function searchAll(
   const field = buildField({
     window,
     boxes: [...sheet.boxes].flatMap(([id, box]) => (isJointEnd(from, id) || isJointEnd(to, id) ? [] : [box])),
+    letters: sheet.letters,
     segments: sheet.laid,
     line: sheet.lines.get(connection.id) ?? -1,
     points: via,
