@@ -1,3 +1,4 @@
+import { coilNames } from '../base/coil-names.ts';
 import type { Result } from '../base/result.ts';
 import { bad, good } from '../base/result.ts';
 import type { StepPlan } from '../circuit/plan.ts';
@@ -59,17 +60,22 @@ export function numberedPlan(net: Network, plan: StepPlan): Result<NumberedPlan>
 const endOf = (end: PlayEnd): LogicEnd =>
   end.by === 'pressure' ? { by: 'pressure', switch: end.switch, turns: end.on ? 'on' : 'off' } : end;
 
-/** A name that several valves have carries the label of its valve. */
 function coilsOf({ inputs, parts }: Network): PlanCoil[] {
-  const uses = new Map<string, number>();
-  for (const input of inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
-  return inputs.flatMap(({ part, coils }, input) =>
-    coils.map(({ name, position }) => ({
+  const coils = inputs.flatMap(({ part, coils: own }, input) =>
+    own.map(({ name, position }) => ({
       part: parts[part]?.id ?? '',
-      coil: name,
-      name: uses.get(name) === 1 ? name : `${parts[part]?.label ?? ''}.${name}`,
+      label: parts[part]?.label ?? '',
+      name,
       input,
       position,
     })),
   );
+  const names = coilNames(coils);
+  return coils.map(({ part, name, input, position }, i) => ({
+    part,
+    coil: name,
+    name: names[i] ?? name,
+    input,
+    position,
+  }));
 }

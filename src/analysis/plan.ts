@@ -1,10 +1,11 @@
 import type { Budget } from '../base/budget.ts';
 import { unlimited } from '../base/budget.ts';
+import { coilNames } from '../base/coil-names.ts';
 import { formatQuantity } from '../base/units.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { PlanStep, StepPlan } from '../circuit/plan.ts';
 import { dependentLabel } from '../network/dependents.ts';
-import type { NetActuator, Network } from '../network/network.ts';
+import type { NetActuator, NetInput, Network } from '../network/network.ts';
 import { allCoils } from '../engine/sequence/play/commands.ts';
 import type { PlayStep } from '../engine/sequence/play/commands.ts';
 import { machineAt } from '../engine/sequence/play/machine.ts';
@@ -193,8 +194,18 @@ function traceOf(net: Network, plan: StepPlan, { steps, samples }: PlayedPlan): 
 const labelOf = (net: Network, id: string): string => net.parts.find((part) => part.id === id)?.label ?? id;
 
 function commandsOf(net: Network, { coils = [], levers = {}, stopped = [] }: PlanStep): string[] {
+  const all = allCoils(net).map(({ input, coil }) => {
+    const { part, coils: own } = net.inputs[input] as NetInput;
+    const { id = '', label = '' } = net.parts[part] ?? {};
+    return { id, label, name: own[coil]?.name ?? '' };
+  });
+  const names = coilNames(all);
+  const sayCoil = (text: string): string => {
+    const [id, name] = [text.slice(0, text.indexOf('.')), text.slice(text.indexOf('.') + 1)];
+    return names[all.findIndex((coil) => coil.id === id && coil.name === name)] ?? `${labelOf(net, id)}.${name}`;
+  };
   return [
-    ...coils.map((text) => `${labelOf(net, text.slice(0, text.indexOf('.')))}.${text.slice(text.indexOf('.') + 1)}`),
+    ...coils.map(sayCoil),
     ...Object.entries(levers).map(([id, position]) => `${labelOf(net, id)} ${position}`),
     ...stopped.map((id) => `${labelOf(net, id)} stopped`),
   ];

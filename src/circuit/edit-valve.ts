@@ -1,3 +1,5 @@
+import { checkCoilTag } from './coil-tags.ts';
+import { isCoilTag } from '../base/coil-names.ts';
 import { all, changeCircuit, changeConnection, changePart, type Edit } from './edit.ts';
 import type { Circuit, Connection, PortRef, ValveData } from './model.ts';
 import { partOf } from './place.ts';
@@ -12,7 +14,7 @@ export interface Renamed {
 
 /**
  * Gives a part other valve data than it had `before` in one undo step. Lines at ports that go are removed, never
- * joined to anything else; `linesLost` tells which.
+ * joined to anything else; `linesLost` tells which. Refuses a coil's new name if it is the tag of another valve's.
  */
 export function changeValve(
   circuit: Circuit,
@@ -21,6 +23,8 @@ export function changeValve(
   valve: ValveData,
   renamed: Renamed = {},
 ): Edit {
+  const tag = renamed.coil?.[1];
+  if (tag !== undefined && isCoilTag(tag)) checkCoilTag(circuit, id, tag);
   const lost = linesLost(circuit, id, before, valve, renamed);
   const edits: Edit[] = [
     ...lost.map((c): Edit => ({ type: 'remove-connection', id: c.id })),

@@ -1,4 +1,5 @@
 import { actuatorReach } from './actuator-reach.ts';
+import { coilTagTwice } from './coil-tag-twice.ts';
 import { deadHeadedPump } from './dead-headed-pump.ts';
 import { dependentUnsettled } from './dependent-unsettled.ts';
 import type { Evidence, Finding, Rule } from './finding.ts';
@@ -37,6 +38,7 @@ const RULES: readonly Rule[] = [
   actuatorReach,
   unventableLine,
   openPort,
+  coilTagTwice,
   positionChangesNothing,
 ];
 

@@ -1,5 +1,6 @@
 import type { Conditions, Explanation, Finding } from '../analysis/results.ts';
 import { has } from '../base/bits.ts';
+import { coilNames } from '../base/coil-names.ts';
 import { labelOf } from '../circuit/model.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { StateTable } from '../engine/table/state-table.ts';
@@ -182,18 +183,12 @@ interface Coil {
   readonly position: number;
 }
 
-/** Coils of all inputs; a name that two valves use gets the valve's label in front. */
 function coilsOf(table: StateTable): Coil[] {
-  const { inputs } = table.data;
-  const uses = new Map<string, number>();
-  for (const input of inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
-  return inputs.flatMap((input, i) =>
-    input.coils.map(({ name, position }) => ({
-      name: uses.get(name) === 1 ? name : `${input.label}.${name}`,
-      input: i,
-      position,
-    })),
+  const coils = table.data.inputs.flatMap(({ label, coils: own }, input) =>
+    own.map(({ name, position }) => ({ label, name, input, position })),
   );
+  const names = coilNames(coils);
+  return coils.map(({ input, position }, i) => ({ name: names[i] ?? '', input, position }));
 }
 
 /** The shown names of a table, drawn out once. */

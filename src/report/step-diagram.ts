@@ -1,4 +1,5 @@
 import type { PlanTrace } from '../analysis/results.ts';
+import { coilNames } from '../base/coil-names.ts';
 import type { UnitSystem } from '../base/units.ts';
 import { defaultUnit, formatNumber, formatQuantity, fromUnit, toUnit } from '../base/units.ts';
 import { niceCeiling } from '../drawing/diagram-text.ts';
@@ -81,8 +82,8 @@ export function stepChart(
     actuators: moving.length > 0 ? moving : actuators,
     pressures,
     pressureTop: { value: top, label: formatQuantity(top, 'pressure', units, { digits: 3 }) },
-    coils: trace.coils.map(({ label, name }, i) => ({
-      label: trace.coils.filter((coil) => coil.name === name).length > 1 ? `${label}.${name}` : name,
+    coils: coilNames(trace.coils).map((label, i) => ({
+      label,
       spans: spans.flatMap(({ place, sample }) => (sample.coils[i] === true ? [{ ...place, start: 1, end: 1 }] : [])),
     })),
   };

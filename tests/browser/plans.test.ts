@@ -37,7 +37,7 @@ test(
     await step(page, 3).getByText('never ends', { exact: true }).waitFor();
     await step(page, 4).getByText('not played', { exact: true }).waitFor();
     expect(await severe(page)).toEqual([]);
-    await step(page, 3).getByRole('button', { name: 'Coil a of V2, step 3: on' }).press('Space');
+    await step(page, 3).getByRole('button', { name: 'Coil V2.a, step 3: on' }).press('Space');
     await band(page).getByText('does what it says', { exact: false }).and(page.locator('.stamp.note')).waitFor();
     await step(page, 4).getByText('as asked').waitFor();
     await page.keyboard.press('Control+z');
@@ -94,7 +94,7 @@ test('steps come, go and move by the keyboard, and all of it can be undone', asy
   await page.keyboard.press('ArrowDown');
   await expect
     .poll(() => page.evaluate(() => document.activeElement?.getAttribute('aria-label')))
-    .toBe('Coil b of V1, step 2: off');
+    .toBe('Coil V1.b, step 2: off');
 });
 
 test('a motion that cannot be read says so at once, and is offered as it is typed', async () => {
@@ -121,7 +121,7 @@ test('without a plan one is drafted from a motion sequence, and it plays', async
   await band(page).getByRole('button', { name: 'Draft the steps' }).click();
   await step(page, 4).getByText('as asked').waitFor();
   // One coil for each motion, by the drawing.
-  expect(await step(page, 3).getByRole('button', { name: 'Coil b of V2, step 3: on' }).count()).toBe(1);
+  expect(await step(page, 3).getByRole('button', { name: 'Coil V2.b, step 3: on' }).count()).toBe(1);
   expect(await band(page).locator('[aria-pressed="true"][aria-label^="Coil"]').count()).toBe(4);
 });
 

@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest';
+import { duplicate } from '../../src/circuit/build.ts';
 import { applyEdit, invertEdit } from '../../src/circuit/edit.ts';
 import { changeValve, linesLost } from '../../src/circuit/edit-valve.ts';
 import { readCircuit, writeCircuit } from '../../src/circuit/file.ts';
@@ -75,6 +76,20 @@ test('lines follow a port that gets another letter, and step plans the names of 
     standing: { V1: 'up', V2: 'raise' },
     steps: [{ levers: { V1: 'up' } }],
   });
+});
+
+test("a coil is not given the tag of another valve's, but any letter; a pasted tag gets the next free number", () => {
+  const tagged = (name: string): ValveData => changeCoil(VALVE, 0, { name });
+  const other = { ...SHEET, parts: [...SHEET.parts, { id: 'V9', kind: 'directional-valve', valve: tagged('Y1') }] };
+  const give = (name: string) => changeValve(other, 'V1', VALVE, tagged(name), { coil: ['a', name] });
+  expect(() => give('Y1')).toThrow('V9 has a coil tagged "Y1"');
+  expect(applyEdit(other, give('Y3')).parts[0]?.valve?.coils?.[0]?.name).toBe('Y3');
+  expect(applyEdit(other, give('c')).parts[0]?.valve?.coils?.[0]?.name).toBe('c');
+  const { edit } = duplicate(other, ['V9'], 20, 0, () => []);
+  expect(applyEdit(other, edit).parts.at(-1)?.valve?.coils).toEqual([
+    { ...tagged('Y2').coils?.[0] },
+    ...(VALVE.coils ?? []).slice(1),
+  ]);
 });
 
 test('a ready-made valve is added, named, changed and removed; the last one leaves the file as it was', () => {

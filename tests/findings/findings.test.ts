@@ -52,6 +52,23 @@ describe('findings', () => {
     expect(rules(rig('valve-4/3-bypass'))).not.toContain('idle-valve-unloads');
   });
 
+  test('two coils of one tag, but not two letters (a tag stands for one coil on electrical drawings: common practice)', () => {
+    const two = (names: readonly string[]): Circuit => {
+      const c = circuit(
+        `${SUPPLY}, V1 directional-valve:valve-2/2-shut-coil, V2 directional-valve:valve-2/2-shut-coil, C1 cylinder | P1.P R1.P V1.P V2.P | V1.A C1.A | V2.A C1.B | R1.T T1.T P1.S`,
+      );
+      const parts = c.parts.map((part) => {
+        const name = names[['V1', 'V2'].indexOf(part.id)];
+        const coils = part.valve?.coils?.map((coil) => ({ ...coil, name: name ?? coil.name }));
+        return part.valve && coils ? { ...part, valve: { ...part.valve, coils } } : part;
+      });
+      return { ...c, parts };
+    };
+    expect(find(two(['Y1', 'Y1']), 'coil-tag-twice')?.parts).toEqual(['V1', 'V2']);
+    expect(rules(two(['Y1', 'Y2']))).not.toContain('coil-tag-twice');
+    expect(rules(two(['a', 'a']))).not.toContain('coil-tag-twice');
+  });
+
   test('an actuator that nothing moves, or that goes one way only', () => {
     expect(find(rig('valve-4/3-shut', '', 'V1.A C1.A'), 'actuator-reach')?.title).toBe('Nothing moves C1');
     // A 3/2 valve on the cap side, the rod side open to tank: out under pressure, back by nothing.

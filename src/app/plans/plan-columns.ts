@@ -1,3 +1,4 @@
+import { coilNames } from '../../base/coil-names.ts';
 import type { Circuit } from '../../circuit/model.ts';
 import { labelOf } from '../../circuit/model.ts';
 import type { StepPlan } from '../../circuit/plan.ts';
@@ -10,6 +11,7 @@ export interface Cell {
   readonly of: 'coil' | 'pump';
   /** As the step names it: `V1.a`, or the pump's part id. */
   readonly ref: string;
+  /** `Y1`, or `V1.a` where the coil has no tag of its own. */
   readonly name: string;
 }
 
@@ -32,12 +34,14 @@ export function planColumns(circuit: Circuit, plan: StepPlan | undefined): PlanC
   const held = new Set(plan?.steps.flatMap(({ levers }) => Object.keys(levers ?? {})));
   const coils = inputs.filter(({ coils: own }) => own.length > 0);
   const pumps = partsWith(circuit, 'pump');
+  const names = coilNames(coils.flatMap(({ label, coils: own }) => own.map(({ name }) => ({ label, name }))));
+  let next = 0;
   return {
     groups: [
       ...coils.map(({ part, label, coils: own }) => ({
         part,
         label,
-        cells: own.map(({ name }) => ({ of: 'coil' as const, ref: `${part}.${name}`, name })),
+        cells: own.map(({ name }) => ({ of: 'coil' as const, ref: `${part}.${name}`, name: names[next++] ?? name })),
       })),
       ...(pumps.length > 0
         ? [

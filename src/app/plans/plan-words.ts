@@ -1,3 +1,4 @@
+import { coilNames } from '../../base/coil-names.ts';
 import { formatNumber } from '../../base/units.ts';
 import type {
   LossActuator,
@@ -63,7 +64,7 @@ function sayEvent(trace: PlanTrace, event: TraceEvent, sample: number): string[]
   const now = samples[sample];
   switch (event.kind) {
     case 'step': {
-      const on = coils.flatMap(({ label, name }, i) => (now?.coils[i] === true ? [`${label}.${name}`] : []));
+      const on = coilNames(coils).filter((_, i) => now?.coils[i] === true);
       return [
         `step ${stepName(trace, event.step)} begins${on.length > 0 ? ` with ${on.join(', ')} on` : ', no coil on'}`,
       ];

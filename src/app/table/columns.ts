@@ -1,5 +1,6 @@
 import { countBits, emptySet, orInto } from '../../base/bits.ts';
 import type { BitSet } from '../../base/bits.ts';
+import { coilNames } from '../../base/coil-names.ts';
 import { ACTUATOR_VERDICTS, PUMP_VERDICTS, TRAP_REASONS } from '../../worker/client.ts';
 import type { StateTable } from '../../worker/client.ts';
 
@@ -88,6 +89,8 @@ export function columnGroups(
   const { data } = table;
   const digits = String(data.count).length;
   const row = fixed({ id: 'row', of: 'row', index: 0, title: 'row', width: Math.max(76, digits * 8 + 34) });
+  const coils = coilNames(data.inputs.flatMap(({ label, coils: own }) => own.map(({ name }) => ({ label, name }))));
+  let next = 0;
   const levers = data.inputs.flatMap((input, index): Column[] => [
     fixed({
       id: `input:${index}`,
@@ -96,16 +99,11 @@ export function columnGroups(
       title: input.label,
       width: fits(input.positions, 0, input.label),
     }),
-    ...input.coils.map((coil, i) =>
-      fixed({
-        id: `coil:${index}:${i}`,
-        of: 'coil',
-        index,
-        title: coil.name,
-        position: coil.position,
-        width: Math.ceil(Math.max(40, coil.name.length * CHARACTER) + PADDING),
-      }),
-    ),
+    ...input.coils.map(({ position }, i) => {
+      const title = coils[next++] ?? '';
+      const width = Math.ceil(Math.max(40, title.length * CHARACTER) + PADDING);
+      return fixed({ id: `coil:${index}:${i}`, of: 'coil', index, title, position, width });
+    }),
   ]);
   const [firstLever] = levers;
   // The heading of the group has its room too.

@@ -12,7 +12,7 @@ import type { Rule } from './condition.ts';
 import { evaluate } from './evaluate.ts';
 import type { RuleSource } from './evaluate.ts';
 import type { Names } from './names.ts';
-import { namesOfNetwork, namesOfTable, sayName } from './names.ts';
+import { coilNamesByInput, namesOfNetwork, namesOfTable, sayName } from './names.ts';
 import { openPathSource, tableSource } from './sources.ts';
 
 export const RULE_OUTCOMES = ['holds', 'broken', 'not decided'] as const;
@@ -72,7 +72,8 @@ function answer(sets: Diagrams, names: Names, rule: Rule, sure: Diagram, maybe: 
 
 export function casesOf(sets: Diagrams, names: Names, set: Diagram): RuleCases {
   const { cubes, least } = coverOf(sets, set);
-  const coilTerms = cubes.map((cube) => sayCoils(cube, names));
+  const named = coilNamesByInput(names);
+  const coilTerms = cubes.map((cube) => sayCoils(cube, names, named));
   const rest = names.inputs.map((input) => input.rest ?? 0);
   return {
     count: sets.count(set),
@@ -100,21 +101,18 @@ function sayCube(cube: Cube, { inputs }: Names): string {
 }
 
 /** `Y1 on and Y4 off`: only for valves whose coils determine the position. */
-function sayCoils(cube: Cube, { inputs }: Names): string | undefined {
-  const uses = new Map<string, number>();
-  for (const input of inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
+function sayCoils(cube: Cube, { inputs }: Names, named: readonly (readonly string[])[]): string | undefined {
   const parts: string[] = [];
-  for (const [i, { label, positions, rest, coils }] of inputs.entries()) {
+  for (const [i, { positions, rest, coils }] of inputs.entries()) {
     const mask = cube[i] as number;
     if (mask === anyPosition(positions.length)) continue;
     if (rest === undefined || coils.length !== positions.length - 1) return undefined;
-    const nameOf = (coil: { readonly name: string }): string =>
-      sayName(uses.get(coil.name) === 1 ? coil.name : `${label}.${coil.name}`);
-    const within = coils.filter(({ position }) => ((mask >>> position) & 1) === 1);
+    const called = coils.map(({ position }, c) => ({ position, name: sayName(named[i]?.[c] ?? '') }));
+    const isIn = ({ position }: { readonly position: number }): boolean => ((mask >>> position) & 1) === 1;
     if (((mask >>> rest) & 1) === 1) {
-      parts.push(...coils.filter((coil) => !within.includes(coil)).map((coil) => `${nameOf(coil)} off`));
+      parts.push(...called.filter((coil) => !isIn(coil)).map(({ name }) => `${name} off`));
     } else {
-      const on = within.map((coil) => `${nameOf(coil)} on`);
+      const on = called.filter(isIn).map(({ name }) => `${name} on`);
       parts.push(on.length === 1 ? (on[0] as string) : `(${on.join(' or ')})`);
     }
   }

@@ -1,3 +1,4 @@
+import { coilNames, isCoilTag } from '../../../base/coil-names.ts';
 import type { Network } from '../../../network/network.ts';
 import type { TableData } from '../table-data.ts';
 
@@ -82,22 +83,45 @@ export function sayName(name: string): string {
   return (plain && !words) || name.includes('"') ? name : `"${name}"`;
 }
 
-/** Everything that has a name; a coil name that two valves use carries the label of its valve. */
+interface NamedCoil extends Named {
+  /** As its valve knows it. */
+  readonly own: string;
+}
+
+/** All coils by the names that they have anywhere. */
+function namedCoils({ inputs }: Names): NamedCoil[] {
+  const coils = inputs.flatMap(({ label, coils: own }, index) =>
+    own.map(({ name, position }) => ({ label, name, index, position })),
+  );
+  return coilNames(coils).map((name, i): NamedCoil => {
+    const { index = 0, position = 0, name: own = '' } = coils[i] ?? {};
+    return { kind: 'coil', name, index, position, own };
+  });
+}
+
+/** Names of coils, by input, in the order of its coils. */
+export function coilNamesByInput(names: Names): string[][] {
+  const all = namedCoils(names);
+  return names.inputs.map((_, input) => all.filter(({ index }) => index === input).map(({ name }) => name));
+}
+
+/** What else a rule may call a coil: a letter that only one valve has, or a tag with its valve. */
+export function otherCoilNames(names: Names): Named[] {
+  const all = namedCoils(names);
+  return all.flatMap(({ own, ...coil }) => {
+    if (all.some((other) => other.own === own && other.index !== coil.index)) return [];
+    const label = names.inputs[coil.index]?.label ?? '';
+    return [{ ...coil, name: isCoilTag(own) ? `${label}.${own}` : own }];
+  });
+}
+
+/** Everything that has a name. */
 export function namedThings(names: Names): Named[] {
-  const uses = new Map<string, number>();
-  for (const input of names.inputs) for (const { name } of input.coils) uses.set(name, (uses.get(name) ?? 0) + 1);
   return [
     ...names.inputs.map(({ label }, index): Named => ({ kind: 'valve', name: label, index, position: 0 })),
     ...names.actuators.map(({ label }, index): Named => ({ kind: 'actuator', name: label, index, position: 0 })),
     ...names.pumps.map(({ label }, index): Named => ({ kind: 'pump', name: label, index, position: 0 })),
-    ...names.inputs.flatMap(({ label, coils }, index) =>
-      coils.map(({ name, position }): Named => ({
-        kind: 'coil',
-        name: uses.get(name) === 1 ? name : `${label}.${name}`,
-        index,
-        position,
-      })),
-    ),
+    ...namedCoils(names).map(({ own: _, ...coil }): Named => coil),
     ...names.lines.map(({ name }, index): Named => ({ kind: 'line', name, index, position: 0 })),
   ];
 }

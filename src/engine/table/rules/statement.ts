@@ -1,7 +1,7 @@
 import type { Condition } from './condition.ts';
 import { readFigure, readComparison } from './figures.ts';
 import type { Named, NamedKind, Names } from './names.ts';
-import { namedThings, pressurePoints } from './names.ts';
+import { namedThings, pressurePoints, otherCoilNames } from './names.ts';
 import type { Reader } from './reader.ts';
 import { Fault, nearest } from './reader.ts';
 import type { Says } from './says.ts';
@@ -30,11 +30,14 @@ export class Statements {
   readonly #in: Reader;
   readonly #names: Names;
   readonly #things: readonly Named[];
+  /** Read, but not offered. */
+  readonly #unlisted: readonly Named[];
 
   constructor(reader: Reader, names: Names) {
     this.#in = reader;
     this.#names = names;
     this.#things = namedThings(names);
+    this.#unlisted = otherCoilNames(names);
   }
 
   read(): Condition {
@@ -60,21 +63,24 @@ export class Statements {
       const only = this.#things.filter(
         (thing) => thing.kind === (KINDS.find(({ words }) => words.includes(kind))?.kind ?? kind),
       );
-      const found = this.#in.oneOf(
-        only.map((thing) => thing.name),
-        'name',
-      );
-      if (found >= 0) return this.#say([only[found] as Named], 'every');
+      const found = this.#oneOf(only, kind === 'coil' ? this.#unlisted : []);
+      if (found) return this.#say([found], 'every');
       if (kind === 'line' || kind === 'coil') throw this.#unknown(only, `${kind} `);
       // A part may have such a name itself.
       this.#in.at = back;
     }
+    const found = this.#oneOf(this.#things, this.#unlisted);
+    if (!found) throw this.#unknown(this.#things, '');
+    return this.#say([found], 'every');
+  }
+
+  #oneOf(things: readonly Named[], unsaid: readonly Named[]): Named | undefined {
     const found = this.#in.oneOf(
-      this.#things.map((thing) => thing.name),
+      things.map(({ name }) => name),
       'name',
     );
-    if (found < 0) throw this.#unknown(this.#things, '');
-    return this.#say([this.#things[found] as Named], 'every');
+    if (found >= 0 || this.#in.ended) return things[found];
+    return unsaid[this.#in.oneOf(unsaid.map(({ name }) => name))];
   }
 
   #quantity(

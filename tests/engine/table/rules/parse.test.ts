@@ -77,6 +77,7 @@ test.each([
 test('every, any and no; not binds closest, then and, then or', () => {
   // V 2 has no rest position, so it is not asked to rest.
   expect(says('every lever rests')).toEqual({ type: 'every', of: [says('V1 rests'), says('S1 rests')] });
+  expect(says('coil V1.Y2 is off')).toEqual(says('coil Y2 is off'));
   expect(says('all coils are off')).toEqual({ type: 'every', of: [says('Y1 off'), says('Y2 off'), says('Y3 off')] });
   expect(says('any cylinder moves')).toEqual({ type: 'any', of: [says('CLAMP moves'), says('DRILL moves')] });
   expect(says('no motor turns A>B')).toEqual({ type: 'not', of: { type: 'any', of: [says('SPIN turns A→B')] } });
