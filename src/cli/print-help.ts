@@ -1,7 +1,8 @@
 export const PRINT_HELP = `Usage: spooltable print FILE [--state "V1=a,V2=0"] [OPTIONS]
 
 One web page that any browser prints as it stands: the circuit drawing in its frame, the operating chart, notes,
-findings and the part list, each sheet with title block and number, black on white.
+findings and the part list, each sheet with title block and number, black on white. Of a circuit on several sheets each
+is printed, and where a line goes on on another one, its number and zone are.
 
 Options:
   --state VALVE=POSITION,…          draws that state, with its marks on the lines; a valve that is left out stands at
@@ -16,7 +17,7 @@ Options:
 
 export const PARTS_HELP = `Usage: spooltable parts FILE [OPTIONS]
 
-The part list: code, label, part, data as entered, count. Parts alike in kind and data are one entry.
+The part list: code, label, part, data as entered, sheets if there are several, count. Parts alike in kind and data are one entry.
 
 Options:
   --format text|csv   how it is written (text)

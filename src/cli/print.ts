@@ -1,11 +1,13 @@
 import { findings, networkOf, tabulate } from '../analysis/analyse.ts';
 import { unlimited } from '../base/budget.ts';
 import type { Circuit } from '../circuit/model.ts';
+import { hasSheets, sheetsOf } from '../circuit/sheets.ts';
+import { faceOf, referencesOf, withZones } from '../drawing/faces.ts';
 import { placeMissing } from '../drawing/place.ts';
 import { routeAll } from '../drawing/routing.ts';
 import { buildScene } from '../drawing/scene.ts';
 import { StateTable } from '../engine/table/state-table.ts';
-import { PART_LIST_HEAD, partListRows, writePartListCsv } from '../report/part-list.ts';
+import { partListHead, partListRows, writePartListCsv } from '../report/part-list.ts';
 import { writePrintDocument } from '../report/pages/document.ts';
 import { sceneStateOf } from '../report/pages/looks.ts';
 import { joined, printedPages } from '../report/pages/pages.ts';
@@ -44,19 +46,27 @@ export function printed(command: PrintCommand, circuit: Circuit, version: string
     });
   const notes = has('notes') ? notesSection(circuit) : undefined;
   const withState = table !== undefined && state.length > 0;
-  const drawing = (): DrawingSheet => {
+  const drawings = (): DrawingSheet[] => {
     const placed = placeMissing(circuit);
+    const references = referencesOf(placed);
     const levers = Object.entries(standing.state).map(([label, position]) => `${label} ${position}`);
-    return {
-      scene: buildScene(placed, routeAll(placed), withState ? sceneStateOf(table, row) : {}),
-      shows: withState ? `Row ${row + 1}: ${levers.join(', ')}; pumps ${conditions.pumps}` : 'Every valve at rest',
-      key: withState,
-    };
+    return sheetsOf(placed).map(({ id, name }): DrawingSheet => {
+      const face = faceOf(placed, id, references, () => '');
+      const scene = buildScene(face, routeAll(face), withState ? sceneStateOf(table, row) : {});
+      return {
+        scene,
+        shows: withState ? `Row ${row + 1}: ${levers.join(', ')}; pumps ${conditions.pumps}` : 'Every valve at rest',
+        key: withState,
+        ...(hasSheets(placed) && {
+          one: { id, name, zoned: (zoneOf) => withZones(scene, placed, references, zoneOf) },
+        }),
+      };
+    });
   };
   const pages = printedPages({
     circuit,
     ...(paper && { paper }),
-    ...(has('drawing') && { drawing: drawing() }),
+    ...(has('drawing') && { drawing: drawings() }),
     sections: [
       ...(has('chart') && report ? [chartSection(report)] : []),
       ...joined([
@@ -75,8 +85,9 @@ export function parts({ format }: { readonly format: PartsFormat }, circuit: Cir
 }
 
 function* partsText(circuit: Circuit): Generator<string> {
-  const rows = [[...PART_LIST_HEAD], ...partListRows(circuit)].map((cells) => cells.map(plain));
-  const widths = PART_LIST_HEAD.map((_, i) => Math.max(...rows.map((cells) => widthOf(cells[i] ?? ''))));
+  const head = partListHead(circuit);
+  const rows = [head, ...partListRows(circuit)].map((cells) => cells.map(plain));
+  const widths = head.map((_, i) => Math.max(...rows.map((cells) => widthOf(cells[i] ?? ''))));
   for (const cells of rows) {
     const line = cells.map((cell, i) => padEnd(cell, widths[i] ?? 0));
     yield `${line.join('  ').trimEnd()}\n`;

@@ -1,5 +1,6 @@
 import type { Circuit, Part, Setting } from '../circuit/model.ts';
 import { labelOf } from '../circuit/model.ts';
+import { sheetNumber, sheetOf } from '../circuit/sheets.ts';
 import { kindOf } from '../parts/catalogue.ts';
 
 /** Parts that are alike in kind and size, as one entry of the part list. */
@@ -11,6 +12,8 @@ export interface PartListEntry {
   readonly kind: string;
   /** What sizes it, as it was entered; what nobody entered is not in it. */
   readonly data: string;
+  /** Numbers of the sheets that they stand on, rising. */
+  readonly sheets: readonly number[];
   readonly count: number;
 }
 
@@ -39,6 +42,7 @@ export function partList(circuit: Circuit): PartListEntry[] {
       labels: isTank ? parts.slice(0, 1).map(labelOf) : parts.map(labelOf),
       kind,
       data: isTank && parts.length > 1 ? [data, `drawn ${parts.length} times`].filter(Boolean).join('; ') : data,
+      sheets: [...new Set(parts.map((part) => sheetNumber(circuit, sheetOf(circuit, part))))].sort((a, b) => a - b),
       count: isTank ? 1 : parts.length,
     };
   });

@@ -92,10 +92,18 @@ test('parts alike in kind and size are one entry, all tank symbols one tank, and
     connections: [],
   };
   expect(partList(circuit)).toEqual([
-    { item: 1, codes: ['H0.1', 'H0.2'], labels: ['P1', 'P2'], kind: 'Fixed pump', data: 'flow 6 L/min', count: 2 },
-    { item: 2, codes: [], labels: ['P3'], kind: 'Fixed pump', data: '', count: 1 },
-    { item: 3, codes: [], labels: ['T1'], kind: 'Tank', data: 'drawn 2 times', count: 1 },
-    { item: 4, codes: [], labels: ['C1'], kind: 'Cylinder', data: 'bore 63 mm', count: 1 },
+    {
+      item: 1,
+      codes: ['H0.1', 'H0.2'],
+      labels: ['P1', 'P2'],
+      kind: 'Fixed pump',
+      data: 'flow 6 L/min',
+      sheets: [1],
+      count: 2,
+    },
+    { item: 2, codes: [], labels: ['P3'], kind: 'Fixed pump', data: '', sheets: [1], count: 1 },
+    { item: 3, codes: [], labels: ['T1'], kind: 'Tank', data: 'drawn 2 times', sheets: [1], count: 1 },
+    { item: 4, codes: [], labels: ['C1'], kind: 'Cylinder', data: 'bore 63 mm', sheets: [1], count: 1 },
   ]);
 });
 

@@ -5,7 +5,8 @@ import type { Circuit } from '../../circuit/model.ts';
 import type { Paper } from '../../circuit/paper.ts';
 import { DEFAULT_PAPER } from '../../circuit/paper.ts';
 import type { Frame } from '../../drawing/frame.ts';
-import { frameOf, MODULE_MM } from '../../drawing/frame.ts';
+import { fieldAt, frameOf, MODULE_MM } from '../../drawing/frame.ts';
+import type { ZoneOf } from '../../drawing/faces.ts';
 import type { Scene } from '../../drawing/scene.ts';
 import type { Stroke } from '../../drawing/strokes.ts';
 import { BLOCK_HEIGHT, BLOCK_WIDTH, titleBlock } from '../../drawing/title-block.ts';
@@ -48,13 +49,21 @@ export interface DrawingSheet {
   readonly key?: boolean;
   /** Above the title block, such as a part list; left out where it would take more than half of the sheet's height. */
   readonly beside?: Block;
+  /** One sheet of several that the circuit is drawn on. */
+  readonly one?: {
+    readonly id: string;
+    readonly name: string;
+    /** The scene with its references named by the fields of the paper. */
+    readonly zoned: (zoneOf: ZoneOf) => Scene;
+  };
 }
 
 export interface PrintSource {
   readonly circuit: Circuit;
   /** The circuit's own when absent. */
   readonly paper?: Paper;
-  readonly drawing?: DrawingSheet;
+  /** In the order of the circuit's sheets, so that the numbers of references are those of the paper. */
+  readonly drawing?: DrawingSheet | readonly DrawingSheet[];
   readonly sections: readonly Section[];
 }
 
@@ -92,7 +101,7 @@ export function joined(sections: readonly Section[]): Section[] {
 export function printedPages(source: PrintSource): PrintedPage[] {
   const { circuit, drawing, sections } = source;
   const frame = frameOf(source.paper ?? circuit.paper ?? DEFAULT_PAPER);
-  const sheets: Sheet[] = drawing ? [drawnSheet(frame, drawing)] : [];
+  const sheets: Sheet[] = drawnSheets(frame, drawing ? [drawing].flat() : []);
   for (const { document, shows, columns, blocks } of sections) {
     const before = sheets.length;
     const boxes = flow(blocks, (sheet) => columnsOf(frame, columns, before + sheet === 0));
@@ -110,7 +119,7 @@ export function printedPages(source: PrintSource): PrintedPage[] {
         sheet: i + 1,
         sheets: sheets.length,
       },
-      i > 0,
+      i > 0 && sheet.scene === undefined,
     );
     return {
       frame,
@@ -141,6 +150,21 @@ function columnsOf({ inside }: Frame, columns: Section['columns'], first: boolea
 
 /** Least free width beside the title block in which the key of the marks is set; else it stands above it. */
 const KEY_ROOM = 34;
+
+function drawnSheets(frame: Frame, drawings: readonly DrawingSheet[]): Sheet[] {
+  const sheets = drawings.map((drawing) => drawnSheet(frame, drawing));
+  const places = new Map(drawings.flatMap(({ one }, i) => (one ? [[one.id, sheets[i]?.scene] as const] : [])));
+  const zoneOf: ZoneOf = (sheet, { x, y }) => {
+    const placed = places.get(sheet);
+    return placed ? fieldAt(frame, { x: placed.at.x + x * placed.scale, y: placed.at.y + y * placed.scale }) : '';
+  };
+  return drawings.flatMap(({ one }, i) => {
+    const sheet = sheets[i];
+    if (!sheet?.scene || !one) return sheet ?? [];
+    const shows = [one.name, sheet.shows].filter((text) => text !== '').join('. ');
+    return { ...sheet, shows, scene: { ...sheet.scene, scene: one.zoned(zoneOf) } };
+  });
+}
 
 function drawnSheet(frame: Frame, { scene, shows, key, beside }: DrawingSheet): Sheet {
   const { inside } = frame;

@@ -1,7 +1,7 @@
 import type { Circuit } from '../../circuit/model.ts';
 import { columnsOf, headLines, LEVELS, sayRows, VALUED_LEGEND } from '../cells.ts';
 import { NUMBERS_LEGEND } from '../figures.ts';
-import { PART_LIST_HEAD, partListRows } from '../part-list.ts';
+import { partListHead, partListRows } from '../part-list.ts';
 import type { Report, ReportFinding, ReportRow } from '../rows.ts';
 import { TRAPPED_CAUTION } from '../rows.ts';
 import type { Block, TableColumn } from './blocks.ts';
@@ -58,7 +58,7 @@ const said = (text: string, framed = false): Block => ({ type: 'text', text, ...
 
 export const partListBlock = (circuit: Circuit): Block => ({
   type: 'table',
-  columns: PART_LIST_HEAD.map((head): TableColumn => ({
+  columns: partListHead(circuit).map((head): TableColumn => ({
     head,
     align: head === 'Item' || head === 'Count' ? 'end' : 'start',
     weight: head === 'Code' ? 600 : 400,

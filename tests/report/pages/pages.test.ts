@@ -1,12 +1,17 @@
+import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import type { Primitive } from '../../../src/base/primitives.ts';
 import type { Circuit } from '../../../src/circuit/model.ts';
 import { PAPERS } from '../../../src/circuit/paper.ts';
+import { faceOf, referencesOf, withZones } from '../../../src/drawing/faces.ts';
+import { fieldAt } from '../../../src/drawing/frame.ts';
 import { placeMissing } from '../../../src/drawing/place.ts';
 import { routeAll } from '../../../src/drawing/routing.ts';
 import { buildScene } from '../../../src/drawing/scene.ts';
 import { advance } from '../../../src/base/text-advance.ts';
+import { openCircuit } from '../../../src/parts/open.ts';
+import { writePartListCsv } from '../../../src/report/part-list.ts';
 import { writePrintDocument, pageToSvg } from '../../../src/report/pages/document.ts';
 import { flow } from '../../../src/report/pages/flow.ts';
 import { hasRoomBeside, joined, printedPages } from '../../../src/report/pages/pages.ts';
@@ -185,4 +190,64 @@ test('a print document has a paper for each sheet and no id twice', () => {
   const ids = [...html.matchAll(/ id="([^"]+)"/g)].map(([, id]) => id);
   expect(new Set(ids).size).toBe(ids.length);
   for (const [, id] of html.matchAll(/url\(#([^)]+)\)/g)) expect(ids).toContain(id);
+});
+
+test('each sheet of a circuit is a page with its own name, and references name pages and fields of the frame', () => {
+  const press = openCircuit(readFileSync(new URL('../../../examples/tile-press.spool.json', import.meta.url), 'utf8'));
+  if (!press.ok) throw new Error('the example cannot be read');
+  const references = referencesOf(press.value);
+  const pages = printedPages({
+    circuit: press.value,
+    drawing: (press.value.sheets ?? []).map(({ id, name }) => {
+      const face = faceOf(press.value, id, references, () => '');
+      const drawn = buildScene(face, routeAll(face));
+      return {
+        scene: drawn,
+        shows: 'Every valve at rest',
+        one: { id, name, zoned: (zoneOf) => withZones(drawn, press.value, references, zoneOf) },
+      };
+    }),
+    sections: [],
+  });
+  expect(pages.map(({ title }) => title)).toEqual([
+    'Tile press, two sheets, sheet 1 of 2',
+    'Tile press, two sheets, sheet 2 of 2',
+  ]);
+  expect(pages.map(texts).map((words) => words.filter((word) => /at rest$/.test(word)))).toEqual([
+    ['Power unit. Every valve at rest'],
+    ['Stations. Every valve at rest'],
+  ]);
+  let checked = 0;
+  for (const page of pages) {
+    for (const part of page.scene?.scene.parts ?? []) {
+      const there = references.get(references.get(part.id)?.other ?? '');
+      if (!there) continue;
+      const number = there.sheet === 's1' ? 0 : 1;
+      const target = pages[number];
+      const placed = target?.scene;
+      if (!target || !placed) throw new Error('the other page is not there');
+      const field = fieldAt(target.frame, {
+        x: placed.at.x + there.at.x * placed.scale,
+        y: placed.at.y + there.at.y * placed.scale,
+      });
+      expect(texts(part)).toContain(`${number + 1}/${field}`);
+      checked++;
+    }
+  }
+  expect(checked).toBe(6);
+});
+
+test('the part list of a circuit on several sheets names them', () => {
+  const sheets = [
+    { id: 's1', name: 'One' },
+    { id: 's2', name: 'Two' },
+  ];
+  const parts: Circuit['parts'] = [
+    { id: 'G1', kind: 'gauge' },
+    { id: 'G2', kind: 'gauge', sheet: 's2' },
+    { id: 'F1', kind: 'filter', sheet: 's2' },
+  ];
+  expect([...writePartListCsv({ name: 'L', sheets, parts, connections: [] })].join('')).toBe(
+    'Item,Code,Label,Part,Data,Sheet,Count\r\n1,,"G1, G2",Pressure gauge,,"1, 2",2\r\n2,,F1,Filter,,2,1\r\n',
+  );
 });
