@@ -179,6 +179,7 @@ const compilePath = (element: PathElement, part: number, input: number, at: (por
   positions: (element.positions ?? []).reduce((mask, p) => mask | (1 << p), 0),
   pilot: element.pilot ? at(element.pilot.port) : -1,
   pilotRatio: element.pilot?.ratio ?? 0,
+  vent: element.vent === undefined ? -1 : at(element.vent),
   cracking: element.cracking ?? 0,
   ...(element.rated && { rated: element.rated }),
   ...(element.limit !== undefined && { limit: element.limit }),
@@ -226,6 +227,7 @@ function openState(element: PressureValveElement, part: number, valve: number, a
     positions: 0,
     pilot: -1,
     pilotRatio: 0,
+    vent: -1,
     cracking: 0,
     ...(element.rated && { rated: element.rated }),
     valve,
@@ -258,6 +260,7 @@ const dividerPaths = (element: DividerElement, part: number, index: number, at: 
     positions: 0,
     pilot: -1,
     pilotRatio: 0,
+    vent: -1,
     cracking: 0,
     divider: { index, outlet },
   }));

@@ -105,6 +105,8 @@ export interface NetPath {
   readonly positions: number;
   /** Line whose pressure opens it; -1: none. */
   readonly pilot: number;
+  /** Line that has to be open to tank, and pressed on by nothing, for this path to be open; -1: none. */
+  readonly vent: number;
   /** Area ratio by which the pilot outweighs what it opens against. */
   readonly pilotRatio: number;
   /** Pa. */

@@ -49,7 +49,12 @@ const FIXED_PORTS: Readonly<Record<string, readonly string[]>> = {
 function portsNamed(element: Element): string[] {
   switch (element.type) {
     case 'path':
-      return [element.from, element.to, ...(element.pilot ? [element.pilot.port] : [])];
+      return [
+        element.from,
+        element.to,
+        ...(element.pilot ? [element.pilot.port] : []),
+        ...(element.vent === undefined ? [] : [element.vent]),
+      ];
     case 'pressure-opened':
       return [element.from, element.to, ...(element.vent ? [element.vent.port] : [])];
     case 'pressure-valve':

@@ -11,7 +11,7 @@ const paths = (kind: string, settings?: Readonly<Record<string, Setting>>): stri
   elements(kind, settings).map((element) => {
     if (element.type !== 'path') return element.type;
     const sign = `${element.throttled ? '~' : ''}${element.way === 'one-way' ? '>' : element.throttled ? '' : '-'}`;
-    return `${element.from}${sign}${element.to}${element.pilot ? ` by ${element.pilot.port}×${element.pilot.ratio}` : ''}`;
+    return `${element.from}${sign}${element.to}${element.pilot ? ` by ${element.pilot.port}×${element.pilot.ratio}` : ''}${element.vent ? ` while ${element.vent} is let down` : ''}`;
   });
 
 test('pumps carry flow and setting in SI', () => {
@@ -95,12 +95,12 @@ test('a sequence valve drained inside has no port Y', () => {
   expect(ids({ drain: 'internal' })).toEqual(['P', 'A']);
 });
 
-test('a flow control is a throttle with a limit one way; a shuttle lets both inlets to its outlet', () => {
+test('a flow control is a throttle with a limit one way; a shuttle lets both inlets to its outlet, and back', () => {
   expect(elements('flow-control', { flow: '12 L/min', leastDrop: '8 bar' })).toEqual([
     { type: 'path', from: 'A', to: 'B', way: 'both', throttled: true, limit: 2e-4, rated: { flow: 2e-4, drop: 8e5 } },
   ]);
   expect(paths('flow-control', { reverseCheck: true })).toEqual(['A~B', 'B>A']);
-  expect(paths('shuttle-valve')).toEqual(['X>A', 'Y>A']);
+  expect(paths('shuttle-valve')).toEqual(['X>A', 'A>X while Y is let down', 'Y>A', 'A>Y while X is let down']);
 });
 
 test('throttles, open and screwed shut', () => {

@@ -215,6 +215,15 @@ export class FlowBuilder {
     });
   }
 
+  /** Back through a shuttle valve, from → to: while `to` is not below `other` by more than the ball needs to come over. */
+  shuttleBack(id: string, from: number, to: number, other: number, loss?: Loss): number {
+    const signals = [
+      { line: to, factor: 1 },
+      { line: other, factor: -1 },
+    ];
+    return this.#valve(id, from, to, loss, { signals, setting: -NEAR_IDEAL.ball, gradient: NEAR_IDEAL.ballGradient });
+  }
+
   /** Two motors on one shaft: of what enters at `inlet`, `share` goes to the first outlet; `loss` Pa per m³/s. */
   divider(id: string, inlet: number, outlets: readonly [number, number], share: number, loss: number): void {
     this.#couplers.push({ id, lines: [inlet, ...outlets], factors: [1, -share, share - 1], r: loss });

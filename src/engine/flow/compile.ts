@@ -145,6 +145,7 @@ function layPath(
       loss,
     });
   }
+  if (path.vent >= 0) return builder.shuttleBack(id, from, to, at(path.vent), loss);
   if (path.oneWay && net.paths.some((other) => other.pilot >= 0 && freeWayOf(net, other) === path)) return -1;
   if (path.throttled) {
     // A throttled path inside a box without data of its own still takes away more than an open one.

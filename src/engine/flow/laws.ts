@@ -46,6 +46,9 @@ export const NEAR_IDEAL = {
   cylinderDrag: 100,
   /** The same for a motor, Pa per rad/s. */
   motorDrag: 1,
+  /** Pa that bring the ball of a shuttle valve over, and Pa per m³/s that keep it away: 120 L/min pass where both inlets are alike. */
+  ball: 0.2 * BAR,
+  ballGradient: (0.1 * BAR) / (60 * LITRE_PER_MINUTE),
   /** Pilot-sensed valves where no override is given, Pa per m³/s: 2 bar at 60 L/min. */
   pilotGradient: (2 * BAR) / (60 * LITRE_PER_MINUTE),
 } as const;

@@ -36,7 +36,8 @@ export class PathSolver {
     this.conditions = conditions;
     this.links = compileLinks(net, conditions.places);
     this.#orders = compileOrders(net, edges, this.links);
-    const maskCount = edges.masks.length + edges.pilots.length + edges.reliefs.length + edges.loadPilots.length;
+    const maskCount =
+      edges.masks.length + edges.pilots.length + edges.reliefs.length + edges.loadPilots.length + edges.backs.length;
     this.#spreader = new Spreader(
       net.lines.length,
       net.lines.map((line) => line.tank),
@@ -64,8 +65,9 @@ export class PathSolver {
         for (let w = 0; w < width; w++) {
           const i = pilot.line * width + w;
           const base = (edges.masks[pilot.base] as Uint32Array)[at + w] as number;
+          const pressed = (r.fromSource[i] as number) | (r.underPressure[i] as number);
           const next =
-            ((r.fromSource[i] as number) | (r.underPressure[i] as number)) & (r.notFreeToTank[i] as number) & base;
+            base & (pilot.vented ? ~pressed & (r.toTank[i] as number) : pressed & (r.notFreeToTank[i] as number));
           const differs = (plane[w] as number) ^ next;
           changed |= differs;
           if (round >= rounds) hunts[w] = (hunts[w] as number) | differs;

@@ -12,8 +12,11 @@ export interface EdgeSet {
   readonly masks: readonly BitSet[];
   /** Masks that follow dependent valves. */
   readonly follows: readonly Follower[];
-  /** Paths with a pilot: their mask is decided by the engine, state by state. */
-  readonly pilots: readonly { readonly line: number; readonly base: number }[];
+  /**
+   * Paths that another line opens: by its pressure (lock checks), or by being let down (the ways back through a
+   * shuttle valve). Their mask is decided by the engine, state by state.
+   */
+  readonly pilots: readonly { readonly line: number; readonly base: number; readonly vented: boolean }[];
   readonly forward: Adjacency;
   readonly backward: Adjacency;
   /** The same without throttled paths. */
@@ -29,6 +32,16 @@ export interface EdgeSet {
   readonly reliefs: readonly { readonly relief: number; readonly mask: number }[];
   /** Lock checks that a load may hold open over their pilot line; the engine fills these masks too. */
   readonly loadPilots: readonly { readonly line: number; readonly mask: number }[];
+  /** Ways back through shuttle valves where open paths do not tell at which inlet the ball stands; filled likewise. */
+  readonly backs: readonly Back[];
+}
+
+/** A way back over pilot `pilot`, to line `to`, past the other inlet on line `other`. */
+export interface Back {
+  readonly pilot: number;
+  readonly to: number;
+  readonly other: number;
+  readonly mask: number;
 }
 
 /** Edges `start[l] … start[l + 1] - 1` leave line l: they lead to `to`, open in mask `mask`. */
@@ -101,15 +114,16 @@ export function compileEdges(net: Network, settings?: DependentPlanes): EdgeSet 
     return index;
   };
 
-  const pilots: { line: number; base: number }[] = [];
+  const pilots: { line: number; base: number; vented: boolean }[] = [];
   const edges: Edge[] = [];
   const pilotEdges: (Omit<Edge, 'mask'> & { pilot: number })[] = [];
   for (const path of net.paths) {
     const base = maskOf(path.input, path.positions);
     const free = !path.throttled;
-    if (path.pilot >= 0) {
+    if (path.pilot >= 0 || path.vent >= 0) {
+      const vented = path.vent >= 0;
       pilotEdges.push({ from: path.from, to: path.to, free, pilot: pilots.length });
-      pilots.push({ line: path.pilot, base });
+      pilots.push({ line: vented ? path.vent : path.pilot, base, vented });
       continue;
     }
     edges.push({ from: path.from, to: path.to, mask: base, free });
@@ -127,14 +141,17 @@ export function compileEdges(net: Network, settings?: DependentPlanes): EdgeSet 
     .map((relief, i) => ({ relief, mask: masks.length + pilots.length + i }));
   const afterReliefs = masks.length + pilots.length + reliefs.length;
   const loaded = net.actuators.some(({ push }) => push.way !== 'none');
-  const loadPilots = loaded ? pilots.map(({ line }, i) => ({ line, mask: afterReliefs + i })) : [];
+  const held = loaded ? pilotEdges.filter(({ pilot }) => pilots[pilot]?.vented === false) : [];
+  const loadPilots = held.map(({ pilot }, i) => ({ line: pilots[pilot]?.line ?? 0, mask: afterReliefs + i }));
+  const backs = pilotEdges
+    .filter(({ pilot }) => pilots[pilot]?.vented === true)
+    .map(({ pilot, to }, i): Back => {
+      const mask = afterReliefs + loadPilots.length + i;
+      return { pilot, to, other: pilots[pilot]?.line ?? 0, mask };
+    });
   const valves = [
-    ...loadPilots.map(({ mask }, i): Edge => ({
-      from: pilotEdges[i]?.from ?? 0,
-      to: pilotEdges[i]?.to ?? 0,
-      mask,
-      free: false,
-    })),
+    ...backs.map(({ pilot, to, mask }): Edge => ({ from: pilotEdges[pilot]?.from ?? 0, to, mask, free: false })),
+    ...held.map(({ from, to }, i): Edge => ({ from, to, mask: loadPilots[i]?.mask ?? 0, free: false })),
     ...net.valves
       .filter((valve) => valve.duty !== 'closes')
       .map(({ from, to }): Edge => ({ from, to, mask: 0, free: false })),
@@ -154,6 +171,7 @@ export function compileEdges(net: Network, settings?: DependentPlanes): EdgeSet 
     pilots,
     reliefs,
     loadPilots,
+    backs,
     forward,
     backward,
     freeForward: adjacency(

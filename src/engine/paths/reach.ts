@@ -191,7 +191,18 @@ export function reach(
     s.spread(pressedByLoad, edges.forward, { gate: notToTank, links: links.push });
     for (const { line, mask } of edges.loadPilots) s.setMask(mask, pressedByLoad, line * s.width);
   }
-  const mayOpen = [...edges.reliefs, ...edges.loadPilots].some(({ mask }) => s.maskLive[mask] === 1);
+  for (const { pilot, to, other, mask } of edges.backs) {
+    const plane = new Uint32Array(s.width);
+    for (let w = 0; w < s.width; w++) {
+      const pressing = (line: number): number =>
+        (fromSource[line * s.width + w] as number) | (underPressure[line * s.width + w] as number);
+      const open = s.masks[(edges.masks.length + pilot) * s.width + w] as number;
+      plane[w] = (s.masks[w] as number) & ~open & (~pressing(other) | pressing(to));
+    }
+    s.setMask(mask, plane, 0);
+  }
+  const led = [...edges.reliefs, ...edges.loadPilots, ...edges.backs];
+  const mayOpen = led.some(({ mask }) => s.maskLive[mask] === 1);
   if (net.valves.length > 0 || mayOpen) {
     const valveExits = softExits.slice();
     s.spread(valveExits, edges.valveBackward, { links: links.pull, fromTank: true });
@@ -199,7 +210,7 @@ export function reach(
     s.spread(valvePressed, edges.valveForward, { gate: notFreeToTank, links: links.push });
     // A state in which none of them may open must not hang on the others of its block.
     const live = new Uint32Array(s.width);
-    for (const { mask } of [...edges.reliefs, ...edges.loadPilots]) {
+    for (const { mask } of led) {
       for (let w = 0; w < s.width; w++) live[w] = (live[w] as number) | (s.masks[mask * s.width + w] as number);
     }
     if (net.valves.length === 0) for (const field of [valveExits, valvePressed]) keep(field, live, s.width);

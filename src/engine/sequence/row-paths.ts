@@ -2,6 +2,7 @@ import { has, wordsFor } from '../../base/bits.ts';
 import type { Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
 import type { Adjacency, EdgeSet } from '../paths/edges.ts';
+import { sourceLines } from '../paths/reach.ts';
 import type { PathConditions } from '../paths/reach.ts';
 
 /** The open paths of one row, by themselves: lock checks that a pilot may open are listed apart. */
@@ -34,6 +35,7 @@ export class RowPathsCache {
   readonly net: Network;
   readonly edges: EdgeSet;
   readonly #leaking: readonly number[];
+  readonly #sources: readonly number[];
   readonly #ends: readonly number[];
   readonly #rows = new Map<number, RowPaths>();
 
@@ -41,6 +43,7 @@ export class RowPathsCache {
     this.net = net;
     this.edges = edges;
     this.#ends = [...tankLines(net), ...points];
+    this.#sources = sourceLines(net, { pumpsRunning, places: [] }).filter((line) => line >= 0);
     this.#leaking = pumpsRunning ? [] : net.pumps.flatMap((pump) => (pump.tightWhenStopped ? [] : [pump.outlet]));
   }
 
@@ -56,10 +59,23 @@ export class RowPathsCache {
     const { net, edges } = this;
     const onward = openEdges(edges.forward, edges, row);
     const back = openEdges(edges.backward, edges, row);
-    const firm = mark(back, this.#ends, net);
+    const { ways, vents } = ledWays(edges, row);
+    let firm = mark(back, this.#ends, net);
+    // A shuttle valve lets back through an inlet once the other is let down, and that may let down the other of the next.
+    for (let left = vents, grown = true; grown && left.length > 0;) {
+      const fed = mark(onward, this.#sources, net);
+      const open = left.filter(({ line }) => firm[line] === 1 && fed[line] !== 1);
+      left = left.filter((way) => !open.includes(way));
+      for (const { from, to } of open) {
+        onward[from]?.push(to);
+        back[to]?.push(from);
+      }
+      firm = mark(back, this.#ends, net);
+      grown = open.length > 0;
+    }
     const toTank = this.#leaking.length === 0 ? firm : mark(back, [...this.#ends, ...this.#leaking], net);
     const fills = mark(onward, tankLines(net), net);
-    return { onward, pilots: pilotWays(edges, row), toTank, firm, fills };
+    return { onward, pilots: ways, toTank, firm, fills };
   }
 }
 
@@ -77,18 +93,32 @@ function openEdges(list: Adjacency, edges: EdgeSet, row: number): number[][] {
   });
 }
 
-function pilotWays(edges: EdgeSet, row: number): PilotWay[] {
+/** A way that stands open while `line` is let down. */
+interface VentWay {
+  readonly line: number;
+  readonly from: number;
+  readonly to: number;
+}
+
+/** Ways that another line opens: by its pressure, or by being let down. */
+function ledWays(edges: EdgeSet, row: number): { ways: PilotWay[]; vents: VentWay[] } {
   const { forward, masks, pilots } = edges;
-  const found: PilotWay[] = [];
-  for (let line = 0; line + 1 < forward.start.length; line++) {
-    for (let e = forward.start[line] as number; e < (forward.start[line + 1] as number); e++) {
+  const ways: PilotWay[] = [];
+  const vents: VentWay[] = [];
+  if (pilots.length === 0) return { ways, vents };
+  for (let from = 0; from + 1 < forward.start.length; from++) {
+    for (let e = forward.start[from] as number; e < (forward.start[from + 1] as number); e++) {
       const index = (forward.mask[e] as number) - masks.length;
       const spec = pilots[index];
       const base = spec && masks[spec.base];
-      if (base && has(base, row)) found.push({ index, pilot: spec.line, from: line, to: forward.to[e] as number });
+      if (!base || !has(base, row)) continue;
+      const to = forward.to[e] as number;
+      if (spec.vented) vents.push({ line: spec.line, from, to });
+      else ways.push({ index, pilot: spec.line, from, to });
     }
   }
-  return found.sort((a, b) => a.index - b.index);
+  ways.sort((a, b) => a.index - b.index);
+  return { ways, vents };
 }
 
 /** Marks everything that can be reached from `from`; a tank is not passed through. */

@@ -107,6 +107,10 @@ export function solveOne(
       const pressed = on(r.fromSource, path.pilot) || on(r.underPressure, path.pilot);
       if (!pressed || !on(r.notFreeToTank, path.pilot)) return [];
     }
+    if (path.vent >= 0) {
+      const pressed = on(r.fromSource, path.vent) || on(r.underPressure, path.vent);
+      if (pressed || !on(r.toTank, path.vent)) return [];
+    }
     const ahead: Hop = { from: path.from, to: path.to, path, fromPort: path.fromPort, toPort: path.toPort };
     if (path.oneWay) return [ahead];
     return [ahead, { from: path.to, to: path.from, path, fromPort: path.toPort, toPort: path.fromPort }];

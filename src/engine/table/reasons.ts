@@ -48,9 +48,11 @@ export function waySteps(state: OneState, way: Way): Step[] {
     const kind =
       hop.path.pilot >= 0
         ? `is held open by ${lineName(state, hop.path.pilot)} and passes`
-        : hop.path.throttled
-          ? 'throttles'
-          : 'passes';
+        : hop.path.vent >= 0
+          ? `has nothing pressing at its other inlet (${lineName(state, hop.path.vent)}) and passes`
+          : hop.path.throttled
+            ? 'throttles'
+            : 'passes';
     return step(
       `${through} ${kind} oil from ${hop.fromPort} to ${hop.toPort}, into ${lineName(state, hop.to)}.`,
       [hop.from, hop.to],

@@ -3,7 +3,7 @@ import type { Network } from '../../../src/network/network.ts';
 
 /**
  * Open paths of one state the slow and plain way: a graph built for this state alone, searched by the
- * graph library. Lock checks are settled round by round, each round with graphs built anew.
+ * graph library. Lock checks and shuttle valves are settled round by round, each round with graphs built anew.
  */
 export interface PlainState {
   readonly fromSource: readonly boolean[];
@@ -18,11 +18,11 @@ export function plainState(net: Network, positions: readonly number[], pumpsRunn
   for (let round = 0; round < 2 * net.paths.length + 4; round++) {
     const result = search(net, positions, pumpsRunning, open);
     const next = new Set(
-      net.paths.flatMap((path, i) =>
-        path.pilot >= 0 && (result.fromSource[path.pilot] || result.under[path.pilot]) && !result.freeToTank[path.pilot]
-          ? [i]
-          : [],
-      ),
+      net.paths.flatMap((path, i) => {
+        const pressed = (line: number): boolean | undefined => result.fromSource[line] || result.under[line];
+        const led = path.pilot >= 0 && pressed(path.pilot) && !result.freeToTank[path.pilot];
+        return led || (path.vent >= 0 && !pressed(path.vent) && result.toTank[path.vent]) ? [i] : [];
+      }),
     );
     if (next.size === open.size && [...next].every((i) => open.has(i))) return { ...result, settled: true };
     open = next;
@@ -39,7 +39,7 @@ function search(net: Network, positions: readonly number[], pumpsRunning: boolea
   });
   net.paths.forEach((path, i) => {
     if (path.input >= 0 && ((path.positions >> (positions[path.input] ?? 0)) & 1) === 0) return;
-    if (path.pilot >= 0 && !openPilots.has(i)) return;
+    if ((path.pilot >= 0 || path.vent >= 0) && !openPilots.has(i)) return;
     for (const graph of path.throttled ? [all] : [all, free]) {
       graph.setEdge(String(path.from), String(path.to), '', `${i}>`);
       if (!path.oneWay) graph.setEdge(String(path.to), String(path.from), '', `${i}<`);

@@ -29,10 +29,38 @@ export const rowOf = (net: Network, positions: readonly number[]): number =>
 type Hop = readonly [from: number, to: number];
 
 function hops(net: Network, row: number, pilots: (path: NetPath) => boolean): Hop[] {
+  const back = drained(net, row);
+  return waysOf(net, row, (path) => (path.vent >= 0 ? back.has(path) : pilots(path)));
+}
+
+/** Ways back through shuttle valves: the other inlet is open to tank, and no charged accumulator feeds it. */
+function drained(net: Network, row: number): Set<NetPath> {
+  const open = new Set<NetPath>();
+  if (net.paths.every((path) => path.vent < 0)) return open;
+  for (let size = -1; size !== open.size;) {
+    size = open.size;
+    const ways = waysOf(net, row, (path) => open.has(path));
+    const tank = closure(
+      tanksOf(net),
+      ways.map(([from, to]): Hop => [to, from]),
+      () => true,
+    );
+    const tanks = tanksOf(net);
+    const fed = closure(
+      net.accumulators.filter((store) => store.charged).map((store) => store.line),
+      ways.filter(([from]) => !tanks.includes(from)),
+      () => true,
+    );
+    for (const path of net.paths) if (path.vent >= 0 && tank.has(path.vent) && !fed.has(path.vent)) open.add(path);
+  }
+  return open;
+}
+
+function waysOf(net: Network, row: number, led: (path: NetPath) => boolean): Hop[] {
   const at = positionsOf(net, row);
   return net.paths.flatMap((path): Hop[] => {
     if (path.input >= 0 && ((path.positions >> (at[path.input] ?? 0)) & 1) === 0) return [];
-    if (path.pilot >= 0 && !pilots(path)) return [];
+    if ((path.pilot >= 0 || path.vent >= 0) && !led(path)) return [];
     return path.oneWay || path.pilot >= 0
       ? [[path.from, path.to]]
       : [

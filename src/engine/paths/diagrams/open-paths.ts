@@ -77,9 +77,12 @@ export function openPathsOver<S extends SetAlgebra>(
   for (let round = 0; ; round++) {
     const found = search(net, sets, edges, links, conditions);
     let changed = false;
-    const next = edges.pilots.map(({ line, base, mask }) => {
+    const next = edges.pilots.map(({ line, base, mask, vented }) => {
       const pressed = sets.or(found.fromSource[line] as Diagram, found.underPressure[line] as Diagram);
-      const open = sets.and(sets.minus(pressed, found.freeToTank[line] as Diagram), base);
+      const acts = vented
+        ? sets.minus(found.toTank[line] as Diagram, pressed)
+        : sets.minus(pressed, found.freeToTank[line] as Diagram);
+      const open = sets.and(acts, base);
       const before = edges.open[mask] as Diagram;
       if (open !== before) {
         changed = true;

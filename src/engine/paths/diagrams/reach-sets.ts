@@ -118,7 +118,13 @@ export function reachSets(net: Network, conditions: PathConditions, paths: OpenP
       spread(field, { edges: edges.forward, gate: notToTank, links: links.push });
       for (const { line, mask } of edges.loadPilots) edges.open[mask] = at(field, line);
     }
-    const mayOpen = or(...[...edges.reliefs, ...edges.loadPilots].map(({ mask }) => edges.open[mask] as Diagram));
+    for (const { pilot, to, other, mask } of edges.backs) {
+      const pressing = (line: number): Diagram => or(at(fromSource, line), at(underPressure, line));
+      const shut = paths.sets.not(edges.open[edges.pilots[pilot]?.mask ?? 0] as Diagram);
+      edges.open[mask] = and(shut, or(not(pressing(other)), pressing(to)));
+    }
+    const led = [...edges.reliefs, ...edges.loadPilots, ...edges.backs];
+    const mayOpen = or(...led.map(({ mask }) => edges.open[mask] as Diagram));
     const live = net.valves.length > 0 ? ALL : mayOpen;
     if (live === NONE) return undefined;
     const exits = spread([...softExits], { edges: edges.valveBackward, links: links.pull, fromTank: true });

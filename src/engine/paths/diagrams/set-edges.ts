@@ -1,5 +1,5 @@
 import type { Network } from '../../../network/network.ts';
-import type { Adjacency } from '../edges.ts';
+import type { Adjacency, Back } from '../edges.ts';
 import type { Diagram } from './diagrams.ts';
 import { ALL, NONE } from './diagrams.ts';
 import type { SetAlgebra } from './set-algebra.ts';
@@ -11,10 +11,16 @@ export type LineSets = Diagram[];
 export interface SetEdges {
   /** By mask number; 0 is always open. Those of lock checks come last and change while they settle. */
   readonly open: Diagram[];
-  readonly pilots: readonly { readonly line: number; readonly base: Diagram; readonly mask: number }[];
+  readonly pilots: readonly {
+    readonly line: number;
+    readonly base: Diagram;
+    readonly mask: number;
+    readonly vented: boolean;
+  }[];
   /** As in `EdgeSet`: ways that pressures may open, and the masks of those that loads or back pressure open. */
   readonly reliefs: readonly { readonly relief: number; readonly mask: number }[];
   readonly loadPilots: readonly { readonly line: number; readonly mask: number }[];
+  readonly backs: readonly Back[];
   readonly valveForward: Adjacency;
   readonly valveBackward: Adjacency;
   readonly forward: Adjacency;
@@ -40,12 +46,14 @@ export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
     readonly from: number;
     readonly to: number;
     readonly free: boolean;
+    readonly vented: boolean;
   }[] = [];
   for (const path of net.paths) {
     const base = path.input < 0 ? ALL : sets.literal(path.input, path.positions);
     const free = !path.throttled;
-    if (path.pilot >= 0) {
-      piloted.push({ base, line: path.pilot, from: path.from, to: path.to, free });
+    if (path.pilot >= 0 || path.vent >= 0) {
+      const vented = path.vent >= 0;
+      piloted.push({ base, line: vented ? path.vent : path.pilot, from: path.from, to: path.to, free, vented });
       continue;
     }
     if (base === NONE) continue;
@@ -58,18 +66,23 @@ export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
     edges.push({ from: path.from, to: path.to, mask, free });
     if (!path.oneWay) edges.push({ from: path.to, to: path.from, mask, free });
   }
-  const pilots = piloted.map(({ base, line, from, to, free }) => {
+  const pilots = piloted.map(({ base, line, from, to, free, vented }) => {
     const mask = open.length;
     open.push(NONE);
     edges.push({ from, to, mask, free });
-    return { line, base, mask };
+    return { line, base, mask, vented };
   });
   const closed = (): number => open.push(NONE) - 1;
   const reliefs = net.reliefs.flatMap(({ to }, relief) => (net.lines[to]?.tank ? [] : [{ relief, mask: closed() }]));
   const loaded = net.actuators.some(({ push }) => push.way !== 'none');
-  const loadPilots = loaded ? piloted.map(({ line }) => ({ line, mask: closed() })) : [];
+  const held = loaded ? piloted.filter(({ vented }) => !vented) : [];
+  const loadPilots = held.map(({ line }) => ({ line, mask: closed() }));
+  const backs = piloted.flatMap(({ to, line, vented }, pilot) =>
+    vented ? [{ pilot, to, other: line, mask: closed() }] : [],
+  );
   const valves: Edge[] = [
-    ...loadPilots.map(({ mask }, i) => ({ from: piloted[i]?.from ?? 0, to: piloted[i]?.to ?? 0, mask, free: false })),
+    ...backs.map(({ pilot, to, mask }) => ({ from: piloted[pilot]?.from ?? 0, to, mask, free: false })),
+    ...held.map(({ from, to }, i) => ({ from, to, mask: loadPilots[i]?.mask ?? 0, free: false })),
     ...net.valves
       .filter((valve) => valve.duty !== 'closes')
       .map(({ from, to }) => ({ from, to, mask: 0, free: false })),
@@ -88,6 +101,7 @@ export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
     pilots,
     reliefs,
     loadPilots,
+    backs,
     valveForward: adjacency(net.lines.length, [...edges, ...valves]),
     valveBackward: adjacency(net.lines.length, [...reversed, ...turned]),
     forward: adjacency(lines, edges),
