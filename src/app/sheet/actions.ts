@@ -20,6 +20,7 @@ import {
   sayThings,
   setLever,
   startLine,
+  turnInHand,
   writeAt,
 } from './hand.ts';
 import { arrangeActions } from './arrange-actions.ts';
@@ -167,6 +168,7 @@ export const sheetActions: SheetActions = {
       desk.gesture = { ...gesture, turn };
       return;
     }
+    if (gesture.type === 'place-several') return turnInHand(gesture, quarter);
     if (refuseEmpty()) return;
     attempt(
       () => turnParts(editor.circuit, selectedParts(), quarter, drawing.places),
@@ -178,6 +180,10 @@ export const sheetActions: SheetActions = {
     const { gesture } = desk;
     if (gesture.type === 'place') {
       desk.gesture = { ...gesture, flip: !gesture.flip };
+      return true;
+    }
+    if (gesture.type === 'place-several') {
+      turnInHand(gesture, 'flip');
       return true;
     }
     // With nothing to flip the key is free for others.

@@ -6,8 +6,10 @@ import { paste } from '../../circuit/build.ts';
 import { withGroups } from '../../circuit/groups.ts';
 import { labelOf } from '../../circuit/model.ts';
 import type { Circuit } from '../../circuit/model.ts';
+import { onSheet } from '../../circuit/sheets.ts';
 import { slideBends } from '../../drawing/bending.ts';
 import type { Insertion } from '../../drawing/through.ts';
+import { turnedCircuit } from '../../drawing/turned-circuit.ts';
 import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { withPlaces as keepPlaces } from '../state/places.ts';
@@ -19,9 +21,10 @@ import { attempt, tryTo } from './attempt.ts';
 import { joinEnds, sayEnd } from './connecting.ts';
 import { counted } from './counted.ts';
 import { desk } from './desk.svelte.ts';
-import type { End } from './desk.svelte.ts';
+import type { End, Gesture } from './desk.svelte.ts';
 import { insertHint, insertionInHand, sayLine, withInsertion } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { shownSheet } from './sheet-shown.svelte.ts';
 import { saySpot } from './spot-text.ts';
 import { snap, toSheet } from './viewport.ts';
 import { zoneAt } from './zones.ts';
@@ -53,11 +56,17 @@ export function takeUpSeveral(title: string, fragment: Circuit, at?: Point): voi
   desk.say(`${title} in hand.`);
 }
 
+/** The circuit in the hand, turned or mirrored before it is put down. */
+export function turnInHand(gesture: Extract<Gesture, { type: 'place-several' }>, how: 90 | 270 | 'flip'): void {
+  desk.gesture = { ...gesture, fragment: turnedCircuit(gesture.fragment, how) };
+  desk.say(`${gesture.title} ${how === 'flip' ? 'flipped' : 'turned'}.`);
+}
+
 export function putDownSeveral(at: Point, again = false): void {
   const { gesture } = desk;
   if (gesture.type !== 'place-several') return;
   const where = snap(at);
-  const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y, namingSettings));
+  const put = tryTo(() => paste(editor.circuit, gesture.fragment, where.x, where.y, namingSettings, shownSheet.now));
   if (!put) return;
   if (!again) desk.rest();
   if (
@@ -88,6 +97,7 @@ export function putDown(at: Point, again = false): void {
   const put = tryTo(() =>
     placePart(editor.circuit, kind.prefix, {
       kind: kind.kind,
+      ...onSheet(editor.circuit, shownSheet.now),
       at: into?.at ?? snap(at),
       ...(turn !== 0 && { turn }),
       ...(gesture.flip && { flip: true }),
@@ -105,7 +115,7 @@ export function putDown(at: Point, again = false): void {
 }
 
 export function startLine(from: End, held: boolean): void {
-  desk.gesture = { type: 'connect', from, to: from.at, over: undefined, held };
+  desk.gesture = { type: 'connect', from: { ...from, sheet: shownSheet.now }, to: from.at, over: undefined, held };
   if (!held) desk.say(`Line from ${sayEnd(editor.circuit, from)}. Go to another port or line.`);
 }
 
@@ -117,7 +127,7 @@ export function finishLine(to: End): void {
   const { circuit } = editor;
   const done = attempt(
     // With every part in its shown place, so that a line is split on the stretch that was hit.
-    () => joinEnds(withPlaces(circuit), from, to),
+    () => joinEnds(withPlaces(circuit), from, { ...to, sheet: shownSheet.now }),
     `${sayEnd(circuit, from)} joined to ${sayEnd(circuit, to)}.`,
   );
   if (done && to.type === 'port') desk.cursor = { type: 'port', ...to.ref };
@@ -164,7 +174,12 @@ export interface ShiftOptions {
   readonly alone?: boolean;
 }
 
-export function commitShift(dx: number, dy: number, burst: string | undefined, { into, alone = false }: ShiftOptions = {}): void {
+export function commitShift(
+  dx: number,
+  dy: number,
+  burst: string | undefined,
+  { into, alone = false }: ShiftOptions = {},
+): void {
   const { parts, labels } = editor.selection;
   const [first] = parts;
   const { circuit } = editor;

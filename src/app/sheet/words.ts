@@ -33,7 +33,7 @@ export function hint(circuit: Circuit, selected: number): string {
   const inserts = insertHint();
   if (inserts !== undefined) return inserts;
   if (gesture.type === 'place-several')
-    return `Click to put ${gesture.title.toLowerCase()} down, or type its position. Shift for several, Escape puts it away.`;
+    return `Click to put ${gesture.title.toLowerCase()} down, or type its position. Shift for several, T turns, F flips, Escape puts it away.`;
   if (gesture.type === 'text') return 'Click where the text is to begin. Escape gives it up.';
   if (gesture.type === 'bend')
     return gesture.held
