@@ -19,6 +19,8 @@ export const LIMITS = {
   sheets: 200,
   /** Valves of the circuit's own make. */
   readyMadeValves: 200,
+  /** Circuits in one file of them, and in the tray. */
+  readyMadeCircuits: 60,
   /** Modules from the sheet's origin. */
   coordinate: 100_000,
   id: 100,

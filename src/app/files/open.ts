@@ -1,16 +1,17 @@
 import { begin } from '../../circuit/history.ts';
 import type { History } from '../../circuit/history.ts';
+import { isReadyMadeFile } from '../../circuit/ready-made-file.ts';
 import { openCircuit } from '../../parts/open.ts';
 import { editor, EMPTY } from '../state/editor.svelte.ts';
 import type { OpenFile } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { seenOnDisk } from './disk.ts';
+import { askForFile } from './pick.ts';
+import { takeReadyMade } from './ready-made.ts';
 
 /** Larger than any circuit: what is bigger is not one, and reading it would stop the screen. */
 const LARGEST = 8 * 1024 * 1024;
-
-export const FILE_TYPES = [{ description: 'Spooltable circuit', accept: { 'application/json': ['.json'] } }] as const;
 
 type Levers = Readonly<Record<string, number>>;
 
@@ -78,6 +79,7 @@ export async function openBlob(blob: File, handle?: FileSystemFileHandle): Promi
   }
   try {
     const text = await blob.text();
+    if (isReadyMadeFile(text)) return takeReadyMade(text, blob.name);
     if (handle) seenOnDisk(handle, blob.lastModified);
     return openText(text, { name: blob.name, handle });
   } catch {
@@ -91,27 +93,8 @@ export async function openBlob(blob: File, handle?: FileSystemFileHandle): Promi
 }
 
 export async function openFromDisk(): Promise<void> {
-  if (window.showOpenFilePicker) {
-    const picked = await pick(() => window.showOpenFilePicker?.({ types: FILE_TYPES }));
-    const [handle] = picked ?? [];
-    if (handle) await openBlob(await handle.getFile(), handle);
-    return;
-  }
-  const input = document.createElement('input');
-  input.type = 'file';
-  input.accept = '.json,application/json';
-  input.hidden = true;
-  input.addEventListener('cancel', () => {
-    input.remove();
-  });
-  input.addEventListener('change', () => {
-    const [blob] = input.files ?? [];
-    input.remove();
-    if (blob) void openBlob(blob);
-  });
-  // Outside the page the browser may clear it away while its window is still open.
-  document.body.append(input);
-  input.click();
+  const picked = await askForFile();
+  if (picked) await openBlob(picked.blob, picked.handle);
 }
 
 /** A file dropped on the page, with its place on disk where the browser tells it, so that Save writes there. */
@@ -121,14 +104,4 @@ export async function openDropped(transfer: DataTransfer | null): Promise<void> 
   const item = [...(transfer?.items ?? [])].find(({ kind }) => kind === 'file');
   const handle = await item?.getAsFileSystemHandle?.().catch(() => null);
   await openBlob(blob, handle instanceof FileSystemFileHandle ? handle : undefined);
-}
-
-/** Undefined when the person closes the system's window without picking. */
-export async function pick<T>(ask: () => Promise<T> | undefined): Promise<T | undefined> {
-  try {
-    return await ask();
-  } catch (error) {
-    if (error instanceof DOMException && error.name === 'AbortError') return undefined;
-    throw error;
-  }
 }

@@ -2,7 +2,7 @@ import { writeCircuit } from '../../circuit/file.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { notices } from '../state/notices.svelte.ts';
 import { look, writtenByOthers } from './disk.ts';
-import { FILE_TYPES, pick } from './open.ts';
+import { FILE_TYPES, pick } from './pick.ts';
 
 const ENDING = '.spool.json';
 
@@ -25,7 +25,8 @@ export function download(name: string, content: string | Blob, type: string): vo
   setTimeout(() => URL.revokeObjectURL(url), 60_000);
 }
 
-async function writeTo(handle: FileSystemFileHandle, text: string): Promise<boolean> {
+/** False = the system refused it, which is then said. */
+export async function writeTo(handle: FileSystemFileHandle, text: string): Promise<boolean> {
   try {
     const stream = await handle.createWritable();
     await stream.write(text);

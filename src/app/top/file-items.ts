@@ -2,6 +2,7 @@ import { EXAMPLES } from '../files/examples.ts';
 import { newCircuit, openFromDisk, openText } from '../files/open.ts';
 import { recent } from '../files/recent.svelte.ts';
 import { save, saveAs } from '../files/save.ts';
+import { loadReadyMade, saveReadyMade } from '../files/ready-made.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
 
 export const fileItems = (): MenuItem[] => [
@@ -9,6 +10,13 @@ export const fileItems = (): MenuItem[] => [
   { text: 'Open…', keys: 'Ctrl O', run: () => void openFromDisk() },
   { text: 'Save', keys: 'Ctrl S', run: () => void save() },
   { text: 'Save as…', keys: 'Ctrl Shift S', run: () => void saveAs() },
+  { heading: 'Your own ready-made circuits' },
+  { text: 'Save them to a file…', run: () => void saveReadyMade() },
+  {
+    text: 'Load them from a file…',
+    hint: 'Or one circuit file, as a ready-made circuit',
+    run: () => void loadReadyMade(),
+  },
 ];
 
 export const labelledExamples = (): MenuItem[] =>
