@@ -24,8 +24,15 @@ export class RowWindow {
 
   first = $derived(Math.max(0, Math.floor(this.top / ROW_HEIGHT) - SPARE));
   last = $derived(Math.min(this.count, Math.ceil((this.top + this.height) / ROW_HEIGHT) + SPARE));
-  /** Where the first drawn row stands in the scrolled element. */
-  offset = $derived(this.first * ROW_HEIGHT - this.top + this.scrollTop);
+  /** Rows that are drawn at most. A row that scrolls out lends its place in the page to one that comes in. */
+  slots = $derived(Math.ceil(this.height / ROW_HEIGHT) + 1 + 2 * SPARE);
+  /**
+   * Rows are laid out from this one on. It changes once in a windowful, so that scrolling moves only those rows that
+   * come in.
+   */
+  base = $derived(this.first - (this.first % this.slots));
+  /** Where the row `base` stands in the scrolled element. */
+  offset = $derived(this.base * ROW_HEIGHT - this.top + this.scrollTop);
 
   scroller: HTMLElement | undefined;
 
