@@ -4,6 +4,7 @@ import { bad, good } from '../base/result.ts';
 import type { Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import type { Diagram } from '../engine/paths/diagrams/diagrams.ts';
+import { TooManyCubes } from '../engine/table/fold/cover.ts';
 import { foldOutcomes } from '../engine/table/fold/folded-table.ts';
 import { supportOf, Unions } from '../engine/table/fold/influence.ts';
 import { jointOutcomes } from '../engine/table/fold/outcome-sets.ts';
@@ -18,6 +19,8 @@ import type { Conditions } from './results.ts';
 
 /** Mixtures of outcomes that a group may have; with more, its fold would be as long as the table. */
 export const MOST_MIXTURES = 256;
+/** Rows for one outcome: nobody reads more, and finding them would take seconds. */
+export const MOST_FOLDED = 3000;
 
 /**
  * The table folded by an actuator, pump, line or group: the fewest rows found that say the same. `table`: the table
@@ -38,7 +41,7 @@ export function foldOf(
 export function foldFrom({ net, source, listed }: Outcomes, by: FoldBy, budget: Budget): Result<FoldAnswer> {
   if (budget.cancelled()) throw new Cancelled();
   const names = namesOfNetwork(net);
-  const found = entangled(() => {
+  const found = described(() => {
     const groups = groupsOf(source, names);
     const items = itemsOf(by, names, groups);
     const joint = jointOutcomes(
@@ -49,7 +52,7 @@ export function foldFrom({ net, source, listed }: Outcomes, by: FoldBy, budget: 
     if (joint === undefined) return undefined;
     budget.progress(0.3);
     const usual = names.inputs.map((input) => input.rest ?? 0);
-    const { rows, otherwise, otherwiseCount, least } = foldOutcomes(source.sets, joint, usual);
+    const { rows, otherwise, otherwiseCount, least } = foldOutcomes(source.sets, joint, usual, MOST_FOLDED);
     const rest = joint.find(({ word }) => word === otherwise)?.set as Diagram;
     return {
       by,
@@ -72,6 +75,20 @@ export function foldFrom({ net, source, listed }: Outcomes, by: FoldBy, budget: 
         remedy: 'Fold by one of them.',
       })
     : good(value);
+}
+
+/** Sets that do not fit, or take too many rows, are a problem in words. */
+function described<T>(work: () => T): Result<T> {
+  try {
+    return entangled(work);
+  } catch (error) {
+    if (!(error instanceof TooManyCubes)) throw error;
+    return bad({
+      where: 'fold',
+      what: `One of the verdicts here takes more than ${MOST_FOLDED.toLocaleString('en')} rows of levers to describe, so a fold would be no help.`,
+      remedy: 'Hold some levers where they stand and fold what is left, or ask a question about the combinations.',
+    });
+  }
 }
 
 /** Actuators that share a valve, directly or over others; those that share none are in no group. */

@@ -1,13 +1,15 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { networkOf, tabulate } from '../../src/analysis/analyse.ts';
-import { foldByLabel, foldOf } from '../../src/analysis/fold.ts';
+import { foldByLabel, foldFrom, foldOf, MOST_FOLDED } from '../../src/analysis/fold.ts';
 import type { FoldAnswer, FoldBy } from '../../src/analysis/fold-results.ts';
+import { outcomesOf } from '../../src/analysis/outcomes.ts';
 import { Cancelled, unlimited } from '../../src/base/budget.ts';
 import type { Circuit } from '../../src/circuit/model.ts';
 import { namesOfNetwork } from '../../src/engine/table/rules/names.ts';
 import { StateTable } from '../../src/engine/table/state-table.ts';
 import { family } from '../bench/circuits.ts';
+import { randomPanel } from '../bench/random-panel.ts';
 import { circuit } from '../notation.ts';
 import { randomCircuit } from '../random-circuit.ts';
 
@@ -116,6 +118,27 @@ test('a panel too large to list is folded from open paths, and says so', () => {
   expect(held).toEqual([
     { positions: Array.from({ length: 20 }, (_, i) => (i === 7 ? 0b010 : 0b111)), outcome: ['held'], count: 3n ** 19n },
   ]);
+});
+
+test('a fold with more rows than anybody reads is refused in words', () => {
+  const drawn = randomPanel(40, 5);
+  const outcomes = outcomesOf(drawn, RUNNING, unlimited);
+  if (!outcomes.ok) throw new Error('refused');
+  const folds = outcomes.value.net.actuators.map((_, index) =>
+    foldFrom(outcomes.value, { of: 'actuator', index }, unlimited),
+  );
+  const refused = folds.flatMap((found) => (found.ok ? [] : found.problems));
+  expect(refused.length).toBeGreaterThan(0);
+  expect(refused.length).toBeLessThan(folds.length);
+  for (const { what, remedy } of refused) {
+    expect(what).toContain(`more than ${MOST_FOLDED.toLocaleString('en')} rows`);
+    expect(remedy).toContain('Hold some levers');
+  }
+  for (const found of folds) {
+    if (!found.ok) continue;
+    const words = new Set(found.value.rows.map(({ outcome }) => outcome.join()));
+    expect(found.value.rows.length).toBeLessThanOrEqual(words.size * MOST_FOLDED);
+  }
 });
 
 test('a fold that nobody waits for any more is given up', () => {

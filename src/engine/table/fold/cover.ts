@@ -10,11 +10,22 @@ const MOST_GREATEST = 300;
 /** The same for sets with more combinations. */
 const MOST_LISTED = 4096n;
 
-/** A description of the set by few cubes, checked to be equal to it. */
-export function coverOf(sets: Diagrams, set: Diagram): Cover {
+/** The set takes more cubes than were allowed. */
+export class TooManyCubes extends Error {
+  constructor(most: number) {
+    super(`A description takes more than ${most.toLocaleString('en')} rows.`);
+    this.name = 'TooManyCubes';
+  }
+}
+
+/**
+ * A description of the set by few cubes, checked to be equal to it. Throws `TooManyCubes` where the first one found
+ * has more than `most`: letting them grow would take long, and leave many.
+ */
+export function coverOf(sets: Diagrams, set: Diagram, most = Infinity): Cover {
   if (set === NONE) return { cubes: [], least: true };
   if (set === ALL) return { cubes: [sets.radices.map(anyPosition)], least: true };
-  const quick = irredundant(sets, set, expandAll(sets, set, dropOverlaps(sets, set)));
+  const quick = irredundant(sets, set, expandAll(sets, set, dropOverlaps(sets, set, most)));
   const found = shortest(sets, set, quick);
   const cubes = [...found.cubes].sort(compareCubes);
   const together = cubes.reduce((all, cube) => sets.or(all, cubeSet(sets, cube)), NONE);
@@ -34,7 +45,7 @@ function shortest(sets: Diagrams, set: Diagram, quick: readonly Cube[]): Cover {
  * Cubes that make up the set, by branches: what all branches share comes first with any position, then
  * each group of equal branches with the rest of its own (Minato and Morreale, for several positions).
  */
-function dropOverlaps(sets: Diagrams, set: Diagram): Cube[] {
+function dropOverlaps(sets: Diagrams, set: Diagram, most: number): Cube[] {
   const any = sets.radices.map(anyPosition);
   const known = new Map<string, { readonly cubes: readonly Cube[]; readonly set: Diagram }>();
   /** Cubes that cover `must` and stay within `may`. */
@@ -72,6 +83,7 @@ function dropOverlaps(sets: Diagrams, set: Diagram): Cube[] {
       for (let q = 0; q < arity; q++)
         if (((positions >>> q) & 1) === 1) covered[q] = sets.or(covered[q] as Diagram, part.set);
     }
+    if (cubes.length > most) throw new TooManyCubes(most);
     const answer = { cubes, set: sets.make(level, covered) };
     known.set(key, answer);
     return answer;

@@ -37,12 +37,14 @@ export interface FoldedTable {
 
 /**
  * Outcomes exclude each other and leave no combination out, which is checked, as is every description against its
- * set. The commonest outcome is the rest; of several the one of the combination `usual`, or else the first.
+ * set. The commonest outcome is the rest; of several the one of the combination `usual`, or else the first. Throws
+ * `TooManyCubes` where one outcome takes more than `most` rows.
  */
 export function foldOutcomes<W>(
   sets: Diagrams,
   outcomes: readonly { readonly word: W; readonly set: Diagram }[],
   usual: readonly number[] = [],
+  most = Infinity,
 ): Folded<W> {
   const counted = outcomes.map((outcome) => ({ ...outcome, count: sets.count(outcome.set) }));
   const together = outcomes.reduce((all, { set }) => sets.or(all, set), NONE);
@@ -57,7 +59,7 @@ export function foldOutcomes<W>(
   let least = true;
   const rows = counted.flatMap(({ word, set }) => {
     if (set === NONE || word === rest.word) return [];
-    const cover = coverOf(sets, set);
+    const cover = coverOf(sets, set, most);
     if (!cover.least) least = false;
     return cover.cubes.map((cube) => ({ cube, outcome: word, count: cubeCount(cube) }));
   });

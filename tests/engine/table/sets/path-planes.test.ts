@@ -9,6 +9,7 @@ import type { Plane } from '../../../../src/engine/table/table-data.ts';
 import { tabulate } from '../../../../src/engine/table/tabulate.ts';
 import type { Network } from '../../../../src/network/network.ts';
 import { FAMILIES, family } from '../../../bench/circuits.ts';
+import { randomPanel } from '../../../bench/random-panel.ts';
 import { randomCircuit } from '../../../random-circuit.ts';
 
 const KINDS = [
@@ -62,6 +63,12 @@ test(
     expect(planes).toBeGreaterThan(3_000);
   },
 );
+
+test('panels as somebody might build them, at random, running and stopped', { timeout: 60_000 }, () => {
+  let planes = 0;
+  for (let seed = 1; seed <= 40; seed++) planes += compare(networkOf(randomPanel(6, seed)), seed % 3 !== 0);
+  expect(planes).toBeGreaterThan(3_000);
+});
 
 test('the valve families, running and stopped, over several words and blocks', () => {
   for (const name of FAMILIES) {
