@@ -2,7 +2,7 @@ import type { NetDivider } from '../../network/network.ts';
 import type { FlowBuilder } from './builder.ts';
 
 /** Pa between the ports of a gear section at which its slip is given. */
-const SLIP_AT = 100e5;
+export const SLIP_AT = 100e5;
 
 /**
  * A flow divider as the solver sees it; the branch that stands for the way to each outlet, −1 where none does.

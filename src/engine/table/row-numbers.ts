@@ -1,6 +1,7 @@
+import { SLIP_AT } from '../flow/dividers.ts';
 import type { FlowModel } from '../flow/compile.ts';
 import type { FlowResult, Solved } from '../flow/result.ts';
-import type { Network } from '../../network/network.ts';
+import type { NetPath, Network } from '../../network/network.ts';
 import type { PressureAnswer, PressureSolver } from './resolve.ts';
 
 /** SI numbers of one row, by the order of the table's lines, actuators and pumps. */
@@ -69,7 +70,9 @@ export function rowNumbers(solver: PressureSolver, row: number, answer = solver.
     return { row, status: result.status, words: result.words, ...NOTHING, power };
   }
   const { net, model } = solver;
-  const paths = net.paths.map((_, i) => answer.flows[branchOf(net, model, i)] ?? 0);
+  const paths = net.paths.map(
+    (path, i) => answer.flows[branchOf(net, model, i)] ?? gearFlow(solver, result, path.divider) ?? 0,
+  );
   const flows = partFlows(solver, result, answer, paths);
   return {
     row,
@@ -90,6 +93,18 @@ export function rowNumbers(solver: PressureSolver, row: number, answer = solver.
     shares: powerShares(solver, result, answer, flows),
     power: { ...result.power },
   };
+}
+
+/** m³/s to an outlet of a gear divider, whose two motors on one shaft are no branches of two lines: see `FlowBuilder.divider`. */
+function gearFlow(solver: PressureSolver, result: Solved, way: NetPath['divider']): number | undefined {
+  const divider = way && solver.net.dividers[way.index];
+  if (divider?.form !== 'gear') return undefined;
+  const { inlet, outlets, share, rest, rated } = divider;
+  const [into = 0, first = 0, second = 0] = [inlet, ...outlets].map((line) => solver.pressure(result, line));
+  const own = way?.outlet === 0 ? share : 1 - share;
+  const turned = ((into - share * first - (1 - share) * second) * rated.flow) / rated.drop;
+  const slip = ((into - (way?.outlet === 0 ? first : second)) * rest * rated.flow) / SLIP_AT;
+  return own * (turned + slip);
 }
 
 /** Branch that stands for a path; -1 if none. */

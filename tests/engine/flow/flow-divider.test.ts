@@ -92,6 +92,27 @@ describe('gear', () => {
   });
 });
 
+test('a gear divider is given its flows and its loss like any part', () => {
+  const asked = new Asked(
+    circuit(
+      `P1 fixed-pump{flow=30 L/min}, R1 relief-valve, T1 tank, F1 flow-divider{form=gear;ratedFlow=30 L/min;ratedDrop=6 bar}, C1 cylinder{load=10 kN;loadSense=resisting}, C2 cylinder{load=30 kN;loadSense=resisting} | P1.P R1.P F1.P | F1.A C1.A | F1.B C2.A | C1.B C2.B ${SUPPLY}`,
+    ),
+  );
+  const { flows, shares, power, actuators } = asked.explain('').numbers;
+  const through = flows.filter(({ part }) => part === 'F1');
+  expect(through.map(({ to }) => to)).toEqual(['A', 'B']);
+  // What goes through each outlet is what its cylinder takes: half of the pump's flow but for the slip.
+  through.forEach(({ flow }, i) => near(flow, actuators[i]?.flow ?? 0, 5));
+  for (const { flow } of through) expect(Math.abs(flow / LPM - 15)).toBeLessThan(0.5);
+  // The parts' losses add up to all of them.
+  expect(shares.find(({ part }) => part === 'F1')?.lost).toBeGreaterThan(0.9 * 30 * LPM * 6 * BAR);
+  near(
+    shares.reduce((sum, share) => sum + share.lost, 0),
+    power.lost,
+    3,
+  );
+});
+
 test('in the table two cylinders behind a divider move together; straight from the pump the lighter goes first', () => {
   const rig = (kinds: string, lines: string): Asked =>
     new Asked(
