@@ -22,7 +22,7 @@ export function lineItems(
     { heading: 'Lines whose pressures are drawn' },
     ...lines.map((name) => ({
       text: name,
-      checked: shown.includes(name),
+      on: shown.includes(name),
       run: () => onchange(lines.filter((each) => (each === name ? !shown.includes(name) : shown.includes(each)))),
     })),
   ];

@@ -111,6 +111,13 @@ class View {
     }
   }
 
+  /** More of the height for the sheet, or less; undefined = as it is when nobody has moved anything. */
+  shareRoom(by: number | undefined): void {
+    if (by === undefined) this.setBenchHeight(0);
+    const share = this.lower === 'plans' ? this.sheetSharePlans : this.sheetShare;
+    this.setSheetShare(by === undefined ? undefined : Math.min(0.9, Math.max(0.1, share + by)));
+  }
+
   setBenchHeight(height: number): void {
     this.benchHeight = height;
     remember('benchHeight', height);
