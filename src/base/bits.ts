@@ -119,13 +119,20 @@ export function copyRange(set: BitSet, from: number, to: number, size: number): 
   if (target + done < end) orBits(set, target + done, bitsAt(set, source + done, end - target - done));
 }
 
+/** True if the `size` rows from `a` on are the same as those from `b` on. */
+export function sameRange(set: BitSet, a: number, b: number, size: number): boolean {
+  let done = 0;
+  for (; done + 32 <= size; done += 32) if (bitsAt(set, a + done, 32) !== bitsAt(set, b + done, 32)) return false;
+  return done === size || bitsAt(set, a + done, size - done) === bitsAt(set, b + done, size - done);
+}
+
 /** Up to 32 bits from row `from` on, the first lowest. */
-function bitsAt(set: BitSet, from: number, size: number): number {
+export function bitsAt(set: BitSet, from: number, size: number): number {
   const shift = from & 31;
   const word = from >>> 5;
   const low = (set[word] as number) >>> shift;
   const bits = shift === 0 ? low : low | ((set[word + 1] ?? 0) << (32 - shift));
-  return size === 32 ? bits : bits & ((1 << size) - 1);
+  return size === 32 ? bits | 0 : bits & ((1 << size) - 1);
 }
 
 /** All of `bits` must lie in one word of the set. */

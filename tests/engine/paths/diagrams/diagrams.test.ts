@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { countBits, emptySet, fullSet, has } from '../../../../src/base/bits.ts';
+import { add, countBits, emptySet, fullSet, has } from '../../../../src/base/bits.ts';
 import { Diagrams, NONE, ALL, TooManyNodes } from '../../../../src/engine/paths/diagrams/diagrams.ts';
 import type { Diagram } from '../../../../src/engine/paths/diagrams/diagrams.ts';
 import { planeToDiagram } from '../../../../src/engine/paths/diagrams/plane.ts';
@@ -102,6 +102,35 @@ test('equal sets are equal numbers, and planes come back as they were', () => {
   expect(planeToDiagram(sets, undefined)).toBe(NONE);
   expect(planeToDiagram(sets, fullSet(72))).toBe(ALL);
   expect(has(fullSet(72), 71)).toBe(true);
+});
+
+test('planes longer than a word become the sets of their rows', () => {
+  const radices = [2, 3, 1, 3, 4, 2, 3];
+  const rows = radices.reduce((n, radix) => n * radix, 1);
+  const strides = radices.map((_, i) => radices.slice(i + 1).reduce((n, radix) => n * radix, 1));
+  const positionsOf = (row: number): number[] =>
+    radices.map((radix, i) => Math.floor(row / (strides[i] as number)) % radix);
+  // Some inputs matter, and some rows are different by themselves.
+  const drawn = fc.record({
+    matter: fc.array(fc.nat({ max: radices.length - 1 }), { maxLength: 4 }),
+    seed: fc.integer({ min: 1, max: 1000 }),
+    apart: fc.array(fc.nat({ max: rows - 1 }), { maxLength: 3 }),
+  });
+  fc.assert(
+    fc.property(drawn, ({ matter, seed, apart }) => {
+      const plane = emptySet(rows);
+      for (let row = 0; row < rows; row++) {
+        const at = positionsOf(row);
+        const key = matter.reduce((n, input) => n * 7 + (at[input] as number), seed);
+        if ((Math.imul(key, 0x9e3779b1) >>> 29) % 2 === 1 || apart.includes(row)) add(plane, row);
+      }
+      const sets = new Diagrams(radices);
+      const found = planeToDiagram(sets, plane);
+      expect(sets.count(found)).toBe(BigInt(countBits(plane)));
+      for (let row = 0; row < rows; row++) expect(sets.has(found, positionsOf(row))).toBe(has(plane, row));
+    }),
+    { numRuns: 60, seed: 8 },
+  );
 });
 
 test('counts stay exact past 2⁵³', () => {
