@@ -1,12 +1,12 @@
-import type { Box } from '../../base/points.ts';
+import type { Box, Point } from '../../base/points.ts';
 import { desk } from './desk.svelte.ts';
 import type { Size, Viewport } from './viewport.ts';
 
 /** A wheel or a pinch has come to rest when it was still for so long, ms. */
 const REST_MS = 160;
 /** Between these the drawing is scaled as a picture while the wheel turns; beyond, it is set anew. */
-const LEAST = 0.4;
-const MOST = 4;
+const LEAST = 1 / 8;
+const MOST = 8;
 
 /** The scale that the drawing is set at, px per module: that of the view, or while it is zoomed, one not far from it. */
 export function settledScale(last: number, scale: number, flows: boolean): number {
@@ -42,28 +42,40 @@ export function drawnRegion(last: Box | undefined, view: Viewport, size: Size): 
  * which costs the same however much is drawn. It is set anew, sharp, as soon as the hand rests.
  */
 class Plane {
-  #flows = $state(false);
+  /** A wheel turns or two fingers move: more of it is likely to come. */
+  flows = $state(false);
   #timer: ReturnType<typeof setTimeout> | undefined;
   #scale = desk.viewport.scale;
   #region: Box | undefined;
 
   /** Pixels per module that the drawing is set at. */
-  scale: number = $derived.by(() => (this.#scale = settledScale(this.#scale, desk.viewport.scale, this.#flows)));
+  scale: number = $derived.by(() => (this.#scale = settledScale(this.#scale, desk.viewport.scale, this.flows)));
 
   region: Box = $derived.by(() => (this.#region = drawnRegion(this.#region, desk.viewport, desk.size)));
 
-  /** The view itself, its corner on a whole pixel of the screen: letters between pixels would be blurred. */
-  view: Viewport = $derived.by(() => {
+  /** Pixels from the sheet's origin to the corner of the view: whole ones of the screen, or letters would be blurred. */
+  corner: Point = $derived.by(() => {
     const { x, y, scale } = desk.viewport;
-    const dots = window.devicePixelRatio * scale;
-    return { x: Math.round(x * dots) / dots, y: Math.round(y * dots) / dots, scale };
+    const dots = window.devicePixelRatio;
+    return { x: Math.round(x * scale * dots) / dots, y: Math.round(y * scale * dots) / dots };
   });
 
-  /** A wheel turns or two fingers move: more of it is likely to come. */
+  /** The view as it is shown, from that corner. */
+  view: Viewport = $derived({
+    x: this.corner.x / desk.viewport.scale,
+    y: this.corner.y / desk.viewport.scale,
+    scale: desk.viewport.scale,
+  });
+
+  /** Lays what is set at `scale`, from the sheet's origin, where it is to be seen. */
+  transform: string = $derived(
+    `translate(${-this.corner.x}px, ${-this.corner.y}px) scale(${desk.viewport.scale / this.scale})`,
+  );
+
   flow(): void {
-    this.#flows = true;
+    this.flows = true;
     clearTimeout(this.#timer);
-    this.#timer = setTimeout(() => (this.#flows = false), REST_MS);
+    this.#timer = setTimeout(() => (this.flows = false), REST_MS);
   }
 }
 
