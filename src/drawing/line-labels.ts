@@ -3,15 +3,23 @@ import type { Circuit, Connection } from '../circuit/model.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
 import type { Routes } from './geometry.ts';
 import type { LabelText, SceneLabel } from './labels.ts';
-import { labelBox } from './labels.ts';
+import { freeLabels, labelBox } from './labels.ts';
+import { partLetters } from './letters.ts';
 import { TEXT_SIZES } from './palette.ts';
 import { partReach } from './shapes.ts';
+import { MODULE_PX } from './strokes.ts';
 
 /** Modules between a line and its name, and between the places tried along it. */
 const GAP = 0.8;
+const CLEAR = 0.3;
 const STEP = 2;
 /** Shares of a stretch at which a name is tried, the middle first. */
-const SPOTS = [0.5, 0.35, 0.65, 0.2, 0.8] as const;
+const SPOTS = [0.5, 0.35, 0.65, 0.2, 0.8, 0.1, 0.9] as const;
+/** Stretches that are looked at; the rest only if these are crowded. */
+const LONGEST = 3;
+/** How far off its line a name may be moved to be clear. */
+const OFF = [0, 1.2] as const;
+const COST = { room: 5, line: 2, off: 1 } as const;
 
 const worded = ({ name, size }: Connection): boolean => name !== undefined || (size ?? '') !== '';
 
@@ -19,7 +27,12 @@ const worded = ({ name, size }: Connection): boolean => name !== undefined || (s
 export function lineLabels(circuit: Circuit, routes: Routes, taken: readonly Box[]): SceneLabel[] {
   const named = circuit.connections.filter(worded);
   if (named.length === 0) return [];
-  const rooms: Box[] = [...taken, ...circuit.parts.map(partReach)];
+  const rooms: Box[] = [
+    ...taken,
+    ...circuit.parts.map(partReach),
+    ...circuit.parts.flatMap(partLetters),
+    ...freeLabels(circuit).map(labelBox),
+  ];
   const stretches = [...routes.values()].flatMap((points) =>
     points.slice(1).map((b, i) => [points[i] as Point, b] as const),
   );
@@ -49,17 +62,20 @@ function best(
     .slice(1)
     .map((b, i) => ({ a: points[i] as Point, b, length: lengthOf(points[i] as Point, b) }));
   lengths.sort((p, q) => q.length - p.length);
-  for (const { a, b, length } of lengths.slice(0, 3)) {
-    if (length < STEP && found) break;
-    for (const share of SPOTS) {
-      const at = { x: a.x + (b.x - a.x) * share, y: a.y + (b.y - a.y) * share };
-      for (const label of spotsAt(connection.id, runs, at, a.y === b.y)) {
-        const box = labelBox(label);
-        const cost =
-          crowd(box, rooms, stretches) +
-          (lengths[0] ? (lengths[0].length - length) / 100 : 0) +
-          Math.abs(share - 0.5) / 10;
-        if (cost < least) [least, found] = [cost, label];
+  for (const [rank, { a, b, length }] of lengths.entries()) {
+    if (found && (length < STEP || (rank >= LONGEST && least < COST.off))) break;
+    for (const off of OFF) {
+      if (least < COST.off * off) break;
+      for (const share of SPOTS) {
+        const at = { x: a.x + (b.x - a.x) * share, y: a.y + (b.y - a.y) * share };
+        for (const label of spotsAt(connection.id, runs, at, a.y === b.y, GAP + off)) {
+          const cost =
+            crowd(labelBox(label), rooms, stretches) +
+            ((lengths[0]?.length ?? 0) - length) / 100 +
+            Math.abs(share - 0.5) / 10 +
+            COST.off * off;
+          if (cost < least) [least, found] = [cost, label];
+        }
       }
     }
   }
@@ -68,7 +84,7 @@ function best(
 
 const lengthOf = (a: Point, b: Point): number => Math.abs(a.x - b.x) + Math.abs(a.y - b.y);
 
-function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boolean): SceneLabel[] {
+function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boolean, gap: number): SceneLabel[] {
   const label = (x: number, y: number, align: SceneLabel['align']): SceneLabel => ({
     role: 'line',
     owner,
@@ -76,16 +92,18 @@ function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boo
     align,
     runs,
   });
-  const tall = TEXT_SIZES.code / 8;
+  // Capitals are 0.73 of their size tall; the box round them, which has room for tails too, starts 0.96 of it up.
+  const size = TEXT_SIZES.code / MODULE_PX;
   return flat
-    ? [label(at.x, at.y - GAP, 'middle'), label(at.x, at.y + GAP + tall * 0.8, 'middle')]
-    : [label(at.x + GAP, at.y + tall * 0.35, 'start'), label(at.x - GAP, at.y + tall * 0.35, 'end')];
+    ? [label(at.x, at.y - gap, 'middle'), label(at.x, at.y + gap + size * 0.73, 'middle')]
+    : [label(at.x + gap, at.y + size * 0.36, 'start'), label(at.x - gap, at.y + size * 0.36, 'end')];
 }
 
 function crowd(box: Box, rooms: readonly Box[], stretches: readonly (readonly [Point, Point])[]): number {
   const own = inflate(box, 0.1);
   let cost = 0;
-  for (const room of rooms) if (overlaps(room, own)) cost += 5;
-  for (const [a, b] of stretches) if (segmentTouches(a, b, box)) cost += 2;
+  for (const room of rooms) if (overlaps(room, own)) cost += COST.room;
+  const clear = inflate(box, CLEAR);
+  for (const [a, b] of stretches) if (segmentTouches(a, b, clear)) cost += COST.line;
   return cost;
 }

@@ -1,6 +1,7 @@
 import type { Box, Point } from '../../src/base/points.ts';
 import type { Primitive } from '../../src/base/primitives.ts';
 import { advance, CAP_HEIGHT } from '../../src/base/text-advance.ts';
+import { GLYPH_ROOM } from '../../src/drawing/label-text.ts';
 import type { SceneLabel } from '../../src/drawing/labels.ts';
 
 /** What is drawn, as straight strokes and boxes of text, to see what lies on what. Modules. */
@@ -25,6 +26,8 @@ const DESCENT = 0.21;
 const CHORDS = 24;
 /** Pixels at 8 px a module. */
 const PX = 8;
+/** Between two runs of a line. */
+const GAP = 0.8;
 
 export const ZERO: Point = { x: 0, y: 0 };
 const plus = (p: Point, q: Point): Point => ({ x: p.x + q.x, y: p.y + q.y });
@@ -67,10 +70,11 @@ export function inkOf(primitives: readonly Primitive[], shift: Point = ZERO): In
   return { strokes, texts };
 }
 
-/** A line of words beside a symbol, its runs half a letter's size apart. */
+/** A line of words beside a symbol, with the glyph of its verdict. */
 export function writtenLabel(label: SceneLabel): WrittenText {
   const width = label.runs.reduce(
-    (sum, run, i) => sum + (i > 0 ? (run.size * 0.5) / PX : 0) + advance(run.text, run.size / PX, run.weight),
+    (sum, run, i) =>
+      sum + (i > 0 ? GAP : 0) + advance(run.text, run.size / PX, run.weight) + (run.glyph ? GLYPH_ROOM : 0),
     0,
   );
   const text = label.runs.map((run) => run.text).join(' ');

@@ -123,7 +123,7 @@ test('names that do not fit become numbers with a list; numbers that would touch
 });
 
 test('long labels break at blanks and are cut in the middle, so that their end stays', () => {
-  expect(wrapped('Upper left clamping cylinder', 1.5, 14, 3)).toEqual(['Upper left', 'clamping cylinder']);
+  expect(wrapped('Upper left clamping cylinder', 1.5, 14, 3)).toEqual(['Upper left clamping', 'cylinder']);
   const [only = ''] = wrapped('Infeed station valve block.a', 1.5, 14, 1);
   expect(only).toMatch(/^Infee.*….*\.a$/);
 });
