@@ -26,7 +26,8 @@ export async function openDrawn(circuit: Partial<Circuit> = {}, options: OpenOpt
   const page = await openEditor({
     ...options,
     before: `if (!localStorage.getItem('${KEY}')) localStorage.setItem('${KEY}', ${JSON.stringify(kept)});
-      if (!localStorage.getItem('spooltable.legendOpen')) localStorage.setItem('spooltable.legendOpen', 'false');`,
+      if (!localStorage.getItem('spooltable.legendOpen')) localStorage.setItem('spooltable.legendOpen', 'false');
+      ${options.before ?? ''}`,
   });
   const host = page.locator('.host[role=application]');
   await host.locator('svg').first().waitFor();
