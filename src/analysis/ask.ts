@@ -1,4 +1,5 @@
 import { countBits } from '../base/bits.ts';
+import { part } from '../base/budget.ts';
 import type { Budget } from '../base/budget.ts';
 import { bad, good } from '../base/result.ts';
 import type { Problem, Result } from '../base/result.ts';
@@ -44,8 +45,8 @@ export function askTable(
   if (count <= BigInt(MOST_ROWS)) {
     const unsolved = tooManyToSolve(Number(count), figuresIn(condition));
     if (unsolved) return bad(unsolved);
-    const data = table ?? tabulate(circuit, conditions, budget);
-    const figure = figuresFor(circuit, conditions, data, figuresIn(condition), budget);
+    const data = table ?? tabulate(circuit, conditions, part(budget, 0, 0.7));
+    const figure = figuresFor(circuit, conditions, data, figuresIn(condition), part(budget, table ? 0 : 0.7, 1));
     if (!figure.ok) return figure;
     const { sure, maybe } = evaluate(tableSource(data, figure.value), condition);
     const open = maybe.map((word, i) => word & ~(sure[i] as number));

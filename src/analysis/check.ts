@@ -1,5 +1,5 @@
 import type { Budget } from '../base/budget.ts';
-import { Cancelled } from '../base/budget.ts';
+import { Cancelled, part } from '../base/budget.ts';
 import { bad, good } from '../base/result.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -69,13 +69,13 @@ export function checkRules(
       read.flatMap(({ rule }) => figuresIn(rule.breaks)),
     );
     if (unsolved) return bad(unsolved);
-    const data = table ?? tabulate(circuit, conditions, budget);
+    const data = table ?? tabulate(circuit, conditions, part(budget, 0, 0.6));
     const figure = figuresFor(
       circuit,
       conditions,
       data,
       read.flatMap(({ rule }) => figuresIn(rule.breaks)),
-      budget,
+      part(budget, table ? 0 : 0.6, 0.9),
     );
     if (!figure.ok) return figure;
     answerTo = (rule) => checkRule(data, rule, figure.value);
@@ -96,8 +96,10 @@ export function checkRules(
     }
   }
   const rules: CheckedRule[] = [];
+  const answering = part(budget, listed ? 0.9 : 0, 1);
   for (const { given: one, rule } of read) {
     if (budget.cancelled()) throw new Cancelled();
+    answering.progress(rules.length / read.length);
     try {
       rules.push({ ...(one.id !== undefined && { id: one.id }), text: one.text, answer: answerTo(rule) });
     } catch (error) {

@@ -3,6 +3,8 @@ import { editor } from './state/editor.svelte.ts';
 import { plans } from './state/plans.svelte.ts';
 import { session } from './state/session.svelte.ts';
 import { asking } from './table/asking.svelte.ts';
+import { goToRow } from './table/go-to-row.svelte.ts';
+import { stopWaiting } from './table/stop-waiting.ts';
 import { view } from './state/view.svelte.ts';
 import type { PanelId } from './state/view.svelte.ts';
 import { openFromDisk } from './files/open.ts';
@@ -71,6 +73,7 @@ function command(event: KeyboardEvent): boolean {
   if (key === 's') void (event.shiftKey ? saveAs() : save());
   else if (key === 'o') void openFromDisk();
   else if (key === 'p') view.open('print');
+  else if (key === 'g') goToRow.on = session.table !== undefined;
   else if (isTyping(event.target)) return false;
   else if (key === 'z') void (event.shiftKey ? editor.redo() : editor.undo());
   else if (key === 'y') editor.redo();
@@ -85,6 +88,7 @@ function plain(event: KeyboardEvent): boolean {
   else if (key === 'E') maker.openForSelection();
   else if (panel) view.toggle(panel);
   else if (key === 'q' || key === 'Q') asking.on = true;
+  else if (key === 'g') goToRow.on = session.table !== undefined;
   else if (key === '[') session.goToRow(session.row - 1);
   else if (key === ']') session.goToRow(session.row + 1);
   else if (key === 'j' || key === 'J') view.showLower(view.lower === 'plans' ? 'table' : 'plans');
@@ -98,7 +102,9 @@ function plain(event: KeyboardEvent): boolean {
 export function globalKey(event: KeyboardEvent): void {
   if (event.defaultPrevented || event.isComposing) return;
   if (event.key === 'F6') nextRegion(event.shiftKey);
-  else if (event.altKey) return;
+  else if (event.key === 'Escape') {
+    if (!stopWaiting()) return;
+  } else if (event.altKey) return;
   else if (event.ctrlKey || event.metaKey) {
     if (!command(event)) return;
   } else if (isTyping(event.target) || !plain(event)) return;

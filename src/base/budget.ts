@@ -14,3 +14,9 @@ export class Cancelled extends Error {
 }
 
 export const unlimited: Budget = { cancelled: () => false, progress: () => {} };
+
+/** The budget of a stretch of the work. */
+export const part = (budget: Budget, from: number, to: number): Budget => ({
+  cancelled: budget.cancelled,
+  progress: (share) => budget.progress(from + share * (to - from)),
+});

@@ -63,7 +63,7 @@ function answer(question: Question): Reply {
     case 'explain':
       return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row, question.units) };
     case 'check':
-      return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), unlimited) };
+      return { id, say: 'check', result: checkRules(circuit, conditions, rulesOf(circuit), tell(id), held.table) };
     case 'read-rule':
       return { id, say: 'rule-read', problems: ruleProblems(circuit, question.text) };
     case 'fold':

@@ -52,8 +52,8 @@ export interface Analyst {
   explain(circuit: Circuit, conditions: Conditions, row: number, units?: UnitSystem): Job<Explanation>;
   /** Pressures, flows and speeds of these rows, in this order; SI. */
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
-  /** The circuit's rules against every combination. */
-  check(circuit: Circuit, conditions: Conditions): Job<Result<Check>>;
+  /** The circuit's rules against every combination; `table`: the finished one, if it is there. */
+  check(asked: Asked, progress: (share: number) => void): Job<Result<Check>>;
   /** What keeps a rule's text from being read; empty = it can be checked. */
   readRule(circuit: Circuit, text: string): Job<readonly Problem[]>;
   /** How to let the pressure down once the pumps stop in this row (0-based). */
@@ -158,11 +158,13 @@ export function createAnalyst(): Analyst {
         () => {},
         (reply) => (reply.say === 'numbers' ? reply.numbers : undefined),
       ),
-    check: (circuit, conditions) =>
-      long.ask(
+    check: ({ circuit, conditions, table }, progress) =>
+      // Where there is no table yet, one is made, which must not keep questions waiting.
+      (table ? whole : long).ask(
         { ask: 'check', circuit, conditions },
-        () => {},
+        share(progress),
         (reply) => (reply.say === 'check' ? reply.result : undefined),
+        table && { table: table.data },
       ),
     readRule: (circuit, text) =>
       words.ask(

@@ -22,6 +22,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
   group(
     'Rows',
     ['[ ]', 'Row before, row after'],
+    ['G', 'Go to a row by its number, or by where levers are to stand; Ctrl G from the sheet too'],
     ['↑ ↓', 'In the table: move the row, and the levers with it'],
     ['Enter', 'In the table: why; in its head: sort'],
     ['F', 'In the table: filter this column'],
@@ -53,7 +54,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
     ['V', 'Influence: which lever matters to what'],
     ['Shift E', 'Valve maker: the selected valve, or a new one'],
     ['?', 'This panel'],
-    ['Esc', 'Close the panel in hand'],
+    ['Esc', 'Close the panel in hand; stop sorting, filtering, folding or a question that takes long'],
   ),
 ];
 

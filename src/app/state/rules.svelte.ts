@@ -1,15 +1,22 @@
 import { Cancelled } from '../../base/budget.ts';
 import type { Problem } from '../../base/result.ts';
 import type { Circuit } from '../../circuit/model.ts';
-import type { Analyst, Check, CheckedRule, Conditions, Job } from '../../worker/client.ts';
+import type { Analyst, Check, CheckedRule, Conditions, Job, StateTable } from '../../worker/client.ts';
 import { sayError } from './said.ts';
+import { sameMachine, session } from './session.svelte.ts';
 import { unreadable } from './unreadable.ts';
+
+const PATIENCE_MS = 250;
 
 /** The circuit's rules against every combination: asked for while they are on show. */
 class Rules {
   /** The last answer, as long as it is about the circuit and conditions on show. */
   check = $state.raw<Check | undefined>();
   busy = $state(false);
+  /** Busy for long enough to be worth a word. */
+  slow = $state(false);
+  /** 0 to 1. */
+  share = $state(0);
   stopped = $state(false);
   /** Why there are no answers, in words. */
   failure = $state<string | undefined>();
@@ -18,6 +25,7 @@ class Rules {
 
   #analyst: Analyst | undefined;
   #job: { readonly cancel: () => void } | undefined;
+  #patience: ReturnType<typeof setTimeout> | undefined;
   #of: { readonly circuit: Circuit; readonly conditions: Conditions } | undefined;
 
   start(analyst: Analyst): void {
@@ -32,16 +40,15 @@ class Rules {
   /** Ask anew, unless this was asked last; answers about another circuit or other conditions are dropped at once. */
   ask(circuit: Circuit, conditions: Conditions, again = false): void {
     const was = this.#of;
-    const same = was !== undefined && sameQuestion(was.circuit, circuit) && was.conditions === conditions;
+    const same = was !== undefined && sameMachine(was.circuit, circuit) && was.conditions === conditions;
     if (same && was.circuit.rules === circuit.rules && !again) return;
     this.#job?.cancel();
-    this.#job = undefined;
+    this.#idle();
     this.#of = { circuit, conditions };
     if (!same) this.check = undefined;
     this.problems = new Map();
     this.failure = undefined;
     this.stopped = false;
-    this.busy = false;
     if ((circuit.rules ?? []).length > 0) this.#next(circuit, conditions, new Map());
   }
 
@@ -49,7 +56,11 @@ class Rules {
   #next(circuit: Circuit, conditions: Conditions, aside: ReadonlyMap<string, Problem>): void {
     if (!this.#analyst) return;
     this.busy = true;
-    const job = this.#analyst.check(circuit, conditions);
+    this.share = 0;
+    this.#patience ??= setTimeout(() => (this.slow = true), PATIENCE_MS);
+    const job = this.#analyst.check({ circuit, conditions, table: finished(circuit, conditions) }, (share) => {
+      if (this.#job === job) this.share = share;
+    });
     this.#job = job;
     job.answer.then(
       (result) => {
@@ -79,9 +90,16 @@ class Rules {
   }
 
   #settle(problems: ReadonlyMap<string, Problem>): void {
+    this.#idle();
+    this.problems = problems;
+  }
+
+  #idle(): void {
     this.#job = undefined;
     this.busy = false;
-    this.problems = problems;
+    this.slow = false;
+    clearTimeout(this.#patience);
+    this.#patience = undefined;
   }
 
   /** The person stops a long check. */
@@ -93,9 +111,8 @@ class Rules {
   leave(): void {
     const { busy } = this;
     const job = this.#job;
-    this.#job = undefined;
+    this.#idle();
     job?.cancel();
-    this.busy = false;
     if (busy) this.#of = undefined;
   }
 
@@ -105,8 +122,11 @@ class Rules {
   }
 }
 
-/** Rules and texts on the sheet aside. */
-const sameQuestion = (a: Circuit, b: Circuit): boolean =>
-  a.parts === b.parts && a.connections === b.connections && a.loadCases === b.loadCases;
+/** The table that a check may start from: that of the same machine, once the pressures are through with it. */
+function finished(circuit: Circuit, conditions: Conditions): StateTable | undefined {
+  const { answer } = session;
+  const whole = answer?.conditions === conditions && session.progress === undefined && !session.stopped;
+  return whole && sameMachine(answer.circuit, circuit) ? answer.table : undefined;
+}
 
 export const rules = new Rules();

@@ -27,16 +27,26 @@ export interface Order {
 const BLOCK = 1 << 16;
 const WORDS = BLOCK / 32;
 
-type Work<T> = Generator<undefined, T, undefined>;
+/** Yields how far it is, 0 to 1. */
+type Work<T> = Generator<number, T, undefined>;
+
+/** Work that is a stretch of some other. */
+function* stretch<T>(work: Work<T>, from: number, to: number): Work<T> {
+  for (;;) {
+    const step = work.next();
+    if (step.done) return step.value;
+    yield from + step.value * (to - from);
+  }
+}
 
 function* kept(table: StateTable, filters: readonly ColumnFilter[], among: BitSet | undefined): Work<BitSet> {
   const keep = among?.slice() ?? fullSet(table.count);
-  for (const { column, keep: wanted } of filters) {
+  for (const [f, { column, keep: wanted }] of filters.entries()) {
     const any = new Uint32Array(keep.length);
-    for (const value of wanted) {
+    for (const [v, value] of wanted.entries()) {
       const plane = planeOf(table, column, value);
       for (let w = 0; w < any.length; w++) any[w] = (any[w] as number) | (plane[w] as number);
-      yield;
+      yield (f + v / wanted.length) / filters.length;
     }
     for (let w = 0; w < keep.length; w++) keep[w] = (keep[w] as number) & (any[w] as number);
   }
@@ -52,7 +62,7 @@ function* eachRow(plane: BitSet, visit: (row: number) => void): Work<void> {
       visit(w * 32 + 31 - Math.clz32(low));
       word ^= low;
     }
-    if (w % WORDS === WORDS - 1) yield;
+    if (w % WORDS === WORDS - 1) yield w / plane.length;
   }
 }
 
@@ -62,13 +72,21 @@ const tally = (keys: Uint16Array, plane: BitSet): Work<void> =>
     keys[row] = (keys[row] as number) + 1;
   });
 
+/** Adds 1 to the key of every row that has some of an item's planes. */
+function* tallyEach(keys: Uint16Array, items: readonly (readonly (BitSet | undefined)[])[], words: number): Work<void> {
+  for (const [i, planes] of items.entries()) {
+    const any = yield* stretch(eitherOf(planes, words), i / items.length, i / items.length);
+    yield* stretch(tally(keys, any), i / items.length, (i + 1) / items.length);
+  }
+}
+
 function* eitherOf(planes: readonly (BitSet | undefined)[], size: number): Work<BitSet> {
   const any = new Uint32Array(size);
   for (const plane of planes) {
     if (!plane) continue;
     for (let w = 0; w < size; w++) any[w] = (any[w] as number) | (plane[w] as number);
   }
-  yield;
+  yield 1;
   return any;
 }
 
@@ -80,9 +98,10 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
   const byWord = function* (planes: readonly (BitSet | undefined)[]): Work<void> {
     for (const [value, plane] of planes.entries()) {
       if (!plane) continue;
-      yield* eachRow(plane, (row) => {
+      const each = eachRow(plane, (row) => {
         keys[row] = value;
       });
+      yield* stretch(each, value / planes.length, (value + 1) / planes.length);
     }
   };
   switch (column.of) {
@@ -94,7 +113,7 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
       for (let row = 0; row < table.count; row++) {
         const position = table.position(column.index, row);
         keys[row] = column.of === 'input' ? position : position === column.position ? 1 : 0;
-        if (row % BLOCK === BLOCK - 1) yield;
+        if (row % BLOCK === BLOCK - 1) yield row / table.count;
       }
       break;
     case 'dependent':
@@ -107,19 +126,12 @@ function* keysOf(table: StateTable, column: Column): Work<Uint16Array> {
       yield* byWord(data.pumpPlanes[column.index] ?? []);
       break;
     case 'blocked':
-      for (const planes of data.blockedPlanes) yield* tally(keys, yield* eitherOf(planes, words));
+      yield* tallyEach(keys, data.blockedPlanes, words);
       break;
     case 'trapped': {
       const heat = TRAP_REASONS.indexOf('heat');
-      for (const planes of data.trapPlanes) {
-        yield* tally(
-          keys,
-          yield* eitherOf(
-            planes.filter((_, reason) => reason !== heat),
-            words,
-          ),
-        );
-      }
+      const counted = data.trapPlanes.map((planes) => planes.filter((_, reason) => reason !== heat));
+      yield* tallyEach(keys, counted, words);
       break;
     }
     case 'notes':
@@ -140,23 +152,24 @@ export function* orderRows(
   among?: BitSet,
 ): Work<Order | undefined> {
   if (filters.length === 0 && !among && (!sort || (sort.column.of === 'row' && !sort.falling))) return undefined;
-  const keep = yield* kept(table, filters, among);
+  const keep = yield* stretch(kept(table, filters, among), 0, 0.2);
   const shown = new Uint32Array(table.count);
   let size = 0;
   for (let row = 0; row < table.count; row++) {
     if (has(keep, row)) shown[size++] = row;
-    if (row % BLOCK === BLOCK - 1) yield;
+    if (row % BLOCK === BLOCK - 1) yield 0.2 + (0.1 * row) / table.count;
   }
   let rows: Uint32Array = shown.slice(0, size);
   if (sort?.column.of === 'row') {
     if (sort.falling) rows.reverse();
   } else if (sort) {
-    rows = yield* byKey(rows, yield* keysOf(table, sort.column), sort.falling);
+    const keys = yield* stretch(keysOf(table, sort.column), 0.3, 0.7);
+    rows = yield* stretch(byKey(rows, keys, sort.falling), 0.7, 0.9);
   }
   const places = new Uint32Array(table.count);
   for (let i = 0; i < rows.length; i++) {
     places[rows[i] as number] = i + 1;
-    if (i % BLOCK === BLOCK - 1) yield;
+    if (i % BLOCK === BLOCK - 1) yield 0.9 + (0.1 * i) / rows.length;
   }
   return { rows, places };
 }
@@ -165,14 +178,14 @@ function* byKey(rows: Uint32Array, keys: Uint16Array, falling: boolean): Work<Ui
   let top = 0;
   for (let i = 0; i < rows.length; i++) {
     top = Math.max(top, keys[rows[i] as number] as number);
-    if (i % BLOCK === BLOCK - 1) yield;
+    if (i % BLOCK === BLOCK - 1) yield i / (3 * rows.length);
   }
   const start = new Uint32Array(top + 2);
   for (let i = 0; i < rows.length; i++) {
     const key = keys[rows[i] as number] as number;
     const slot = (falling ? top - key : key) + 1;
     start[slot] = (start[slot] as number) + 1;
-    if (i % BLOCK === BLOCK - 1) yield;
+    if (i % BLOCK === BLOCK - 1) yield (1 + i / rows.length) / 3;
   }
   for (let k = 1; k < start.length; k++) start[k] = (start[k] as number) + (start[k - 1] as number);
   const out = new Uint32Array(rows.length);
@@ -182,7 +195,7 @@ function* byKey(rows: Uint32Array, keys: Uint16Array, falling: boolean): Work<Ui
     const slot = falling ? top - key : key;
     out[start[slot] as number] = row;
     start[slot] = (start[slot] as number) + 1;
-    if (i % BLOCK === BLOCK - 1) yield;
+    if (i % BLOCK === BLOCK - 1) yield (2 + i / rows.length) / 3;
   }
   return out;
 }

@@ -1,6 +1,6 @@
 import { emptySet, isEmpty, wordsFor } from '../../base/bits.ts';
 import type { Budget } from '../../base/budget.ts';
-import { Cancelled } from '../../base/budget.ts';
+import { Cancelled, part } from '../../base/budget.ts';
 import { dependentLabel } from '../../network/dependents.ts';
 import type { Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
@@ -243,11 +243,6 @@ function meet(a: Plane | undefined, b: Plane | undefined, states: number): Plane
   if (a && b) for (let w = 0; w < out.length; w++) out[w] = (a[w] as number) & (b[w] as number);
   return out;
 }
-
-const part = (budget: Budget, from: number, to: number): Budget => ({
-  cancelled: budget.cancelled,
-  progress: (share) => budget.progress(from + share * (to - from)),
-});
 
 function describe(net: Network): Pick<TableData, 'inputs' | 'dependents' | 'actuators' | 'pumps' | 'lines'> {
   const named = (part: number): { part: string; label: string } => {
