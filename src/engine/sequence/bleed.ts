@@ -1,12 +1,11 @@
-import type { Budget } from '../../base/budget.ts';
-import { Cancelled, unlimited } from '../../base/budget.ts';
 import type { Network } from '../../network/network.ts';
 import { BleedModel } from './bleed-model.ts';
+import { searchMoves } from './bleed-search.ts';
+import type { BleedOptions, Node } from './bleed-search.ts';
 import { reasonsFor } from './bleed-start.ts';
 import type { HeldReason } from './bleed-start.ts';
-import { cautionsOf, weightOf } from './cautions.ts';
-import type { MoveCaution, Standing } from './cautions.ts';
-import { keyOf } from './pressure-state.ts';
+import { cautionsOf } from './cautions.ts';
+import type { MoveCaution } from './cautions.ts';
 import type { Held } from './pressure-state.ts';
 
 /** One move of one lever; rows and lines by their index. */
@@ -38,25 +37,6 @@ export interface BleedPlan {
   readonly states: number;
 }
 
-export interface BleedOptions {
-  readonly budget?: Budget;
-  /** Most states to look at. */
-  readonly mostStates?: number;
-}
-
-const MOST_STATES = 60_000;
-const CANCEL_EVERY = 256;
-
-/** A state found by the search, and the move that led there. */
-interface Node extends Standing {
-  readonly depth: number;
-  weight: number;
-  from: Node | undefined;
-  input: number;
-  position: number;
-  readonly left: number;
-}
-
 /** The plan again with bleed valves standing open, where the levers alone leave pressure. */
 export interface PointPlan {
   /** Shown lines on which a bleed valve is opened first. */
@@ -84,7 +64,7 @@ export function planWithPoints(model: BleedModel, plan: BleedPlan, options: Blee
     const points = [...new Set(wanted)].sort((a, b) => a - b);
     const open = new BleedModel(net, model.conditions, points, model.settings);
     const first = open.stand(plan.row, stood.held);
-    const { best, proven } = search(open, rootOf(net, first), options);
+    const { best, proven } = searchMoves(open, first, options);
     return {
       points,
       opening: cautionsOf(net, undefined, stood.held, first, -1, -1),
@@ -99,19 +79,9 @@ export function planWithPoints(model: BleedModel, plan: BleedPlan, options: Blee
   return planWith([...unopened, ...plan.left.map(({ line }) => line), ...(some?.left ?? []).map(({ line }) => line)]);
 }
 
-const rootOf = (net: Network, first: Standing): Node => ({
-  ...first,
-  depth: 0,
-  weight: 0,
-  from: undefined,
-  input: -1,
-  position: -1,
-  left: shownHeld(net, first.held),
-});
-
 /**
  * The shortest list of lever moves after which no shown line holds pressure, the pumps being stopped in
- * `row` (0-based); among equally short ones that with the least to be cautious of. Where no list does it,
+ * `row` (0-based); among equally short ones that with the least to be cautious of, as far as they are looked at. Where no list does it,
  * the shortest of those that leave the fewest lines. A move counts on the position that it ends in, and
  * never on those that it passes. Throws `Cancelled`, and a RangeError for a row that does not exist.
  */
@@ -120,8 +90,7 @@ export function planBleed(model: BleedModel, row: number, options: BleedOptions 
   if (!Number.isInteger(row) || row < 0 || row >= model.states) throw new RangeError(`there is no row ${row + 1}`);
   const initial = model.before(row);
   const first = model.stand(row, initial);
-  const root = rootOf(net, first);
-  const found = search(model, root, options);
+  const found = searchMoves(model, first, options);
   const moves = movesTo(model, found.best);
   return {
     row,
@@ -133,84 +102,6 @@ export function planBleed(model: BleedModel, row: number, options: BleedOptions 
     states: found.states,
   };
 }
-
-interface Found {
-  readonly best: Node;
-  readonly proven: boolean;
-  readonly states: number;
-}
-
-/** Where one round runs out of states, the next starts from the best state so far: a list still, but not shown to be the shortest. */
-function search(model: BleedModel, root: Node, { budget = unlimited, mostStates = MOST_STATES }: BleedOptions): Found {
-  const least = leastPossible(model, root);
-  let found = searchFrom(model, root, least, budget, mostStates);
-  let { states } = found;
-  let { proven } = found;
-  for (let start = root; !found.proven && found.best.left < start.left;) {
-    start = found.best;
-    found = searchFrom(model, start, least, budget, mostStates);
-    states += found.states;
-    proven = false;
-  }
-  return { best: found.best, proven, states };
-}
-
-function searchFrom(model: BleedModel, root: Node, least: number, budget: Budget, mostStates: number): Found {
-  const { net, strides } = model;
-  const known = new Map<string, Node>([[keyOf(root.row, root.held), root]]);
-  let best = root;
-  let level: Node[] = [root];
-  let looked = 0;
-  while (level.length > 0 && best.left > least && known.size < mostStates) {
-    const next: Node[] = [];
-    const visit = (node: Node, input: number, now: number, position: number): void => {
-      const stand = model.stand(node.row + (position - now) * (strides[input] as number), node.held);
-      const key = keyOf(stand.row, stand.held);
-      const there = known.get(key);
-      if (there && (there.depth <= node.depth || there.weight <= node.weight)) return;
-      const weight = node.weight + weightOf(cautionsOf(net, node, node.held, stand, input, position));
-      const by = { weight, from: node, input, position };
-      if (there) {
-        if (weight < there.weight) Object.assign(there, by);
-        return;
-      }
-      const made: Node = { ...stand, ...by, depth: node.depth + 1, left: shownHeld(net, stand.held) };
-      known.set(key, made);
-      next.push(made);
-    };
-    for (const node of level) {
-      if (looked++ % CANCEL_EVERY === 0) {
-        if (budget.cancelled()) throw new Cancelled();
-        budget.progress(Math.min(1, known.size / mostStates));
-      }
-      if (known.size >= mostStates) break;
-      net.inputs.forEach(({ positions }, input) => {
-        const now = Math.floor(node.row / (strides[input] as number)) % positions.length;
-        for (let p = 0; p < positions.length; p++) if (p !== now) visit(node, input, now, p);
-      });
-    }
-    for (const node of next) {
-      if (node.left < best.left || (node.left === best.left && node.depth === best.depth && node.weight < best.weight))
-        best = node;
-    }
-    level = next;
-  }
-  return { best, proven: best.left <= least || known.size < mostStates, states: known.size };
-}
-
-/** No list can leave fewer: lines that are held now and that nothing ever opens to tank. */
-function leastPossible(model: BleedModel, { held }: Node): number {
-  const never = model.neverOpen();
-  let count = 0;
-  for (let line = 0; line < model.net.shown; line++) count += (held.lines[line] as number) & (never[line] as number);
-  return count;
-}
-
-const shownHeld = (net: Network, { lines }: Held): number => {
-  let count = 0;
-  for (let line = 0; line < net.shown; line++) count += lines[line] as number;
-  return count;
-};
 
 const listHeld = (net: Network, { lines }: Held): number[] =>
   Array.from({ length: net.shown }, (_, line) => line).filter((line) => lines[line] === 1);

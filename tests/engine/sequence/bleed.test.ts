@@ -169,19 +169,35 @@ test('a plan names no row that does not exist, and stops when asked to', () => {
   expect(() => asked.powerLoss('V1=7')).toThrow('no such position');
 });
 
+/** Closed centres side by side: each needs a move of its own lever. */
+const bank = (valves: number, more = '', lines = ''): Circuit => {
+  const numbers = Array.from({ length: valves }, (_, i) => i + 1);
+  const each = (port: string): string => numbers.map((n) => `V${n}.${port}`).join(' ');
+  return circuit(
+    `P1 fixed-pump, R1 relief-valve, T1 tank, ${numbers.map((n) => `V${n} directional-valve:valve-4/3-shut, C${n} cylinder`).join(', ')}${more}` +
+      ` | P1.P R1.P ${each('P')} | ${numbers.map((n) => `V${n}.A C${n}.A | V${n}.B C${n}.B`).join(' | ')} | R1.T T1.T P1.S ${each('T')}${lines}`,
+  );
+};
+
+test('twelve closed centres need twelve moves, and that no list is shorter is proven at once: no lever can be spared', () => {
+  const plan = new BleedAsked(bank(12)).plan('', { mostStates: 2000 });
+  expect([plan.start.length, plan.moves.length, plan.left.length]).toEqual([24, 12, 0]);
+  expect(plan.proven).toBe(true);
+});
+
 test('a search that runs out of states says so, and still gives a list', () => {
-  const valves = [1, 2, 3, 4, 5, 6].map((n) => `V${n} directional-valve:valve-4/3-shut, C${n} cylinder`).join(', ');
-  const lines = [1, 2, 3, 4, 5, 6].map((n) => `V${n}.A C${n}.A | V${n}.B C${n}.B`).join(' | ');
-  const each = (port: string): string => [1, 2, 3, 4, 5, 6].map((n) => `V${n}.${port}`).join(' ');
-  const asked = new BleedAsked(
-    circuit(
-      `P1 fixed-pump, R1 relief-valve, T1 tank, ${valves} | P1.P R1.P ${each('P')} | ${lines} | R1.T T1.T P1.S ${each('T')}`,
+  // No list lets down what the lock checks shut in, though moves open each line by itself: all states have to be looked at.
+  const locked = new BleedAsked(
+    bank(
+      3,
+      ', ACC1 accumulator, DV1 shut-off-valve, V7 directional-valve:valve-4/3-float, L7 double-lock-check, C7 cylinder',
+      ' | V7.P P1.P ACC1.A DV1.A | V7.T T1.T DV1.B | V7.A L7.V1 | V7.B L7.V2 | L7.C1 C7.A | L7.C2 C7.B',
     ),
   );
-  const short = asked.plan('', { mostStates: 60 });
+  const short = locked.plan('DV1=shut', { mostStates: 60 });
   expect(short.proven).toBe(false);
   expect(short.left.length).toBeLessThan(short.start.length);
-  const full = asked.plan('');
+  const full = new BleedAsked(bank(6)).plan('');
   expect(full.proven).toBe(true);
   // One lever for each of the six closed centres.
   expect([full.start.length, full.moves.length, full.left.length]).toEqual([12, 6, 0]);
