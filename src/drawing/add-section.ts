@@ -4,6 +4,7 @@ import { all, applyEdit, changeConnection } from '../circuit/edit.ts';
 import type { Edit } from '../circuit/edit.ts';
 import type { Circuit, Part, PortRef } from '../circuit/model.ts';
 import { RefusedEdit } from '../circuit/refused.ts';
+import { sheetLookup } from '../circuit/sheets.ts';
 import { namingSettings } from '../parts/naming.ts';
 import { inflate, overlaps } from './geometry.ts';
 import { meetings, reach } from './neighbours.ts';
@@ -42,8 +43,10 @@ export function appendSection(circuit: Circuit, valveId: string): AddedSection {
   const upper = upperPorts(valve);
   const kinds = new Map(circuit.parts.map(({ id, kind }) => [id, kind]));
   const isShared = (id: string): boolean => SHARED.has(kinds.get(id) ?? '');
+  const sheet = sheetLookup(circuit);
+  const own = sheet(valveId);
   const above = reach(meetings(circuit), valveId, (port) => upper.has(port), isShared).filter(
-    ({ part }) => !isShared(part),
+    ({ part }) => !isShared(part) && sheet(part) === own,
   );
   const ids = [valveId, ...above.map(({ part }) => part)];
   const copied = copyOut(circuit, ids);
@@ -55,11 +58,11 @@ export function appendSection(circuit: Circuit, valveId: string): AddedSection {
     ),
   };
   const box = union(fragment.parts.map(partReach)) ?? { x: 0, y: 0, width: 0, height: 0 };
-  const others = circuit.parts.map(partReach);
+  const others = circuit.parts.filter(({ id }) => sheet(id) === own).map(partReach);
   const step = Math.ceil(box.width + SPACE);
   let dx = step;
   while (others.some((other) => overlaps(other, inflate({ ...box, x: box.x + dx }, 1)))) dx += 2;
-  const pasted = paste(circuit, fragment, dx, 0, namingSettings);
+  const pasted = paste(circuit, fragment, dx, 0, namingSettings, own);
   const added = pasted.parts[fragment.parts.findIndex(({ id }) => id === valveId)] as string;
   const edits: Edit[] = [pasted.edit];
   let now = applyEdit(circuit, pasted.edit);

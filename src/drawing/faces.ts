@@ -36,9 +36,13 @@ export function lineNames(circuit: Circuit): (connection: string) => string {
   return (connection) => names.get(connection) ?? '';
 }
 
-/** The references of a circuit whose parts all have their places. */
-export const referencesOf = (circuit: Circuit): References =>
-  hasSheets(circuit) ? placeReferences(circuit, lineNames(circuit)) : new Map();
+/** The references of a circuit whose parts all have their places. `before`: see `placeReferences`. */
+const NONE: References = new Map();
+
+export function referencesOf(circuit: Circuit, before?: References): References {
+  if (!hasSheets(circuit)) return NONE;
+  return placeReferences(circuit, before ? () => '' : lineNames(circuit), before);
+}
 
 /**
  * What one sheet shows, as a circuit of its own: its parts, texts and lines. A line to another sheet ends at a stand-in
@@ -116,8 +120,17 @@ function connectionsOn(circuit: Circuit, sheet: string): readonly Connection[] {
   return list;
 }
 
+const halves = new WeakMap<Connection, Partial<Record<'from' | 'to', Connection>>>();
+
 /** One end of a connection, with the reference in place of the other; the name of its line stands in the flag. */
 function half(connection: Connection, end: 'from' | 'to'): Connection {
+  const known = halves.get(connection) ?? {};
+  const made = known[end] ?? halfOf(connection, end);
+  halves.set(connection, { ...known, [end]: made });
+  return made;
+}
+
+function halfOf(connection: Connection, end: 'from' | 'to'): Connection {
   const { id, from, to, use, size } = connection;
   const flag = { part: referenceId(id, end), port: REFERENCE_PORT };
   return {

@@ -64,8 +64,8 @@ export function placeReferences(
       if (!part) continue;
       const placed = portOf(part, port);
       const id = referenceId(connection, end);
-      const name = nameOf(connection);
       const stood = before?.get(id);
+      const name = stood?.name ?? nameOf(connection);
       const spot = stood ? follow(stood, placed) : find(grounds?.get(sheet(port.part)), part, placed, name);
       out.set(id, {
         id,

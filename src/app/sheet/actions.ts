@@ -1,4 +1,6 @@
 import { duplicate, flipParts, turnParts } from '../../circuit/build.ts';
+import { saySheet } from '../../circuit/sheets.ts';
+import { isReference } from '../../drawing/reference-symbol.ts';
 import { namingSettings } from '../../parts/naming.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
@@ -33,13 +35,17 @@ import { placeOf, portTowards, readingOrder, stepFrom } from './reading-order.ts
 import type { Cursor } from './reading-order.ts';
 import { removal } from './removing.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { shownSheet } from './sheet-shown.svelte.ts';
+import { fitView, sheetOfCursor, turnTo } from './sheet-turning.ts';
+import { sheetsActions } from './sheets-actions.ts';
 import { saySpot } from './spot-text.ts';
 import { typeSpot } from './spots.ts';
-import { coversOf, EDGE, fitClear, itemsOf } from './fit.ts';
-import { MODULE, panBy, reveal, zoomAt } from './viewport.ts';
+import { panBy, reveal, zoomAt } from './viewport.ts';
 
 /** Stand on a thing: it comes into sight, and is selected unless a line is being drawn. */
 export function goTo(cursor: Cursor): void {
+  // Wherever it stands: its sheet comes into view.
+  const turned = turnTo(sheetOfCursor(cursor));
   desk.cursor = cursor;
   const at = placeOf(drawing.map, cursor);
   if (at) desk.viewport = reveal(desk.viewport, desk.size, { ...at, width: 0, height: 0 }, 5);
@@ -50,11 +56,16 @@ export function goTo(cursor: Cursor): void {
     return;
   }
   selectAt(cursor);
+  if (turned) desk.say(`${saySheet(editor.circuit, shownSheet.now)}.`);
 }
 
 function selectAt(cursor: Cursor): void {
   if (cursor.type === 'part') editor.select({ parts: [cursor.id] });
   else if (cursor.type === 'connection') editor.select({ connections: [cursor.id] });
+  else if (cursor.type === 'reference') {
+    const line = drawing.references.get(cursor.id)?.connection;
+    editor.select(line === undefined ? {} : { connections: [line] });
+  }
   else editor.select(cursor.type === 'label' ? { labels: [cursor.id] } : {});
 }
 
@@ -83,6 +94,7 @@ export const sheetActions: SheetActions = {
   ...arrangeActions,
   ...lineActions,
   ...lookActions,
+  ...sheetsActions,
 
   cancel() {
     const { gesture } = desk;
@@ -105,6 +117,7 @@ export const sheetActions: SheetActions = {
     if (gesture.type === 'place-several') return putDownSeveral(gesture.at ?? middleOfView());
     if (gesture.type === 'text') return writeAt(gesture.at ?? middleOfView());
     if (gesture.type === 'bend') return desk.rest();
+    if (cursor?.type === 'reference') return sheetsActions.followReference(cursor.id);
     const end = cursor && endOf(cursor);
     if (gesture.type === 'connect') {
       if (end) return finishLine(end);
@@ -130,6 +143,7 @@ export const sheetActions: SheetActions = {
 
   follow() {
     const from = desk.cursor;
+    if (from?.type === 'reference') return sheetsActions.followReference(from.id);
     const next = followed(editor.circuit.connections, from, cameFrom);
     if (!next) return desk.refuse('Go to a port with a line, or to a line, first.');
     cameFrom = from;
@@ -212,14 +226,17 @@ export const sheetActions: SheetActions = {
   duplicate() {
     const { parts, labels } = editor.selection;
     if (parts.length + labels.length === 0) return desk.refuse('Nothing is selected.');
-    const copy = tryTo(() => duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, namingSettings, labels));
+    const copy = tryTo(() => 
+      duplicate(drawing.circuit, parts, OFFSET.x, OFFSET.y, namingSettings, labels, shownSheet.now),
+    );
     if (copy && attempt(() => copy.edit, `${sayThings(parts, labels)} duplicated.`)) {
       editor.select({ parts: copy.parts, labels: copy.labels });
     }
   },
 
   selectAll() {
-    const { parts, connections, labels = [] } = editor.circuit;
+    const { connections, labels = [] } = drawing.face;
+    const parts = drawing.face.parts.filter((part) => !isReference(part));
     const ids = (list: readonly { readonly id: string }[]): string[] => list.map(({ id }) => id);
     editor.select({ parts: ids(parts), connections: ids(connections), labels: ids(labels) });
     desk.say(`${counted(parts.length, 'part')} and ${counted(connections.length, 'connection')} selected.`);
@@ -278,12 +295,7 @@ export const sheetActions: SheetActions = {
   },
 
   fit() {
-    if (editor.circuit.parts.length === 0) {
-      // An empty sheet begins at its first zone.
-      desk.viewport = { x: -EDGE / MODULE, y: -EDGE / MODULE, scale: MODULE };
-      return;
-    }
-    desk.viewport = fitClear(itemsOf(drawing.scene), desk.size, coversOf(desk.host));
+    fitView();
   },
 
   openTray() {

@@ -57,6 +57,8 @@ export const arrangeActions: ArrangeActions = {
   selectKind() {
     const { parts, connections, labels } = editor.selection;
     const { circuit } = editor;
+    // On the sheet in view: nobody sees what is selected on another one.
+    const { face } = drawing;
     if (parts.length + connections.length + labels.length === 0)
       return desk.refuse('Select a part, a line or a text first.');
     const kinds = new Set(circuit.parts.filter(({ id }) => parts.includes(id)).map(({ kind }) => kind));
@@ -64,9 +66,9 @@ export const arrangeActions: ArrangeActions = {
       circuit.connections.filter(({ id }) => connections.includes(id)).map(({ use }) => use ?? 'working'),
     );
     const found = {
-      parts: circuit.parts.filter(({ kind }) => kinds.has(kind)).map(({ id }) => id),
-      connections: circuit.connections.filter(({ use }) => uses.has(use ?? 'working')).map(({ id }) => id),
-      labels: labels.length > 0 ? (circuit.labels ?? []).map(({ id }) => id) : [],
+      parts: face.parts.filter(({ kind }) => kinds.has(kind)).map(({ id }) => id),
+      connections: face.connections.filter(({ use }) => uses.has(use ?? 'working')).map(({ id }) => id),
+      labels: labels.length > 0 ? (face.labels ?? []).map(({ id }) => id) : [],
     };
     editor.select(found);
     const words = [

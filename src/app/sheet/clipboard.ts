@@ -8,6 +8,7 @@ import { attempt, tryTo } from './attempt.ts';
 import { desk } from './desk.svelte.ts';
 import { sayThings } from './hand.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { shownSheet } from './sheet-shown.svelte.ts';
 import { snap, toSheet } from './viewport.ts';
 
 /** Modules that a copy stands off from what it was copied from. */
@@ -46,7 +47,7 @@ export function pasteText(text: string): void {
   lastText = text;
   const fragment = read.value;
   const by = offsetInSight(circuitBounds(fragment), times);
-  const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y, namingSettings));
+  const pasted = tryTo(() => paste(editor.circuit, fragment, by.x, by.y, namingSettings, shownSheet.now));
   if (!pasted) return;
   const { edit, parts, labels } = pasted;
   if (

@@ -2,7 +2,7 @@ import type { Edge, Way } from '../../drawing/arrange.ts';
 import type { Chord } from './chords.ts';
 
 /** What the commands act on; the sheet's desk implements it. */
-export interface SheetActions extends ArrangeActions, LineActions, LookActions {
+export interface SheetActions extends ArrangeActions, LineActions, LookActions, SheetsActions {
   cancel(): void;
   accept(): void;
   /** Go to the next or previous thing in reading order; false at the end, so that Tab leaves the sheet. */
@@ -65,7 +65,18 @@ export interface LookActions {
   openMaker(): void;
 }
 
-export type CommandGroup = 'Draw' | 'Change' | 'Arrange' | 'Lines' | 'Select and go' | 'Levers' | 'View';
+export interface SheetsActions {
+  /** False if there is but one sheet. */
+  turnSheet(by: 1 | -1): boolean;
+  /** Go to a sheet; add, name, move or delete one. */
+  sheetMenu(): void;
+  /** Asks which sheet what is selected is to go to. */
+  moveToSheet(): void;
+  /** To where the line of a reference goes on. */
+  followReference(id: string): void;
+}
+
+export type CommandGroup = 'Draw' | 'Change' | 'Arrange' | 'Lines' | 'Select and go' | 'Sheets' | 'Levers' | 'View';
 
 export interface Command {
   readonly id: string;

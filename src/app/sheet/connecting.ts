@@ -47,35 +47,40 @@ export function joinEnds(circuit: Circuit, from: End, to: End): Edit {
     const use = useOf(circuit, [from.ref, to.ref]);
     return connect(circuit, from.ref, to.ref, use ? { use } : {});
   }
-  if (from.type === 'port' && to.type === 'line') return tee(circuit, from.ref, to.connection, to.at);
-  if (from.type === 'line' && to.type === 'port') return tee(circuit, to.ref, from.connection, from.at);
+  if (from.type === 'port' && to.type === 'line') return tee(circuit, from.ref, to);
+  if (from.type === 'line' && to.type === 'port') return tee(circuit, to.ref, from);
   if (from.type === 'line' && to.type === 'line') return bridge(circuit, from, to);
   throw new RefusedEdit('line', 'A line needs two ends.', 'End it at a port or on a line.');
 }
 
-function tee(circuit: Circuit, ref: PortRef, connection: string, at: Point): Edit {
+type LineEnd = Extract<End, { type: 'line' }>;
+const onSheet = ({ sheet }: LineEnd): { sheet?: string } => (sheet === undefined ? {} : { sheet });
+
+function tee(circuit: Circuit, ref: PortRef, end: LineEnd): Edit {
   const use = useOf(circuit, [ref]);
-  return connectToConnection(circuit, ref, connection, at, use ? { use } : {});
+  return connectToConnection(circuit, ref, end.connection, end.at, { ...(use && { use }), ...onSheet(end) });
 }
 
 /** A junction on each of two lines, and a connection between them. */
-function bridge(circuit: Circuit, from: Extract<End, { type: 'line' }>, to: Extract<End, { type: 'line' }>): Edit {
+function bridge(circuit: Circuit, from: LineEnd, to: LineEnd): Edit {
   if (lineOf(circuit, from.connection).has(to.connection)) {
     throw new RefusedEdit(from.connection, 'Both ends are on one line already.', 'End on another line or at a port.');
   }
   const far = circuit.connections.find(({ id }) => id === to.connection);
   if (!far) throw new RefusedEdit(to.connection, 'That line is gone.', 'End on another line or at a port.');
   // A tee from the far line's own end splits the near line; its branch is then left out.
-  const teed = connectToConnection(circuit, far.from, from.connection, from.at);
+  const teed = connectToConnection(circuit, far.from, from.connection, from.at, onSheet(from));
   const [put, ...rest] = teed.type === 'all' ? teed.edits : [];
-  if (put?.type !== 'put-part') throw new RefusedEdit(from.connection, 'That line cannot be split here.', 'Start at another spot.');
+  if (put?.type !== 'put-part')
+    throw new RefusedEdit(from.connection, 'That line cannot be split here.', 'Start at another spot.');
   const split = all([put, ...rest.slice(0, 2)]);
   const after = applyEdit(circuit, split);
-  return all([split, connectToConnection(after, { part: put.part.id, port: 'J' }, to.connection, to.at)]);
+  return all([split, connectToConnection(after, { part: put.part.id, port: 'J' }, to.connection, to.at, onSheet(to))]);
 }
 
 export const sayEnd = (circuit: Circuit, end: End): string => {
-  if (end.type === 'line') return `line ${circuit.connections.find(({ id }) => id === end.connection)?.name ?? 'in between'}`;
+  if (end.type === 'line')
+    return `line ${circuit.connections.find(({ id }) => id === end.connection)?.name ?? 'in between'}`;
   const part = circuit.parts.find(({ id }) => id === end.ref.part);
   return sayPort({ part: part?.label ?? end.ref.part, port: end.ref.port });
 };

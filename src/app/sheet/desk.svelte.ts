@@ -6,10 +6,10 @@ import type { Hit } from './hit.ts';
 import type { Cursor } from './reading-order.ts';
 import type { Size, Viewport } from './viewport.ts';
 
-/** One end of a line that is being drawn. */
+/** One end of a line that is being drawn; `sheet`: where it stands, set when the line begins or ends there. */
 export type End =
-  | { readonly type: 'port'; readonly ref: PortRef; readonly at: Point; readonly side: Side }
-  | { readonly type: 'line'; readonly connection: string; readonly at: Point };
+  | { readonly type: 'port'; readonly ref: PortRef; readonly at: Point; readonly side: Side; readonly sheet?: string }
+  | { readonly type: 'line'; readonly connection: string; readonly at: Point; readonly sheet?: string };
 
 /** What the hand is doing. */
 export type Gesture =
@@ -88,6 +88,8 @@ class Desk {
   /** Where the keyboard stands. */
   cursor = $state.raw<Cursor | undefined>();
   naming = $state.raw<Naming | undefined>();
+  /** Sheet that is getting a name, in its tab. */
+  namingSheet = $state<string | undefined>();
   trayOpen = $state(false);
   /** Part that what is picked in the tray takes the place of. */
   swapping = $state<string | undefined>();

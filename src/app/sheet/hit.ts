@@ -3,6 +3,8 @@ import type { Box, Point, Side } from '../../base/points.ts';
 /** What stands where on the sheet, in modules. */
 export interface HitMap {
   readonly parts: readonly { readonly id: string; readonly box: Box }[];
+  /** Where lines go on on other sheets. */
+  readonly references?: readonly { readonly id: string; readonly box: Box }[];
   readonly ports: readonly HitPort[];
   readonly routes: readonly { readonly id: string; readonly points: readonly Point[] }[];
   /** Free texts. */
@@ -21,6 +23,7 @@ export interface HitPort {
 export type Hit =
   | { readonly type: 'port'; readonly port: HitPort }
   | { readonly type: 'part'; readonly id: string }
+  | { readonly type: 'reference'; readonly id: string }
   | { readonly type: 'connection'; readonly id: string; readonly at: Point; readonly segment: number }
   | { readonly type: 'paper' };
 
@@ -72,10 +75,12 @@ export function routeAt(map: HitMap, p: Point, reach: number): Extract<Hit, { ty
   return best;
 }
 
-/** Ports first, then parts, then lines. */
+/** Ports first, then references and parts, then lines. */
 export function hitAt(map: HitMap, p: Point, reach: number): Hit {
   const port = portAt(map, p, reach);
   if (port) return { type: 'port', port };
+  const reference = map.references?.find(({ box }) => inBox(box, p));
+  if (reference) return { type: 'reference', id: reference.id };
   const part = partAt(map, p, 0);
   if (part !== undefined) return { type: 'part', id: part };
   const route = routeAt(map, p, reach);

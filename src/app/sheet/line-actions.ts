@@ -29,6 +29,7 @@ function sayStretch(route: readonly Point[], segment: number): string {
 export function takeStretch(connection: string, segment: number, held: boolean): void {
   const route = routeOf(connection);
   if (route.length < 2) return;
+  if (drawing.crosses(connection)) return desk.refuse('This line leads to another sheet; it lays itself.');
   desk.gesture = { type: 'bend', connection, segment: Math.min(segment, route.length - 2), route, held };
 }
 

@@ -104,6 +104,29 @@ export const MORE_COMMANDS: readonly Command[] = [
     run: (s) => s.openMenu(),
   },
 
+  {
+    id: 'sheet-next',
+    title: 'Next sheet; a line that is being drawn goes along',
+    group: 'Sheets',
+    keys: ['PageDown'],
+    run: (s) => s.turnSheet(1),
+  },
+  { id: 'sheet-before', title: 'Sheet before', group: 'Sheets', keys: ['PageUp'], run: (s) => s.turnSheet(-1) },
+  {
+    id: 'sheets',
+    title: 'Sheets: go to one, add, name, move or delete one',
+    group: 'Sheets',
+    keys: ['Shift+P'],
+    run: (s) => s.sheetMenu(),
+  },
+  {
+    id: 'to-sheet',
+    title: 'Move the selection to another sheet',
+    group: 'Sheets',
+    keys: ['Shift+PageDown'],
+    run: (s) => s.moveToSheet(),
+  },
+
   { id: 'overview', title: 'Overview of the whole sheet', group: 'View', keys: ['Z'], run: (s) => s.toggleOverview() },
   { id: 'rulers', title: 'Rulers in modules', group: 'View', keys: ['Shift+Z'], run: (s) => s.toggleRulers() },
   { id: 'grid', title: 'Grid', group: 'View', keys: ['#'], run: (s) => s.toggleGrid() },

@@ -7,12 +7,13 @@ export type Cursor =
   | { readonly type: 'part'; readonly id: string }
   | { readonly type: 'port'; readonly part: string; readonly port: string }
   | { readonly type: 'connection'; readonly id: string }
+  | { readonly type: 'reference'; readonly id: string }
   | { readonly type: 'label'; readonly id: string };
 
 /** Parts whose tops differ by less stand in one row. */
 const ROW = 6;
 
-/** Parts in rows from the top, each followed by its ports; then the lines and the texts. Without parts while a line is drawn. */
+/** Parts in rows from the top, each followed by its ports; then lines, references and texts. Without parts while a line is drawn. */
 export function readingOrder(map: HitMap, ends: boolean): Cursor[] {
   const rows = [...map.parts].sort((a, b) => a.box.y - b.box.y);
   const order: typeof rows = [];
@@ -39,6 +40,7 @@ export function readingOrder(map: HitMap, ends: boolean): Cursor[] {
       ...(ports.get(id) ?? []),
     ]),
     ...map.routes.map(({ id }): Cursor => ({ type: 'connection', id })),
+    ...(map.references ?? []).map(({ id }): Cursor => ({ type: 'reference', id })),
     ...(ends ? [] : (map.labels ?? []).map(({ id }): Cursor => ({ type: 'label', id }))),
   ];
 }
@@ -65,8 +67,9 @@ export function placeOf(map: HitMap, cursor: Cursor): Point | undefined {
     const box = map.parts.find((p) => p.id === cursor.id)?.box;
     return box && { x: box.x + box.width / 2, y: box.y + box.height / 2 };
   }
-  if (cursor.type === 'label') {
-    const box = map.labels?.find((each) => each.id === cursor.id)?.box;
+  if (cursor.type === 'label' || cursor.type === 'reference') {
+    const list = cursor.type === 'label' ? map.labels : map.references;
+    const box = list?.find((each) => each.id === cursor.id)?.box;
     return box && { x: box.x + box.width / 2, y: box.y + box.height / 2 };
   }
   const points = map.routes.find((r) => r.id === cursor.id)?.points ?? [];

@@ -1,5 +1,6 @@
 import type { Point } from '../../base/points.ts';
 import { groupOf } from '../../circuit/groups.ts';
+import { hasSheets } from '../../circuit/sheets.ts';
 import { isStripValve } from '../../parts/valve-kinds.ts';
 import { editor } from '../state/editor.svelte.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
@@ -73,6 +74,7 @@ export function menuItems(): { title: string; items: MenuItem[] } {
           : []),
         heading('Selection'),
         ...items('select-kind', 'duplicate', 'copy', 'cut', 'save-own'),
+        ...(hasSheets(circuit) ? items('to-sheet') : []),
         ...(only ? [] : items('tidy')),
         heading('Delete'),
         ...items('delete', 'delete-heal'),
@@ -102,6 +104,8 @@ export function menuItems(): { title: string; items: MenuItem[] } {
       ...items('select-all', 'find'),
       heading('Lines'),
       item('tidy', !circuit.connections.some(({ bends }) => bends?.length)),
+      heading('Sheets'),
+      ...items('sheets'),
       heading('View'),
       ...items('fit', 'overview', 'rulers', 'grid', 'hops'),
     ],

@@ -24,20 +24,21 @@ const KEY = 'viewport';
 const DELAY_MS = 400;
 interface Kept extends Viewport {
   readonly of: string;
+  readonly sheet?: string;
 }
 let timer: ReturnType<typeof setTimeout> | undefined;
 
 const nameNow = (): string => `${editor.fileName ?? ''} ${editor.circuit.name}`;
 
-/** Where the sheet of this name was looked at when it was last left. */
-export function lastViewport(): Viewport | undefined {
+/** Which sheet of the circuit of this name was looked at when it was last left, and where. */
+export function lastViewport(): { readonly viewport: Viewport; readonly sheet: string | undefined } | undefined {
   const kept = recall<Partial<Kept> | undefined>(KEY, undefined);
-  const { of, x, y, scale } = kept ?? {};
+  const { of, x, y, scale, sheet } = kept ?? {};
   if (of !== nameNow() || ![x, y, scale].every(Number.isFinite)) return undefined;
-  return { x: Number(x), y: Number(y), scale: Number(scale) };
+  return { viewport: { x: Number(x), y: Number(y), scale: Number(scale) }, sheet };
 }
 
-export function keepViewport(viewport: Viewport): void {
+export function keepViewport(viewport: Viewport, sheet: string): void {
   clearTimeout(timer);
-  timer = setTimeout(() => remember(KEY, { ...viewport, of: nameNow() }), DELAY_MS);
+  timer = setTimeout(() => remember(KEY, { ...viewport, sheet, of: nameNow() }), DELAY_MS);
 }

@@ -1,10 +1,15 @@
+import type { Reference } from '../../drawing/references.ts';
+import { saySheet } from '../../circuit/sheets.ts';
 import { labelOf } from '../../circuit/model.ts';
 import type { Circuit, Connection, Part } from '../../circuit/model.ts';
 import { kindOf } from '../../parts/catalogue.ts';
+import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { desk } from './desk.svelte.ts';
 import { insertHint } from './inserting.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { shownSheet } from './sheet-shown.svelte.ts';
+import { zoneAt } from './zones.ts';
 
 /** What a screen reader says of a part. */
 export function sayPart(part: Part): string {
@@ -27,6 +32,13 @@ export function sayConnection(connection: Connection, parts: ReadonlyMap<string,
     .join(', ');
 }
 
+/** What a screen reader says of a reference, and the status line. */
+export function sayReference({ name, other, port }: Reference): string {
+  const there = drawing.references.get(other);
+  const where = there ? ` goes on on ${saySheet(editor.circuit, there.sheet)}, zone ${zoneAt(there.at)}` : '';
+  return `Line ${name} from ${drawing.byId.get(port.part)?.label ?? port.part}.${port.port}${where}`;
+}
+
 /** One line on what can be done now. */
 export function hint(circuit: Circuit, selected: number): string {
   const { gesture, hover, cursor } = desk;
@@ -42,13 +54,19 @@ export function hint(circuit: Circuit, selected: number): string {
   if (gesture.type === 'place')
     return `Click to put ${gesture.form.title.toLowerCase()} down, or type its position, such as 20, 38. Shift for several, T turns, F flips, Escape puts it away.`;
   if (gesture.type === 'connect')
-    return 'End at a port or on a line; / finds a port by its name. Escape gives the line up.';
+    return gesture.from.sheet !== undefined && gesture.from.sheet !== shownSheet.now
+      ? `Line from ${saySheet(circuit, gesture.from.sheet)}: end it at a port or on a line here. Escape gives it up.`
+      : 'End at a port or on a line; / finds a port by its name. Escape gives the line up.';
   if (gesture.type === 'drag') return 'Let go to put it here. Escape leaves it where it was.';
   if (gesture.type !== 'none' || circuit.parts.length === 0) return '';
   if (hover.type === 'port' && !hover.port.joint)
     return `${sayPortOf(circuit, hover.port.part, hover.port.port)}: drag or click to draw a line.`;
   if (cursor?.type === 'port' && desk.focused)
     return `${sayPortOf(circuit, cursor.part, cursor.port)}: Enter starts a line, arrows go to the next port.`;
+  const reference = drawing.references.get(
+    hover.type === 'reference' ? hover.id : cursor?.type === 'reference' && desk.focused ? cursor.id : '',
+  );
+  if (reference) return `${sayReference(reference)}: click or Enter goes there.`;
   if (hover.type === 'connection') return sayConnectionById(circuit, hover.id);
   if (selected > 1)
     return 'Arrows move, H and V line up, G draws a block, Del deletes; the menu key or a right click has the rest.';
