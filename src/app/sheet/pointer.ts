@@ -22,6 +22,7 @@ import { dropStretch, previewStretch, takeStretch } from './line-actions.ts';
 import { plane } from './plane.svelte.ts';
 import { openMenuAt } from './sheet-menu.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { sheetsActions } from './sheets-actions.ts';
 import { panBy, snap, zoomAt } from './viewport.ts';
 
 /** A press of the button until it is let go. */
@@ -67,8 +68,10 @@ export class SheetPointer {
     const { gesture } = desk;
     const pans = event.button === 1 || desk.panning;
     if (!pans && gesture.type === 'connect') {
-      const over = endAt(hitAt(drawing.map, at, reach()));
+      const hit = hitAt(drawing.map, at, reach());
+      const over = endAt(hit);
       if (over) finishLine(over);
+      else if (hit.type === 'reference') sheetsActions.followReference(hit.id);
       else desk.refuse('There is no port or line here. Click one, or press Escape to give the line up.');
       return;
     }
@@ -143,6 +146,7 @@ export class SheetPointer {
       return desk.refuse('The line ended on bare paper. End it at a port or on a line.');
     }
     if (press.moved) return;
+    if (press.hit.type === 'reference') return sheetsActions.followReference(press.hit.id);
     if (press.hit.type === 'port' && !press.hit.port.joint && !press.adds) startLine(portEnd(press.hit.port), false);
     if (press.hit.type === 'paper' && !press.adds) {
       editor.select({});
@@ -343,6 +347,7 @@ function pick(hit: Press['hit'], adds: boolean): void {
   if (hit.type === 'part') [list, id] = ['parts', hit.id];
   else if (hit.type === 'connection') [list, id] = ['connections', hit.id];
   else if (hit.type === 'label') [list, id] = ['labels', hit.id];
+  else if (hit.type === 'reference') [list, id] = ['connections', drawing.references.get(hit.id)?.connection ?? ''];
   else if (hit.type === 'port' && hit.port.joint && !adds) [list, id] = ['parts', hit.port.part];
   else return;
   const was = editor.isSelected(list, id);
