@@ -9,7 +9,7 @@ import { Elimination } from './eliminate.ts';
 import type { Ways } from './eliminate.ts';
 import type { SetAlgebra } from './set-algebra.ts';
 import { compileSetEdges } from './set-edges.ts';
-import type { LineSets, SetEdges } from './set-edges.ts';
+import type { LineSets, SetEdges, SetPositions } from './set-edges.ts';
 
 /** What open paths say of every line in every combination, as exact sets, however many combinations there are. */
 export interface OpenPathSets<S extends SetAlgebra = Diagrams> {
@@ -63,13 +63,14 @@ export function openPathSets(net: Network, conditions: PathConditions, options: 
   );
 }
 
-/** The same with sets of another kind. */
+/** The same with sets of another kind. `positions`: where the dependent valves stand; throws if there are some and it is not given. */
 export function openPathsOver<S extends SetAlgebra>(
   net: Network,
   conditions: PathConditions,
   sets: S,
+  positions?: SetPositions,
 ): OpenPathSets<S> {
-  const edges = compileSetEdges(net, sets);
+  const edges = compileSetEdges(net, sets, positions);
   const links = compileLinks(net, conditions.places);
   let hunts = NONE;
   // Each round can settle at least one more lock check, unless they chase each other; as in `PathSolver`.

@@ -28,8 +28,8 @@ export function orderInputs(net: Network): number[] {
 }
 
 /**
- * Inputs that have a path at the same line, lines that are always joined being one. A tank is no such
- * line: oil does not come back out of it.
+ * Inputs that have a path at the same line, lines that are always joined being one, and those that a dependent valve
+ * may join. A tank is no such line: oil does not come back out of it.
  */
 function groupsOf(net: Network): number[][] {
   const root = net.lines.map((_, line) => line);
@@ -39,12 +39,13 @@ function groupsOf(net: Network): number[][] {
     return at;
   };
   for (const path of net.paths) {
-    if (path.input >= 0 || path.oneWay || net.lines[path.from]?.tank || net.lines[path.to]?.tank) continue;
+    const commanded = path.input >= 0 && path.input < net.inputs.length;
+    if (commanded || path.oneWay || net.lines[path.from]?.tank || net.lines[path.to]?.tank) continue;
     root[find(path.from)] = find(path.to);
   }
   const members = new Map<number, Set<number>>();
   for (const path of net.paths) {
-    if (path.input < 0) continue;
+    if (path.input < 0 || path.input >= net.inputs.length) continue;
     for (const line of [path.from, path.to]) {
       if (net.lines[line]?.tank) continue;
       const set = members.get(find(line)) ?? new Set<number>();

@@ -36,7 +36,19 @@ interface Edge {
   readonly free: boolean;
 }
 
-export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
+/** Of each dependent valve the combinations in which it stands in each position. */
+export type SetPositions = readonly (readonly Diagram[])[];
+
+/** Throws where nobody says where the dependent valves stand. */
+export function compileSetEdges(net: Network, sets: SetAlgebra, settled?: SetPositions): SetEdges {
+  if (net.dependents.length > 0 && settled === undefined)
+    throw new Error('nobody says where the dependent valves stand');
+  /** Combinations in which an input, or a dependent valve after all inputs, stands in one of `positions`. */
+  const standing = (input: number, positions: number): Diagram => {
+    if (input < net.inputs.length) return sets.literal(input, positions);
+    const valve = settled?.[input - net.inputs.length] ?? [];
+    return valve.reduce((any, set, p) => (((positions >>> p) & 1) === 1 ? sets.or(any, set) : any), NONE);
+  };
   const open: Diagram[] = [ALL];
   const numbers = new Map<Diagram, number>([[ALL, 0]]);
   const edges: Edge[] = [];
@@ -49,7 +61,7 @@ export function compileSetEdges(net: Network, sets: SetAlgebra): SetEdges {
     readonly vented: boolean;
   }[] = [];
   for (const path of net.paths) {
-    const base = path.input < 0 ? ALL : sets.literal(path.input, path.positions);
+    const base = path.input < 0 ? ALL : standing(path.input, path.positions);
     const free = !path.throttled;
     if (path.pilot >= 0 || path.vent >= 0) {
       const vented = path.vent >= 0;

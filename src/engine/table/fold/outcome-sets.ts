@@ -2,7 +2,7 @@ import type { BitSet } from '../../../base/bits.ts';
 import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { ALL, Diagrams, NONE } from '../../paths/diagrams/diagrams.ts';
-import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
+import type { SettledPaths } from '../../paths/diagrams/settled-paths.ts';
 import { planeToDiagram } from '../../paths/diagrams/plane.ts';
 import type { PathConditions } from '../../paths/reach.ts';
 import { PanelSets } from '../sets/panel-sets.ts';
@@ -65,7 +65,7 @@ export function tableOutcomes(data: TableData, heartbeat: () => void = () => und
 }
 
 /** From exact sets of open paths, however many combinations there are. Asking throws `TooManyNodes` where they do not fit. */
-export function pathOutcomes(net: Network, conditions: PathConditions, paths: OpenPathSets): OutcomeSource {
+export function pathOutcomes(net: Network, conditions: PathConditions, paths: SettledPaths): OutcomeSource {
   const panel = new PanelSets(net, conditions, paths);
   const list = (found: readonly Diagram[] | undefined, words: readonly string[]): OutcomeSet[] =>
     words.map((word, i) => ({ word, set: found?.[i] ?? NONE }));

@@ -4,34 +4,42 @@ import { NONE } from '../../paths/diagrams/diagrams.ts';
 import { motionSets } from '../../paths/diagrams/motion-sets.ts';
 import type { MotionSets } from '../../paths/diagrams/motion-sets.ts';
 import { oneMoveFrom } from '../../paths/diagrams/one-move.ts';
-import { openPathsOver } from '../../paths/diagrams/open-paths.ts';
-import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
+import { settledPathsOver } from '../../paths/diagrams/settled-paths.ts';
+import type { SettledPaths } from '../../paths/diagrams/settled-paths.ts';
 import type { PathConditions } from '../../paths/reach.ts';
 import { actuatorSets } from './actuator-sets.ts';
 import type { ActuatorSets } from './actuator-sets.ts';
 import { lineSets } from './line-sets.ts';
 import type { LineOutcomeSets } from './line-sets.ts';
 import { pumpSets } from './pump-sets.ts';
+import { touchedSets } from './touched-sets.ts';
+import type { TouchedSets } from './touched-sets.ts';
 import { trapSets } from './trap-sets.ts';
 import type { PanelState } from './trap-sets.ts';
+import { ACTUATOR_VERDICTS, PUMP_VERDICTS } from '../words.ts';
+
+const ACTUATOR_RESTS = ACTUATOR_VERDICTS.indexOf('rests on pressure');
+const PUMP_RESTS = PUMP_VERDICTS.indexOf('rests on pressure');
 
 /**
  * Outcomes of a panel of any size by open paths, each sought when it is first asked for: the sets that the
- * planes of a listed table would have without pressures. Asking throws `TooManyNodes` where they do not fit.
+ * planes of a listed table would have without pressures. Dependent valves stand where open paths put them, and what
+ * would do otherwise if one stood elsewhere is left to the pressures. Asking throws `TooManyNodes` where they do not fit.
  */
 export class PanelSets {
   readonly net: Network;
   readonly conditions: PathConditions;
-  readonly paths: OpenPathSets;
+  readonly paths: SettledPaths;
   readonly #actuators = new Map<number, ActuatorSets>();
   readonly #pumps = new Map<number, readonly Diagram[]>();
   #motions: MotionSets | undefined;
   #lines: LineOutcomeSets | undefined;
   #traps: readonly (readonly Diagram[])[] | undefined;
+  #touches: TouchedSets | undefined;
   #open: Diagram | undefined;
   #moving: Diagram | undefined;
 
-  constructor(net: Network, conditions: PathConditions, paths: OpenPathSets) {
+  constructor(net: Network, conditions: PathConditions, paths: SettledPaths) {
     this.net = net;
     this.conditions = conditions;
     this.paths = paths;
@@ -43,8 +51,10 @@ export class PanelSets {
 
   /** By index of the verdict or note. */
   actuator(index: number): ActuatorSets {
-    const found =
-      this.#actuators.get(index) ?? actuatorSets(this.net, this.conditions, this.paths, this.motions, index);
+    const known = this.#actuators.get(index);
+    if (known) return known;
+    const { verdicts, notes } = this.#firstActuator(index);
+    const found = { verdicts: this.#doubted(verdicts, this.#touched?.actuators[index], ACTUATOR_RESTS), notes };
     this.#actuators.set(index, found);
     return found;
   }
@@ -53,10 +63,33 @@ export class PanelSets {
   pump(index: number): readonly Diagram[] {
     const known = this.#pumps.get(index);
     if (known) return known;
-    const pump = this.net.pumps[index] as NetPump;
-    const found = pumpSets(index, pump, this.net, this.conditions, this.paths, this.motions);
+    const found = this.#doubted(this.#firstPump(index), this.#touched?.pumps[index], PUMP_RESTS);
     this.#pumps.set(index, found);
     return found;
+  }
+
+  /** Before other positions of the dependent valves are looked at. */
+  #firstActuator(index: number): ActuatorSets {
+    return actuatorSets(this.net, this.conditions, this.paths, this.motions, index);
+  }
+
+  #firstPump(index: number): readonly Diagram[] {
+    return pumpSets(index, this.net.pumps[index] as NetPump, this.net, this.conditions, this.paths, this.motions);
+  }
+
+  /** Undefined without dependent valves. */
+  get #touched(): TouchedSets | undefined {
+    if (this.net.dependents.length === 0) return undefined;
+    return (this.#touches ??= touchedSets(this.net, this.conditions, this.paths, [
+      ...this.net.actuators.map((_, i) => this.#firstActuator(i).verdicts),
+      ...this.net.pumps.map((_, i) => this.#firstPump(i)),
+    ]));
+  }
+
+  #doubted(verdicts: readonly Diagram[], touched: Diagram | undefined, rests: number): readonly Diagram[] {
+    const { sets } = this.paths;
+    if (touched === undefined || touched === NONE) return verdicts;
+    return verdicts.map((set, i) => (i === rests ? sets.or(set, touched) : sets.minus(set, touched)));
   }
 
   get lines(): LineOutcomeSets {
@@ -80,7 +113,7 @@ export class PanelSets {
     const { net, conditions, paths } = this;
     if (conditions.pumpsRunning) return asked;
     const where = { ...conditions, pumpsRunning: true };
-    const found = openPathsOver(net, where, paths.sets);
+    const found = settledPathsOver(net, where, paths.sets);
     const motions = motionSets(net, where, found);
     return { paths: found, motions, lines: lineSets(net, where, found, motions) };
   }
@@ -97,9 +130,9 @@ export class PanelSets {
   /** Combinations in which some motion is left to the pressures, or nothing settles it. */
   get open(): Diagram {
     const { sets, hunts } = this.paths;
-    return (this.#open ??= this.motions.actuators.reduce(
-      (all, { rests }) => sets.or(all, rests),
-      sets.or(hunts, NONE),
-    ));
+    return (this.#open ??= [
+      ...this.motions.actuators.map(({ rests }) => rests),
+      ...(this.#touched?.actuators ?? []),
+    ].reduce((all, set) => sets.or(all, set), hunts));
   }
 }

@@ -2,71 +2,12 @@ import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { unlimited } from '../../../../src/base/budget.ts';
 import { explainRow, networkOf, pathConditions, tabulate } from '../../../../src/analysis/analyse.ts';
-import type { Circuit, Connection, Part } from '../../../../src/circuit/model.ts';
 import { PressureSolver } from '../../../../src/engine/table/resolve.ts';
 import { StateTable } from '../../../../src/engine/table/state-table.ts';
 import type { NetDependent, Network } from '../../../../src/network/network.ts';
-import { kindOf } from '../../../../src/parts/catalogue.ts';
+import { pilotedCircuits } from './random-piloted.ts';
 
 const settingsOf = (net: Network): number => net.dependents.reduce((n, valve) => n * valve.positions.length, 1);
-
-const KINDS = [
-  'pilot-valve',
-  'two-stage-valve',
-  'cylinder',
-  'pilot-valve',
-  'check-valve',
-  'directional-valve',
-  'throttle',
-];
-/** Hubs of lines: supply, return, and four others. */
-const HUBS = ['SUPPLY', 'RETURN', 'L1', 'L2', 'L3', 'L4'];
-
-/** Valves near enough to sense: P mostly on the supply, T mostly on the return, all else where it falls. */
-const circuits: fc.Arbitrary<Circuit> = fc
-  .tuple(
-    fc.array(fc.tuple(fc.nat({ max: KINDS.length - 1 }), fc.nat(), fc.boolean()), { minLength: 3, maxLength: 6 }),
-    fc.array(fc.nat({ max: 99 }), { minLength: 40, maxLength: 40 }),
-  )
-  .map(([picks, draws]) => {
-    const parts: Part[] = [
-      { id: 'PUMP', kind: 'fixed-pump' },
-      { id: 'RELIEF', kind: 'relief-valve' },
-      { id: 'TANK', kind: 'tank' },
-      ...HUBS.map((id): Part => ({ id, kind: 'junction' })),
-    ];
-    const connections: Connection[] = [];
-    const wire = (part: string, port: string, hub: string | undefined): void => {
-      if (hub === undefined) return;
-      const id = `c${connections.length}`;
-      connections.push({ id, from: { part, port }, to: { part: hub, port: 'J' } });
-    };
-    wire('PUMP', 'P', 'SUPPLY');
-    wire('RELIEF', 'P', 'SUPPLY');
-    wire('RELIEF', 'T', 'RETURN');
-    wire('TANK', 'T', 'RETURN');
-    let drawn = 0;
-    picks.forEach(([pick, form, loaded], i) => {
-      const kind = kindOf(KINDS[i === 0 ? 0 : pick] as string);
-      if (!kind) throw new Error('no such kind');
-      const made = kind.readyMade[form % kind.readyMade.length]?.make();
-      const load = kind.kind === 'cylinder' && loaded ? { load: '6 kN', loadSense: 'resisting' } : {};
-      const part: Part = { id: `N${i}`, kind: kind.kind, ...made, settings: { ...made?.settings, ...load } };
-      parts.push(part);
-      for (const { id } of kind.ports(part)) {
-        const draw = draws[drawn++ % draws.length] as number;
-        const likely = id === 'P' ? 0 : id === 'T' ? 1 : -1;
-        wire(part.id, id, likely >= 0 && draw < 70 ? HUBS[likely] : HUBS[draw % 7]);
-      }
-    });
-    return { name: 'random', parts, connections };
-  })
-  .filter((circuit) => {
-    const { dependents, inputs } = networkOf(circuit);
-    const settings = dependents.reduce((n, valve) => n * valve.positions.length, 1);
-    const rows = inputs.reduce((n, input) => n * input.positions.length, 1);
-    return dependents.length > 0 && settings <= 27 && rows <= 27;
-  });
 
 /** Every setting in mixed radix. */
 function* everySetting(net: Network): Generator<number[]> {
@@ -97,7 +38,7 @@ function goesTo(valve: NetDependent, now: number, commanded: readonly number[], 
 test('the setting of every row agrees with its own pressures or the row hunts, and trying every setting finds the same others', () => {
   const seen = { rows: 0, hunts: 0, history: 0, shifted: 0, judged: 0 };
   fc.assert(
-    fc.property(circuits, fc.constantFrom('running' as const, 'stopped' as const), (circuit, pumps) => {
+    fc.property(pilotedCircuits, fc.constantFrom('running' as const, 'stopped' as const), (circuit, pumps) => {
       const net = networkOf(circuit);
       const table = new StateTable(tabulate(circuit, { pumps }, unlimited, { pressureRows: 2000 }));
       const solver = new PressureSolver(net, pathConditions(net, { pumps }));
@@ -143,32 +84,37 @@ test('the setting of every row agrees with its own pressures or the row hunts, a
 
 test('the words of a row say what the table says, dependent valves included', () => {
   fc.assert(
-    fc.property(circuits, fc.nat(), fc.constantFrom('running' as const, 'stopped' as const), (circuit, pick, pumps) => {
-      const table = new StateTable(tabulate(circuit, { pumps }, unlimited, { pressureRows: 2000 }));
-      const row = pick % table.count;
-      const said = explainRow(circuit, { pumps }, row);
-      expect(said.dependents.map(({ position }) => position)).toEqual(
-        table.data.dependents.map((_, d) => table.dependent(d, row)),
-      );
-      expect(said.dependents.map(({ hunts }) => hunts)).toEqual(table.data.dependents.map(() => table.hunts(row)));
-      expect(said.actuators.map(({ verdict }) => verdict)).toEqual(
-        table.data.actuators.map((_, i) => table.actuator(i, row)),
-      );
-      expect(said.pumps.map(({ verdict }) => verdict)).toEqual(table.data.pumps.map((_, i) => table.pump(i, row)));
-      expect(said.trapped.map(({ line, reasons }) => [line, reasons.map(({ kind }) => kind)])).toEqual(
-        table.data.lines.flatMap((_, line) => {
-          const reasons = table.trapped(line, row);
-          return reasons.length > 0 ? [[line, reasons]] : [];
-        }),
-      );
-    }),
+    fc.property(
+      pilotedCircuits,
+      fc.nat(),
+      fc.constantFrom('running' as const, 'stopped' as const),
+      (circuit, pick, pumps) => {
+        const table = new StateTable(tabulate(circuit, { pumps }, unlimited, { pressureRows: 2000 }));
+        const row = pick % table.count;
+        const said = explainRow(circuit, { pumps }, row);
+        expect(said.dependents.map(({ position }) => position)).toEqual(
+          table.data.dependents.map((_, d) => table.dependent(d, row)),
+        );
+        expect(said.dependents.map(({ hunts }) => hunts)).toEqual(table.data.dependents.map(() => table.hunts(row)));
+        expect(said.actuators.map(({ verdict }) => verdict)).toEqual(
+          table.data.actuators.map((_, i) => table.actuator(i, row)),
+        );
+        expect(said.pumps.map(({ verdict }) => verdict)).toEqual(table.data.pumps.map((_, i) => table.pump(i, row)));
+        expect(said.trapped.map(({ line, reasons }) => [line, reasons.map(({ kind }) => kind)])).toEqual(
+          table.data.lines.flatMap((_, line) => {
+            const reasons = table.trapped(line, row);
+            return reasons.length > 0 ? [[line, reasons]] : [];
+          }),
+        );
+      },
+    ),
     { numRuns: 50, seed: 77 },
   );
 });
 
 test('open paths alone leave to the pressures whatever these could decide otherwise', () => {
   fc.assert(
-    fc.property(circuits, (circuit) => {
+    fc.property(pilotedCircuits, (circuit) => {
       const plain = new StateTable(tabulate(circuit, { pumps: 'running' }, unlimited, { pressureRows: 0 }));
       for (let row = 0; row < plain.count; row++) {
         expect(plain.hunts(row)).toBe(false);
