@@ -5,6 +5,7 @@ import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 import { endAt, portEnd } from './connecting.ts';
 import { desk } from './desk.svelte.ts';
+import { Fingers } from './fingers.ts';
 import {
   commitShift,
   finishLine,
@@ -22,8 +23,7 @@ import { dropStretch, previewStretch, takeStretch } from './line-actions.ts';
 import { plane } from './plane.svelte.ts';
 import { openMenuAt } from './sheet-menu.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
-import { sheetsActions } from './sheets-actions.ts';
-import { panBy, snap, zoomAt } from './viewport.ts';
+import { panBy, snap } from './viewport.ts';
 
 /** A press of the button until it is let go. */
 interface Press {
@@ -33,6 +33,8 @@ interface Press {
   readonly hit: Hit | { readonly type: 'label'; readonly id: string };
   readonly adds: boolean;
   readonly pans: boolean;
+  /** A finger: it trembles more, and what it taps waits until it is lifted. */
+  readonly touch: boolean;
   /** Ctrl: a part is moved without its block. */
   readonly alone: boolean;
   /** It was selected before. */
@@ -41,8 +43,9 @@ interface Press {
   last: Point;
 }
 
-/** Pixels the pointer may tremble in a click. */
+/** Pixels the pointer, or a finger, may tremble in a click. */
 const TREMBLE = 4;
+const FINGER_TREMBLE = 9;
 
 /** How near counts as on a port or a line, in modules: larger far out, so that it stays some pixels. */
 const reach = (): number => Math.min(1.4, Math.max(0.7, 9 / desk.viewport.scale));
@@ -50,7 +53,7 @@ const reach = (): number => Math.min(1.4, Math.max(0.7, 9 / desk.viewport.scale)
 /** Mouse, pen and fingers on the sheet. `toSheet` turns client pixels into modules. */
 export class SheetPointer {
   #press: Press | undefined;
-  readonly #fingers = new Map<number, Point>();
+  readonly #fingers = new Fingers();
   readonly #toSheet: (client: Point) => Point;
   readonly #offset: (client: Point) => Point;
 
@@ -61,27 +64,23 @@ export class SheetPointer {
 
   down(event: PointerEvent, host: HTMLElement): void {
     const client = { x: event.clientX, y: event.clientY };
-    if (event.pointerType === 'touch') this.#fingers.set(event.pointerId, client);
-    if (this.#fingers.size > 1) return this.#giveUp();
+    const touch = event.pointerType === 'touch';
+    if (touch) this.#fingers.down(event.pointerId, this.#offset(client));
+    // What is in hand stays there while two fingers look for the place.
+    if (this.#fingers.count > 1) return this.#giveUp(true);
     if (event.button === 2) return this.#giveUp(true);
     const at = this.#toSheet(client);
     const { gesture } = desk;
     const pans = event.button === 1 || desk.panning;
-    if (!pans && gesture.type === 'connect') {
-      const hit = hitAt(drawing.map, at, reach());
-      const over = endAt(hit);
-      if (over) finishLine(over);
-      else if (hit.type === 'reference') sheetsActions.followReference(hit.id);
-      else desk.refuse('There is no port or line here. Click one, or press Escape to give the line up.');
-      return;
-    }
+    if (!pans && !touch && gesture.type === 'connect') return this.#end(at, reach());
     if (!pans && this.#lever(event)) return;
     const label = labelAt(event);
     const hit = label !== undefined ? ({ type: 'label', id: label } as const) : frameOf(event, this.#hitAt(at, event));
     const adds = event.shiftKey;
-    // A finger on bare paper pans: a rubber band is seldom wanted there.
     if (gesture.type === 'bend') desk.rest();
-    const slides = pans || (event.pointerType === 'touch' && hit.type === 'paper' && gesture.type === 'none');
+    // A finger on bare paper pans: a rubber band is seldom wanted there. It pans too while a line waits for its end.
+    const onPaper = hit.type === 'paper' && gesture.type === 'none';
+    const slides = pans || (touch && (onPaper || gesture.type === 'connect'));
     const was = hit.type === 'port' && editor.isSelected('parts', hit.port.part);
     this.#press = {
       pointer: event.pointerId,
@@ -90,24 +89,33 @@ export class SheetPointer {
       hit,
       adds,
       pans: slides,
+      touch,
       alone: event.ctrlKey || event.metaKey,
       was,
       moved: false,
       last: client,
     };
     host.setPointerCapture(event.pointerId);
+    if (touch) this.#fingers.pressLong(() => this.#press?.moved === false && this.menu(event));
     if (!slides && (gesture.type === 'none' || gesture.type === 'bend')) pick(hit, adds);
   }
 
   move(event: PointerEvent): void {
     const client = { x: event.clientX, y: event.clientY };
-    if (this.#fingers.size > 1) return this.#pinch(event.pointerId, client);
-    if (this.#fingers.has(event.pointerId)) this.#fingers.set(event.pointerId, client);
+    if (this.#fingers.count > 1) {
+      plane.flow();
+      desk.viewport = this.#fingers.pinched(desk.viewport, event.pointerId, this.#offset(client));
+      return;
+    }
+    if (event.pointerType === 'touch' && this.#fingers.count > 0)
+      this.#fingers.down(event.pointerId, this.#offset(client));
     const at = this.#toSheet(client);
     const press = this.#press;
     if (press && press.pointer === event.pointerId) {
-      press.moved ||= Math.hypot(client.x - press.client.x, client.y - press.client.y) >= TREMBLE;
+      const tremble = press.touch ? FINGER_TREMBLE : TREMBLE;
+      press.moved ||= Math.hypot(client.x - press.client.x, client.y - press.client.y) >= tremble;
       if (press.pans) {
+        if (!press.moved) return;
         desk.viewport = panBy(desk.viewport, client.x - press.last.x, client.y - press.last.y);
         press.last = client;
         return;
@@ -122,13 +130,15 @@ export class SheetPointer {
   }
 
   up(event: PointerEvent): void {
-    this.#fingers.delete(event.pointerId);
+    this.#fingers.up(event.pointerId);
+    this.#fingers.stop();
     const press = this.#press;
     if (!press || press.pointer !== event.pointerId) return;
     this.#press = undefined;
-    if (press.pans) return;
     const at = this.#toSheet({ x: event.clientX, y: event.clientY });
     const { gesture } = desk;
+    if (press.pans && (press.moved || !press.touch)) return;
+    if (press.pans && gesture.type === 'connect') return this.#end(at, reach() * 2);
     if (gesture.type === 'place') return putDown(snap(at), event.shiftKey);
     if (gesture.type === 'place-several') return putDownSeveral(snap(at), event.shiftKey);
     if (gesture.type === 'text') return writeAt(at);
@@ -146,7 +156,6 @@ export class SheetPointer {
       return desk.refuse('The line ended on bare paper. End it at a port or on a line.');
     }
     if (press.moved) return;
-    if (press.hit.type === 'reference') return sheetsActions.followReference(press.hit.id);
     if (press.hit.type === 'port' && !press.hit.port.joint && !press.adds) startLine(portEnd(press.hit.port), false);
     if (press.hit.type === 'paper' && !press.adds) {
       editor.select({});
@@ -185,13 +194,21 @@ export class SheetPointer {
     return id ? { type: 'part', id } : hit;
   }
 
+  /** The waiting line ends at what is there. */
+  #end(at: Point, within: number): void {
+    const over = endAt(hitAt(drawing.map, at, within));
+    if (over) finishLine(over);
+    else desk.refuse('There is no port or line here. Click one, or press Escape to give the line up.');
+  }
+
   /** `keeps`: what is in hand stays there; only a drag under way is given up. */
   #giveUp(keeps = false): void {
     const { gesture } = desk;
+    this.#fingers.stop();
     this.#press = undefined;
     drawing.preview = undefined;
-    if (!keeps || gesture.type === 'drag' || gesture.type === 'band' || (gesture.type === 'bend' && gesture.held))
-      desk.rest();
+    const held = (gesture.type === 'bend' || gesture.type === 'connect') && gesture.held;
+    if (!keeps || held || gesture.type === 'drag' || gesture.type === 'band') desk.rest();
   }
 
   /** Right button, or a long press: the menu of what is there; what is selected already stays selected. */
@@ -296,19 +313,6 @@ export class SheetPointer {
         : `${inside.parts.length} parts and ${inside.connections.length} connections selected.`,
     );
   }
-
-  /** Two fingers: the sheet follows both. */
-  #pinch(pointer: number, client: Point): void {
-    const before = this.#fingers.get(pointer);
-    const other = [...this.#fingers].find(([id]) => id !== pointer)?.[1];
-    if (!before || !other) return;
-    this.#fingers.set(pointer, client);
-    plane.flow();
-    const spread = (a: Point): number => Math.max(1, Math.hypot(a.x - other.x, a.y - other.y));
-    const middle = this.#offset({ x: (client.x + other.x) / 2, y: (client.y + other.y) / 2 });
-    const panned = panBy(desk.viewport, (client.x - before.x) / 2, (client.y - before.y) / 2);
-    desk.viewport = zoomAt(panned, middle, spread(client) / spread(before));
-  }
 }
 
 /** The frame of a block stands for its parts. */
@@ -347,7 +351,6 @@ function pick(hit: Press['hit'], adds: boolean): void {
   if (hit.type === 'part') [list, id] = ['parts', hit.id];
   else if (hit.type === 'connection') [list, id] = ['connections', hit.id];
   else if (hit.type === 'label') [list, id] = ['labels', hit.id];
-  else if (hit.type === 'reference') [list, id] = ['connections', drawing.references.get(hit.id)?.connection ?? ''];
   else if (hit.type === 'port' && hit.port.joint && !adds) [list, id] = ['parts', hit.port.part];
   else return;
   const was = editor.isSelected(list, id);

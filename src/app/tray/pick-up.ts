@@ -5,8 +5,9 @@ import { middleOfView, takeUp, takeUpSeveral } from '../sheet/hand.ts';
 import { swapFor } from '../sheet/swapping.ts';
 import { severalOf } from './several.ts';
 
-/** Pixels the pointer may tremble in a click. */
+/** Pixels the pointer, or a finger, may tremble in a click. */
 const TREMBLE = 5;
+const FINGER_TREMBLE = 12;
 
 /**
  * A part of the tray: dragging it carries it to the sheet; a click takes it in hand, to be placed by the next
@@ -28,7 +29,10 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
     dragged = false;
   };
   const move = (event: PointerEvent): void => {
-    if (!start || dragged || Math.hypot(event.clientX - start.x, event.clientY - start.y) < TREMBLE) return;
+    if (!start || dragged) return;
+    const [dx, dy] = [Math.abs(event.clientX - start.x), Math.abs(event.clientY - start.y)];
+    // A finger that goes up or down scrolls the list; across, towards the sheet, it carries the part.
+    if (event.pointerType === 'touch' ? dx < FINGER_TREMBLE || dx < dy : Math.hypot(dx, dy) < TREMBLE) return;
     dragged = true;
     desk.swapping = undefined;
     take();
@@ -52,6 +56,7 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
   node.addEventListener('pointerdown', down);
   window.addEventListener('pointermove', move);
   window.addEventListener('pointerup', up);
+  window.addEventListener('pointercancel', up);
   node.addEventListener('click', click);
   return {
     update: (next) => {
@@ -61,6 +66,7 @@ export const pressed: Action<HTMLElement, string> = (node, readyId) => {
       node.removeEventListener('pointerdown', down);
       window.removeEventListener('pointermove', move);
       window.removeEventListener('pointerup', up);
+      window.removeEventListener('pointercancel', up);
       node.removeEventListener('click', click);
     },
   };
