@@ -23,6 +23,7 @@ import { dropStretch, previewStretch, takeStretch } from './line-actions.ts';
 import { plane } from './plane.svelte.ts';
 import { openMenuAt } from './sheet-menu.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
+import { sheetsActions } from './sheets-actions.ts';
 import { panBy, snap } from './viewport.ts';
 
 /** A press of the button until it is let go. */
@@ -156,6 +157,7 @@ export class SheetPointer {
       return desk.refuse('The line ended on bare paper. End it at a port or on a line.');
     }
     if (press.moved) return;
+    if (press.hit.type === 'reference') return sheetsActions.followReference(press.hit.id);
     if (press.hit.type === 'port' && !press.hit.port.joint && !press.adds) startLine(portEnd(press.hit.port), false);
     if (press.hit.type === 'paper' && !press.adds) {
       editor.select({});
@@ -189,15 +191,16 @@ export class SheetPointer {
   /** A shifted valve reaches beyond its outline: there the drawing itself tells. */
   #hitAt(at: Point, event: MouseEvent): Hit {
     const hit = hitAt(drawing.map, at, reach());
-    if (hit.type !== 'paper' || !(event.target instanceof Element)) return hit;
-    const id = event.target.closest('[data-part]')?.getAttribute('data-part');
+    const id = hit.type === 'paper' && under(event)?.closest('[data-part]')?.getAttribute('data-part');
     return id ? { type: 'part', id } : hit;
   }
 
   /** The waiting line ends at what is there. */
   #end(at: Point, within: number): void {
-    const over = endAt(hitAt(drawing.map, at, within));
+    const hit = hitAt(drawing.map, at, within);
+    const over = endAt(hit);
     if (over) finishLine(over);
+    else if (hit.type === 'reference') sheetsActions.followReference(hit.id);
     else desk.refuse('There is no port or line here. Click one, or press Escape to give the line up.');
   }
 
@@ -230,15 +233,16 @@ export class SheetPointer {
 
   /** A click on the position name moves the lever on; Alt-click on a box moves it there. */
   #lever(event: PointerEvent): boolean {
-    if (!(event.target instanceof Element) || desk.gesture.type !== 'none') return false;
-    const named = event.target.closest('[data-lever]')?.getAttribute('data-lever');
+    const target = under(event);
+    if (!target || desk.gesture.type !== 'none') return false;
+    const named = target.closest('[data-lever]')?.getAttribute('data-lever');
     if (named) {
       setLever(named, session.positionOf(named) + 1);
       return true;
     }
     if (!event.altKey) return false;
-    const part = event.target.closest('[data-part]')?.getAttribute('data-part');
-    const box = event.target.closest('[data-role="box"]')?.getAttribute('data-index');
+    const part = target.closest('[data-part]')?.getAttribute('data-part');
+    const box = target.closest('[data-role="box"]')?.getAttribute('data-index');
     if (!part || !session.inputs.some((input) => input.part === part)) return false;
     setLever(part, box === null || box === undefined ? session.positionOf(part) + 1 : Number(box));
     return true;
@@ -325,14 +329,19 @@ function frameOf(event: MouseEvent, hit: Hit): Hit {
   return { type: 'part', id: first };
 }
 
-function blockAt(event: MouseEvent): string | undefined {
+/** What the pointer is on, also where the sheet is covered because it moves. */
+function under(event: MouseEvent): Element | undefined {
   if (!(event.target instanceof Element)) return undefined;
-  return event.target.closest('[data-block]')?.getAttribute('data-block') ?? undefined;
+  if (!event.target.matches('[data-cover]')) return event.target;
+  return document.elementsFromPoint(event.clientX, event.clientY).find((each) => !each.matches('[data-cover]'));
+}
+
+function blockAt(event: MouseEvent): string | undefined {
+  return under(event)?.closest('[data-block]')?.getAttribute('data-block') ?? undefined;
 }
 
 function labelAt(event: MouseEvent): string | undefined {
-  if (!(event.target instanceof Element)) return undefined;
-  return event.target.closest('[data-label]')?.getAttribute('data-label') ?? undefined;
+  return under(event)?.closest('[data-label]')?.getAttribute('data-label') ?? undefined;
 }
 
 const deltaOf = (from: Point, to: Point): Point => snap({ x: to.x - from.x, y: to.y - from.y });
@@ -351,6 +360,7 @@ function pick(hit: Press['hit'], adds: boolean): void {
   if (hit.type === 'part') [list, id] = ['parts', hit.id];
   else if (hit.type === 'connection') [list, id] = ['connections', hit.id];
   else if (hit.type === 'label') [list, id] = ['labels', hit.id];
+  else if (hit.type === 'reference') [list, id] = ['connections', drawing.references.get(hit.id)?.connection ?? ''];
   else if (hit.type === 'port' && hit.port.joint && !adds) [list, id] = ['parts', hit.port.part];
   else return;
   const was = editor.isSelected(list, id);
