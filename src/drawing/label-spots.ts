@@ -73,12 +73,13 @@ function best(candidates: readonly Candidate[], own: string, ground: Ground): { 
 
 /** The customary places: at the shoulders of a valve, else along the sides. */
 function beside(part: Part, box: Box, extent: Extent): Candidate[] {
+  const shouldered = isStripValve(part.kind);
   const sides = orderOf(part, box).flatMap((place, rank) =>
     alignments(part, place, box, extent).map((along, i) =>
-      at(place, box, extent, along, 0, rank + 0.1 * i + away(part, place, box, extent, along)),
+      at(place, box, extent, along, 0, (shouldered ? 3 : 0) + rank + 0.1 * i + away(part, place, box, extent, along)),
     ),
   );
-  return isStripValve(part.kind) ? [...shoulders(part, box, extent), ...sides] : sides;
+  return shouldered ? [...shoulders(part, box, extent), ...sides] : sides;
 }
 
 /** Everywhere round it, at growing distances. */
@@ -180,7 +181,12 @@ function shoulders(part: Part, box: Box, extent: Extent): Candidate[] {
       const off = side === 'up' ? edge - GAP - height : side === 'left' ? edge - GAP - width : edge + GAP;
       const rank = (side === 'up' || side === 'right' ? 0 : 0.4) + (after ? 0 : 0.2);
       const align = side === 'left' || end === 'left' ? 'end' : 'start';
-      out.push(spot(wide ? { x: along, y: off } : { x: off, y: along }, extent, align, rank));
+      // Further out, where a line turns off close to the letters, but still along the strip.
+      const room = after ? (wide ? box.x + box.width : box.y + box.height) - along : along - (wide ? box.x : box.y);
+      for (let step = 0; step === 0 || step < room; step += STEP) {
+        const place = after ? along + step : along - step;
+        out.push(spot(wide ? { x: place, y: off } : { x: off, y: place }, extent, align, rank + 0.2 * step));
+      }
     }
   }
   return out;

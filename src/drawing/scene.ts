@@ -18,7 +18,7 @@ import { BAR_AT, lineMarks, pathPen } from './line-marks.ts';
 import type { PortEnds } from './line-marks.ts';
 import type { Piece } from './pieces.ts';
 import type { PlacedPort } from './shapes.ts';
-import { drawnKind, ownBox, partBox, placedPorts, placementOf, portSpecs } from './shapes.ts';
+import { drawnKind, ownBox, partBox, partReach, placedPorts, placementOf, portSpecs } from './shapes.ts';
 import { stageOf } from './stage.ts';
 import type { Stage } from './stage.ts';
 import type { LineLook, Stroke } from './strokes.ts';
@@ -80,7 +80,7 @@ export function sceneOn(circuit: Circuit, routes: Routes, state: SceneState, sta
   const parts = circuit.parts.map((part) =>
     scenePart(part, state.parts?.get(part.id) ?? {}, state.lines && portPens(stage, part, looks)),
   );
-  const stubs = state.lines ? takeStubs(circuit, parts, looks) : new Map<string, Point>();
+  const stubs = takeStubs(circuit, parts, looks);
   const plain = sceneLines(circuit, routes, stage, looks, stubs);
   const hops = state.hops ? stage.hops() : undefined;
   const lines = hops ? plain.map((line) => ({ ...line, strokes: withHops(line.strokes, hops) })) : plain;
@@ -89,7 +89,8 @@ export function sceneOn(circuit: Circuit, routes: Routes, state: SceneState, sta
   const blocks = stage.blocks;
   return {
     title: circuit.name,
-    bounds: sceneBounds(shown, lines, labels, blocks),
+    // A strip that is shown in a position may have slid out of its outline at rest.
+    bounds: sceneBounds(circuit.parts.map(state.parts ? partReach : partBox), lines, labels, blocks),
     blocks,
     enclosures: shown.flatMap(({ id, enclosure }) =>
       enclosure.length > 0 ? [{ part: id, primitives: enclosure }] : [],
@@ -162,7 +163,7 @@ function sceneLines(
   routes: Routes,
   stage: Stage,
   looks: (id: string) => LineLook,
-  stubs: ReadonlyMap<string, Point>,
+  stubs: Stubs,
 ): SceneLine[] {
   const kinds = new Map(circuit.parts.map((p) => [p.id, p.kind]));
   // A valve's port letter stands where a bar would.
@@ -180,7 +181,7 @@ function sceneLines(
     const strokes = pieces.flatMap((piece) => {
       const start = piece.fromPort ? stubs.get(key(from)) : undefined;
       const end = piece.toPort ? stubs.get(key(to)) : undefined;
-      const reached = [...(start ? [start] : []), ...piece.points, ...(end ? [end] : [])];
+      const reached = [...(start?.toReversed() ?? []), ...piece.points, ...(end ?? [])];
       const ends: PortEnds = {
         ...(piece.fromPort && { start: barAt(from) + lengthTo(start, piece.points[0]) }),
         ...(piece.toPort && { end: barAt(to) + lengthTo(end, piece.points.at(-1)) }),
@@ -193,31 +194,41 @@ function sceneLines(
   });
 }
 
-const lengthTo = (stub: Point | undefined, port: Point | undefined): number =>
-  stub && port ? Math.abs(stub.x - port.x) + Math.abs(stub.y - port.y) : 0;
+const lengthTo = (stub: readonly Point[] | undefined, port: Point | undefined): number =>
+  stub && port
+    ? stub.reduce((sum, p, i) => {
+        const before = stub[i - 1] ?? port;
+        return sum + Math.abs(p.x - before.x) + Math.abs(p.y - before.y);
+      }, 0)
+    : 0;
 
 const key = (ref: PortRef): string => `${ref.part}.${ref.port}`;
 
+/** Port → the points, from the port inwards, through which its line goes on in the symbol, on the sheet. */
+type Stubs = ReadonlyMap<string, readonly Point[]>;
+
 /**
  * The short line between a port and the body of a symbol belongs to the line at the port: in a shown
- * state the line takes it over. One that runs through from port to port is shared half and half.
- * Port → where its line ends inside the symbol, on the sheet.
+ * state, and wherever it is dashed, the line takes it over, so that dashes go on. One that runs through from port to port
+ * is shared half and half.
  */
-function takeStubs(circuit: Circuit, parts: readonly ScenePart[], looks: (id: string) => LineLook): Map<string, Point> {
+function takeStubs(circuit: Circuit, parts: readonly ScenePart[], looks: (id: string) => LineLook): Stubs {
   const shown = new Set<string>();
-  for (const { id, from, to } of circuit.connections) {
-    if (looks(id).class !== 'idle') shown.add(key(from)).add(key(to));
+  for (const { id, from, to, use } of circuit.connections) {
+    if (looks(id).class !== 'idle' || (use !== undefined && use !== 'working')) shown.add(key(from)).add(key(to));
   }
-  const out = new Map<string, Point>();
+  const out = new Map<string, readonly Point[]>();
+  if (shown.size === 0) return out;
   for (const part of parts) {
     for (const port of part.ports) {
-      const stub = shown.has(key(port.ref)) ? part.primitives.find((p) => stubEnd(p, port.at)) : undefined;
-      const end = stub && stubEnd(stub, port.at);
-      if (!end) continue;
+      const stub = shown.has(key(port.ref)) ? part.primitives.find((p) => stubFrom(p, port.at)) : undefined;
+      const points = stub && stubFrom(stub, port.at);
+      const end = points?.at(-1);
+      if (!points || !end) continue;
       const other = part.ports.find((p) => samePoint(p.at, end));
-      if (!other) out.set(key(port.ref), end);
+      if (!other) out.set(key(port.ref), points);
       else if (shown.has(key(other.ref)))
-        out.set(key(port.ref), { x: (port.at.x + end.x) / 2, y: (port.at.y + end.y) / 2 });
+        out.set(key(port.ref), [{ x: (port.at.x + end.x) / 2, y: (port.at.y + end.y) / 2 }]);
     }
   }
   return out;
@@ -225,12 +236,17 @@ function takeStubs(circuit: Circuit, parts: readonly ScenePart[], looks: (id: st
 
 const samePoint = (a: Point, b: Point): boolean => a.x === b.x && a.y === b.y;
 
-function stubEnd(p: Primitive, port: Point): Point | undefined {
-  if (p.type !== 'polyline' || p.points.length !== 2 || p.pen === 'enclosure') return undefined;
-  const [a, b] = p.points as readonly [Point, Point];
-  if (samePoint(a, port)) return b;
-  return samePoint(b, port) ? a : undefined;
+/** From the port inwards, without the port: one straight stroke, or a pilot line that turns at right angles. */
+function stubFrom(p: Primitive, port: Point): readonly Point[] | undefined {
+  if (p.type !== 'polyline' || p.closed === true || p.pen === 'enclosure') return undefined;
+  const { points } = p;
+  if (points.length !== 2 && (p.pen !== 'pilot' || !points.every((b, i) => isSquare(points[i - 1] ?? b, b))))
+    return undefined;
+  if (samePoint(points[0] as Point, port)) return points.slice(1);
+  return samePoint(points.at(-1) as Point, port) ? points.slice(0, -1).toReversed() : undefined;
 }
+
+const isSquare = (a: Point, b: Point): boolean => a.x === b.x || a.y === b.y;
 
 interface ShownPart extends ScenePart {
   readonly enclosure: readonly Primitive[];
@@ -242,24 +258,24 @@ const shownParts = new WeakMap<
 >();
 
 /** Without its enclosure and what its lines draw; the same object as before if nothing about it changed. */
-function shownPart(own: Part, part: ScenePart, stubs: ReadonlyMap<string, Point>): ShownPart {
+function shownPart(own: Part, part: ScenePart, stubs: Stubs): ShownPart {
   const hidden = part.ports.filter((p) => stubs.has(key(p.ref)));
   const taken = hidden.map(({ ref }) => ref.port).join(' ');
   const known = shownParts.get(own);
   if (known && known.from === part.primitives && known.taken === taken) return known.part;
-  const left = part.primitives.filter((p) => !hidden.some((port) => stubEnd(p, port.at) !== undefined));
+  const left = part.primitives.filter((p) => !hidden.some((port) => stubFrom(p, port.at) !== undefined));
   const shown = { ...part, primitives: left.filter((p) => !isEnclosure(p)), enclosure: left.filter(isEnclosure) };
   shownParts.set(own, { from: part.primitives, taken, part: shown });
   return shown;
 }
 
 function sceneBounds(
-  parts: readonly ScenePart[],
+  parts: readonly Box[],
   lines: readonly SceneLine[],
   labels: readonly SceneLabel[],
   blocks: readonly SceneBlock[],
 ): Box {
-  const boxes = [...parts.map((p) => p.box), ...labels.map(labelBox), ...blocks.map(({ box }) => box)];
+  const boxes = [...parts, ...labels.map(labelBox), ...blocks.map(({ box }) => box)];
   for (const { points } of lines) {
     const box = boxOfPoints(points);
     if (box) boxes.push(box);

@@ -5,6 +5,8 @@ import type { Routes } from '../../src/drawing/geometry.ts';
 import type { PartWords } from '../../src/drawing/labels.ts';
 import { lineNumbers } from '../../src/drawing/lines.ts';
 import { buildScene } from '../../src/drawing/scene.ts';
+import { drawnKind, placementOf } from '../../src/drawing/shapes.ts';
+import { placePrimitives } from '../../src/drawing/turned.ts';
 import { kindOf } from '../../src/parts/catalogue.ts';
 import type { Look } from '../../src/parts/contract.ts';
 import { inkOf, strikes, writtenLabel } from './ink.ts';
@@ -34,7 +36,7 @@ interface Drawn extends Ink {
 
 /** `words`: what a state says beside a name; absent = a circuit that is only drawn. */
 export function sheetFaults(circuit: Circuit, routes: Routes, words?: (part: Part) => PartWords): SheetFaults {
-  const drawn = circuit.parts.map((part) => inAllPositions(circuit, routes, part, words !== undefined));
+  const drawn = circuit.parts.map((part) => inAllPositions(part, words !== undefined));
   const state = words && { parts: new Map(circuit.parts.map((part) => [part.id, words(part)])) };
   const scene = buildScene(circuit, routes, state ?? {});
   const labels = scene.labels.map((label) => ({ ...writtenLabel(label), owner: label.owner, role: label.role }));
@@ -84,16 +86,14 @@ export function sheetFaults(circuit: Circuit, routes: Routes, words?: (part: Par
 }
 
 /** The symbol and its letters in every position that it can be shown in; strips only if a state is shown. */
-function inAllPositions(circuit: Circuit, routes: Routes, part: Part, shown: boolean): Drawn {
+function inAllPositions(part: Part, shown: boolean): Drawn {
   const spec = kindOf(part.kind)?.dependent?.(part) ?? kindOf(part.kind)?.input?.(part);
   const looks: Look[] = [{}, ...(shown ? (spec?.positions ?? []).map((_, position) => ({ position })) : [])];
   if (shown && kindOf(part.kind)?.group === 'Motion') looks.push({ stroke: 0 }, { stroke: 1 });
   const strokes: Stroke[] = [];
   const texts: WrittenText[] = [];
   for (const look of looks) {
-    const alone: Circuit = { name: circuit.name, parts: [part], connections: [] };
-    const scene = buildScene(alone, routes, { parts: new Map([[part.id, look]]) });
-    const ink = inkOf([...scene.parts, ...scene.enclosures].flatMap(({ primitives }) => primitives));
+    const ink = inkOf(placePrimitives(drawnKind(part)?.draw(part, look) ?? [], placementOf(part)));
     strokes.push(...ink.strokes);
     texts.push(...ink.texts);
   }
