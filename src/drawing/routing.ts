@@ -2,10 +2,11 @@ import type { Box, Point, Side } from '../base/points.ts';
 import { vector } from '../base/points.ts';
 import type { Circuit, Connection, Part } from '../circuit/model.ts';
 import type { Routes } from './geometry.ts';
-import { boxOfPoints, inflate, overlaps, portOf, routeTouches, segmentTouches } from './geometry.ts';
+import { boxOfPoints, inflate, overlaps, portOf, routeTouches } from './geometry.ts';
 import { partLetters } from './letters.ts';
 import type { LineNumbers } from './lines.ts';
 import { lineNumbers } from './lines.ts';
+import { Near } from './near.ts';
 import type { LaidSegment } from './route-field.ts';
 import { buildField, MARGIN } from './route-field.ts';
 import type { Direction, Found } from './route-search.ts';
@@ -13,15 +14,16 @@ import { opposite, searchLeg, THROUGH_PART } from './route-search.ts';
 import type { PlacedPort } from './shapes.ts';
 import { partReach } from './shapes.ts';
 
-/** What a route has to reckon with. `laid` grows as routes are added. */
+/** What a route has to reckon with. `laid` grows as routes are added; see `lay`. */
 export interface RoutingSheet {
   readonly circuit: Circuit;
   readonly parts: ReadonlyMap<string, Part>;
   readonly boxes: ReadonlyMap<string, Box>;
   /** Letters beside ports. */
-  readonly letters: readonly Box[];
+  readonly letters: Near<Box>;
   readonly lines: LineNumbers;
-  readonly laid: LaidSegment[];
+  readonly laid: Near<LaidSegment>;
+  readonly bodies: Near<readonly [part: string, box: Box]>;
 }
 
 /** One end of a route. */
@@ -37,16 +39,21 @@ const DIRECTIONS: Record<Side, Direction> = { right: 0, down: 1, left: 2, up: 3 
 const ANY: readonly Direction[] = [0, 1, 2, 3];
 /** How far a first search looks beyond the ends, in modules. */
 const REACH = 12;
+/** How far beyond the window of a search things may still matter; at least the margins of parts and letters. */
+const SEEN = 2 * MARGIN;
 
 export function routingSheet(circuit: Circuit, routes?: Routes): RoutingSheet {
   const sheet: RoutingSheet = {
     circuit,
     parts: new Map(circuit.parts.map((p) => [p.id, p])),
     boxes: new Map(circuit.parts.map((p) => [p.id, partReach(p)])),
-    letters: circuit.parts.flatMap(partLetters),
+    letters: new Near(),
     lines: lineNumbers(circuit),
-    laid: [],
+    laid: new Near(),
+    bodies: new Near(),
   };
+  for (const body of sheet.boxes) sheet.bodies.add(body[1], body);
+  for (const letter of circuit.parts.flatMap(partLetters)) sheet.letters.add(letter, letter);
   for (const [id, points] of routes ?? []) lay(sheet, id, points);
   return sheet;
 }
@@ -54,21 +61,40 @@ export function routingSheet(circuit: Circuit, routes?: Routes): RoutingSheet {
 /** Makes later routes reckon with this one. */
 export function lay(sheet: RoutingSheet, connectionId: string, points: readonly Point[]): void {
   const line = sheet.lines.get(connectionId) ?? -1;
-  for (let i = 1; i < points.length; i++) sheet.laid.push({ line, a: points[i - 1] as Point, b: points[i] as Point });
+  for (let i = 1; i < points.length; i++) {
+    const [a, b] = [points[i - 1] as Point, points[i] as Point];
+    sheet.laid.add(boxOfPoints([a, b]) as Box, { line, a, b });
+  }
 }
 
 /** A right-angled route from port to port. Never fails: at worst it is a plain Z through whatever is there. */
-export function routeConnection(sheet: RoutingSheet, connection: Connection): Point[] {
+export const routeConnection = (sheet: RoutingSheet, connection: Connection): Point[] =>
+  routeWith(sheet, connection).points;
+
+export interface Routed {
+  readonly points: Point[];
+  /** All that could change the route lies in here; undefined = anything could. */
+  readonly looked: Box | undefined;
+}
+
+/** A route, and how far one had to look for it. */
+export function routeWith(sheet: RoutingSheet, connection: Connection): Routed {
   const from = endOf(sheet, connection.from.part, connection.from.port);
   const to = endOf(sheet, connection.to.part, connection.to.port);
-  if (!from || !to) return [];
+  if (!from || !to) return { points: [], looked: undefined };
   const bends = connection.bends ?? [];
-  if (bends.length === 0 && facing(sheet, from, to)) return [from.port.at, to.port.at];
+  if (bends.length === 0 && facing(sheet, from, to))
+    return {
+      points: [from.port.at, to.port.at],
+      looked: inflate(boxOfPoints([from.port.at, to.port.at]) as Box, MARGIN),
+    };
   const via = [outOf(from, bends[0]), ...bends, outOf(to, bends.at(-1))];
   const near = inflate(boxOfPoints([from.port.at, ...via, to.port.at]) as Box, REACH);
   const window = whole(near);
   let found = searchAll(sheet, connection, from, to, via, window);
+  let looked: Box | undefined = inflate(window, SEEN);
   if (!found || found.cost >= THROUGH_PART) {
+    looked = undefined;
     const all = boxOfPoints(
       [...sheet.boxes.values()].flatMap((b) => [b, { x: b.x + b.width, y: b.y + b.height }]),
     ) as Box;
@@ -76,7 +102,7 @@ export function routeConnection(sheet: RoutingSheet, connection: Connection): Po
     if (wide && (!found || wide.cost < found.cost)) found = wide;
   }
   const inner = found ? found.points : plainRoute(via);
-  return straighten([from.port.at, ...inner, to.port.at]);
+  return { points: straighten([from.port.at, ...inner, to.port.at]), looked };
 }
 
 /** Routes of every connection, in the circuit's order. Short ones are laid first, as they have least choice. */
@@ -107,17 +133,22 @@ export function reroute(previous: Routes, circuit: Circuit, changedPartIds: Iter
 
 function routeSome(circuit: Circuit, kept: Routes): Map<string, Point[]> {
   const sheet = routingSheet(circuit, kept);
-  const waiting = circuit.connections
-    .filter((c) => !kept.has(c.id))
-    .map((connection, order) => ({ connection, order, span: spanOf(sheet, connection) }))
-    .sort((a, b) => a.span - b.span || a.order - b.order);
   const fresh = new Map<string, Point[]>();
-  for (const { connection } of waiting) {
+  const waiting = circuit.connections.filter((c) => !kept.has(c.id));
+  for (const connection of layingOrder(sheet, waiting)) {
     const points = routeConnection(sheet, connection);
     lay(sheet, connection.id, points);
     fresh.set(connection.id, points);
   }
   return new Map(circuit.connections.map((c) => [c.id, fresh.get(c.id) ?? [...(kept.get(c.id) ?? [])]]));
+}
+
+/** Connections in the order in which they are laid: those with least choice first. */
+export function layingOrder(sheet: RoutingSheet, connections: readonly Connection[]): Connection[] {
+  return connections
+    .map((connection, order) => ({ connection, order, span: spanOf(sheet, connection) }))
+    .sort((a, b) => a.span - b.span || a.order - b.order)
+    .map(({ connection }) => connection);
 }
 
 /** Bent by the user: before all others, since it cannot give way. */
@@ -185,11 +216,11 @@ function facing(sheet: RoutingSheet, from: RoutingEnd, to: RoutingEnd): boolean 
   const off = (b.at.x - a.at.x) * out.y + (b.at.y - a.at.y) * out.x;
   if (off !== 0 || along < 0) return false;
   const path = inflate(boxOfPoints([a.at, b.at]) as Box, 0.01);
-  for (const [id, box] of sheet.boxes) {
+  for (const [id, box] of sheet.bodies.touching(path)) {
     if (id !== a.ref.part && id !== b.ref.part && overlaps(box, path)) return false;
   }
-  if (sheet.letters.some((box) => overlaps(box, path))) return false;
-  const clear = !sheet.laid.some((s) => segmentTouches(s.a, s.b, path));
+  if (sheet.letters.touching(path).some((box) => overlaps(box, path))) return false;
+  const clear = sheet.laid.touching(path).length === 0;
   return clear || along < 2 * MARGIN;
 }
 
@@ -201,11 +232,14 @@ function searchAll(
   via: readonly Point[],
   window: Box,
 ): Found | undefined {
+  const seen = inflate(window, SEEN);
   const field = buildField({
     window,
-    boxes: [...sheet.boxes].flatMap(([id, box]) => (isJointEnd(from, id) || isJointEnd(to, id) ? [] : [box])),
-    letters: sheet.letters,
-    segments: sheet.laid,
+    boxes: sheet.bodies
+      .touching(seen)
+      .flatMap(([id, box]) => (isJointEnd(from, id) || isJointEnd(to, id) ? [] : [box])),
+    letters: sheet.letters.touching(seen),
+    segments: sheet.laid.touching(seen),
     line: sheet.lines.get(connection.id) ?? -1,
     points: via,
   });

@@ -159,10 +159,8 @@ export function placeNow(): Point | undefined {
 
 /** Show the selection moved, before it is. */
 export function previewShift(dx: number, dy: number, alone = false): void {
-  if (dx === 0 && dy === 0) {
-    drawing.preview = undefined;
-    return;
-  }
+  // Back where it began, it is still in the hand.
+  if (dx === 0 && dy === 0 && !drawing.preview) return;
   const edit = tryTo(() => shift(editor.circuit, editor.selection, dx, dy, alone));
   drawing.preview = edit && applyEdit(editor.circuit, keepPlaces(editor.circuit, edit));
 }

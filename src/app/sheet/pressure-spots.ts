@@ -1,8 +1,9 @@
 import { isStripValve } from '../../parts/valve-kinds.ts';
 import type { Box, Point } from '../../base/points.ts';
 import type { Circuit } from '../../circuit/model.ts';
-import { inflate, overlaps, segmentTouches } from '../../drawing/geometry.ts';
+import { boxOfPoints, inflate, overlaps, segmentTouches } from '../../drawing/geometry.ts';
 import type { Routes } from '../../drawing/geometry.ts';
+import { Near } from '../../drawing/near.ts';
 import { partReach, placedPorts } from '../../drawing/shapes.ts';
 
 /** Where a line's pressure is written; `at` is on the baseline. */
@@ -37,14 +38,16 @@ export function pressureSpots(
   labels: readonly Box[],
   lines: readonly { readonly connections: readonly string[] }[],
 ): Map<number, PressureSpot> {
-  const taken = [...labels];
-  const bodies = circuit.parts.filter(({ kind }) => kind !== 'junction').map(partReach);
+  const ground: Ground = { bodies: new Near(), taken: new Near(), runs: new Near() };
+  const take = (box: Box): void => ground.taken.add(box, box);
+  labels.forEach(take);
+  for (const part of circuit.parts) if (part.kind !== 'junction') ground.bodies.add(partReach(part), partReach(part));
   // A valve writes a letter at each port.
   for (const part of circuit.parts) {
     if (!isStripValve(part.kind)) continue;
-    for (const { at } of placedPorts(part)) taken.push({ x: at.x - 1.8, y: at.y - 1.8, width: 3.6, height: 3.6 });
+    for (const { at } of placedPorts(part)) take({ x: at.x - 1.8, y: at.y - 1.8, width: 3.6, height: 3.6 });
   }
-  const segments = [...routes.values()].flatMap(runsOf);
+  for (const run of [...routes.values()].flatMap(runsOf)) ground.runs.add(boxOfPoints([run.a, run.b]) as Box, run);
   const out = new Map<number, PressureSpot>();
   lines.forEach(({ connections }, line) => {
     const runs = connections.flatMap((id) => runsOf(routes.get(id) ?? [])).sort((p, q) => q.length - p.length);
@@ -52,13 +55,13 @@ export function pressureSpots(
     let least = WORST;
     for (const [rank, run] of runs.slice(0, RUNS).entries()) {
       for (const candidate of candidates(run)) {
-        const cost = rank * 0.4 + crowd(candidate.box, bodies, taken, segments);
+        const cost = rank * 0.4 + crowd(candidate.box, ground);
         if (cost < least) [best, least] = [candidate, cost];
       }
       if (least <= rank * 0.4) break;
     }
     if (!best) return;
-    taken.push(best.box);
+    take(best.box);
     out.set(line, best);
   });
   return out;
@@ -92,11 +95,18 @@ function candidates({ a, b }: Run): Candidate[] {
   });
 }
 
-function crowd(box: Box, bodies: readonly Box[], taken: readonly Box[], segments: readonly Run[]): number {
+/** What stands on the sheet already. */
+interface Ground {
+  readonly bodies: Near<Box>;
+  readonly taken: Near<Box>;
+  readonly runs: Near<Run>;
+}
+
+function crowd(box: Box, { bodies, taken, runs }: Ground): number {
   let cost = 0;
   const room = inflate(box, 0.2);
-  for (const body of bodies) if (overlaps(body, room)) cost += WORST;
-  for (const other of taken) if (overlaps(other, box)) cost += WORST;
-  for (const { a, b } of segments) if (segmentTouches(a, b, room)) cost += 2;
+  for (const body of bodies.touching(room)) if (overlaps(body, room)) cost += WORST;
+  for (const other of taken.touching(box)) if (overlaps(other, box)) cost += WORST;
+  for (const { a, b } of runs.touching(room)) if (segmentTouches(a, b, room)) cost += 2;
   return cost;
 }
