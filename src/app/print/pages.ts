@@ -1,8 +1,9 @@
 import { version } from '../../../package.json';
 import { DEFAULT_PAPER } from '../../circuit/paper.ts';
+import { hasSheets, sheetsOf } from '../../circuit/sheets.ts';
 import { TEXT_SIZES } from '../../drawing/palette.ts';
-import { buildScene } from '../../drawing/scene.ts';
 import type { Scene } from '../../drawing/scene.ts';
+import type { Block } from '../../report/pages/blocks.ts';
 import { bleedPages } from '../../report/pages/bleed.ts';
 import type { DrawingSheet, PrintedPage, Section } from '../../report/pages/pages.ts';
 import { hasRoomBeside, joined, printedPages } from '../../report/pages/pages.ts';
@@ -18,34 +19,50 @@ import type { Report } from '../../report/rows.ts';
 import type { BleedAnswer } from '../../worker/client.ts';
 import { linePressures } from '../sheet/line-pressures.ts';
 import { drawing } from '../sheet/sheet-drawing.svelte.ts';
-import { sheetView } from '../sheet/sheet-view.svelte.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { session } from '../state/session.svelte.ts';
 import { view } from '../state/view.svelte.ts';
 import type { Choices } from './choice.svelte.ts';
 
-/** The sheet as it stands in the row on show, with the pressures that the screen writes at its lines. */
-export function sceneInRow(): Scene {
-  const { scene, pressureSpots, assumed } = drawing;
-  if (!view.sheetFigures) return scene;
-  const pressures = linePressures(assumed).flatMap(({ line, text, assumed: isAssumed }): Scene['labels'][number][] => {
-    const spot = pressureSpots.get(line);
-    if (!spot) return [];
-    return [
-      {
-        role: 'line',
-        owner: `pressure ${line}`,
-        at: spot.at,
-        align: spot.align,
-        runs: [{ text, size: TEXT_SIZES.code, weight: 500, tone: 'ink', assumed: isAssumed }],
-      },
-    ];
-  });
+/** A sheet as it stands in the row on show, with the pressures that the screen writes at its lines, or plain at rest. */
+export function sceneOf(sheet: string, how: 'row' | 'plain'): Scene {
+  const { scene, pressureSpots } = drawing.sheet(sheet, how);
+  if (!view.sheetFigures || how === 'plain') return scene;
+  const pressures = linePressures(drawing.assumed).flatMap(
+    ({ line, text, assumed: isAssumed }): Scene['labels'][number][] => {
+      const spot = pressureSpots.get(line);
+      if (!spot) return [];
+      return [
+        {
+          role: 'line',
+          owner: `pressure ${line}`,
+          at: spot.at,
+          align: spot.align,
+          runs: [{ text, size: TEXT_SIZES.code, weight: 500, tone: 'ink', assumed: isAssumed }],
+        },
+      ];
+    },
+  );
   return { ...scene, labels: [...scene.labels, ...pressures] };
 }
 
-/** The sheet at rest, without anything that a state would show. */
-export const plainScene = (): Scene => buildScene(drawing.circuit, drawing.routes, { hops: sheetView.hops });
+/** Every sheet of the circuit, in their order. */
+export const drawnScenes = (how: 'row' | 'plain'): Scene[] =>
+  sheetsOf(editor.circuit).map(({ id }) => sceneOf(id, how));
+
+function drawingSheets(how: 'row' | 'plain', beside: Block | undefined): DrawingSheet[] {
+  const { circuit } = editor;
+  return sheetsOf(circuit).map(({ id, name }, i): DrawingSheet => {
+    const scene = sceneOf(id, how);
+    return {
+      scene,
+      shows: sayShown(how),
+      key: how === 'row',
+      ...(beside && i === 0 && { beside }),
+      ...(hasSheets(circuit) && { one: { id, name, zoned: (zoneOf) => drawing.zoned(scene, zoneOf) } }),
+    };
+  });
+}
 
 /** `V1 raise, V2 hold`. */
 function sayPositions(positionOf: (index: number, part: string) => number): string {
@@ -85,19 +102,10 @@ export function chosenPages(choices: Choices): PrintedPage[] {
     choices.findings && table ? findingsSection(table.findings) : undefined,
     choices.partsOn !== 'none' && !beside && circuit.parts.length > 0 ? partListSection(circuit) : undefined,
   ];
-  const sheet: DrawingSheet | undefined =
-    choices.drawing === 'none'
-      ? undefined
-      : {
-          scene: choices.drawing === 'row' ? sceneInRow() : plainScene(),
-          shows: sayShown(choices.drawing),
-          key: choices.drawing === 'row',
-          ...(beside && { beside: list }),
-        };
   return printedPages({
     circuit,
     paper,
-    ...(sheet && { drawing: sheet }),
+    ...(choices.drawing !== 'none' && { drawing: drawingSheets(choices.drawing, beside ? list : undefined) }),
     sections: [
       ...(choices.chart && table ? [chartSection(table)] : []),
       ...joined(prose.flatMap((section) => section ?? [])),

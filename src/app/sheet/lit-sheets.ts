@@ -1,7 +1,8 @@
 import type { Circuit } from '../../circuit/model.ts';
 import { hasSheets, sheetLookup } from '../../circuit/sheets.ts';
 
-interface Lights {
+/** Lines by their index in the table, parts by id. */
+export interface Lights {
   readonly lines: readonly number[];
   readonly parts: readonly string[];
 }

@@ -1,8 +1,11 @@
 import type { History } from '../../circuit/history.ts';
-import { changedSheets, hasSheets, saySheet, sheetLookup, sheetOf } from '../../circuit/sheets.ts';
+import { changedSheets, hasSheets, saySheet, sheetLookup, sheetOf, sheetsOf } from '../../circuit/sheets.ts';
+import { session } from '../state/session.svelte.ts';
 import { editor } from '../state/editor.svelte.ts';
 import { desk } from './desk.svelte.ts';
 import { coversOf, EDGE, fitClear, itemsOf } from './fit.ts';
+import { litSheets } from './lit-sheets.ts';
+import type { Lights } from './lit-sheets.ts';
 import type { Cursor } from './reading-order.ts';
 import { drawing } from './sheet-drawing.svelte.ts';
 import { shownSheet } from './sheet-shown.svelte.ts';
@@ -71,6 +74,18 @@ export function sheetOfCursor(cursor: Cursor): string {
   if (!line) return shownSheet.now;
   const ends = [of(line.from.part), of(line.to.part)];
   return ends.includes(shownSheet.now) ? shownSheet.now : (ends[0] ?? shownSheet.now);
+}
+
+/** Sheets other than the one in view that hold some of this; none if the one in view does too. */
+export function elsewhere(lights: Lights): readonly string[] {
+  const lit = litSheets(editor.circuit, lights, session.table?.data.lines ?? []);
+  return lit.has(shownSheet.now) ? [] : sheetsOf(editor.circuit).flatMap(({ id }) => (lit.has(id) ? [id] : []));
+}
+
+/** Brings a sheet into view that holds some of this. */
+export function turnToLit(lights: Lights): void {
+  const [first] = elsewhere(lights);
+  if (first !== undefined && turnTo(first)) desk.say(`Shown on ${saySheet(editor.circuit, first)}.`);
 }
 
 /** After undo and redo the sheet is in view on which something changed. */
