@@ -5,6 +5,8 @@ import { bleedPlan, powerLoss } from '../analysis/bleed.ts';
 import { checkRules, ruleProblems, rulesOf } from '../analysis/check.ts';
 import { coilLogic } from '../analysis/coil-logic.ts';
 import { tabulateHeld } from '../analysis/held.ts';
+import { Late } from '../analysis/late.ts';
+import { BACKGROUND_ROWS } from '../analysis/limits.ts';
 import { PanelFindings } from '../analysis/panel-findings.ts';
 import { checkPlan } from '../analysis/plan.ts';
 import { draftPlan } from '../analysis/plan-draft.ts';
@@ -27,6 +29,7 @@ const scope = self as unknown as {
 
 const held = new Held();
 const panel = new PanelFindings();
+const late = new Late();
 
 scope.onmessage = ({ data: question }) => {
   if (question.ask === 'hold') {
@@ -60,6 +63,8 @@ function answer(question: Question): Reply {
       return answerTable(id, circuit, conditions);
     case 'open-paths':
       return { id, say: 'open-paths', table: openPaths(circuit, conditions) };
+    case 'late':
+      return { id, say: 'late', rows: late.rows(circuit, conditions, question.rows) };
     case 'explain':
       return { id, say: 'explanation', explanation: explainRow(circuit, conditions, question.row, question.units) };
     case 'check':
@@ -107,9 +112,6 @@ function refuseHeld({ held }: Conditions): void {
 
 /** Rows whose pressures take a tenth of a second or so: nothing need be shown before them. */
 const SOON = 700;
-/** Rows that the pressure layer may solve in the background: some tens of seconds. */
-const BACKGROUND_ROWS = 100_000;
-
 /** Giving up ends the whole thread, so there is nobody to ask. */
 const tell = (id: number): Budget => ({
   cancelled: () => false,

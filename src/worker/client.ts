@@ -9,6 +9,7 @@ import type { CoilLogic } from '../analysis/coil-logic-results.ts';
 import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
+import type { LateRows } from '../engine/table/late-rows.ts';
 import { StateTable } from '../engine/table/state-table.ts';
 import { Asking } from './asking.ts';
 import type { Job } from './asking.ts';
@@ -24,8 +25,9 @@ export type { LeverMove, MoveNote, MovesAnswer, MoveStage, VentAnswer } from '..
 export type { Check, CheckedRule, RuleAnswer, RuleCases } from '../analysis/check-results.ts';
 export type * from '../analysis/coil-logic-results.ts';
 export type * from '../analysis/plan-results.ts';
-export { MOST_ROWS } from '../analysis/limits.ts';
+export { BACKGROUND_ROWS, MOST_ROWS } from '../analysis/limits.ts';
 export { StateTable } from '../engine/table/state-table.ts';
+export type { LateRows } from '../engine/table/late-rows.ts';
 export type { RowFilter } from '../engine/table/state-table.ts';
 export type { TableData, TableInput, TableLine } from '../engine/table/table-data.ts';
 export * from '../engine/table/words.ts';
@@ -52,6 +54,8 @@ export interface Analyst {
   explain(circuit: Circuit, conditions: Conditions, row: number, units?: UnitSystem): Job<Explanation>;
   /** Pressures, flows and speeds of these rows, in this order; SI. */
   numbers(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly RowNumbers[]>;
+  /** What the pressures say of these rows, ahead of the table that they are still at; empty where valves follow from them. */
+  late(circuit: Circuit, conditions: Conditions, rows: readonly number[]): Job<readonly LateRows[]>;
   /** The circuit's rules against every combination; `table`: the finished one, if it is there. */
   check(asked: Asked, progress: (share: number) => void): Job<Result<Check>>;
   /** What keeps a rule's text from being read; empty = it can be checked. */
@@ -157,6 +161,11 @@ export function createAnalyst(): Analyst {
         { ask: 'numbers', circuit, conditions, rows },
         () => {},
         (reply) => (reply.say === 'numbers' ? reply.numbers : undefined),
+      ),
+    // By then the thread of open paths has had its say about this circuit.
+    late: (circuit, conditions, rows) =>
+      quick.ask({ ask: 'late', circuit, conditions, rows }, ignore, (reply) =>
+        reply.say === 'late' ? reply.rows : undefined,
       ),
     check: ({ circuit, conditions, table }, progress) =>
       // Where there is no table yet, one is made, which must not keep questions waiting.

@@ -8,6 +8,7 @@ import type { CoilLogic } from '../analysis/coil-logic-results.ts';
 import type { PlanDraft, PlanReport } from '../analysis/plan-results.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
+import type { LateRows } from '../engine/table/late-rows.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 
 export type Question =
@@ -17,6 +18,14 @@ export type Question =
   | {
       readonly id: number;
       readonly ask: 'numbers';
+      readonly circuit: Circuit;
+      readonly conditions: Conditions;
+      readonly rows: readonly number[];
+    }
+  /** What the pressures say of rows whose table they are still at. */
+  | {
+      readonly id: number;
+      readonly ask: 'late';
       readonly circuit: Circuit;
       readonly conditions: Conditions;
       readonly rows: readonly number[];
@@ -132,6 +141,7 @@ export type Reply =
         { readonly data: TableData; readonly findings: readonly Finding[]; readonly took: number } | undefined;
     }
   | { readonly id: number; readonly say: 'numbers'; readonly numbers: readonly RowNumbers[] }
+  | { readonly id: number; readonly say: 'late'; readonly rows: readonly LateRows[] }
   | { readonly id: number; readonly say: 'check'; readonly result: Result<Check> }
   | { readonly id: number; readonly say: 'fold'; readonly result: Result<FoldAnswer> }
   | { readonly id: number; readonly say: 'influence'; readonly result: Result<Influence> }

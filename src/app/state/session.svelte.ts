@@ -1,21 +1,14 @@
 import type { UnitSystem } from '../../base/units.ts';
 import { Cancelled } from '../../base/budget.ts';
 import type { Circuit } from '../../circuit/model.ts';
-import type {
-  Analyst,
-  Conditions,
-  Explanation,
-  Job,
-  ReasonStep,
-  StateTable,
-  TableAnswer,
-} from '../../worker/client.ts';
-import { MOST_ROWS } from '../../worker/client.ts';
+import type { Analyst, Conditions, Explanation, Job, ReasonStep, TableAnswer } from '../../worker/client.ts';
+import { BACKGROUND_ROWS, MOST_ROWS, StateTable } from '../../worker/client.ts';
 import { connectionLooks } from './connection-looks.ts';
 import type { ConnectionLook } from './connection-looks.ts';
 import { editor } from './editor.svelte.ts';
 import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
+import { lateRows } from './late-rows.svelte.ts';
 import { conditionsIn, loaded, withCase, withPlace } from './conditions.ts';
 import { sayError } from './said.ts';
 import type { CircuitInput } from './inputs.ts';
@@ -46,6 +39,13 @@ export interface Subject {
   readonly key: string;
 }
 
+/** The table as it was computed; `early`: there is more to come. */
+export interface SessionAnswer extends TableAnswer {
+  readonly circuit: Circuit;
+  readonly conditions: Conditions;
+  readonly early: boolean;
+}
+
 const PATIENCE_MS = 250;
 /** Rows that the levers picked on a large panel may have. */
 const MOST_LISTED = 7_000;
@@ -56,7 +56,7 @@ class Session {
   #conditions = $state.raw<Conditions>({ pumps: 'running' });
   #conditionsNow: Conditions = $derived(conditionsIn(editor.circuit, this.#conditions));
   /** The last answer, with the circuit it was computed for. */
-  answer = $state.raw<(TableAnswer & { readonly circuit: Circuit; readonly conditions: Conditions }) | undefined>();
+  answer = $state.raw<SessionAnswer | undefined>();
   /** Share of the running computation, 0 to 1; undefined = nothing runs. */
   progress = $state<number | undefined>();
   /** Why there is no table, in words. */
@@ -100,7 +100,9 @@ class Session {
       ? this.conditions
       : { ...this.conditions, held: JSON.parse(this.#held) as Readonly<Record<string, number>> },
   );
-  table: StateTable | undefined = $derived(this.answer?.table);
+  #computed: StateTable | undefined = $derived(this.answer?.table);
+  /** The table on show: as computed, and what the pressures have said of single rows ahead of it. */
+  table: StateTable | undefined = $derived(this.#computed && new StateTable(this.#computed.data, lateRows));
   /** The circuit of the table on show, with the loads that it was computed for. */
   tabled: Circuit = $derived(this.answer ? loaded(this.answer.circuit, this.answer.conditions) : editor.circuit);
   findings = $derived(this.answer?.findings ?? []);
@@ -285,16 +287,14 @@ class Session {
       },
       (early) => {
         if (this.#job !== job) return;
-        this.answer = { ...early, circuit, conditions };
-        this.failure = undefined;
+        this.#show({ ...early, circuit, conditions, early: true });
       },
     );
     this.#job = job;
     job.answer.then(
       (answer) => {
         if (this.#job !== job) return;
-        this.answer = { ...answer, circuit, conditions };
-        this.failure = undefined;
+        this.#show({ ...answer, circuit, conditions, early: false });
         this.progress = undefined;
       },
       (error: unknown) => {
@@ -308,6 +308,15 @@ class Session {
         }
       },
     );
+  }
+
+  /** Rows known ahead go with their table, or once it knows them all. */
+  #show(answer: SessionAnswer): void {
+    const was = this.answer;
+    const same = was?.conditions === answer.conditions && sameMachine(was.circuit, answer.circuit);
+    if (!same || (!answer.early && answer.table.count <= BACKGROUND_ROWS)) lateRows.clear();
+    this.answer = answer;
+    this.failure = undefined;
   }
 
   /** Nothing changed that a table is about, such as a step plan: the answer goes on with the new circuit. */

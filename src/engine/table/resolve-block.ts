@@ -23,6 +23,8 @@ export interface Allowance {
   rows: number;
   /** It reaches for every row, so that those which open paths decide get their voids, stalls and relief flows too. */
   readonly every: boolean;
+  /** Bits of the block that are asked for; absent = all. */
+  readonly only?: Uint32Array;
 }
 
 export interface Resolved {
@@ -121,7 +123,8 @@ function rowsToSolve(
     let rests = 0;
     for (const outcome of actuators) rests |= outcome.verdicts[RESTS]?.[w] as number;
     for (const planes of pumps) rests |= planes[PUMP_RESTS]?.[w] as number;
-    let open = (allowance.every ? (all[w] as number) : rests) & ~(hunts[w] as number);
+    const asked = allowance.only === undefined ? -1 : (allowance.only[w] as number);
+    let open = (allowance.every ? (all[w] as number) : rests) & ~(hunts[w] as number) & asked;
     while (open !== 0 && allowance.rows > 0) {
       const low = open & -open;
       open ^= low;

@@ -1,4 +1,5 @@
 import { countBits, emptySet, has, members, orInto } from '../../base/bits.ts';
+import type { LateRows } from './late-rows.ts';
 import { strides } from './strides.ts';
 import type { Plane, TableData } from './table-data.ts';
 import {
@@ -31,13 +32,21 @@ export interface RowFilter {
   readonly trapped?: boolean;
 }
 
+/** Rows that are known better than the table has them. */
+export interface LateSource {
+  of(row: number): LateRows | undefined;
+}
+
 /** Reads `TableData` row by row. Rows are 0-based here; people see row + 1. */
 export class StateTable {
   readonly data: TableData;
   readonly #strides: readonly number[];
+  readonly #late: LateSource | undefined;
 
-  constructor(data: TableData) {
+  /** `late`: what single rows read instead; counts and `find` go by the table alone. */
+  constructor(data: TableData, late?: LateSource) {
     this.data = data;
+    this.#late = late;
     this.#strides = strides(data.inputs.map((input) => input.positions.length));
   }
 
@@ -64,10 +73,16 @@ export class StateTable {
   }
 
   actuator(index: number, row: number): ActuatorVerdict {
-    return pick(this.data.actuatorPlanes[index], ACTUATOR_VERDICTS, row) ?? 'undetermined';
+    const late = this.#late?.of(row);
+    const word = late
+      ? pickBit(late.actuators[index], ACTUATOR_VERDICTS, row)
+      : pick(this.data.actuatorPlanes[index], ACTUATOR_VERDICTS, row);
+    return word ?? 'undetermined';
   }
 
   actuatorNotes(index: number, row: number): ActuatorNote[] {
+    const late = this.#late?.of(row);
+    if (late) return ACTUATOR_NOTES.filter((_, i) => bitOf(late.notes[index]?.[i], row));
     return pickAll(this.data.actuatorNotes[index], ACTUATOR_NOTES, row);
   }
 
@@ -107,16 +122,24 @@ export class StateTable {
   /** Another value could give another verdict; false = it holds for any sensible values. */
   actuatorOnValues(index: number, row: number): boolean {
     const plane = this.data.valuedActuators[index];
+    const late = this.#late?.of(row);
+    if (late && bitOf(late.valuedActuators[index], row)) return true;
     return (plane !== undefined && has(plane, row)) || this.actuator(index, row) === 'rests on pressure';
   }
 
   pumpOnValues(index: number, row: number): boolean {
     const plane = this.data.valuedPumps[index];
+    const late = this.#late?.of(row);
+    if (late && bitOf(late.valuedPumps[index], row)) return true;
     return (plane !== undefined && has(plane, row)) || this.pump(index, row) === 'rests on pressure';
   }
 
   pump(index: number, row: number): PumpVerdict {
-    return pick(this.data.pumpPlanes[index], PUMP_VERDICTS, row) ?? 'rests on pressure';
+    const late = this.#late?.of(row);
+    const word = late
+      ? pickBit(late.pumps[index], PUMP_VERDICTS, row)
+      : pick(this.data.pumpPlanes[index], PUMP_VERDICTS, row);
+    return word ?? 'rests on pressure';
   }
 
   line(index: number, row: number): LineClass {
@@ -124,10 +147,12 @@ export class StateTable {
   }
 
   blocked(index: number, row: number): BlockedKind | undefined {
+    if (bitOf(this.#late?.of(row)?.flowing[index], row)) return undefined;
     return pick(this.data.blockedPlanes[index], BLOCKED_KINDS, row);
   }
 
   trapped(index: number, row: number): TrapReason[] {
+    if (bitOf(this.#late?.of(row)?.flowing[index], row)) return [];
     return pickAll(this.data.trapPlanes[index], TRAP_REASONS, row);
   }
 
@@ -185,6 +210,13 @@ export class StateTable {
     }
     return Uint32Array.from(rows);
   }
+}
+
+const bitOf = (word: number | undefined, row: number): boolean => (((word ?? 0) >>> (row & 31)) & 1) === 1;
+
+function pickBit<W>(bits: readonly number[] | undefined, words: readonly W[], row: number): W | undefined {
+  const index = bits?.findIndex((word) => bitOf(word, row)) ?? -1;
+  return index < 0 ? undefined : words[index];
 }
 
 function pick<W>(planes: readonly (Plane | undefined)[] | undefined, words: readonly W[], row: number): W | undefined {
