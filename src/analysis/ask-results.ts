@@ -16,4 +16,6 @@ export interface AskAnswer {
   readonly rows?: { readonly matches: Plane; readonly undecided: Plane };
   /** Too many to list: the matches in few words. */
   readonly cases?: RuleCases;
+  /** Labels of valves that pressures or actuators move, where open paths alone have answered: there open paths put them. */
+  readonly followers?: readonly string[];
 }

@@ -5,7 +5,7 @@ import { bad, good } from '../base/result.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { NONE } from '../engine/paths/diagrams/diagrams.ts';
-import { openPathSets } from '../engine/paths/diagrams/open-paths.ts';
+import { settledPathSets } from '../engine/paths/diagrams/settled-paths.ts';
 import { casesOf } from '../engine/table/rules/answer.ts';
 import { figuresIn } from '../engine/table/rules/condition.ts';
 import type { FigureCondition } from '../engine/table/rules/condition.ts';
@@ -21,7 +21,7 @@ import { PressureSolver } from '../engine/table/resolve.ts';
 import type { Plane, TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, MOST_SOLVED, networkOf, pathConditions, tabulate } from './analyse.ts';
 import type { AskAnswer } from './ask-results.ts';
-import { entangled, refuseDependents } from './outcomes.ts';
+import { entangled, followersOf } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
 /**
@@ -59,12 +59,10 @@ export function askTable(
       rows: { matches: sure, undecided: open },
     });
   }
-  const follows = refuseDependents(net);
-  if (follows) return bad(follows);
   try {
     const found = entangled((): AskAnswer => {
       const where = pathConditions(net, conditions);
-      const paths = openPathSets(net, where);
+      const paths = settledPathSets(net, where);
       const { sets } = paths;
       const { sure, maybe } = evaluate(openPathSource(net, where, paths), condition);
       const open = sets.minus(maybe, sure);
@@ -75,6 +73,7 @@ export function askTable(
         matches: sets.count(sure),
         undecided: sets.count(open),
         ...(sure !== NONE && { cases: casesOf(sets, names, sure) }),
+        ...followersOf(net),
       };
     });
     return found;

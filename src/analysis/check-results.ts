@@ -21,4 +21,6 @@ export interface Check {
   readonly inputs: readonly CheckedInput[];
   /** False where the panel is too large to list: then rows have no numbers, and open paths alone have answered. */
   readonly listed: boolean;
+  /** Labels of valves that pressures or actuators move, where open paths alone have answered: there open paths put them. */
+  readonly followers?: readonly string[];
 }

@@ -4,7 +4,7 @@ import { bad, good } from '../base/result.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { TooManyNodes } from '../engine/paths/diagrams/diagrams.ts';
-import { openPathSets } from '../engine/paths/diagrams/open-paths.ts';
+import { settledPathSets } from '../engine/paths/diagrams/settled-paths.ts';
 import { checkRule, checkRuleByPaths } from '../engine/table/rules/answer.ts';
 import type { RuleAnswer } from '../engine/table/rules/answer.ts';
 import { figuresIn } from '../engine/table/rules/condition.ts';
@@ -16,7 +16,7 @@ import type { TableData } from '../engine/table/table-data.ts';
 import { MOST_ROWS, networkOf, pathConditions, tabulate } from './analyse.ts';
 import { figuresFor, tooManyToSolve } from './ask.ts';
 import type { Check, CheckedRule } from './check-results.ts';
-import { refuseDependents } from './outcomes.ts';
+import { followersOf } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
 /** A rule as it was typed. */
@@ -80,14 +80,12 @@ export function checkRules(
     if (!figure.ok) return figure;
     answerTo = (rule) => checkRule(data, rule, figure.value);
   } else {
-    const follows = refuseDependents(net);
-    if (follows) return bad(follows);
     const where = pathConditions(net, conditions);
     const heartbeat = (): void => {
       if (budget.cancelled()) throw new Cancelled();
     };
     try {
-      const paths = openPathSets(net, where, { heartbeat });
+      const paths = settledPathSets(net, where, { heartbeat });
       answerTo = (rule) => checkRuleByPaths(net, where, paths, rule);
     } catch (error) {
       if (error instanceof TooManyNodes)
@@ -115,5 +113,5 @@ export function checkRules(
     }
   }
   const inputs = names.inputs.map(({ label, positions }) => ({ label, positions }));
-  return problems.length > 0 ? bad(...problems) : good({ rules, inputs, listed });
+  return problems.length > 0 ? bad(...problems) : good({ rules, inputs, listed, ...(listed ? {} : followersOf(net)) });
 }

@@ -43,6 +43,8 @@ export interface FoldAnswer {
   readonly groups: readonly (readonly number[])[];
   /** False where there are too many combinations to list: then open paths alone have answered. */
   readonly listed: boolean;
+  /** Labels of valves that pressures or actuators move, where open paths alone have answered: there open paths put them. */
+  readonly followers?: readonly string[];
 }
 
 export type InfluenceOf = 'actuator' | 'pump' | 'line' | 'blocked' | 'trapped';
@@ -74,4 +76,6 @@ export interface Influence {
   readonly parts: readonly SubCircuit[];
   readonly combinations: bigint;
   readonly listed: boolean;
+  /** Labels of valves that pressures or actuators move, where open paths alone have answered: there open paths put them. */
+  readonly followers?: readonly string[];
 }

@@ -13,7 +13,7 @@ import { namesOfNetwork } from '../engine/table/rules/names.ts';
 import type { Names } from '../engine/table/rules/names.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import type { FoldAnswer, FoldBy, FoldItem } from './fold-results.ts';
-import { entangled, outcomesOf } from './outcomes.ts';
+import { entangled, followersOf, outcomesOf } from './outcomes.ts';
 import type { Outcomes } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
@@ -64,6 +64,7 @@ export function foldFrom({ net, source, listed }: Outcomes, by: FoldBy, budget: 
       least,
       groups,
       listed,
+      ...(listed ? {} : followersOf(net)),
     };
   });
   if (!found.ok) return found;

@@ -9,7 +9,7 @@ import { namesOfNetwork } from '../engine/table/rules/names.ts';
 import type { TableData } from '../engine/table/table-data.ts';
 import type { Network } from '../network/network.ts';
 import type { Influence, InfluenceOf, InfluenceRow, SubCircuit } from './fold-results.ts';
-import { entangled, outcomesOf } from './outcomes.ts';
+import { entangled, followersOf, outcomesOf } from './outcomes.ts';
 import type { Outcomes } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
@@ -60,6 +60,7 @@ export function influenceFrom({ net, source, listed }: Outcomes, budget: Budget)
       parts: partsOf(net, rows),
       combinations: sets.total,
       listed,
+      ...(listed ? {} : followersOf(net)),
     };
   });
 }

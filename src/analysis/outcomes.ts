@@ -4,7 +4,7 @@ import { bad, good } from '../base/result.ts';
 import type { Problem, Result } from '../base/result.ts';
 import type { Circuit } from '../circuit/model.ts';
 import { TooManyNodes } from '../engine/paths/diagrams/diagrams.ts';
-import { openPathSets } from '../engine/paths/diagrams/open-paths.ts';
+import { settledPathSets } from '../engine/paths/diagrams/settled-paths.ts';
 import { pathOutcomes, tableOutcomes } from '../engine/table/fold/outcome-sets.ts';
 import type { OutcomeSource } from '../engine/table/fold/outcome-sets.ts';
 import type { TableData } from '../engine/table/table-data.ts';
@@ -39,22 +39,29 @@ export function outcomesOf(
     const data = table ?? tabulate(circuit, conditions, budget);
     return good({ net, source: tableOutcomes(data, heartbeat), listed: true });
   }
-  const follows = refuseDependents(net);
-  if (follows) return bad(follows);
   return entangled(() => {
     const where = pathConditions(net, conditions);
-    const paths = openPathSets(net, where, { heartbeat });
+    const paths = settledPathSets(net, where, { heartbeat });
     return { net, source: pathOutcomes(net, where, paths), listed: false };
   });
 }
 
-/** Sets of combinations do not follow valves that pressures or actuators move; undefined if there are none. */
+/** Labels of valves that pressures or actuators move, for answers of open paths; empty if there are none. */
+export function followersOf(net: Network): { readonly followers?: readonly string[] } {
+  const followers = net.dependents.map((_, d) => dependentLabel(net, d));
+  return followers.length > 0 ? { followers } : {};
+}
+
+/**
+ * Open paths only guess where a valve stands that pressures or actuators move, which is not enough to say where
+ * pressure is trapped or let down; undefined if there are none.
+ */
 export function refuseDependents(net: Network): Problem | undefined {
-  if (net.dependents.length === 0) return undefined;
-  const labels = net.dependents.map((_, d) => dependentLabel(net, d));
+  const labels = followersOf(net).followers ?? [];
+  if (labels.length === 0) return undefined;
   return {
     where: 'circuit',
-    what: `There are too many combinations to list, and ${labels.join(', ')} ${labels.length > 1 ? 'follow' : 'follows'} from pressures or from where an actuator stands: sets of combinations do not know that.`,
+    what: `There are too many combinations to list, and ${labels.join(', ')} ${labels.length > 1 ? 'follow' : 'follows'} from pressures or from where an actuator stands, which open paths alone only guess.`,
     remedy: `Ask about a part of the circuit by itself, with at most ${MOST_ROWS.toLocaleString('en')} combinations.`,
   };
 }

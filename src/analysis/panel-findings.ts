@@ -18,7 +18,9 @@ export function panelFindings(circuit: Circuit, conditions: Conditions, budget: 
   const net = networkOf(circuit, free);
   if (net.dependents.length > 0)
     return [
-      untold('Some of its valves follow from pressures or from where an actuator stands: sets do not know that.'),
+      untold(
+        'Some of its valves follow from pressures or from where an actuator stands, which open paths alone only guess.',
+      ),
     ];
   const where = pathConditions(net, { ...free, pumps: 'running' });
   const heartbeat = (): void => {

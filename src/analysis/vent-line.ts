@@ -1,6 +1,6 @@
 import type { Budget } from '../base/budget.ts';
 import { Cancelled, unlimited } from '../base/budget.ts';
-import { good } from '../base/result.ts';
+import { bad, good } from '../base/result.ts';
 import type { Result } from '../base/result.ts';
 import type { UnitSystem } from '../base/units.ts';
 import type { Circuit } from '../circuit/model.ts';
@@ -13,7 +13,7 @@ import type { Network } from '../network/network.ts';
 import { networkOf, pathConditions } from './analyse.ts';
 import { Mover } from './moves.ts';
 import type { LeverMove, VentAnswer } from './moves-results.ts';
-import { entangled, outcomesOf } from './outcomes.ts';
+import { entangled, outcomesOf, refuseDependents } from './outcomes.ts';
 import type { Conditions } from './results.ts';
 
 /** Other lists of the same length that are told. */
@@ -74,6 +74,8 @@ function ventedSets(circuit: Circuit, conditions: Conditions, line: number, budg
   if (net.dependents.length > 0) {
     const outcomes = outcomesOf(circuit, conditions, budget);
     if (!outcomes.ok) return outcomes;
+    const follows = outcomes.value.listed ? undefined : refuseDependents(net);
+    if (follows) return bad(follows);
     const { sets, of } = outcomes.value.source;
     const classOf = (word: string): Diagram => of('line', line).find((each) => each.word === word)?.set ?? NONE;
     return good({ sets, vented: classOf('vented'), firm: classOf('vented'), flowing: classOf('flows to tank') });

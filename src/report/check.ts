@@ -2,6 +2,7 @@ import type { Check, CheckedRule, Conditions, RuleCases } from '../analysis/resu
 import type { LoadCase } from '../circuit/model.ts';
 import { sayConditions } from './conditions.ts';
 import { REPORT_VERSION } from './json.ts';
+import { pathsOnly } from './paths-only.ts';
 import { plain } from './width.ts';
 
 /** What the report of a check is made from. */
@@ -30,7 +31,7 @@ export function* writeCheckText(source: CheckSource): Generator<string> {
 function* lines({ circuit, conditions, loadCases, check }: CheckSource): Generator<string> {
   const { rules } = check;
   yield circuit;
-  yield `${counted(BigInt(rules.length), 'rule')} checked, ${sayConditions(conditions, loadCases)}${check.listed ? '' : '; too many combinations to list, so open paths alone have answered'}`;
+  yield `${counted(BigInt(rules.length), 'rule')} checked, ${sayConditions(conditions, loadCases)}${check.listed ? '' : pathsOnly(check.followers)}`;
   for (const [i, { text, answer }] of rules.entries()) {
     yield '';
     yield `${i + 1}. ${text}`;

@@ -4,6 +4,7 @@ import { members } from '../base/bits.ts';
 import { sayConditions } from './conditions.ts';
 import { idleWords, partWords, sayProduct } from './influence-words.ts';
 import { REPORT_VERSION } from './json.ts';
+import { pathsOnly } from './paths-only.ts';
 import { plain, widthOf } from './width.ts';
 
 /** What the reports about a whole table have in common. */
@@ -18,7 +19,6 @@ export interface WholeSource {
 const say = (n: bigint | number): string => n.toLocaleString('en');
 /** Counts past 2⁵³ are strings of digits, since JSON readers would round them. */
 const number = (n: bigint): number | string => (n <= BigInt(Number.MAX_SAFE_INTEGER) ? Number(n) : n.toString());
-const PATHS = '; too many combinations to list, so open paths alone have answered';
 
 /** `any`, or `a/0`. */
 const sayMask = (mask: number, positions: readonly string[]): string =>
@@ -60,7 +60,8 @@ function* foldLines(
   refused: readonly string[],
 ): Generator<string> {
   yield circuit;
-  yield `Folded, ${sayConditions(conditions, loadCases)}${folds.some(({ listed }) => !listed) ? PATHS : ''}`;
+  const unlisted = folds.find(({ listed }) => !listed);
+  yield `Folded, ${sayConditions(conditions, loadCases)}${unlisted ? pathsOnly(unlisted.followers) : ''}`;
   for (const { items, inputs, rows, otherwise, combinations } of folds) {
     yield '';
     yield `${items.map(({ label }) => label).join(' + ')}: ${say(rows.length)} row${rows.length === 1 ? '' : 's'} and the rest for ${say(combinations)} combinations, checked equal to all of them`;
@@ -121,7 +122,7 @@ export function writeInfluenceText(source: WholeSource, found: Influence): Itera
 function* influenceLines({ circuit, conditions, loadCases }: WholeSource, found: Influence): Generator<string> {
   const { inputs, rows, parts, listed } = found;
   yield circuit;
-  yield `Which lever can change what, ${sayConditions(conditions, loadCases)}${listed ? '' : PATHS}`;
+  yield `Which lever can change what, ${sayConditions(conditions, loadCases)}${listed ? '' : pathsOnly(found.followers)}`;
   yield '';
   yield* table([
     ['', ...inputs.map(({ label }) => label)],
@@ -199,7 +200,7 @@ function* askLines(
 ): Generator<string> {
   const { text, inputs, matches, undecided, combinations, rows, cases } = answer;
   yield circuit;
-  yield `${text}, ${sayConditions(conditions, loadCases)}: in ${say(matches)} of ${say(combinations)} combinations${undecided > 0n ? `, not decided in ${say(undecided)}` : ''}${rows ? '' : PATHS}`;
+  yield `${text}, ${sayConditions(conditions, loadCases)}: in ${say(matches)} of ${say(combinations)} combinations${undecided > 0n ? `, not decided in ${say(undecided)}` : ''}${rows ? '' : pathsOnly(answer.followers)}`;
   if (rows && matches > 0n && limit > 0) {
     yield '';
     const shown = listed(answer, limit);

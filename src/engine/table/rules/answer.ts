@@ -1,7 +1,7 @@
 import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { Diagrams, NONE } from '../../paths/diagrams/diagrams.ts';
-import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
+import type { SettledPaths } from '../../paths/diagrams/settled-paths.ts';
 import { planeToDiagram } from '../../paths/diagrams/plane.ts';
 import type { PathConditions } from '../../paths/reach.ts';
 import { coverOf } from '../fold/cover.ts';
@@ -52,7 +52,7 @@ export function checkRule(data: TableData, rule: Rule, figure?: RuleSource<Plane
 export function checkRuleByPaths(
   net: Network,
   conditions: PathConditions,
-  paths: OpenPathSets,
+  paths: SettledPaths,
   rule: Rule,
 ): RuleAnswer {
   const { sure, maybe } = evaluate(openPathSource(net, conditions, paths), rule.breaks);

@@ -3,7 +3,7 @@ import type { Network } from '../../../network/network.ts';
 import type { Diagram } from '../../paths/diagrams/diagrams.ts';
 import { ALL, NONE } from '../../paths/diagrams/diagrams.ts';
 import { classSet, PATH_CLASSES } from '../../paths/diagrams/open-paths.ts';
-import type { OpenPathSets } from '../../paths/diagrams/open-paths.ts';
+import type { SettledPaths } from '../../paths/diagrams/settled-paths.ts';
 import { positionMask } from '../../paths/edges.ts';
 import type { PathConditions } from '../../paths/reach.ts';
 import { PanelSets } from '../sets/panel-sets.ts';
@@ -75,11 +75,13 @@ export class NeedsTable extends Error {
  * Rules on a panel of any size, from exact sets of open paths: lever and coil positions, verdicts of actuators and
  * pumps, line classes, blocked and trapped lines. Throws `NeedsTable` at everything else, and `TooManyNodes` where motions are too entangled.
  */
-export function openPathSource(net: Network, conditions: PathConditions, paths: OpenPathSets): RuleSource<Diagram> {
+export function openPathSource(net: Network, conditions: PathConditions, paths: SettledPaths): RuleSource<Diagram> {
   const { sets } = paths;
   // Motions take more than open paths, so they are sought when a rule speaks of them.
   const panel = new PanelSets(net, conditions, paths);
-  const known = (set: Diagram): Truth<Diagram> => ({ sure: set, maybe: set });
+  // Where a dependent valve may stand elsewhere, nothing is sure of any line.
+  const moved = (paths.settled?.open ?? []).reduce((all: Diagram, set) => sets.or(all, set), NONE);
+  const known = (set: Diagram): Truth<Diagram> => ({ sure: sets.minus(set, moved), maybe: sets.or(set, moved) });
   const union = <W>(found: readonly Diagram[] | undefined, words: readonly W[], wanted: readonly W[]): Diagram =>
     wanted.reduce((all: Diagram, word) => sets.or(all, found?.[words.indexOf(word)] ?? NONE), NONE);
   return {
@@ -119,11 +121,11 @@ export function openPathSource(net: Network, conditions: PathConditions, paths: 
         panel.open,
         away.reduce((all, set) => sets.or(all, set), NONE),
       );
-      return { sure: sets.minus(found, panel.open), maybe: sets.or(found, perhaps) };
+      return { sure: sets.minus(found, sets.or(panel.open, moved)), maybe: sets.or(found, sets.or(perhaps, moved)) };
     },
     trapped: (i, reasons) => {
       const found = union(panel.traps[i], TRAP_REASONS, reasons);
-      return { sure: sets.minus(found, panel.moving), maybe: found };
+      return { sure: sets.minus(found, sets.or(panel.moving, moved)), maybe: sets.or(found, moved) };
     },
     figure: ({ type }) => {
       throw new NeedsTable(type === 'pressure' ? 'A pressure' : 'A speed');
