@@ -14,9 +14,11 @@ export interface BleedOptions {
   readonly mostStates?: number;
 }
 
-const MOST_STATES = 60_000;
+const MOST_STATES = 30_000;
 /** States that are looked at, once a shortest list is known, for one with less to be cautious of. */
-const MOST_TIES = 8_000;
+const MOST_TIES = 1_000;
+/** States that one step of a list made step by step may cost. */
+const MOST_CLIMB = 4_000;
 const CANCEL_EVERY = 256;
 
 /** A state found by the search, and the move that led there. */
@@ -56,8 +58,9 @@ function leastPossible(model: BleedModel, { held }: Standing): number {
 
 /**
  * The state with the fewest lines under pressure that moves of levers lead to from `first`, by the fewest moves, and
- * of these by those with the least to be cautious of. Where one round runs out of states, the next starts from the
- * best state so far: a list still, but the shortest only if no list could be shorter.
+ * of these by those with the least to be cautious of. First a list is made step by step, each step the shortest that
+ * lets some line down; then the shortest is looked for. Where that runs out of states, the better of both is taken,
+ * and it is proven only if no list could be shorter.
  */
 export function searchMoves(
   model: BleedModel,
@@ -65,87 +68,115 @@ export function searchMoves(
   { budget = unlimited, mostStates = MOST_STATES }: BleedOptions,
 ): Found {
   const least = leastPossible(model, first);
-  const needed = new LeversNeeded(model);
-  const root: Node = {
-    ...first,
-    depth: 0,
-    weight: 0,
-    from: undefined,
-    input: -1,
-    position: -1,
-    left: shownHeld(model.net, first.held),
-    needed: needed.count(first.row, first.held),
-    queued: false,
-  };
-  let found = searchFrom(model, root, least, needed, budget, mostStates);
-  let { proven, states } = found;
-  for (let start = root; !found.proven && found.best.left < start.left;) {
-    start = found.best;
-    found = searchFrom(model, start, least, needed, budget, mostStates);
-    states += found.states;
-    proven = found.best.left <= least && found.best.depth <= root.needed;
-  }
-  return { best: found.best, proven, states };
+  const search = new Search(model, budget, mostStates);
+  const root = search.node(first, { depth: 0, weight: 0, from: undefined, input: -1, position: -1 });
+  const list = search.climb(root, least);
+  const found = search.best(root, least, list);
+  return { ...found, proven: found.proven || (found.best.left <= least && found.best.depth <= root.needed) };
 }
 
-/** Best first by moves made and moves needed yet, which never overrates (A*; Hart, Nilsson and Raphael 1968). */
-function searchFrom(
-  model: BleedModel,
-  root: Node,
-  least: number,
-  needed: LeversNeeded,
-  budget: Budget,
-  mostStates: number,
-): Found {
-  const { net, strides } = model;
-  const known = new Map<string, Node>([[keyOf(root.row, root.held), root]]);
-  const queue = new Queue();
-  queue.push(root);
-  let best = root;
-  let looked = 0;
-  let ties = 0;
-  const done = (): boolean => best.left <= least && queue.least() >= best.depth;
-  while (!queue.empty()) {
-    // A shortest list is known: go on only for one that asks for less caution.
-    if (done() && (best.weight === 0 || queue.least() > best.depth || ties++ >= MOST_TIES)) break;
-    if (known.size >= mostStates) break;
-    if (looked++ % CANCEL_EVERY === 0) {
-      if (budget.cancelled()) throw new Cancelled();
-      budget.progress(Math.min(1, known.size / mostStates));
+type Step = Pick<Node, 'depth' | 'weight' | 'from' | 'input' | 'position'>;
+
+class Search {
+  readonly #model: BleedModel;
+  readonly #needed: LeversNeeded;
+  readonly #budget: Budget;
+  readonly #mostStates: number;
+  #looked = 0;
+  #states = 0;
+
+  constructor(model: BleedModel, budget: Budget, mostStates: number) {
+    this.#model = model;
+    this.#needed = new LeversNeeded(model);
+    this.#budget = budget;
+    this.#mostStates = mostStates;
+  }
+
+  node(stand: Standing, step: Step): Node {
+    const left = shownHeld(this.#model.net, stand.held);
+    const needed = this.#needed.count(stand.row, stand.held);
+    this.#states += 1;
+    return { ...stand, ...step, left, needed, queued: false };
+  }
+
+  /** Step by step down to as few lines as that leads to, each step by the fewest moves. */
+  climb(root: Node, least: number): Node {
+    let at = root;
+    while (at.left > least) {
+      const next = this.#nearestBelow(at);
+      if (!next) break;
+      at = next;
     }
-    const node = queue.pop();
-    if (node.left <= least) continue;
+    return at;
+  }
+
+  #nearestBelow(start: Node): Node | undefined {
+    const known = new Map([[keyOf(start.row, start.held), start]]);
+    const until = this.#states + MOST_CLIMB;
+    for (let level = [start]; level.length > 0 && this.#states < until;) {
+      const next: Node[] = [];
+      for (const node of level) {
+        if (this.#states < until) next.push(...this.#expand(node, known));
+      }
+      const lowest = next.reduce<Node | undefined>((low, node) => (!low || better(node, low) ? node : low), undefined);
+      if (lowest && lowest.left < start.left) return lowest;
+      level = next;
+    }
+    return undefined;
+  }
+
+  /** Best first by moves made and moves needed yet, which never overrates (A*; Hart, Nilsson and Raphael 1968). */
+  best(root: Node, least: number, list: Node): Found {
+    const known = new Map<string, Node>([[keyOf(root.row, root.held), root]]);
+    const queue = new Queue();
+    queue.push(root);
+    let best = list;
+    let ties = 0;
+    const done = (): boolean => best.left <= least && queue.least() >= best.depth;
+    while (!queue.empty()) {
+      // A shortest list is known: go on only for one that asks for less caution.
+      if (done() && (best.weight === 0 || queue.least() > best.depth || ties++ >= MOST_TIES)) break;
+      if (known.size >= this.#mostStates) break;
+      const node = queue.pop();
+      if (node.left <= least) continue;
+      const made = this.#expand(node, known);
+      for (const next of made) if (better(next, best)) best = next;
+      // The last one pushed is the next one looked at: of those alike the first.
+      made.reverse().sort((a, b) => b.weight - a.weight);
+      const longest = best.left <= least ? best.depth : Infinity;
+      for (const next of made) if (next.depth + next.needed <= longest) queue.push(next);
+    }
+    return { best, proven: done() || queue.empty(), states: this.#states };
+  }
+
+  /** What one move leads to, where nothing shorter or safer was known; entered in `known`. */
+  #expand(node: Node, known: Map<string, Node>): Node[] {
+    const { net, strides } = this.#model;
+    if (this.#looked++ % CANCEL_EVERY === 0) {
+      if (this.#budget.cancelled()) throw new Cancelled();
+      this.#budget.progress(Math.min(1, known.size / this.#mostStates));
+    }
     const made: Node[] = [];
     net.inputs.forEach(({ positions }, input) => {
       const stride = strides[input] as number;
       const now = Math.floor(node.row / stride) % positions.length;
       for (let position = 0; position < positions.length; position++) {
         if (position === now) continue;
-        const stand = model.stand(node.row + (position - now) * stride, node.held);
+        const stand = this.#model.stand(node.row + (position - now) * stride, node.held);
         const key = keyOf(stand.row, stand.held);
         const there = known.get(key);
         const depth = node.depth + 1;
         if (there && (there.depth < depth || (there.depth === depth && there.weight <= node.weight))) continue;
         const weight = node.weight + weightOf(cautionsOf(net, node, node.held, stand, input, position));
-        const by = { depth, weight, from: node, input, position };
-        if (there) {
-          if (there.depth === depth && there.weight <= weight) continue;
-          Object.assign(there, by);
-          made.push(there);
-          continue;
-        }
-        const left = shownHeld(net, stand.held);
-        const fresh: Node = { ...stand, ...by, left, needed: needed.count(stand.row, stand.held), queued: false };
+        if (there && there.depth === depth && there.weight <= weight) continue;
+        const step = { depth, weight, from: node, input, position };
+        const fresh = there ? Object.assign(there, step) : this.node(stand, step);
         known.set(key, fresh);
         made.push(fresh);
       }
     });
-    for (const next of made) if (better(next, best)) best = next;
-    // The last one pushed is the next one looked at: of those alike the first.
-    made.reverse().sort((a, b) => b.weight - a.weight);
-    for (const next of made) queue.push(next);
+    return made;
   }
-  return { best, proven: done() || queue.empty(), states: known.size };
 }
 
 const better = (a: Node, b: Node): boolean =>

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, test } from 'vitest';
 import { openCircuit } from '../../../src/parts/open.ts';
+import type { Circuit } from '../../../src/circuit/model.ts';
 import { circuit } from '../../notation.ts';
 import { BleedAsked } from './asked.ts';
 
