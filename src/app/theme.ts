@@ -2,6 +2,7 @@ import { cssVariables, FILLS, PENS } from '../drawing/palette.ts';
 import type { PenStyle } from '../drawing/palette.ts';
 import { MODULE_PX } from '../drawing/strokes.ts';
 import './theme.css';
+import './shared.css';
 import './draw/tones.css';
 
 /** Pens in modules, so that symbols keep their proportions at any zoom. */
