@@ -6,25 +6,12 @@ import { asking } from './table/asking.svelte.ts';
 import { goToRow } from './table/go-to-row.svelte.ts';
 import { stopWaiting } from './table/stop-waiting.ts';
 import { view } from './state/view.svelte.ts';
-import type { PanelId } from './state/view.svelte.ts';
+import { PANEL_KEYS } from './panels/panel-keys.ts';
 import { openFromDisk } from './files/open.ts';
 import { save, saveAs } from './files/save.ts';
 
 /** Keys that work wherever the focus is, unless something there has taken them. */
 const TWO_DIGITS_MS = 900;
-const PANELS: Readonly<Record<string, PanelId>> = {
-  l: 'legend',
-  w: 'why',
-  f: 'findings',
-  e: 'settings',
-  o: 'conditions',
-  u: 'rules',
-  b: 'bleed',
-  v: 'influence',
-  m: 'moves',
-  y: 'loss',
-  '?': 'keys',
-};
 
 let typed = { digits: '', at: 0 };
 
@@ -83,7 +70,7 @@ function command(event: KeyboardEvent): boolean {
 
 function plain(event: KeyboardEvent): boolean {
   const { key } = event;
-  const panel = PANELS[key.toLowerCase()];
+  const panel = PANEL_KEYS[key.toLowerCase()];
   if (/^\d$/.test(key)) digit(key, event.timeStamp);
   else if (key === 'E') maker.openForSelection();
   else if (panel) view.toggle(panel);

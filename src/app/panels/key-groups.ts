@@ -22,7 +22,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
   group(
     'Rows',
     ['[ ]', 'Row before, row after'],
-    ['G', 'Go to a row by its number, or by where levers are to stand; Ctrl G from the sheet too'],
+    ['G or Ctrl G', 'Go to a row by its number, or by where levers are to stand; from the sheet with Ctrl'],
     ['↑ ↓', 'In the table: move the row, and the levers with it'],
     ['Enter', 'In the table: why; in its head: sort'],
     ['F', 'In the table: filter this column'],
@@ -41,7 +41,7 @@ const EVERYWHERE: readonly KeyGroup[] = [
   group(
     'Everywhere',
     ['Ctrl Z', 'Undo'],
-    ['Ctrl Shift Z', 'Redo'],
+    ['Ctrl Shift Z or Ctrl Y', 'Redo'],
     ['Ctrl S', 'Save; with Shift, save as'],
     ['Ctrl O', 'Open'],
     ['Ctrl P', 'Drawing and print: title block, paper, part codes, what is printed'],

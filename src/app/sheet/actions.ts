@@ -220,7 +220,7 @@ export const sheetActions: SheetActions = {
       ...(labels.length > 0 ? [counted(labels.length, 'text')] : []),
     ];
     desk.cursor = undefined;
-    attempt(() => removal(editor.circuit, selection, heal), `${words.join(', ')} deleted. Ctrl+Z brings it back.`);
+    attempt(() => removal(editor.circuit, selection, heal), `${words.join(', ')} deleted. Ctrl Z brings it back.`);
   },
 
   duplicate() {

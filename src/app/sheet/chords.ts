@@ -37,6 +37,7 @@ export function matches(chord: Chord, press: KeyPress): boolean {
 /** Words for the Keys panel: arrows as arrows. */
 export const sayChord = (chord: Chord): string =>
   chord
+    .replace(/(Ctrl|Alt|Shift)\+/g, '$1 ')
     .replace('ArrowLeft', '←')
     .replace('ArrowRight', '→')
     .replace('ArrowUp', '↑')

@@ -33,7 +33,7 @@ export function copyText(): string | undefined {
 
 /** What was copied here last, for menus: they may not read the clipboard unasked. */
 export function pasteCopied(): void {
-  if (lastText === '') desk.refuse('Nothing was copied here yet. Ctrl+V pastes what another window copied.');
+  if (lastText === '') desk.refuse('Nothing was copied here yet. Ctrl V pastes what another window copied.');
   else pasteText(lastText);
 }
 

@@ -85,7 +85,7 @@ export function remove(sheet: string): void {
   const inView = shownSheet.now === sheet;
   const done = attempt(
     () => removeSheet(circuit, sheet),
-    `${said}${count === 0 ? '' : ` with ${counted(count, 'part')}`} deleted. Ctrl+Z brings it back.`,
+    `${said}${count === 0 ? '' : ` with ${counted(count, 'part')}`} deleted. Ctrl Z brings it back.`,
   );
   if (done && inView && beside) turnTo(beside.id);
 }
@@ -147,7 +147,7 @@ export const sheetsActions: SheetsActions = {
     const { parts, labels } = editor.selection;
     if (parts.length + labels.length === 0) return desk.refuse('Select parts or texts first.');
     if (!hasSheets(editor.circuit)) {
-      desk.refuse('There is only one sheet. Shift+P adds another one.');
+      desk.refuse('There is only one sheet. Shift P adds another one.');
       return;
     }
     openMenu(`${sayThings(parts, labels)} to sheet`, goToItems(moveSelectionTo, shownSheet.now));

@@ -38,5 +38,5 @@ test('keys find their command', () => {
 });
 
 test('arrows are shown as arrows', () => {
-  expect(sayChord('Shift+ArrowLeft')).toBe('Shift+←');
+  expect(sayChord('Shift+ArrowLeft')).toBe('Shift ←');
 });
