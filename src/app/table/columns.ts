@@ -97,7 +97,8 @@ export function columnGroups(
       of: 'input',
       index,
       title: input.label,
-      width: fits(input.positions, 0, input.label),
+      // Its filter stands beside the shortest label.
+      width: Math.max(52, fits(input.positions, 0, input.label)),
     }),
     ...input.coils.map(({ position }, i) => {
       const title = coils[next++] ?? '';
