@@ -86,7 +86,12 @@ class SheetDrawing {
   places: Places = $derived(new Map(this.#whole.parts.flatMap(({ id, at }) => (at ? [[id, at] as const] : []))));
 
   readonly #layers = new Map<string, SheetRoutes>();
-  #settled: Routes = $derived(this.#layerOf(shownSheet.now).of(this.#rest));
+  /** Counts searches that ended after their frame. */
+  #laid = $state(0);
+  #settled: Routes = $derived.by(() => {
+    void this.#laid;
+    return this.#layerOf(shownSheet.now).of(this.#rest);
+  });
 
   #moves: Moves | undefined = $derived(this.preview && movesOf(this.#rest, this.face));
   routes: Routes = $derived.by(() => {
@@ -196,7 +201,11 @@ class SheetDrawing {
   #layerOf(sheet: string): SheetRoutes {
     const known = this.#layers.get(sheet);
     if (known) return known;
-    const layer = new SheetRoutes();
+    const layer = new SheetRoutes({
+      run: (step) => requestAnimationFrame(step),
+      now: () => performance.now(),
+      done: () => (this.#laid += 1),
+    });
     this.#layers.set(sheet, layer);
     return layer;
   }
@@ -204,7 +213,7 @@ class SheetDrawing {
   /** One sheet as it would stand in the row on show, or at rest without marks, whether it is in view or not. */
   sheet(id: string, how: 'row' | 'plain'): SheetPicture {
     const circuit = faceOf(this.#whole, id, this.references, zoneOn);
-    const routes = this.#layerOf(id).of(circuit);
+    const routes = this.#layerOf(id).finished(circuit);
     if (how === 'plain')
       return { scene: buildScene(circuit, routes, { hops: sheetView.hops }), pressureSpots: new Map() };
     const scene = buildScene(circuit, routes, this.#state);

@@ -1,66 +1,107 @@
-import type { Point } from '../../base/points.ts';
-import type { Circuit, Part } from '../../circuit/model.ts';
+import type { Circuit } from '../../circuit/model.ts';
+import { portOf } from '../../drawing/geometry.ts';
 import type { Routes } from '../../drawing/geometry.ts';
-import { reroute, routeAll } from '../../drawing/routing.ts';
+import { laying } from '../../drawing/laying.ts';
+import type { Laying } from '../../drawing/laying.ts';
+import { quickRoute } from '../../drawing/quick-route.ts';
+import { routingSheet } from '../../drawing/routing.ts';
+
+/** Searches that are made at once whatever they take: up to here a drawing is never shown unfinished. */
+const AT_ONCE = 40;
+/** ms of one frame that searches may take beyond these. */
+const SHARE_MS = 8;
+
+/** How work goes on after this frame, and who is told when it is done. */
+export interface Later {
+  readonly run: (step: () => void) => void;
+  readonly now: () => number;
+  readonly done: () => void;
+}
+
+interface Work {
+  readonly circuit: Circuit;
+  readonly steps: Generator<void, Laying>;
+}
 
 /**
- * Up to here every edit lays all lines, so that the sheet shows what the file shows when it is opened or printed,
- * and undo brings back the very same drawing. Beyond, that would hold up the hand: about 0.2 s of computing for
- * 350 connections, against 0.014 s for the lines of one part (measured).
+ * Routes from one form of the circuit to the next: always those of laying all of it, so that the sheet shows what the
+ * file shows when it is opened or printed, but only what an edit may have changed is searched. A long search goes on
+ * over the next frames, and meanwhile the lines not laid yet take simple shapes. A route that came out the same stays
+ * the same object, and so does the whole where all did.
  */
-const ALL = 200;
-
-/** Routes from one form of the circuit to the next; a route that came out the same stays the same object. */
 export class SheetRoutes {
-  #before: Circuit | undefined;
-  #routes: Routes = new Map();
+  #laid: Laying | undefined;
+  #work: Work | undefined;
+  #shown: Routes = new Map();
+  readonly #later: Later | undefined;
+
+  /** Without `later` all is done at once. */
+  constructor(later?: Later) {
+    this.#later = later;
+  }
 
   of(circuit: Circuit): Routes {
-    if (circuit === this.#before) return this.#routes;
-    const changed = movedParts(this.#before, circuit);
-    if (changed.length === 0 && this.#before && sameLines(this.#before, circuit)) {
-      this.#before = circuit;
-      return this.#routes;
+    if (circuit === this.#laid?.circuit || circuit === this.#work?.circuit) return this.#shown;
+    const work: Work = { circuit, steps: laying(circuit, this.#laid) };
+    this.#work = work;
+    if (!this.#advance(work, AT_ONCE)) {
+      this.#shown = sketched(circuit, this.#laid?.routes ?? new Map());
+      this.#later?.run(() => this.#goOn(work));
     }
-    // Most of it new: another circuit was opened.
-    const afresh = !this.#before || circuit.connections.length <= ALL || changed.length * 2 > circuit.parts.length;
-    const next: Routes = afresh ? routeAll(circuit) : reroute(this.#routes, circuit, changed);
-    this.#routes = new Map([...next].map(([id, points]) => [id, keep(this.#routes.get(id), points)]));
-    this.#before = circuit;
-    return this.#routes;
+    return this.#shown;
+  }
+
+  /** With all searches finished. */
+  finished(circuit: Circuit): Routes {
+    this.of(circuit);
+    if (this.#work) {
+      this.#advance(this.#work, Infinity);
+      // Who was shown it unfinished is told, but not in the middle of this.
+      this.#later?.run(this.#later.done);
+    }
+    return this.#shown;
+  }
+
+  #goOn(work: Work): void {
+    if (work !== this.#work) return;
+    if (this.#advance(work, 1)) this.#later?.done();
+    else this.#later?.run(() => this.#goOn(work));
+  }
+
+  /** True once all is laid. */
+  #advance({ steps }: Work, atOnce: number): boolean {
+    const now = this.#later?.now ?? ((): number => 0);
+    const end = now() + SHARE_MS;
+    for (let count = 1; ; count++) {
+      const { done, value } = steps.next();
+      if (done) {
+        this.#laid = value;
+        this.#work = undefined;
+        this.#shown = same(this.#shown, value.routes) ? this.#shown : value.routes;
+        return true;
+      }
+      if (count >= atOnce && now() > end) return false;
+    }
   }
 }
 
-/** Parts whose ports may stand elsewhere than before: names and settings move nothing. */
-function movedParts(before: Circuit | undefined, circuit: Circuit): string[] {
-  const known = new Map(before?.parts.map((part) => [part.id, part]));
-  return circuit.parts.filter((part) => !standsAsBefore(known.get(part.id), part)).map((part) => part.id);
-}
+const same = (a: Routes, b: Routes): boolean =>
+  a.size === b.size && [...b].every(([id, points]) => a.get(id) === points);
 
-const standsAsBefore = (a: Part | undefined, b: Part): boolean =>
-  a === b ||
-  (a !== undefined &&
-    a.kind === b.kind &&
-    a.valve === b.valve &&
-    a.turn === b.turn &&
-    a.flip === b.flip &&
-    a.at?.x === b.at?.x &&
-    a.at?.y === b.at?.y);
-
-/** The same parts, and the same connections but for their names. */
-function sameLines(before: Circuit, after: Circuit): boolean {
-  if (before.parts.length !== after.parts.length || before.connections.length !== after.connections.length)
-    return false;
-  return before.connections.every((c, i) => {
-    const now = after.connections[i];
-    return (
-      now === c ||
-      (now?.id === c.id && now.from === c.from && now.to === c.to && now.bends === c.bends && now.use === c.use)
-    );
-  });
-}
-
-function keep(before: readonly Point[] | undefined, after: readonly Point[]): readonly Point[] {
-  const same = before?.length === after.length && before.every((p, i) => p.x === after[i]?.x && p.y === after[i]?.y);
-  return same ? before : after;
+/** As they were where they still fit, else by simple shapes. */
+function sketched(circuit: Circuit, before: Routes): Routes {
+  const sheet = routingSheet(circuit);
+  return new Map(
+    circuit.connections.map((connection) => {
+      const route = before.get(connection.id);
+      const [from, to] = [connection.from, connection.to].map((ref) => {
+        const part = sheet.parts.get(ref.part);
+        return part && portOf(part, ref).at;
+      });
+      const [first, last] = [route?.[0], route?.at(-1)];
+      const fits =
+        first && last && from && to && first.x === from.x && first.y === from.y && last.x === to.x && last.y === to.y;
+      return [connection.id, route && fits ? route : quickRoute(sheet, connection)];
+    }),
+  );
 }
