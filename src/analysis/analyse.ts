@@ -6,6 +6,7 @@ import type { PathConditions } from '../engine/paths/reach.ts';
 import { dumpProblem, problemNow } from '../engine/flow/dump.ts';
 import { RowSettler } from '../engine/table/dependents.ts';
 import { explain } from '../engine/table/explain.ts';
+import { besidesOf } from '../engine/table/left-behind.ts';
 import type { Beside } from '../engine/table/left-behind.ts';
 import { PressureSolver } from '../engine/table/resolve.ts';
 import { rowNumbers } from '../engine/table/row-numbers.ts';
@@ -61,12 +62,12 @@ export function movesOfHeld(
   });
 }
 
-/** The circuits one move of a held lever away. */
-export function besides(circuit: Circuit, conditions: Conditions): Beside[] {
+/** The states one move of a held lever away. */
+function besides(circuit: Circuit, conditions: Conditions): Beside[] {
   if (!conditions.held) return [];
   const { held: _, ...free } = conditions;
   const net = networkOf(circuit, free);
-  return movesOfHeld(net, conditions).map(({ held, text }) => ({ net: hold(net, held), text }));
+  return besidesOf(net, movesOfHeld(net, conditions));
 }
 
 /** The whole state table. Throws `Cancelled`, and a plain Error when there are more states than it can list. */

@@ -32,7 +32,9 @@ export function rowFigures(table: StateTable, numbers: RowNumbers, units: UnitSy
   const rests = solved ? speedsAssumed(assumed, table, numbers) : [];
   const none = { text: '–', assumed: false, why: numbers.words };
   table.data.actuators.forEach(({ motion }, i) => {
-    if (solved) {
+    if (table.actuator(i, numbers.row) === 'undetermined')
+      out.set(`actuator:${i}`, { text: '–', assumed: false, why: 'The circuit leaves open how fast it goes' });
+    else if (solved) {
       put(`actuator:${i}`, saySpeed(numbers.actuators[i]?.speed ?? 0, motion, units, true), rests[i] ?? false);
     } else out.set(`actuator:${i}`, none);
   });

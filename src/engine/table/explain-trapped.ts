@@ -1,4 +1,5 @@
 import type { TrapAnswer } from './answers.ts';
+import { besidesOf } from './left-behind.ts';
 import type { Beside } from './left-behind.ts';
 import { lineOutcomes } from './line-outcomes.ts';
 import { mostPressures } from './most-pressures.ts';
@@ -68,26 +69,26 @@ export function explainTrapped(state: OneState, besides: readonly Beside[] = [])
 
 /** The states one lever move away, pumps running, and the move in words. */
 function neighbours(state: OneState): { state: OneState; text: string }[] {
-  const { net, row } = state;
+  const { net, row, conditions, units } = state;
   const steps = strides(net.inputs.map((input) => input.positions.length));
-  return net.inputs.flatMap((input, i) => {
-    const now = state.position(i);
+  const stands = net.inputs.map((_, i) => state.position(i));
+  const moves = net.inputs.flatMap((input, i) => {
+    const now = stands[i] as number;
     return input.positions.flatMap((name, p) => {
       if (p === now) return [];
       const from = row + (p - now) * (steps[i] as number);
-      return [
-        {
-          state: solveOne(net, state.conditions, from, state.settlers, state.units),
-          text: `${partLabel(state, input.part)} from ${name} to ${input.positions[now] ?? '?'} (row ${from + 1})`,
-        },
-      ];
+      const text = `${partLabel(state, input.part)} from ${name} to ${input.positions[now] ?? '?'} (row ${from + 1})`;
+      return [{ from, text, held: stands.map((at, other) => (other === i ? p : at)) }];
     });
   });
+  if (net.dependents.length > 0)
+    return moves.map(({ from, text }) => ({ text, state: solveOne(net, conditions, from, state.settlers, units) }));
+  return besidesOf(net, moves).map(({ text, at }) => ({ text, state: at(conditions, 0, units) }));
 }
 
 /** The same for levers that are held here. */
 const heldNeighbours = (state: OneState, besides: readonly Beside[]): { state: OneState; text: string }[] =>
-  besides.map(({ net, text }) => ({ state: solveOne(net, state.conditions, state.row, undefined, state.units), text }));
+  besides.map(({ text, at }) => ({ text, state: at(state.conditions, state.row, state.units) }));
 
 /** In words; undefined where there is no steady state, or next to nothing. */
 function pressureIn(state: OneState, line: number): string | undefined {

@@ -1,18 +1,50 @@
 import { emptySet, wordsFor } from '../../base/bits.ts';
+import type { UnitSystem } from '../../base/units.ts';
 import { hold, holdEach, MOST_HELD } from '../../network/hold.ts';
 import type { Network } from '../../network/network.ts';
 import { PathSolver } from '../paths/block.ts';
 import { compileEdges } from '../paths/edges.ts';
 import type { PathConditions } from '../paths/reach.ts';
 import { Settlers, solveOne } from './one-state.ts';
+import type { OneState } from './one-state.ts';
 import type { Plane, TableData } from './table-data.ts';
 import { LINE_CLASSES, TRAP_REASONS } from './words.ts';
 
 /** The same circuit with one held lever in another position: its rows are one move away from those of the same number. */
 export interface Beside {
-  readonly net: Network;
   /** The move that leads here, in words. */
   readonly text: string;
+  readonly at: (conditions: PathConditions, row: number, units: UnitSystem) => OneState;
+}
+
+/**
+ * The states with levers held otherwise. `moved`: per move, where the held inputs then stand (always the same inputs),
+ * and the move in words. All of them are positions of one more input, so that one search does for thirty.
+ */
+export function besidesOf(
+  net: Network,
+  moved: readonly { readonly held: readonly (number | undefined)[]; readonly text: string }[],
+): Beside[] {
+  if (net.dependents.length > 0) {
+    return moved.map(({ held, text }) => {
+      const one = hold(net, held);
+      return { text, at: (conditions, row, units) => solveOne(one, conditions, row, undefined, units) };
+    });
+  }
+  const out: Beside[] = [];
+  for (let start = 0; start < moved.length; start += MOST_HELD) {
+    const some = moved.slice(start, start + MOST_HELD);
+    let settlers: Settlers | undefined;
+    some.forEach(({ text }, k) => {
+      const at: Beside['at'] = (conditions, row, units) => {
+        const choices = some.map(({ held }) => held);
+        settlers ??= new Settlers(holdEach(net, choices));
+        return solveOne(settlers.net, conditions, row * some.length + k, settlers, units);
+      };
+      out.push({ text, at });
+    });
+  }
+  return out;
 }
 
 const CUT_OFF = LINE_CLASSES.indexOf('cut off');
@@ -71,10 +103,7 @@ const together =
         const { leaves } = solver.solve(at, width).reach;
         for (let state = 32 * at; state < Math.min(count, 32 * (at + width)); state++) {
           const [word, bit] = [(state >>> 5) - at, state & 31];
-          each(
-            Math.floor(state / choices.length),
-            (line) => (((leaves[line * width + word] ?? 0) >>> bit) & 1) === 1,
-          );
+          each(Math.floor(state / choices.length), (line) => (((leaves[line * width + word] ?? 0) >>> bit) & 1) === 1);
         }
       }
     }

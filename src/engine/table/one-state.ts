@@ -43,10 +43,13 @@ export interface Hop {
   readonly toPort: string;
 }
 
-/** Settles the dependent valves of single rows, pumps running or stopped; needs a steady state each. */
+/** What the states of one network have in common: where its dependent valves stand, its open paths, its equations. */
 export class Settlers {
   readonly net: Network;
   readonly #settlers = new Map<boolean, RowSettler>();
+  /** By conditions; the last word of open paths that was solved, since states of one word come together. */
+  readonly #pressures = new Map<string, PressureSolver>();
+  readonly #blocks = new Map<string, { readonly word: number; readonly block: SettledBlock }>();
   #base: EdgeSet | undefined;
 
   constructor(net: Network) {
@@ -60,6 +63,25 @@ export class Settlers {
       this.#settlers.set(conditions.pumpsRunning, settler);
     }
     return settler.at(row);
+  }
+
+  /** Steady pressures of rows without dependent valves. */
+  pressures(conditions: PathConditions): PressureSolver {
+    const key = keyOf(conditions);
+    const solver = this.#pressures.get(key) ?? new PressureSolver(this.net, conditions);
+    this.#pressures.set(key, solver);
+    return solver;
+  }
+
+  /** Open paths of the rows of a word. */
+  block(edges: EdgeSet, conditions: PathConditions, word: number): SettledBlock {
+    if (this.net.dependents.length > 0) return new PathSolver(this.net, edges, conditions, 1).solve(word, 1);
+    const key = keyOf(conditions);
+    const last = this.#blocks.get(key);
+    if (last?.word === word) return last.block;
+    const block = new PathSolver(this.net, edges, conditions, 1).solve(word, 1);
+    this.#blocks.set(key, { word, block });
+    return block;
   }
 
   /** Open paths with this setting, good for the word of this row. */
@@ -76,6 +98,8 @@ export class Settlers {
   }
 }
 
+const keyOf = ({ pumpsRunning, places }: PathConditions): string => `${pumpsRunning} ${places.join(' ')}`;
+
 const NOTHING: DependentAnswer = { setting: [], hunts: false, cycle: [], others: [], searched: true };
 
 export function solveOne(
@@ -90,7 +114,7 @@ export function solveOne(
   if (word >= wordsFor(count)) throw new RangeError(`row ${row} is past the last of ${count}`);
   const settled = net.dependents.length === 0 ? NOTHING : settlers.at(conditions, row);
   const edges = settlers.edges(settled.setting, row);
-  const block = new PathSolver(net, edges, conditions, 1).solve(word, 1);
+  const block = settlers.block(edges, conditions, word);
   const bit = row & 31;
   const is = (plane: Uint32Array | undefined): boolean => (((plane?.[0] ?? 0) >>> bit) & 1) === 1;
   const on = (field: Field, line: number): boolean => line >= 0 && (((field[line] as number) >>> bit) & 1) === 1;
