@@ -1,3 +1,4 @@
+import { fileURLToPath } from 'node:url';
 import { afterEach, beforeEach, expect, test } from 'vitest';
 import { passingFolder, spooltable, writeRig } from './spooltable.ts';
 
@@ -61,4 +62,16 @@ test('bleed gives the sheet to print as HTML', async () => {
   expect(out).toContain('@page{size:210mm 297mm;margin:0}');
   for (const text of ['Bleed-down sheet', 'Order of isolation (29 CFR 1910.147(d))', 'Signature'])
     expect(out).toContain(text);
+});
+
+test('print lays out every sheet of a circuit that has several, and parts names them', async () => {
+  const file = fileURLToPath(new URL('../../examples/tile-press.spool.json', import.meta.url));
+  const { code, out } = await spooltable(['print', file, '--only', 'drawing', '--state', 'V1=shut']);
+  expect(code).toBe(0);
+  expect(out.match(/<svg /g)).toHaveLength(2);
+  for (const text of ['1 of 2', '2 of 2', 'Power unit. Row', 'Stations. Row']) expect(out).toContain(text);
+  // Three lines lead from one sheet to the other: each names the other's field at both its ends.
+  expect(out.match(/>[12]\/[A-H]\d+</g)).toHaveLength(6);
+  const list = await spooltable(['parts', file]);
+  expect(list.out.split('\n')[0]).toMatch(/Data +Sheet +Count$/);
 });
