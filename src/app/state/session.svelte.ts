@@ -9,6 +9,8 @@ import { editor } from './editor.svelte.ts';
 import { hint } from './hint.svelte.ts';
 import { inputsOf } from './inputs.ts';
 import { lateRows } from './late-rows.svelte.ts';
+import { foundAt, litSteps, stepsOf } from './lit.ts';
+import type { Lit, Subject } from './lit.ts';
 import { conditionsIn, loaded, withCase, withPlace } from './conditions.ts';
 import { sayError } from './said.ts';
 import type { CircuitInput } from './inputs.ts';
@@ -16,28 +18,7 @@ import type { Moment } from './moment.ts';
 import { view } from './view.svelte.ts';
 
 export type { ConnectionLook } from './connection-looks.ts';
-
-/** A step of the reason on show: draw a balloon with `number` at its parts and lines. */
-export interface LitStep {
-  readonly number: number;
-  readonly lines: readonly number[];
-  readonly parts: readonly string[];
-  /** The step under the pointer or focus: lit more strongly. */
-  readonly current: boolean;
-}
-
-/** Everything to be lit on the sheet: lines by index in the table, parts by id, and the numbered steps. */
-export interface Lit {
-  readonly lines: readonly number[];
-  readonly parts: readonly string[];
-  readonly steps: readonly LitStep[];
-}
-
-/** What a reason is asked for: an actuator, a pump or a valve that follows by part id, a line by its name. */
-export interface Subject {
-  readonly of: 'actuator' | 'pump' | 'dependent' | 'line';
-  readonly key: string;
-}
+export type { Lit, LitStep, Subject } from './lit.ts';
 
 /** The table as it was computed; `early`: there is more to come. */
 export interface SessionAnswer extends TableAnswer {
@@ -49,7 +30,6 @@ export interface SessionAnswer extends TableAnswer {
 const PATIENCE_MS = 250;
 /** Rows that the levers picked on a large panel may have. */
 const MOST_LISTED = 7_000;
-const DARK: Lit = { lines: [], parts: [], steps: [] };
 
 /** The state on show: conditions, the whole table, the current row, and why it is so. */
 class Session {
@@ -116,9 +96,13 @@ class Session {
   #looks: ReadonlyMap<string, ConnectionLook> = $derived.by(() => connectionLooks(this.table, this.row));
 
   /** Steps of the reason on show, from the explanation of the current row. */
-  steps: readonly ReasonStep[] = $derived.by(() => this.#stepsOnShow());
+  steps: readonly ReasonStep[] = $derived(stepsOf(this.explanation, this.subject, this.row));
 
-  lit: Lit = $derived.by(() => this.#light());
+  lit: Lit = $derived(
+    this.pointed
+      ? { ...this.pointed, steps: [] }
+      : (foundAt(this.findings, this.finding) ?? litSteps(this.steps, this.step)),
+  );
 
   #analyst: Analyst | undefined;
   #patience: ReturnType<typeof setTimeout> | undefined;
@@ -361,33 +345,6 @@ class Session {
     return table.data.inputs.map((input) =>
       clampTo(this.#levers[input.part] ?? input.rest ?? 0, input.positions.length),
     );
-  }
-
-  #stepsOnShow(): readonly ReasonStep[] {
-    const { explanation, subject } = this;
-    if (!explanation || !subject || explanation.row !== this.row) return [];
-    const { key } = subject;
-    if (subject.of === 'actuator') return explanation.actuators.find((each) => each.part === key)?.steps ?? [];
-    if (subject.of === 'pump') return explanation.pumps.find((each) => each.part === key)?.steps ?? [];
-    if (subject.of === 'dependent') return explanation.dependents.find((each) => each.part === key)?.steps ?? [];
-    return explanation.trapped.find((line) => line.name === key)?.steps ?? [];
-  }
-
-  #light(): Lit {
-    const { pointed } = this;
-    if (pointed) return { ...pointed, steps: [] };
-    const found = this.finding === undefined ? undefined : this.findings[this.finding];
-    if (found) return { lines: found.lines, parts: found.parts, steps: [] };
-    const { steps, step } = this;
-    if (steps.length === 0) return DARK;
-    const lit = steps.map((each, i): LitStep => ({
-      number: i + 1,
-      lines: each.lines,
-      parts: each.parts,
-      current: i === step,
-    }));
-    const now = step === undefined ? undefined : lit[step];
-    return { lines: now?.lines ?? [], parts: now?.parts ?? [], steps: lit };
   }
 }
 
