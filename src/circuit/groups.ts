@@ -3,6 +3,7 @@ import { names } from './ids.ts';
 import { isOneLine } from './limits.ts';
 import type { Circuit, PartGroup } from './model.ts';
 import { RefusedEdit } from './refused.ts';
+import { sheetLookup } from './sheets.ts';
 
 const groupsOf = (circuit: Circuit): readonly PartGroup[] => circuit.groups ?? [];
 const put = (groups: readonly PartGroup[]): Edit => changeCircuit({ groups: groups.length > 0 ? groups : undefined });
@@ -52,15 +53,17 @@ export function pruneGroups(circuit: Circuit): Edit | undefined {
   );
 }
 
-/** These parts, and all that stand in a block with one of them: what moves together. */
+/** These parts, and all that stand in a block with one of them on its sheet: what moves together. */
 export function withGroups(circuit: Circuit, ids: readonly string[]): readonly string[] {
   const groups = groupsOf(circuit);
   if (groups.length === 0) return ids;
   const chosen = new Set(ids);
   const out = new Set(ids);
   const known = new Set(circuit.parts.map(({ id }) => id));
+  const sheet = sheetLookup(circuit);
   for (const { parts } of groups) {
-    if (parts.some((id) => chosen.has(id))) for (const id of parts) if (known.has(id)) out.add(id);
+    const sheets = new Set(parts.filter((id) => chosen.has(id)).map(sheet));
+    for (const id of parts) if (known.has(id) && sheets.has(sheet(id))) out.add(id);
   }
   return out.size === ids.length ? ids : [...out];
 }

@@ -51,3 +51,22 @@ test('blocks and sizes stand in the file with the fields of others', () => {
   const read = readCircuit(writeCircuit(sheet));
   expect(read.ok && read.value).toEqual(sheet);
 });
+
+test('of a block on two sheets, what stands on one sheet moves together', () => {
+  const circuit: Circuit = {
+    name: 'Two',
+    sheets: [
+      { id: 's1', name: 'One' },
+      { id: 's2', name: 'Two' },
+    ],
+    parts: [
+      { id: 'A', kind: 'gauge' },
+      { id: 'B', kind: 'gauge' },
+      { id: 'C', kind: 'gauge', sheet: 's2' },
+    ],
+    connections: [],
+    groups: [{ id: 'g1', name: 'Block', parts: ['A', 'B', 'C'] }],
+  };
+  expect(withGroups(circuit, ['A'])).toEqual(['A', 'B']);
+  expect(withGroups(circuit, ['C'])).toEqual(['C']);
+});

@@ -322,7 +322,8 @@ export class SheetPointer {
 /** The frame of a block stands for its parts. */
 function frameOf(event: MouseEvent, hit: Hit): Hit {
   const block = hit.type === 'paper' ? blockAt(event) : undefined;
-  const parts = editor.circuit.groups?.find(({ id }) => id === block)?.parts ?? [];
+  const all = editor.circuit.groups?.find(({ id }) => id === block)?.parts ?? [];
+  const parts = all.filter((id) => drawing.boxes.has(id));
   const [first] = parts;
   if (first === undefined || desk.gesture.type !== 'none') return hit;
   editor.select({ parts });

@@ -43,8 +43,11 @@ export function turnTo(sheet: string): boolean {
 export function arrive(): boolean {
   const { now } = shownSheet;
   if (now === at) return false;
-  if (at !== undefined) kept.set(at, desk.viewport);
+  const before = at;
   at = now;
+  // The very first one has not been looked at yet.
+  if (before === undefined) return false;
+  kept.set(before, desk.viewport);
   drawing.preview = undefined;
   desk.hover = { type: 'paper' };
   desk.cursor = undefined;
