@@ -46,6 +46,8 @@ export type Command =
       readonly pumps: Pumps;
       /** Name or id of a load case. */
       readonly load: string | undefined;
+      /** An actuator, pump or lever of the independent part that is wanted; undefined = all of the circuit. */
+      readonly part: string | undefined;
       readonly numbers: boolean;
       readonly units: UnitSystem;
       readonly out: string | undefined;
@@ -186,16 +188,24 @@ function tableCommand(args: string[]): Command {
       args,
       strict: true,
       allowPositionals: true,
-      options: { ...COMMON, ...LOAD, ...UNITS, numbers: { type: 'boolean', default: false } },
+      options: {
+        ...COMMON,
+        ...LOAD,
+        ...UNITS,
+        part: { type: 'string' },
+        numbers: { type: 'boolean', default: false },
+      },
     }),
   );
   if (values.help) return { name: 'say', text: TABLE_HELP };
+  if (values.part === '') throw usage('--part needs the name of an actuator, a pump or a lever.', 'table');
   return {
     name: 'table',
     file: oneFile('table', positionals),
     format: oneOf('table', '--format', values.format, TABLE_FORMATS),
     pumps: oneOf('table', '--pumps', values.pumps, ['running', 'stopped']),
     load: loadCase('table', values.load),
+    part: values.part,
     numbers: values.numbers,
     units: oneOf('table', '--units', values.units, UNIT_SYSTEMS),
     out: outFile('table', values.out),

@@ -36,6 +36,8 @@ Options:
   --format text|csv|json|markdown   how it is written (text); csv holds the rows only, without the findings
   --pumps running|stopped           state of all pumps (running); findings are always those with pumps running
   --load NAME                       a load case of the circuit, by its name or id (the loads that the parts say)
+  --part NAME                       only the rows of the independent part that this actuator, pump or lever belongs to
+                                    (see influence); the other levers are held at rest, which changes nothing in it
   --numbers                         also the speed of each actuator, the pressure of each pump and the flow over each
                                     relief valve, from entered and assumed values; in json everything that is known
   --units metric|us                 units of the numbers (metric)

@@ -23,6 +23,7 @@ import { EXIT, Failure, messageOf } from './failure.ts';
 import { readCircuitFile } from './input.ts';
 import { loseAllPower, moves, vent } from './moves.ts';
 import { print, writeWhole } from './output.ts';
+import { partOnly } from './part.ts';
 import { plan } from './plan.ts';
 import { parts, printed } from './print.ts';
 import { heldWhereLarge, stateOf } from './standing.ts';
@@ -92,10 +93,11 @@ const note = (text: string): void => console.error(`spooltable: ${text}`);
 type Table = Extract<Command, { name: 'table' }>;
 type Explain = Extract<Command, { name: 'explain' }>;
 
-const ANSWERS_ALL = 'For all of it there are explain, moves, fold, ask, influence and check.';
+const ANSWERS_ALL =
+  'For all of it there are explain, moves, fold, ask, influence and check; for an independent part there is table --part.';
 
 function tableOf(file: string, circuit: Circuit, conditions: Conditions): StateTable {
-  const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
+  const count = networkOf(circuit, conditions).inputs.reduce((n, input) => n * input.positions.length, 1);
   try {
     return new StateTable(tabulate(circuit, conditions, unlimited, { pressureRows: PRESSURE_ROWS }));
   } catch (error) {
@@ -105,7 +107,8 @@ function tableOf(file: string, circuit: Circuit, conditions: Conditions): StateT
 
 function table(command: Table, circuit: Circuit, version: string): Iterable<string> {
   const { file, format, out } = command;
-  const conditions = conditionsOf(command, circuit);
+  const given = conditionsOf(command, circuit);
+  const conditions = command.part === undefined ? given : partOnly(file, circuit, given, command.part);
   const stateTable = tableOf(file, circuit, conditions);
   const running =
     conditions.pumps === 'running' ? stateTable : tableOf(file, circuit, { ...conditions, pumps: 'running' });

@@ -105,7 +105,8 @@ const sourceOf = (circuit: Circuit, conditions: Conditions, version: string): Wh
   loadCases: circuit.loadCases ?? [],
 });
 
-function setsOf(file: string, circuit: Circuit, conditions: Conditions): Outcomes {
+/** Outcomes as sets of combinations. Throws a `Failure` where there are none. */
+export function setsOf(file: string, circuit: Circuit, conditions: Conditions): Outcomes {
   const count = networkOf(circuit).inputs.reduce((n, input) => n * input.positions.length, 1);
   const options = { pressureRows: PRESSURE_ROWS };
   const table = count <= MOST_ROWS ? tabulate(circuit, conditions, unlimited, options) : undefined;

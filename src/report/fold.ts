@@ -134,7 +134,10 @@ function* influenceLines({ circuit, conditions, loadCases }: WholeSource, found:
   yield* idle;
   const several = parts.filter((part) => part.inputs.length > 0);
   yield several.length > 1 ? sayProduct(found) : 'No part of the circuit is independent of the rest.';
-  if (several.length > 1) for (const part of several) yield `  ${partWords(found, part)}: ${say(part.combinations)}`;
+  if (several.length > 1) {
+    for (const part of several) yield `  ${partWords(found, part)}: ${say(part.combinations)}`;
+    yield 'The table of one of them: table --part, with the name of any actuator, pump or lever in it.';
+  }
 }
 
 export function writeInfluenceJson(source: WholeSource, found: Influence): string {

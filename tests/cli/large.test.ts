@@ -19,7 +19,7 @@ test('a table that cannot be listed is refused, and it is said what answers', { 
   const { code, out, err } = await spooltable(['table', file]);
   expect({ code, out }).toEqual({ code: 2, out: '' });
   expect(err).toContain('3,486,784,401 combinations');
-  expect(err).toContain('For all of it there are explain, moves, fold, ask, influence and check.');
+  expect(err).toContain('For all of it there are explain, moves, fold, ask, influence and check;');
 });
 
 test('one state of it is explained', { timeout: 60_000 }, async () => {
