@@ -1,5 +1,7 @@
 import { view } from '../state/view.svelte.ts';
 import type { PanelId } from '../state/view.svelte.ts';
+import { session } from '../state/session.svelte.ts';
+import { goToRow } from '../table/go-to-row.svelte.ts';
 import { maker } from '../maker/maker.svelte.ts';
 import type { MenuItem } from '../ui/menu-item.ts';
 
@@ -41,6 +43,13 @@ const item = ({ id, text, keys }: Entry): MenuItem => ({
 /** All panels, with a tick at those that are open, and what stands below the bench. */
 export const panelItems = (): MenuItem[] => [
   { heading: 'The row on show' },
+  {
+    text: 'Go to row',
+    keys: 'G',
+    disabled: session.table === undefined,
+    // The menu gives the focus back to its button first.
+    run: () => setTimeout(() => (goToRow.on = true)),
+  },
   ...STATE.map(item),
   { heading: 'The whole table' },
   ...TABLE.map(item),
