@@ -4,6 +4,7 @@ import type { Part } from '../circuit/model.ts';
 import { HALF_HEIGHT } from '../parts/valve-frame.ts';
 import { isStripValve } from '../parts/valve-kinds.ts';
 import { inflate, overlaps, segmentTouches } from './geometry.ts';
+import type { Extent } from './label-text.ts';
 import { isActuator } from './label-text.ts';
 import { partLetters } from './letters.ts';
 import { partReach, placedPorts, placementOf } from './shapes.ts';
@@ -13,6 +14,8 @@ export interface Spot {
   readonly align: 'start' | 'end';
   /** All that may come to stand there. */
   readonly box: Box;
+  /** What a state says stands on a line of its own, which takes less room across. */
+  readonly stacked: boolean;
 }
 
 /** What words keep clear of. */
@@ -20,13 +23,6 @@ export interface Ground {
   readonly parts: readonly { readonly part: Part; readonly box: Box }[];
   readonly lines: readonly (readonly [Point, Point])[];
   readonly taken: Box[];
-}
-
-/** Size of the words, in modules; `kept`: room for what a state says is part of the width. */
-export interface Extent {
-  readonly width: number;
-  readonly height: number;
-  readonly kept: boolean;
 }
 
 type Place = 'above' | 'right' | 'left' | 'below';
@@ -38,29 +34,55 @@ interface Candidate extends Spot {
 const GAP = 0.7;
 /** From the letters of a valve. */
 const SHOULDER = 0.6;
-/** From lines: less, since letters do not fill their box. */
-const CLEAR = 0.1;
+/** Half the length of a bar across a line, beyond which that counts. */
+const MARK = 0.5;
+/** From lines, which a state may make wide: less over and under, where letters do not fill their box. */
+const CLEAR = { aside: 0.5, over: 0.15 };
 /** What lies in the way, against which a longer way from the symbol is weighed. */
 const COST = { part: 60, text: 80, line: 25, near: 1.5 } as const;
 const PUSHED = 2;
 /** How far from another part a name is not taken for that one's. */
 const NEAR = 0.7;
+/** Width of a name as it is as a rule. */
+const NAME = 6;
 /** Modules between the places tried along a side, and distances from it. */
 const STEP = 1;
 const AWAY = [0, 1, 2, 3.5, 5, 7] as const;
 
-/** The clearest place for the words of a part, near it; where all are crowded, the least crowded. */
-export function findSpot(part: Part, extent: Extent, ground: Ground): Spot {
+/**
+ * The clearest place for the words of a part, near it; where all are crowded, the least crowded. `extents`: ways to lay the
+ * words out, the best first.
+ */
+export function findSpot(part: Part, extents: readonly Extent[], ground: Ground): Spot {
   const box = partReach(part);
-  const near = groundNear(ground, inflate(box, Math.max(extent.width, extent.height) + 2 * GAP + NEAR));
-  const first = best(beside(part, box, extent), part.id, near);
-  if (first.cost < COST.line) return first.spot;
-  const far = groundNear(ground, inflate(box, Math.max(extent.width, extent.height) + (AWAY.at(-1) ?? 0) + 2 * GAP));
-  const second = best(around(part, box, extent), part.id, far);
-  return second.cost < first.cost ? second.spot : first.spot;
+  const longest = Math.max(...extents.flatMap(({ width, height }) => [width, height]));
+  const near = groundNear(ground, inflate(box, longest + 2 * GAP + NEAR));
+  let found: Found | undefined;
+  for (const extent of extents) {
+    const first = best(beside(part, box, extent), part.id, near);
+    if (first.cost < COST.line) return first.spot;
+    if (!found || first.cost < found.cost) found = first;
+  }
+  const far = groundNear(ground, inflate(box, longest + (AWAY.at(-1) ?? 0) + 2 * GAP));
+  for (const extent of extents) {
+    const next = best(around(part, box, extent), part.id, far);
+    if (!found || next.cost < found.cost) found = next;
+  }
+  return (found as Found).spot;
 }
 
-function best(candidates: readonly Candidate[], own: string, ground: Ground): { spot: Spot; cost: number } {
+/** Where the words would stand if nothing were in the way. */
+export const idealBox = (part: Part, extent: Extent): Box =>
+  best(beside(part, partReach(part), extent), part.id, NOTHING).spot.box;
+
+const NOTHING: Ground = { parts: [], lines: [], taken: [] };
+
+interface Found {
+  readonly spot: Spot;
+  readonly cost: number;
+}
+
+function best(candidates: readonly Candidate[], own: string, ground: Ground): Found {
   let found: Candidate | undefined;
   let least = Infinity;
   for (const candidate of candidates) {
@@ -95,16 +117,19 @@ function around(part: Part, box: Box, extent: Extent): Candidate[] {
   });
 }
 
-/** How far along its side the words stand from the part's middle, in hundredths of it. */
+/** How far along its side the words stand from where they belong, in hundredths of it: by the part's middle, or the barrel's end. */
 function away(part: Part, place: Place, box: Box, extent: Extent, along: number): number {
   const { x, y } = placementOf(part).at;
   const flat = place === 'above' || place === 'below';
+  if (flat && isActuator(part)) return Math.abs(along - bodyOf(part, box).x) * 0.02;
   const [middle, size, low, high] = flat
     ? [x, extent.width, box.x, box.x + box.width]
     : [y, extent.height, box.y, box.y + box.height];
   // Beyond the ends of its side a name soon belongs to something else.
   const beyond = Math.max(0, low - (along + size), along - high);
-  return Math.abs(along + size / 2 - middle) * 0.02 + beyond;
+  // Room that is only kept does not show: the name at its beginning does.
+  const shown = flat && extent.kept ? Math.min(size, NAME) : size;
+  return Math.abs(along + shown / 2 - middle) * (extent.kept ? 0.1 : 0.02) + beyond;
 }
 
 /** Where a name is looked for on each kind, best first. */
@@ -152,10 +177,11 @@ function at(place: Place, box: Box, extent: Extent, along: number, off: number, 
 }
 
 /** Words that end at the symbol are pushed about by what is said of a state, so they are the second choice. */
-const spot = (p: Point, { width, height, kept }: Extent, align: Spot['align'], worse: number): Candidate => ({
+const spot = (p: Point, { width, height, kept, stacked }: Extent, align: Spot['align'], worse: number): Candidate => ({
   at: align === 'end' ? { x: p.x + width, y: p.y } : p,
   align,
   box: { ...p, width, height },
+  stacked,
   worse: worse + (kept && align === 'end' ? PUSHED : 0),
 });
 
@@ -167,7 +193,9 @@ function shoulders(part: Part, box: Box, extent: Extent): Candidate[] {
   const out: Candidate[] = [];
   for (const side of wide ? (['up', 'down'] as const) : (['right', 'left'] as const)) {
     const marks: Box[] = [
-      ...placedPorts(part).flatMap((port) => (port.side === side ? [{ ...port.at, width: 0, height: 0 }] : [])),
+      ...placedPorts(part).flatMap((port) =>
+        port.side === side ? [inflate({ ...port.at, width: 0, height: 0 }, MARK)] : [],
+      ),
       ...partLetters(part).filter((b) => liesTo(side, b, middle)),
     ];
     if (marks.length === 0) continue;
@@ -232,8 +260,16 @@ function crowd(box: Box, own: string, ground: Ground): number {
     if (overlaps(other.box, box)) cost += COST.part;
     else if (overlaps(other.box, nearby)) cost += COST.near;
   }
-  for (const other of ground.taken) if (overlaps(other, box)) cost += COST.text;
-  const room = inflate(box, CLEAR);
+  for (const other of ground.taken) {
+    if (overlaps(other, box)) cost += COST.text;
+    else if (overlaps(other, nearby)) cost += COST.near / 2;
+  }
+  const room = {
+    x: box.x - CLEAR.aside,
+    y: box.y - CLEAR.over,
+    width: box.width + 2 * CLEAR.aside,
+    height: box.height + 2 * CLEAR.over,
+  };
   for (const [a, b] of ground.lines) if (segmentTouches(a, b, room)) cost += COST.line;
   return cost;
 }

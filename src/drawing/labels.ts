@@ -1,11 +1,11 @@
 import type { Box, Point } from '../base/points.ts';
 import type { Circuit, Part } from '../circuit/model.ts';
 import type { Routes } from './geometry.ts';
-import { inflate } from './geometry.ts';
+import { inflate, overlaps } from './geometry.ts';
 import type { Ground, Spot } from './label-spots.ts';
-import { findSpot } from './label-spots.ts';
-import type { LabelText, PartWords } from './label-text.ts';
-import { lineHeight, linesOf, noteRoom, runsWidth } from './label-text.ts';
+import { findSpot, idealBox } from './label-spots.ts';
+import type { Extent, LabelText, PartWords } from './label-text.ts';
+import { extentsOf, lineHeight, linesOf, runsWidth } from './label-text.ts';
 import { partLetters } from './letters.ts';
 import { TEXT_SIZES } from './palette.ts';
 import { partReach } from './shapes.ts';
@@ -41,24 +41,33 @@ export function labelSpots(circuit: Circuit, routes: Routes, noted: boolean): La
       ...circuit.parts.flatMap(partLetters).map((box) => inflate(box, LETTER_ROOM)),
     ],
   };
+  const worded = circuit.parts
+    .map((part) => ({ part, extents: extentsOf(part, noted) }))
+    .filter(({ extents }) => extents.some(({ width }) => width > 0));
+  const crowded = crowdedRows(worded);
   const out = new Map<string, Spot>();
-  for (const part of circuit.parts) {
-    const lines = linesOf(part, {});
-    if (lines.length === 0) continue;
-    const [first, ...rest] = lines.map(runsWidth);
-    const room = noted ? noteRoom(part) : 0;
-    const spot = findSpot(
-      part,
-      {
-        width: Math.max((first ?? 0) + room, ...rest),
-        height: lines.reduce((sum, runs) => sum + lineHeight(runs), 0),
-        kept: room > 0,
-      },
-      ground,
-    );
+  for (const { part, extents } of worded) {
+    const spot = findSpot(part, crowded.has(part.id) ? extents.slice(1) : extents, ground);
     ground.taken.push(spot.box);
     out.set(part.id, spot);
   }
+  return out;
+}
+
+interface Worded {
+  readonly part: Part;
+  readonly extents: readonly Extent[];
+}
+
+/** Parts side by side whose words would take each other's place in one line, but not in two. */
+function crowdedRows(worded: readonly Worded[]): ReadonlySet<string> {
+  const ideal = worded.flatMap(({ part, extents: [wide, stacked] }) =>
+    wide && stacked ? [{ id: part.id, wide: idealBox(part, wide), stacked: idealBox(part, stacked) }] : [],
+  );
+  const out = new Set<string>();
+  for (const a of ideal)
+    for (const b of ideal)
+      if (b.id !== a.id && overlaps(a.wide, b.wide) && !overlaps(a.stacked, b.stacked)) out.add(a.id).add(b.id);
   return out;
 }
 
@@ -72,11 +81,11 @@ export function sceneLabels(circuit: Circuit, spots: LabelSpots, wordsOf: WordsO
     const spot = spots.get(part.id);
     if (!spot) continue;
     let y = spot.at.y;
-    for (const runs of linesOf(part, wordsOf(part))) {
+    for (const runs of linesOf(part, wordsOf(part), spot.stacked)) {
       out.push({
         role: 'part',
         owner: part.id,
-        at: { x: spot.at.x, y: y + (runs[0]?.size ?? 0) / MODULE_PX },
+        at: { x: spot.at.x, y: y + Math.max(...runs.map(({ size }) => size)) / MODULE_PX },
         align: spot.align,
         runs,
       });

@@ -10,7 +10,7 @@ import { partReach } from './shapes.ts';
 import { MODULE_PX } from './strokes.ts';
 
 /** Modules between a line and its name, and between the places tried along it. */
-const GAP = 0.8;
+const GAP = 1;
 const CLEAR = 0.3;
 const STEP = 2;
 /** Shares of a stretch at which a name is tried, the middle first. */
@@ -19,7 +19,9 @@ const SPOTS = [0.5, 0.35, 0.65, 0.2, 0.8, 0.1, 0.9] as const;
 const LONGEST = 3;
 /** How far off its line a name may be moved to be clear. */
 const OFF = [0, 1.2] as const;
-const COST = { room: 5, line: 2, off: 1 } as const;
+const COST = { room: 5, line: 2, off: 1, near: 0.4 } as const;
+/** Modules within which a name might be taken for that of something else. */
+const NEAR = 0.8;
 
 const worded = ({ name, size }: Connection): boolean => name !== undefined || (size ?? '') !== '';
 
@@ -102,7 +104,11 @@ function spotsAt(owner: string, runs: readonly LabelText[], at: Point, flat: boo
 function crowd(box: Box, rooms: readonly Box[], stretches: readonly (readonly [Point, Point])[]): number {
   const own = inflate(box, 0.1);
   let cost = 0;
-  for (const room of rooms) if (overlaps(room, own)) cost += COST.room;
+  const nearby = inflate(box, NEAR);
+  for (const room of rooms) {
+    if (overlaps(room, own)) cost += COST.room;
+    else if (overlaps(room, nearby)) cost += COST.near;
+  }
   const clear = inflate(box, CLEAR);
   for (const [a, b] of stretches) if (segmentTouches(a, b, clear)) cost += COST.line;
   return cost;

@@ -64,6 +64,8 @@ export function drawValve(data: ValveData, position?: number, staged = false): P
 }
 
 const LETTER = 1.2;
+/** Two letters between two lines. */
+const SMALL = 1;
 /** From the edge of the box to the letter. */
 const OFF = 0.45;
 
@@ -74,11 +76,12 @@ function portLetters(data: ValveData): Primitive[] {
     const [x] = places.get(id) as Pair;
     const out = x < 0 ? -1 : 1;
     const next = data.ports.some((other) => other.side === side && (places.get(other.id) as Pair)[0] === x + 2 * out);
-    const gap = next ? Math.min(0.7, Math.max(0.2, (2 - advance(id, LETTER)) / 2)) : 0.7;
+    const size = next && id.length > 1 ? SMALL : LETTER;
+    const gap = next ? Math.min(0.7, Math.max(0.2, (2 - advance(id, size)) / 2)) : 0.7;
     const align = out < 0 ? 'end' : 'start';
     return side === 'top'
-      ? text(id, [x + gap * out, -HALF_HEIGHT - OFF], LETTER, align)
-      : hungText(id, [x + gap * out, HALF_HEIGHT + OFF], LETTER, align);
+      ? text(id, [x + gap * out, -HALF_HEIGHT - OFF], size, align)
+      : hungText(id, [x + gap * out, HALF_HEIGHT + OFF], size, align);
   });
 }
 
