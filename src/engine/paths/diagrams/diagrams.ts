@@ -79,20 +79,6 @@ export class Diagrams {
     this.#below = below;
   }
 
-  /** Room for more results; those there are move to their new places. */
-  #keepMore(): void {
-    const before = this.#results;
-    const results = new Int32Array(before.length * 2);
-    const mask = results.length - 4;
-    for (let old = 0; old < before.length; old += 4) {
-      const a = before[old] as number;
-      if (a === 0) continue;
-      const place = placeOf(before[old + 3] as number, a, before[old + 1] as number) & mask;
-      for (let i = 0; i < 4; i++) results[place + i] = before[old + i] as number;
-    }
-    this.#results = results;
-  }
-
   /** Nodes made so far, the two ends among them. */
   get nodes(): number {
     return this.#nodes;
@@ -158,7 +144,8 @@ export class Diagrams {
     if (node === this.#level.length) {
       this.#level = grown(this.#level);
       this.#kids = grown(this.#kids);
-      while (this.#results.length < 4 * Math.min(MOST_KEPT, KEPT_PER_NODE * this.#level.length)) this.#keepMore();
+      while (this.#results.length < 4 * Math.min(MOST_KEPT, KEPT_PER_NODE * this.#level.length))
+        this.#results = morePlaces(this.#results);
     }
     this.#level[node] = level;
     const base = node * this.#stride;
@@ -324,8 +311,21 @@ export class Diagrams {
   }
 }
 
+/** Room for twice as many results; those there are move to their new places. */
+export function morePlaces(before: Int32Array): Int32Array {
+  const results = new Int32Array(before.length * 2);
+  const mask = results.length - 4;
+  for (let old = 0; old < before.length; old += 4) {
+    const a = before[old] as number;
+    if (a === 0) continue;
+    const place = placeOf(before[old + 3] as number, a, before[old + 1] as number) & mask;
+    for (let i = 0; i < 4; i++) results[place + i] = before[old + i] as number;
+  }
+  return results;
+}
+
 /** Where a result is kept, but for the bits above the number of places. */
-function placeOf(op: number, a: number, b: number): number {
+export function placeOf(op: number, a: number, b: number): number {
   const hash = Math.imul(Math.imul(a, 0x9e3779b1) ^ Math.imul(b + op, 0x85ebca6b), 0xc2b2ae35);
   return (hash ^ (hash >>> 15)) << 2;
 }

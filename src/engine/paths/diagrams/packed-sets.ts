@@ -1,16 +1,17 @@
 import type { BitSet } from '../../../base/bits.ts';
 import { copyRange, emptySet, fillRange } from '../../../base/bits.ts';
 import type { Diagram } from './diagrams.ts';
-import { ALL, NONE, TooManyNodes } from './diagrams.ts';
+import { ALL, morePlaces, NONE, placeOf, TooManyNodes } from './diagrams.ts';
 import type { SetAlgebra } from './set-algebra.ts';
 
 const AND = 0;
 const OR = 1;
 const MINUS = 2;
 const FIRST_NODES = 1 << 10;
-/** Results kept of each operation. */
+/** Places for results of operations: some for each node, within bounds. */
 const LEAST_KEPT = 1 << 13;
-const MOST_KEPT = 1 << 17;
+const MOST_KEPT = 1 << 19;
+const KEPT_PER_NODE = 4;
 /** Rows of a table that one number holds: the last few inputs. Its sign tells such numbers from nodes. */
 const MOST_BITS = 30;
 
@@ -39,9 +40,8 @@ export class PackedSets implements SetAlgebra {
   #table: Int32Array;
   #nodes = 2;
   #slots: Int32Array = new Int32Array(FIRST_NODES * 2).fill(-1);
-  #kept = 0;
-  /** Latest results, four numbers each: the operation's two sets and what it gave. */
-  #results: Int32Array = new Int32Array(0);
+  /** Latest results, four numbers each, as in `Diagrams`; no operation starts from NONE, so 0 is an empty place. */
+  #results: Int32Array = new Int32Array(4 * LEAST_KEPT);
   readonly #scratch: Int32Array;
   readonly #moved = new Map<Diagram, Diagram>();
   /** One move of an input inside a word: the rows that can make it, and how far it takes them. */
@@ -68,7 +68,6 @@ export class PackedSets implements SetAlgebra {
     this.#movable = movable;
     this.#table = new Int32Array(FIRST_NODES * this.#size);
     this.#scratch = new Int32Array((levels + 1) * this.#width);
-    this.#keep(LEAST_KEPT);
     this.#wordMoves = radices.slice(levels).flatMap((radix, i) =>
       Array.from({ length: 2 * radix - 1 }, (_, k) => k + 1 - radix)
         .filter((by) => by !== 0)
@@ -84,12 +83,6 @@ export class PackedSets implements SetAlgebra {
   /** Nodes made so far. */
   get nodes(): number {
     return this.#nodes;
-  }
-
-  #keep(results: number): void {
-    this.#kept = results;
-    // ~0 is no set, so it marks an empty place.
-    this.#results = new Int32Array(3 * 4 * results).fill(-1);
   }
 
   #levelOf(set: Diagram): number {
@@ -155,11 +148,11 @@ export class PackedSets implements SetAlgebra {
       return this.#ofWord(op === AND ? one & other : op === OR ? one | other : one & ~other);
     }
     if (op !== MINUS && a > b) [a, b] = [b, a];
-    const hash = Math.imul(Math.imul(a, 0x9e3779b1) ^ b, 0x85ebca6b);
-    const kept = this.#kept;
-    const place = 4 * (op * kept + ((hash ^ (hash >>> 16)) & (kept - 1)));
+    const place = placeOf(op, a, b);
     const results = this.#results;
-    if (results[place] === a && results[place + 1] === b) return results[place + 2] as number;
+    const known = place & (results.length - 4);
+    if (results[known] === a && results[known + 1] === b && results[known + 3] === op)
+      return results[known + 2] as number;
     const size = this.#size;
     const table = this.#table;
     const levelA = a > ALL ? (table[a * size] as number) : this.#levels;
@@ -176,10 +169,12 @@ export class PackedSets implements SetAlgebra {
     }
     const found = this.#make(level, base);
     // The places move when there come to be more of them.
-    if (kept !== this.#kept) return found;
-    results[place] = a;
-    results[place + 1] = b;
-    results[place + 2] = found;
+    const now = this.#results;
+    const slot = place & (now.length - 4);
+    now[slot] = a;
+    now[slot + 1] = b;
+    now[slot + 2] = found;
+    now[slot + 3] = op;
     return found;
   }
 
@@ -214,7 +209,8 @@ export class PackedSets implements SetAlgebra {
     if ((node & 0xfff) === 0) this.#heartbeat();
     if ((node + 1) * this.#size > this.#table.length) {
       this.#table = grown(this.#table);
-      if (this.#kept < MOST_KEPT) this.#keep(this.#kept * 2);
+      const places = Math.min(MOST_KEPT, (KEPT_PER_NODE * this.#table.length) / this.#size);
+      while (this.#results.length < 4 * places) this.#results = morePlaces(this.#results);
     }
     const at = node * this.#size;
     this.#table[at] = level;
