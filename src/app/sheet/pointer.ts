@@ -258,8 +258,11 @@ export class SheetPointer {
     if (gesture.type === 'none') {
       // A junction is picked by a click and then dragged; before that, a drag from it draws a line.
       const joint = hit.type === 'port' && hit.port.joint && press.was;
-      if (hit.type === 'port' && !joint) startLine(portEnd(hit.port), true);
-      else if (hit.type === 'part' || hit.type === 'label' || joint)
+      if (hit.type === 'port' && !joint) {
+        // Else a second line from the same junction would drag it.
+        if (hit.port.joint) editor.select({});
+        startLine(portEnd(hit.port), true);
+      } else if (hit.type === 'part' || hit.type === 'label' || joint)
         desk.gesture = { type: 'drag', ids: editor.selection.parts };
       else if (hit.type === 'connection' && !press.adds) takeStretch(hit.id, hit.segment, true);
       else if (hit.type === 'paper') desk.gesture = { type: 'band', from: press.at, to: at, adds: press.adds };
