@@ -2,7 +2,8 @@ import { expect, test } from 'vitest';
 import { shot } from './harness.ts';
 import { openedEditor, severeIn, smallTargets, STATIONS, WIDE_STATIONS } from './stations.ts';
 
-const LONG = { timeout: 300_000 };
+/** A few seconds for each panel, many more on a machine that is busy. */
+const LONG = { timeout: 900_000 };
 
 test.each(['light', 'dark'] as const)(
   'every panel and menu keeps WCAG 2.2 AA as far as a machine can tell, and every control is 24 px to hit (%s)',
