@@ -1,11 +1,12 @@
 import { rules } from '../state/rules.svelte.ts';
+import { session } from '../state/session.svelte.ts';
 import { whole } from '../state/whole.svelte.ts';
 import { asking } from './asking.svelte.ts';
 import { tableView } from './table-view.svelte.ts';
 
 /** Rows are shown as they were; a question whose rows were being gathered is taken back. */
 export function stopArranging(): void {
-  if (!tableView.stop(asking.plane)) asking.clear();
+  if (!tableView.stop(session.table, asking.plane)) asking.clear();
 }
 
 /** Stops what keeps the person waiting: the rows being arranged, a question, a fold or a check. False if nothing does. */

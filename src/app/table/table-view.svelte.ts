@@ -118,9 +118,9 @@ class TableView {
    * The person stops it: sort and filters are as they were before, or none where this table was never arranged. False
    * if `among` is what is new, so that the question has to go.
    */
-  stop(among: BitSet | undefined): boolean {
+  stop(table: StateTable | undefined, among: BitSet | undefined): boolean {
     if (!this.busy) return true;
-    const was = this.#arranged?.table === session.table ? this.#arranged : undefined;
+    const was = this.#arranged?.table === table ? this.#arranged : undefined;
     this.#turn++;
     this.#settle();
     this.sort = was?.sort;
