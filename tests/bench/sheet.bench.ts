@@ -20,6 +20,8 @@ import { sheetOf } from './sheet-circuits.ts';
  * thread is what counts; both are printed.
  */
 const FRAMES = 90;
+/** A busy machine may take long to open a large sheet. */
+const PATIENCE_MS = 300_000;
 const KINDS = ['drag', 'zoom', 'pan'] as const;
 type Kind = (typeof KINDS)[number];
 const TYPES: Readonly<Record<string, string>> = {
@@ -54,6 +56,7 @@ async function open(browser: Browser, address: string, circuit: Circuit): Promis
     `localStorage.setItem('spooltable.open', ${JSON.stringify(kept(circuit))});localStorage.setItem('spooltable.sheetShare', '0.75')`,
   );
   await page.addInitScript(WATCH);
+  page.setDefaultTimeout(PATIENCE_MS);
   await page.goto(address);
   await page.locator('.host').waitFor();
   if (circuit.parts.length > 0) await page.locator('[data-part]').first().waitFor({ state: 'attached' });
