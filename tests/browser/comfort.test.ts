@@ -104,7 +104,8 @@ test('a menu goes by arrows, ends and first letters, tells what is on, and gives
   await page.keyboard.press('ArrowUp');
   await expect.poll(at).toBe('Keys');
   await page.keyboard.press('ArrowDown');
-  expect(await at()).toBe('Lines in this row');
+  const first = await page.getByRole('menu').locator('.text').first().textContent();
+  expect(await at()).toBe(first);
   await page.keyboard.press('End');
   expect(await at()).toBe('Keys');
   await page.keyboard.press('Home');

@@ -53,7 +53,7 @@ const part = (id: string) => (page: Page) => page.locator(`[data-part="${id}"]`)
 
 /** Everything that comes up over the worked circuit. Those that need the table or the sheet beside it say so. */
 export const STATIONS: readonly Station[] = [
-  ...['File', 'Panels', 'View: sheet, numbers, units and theme', 'Export'].map(menu),
+  ...['File', 'Panels', 'View', 'Export'].map(menu),
   panel('lines', 'l'),
   panel('why', 'w'),
   panel('findings', 'f'),
