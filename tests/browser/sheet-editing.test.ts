@@ -124,7 +124,12 @@ test('a part dropped on a line goes into it, by mouse and by keys, and is swappe
   await key('Control+z');
   await expect.poll(() => lines(page)).toEqual(['F1.B F2.A']);
   // The same by keys: the line, then a part from the tray.
-  await find(page, 'F1.B');
+  // The port of that name is found first; from there along its line.
+  await key('/');
+  await page.getByRole('combobox', { name: 'Find on the sheet' }).fill('F1.B');
+  await key('Enter');
+  await expect.poll(() => status(page).textContent()).toContain('Enter starts a line');
+  await key('Shift+Enter');
   await key('i');
   await page.getByRole('searchbox', { name: 'Search parts' }).fill('shut-off');
   await key('ArrowDown');
