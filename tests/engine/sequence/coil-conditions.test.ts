@@ -121,7 +121,8 @@ function play(
   see: (on: Set<number>, step: number) => void,
 ): void {
   const at = [0, 0, 0];
-  of.steps.forEach(({ motions, end }, i) => {
+  for (const [i, { motions, end }] of of.steps.entries()) {
+    let ended = false;
     const speed = motions.map(() => 1 + Math.floor(dice() * 3));
     let pressed = dice() < 0.5 && !(end.by === 'pressure');
     // Hundredths of a stroke, so that no sensor is run past.
@@ -140,7 +141,10 @@ function play(
             : end.by === 'time'
               ? t > 20
               : pressed;
-      if (done) break;
+      if (done) {
+        ended = true;
+        break;
+      }
       see(on, i);
       motions.forEach(({ actuator, way }, m) => {
         if (t % (speed[m] as number) === 0)
@@ -148,7 +152,9 @@ function play(
       });
       pressed = end.by === 'pressure' ? t > 15 && dice() < 0.1 : dice() < 0.5;
     }
-  });
+    // Nothing follows a step that never ends: a sensor that its actuator moves away from, say.
+    if (!ended) return;
+  }
 }
 
 test('played with any speeds, every condition is true exactly while its coil is to be on', () => {
