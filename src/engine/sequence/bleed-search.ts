@@ -118,7 +118,8 @@ class Search {
       for (const node of level) {
         if (this.#states < until) next.push(...this.#expand(node, known));
       }
-      const lowest = next.reduce<Node | undefined>((low, node) => (!low || better(node, low) ? node : low), undefined);
+      // Of those alike the first whose load comes down: it has to at some time, and then no longer hangs over the rest.
+      const lowest = next.toSorted((a, b) => a.left - b.left || b.weight - a.weight)[0];
       if (lowest && lowest.left < start.left) return lowest;
       level = next;
     }
