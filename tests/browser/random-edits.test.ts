@@ -20,7 +20,7 @@ const STARTS: readonly Partial<Circuit>[] = [
 ];
 /** `SEEDS=17,18` tries others. */
 const SEEDS = (process.env['SEEDS'] ?? '1,2,3').split(',').map(Number);
-const STEPS = Number(process.env['STEPS'] ?? 30);
+const STEPS = Number(process.env['STEPS'] ?? 24);
 
 /** Something at the end that can be waited for: what is kept then holds all that was done before. */
 async function mark(drawn: Drawn, done: Act[], words: string): Promise<string> {
