@@ -55,7 +55,7 @@ const CIRCUIT = {
   ],
   connections: [{ id: 'c1', from: { part: 'PUMP1', port: 'P' }, to: { part: 'RV1', port: 'P' } }],
 };
-const open = async (): Promise<Drawn & { readonly fingers: Fingers }> => {
+const openOne = async (): Promise<Drawn & { readonly fingers: Fingers }> => {
   const drawn = await openDrawn(CIRCUIT, { hasTouch: true, viewport: { width: 1180, height: 820 } });
   return { ...drawn, fingers: await Fingers.on(drawn) };
 };
@@ -63,7 +63,7 @@ const places = async ({ circuit }: Drawn): Promise<readonly string[]> =>
   (await circuit()).parts.map(({ id, at }) => `${id} ${at?.x},${at?.y}`);
 
 test('two fingers zoom about their middle and pan; one on bare paper pans', async () => {
-  const drawn = await open();
+  const drawn = await openOne();
   const { at, fingers, host } = drawn;
   const [x, y] = await at(30, 30);
   const [left] = await at(20, 30);
@@ -104,7 +104,7 @@ test('two fingers zoom about their middle and pan; one on bare paper pans', asyn
 });
 
 test('a tap selects, a drag moves, and a tap on bare paper lets go', async () => {
-  const drawn = await open();
+  const drawn = await openOne();
   const { at, fingers, page } = drawn;
   const pump = await at(20, 30);
   await fingers.tap(pump);
@@ -120,7 +120,7 @@ test('a tap selects, a drag moves, and a tap on bare paper lets go', async () =>
 });
 
 test('a long press opens the menu of what is there, and lifting the finger leaves it open', async () => {
-  const drawn = await open();
+  const drawn = await openOne();
   const { at, fingers, page, circuit } = drawn;
   await fingers.down(await at(40, 30));
   const menu = page.getByRole('menu', { name: 'Menu: RV1' });
@@ -137,7 +137,7 @@ test('a long press opens the menu of what is there, and lifting the finger leave
 });
 
 test('a line is drawn by finger, dragged or tapped, and waits while two fingers look for its end', async () => {
-  const drawn = await open();
+  const drawn = await openOne();
   const { at, fingers, circuit, page } = drawn;
   const end = async (part: string, port: string): Promise<Spot> => {
     const placed = (await circuit()).parts.filter(({ id }) => id === part).flatMap((each) => placedPorts(each));
@@ -169,7 +169,7 @@ test('a line is drawn by finger, dragged or tapped, and waits while two fingers 
 });
 
 test('a part is carried from the tray by finger, the list scrolls, and what is in hand outlasts a pinch', async () => {
-  const drawn = await open();
+  const drawn = await openOne();
   const { at, fingers, page, circuit } = drawn;
   const kinds = async (): Promise<readonly string[]> => (await circuit()).parts.map(({ kind }) => kind);
   const middle = async (name: string): Promise<Spot> => {
@@ -178,8 +178,18 @@ test('a part is carried from the tray by finger, the list scrolls, and what is i
   };
   await fingers.move([await middle('Cylinder')], [await at(60, 30)], 10);
   await expect.poll(() => places(drawn)).toContain('CYL1 60,30');
-  await page.getByRole('button', { name: 'Motion', exact: true }).tap();
   const list = page.getByRole('dialog', { name: 'Parts' });
+  // A tap close behind a swipe only stops what the browser takes for a fling of the strip; people tap again.
+  const opened = async (): Promise<boolean> => {
+    if (await list.isVisible()) return true;
+    await page.getByRole('button', { name: 'Motion', exact: true }).tap();
+    const shown = list.waitFor({ timeout: 2000 });
+    return shown.then(
+      () => true,
+      () => false,
+    );
+  };
+  await expect.poll(opened, { timeout: 20_000 }).toBe(true);
   const box = await list.boundingBox();
   const [lx, ly] = [(box?.x ?? 0) + 120, (box?.y ?? 0) + (box?.height ?? 0) - 60];
   const top = (): Promise<number> => list.locator('.list').evaluate((each) => each.scrollTop);
