@@ -179,7 +179,7 @@ test('a part is carried from the tray by finger, the list scrolls, and what is i
   await fingers.move([await middle('Cylinder')], [await at(60, 30)], 10);
   await expect.poll(() => places(drawn)).toContain('CYL1 60,30');
   const list = page.getByRole('dialog', { name: 'Parts' });
-  // A tap close behind a swipe only stops what the browser takes for a fling of the strip; people tap again.
+  // A tap close behind a swipe may only stop what the browser takes for a fling of the strip; people tap again.
   const opened = async (): Promise<boolean> => {
     if (await list.isVisible()) return true;
     await page.getByRole('button', { name: 'Motion', exact: true }).tap();
