@@ -58,7 +58,7 @@ export interface InfluenceRow {
   readonly inputs: readonly number[];
 }
 
-/** A part of the circuit on which nothing outside it has any bearing. */
+/** A part of the circuit that nothing outside it bears on. */
 export interface SubCircuit {
   readonly inputs: readonly number[];
   readonly actuators: readonly number[];

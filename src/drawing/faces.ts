@@ -3,35 +3,20 @@ import type { Circuit, Connection, Part } from '../circuit/model.ts';
 import { hasSheets, saySheet, sheetLookup, sheetNumber, sheetOf, sheetsOf } from '../circuit/sheets.ts';
 import { findLines } from '../network/lines.ts';
 import { kindOf } from '../parts/catalogue.ts';
-import type { PartKind } from '../parts/contract.ts';
 import { isReference, REFERENCE_PORT, referenceId, referencePart } from './reference-symbol.ts';
 import type { Reference, References } from './references.ts';
 import { placeReferences } from './references.ts';
 import type { Scene } from './scene.ts';
 import { placementOf, drawnKind } from './shapes.ts';
 import { placePrimitives } from './turned.ts';
+import { nameless } from './nameless.ts';
 
 /** The zone of a sheet that a point lies in, such as `B3`; empty where the sheet has no zones. */
 export type ZoneOf = (sheet: string, at: Point) => string;
 
-const bare = (kind: string): PartKind => ({
-  kind,
-  title: kind,
-  group: 'Measure and joints',
-  help: '',
-  words: [],
-  prefix: '?',
-  settings: [],
-  readyMade: [],
-  ports: () => [],
-  elements: () => [],
-  draw: () => [],
-  bounds: () => ({ x: 0, y: 0, width: 0, height: 0 }),
-});
-
 /** Connection id → the name of its line, as the table has it. */
 export function lineNames(circuit: Circuit): (connection: string) => string {
-  const { lines } = findLines(circuit, (kind) => kindOf(kind) ?? bare(kind));
+  const { lines } = findLines(circuit, (kind) => kindOf(kind) ?? nameless(kind));
   const names = new Map(lines.flatMap(({ name, connections }) => connections.map((id) => [id, name] as const)));
   return (connection) => names.get(connection) ?? '';
 }

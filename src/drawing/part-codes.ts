@@ -1,9 +1,9 @@
 import type { Circuit, Part } from '../circuit/model.ts';
 import { findLines } from '../network/lines.ts';
 import { kindOf } from '../parts/catalogue.ts';
-import type { PartKind } from '../parts/contract.ts';
 import { isStripValve } from '../parts/valve-kinds.ts';
 import { partBox } from './shapes.ts';
+import { nameless } from './nameless.ts';
 
 /**
  * Part codes in the manner of ISO 1219-2 (from memory): `1-H2.3` is system 1, medium H (hydraulic oil), circuit 2, part 3;
@@ -51,21 +51,6 @@ interface Group {
   readonly parts: readonly Part[];
   readonly isPowerUnit: boolean;
 }
-
-const nameless = (kind: string): PartKind => ({
-  kind,
-  title: kind,
-  group: 'Measure and joints',
-  help: '',
-  words: [],
-  prefix: '?',
-  settings: [],
-  readyMade: [],
-  ports: () => [],
-  elements: () => [],
-  draw: () => [],
-  bounds: () => ({ x: 0, y: 0, width: 0, height: 0 }),
-});
 
 /** Circuits from the left, then the power unit; parts in the order in which they are counted. */
 function circuitsOf(circuit: Circuit): Group[] {

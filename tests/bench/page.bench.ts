@@ -1,14 +1,8 @@
-import { spawnSync } from 'node:child_process';
-import { createReadStream, existsSync, mkdtempSync, rmSync } from 'node:fs';
-import { createServer } from 'node:http';
-import { createRequire } from 'node:module';
-import { tmpdir } from 'node:os';
-import { extname, join, normalize } from 'node:path';
-import type { Browser, BrowserType } from 'playwright-core';
+import type { Browser } from 'playwright-core';
 import { writeCircuit } from '../../src/circuit/file.ts';
 import type { Circuit } from '../../src/circuit/model.ts';
 import { placeMissing } from '../../src/drawing/place.ts';
-import { CHROMIUM_FLAGS, findChromium } from '../browser/chromium.ts';
+import { withEditor } from './built-editor.ts';
 import { family } from './circuits.ts';
 
 /**
@@ -16,13 +10,6 @@ import { family } from './circuits.ts';
  * empty profile each time, so that nothing is fetched or compiled before. Milliseconds from the start of navigation.
  */
 const RUNS = 3;
-const TYPES: Readonly<Record<string, string>> = {
-  '.html': 'text/html',
-  '.js': 'text/javascript',
-  '.css': 'text/css',
-  '.json': 'application/json',
-  '.woff2': 'font/woff2',
-};
 
 interface Times {
   /** The first text or line on the screen. */
@@ -69,43 +56,15 @@ async function once(browser: Browser, address: string, circuit: Circuit): Promis
   return times;
 }
 
-function serve(folder: string): Promise<{ address: string; stop: () => void }> {
-  const server = createServer((request, response) => {
-    const path = normalize(decodeURIComponent((request.url ?? '/').split('?')[0] ?? '/'));
-    const file = join(folder, path === '/' ? 'index.html' : path);
-    if (!file.startsWith(folder) || !existsSync(file)) return void response.writeHead(404).end();
-    response.writeHead(200, { 'content-type': TYPES[extname(file)] ?? 'application/octet-stream' });
-    createReadStream(file).pipe(response);
-  });
-  return new Promise((ready) =>
-    server.listen(0, '127.0.0.1', () => {
-      const address = server.address();
-      const port = typeof address === 'object' ? address?.port : 0;
-      ready({ address: `http://127.0.0.1:${port}/`, stop: () => server.close() });
-    }),
-  );
-}
-
 async function run(print: (line: string) => void): Promise<void> {
-  const require = createRequire(join(process.cwd(), 'package.json'));
-  const { chromium } = require('playwright-core') as { readonly chromium: BrowserType };
-  const folder = mkdtempSync(join(tmpdir(), 'spooltable-page-'));
-  const built = spawnSync(
-    process.execPath,
-    ['node_modules/vite/bin/vite.js', 'build', '--outDir', folder, '--emptyOutDir', '--logLevel', 'error'],
-    { stdio: ['ignore', 'ignore', 'inherit'] },
-  );
-  if (built.status !== 0) throw new Error('The editor could not be built.');
-  const server = await serve(folder);
-  const browser = await chromium.launch({ executablePath: findChromium(), args: CHROMIUM_FLAGS });
-  try {
+  await withEditor(async (browser, address) => {
     print(`cold page to table, ms: middle of ${RUNS} (quickest)`);
     print('circuit       rows        first paint   thread started    table there    rows in view');
     for (const name of ['BANK', 'SERIES'] as const) {
       for (const valves of [8, 12]) {
         const circuit = placeMissing(family(name, valves));
         const runs: Times[] = [];
-        for (let i = 0; i < RUNS; i++) runs.push(await once(browser, server.address, circuit));
+        for (let i = 0; i < RUNS; i++) runs.push(await once(browser, address, circuit));
         const cell = (key: keyof Times): string => {
           const list = runs.map((times) => times[key]).sort((a, b) => a - b);
           return `${(list[RUNS >> 1] ?? NaN).toFixed(0)} (${(list[0] ?? NaN).toFixed(0)})`.padStart(15);
@@ -115,11 +74,7 @@ async function run(print: (line: string) => void): Promise<void> {
         );
       }
     }
-  } finally {
-    await browser.close();
-    server.stop();
-    rmSync(folder, { recursive: true, force: true });
-  }
+  });
 }
 
 await run((line) => console.log(line));

@@ -1,14 +1,8 @@
-import { spawnSync } from 'node:child_process';
-import { createReadStream, existsSync, mkdtempSync, rmSync } from 'node:fs';
-import { createServer } from 'node:http';
-import { createRequire } from 'node:module';
-import { tmpdir } from 'node:os';
-import { extname, join, normalize } from 'node:path';
-import type { Browser, BrowserType, Page } from 'playwright-core';
+import type { Browser, Page } from 'playwright-core';
 import { writeCircuit } from '../../src/circuit/file.ts';
 import type { Circuit } from '../../src/circuit/model.ts';
 import { placeMissing } from '../../src/drawing/place.ts';
-import { CHROMIUM_FLAGS, findChromium } from '../browser/chromium.ts';
+import { withEditor } from './built-editor.ts';
 import { family } from './circuits.ts';
 import { sheetOf } from './sheet-circuits.ts';
 
@@ -24,13 +18,6 @@ const FRAMES = 90;
 const PATIENCE_MS = 300_000;
 const KINDS = ['drag', 'zoom', 'pan'] as const;
 type Kind = (typeof KINDS)[number];
-const TYPES: Readonly<Record<string, string>> = {
-  '.html': 'text/html',
-  '.js': 'text/javascript',
-  '.css': 'text/css',
-  '.json': 'application/json',
-  '.woff2': 'font/woff2',
-};
 
 const kept = (circuit: Circuit): string =>
   JSON.stringify({ format: 1, circuit: writeCircuit(circuit), past: [], future: [], saved: 0, levers: {} });
@@ -196,41 +183,13 @@ const share = (times: readonly number[], part: number): number =>
   [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) * part)] ?? NaN;
 const figure = (value: number): string => value.toFixed(1).padStart(7);
 
-function serve(folder: string): Promise<{ address: string; stop: () => void }> {
-  const server = createServer((request, response) => {
-    const path = normalize(decodeURIComponent((request.url ?? '/').split('?')[0] ?? '/'));
-    const file = join(folder, path === '/' ? 'index.html' : path);
-    if (!file.startsWith(folder) || !existsSync(file)) return void response.writeHead(404).end();
-    response.writeHead(200, { 'content-type': TYPES[extname(file)] ?? 'application/octet-stream' });
-    createReadStream(file).pipe(response);
-  });
-  return new Promise((ready) =>
-    server.listen(0, '127.0.0.1', () => {
-      const address = server.address();
-      const port = typeof address === 'object' ? address?.port : 0;
-      ready({ address: `http://127.0.0.1:${port}/`, stop: () => server.close() });
-    }),
-  );
-}
-
 async function run(print: (line: string) => void): Promise<void> {
-  const require = createRequire(join(process.cwd(), 'package.json'));
-  const { chromium } = require('playwright-core') as { readonly chromium: BrowserType };
-  const folder = mkdtempSync(join(tmpdir(), 'spooltable-sheet-'));
-  const built = spawnSync(
-    process.execPath,
-    ['node_modules/vite/bin/vite.js', 'build', '--outDir', folder, '--emptyOutDir', '--logLevel', 'error'],
-    { stdio: ['ignore', 'ignore', 'inherit'] },
-  );
-  if (built.status !== 0) throw new Error('The editor could not be built.');
-  const server = await serve(folder);
-  const browser = await chromium.launch({ executablePath: findChromium(), args: CHROMIUM_FLAGS });
-  try {
+  await withEditor(async (browser, address) => {
     print('ms a frame: work of the main thread, its ratio to an empty sheet; on the clock median and 95 of 100');
     print(`parts  ${KINDS.map((kind) => `${kind}: work  ratio   clock    p95`.padStart(32)).join('')}    drop, ms`);
     const empty: Partial<Record<Kind, number>> = {};
     for (const count of [0, 1, 100, 300, 1000]) {
-      const page = await open(browser, server.address, sheetOf(count));
+      const page = await open(browser, address, sheetOf(count));
       const clock = await clockOf(page);
       await settle(page, clock);
       const cells: string[] = [];
@@ -246,7 +205,7 @@ async function run(print: (line: string) => void): Promise<void> {
       print(`${String(count).padStart(5)}  ${cells.join('')}    ${put.toFixed(0).padStart(8)}`);
       await page.context().close();
     }
-    const page = await open(browser, server.address, placeMissing(family('BANK', 8)));
+    const page = await open(browser, address, placeMissing(family('BANK', 8)));
     await page.locator('.where', { hasText: 'of 6,561' }).first().waitFor();
     await page.getByRole('application').first().focus();
     const clock = await clockOf(page);
@@ -272,11 +231,7 @@ async function run(print: (line: string) => void): Promise<void> {
     print(
       `edit to table, 8 valves, 6561 rows: ${of('wall')} ms on the clock (median), of it ${of('took')} ms of the analysis on its thread; work of the main thread ${of('work')} ms`,
     );
-  } finally {
-    await browser.close();
-    server.stop();
-    rmSync(folder, { recursive: true, force: true });
-  }
+  });
 }
 
 await run((line) => console.log(line));

@@ -19,7 +19,7 @@ export interface PlayedAt {
   readonly time: number;
 }
 
-/** Step plans of the circuit: the one on show is always checked, as long as anybody looks. */
+/** Step plans of the circuit: the one on show is always checked while somebody looks. */
 class Plans {
   /** Plan id → what was picked in it stays picked while it is edited. */
   #id = $state<string | undefined>();

@@ -47,7 +47,7 @@ export function compileSetEdges(net: Network, sets: SetAlgebra, settled?: SetPos
   const standing = (input: number, positions: number): Diagram => {
     if (input < net.inputs.length) return sets.literal(input, positions);
     const valve = settled?.[input - net.inputs.length] ?? [];
-    return valve.reduce((any, set, p) => (((positions >>> p) & 1) === 1 ? sets.or(any, set) : any), NONE);
+    return valve.reduce((all, set, p) => (((positions >>> p) & 1) === 1 ? sets.or(all, set) : all), NONE);
   };
   const open: Diagram[] = [ALL];
   const numbers = new Map<Diagram, number>([[ALL, 0]]);
